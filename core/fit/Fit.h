@@ -1,0 +1,58 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "core/base/Warning.h"
+#include "core/record/Choices.h"
+
+#include <memory>
+#include <optional>
+#include <string>
+#include <vector>
+
+namespace spanwright {
+
+/// A fitted calibration function as something to evaluate, with the covariance of its coefficients inside. The abscissa is the
+/// reference when the function gives the indication, and the indication when it gives the reference. All in the user's units.
+class FittedFunction {
+  public:
+    virtual ~FittedFunction() = default;
+    [[nodiscard]] virtual double value(double x) const = 0;
+    [[nodiscard]] virtual double derivative(double x) const = 0;
+    /// u² of value(x) from the coefficients: vᵀ V v with v = ∂value/∂coefficients.
+    [[nodiscard]] virtual double variance(double x) const = 0;
+    /// Variance of one new reading at x about the function (σ²; with a variance function or weights it depends on x).
+    [[nodiscard]] virtual double readingVariance(double x) const = 0;
+};
+
+struct Coefficient {
+    std::string name;
+    std::string unit;
+    double value = 0;
+    double standardUncertainty = 0; ///< NaN without degrees of freedom
+    double low = 0, high = 0;       ///< interval at the chosen coverage
+};
+
+/// A calibration function fitted to the readings of one phase that are not excluded.
+struct Fit {
+    FunctionChoice function;
+    FitDirection direction = FitDirection::Indication;
+    Method method = Method::LeastSquares;
+    Weights weights = Weights::Equal;
+    CovarianceScale covarianceScale = CovarianceScale::Residuals;
+    double coverage = 0.95;
+    std::size_t used = 0, excluded = 0, setPoints = 0;
+    std::vector<Coefficient> coefficients;
+    std::vector<double> covariance; ///< p × p, row by row
+    double residualSd = 0;          ///< s = √(Σ w e² / ν); a pure number when weighted
+    int degreesOfFreedom = 0;       ///< ν = n − p
+    std::optional<double> rSquared; ///< regression over total; empty when total is 0
+    std::optional<double> chiSquared, chiSquaredP; ///< with stated uncertainties
+    double coverageFactor = 0;      ///< quantile that multiplies a standard uncertainty of the fit for `coverage`
+    double low = 0, high = 0;       ///< calibrated range of the abscissa, over the readings used
+    std::shared_ptr<const FittedFunction> curve;     ///< never null in a Fit that was made
+    std::vector<Warning> warnings;
+
+    [[nodiscard]] std::size_t terms() const { return coefficients.size(); }
+};
+
+} // namespace spanwright

@@ -1,0 +1,51 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "core/base/DoubleDouble.h"
+#include "core/base/Warning.h"
+#include "core/record/Record.h"
+
+#include <cstdint>
+#include <span>
+#include <vector>
+
+namespace spanwright {
+
+/// Numbers in double-double as two columns; `low` is empty when the numbers are plain doubles (very many readings, where the
+/// exact grid is used instead).
+struct PairColumn {
+    std::vector<double> high, low;
+
+    [[nodiscard]] std::size_t size() const { return high.size(); }
+    [[nodiscard]] bool empty() const { return high.empty(); }
+    [[nodiscard]] DoubleDouble operator[](std::size_t i) const { return low.empty() ? DoubleDouble(high[i]) : DoubleDouble(high[i], low[i]); }
+    void push_back(const DoubleDouble& value) {
+        high.push_back(value.x[0]);
+        low.push_back(value.x[1]);
+    }
+};
+
+/// The readings of one phase that count (complete and not excluded), in the order taken, with the standard's correction applied
+/// to the reference where its table is to be applied.
+struct Sample {
+    std::vector<std::size_t> rows; ///< row in ReadingColumns
+    PairColumn reference, indication;
+    PairColumn uReference, uIndication;    ///< stated standard uncertainties; empty when none are stated
+    std::vector<std::int32_t> group;       ///< set point, an index into groupValue
+    std::vector<double> groupValue;        ///< set points in rising order: the stated one, else the reference itself
+    std::vector<std::int32_t> run;         ///< empty when no run is known
+    std::vector<Direction> direction;      ///< empty when no direction is known
+    std::vector<Warning> warnings;         ///< ColumnNotExact, IncompleteReadings, …
+
+    [[nodiscard]] std::size_t size() const { return rows.size(); }
+};
+
+/// Residuals e = y − ŷ of the readings of a sample, unit of the ordinate, with the weights w of the fit (empty: all 1).
+struct Residuals {
+    PairColumn e;
+    PairColumn weight;
+    std::vector<double> fitted;
+    std::vector<double> leverage; ///< h_ii
+};
+
+} // namespace spanwright

@@ -1,0 +1,28 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "core/fit/Fit.h"
+
+#include <vector>
+
+namespace spanwright {
+
+struct Interval {
+    double low = 0, high = 0;
+};
+
+/// The function at one abscissa with its intervals at the fit's coverage, in the unit of the ordinate.
+struct BandPoint {
+    double x = 0;
+    double value = 0;
+    Interval mean;         ///< where the function is: ŷ ± t √(vᵀVv)
+    Interval newReading;   ///< where the next reading will be: ŷ ± t √(vᵀVv + σ²)
+    Interval simultaneous; ///< Working–Hotelling: t replaced by √(p F)
+    bool inside = true;    ///< within the calibrated range
+};
+
+BandPoint bandAt(const Fit& fit, double x);
+/// `points` equidistant abscissae from low to high.
+std::vector<BandPoint> bandCurve(const Fit& fit, double low, double high, std::size_t points);
+
+} // namespace spanwright

@@ -1,0 +1,42 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "core/record/ReadingColumns.h"
+
+#include <optional>
+#include <vector>
+
+namespace spanwright {
+
+enum class PlanDirections { Rising, Falling, RisingThenFalling };
+
+/// Which set points, how approached, how often.
+struct Plan {
+    std::vector<Decimal> setPoints; ///< in rising order
+    PlanDirections directions = PlanDirections::RisingThenFalling;
+    int runs = 1;         ///< passes of the set points
+    int repeats = 1;      ///< readings taken at each visit
+    int asLeftRuns = 0;   ///< passes after adjustment; 0: none planned
+    int dwellSeconds = 0; ///< least wait at a set point
+    int preloads = 0;     ///< exercises to full scale before the first run
+    bool referenceTyped = true; ///< false: the reference is the set point and only the indication is typed
+    bool operator==(const Plan&) const = default;
+};
+
+/// One reading that the plan asks for.
+struct PlannedReading {
+    Phase phase = Phase::AsFound;
+    int run = 1;
+    Direction direction = Direction::Unknown;
+    Decimal setPoint;
+    bool operator==(const PlannedReading&) const = default;
+};
+
+/// All readings of a phase in the order in which they are to be taken.
+std::vector<PlannedReading> plannedReadings(const Plan& plan, Phase phase);
+
+/// The first planned reading of the phase that has no complete reading yet: the n-th visit of (run, direction, set point) is
+/// met by the n-th reading there. Empty when the plan is done.
+std::optional<PlannedReading> nextPlanned(const Plan& plan, const ReadingColumns& readings, Phase phase);
+
+} // namespace spanwright
