@@ -1,0 +1,16 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "core/record/Record.h"
+
+namespace spanwright::test {
+
+/// The record of sample-data/pressure-transmitter.spanwright: an invented 0 to 10 bar, 4 to 20 mA transmitter with hysteresis and a
+/// slight curvature, 66 readings as found (eleven set points, rising and falling, three runs) and 10 as left, complete but for
+/// the authorisation. Its journal is empty.
+Record pressureTransmitter();
+
+/// A number from its text; the text must be a number.
+Decimal number(const char* text);
+
+} // namespace spanwright::test
