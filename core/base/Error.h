@@ -32,6 +32,8 @@ enum class ErrorCode {
     NoDataRows,
     SeparatorUnclear,
     DecimalMarkUnclear,
+    DateOrderUnclear,
+    DirectionUnknown,
     // session files
     NotJson,
     NotASession,

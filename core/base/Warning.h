@@ -22,6 +22,9 @@ enum class WarningCode {
     IncompleteReadings,    ///< rows that lack a reference or an indication; facts: count
     FigureUndefined,       ///< facts: figure, reason
     ApproximateMethod,     ///< facts: figure, method
+    SealBroken,            ///< a session file was changed outside the program
+    JournalBroken,         ///< facts: entry, the first from 1 that does not fit the one before
+    ResultsDiffer,         ///< stored with a session, and recomputed; facts: figure, stored, now
 };
 
 struct Warning {

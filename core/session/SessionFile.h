@@ -1,0 +1,49 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "core/session/SessionJson.h"
+
+#include <memory>
+
+namespace spanwright {
+
+/// A session file that is open: holds its lock, and knows what was on disk when it was last read or written.
+class SessionFile {
+  public:
+    SessionFile(SessionFile&&) noexcept;
+    SessionFile& operator=(SessionFile&&) noexcept;
+    ~SessionFile();
+
+    struct Opened;
+    /// Reads and locks. When another program holds the lock, the session opens read-only and `heldBy` says who. Errors: as
+    /// FileBytes::read() and readSession(), with fact file.
+    static Result<Opened> open(const std::string& path);
+
+    /// Writes a session to a path that this program does not hold open (save as). Whether an existing file may be replaced was
+    /// asked before. Errors: FileInUse (facts: holder), FileNotWritable, FileWriteFailed (facts: reason).
+    static Result<SessionFile> saveAs(const std::string& path, const Record& record, const StoredResults& results);
+
+    /// Writes over the file that was opened, whole or not at all. Errors: FileChangedOnDisk, FileInUse (this session was opened
+    /// while another program held it), FileNotWritable, FileWriteFailed; the old file is then as it was.
+    Result<void> save(const Record& record, const StoredResults& results);
+
+    [[nodiscard]] const std::string& path() const;
+    /// Whether the file on disk is not the one that was last read or written here.
+    [[nodiscard]] bool changedOnDisk() const;
+
+  private:
+    class Private;
+    explicit SessionFile(std::unique_ptr<Private> p);
+    std::unique_ptr<Private> d;
+};
+
+struct SessionFile::Opened {
+    SessionFile file;
+    Session session;
+    std::string heldBy; ///< program and host that hold the lock; empty when this one does
+};
+
+/// Reads without locking, for commands that only look. Errors: as open().
+Result<Session> readSessionFile(const std::string& path);
+
+} // namespace spanwright
