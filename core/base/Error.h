@@ -68,6 +68,8 @@ enum class ErrorCode {
     UsageNoFile,
     UsageUnknownCommand,
 };
+/// The last code, for a test that walks them all.
+inline constexpr ErrorCode lastErrorCode = ErrorCode::UsageUnknownCommand;
 
 /// One fact about an error, a warning or a finding: a name that the sentence refers to ("file", "line", "text") and its value.
 struct Fact {

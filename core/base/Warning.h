@@ -26,6 +26,8 @@ enum class WarningCode {
     JournalBroken,         ///< facts: entry, the first from 1 that does not fit the one before
     ResultsDiffer,         ///< stored with a session, and recomputed; facts: figure, stored, now
 };
+/// The last code, for a test that walks them all.
+inline constexpr WarningCode lastWarningCode = WarningCode::ResultsDiffer;
 
 struct Warning {
     WarningCode code = WarningCode::FigureUndefined;

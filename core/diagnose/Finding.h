@@ -33,6 +33,8 @@ enum class FindingCode {
     RepeatedReading,
     Extrapolation,
 };
+/// The last code, for a test that walks them all.
+inline constexpr FindingCode lastFindingCode = FindingCode::Extrapolation;
 
 /// The one thing to do about a finding.
 enum class Remedy { None, CompareFunction, CarryToBudget, SeeExclusions, SeeReadings, ChooseWeights, TakeMoreReadings, CheckRun };

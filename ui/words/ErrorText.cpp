@@ -1,0 +1,147 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "ui/words/Sentence.h"
+#include "ui/words/Words.h"
+
+#include <QCoreApplication>
+
+namespace spanwright {
+
+namespace {
+
+/// The sentences. Where it happened stands before them, so each says what is wrong and what to do. The switch has no default, so
+/// that a new code without a sentence does not compile.
+struct ErrorText {
+    Q_DECLARE_TR_FUNCTIONS(ErrorText)
+
+  public:
+    static QString of(ErrorCode code, Sentence& facts);
+};
+
+QString ErrorText::of(ErrorCode code, Sentence& facts) {
+    switch (code) {
+    // files
+    case ErrorCode::FileMissing: return tr("there is no such file. Check the name and the folder.");
+    case ErrorCode::FileEmpty: return tr("the file is empty. Choose the file that holds the readings.");
+    case ErrorCode::FileIsDirectory: return tr("this is a folder. Choose a file in it.");
+    case ErrorCode::FileNotReadable: return tr("the file may not be read. Ask for permission, or copy it to a folder of your own.");
+    case ErrorCode::FileNotWritable: return tr("the file may not be written. Save under another name or in another folder.");
+    case ErrorCode::FileReadFailed: return tr("reading the file broke off. Check the drive or the connection and try again.");
+    case ErrorCode::FileWriteFailed:
+        return tr("writing the file broke off; what stood there before is unchanged. Check the free space, or save elsewhere.");
+    case ErrorCode::FileChangedOnDisk:
+        return tr("the file was changed by another program since it was opened. Save under another name, or open it again.");
+    case ErrorCode::FileInUse:
+        return tr("the file is open elsewhere, by %1. Close it there, or save under another name.")
+            .arg(facts.plain("holder", facts.plain("by", tr("another program"))));
+    case ErrorCode::FileBinary: return tr("this is not text. Export the readings as CSV and open that file.");
+    case ErrorCode::FileEncoding:
+        return tr("the bytes are not valid in the encoding %1. State the encoding in which the file was written.")
+            .arg(facts.plain("encoding", tr("assumed")));
+    // tables of text
+    case ErrorCode::UnclosedQuote: return tr("a quotation mark is opened and never closed. Close it in the file.");
+    case ErrorCode::RaggedRow:
+        return tr("the line has %1 cells where %2 are expected. Complete the line, or check the separator.")
+            .arg(facts.plain("cells", facts.plain("count", tr("other"))), facts.plain("expected", tr("more or fewer")));
+    case ErrorCode::NotANumber:
+        return tr("%1 is not a number. Correct the cell, or leave its row out by stating it as excluded.")
+            .arg(facts.quoted("text", tr("the cell")));
+    case ErrorCode::NumberTooLarge:
+        return tr("%1 is beyond the numbers that can be held. Check the exponent.").arg(facts.quoted("text", tr("the number")));
+    case ErrorCode::ThousandsSeparator:
+        return tr("%1 seems to hold a thousands separator, or the other decimal mark. Write the number without it, or state the "
+                  "decimal mark.")
+            .arg(facts.quoted("text", tr("the number")));
+    case ErrorCode::ColumnMissing:
+        return tr("there is no column %1. Name a column of the header, or its number from 1.")
+            .arg(facts.quoted("name", facts.quoted("text", tr("of that name"))));
+    case ErrorCode::NoDataRows: return tr("there is no row of readings under the header. Choose the file that holds the readings.");
+    case ErrorCode::SeparatorUnclear: return tr("the separator of the columns cannot be told. State it.");
+    case ErrorCode::DecimalMarkUnclear: return tr("the decimal mark cannot be told: both point and comma would do. State it.");
+    case ErrorCode::DateOrderUnclear:
+        return tr("the order of day and month cannot be told from %1. State it.").arg(facts.quoted("text", tr("the dates")));
+    case ErrorCode::DirectionUnknown:
+        return tr("%1 is no direction. Write up or down, rising or falling.").arg(facts.quoted("text", tr("the cell")));
+    // session files
+    case ErrorCode::NotJson:
+        return tr("this is no session: the text is broken or cut off. Open the backup or the recovery file beside it.");
+    case ErrorCode::NotASession: return tr("this file was not written as a session. Open a session, or import readings as CSV.");
+    case ErrorCode::NewerLayout:
+        return tr("the session was written by a newer program (layout version %1). It can be looked at, not changed; use the newer "
+                  "program.")
+            .arg(facts.plain("version", tr("unknown")));
+    case ErrorCode::SessionValueBad:
+        return tr("the value %1 cannot be read. Correct it in the file, or open the backup.")
+            .arg(facts.quoted("key", facts.quoted("text", tr("there"))));
+    // typing
+    case ErrorCode::CellEmpty: return tr("there is nothing in the cell. Type a number.");
+    case ErrorCode::CellNotANumber: return tr("%1 is not a number. Type digits, such as 12.04.").arg(facts.quoted("text", tr("this")));
+    case ErrorCode::CellDateBad:
+        return tr("%1 is not a date. Type year, month and day, such as 2026-11-30.").arg(facts.quoted("text", tr("this")));
+    case ErrorCode::CellOutOfRange:
+        return tr("%1 is outside what is possible here. Check the digits and the unit.").arg(facts.quoted("text", tr("the value")));
+    case ErrorCode::ReasonMissing: return tr("a reason is needed. Choose one from the list, or write it in words.");
+    // the record as a whole
+    case ErrorCode::NoReadings: return tr("there are no readings. Enter readings, or take in a file.");
+    case ErrorCode::TooFewReadings:
+        return tr("%1 readings are too few for this function, which needs %2. Take more readings, or choose a simpler function.")
+            .arg(facts.plain("count", facts.plain("readings", tr("The"))), facts.plain("needed", tr("more")));
+    case ErrorCode::ReferencesAllEqual:
+        return tr("all reference values are equal, so no slope can be found. Take readings at other set points, or choose the "
+                  "function “constant”.");
+    case ErrorCode::TooFewSetPoints:
+        return tr("%1 set points are too few for this function, which needs %2. Take more set points, or choose a simpler function.")
+            .arg(facts.plain("count", facts.plain("set_points", tr("The"))), facts.plain("needed", tr("more")));
+    case ErrorCode::RankLost:
+        return tr("the readings cannot tell these coefficients apart: %1. Choose a simpler function, or spread the set points.")
+            .arg(facts.plain("terms", tr("some of them")));
+    case ErrorCode::OutsideDomain:
+        return tr("%1 lies outside the values for which this function exists. Exclude the reading with a reason, or choose another "
+                  "function.")
+            .arg(facts.plain("value", facts.quoted("text", tr("A value"))));
+    case ErrorCode::UncertaintyNotPositive:
+        return tr("a stated uncertainty is zero or negative: %1. Correct it; a standard uncertainty is above zero.")
+            .arg(facts.plain("value", facts.quoted("text", tr("see the column"))));
+    case ErrorCode::UncertaintyMissing:
+        return tr("this way of weighing needs a standard uncertainty for every reading, and some have none. State them, or choose "
+                  "equal weights.");
+    case ErrorCode::NoConvergence:
+        return tr("the fit did not settle: %1. Choose another function, or check the readings for slips.")
+            .arg(facts.plain("reason", tr("the steps did not grow smaller")));
+    case ErrorCode::NoInverse:
+        return tr("the function has no single reference value for an indication. Narrow the range, or choose a function that only "
+                  "rises or falls.");
+    case ErrorCode::FunctionUnknown:
+        return tr("%1 is no calibration function known here. Write, for example, line or polynomial:2.")
+            .arg(facts.quoted("text", tr("this")));
+    case ErrorCode::ColumnUnfit: return tr("the column %1 cannot be used for this.").arg(facts.quoted("name", tr("chosen")));
+    case ErrorCode::Cancelled: return tr("the computation was stopped before its end. Nothing was changed.");
+    case ErrorCode::CertificateIncomplete:
+        return tr("the certificate is not complete: %1. Enter it, or print the draft as incomplete.")
+            .arg(facts.plain("missing", tr("entries are missing")));
+    // the command line
+    case ErrorCode::UsageUnknownOption:
+        return tr("there is no option %1. See spanwright --help.").arg(facts.quoted("option", facts.quoted("text", tr("of that name"))));
+    case ErrorCode::UsageValueBad:
+        return tr("%1 does not take %2. See spanwright --help.")
+            .arg(facts.plain("option", tr("the option")), facts.quoted("text", tr("this value")));
+    case ErrorCode::UsageValueMissing: return tr("%1 needs a value. See spanwright --help.").arg(facts.plain("option", tr("the option")));
+    case ErrorCode::UsageNoFile:
+        return tr("%1 needs a file. See spanwright --help.").arg(facts.plain("command", tr("the command")));
+    case ErrorCode::UsageUnknownCommand:
+        return tr("there is no command or file %1. See spanwright --help.").arg(facts.quoted("text", tr("of that name")));
+    }
+    return {};
+}
+
+} // namespace
+
+QString errorText(const Error& error) {
+    Sentence facts(error.facts);
+    const QString place = facts.place();
+    QString sentence = ErrorText::of(error.code, facts);
+    if (place.isEmpty() && !sentence.isEmpty())
+        sentence[0] = sentence[0].toUpper();
+    return place + sentence + facts.rest();
+}
+
+} // namespace spanwright

@@ -1,0 +1,111 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "ui/look/NumberText.h"
+#include "ui/words/Words.h"
+
+#include <QCoreApplication>
+#include <QStringList>
+
+#include <cmath>
+
+namespace spanwright {
+
+namespace {
+
+struct FindingText {
+    Q_DECLARE_TR_FUNCTIONS(FindingText)
+
+  public:
+    static QString sentence(const Finding& finding);
+    static QString figure(const Figure& figure, const Record& record);
+    static QString remedy(const Finding& finding);
+};
+
+/// No default in the switch: a new code without a sentence does not compile.
+QString FindingText::sentence(const Finding& finding) {
+    switch (finding.code) {
+    case FindingCode::LackOfFit: return tr("The set-point means lie further from the function than the scatter explains.");
+    case FindingCode::HiddenCurvature:
+        return tr("The gap between rising and falling readings hides curvature: pooled, the function seems to fit; against "
+                  "repeatability it does not.");
+    case FindingCode::Hysteresis: return tr("Rising and falling readings differ by more than repeatability explains.");
+    case FindingCode::RunZeroShift: return tr("The zero shifts from run to run by more than repeatability explains.");
+    case FindingCode::RunGainChange: return tr("The slope changes from run to run by more than repeatability explains.");
+    case FindingCode::FirstRunDiffers: return tr("The first run differs from the others, as an item that was not exercised does.");
+    case FindingCode::ScatterGrows: return tr("Scatter grows with level, so equal weights overstate the uncertainty at the low end.");
+    case FindingCode::Autocorrelated:
+        return tr("Neighbouring readings resemble each other; there is less information in them than their number suggests.");
+    case FindingCode::NonNormal: return tr("The residuals are not normally distributed; intervals are approximate.");
+    case FindingCode::Straggler: return tr("A reading is a straggler (5 % level). Look for a technical cause; it stays in.");
+    case FindingCode::Outlier: return tr("A reading is a statistical outlier (1 % level). Look for a technical cause; it stays in.");
+    case FindingCode::Influential: return tr("The function hangs on a single reading more than on the others.");
+    case FindingCode::ExcludedReadings: return tr("Readings were excluded.");
+    case FindingCode::SetPointExcluded: return tr("Every reading of a set point is excluded.");
+    case FindingCode::ManyExcluded: return tr("A large share of the readings is excluded; the result may no longer describe the item.");
+    case FindingCode::TooFewReadings: return tr("There are few readings for this function, so its uncertainty is poorly known.");
+    case FindingCode::OutsideBand: return tr("Readings lie outside the band in which new readings are expected.");
+    case FindingCode::DegreeNotJustified: return tr("The highest term of the function is not supported by the readings.");
+    case FindingCode::ThroughZeroNotSupported: return tr("A line through zero is not supported: the constant differs from zero.");
+    case FindingCode::RepeatedReading: return tr("A reading is identical to the one before it. Was it read afresh?");
+    case FindingCode::Extrapolation: return tr("A value asked for lies outside the calibrated range.");
+    }
+    return {};
+}
+
+QString FindingText::figure(const Figure& figure, const Record& record) {
+    const QString value = significantText(figure.value, 3);
+    const auto withUnit = [&](const Quantity& quantity) {
+        return quantity.unit.empty() ? value : value + QLatin1Char(' ') + QString::fromStdString(quantity.unit);
+    };
+    const std::string& name = figure.name;
+    if (name == "f")
+        return tr("F = %1").arg(value);
+    if (name == "f_naive")
+        return tr("F pooled = %1").arg(value);
+    if (name == "p" || name == "p_naive") {
+        const QString p = pText(figure.value);
+        const QString label = name == "p" ? tr("p") : tr("p pooled");
+        return p.startsWith(QLatin1Char('<')) ? label + QLatin1Char(' ') + p : label + QStringLiteral(" = ") + p;
+    }
+    if (name == "value")
+        return withUnit(record.item.indication);
+    if (name == "percent_of_span")
+        return tr("%1 % of span").arg(value);
+    if (name == "set_point")
+        return tr("at %1").arg(withUnit(record.item.reference));
+    if (name == "share")
+        return shareText(figure.value);
+    if (name == "count")
+        return tr("%n reading(s)", nullptr, static_cast<int>(figure.value));
+    if (name == "degrees_of_freedom" || name == "df")
+        return tr("%1 degrees of freedom").arg(value);
+    if (name == "run")
+        return tr("run %1").arg(value);
+    QString words = QString::fromStdString(name);
+    return words.replace(QLatin1Char('_'), QLatin1Char(' ')) + QStringLiteral(" = ") + value;
+}
+
+QString FindingText::remedy(const Finding& finding) {
+    switch (finding.remedy) {
+    case Remedy::None: return {};
+    case Remedy::CompareFunction: return tr("Compare with: %1").arg(functionText(finding.suggestion));
+    case Remedy::CarryToBudget: return tr("Carry to the budget");
+    case Remedy::SeeExclusions: return tr("See the exclusions");
+    case Remedy::SeeReadings: return tr("See the readings");
+    case Remedy::ChooseWeights: return tr("Choose weights");
+    case Remedy::TakeMoreReadings: return tr("Take more readings");
+    case Remedy::CheckRun: return tr("Look at the runs");
+    }
+    return {};
+}
+
+} // namespace
+
+FindingWords findingWords(const Finding& finding, const Record& record) {
+    QStringList figures;
+    for (const Figure& figure : finding.figures)
+        if (!std::isnan(figure.value))
+            figures << FindingText::figure(figure, record);
+    return {FindingText::sentence(finding), figures.join(QStringLiteral(", ")), FindingText::remedy(finding)};
+}
+
+} // namespace spanwright
