@@ -34,6 +34,7 @@ struct SetPointBudget {
     std::vector<BudgetItem> items;
     double combined = 0;                  ///< u_c, unit of the indication
     double effectiveDegreesOfFreedom = 0; ///< Welch–Satterthwaite; infinite when every line's is
+    Distribution distribution = Distribution::Normal; ///< that k belongs to: Normal, Student, or Rectangular where one such line dominates
     double coverageFactor = 0;            ///< k
     double expanded = 0;                  ///< U = k u_c, unit of the indication
     double expandedReference = 0;         ///< the same divided by the slope, unit of the reference

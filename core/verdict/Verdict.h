@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include "core/base/Warning.h"
 #include "core/record/Limits.h"
 #include "core/record/ReadingColumns.h"
 
@@ -21,9 +22,10 @@ struct PointResult {
     double reference = 0;           ///< mean, corrected, unit of the reference
     double indication = 0;          ///< mean
     std::optional<double> rising, falling; ///< means
-    double ideal = 0;               ///< indication of a perfect item at the reference
-    double error = 0;               ///< indication − ideal
+    double ideal = 0;               ///< indication of a perfect item at the reference; NaN where the item states none
+    double error = 0;               ///< indication − ideal; NaN likewise (Verdict::warnings says so)
     double expanded = 0;            ///< U
+    double expandedReference = 0;   ///< U in the unit of the reference
     double coverageFactor = 0;
     double errorPercentOfSpan = 0, expandedPercentOfSpan = 0;
     std::optional<double> limit;    ///< half-width
@@ -36,6 +38,7 @@ struct PointResult {
 struct Verdict {
     std::vector<PointResult> points;
     std::optional<ConformityState> overall; ///< the worst
+    std::vector<Warning> warnings;          ///< FigureUndefined (figure: error, reason: no-output-range)
 };
 
 } // namespace spanwright

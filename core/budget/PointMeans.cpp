@@ -1,0 +1,136 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/budget/PointMeans.h"
+
+#include <algorithm>
+#include <cmath>
+#include <set>
+
+namespace spanwright {
+
+namespace {
+
+/// Sums of the readings of one set point approached in one direction.
+struct Cell {
+    std::size_t n = 0;
+    DoubleDouble reference = 0.0, indication = 0.0;
+    std::set<std::int32_t> runs;
+
+    void add(const Sample& sample, std::size_t i) {
+        ++n;
+        reference += sample.reference[i];
+        indication += sample.indication[i];
+        if (!sample.run.empty())
+            runs.insert(sample.run[i]);
+    }
+    void add(const Cell& other) {
+        n += other.n;
+        reference += other.reference;
+        indication += other.indication;
+        runs.insert(other.runs.begin(), other.runs.end());
+    }
+    [[nodiscard]] double meanReference() const { return toDouble(reference / static_cast<double>(n)); }
+    [[nodiscard]] double meanIndication() const { return toDouble(indication / static_cast<double>(n)); }
+};
+
+struct Cells {
+    Cell unknown, rising, falling;
+};
+
+std::vector<Cells> cellsOf(const Sample& sample) {
+    std::vector<Cells> cells(sample.groupValue.size());
+    for (std::size_t i = 0; i < sample.size(); ++i) {
+        Cells& at = cells[static_cast<std::size_t>(sample.group[i])];
+        const Direction direction = sample.direction.empty() ? Direction::Unknown : sample.direction[i];
+        (direction == Direction::Rising ? at.rising : direction == Direction::Falling ? at.falling : at.unknown).add(sample, i);
+    }
+    return cells;
+}
+
+PointMeans meansOf(const Cell& cell, double setPoint, Direction direction) {
+    PointMeans point;
+    point.setPoint = setPoint;
+    point.direction = direction;
+    point.n = cell.n;
+    point.runs = std::max<std::size_t>(cell.runs.size(), 1);
+    point.reference = cell.meanReference();
+    point.indication = cell.meanIndication();
+    if (direction == Direction::Rising)
+        point.rising = point.indication;
+    if (direction == Direction::Falling)
+        point.falling = point.indication;
+    return point;
+}
+
+/// A set point stated as one result.
+PointMeans together(const Cells& cells, double setPoint, const Item& item, const Fit* fit) {
+    Cell all = cells.unknown;
+    all.add(cells.rising);
+    all.add(cells.falling);
+    PointMeans point = meansOf(all, setPoint, Direction::Unknown);
+    if (cells.rising.n > 0)
+        point.rising = cells.rising.meanIndication();
+    if (cells.falling.n > 0)
+        point.falling = cells.falling.meanIndication();
+    if (!point.rising || !point.falling)
+        return point;
+    const double up = cells.rising.meanReference(), down = cells.falling.meanReference();
+    if (cells.unknown.n == 0) {
+        point.reference = (up + down) / 2;
+        point.indication = (*point.rising + *point.falling) / 2;
+    }
+    const double slope = sensitivityAt(item, fit, point.reference, point.indication);
+    point.gap = (*point.rising - *point.falling) - slope * (up - down);
+    return point;
+}
+
+} // namespace
+
+std::vector<PointMeans> pointMeans(const Record& record, const Sample& sample, const Fit* fit) {
+    const std::vector<Cells> cells = cellsOf(sample);
+    std::vector<PointMeans> points;
+    for (std::size_t g = 0; g < cells.size(); ++g) {
+        const Cells& at = cells[g];
+        const double setPoint = sample.groupValue[g];
+        if (!record.choices.separateDirections) {
+            if (at.unknown.n + at.rising.n + at.falling.n > 0)
+                points.push_back(together(at, setPoint, record.item, fit));
+            continue;
+        }
+        if (at.unknown.n > 0)
+            points.push_back(meansOf(at.unknown, setPoint, Direction::Unknown));
+        if (at.rising.n > 0)
+            points.push_back(meansOf(at.rising, setPoint, Direction::Rising));
+        if (at.falling.n > 0)
+            points.push_back(meansOf(at.falling, setPoint, Direction::Falling));
+    }
+    return points;
+}
+
+std::optional<double> idealIndication(const Item& item, double reference) {
+    const auto& low = item.rangeLow;
+    const auto& high = item.rangeHigh;
+    if (low && high && item.outputLow && item.outputHigh && compareValue(*low, *high) != 0) {
+        const double from = item.outputLow->toDouble();
+        const double slope = (item.outputHigh->toDouble() - from) / (high->toDouble() - low->toDouble());
+        return from + slope * (reference - low->toDouble());
+    }
+    if (!item.outputLow && !item.outputHigh && !item.reference.unit.empty() && item.reference.unit == item.indication.unit)
+        return reference;
+    return std::nullopt;
+}
+
+double sensitivityAt(const Item& item, const Fit* fit, double reference, double indication) {
+    if (fit != nullptr && fit->curve != nullptr && fit->function.family != FunctionFamily::Constant) {
+        const bool forward = fit->direction == FitDirection::Indication;
+        const double derivative = fit->curve->derivative(forward ? reference : indication);
+        const double slope = forward ? derivative : 1 / derivative;
+        if (std::isfinite(slope) && slope != 0)
+            return slope;
+    }
+    const auto here = idealIndication(item, reference), beyond = idealIndication(item, reference + 1);
+    if (here && beyond && *here != *beyond)
+        return *beyond - *here;
+    return 1;
+}
+
+} // namespace spanwright
