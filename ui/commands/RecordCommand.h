@@ -24,6 +24,10 @@ class RecordCommand : public QUndoCommand {
     virtual void revert(Record& record) = 0;
     /// What to write in the journal when applied: what, where, before, after, reason; time and person are filled in here.
     [[nodiscard]] virtual std::vector<JournalEntry> entries(const Record& before, const Record& after) const = 0;
+    /// Whether applying would leave the record as it is; then it is not performed.
+    [[nodiscard]] virtual bool changesNothing(const Record&) const { return false; }
+    /// Who changed it and when; told once, before the first apply(), so that a redo gives the same record.
+    virtual void stamp(std::int64_t /*now*/, const std::string& /*person*/) {}
 
   private:
     friend class Workbench;

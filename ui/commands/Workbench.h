@@ -42,7 +42,8 @@ class Workbench : public QObject {
     [[nodiscard]] bool readOnly() const;
     void setReadOnly(bool readOnly);
 
-    /// The only way to change the record: runs the command, puts it on the undo stack, journals it, evaluates.
+    /// The only way to change the record: runs the command, puts it on the undo stack, journals it, evaluates. A command that
+    /// would change nothing is dropped, and so is every command while the record is read-only.
     void perform(std::unique_ptr<RecordCommand> command);
 
     /// Readings that are selected everywhere.
@@ -59,6 +60,12 @@ class Workbench : public QObject {
   private:
     class Private;
     friend class RecordCommand;
+    /// Runs a change of the record, appends the entries it returns and lets everybody know.
+    void change(const std::function<std::vector<JournalEntry>(Record&)>& doIt);
+    void evaluateNow();
+    void evaluateAside();
+    void take(std::shared_ptr<const Evaluation> evaluation);
+
     std::unique_ptr<Private> d;
 };
 

@@ -21,6 +21,9 @@ class Card : public QFrame {
     void addHeadWidget(QWidget* widget);
     [[nodiscard]] QVBoxLayout* body() const { return body_; }
 
+  protected:
+    void paintEvent(QPaintEvent* event) override;
+
   private:
     QLabel* title_;
     QLabel* note_;

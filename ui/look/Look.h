@@ -32,7 +32,18 @@ struct Scheme {
 /// The scheme in use. Paper output always uses paperScheme().
 const Scheme& scheme();
 const Scheme& paperScheme();
+/// Sets palette, style and font of the application. Widgets that paint by hand repaint on QEvent::PaletteChange.
 void setScheme(QApplication& application, SchemeName name);
+
+/// Roles of the palette in the scheme's terms: label->setForegroundRole(inkRole::quiet) follows a change of scheme by itself.
+namespace inkRole {
+inline constexpr QPalette::ColorRole quiet = QPalette::PlaceholderText;
+inline constexpr QPalette::ColorRole accent = QPalette::Link;
+inline constexpr QPalette::ColorRole warning = QPalette::BrightText;
+} // namespace inkRole
+
+/// WCAG 2.1 contrast ratio of two opaque colours, 1 to 21.
+double contrastRatio(const QColor& a, const QColor& b);
 
 /// Distances in device-independent pixels: a step is 8.
 namespace space {
