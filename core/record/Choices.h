@@ -41,6 +41,7 @@ Result<FunctionChoice> parseFunctionName(std::string_view text);
 
 enum class FitDirection { Indication, Reference }; ///< which quantity the function gives
 enum class Method { LeastSquares, BothUncertain, Robust };
+enum class RobustWeight { Huber, Bisquare };
 enum class Weights { Equal, Stated, Replicates, Proportional };
 enum class CovarianceScale { Residuals, Stated };
 
@@ -58,6 +59,9 @@ struct Choices {
     std::optional<int> repeats = 1; ///< new readings in each mean; empty: an exact indication
     int outliers = 0;               ///< largest number tried by the generalised ESD test; 0: the program's default
     Decimal outlierLevel{5, 2, {}}; ///< its level, and Grubbs's
+    RobustWeight robust = RobustWeight::Huber; ///< for comparison only, never for the certificate
+    Decimal toleranceShare{95, 2, {}}; ///< share of all readings that the tolerance band is to hold
+    Decimal exclusionLimit{10, 2, {}}; ///< share of excluded readings above which findings and certificate say so
     bool separateDirections = false; ///< state rising and falling separately in results and budget
     bool operator==(const Choices&) const = default;
 };

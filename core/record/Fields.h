@@ -31,6 +31,7 @@ SPANWRIGHT_ENUM_NAMES(CorrectionUse, "none", "apply", "already-applied");
 SPANWRIGHT_ENUM_NAMES(PlanDirections, "rising", "falling", "rising-then-falling");
 SPANWRIGHT_ENUM_NAMES(FitDirection, "indication", "reference");
 SPANWRIGHT_ENUM_NAMES(Method, "least-squares", "both-uncertain", "robust");
+SPANWRIGHT_ENUM_NAMES(RobustWeight, "huber", "bisquare");
 SPANWRIGHT_ENUM_NAMES(Weights, "equal", "stated", "replicates", "proportional");
 SPANWRIGHT_ENUM_NAMES(CovarianceScale, "residuals", "stated");
 SPANWRIGHT_ENUM_NAMES(Distribution, "normal", "rectangular", "triangular", "u-shaped", "student");
@@ -201,6 +202,9 @@ void fields(P& part, V&& visit)
     visit("repeats", part.repeats);
     visit("outliers", part.outliers);
     visit("outlier_level", part.outlierLevel);
+    visit("robust", part.robust);
+    visit("tolerance_share", part.toleranceShare);
+    visit("exclusion_limit", part.exclusionLimit);
     visit("separate_directions", part.separateDirections);
 }
 
@@ -261,6 +265,17 @@ void fields(P& part, V&& visit)
     visit("date", part.date);
 }
 
+template <class P, class V>
+void fields(P& part, V&& visit)
+    requires std::same_as<std::remove_const_t<P>, Dismissal>
+{
+    visit("finding", part.finding);
+    visit("figures", part.figures);
+    visit("reason", part.reason);
+    visit("by", part.by);
+    visit("date", part.date);
+}
+
 /// The parts of a record that are changed as a whole (all but readings, exclusions and journal), in the order of the file.
 template <class R, class V>
 void parts(R& record, V&& visit)
@@ -275,6 +290,7 @@ void parts(R& record, V&& visit)
     visit("budget", record.budget);
     visit("limits", record.limits);
     visit("signoffs", record.signOffs);
+    visit("dismissals", record.dismissals);
 }
 
 } // namespace spanwright

@@ -4,6 +4,7 @@
 #include "core/base/Shared.h"
 #include "core/record/BudgetLine.h"
 #include "core/record/Choices.h"
+#include "core/record/Dismissal.h"
 #include "core/record/Exclusion.h"
 #include "core/record/Job.h"
 #include "core/record/Journal.h"
@@ -31,6 +32,7 @@ struct Record {
     BudgetInput budget;
     Limits limits;
     std::vector<SignOff> signOffs;
+    std::vector<Dismissal> dismissals;
 
     Shared<Journal> journal;
     ReadingId nextReadingId = 1; ///< never handed out twice, not even after an undo
