@@ -1,0 +1,146 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "ui/plot/PlotInk.h"
+
+#include "ui/look/Look.h"
+
+#include <QFontMetricsF>
+#include <QPainter>
+
+#include <algorithm>
+
+namespace spanwright {
+
+PlotInk::PlotInk(QGraphicsItem* parent) : QGraphicsObject(parent) {
+    setAcceptedMouseButtons(Qt::NoButton);
+}
+
+void PlotInk::setFrame(const PlotFrame& frame) {
+    prepareGeometryChange();
+    frame_ = frame;
+}
+
+void PlotInk::setAxes(Axes axes) {
+    axes_ = std::move(axes);
+    update();
+}
+
+void PlotInk::setStrokes(std::vector<PlotStroke> strokes) {
+    strokes_ = std::move(strokes);
+    update();
+}
+
+void PlotInk::setNotes(std::vector<PlotNote> notes) {
+    notes_ = std::move(notes);
+    update();
+}
+
+void PlotInk::setEmptyText(const QString& text) {
+    emptyText_ = text;
+    update();
+}
+
+double PlotInk::numbersWidth() const {
+    const QFontMetricsF metrics(textFont(TextRole::Small));
+    double width = metrics.horizontalAdvance(axes_.yUnit);
+    for (const double place : axes_.y.places)
+        width = std::max(width, metrics.horizontalAdvance(tickText(place, axes_.y, axes_.ySign)));
+    return width;
+}
+
+QRectF PlotInk::boundingRect() const {
+    return frame_.area.adjusted(-200, -40, 60, 60);
+}
+
+void PlotInk::paint(QPainter* painter, const QStyleOptionGraphicsItem*, QWidget*) {
+    painter->setFont(textFont(TextRole::Small));
+    if (!emptyText_.isEmpty()) {
+        painter->setPen(scheme().quiet);
+        painter->setFont(textFont(TextRole::Body));
+        painter->drawText(frame_.area.adjusted(16, 0, -16, 0), Qt::AlignCenter | Qt::TextWordWrap, emptyText_);
+        return;
+    }
+    if (!frame_.usable())
+        return;
+    paintNumbers(*painter);
+    for (const PlotStroke& stroke : strokes_)
+        paintStroke(*painter, stroke);
+    paintNotes(*painter);
+}
+
+void PlotInk::paintNumbers(QPainter& painter) const {
+    const QFontMetricsF metrics(painter.font());
+    const double line = metrics.height();
+    painter.setPen(scheme().quiet);
+    for (const double place : axes_.y.places)
+        painter.drawText(QRectF(frame_.area.left() - 208, frame_.toY(place) - line / 2, 200, line),
+                         Qt::AlignRight | Qt::AlignVCenter, tickText(place, axes_.y, axes_.ySign));
+    if (!axes_.yUnit.isEmpty())
+        painter.drawText(QRectF(frame_.area.left() - 208, frame_.area.top() - line - 3, 200, line),
+                         Qt::AlignRight | Qt::AlignBottom, axes_.yUnit);
+    const double top = frame_.area.bottom() + 6;
+    for (std::size_t i = 0; i < axes_.x.places.size(); ++i) {
+        const bool named = i < axes_.xNames.size();
+        QString text = named ? axes_.xNames[i] : tickText(axes_.x.places[i], axes_.x, TickSign::Minus);
+        const double width = metrics.horizontalAdvance(text);
+        double left = frame_.toX(axes_.x.places[i]) - width / 2;
+        if (i + 1 == axes_.x.places.size() && !axes_.xUnit.isEmpty())
+            text += QLatin1Char(' ') + axes_.xUnit;
+        left = std::min(left, frame_.area.right() + 16 - metrics.horizontalAdvance(text));
+        painter.drawText(QPointF(left, top + metrics.ascent()), text);
+    }
+}
+
+void PlotInk::paintStroke(QPainter& painter, const PlotStroke& stroke) const {
+    if (stroke.points.empty())
+        return;
+    QPolygonF line;
+    for (const QPointF& value : stroke.points)
+        line << frame_.toPoint(value);
+    painter.save();
+    painter.setClipRect(frame_.area.adjusted(-4, -4, 4, 4));
+    painter.setPen(QPen(stroke.color, stroke.width, stroke.style, Qt::FlatCap, Qt::RoundJoin));
+    painter.setBrush(Qt::NoBrush);
+    painter.drawPolyline(line);
+    if (stroke.dots) {
+        painter.setPen(QPen(scheme().card, 1));
+        painter.setBrush(stroke.color);
+        for (const QPointF& at : line)
+            painter.drawEllipse(at, 3.5, 3.5);
+    }
+    painter.restore();
+    if (stroke.label.isEmpty())
+        return;
+    const QFontMetricsF metrics(painter.font());
+    const QSizeF size(metrics.horizontalAdvance(stroke.label) + 4, metrics.height());
+    QPointF at = line.back() + stroke.labelOffset - QPointF(0, size.height() / 2);
+    at.setX(std::clamp(at.x(), frame_.area.left(), std::max(frame_.area.left(), frame_.area.right() - size.width())));
+    at.setY(std::clamp(at.y(), frame_.area.top(), frame_.area.bottom() - size.height()));
+    QColor ground = scheme().card;
+    ground.setAlphaF(0.82F);
+    painter.fillRect(QRectF(at, size), ground);
+    painter.setPen(stroke.color);
+    painter.drawText(QRectF(at, size), Qt::AlignCenter, stroke.label);
+}
+
+/// Notes of one corner stand below each other; each on a ground of the card's colour, so that marks do not run through words.
+void PlotInk::paintNotes(QPainter& painter) const {
+    const QFontMetricsF metrics(painter.font());
+    double topUsed = 0, bottomUsed = 0;
+    for (const PlotNote& note : notes_) {
+        const double widest = frame_.area.width() - 12;
+        const QString text = metrics.elidedText(note.text, Qt::ElideRight, widest);
+        const QSizeF size(metrics.horizontalAdvance(text) + 8, metrics.height() + 2);
+        const bool right = note.corner.testFlag(Qt::AlignRight), bottom = note.corner.testFlag(Qt::AlignBottom);
+        double& used = bottom ? bottomUsed : topUsed;
+        const QPointF corner(right ? frame_.area.right() - size.width() - 2 : frame_.area.left() + 6,
+                             bottom ? frame_.area.bottom() - size.height() - 4 - used : frame_.area.top() + 4 + used);
+        used += size.height();
+        QColor ground = scheme().card;
+        ground.setAlphaF(0.82F);
+        painter.fillRect(QRectF(corner, size), ground);
+        painter.setPen(note.strong ? scheme().ink : scheme().quiet);
+        painter.drawText(QRectF(corner, size), Qt::AlignCenter, text);
+    }
+}
+
+} // namespace spanwright

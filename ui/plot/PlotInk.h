@@ -1,0 +1,73 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "ui/plot/PlotFrame.h"
+
+#include <QColor>
+#include <QGraphicsObject>
+
+#include <vector>
+
+namespace spanwright {
+
+/// A line drawn over a plot, in the units of its axes, with a word at its end.
+struct PlotStroke {
+    std::vector<QPointF> points;
+    QColor color;
+    double width = 1.5;
+    Qt::PenStyle style = Qt::SolidLine;
+    bool dots = false;  ///< a dot at every point
+    QString label{};    ///< beside the last point
+    QPointF labelOffset{6, 0};
+};
+
+/// Words inside a plot, at a corner of its rectangle.
+struct PlotNote {
+    QString text;
+    Qt::Alignment corner = Qt::AlignRight | Qt::AlignBottom;
+    bool strong = true;
+};
+
+/// Numbers at the axes, their units, lines over the plot and words in it.
+class PlotInk : public QGraphicsObject {
+    Q_OBJECT
+
+  public:
+    explicit PlotInk(QGraphicsItem* parent = nullptr);
+
+    struct Axes {
+        Ticks x, y;
+        TickSign ySign = TickSign::Minus;
+        QString xUnit, yUnit;
+        std::vector<QString> xNames; ///< instead of numbers, one a tick; may be empty
+    };
+
+    void setFrame(const PlotFrame& frame);
+    void setAxes(Axes axes);
+    void setStrokes(std::vector<PlotStroke> strokes);
+    void setNotes(std::vector<PlotNote> notes);
+    /// Words in the middle of a plot that has nothing to show.
+    void setEmptyText(const QString& text);
+
+    [[nodiscard]] const std::vector<PlotStroke>& strokes() const { return strokes_; }
+    [[nodiscard]] const std::vector<PlotNote>& notes() const { return notes_; }
+    [[nodiscard]] const QString& emptyText() const { return emptyText_; }
+    /// Width that the numbers at the vertical axis need.
+    [[nodiscard]] double numbersWidth() const;
+
+    [[nodiscard]] QRectF boundingRect() const override;
+    void paint(QPainter* painter, const QStyleOptionGraphicsItem* option, QWidget* widget) override;
+
+  private:
+    void paintNumbers(QPainter& painter) const;
+    void paintStroke(QPainter& painter, const PlotStroke& stroke) const;
+    void paintNotes(QPainter& painter) const;
+
+    PlotFrame frame_;
+    Axes axes_;
+    std::vector<PlotStroke> strokes_;
+    std::vector<PlotNote> notes_;
+    QString emptyText_;
+};
+
+} // namespace spanwright
