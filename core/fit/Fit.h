@@ -45,6 +45,8 @@ struct Fit {
     std::vector<double> covariance; ///< p × p, row by row
     double residualSd = 0;          ///< s = √(Σ w e² / ν); a pure number when weighted
     int degreesOfFreedom = 0;       ///< ν = n − p
+    double totalSs = 0, regressionSs = 0, residualSs = 0; ///< Σ w (…)², rounded from double-double; they add up
+    int totalDf = 0, regressionDf = 0; ///< total is about the mean (n − 1), or about zero (n) for a function without a constant
     std::optional<double> rSquared; ///< regression over total; empty when total is 0
     std::optional<double> chiSquared, chiSquaredP; ///< with stated uncertainties
     double coverageFactor = 0;      ///< quantile that multiplies a standard uncertainty of the fit for `coverage`

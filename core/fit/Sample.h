@@ -7,6 +7,7 @@
 
 #include <cstdint>
 #include <span>
+#include <string>
 #include <vector>
 
 namespace spanwright {
@@ -35,10 +36,18 @@ struct Sample {
     std::vector<double> groupValue;        ///< set points in rising order: the stated one, else the reference itself
     std::vector<std::int32_t> run;         ///< empty when no run is known
     std::vector<Direction> direction;      ///< empty when no direction is known
+    std::string referenceUnit, indicationUnit;
+    std::size_t excluded = 0;              ///< complete readings of the phase that were left out
     std::vector<Warning> warnings;         ///< ColumnNotExact, IncompleteReadings, …
 
     [[nodiscard]] std::size_t size() const { return rows.size(); }
 };
+
+/// The readings of a phase that count. A constant function needs no reference: then a reading without one counts too, with a
+/// reference of 0. Corrections are interpolated linearly in the standard's table and constant beyond its ends.
+Sample makeSample(const Record& record, Phase phase);
+/// The same with the excluded readings among them, to show what excluding did.
+Sample makeSampleWithExcluded(const Record& record, Phase phase);
 
 /// Residuals e = y − ŷ of the readings of a sample, unit of the ordinate, with the weights w of the fit (empty: all 1).
 struct Residuals {

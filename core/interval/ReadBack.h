@@ -20,6 +20,13 @@ struct ReadBackAnswer {
     std::vector<Warning> warnings;
 };
 
+/// The set {x : |y − f(x)| ≤ k √(u²(f(x)) + σ²(x)/q)}, so that a value is in it exactly when the indication is in the band there:
+/// for a line the closed form of Fieller (1954), which may be all values, or all but a finite gap (then low and high are infinite,
+/// and NoFiniteInterval carries the gap); for curves the ends next to the answer, sought over the calibrated range and a span on
+/// either side, and infinite when they are not met there. Standard uncertainty: √(u²(f) + σ²/q)/|f′| (GUM 5.1.2; ISO/TS 28037:2010,
+/// 11.1). A function that gives the reference is evaluated: its value with ± k √(u²(f) + σ²/q).
+///
+/// Warnings: NoAnswer, SeveralAnswers, Extrapolated, NoFiniteInterval (facts: value).
 /// `repeats`: number of new readings of which `indication` is the mean; empty: an exact indication.
 ReadBackAnswer readBack(const Fit& fit, double indication, std::optional<int> repeats);
 

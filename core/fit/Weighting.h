@@ -1,0 +1,39 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "core/base/Result.h"
+#include "core/fit/Sample.h"
+#include "core/record/Choices.h"
+
+#include <vector>
+
+namespace spanwright {
+
+/// A variance that varies along the abscissa: linear between the places where it is known and constant beyond them.
+class VarianceProfile {
+  public:
+    VarianceProfile() = default;
+    /// Mean of `variance` over equal abscissae.
+    VarianceProfile(const std::vector<double>& x, const std::vector<double>& variance);
+    /// 1 where nothing is known.
+    [[nodiscard]] double at(double x) const;
+    [[nodiscard]] bool constant() const;
+
+  private:
+    std::vector<double> x_, variance_;
+};
+
+/// Weights w_i = 1/u_i² of the readings with the variance of a reading along the abscissa that they stand for.
+struct Weighting {
+    std::vector<DoubleDouble> rootWeight; ///< 1/u_i; empty: all 1
+    VarianceProfile profile;              ///< u²
+};
+
+/// Weights from the stated standard uncertainties of the ordinate. A new reading is taken to have the uncertainty that was stated
+/// at its place. Errors: UncertaintyMissing, UncertaintyNotPositive (facts: rows).
+Result<Weighting> statedWeighting(const Sample& sample, const PairColumn& x, const PairColumn& u);
+
+/// Data rows from 1 as a fact, "3, 7, 12, …".
+std::string rowsFact(const Sample& sample, const std::vector<std::size_t>& at);
+
+} // namespace spanwright
