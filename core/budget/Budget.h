@@ -25,6 +25,7 @@ struct BudgetItem {
     double contribution = 0;        ///< |c| u, unit of the indication
     double share = 0;               ///< of the combined variance
     bool common = false;            ///< the same for all points (one standard)
+    bool fromOtherPhase = false;    ///< a spread that the readings before (or after) adjustment showed
 };
 
 /// The budget of the error of indication at one set point.

@@ -24,6 +24,7 @@ struct Spread {
 /// What the readings of the phase say about their own spread.
 struct Spreads {
     std::optional<Spread> repeatability, runs;
+    bool otherPhase = false;
     Side side = Side::Indication; ///< the unit that they are in
 };
 
@@ -65,17 +66,27 @@ std::optional<Spread> pooled(const Item& item, const Sample& sample) {
     return df > 0 ? std::optional(Spread{ss / df, df}) : std::nullopt;
 }
 
-Spreads spreadsOf(const Record& record, const Sample& sample, const Fit* fit, const VarianceSplit* split) {
+/// Where direction is known, pure error holds the hysteresis and is no measure of repeatability.
+void takeFrom(const VarianceSplit& split, Spreads& spreads) {
+    spreads.repeatability = spreadOf(split.repeatability);
+    if (!spreads.repeatability && !split.hysteresis)
+        spreads.repeatability = spreadOf(split.pureError);
+    spreads.runs = componentOf(split, SplitPart::RunOffset);
+}
+
+Spreads spreadsOf(const Record& record, const Sample& sample, const Fit* fit, const VarianceSplit* split,
+                  const VarianceSplit* otherPhase) {
     Spreads spreads;
     if (fit == nullptr || split == nullptr) {
         spreads.repeatability = pooled(record.item, sample);
         return spreads;
     }
     spreads.side = fit->direction == FitDirection::Indication ? Side::Indication : Side::Reference;
-    spreads.repeatability = spreadOf(split->repeatability);
-    if (!spreads.repeatability)
-        spreads.repeatability = spreadOf(split->pureError);
-    spreads.runs = componentOf(*split, SplitPart::RunOffset);
+    takeFrom(*split, spreads);
+    if (!spreads.repeatability && otherPhase != nullptr) {
+        takeFrom(*otherPhase, spreads);
+        spreads.otherPhase = true;
+    }
     return spreads;
 }
 
@@ -129,6 +140,15 @@ class Lines {
 
     void addReferenceResolution() { addResolution(DerivedLine::ReferenceResolution, Side::Reference, record_.item.referenceResolution, StandardRole::Reference); }
     void addIndicationResolution() { addResolution(DerivedLine::IndicationResolution, Side::Indication, record_.item.resolution, StandardRole::Indication); }
+
+    /// The spread of a mean of `n`.
+    void addSpread(DerivedLine line, Side side, const Spread& spread, std::size_t n, bool fromOtherPhase) {
+        const std::size_t before = items_.size();
+        add(line, side, Distribution::Student, std::sqrt(spread.variance * place_.weightScale), std::sqrt(static_cast<double>(n)),
+            spread.degreesOfFreedom);
+        if (items_.size() > before)
+            items_.back().fromOtherPhase = fromOtherPhase;
+    }
 
     void addManual() {
         for (const ManualBudgetLine& line : record_.budget.lines) {
@@ -185,16 +205,10 @@ SetPointBudget budgetAt(const Record& record, const PointMeans& point, const Fit
     lines.addStandards();
     lines.addReferenceResolution();
     lines.addIndicationResolution();
-    if (spreads.repeatability) {
-        const double s = std::sqrt(spreads.repeatability->variance * place.weightScale);
-        lines.add(DerivedLine::Repeatability, spreads.side, Distribution::Student, s, std::sqrt(static_cast<double>(point.n)),
-                  spreads.repeatability->degreesOfFreedom);
-    }
-    if (spreads.runs) {
-        const double s = std::sqrt(spreads.runs->variance * place.weightScale);
-        lines.add(DerivedLine::RunToRun, spreads.side, Distribution::Student, s, std::sqrt(static_cast<double>(point.runs)),
-                  spreads.runs->degreesOfFreedom);
-    }
+    if (spreads.repeatability)
+        lines.addSpread(DerivedLine::Repeatability, spreads.side, *spreads.repeatability, point.n, spreads.otherPhase);
+    if (spreads.runs)
+        lines.addSpread(DerivedLine::RunToRun, spreads.side, *spreads.runs, point.runs, spreads.otherPhase);
     if (point.gap)
         lines.add(DerivedLine::Hysteresis, Side::Indication, Distribution::Rectangular, std::fabs(*point.gap) / 2,
                   divisorOf(Distribution::Rectangular), Infinite);
@@ -233,10 +247,11 @@ std::optional<SetPointBudget> worstReadBack(const Record& record, const Fit& fit
 
 } // namespace
 
-Budget makeBudget(const Record& record, const Sample& sample, const Fit* fit, const VarianceSplit* split) {
+Budget makeBudget(const Record& record, const Sample& sample, const Fit* fit, const VarianceSplit* split,
+                  const VarianceSplit* otherPhase) {
     Budget budget;
     budget.coverage = record.budget.coverage.toDouble();
-    const Spreads spreads = spreadsOf(record, sample, fit, split);
+    const Spreads spreads = spreadsOf(record, sample, fit, split, otherPhase);
     if (!spreads.repeatability)
         budget.warnings.push_back({WarningCode::FigureUndefined, {{"figure", "repeatability"}, {"reason", "no-replicates"}}});
     for (const PointMeans& point : pointMeans(record, sample, fit))

@@ -26,7 +26,11 @@ namespace spanwright {
 /// the function, scatter of one reading about it (which holds repeatability, runs, hysteresis and the rounding of the
 /// indication), the standards, the resolution of the reference, lines by hand.
 ///
-/// fit and split may be null. Warning FigureUndefined (figure: repeatability, reason: no-replicates) where nothing is repeated.
-Budget makeBudget(const Record& record, const Sample& sample, const Fit* fit, const VarianceSplit* split);
+/// Where each point and direction of the phase was read only once, repeatability and run to run are taken from `otherPhase`: an
+/// adjustment of zero and span does not change the scatter (pooled estimate, JCGM 100:2008, 4.2.4).
+///
+/// fit, split and otherPhase may be null. Warning FigureUndefined (figure: repeatability, reason: no-replicates) where nothing is repeated.
+Budget makeBudget(const Record& record, const Sample& sample, const Fit* fit, const VarianceSplit* split,
+                  const VarianceSplit* otherPhase = nullptr);
 
 } // namespace spanwright
