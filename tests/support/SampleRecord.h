@@ -10,6 +10,10 @@ namespace spanwright::test {
 /// the authorisation. Its journal is empty.
 Record pressureTransmitter();
 
+/// The same record as its people made it, change by change through the commands of the window, so with its journal: the job first,
+/// then every reading as it was typed, one with two digits exchanged and put right, then the signatures.
+Record pressureTransmitterAsTaken();
+
 /// A number from its text; the text must be a number.
 Decimal number(const char* text);
 
