@@ -29,6 +29,12 @@ struct CellIssues {
     void add(CellIssue issue);
 };
 
+/// A column to read, and as what: by its rule, or as text whatever it holds.
+struct WantedColumn {
+    std::size_t source = 0; ///< index in CsvRules::columns
+    ColumnKind kind = ColumnKind::Number;
+};
+
 /// The cells of one column that was asked for; only the member of its kind is filled.
 struct TableColumn {
     std::size_t source = 0; ///< index in CsvRules::columns
@@ -46,10 +52,9 @@ struct Table {
     CellIssues issues;
 };
 
-/// Reads the columns `wanted` (indices in rules.columns, each by its kind). Lines without anything are passed over; every other
-/// line is a row. Errors: as guessRules(); NumberTooLarge and the like are issues of a cell, never errors of the whole.
-/// Cancelled.
-Result<Table> readTable(std::string_view bytes, const CsvRules& rules, std::span<const std::size_t> wanted, Progress& progress);
+
+Result<Table> readTable(std::string_view bytes, const CsvRules& rules, std::span<const WantedColumn> wanted,
+                        Progress& progress);
 
 /// A cell before it is taken in.
 struct PreviewCell {
