@@ -14,7 +14,38 @@ struct WarningText {
 
   public:
     static QString of(WarningCode code, Sentence& facts);
+    /// Why a figure does not exist, from the reason's code; a code that is not in the list stands as words.
+    static QString reason(Sentence& facts);
 };
+
+QString WarningText::reason(Sentence& facts) {
+    static const struct {
+        const char* code;
+        const char* words;
+    } known[] = {
+        {"no-output-range", QT_TR_NOOP("the item's output range is not stated")},
+        {"no-replicates", QT_TR_NOOP("no set point was read more than once in the same direction")},
+        {"no-replicates-everywhere", QT_TR_NOOP("not every set point was read more than once")},
+        {"no-degrees-of-freedom", QT_TR_NOOP("no degrees of freedom are left")},
+        {"no-spread", QT_TR_NOOP("the readings do not vary")},
+        {"no-stated-uncertainties", QT_TR_NOOP("no uncertainties are stated for the readings")},
+        {"one-direction", QT_TR_NOOP("no set point was approached from both directions")},
+        {"one-run", QT_TR_NOOP("there is only one run")},
+        {"no-answer", QT_TR_NOOP("no reference value in the range belongs to the indication")},
+        {"no-finite-interval", QT_TR_NOOP("the interval has no finite end")},
+        {"too-few-readings", QT_TR_NOOP("there are too few readings")},
+        {"three-to-5000-readings", QT_TR_NOOP("the test takes from 3 to 5000 readings")},
+        {"no-slope-in-function", QT_TR_NOOP("the function does not change with the abscissa")},
+        {"not-a-line", QT_TR_NOOP("it is tested for a straight line over at least four readings and three set points")},
+        {"no-set-points", QT_TR_NOOP("the readings give too few set points")},
+        {"takes-no-part", QT_TR_NOOP("the reading takes no part in the fit, or decides a coefficient alone")},
+    };
+    const QString code = facts.plain("reason", tr("the readings do not give it"));
+    for (const auto& entry : known)
+        if (code == QLatin1String(entry.code))
+            return tr(entry.words);
+    return QString(code).replace(QLatin1Char('-'), QLatin1Char(' '));
+}
 
 QString WarningText::of(WarningCode code, Sentence& facts) {
     switch (code) {
@@ -46,8 +77,8 @@ QString WarningText::of(WarningCode code, Sentence& facts) {
     case WarningCode::IncompleteReadings:
         return tr("%1 readings lack a reference or an indication and do not count.").arg(facts.plain("count", tr("Some")));
     case WarningCode::FigureUndefined:
-        return tr("%1 does not exist here: %2.")
-            .arg(facts.plain("figure", tr("A figure")), facts.plain("reason", tr("the readings do not give it")));
+        return tr("%1: not given, because %2.")
+            .arg(facts.plain("figure", tr("A figure")), reason(facts));
     case WarningCode::ApproximateMethod:
         return tr("%1 is an approximation: %2.")
             .arg(facts.plain("figure", tr("A figure")), facts.plain("method", tr("no exact method exists")));

@@ -1,0 +1,187 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/evaluate/evaluate.h"
+
+#include "core/budget/makeBudget.h"
+#include "core/evaluate/Dates.h"
+#include "core/evaluate/RowTable.h"
+#include "core/fit/fitFunction.h"
+#include "core/verdict/makeVerdict.h"
+
+#include <algorithm>
+
+namespace spanwright {
+
+namespace {
+
+constexpr std::size_t CurvePoints = 241;
+constexpr double BeyondRange = 0.03; ///< share of the range by which the curve is drawn further on both sides
+
+struct Range {
+    double low = 0, high = 0;
+};
+
+Range rangeOf(const std::vector<double>& values) {
+    const auto [low, high] = std::minmax_element(values.begin(), values.end());
+    return low == values.end() ? Range{} : Range{*low, *high};
+}
+
+const std::vector<double>& abscissa(const Sample& sample, FitDirection direction) {
+    return direction == FitDirection::Indication ? sample.reference.high : sample.indication.high;
+}
+
+double largestHalfWidth(const Fit& fit, double low, double high) {
+    double largest = 0;
+    for (const BandPoint& point : bandCurve(fit, low, high, CurvePoints))
+        largest = std::max(largest, (point.newReading.high - point.newReading.low) / 2);
+    return largest;
+}
+
+/// The steps for one phase, in the order in which they follow from each other.
+class PhaseSteps {
+  public:
+    PhaseSteps(const Record& record, Phase phase, Progress& progress)
+        : record_(record), choices_(record.choices), progress_(progress), used_(makeSample(record, phase)) {
+        result_.phase = phase;
+    }
+
+    Result<PhaseEvaluation> run() {
+        count();
+        if (result_.excluded > 0)
+            withExcluded_ = makeSampleWithExcluded(record_, result_.phase);
+        const Result<FitOutcome> fitted = fitFunction(used_, choices_);
+        if (progress_.cancelled())
+            return Error(ErrorCode::Cancelled);
+        progress_.report(0.4);
+        if (fitted)
+            result_.fit = fitted->fit;
+        else
+            result_.notFitted = fitted.error();
+        const Residuals* residuals = fitted ? &fitted->residuals : nullptr;
+        result_.rows = rowTable({record_, result_.phase, used_, all(), fit(), residuals});
+        if (fit() != nullptr) {
+            draw();
+            answer();
+            compare();
+        }
+        if (progress_.cancelled())
+            return Error(ErrorCode::Cancelled);
+        progress_.report(0.8);
+        decide();
+        gatherWarnings();
+        return std::move(result_);
+    }
+
+  private:
+    [[nodiscard]] const Sample& all() const { return withExcluded_ ? *withExcluded_ : used_; }
+    [[nodiscard]] const Fit* fit() const { return result_.fit ? &*result_.fit : nullptr; }
+
+    void count() {
+        const ReadingColumns& readings = *record_.readings;
+        result_.readings = static_cast<std::size_t>(std::count(readings.phases().begin(), readings.phases().end(), result_.phase));
+        result_.excluded = used_.excluded;
+        result_.complete = used_.size() + used_.excluded;
+        result_.planned = plannedReadings(record_.plan, result_.phase).size();
+    }
+
+    void draw() {
+        const Range range = rangeOf(abscissa(all(), result_.fit->direction));
+        const double beyond = BeyondRange * (range.high - range.low);
+        if (range.high > range.low)
+            result_.curve = bandCurve(*result_.fit, range.low - beyond, range.high + beyond, CurvePoints);
+        else
+            result_.curve = {bandAt(*result_.fit, range.low)};
+    }
+
+    void answer() {
+        for (const Decimal& x : choices_.at) {
+            result_.at.push_back(bandAt(*result_.fit, x.toDouble()));
+            if (!result_.at.back().inside)
+                result_.warnings.push_back({WarningCode::Extrapolated, {{"value", x.text()}}});
+        }
+        for (const Decimal& y : choices_.read)
+            result_.read.push_back(readBack(*result_.fit, y.toDouble(), choices_.repeats));
+    }
+
+    /// The same fit with the excluded readings among them.
+    void compare() {
+        if (!withExcluded_)
+            return;
+        const Result<FitOutcome> other = fitFunction(*withExcluded_, choices_);
+        if (!other)
+            return;
+        result_.withoutExclusions = WithoutExclusions{other->fit.coefficients, other->fit.residualSd,
+                                                      largestHalfWidth(other->fit, other->fit.low, other->fit.high)};
+    }
+
+    void decide() {
+        if (used_.size() == 0)
+            return;
+        const VarianceSplit* split = result_.split ? &*result_.split : nullptr;
+        result_.budget = makeBudget(record_, used_, fit(), split);
+        result_.verdict = makeVerdict(record_, used_, fit(), result_.budget);
+    }
+
+    void gatherWarnings() {
+        const auto take = [&](const std::vector<Warning>& warnings) {
+            for (const Warning& warning : warnings)
+                if (std::find(result_.warnings.begin(), result_.warnings.end(), warning) == result_.warnings.end())
+                    result_.warnings.push_back(warning);
+        };
+        take(used_.warnings);
+        if (result_.fit)
+            take(result_.fit->warnings);
+        if (result_.split)
+            take(result_.split->warnings);
+        for (const ReadBackAnswer& answer : result_.read)
+            take(answer.warnings);
+        take(result_.budget.warnings);
+        take(result_.verdict.warnings);
+    }
+
+    const Record& record_;
+    const Choices& choices_;
+    Progress& progress_;
+    Sample used_;
+    std::optional<Sample> withExcluded_;
+    PhaseEvaluation result_;
+};
+
+std::string dayOfMeasurement(const Record& record) {
+    if (!record.job.calibrated.empty())
+        return record.job.calibrated;
+    const std::vector<std::int64_t>& times = record.readings->enteredAt();
+    const auto last = std::max_element(times.begin(), times.end());
+    return last == times.end() || *last == 0 ? std::string() : dateOf(*last);
+}
+
+std::vector<Evaluation::OverdueStandard> overdueStandards(const Record& record, const std::string& day) {
+    std::vector<Evaluation::OverdueStandard> overdue;
+    const auto measured = dayNumber(day);
+    for (std::size_t i = 0; measured && i < record.standards.size(); ++i) {
+        const auto due = dayNumber(record.standards[i].due);
+        if (due && *due < *measured)
+            overdue.push_back({i, static_cast<int>(*measured - *due)});
+    }
+    return overdue;
+}
+
+} // namespace
+
+Result<Evaluation> evaluate(const Record& record, Progress& progress) {
+    Evaluation evaluation;
+    evaluation.calibrated = dayOfMeasurement(record);
+    evaluation.overdue = overdueStandards(record, evaluation.calibrated);
+    for (const Phase phase : bothPhases) {
+        const std::vector<Phase>& phases = record.readings->phases();
+        if (std::find(phases.begin(), phases.end(), phase) == phases.end())
+            continue;
+        Result<PhaseEvaluation> result = PhaseSteps(record, phase, progress).run();
+        if (!result)
+            return result.error();
+        evaluation.phases[static_cast<std::size_t>(phase)] = std::move(result).value();
+    }
+    progress.report(1);
+    return evaluation;
+}
+
+} // namespace spanwright
