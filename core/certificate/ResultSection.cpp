@@ -1,0 +1,145 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/certificate/ResultSection.h"
+
+#include "core/base/Rounding.h"
+#include "core/certificate/ShortText.h"
+
+#include <algorithm>
+#include <cmath>
+
+namespace spanwright {
+
+namespace {
+
+constexpr int FactorDecimals = 2;
+
+Digits optionalText(const std::optional<double>& value, int decimals) {
+    return value ? roundedText(*value, decimals) : Digits{};
+}
+
+Digits percentText(double probability) {
+    if (probability > 0.9995)
+        return ">99.9";
+    if (probability < 0.0005)
+        return "<0.1";
+    return roundedText(100 * probability, 1);
+}
+
+ResultLine resultLine(const PointResult& point) {
+    ResultLine line;
+    line.setPoint = shortText(point.setPoint);
+    line.direction = point.direction;
+    line.n = point.n;
+    const RoundedUncertainty u = roundUncertainty(point.expanded);
+    const RoundedUncertainty uReference = roundUncertainty(point.expandedReference);
+    const RoundedUncertainty uPercent = roundUncertainty(point.expandedPercentOfSpan);
+    line.expanded = u.text;
+    line.expandedReference = uReference.text;
+    line.expandedPercent = uPercent.text;
+    line.reference = roundedText(point.reference, uReference.decimals);
+    line.indication = roundedText(point.indication, u.decimals);
+    line.rising = optionalText(point.rising, u.decimals);
+    line.falling = optionalText(point.falling, u.decimals);
+    line.error = roundedText(point.error, u.decimals);
+    line.errorPercent = roundedText(point.errorPercentOfSpan, uPercent.decimals);
+    line.coverageFactor = roundedText(point.coverageFactor, FactorDecimals);
+    line.limit = optionalText(point.limit, u.decimals);
+    if (point.acceptance && *point.acceptance >= 0)
+        line.acceptance = roundedText(*point.acceptance, u.decimals);
+    line.state = point.state;
+    if (point.conformanceProbability)
+        line.conformance = percentText(*point.conformanceProbability);
+    line.drawn = {point.reference, point.error, point.expanded, point.limit, point.acceptance};
+    return line;
+}
+
+BudgetRow budgetRow(const BudgetItem& item, int decimals) {
+    constexpr int digits = 3;
+    BudgetRow row;
+    row.derived = item.derived;
+    row.name = item.name;
+    row.fromOtherPhase = item.fromOtherPhase;
+    row.side = item.side;
+    row.distribution = item.distribution;
+    row.amount = significantDigits(item.amount, digits);
+    row.divisor = shortText(std::stod(significantDigits(item.divisor, digits)));
+    row.standardUncertainty = significantDigits(item.standardUncertainty, digits);
+    row.degreesOfFreedom = std::isfinite(item.degreesOfFreedom) ? shortText(std::stod(roundedText(item.degreesOfFreedom, 1))) : Digits{};
+    row.sensitivity = shortText(std::stod(significantDigits(item.sensitivity, digits + 1)));
+    row.contribution = roundedText(item.contribution, decimals);
+    row.share = item.share;
+    return row;
+}
+
+BudgetSection budgetSection(const SetPointBudget& budget) {
+    BudgetSection section;
+    section.setPoint = shortText(budget.setPoint);
+    section.direction = budget.direction;
+    const int decimals = decimalsFor(budget.combined, 3);
+    for (const BudgetItem& item : budget.items)
+        section.rows.push_back(budgetRow(item, decimals));
+    section.combined = roundedText(budget.combined, decimals);
+    if (std::isfinite(budget.effectiveDegreesOfFreedom))
+        section.degreesOfFreedom = roundedText(budget.effectiveDegreesOfFreedom, 0);
+    section.coverageFactor = roundedText(budget.coverageFactor, FactorDecimals);
+    section.expanded = roundUncertainty(budget.expanded).text;
+    section.expandedReference = roundUncertainty(budget.expandedReference).text;
+    section.distribution = budget.distribution;
+    return section;
+}
+
+std::vector<PerformanceRow> performanceRows(const ProcessFigures& figures, int decimals) {
+    using Kind = PerformanceRow::Kind;
+    const std::pair<Kind, const std::optional<ProcessFigure>*> all[] = {
+        {Kind::MeasuredError, &figures.measuredErrorMax},
+        {Kind::InaccuracyHigh, &figures.inaccuracyHigh},
+        {Kind::InaccuracyLow, &figures.inaccuracyLow},
+        {Kind::Hysteresis, &figures.hysteresis},
+        {Kind::HysteresisInRun, &figures.hysteresisInCycle},
+        {Kind::NonRepeatability, &figures.nonRepeatability},
+        {Kind::NonLinearityTerminal, &figures.nonLinearityTerminal},
+        {Kind::NonLinearityIndependent, &figures.nonLinearityIndependent},
+        {Kind::NonLinearityZeroBased, &figures.nonLinearityZeroBased}};
+    constexpr int percentDecimals = 3;
+    std::vector<PerformanceRow> rows;
+    for (const auto& [kind, figure] : all)
+        if (*figure)
+            rows.push_back({kind, roundedText((*figure)->value, decimals), roundedText((*figure)->percentOfSpan, percentDecimals),
+                            shortText((*figure)->setPoint)});
+    return rows;
+}
+
+} // namespace
+
+PhaseSection phaseSection(const Record& record, const PhaseEvaluation& phase) {
+    PhaseSection section;
+    section.phase = phase.phase;
+    section.readings = phase.complete;
+    section.excluded = phase.excluded;
+    section.used = phase.complete - phase.excluded;
+    section.directionsSeparate = record.choices.separateDirections;
+    double smallest = INFINITY, largest = 0;
+    for (const PointResult& point : phase.verdict.points) {
+        section.results.push_back(resultLine(point));
+        section.errorKnown = section.errorKnown || std::isfinite(point.error);
+        smallest = std::min(smallest, point.coverageFactor);
+        largest = std::max(largest, point.coverageFactor);
+    }
+    section.smallestFactor = roundedText(smallest, FactorDecimals);
+    section.largestFactor = roundedText(largest, FactorDecimals);
+    section.overall = phase.verdict.overall;
+    const auto& budgets = phase.budget.points;
+    section.rectangular = std::any_of(budgets.begin(), budgets.end(), [](const SetPointBudget& point) {
+        return point.distribution == Distribution::Rectangular;
+    });
+    const auto worst = std::max_element(budgets.begin(), budgets.end(), [](const SetPointBudget& a, const SetPointBudget& b) {
+        return a.expanded < b.expanded;
+    });
+    if (worst != budgets.end())
+        section.budget = budgetSection(*worst);
+    if (phase.performance)
+        section.performance = performanceRows(*phase.performance, worst == budgets.end() ? 4 : roundUncertainty(worst->expanded).decimals);
+    return section;
+}
+
+} // namespace spanwright
