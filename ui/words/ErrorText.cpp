@@ -55,10 +55,13 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
         return tr("there is no column %1. Name a column of the header, or its number from 1.")
             .arg(facts.quoted("name", facts.quoted("text", tr("of that name"))));
     case ErrorCode::NoDataRows: return tr("there is no row of readings under the header. Choose the file that holds the readings.");
-    case ErrorCode::SeparatorUnclear: return tr("the separator of the columns cannot be told. State it.");
-    case ErrorCode::DecimalMarkUnclear: return tr("the decimal mark cannot be told: both point and comma would do. State it.");
+    case ErrorCode::SeparatorUnclear: return tr("the separator of the columns is not certain; it may also be %1. State it where the guess is wrong.")
+            .arg(facts.quoted("separator", tr("another")));
+    case ErrorCode::DecimalMarkUnclear: return tr("the decimal mark is not certain: in %1 both point and comma would do. State it where the guess is wrong.")
+            .arg(facts.quoted("text", tr("the numbers")));
     case ErrorCode::DateOrderUnclear:
-        return tr("the order of day and month cannot be told from %1. State it.").arg(facts.quoted("text", tr("the dates")));
+        return tr("the order of day and month is not certain from %1. State it where the guess is wrong.")
+            .arg(facts.quoted("text", tr("the dates")));
     case ErrorCode::DirectionUnknown:
         return tr("%1 is no direction. Write up or down, rising or falling.").arg(facts.quoted("text", tr("the cell")));
     // session files

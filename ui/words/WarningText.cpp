@@ -16,7 +16,15 @@ struct WarningText {
     static QString of(WarningCode code, Sentence& facts);
     /// Why a figure does not exist, from the reason's code; a code that is not in the list stands as words.
     static QString reason(Sentence& facts);
+    static QString figure(Sentence& facts);
 };
+
+QString WarningText::figure(Sentence& facts) {
+    const QString name = facts.plain("figure", tr("A figure"));
+    if (name == QLatin1String("error"))
+        return tr("Error of indication");
+    return name == QLatin1String("repeatability") ? tr("Repeatability") : name;
+}
 
 QString WarningText::reason(Sentence& facts) {
     static const struct {
@@ -78,7 +86,7 @@ QString WarningText::of(WarningCode code, Sentence& facts) {
         return tr("%1 readings lack a reference or an indication and do not count.").arg(facts.plain("count", tr("Some")));
     case WarningCode::FigureUndefined:
         return tr("%1: not given, because %2.")
-            .arg(facts.plain("figure", tr("A figure")), reason(facts));
+            .arg(figure(facts), reason(facts));
     case WarningCode::ApproximateMethod:
         return tr("%1 is an approximation: %2.")
             .arg(facts.plain("figure", tr("A figure")), facts.plain("method", tr("no exact method exists")));

@@ -1,0 +1,23 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/Console.h"
+
+#include "ui/words/Words.h"
+
+#include <ostream>
+
+namespace spanwright {
+
+int refuse(Console console, const Error& error) {
+    console.err << "spanwright: " << errorText(error).toStdString() << '\n';
+    switch (error.code) {
+    case ErrorCode::UsageUnknownOption:
+    case ErrorCode::UsageValueBad:
+    case ErrorCode::UsageValueMissing:
+    case ErrorCode::UsageNoFile:
+    case ErrorCode::UsageUnknownCommand: return WrongUsage;
+    case ErrorCode::CertificateIncomplete: return CertificateBlocked;
+    default: return Refused;
+    }
+}
+
+} // namespace spanwright

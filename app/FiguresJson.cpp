@@ -1,0 +1,267 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/FiguresJson.h"
+
+#include "app/FigureNames.h"
+#include "app/JsonWriter.h"
+#include "app/MissingFigures.h"
+#include "core/record/Fields.h"
+#include "ui/words/Words.h"
+
+namespace spanwright {
+
+namespace {
+
+using Layout = JsonWriter::Layout;
+
+enum class RowShape { WithoutTest, WithTest };
+
+void writeInterval(JsonWriter& json, std::string_view name, const Interval& interval) {
+    json.key(name).beginObject().field("low", interval.low).field("high", interval.high).endObject();
+}
+
+void writeCoefficients(JsonWriter& json, const Fit& fit) {
+    json.key("coefficients").beginArray(Layout::Lines);
+    for (const Coefficient& c : fit.coefficients) {
+        json.beginObject().field("name", c.name).field("value", c.value);
+        json.field("standard_uncertainty", c.standardUncertainty).field("low", c.low).field("high", c.high);
+        if (!c.unit.empty())
+            json.field("unit", c.unit);
+        json.endObject();
+    }
+    json.endArray();
+    json.key("coefficient_covariance").beginArray(Layout::Lines);
+    const std::size_t p = fit.terms();
+    for (std::size_t i = 0; i < p; ++i) {
+        json.beginArray();
+        for (std::size_t j = 0; j < p; ++j)
+            json.value(fit.covariance[i * p + j]);
+        json.endArray();
+    }
+    json.endArray();
+}
+
+void writeSplitRow(JsonWriter& json, std::string_view name, const std::optional<SplitRow>& row, RowShape shape) {
+    json.key(name);
+    if (!row) {
+        json.null();
+        return;
+    }
+    json.beginObject().field("ss", row->ss).field("df", row->df);
+    if (name != "total")
+        json.field("ms", row->ms);
+    if (shape == RowShape::WithTest)
+        json.field("f", row->f).field("p", row->p);
+    json.endObject();
+}
+
+void writeSplit(JsonWriter& json, const std::optional<VarianceSplit>& split) {
+    json.key("split");
+    if (!split) {
+        json.null();
+        return;
+    }
+    json.beginObject(Layout::Lines);
+    writeSplitRow(json, "total", split->total, RowShape::WithoutTest);
+    writeSplitRow(json, "regression", split->regression, RowShape::WithTest);
+    writeSplitRow(json, "residual", split->residual, RowShape::WithoutTest);
+    writeSplitRow(json, "lack_of_fit", split->lackOfFit, RowShape::WithTest);
+    writeSplitRow(json, "pure_error", split->pureError, RowShape::WithoutTest);
+    writeSplitRow(json, "hysteresis", split->hysteresis, RowShape::WithTest);
+    writeSplitRow(json, "run_offset", split->runOffset, RowShape::WithTest);
+    writeSplitRow(json, "run_slope", split->runSlope, RowShape::WithTest);
+    writeSplitRow(json, "repeatability", split->repeatability, RowShape::WithoutTest);
+    json.field("against", codeName(split->against));
+    if (split->lackOfFitNaive)
+        writeSplitRow(json, "lack_of_fit_naive", split->lackOfFitNaive, RowShape::WithTest);
+    if (split->lackOfFitAdjusted)
+        writeSplitRow(json, "lack_of_fit_adjusted", split->lackOfFitAdjusted, RowShape::WithTest);
+    if (!split->components.empty()) {
+        json.key("components").beginArray(Layout::Lines);
+        for (const VarianceComponent& c : split->components) {
+            json.beginObject().field("part", codeName(c.part)).field("variance", c.variance).field("df", c.degreesOfFreedom);
+            json.field("low", c.low).field("high", c.high).field("share_of_total", c.shareOfTotal);
+            json.field("share_of_noise", c.shareOfNoise).endObject();
+        }
+        json.endArray();
+    }
+    json.endObject();
+}
+
+void writeAnswers(JsonWriter& json, const PhaseEvaluation& evaluation) {
+    const bool forward = evaluation.fit->direction == FitDirection::Indication;
+    json.key("at").beginArray(Layout::Lines);
+    for (const BandPoint& point : evaluation.at) {
+        json.beginObject().field("reference", forward ? point.x : point.value).field("indication", forward ? point.value : point.x);
+        writeInterval(json, "mean", point.mean);
+        writeInterval(json, "new_reading", point.newReading);
+        writeInterval(json, "simultaneous", point.simultaneous);
+        json.field("inside_range", point.inside).endObject();
+    }
+    json.endArray();
+    json.key("read").beginArray(Layout::Lines);
+    for (const ReadBackAnswer& answer : evaluation.read) {
+        json.beginObject().field("indication", answer.indication).field("reference", answer.reference);
+        json.field("standard_uncertainty", answer.standardUncertainty).field("low", answer.low).field("high", answer.high);
+        json.field("inside_range", answer.insideRange);
+        if (!answer.others.empty()) {
+            json.key("others").beginArray();
+            for (const double other : answer.others)
+                json.value(other);
+            json.endArray();
+        }
+        json.endObject();
+    }
+    json.endArray();
+}
+
+void writeTest(JsonWriter& json, std::string_view name, std::string_view statistic, const std::optional<TestResult>& test) {
+    json.key(name);
+    if (!test) {
+        json.null();
+        return;
+    }
+    json.beginObject().field(statistic, test->statistic);
+    if (test->df)
+        json.field("df", *test->df);
+    json.field("p", test->p).endObject();
+}
+
+void writeOutliers(JsonWriter& json, const Diagnostics& d) {
+    json.key("outliers").beginObject().key("grubbs");
+    if (d.grubbs)
+        json.beginObject().field("g", d.grubbs->g).field("row", d.grubbs->row).field("critical", d.grubbs->critical).endObject();
+    else
+        json.null();
+    json.key("esd").beginArray();
+    for (const OutlierTrial& trial : d.esd)
+        json.beginObject().field("row", trial.row).field("r", trial.r).field("lambda", trial.lambda).endObject();
+    json.endArray().field("esd_count", d.esdCount).endObject();
+}
+
+void writeDiagnostics(JsonWriter& json, const std::optional<Diagnostics>& diagnostics) {
+    json.key("diagnostics");
+    if (!diagnostics) {
+        json.null();
+        return;
+    }
+    const Diagnostics& d = *diagnostics;
+    json.beginObject(Layout::Lines).key("durbin_watson");
+    if (d.durbinWatson)
+        json.beginObject().field("d", *d.durbinWatson).field("p_positive", d.durbinWatsonP).endObject();
+    else
+        json.null();
+    json.field("lag1_autocorrelation", d.lag1Autocorrelation).field("effective_readings", d.effectiveReadings);
+    writeTest(json, "shapiro_wilk", "w", d.shapiroWilk);
+    writeTest(json, "breusch_pagan", "statistic", d.breuschPagan);
+    json.key("equal_variances").beginObject();
+    writeTest(json, "bartlett", "statistic", d.bartlett);
+    writeTest(json, "levene", "f", d.levene);
+    json.key("cochran");
+    if (d.cochran)
+        json.beginObject().field("c", *d.cochran).field("critical", d.cochranCritical).endObject();
+    else
+        json.null();
+    json.endObject();
+    writeTest(json, "linearity", "f", d.linearity);
+    writeOutliers(json, d);
+    json.endObject();
+}
+
+void writeProcessFigure(JsonWriter& json, std::string_view name, const std::optional<ProcessFigure>& figure) {
+    json.key(name);
+    if (figure)
+        json.beginObject().field("value", figure->value).field("percent_of_span", figure->percentOfSpan)
+            .field("set_point", figure->setPoint).endObject();
+    else
+        json.null();
+}
+
+void writePerformance(JsonWriter& json, const std::optional<ProcessFigures>& performance) {
+    json.key("performance");
+    if (!performance) {
+        json.null();
+        return;
+    }
+    const ProcessFigures& p = *performance;
+    json.beginObject(Layout::Lines).field("span", p.span);
+    writeProcessFigure(json, "measured_error_max", p.measuredErrorMax);
+    writeProcessFigure(json, "inaccuracy_high", p.inaccuracyHigh);
+    writeProcessFigure(json, "inaccuracy_low", p.inaccuracyLow);
+    writeProcessFigure(json, "hysteresis", p.hysteresis);
+    writeProcessFigure(json, "hysteresis_in_cycle", p.hysteresisInCycle);
+    writeProcessFigure(json, "non_repeatability", p.nonRepeatability);
+    writeProcessFigure(json, "non_linearity_terminal", p.nonLinearityTerminal);
+    writeProcessFigure(json, "non_linearity_independent", p.nonLinearityIndependent);
+    writeProcessFigure(json, "non_linearity_zero_based", p.nonLinearityZeroBased);
+    json.endObject();
+}
+
+void writeFindings(JsonWriter& json, const Record& record, const std::vector<Finding>& findings) {
+    json.key("findings").beginArray(Layout::Lines);
+    for (const Finding& finding : findings) {
+        json.beginObject().field("code", codeName(finding.code)).field("severity", codeName(finding.severity));
+        json.field("text", findingWords(finding, record).sentence.toStdString()).key("rows").beginArray();
+        for (const ReadingId id : finding.rows)
+            json.value(record.readings->indexOf(id) + 1);
+        json.endArray().key("figures").beginObject();
+        for (const Figure& figure : finding.figures)
+            json.field(figure.name, figure.value);
+        json.endObject().field("remedy", codeName(finding.remedy)).endObject();
+    }
+    json.endArray();
+}
+
+void writeRows(JsonWriter& json, const Record& record, const RowFigures& rows) {
+    json.key("rows").beginArray(Layout::Lines);
+    for (std::size_t i = 0; i < rows.size(); ++i) {
+        json.beginObject().field("row", record.readings->indexOf(rows.ids[i]) + 1).field("reference", rows.reference[i]);
+        json.field("indication", rows.indication[i]).field("fitted", rows.fitted[i]).field("residual", rows.residual[i]);
+        json.field("standardised", rows.standardised[i]).field("studentised", rows.studentised[i]);
+        json.field("leverage", rows.leverage[i]).field("cook", rows.cook[i]).field("excluded", rows.excluded[i] != 0).endObject();
+    }
+    json.endArray();
+}
+
+void writeWarnings(JsonWriter& json, const std::vector<Warning>& warnings) {
+    json.key("warnings").beginArray(Layout::Lines);
+    for (const Warning& warning : warnings)
+        json.beginObject().field("code", codeName(warning.code)).field("text", warningText(warning).toStdString()).endObject();
+    json.endArray();
+}
+
+} // namespace
+
+std::string figuresJson(const Record& record, const PhaseEvaluation& evaluation, RowsShown rows) {
+    const Fit& fit = *evaluation.fit;
+    JsonWriter json;
+    json.beginObject(Layout::Lines);
+    json.field("function", functionName(fit.function)).field("fit", nameOf(fit.direction)).field("method", nameOf(fit.method));
+    json.field("weights", nameOf(fit.weights)).field("covariance", nameOf(fit.covarianceScale)).field("coverage", fit.coverage);
+    json.field("phase", nameOf(evaluation.phase)).key("readings").beginObject().field("used", fit.used);
+    json.field("excluded", evaluation.excluded).field("set_points", fit.setPoints).endObject();
+    writeCoefficients(json, fit);
+    json.field("residual_sd", fit.residualSd).field("degrees_of_freedom", fit.degreesOfFreedom);
+    json.field("r_squared", fit.rSquared).field("chi_squared", fit.chiSquared);
+    if (fit.chiSquared)
+        json.field("chi_squared_p", fit.chiSquaredP);
+    writeSplit(json, evaluation.split);
+    writeAnswers(json, evaluation);
+    const std::size_t warningsHere = json.written().size();
+
+    writeDiagnostics(json, evaluation.diagnostics);
+    writePerformance(json, evaluation.performance);
+    writeFindings(json, record, evaluation.findings);
+    if (rows == RowsShown::Yes)
+        writeRows(json, record, evaluation.rows);
+    json.endObject();
+
+    std::vector<Warning> warnings = evaluation.warnings;
+    for (Warning& warning : reasonsFor(json.missing(), evaluation))
+        warnings.push_back(std::move(warning));
+    JsonWriter inner(JsonWriter::Start::InsideObject);
+    writeWarnings(inner, warnings);
+    std::string text = json.written();
+    return text.insert(warningsHere, inner.written()) + "\n";
+}
+
+} // namespace spanwright

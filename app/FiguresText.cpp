@@ -1,0 +1,157 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/FiguresText.h"
+
+#include "app/TextTable.h"
+#include "ui/look/NumberText.h"
+#include "ui/words/Words.h"
+
+#include <QCoreApplication>
+
+namespace spanwright {
+
+namespace {
+
+struct Text {
+    Q_DECLARE_TR_FUNCTIONS(FiguresText)
+};
+
+QString tr(const char* text) {
+    return Text::tr(text);
+}
+
+QString figure(double value, int digits = 6) {
+    return significantText(value, digits);
+}
+
+QString interval(double low, double high) {
+    return figure(low) + QStringLiteral(" … ") + figure(high);
+}
+
+QString percent(double probability) {
+    return QString::number(100 * probability, 'g', 6) + QStringLiteral(" %");
+}
+
+QString withUnit(const QString& name, const std::string& unit) {
+    return unit.empty() ? name : name + QStringLiteral(" / ") + QString::fromStdString(unit);
+}
+
+QString headText(const Record& record, const PhaseEvaluation& e) {
+    QString text;
+    const QString item = QString::fromStdString(record.item.description);
+    if (!item.isEmpty())
+        text += item + (record.item.serial.empty() ? QString() : tr(", serial %1").arg(QString::fromStdString(record.item.serial))) +
+                QLatin1Char('\n');
+    const QString phase = phaseText(e.phase);
+    text += phase.left(1).toUpper() + phase.mid(1) + QStringLiteral(": ") +
+            tr("%1 readings used, %2 excluded, %3 set points").arg(e.fit->used).arg(e.excluded).arg(e.fit->setPoints) +
+            QStringLiteral("\n\n");
+    const QString function = functionText(e.fit->function);
+    return text + function.left(1).toUpper() + function.mid(1) + QLatin1Char('\n') +
+           equationText(*e.fit, record.item) + QStringLiteral("\n\n");
+}
+
+QString coefficientsText(const Fit& fit) {
+    TextTable table({tr("Coefficient"), tr("unit"), tr("value"), tr("standard uncertainty"), tr("%1 interval").arg(percent(fit.coverage))});
+    for (const Coefficient& c : fit.coefficients)
+        table.add({QString::fromStdString(c.name), QString::fromStdString(c.unit), figure(c.value, 10), figure(c.standardUncertainty, 4),
+                   interval(c.low, c.high)});
+    return table.text();
+}
+
+QString spreadText(const Record& record, const PhaseEvaluation& e) {
+    const Fit& fit = *e.fit;
+    const std::string& unit = fit.direction == FitDirection::Indication ? record.item.indication.unit : record.item.reference.unit;
+    QString text = tr("Residual s = %1").arg(figure(fit.residualSd, 5));
+    if (fit.weights == Weights::Equal && !unit.empty())
+        text += QLatin1Char(' ') + QString::fromStdString(unit);
+    text += tr(" with %1 degrees of freedom").arg(fit.degreesOfFreedom);
+    if (fit.chiSquared)
+        text += tr("; χ² = %1").arg(figure(*fit.chiSquared, 5));
+    if (fit.chiSquared && fit.chiSquaredP)
+        text += QStringLiteral(", p = ") + pText(*fit.chiSquaredP);
+    return text + QStringLiteral("\n\n");
+}
+
+void addSplitRow(TextTable& table, SplitPart part, const std::optional<SplitRow>& row) {
+    if (!row)
+        return;
+    table.add({splitPartText(part), figure(row->ss), QString::number(row->df), row->ms ? figure(*row->ms, 5) : QString(),
+               row->f ? figure(*row->f, 4) : QString(), row->p ? pText(*row->p) : QString()});
+}
+
+QString splitText(const VarianceSplit& split) {
+    TextTable table({tr("Variance split"), tr("sum of squares"), tr("df"), tr("mean square"), tr("F"), tr("p")});
+    addSplitRow(table, SplitPart::Total, split.total);
+    addSplitRow(table, SplitPart::Regression, split.regression);
+    addSplitRow(table, SplitPart::Residual, split.residual);
+    addSplitRow(table, SplitPart::LackOfFit, split.lackOfFit);
+    addSplitRow(table, SplitPart::PureError, split.pureError);
+    addSplitRow(table, SplitPart::Hysteresis, split.hysteresis);
+    addSplitRow(table, SplitPart::RunOffset, split.runOffset);
+    addSplitRow(table, SplitPart::RunSlope, split.runSlope);
+    addSplitRow(table, SplitPart::Repeatability, split.repeatability);
+    QString text = table.text();
+    if (split.lackOfFit && split.lackOfFit->f)
+        text += tr("F is taken against %1.").arg(splitPartText(split.against)) + QLatin1Char('\n');
+    return text + QLatin1Char('\n');
+}
+
+QString answersText(const Record& record, const PhaseEvaluation& e) {
+    const QString coverage = percent(e.fit->coverage);
+    const bool forward = e.fit->direction == FitDirection::Indication;
+    TextTable at({tr("At ") + withUnit(tr("reference"), record.item.reference.unit), withUnit(tr("indication"), record.item.indication.unit),
+                  tr("function, %1").arg(coverage), tr("new reading, %1").arg(coverage)});
+    for (const BandPoint& p : e.at)
+        at.add({figure(forward ? p.x : p.value, 10), figure(forward ? p.value : p.x, 10), interval(p.mean.low, p.mean.high),
+                interval(p.newReading.low, p.newReading.high)});
+    TextTable read({tr("Read ") + withUnit(tr("indication"), record.item.indication.unit), withUnit(tr("reference"), record.item.reference.unit),
+                    tr("standard uncertainty"), tr("%1 interval").arg(coverage)});
+    for (const ReadBackAnswer& r : e.read)
+        read.add({figure(r.indication, 10), r.reference ? figure(*r.reference, 10) : tr("none"), figure(r.standardUncertainty, 4),
+                  interval(r.low, r.high)});
+    QString text;
+    for (const TextTable* table : {&at, &read})
+        if (!table->empty())
+            text += table->text() + QLatin1Char('\n');
+    return text;
+}
+
+QString findingsText(const Record& record, const PhaseEvaluation& e) {
+    if (e.findings.empty())
+        return {};
+    QString text = tr("Findings") + QLatin1Char('\n');
+    for (const Finding& finding : e.findings) {
+        const FindingWords words = findingWords(finding, record);
+        text += QStringLiteral("  ") + words.sentence;
+        if (!words.figures.isEmpty())
+            text += QStringLiteral(" (") + words.figures + QLatin1Char(')');
+        text += QLatin1Char('\n');
+    }
+    return text + QLatin1Char('\n');
+}
+
+QString rowsText(const Record& record, const RowFigures& rows) {
+    TextTable table({tr("Row"), tr("reference"), tr("indication"), tr("fitted"), tr("residual"), tr("standardised"), tr("studentised"),
+                     tr("leverage"), tr("Cook"), {}});
+    for (std::size_t i = 0; i < rows.size(); ++i)
+        table.add({QString::number(record.readings->indexOf(rows.ids[i]) + 1), figure(rows.reference[i], 10), figure(rows.indication[i], 10),
+                   figure(rows.fitted[i], 10), figure(rows.residual[i], 4), figure(rows.standardised[i], 4), figure(rows.studentised[i], 4),
+                   figure(rows.leverage[i], 4), figure(rows.cook[i], 4), rows.excluded[i] != 0 ? tr("excluded") : QString()});
+    return table.text() + QLatin1Char('\n');
+}
+
+} // namespace
+
+QString figuresText(const Record& record, const PhaseEvaluation& evaluation, RowsShown rows) {
+    QString text = headText(record, evaluation) + coefficientsText(*evaluation.fit) + spreadText(record, evaluation);
+    if (evaluation.split)
+        text += splitText(*evaluation.split);
+    text += answersText(record, evaluation) + findingsText(record, evaluation);
+    if (rows == RowsShown::Yes)
+        text += rowsText(record, evaluation.rows);
+    for (const Warning& warning : evaluation.warnings)
+        text += warningText(warning) + QLatin1Char('\n');
+    return text;
+}
+
+} // namespace spanwright

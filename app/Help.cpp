@@ -1,0 +1,48 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/Help.h"
+
+namespace spanwright {
+
+std::string_view helpText() {
+    return R"(spanwright: a workbench for calibrating sensors
+
+  spanwright [--stage job|bench|budget|certificate] [--scheme light|dark] [FILE…]
+                                        the window; FILE is a session or a CSV
+  spanwright figures FILE [options]     what follows from the readings of a CSV or a session
+  spanwright certificate SESSION --to OUT.pdf [--xml OUT.xml] [--incomplete]
+                                        the certificate draft as PDF
+  spanwright convert CSV --with SESSION --to OUT.csv
+                                        new readings to values, each with its expanded uncertainty
+  spanwright check SESSION              verifies the seal, recomputes, compares with the stored results
+  spanwright self-test [--to OUT.pdf]   recomputes published cases
+  spanwright --help, --version
+
+Options of figures
+  --reference COL --indication COL      columns by name or number from 1; the first two columns of numbers otherwise
+  --set-point COL --direction COL --run COL
+                                        grouping columns; a direction is up, down, rising or falling
+  --u-reference COL --u-indication COL  standard uncertainties
+  --time COL                            time of each reading
+  --function NAME                       constant, line, proportional, polynomial:N, polynomial-no-constant:N, square-root,
+                                        logarithmic, power, exponential-approach, callendar-van-dusen, thermistor-b,
+                                        steinhart-hart:N, nernst, table; a constant needs no reference
+  --fit indication|reference            the quantity that the function gives
+  --method least-squares|both-uncertain|robust
+  --weights equal|stated|replicates|proportional
+  --covariance residuals|stated         scaled by the residuals, or from the stated uncertainties as they are
+  --coverage P                          probability of every interval, 0.95
+  --phase as-found|as-left              of a session
+  --at X[,X…]                           band and prediction at these reference values
+  --read Y[,Y…] [--repeats Q|inf]       reference value from a mean of Q new readings; inf: an exact indication
+  --outliers N --outlier-level P        most outliers tried; level of their tests, 0.05
+  --exclude ROW[,ROW…]                  data rows from 1
+  --rows                                figures of every reading
+  --json                                one JSON object instead of text
+  --decimal comma|point --separator S --encoding E
+                                        where the guess, which is printed, is wrong
+
+Exit status: 0 done; 1 refused, with the reason; 2 wrong usage; 3 a certificate that is blocked, with each missing item.
+)";
+}
+
+} // namespace spanwright

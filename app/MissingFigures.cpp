@@ -1,0 +1,77 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/MissingFigures.h"
+
+#include <algorithm>
+#include <string_view>
+
+namespace spanwright {
+
+namespace {
+
+/// A figure (or all that begin with it), the warning that explains it when there is one, else the reason's code.
+struct Rule {
+    std::string_view path;
+    WarningCode explained = WarningCode::FigureUndefined;
+    std::string_view reason;
+};
+
+constexpr Rule rules[] = {
+    {"coefficients.standard_uncertainty", WarningCode::NoDegreesOfFreedom, "no-degrees-of-freedom"},
+    {"coefficients.", WarningCode::NoDegreesOfFreedom, "no-degrees-of-freedom"},
+    {"coefficient_covariance", WarningCode::NoDegreesOfFreedom, "no-degrees-of-freedom"},
+    {"residual_sd", WarningCode::NoDegreesOfFreedom, "no-degrees-of-freedom"},
+    {"r_squared", WarningCode::FigureUndefined, "no-spread"},
+    {"chi_squared", WarningCode::FigureUndefined, "no-stated-uncertainties"},
+    {"split.lack_of_fit", WarningCode::NoReplicates, "no-replicates"},
+    {"split.pure_error", WarningCode::NoReplicates, "no-replicates"},
+    {"split.hysteresis", WarningCode::OneDirection, "one-direction"},
+    {"split.run_offset", WarningCode::OneRun, "one-run"},
+    {"split.run_slope", WarningCode::OneRun, "one-run"},
+    {"split.repeatability", WarningCode::NoReplicates, "no-replicates"},
+    {"split.components.", WarningCode::FigureUndefined, "no-degrees-of-freedom"},
+    {"split", WarningCode::FigureUndefined, "no-degrees-of-freedom"},
+    {"at.", WarningCode::NoDegreesOfFreedom, "no-degrees-of-freedom"},
+    {"read.reference", WarningCode::NoAnswer, "no-answer"},
+    {"read.", WarningCode::NoFiniteInterval, "no-finite-interval"},
+    {"diagnostics.durbin_watson", WarningCode::FigureUndefined, "too-few-readings"},
+    {"diagnostics.lag1_autocorrelation", WarningCode::FigureUndefined, "too-few-readings"},
+    {"diagnostics.effective_readings", WarningCode::FigureUndefined, "too-few-readings"},
+    {"diagnostics.shapiro_wilk", WarningCode::FigureUndefined, "three-to-5000-readings"},
+    {"diagnostics.breusch_pagan", WarningCode::FigureUndefined, "no-slope-in-function"},
+    {"diagnostics.equal_variances", WarningCode::FigureUndefined, "no-replicates-everywhere"},
+    {"diagnostics.linearity", WarningCode::FigureUndefined, "not-a-line"},
+    {"diagnostics.outliers", WarningCode::FigureUndefined, "too-few-readings"},
+    {"performance.hysteresis", WarningCode::OneDirection, "one-direction"},
+    {"performance.non_repeatability", WarningCode::OneRun, "one-run"},
+    {"performance.measured_error", WarningCode::FigureUndefined, "no-output-range"},
+    {"performance.inaccuracy", WarningCode::FigureUndefined, "no-output-range"},
+    {"performance", WarningCode::FigureUndefined, "no-set-points"},
+    {"rows.", WarningCode::FigureUndefined, "takes-no-part"},
+};
+
+} // namespace
+
+std::vector<Warning> reasonsFor(const std::vector<std::string>& missing, const PhaseEvaluation& evaluation) {
+    const auto said = [&](WarningCode code) {
+        return code != WarningCode::FigureUndefined &&
+               std::any_of(evaluation.warnings.begin(), evaluation.warnings.end(), [&](const Warning& w) { return w.code == code; });
+    };
+    std::vector<std::pair<std::string, std::string>> figuresOf; // by reason, in order
+    for (const std::string& path : missing) {
+        const auto* rule = std::find_if(std::begin(rules), std::end(rules), [&](const Rule& r) { return path.starts_with(r.path); });
+        if (rule != std::end(rules) && said(rule->explained))
+            continue;
+        const std::string reason(rule == std::end(rules) ? "not-given" : rule->reason);
+        const auto known = std::find_if(figuresOf.begin(), figuresOf.end(), [&](const auto& entry) { return entry.first == reason; });
+        if (known == figuresOf.end())
+            figuresOf.emplace_back(reason, path);
+        else
+            known->second += ", " + path;
+    }
+    std::vector<Warning> warnings;
+    for (auto& [reason, figures] : figuresOf)
+        warnings.push_back({WarningCode::FigureUndefined, {{"figure", figures}, {"reason", reason}}});
+    return warnings;
+}
+
+} // namespace spanwright

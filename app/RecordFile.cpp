@@ -1,0 +1,228 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/RecordFile.h"
+
+#include "app/ChoiceOptions.h"
+#include "core/exchange/FileBytes.h"
+#include "core/exchange/ReadingImport.h"
+#include "ui/words/Words.h"
+
+#include <algorithm>
+
+namespace spanwright {
+
+namespace {
+
+constexpr OptionSpec known[] = {{"--reference"},   {"--indication"},   {"--set-point"}, {"--direction"}, {"--run"},    {"--u-reference"},
+                                {"--u-indication"}, {"--time"}, {"--decimal"},   {"--separator"}, {"--encoding"}, {"--exclude"}};
+
+Error ofOption(const Error& error, const char* option, const std::string& text) {
+    return Error(error.code == ErrorCode::UsageValueBad ? error.code : ErrorCode::UsageValueBad, {{"option", option}, {"text", text}});
+}
+
+Result<CsvWishes> wishesOf(const Arguments& arguments) {
+    CsvWishes wishes;
+    if (const auto text = arguments.value("--encoding")) {
+        const auto encoding = parseEncodingName(*text);
+        if (!encoding)
+            return ofOption(encoding.error(), "--encoding", *text);
+        wishes.encoding = *encoding;
+    }
+    if (const auto text = arguments.value("--separator")) {
+        const auto separator = parseSeparatorName(*text);
+        if (!separator)
+            return ofOption(separator.error(), "--separator", *text);
+        wishes.separator = *separator;
+    }
+    if (arguments.has("--decimal")) {
+        const auto mark = decimalMark(arguments);
+        if (!mark)
+            return mark.error();
+        wishes.decimal = *mark;
+    }
+    return wishes;
+}
+
+/// The first column of numbers that is not `other`.
+std::optional<std::size_t> firstNumbersBut(const CsvRules& rules, std::optional<std::size_t> other) {
+    for (std::size_t i = 0; i < rules.columns.size(); ++i)
+        if (rules.columns[i].kind == ColumnKind::Number && i != other)
+            return i;
+    return std::nullopt;
+}
+
+/// Columns named by options; the first two columns of numbers stand in for those that are not named. A constant needs no
+/// reference: it is taken only where it is named, or where two columns are there and none is named.
+Result<ImportMapping> mappingOf(const Arguments& arguments, const CsvRules& rules, const FunctionChoice& function) {
+    struct Named {
+        const char* option;
+        std::optional<std::size_t> ImportMapping::* column;
+    };
+    static constexpr Named named[] = {
+        {"--reference", &ImportMapping::reference},    {"--indication", &ImportMapping::indication}, {"--set-point", &ImportMapping::setPoint},
+        {"--direction", &ImportMapping::direction},    {"--run", &ImportMapping::run},               {"--u-reference", &ImportMapping::uReference},
+        {"--u-indication", &ImportMapping::uIndication}, {"--time", &ImportMapping::time}};
+    ImportMapping mapping;
+    for (const Named& one : named)
+        if (const auto text = arguments.value(one.option)) {
+            const auto column = findColumn(rules, *text);
+            if (!column)
+                return column.error();
+            mapping.*one.column = *column;
+        }
+    const bool constant = function.family == FunctionFamily::Constant;
+    if (!mapping.reference && !mapping.indication)
+        mapping.reference = firstNumbersBut(rules, std::nullopt);
+    if (!mapping.indication)
+        mapping.indication = firstNumbersBut(rules, mapping.reference);
+    else if (!mapping.reference && !constant)
+        mapping.reference = firstNumbersBut(rules, mapping.indication);
+    if (!mapping.indication && constant)
+        std::swap(mapping.reference, mapping.indication);
+    if (!mapping.indication)
+        return Error(ErrorCode::ColumnMissing, {{"name", "indication"}});
+    if (!mapping.reference && !constant)
+        return Error(ErrorCode::ColumnMissing, {{"name", "reference"}});
+    return mapping;
+}
+
+std::string separatorWord(char separator) {
+    switch (separator) {
+    case ',': return "comma";
+    case ';': return "semicolon";
+    case '\t': return "tab";
+    case CsvRules::Blanks: return "blanks";
+    default: return std::string(1, separator);
+    }
+}
+
+std::string columnNote(const char* use, const CsvRules& rules, std::optional<std::size_t> column) {
+    if (!column)
+        return {};
+    const std::string& name = rules.columns[*column].name;
+    return std::string(", ") + use + " from column " + std::to_string(*column + 1) + (name.empty() ? "" : " \"" + name + "\"");
+}
+
+std::string understood(const std::string& path, const CsvRules& rules, const ImportMapping& mapping) {
+    const bool comma = rules.columns[*mapping.indication].decimal == DecimalMark::Comma;
+    std::string note = path + ": read with separator " + separatorWord(rules.separator) + ", decimal " + (comma ? "comma" : "point") +
+                       ", encoding " + std::string(encodingName(rules.encoding)) + ", " + std::to_string(rules.headerRows) +
+                       " header line" + (rules.headerRows == 1 ? "" : "s");
+    note += columnNote("reference", rules, mapping.reference) + columnNote("indication", rules, mapping.indication);
+    note += columnNote("set point", rules, mapping.setPoint) + columnNote("direction", rules, mapping.direction);
+    note += columnNote("run", rules, mapping.run) + columnNote("u of reference", rules, mapping.uReference);
+    note += columnNote("u of indication", rules, mapping.uIndication) + columnNote("time", rules, mapping.time);
+    return note;
+}
+
+Quantity quantityOf(const CsvRules& rules, std::optional<std::size_t> column) {
+    return column ? Quantity{rules.columns[*column].name, rules.columns[*column].unit} : Quantity{};
+}
+
+Result<std::vector<std::size_t>> excludedRows(const Arguments& arguments) {
+    std::vector<std::size_t> rows;
+    for (const auto& [option, text] : arguments.options) {
+        if (option != "--exclude")
+            continue;
+        const auto more = rowList(option, text);
+        if (!more)
+            return more.error();
+        rows.insert(rows.end(), more->begin(), more->end());
+    }
+    std::sort(rows.begin(), rows.end());
+    return rows;
+}
+
+/// The first issue that no exclusion covers.
+const CellIssue* standingIssue(const CellIssues& issues, const std::vector<std::size_t>& excluded) {
+    for (const CellIssue& issue : issues.first)
+        if (!std::binary_search(excluded.begin(), excluded.end(), issue.row))
+            return &issue;
+    return nullptr;
+}
+
+Result<LoadedRecord> loadTable(const std::string& path, std::string_view bytes, const Arguments& arguments,
+                               const std::vector<std::size_t>& excluded) {
+    const auto wishes = wishesOf(arguments);
+    if (!wishes)
+        return wishes.error();
+    const auto rules = guessRules(bytes, *wishes);
+    if (!rules)
+        return rules.error().with("file", path);
+    const auto mark = arguments.has("--decimal") ? *wishes->decimal : DecimalMark::Point;
+    const auto choices = withOptions({}, arguments, mark);
+    if (!choices)
+        return choices.error();
+    const auto mapping = mappingOf(arguments, *rules, choices->function);
+    if (!mapping)
+        return mapping.error().with("file", path);
+    Progress progress;
+    auto imported = readReadings(bytes, *rules, *mapping, progress);
+    if (!imported)
+        return imported.error().with("file", path);
+    if (const CellIssue* issue = standingIssue(imported->issues, excluded))
+        return issue->error(*rules).with("file", path);
+
+    LoadedRecord loaded;
+    loaded.notes.push_back(understood(path, *rules, *mapping));
+    for (const Error& doubt : rules->doubts)
+        loaded.notes.push_back(errorText(doubt.with("file", path)).toStdString());
+    loaded.record.choices = *choices;
+    loaded.record.item.reference = quantityOf(*rules, mapping->reference);
+    loaded.record.item.indication = quantityOf(*rules, mapping->indication);
+    const std::size_t n = imported->block.n;
+    loaded.record.readings.edit().appendBlock(std::move(imported->block), loaded.record.nextReadingId);
+    loaded.record.nextReadingId += static_cast<ReadingId>(n);
+    return loaded;
+}
+
+Result<void> exclude(Record& record, const std::vector<std::size_t>& rows) {
+    for (const std::size_t row : rows) {
+        if (row > record.readings->size())
+            return Error(ErrorCode::UsageValueBad, {{"option", "--exclude"}, {"text", std::to_string(row)}});
+        record.exclusions.edit().add({record.readings->ids()[row - 1], ExclusionReason::Other, "left out on the command line", {}, 0});
+    }
+    return {};
+}
+
+} // namespace
+
+std::span<const OptionSpec> tableOptions() {
+    return known;
+}
+
+Result<DecimalMark> decimalMark(const Arguments& arguments) {
+    const std::string text = arguments.value("--decimal").value_or("point");
+    if (text == "point")
+        return DecimalMark::Point;
+    if (text == "comma")
+        return DecimalMark::Comma;
+    return Error(ErrorCode::UsageValueBad, {{"option", "--decimal"}, {"text", text}});
+}
+
+bool looksLikeSession(const std::string& path, std::string_view bytes) {
+    constexpr std::string_view byteOrderMark = "\xEF\xBB\xBF";
+    if (bytes.starts_with(byteOrderMark))
+        bytes.remove_prefix(byteOrderMark.size());
+    const std::size_t first = bytes.find_first_not_of(" \t\r\n");
+    return path.ends_with(".spanwright") || (first != std::string_view::npos && (bytes[first] == '{' || bytes[first] == '['));
+}
+
+Result<LoadedRecord> loadRecord(const std::string& path, const Arguments& arguments) {
+    const auto excluded = excludedRows(arguments);
+    if (!excluded)
+        return excluded.error();
+    const auto file = FileBytes::read(path);
+    if (!file)
+        return file.error().fact("file").empty() ? file.error().with("file", path) : file.error();
+    if (looksLikeSession(path, file->bytes()))
+        return Error(ErrorCode::NotASession, {{"file", path}});
+    auto loaded = loadTable(path, file->bytes(), arguments, *excluded);
+    if (!loaded)
+        return loaded;
+    const auto done = exclude(loaded->record, *excluded);
+    if (!done)
+        return done.error();
+    return loaded;
+}
+
+} // namespace spanwright
