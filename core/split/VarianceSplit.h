@@ -2,7 +2,8 @@
 #pragma once
 
 #include "core/base/Warning.h"
-#include "core/record/ReadingColumns.h"
+#include "core/fit/Sample.h"
+#include "core/record/Choices.h"
 
 #include <optional>
 #include <vector>
@@ -39,13 +40,15 @@ struct RunLine {
 /// A standard deviation that belongs to one cause.
 struct VarianceComponent {
     SplitPart part = SplitPart::Repeatability;
-    double variance = 0; ///< not below 0
-    double degreesOfFreedom = 0;
-    std::optional<double> low, high; ///< interval of the standard deviation
-    double shareOfTotal = 0, shareOfNoise = 0;
+    double variance = 0; ///< not below 0; (unit of the ordinate)², with weights the mean over the readings
+    double estimate = 0; ///< the same before it was kept from falling below 0: unbiased
+    double degreesOfFreedom = 0;     ///< effective, where it is a difference of mean squares
+    std::optional<double> low, high; ///< 95 % interval of the standard deviation
+    double shareOfTotal = 0; ///< of the variance of all readings
+    double shareOfNoise = 0; ///< of the sum of the components
 };
 
-/// How the spread of the readings divides: a chain of nested least-squares models on the residuals. See DEVELOPERS.md.
+/// How the spread of the readings divides: a chain of nested least-squares models on the residuals (see NoiseChain).
 struct VarianceSplit {
     SplitRow total, regression, residual;
     std::optional<SplitRow> lackOfFit, pureError, hysteresis, runOffset, runSlope, repeatability;
@@ -57,5 +60,21 @@ struct VarianceSplit {
     std::vector<VarianceComponent> components;
     std::vector<Warning> warnings;
 };
+
+/// What a fit hands over beside its residuals: sums of squares (weighted as the fit was) and how many coefficients took part.
+/// Without a constant among them, total and regression are about zero, else about the mean.
+struct SplitSums {
+    DoubleDouble total = 0.0, regression = 0.0, residual = 0.0;
+    int terms = 2;
+    bool aboutZero = false;
+    FunctionChoice function;
+    FitDirection direction = FitDirection::Indication;
+};
+
+/// Splits Σ w e² of a fit with n readings, m set points and p terms. Contract: rows and degrees of freedom as ranks added,
+/// computed in double-double while the residuals have their low parts, in one or two passes over the readings. Rows that the
+/// data cannot give are empty, each with a warning (FigureUndefined, NoReplicates, OneRun, OneDirection). Sources: Draper and
+/// Smith, "Applied Regression Analysis" (lack of fit); Searle, "Linear Models" (differences of nested residual sums).
+[[nodiscard]] VarianceSplit splitVariance(const Sample& sample, const Residuals& residuals, const SplitSums& sums);
 
 } // namespace spanwright

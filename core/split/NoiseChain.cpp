@@ -1,0 +1,387 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/split/NoiseChain.h"
+
+#include <algorithm>
+#include <array>
+#include <cmath>
+
+namespace spanwright {
+namespace {
+
+double plain(double value) {
+    return value;
+}
+double plain(const DoubleDouble& value) {
+    return toDouble(value);
+}
+
+template <class T>
+T take(const PairColumn& column, std::size_t i);
+template <>
+double take<double>(const PairColumn& column, std::size_t i) {
+    return column.high[i];
+}
+template <>
+DoubleDouble take<DoubleDouble>(const PairColumn& column, std::size_t i) {
+    return column[i];
+}
+
+/// Which cell and which run a reading belongs to.
+struct Places {
+    std::vector<std::int32_t> cell;
+    std::vector<std::int32_t> run; ///< index into runNumbers; empty when no run is known
+    std::vector<int> runNumbers;   ///< rising
+    bool tooManyRuns = false;
+};
+
+std::vector<int> runNumbers(const std::vector<std::int32_t>& runs) {
+    std::vector<int> numbers;
+    std::int32_t last = runs.empty() ? 0 : runs.front() - 1;
+    for (const std::int32_t run : runs) {
+        if (run == last)
+            continue;
+        last = run;
+        const auto at = std::lower_bound(numbers.begin(), numbers.end(), run);
+        if (at == numbers.end() || *at != run)
+            numbers.insert(at, run);
+        if (numbers.size() > mostRuns)
+            break;
+    }
+    return numbers;
+}
+
+Places findPlaces(const Sample& sample, NoiseChain& chain) {
+    const std::size_t n = sample.size();
+    const std::size_t groups = sample.groupValue.size();
+    Places places;
+    std::vector<std::array<std::int32_t, 3>> seen(groups, {0, 0, 0});
+    for (std::size_t i = 0; i < n; ++i) {
+        const auto d = sample.direction.empty() ? std::size_t{0} : static_cast<std::size_t>(sample.direction[i]);
+        ++seen[static_cast<std::size_t>(sample.group[i])][d];
+    }
+    std::vector<std::array<std::int32_t, 3>> cellOf(groups, {-1, -1, -1});
+    for (std::size_t g = 0; g < groups; ++g) {
+        const bool both = seen[g][1] > 0 && seen[g][2] > 0;
+        bool any = false;
+        for (std::size_t d = 0; d < 3; ++d) {
+            if (seen[g][d] == 0)
+                continue;
+            if (d > 0)
+                chain.directionsKnown = true;
+            if (!any || both) {
+                NoiseChain::Cell cell;
+                cell.group = static_cast<std::int32_t>(g);
+                cell.direction = static_cast<Direction>(d);
+                chain.cells.push_back(cell);
+            } else {
+                chain.cells.back().direction = Direction::Unknown;
+            }
+            any = true;
+            cellOf[g][d] = static_cast<std::int32_t>(chain.cells.size() - 1);
+        }
+        chain.setPoints += any ? 1 : 0;
+    }
+    chain.contrasts = static_cast<int>(chain.cells.size()) - chain.setPoints;
+    places.cell.resize(n);
+    for (std::size_t i = 0; i < n; ++i) {
+        const auto d = sample.direction.empty() ? std::size_t{0} : static_cast<std::size_t>(sample.direction[i]);
+        places.cell[i] = cellOf[static_cast<std::size_t>(sample.group[i])][d];
+    }
+    if (!sample.run.empty()) {
+        places.runNumbers = runNumbers(sample.run);
+        places.tooManyRuns = places.runNumbers.size() > mostRuns;
+        chain.runs = places.runNumbers.size();
+        chain.runsKnown = !places.tooManyRuns;
+    }
+    if (chain.runsKnown) {
+        places.run.resize(n);
+        for (std::size_t i = 0; i < n; ++i)
+            places.run[i] = static_cast<std::int32_t>(
+                std::lower_bound(places.runNumbers.begin(), places.runNumbers.end(), sample.run[i]) - places.runNumbers.begin());
+    }
+    return places;
+}
+
+template <class T>
+struct Sums {
+    std::vector<T> weight, mean;
+};
+
+/// Weighted means of e in the classes named by `of`, second pass included: the mean of what the first one left.
+template <class T>
+Sums<T> meansOf(const std::vector<std::int32_t>& of, std::size_t classes, const std::vector<T>& e, const std::vector<T>& w) {
+    Sums<T> sums{std::vector<T>(classes, T(0.0)), std::vector<T>(classes, T(0.0))};
+    for (std::size_t i = 0; i < e.size(); ++i) {
+        const auto c = static_cast<std::size_t>(of[i]);
+        if (w.empty()) {
+            sums.weight[c] += 1.0;
+            sums.mean[c] += e[i];
+        } else {
+            sums.weight[c] += w[i];
+            sums.mean[c] += w[i] * e[i];
+        }
+    }
+    for (std::size_t c = 0; c < classes; ++c)
+        if (plain(sums.weight[c]) > 0)
+            sums.mean[c] /= sums.weight[c];
+    return sums;
+}
+
+template <class T>
+T squaresAbout(const std::vector<std::int32_t>& of, const std::vector<T>& mean, const std::vector<T>& e, const std::vector<T>& w) {
+    T sum(0.0);
+    for (std::size_t i = 0; i < e.size(); ++i) {
+        const T d = e[i] - mean[static_cast<std::size_t>(of[i])];
+        sum += w.empty() ? d * d : w[i] * d * d;
+    }
+    return sum;
+}
+
+/// Symmetric system A ρ = b over the columns "offset of run r" and "slope of run r", within cells.
+template <class T>
+struct RunSystem {
+    std::size_t size = 0;
+    std::vector<T> a, b;
+    std::vector<char> used;
+    std::vector<std::size_t> order;
+    T explained = T(0.0);
+
+    explicit RunSystem(std::size_t columns) : size(columns), a(columns * columns, T(0.0)), b(columns, T(0.0)), used(columns, 0) {}
+    T& at(std::size_t i, std::size_t j) { return a[i * size + j]; }
+
+    /// Eliminates the columns [from, to) as far as they are not dependent on those before; returns the rank added.
+    int eliminate(std::size_t from, std::size_t to, const std::vector<double>& scale) {
+        int rank = 0;
+        for (;;) {
+            std::size_t pivot = size;
+            double best = 1e-11;
+            for (std::size_t j = from; j < to; ++j)
+                if (!used[j] && scale[j] > 0 && plain(at(j, j)) / scale[j] > best) {
+                    best = plain(at(j, j)) / scale[j];
+                    pivot = j;
+                }
+            if (pivot == size)
+                return rank;
+            used[pivot] = 1;
+            order.push_back(pivot);
+            ++rank;
+            explained += b[pivot] * b[pivot] / at(pivot, pivot);
+            for (std::size_t i = 0; i < size; ++i) {
+                if (used[i])
+                    continue;
+                const T factor = at(i, pivot) / at(pivot, pivot);
+                for (std::size_t j = 0; j < size; ++j)
+                    if (!used[j])
+                        at(i, j) -= factor * at(pivot, j);
+                b[i] -= factor * b[pivot];
+            }
+        }
+    }
+
+    /// Solution with dependent columns at zero.
+    std::vector<double> solve() {
+        std::vector<T> x(size, T(0.0));
+        for (std::size_t k = order.size(); k-- > 0;) {
+            const std::size_t i = order[k];
+            T right = b[i];
+            for (std::size_t m = k + 1; m < order.size(); ++m)
+                right -= at(i, order[m]) * x[order[m]];
+            x[i] = right / at(i, i);
+        }
+        std::vector<double> result(size);
+        std::transform(x.begin(), x.end(), result.begin(), [](const T& value) { return plain(value); });
+        return result;
+    }
+};
+
+template <class T>
+struct CellRunSums {
+    std::int32_t run = 0;
+    std::size_t n = 0;
+    T weight = T(0.0), sum = T(0.0); ///< Σ w, Σ w (e − cell mean)
+};
+
+/// Readings in order of cell (counting sort), then the sums for each run inside each cell.
+template <class T, class Use>
+void eachCell(const NoiseChain& chain, const Places& places, const std::vector<T>& e, const std::vector<T>& w,
+              const std::vector<T>& mean, Use&& use) {
+    const std::size_t cells = chain.cells.size();
+    std::vector<std::size_t> begin(cells + 1, 0);
+    for (const std::int32_t c : places.cell)
+        ++begin[static_cast<std::size_t>(c) + 1];
+    for (std::size_t c = 0; c < cells; ++c)
+        begin[c + 1] += begin[c];
+    std::vector<std::uint32_t> order(places.cell.size());
+    std::vector<std::size_t> next(begin.begin(), begin.end() - 1);
+    for (std::size_t i = 0; i < order.size(); ++i)
+        order[next[static_cast<std::size_t>(places.cell[i])]++] = static_cast<std::uint32_t>(i);
+
+    std::vector<std::int32_t> slot(chain.runs, -1);
+    std::vector<CellRunSums<T>> runs;
+    for (std::size_t c = 0; c < cells; ++c) {
+        runs.clear();
+        for (std::size_t k = begin[c]; k < begin[c + 1]; ++k) {
+            const std::size_t i = order[k];
+            const auto r = static_cast<std::size_t>(places.run[i]);
+            if (slot[r] < 0) {
+                slot[r] = static_cast<std::int32_t>(runs.size());
+                runs.emplace_back().run = places.run[i];
+            }
+            CellRunSums<T>& at = runs[static_cast<std::size_t>(slot[r])];
+            const T weight = w.empty() ? T(1.0) : w[i];
+            ++at.n;
+            at.weight += weight;
+            at.sum += weight * (e[i] - mean[c]);
+        }
+        for (const auto& run : runs)
+            slot[static_cast<std::size_t>(run.run)] = -1;
+        use(c, runs);
+    }
+}
+
+/// Mid-range and half-range of the set points, to hold the slope columns near 1.
+struct Range {
+    double middle = 0, half = 1;
+};
+
+Range rangeOf(const Sample& sample) {
+    const double low = sample.groupValue.front(), high = sample.groupValue.back();
+    return {(low + high) / 2, high > low ? (high - low) / 2 : 1};
+}
+
+template <class T>
+void addRuns(const Sample& sample, const Places& places, const std::vector<T>& e, const std::vector<T>& w, const Sums<T>& cellSums,
+             NoiseChain& chain) {
+    const std::size_t runs = chain.runs;
+    const Range range = rangeOf(sample);
+    RunSystem<T> system(2 * runs);
+    std::vector<double> scale(2 * runs, 0.0);
+    std::vector<std::size_t> count(runs, 0);
+    chain.cellRuns.reserve(std::min(chain.readings, chain.cells.size() * runs));
+    std::size_t first = 0;
+    eachCell<T>(chain, places, e, w, cellSums.mean, [&](std::size_t c, const std::vector<CellRunSums<T>>& inside) {
+        const T x = (T(sample.groupValue[static_cast<std::size_t>(chain.cells[c].group)]) - range.middle) / range.half;
+        for (const auto& one : inside) {
+            const auto r = static_cast<std::size_t>(one.run);
+            count[r] += one.n;
+            scale[r] += plain(one.weight);
+            scale[runs + r] += plain(one.weight * x * x);
+            system.b[r] += one.sum;
+            system.b[runs + r] += x * one.sum;
+            for (const auto& other : inside) {
+                const auto s = static_cast<std::size_t>(other.run);
+                T entry = -one.weight * other.weight / cellSums.weight[c];
+                if (r == s)
+                    entry += one.weight;
+                system.at(r, s) += entry;
+                system.at(r, runs + s) += x * entry;
+                system.at(runs + r, s) += x * entry;
+                system.at(runs + r, runs + s) += x * x * entry;
+            }
+            chain.cellRuns.push_back({static_cast<std::int32_t>(c), one.run, one.n, plain(one.weight),
+                                      plain(cellSums.mean[c] + one.sum / one.weight)});
+        }
+        const std::size_t expected = chain.cellRuns.front().n;
+        if (first == 0)
+            first = inside.size();
+        for (const auto& one : inside)
+            chain.balanced = chain.balanced && one.n == expected;
+        chain.balanced = chain.balanced && inside.size() == first && first == runs;
+    });
+    for (std::size_t r = 0; r < runs; ++r)
+        chain.runOffsetWeight += plain(system.at(r, r));
+    chain.runOffsets = system.eliminate(0, runs, scale);
+    chain.s4 = chain.s3 - DoubleDouble(system.explained);
+    chain.runSlopes = system.eliminate(runs, 2 * runs, scale);
+    chain.s5 = chain.s3 - DoubleDouble(system.explained);
+
+    const std::vector<double> effect = system.solve();
+    double offsetMean = 0, slopeMean = 0;
+    for (std::size_t r = 0; r < runs; ++r) {
+        offsetMean += effect[r] * static_cast<double>(count[r]) / static_cast<double>(chain.readings);
+        slopeMean += effect[runs + r] * static_cast<double>(count[r]) / static_cast<double>(chain.readings);
+    }
+    for (std::size_t r = 0; r < runs; ++r)
+        chain.effects.push_back({places.runNumbers[r], count[r], effect[r] - offsetMean, (effect[runs + r] - slopeMean) / range.half});
+}
+
+/// tr Zᵀ(P₃ − P₂)Z for the run columns Z: how much of a run effect leaks into the contrast of rising and falling.
+double runInContrast(const NoiseChain& chain) {
+    double trace = 0;
+    std::vector<double> inGroup(chain.runs, 0.0);
+    std::size_t k = 0;
+    for (std::size_t c = 0; c < chain.cells.size();) {
+        const std::int32_t group = chain.cells[c].group;
+        double weight = 0;
+        std::fill(inGroup.begin(), inGroup.end(), 0.0);
+        for (; c < chain.cells.size() && chain.cells[c].group == group; ++c) {
+            weight += chain.cells[c].weight;
+            for (; k < chain.cellRuns.size() && chain.cellRuns[k].cell == static_cast<std::int32_t>(c); ++k) {
+                trace += chain.cellRuns[k].weight * chain.cellRuns[k].weight / chain.cells[c].weight;
+                inGroup[static_cast<std::size_t>(chain.cellRuns[k].run)] += chain.cellRuns[k].weight;
+            }
+        }
+        for (const double sum : inGroup)
+            trace -= sum * sum / weight;
+    }
+    return std::max(0.0, trace);
+}
+
+template <class T>
+std::vector<T> columnOf(const PairColumn& column) {
+    std::vector<T> values(column.size());
+    for (std::size_t i = 0; i < values.size(); ++i)
+        values[i] = take<T>(column, i);
+    return values;
+}
+
+template <class T>
+void build(const Sample& sample, const Residuals& residuals, NoiseChain& chain) {
+    const std::vector<T> e = columnOf<T>(residuals.e);
+    const std::vector<T> w = columnOf<T>(residuals.weight);
+    const Places places = findPlaces(sample, chain);
+    T all(0.0);
+    for (std::size_t i = 0; i < e.size(); ++i)
+        all += w.empty() ? e[i] * e[i] : w[i] * e[i] * e[i];
+    chain.s1 = all;
+    const Sums<T> groups = meansOf<T>(sample.group, sample.groupValue.size(), e, w);
+    chain.s2 = squaresAbout<T>(sample.group, groups.mean, e, w);
+    const Sums<T> cells = meansOf<T>(places.cell, chain.cells.size(), e, w);
+    chain.s3 = chain.contrasts == 0 ? chain.s2 : DoubleDouble(squaresAbout<T>(places.cell, cells.mean, e, w));
+    chain.s4 = chain.s5 = chain.s3;
+
+    std::vector<std::size_t> n(chain.cells.size(), 0);
+    for (const std::int32_t c : places.cell)
+        ++n[static_cast<std::size_t>(c)];
+    for (std::size_t c = 0; c < chain.cells.size(); ++c) {
+        NoiseChain::Cell& cell = chain.cells[c];
+        cell.n = n[c];
+        cell.weight = plain(cells.weight[c]);
+        cell.mean = plain(cells.mean[c]);
+        chain.balanced = chain.balanced && cell.n == chain.cells.front().n;
+        const double whole = plain(groups.weight[static_cast<std::size_t>(cell.group)]);
+        chain.contrastWeight += cell.weight - cell.weight * cell.weight / whole;
+    }
+    chain.balanced = chain.balanced && (chain.contrasts == 0 || chain.contrasts == chain.setPoints);
+    if (chain.runsKnown && chain.runs > 1 && chain.cells.size() < chain.readings) {
+        addRuns<T>(sample, places, e, w, cells, chain);
+        chain.runInContrastWeight = runInContrast(chain);
+    }
+}
+
+} // namespace
+
+NoiseChain noiseChain(const Sample& sample, const Residuals& residuals) {
+    NoiseChain chain;
+    chain.readings = sample.size();
+    if (chain.readings == 0 || sample.groupValue.empty())
+        return chain;
+    const bool doubles = residuals.e.low.empty();
+    if (doubles)
+        build<double>(sample, residuals, chain);
+    else
+        build<DoubleDouble>(sample, residuals, chain);
+    return chain;
+}
+
+} // namespace spanwright
