@@ -1,9 +1,10 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
-#include "core/record/ReadingColumns.h"
+#include "core/fit/Sample.h"
 
 #include <optional>
+#include <span>
 #include <vector>
 
 namespace spanwright {
@@ -25,7 +26,7 @@ struct OutlierTrial {
 struct Diagnostics {
     std::optional<double> durbinWatson, durbinWatsonP; ///< p against positive autocorrelation
     std::optional<double> lag1Autocorrelation;
-    std::optional<double> effectiveReadings; ///< n (1 − ρ₁)/(1 + ρ₁)
+    std::optional<double> effectiveReadings; ///< n (1 − ρ₁)/(1 + ρ₁), not above n
     std::optional<TestResult> shapiroWilk, breuschPagan, bartlett, levene;
     std::optional<double> cochran, cochranCritical, cochranCriticalOutlier; ///< 5 % and 1 %
     std::optional<TestResult> linearity; ///< straight line against quadratic, ISO 8466-1
@@ -37,6 +38,19 @@ struct Diagnostics {
     std::optional<Grubbs> grubbs;
     std::vector<OutlierTrial> esd;
     int esdCount = 0;
+    std::vector<Warning> warnings; ///< ApproximateMethod (facts: figure, method)
 };
+
+struct DiagnoseQuestion {
+    FunctionChoice function;
+    FitDirection direction = FitDirection::Indication;
+    std::span<const ReadingId> ids; ///< of every row of the record, to name readings
+    int mostOutliers = 0;           ///< tried by the generalised ESD test; 0: a tenth of the readings, at most 10
+    double outlierLevel = 0.05;
+};
+
+/// Every test, on residuals multiplied by the root of their weights, in the order taken. In double-double while the residuals
+/// have their low parts. Sources stand with each test.
+[[nodiscard]] Diagnostics diagnose(const Sample& sample, const Residuals& residuals, const DiagnoseQuestion& question);
 
 } // namespace spanwright

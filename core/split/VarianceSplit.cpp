@@ -66,7 +66,7 @@ void addRows(VarianceSplit& split, const NoiseChain& chain, const SplitSums& sum
     }
     split.pureError = row(chain.s2, chain.dfPure());
     if (chain.setPoints > sums.terms)
-        split.lackOfFit = row(sums.residual - chain.s2, chain.setPoints - sums.terms);
+        split.lackOfFit = row(chain.s1 - chain.s2, chain.setPoints - sums.terms);
     else
         split.warnings.push_back(undefined("lack_of_fit", "set-points"));
     if (chain.contrasts > 0)
@@ -86,7 +86,7 @@ void addRows(VarianceSplit& split, const NoiseChain& chain, const SplitSums& sum
     if (chain.dfRepeatability() > 0)
         split.repeatability = row(chain.s5, chain.dfRepeatability());
     else
-        split.warnings.push_back({WarningCode::NoReplicates, {{"figure", "repeatability"}}});
+        split.warnings.push_back(undefined("repeatability", "no-repeats"));
 }
 
 void addTests(VarianceSplit& split, const Sample& sample, const NoiseChain& chain, const SplitSums& sums, double floor) {

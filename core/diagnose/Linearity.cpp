@@ -1,0 +1,74 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/diagnose/Linearity.h"
+
+#include "core/diagnose/ResidualColumn.h"
+
+#include <boost/math/distributions/fisher_f.hpp>
+
+namespace spanwright {
+namespace {
+
+template <class T>
+T at(const PairColumn& column, std::size_t i) {
+    if constexpr (std::is_same_v<T, double>)
+        return column.high[i];
+    else
+        return column[i];
+}
+
+/// Sums over orthogonal polynomials 1, φ₁ = x − x̄, φ₂ = φ₁² − b φ₁ − c under the weights (Forsythe, J. SIAM 5 (1957) 74).
+template <class T>
+std::optional<TestResult> test(const Sample& sample, const PairColumn& weight) {
+    const std::size_t n = sample.size();
+    const auto w = [&](std::size_t i) { return weight.empty() ? T(1.0) : at<T>(weight, i); };
+    T sumW(0.0), sumX(0.0), sumY(0.0);
+    for (std::size_t i = 0; i < n; ++i) {
+        sumW += w(i);
+        sumX += w(i) * at<T>(sample.reference, i);
+        sumY += w(i) * at<T>(sample.indication, i);
+    }
+    const T meanX = sumX / sumW, meanY = sumY / sumW;
+    T second(0.0), third(0.0), xy(0.0);
+    for (std::size_t i = 0; i < n; ++i) {
+        const T x = at<T>(sample.reference, i) - meanX;
+        const T wx = w(i) * x;
+        second += wx * x;
+        third += wx * x * x;
+        xy += wx * (at<T>(sample.indication, i) - meanY);
+    }
+    if (!(rounded(second) > 0))
+        return std::nullopt;
+    const T slope = xy / second, b = third / second, c = second / sumW;
+    T line(0.0), squares(0.0), product(0.0);
+    for (std::size_t i = 0; i < n; ++i) {
+        const T x = at<T>(sample.reference, i) - meanX;
+        const T e = at<T>(sample.indication, i) - meanY - slope * x;
+        const T q = x * x - b * x - c;
+        line += w(i) * e * e;
+        squares += w(i) * q * q;
+        product += w(i) * q * e;
+    }
+    if (!(rounded(squares) > 1e-20 * rounded(T(second * second / sumW))))
+        return std::nullopt;
+    const T gain = product * product / squares;
+    const T rest = line - gain;
+    if (!(rounded(rest) > 1e-12 * rounded(gain)) || !(rounded(rest) > 0))
+        return std::nullopt;
+    TestResult result;
+    const int freedom = static_cast<int>(n) - 3;
+    result.df = freedom;
+    result.statistic = rounded(T(gain / rest)) * freedom;
+    result.p = boost::math::cdf(boost::math::complement(boost::math::fisher_f(1, freedom), result.statistic));
+    return result;
+}
+
+} // namespace
+
+std::optional<TestResult> linearityTest(const Sample& sample, const PairColumn& weight) {
+    if (sample.size() < 4 || sample.reference.size() != sample.size())
+        return std::nullopt;
+    const bool doubles = sample.reference.low.empty() && sample.indication.low.empty();
+    return doubles ? test<double>(sample, weight) : test<DoubleDouble>(sample, weight);
+}
+
+} // namespace spanwright

@@ -1,0 +1,100 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/diagnose/Outliers.h"
+
+#include "core/diagnose/ResidualColumn.h"
+
+#include <boost/math/distributions/students_t.hpp>
+
+#include <algorithm>
+#include <cmath>
+
+namespace spanwright {
+namespace {
+
+/// The `most` smallest and the `most` largest values by index, in rising order: no other can be found.
+struct Ends {
+    std::vector<std::size_t> low, high;
+};
+
+template <class T>
+Ends endsOf(std::span<const T> u, std::size_t most) {
+    Ends ends;
+    const auto less = [&](std::size_t a, std::size_t b) { return u[a] < u[b] || (u[a] == u[b] && a < b); };
+    const auto more = [&](std::size_t a, std::size_t b) { return u[a] > u[b] || (u[a] == u[b] && a < b); };
+    for (std::size_t i = 0; i < u.size(); ++i) {
+        const auto keep = [&](std::vector<std::size_t>& heap, auto before) {
+            if (heap.size() == most) {
+                if (!before(i, heap.back()))
+                    return;
+                heap.pop_back();
+            }
+            heap.insert(std::upper_bound(heap.begin(), heap.end(), i, before), i);
+        };
+        keep(ends.low, less);
+        keep(ends.high, more);
+    }
+    return ends;
+}
+
+template <class T>
+std::vector<ExtremeTrial> trialsOf(std::span<const T> u, int most, double level) {
+    std::vector<ExtremeTrial> trials;
+    const std::size_t n = u.size();
+    if (n < 3 || most < 1)
+        return trials;
+    const auto wanted = std::min(static_cast<std::size_t>(most), n - 2);
+    T sum(0.0);
+    for (const T& value : u)
+        sum += value;
+    T mean = sum / static_cast<double>(n);
+    T squares(0.0);
+    for (const T& value : u) {
+        const T d = value - mean;
+        squares += d * d;
+    }
+    const T all = squares;
+    const Ends ends = endsOf(u, wanted);
+    std::size_t low = 0, high = 0;
+    for (std::size_t i = 0; i < wanted; ++i) {
+        const double left = static_cast<double>(n - i);
+        if (!(rounded(squares) > 1e-28 * rounded(all)))
+            break;
+        const std::size_t below = ends.low[low], above = ends.high[high];
+        const bool takeHigh = u[above] - mean > mean - u[below] || (u[above] - mean == mean - u[below] && above < below);
+        const std::size_t found = takeHigh ? above : below;
+        ++(takeHigh ? high : low);
+        const T d = u[found] - mean;
+        const double variance = rounded(squares) / (left - 1);
+        trials.push_back({found, std::abs(rounded(d)) / std::sqrt(variance), grubbsCriticalValue(n - i, level)});
+        // Mean and squares without the value: ū' = ū − d/(m−1), S' = S − d² m/(m−1).
+        mean = mean - d / (left - 1);
+        squares = squares - d * d * (left / (left - 1));
+    }
+    return trials;
+}
+
+} // namespace
+
+std::vector<ExtremeTrial> extremeTrials(std::span<const DoubleDouble> u, int most, double level) {
+    return trialsOf(u, most, level);
+}
+
+std::vector<ExtremeTrial> extremeTrials(std::span<const double> u, int most, double level) {
+    return trialsOf(u, most, level);
+}
+
+int outlierCount(const std::vector<ExtremeTrial>& trials) {
+    for (std::size_t k = trials.size(); k > 0; --k)
+        if (trials[k - 1].r > trials[k - 1].lambda)
+            return static_cast<int>(k);
+    return 0;
+}
+
+double grubbsCriticalValue(std::size_t n, double level) {
+    const double size = static_cast<double>(n);
+    const boost::math::students_t student(size - 2);
+    const double t = boost::math::quantile(boost::math::complement(student, level / (2 * size)));
+    return (size - 1) / std::sqrt(size) * std::sqrt(t * t / (size - 2 + t * t));
+}
+
+} // namespace spanwright
