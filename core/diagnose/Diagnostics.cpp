@@ -8,6 +8,7 @@
 #include "core/diagnose/Outliers.h"
 #include "core/diagnose/ResidualColumn.h"
 #include "core/split/FunctionBasis.h"
+#include "core/split/VarianceSplit.h"
 
 #include <algorithm>
 #include <cmath>
@@ -20,18 +21,18 @@ namespace {
 constexpr std::size_t mostForExactWatson = 2000;
 constexpr std::size_t mostForWatsonMoments = 100'000;
 
-/// Columns of the function at the readings; for a function that is none of the polynomials, powers up to as many terms as two,
+/// Columns of the function at the readings; for a function that is none of the polynomials, a polynomial of as many terms,
 /// which `approximate` says.
 struct Design {
     std::vector<std::vector<double>> columns;
     bool approximate = false;
 };
 
-Design designOf(const Sample& sample, const DiagnoseQuestion& question) {
+Design designOf(const Sample& sample, const Fit& fit) {
     Design design;
-    const bool known = hasFunctionBasis(question.function);
-    const FunctionChoice function = known ? question.function : FunctionChoice{FunctionFamily::Line, 0};
-    const PairColumn& abscissa = question.direction == FitDirection::Indication ? sample.reference : sample.indication;
+    const bool known = hasFunctionBasis(fit.function);
+    const FunctionChoice function = known ? fit.function : FunctionChoice{FunctionFamily::Polynomial, static_cast<int>(fit.terms()) - 1};
+    const PairColumn& abscissa = fit.direction == FitDirection::Indication ? sample.reference : sample.indication;
     const FunctionBasis basis = functionBasis(function, abscissa.high);
     for (std::size_t j = 0; j < basis.terms; ++j)
         design.columns.emplace_back(basis.column(j).begin(), basis.column(j).end());
@@ -80,7 +81,7 @@ void watsonP(const Residuals& residuals, Design design, Diagnostics& result) {
     }
     result.durbinWatsonP = durbinWatsonBelow(d, design.columns);
     if (design.approximate)
-        result.warnings.push_back(approximate("durbin_watson", "line"));
+        result.warnings.push_back(approximate("durbin_watson", "polynomial"));
 }
 
 template <class T>
@@ -112,9 +113,9 @@ void variances(const Sample& sample, std::span<const double> u, Diagnostics& res
 
 } // namespace
 
-Diagnostics diagnose(const Sample& sample, const Residuals& residuals, const DiagnoseQuestion& question) {
+Diagnostics diagnose(const Sample& sample, const Residuals& residuals, const Fit& fit, const DiagnoseQuestion& question) {
     Diagnostics result;
-    if (sample.size() < 2)
+    if (sample.size() < 2 || !(fit.residualSs > roundingSquares(residuals)))
         return result;
     const std::vector<double> u = weightedResiduals<double>(residuals);
     if (residuals.e.low.empty()) {
@@ -126,10 +127,10 @@ Diagnostics diagnose(const Sample& sample, const Residuals& residuals, const Dia
         outliers(std::span<const DoubleDouble>(exact), sample, question, result);
     }
     result.shapiroWilk = shapiroWilk(u.size() <= 5000 ? u : std::vector<double>{});
-    Design design = designOf(sample, question);
+    Design design = designOf(sample, fit);
     result.breuschPagan = breuschPagan(u, design.columns);
     variances(sample, u, result);
-    if (question.function.family != FunctionFamily::Constant)
+    if (fit.function.family != FunctionFamily::Constant)
         result.linearity = linearityTest(sample, residuals.weight);
     watsonP(residuals, std::move(design), result);
     return result;

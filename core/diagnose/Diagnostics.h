@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include "core/fit/Fit.h"
 #include "core/fit/Sample.h"
 
 #include <optional>
@@ -42,15 +43,13 @@ struct Diagnostics {
 };
 
 struct DiagnoseQuestion {
-    FunctionChoice function;
-    FitDirection direction = FitDirection::Indication;
     std::span<const ReadingId> ids; ///< of every row of the record, to name readings
     int mostOutliers = 0;           ///< tried by the generalised ESD test; 0: a tenth of the readings, at most 10
     double outlierLevel = 0.05;
 };
 
 /// Every test, on residuals multiplied by the root of their weights, in the order taken. In double-double while the residuals
-/// have their low parts. Sources stand with each test.
-[[nodiscard]] Diagnostics diagnose(const Sample& sample, const Residuals& residuals, const DiagnoseQuestion& question);
+/// have their low parts. Sources stand with each test. Nothing where the residuals are no more than rounding.
+[[nodiscard]] Diagnostics diagnose(const Sample& sample, const Residuals& residuals, const Fit& fit, const DiagnoseQuestion& question);
 
 } // namespace spanwright

@@ -41,8 +41,8 @@ std::vector<int> contrastColumns(const NoiseChain& chain) {
 
 } // namespace
 
-std::optional<SplitRow> adjustedLackOfFit(const Sample& sample, const NoiseChain& chain, const SplitSums& sums) {
-    if (chain.balanced || sums.direction != FitDirection::Indication || !hasFunctionBasis(sums.function))
+std::optional<SplitRow> adjustedLackOfFit(const Sample& sample, const NoiseChain& chain, const Fit& fit) {
+    if (chain.balanced || fit.direction != FitDirection::Indication || !hasFunctionBasis(fit.function))
         return std::nullopt;
     if (chain.contrasts == 0 && chain.runOffsets == 0)
         return std::nullopt;
@@ -50,7 +50,7 @@ std::optional<SplitRow> adjustedLackOfFit(const Sample& sample, const NoiseChain
     std::vector<double> abscissa;
     for (const Node& node : nodes)
         abscissa.push_back(sample.groupValue[static_cast<std::size_t>(chain.cells[node.cell].group)]);
-    const FunctionBasis basis = functionBasis(sums.function, abscissa);
+    const FunctionBasis basis = functionBasis(fit.function, abscissa);
     const std::vector<int> contrast = contrastColumns(chain);
     const std::size_t runTerms = chain.runOffsets > 0 ? chain.runs - 1 : 0;
     const std::size_t runAt = basis.terms + static_cast<std::size_t>(chain.contrasts);

@@ -11,6 +11,6 @@ namespace spanwright {
 /// ±½ at every set point that has both; run offsets and slopes are coded to sum to zero, so that in balanced data the result
 /// equals the sequential row. Sum of squares and degrees of freedom only. Empty when the data are balanced, or the function is
 /// not a polynomial in the reference.
-[[nodiscard]] std::optional<SplitRow> adjustedLackOfFit(const Sample& sample, const NoiseChain& chain, const SplitSums& sums);
+[[nodiscard]] std::optional<SplitRow> adjustedLackOfFit(const Sample& sample, const NoiseChain& chain, const Fit& fit);
 
 } // namespace spanwright

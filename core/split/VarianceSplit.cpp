@@ -24,20 +24,6 @@ SplitRow row(const DoubleDouble& ss, int df) {
     return made;
 }
 
-/// What rounding alone would leave as a sum of squares of n residuals of values as large as those fitted.
-double roundingFloor(const Residuals& residuals) {
-    double largest = 0;
-    for (const double value : residuals.fitted)
-        largest = std::max(largest, std::abs(value));
-    const double unit = residuals.e.low.empty() ? 4 * 2.2e-16 : 64 * 1.3e-32;
-    double weight = 0;
-    for (const double w : residuals.weight.high)
-        weight = std::max(weight, w);
-    if (residuals.weight.empty())
-        weight = 1;
-    return static_cast<double>(residuals.e.size()) * weight * (largest * unit) * (largest * unit);
-}
-
 /// F and p of a row against an error row; nothing when the error is nothing but rounding.
 void testAgainst(SplitRow& tested, const SplitRow& error, double floor) {
     tested.f.reset();
@@ -59,14 +45,14 @@ Warning undefined(const char* figure, const char* reason) {
 }
 
 /// The rows of the chain below the residual, and why one is not there.
-void addRows(VarianceSplit& split, const NoiseChain& chain, const SplitSums& sums) {
+void addRows(VarianceSplit& split, const NoiseChain& chain, int terms) {
     if (chain.dfPure() <= 0) {
         split.warnings.push_back({WarningCode::NoReplicates, {{"figure", "pure_error"}}});
         return;
     }
     split.pureError = row(chain.s2, chain.dfPure());
-    if (chain.setPoints > sums.terms)
-        split.lackOfFit = row(chain.s1 - chain.s2, chain.setPoints - sums.terms);
+    if (chain.setPoints > terms)
+        split.lackOfFit = row(chain.s1 - chain.s2, chain.setPoints - terms);
     else
         split.warnings.push_back(undefined("lack_of_fit", "set-points"));
     if (chain.contrasts > 0)
@@ -89,7 +75,7 @@ void addRows(VarianceSplit& split, const NoiseChain& chain, const SplitSums& sum
         split.warnings.push_back(undefined("repeatability", "no-repeats"));
 }
 
-void addTests(VarianceSplit& split, const Sample& sample, const NoiseChain& chain, const SplitSums& sums, double floor) {
+void addTests(VarianceSplit& split, const Sample& sample, const NoiseChain& chain, const Fit& fit, double floor) {
     testAgainst(split.regression, split.residual, floor);
     const auto& error = split.against == SplitPart::Repeatability ? split.repeatability : split.pureError;
     testAgainst(split.lackOfFit, error, floor);
@@ -99,7 +85,7 @@ void addTests(VarianceSplit& split, const Sample& sample, const NoiseChain& chai
     split.lackOfFitNaive = split.lackOfFit;
     testAgainst(split.lackOfFitNaive, split.pureError, floor);
     if (split.lackOfFit) {
-        split.lackOfFitAdjusted = adjustedLackOfFit(sample, chain, sums);
+        split.lackOfFitAdjusted = adjustedLackOfFit(sample, chain, fit);
         testAgainst(split.lackOfFitAdjusted, error, floor);
     }
 }
@@ -138,19 +124,27 @@ double meanVarianceOfReading(const Residuals& residuals) {
 
 } // namespace
 
-VarianceSplit splitVariance(const Sample& sample, const Residuals& residuals, const SplitSums& sums) {
+double roundingSquares(const Residuals& residuals) {
+    double largest = 0, weight = residuals.weight.empty() ? 1 : 0;
+    for (const double value : residuals.fitted)
+        largest = std::max(largest, std::abs(value));
+    for (const double w : residuals.weight.high)
+        weight = std::max(weight, w);
+    const double unit = largest * (residuals.e.low.empty() ? 4 * 2.2e-16 : 64 * 1.3e-32);
+    return static_cast<double>(residuals.e.size()) * weight * unit * unit;
+}
+
+VarianceSplit splitVariance(const Sample& sample, const Residuals& residuals, const Fit& fit) {
     VarianceSplit split;
-    const int n = static_cast<int>(sample.size());
-    const int constant = sums.aboutZero ? 0 : 1;
-    split.total = row(sums.total, n - constant);
-    split.regression = row(sums.regression, sums.terms - constant);
-    split.residual = row(sums.residual, n - sums.terms);
-    if (n == 0 || sample.groupValue.empty())
+    split.total = row(fit.totalSs, fit.totalDf);
+    split.regression = row(fit.regressionSs, fit.regressionDf);
+    split.residual = row(fit.residualSs, fit.degreesOfFreedom);
+    if (sample.size() == 0 || sample.groupValue.empty())
         return split;
 
     const NoiseChain chain = noiseChain(sample, residuals);
-    addRows(split, chain, sums);
-    addTests(split, sample, chain, sums, roundingFloor(residuals));
+    addRows(split, chain, static_cast<int>(fit.terms()));
+    addTests(split, sample, chain, fit, roundingSquares(residuals));
     addMeans(split, sample, chain);
     for (const RunEffect& effect : chain.effects)
         split.runs.push_back({effect.run, effect.n, effect.offset, effect.slope});

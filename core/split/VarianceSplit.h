@@ -2,8 +2,8 @@
 #pragma once
 
 #include "core/base/Warning.h"
+#include "core/fit/Fit.h"
 #include "core/fit/Sample.h"
-#include "core/record/Choices.h"
 
 #include <optional>
 #include <vector>
@@ -61,20 +61,13 @@ struct VarianceSplit {
     std::vector<Warning> warnings;
 };
 
-/// What a fit hands over beside its residuals: sums of squares (weighted as the fit was) and how many coefficients took part.
-/// Without a constant among them, total and regression are about zero, else about the mean.
-struct SplitSums {
-    DoubleDouble total = 0.0, regression = 0.0, residual = 0.0;
-    int terms = 2;
-    bool aboutZero = false;
-    FunctionChoice function;
-    FitDirection direction = FitDirection::Indication;
-};
-
-/// Splits Σ w e² of a fit with n readings, m set points and p terms. Contract: rows and degrees of freedom as ranks added,
+/// Splits what a fit left, Σ w e², with the sums of squares and degrees of freedom of the fit above it. Rows and degrees of freedom as ranks added,
 /// computed in double-double while the residuals have their low parts, in one or two passes over the readings. Rows that the
 /// data cannot give are empty, each with a warning (FigureUndefined, NoReplicates, OneRun, OneDirection). Sources: Draper and
 /// Smith, "Applied Regression Analysis" (lack of fit); Searle, "Linear Models" (differences of nested residual sums).
-[[nodiscard]] VarianceSplit splitVariance(const Sample& sample, const Residuals& residuals, const SplitSums& sums);
+[[nodiscard]] VarianceSplit splitVariance(const Sample& sample, const Residuals& residuals, const Fit& fit);
+
+/// The largest sum of squares that may be nothing but rounding of the readings fitted: below it no test is made.
+[[nodiscard]] double roundingSquares(const Residuals& residuals);
 
 } // namespace spanwright
