@@ -24,11 +24,10 @@ struct Candidate {
 };
 
 /// Share of rows from the first number on that have the usual number of fields, times the share of their cells that are
-/// numbers, times or blank (little may be: a table of notes still has columns); less when the row before the first numbers,
-/// which should name the columns, has another number of fields.
+/// numbers, times or blank (little may be: a table of notes still has columns), times the share of all rows that this is; less
+/// when the row before the first numbers, which should name the columns, has another number of fields.
 double explains(const std::vector<SampleRow>& rows) {
     const std::size_t width = usualWidth(rows);
-    std::size_t dataRows = 0;
     std::size_t regular = 0;
     std::size_t cells = 0;
     std::size_t understood = 0;
@@ -50,14 +49,13 @@ double explains(const std::vector<SampleRow>& rows) {
         if (!numbersSeen && widthBefore)
             headerFits = *widthBefore == row.cells.size();
         numbersSeen = true;
-        ++dataRows;
         regular += row.cells.size() == width ? 1 : 0;
         cells += row.cells.size();
         understood += numbers + blanks;
     }
     if (!numbersSeen)
         return 0;
-    const double share = static_cast<double>(regular) / static_cast<double>(dataRows);
+    const double share = static_cast<double>(regular) / static_cast<double>(rows.size());
     return share * (0.1 + 0.9 * static_cast<double>(understood) / static_cast<double>(cells)) * (headerFits ? 1.0 : 0.9);
 }
 

@@ -19,8 +19,12 @@ constexpr std::array<std::string_view, 9> missingWords{"-", "--", "---", "----",
 constexpr std::array<std::string_view, 14> noValueWords{"nan",      "inf", "-inf", "+inf",  "infinity", "-infinity", "ovr",
                                                         "over",     "ol",  "o.l",  "error", "err",      "overload",  "#value!"};
 
-/// Whether digits stand in threes behind every sign that is no decimal mark: thousands, and not two numbers.
+/// Whether digits stand in threes behind every sign that is no decimal mark, and no such sign behind the mark: thousands, and not
+/// two numbers.
 bool groupsOfThree(std::string_view cell, DecimalMark mark) {
+    if (const std::size_t at = cell.find(static_cast<char>(mark));
+        at != std::string_view::npos && cell.find_first_not_of("0123456789", at + 1) != std::string_view::npos)
+        return false;
     for (std::size_t i = 0; i < cell.size(); ++i) {
         const char c = cell[i];
         const bool separates = (c < '0' || c > '9') && c != '-' && c != '+' && c != static_cast<char>(mark);

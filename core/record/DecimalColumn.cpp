@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/record/DecimalColumn.h"
 
+#include <algorithm>
 #include <cassert>
 #include <limits>
 
@@ -106,6 +107,10 @@ DoubleDouble DecimalColumn::toDoubleDouble(std::size_t row) const {
     if (decimals_[row] == Aside)
         return aside_.at(row).toDoubleDouble();
     return spanwright::toDoubleDouble(grid_[row]) / powerOfTen(scale_);
+}
+
+bool DecimalColumn::exact() const {
+    return std::all_of(aside_.begin(), aside_.end(), [](const auto& kept) { return kept.second.toDouble() == 0.0; });
 }
 
 DecimalColumn DecimalColumn::fromGrid(std::vector<std::int64_t> grid, std::vector<std::uint8_t> decimals, int scale) {

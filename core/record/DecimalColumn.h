@@ -34,8 +34,8 @@ class DecimalColumn {
     [[nodiscard]] int scale() const { return scale_; }
     /// The integers on the grid; 0 where the value is missing or kept aside.
     [[nodiscard]] std::span<const std::int64_t> grid() const { return grid_; }
-    /// Whether every value that is present lies on the grid.
-    [[nodiscard]] bool exact() const { return aside_.empty(); }
+    /// Whether every value that is present lies on the grid; a zero kept aside for its minus sign does.
+    [[nodiscard]] bool exact() const;
     /// Number of rows without a value.
     [[nodiscard]] std::size_t missing() const { return missing_; }
 

@@ -95,9 +95,9 @@ std::string climateLogger() {
         if (row > 905 && row <= 919)
             continue;
         if (row % 331 == 17)
-            cells[std::size_t(row) % 5].clear();
+            cells[std::size_t(row) % 4].clear();
         if (row % 401 == 90)
-            cells[2] = "OVR";
+            cells[1] = "OVR";
         std::string line = clockText(second);
         for (const std::string& one : cells)
             line += ';' + one;

@@ -55,8 +55,8 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
         return tr("there is no column %1. Name a column of the header, or its number from 1.")
             .arg(facts.quoted("name", facts.quoted("text", tr("of that name"))));
     case ErrorCode::NoDataRows: return tr("there is no row of readings under the header. Choose the file that holds the readings.");
-    case ErrorCode::SeparatorUnclear: return tr("the separator of the columns is not certain; it may also be %1. State it where the guess is wrong.")
-            .arg(facts.quoted("separator", tr("another")));
+    case ErrorCode::SeparatorUnclear: return tr("the separator of the columns is not certain; %1 was taken. State it where the guess is wrong.")
+            .arg(facts.quoted("separator", tr("one")));
     case ErrorCode::DecimalMarkUnclear: return tr("the decimal mark is not certain: in %1 both point and comma would do. State it where the guess is wrong.")
             .arg(facts.quoted("text", tr("the numbers")));
     case ErrorCode::DateOrderUnclear:

@@ -137,6 +137,15 @@ class CsvReaderTest : public QObject {
         QCOMPARE(int(rules->doubts.front().code), doubt);
     }
 
+    void isCertainOfATableOfThreesOnOneLine() {
+        // "120.003,146.0886,120" has three digits behind each comma and is no single number all the same.
+        const auto rules = guessRules("reference,resistance,set point\n°C,Ω,°C\n80.036,130.9289,80\n120.003,146.088,120\n2.002,0.203,2\n");
+        QVERIFY(rules.ok());
+        QVERIFY(rules->doubts.empty());
+        QCOMPARE(rules->separator, ',');
+        QCOMPARE(rules->columns.size(), std::size_t(3));
+    }
+
     void aWishOverrulesTheGuess() {
         const std::string bytes = "1,408;2,5\n1,512;3,5\n";
         CsvWishes wishes;

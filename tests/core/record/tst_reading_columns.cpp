@@ -49,6 +49,14 @@ class ReadingColumnsTest : public QObject {
         QVERIFY(columns == before);
     }
 
+    void aZeroWithAMinusIsKeptAndIsExact() {
+        DecimalColumn column;
+        column.push_back(typed("-0.000"));
+        column.push_back(typed("0.021"));
+        QVERIFY(column.exact());
+        QCOMPARE(column.at(0)->text(), std::string("-0.000"));
+    }
+
     void valuesThatFitNoGridAreKeptAsTyped() {
         DecimalColumn column;
         column.push_back(typed("123456789012345678"));
