@@ -1,7 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/evaluate/RowTable.h"
 
-#include <cmath>
+#include "core/diagnose/Influence.h"
+
 #include <limits>
 
 namespace spanwright {
@@ -40,54 +41,14 @@ std::vector<std::size_t> fillAsRead(RowFigures& table, const Record& record, Pha
     return rows;
 }
 
-/// What every reading's figures are scaled by.
-struct Spread {
-    DoubleDouble sum = 0.0; ///< S
-    double variance = missing; ///< s², of the fit
-    double freedom = 0;     ///< ν
-    double terms = 0;       ///< p
-};
-
-Spread spreadOf(const RowSources& sources) {
-    const Residuals& r = *sources.residuals;
-    Spread spread;
-    for (std::size_t i = 0; i < r.e.size(); ++i) {
-        const DoubleDouble e = r.e[i];
-        spread.sum += r.weight.empty() ? sqr(e) : r.weight[i] * sqr(e);
-    }
-    spread.freedom = sources.fit->degreesOfFreedom;
-    spread.terms = static_cast<double>(sources.fit->terms());
-    if (spread.freedom > 0)
-        spread.variance = toDouble(spread.sum / spread.freedom);
-    return spread;
-}
-
-double divided(double numerator, double denominator) {
-    return denominator > 0 ? numerator / denominator : missing;
-}
-
-void fillInfluence(RowFigures& table, std::size_t at, const RowSources& sources, const Spread& spread, std::size_t i) {
-    const Residuals& r = *sources.residuals;
-    const DoubleDouble weighted = r.weight.empty() ? sqr(r.e[i]) : r.weight[i] * sqr(r.e[i]);
-    const double e = std::copysign(std::sqrt(toDouble(weighted)), r.e.high[i]);
-    const double h = r.leverage[i];
-    const double rest = 1 - h;
-    table.leverage[at] = h;
-    table.standardised[at] = divided(e, std::sqrt(spread.variance * rest));
-    table.cook[at] = divided(toDouble(weighted) * h, spread.terms * spread.variance * rest * rest);
-    if (spread.freedom > 1) {
-        const double without = toDouble(spread.sum * rest - weighted);
-        table.studentised[at] = divided(e * std::sqrt(spread.freedom - 1), std::sqrt(std::max(without, 0.0)));
-    }
-}
-
 } // namespace
 
 RowFigures rowTable(const RowSources& sources) {
     RowFigures table;
     const std::vector<std::size_t> rows = fillAsRead(table, sources.record, sources.phase);
     const bool forward = sources.fit == nullptr || sources.fit->direction == FitDirection::Indication;
-    const Spread spread = sources.fit != nullptr ? spreadOf(sources) : Spread();
+    const Influence figures =
+        sources.fit != nullptr ? influence(*sources.residuals, static_cast<int>(sources.fit->terms())) : Influence();
     std::size_t inAll = 0, inUsed = 0;
     for (std::size_t at = 0; at < rows.size(); ++at) {
         if (inAll == sources.all.size() || sources.all.rows[inAll] != rows[at])
@@ -103,7 +64,10 @@ RowFigures rowTable(const RowSources& sources) {
         if (counts) {
             table.fitted[at] = sources.residuals->fitted[u];
             table.residual[at] = sources.residuals->e.high[u];
-            fillInfluence(table, at, sources, spread, u);
+            table.leverage[at] = sources.residuals->leverage[u];
+            table.standardised[at] = figures.standardised[u];
+            table.studentised[at] = figures.studentised[u];
+            table.cook[at] = figures.cook[u];
         } else {
             const double x = forward ? sources.all.reference.high[i] : sources.all.indication.high[i];
             const DoubleDouble y = forward ? sources.all.indication[i] : sources.all.reference[i];

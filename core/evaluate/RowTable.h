@@ -17,12 +17,8 @@ struct RowSources {
     const Residuals* residuals = nullptr; ///< of `used`
 };
 
-/// Every reading of the phase with what follows for it. With weights w, residuals e = y − ŷ in the unit of the ordinate, leverage h,
-/// S = Σ w e², ν = n − p and s² = S/ν (Cook and Weisberg, "Residuals and Influence in Regression", 1982, 2.2 and 3.1):
-///   standardised  √w e / (s √(1 − h))
-///   studentised   √w e √((ν − 1)/(S (1 − h) − w e²)), externally
-///   Cook          w e² h / (p s² (1 − h)²)
-/// NaN where a reading takes no part, or a divisor is zero.
+/// Every reading of the phase with what follows for it (core/diagnose/Influence). NaN where a reading takes no part or a figure does
+/// not exist.
 RowFigures rowTable(const RowSources& sources);
 
 } // namespace spanwright

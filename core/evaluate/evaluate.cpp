@@ -58,7 +58,8 @@ class PhaseSteps {
             result_.notFitted = fitted.error();
         const Residuals* residuals = fitted ? &fitted->residuals : nullptr;
         result_.rows = rowTable({record_, result_.phase, used_, all(), fit(), residuals});
-        if (fit() != nullptr) {
+        if (fitted) {
+            examine(fitted->residuals);
             draw();
             answer();
             compare();
@@ -81,6 +82,12 @@ class PhaseSteps {
         result_.excluded = used_.excluded;
         result_.complete = used_.size() + used_.excluded;
         result_.planned = plannedReadings(record_.plan, result_.phase).size();
+    }
+
+    void examine(const Residuals& residuals) {
+        result_.split = splitVariance(used_, residuals, *result_.fit);
+        const DiagnoseQuestion question{record_.readings->ids(), choices_.outliers, choices_.outlierLevel.toDouble()};
+        result_.diagnostics = diagnose(used_, residuals, *result_.fit, question);
     }
 
     void draw() {
@@ -132,6 +139,8 @@ class PhaseSteps {
             take(result_.fit->warnings);
         if (result_.split)
             take(result_.split->warnings);
+        if (result_.diagnostics)
+            take(result_.diagnostics->warnings);
         for (const ReadBackAnswer& answer : result_.read)
             take(answer.warnings);
         take(result_.budget.warnings);
