@@ -53,7 +53,7 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
             .arg(facts.quoted("text", tr("the number")));
     case ErrorCode::ColumnMissing:
         return tr("there is no column %1. Name a column of the header, or its number from 1.")
-            .arg(facts.quoted("name", facts.quoted("text", tr("of that name"))));
+            .arg(facts.quoted("name", facts.quoted("column", tr("of that name"))));
     case ErrorCode::NoDataRows: return tr("there is no row of readings under the header. Choose the file that holds the readings.");
     case ErrorCode::SeparatorUnclear: return tr("the separator of the columns is not certain; %1 was taken. State it where the guess is wrong.")
             .arg(facts.quoted("separator", tr("one")));
@@ -140,7 +140,7 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
 
 QString errorText(const Error& error) {
     Sentence facts(error.facts);
-    const QString place = facts.place();
+    const QString place = error.code == ErrorCode::ColumnMissing ? facts.file() : facts.place();
     QString sentence = ErrorText::of(error.code, facts);
     if (place.isEmpty() && !sentence.isEmpty())
         sentence[0] = sentence[0].toUpper();

@@ -59,6 +59,10 @@ QString Sentence::place() {
     return parts.isEmpty() ? QString() : parts.join(QLatin1String(", ")) + QLatin1String(": ");
 }
 
+QString Sentence::file() {
+    return has("file") ? plain("file") + QLatin1String(": ") : QString();
+}
+
 QString Sentence::rest() {
     QStringList parts;
     for (const Fact& fact : facts_)

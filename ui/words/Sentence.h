@@ -23,6 +23,8 @@ class Sentence {
     [[nodiscard]] bool has(const char* name) const;
     /// "readings.csv, line 12, column 3: ", empty when none of them is known.
     QString place();
+    /// "readings.csv: ", empty when it is not known.
+    QString file();
     /// " (reason: …; key: …)" from the facts that were not used yet; empty when there are none.
     QString rest();
 
