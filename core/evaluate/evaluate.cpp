@@ -57,6 +57,7 @@ class PhaseSteps {
         else
             result_.notFitted = fitted.error();
         const Residuals* residuals = fitted ? &fitted->residuals : nullptr;
+        result_.performance = processFigures(used_, record_.item);
         result_.rows = rowTable({record_, result_.phase, used_, all(), fit(), residuals});
         if (fitted) {
             examine(fitted->residuals);
@@ -141,6 +142,8 @@ class PhaseSteps {
             take(result_.split->warnings);
         if (result_.diagnostics)
             take(result_.diagnostics->warnings);
+        if (result_.performance)
+            take(result_.performance->warnings);
         for (const ReadBackAnswer& answer : result_.read)
             take(answer.warnings);
         take(result_.budget.warnings);
