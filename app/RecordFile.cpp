@@ -50,6 +50,18 @@ std::optional<std::size_t> firstNumbersBut(const CsvRules& rules, std::optional<
     return std::nullopt;
 }
 
+/// A number that could be read in two ways is not read at all: nobody looks over the first rows here, as in the window.
+const Error* doubtAboutNumbers(const CsvRules& rules, const ImportMapping& mapping) {
+    for (const Error& doubt : rules.doubts) {
+        if (doubt.code != ErrorCode::DecimalMarkUnclear)
+            continue;
+        for (const auto& column : {mapping.reference, mapping.indication, mapping.setPoint, mapping.uReference, mapping.uIndication})
+            if (column && doubt.fact("column") == columnLabel(rules, *column))
+                return &doubt;
+    }
+    return nullptr;
+}
+
 /// Columns named by options; the first two columns of numbers stand in for those that are not named. A constant needs no
 /// reference: it is taken only where it is named, or where two columns are there and none is named.
 Result<ImportMapping> mappingOf(const Arguments& arguments, const CsvRules& rules, const FunctionChoice& function) {
@@ -155,6 +167,8 @@ Result<LoadedRecord> loadTable(const std::string& path, std::string_view bytes, 
     const auto mapping = mappingOf(arguments, *rules, choices->function);
     if (!mapping)
         return mapping.error().with("file", path);
+    if (const Error* doubt = doubtAboutNumbers(*rules, *mapping))
+        return doubt->with("file", path);
     Progress progress;
     auto imported = readReadings(bytes, *rules, *mapping, progress);
     if (!imported)

@@ -59,6 +59,13 @@ double explains(const std::vector<SampleRow>& rows) {
     return share * (0.1 + 0.9 * static_cast<double>(understood) / static_cast<double>(cells)) * (headerFits ? 1.0 : 0.9);
 }
 
+/// Whether the first row is words and `separator` stands between them: then it parts columns, however the numbers below look.
+bool partsTheHeader(const std::vector<SampleRow>& rows) {
+    return !rows.empty() && rows.front().cells.size() >= 2 && !hasNumber(rows.front()) &&
+           std::none_of(rows.front().cells.begin(), rows.front().cells.end(),
+                        [](const std::string& cell) { return lookOf(cell) == CellLook::Blank; });
+}
+
 struct SeparatorGuess {
     char separator = ',';
     bool unclear = false;
@@ -70,13 +77,16 @@ SeparatorGuess guessSeparator(std::string_view text) {
     constexpr std::array<char, 5> usual{'\t', ';', '|', ',', CsvRules::Blanks};
     constexpr char none = ';';
     std::vector<Candidate> candidates;
+    bool headerParted = false;
     for (const char separator : usual) {
         const auto rows = sampleRows(text, separator, Quote, SeparatorRows);
-        if (usualWidth(rows) >= 2)
-            candidates.push_back({separator, explains(rows) - (separator == CsvRules::Blanks ? 0.02 : 0)});
+        if (usualWidth(rows) < 2)
+            continue;
+        candidates.push_back({separator, explains(rows) - (separator == CsvRules::Blanks ? 0.02 : 0)});
+        headerParted = headerParted || (separator != CsvRules::Blanks && partsTheHeader(rows));
     }
     constexpr char unused = '\x1f';
-    const double alone = explains(sampleRows(text, unused, Quote, SeparatorRows)) - 0.01;
+    const double alone = headerParted ? 0 : explains(sampleRows(text, unused, Quote, SeparatorRows)) - 0.01;
     std::stable_sort(candidates.begin(), candidates.end(),
                      [](const Candidate& a, const Candidate& b) { return a.score > b.score; });
     if (candidates.empty() || alone > candidates.front().score)

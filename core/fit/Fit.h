@@ -32,6 +32,19 @@ struct Coefficient {
     double low = 0, high = 0;       ///< interval at the chosen coverage
 };
 
+/// How an iterated fit ended; a linear one is reached in one step.
+struct Convergence {
+    bool reached = true;
+    int iterations = 1;
+    std::string reason; ///< "linear", "gradient", "rounding"; not reached: "iterations", "no-decrease"
+};
+
+/// A reading that a robust fit weighs down, with its weight below 1.
+struct WeighedDown {
+    std::size_t row = 0; ///< row in ReadingColumns
+    double weight = 1;
+};
+
 /// A calibration function fitted to the readings of one phase that are not excluded.
 struct Fit {
     FunctionChoice function;
@@ -52,6 +65,8 @@ struct Fit {
     double coverageFactor = 0;      ///< quantile that multiplies a standard uncertainty of the fit for `coverage`
     double low = 0, high = 0;       ///< calibrated range of the abscissa, over the readings used
     std::shared_ptr<const FittedFunction> curve;     ///< never null in a Fit that was made
+    Convergence convergence;
+    std::vector<WeighedDown> weighedDown; ///< by a robust fit, in the order taken
     std::vector<Warning> warnings;
 
     [[nodiscard]] std::size_t terms() const { return coefficients.size(); }

@@ -12,9 +12,6 @@ namespace {
 using Column = std::span<DoubleDouble>;
 
 constexpr double LostBelow = 1e-24;
-/// Residuals below this share of the largest ordinate are the rounding of 31-digit arithmetic: data typed with up to 18 digits
-/// that do not lie on the function leave at least 10⁻¹⁸ of it.
-constexpr double RoundingBelow = 1e-26;
 
 DoubleDouble dot(std::span<const DoubleDouble> a, std::span<const DoubleDouble> b) {
     DoubleDouble sum = 0.0;
@@ -106,17 +103,10 @@ double leverageOf(const LinearProblem& problem, const std::vector<DoubleDouble>&
 
 void fillResiduals(LinearSolution& solution, const LinearProblem& problem) {
     const std::size_t n = problem.size(), p = problem.terms;
-    DoubleDouble largest = 0.0, largestOrdinate = 0.0;
     solution.residual = problem.ordinate;
     for (std::size_t i = 0; i < n; ++i) {
         for (std::size_t k = 0; k < p; ++k)
             solution.residual[i] -= problem.design[k * n + i] * solution.beta[k];
-        largest = std::max(largest, abs(solution.residual[i]));
-        largestOrdinate = std::max(largestOrdinate, abs(problem.ordinate[i]));
-    }
-    if (largest <= largestOrdinate * RoundingBelow)
-        std::fill(solution.residual.begin(), solution.residual.end(), DoubleDouble(0.0));
-    for (std::size_t i = 0; i < n; ++i) {
         const DoubleDouble scaled = problem.rootWeight.empty() ? solution.residual[i] : solution.residual[i] * problem.rootWeight[i];
         solution.residualSs += scaled * scaled;
     }

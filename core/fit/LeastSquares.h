@@ -21,7 +21,7 @@ struct LinearProblem {
 struct LinearSolution {
     std::vector<DoubleDouble> beta;
     std::vector<DoubleDouble> inverseRoot; ///< R⁻¹, p × p, row by row, upper: (AᵀWA)⁻¹ = R⁻¹R⁻ᵀ
-    std::vector<DoubleDouble> residual;    ///< e = y − A β, unit of y; exactly 0 throughout when it is nothing but rounding
+    std::vector<DoubleDouble> residual;    ///< e = y − A β, unit of y
     std::vector<double> leverage;          ///< h_ii = w_i ‖a_iᵀ R⁻¹‖²
     DoubleDouble residualSs = 0.0;         ///< Σ w e²
     std::vector<std::size_t> lostTerms;    ///< columns that depend on the ones before; when any, only these are filled

@@ -2,6 +2,7 @@
 #include "core/fit/Weighting.h"
 
 #include <algorithm>
+#include <cmath>
 #include <map>
 
 namespace spanwright {
@@ -66,6 +67,125 @@ Result<Weighting> statedWeighting(const Sample& sample, const PairColumn& x, con
     }
     weighting.profile = VarianceProfile(x.high, variance);
     return weighting;
+}
+
+namespace {
+
+/// Standard deviation of the residuals at each set point, with ν = n − 1 and the mean |x|.
+struct Spread {
+    double sd = 0, freedom = 0, place = 0;
+};
+
+std::vector<Spread> spreadAtSetPoints(const Sample& sample, const PairColumn& x, const std::vector<DoubleDouble>& residual) {
+    std::vector<DoubleDouble> sum(sample.groupValue.size(), 0.0), square(sample.groupValue.size(), 0.0);
+    std::vector<Spread> spread(sample.groupValue.size());
+    for (std::size_t i = 0; i < sample.size(); ++i) {
+        const auto g = static_cast<std::size_t>(sample.group[i]);
+        sum[g] += residual[i];
+        spread[g].freedom += 1;
+        spread[g].place += std::fabs(x.high[i]);
+    }
+    for (std::size_t i = 0; i < sample.size(); ++i) {
+        const auto g = static_cast<std::size_t>(sample.group[i]);
+        square[g] += sqr(residual[i] - sum[g] / spread[g].freedom);
+    }
+    for (std::size_t g = 0; g < spread.size(); ++g) {
+        spread[g].place /= spread[g].freedom;
+        spread[g].freedom -= 1;
+        spread[g].sd = spread[g].freedom > 0 ? std::sqrt(toDouble(square[g]) / spread[g].freedom) : 0.0;
+    }
+    return spread;
+}
+
+/// A weighting from u_i in double.
+Weighting fromUncertainties(const PairColumn& x, const std::vector<double>& u) {
+    Weighting weighting;
+    std::vector<double> variance;
+    for (const double value : u) {
+        weighting.rootWeight.push_back(DoubleDouble(1.0) / value);
+        variance.push_back(value * value);
+    }
+    weighting.profile = VarianceProfile(x.high, variance);
+    return weighting;
+}
+
+struct Straight {
+    double c0 = 0, c1 = 0;
+};
+
+/// c0 + c1 x with both at least 0, weights w.
+Straight nonNegativeLine(const std::vector<Spread>& points, const std::vector<double>& w) {
+    double sw = 0, sx = 0, sy = 0, sxx = 0, sxy = 0;
+    for (std::size_t i = 0; i < points.size(); ++i) {
+        sw += w[i];
+        sx += w[i] * points[i].place;
+        sy += w[i] * points[i].sd;
+        sxx += w[i] * points[i].place * points[i].place;
+        sxy += w[i] * points[i].place * points[i].sd;
+    }
+    const double determinant = sw * sxx - sx * sx;
+    const Straight free{(sxx * sy - sx * sxy) / determinant, (sw * sxy - sx * sy) / determinant};
+    if (!(free.c1 > 0))
+        return {sy / sw, 0};
+    return free.c0 >= 0 ? free : Straight{0, sxy / sxx};
+}
+
+} // namespace
+
+Result<Weighting> replicateWeighting(const Sample& sample, const PairColumn& x, const std::vector<DoubleDouble>& residual) {
+    const std::vector<Spread> spread = spreadAtSetPoints(sample, x, residual);
+    std::vector<std::size_t> without;
+    std::vector<double> u;
+    for (std::size_t i = 0; i < sample.size(); ++i) {
+        u.push_back(spread[static_cast<std::size_t>(sample.group[i])].sd);
+        if (!(u.back() > 0))
+            without.push_back(i);
+    }
+    if (!without.empty())
+        return Error(ErrorCode::UncertaintyNotPositive, {{"rows", rowsFact(sample, without)}, {"weights", "replicates"}});
+    return fromUncertainties(x, u);
+}
+
+Result<Weighting> varianceFunctionWeighting(const Sample& sample, const PairColumn& x, const std::vector<DoubleDouble>& residual) {
+    std::vector<Spread> points = spreadAtSetPoints(sample, x, residual);
+    std::erase_if(points, [](const Spread& spread) { return !(spread.freedom > 0); });
+    if (points.size() < 2)
+        return Error(ErrorCode::TooFewSetPoints, {{"needed", "2"}, {"got", std::to_string(points.size())}});
+    std::vector<double> w;
+    for (const Spread& spread : points)
+        w.push_back(spread.freedom);
+    Straight line = nonNegativeLine(points, w);
+    for (int iteration = 0; iteration < 50; ++iteration) {
+        for (std::size_t i = 0; i < points.size(); ++i) {
+            const double u = line.c0 + line.c1 * points[i].place;
+            if (u > 0)
+                w[i] = points[i].freedom / (u * u);
+        }
+        line = nonNegativeLine(points, w);
+    }
+    std::vector<double> u;
+    std::vector<std::size_t> without;
+    for (std::size_t i = 0; i < sample.size(); ++i) {
+        u.push_back(line.c0 + line.c1 * std::fabs(x.high[i]));
+        if (!(u.back() > 0))
+            without.push_back(i);
+    }
+    if (!without.empty())
+        return Error(ErrorCode::UncertaintyNotPositive, {{"rows", rowsFact(sample, without)}, {"weights", "variance-function"}});
+    return fromUncertainties(x, u);
+}
+
+Result<Weighting> proportionalWeighting(const Sample& sample, const PairColumn& x) {
+    std::vector<std::size_t> atZero;
+    std::vector<double> u;
+    for (std::size_t i = 0; i < sample.size(); ++i) {
+        u.push_back(std::fabs(x.high[i]));
+        if (u.back() == 0)
+            atZero.push_back(i);
+    }
+    if (!atZero.empty())
+        return Error(ErrorCode::OutsideDomain, {{"function", "proportional weights"}, {"rows", rowsFact(sample, atZero)}});
+    return fromUncertainties(x, u);
 }
 
 } // namespace spanwright

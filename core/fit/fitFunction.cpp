@@ -1,30 +1,17 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/fit/fitFunction.h"
 
+#include "core/fit/BothUncertain.h"
 #include "core/fit/CalibrationFunction.h"
-#include "core/fit/LeastSquares.h"
-#include "core/fit/ModelCurve.h"
-#include "core/fit/Quantiles.h"
-#include "core/fit/Weighting.h"
+#include "core/fit/Robust.h"
+#include "core/fit/assembleFit.h"
+#include "core/fit/solveModel.h"
 
 #include <algorithm>
-#include <cmath>
-#include <limits>
 
 namespace spanwright {
 
 namespace {
-
-/// The readings as abscissa and ordinate of the function that is fitted, with their weights.
-struct Task {
-    const Sample& sample;
-    const Choices& choices;
-    FitDirection direction;
-    const PairColumn& x;
-    const PairColumn& y;
-    std::shared_ptr<const FunctionModel> model;
-    Weighting weighting;
-};
 
 /// Number of distinct abscissae, counted up to `enough`.
 std::size_t distinctUpTo(const PairColumn& x, std::size_t enough) {
@@ -39,7 +26,7 @@ Error shortOf(ErrorCode code, std::size_t needed, std::size_t got) {
     return Error(code, {{"needed", std::to_string(needed)}, {"got", std::to_string(got)}});
 }
 
-Result<void> checkEnough(const Task& task) {
+Result<void> checkEnough(const FitTask& task) {
     const std::size_t p = task.model->terms(), n = task.sample.size();
     if (n < p)
         return shortOf(ErrorCode::TooFewReadings, p, n);
@@ -57,145 +44,34 @@ Result<void> checkEnough(const Task& task) {
     return {};
 }
 
-LinearProblem linearProblem(const Task& task) {
-    const std::size_t n = task.sample.size(), p = task.model->terms();
-    LinearProblem problem{p, std::vector<DoubleDouble>(n * p), {}, task.weighting.rootWeight};
-    for (std::size_t i = 0; i < n; ++i) {
-        const std::vector<DoubleDouble> row = task.model->gradient(task.x[i], {});
-        for (std::size_t k = 0; k < p; ++k)
-            problem.design[k * n + i] = row[k];
-        problem.ordinate.push_back(task.y[i]);
-    }
-    return problem;
+/// Fills the weights that were chosen; those from replicates need the residuals of an unweighted fit first.
+Result<Weighting> chosenWeighting(const FitTask& task) {
+    if (task.choices.weights == Weights::Stated || task.choices.covariance == CovarianceScale::Stated)
+        return statedWeighting(task.sample, task.x, task.uy);
+    if (task.choices.weights == Weights::Equal)
+        return Weighting{};
+    if (task.choices.weights == Weights::Proportional)
+        return proportionalWeighting(task.sample, task.x);
+    const auto even = solveModel(task);
+    if (!even)
+        return even.error();
+    return task.choices.weights == Weights::Replicates ? replicateWeighting(task.sample, task.x, even->linear.residual)
+                                                       : varianceFunctionWeighting(task.sample, task.x, even->linear.residual);
 }
 
-/// Total about the weighted mean (or zero), regression as Σ w (ŷ − centre)², both free of cancellation.
-void fillSums(Fit& fit, const Task& task, const LinearSolution& solution) {
-    const std::size_t n = task.sample.size();
-    const auto weight = [&](std::size_t i) {
-        return task.weighting.rootWeight.empty() ? DoubleDouble(1.0) : sqr(task.weighting.rootWeight[i]);
-    };
-    DoubleDouble centre = 0.0;
-    if (task.model->hasConstant()) {
-        DoubleDouble sum = 0.0, weights = 0.0;
-        for (std::size_t i = 0; i < n; ++i) {
-            sum += weight(i) * task.y[i];
-            weights += weight(i);
-        }
-        centre = sum / weights;
-    }
-    DoubleDouble total = 0.0, regression = 0.0;
-    for (std::size_t i = 0; i < n; ++i) {
-        total += weight(i) * sqr(task.y[i] - centre);
-        regression += weight(i) * sqr(task.y[i] - solution.residual[i] - centre);
-    }
-    if (regression <= total * 1e-26)
-        regression = 0.0;
-    fit.totalSs = toDouble(total);
-    fit.regressionSs = toDouble(regression);
-    fit.residualSs = toDouble(solution.residualSs);
-    fit.totalDf = static_cast<int>(n) - (task.model->hasConstant() ? 1 : 0);
-    fit.regressionDf = static_cast<int>(fit.terms()) - (task.model->hasConstant() ? 1 : 0);
-    if (total > 0.0)
-        fit.rSquared = toDouble(regression / total);
-}
-
-/// Coefficients as reported, with J·scale·(AᵀWA)⁻¹·Jᵀ in double-double, rounded once.
-void fillCoefficients(Fit& fit, const Task& task, const LinearSolution& solution, const DoubleDouble& scale) {
-    const std::size_t p = task.model->terms();
-    const ReportedCoefficients reported = task.model->reported(solution.beta);
-    const std::vector<DoubleDouble> inner = unscaledCovariance(solution.inverseRoot, p);
-    std::vector<DoubleDouble> half(p * p, 0.0);
-    for (std::size_t i = 0; i < p; ++i)
-        for (std::size_t j = 0; j < p; ++j)
-            for (std::size_t k = 0; k < p; ++k)
-                half[i * p + j] += reported.jacobian[i * p + k] * inner[k * p + j];
-    const bool indication = task.direction == FitDirection::Indication;
-    const auto names = coefficientNames(task.choices.function, indication ? task.sample.referenceUnit : task.sample.indicationUnit,
-                                        indication ? task.sample.indicationUnit : task.sample.referenceUnit);
-    fit.covariance.resize(p * p);
-    for (std::size_t i = 0; i < p; ++i) {
-        DoubleDouble variance = 0.0;
-        for (std::size_t j = 0; j < p; ++j) {
-            DoubleDouble sum = 0.0;
-            for (std::size_t k = 0; k < p; ++k)
-                sum += half[i * p + k] * reported.jacobian[j * p + k];
-            fit.covariance[i * p + j] = toDouble(scale * sum);
-            if (j == i)
-                variance = scale * sum;
-        }
-        const double value = toDouble(reported.value[i]);
-        const double u = variance.isnan() ? std::numeric_limits<double>::quiet_NaN() : toDouble(sqrt(variance));
-        fit.coefficients.push_back({names[i].name, names[i].unit, value, u, value - fit.coverageFactor * u, value + fit.coverageFactor * u});
-    }
-}
-
-DoubleDouble covarianceScale(const Task& task, const LinearSolution& solution, int df) {
-    if (task.choices.covariance == CovarianceScale::Stated)
-        return 1.0;
-    return df > 0 ? solution.residualSs / static_cast<double>(df) : DoubleDouble::_nan;
-}
-
-Residuals residualsOf(const Task& task, const LinearSolution& solution) {
-    Residuals residuals;
-    for (std::size_t i = 0; i < task.sample.size(); ++i) {
-        residuals.e.push_back(solution.residual[i]);
-        residuals.fitted.push_back(toDouble(task.y[i] - solution.residual[i]));
-        if (!task.weighting.rootWeight.empty())
-            residuals.weight.push_back(sqr(task.weighting.rootWeight[i]));
-    }
-    residuals.leverage = solution.leverage;
-    return residuals;
-}
-
-FitOutcome assemble(const Task& task, const LinearSolution& solution) {
-    FitOutcome outcome;
-    Fit& fit = outcome.fit;
-    fit.function = task.choices.function;
-    fit.direction = task.direction;
-    fit.method = task.choices.method;
-    fit.weights = task.choices.weights;
-    fit.covarianceScale = task.choices.covariance;
-    fit.coverage = task.choices.coverage.toDouble();
-    fit.used = task.sample.size();
-    fit.excluded = task.sample.excluded;
-    fit.setPoints = task.sample.groupValue.size();
-    fit.low = *std::min_element(task.x.high.begin(), task.x.high.end());
-    fit.high = *std::max_element(task.x.high.begin(), task.x.high.end());
-    const int df = static_cast<int>(fit.used - task.model->terms());
-    fit.degreesOfFreedom = df;
-    const double tail = toDouble((1.0 - task.choices.coverage.toDoubleDouble()) / 2.0);
-    fit.coverageFactor = fit.covarianceScale == CovarianceScale::Stated ? normalQuantileAbove(tail) : studentQuantileAbove(tail, df);
-
-    const DoubleDouble scale = covarianceScale(task, solution, df);
-    fillCoefficients(fit, task, solution, scale);
-    fillSums(fit, task, solution);
-    fit.residualSd = df > 0 ? toDouble(sqrt(solution.residualSs / static_cast<double>(df))) : std::numeric_limits<double>::quiet_NaN();
-    if (task.choices.weights == Weights::Stated) {
-        fit.chiSquared = fit.residualSs;
-        if (df > 0)
-            fit.chiSquaredP = chiSquaredAbove(fit.residualSs, df);
-    }
-    if (df == 0)
-        fit.warnings.push_back({WarningCode::NoDegreesOfFreedom, {}});
-    fit.curve = std::make_shared<ModelCurve>(task.model, solution.beta, solution.inverseRoot, toDouble(scale), task.weighting.profile);
-    outcome.residuals = residualsOf(task, solution);
-    return outcome;
-}
-
-Error rankLost(const Task& task, const LinearSolution& solution) {
-    const auto names = coefficientNames(task.choices.function, {}, {});
-    std::string terms;
-    for (const std::size_t k : solution.lostTerms)
-        terms += (terms.empty() ? "" : ", ") + names[k].name;
-    return Error(ErrorCode::RankLost, {{"terms", terms}});
+Result<SolvedModel> solve(FitTask& task) {
+    if (task.choices.method == Method::BothUncertain)
+        return solveBothUncertain(task);
+    auto weighting = chosenWeighting(task);
+    if (!weighting)
+        return weighting.error();
+    task.weighting = std::move(*weighting);
+    return task.choices.method == Method::Robust ? solveRobust(task) : solveModel(task);
 }
 
 } // namespace
 
-FitDirection directionOf(const Choices& choices) {
-    return choices.function.family == FunctionFamily::Constant ? FitDirection::Indication : choices.fit;
-}
+FitDirection directionOf(const Choices& choices) { return factsOf(choices.function.family).only.value_or(choices.fit); }
 
 Result<FitOutcome> fitFunction(const Sample& sample, const Choices& choices) {
     if (sample.size() == 0)
@@ -208,19 +84,21 @@ Result<FitOutcome> fitFunction(const Sample& sample, const Choices& choices) {
     auto model = makeModel(choices.function, {*low, *high, &sample, direction});
     if (!model)
         return model.error();
-    Task task{sample, choices, direction, x, y, std::move(*model), {}};
+    FitTask task{sample,
+                 choices,
+                 direction,
+                 x,
+                 y,
+                 indication ? sample.uReference : sample.uIndication,
+                 indication ? sample.uIndication : sample.uReference,
+                 std::move(*model),
+                 {}};
     if (const auto enough = checkEnough(task); !enough)
         return enough.error();
-    if (choices.weights == Weights::Stated || choices.covariance == CovarianceScale::Stated) {
-        auto weighting = statedWeighting(sample, x, indication ? sample.uIndication : sample.uReference);
-        if (!weighting)
-            return weighting.error();
-        task.weighting = std::move(*weighting);
-    }
-    const LinearSolution solution = solveLeastSquares(linearProblem(task));
-    if (!solution.lostTerms.empty())
-        return rankLost(task, solution);
-    return assemble(task, solution);
+    auto solved = solve(task);
+    if (!solved)
+        return solved.error();
+    return assembleFit(task, std::move(*solved));
 }
 
 } // namespace spanwright

@@ -42,7 +42,8 @@ Result<FunctionChoice> parseFunctionName(std::string_view text);
 enum class FitDirection { Indication, Reference }; ///< which quantity the function gives
 enum class Method { LeastSquares, BothUncertain, Robust };
 enum class RobustWeight { Huber, Bisquare };
-enum class Weights { Equal, Stated, Replicates, Proportional };
+/// Equal; 1/u² from the stated uncertainties; from the spread at each set point; u ∝ |x|; u = c0 + c1 |x| from the replicates.
+enum class Weights { Equal, Stated, Replicates, Proportional, VarianceFunction };
 enum class CovarianceScale { Residuals, Stated };
 
 /// What the engineer decided, and the places at which answers are wanted.

@@ -32,7 +32,7 @@ SPANWRIGHT_ENUM_NAMES(PlanDirections, "rising", "falling", "rising-then-falling"
 SPANWRIGHT_ENUM_NAMES(FitDirection, "indication", "reference");
 SPANWRIGHT_ENUM_NAMES(Method, "least-squares", "both-uncertain", "robust");
 SPANWRIGHT_ENUM_NAMES(RobustWeight, "huber", "bisquare");
-SPANWRIGHT_ENUM_NAMES(Weights, "equal", "stated", "replicates", "proportional");
+SPANWRIGHT_ENUM_NAMES(Weights, "equal", "stated", "replicates", "proportional", "variance-function");
 SPANWRIGHT_ENUM_NAMES(CovarianceScale, "residuals", "stated");
 SPANWRIGHT_ENUM_NAMES(Distribution, "normal", "rectangular", "triangular", "u-shaped", "student");
 SPANWRIGHT_ENUM_NAMES(Side, "reference", "indication");

@@ -40,8 +40,7 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
     // tables of text
     case ErrorCode::UnclosedQuote: return tr("a quotation mark is opened and never closed. Close it in the file.");
     case ErrorCode::RaggedRow:
-        return tr("the line has %1 cells where %2 are expected. Complete the line, or check the separator.")
-            .arg(facts.plain("cells", facts.plain("count", tr("other"))), facts.plain("expected", tr("more or fewer")));
+        return tr("this line has more or fewer cells than the others. Complete the line, or check the separator.");
     case ErrorCode::NotANumber:
         return tr("%1 is not a number. Correct the cell, or leave its row out by stating it as excluded.")
             .arg(facts.quoted("text", tr("the cell")));

@@ -238,6 +238,19 @@ class CsvReaderTest : public QObject {
         QCOMPARE(texts(table.columns[1].numbers), std::string("2.5 _ 5.5 7.5 9.5"));
     }
 
+    void namesInTheHeaderPartTheColumnsThatFewRaggedRowsBlur() {
+        // "1,2" alone could be one number with a decimal comma; the header says that it is two.
+        const std::string bytes = "x,y\n1,2\n2,3\n4\n5,6,7\n";
+        const auto rules = guessRules(bytes);
+        QCOMPARE(rules->separator, ',');
+        QCOMPARE(rules->columns.size(), std::size_t(2));
+        const Table table = readAll(bytes, *rules);
+        QCOMPARE(table.issues.count, std::size_t(2));
+        QCOMPARE(table.issues.first[0].line, std::size_t(4));
+        QCOMPARE(table.issues.first[1].line, std::size_t(5));
+        QCOMPARE(guessError("x,y\n1,2\n3,\"4\n5,6\n"), ErrorCode::UnclosedQuote);
+    }
+
     void manyIssuesAreCountedAndTheFirstKept() {
         std::string bytes = "p,I\n";
         for (int i = 0; i < 5000; ++i)

@@ -1,0 +1,169 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/fit/assembleFit.h"
+
+#include "core/fit/CalibrationFunction.h"
+#include "core/fit/ModelCurve.h"
+#include "core/fit/Quantiles.h"
+
+#include <algorithm>
+#include <cmath>
+#include <limits>
+
+namespace spanwright {
+
+namespace {
+
+/// Total about the weighted mean (or zero), regression as Σ w (ŷ − centre)², both free of cancellation. Where residuals and fitted
+/// values are not orthogonal (iterated fits), regression is what the residual leaves of the total.
+void fillSums(Fit& fit, const FitTask& task, const LinearSolution& solution) {
+    const bool orthogonal = task.model->linear() && task.choices.method == Method::LeastSquares;
+    const std::size_t n = task.sample.size();
+    const auto weight = [&](std::size_t i) {
+        return task.weighting.rootWeight.empty() ? DoubleDouble(1.0) : sqr(task.weighting.rootWeight[i]);
+    };
+    DoubleDouble centre = 0.0;
+    if (task.model->hasConstant()) {
+        DoubleDouble sum = 0.0, weights = 0.0;
+        for (std::size_t i = 0; i < n; ++i) {
+            sum += weight(i) * task.y[i];
+            weights += weight(i);
+        }
+        centre = sum / weights;
+    }
+    DoubleDouble total = 0.0, regression = 0.0;
+    for (std::size_t i = 0; i < n; ++i) {
+        total += weight(i) * sqr(task.y[i] - centre);
+        regression += weight(i) * sqr(task.y[i] - solution.residual[i] - centre);
+    }
+    if (!orthogonal)
+        regression = total - solution.residualSs;
+    if (regression <= total * 1e-26)
+        regression = 0.0;
+    fit.totalSs = toDouble(total);
+    fit.regressionSs = toDouble(regression);
+    fit.residualSs = toDouble(solution.residualSs);
+    fit.totalDf = static_cast<int>(n) - (task.model->hasConstant() ? 1 : 0);
+    fit.regressionDf = static_cast<int>(fit.terms()) - (task.model->hasConstant() ? 1 : 0);
+    if (total > 0.0)
+        fit.rSquared = toDouble(regression / total);
+}
+
+/// Coefficients as reported, with J·scale·(AᵀWA)⁻¹·Jᵀ in double-double, rounded once.
+void fillCoefficients(Fit& fit, const FitTask& task, const SolvedModel& solved, const DoubleDouble& scale) {
+    const std::size_t p = task.model->terms();
+    const ReportedCoefficients reported = task.model->reported(solved.beta);
+    const std::vector<DoubleDouble> inner = unscaledCovariance(solved.linear.inverseRoot, p);
+    std::vector<DoubleDouble> half(p * p, 0.0);
+    for (std::size_t i = 0; i < p; ++i)
+        for (std::size_t j = 0; j < p; ++j)
+            for (std::size_t k = 0; k < p; ++k)
+                half[i * p + j] += reported.jacobian[i * p + k] * inner[k * p + j];
+    const bool indication = task.direction == FitDirection::Indication;
+    const auto names = coefficientNames(task.choices.function, indication ? task.sample.referenceUnit : task.sample.indicationUnit,
+                                        indication ? task.sample.indicationUnit : task.sample.referenceUnit, p);
+    fit.covariance.resize(p * p);
+    for (std::size_t i = 0; i < p; ++i) {
+        DoubleDouble variance = 0.0;
+        for (std::size_t j = 0; j < p; ++j) {
+            DoubleDouble sum = 0.0;
+            for (std::size_t k = 0; k < p; ++k)
+                sum += half[i * p + k] * reported.jacobian[j * p + k];
+            fit.covariance[i * p + j] = toDouble(scale * sum);
+            if (j == i)
+                variance = scale * sum;
+        }
+        const double value = toDouble(reported.value[i]);
+        const double u = variance.isnan() ? std::numeric_limits<double>::quiet_NaN() : toDouble(sqrt(variance));
+        fit.coefficients.push_back({names[i].name, names[i].unit, value, u, value - fit.coverageFactor * u, value + fit.coverageFactor * u});
+    }
+}
+
+/// Residuals below 10⁻²⁵ of the largest ordinate are the rounding of 31-digit arithmetic: readings typed with up to 18 digits that
+/// do not lie on the function leave at least 10⁻¹⁸.
+void dropRounding(LinearSolution& solution, const PairColumn& y) {
+    DoubleDouble largest = 0.0, largestOrdinate = 0.0;
+    for (std::size_t i = 0; i < y.size(); ++i) {
+        largest = std::max(largest, abs(solution.residual[i]));
+        largestOrdinate = std::max(largestOrdinate, abs(y[i]));
+    }
+    if (largest > largestOrdinate * 1e-25)
+        return;
+    std::fill(solution.residual.begin(), solution.residual.end(), DoubleDouble(0.0));
+    solution.residualSs = 0.0;
+}
+
+DoubleDouble covarianceScale(const FitTask& task, const SolvedModel& solved, int df) {
+    if (solved.covarianceScale)
+        return *solved.covarianceScale;
+    if (task.choices.covariance == CovarianceScale::Stated)
+        return 1.0;
+    return df > 0 ? solved.linear.residualSs / static_cast<double>(df) : DoubleDouble::_nan;
+}
+
+Residuals residualsOf(const FitTask& task, const LinearSolution& solution) {
+    Residuals residuals;
+    for (std::size_t i = 0; i < task.sample.size(); ++i) {
+        residuals.e.push_back(solution.residual[i]);
+        residuals.fitted.push_back(toDouble(task.y[i] - solution.residual[i]));
+        if (!task.weighting.rootWeight.empty())
+            residuals.weight.push_back(sqr(task.weighting.rootWeight[i]));
+    }
+    residuals.leverage = solution.leverage;
+    return residuals;
+}
+
+/// What was chosen and what it was fitted to.
+void describe(Fit& fit, const FitTask& task) {
+    fit.function = task.choices.function;
+    fit.direction = task.direction;
+    fit.method = task.choices.method;
+    const bool stated = task.choices.covariance == CovarianceScale::Stated || task.choices.method == Method::BothUncertain;
+    fit.weights = stated ? Weights::Stated : task.choices.weights;
+    fit.covarianceScale = task.choices.covariance;
+    fit.coverage = task.choices.coverage.toDouble();
+    fit.used = task.sample.size();
+    fit.excluded = task.sample.excluded;
+    fit.setPoints = task.sample.groupValue.size();
+    fit.low = *std::min_element(task.x.high.begin(), task.x.high.end());
+    fit.high = *std::max_element(task.x.high.begin(), task.x.high.end());
+    const int df = static_cast<int>(fit.used - task.model->terms());
+    fit.degreesOfFreedom = df;
+    const double tail = toDouble((1.0 - task.choices.coverage.toDoubleDouble()) / 2.0);
+    fit.coverageFactor = fit.covarianceScale == CovarianceScale::Stated ? normalQuantileAbove(tail) : studentQuantileAbove(tail, df);
+
+}
+
+} // namespace
+
+FitOutcome assembleFit(const FitTask& task, SolvedModel solved) {
+    LinearSolution& solution = solved.linear;
+    dropRounding(solution, task.y);
+    FitOutcome outcome;
+    Fit& fit = outcome.fit;
+    describe(fit, task);
+    const int df = fit.degreesOfFreedom;
+    const DoubleDouble scale = covarianceScale(task, solved, df);
+    fillCoefficients(fit, task, solved, scale);
+    fillSums(fit, task, solution);
+    fit.residualSd = df > 0 ? toDouble(sqrt(solution.residualSs / static_cast<double>(df))) : std::numeric_limits<double>::quiet_NaN();
+    if (solved.robustSd)
+        fit.residualSd = *solved.robustSd;
+    if (fit.weights == Weights::Stated) {
+        fit.chiSquared = fit.residualSs;
+        if (df > 0)
+            fit.chiSquaredP = chiSquaredAbove(fit.residualSs, df);
+    }
+    if (df == 0)
+        fit.warnings.push_back({WarningCode::NoDegreesOfFreedom, {}});
+    fit.convergence = solved.convergence;
+    if (!fit.convergence.reached)
+        fit.warnings.push_back({WarningCode::NotConverged, {{"reason", fit.convergence.reason}}});
+    if (task.choices.method == Method::Robust)
+        fit.warnings.push_back({WarningCode::ApproximateMethod, {{"figure", "standard_uncertainty"}, {"method", "robust"}}});
+    fit.weighedDown = std::move(solved.weighedDown);
+    fit.curve = std::make_shared<ModelCurve>(task.model, solved.beta, solution.inverseRoot, toDouble(scale), task.weighting.profile);
+    outcome.residuals = residualsOf(task, solution);
+    return outcome;
+}
+
+} // namespace spanwright
