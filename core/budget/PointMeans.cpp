@@ -14,13 +14,16 @@ struct Cell {
     std::size_t n = 0;
     DoubleDouble reference = 0.0, indication = 0.0;
     std::set<std::int32_t> runs;
+    std::int32_t lastRun = 0; ///< readings of a run follow each other
 
     void add(const Sample& sample, std::size_t i) {
         ++n;
         reference += sample.reference[i];
         indication += sample.indication[i];
-        if (!sample.run.empty())
-            runs.insert(sample.run[i]);
+        if (!sample.run.empty() && (runs.empty() || sample.run[i] != lastRun)) {
+            lastRun = sample.run[i];
+            runs.insert(lastRun);
+        }
     }
     void add(const Cell& other) {
         n += other.n;
@@ -86,6 +89,8 @@ PointMeans together(const Cells& cells, double setPoint, const Item& item, const
 } // namespace
 
 std::vector<PointMeans> pointMeans(const Record& record, const Sample& sample, const Fit* fit) {
+    if (sample.groupValue.size() > MostStatedPoints)
+        return {};
     const std::vector<Cells> cells = cellsOf(sample);
     std::vector<PointMeans> points;
     for (std::size_t g = 0; g < cells.size(); ++g) {

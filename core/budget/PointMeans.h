@@ -22,6 +22,9 @@ struct PointMeans {
     std::optional<double> gap;             ///< rising minus falling at equal reference, unit of the indication
 };
 
+/// With more set points than this (a logger's file without set points, say) none are stated one by one.
+inline constexpr std::size_t MostStatedPoints = 1000;
+
 /// Means over the readings that count, in rising order of the set point, rising before falling where they are stated
 /// separately (`choices.separateDirections`). Otherwise a set point that has both directions gets the mean of the two
 /// directions' means, so that a direction with more readings does not weigh more. `fit` (may be null) moves the directions to

@@ -254,6 +254,8 @@ Budget makeBudget(const Record& record, const Sample& sample, const Fit* fit, co
     const Spreads spreads = spreadsOf(record, sample, fit, split, otherPhase);
     if (!spreads.repeatability)
         budget.warnings.push_back({WarningCode::FigureUndefined, {{"figure", "repeatability"}, {"reason", "no-replicates"}}});
+    if (sample.groupValue.size() > MostStatedPoints)
+        budget.warnings.push_back({WarningCode::FigureUndefined, {{"figure", "results"}, {"reason", "too-many-set-points"}}});
     for (const PointMeans& point : pointMeans(record, sample, fit))
         budget.points.push_back(budgetAt(record, point, fit, spreads, budget.coverage));
     if (fit != nullptr && fit->curve != nullptr)

@@ -29,7 +29,8 @@ namespace spanwright {
 /// Where each point and direction of the phase was read only once, repeatability and run to run are taken from `otherPhase`: an
 /// adjustment of zero and span does not change the scatter (pooled estimate, JCGM 100:2008, 4.2.4).
 ///
-/// fit, split and otherPhase may be null. Warning FigureUndefined (figure: repeatability, reason: no-replicates) where nothing is repeated.
+/// fit, split and otherPhase may be null. Warning FigureUndefined (figure: repeatability, reason: no-replicates) where nothing is repeated,
+/// (figure: results, reason: too-many-set-points) beyond MostStatedPoints.
 Budget makeBudget(const Record& record, const Sample& sample, const Fit* fit, const VarianceSplit* split,
                   const VarianceSplit* otherPhase = nullptr);
 

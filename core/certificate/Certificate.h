@@ -75,6 +75,7 @@ struct PhaseSection {
     Digits smallestFactor, largestFactor; ///< of k in the table
     bool rectangular = false;             ///< k of a rectangular distribution in at least one line
     std::optional<ConformityState> overall;
+    std::optional<std::size_t> largest; ///< line with the error of largest magnitude
     std::optional<BudgetSection> budget;
     std::vector<PerformanceRow> performance;
 };
@@ -117,6 +118,7 @@ struct ExcludedLine {
 /// What the program says by itself; the sentence is made in ui/certificate/CertificateText.
 enum class Statement {
     AsFoundOutsideLimits,
+    AsFoundNotAccepted,      ///< inside the limits, but not every error inside the acceptance limits
     HysteresisLeft,          ///< as-left errors of opposite sign at one set point: no trim removes hysteresis; facts: set_point
     NoAsFound,               ///< facts: reason
     Replaces,                ///< facts: number, reason
@@ -138,6 +140,9 @@ enum class Statement {
     NotReproducedInPart,
     Recalibration,           ///< facts: date
 };
+
+/// The last code, for a test that walks them all.
+inline constexpr Statement lastStatement = Statement::Recalibration;
 
 struct StatementLine {
     Statement statement = Statement::OnlyThisItem;

@@ -191,7 +191,7 @@ void readingsOf(const Record& record, const PhaseEvaluation& phase, List& list) 
     if (!stated)
         list.add(Gap::NoUncertainty, Block, "budget", "budget.lines", {named});
     const bool unrepeated = std::any_of(phase.budget.warnings.begin(), phase.budget.warnings.end(), [](const Warning& warning) {
-        return warning.code == WarningCode::FigureUndefined;
+        return warning.code == WarningCode::FigureUndefined && !warning.facts.empty() && warning.facts[0].value == "repeatability";
     });
     if (unrepeated)
         list.add(Gap::NoRepeatability, Warn, "budget", "budget.lines", {named});

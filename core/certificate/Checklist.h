@@ -72,6 +72,9 @@ enum class Gap {
     SeriousFinding,         ///< facts: finding (index), phase
 };
 
+/// The last code, for a test that walks them all.
+inline constexpr Gap lastGap = Gap::SeriousFinding;
+
 /// Block: printed only as an incomplete draft. Warn: printed, and to be looked at.
 enum class GapLevel { Block, Warn };
 

@@ -125,7 +125,7 @@ std::optional<FunctionSection> functionSection(const PhaseEvaluation& phase) {
         const Coefficient& coefficient = fit.coefficients[i];
         section.terms.push_back({coefficient.name, coefficient.unit, texts[i], significantDigits(coefficient.standardUncertainty, 2)});
     }
-    const int rangeDecimals = std::max(0, decimalsFor(fit.high - fit.low, 5));
+    const int rangeDecimals = std::max(0, decimalsFor(fit.high - fit.low, 6));
     section.low = roundedText(fit.low, rangeDecimals);
     section.high = roundedText(fit.high, rangeDecimals);
     section.residualSd = significantDigits(fit.residualSd, 2);

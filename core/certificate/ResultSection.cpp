@@ -61,10 +61,10 @@ BudgetRow budgetRow(const BudgetItem& item, int decimals) {
     row.fromOtherPhase = item.fromOtherPhase;
     row.side = item.side;
     row.distribution = item.distribution;
-    row.amount = significantDigits(item.amount, digits);
+    row.amount = shortText(std::stod(significantDigits(item.amount, digits)));
     row.divisor = shortText(std::stod(significantDigits(item.divisor, digits)));
-    row.standardUncertainty = significantDigits(item.standardUncertainty, digits);
-    row.degreesOfFreedom = std::isfinite(item.degreesOfFreedom) ? shortText(std::stod(roundedText(item.degreesOfFreedom, 1))) : Digits{};
+    row.standardUncertainty = shortText(std::stod(significantDigits(item.standardUncertainty, digits)));
+    row.degreesOfFreedom = std::isfinite(item.degreesOfFreedom) ? shortText(std::stod(roundedText(item.degreesOfFreedom, item.degreesOfFreedom < 10 ? 1 : 0))) : Digits{};
     row.sensitivity = shortText(std::stod(significantDigits(item.sensitivity, digits + 1)));
     row.contribution = roundedText(item.contribution, decimals);
     row.share = item.share;
@@ -118,10 +118,14 @@ PhaseSection phaseSection(const Record& record, const PhaseEvaluation& phase) {
     section.excluded = phase.excluded;
     section.used = phase.complete - phase.excluded;
     section.directionsSeparate = record.choices.separateDirections;
-    double smallest = INFINITY, largest = 0;
+    double smallest = INFINITY, largest = 0, largestError = -1;
     for (const PointResult& point : phase.verdict.points) {
         section.results.push_back(resultLine(point));
         section.errorKnown = section.errorKnown || std::isfinite(point.error);
+        if (std::isfinite(point.error) && std::fabs(point.error) > largestError) {
+            largestError = std::fabs(point.error);
+            section.largest = section.results.size() - 1;
+        }
         smallest = std::min(smallest, point.coverageFactor);
         largest = std::max(largest, point.coverageFactor);
     }

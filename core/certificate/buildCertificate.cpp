@@ -3,6 +3,7 @@
 #include "core/certificate/Certificate.h"
 #include "core/certificate/FunctionSection.h"
 #include "core/certificate/ResultSection.h"
+#include "core/certificate/ShortText.h"
 #include "core/record/Fields.h"
 
 #include <algorithm>
@@ -48,17 +49,22 @@ std::string standardsWith(const Record& record, CorrectionUse use) {
     return ids;
 }
 
-/// Set point nearest mid-range at which rising and falling errors left have opposite signs, further apart than U.
+/// Set point at which rising and falling errors left have opposite signs and are furthest apart, by more than U.
 std::optional<double> hysteresisLeft(const PhaseEvaluation* left) {
     if (left == nullptr)
         return std::nullopt;
     const auto& points = left->verdict.points;
+    std::optional<double> place;
+    double widest = 0;
     for (std::size_t i = 0; i + 1 < points.size(); ++i) {
         const PointResult &a = points[i], &b = points[i + 1];
-        if (a.setPoint == b.setPoint && a.error * b.error < 0 && std::fabs(a.error - b.error) > std::max(a.expanded, b.expanded))
-            return a.setPoint;
+        const double gap = std::fabs(a.error - b.error);
+        if (a.setPoint == b.setPoint && a.error * b.error < 0 && gap > std::max({a.expanded, b.expanded, widest})) {
+            place = a.setPoint;
+            widest = gap;
+        }
     }
-    return std::nullopt;
+    return place;
 }
 
 std::vector<StatementLine> noticesOf(const Record& record, const Evaluation& evaluation) {
@@ -66,12 +72,20 @@ std::vector<StatementLine> noticesOf(const Record& record, const Evaluation& eva
     if (!record.job.replaces.empty())
         notices.push_back({Statement::Replaces, {{"number", record.job.replaces}, {"reason", record.job.replacesReason}}});
     const PhaseEvaluation* found = evaluation.phase(Phase::AsFound);
-    if (found != nullptr && found->verdict.overall && *found->verdict.overall >= ConformityState::ConditionalFail)
-        notices.push_back({Statement::AsFoundOutsideLimits, {}});
+    if (found != nullptr && found->verdict.overall) {
+        const auto& points = found->verdict.points;
+        const bool outside = std::any_of(points.begin(), points.end(), [](const PointResult& point) {
+            return point.limit && std::fabs(point.error) > *point.limit;
+        });
+        if (outside)
+            notices.push_back({Statement::AsFoundOutsideLimits, {}});
+        else if (*found->verdict.overall != ConformityState::Pass)
+            notices.push_back({Statement::AsFoundNotAccepted, {}});
+    }
     if (record.job.adjusted && found == nullptr)
         notices.push_back({Statement::NoAsFound, {{"reason", record.job.noAsFoundReason}}});
     if (const auto setPoint = hysteresisLeft(evaluation.phase(Phase::AsLeft)))
-        notices.push_back({Statement::HysteresisLeft, {{"set_point", significantDigits(*setPoint, 4)}}});
+        notices.push_back({Statement::HysteresisLeft, {{"set_point", shortText(*setPoint)}}});
     for (const Evaluation::OverdueStandard& late : evaluation.overdue) {
         const Standard& standard = record.standards[late.index];
         notices.push_back({Statement::OverdueStandard,

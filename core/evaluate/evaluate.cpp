@@ -39,8 +39,9 @@ double largestHalfWidth(const Fit& fit, double low, double high) {
 /// The steps for one phase, in the order in which they follow from each other.
 class PhaseSteps {
   public:
-    PhaseSteps(const Record& record, Phase phase, Progress& progress)
-        : record_(record), choices_(record.choices), progress_(progress), used_(makeSample(record, phase)) {
+    /// `earlier`: the phase evaluated before, for what this one's readings cannot give; may be null.
+    PhaseSteps(const Record& record, Phase phase, const PhaseEvaluation* earlier, Progress& progress)
+        : record_(record), choices_(record.choices), earlier_(earlier), progress_(progress), used_(makeSample(record, phase)) {
         result_.phase = phase;
     }
 
@@ -125,7 +126,8 @@ class PhaseSteps {
         if (used_.size() == 0)
             return;
         const VarianceSplit* split = result_.split ? &*result_.split : nullptr;
-        result_.budget = makeBudget(record_, used_, fit(), split);
+        const VarianceSplit* other = earlier_ != nullptr && earlier_->split ? &*earlier_->split : nullptr;
+        result_.budget = makeBudget(record_, used_, fit(), split, other);
         result_.verdict = makeVerdict(record_, used_, fit(), result_.budget);
     }
 
@@ -152,6 +154,7 @@ class PhaseSteps {
 
     const Record& record_;
     const Choices& choices_;
+    const PhaseEvaluation* earlier_;
     Progress& progress_;
     Sample used_;
     std::optional<Sample> withExcluded_;
@@ -187,7 +190,8 @@ Result<Evaluation> evaluate(const Record& record, Progress& progress) {
         const std::vector<Phase>& phases = record.readings->phases();
         if (std::find(phases.begin(), phases.end(), phase) == phases.end())
             continue;
-        Result<PhaseEvaluation> result = PhaseSteps(record, phase, progress).run();
+        const auto& found = evaluation.phases[static_cast<std::size_t>(Phase::AsFound)];
+        Result<PhaseEvaluation> result = PhaseSteps(record, phase, found ? &*found : nullptr, progress).run();
         if (!result)
             return result.error();
         evaluation.phases[static_cast<std::size_t>(phase)] = std::move(result).value();

@@ -2,7 +2,6 @@
 #pragma once
 
 #include "ui/plot/PlotFrame.h"
-#include "ui/plot/PlotGrid.h"
 #include "ui/plot/PlotInk.h"
 #include "ui/plot/PointCloud.h"
 
@@ -95,7 +94,6 @@ class PlotView : public QChartView {
     void stand(std::size_t row);
     void choose(std::set<ReadingId> ids, Qt::KeyboardModifiers modifiers);
 
-    PlotGrid* grid_;
     PointCloud* cloud_;
     PlotInk* ink_;
     QValueAxis* xAxis_;
@@ -108,7 +106,7 @@ class PlotView : public QChartView {
     Content content_;
     PlotFrame frame_;
     double left_ = 64;
-    bool zoomedAcross_ = false, zoomedUp_ = false;
+    bool zoomed_ = false;
     std::optional<QPoint> pressed_;
     QString summary_;
     std::function<QString(ReadingId)> describe_;

@@ -1,0 +1,175 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/base/Rounding.h"
+#include "core/certificate/Certificate.h"
+#include "core/evaluate/evaluate.h"
+#include "tests/support/SampleRecord.h"
+
+#include <QTest>
+
+#include <algorithm>
+#include <cmath>
+
+using namespace spanwright;
+using test::number;
+
+namespace {
+
+Evaluation evaluated(const Record& record) {
+    Progress progress;
+    return evaluate(record, progress).value();
+}
+
+Certificate certificateOf(const Record& record) {
+    return buildCertificate(record, evaluated(record), {"Spanwright", "2026-10-20", "sha256:00"});
+}
+
+int decimals(const Digits& text) {
+    const auto point = text.find('.');
+    return point == std::string::npos ? 0 : static_cast<int>(text.size() - point) - 1;
+}
+
+/// Value of the polynomial with the printed coefficients.
+double polynomial(const FunctionSection& function, double x) {
+    double value = 0, power = 1;
+    for (const auto& term : function.terms) {
+        value += std::stod(term.value) * power;
+        power *= x;
+    }
+    return value;
+}
+
+} // namespace
+
+class CertificateTest : public QObject {
+    Q_OBJECT
+
+  private slots:
+    void staysADraftUntilAllThreeNamesAreThere() {
+        Record record = test::pressureTransmitter();
+        QVERIFY(certificateOf(record).state == DraftState::Draft);
+        record.signOffs.push_back({SignOffRole::Authorised, "RA", "Head of laboratory", "2026-10-15"});
+        QVERIFY(certificateOf(record).state == DraftState::SignedOff);
+        record.job.customer.clear();
+        QVERIFY(certificateOf(record).state == DraftState::Incomplete);
+    }
+
+    // U has two significant digits; error, indication and limits stand at its place, the reference at that of U in its unit
+    // (JCGM 100:2008, 7.2.6).
+    void roundsEveryResultOnceAtThePlaceOfItsUncertainty() {
+        const Record record = test::pressureTransmitter();
+        const Evaluation evaluation = evaluated(record);
+        const Certificate certificate = buildCertificate(record, evaluation, {});
+        QCOMPARE(certificate.phases.size(), std::size_t(2));
+        for (const PhaseSection& section : certificate.phases) {
+            const auto& points = evaluation.phase(section.phase)->verdict.points;
+            QCOMPARE(section.results.size(), points.size());
+            for (std::size_t i = 0; i < points.size(); ++i) {
+                const ResultLine& line = section.results[i];
+                const int place = decimals(line.expanded);
+                QCOMPARE(line.expanded, roundUncertainty(points[i].expanded).text);
+                for (const Digits& text : {line.error, line.indication, line.limit, line.acceptance})
+                    QCOMPARE(decimals(text), place);
+                QCOMPARE(decimals(line.reference), decimals(line.expandedReference));
+                const double half = 0.5 * std::pow(10.0, -place) * (1 + 1e-9);
+                QVERIFY(std::fabs(std::stod(line.error) - points[i].error) <= half);
+                QVERIFY(std::fabs(std::stod(line.indication) - points[i].indication) <= half);
+            }
+        }
+    }
+
+    // By hand: at 5 bar rising 11.9913 mA at 4.9999 bar, error −0.0085 mA, U = 0.0042 mA, outside ±(0.012 − 0.0042) mA.
+    void statesTheSampleAtMidRange() {
+        const Certificate certificate = certificateOf(test::pressureTransmitter());
+        const PhaseSection& found = certificate.phases[0];
+        const auto line = std::find_if(found.results.begin(), found.results.end(), [](const ResultLine& one) {
+            return one.setPoint == "5" && one.direction == Direction::Rising;
+        });
+        QVERIFY(line != found.results.end());
+        QCOMPARE(line->reference, Digits("4.9999"));
+        QCOMPARE(line->indication, Digits("11.9913"));
+        QCOMPARE(line->error, Digits("-0.0085"));
+        QCOMPARE(line->expanded, Digits("0.0042"));
+        QCOMPARE(line->errorPercent, Digits("-0.053"));
+        QCOMPARE(line->limit, Digits("0.0120"));
+        QCOMPARE(line->acceptance, Digits("0.0078"));
+        QVERIFY(line->state == ConformityState::Fail);
+        QVERIFY(std::stod(line->conformance) > 95 && std::stod(line->conformance) < 96.5);
+        QVERIFY(certificate.phases[1].overall == ConformityState::Pass);
+        QVERIFY(found.overall == ConformityState::Fail);
+        QCOMPARE(found.results[*found.largest].error, Digits("-0.0085"));
+    }
+
+    // The printed coefficients in the printed form give every value in the range within 1/20 of the smallest U.
+    void printsCoefficientsThatCanBeUsed_data() {
+        QTest::addColumn<int>("degree");
+        QTest::newRow("line") << 1;
+        QTest::newRow("quadratic") << 2;
+        QTest::newRow("degree 4") << 4;
+    }
+    void printsCoefficientsThatCanBeUsed() {
+        QFETCH(int, degree);
+        Record record = test::pressureTransmitter();
+        record.choices.function = {FunctionFamily::Polynomial, degree};
+        const Evaluation evaluation = evaluated(record);
+        const Certificate certificate = buildCertificate(record, evaluation, {});
+        QVERIFY(certificate.function.has_value());
+        double smallest = 1;
+        for (const PointResult& point : evaluation.phase(Phase::AsFound)->verdict.points)
+            smallest = std::min(smallest, point.expanded);
+        const Fit& fit = *evaluation.phase(Phase::AsFound)->fit;
+        for (double x = fit.low; x <= fit.high; x += 0.01)
+            QVERIFY(std::fabs(polynomial(*certificate.function, x) - fit.curve->value(x)) <= smallest / 20);
+        QCOMPARE(certificate.function->checks.size(), std::size_t(3));
+        for (const auto& check : certificate.function->checks)
+            QVERIFY(std::fabs(std::stod(check.y) - polynomial(*certificate.function, std::stod(check.x))) <= smallest / 100);
+        for (const auto& term : certificate.function->terms)
+            QVERIFY2(term.value.size() < 14, term.value.c_str()); // no more digits than it takes
+    }
+
+    void listsExcludedReadingsAsTyped() {
+        Record record = test::pressureTransmitter();
+        record.exclusions.edit().add({17, ExclusionReason::NotSettled, "door opened", "TL", 0});
+        const Certificate certificate = certificateOf(record);
+        QCOMPARE(certificate.excluded.size(), std::size_t(1));
+        const ExcludedLine& line = certificate.excluded[0];
+        QCOMPARE(line.row, std::size_t(17));
+        QCOMPARE(line.reference, Digits("4.9999"));
+        QCOMPARE(line.indication, Digits("12.003"));
+        QCOMPARE(line.words, std::string("door opened"));
+        QCOMPARE(certificate.phases[0].excluded, std::size_t(1));
+        QCOMPARE(certificate.phases[0].used, std::size_t(65));
+    }
+
+    void saysWhatTheReaderMustKnow() {
+        const Certificate certificate = certificateOf(test::pressureTransmitter());
+        const auto says = [&](Statement statement) {
+            const auto& lines = certificate.statements;
+            return std::any_of(lines.begin(), lines.end(), [&](const StatementLine& line) { return line.statement == statement; });
+        };
+        for (const Statement statement :
+             {Statement::ErrorSign, Statement::ExpandedUncertainty, Statement::HysteresisSeparate, Statement::RepeatabilityFromOtherPhase,
+              Statement::CorrectionsAlreadyApplied, Statement::OnlyThisItem, Statement::NotReproducedInPart, Statement::NoSampling})
+            QVERIFY(says(statement));
+        QVERIFY(!says(Statement::Recalibration));
+        QCOMPARE(certificate.notices.size(), std::size_t(2));
+        QVERIFY(certificate.notices[0].statement == Statement::AsFoundNotAccepted); // every error is inside ±0.012 mA
+        QVERIFY(certificate.notices[1].statement == Statement::HysteresisLeft);
+    }
+
+    void warnsOnPageOneOfErrorsOutsideTheLimits() {
+        Record record = test::pressureTransmitter();
+        record.limits.percentOfSpan = number("0.05"); // ±0.008 mA
+        QVERIFY(certificateOf(record).notices[0].statement == Statement::AsFoundOutsideLimits);
+    }
+
+    // Nothing recorded at all: no number is made up.
+    void anEmptyRecordGivesAnEmptyCertificate() {
+        const Certificate certificate = certificateOf(Record());
+        QVERIFY(certificate.state == DraftState::Incomplete);
+        QVERIFY(certificate.phases.empty());
+        QVERIFY(!certificate.function);
+    }
+};
+
+QTEST_APPLESS_MAIN(CertificateTest)
+#include "tst_certificate.moc"

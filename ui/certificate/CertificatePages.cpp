@@ -1,0 +1,122 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "ui/certificate/CertificatePages.h"
+
+#include "ui/certificate/CertificateSections.h"
+
+#include <QCoreApplication>
+
+namespace spanwright {
+
+namespace {
+
+constexpr QRectF Content(17, 12, 176, 275); // inside the margins of A4
+constexpr QRectF Area(17, 31, 176, 244);    // between head and foot
+
+struct CertificatePages {
+    Q_DECLARE_TR_FUNCTIONS(CertificatePages)
+};
+
+QString text(const std::string& from) {
+    return QString::fromStdString(from);
+}
+
+/// One line that fits, cut with an ellipsis.
+QString fitting(const QString& words, const TextStyle& style, double width) {
+    if (textWidth(words, style) <= width)
+        return words;
+    QString cut = words;
+    while (!cut.isEmpty() && textWidth(cut + QChar(0x2026), style) > width)
+        cut.chop(1);
+    return cut.trimmed() + QChar(0x2026);
+}
+
+void addHead(Page& page, const Certificate& certificate, const QString& number) {
+    const TextStyle strong{11, true, PageInk::Text}, strongRight{9.5, true, PageInk::Text}, small{8, false, PageInk::Quiet};
+    const double half = Content.width() * 0.6;
+    const QString laboratory = certificate.job.laboratory.empty() ? CertificatePages::tr("Laboratory not named") : text(certificate.job.laboratory);
+    const QString certificateNumber = CertificatePages::tr("Certificate %1").arg(orDash(certificate.job.certificateNumber));
+    const auto put = [&page](double x, double baseline, const QString& words, const TextStyle& style, Qt::Alignment end = Qt::AlignLeft) {
+        if (!words.isEmpty())
+            page.blocks.push_back(textBlock(x, baseline, words, style, end));
+    };
+    put(Content.left(), 17.5, fitting(laboratory, strong, half), strong);
+    put(Content.left(), 22, fitting(text(certificate.job.laboratoryAddress), small, half), small);
+    put(Content.right(), 17.5, fitting(certificateNumber, strongRight, Content.width() - half - 4), strongRight, Qt::AlignRight);
+    put(Content.right(), 22, number, small, Qt::AlignRight);
+    page.blocks.push_back({QRectF(Content.left(), 26, Content.width(), 0), Rule{0.4, PageInk::Text}});
+}
+
+QString stateWord(DraftState state) {
+    switch (state) {
+    case DraftState::Incomplete: return CertificatePages::tr("INCOMPLETE DRAFT");
+    case DraftState::Draft: return CertificatePages::tr("DRAFT");
+    case DraftState::SignedOff: return {};
+    }
+    return {};
+}
+
+/// The first 16 digits of the digest in groups of four.
+QString digestText(const std::string& digest) {
+    const auto colon = digest.find(':');
+    const QString hex = text(digest.substr(colon == std::string::npos ? 0 : colon + 1, 16));
+    QStringList groups;
+    for (qsizetype i = 0; i < hex.size(); i += 4)
+        groups << hex.mid(i, 4);
+    return groups.join(QLatin1Char(' '));
+}
+
+void addFoot(Page& page, const Certificate& certificate, const QString& number) {
+    const TextStyle small{7.5, false, PageInk::Quiet};
+    QStringList parts;
+    if (!stateWord(certificate.state).isEmpty())
+        parts << stateWord(certificate.state);
+    parts << CertificatePages::tr("drawn up on %1").arg(text(certificate.drawnUpOn));
+    if (!certificate.digest.empty())
+        parts << CertificatePages::tr("record %1").arg(digestText(certificate.digest));
+    parts << text(certificate.program);
+    page.blocks.push_back({QRectF(Content.left(), 280, Content.width(), 0), Rule{0.2, PageInk::Line}});
+    page.blocks.push_back(textBlock(Content.left(), 284.5, fitting(parts.join(QStringLiteral(" · ")), small, Content.width() - 35), small));
+    page.blocks.push_back(textBlock(Content.right(), 284.5, number, small, Qt::AlignRight));
+}
+
+/// Behind everything that is on the page already.
+void addWatermark(Page& page, DraftState state) {
+    if (state == DraftState::SignedOff)
+        return;
+    const bool incomplete = state == DraftState::Incomplete;
+    Watermark mark{incomplete ? CertificatePages::tr("INCOMPLETE") : CertificatePages::tr("DRAFT"), incomplete ? 104.0 : 190.0, 52, PageInk::Shade};
+    page.blocks.insert(page.blocks.begin(), PageBlock{QRectF(0, 0, 210, 297), mark});
+}
+
+} // namespace
+
+Pages certificatePages(const Certificate& certificate, const QStringList& gaps) {
+    Pages document;
+    document.content = Content;
+    Flow flow(document, Area);
+    addTitle(flow, certificate, gaps);
+    addIdentification(flow, certificate);
+    addStandards(flow, certificate);
+    addConditions(flow, certificate);
+    addSummary(flow, certificate);
+    for (const PhaseSection& section : certificate.phases)
+        addResults(flow, certificate, section);
+    addFunction(flow, certificate);
+    for (const PhaseSection& section : certificate.phases)
+        addBudget(flow, certificate, section);
+    for (const PhaseSection& section : certificate.phases)
+        addPerformance(flow, certificate, section);
+    addExclusions(flow, certificate);
+    addStatements(flow, certificate, gaps);
+    addSignOffs(flow, certificate);
+    Pages pages = flow.take();
+    for (std::size_t i = 0; i < pages.pages.size(); ++i) {
+        const QString number = CertificatePages::tr("page %1 of %2").arg(i + 1).arg(pages.pages.size());
+        addHead(pages.pages[i], certificate, number);
+        addFoot(pages.pages[i], certificate, number);
+        addWatermark(pages.pages[i], certificate.state);
+    }
+    return pages;
+}
+
+} // namespace spanwright

@@ -1,0 +1,81 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "ui/certificate/writeCertificate.h"
+
+#include "ui/certificate/CertificatePages.h"
+#include "ui/certificate/CertificateText.h"
+
+#include <QCoreApplication>
+#include <QPageLayout>
+#include <QPainter>
+#include <QPdfWriter>
+#include <QSaveFile>
+
+namespace spanwright {
+
+namespace {
+
+struct Writing {
+    Q_DECLARE_TR_FUNCTIONS(Writing)
+};
+
+Error fileError(ErrorCode code, const QString& path, const QString& reason) {
+    return Error(code, {{"file", path.toStdString()}, {"reason", reason.toStdString()}});
+}
+
+} // namespace
+
+QStringList blockingGaps(const Record& record, const Evaluation& evaluation) {
+    QStringList gaps;
+    for (const ChecklistItem& item : checklist(record, evaluation))
+        if (item.level == GapLevel::Block)
+            gaps << gapText(item, record, evaluation);
+    return gaps;
+}
+
+Pages layOutCertificate(const Record& record, const Evaluation& evaluation, const CertificateContext& context) {
+    return certificatePages(buildCertificate(record, evaluation, context), blockingGaps(record, evaluation));
+}
+
+bool paintDocument(const Pages& pages, QPagedPaintDevice& device) {
+    device.setPageLayout(QPageLayout(QPageSize(QPageSize::A4), QPageLayout::Portrait, QMarginsF(0, 0, 0, 0), QPageLayout::Millimeter));
+    QPainter painter;
+    if (!painter.begin(&device))
+        return false;
+    for (std::size_t i = 0; i < pages.pages.size(); ++i) {
+        if (i > 0 && !device.newPage())
+            return false;
+        // A printer that cannot print to the edge still gets the page in true size.
+        const double perMm = device.logicalDpiX() / 25.4;
+        const QPointF printable = device.pageLayout().paintRect(QPageLayout::Millimeter).topLeft() * perMm;
+        paintPage(painter, pages, i, QRectF(-printable, pages.size * perMm));
+    }
+    return painter.end();
+}
+
+Result<void> writeCertificatePdf(const Record& record, const Evaluation& evaluation, const QString& path,
+                                 const CertificateContext& context, WithGaps withGaps) {
+    const QStringList gaps = blockingGaps(record, evaluation);
+    if (withGaps == WithGaps::Refuse && !gaps.isEmpty()) {
+        Error error(ErrorCode::CertificateIncomplete);
+        for (const QString& gap : gaps)
+            error.facts.push_back({"missing", gap.toStdString()});
+        return error;
+    }
+    QSaveFile file(path);
+    if (!file.open(QIODevice::WriteOnly))
+        return fileError(ErrorCode::FileNotWritable, path, file.errorString());
+    {
+        QPdfWriter writer(&file);
+        writer.setPdfVersion(QPagedPaintDevice::PdfVersion_A1b);
+        writer.setResolution(1200);
+        writer.setTitle(Writing::tr("Calibration certificate %1 (draft)").arg(QString::fromStdString(record.job.certificateNumber)));
+        writer.setCreator(QString::fromStdString(context.program));
+        if (!paintDocument(layOutCertificate(record, evaluation, context), writer))
+            return fileError(ErrorCode::FileWriteFailed, path, file.errorString());
+    }
+    if (!file.commit())
+        return fileError(ErrorCode::FileWriteFailed, path, file.errorString());
+    return {};
+}
+
+} // namespace spanwright

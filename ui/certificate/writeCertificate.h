@@ -1,0 +1,32 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "core/certificate/Certificate.h"
+#include "ui/certificate/Page.h"
+
+#include <QString>
+#include <QStringList>
+
+class QPagedPaintDevice;
+
+namespace spanwright {
+
+/// What still blocks a complete draft, one sentence each.
+QStringList blockingGaps(const Record& record, const Evaluation& evaluation);
+
+/// The pages of the certificate of a record.
+Pages layOutCertificate(const Record& record, const Evaluation& evaluation, const CertificateContext& context);
+
+/// Paints all pages on a PDF writer or a printer, whose page layout is set to A4 without margins (the margins are in the
+/// pages). Whether it could be begun.
+bool paintDocument(const Pages& pages, QPagedPaintDevice& device);
+
+/// What to do with a draft that has gaps.
+enum class WithGaps { Refuse, MarkIncomplete };
+
+/// Writes the certificate draft as PDF (PDF/A-1b, whole or not at all). Errors: CertificateIncomplete (a fact "missing" for
+/// each gap, in words) where gaps are refused; FileNotWritable, FileWriteFailed (facts: file, reason). Needs a QGuiApplication.
+Result<void> writeCertificatePdf(const Record& record, const Evaluation& evaluation, const QString& path,
+                                 const CertificateContext& context, WithGaps withGaps);
+
+} // namespace spanwright
