@@ -22,25 +22,6 @@ constexpr std::array<char16_t, 32> windows1252{0x20AC, 0,      0x201A, 0x0192, 0
                                                0,      0x2018, 0x2019, 0x201C, 0x201D, 0x2022, 0x2013, 0x2014,
                                                0x02DC, 0x2122, 0x0161, 0x203A, 0x0153, 0,      0x017E, 0x0178};
 
-void appendUtf8(std::string& text, char32_t c) {
-    const auto byte = [&](char32_t bits) { text += static_cast<char>(static_cast<unsigned char>(bits)); };
-    if (c < 0x80) {
-        byte(c);
-    } else if (c < 0x800) {
-        byte(0xC0 | (c >> 6));
-        byte(0x80 | (c & 0x3F));
-    } else if (c < 0x10000) {
-        byte(0xE0 | (c >> 12));
-        byte(0x80 | ((c >> 6) & 0x3F));
-        byte(0x80 | (c & 0x3F));
-    } else {
-        byte(0xF0 | (c >> 18));
-        byte(0x80 | ((c >> 12) & 0x3F));
-        byte(0x80 | ((c >> 6) & 0x3F));
-        byte(0x80 | (c & 0x3F));
-    }
-}
-
 /// Length of the valid UTF-8 sequence at `at`, 0 when there is none (Unicode Standard, table 3-7).
 std::size_t utf8Length(std::string_view s, std::size_t at) {
     const auto byte = [&](std::size_t i) { return at + i < s.size() ? static_cast<unsigned char>(s[at + i]) : 0u; };
@@ -55,28 +36,6 @@ std::size_t utf8Length(std::string_view s, std::size_t at) {
     if (lead >= 0xF0 && lead <= 0xF4)
         return follows(1, lead == 0xF0 ? 0x90 : 0x80, lead == 0xF4 ? 0x8F : 0xBF) && follows(2) && follows(3) ? 4 : 0;
     return 0;
-}
-
-/// Position of the first byte that belongs to no UTF-8; the size when there is none.
-std::size_t firstNotUtf8(std::string_view s) {
-    std::size_t at = 0;
-    while (at < s.size()) {
-        constexpr std::uint64_t highBits = 0x8080808080808080u;
-        std::uint64_t eight = 0;
-        while (at + sizeof eight <= s.size()) {
-            std::memcpy(&eight, s.data() + at, sizeof eight);
-            if (eight & highBits)
-                break;
-            at += sizeof eight;
-        }
-        if (at == s.size())
-            break;
-        const std::size_t length = utf8Length(s, at);
-        if (length == 0)
-            return at;
-        at += length;
-    }
-    return s.size();
 }
 
 /// Position of the first byte in the first megabyte that no text has: a control character other than tab, line feed, carriage
@@ -145,6 +104,46 @@ Result<std::string> fromUtf16(std::string_view bytes, Encoding encoding) {
 
 } // namespace
 
+void appendUtf8(std::string& text, char32_t c) {
+    const auto byte = [&](char32_t bits) { text += static_cast<char>(static_cast<unsigned char>(bits)); };
+    if (c < 0x80) {
+        byte(c);
+    } else if (c < 0x800) {
+        byte(0xC0 | (c >> 6));
+        byte(0x80 | (c & 0x3F));
+    } else if (c < 0x10000) {
+        byte(0xE0 | (c >> 12));
+        byte(0x80 | ((c >> 6) & 0x3F));
+        byte(0x80 | (c & 0x3F));
+    } else {
+        byte(0xF0 | (c >> 18));
+        byte(0x80 | ((c >> 12) & 0x3F));
+        byte(0x80 | ((c >> 6) & 0x3F));
+        byte(0x80 | (c & 0x3F));
+    }
+}
+
+std::size_t validUtf8(std::string_view s) {
+    std::size_t at = 0;
+    while (at < s.size()) {
+        constexpr std::uint64_t highBits = 0x8080808080808080u;
+        std::uint64_t eight = 0;
+        while (at + sizeof eight <= s.size()) {
+            std::memcpy(&eight, s.data() + at, sizeof eight);
+            if (eight & highBits)
+                break;
+            at += sizeof eight;
+        }
+        if (at == s.size())
+            break;
+        const std::size_t length = utf8Length(s, at);
+        if (length == 0)
+            return at;
+        at += length;
+    }
+    return s.size();
+}
+
 std::string_view encodingName(Encoding encoding) {
     switch (encoding) {
     case Encoding::Utf8: return "utf-8";
@@ -192,7 +191,7 @@ Result<Encoding> guessEncoding(std::string_view bytes) {
     }
     if (const auto control = firstControl(bytes))
         return binary(*control);
-    return firstNotUtf8(bytes) == bytes.size() ? Encoding::Utf8 : Encoding::Windows1252;
+    return validUtf8(bytes) == bytes.size() ? Encoding::Utf8 : Encoding::Windows1252;
 }
 
 Result<DecodedText> DecodedText::decode(std::string_view bytes, Encoding encoding) {
@@ -200,7 +199,7 @@ Result<DecodedText> DecodedText::decode(std::string_view bytes, Encoding encodin
     if (encoding == Encoding::Utf8) {
         if (bytes.starts_with(utf8Mark))
             bytes.remove_prefix(utf8Mark.size());
-        if (const std::size_t bad = firstNotUtf8(bytes); bad != bytes.size())
+        if (const std::size_t bad = validUtf8(bytes); bad != bytes.size())
             return wrongEncoding(bytes.substr(0, bad), encoding);
         decoded.seen_ = bytes;
     } else {

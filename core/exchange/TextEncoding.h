@@ -19,6 +19,12 @@ Result<Encoding> parseEncodingName(std::string_view text);
 /// Latin-1). Error: FileBinary when they are no text (facts: byte, the position from 1).
 Result<Encoding> guessEncoding(std::string_view bytes);
 
+/// How many bytes at the beginning are valid UTF-8; all of them when the text is.
+std::size_t validUtf8(std::string_view text);
+
+/// Appends one character of Unicode.
+void appendUtf8(std::string& text, char32_t character);
+
 /// Text in UTF-8 without a byte order mark. Looks into the bytes where nothing had to be converted, so they must outlive it.
 class DecodedText {
   public:

@@ -4,7 +4,6 @@
 #include "core/exchange/Words.h"
 
 #include <chrono>
-#include <cstdio>
 
 namespace spanwright {
 
@@ -185,18 +184,29 @@ std::string isoTime(std::int64_t since) {
     const sys_days date = floor<days>(sys_time<milliseconds>{sinceEpoch});
     const year_month_day calendar{date};
     const hh_mm_ss clock{sinceEpoch - date.time_since_epoch()};
-    char text[64];
-    const int fraction = static_cast<int>(clock.subseconds().count());
-    int length = std::snprintf(text, sizeof text, "%04d-%02u-%02uT%02d:%02d:%02d", static_cast<int>(calendar.year()),
-                               static_cast<unsigned>(calendar.month()), static_cast<unsigned>(calendar.day()),
-                               static_cast<int>(clock.hours().count()), static_cast<int>(clock.minutes().count()),
-                               static_cast<int>(clock.seconds().count()));
-    std::string iso(text, static_cast<std::size_t>(length));
-    if (fraction != 0) {
-        length = std::snprintf(text, sizeof text, ".%03d", fraction);
-        iso.append(text, static_cast<std::size_t>(length));
+    std::string iso;
+    const auto append = [&iso](long long number, std::size_t digits) {
+        const std::string text = std::to_string(number);
+        iso.append(text.size() < digits ? digits - text.size() : 0, '0');
+        iso += text;
+    };
+    append(static_cast<int>(calendar.year()), 4);
+    iso += '-';
+    append(static_cast<unsigned>(calendar.month()), 2);
+    iso += '-';
+    append(static_cast<unsigned>(calendar.day()), 2);
+    iso += 'T';
+    append(clock.hours().count(), 2);
+    iso += ':';
+    append(clock.minutes().count(), 2);
+    iso += ':';
+    append(clock.seconds().count(), 2);
+    if (clock.subseconds().count() != 0) {
+        iso += '.';
+        append(clock.subseconds().count(), 3);
     }
-    return iso + "Z";
+    iso += 'Z';
+    return iso;
 }
 
 } // namespace spanwright

@@ -148,6 +148,23 @@ void ReadingColumns::appendBlock(Block block, ReadingId firstId) {
     enteredBy_.resize(enteredBy_.size() + n, person(block.enteredBy));
 }
 
+ReadingColumns ReadingColumns::fromWhole(Whole whole) {
+    ReadingColumns all;
+    all.ids_ = std::move(whole.ids);
+    all.phases_ = std::move(whole.phases);
+    all.runs_ = std::move(whole.runs);
+    all.directions_ = std::move(whole.directions);
+    all.setPoint_ = std::move(whole.setPoint);
+    all.reference_ = std::move(whole.reference);
+    all.indication_ = std::move(whole.indication);
+    all.uReference_ = std::move(whole.uReference);
+    all.uIndication_ = std::move(whole.uIndication);
+    all.enteredAt_ = std::move(whole.enteredAt);
+    all.enteredBy_ = std::move(whole.enteredBy);
+    all.people_ = std::move(whole.people);
+    return all;
+}
+
 void ReadingColumns::removeBlock(ReadingId firstId, std::size_t n) {
     const std::size_t from = indexOf(firstId);
     assert(from + n <= size());

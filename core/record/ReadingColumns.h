@@ -86,6 +86,19 @@ class ReadingColumns {
     };
     /// Appends a block with ids firstId, firstId+1, …
     void appendBlock(Block block, ReadingId firstId);
+    /// Every column at once, as a file was read: all have as many rows as `ids`, which rise strictly; `enteredBy` counts in
+    /// `people`.
+    struct Whole {
+        std::vector<ReadingId> ids;
+        std::vector<Phase> phases;
+        std::vector<std::int32_t> runs;
+        std::vector<Direction> directions;
+        DecimalColumn setPoint, reference, indication, uReference, uIndication;
+        std::vector<std::int64_t> enteredAt;
+        std::vector<std::uint16_t> enteredBy;
+        std::vector<std::string> people{std::string{}};
+    };
+    static ReadingColumns fromWhole(Whole whole);
     /// Removes the rows with firstId ≤ id < firstId + n (undo of appendBlock).
     void removeBlock(ReadingId firstId, std::size_t n);
 

@@ -84,6 +84,7 @@ void LinePlot::rebuild() {
     }
     const PhaseEvaluation& phase = *subject_.phase;
     factor_ = !phase.fit ? 1 : enlargement_ ? *enlargement_ : suitableFactor();
+    emit enlargementChanged(factor_);
     content.points = pointsOf(phase);
     content.points.x = subject_.x();
     content.points.y = subject_.y();
@@ -137,7 +138,7 @@ void LinePlot::annotate() {
     QString summary = ink().emptyText();
     if (!subject_.empty()) {
         const PhaseEvaluation& phase = *subject_.phase;
-        summary = tr("%n reading(s), %1 excluded.", nullptr, static_cast<int>(phase.rows.size())).arg(phase.excluded);
+        summary = tr("%1, %2 excluded.").arg(readingsText(phase.rows.size())).arg(phase.excluded);
         if (phase.fit) {
             const QString equation = equationText(*phase.fit, subject_.item);
             const QString spread = tr("residual s = %1 %2, %3 degrees of freedom")

@@ -25,6 +25,10 @@ class LinePlot : public PlotView {
     void showMean(bool shown);
     void showSelection(const std::set<ReadingId>& selection);
 
+  signals:
+    /// The factor in use, whether chosen or found.
+    void enlargementChanged(int factor);
+
   private:
     void rebuild();
     void annotate();

@@ -105,4 +105,14 @@ QString withUnit(const QString& name, const QString& unit) {
     return unit.isEmpty() ? name : name + QLatin1Char(' ') + unit;
 }
 
+QString readingsText(std::size_t count) {
+    return count == 1 ? tr("1 reading") : tr("%1 readings").arg(QLocale().toString(static_cast<qulonglong>(count)));
+}
+
+QString sentenceCase(QString text) {
+    if (!text.isEmpty())
+        text[0] = text[0].toUpper();
+    return text;
+}
+
 } // namespace spanwright

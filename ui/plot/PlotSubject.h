@@ -46,5 +46,9 @@ QString readingText(const PlotSubject& subject, ReadingId id);
 QString quantityText(const Quantity& quantity, FitDirection role);
 /// "name / unit", as it stands in a heading.
 QString withUnit(const QString& name, const QString& unit);
+/// "1 reading", "66 readings".
+QString readingsText(std::size_t count);
+/// With a capital letter at its beginning, where a name stands alone.
+QString sentenceCase(QString text);
 
 } // namespace spanwright

@@ -32,7 +32,7 @@ QList<QPointF> listOf(const std::vector<QPointF>& points) {
 } // namespace
 
 PlotView::PlotView(QWidget* parent)
-    : QChartView(new QChart, parent), cloud_(new PointCloud(chart())), ink_(new PlotInk(chart())), xAxis_(new QValueAxis(this)),
+    : QChartView(new QChart, parent), grid_(new PlotGrid(chart())), cloud_(new PointCloud(chart())), ink_(new PlotInk(chart())), xAxis_(new QValueAxis(this)),
       yAxis_(new QValueAxis(this)), line_(new QLineSeries(this)), rubber_(new QRubberBand(QRubberBand::Rectangle, viewport())) {
     for (QLineSeries*& edge : edges_)
         edge = new QLineSeries(this);
@@ -53,8 +53,9 @@ PlotView::PlotView(QWidget* parent)
     for (QValueAxis* axis : {xAxis_, yAxis_}) {
         axis->setLabelsVisible(false);
         axis->setLineVisible(false);
-        axis->setTickType(QValueAxis::TicksDynamic);
+        axis->setGridLineVisible(false);
     }
+    grid_->setZValue(1);
     cloud_->setZValue(30);
     ink_->setZValue(40);
     setRenderHint(QPainter::Antialiasing);
@@ -70,8 +71,7 @@ PlotView::PlotView(QWidget* parent)
 void PlotView::setContent(Content content) {
     content_ = std::move(content);
     const bool empty = !content_.emptyText.isEmpty();
-    for (QValueAxis* axis : {xAxis_, yAxis_})
-        axis->setGridLineVisible(!empty);
+    grid_->setVisible(!empty);
     line_->replace(listOf(content_.line));
     edges_[0]->replace(listOf(content_.inner.low));
     edges_[1]->replace(listOf(content_.inner.high));
@@ -83,10 +83,7 @@ void PlotView::setContent(Content content) {
     cloud_->setPoints(empty ? PlotPoints{} : std::move(content_.points));
     content_.points = {};
     ink_->setEmptyText(content_.emptyText);
-    if (zoomed_ && !empty)
-        showRange(frame_.x, frame_.y);
-    else
-        showRange(content_.x, content_.y);
+    showRange(zoomedAcross_ && !empty ? frame_.x : content_.x, zoomedUp_ && !empty ? frame_.y : content_.y);
 }
 
 void PlotView::setStrokes(std::vector<PlotStroke> strokes) {
@@ -125,10 +122,10 @@ void PlotView::setLeft(double left) {
 }
 
 void PlotView::showHorizontal(const AxisRange& range) {
-    if (range != frame_.x) {
-        zoomed_ = true;
-        showRange(range, frame_.y);
-    }
+    if (range == frame_.x)
+        return;
+    zoomedAcross_ = range != content_.x;
+    showRange(range, frame_.y);
 }
 
 QPointF PlotView::placeOf(ReadingId id) const {
@@ -153,8 +150,6 @@ void PlotView::changeEvent(QEvent* event) {
 void PlotView::restyle() {
     const Scheme& colours = scheme();
     setBackgroundBrush(colours.card);
-    for (QValueAxis* axis : {xAxis_, yAxis_})
-        axis->setGridLinePen(QPen(colours.line, 1));
     line_->setPen(QPen(colours.accent, 1.6));
     inner_->setPen(Qt::NoPen);
     inner_->setBrush(colours.band);
@@ -193,10 +188,7 @@ void PlotView::showRange(const AxisRange& x, const AxisRange& y) {
     }
     xAxis_->setRange(x.low, x.high);
     yAxis_->setRange(y.low, y.high);
-    xAxis_->setTickAnchor(xTicks.first);
-    xAxis_->setTickInterval(xTicks.step);
-    yAxis_->setTickAnchor(yTicks.first);
-    yAxis_->setTickInterval(yTicks.step);
+    grid_->set(frame_, xTicks.places, yTicks.places);
     ink_->setAxes({xTicks, yTicks, content_.ySign, content_.xUnit, content_.yUnit, names});
     ink_->setFrame(frame_);
     cloud_->setFrame(frame_);
@@ -253,7 +245,7 @@ void PlotView::mouseReleaseEvent(QMouseEvent* event) {
 
 void PlotView::mouseDoubleClickEvent(QMouseEvent*) {
     pressed_.reset();
-    zoomed_ = false;
+    zoomedAcross_ = zoomedUp_ = false;
     showRange(content_.x, content_.y);
 }
 
@@ -272,7 +264,7 @@ void PlotView::zoom(double factor, const QPointF& about) {
         const bool sensible = next.span() > whole.span() * 1e-5 && next.span() < whole.span() * 20;
         return sensible ? next : range;
     };
-    zoomed_ = true;
+    zoomedAcross_ = zoomedUp_ = true;
     showRange(scaled(frame_.x, value.x(), content_.x), scaled(frame_.y, value.y(), content_.y));
 }
 

@@ -2,6 +2,7 @@
 #pragma once
 
 #include "ui/plot/PlotFrame.h"
+#include "ui/plot/PlotGrid.h"
 #include "ui/plot/PlotInk.h"
 #include "ui/plot/PointCloud.h"
 
@@ -94,6 +95,7 @@ class PlotView : public QChartView {
     void stand(std::size_t row);
     void choose(std::set<ReadingId> ids, Qt::KeyboardModifiers modifiers);
 
+    PlotGrid* grid_;
     PointCloud* cloud_;
     PlotInk* ink_;
     QValueAxis* xAxis_;
@@ -106,7 +108,7 @@ class PlotView : public QChartView {
     Content content_;
     PlotFrame frame_;
     double left_ = 64;
-    bool zoomed_ = false;
+    bool zoomedAcross_ = false, zoomedUp_ = false;
     std::optional<QPoint> pressed_;
     QString summary_;
     std::function<QString(ReadingId)> describe_;

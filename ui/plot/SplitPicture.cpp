@@ -4,6 +4,7 @@
 #include "ui/look/Look.h"
 #include "ui/look/NumberText.h"
 #include "ui/plot/PartStrokes.h"
+#include "ui/plot/PlotSubject.h"
 #include "ui/words/Words.h"
 
 #include <QHelpEvent>
@@ -17,7 +18,7 @@ namespace spanwright {
 
 namespace {
 
-constexpr double columnWidth = 34, gap = 46, labelGap = 12;
+constexpr double columnWidth = 30, gap = 36, labelGap = 11;
 constexpr double thinnest = 3; ///< a part is never too thin to be seen and hit
 
 QFont strongFont() {
@@ -222,7 +223,7 @@ void SplitPicture::paintPart(QPainter& painter, const Part& part) const {
     const double half = QFontMetricsF(strongFont()).height();
     painter.setFont(strongFont());
     painter.setPen(scheme().ink);
-    painter.drawText(QRectF(part.label.topLeft(), QSizeF(part.label.width(), half)), Qt::AlignLeft | Qt::AlignVCenter, splitPartText(part.part));
+    painter.drawText(QRectF(part.label.topLeft(), QSizeF(part.label.width(), half)), Qt::AlignLeft | Qt::AlignVCenter, sentenceCase(splitPartText(part.part)));
     painter.setFont(textFont(TextRole::Small));
     painter.setPen(scheme().quiet);
     painter.drawText(QRectF(part.label.left(), part.label.top() + half, part.label.width() + 20, part.label.height() - half),
@@ -267,7 +268,7 @@ bool SplitPicture::event(QEvent* event) {
     if (event->type() == QEvent::ToolTip) {
         const auto* help = static_cast<QHelpEvent*>(event);
         if (const Part* part = at(QPointF(help->pos())))
-            QToolTip::showText(help->globalPos(), splitPartText(part->part) + QLatin1Char('\n') + testOf(*part), this);
+            QToolTip::showText(help->globalPos(), sentenceCase(splitPartText(part->part)) + QLatin1Char('\n') + testOf(*part), this);
         else
             QToolTip::hideText();
         return true;

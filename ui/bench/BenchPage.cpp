@@ -1,0 +1,293 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "ui/bench/BenchPage.h"
+
+#include "ui/bench/ChoiceMenus.h"
+#include "ui/bench/CompareDialog.h"
+#include "ui/bench/ExcludeDialog.h"
+#include "ui/bench/FindingsView.h"
+#include "ui/bench/NextReading.h"
+#include "ui/bench/ReadingsTable.h"
+#include "ui/bench/SelectionBar.h"
+#include "ui/bench/SplitTable.h"
+#include "ui/commands/ExclusionCommands.h"
+#include "ui/commands/PartCommand.h"
+#include "ui/look/Card.h"
+#include "ui/look/Look.h"
+#include "ui/look/NumberText.h"
+#include "ui/plot/LinePlot.h"
+#include "ui/plot/PlotPair.h"
+#include "ui/plot/ResidualPlot.h"
+#include "ui/plot/SplitPicture.h"
+#include "ui/words/Words.h"
+
+#include <QAction>
+#include <QHBoxLayout>
+#include <QLabel>
+#include <QMenu>
+#include <QSplitter>
+#include <QVBoxLayout>
+
+namespace spanwright {
+
+namespace {
+
+QSplitter* parted(Qt::Orientation orientation, std::initializer_list<QWidget*> widgets) {
+    auto* splitter = new QSplitter(orientation);
+    splitter->setHandleWidth(space::step + space::half);
+    splitter->setChildrenCollapsible(false);
+    for (QWidget* widget : widgets)
+        splitter->addWidget(widget);
+    return splitter;
+}
+
+} // namespace
+
+BenchPage::BenchPage(Workbench& workbench, QWidget* parent) : QWidget(parent), workbench_(workbench) {
+    setObjectName(QStringLiteral("benchPage"));
+    auto* all = new QHBoxLayout(this);
+    all->setContentsMargins(space::card, space::card, space::card, space::card);
+    QSplitter* columns = parted(Qt::Horizontal, {buildLeft(), buildMiddle(), buildRight()});
+    columns->setObjectName(QStringLiteral("benchColumns"));
+    columns->setStretchFactor(0, 0);
+    columns->setStretchFactor(1, 1);
+    columns->setStretchFactor(2, 0);
+    columns->setSizes({384, 590, 272});
+    all->addWidget(columns);
+    new PlotPair(*line_, *residual_, this);
+    buildActions();
+    connectSelection();
+    connect(&workbench_, &Workbench::recordChanged, this, &BenchPage::refreshWords);
+    connect(&workbench_, &Workbench::evaluationChanged, this, &BenchPage::refresh);
+    refresh();
+    refreshWords();
+    showSelection();
+}
+
+QWidget* BenchPage::buildLeft() {
+    next_ = new NextReading(workbench_);
+    table_ = new ReadingsTable(workbench_);
+    readingsCard_ = new Card(tr("Readings"));
+    // The table reaches from edge to edge; the head stays where the heads of other cards are.
+    readingsCard_->layout()->setContentsMargins(1, space::step + space::half, 1, space::step);
+    readingsCard_->layout()->itemAt(0)->layout()->setContentsMargins(space::card - 1, 0, space::card - 1, 0);
+    readingsCard_->body()->addWidget(table_);
+    auto* left = new QWidget;
+    auto* column = new QVBoxLayout(left);
+    column->setContentsMargins(0, 0, 0, 0);
+    column->setSpacing(space::step + space::half);
+    column->addWidget(next_);
+    column->addWidget(readingsCard_, 1);
+    left->setMinimumWidth(340);
+    connect(next_, &NextReading::planRequested, this, &BenchPage::planRequested);
+    return left;
+}
+
+QWidget* BenchPage::buildMiddle() {
+    line_ = new LinePlot;
+    residual_ = new ResidualPlot;
+    lineCard_ = new Card(tr("Indication against reference"));
+    weightsButton_ = weightsButton(workbench_, lineCard_);
+    for (QWidget* control : std::initializer_list<QWidget*>{functionButton(workbench_, lineCard_), weightsButton_, coverageButton(workbench_, lineCard_), enlargementButton(*line_, lineCard_)})
+        lineCard_->addHeadWidget(control);
+    equation_ = new QLabel;
+    equation_->setObjectName(QStringLiteral("equation"));
+    equation_->setAccessibleName(tr("Calibration function"));
+    equation_->setTextFormat(Qt::PlainText);
+    equation_->setTextInteractionFlags(Qt::TextSelectableByMouse | Qt::TextSelectableByKeyboard);
+    equation_->setWordWrap(true);
+    equation_->setFont(textFont(TextRole::Small));
+    lineCard_->body()->addWidget(line_, 1);
+    lineCard_->body()->addWidget(equation_);
+
+    auto* residuals = new Card(tr("Residuals"));
+    auto* bar = new SelectionBar(workbench_);
+    connect(bar, &SelectionBar::excludeRequested, this, &BenchPage::exclude);
+    connect(bar, &SelectionBar::readmitRequested, this, &BenchPage::readmit);
+    viewButton_ = new ChoiceButton(QStringLiteral("residualChoice"), tr("What the residuals are drawn against"));
+    residuals->addHeadWidget(bar);
+    residuals->addHeadWidget(viewButton_);
+    residuals->body()->addWidget(residual_, 1);
+    for (const ResidualView view : residualViews)
+        viewButton_->menu()->addAction(residualViewText(view, {}), this, [this, view] { setView(view); });
+
+    QSplitter* rows = parted(Qt::Vertical, {lineCard_, residuals});
+    rows->setStretchFactor(0, 3);
+    rows->setStretchFactor(1, 2);
+    rows->setSizes({420, 290});
+    rows->setMinimumWidth(420);
+    return rows;
+}
+
+QWidget* BenchPage::buildRight() {
+    split_ = new SplitPicture;
+    findings_ = new FindingsView;
+    splitCard_ = new Card(tr("Variance split"));
+    auto* figures = new QToolButton;
+    figures->setObjectName(QStringLiteral("splitFigures"));
+    figures->setProperty("link", true);
+    figures->setFont(textFont(TextRole::Small));
+    figures->setText(tr("Table"));
+    figures->setStyleSheet(QStringLiteral("QToolButton { padding: 2px 0px; }"));
+    connect(figures, &QToolButton::clicked, this, &BenchPage::showSplitTable);
+    splitCard_->addHeadWidget(figures);
+    splitCard_->body()->addWidget(split_);
+    findingsCard_ = new Card(tr("Findings"));
+    findingsCard_->body()->addWidget(findings_);
+    QSplitter* rows = parted(Qt::Vertical, {splitCard_, findingsCard_});
+    rows->setStretchFactor(0, 3);
+    rows->setStretchFactor(1, 2);
+    rows->setSizes({420, 290});
+    rows->setMinimumWidth(256);
+    connect(findings_, &FindingsView::remedyChosen, this, &BenchPage::follow);
+    connect(findings_, &FindingsView::readingsChosen, this, [this](const std::vector<ReadingId>& ids) { workbench_.select({ids.begin(), ids.end()}); });
+    connect(split_, &SplitPicture::partSelected, this, &BenchPage::showPart);
+    return rows;
+}
+
+void BenchPage::buildActions() {
+    const auto add = [this](const char* id, const QString& text, const QKeySequence& keys, auto&& run) {
+        auto* action = new QAction(text, this);
+        action->setObjectName(QLatin1String(id));
+        action->setShortcut(keys);
+        action->setShortcutContext(Qt::WidgetWithChildrenShortcut);
+        connect(action, &QAction::triggered, this, run);
+        addAction(action);
+    };
+    add("bench.next", tr("Type the next reading"), QKeySequence(Qt::CTRL | Qt::Key_Return), [this] { startTyping(); });
+    add("bench.exclude", tr("Exclude the selected readings"), QKeySequence(Qt::CTRL | Qt::Key_E), [this] { exclude(); });
+    add("bench.readmit", tr("Take the selected readings back in"), QKeySequence(Qt::CTRL | Qt::SHIFT | Qt::Key_E), [this] { readmit(); });
+    add("bench.split-table", tr("Variance split as a table"), QKeySequence(Qt::CTRL | Qt::Key_T), [this] { showSplitTable(); });
+    add("bench.compare-exclusions", tr("Compare with and without the exclusions"), {}, [this] {
+        (new CompareDialog(workbench_, CompareDialog::withoutExclusions(workbench_.record()), this))->open();
+    });
+    add("bench.line", tr("Go to the line plot"), QKeySequence(Qt::CTRL | Qt::Key_L), [this] { line_->setFocus(); });
+    add("bench.residuals", tr("Go to the residuals"), QKeySequence(Qt::CTRL | Qt::Key_R), [this] { residual_->setFocus(); });
+    add("bench.table", tr("Go to the readings"), QKeySequence(Qt::CTRL | Qt::Key_G), [this] { table_->setFocus(); });
+}
+
+void BenchPage::connectSelection() {
+    connect(&workbench_, &Workbench::selectionChanged, this, &BenchPage::showSelection);
+    for (PlotView* plot : std::initializer_list<PlotView*>{line_, residual_}) {
+        connect(plot, &PlotView::selected, this, [this](const std::set<ReadingId>& ids) { workbench_.select(ids); });
+        connect(plot, &PlotView::excludeRequested, this, &BenchPage::exclude);
+    }
+    connect(table_, &ReadingsTable::excludeRequested, this, &BenchPage::exclude);
+    connect(table_, &ReadingsTable::readmitRequested, this, &BenchPage::readmit);
+}
+
+void BenchPage::startTyping() {
+    next_->startTyping();
+}
+
+PlotSubject BenchPage::subject() const {
+    const Record& record = workbench_.record();
+    return {phaseOf(workbench_.evaluation(), record.choices.phase), record.item, record.readings, record.exclusions, record.choices.fit};
+}
+
+void BenchPage::refresh() {
+    const PlotSubject now = subject();
+    line_->setSubject(now);
+    residual_->setSubject(now);
+    const QString why = now.phase && now.phase->notFitted ? errorText(*now.phase->notFitted) : tr("What the spread is made of appears here once a function is fitted.");
+    const QString name = functionText(workbench_.record().choices.function);
+    split_->setSplit(now.phase ? now.phase->split : std::nullopt, name, why);
+    splitCard_->setNote(now.phase && now.phase->fit ? readingsText(now.phase->fit->used) : QString());
+    const std::vector<Finding> found = now.phase ? now.phase->findings : std::vector<Finding>{};
+    findings_->setFindings(found, workbench_.record(), now.phase && now.phase->fit ? tr("Nothing stands out.") : tr("Findings appear here as readings come in."));
+    findingsCard_->setNote(found.empty() ? QString() : QString::number(found.size()));
+    QString words;
+    if (now.phase && now.phase->fit) {
+        const Fit& fit = *now.phase->fit;
+        const QString unit = fit.weights == Weights::Equal ? QLatin1Char(' ') + QString::fromStdString(now.ordinate().unit) : QString();
+        words = equationText(fit, {}) + QStringLiteral("      ") +
+                tr("residual s = %1%2, %3 degrees of freedom").arg(significantText(fit.residualSd, 2), unit).arg(fit.degreesOfFreedom);
+    }
+    equation_->setText(words);
+    equation_->setToolTip(now.phase && now.phase->fit ? equationText(*now.phase->fit, now.item) : QString());
+    showSelection();
+}
+
+void BenchPage::refreshWords() {
+    const Record& record = workbench_.record();
+    readingsCard_->setTitle(tr("Readings %1").arg(phaseText(record.choices.phase)));
+    lineCard_->setTitle(record.choices.fit == FitDirection::Indication ? tr("Indication against reference") : tr("Reference against indication"));
+    setView(residual_->view());
+}
+
+void BenchPage::setView(ResidualView view) {
+    if (view != residual_->view())
+        residual_->setView(view);
+    if (view != ResidualView::Reference && split_->selected())
+        split_->select(std::nullopt);
+    viewButton_->setChoice(residualViewText(view, subject()));
+}
+
+void BenchPage::showSelection() {
+    line_->showSelection(workbench_.selection());
+    residual_->showSelection(workbench_.selection());
+}
+
+void BenchPage::showPart(std::optional<SplitPart> part) {
+    residual_->showPart(part);
+    line_->showMean(part == SplitPart::Regression);
+    setView(residual_->view());
+}
+
+void BenchPage::exclude() {
+    std::vector<ReadingId> ids;
+    for (const ReadingId id : workbench_.selection())
+        if (!workbench_.record().exclusions->contains(id))
+            ids.push_back(id);
+    if (ids.empty())
+        readmit();
+    else if (!workbench_.readOnly())
+        (new ExcludeDialog(workbench_, std::move(ids), this))->open();
+}
+
+void BenchPage::readmit() {
+    std::vector<ReadingId> ids;
+    for (const ReadingId id : workbench_.selection())
+        if (workbench_.record().exclusions->contains(id))
+            ids.push_back(id);
+    if (!ids.empty())
+        workbench_.perform(std::make_unique<Readmit>(std::move(ids)));
+}
+
+void BenchPage::compare(const FunctionChoice& function) {
+    auto* dialog = new CompareDialog(workbench_, CompareDialog::withFunction(workbench_.record(), function), this);
+    connect(dialog, &CompareDialog::takenOver, this, [this, function] {
+        workbench_.perform(changePart(workbench_.record(), &Record::choices, tr("choose %1").arg(functionText(function)), [&](Choices& choices) { choices.function = function; }));
+    });
+    dialog->open();
+}
+
+void BenchPage::follow(const Finding& finding) {
+    switch (finding.remedy) {
+    case Remedy::CompareFunction: compare(finding.suggestion); break;
+    case Remedy::CarryToBudget:
+        emit budgetRequested(finding.code == FindingCode::Hysteresis ? DerivedLine::Hysteresis : DerivedLine::RunToRun);
+        break;
+    case Remedy::SeeExclusions: (new CompareDialog(workbench_, CompareDialog::withoutExclusions(workbench_.record()), this))->open(); break;
+    case Remedy::SeeReadings:
+        workbench_.select({finding.rows.begin(), finding.rows.end()});
+        table_->setFocus();
+        break;
+    case Remedy::ChooseWeights: weightsButton_->showMenu(); break;
+    case Remedy::TakeMoreReadings: emit planRequested(); break;
+    case Remedy::CheckRun: {
+        const SplitPart part = finding.code == FindingCode::RunGainChange ? SplitPart::RunSlope : SplitPart::RunOffset;
+        split_->select(part);
+        showPart(part);
+        break;
+    }
+    case Remedy::None: break;
+    }
+}
+
+void BenchPage::showSplitTable() {
+    const PlotSubject now = subject();
+    if (now.phase && now.phase->split)
+        (new SplitTable(*now.phase->split, QString::fromStdString(now.ordinate().unit), this))->open();
+}
+
+} // namespace spanwright

@@ -1,0 +1,194 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "ui/bench/ChoiceMenus.h"
+
+#include "ui/commands/PartCommand.h"
+#include "ui/look/Look.h"
+#include "ui/look/NumberText.h"
+#include "ui/words/Words.h"
+
+#include <QCoreApplication>
+#include <QMenu>
+
+namespace spanwright {
+
+namespace {
+
+QString tr(const char* text) {
+    return QCoreApplication::translate("ChoiceMenus", text);
+}
+
+template <class Edit>
+void change(Workbench& workbench, const QString& text, Edit&& edit) {
+    workbench.perform(changePart(workbench.record(), &Record::choices, text, std::forward<Edit>(edit)));
+}
+
+struct Group {
+    const char* name;
+    std::vector<FunctionChoice> functions;
+};
+
+const std::vector<Group>& groups() {
+    using F = FunctionFamily;
+    static const std::vector<Group> all{
+        {QT_TRANSLATE_NOOP("ChoiceMenus", "Lines"), {{F::Line, 0}, {F::Proportional, 0}, {F::Constant, 0}}},
+        {QT_TRANSLATE_NOOP("ChoiceMenus", "Polynomials"), {{F::Polynomial, 2}, {F::Polynomial, 3}, {F::Polynomial, 4}, {F::Polynomial, 5}, {F::Polynomial, 6}, {F::Polynomial, 7}, {F::Polynomial, 8}, {F::Polynomial, 9}, {F::Polynomial, 10}}},
+        {QT_TRANSLATE_NOOP("ChoiceMenus", "Polynomials through zero"), {{F::PolynomialNoConstant, 2}, {F::PolynomialNoConstant, 3}, {F::PolynomialNoConstant, 4}, {F::PolynomialNoConstant, 5}, {F::PolynomialNoConstant, 6}}},
+        {QT_TRANSLATE_NOOP("ChoiceMenus", "Curves"), {{F::SquareRoot, 0}, {F::Logarithmic, 0}, {F::Power, 0}, {F::ExponentialApproach, 0}}},
+        {QT_TRANSLATE_NOOP("ChoiceMenus", "Sensors"), {{F::CallendarVanDusen, 0}, {F::ThermistorB, 0}, {F::SteinhartHart, 2}, {F::SteinhartHart, 3}, {F::SteinhartHart, 4}, {F::Nernst, 0}}},
+        {QT_TRANSLATE_NOOP("ChoiceMenus", "Table"), {{F::Table, 0}}},
+    };
+    return all;
+}
+
+void fillFunctions(QMenu& menu, Workbench& workbench) {
+    menu.clear();
+    const Choices& choices = workbench.record().choices;
+    const auto entry = [&](QMenu& into, const FunctionChoice& function) {
+        QAction* action = into.addAction(sentenceCase(functionText(function)));
+        action->setObjectName(QString::fromStdString(functionName(function)));
+        action->setCheckable(true);
+        action->setChecked(choices.function == function);
+        QObject::connect(action, &QAction::triggered, &workbench, [&workbench, function] {
+            change(workbench, tr("choose %1").arg(functionText(function)), [&](Choices& c) { c.function = function; });
+        });
+    };
+    for (const Group& group : groups()) {
+        const bool few = group.functions.size() <= 3;
+        QMenu* into = few ? &menu : menu.addMenu(tr(group.name));
+        for (const FunctionChoice& function : group.functions)
+            entry(*into, function);
+        if (&group == &groups().front())
+            menu.addSeparator();
+    }
+    menu.addSeparator();
+    for (const FitDirection direction : {FitDirection::Indication, FitDirection::Reference}) {
+        const QString text = direction == FitDirection::Indication ? tr("Gives the indication from the reference") : tr("Gives the reference from the indication");
+        QAction* action = menu.addAction(text);
+        action->setCheckable(true);
+        action->setChecked(choices.fit == direction);
+        QObject::connect(action, &QAction::triggered, &workbench, [&workbench, direction, text] { change(workbench, text.toLower(), [&](Choices& c) { c.fit = direction; }); });
+    }
+}
+
+void fillWeights(QMenu& menu, Workbench& workbench) {
+    menu.clear();
+    const Choices& choices = workbench.record().choices;
+    const auto entry = [&](const QString& text, bool checked, auto edit) {
+        QAction* action = menu.addAction(sentenceCase(text));
+        action->setCheckable(true);
+        action->setChecked(checked);
+        QObject::connect(action, &QAction::triggered, &workbench, [&workbench, text, edit] { change(workbench, tr("choose %1").arg(text), edit); });
+    };
+    for (const Weights weights : {Weights::Equal, Weights::Stated, Weights::Replicates, Weights::Proportional})
+        entry(weightsText(weights), choices.weights == weights, [weights](Choices& c) { c.weights = weights; });
+    menu.addSeparator();
+    for (const Method method : {Method::LeastSquares, Method::BothUncertain, Method::Robust})
+        entry(methodText(method), choices.method == method, [method](Choices& c) { c.method = method; });
+    menu.addSeparator();
+    entry(tr("uncertainty from the scatter of the residuals"), choices.covariance == CovarianceScale::Residuals, [](Choices& c) { c.covariance = CovarianceScale::Residuals; });
+    entry(tr("uncertainty from the stated uncertainties as they are"), choices.covariance == CovarianceScale::Stated, [](Choices& c) { c.covariance = CovarianceScale::Stated; });
+}
+
+} // namespace
+
+ChoiceButton::ChoiceButton(const QString& name, const QString& accessibleName, QWidget* parent) : QToolButton(parent) {
+    setObjectName(name);
+    setAccessibleName(accessibleName);
+    setFont(textFont(TextRole::Small));
+    setPopupMode(QToolButton::InstantPopup);
+    setMenu(new QMenu(this));
+    setFocusPolicy(Qt::TabFocus);
+    setForegroundRole(inkRole::quiet);
+    setStyleSheet(QStringLiteral("QToolButton { padding: 2px 4px; }"));
+}
+
+void ChoiceButton::setChoice(const QString& text) {
+    setText(text + QStringLiteral(" ▾"));
+    setAccessibleDescription(text);
+    updateGeometry();
+}
+
+/// Without the room that a style keeps for its own arrow.
+QSize ChoiceButton::sizeHint() const {
+    const QFontMetrics metrics(font());
+    return {metrics.horizontalAdvance(text()) + 12, metrics.height() + 8};
+}
+
+QString weightsText(Weights weights) {
+    switch (weights) {
+    case Weights::Equal: return tr("equal weights");
+    case Weights::Stated: return tr("weights from stated uncertainties");
+    case Weights::Replicates: return tr("weights from replicates");
+    case Weights::Proportional: return tr("weights proportional to level");
+    }
+    return {};
+}
+
+QString methodText(Method method) {
+    switch (method) {
+    case Method::LeastSquares: return tr("least squares");
+    case Method::BothUncertain: return tr("reference and indication both uncertain");
+    case Method::Robust: return tr("robust, for comparison only");
+    }
+    return {};
+}
+
+ChoiceButton* functionButton(Workbench& workbench, QWidget* parent) {
+    auto* button = new ChoiceButton(QStringLiteral("functionChoice"), tr("Calibration function"), parent);
+    const auto refresh = [button, &workbench] { button->setChoice(sentenceCase(functionText(workbench.record().choices.function))); };
+    QObject::connect(&workbench, &Workbench::recordChanged, button, refresh);
+    QObject::connect(button->menu(), &QMenu::aboutToShow, button, [button, &workbench] { fillFunctions(*button->menu(), workbench); });
+    fillFunctions(*button->menu(), workbench);
+    refresh();
+    return button;
+}
+
+ChoiceButton* coverageButton(Workbench& workbench, QWidget* parent) {
+    auto* button = new ChoiceButton(QStringLiteral("coverageChoice"), tr("Coverage probability of every interval"), parent);
+    const auto refresh = [button, &workbench] { button->setChoice(shareText(workbench.record().choices.coverage.toDouble())); };
+    for (const Decimal& coverage : {Decimal{90, 2, {}}, Decimal{95, 2, {}}, Decimal{9545, 4, {}}, Decimal{99, 2, {}}, Decimal{9973, 4, {}}}) {
+        const QString text = significantText(coverage.toDouble() * 100, coverage.decimals) + QStringLiteral(" %");
+        QAction* action = button->menu()->addAction(text);
+        QObject::connect(action, &QAction::triggered, &workbench, [&workbench, coverage, text] {
+            change(workbench, tr("choose a coverage of %1").arg(text), [&](Choices& c) { c.coverage = coverage; });
+        });
+    }
+    QObject::connect(&workbench, &Workbench::recordChanged, button, refresh);
+    refresh();
+    return button;
+}
+
+ChoiceButton* weightsButton(Workbench& workbench, QWidget* parent) {
+    auto* button = new ChoiceButton(QStringLiteral("weightsChoice"), tr("Weights and method"), parent);
+    const auto refresh = [button, &workbench] {
+        const Choices& choices = workbench.record().choices;
+        QString text = choices.method == Method::BothUncertain ? tr("both uncertain") : choices.method == Method::Robust ? tr("robust") : QString();
+        if (text.isEmpty())
+            text = choices.weights == Weights::Equal ? tr("equal weights") : choices.weights == Weights::Stated ? tr("stated weights")
+                   : choices.weights == Weights::Replicates ? tr("replicate weights") : tr("proportional weights");
+        button->setChoice(text);
+    };
+    QObject::connect(button->menu(), &QMenu::aboutToShow, button, [button, &workbench] { fillWeights(*button->menu(), workbench); });
+    QObject::connect(&workbench, &Workbench::recordChanged, button, refresh);
+    fillWeights(*button->menu(), workbench);
+    refresh();
+    return button;
+}
+
+ChoiceButton* enlargementButton(LinePlot& plot, QWidget* parent) {
+    auto* button = new ChoiceButton(QStringLiteral("enlargementChoice"), tr("Enlargement of departures from the line"), parent);
+    button->setChoice(tr("×1"));
+    button->setToolTip(tr("How many times the distance from the line is drawn"));
+    const auto entry = [&](const QString& text, Enlargement enlargement) {
+        QAction* action = button->menu()->addAction(text);
+        QObject::connect(action, &QAction::triggered, &plot, [&plot, enlargement] { plot.setEnlargement(enlargement); });
+    };
+    entry(tr("As much as shows the bands well"), std::nullopt);
+    entry(tr("×1, the true picture"), 1);
+    for (const int factor : {10, 100, 1000, 10000})
+        entry(tr("Departures drawn ×%1").arg(factor), factor);
+    QObject::connect(&plot, &LinePlot::enlargementChanged, button, [button](int factor) { button->setChoice(tr("×%1").arg(factor)); });
+    return button;
+}
+
+} // namespace spanwright

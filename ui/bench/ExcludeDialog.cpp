@@ -1,0 +1,124 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "ui/bench/ExcludeDialog.h"
+
+#include "ui/bench/FitEffect.h"
+#include "ui/bench/TrialEvaluation.h"
+#include "ui/commands/ExclusionCommands.h"
+#include "ui/look/Look.h"
+#include "ui/plot/PlotSubject.h"
+#include "ui/words/Words.h"
+
+#include <QComboBox>
+#include <QDialogButtonBox>
+#include <QLabel>
+#include <QLineEdit>
+#include <QPushButton>
+#include <QVBoxLayout>
+
+namespace spanwright {
+
+namespace {
+
+constexpr ExclusionReason reasons[] = {ExclusionReason::NotSettled,  ExclusionReason::TypingSlip,      ExclusionReason::WrongReference, ExclusionReason::Disturbance,
+                                       ExclusionReason::OutOfRange, ExclusionReason::InstrumentFault, ExclusionReason::Other};
+
+} // namespace
+
+ExcludeDialog::ExcludeDialog(Workbench& workbench, std::vector<ReadingId> ids, QWidget* parent)
+    : QDialog(parent), workbench_(workbench), ids_(std::move(ids)), effect_(new EffectTable), trial_(new TrialEvaluation(this)) {
+    setObjectName(QStringLiteral("excludeDialog"));
+    setAttribute(Qt::WA_DeleteOnClose);
+    setWindowTitle(tr("Exclude %1").arg(readingsText(ids_.size())));
+    setMinimumWidth(440);
+    auto* all = new QVBoxLayout(this);
+    all->setContentsMargins(space::card, space::card, space::card, space::card);
+    all->setSpacing(space::step);
+    const Record& record = workbench_.record();
+    const PlotSubject subject{phaseOf(workbench_.evaluation(), record.choices.phase), record.item, record.readings, record.exclusions, record.choices.fit};
+    QStringList lines;
+    for (const ReadingId id : ids_) {
+        if (lines.size() == 4 && ids_.size() > 5) {
+            lines << tr("… and %1 more").arg(ids_.size() - 4);
+            break;
+        }
+        lines << readingText(subject, id).replace(QLatin1Char('\n'), QStringLiteral(", "));
+    }
+    auto* which = new QLabel(lines.join(QLatin1Char('\n')));
+    which->setTextFormat(Qt::PlainText);
+    which->setWordWrap(true);
+    all->addWidget(which);
+    buildReason(all);
+    auto* stays = new QLabel(tr("They stay in the record and in view, and can be taken back in. What the exclusion does:"));
+    stays->setForegroundRole(inkRole::quiet);
+    stays->setFont(textFont(TextRole::Small));
+    stays->setWordWrap(true);
+    all->addWidget(stays);
+    all->addWidget(effect_);
+    auto* buttons = new QDialogButtonBox;
+    exclude_ = buttons->addButton(tr("Exclude"), QDialogButtonBox::AcceptRole);
+    exclude_->setObjectName(QStringLiteral("excludeAccept"));
+    exclude_->setDefault(true);
+    buttons->addButton(tr("Keep them in"), QDialogButtonBox::RejectRole);
+    connect(buttons, &QDialogButtonBox::accepted, this, &ExcludeDialog::perform);
+    connect(buttons, &QDialogButtonBox::rejected, this, &QDialog::reject);
+    all->addSpacing(space::step);
+    all->addWidget(buttons);
+    connect(trial_, &TrialEvaluation::ready, this, &ExcludeDialog::showEffect);
+    effect_->show(tr("now"), tr("without"), effectRows(subject.phase.get(), nullptr, record.item));
+    Record without = record;
+    for (const ReadingId id : ids_)
+        without.exclusions.edit().add({id, ExclusionReason::Other, {}, {}, 0});
+    trial_->start(std::move(without));
+    complete();
+    reason_->setFocus();
+}
+
+void ExcludeDialog::buildReason(QVBoxLayout* all) {
+    reason_ = new QComboBox;
+    reason_->setObjectName(QStringLiteral("excludeReason"));
+    reason_->addItem(tr("choose a reason"));
+    for (const ExclusionReason reason : reasons)
+        reason_->addItem(reasonText(reason), static_cast<int>(reason));
+    words_ = new QLineEdit;
+    words_->setObjectName(QStringLiteral("excludeWords"));
+    words_->setAccessibleName(tr("Reason in words"));
+    words_->setPlaceholderText(tr("in words, for the record and the certificate"));
+    auto* why = new QLabel(tr("&Reason"));
+    why->setBuddy(reason_);
+    missing_ = new QLabel;
+    missing_->setFont(textFont(TextRole::Small));
+    missing_->setForegroundRole(inkRole::warning);
+    for (QWidget* widget : std::initializer_list<QWidget*>{why, reason_, words_, missing_})
+        all->addWidget(widget);
+    connect(reason_, &QComboBox::currentIndexChanged, this, &ExcludeDialog::complete);
+    connect(words_, &QLineEdit::textChanged, this, &ExcludeDialog::complete);
+}
+
+/// Words alone are a reason too.
+std::optional<ExclusionReason> ExcludeDialog::reason() const {
+    const bool words = !words_->text().trimmed().isEmpty();
+    if (reason_->currentIndex() <= 0)
+        return words ? std::optional(ExclusionReason::Other) : std::nullopt;
+    const auto chosen = static_cast<ExclusionReason>(reason_->currentData().toInt());
+    return chosen == ExclusionReason::Other && !words ? std::nullopt : std::optional(chosen);
+}
+
+void ExcludeDialog::complete() {
+    exclude_->setEnabled(reason().has_value());
+    missing_->setText(reason() ? QString() : reason_->currentIndex() > 0 ? tr("Write the reason in words.") : tr("A reason is needed, from the list or in words."));
+}
+
+void ExcludeDialog::showEffect(const std::shared_ptr<const Evaluation>& trial) {
+    const Phase phase = workbench_.record().choices.phase;
+    effect_->show(tr("now"), tr("without"), effectRows(workbench_.evaluation()->phase(phase), trial->phase(phase), workbench_.record().item));
+    adjustSize();
+}
+
+void ExcludeDialog::perform() {
+    if (!reason())
+        return;
+    workbench_.perform(std::make_unique<Exclude>(ids_, *reason(), words_->text().trimmed().toStdString()));
+    accept();
+}
+
+} // namespace spanwright

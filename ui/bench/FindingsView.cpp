@@ -1,0 +1,132 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "ui/bench/FindingsView.h"
+
+#include "ui/look/Look.h"
+#include "ui/words/Words.h"
+
+#include <QFrame>
+#include <QGridLayout>
+#include <QLabel>
+#include <QPainter>
+#include <QToolButton>
+#include <QVBoxLayout>
+
+namespace spanwright {
+
+namespace {
+
+/// The severity as a shape before the sentence: a filled square, a hollow one, a dot.
+class SeverityMark : public QWidget {
+  public:
+    explicit SeverityMark(Severity severity) : severity_(severity) { setFixedSize(12, QFontMetrics(textFont(TextRole::Small)).height()); }
+
+  protected:
+    void paintEvent(QPaintEvent*) override {
+        QPainter painter(this);
+        painter.setRenderHint(QPainter::Antialiasing);
+        const QColor colour = severity_ == Severity::Note ? scheme().quiet : scheme().warning;
+        const QPointF middle(4.5, height() / 2.0);
+        painter.setPen(QPen(colour, 1.4));
+        painter.setBrush(severity_ == Severity::Attention ? QBrush(Qt::NoBrush) : QBrush(colour));
+        if (severity_ == Severity::Note)
+            painter.drawEllipse(middle, 1.5, 1.5);
+        else
+            painter.drawRect(QRectF(middle - QPointF(3, 3), QSizeF(6, 6)));
+    }
+
+  private:
+    Severity severity_;
+};
+
+QLabel* wrapped(const QString& text, QFont::Weight weight) {
+    auto* made = new QLabel(text);
+    made->setTextFormat(Qt::PlainText);
+    made->setWordWrap(true);
+    QFont font = textFont(TextRole::Small);
+    font.setWeight(weight);
+    made->setFont(font);
+    made->setTextInteractionFlags(Qt::TextSelectableByMouse);
+    return made;
+}
+
+} // namespace
+
+FindingsView::FindingsView(QWidget* parent) : QScrollArea(parent) {
+    setObjectName(QStringLiteral("findings"));
+    setAccessibleName(tr("Findings"));
+    setFrameShape(QFrame::NoFrame);
+    setWidgetResizable(true);
+    setHorizontalScrollBarPolicy(Qt::ScrollBarAlwaysOff);
+    setFocusPolicy(Qt::NoFocus);
+    auto* inside = new QWidget;
+    list_ = new QVBoxLayout(inside);
+    list_->setContentsMargins(0, 0, space::half, 0);
+    list_->setSpacing(3);
+    setWidget(inside);
+    viewport()->setAutoFillBackground(false);
+    inside->setAutoFillBackground(false);
+}
+
+void FindingsView::setFindings(std::vector<Finding> findings, const Record& record, const QString& whenNone) {
+    while (QLayoutItem* item = list_->takeAt(0)) {
+        if (item->widget())
+            item->widget()->deleteLater();
+        delete item;
+    }
+    findings_ = std::move(findings);
+    for (const Finding& finding : findings_)
+        add(finding, record);
+    if (findings_.empty()) {
+        QLabel* none = wrapped(whenNone, QFont::Normal);
+        none->setForegroundRole(inkRole::quiet);
+        list_->addWidget(none);
+    }
+    list_->addStretch(1);
+}
+
+void FindingsView::add(const Finding& finding, const Record& record) {
+    const FindingWords words = findingWords(finding, record);
+    auto* entry = new QWidget;
+    auto* lines = new QGridLayout(entry);
+    lines->setContentsMargins(0, 0, 0, 0);
+    lines->setHorizontalSpacing(0);
+    lines->setVerticalSpacing(1);
+    lines->setColumnStretch(1, 1);
+    lines->addWidget(new SeverityMark(finding.severity), 0, 0, Qt::AlignTop);
+    lines->addWidget(wrapped(words.sentence, QFont::DemiBold), 0, 1);
+    if (!words.figures.isEmpty()) {
+        QLabel* figures = wrapped(words.figures, QFont::Normal);
+        figures->setForegroundRole(inkRole::quiet);
+        lines->addWidget(figures, 1, 1);
+    }
+    auto* actions = new QHBoxLayout;
+    actions->setSpacing(space::step);
+    const auto link = [&](const QString& text, const QString& name) {
+        auto* button = new QToolButton;
+        button->setObjectName(name);
+        button->setProperty("link", true);
+        button->setFont(textFont(TextRole::Small));
+        button->setText(text);
+        button->setAccessibleName(text + QStringLiteral(": ") + words.sentence);
+        button->setStyleSheet(QStringLiteral("QToolButton { padding: 1px 0px; }"));
+        button->setCursor(Qt::PointingHandCursor);
+        actions->addWidget(button);
+        return button;
+    };
+    if (!words.remedy.isEmpty())
+        connect(link(words.remedy, QStringLiteral("remedy")), &QToolButton::clicked, this, [this, finding] { emit remedyChosen(finding); });
+    if (!finding.rows.empty() && finding.remedy != Remedy::SeeReadings)
+        connect(link(tr("Show"), QStringLiteral("showReadings")), &QToolButton::clicked, this, [this, finding] { emit readingsChosen(finding.rows); });
+    actions->addStretch(1);
+    lines->addLayout(actions, 2, 1);
+    list_->addWidget(entry);
+    auto* rule = new QFrame;
+    rule->setFrameShape(QFrame::HLine);
+    rule->setForegroundRole(QPalette::Mid);
+    rule->setFixedHeight(1);
+    rule->setStyleSheet(QStringLiteral("color: palette(mid); background: palette(mid); border: none;"));
+    list_->addWidget(rule);
+    list_->addSpacing(3);
+}
+
+} // namespace spanwright

@@ -1,0 +1,340 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "ui/bench/ReadingsTable.h"
+
+#include "ui/bench/AmendDialog.h"
+#include "ui/bench/NumberEdit.h"
+#include "ui/bench/PastedBlock.h"
+#include "ui/bench/ReadingsDelegate.h"
+#include "ui/commands/ReadingCommands.h"
+#include "ui/look/Look.h"
+#include "ui/look/NumberText.h"
+#include "ui/words/Words.h"
+
+#include <QApplication>
+#include <QClipboard>
+#include <QHeaderView>
+#include <QKeyEvent>
+#include <QLabel>
+#include <QMenu>
+#include <QScrollBar>
+
+#include <algorithm>
+
+namespace spanwright {
+
+ReadingsTable::ReadingsTable(Workbench& workbench, QWidget* parent)
+    : QTableView(parent), workbench_(workbench), model_(new ReadingsModel(workbench, this)), delegate_(new ReadingsDelegate(this)),
+      words_(new QLabel(viewport())) {
+    setObjectName(QStringLiteral("readingsTable"));
+    setAccessibleName(tr("Readings"));
+    setModel(model_);
+    setItemDelegate(delegate_);
+    setFrameShape(QFrame::NoFrame);
+    setStyleSheet(QStringLiteral("QTableView { border: none; }"));
+    setShowGrid(false);
+    setWordWrap(false);
+    setCornerButtonEnabled(false);
+    setTabKeyNavigation(false);
+    setSelectionBehavior(SelectRows);
+    setSelectionMode(ExtendedSelection);
+    setEditTriggers(DoubleClicked | EditKeyPressed | AnyKeyPressed);
+    setHorizontalScrollBarPolicy(Qt::ScrollBarAlwaysOff);
+    setVerticalScrollMode(ScrollPerPixel);
+    verticalHeader()->hide();
+    verticalHeader()->setSectionResizeMode(QHeaderView::Fixed);
+    verticalHeader()->setDefaultSectionSize(QFontMetrics(textFont(TextRole::Body)).height() + 6);
+    horizontalHeader()->setHighlightSections(false);
+    horizontalHeader()->setMinimumSectionSize(20);
+    horizontalHeader()->setSectionResizeMode(QHeaderView::Fixed);
+    horizontalHeader()->setFont(textFont(TextRole::Small));
+    horizontalHeader()->setStyleSheet(QStringLiteral("QHeaderView::section { padding: 4px 5px; }"));
+    words_->setObjectName(QStringLiteral("refusal"));
+    words_->setTextFormat(Qt::PlainText);
+    words_->setWordWrap(true);
+    words_->setAutoFillBackground(true);
+    words_->setForegroundRole(inkRole::warning);
+    words_->setFont(textFont(TextRole::Small));
+    words_->setMargin(6);
+    words_->hide();
+    connect(delegate_, &ReadingsDelegate::typed, this, &ReadingsTable::accept);
+    connect(delegate_, &ReadingsDelegate::refused, this, [this](NumberEdit* editor, const Error& error) { say(errorText(error), editor->geometry()); });
+    connect(delegate_, &ReadingsDelegate::editing, this, [this](NumberEdit* editor) {
+        silence();
+        connect(editor, &QLineEdit::textEdited, this, &ReadingsTable::silence);
+        connect(editor, &QObject::destroyed, this, &ReadingsTable::silence);
+    });
+    connect(&workbench_, &Workbench::selectionChanged, this, &ReadingsTable::showSelection);
+    connect(model_, &QAbstractItemModel::headerDataChanged, this, &ReadingsTable::fitColumns);
+    fitColumns();
+}
+
+QString ReadingsTable::refusal() const {
+    return words_->isVisibleTo(viewport()) ? words_->text() : QString();
+}
+
+void ReadingsTable::typeNext() {
+    const QModelIndex next = model_->nextCell();
+    setCurrentIndex(next);
+    scrollTo(next);
+    edit(next);
+}
+
+void ReadingsTable::goOn(const QModelIndex& from) {
+    const QModelIndex beside = from.siblingAtColumn(ReadingsModel::IndicationValue);
+    const bool indicationNext = from.column() == ReadingsModel::ReferenceValue && beside.data().toString().isEmpty();
+    const QModelIndex next = from.column() == ReadingsModel::SetPoint ? from.siblingAtColumn(ReadingsModel::ReferenceValue)
+                             : indicationNext                         ? beside
+                                                                      : model_->nextCell();
+    setCurrentIndex(next);
+    scrollTo(next);
+    edit(next);
+}
+
+void ReadingsTable::accept(const QModelIndex& index, const Decimal& value, bool onward) {
+    const auto column = ReadingsModel::numberColumn(index.column());
+    if (!column)
+        return;
+    const std::optional<ReadingId> id = model_->idAt(index.row());
+    if (!id) {
+        const int row = index.row();
+        const ReadingId made = workbench_.record().nextReadingId;
+        enterNew(row, *column, value);
+        if (onward && model_->rowOf(made) >= 0)
+            goOn(model_->index(model_->rowOf(made), index.column()));
+        return;
+    }
+    const auto before = workbench_.record().readings->number(*column).at(workbench_.record().readings->indexOf(*id));
+    if (before && *before != value) {
+        amend(*id, *column, *before, value, onward);
+        return;
+    }
+    if (!before)
+        workbench_.perform(std::make_unique<AmendValue>(*id, *column, value));
+    if (onward)
+        goOn(model_->index(model_->rowOf(*id), index.column()));
+}
+
+void ReadingsTable::enterNew(int row, NumberColumn column, const Decimal& value) {
+    Reading reading = model_->readingAt(row);
+    if (column == NumberColumn::SetPoint)
+        reading.setPoint = value;
+    else if (column == NumberColumn::Reference)
+        reading.reference = value;
+    else
+        reading.indication = value;
+    workbench_.perform(std::make_unique<AddReadings>(std::vector<Reading>{reading}));
+}
+
+void ReadingsTable::amend(ReadingId id, NumberColumn column, const Decimal& before, const Decimal& after, bool onward) {
+    const int shown = column == NumberColumn::SetPoint    ? ReadingsModel::SetPoint
+                      : column == NumberColumn::Reference ? ReadingsModel::ReferenceValue
+                                                          : ReadingsModel::IndicationValue;
+    const QString what = tr("Reading %1, %2").arg(id).arg(model_->headerData(shown, Qt::Horizontal, Qt::DisplayRole).toString());
+    auto* dialog = new AmendDialog(what, typedText(before), typedText(after), this);
+    connect(dialog, &QDialog::accepted, this, [=, this] {
+        workbench_.perform(std::make_unique<AmendValue>(id, column, after, dialog->reason().toStdString()));
+        setFocus();
+        if (onward)
+            goOn(model_->index(model_->rowOf(id), shown));
+    });
+    connect(dialog, &QDialog::rejected, this, [this] { setFocus(); });
+    dialog->open();
+}
+
+void ReadingsTable::paste(const QString& text) {
+    if (workbench_.readOnly() || text.trimmed().isEmpty())
+        return;
+    const PastedBlock block = readPasted(text);
+    const QModelIndex start = currentIndex().isValid() ? currentIndex() : model_->nextCell();
+    if (!block.refused.empty()) {
+        QStringList lines;
+        for (const PastedBlock::Refused& cell : block.refused) {
+            if (lines.size() == 4) {
+                lines << tr("… and %1 more.").arg(block.refused.size() - 4);
+                break;
+            }
+            lines << tr("Line %1, cell %2: %3").arg(cell.row).arg(cell.column).arg(errorText(cell.error));
+        }
+        say(tr("Nothing was pasted.") + QLatin1Char('\n') + lines.join(QLatin1Char('\n')), visualRect(start));
+        return;
+    }
+    const int first = ReadingsModel::numberColumn(start.column()) ? start.column() : static_cast<int>(ReadingsModel::ReferenceValue);
+    if (first + block.width() - 1 > ReadingsModel::IndicationValue) {
+        say(tr("Nothing was pasted. The block is %1 columns wide and does not fit from here: start at an earlier column.").arg(block.width()), visualRect(start));
+        return;
+    }
+    std::vector<Reading> rows;
+    for (std::size_t i = 0; i < block.rows.size(); ++i) {
+        const int row = start.row() + static_cast<int>(i);
+        Reading reading = model_->readingAt(row);
+        for (int c = 0; c < block.width(); ++c) {
+            const Decimal& value = block.rows[i][static_cast<std::size_t>(c)];
+            const NumberColumn column = *ReadingsModel::numberColumn(first + c);
+            (column == NumberColumn::SetPoint ? reading.setPoint : column == NumberColumn::Reference ? reading.reference : reading.indication) = value;
+        }
+        rows.push_back(std::move(reading));
+    }
+    workbench_.perform(std::make_unique<PutReadings>(tr("paste readings"), std::move(rows), tr("pasted").toStdString()));
+}
+
+QString ReadingsTable::selectedText() const {
+    QString text;
+    QList<int> rows;
+    for (const QModelIndex& index : selectionModel()->selectedRows())
+        rows << index.row();
+    std::sort(rows.begin(), rows.end());
+    for (const int row : rows) {
+        QStringList cells;
+        for (int column = 0; column < ReadingsModel::ColumnCount; ++column)
+            cells << model_->index(row, column).data(column == ReadingsModel::DirectionMark ? Qt::AccessibleTextRole : Qt::DisplayRole).toString().replace(QChar(0x2212), QLatin1Char('-'));
+        text += cells.join(QLatin1Char('\t')) + QLatin1Char('\n');
+    }
+    return text;
+}
+
+void ReadingsTable::keyPressEvent(QKeyEvent* event) {
+    silence();
+    if (event->matches(QKeySequence::Paste))
+        paste(QApplication::clipboard()->text());
+    else if (event->matches(QKeySequence::Copy))
+        QApplication::clipboard()->setText(selectedText());
+    else if (event->key() == Qt::Key_X || event->key() == Qt::Key_Delete)
+        emit excludeRequested();
+    else if (event->key() == Qt::Key_R)
+        emit readmitRequested();
+    else if (event->key() == Qt::Key_Return || event->key() == Qt::Key_Enter)
+        model_->flags(currentIndex()).testFlag(Qt::ItemIsEditable) ? static_cast<void>(edit(currentIndex(), EditKeyPressed, event)) : typeNext();
+    else
+        QTableView::keyPressEvent(event);
+}
+
+/// A cell with something refused in it is not left by a click.
+void ReadingsTable::mousePressEvent(QMouseEvent* event) {
+    for (const NumberEdit* editor : viewport()->findChildren<NumberEdit*>())
+        if (editor->isVisible() && editor->isModified() && !editor->number()) {
+            say(errorText(editor->number().error()), editor->geometry());
+            return;
+        }
+    silence();
+    QTableView::mousePressEvent(event);
+}
+
+void ReadingsTable::place(const std::function<void(Place&)>& edit) {
+    const auto& chosen = workbench_.selection();
+    Place place;
+    edit(place);
+    if (!chosen.empty())
+        workbench_.perform(std::make_unique<PlaceReadings>(std::vector<ReadingId>(chosen.begin(), chosen.end()), place));
+}
+
+void ReadingsTable::contextMenuEvent(QContextMenuEvent* event) {
+    auto* menu = new QMenu(this);
+    menu->setAttribute(Qt::WA_DeleteOnClose);
+    const bool any = !workbench_.selection().empty();
+    menu->addAction(tr("Exclude…"), this, &ReadingsTable::excludeRequested)->setEnabled(any);
+    menu->addAction(tr("Take back in"), this, &ReadingsTable::readmitRequested)->setEnabled(any);
+    menu->addSeparator();
+    for (const Direction direction : {Direction::Rising, Direction::Falling, Direction::Unknown})
+        menu->addAction(tr("Direction: %1").arg(directionText(direction)), this, [=, this] { place([=](Place& p) { p.direction = direction; }); })
+            ->setEnabled(any);
+    QMenu* runs = menu->addMenu(tr("Run"));
+    for (int run = 1; run <= 6; ++run)
+        runs->addAction(tr("run %1").arg(run), this, [=, this] { place([=](Place& p) { p.run = run; }); });
+    runs->setEnabled(any);
+    menu->addSeparator();
+    menu->addAction(tr("Copy"), this, [this] { QApplication::clipboard()->setText(selectedText()); })->setEnabled(any);
+    menu->addAction(tr("Paste"), this, [this] { paste(QApplication::clipboard()->text()); });
+    menu->popup(event->globalPos());
+}
+
+/// The column of the set point and that of the state give way where the table is narrow.
+void ReadingsTable::fitColumns() {
+    const QFontMetrics metrics(textFont(TextRole::Body));
+    const int digit = metrics.horizontalAdvance(QLatin1Char('0'));
+    const QFontMetrics small(textFont(TextRole::Small));
+    const int number = digit * 3 + 14, run = digit * 2 + 18, mark = 22;
+    const int room = viewport()->width();
+    int value = digit * 8 + 14;
+    for (const int column : {ReadingsModel::ReferenceValue, ReadingsModel::IndicationValue, ReadingsModel::ResidualValue})
+        value = std::max(value, std::min(small.horizontalAdvance(model_->headerData(column, Qt::Horizontal, Qt::DisplayRole).toString()) + 12, digit * 14));
+    const int setPoint = digit * 6 + 28, state = digit * 8 + 16;
+    const int least = number + run + mark + 3 * value;
+    const bool withSetPoint = room >= least + setPoint;
+    const bool withState = room >= least + setPoint + state;
+    setColumnHidden(ReadingsModel::SetPoint, !withSetPoint);
+    setColumnHidden(ReadingsModel::State, !withState);
+    const int spare = std::max(0, room - least - (withSetPoint ? setPoint : 0) - (withState ? state : 0));
+    const int parts = 3 + (withSetPoint ? 1 : 0);
+    setColumnWidth(ReadingsModel::Number, number);
+    setColumnWidth(ReadingsModel::Run, run);
+    setColumnWidth(ReadingsModel::DirectionMark, mark);
+    setColumnWidth(ReadingsModel::SetPoint, setPoint + spare / parts);
+    for (const int column : {ReadingsModel::ReferenceValue, ReadingsModel::IndicationValue, ReadingsModel::ResidualValue})
+        setColumnWidth(column, value + spare / parts);
+    setColumnWidth(ReadingsModel::State, state);
+}
+
+void ReadingsTable::resizeEvent(QResizeEvent* event) {
+    QTableView::resizeEvent(event);
+    fitColumns();
+}
+
+void ReadingsTable::scrollContentsBy(int dx, int dy) {
+    QTableView::scrollContentsBy(dx, dy);
+    silence();
+}
+
+void ReadingsTable::selectionChanged(const QItemSelection& now, const QItemSelection& before) {
+    QTableView::selectionChanged(now, before);
+    if (following_)
+        return;
+    std::set<ReadingId> ids;
+    for (const QItemSelectionRange& range : selectionModel()->selection())
+        for (int row = range.top(); row <= range.bottom(); ++row)
+            if (const auto id = model_->idAt(row))
+                ids.insert(ids.end(), *id);
+    following_ = true;
+    workbench_.select(std::move(ids));
+    following_ = false;
+}
+
+void ReadingsTable::showSelection() {
+    if (following_)
+        return;
+    QItemSelection selection;
+    int first = -1;
+    for (const ReadingId id : workbench_.selection()) {
+        const int row = model_->rowOf(id);
+        if (row < 0)
+            continue;
+        first = first < 0 ? row : first;
+        if (!selection.isEmpty() && selection.back().bottom() == row - 1)
+            selection.back() = QItemSelectionRange(selection.back().topLeft(), model_->index(row, ReadingsModel::ColumnCount - 1));
+        else
+            selection.append(QItemSelectionRange(model_->index(row, 0), model_->index(row, ReadingsModel::ColumnCount - 1)));
+    }
+    following_ = true;
+    selectionModel()->select(selection, QItemSelectionModel::ClearAndSelect | QItemSelectionModel::Rows);
+    if (first >= 0) {
+        selectionModel()->setCurrentIndex(model_->index(first, ReadingsModel::IndicationValue), QItemSelectionModel::NoUpdate);
+        scrollTo(model_->index(first, ReadingsModel::Number));
+    }
+    following_ = false;
+    viewport()->update();
+}
+
+void ReadingsTable::say(const QString& words, const QRect& under) {
+    words_->setText(words);
+    const int width = viewport()->width() - 16;
+    const int height = words_->heightForWidth(width);
+    const bool below = under.bottom() + 4 + height <= viewport()->height();
+    words_->setGeometry(8, below ? under.bottom() + 3 : std::max(0, under.top() - height - 3), width, height);
+    words_->show();
+    words_->raise();
+}
+
+void ReadingsTable::silence() {
+    words_->hide();
+}
+
+} // namespace spanwright

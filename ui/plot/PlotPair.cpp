@@ -1,0 +1,34 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "ui/plot/PlotPair.h"
+
+#include <algorithm>
+
+namespace spanwright {
+
+PlotPair::PlotPair(LinePlot& line, ResidualPlot& residual, QObject* parent) : QObject(parent), line_(line), residual_(residual) {
+    for (PlotView* plot : std::initializer_list<PlotView*>{&line_, &residual_})
+        connect(plot, &PlotView::leftNeededChanged, this, &PlotPair::alignLeft);
+    connect(&line_, &PlotView::horizontalRangeChanged, this, [this](const AxisRange& range) { follow(residual_, range); });
+    connect(&residual_, &PlotView::horizontalRangeChanged, this, [this](const AxisRange& range) { follow(line_, range); });
+    alignLeft();
+}
+
+void PlotPair::alignLeft() {
+    if (busy_)
+        return;
+    busy_ = true;
+    const double left = std::max({line_.leftNeeded(), residual_.leftNeeded(), 44.0});
+    line_.setLeft(left);
+    residual_.setLeft(left);
+    busy_ = false;
+}
+
+void PlotPair::follow(PlotView& other, const AxisRange& range) {
+    if (busy_ || residual_.view() != ResidualView::Reference)
+        return;
+    busy_ = true;
+    other.showHorizontal(range);
+    busy_ = false;
+}
+
+} // namespace spanwright
