@@ -164,7 +164,7 @@ class ResidualTestsTest : public QObject {
             const Eigen::VectorXd roots = Eigen::SelfAdjointEigenSolver<Eigen::MatrixXd>(rest.transpose() * a * rest).eigenvalues();
             for (const double d : {1.2, 1.9, 2.6}) {
                 double integral = 0;
-                const double h = 2e-3;
+                const double h = 0.02;
                 for (double s = -30; s < 40; s += h) { // u = exp(s)
                     double angle = 0, size = 0;
                     for (const double root : roots) {

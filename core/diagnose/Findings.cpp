@@ -1,0 +1,104 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/diagnose/Findings.h"
+
+#include "core/diagnose/FindingRules.h"
+
+#include <algorithm>
+#include <array>
+#include <cmath>
+
+namespace spanwright {
+namespace {
+
+/// Codes in order of consequence: what makes the result wrong before what makes it uncertain before what is merely worth knowing.
+constexpr std::array order{
+    FindingCode::LackOfFit,       FindingCode::HiddenCurvature, FindingCode::ThroughZeroNotSupported, FindingCode::Outlier,
+    FindingCode::SetPointExcluded, FindingCode::ManyExcluded,   FindingCode::TooFewReadings,          FindingCode::Extrapolation,
+    FindingCode::Hysteresis,      FindingCode::FirstRunDiffers, FindingCode::RunZeroShift,            FindingCode::RunGainChange,
+    FindingCode::ScatterGrows,    FindingCode::Autocorrelated,  FindingCode::Influential,             FindingCode::Straggler,
+    FindingCode::DegreeNotJustified, FindingCode::OutsideBand,  FindingCode::RepeatedReading,         FindingCode::NonNormal,
+    FindingCode::ExcludedReadings};
+
+std::ptrdiff_t rank(FindingCode code) {
+    return std::find(order.begin(), order.end(), code) - order.begin();
+}
+
+} // namespace
+
+const SplitRow* judgedLackOfFit(const VarianceSplit& split) {
+    if (split.lackOfFitAdjusted && split.lackOfFitAdjusted->f)
+        return &*split.lackOfFitAdjusted;
+    if (split.lackOfFit && split.lackOfFit->f)
+        return &*split.lackOfFit;
+    if (split.lackOfFitNaive && split.lackOfFitNaive->f)
+        return &*split.lackOfFitNaive;
+    return nullptr;
+}
+
+ReadingId idOf(const FindingsInput& input, std::size_t index) {
+    return input.record.readings->ids()[input.sample.rows[index]];
+}
+
+std::vector<double> repeatabilityDeviations(const FindingsInput& input) {
+    const Sample& sample = input.sample;
+    const std::size_t n = sample.size();
+    if (!input.residuals || !input.split || !input.split->pureError)
+        return {};
+    struct Cell {
+        double weight = 0, sum = 0;
+        std::size_t n = 0;
+    };
+    std::vector<Cell> cells(3 * sample.groupValue.size());
+    const auto cellOf = [&](std::size_t i) -> Cell& {
+        const auto d = sample.direction.empty() ? std::size_t{0} : static_cast<std::size_t>(sample.direction[i]);
+        return cells[3 * static_cast<std::size_t>(sample.group[i]) + d];
+    };
+    std::vector<double> left = input.residuals->e.high;
+    const std::vector<double>& w = input.residuals->weight.high;
+    if (!sample.run.empty() && !input.split->runs.empty()) {
+        const double middle = (sample.groupValue.front() + sample.groupValue.back()) / 2;
+        std::size_t at = 0;
+        for (std::size_t i = 0; i < n; ++i) {
+            const auto& runs = input.split->runs;
+            if (at >= runs.size() || runs[at].run != sample.run[i])
+                at = static_cast<std::size_t>(std::find_if(runs.begin(), runs.end(), [&](const RunLine& r) { return r.run == sample.run[i]; }) - runs.begin());
+            if (at < runs.size())
+                left[i] -= runs[at].offset + runs[at].slope * (sample.groupValue[static_cast<std::size_t>(sample.group[i])] - middle);
+        }
+    }
+    for (std::size_t i = 0; i < n; ++i) {
+        const double weight = w.empty() ? 1 : w[i];
+        Cell& cell = cellOf(i);
+        cell.weight += weight;
+        cell.sum += weight * left[i];
+        ++cell.n;
+    }
+    for (std::size_t i = 0; i < n; ++i) {
+        const Cell& cell = cellOf(i);
+        left[i] = (left[i] - cell.sum / cell.weight) * (w.empty() ? 1 : std::sqrt(w[i]));
+        // What one mean takes from a cell of few makes its deviations too small by √(1 − 1/n).
+        left[i] = cell.n > 1 ? left[i] / std::sqrt(1 - 1 / static_cast<double>(cell.n)) : 0;
+    }
+    return left;
+}
+
+bool contains(const std::vector<Finding>& found, FindingCode code) {
+    return std::any_of(found.begin(), found.end(), [&](const Finding& finding) { return finding.code == code; });
+}
+
+std::vector<Finding> findings(const FindingsInput& input) {
+    std::vector<Finding> found;
+    if (input.fit && input.residuals) {
+        addFunctionFindings(input, found);
+        addRunFindings(input, found);
+        addReadingFindings(input, found);
+        addScatterFindings(input, found);
+    }
+    addRecordFindings(input, found);
+    std::stable_sort(found.begin(), found.end(), [](const Finding& a, const Finding& b) {
+        return a.severity != b.severity ? a.severity > b.severity : rank(a.code) < rank(b.code);
+    });
+    return found;
+}
+
+} // namespace spanwright

@@ -1,0 +1,207 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/diagnose/FindingRules.h"
+
+#include "core/split/FunctionBasis.h"
+
+#include <boost/math/distributions/fisher_f.hpp>
+#include <boost/math/distributions/students_t.hpp>
+
+#include <algorithm>
+#include <cmath>
+
+namespace spanwright {
+namespace {
+
+constexpr double certain = 0.01, doubtful = 0.05;
+
+/// The next richer function that the set points can carry; the same function when there is none.
+FunctionChoice richer(const FunctionChoice& function, std::size_t setPoints) {
+    FunctionChoice next = function;
+    std::size_t terms = 3;
+    switch (function.family) {
+    case FunctionFamily::Constant:
+    case FunctionFamily::Proportional:
+        next = {FunctionFamily::Line, 0};
+        terms = 2;
+        break;
+    case FunctionFamily::Line:
+        next = {FunctionFamily::Polynomial, 2};
+        break;
+    case FunctionFamily::Polynomial:
+    case FunctionFamily::PolynomialNoConstant:
+        next.order = function.order + 1;
+        terms = static_cast<std::size_t>(next.order) + 1;
+        break;
+    default:
+        break;
+    }
+    return setPoints > terms ? next : function;
+}
+
+/// The readings at the set point whose mean lies furthest from the function, in standard deviations of a mean.
+struct WorstPoint {
+    std::size_t group = 0;
+    double mean = 0, setPoint = 0;
+};
+
+WorstPoint worstPoint(const VarianceSplit& split) {
+    WorstPoint worst;
+    double most = -1;
+    for (std::size_t i = 0; i < split.setPoints.size(); ++i) {
+        const SetPointMeans& point = split.setPoints[i];
+        const double size = std::abs(point.mean) * std::sqrt(static_cast<double>(point.n));
+        if (size > most) {
+            most = size;
+            worst = {i, point.mean, point.setPoint};
+        }
+    }
+    return worst;
+}
+
+void lackOfFit(const FindingsInput& input, std::vector<Finding>& found) {
+    const SplitRow* judged = input.split ? judgedLackOfFit(*input.split) : nullptr;
+    if (!judged || !(*judged->p < doubtful))
+        return;
+    const WorstPoint worst = worstPoint(*input.split);
+    Finding finding;
+    finding.code = FindingCode::LackOfFit;
+    finding.severity = *judged->p < certain ? Severity::Serious : Severity::Attention;
+    finding.figures = {{"f", *judged->f}, {"p", *judged->p}, {"value", worst.mean}, {"set_point", worst.setPoint}};
+    for (std::size_t i = 0; i < input.sample.size() && finding.rows.size() < mostRowsNamed; ++i)
+        if (static_cast<std::size_t>(input.sample.group[i]) < input.sample.groupValue.size() &&
+            input.sample.groupValue[static_cast<std::size_t>(input.sample.group[i])] == worst.setPoint)
+            finding.rows.push_back(idOf(input, i));
+    const FunctionChoice next = richer(input.fit->function, input.split->setPoints.size());
+    if (!(next == input.fit->function)) {
+        finding.remedy = Remedy::CompareFunction;
+        finding.suggestion = next;
+    } else {
+        finding.remedy = Remedy::SeeReadings;
+    }
+    found.push_back(finding);
+
+    const auto& naive = input.split->lackOfFitNaive;
+    if (input.split->against == SplitPart::Repeatability && naive && naive->p && *naive->p >= doubtful && judged != &*naive) {
+        Finding hidden = finding;
+        hidden.code = FindingCode::HiddenCurvature;
+        hidden.severity = Severity::Attention;
+        hidden.figures = {{"f_naive", *naive->f}, {"p_naive", *naive->p}, {"f", *judged->f}, {"p", *judged->p}};
+        found.push_back(hidden);
+    }
+}
+
+void highestTerm(const FindingsInput& input, std::vector<Finding>& found) {
+    const Fit& fit = *input.fit;
+    const bool polynomial = fit.function.family == FunctionFamily::Polynomial || fit.function.family == FunctionFamily::PolynomialNoConstant;
+    if (!polynomial || fit.function.order < 2 || fit.degreesOfFreedom < 1 || fit.covarianceScale == CovarianceScale::Stated)
+        return;
+    const Coefficient& last = fit.coefficients.back();
+    if (!(last.standardUncertainty > 0))
+        return;
+    const double t = last.value / last.standardUncertainty;
+    const double p = 2 * boost::math::cdf(boost::math::complement(boost::math::students_t(fit.degreesOfFreedom), std::abs(t)));
+    // Without the term the residual sum of squares is larger by t² s², over one degree of freedom more. With readings rounded to
+    // a coarse step the rounding alone can look like a term, so a gain below the standard uncertainty of the step does not count.
+    const double before = std::sqrt((fit.residualSs + t * t * fit.residualSd * fit.residualSd) / (fit.degreesOfFreedom + 1));
+    const auto& resolution = input.record.item.resolution;
+    const bool coarse = resolution && fit.weights == Weights::Equal && fit.direction == FitDirection::Indication &&
+                        before - fit.residualSd < resolution->toDouble() / std::sqrt(12.0) && before < resolution->toDouble();
+    if (p < doubtful && !coarse)
+        return;
+    Finding finding;
+    finding.code = FindingCode::DegreeNotJustified;
+    finding.severity = Severity::Attention;
+    finding.figures = {{"t", t}, {"p", p}};
+    finding.remedy = Remedy::CompareFunction;
+    finding.suggestion = fit.function;
+    --finding.suggestion.order;
+    if (finding.suggestion.order == 1)
+        finding.suggestion = {fit.function.family == FunctionFamily::Polynomial ? FunctionFamily::Line : FunctionFamily::Proportional, 0};
+    found.push_back(finding);
+}
+
+/// F of adding a constant to a function without one: what the part of 1 that the function does not span takes from the residuals.
+void throughZero(const FindingsInput& input, std::vector<Finding>& found) {
+    const Fit& fit = *input.fit;
+    const bool noConstant = fit.function.family == FunctionFamily::Proportional || fit.function.family == FunctionFamily::PolynomialNoConstant;
+    if (!noConstant || fit.degreesOfFreedom < 2)
+        return;
+    const PairColumn& abscissa = fit.direction == FitDirection::Indication ? input.sample.reference : input.sample.indication;
+    const FunctionBasis basis = functionBasis(fit.function, abscissa.high);
+    const std::size_t n = basis.rows;
+    const auto root = [&](std::size_t i) { return input.residuals->weight.empty() ? 1 : std::sqrt(input.residuals->weight.high[i]); };
+    std::vector<std::vector<double>> columns;
+    for (std::size_t j = 0; j <= basis.terms; ++j) {
+        std::vector<double> v(n);
+        for (std::size_t i = 0; i < n; ++i)
+            v[i] = root(i) * (j < basis.terms ? basis.column(j)[i] : 1.0);
+        for (int pass = 0; pass < 2; ++pass)
+            for (const auto& other : columns) {
+                double dot = 0, size = 0;
+                for (std::size_t i = 0; i < n; ++i) {
+                    dot += other[i] * v[i];
+                    size += other[i] * other[i];
+                }
+                for (std::size_t i = 0; size > 0 && i < n; ++i)
+                    v[i] -= dot / size * other[i];
+            }
+        columns.push_back(std::move(v));
+    }
+    double product = 0, size = 0;
+    for (std::size_t i = 0; i < n; ++i) {
+        product += columns.back()[i] * root(i) * input.residuals->e.high[i];
+        size += columns.back()[i] * columns.back()[i];
+    }
+    const double gain = product * product / size, rest = fit.residualSs - gain;
+    if (!(size > 1e-12 * static_cast<double>(n)) || !(rest > 0))
+        return;
+    const double f = gain / (rest / (fit.degreesOfFreedom - 1));
+    const double p = boost::math::cdf(boost::math::complement(boost::math::fisher_f(1, fit.degreesOfFreedom - 1), f));
+    if (!(p < certain))
+        return;
+    Finding finding;
+    finding.code = FindingCode::ThroughZeroNotSupported;
+    finding.severity = Severity::Serious;
+    finding.figures = {{"f", f}, {"p", p}, {"value", product / size}};
+    finding.remedy = Remedy::CompareFunction;
+    finding.suggestion = fit.function.family == FunctionFamily::Proportional ? FunctionChoice{FunctionFamily::Line, 0}
+                                                                              : FunctionChoice{FunctionFamily::Polynomial, fit.function.order};
+    found.push_back(finding);
+}
+
+void extrapolation(const FindingsInput& input, std::vector<Finding>& found) {
+    const Fit& fit = *input.fit;
+    const Choices& choices = input.record.choices;
+    Finding finding;
+    const auto outside = [&](double value, double a, double b) {
+        const auto [low, high] = std::minmax(a, b);
+        const double slack = 1e-9 * (high - low);
+        if (value < low - slack || value > high + slack)
+            finding.figures.push_back({"asked_for", value});
+    };
+    const bool ofReference = fit.direction == FitDirection::Indication;
+    const double first = fit.curve ? fit.curve->value(fit.low) : 0, last = fit.curve ? fit.curve->value(fit.high) : 0;
+    if (fit.function.family != FunctionFamily::Constant) {
+        for (const Decimal& x : choices.at)
+            ofReference ? outside(x.toDouble(), fit.low, fit.high) : outside(x.toDouble(), first, last);
+        for (const Decimal& y : choices.read)
+            ofReference ? outside(y.toDouble(), first, last) : outside(y.toDouble(), fit.low, fit.high);
+    }
+    if (finding.figures.empty())
+        return;
+    finding.code = FindingCode::Extrapolation;
+    finding.severity = Severity::Attention;
+    finding.remedy = Remedy::TakeMoreReadings;
+    found.push_back(finding);
+}
+
+} // namespace
+
+void addFunctionFindings(const FindingsInput& input, std::vector<Finding>& found) {
+    lackOfFit(input, found);
+    highestTerm(input, found);
+    throughZero(input, found);
+    extrapolation(input, found);
+}
+
+} // namespace spanwright

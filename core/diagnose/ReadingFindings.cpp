@@ -1,0 +1,155 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/diagnose/FindingRules.h"
+
+#include "core/diagnose/Outliers.h"
+#include "core/diagnose/ResidualColumn.h"
+
+#include <boost/math/distributions/fisher_f.hpp>
+
+#include <algorithm>
+#include <cmath>
+#include <map>
+
+namespace spanwright {
+namespace {
+
+/// Stragglers at 5 % and outliers at 1 % (ISO 5725-2:2019, 8.3.4), among the residuals and among the deviations from set point,
+/// direction and run, where a gap between rising and falling hides nothing. A technical cause is to be looked for; nothing is removed.
+void outlying(const FindingsInput& input, std::vector<Finding>& found) {
+    const std::size_t n = input.sample.size();
+    const int most = static_cast<int>(std::clamp<std::size_t>(n / 10, 1, 10));
+    struct Mark {
+        double r = 0, lambda = 0;
+        bool outlier = false;
+    };
+    std::map<std::size_t, Mark> marks;
+    const auto look = [&](const std::vector<double>& u) {
+        if (u.size() < 5)
+            return;
+        const std::vector<ExtremeTrial> trials = extremeTrials(std::span<const double>(u), most, 0.05);
+        const std::vector<ExtremeTrial> strict = extremeTrials(std::span<const double>(u), most, 0.01);
+        const int stragglers = outlierCount(trials), outliers = outlierCount(strict);
+        for (int k = 0; k < stragglers; ++k) {
+            Mark& mark = marks[trials[static_cast<std::size_t>(k)].index];
+            const bool outlier = k < outliers;
+            if (mark.r > 0 && !outlier)
+                continue;
+            const ExtremeTrial& trial = outlier ? strict[static_cast<std::size_t>(k)] : trials[static_cast<std::size_t>(k)];
+            mark = {trial.r, trial.lambda, outlier};
+        }
+    };
+    look(weightedResiduals<double>(*input.residuals));
+    look(repeatabilityDeviations(input));
+    for (const bool outlier : {true, false}) {
+        Finding finding;
+        finding.code = outlier ? FindingCode::Outlier : FindingCode::Straggler;
+        finding.severity = outlier ? Severity::Serious : Severity::Attention;
+        finding.remedy = Remedy::SeeReadings;
+        Mark worst;
+        for (const auto& [index, mark] : marks)
+            if (mark.outlier == outlier) {
+                finding.rows.push_back(idOf(input, index));
+                if (mark.r > worst.r)
+                    worst = mark;
+            }
+        if (finding.rows.empty())
+            continue;
+        finding.figures = {{"count", static_cast<double>(finding.rows.size())}, {"r", worst.r}, {"critical", worst.lambda}};
+        found.push_back(finding);
+    }
+}
+
+/// Cook's distance beyond the median of F with p and n − p degrees of freedom: leaving the reading out would move the coefficients
+/// to the edge of their 50 % region (Cook, Technometrics 19 (1977) 15).
+void influential(const FindingsInput& input, std::vector<Finding>& found) {
+    const Fit& fit = *input.fit;
+    if (!input.influence || fit.degreesOfFreedom < 2)
+        return;
+    const boost::math::fisher_f fisher(static_cast<double>(fit.terms()), fit.degreesOfFreedom);
+    const double limit = boost::math::quantile(fisher, 0.5);
+    Finding finding;
+    finding.code = FindingCode::Influential;
+    finding.severity = Severity::Attention;
+    finding.remedy = Remedy::SeeReadings;
+    double most = 0;
+    for (std::size_t i = 0; i < input.influence->cook.size() && finding.rows.size() < mostRowsNamed; ++i)
+        if (input.influence->cook[i] > limit) {
+            finding.rows.push_back(idOf(input, i));
+            most = std::max(most, input.influence->cook[i]);
+        }
+    if (finding.rows.empty())
+        return;
+    finding.figures = {{"count", static_cast<double>(finding.rows.size())}, {"cook", most}, {"limit", limit}};
+    found.push_back(finding);
+}
+
+/// Readings outside ŷ ± t √(σ²(1 + h)). A share of 1 − coverage is to be expected there, so few are no finding unless one lies
+/// half as far again.
+void outsideBand(const FindingsInput& input, std::vector<Finding>& found) {
+    const Fit& fit = *input.fit;
+    const Residuals& residuals = *input.residuals;
+    const double scale = fit.covarianceScale == CovarianceScale::Stated && fit.weights != Weights::Equal ? 1 : fit.residualSd;
+    if (fit.degreesOfFreedom < 1 || !(scale > 0) || residuals.leverage.size() != residuals.e.size())
+        return;
+    Finding finding;
+    finding.code = FindingCode::OutsideBand;
+    finding.remedy = Remedy::SeeReadings;
+    double worst = 0;
+    std::size_t count = 0;
+    for (std::size_t i = 0; i < residuals.e.size(); ++i) {
+        const double root = residuals.weight.empty() ? 1 : std::sqrt(residuals.weight.high[i]);
+        const double ratio = std::abs(residuals.e.high[i]) * root / (fit.coverageFactor * scale * std::sqrt(1 + residuals.leverage[i]));
+        if (!(ratio > 1))
+            continue;
+        worst = std::max(worst, ratio);
+        ++count;
+        if (finding.rows.size() < mostRowsNamed)
+            finding.rows.push_back(idOf(input, i));
+    }
+    const double expected = static_cast<double>(residuals.e.size()) * (1 - fit.coverage);
+    const bool many = static_cast<double>(count) > expected + 2 * std::sqrt(expected);
+    if (count == 0 || (!many && worst < 1.5))
+        return;
+    finding.severity = many ? Severity::Attention : Severity::Note;
+    finding.figures = {{"count", static_cast<double>(count)}, {"expected", expected}};
+    found.push_back(finding);
+}
+
+/// A reading that repeats both numbers of the one before as typed, where references otherwise wander, so that the same one twice is
+/// rather a habit of the hand than the instrument.
+void repeatedReadings(const FindingsInput& input, std::vector<Finding>& found) {
+    const Sample& sample = input.sample;
+    const ReadingColumns& readings = *input.record.readings;
+    if (sample.size() > 100'000)
+        return;
+    bool wander = false;
+    Finding finding;
+    for (std::size_t i = 1; i < sample.size(); ++i) {
+        if (sample.group[i] != sample.group[i - 1] || sample.rows[i] != sample.rows[i - 1] + 1)
+            continue;
+        const std::size_t row = sample.rows[i];
+        const auto same = [&](const DecimalColumn& column) { return column.has(row) && column.has(row - 1) && column.at(row) == column.at(row - 1); };
+        if (!same(readings.reference()))
+            wander = true;
+        else if (same(readings.indication()) && readings.reference().at(row) != readings.setPoint().at(row))
+            finding.rows.push_back(idOf(input, i));
+    }
+    if (finding.rows.empty() || !wander)
+        return;
+    finding.code = FindingCode::RepeatedReading;
+    finding.severity = Severity::Note;
+    finding.remedy = Remedy::SeeReadings;
+    finding.figures = {{"count", static_cast<double>(finding.rows.size())}};
+    found.push_back(finding);
+}
+
+} // namespace
+
+void addReadingFindings(const FindingsInput& input, std::vector<Finding>& found) {
+    outlying(input, found);
+    influential(input, found);
+    outsideBand(input, found);
+    repeatedReadings(input, found);
+}
+
+} // namespace spanwright

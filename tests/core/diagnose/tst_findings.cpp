@@ -1,0 +1,281 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/diagnose/Findings.h"
+#include "core/fit/fitFunction.h"
+#include "tests/support/Paths.h"
+#include "tests/support/PublishedSet.h"
+#include "tests/support/SampleRecord.h"
+
+#include <QFile>
+#include <QTest>
+
+#include <algorithm>
+#include <cmath>
+#include <random>
+#include <set>
+
+using namespace spanwright;
+using namespace spanwright::test;
+
+namespace {
+
+std::vector<Finding> findingsOf(const Record& record, Phase phase = Phase::AsFound) {
+    const Sample sample = makeSample(record, phase);
+    const auto outcome = fitFunction(sample, record.choices);
+    FindingsInput input{record, phase, sample};
+    if (!outcome)
+        return findings(input);
+    const VarianceSplit split = splitVariance(sample, outcome->residuals, outcome->fit);
+    const Diagnostics diagnostics = diagnose(sample, outcome->residuals, outcome->fit, {record.readings->ids(), 0, 0.05});
+    const auto performance = processFigures(sample, record.item);
+    const Influence influenced = influence(outcome->residuals, static_cast<int>(outcome->fit.terms()));
+    input.fit = &outcome->fit;
+    input.residuals = &outcome->residuals;
+    input.split = &split;
+    input.diagnostics = &diagnostics;
+    input.performance = performance ? &*performance : nullptr;
+    input.influence = &influenced;
+    return findings(input);
+}
+
+const Finding* find(const std::vector<Finding>& found, FindingCode code) {
+    const auto at = std::find_if(found.begin(), found.end(), [&](const Finding& finding) { return finding.code == code; });
+    return at == found.end() ? nullptr : &*at;
+}
+
+double figure(const Finding& finding, const std::string& name) {
+    for (const Figure& one : finding.figures)
+        if (one.name == name)
+            return one.value;
+    return std::nan("");
+}
+
+/// sample-data/NAME with columns reference, indication and, where named, set point and run; the row of units is skipped.
+Record sampleData(const char* name, int setPoint, int run) {
+    Record record;
+    QFile file(QString::fromStdString(sourceDir()) + "/sample-data/" + name);
+    if (!file.open(QIODevice::ReadOnly))
+        qFatal("no %s", name);
+    file.readLine();
+    file.readLine();
+    while (!file.atEnd()) {
+        const QList<QByteArray> cells = file.readLine().trimmed().split(',');
+        if (cells.size() < 2 || cells[0].isEmpty() || cells[1].isEmpty())
+            continue;
+        Reading reading;
+        reading.id = record.nextReadingId++;
+        reading.reference = number(cells[0].constData());
+        reading.indication = number(cells[1].constData());
+        if (setPoint >= 0)
+            reading.setPoint = number(cells[setPoint].constData());
+        if (run >= 0)
+            reading.run = cells[run].toInt();
+        record.readings.edit().append(reading);
+    }
+    return record;
+}
+
+/// A line with normal noise of 0.01 at 6 set points, rising and falling, 4 runs; `change` may spoil a reading.
+template <class Change>
+Record madeRecord(Change&& change, unsigned seed = 1) {
+    std::mt19937 engine(seed);
+    Record record;
+    for (int run = 1; run <= 4; ++run)
+        for (const Direction direction : {Direction::Rising, Direction::Falling})
+            for (int k = 0; k < 6; ++k) {
+                const int point = direction == Direction::Rising ? k : 5 - k;
+                double noise = -6; // sum of twelve uniforms: the same bits everywhere
+                for (int j = 0; j < 12; ++j)
+                    noise += static_cast<double>(engine() >> 8) / 16777216.0;
+                double y = 1 + 2.0 * point + 0.01 * noise;
+                double x = point;
+                change(run, direction, point, x, y);
+                Reading reading;
+                reading.id = record.nextReadingId++;
+                reading.run = run;
+                reading.direction = direction;
+                reading.setPoint = number(std::to_string(point).c_str());
+                reading.reference = number(QByteArray::number(x, 'f', 4).constData());
+                reading.indication = number(QByteArray::number(y, 'f', 5).constData());
+                record.readings.edit().append(reading);
+            }
+    return record;
+}
+
+void nothing(int, Direction, int, double&, double&) {}
+
+} // namespace
+
+class FindingsTest : public QObject {
+    Q_OBJECT
+
+  private slots:
+    void pressureTransmitterHidesItsCurvatureBehindHysteresis() {
+        Record record = pressureTransmitter();
+        record.choices.function = {FunctionFamily::Line, 0};
+        const auto found = findingsOf(record);
+        QVERIFY(!found.empty());
+        QCOMPARE(found.front().code, FindingCode::LackOfFit);
+        QCOMPARE(found.front().severity, Severity::Serious);
+        QCOMPARE(found.front().remedy, Remedy::CompareFunction);
+        QVERIFY((found.front().suggestion == FunctionChoice{FunctionFamily::Polynomial, 2}));
+        QVERIFY(std::abs(figure(found.front(), "f") - 19.2) < 0.05);
+        const Finding* hidden = find(found, FindingCode::HiddenCurvature);
+        QVERIFY(hidden && std::abs(figure(*hidden, "f_naive") - 1.15) < 0.005 && std::abs(figure(*hidden, "p_naive") - 0.34) < 0.005);
+        const Finding* gap = find(found, FindingCode::Hysteresis);
+        QVERIFY(gap && figure(*gap, "set_point") == 5 && std::abs(figure(*gap, "percent_of_span") - 0.077) < 0.0005);
+        QCOMPARE(gap->rows.size(), std::size_t{6});
+        QVERIFY(find(found, FindingCode::RunZeroShift) || find(found, FindingCode::FirstRunDiffers));
+        QVERIFY(!find(found, FindingCode::Outlier));
+
+        record.choices.function = {FunctionFamily::Polynomial, 2};
+        const auto curved = findingsOf(record);
+        QVERIFY(!find(curved, FindingCode::LackOfFit) && !find(curved, FindingCode::HiddenCurvature) && !find(curved, FindingCode::DegreeNotJustified));
+        record.choices.function = {FunctionFamily::Polynomial, 3};
+        const auto cubic = findingsOf(record);
+        QVERIFY(find(cubic, FindingCode::DegreeNotJustified));
+        QVERIFY((find(cubic, FindingCode::DegreeNotJustified)->suggestion == FunctionChoice{FunctionFamily::Polynomial, 2}));
+    }
+
+    void loadCellRunsDifferInGain() {
+        const auto found = findingsOf(sampleData("load-cell.csv", 0, 2));
+        QVERIFY(find(found, FindingCode::LackOfFit));
+        QVERIFY(find(found, FindingCode::RunGainChange) || find(found, FindingCode::RunZeroShift));
+    }
+
+    void cleanFlowSensorAsksForWeightsAndTheTypedOneShowsItsSlips() {
+        const auto typed = findingsOf(sampleData("flow-sensor-as-typed.csv", 2, -1));
+        const Finding* outlier = find(typed, FindingCode::Outlier);
+        QVERIFY(outlier && outlier->remedy == Remedy::SeeReadings);
+        QCOMPARE(typed.front().severity, Severity::Serious);
+    }
+
+    void scatterThatGrowsAsksForWeights() {
+        const auto found = findingsOf(madeRecord([](int, Direction, int point, double&, double& y) {
+            y = 1 + 2.0 * point + (y - 1 - 2.0 * point) * (0.1 + 2.0 * point);
+        }));
+        const Finding* grows = find(found, FindingCode::ScatterGrows);
+        QVERIFY(grows && grows->remedy == Remedy::ChooseWeights);
+        QVERIFY(figure(*grows, "variance_ratio") > 10);
+    }
+
+    void soundReadingsRaiseNoAlarm() {
+        std::map<int, int> alarms;
+        for (unsigned seed = 1; seed <= 200; ++seed)
+            for (const Finding& finding : findingsOf(madeRecord(nothing, seed)))
+                ++alarms[static_cast<int>(finding.code)];
+        for (const auto& [code, count] : alarms)
+            QVERIFY2(count <= (code == static_cast<int>(FindingCode::LackOfFit) || code == static_cast<int>(FindingCode::Straggler) ||
+                                       code == static_cast<int>(FindingCode::HiddenCurvature) || code == static_cast<int>(FindingCode::OutsideBand)
+                                   ? 26 : 10),
+                     qPrintable(QString("code %1: %2 of 200").arg(code).arg(count)));
+    }
+
+    void eachFaultIsFound_data() {
+        QTest::addColumn<int>("fault");
+        QTest::addColumn<int>("code");
+        QTest::newRow("curvature") << 0 << static_cast<int>(FindingCode::LackOfFit);
+        QTest::newRow("gap") << 1 << static_cast<int>(FindingCode::Hysteresis);
+        QTest::newRow("zero shift") << 2 << static_cast<int>(FindingCode::RunZeroShift);
+        QTest::newRow("gain") << 3 << static_cast<int>(FindingCode::RunGainChange);
+        QTest::newRow("first run") << 4 << static_cast<int>(FindingCode::FirstRunDiffers);
+        QTest::newRow("outlier") << 5 << static_cast<int>(FindingCode::Outlier);
+        QTest::newRow("repeated reading") << 6 << static_cast<int>(FindingCode::RepeatedReading);
+        QTest::newRow("drift") << 7 << static_cast<int>(FindingCode::Autocorrelated);
+    }
+    void eachFaultIsFound() {
+        QFETCH(int, fault);
+        QFETCH(int, code);
+        double walk = 0, heldX = 0, heldY = 0;
+        unsigned seed = 7;
+        const auto found = findingsOf(madeRecord([&](int run, Direction direction, int point, double& x, double& y) {
+            const double q = point / 5.0;
+            seed = seed * 1664525u + 1013904223u;
+            const double noise = static_cast<double>(seed >> 8) / 16777216.0 - 0.5;
+            if (fault == 0)
+                y += 0.05 * 4 * q * (1 - q);
+            if (fault == 1 && direction == Direction::Falling)
+                y += 0.03 * 4 * q * (1 - q);
+            if (fault == 2)
+                y += run % 2 ? 0.02 : -0.02;
+            if (fault == 3)
+                y += (run % 2 ? 0.04 : -0.04) * (q - 0.5);
+            if (fault == 4 && run == 1)
+                y += 0.05;
+            if (fault == 5 && run == 2 && point == 3 && direction == Direction::Rising)
+                y += 0.12;
+            if (fault == 6) {
+                x += 0.0004 * noise;
+                if (run == 3 && point == 5 && direction == Direction::Falling) {
+                    x = heldX;
+                    y = heldY;
+                }
+                heldX = x;
+                heldY = y;
+            }
+            if (fault == 7) {
+                walk = 0.9 * walk + 0.03 * noise;
+                y = 1 + 2.0 * point + 0.2 * (y - 1 - 2.0 * point) + walk;
+            }
+        }));
+        const Finding* finding = find(found, static_cast<FindingCode>(code));
+        QVERIFY(finding);
+        QVERIFY(!finding->figures.empty());
+        if (fault == 5) {
+            QCOMPARE(finding->rows.size(), std::size_t{1});
+            QCOMPARE(finding->rows.front(), ReadingId{16});
+        }
+    }
+
+    void throughZeroIsDoubtedWhenTheConstantIsReal() {
+        Record record = madeRecord(nothing);
+        record.choices.function = {FunctionFamily::Proportional, 0};
+        const Finding* finding = nullptr;
+        const auto found = findingsOf(record);
+        finding = find(found, FindingCode::ThroughZeroNotSupported);
+        QVERIFY(finding);
+        QVERIFY(std::abs(figure(*finding, "value") - 1) < 0.01); // the constant itself
+        QVERIFY((finding->suggestion == FunctionChoice{FunctionFamily::Line, 0}));
+        // F is the square of the constant's t in the line.
+        record.choices.function = {FunctionFamily::Line, 0};
+        const auto line = fitFunction(makeSample(record, Phase::AsFound), record.choices);
+        const double t = line->fit.coefficients[0].value / line->fit.coefficients[0].standardUncertainty;
+        QVERIFY(digitsAgreed(figure(*finding, "f"), t * t) > 9);
+    }
+
+    void exclusionsAreListedAndTooManyAreSaid() {
+        Record record = madeRecord(nothing);
+        const auto exclude = [&](ReadingId id) { record.exclusions.edit().add({id, ExclusionReason::Disturbance, "", "TL", 0}); };
+        exclude(4);
+        auto found = findingsOf(record);
+        const Finding* listed = find(found, FindingCode::ExcludedReadings);
+        QVERIFY(listed && listed->severity == Severity::Note && listed->rows == std::vector<ReadingId>{4});
+        QVERIFY(!find(found, FindingCode::ManyExcluded) && !find(found, FindingCode::SetPointExcluded));
+        for (std::size_t i = 0; i < record.readings->size(); ++i)
+            if (record.readings->setPoint().toDouble(i) == 3)
+                exclude(record.readings->ids()[i]);
+        found = findingsOf(record);
+        QVERIFY(find(found, FindingCode::SetPointExcluded) && figure(*find(found, FindingCode::SetPointExcluded), "set_point") == 3);
+        QVERIFY(find(found, FindingCode::ManyExcluded));
+        QVERIFY(std::is_sorted(found.begin(), found.end(), [](const Finding& a, const Finding& b) { return a.severity > b.severity; }));
+    }
+
+    void fewReadingsAndExtrapolationAreSaid() {
+        Record record = recordOf(std::vector<std::string>{"0", "1", "2"}, {"0.1", "1.0", "2.2"});
+        record.choices.at = {number("3")};
+        const auto found = findingsOf(record);
+        QVERIFY(find(found, FindingCode::TooFewReadings) && find(found, FindingCode::Extrapolation));
+        QCOMPARE(figure(*find(found, FindingCode::Extrapolation), "asked_for"), 3.0);
+        const auto none = findingsOf(recordOf(std::vector<std::string>{"0"}, {"0.1"}));
+        QVERIFY(find(none, FindingCode::TooFewReadings) && none.front().severity == Severity::Serious);
+        QVERIFY(findingsOf(Record{}).empty());
+    }
+
+    void aReadingFarOutIsInfluentialAndOutsideTheBand() {
+        const auto found = findingsOf(recordOf(std::vector<std::string>{"0", "1", "2", "3", "4", "20"}, {"0.0", "1.1", "1.9", "3.1", "3.9", "25"}));
+        QVERIFY(find(found, FindingCode::Influential));
+        QCOMPARE(find(found, FindingCode::Influential)->rows.back(), ReadingId{6});
+    }
+};
+
+QTEST_APPLESS_MAIN(FindingsTest)
+#include "tst_findings.moc"
