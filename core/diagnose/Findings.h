@@ -3,7 +3,6 @@
 
 #include "core/diagnose/Diagnostics.h"
 #include "core/diagnose/Finding.h"
-#include "core/diagnose/Influence.h"
 #include "core/fit/Fit.h"
 #include "core/performance/ProcessFigures.h"
 #include "core/split/VarianceSplit.h"
@@ -23,7 +22,6 @@ struct FindingsInput {
     const VarianceSplit* split = nullptr;
     const Diagnostics* diagnostics = nullptr;
     const ProcessFigures* performance = nullptr;
-    const Influence* influence = nullptr;
     std::optional<double> residualSdWithAll = std::nullopt;     ///< of the same function fitted to the excluded readings too
 };
 

@@ -63,7 +63,8 @@ void outlying(const FindingsInput& input, std::vector<Finding>& found) {
 /// to the edge of their 50 % region (Cook, Technometrics 19 (1977) 15).
 void influential(const FindingsInput& input, std::vector<Finding>& found) {
     const Fit& fit = *input.fit;
-    if (!input.influence || fit.degreesOfFreedom < 2)
+    const Residuals& residuals = *input.residuals;
+    if (fit.degreesOfFreedom < 2 || residuals.leverage.size() != residuals.e.size() || !(fit.residualSd > 0))
         return;
     const boost::math::fisher_f fisher(static_cast<double>(fit.terms()), fit.degreesOfFreedom);
     const double limit = boost::math::quantile(fisher, 0.5);
@@ -71,12 +72,17 @@ void influential(const FindingsInput& input, std::vector<Finding>& found) {
     finding.code = FindingCode::Influential;
     finding.severity = Severity::Attention;
     finding.remedy = Remedy::SeeReadings;
+    const double variance = fit.residualSs / fit.degreesOfFreedom * static_cast<double>(fit.terms());
     double most = 0;
-    for (std::size_t i = 0; i < input.influence->cook.size() && finding.rows.size() < mostRowsNamed; ++i)
-        if (input.influence->cook[i] > limit) {
-            finding.rows.push_back(idOf(input, i));
-            most = std::max(most, input.influence->cook[i]);
-        }
+    for (std::size_t i = 0; i < residuals.e.size() && finding.rows.size() < mostRowsNamed; ++i) {
+        const double e = residuals.e.high[i], h = residuals.leverage[i];
+        const double w = residuals.weight.empty() ? 1 : residuals.weight.high[i];
+        const double cook = w * e * e * h / (variance * (1 - h) * (1 - h));
+        if (!(cook > limit) || 1 - h < 1e-13)
+            continue;
+        finding.rows.push_back(idOf(input, i));
+        most = std::max(most, cook);
+    }
     if (finding.rows.empty())
         return;
     finding.figures = {{"count", static_cast<double>(finding.rows.size())}, {"cook", most}, {"limit", limit}};

@@ -2,6 +2,7 @@
 #include "core/evaluate/evaluate.h"
 
 #include "core/budget/makeBudget.h"
+#include "core/diagnose/Findings.h"
 #include "core/evaluate/Dates.h"
 #include "core/evaluate/RowTable.h"
 #include "core/fit/fitFunction.h"
@@ -66,6 +67,7 @@ class PhaseSteps {
             answer();
             compare();
         }
+        interpret(residuals);
         if (progress_.cancelled())
             return Error(ErrorCode::Cancelled);
         progress_.report(0.8);
@@ -120,6 +122,19 @@ class PhaseSteps {
             return;
         result_.withoutExclusions = WithoutExclusions{other->fit.coefficients, other->fit.residualSd,
                                                       largestHalfWidth(other->fit, other->fit.low, other->fit.high)};
+    }
+
+    void interpret(const Residuals* residuals) {
+        const auto pointer = [](const auto& part) { return part ? &*part : nullptr; };
+        FindingsInput input{record_, result_.phase, used_};
+        input.fit = fit();
+        input.residuals = residuals;
+        input.split = pointer(result_.split);
+        input.diagnostics = pointer(result_.diagnostics);
+        input.performance = pointer(result_.performance);
+        if (result_.withoutExclusions)
+            input.residualSdWithAll = result_.withoutExclusions->residualSd;
+        result_.findings = findings(input);
     }
 
     void decide() {

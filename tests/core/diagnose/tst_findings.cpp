@@ -27,13 +27,11 @@ std::vector<Finding> findingsOf(const Record& record, Phase phase = Phase::AsFou
     const VarianceSplit split = splitVariance(sample, outcome->residuals, outcome->fit);
     const Diagnostics diagnostics = diagnose(sample, outcome->residuals, outcome->fit, {record.readings->ids(), 0, 0.05});
     const auto performance = processFigures(sample, record.item);
-    const Influence influenced = influence(outcome->residuals, static_cast<int>(outcome->fit.terms()));
     input.fit = &outcome->fit;
     input.residuals = &outcome->residuals;
     input.split = &split;
     input.diagnostics = &diagnostics;
     input.performance = performance ? &*performance : nullptr;
-    input.influence = &influenced;
     return findings(input);
 }
 
