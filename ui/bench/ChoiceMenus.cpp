@@ -79,7 +79,7 @@ void fillWeights(QMenu& menu, Workbench& workbench) {
         action->setChecked(checked);
         QObject::connect(action, &QAction::triggered, &workbench, [&workbench, text, edit] { change(workbench, tr("choose %1").arg(text), edit); });
     };
-    for (const Weights weights : {Weights::Equal, Weights::Stated, Weights::Replicates, Weights::Proportional})
+    for (const Weights weights : {Weights::Equal, Weights::Stated, Weights::Replicates, Weights::Proportional, Weights::VarianceFunction})
         entry(weightsText(weights), choices.weights == weights, [weights](Choices& c) { c.weights = weights; });
     menu.addSeparator();
     for (const Method method : {Method::LeastSquares, Method::BothUncertain, Method::Robust})
@@ -120,6 +120,7 @@ QString weightsText(Weights weights) {
     case Weights::Stated: return tr("weights from stated uncertainties");
     case Weights::Replicates: return tr("weights from replicates");
     case Weights::Proportional: return tr("weights proportional to level");
+    case Weights::VarianceFunction: return tr("weights from a variance function");
     }
     return {};
 }
@@ -165,7 +166,8 @@ ChoiceButton* weightsButton(Workbench& workbench, QWidget* parent) {
         QString text = choices.method == Method::BothUncertain ? tr("both uncertain") : choices.method == Method::Robust ? tr("robust") : QString();
         if (text.isEmpty())
             text = choices.weights == Weights::Equal ? tr("equal weights") : choices.weights == Weights::Stated ? tr("stated weights")
-                   : choices.weights == Weights::Replicates ? tr("replicate weights") : tr("proportional weights");
+                   : choices.weights == Weights::Replicates ? tr("replicate weights")
+                   : choices.weights == Weights::Proportional ? tr("proportional weights") : tr("variance-function weights");
         button->setChoice(text);
     };
     QObject::connect(button->menu(), &QMenu::aboutToShow, button, [button, &workbench] { fillWeights(*button->menu(), workbench); });
