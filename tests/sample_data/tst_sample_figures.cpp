@@ -155,6 +155,11 @@ class SampleFiguresTest : public QObject {
         compareAsPrinted(equal.fit->coefficients[0].standardUncertainty, "0.0027");
         compareAsPrinted(equal.fit->coefficients[1].value, "0.099952");
         compareAsPrinted(equal.fit->coefficients[1].standardUncertainty, "0.000100");
+        record.choices.weights = Weights::Proportional;
+        const PhaseEvaluation weighted = evaluated(record);
+        QVERIFY(weighted.fit);
+        compareAsPrinted(weighted.fit->coefficients[0].value, "0.00219");
+        compareAsPrinted(weighted.fit->coefficients[1].value, "0.099770");
     }
 
     void humidityProbeHasAGreyPoint() {
