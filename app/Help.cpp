@@ -38,6 +38,7 @@ Options of figures
   --exclude ROW[,ROW…]                  data rows from 1
   --rows                                figures of every reading
   --json                                one JSON object instead of text
+  --missing WORD                        a word that stands for no value; may be given several times
   --decimal comma|point --separator S --encoding E
                                         where the guess, which is printed, is wrong
 

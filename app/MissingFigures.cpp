@@ -22,12 +22,17 @@ constexpr Rule rules[] = {
     {"residual_sd", WarningCode::NoDegreesOfFreedom, "no-degrees-of-freedom"},
     {"r_squared", WarningCode::FigureUndefined, "no-spread"},
     {"chi_squared", WarningCode::FigureUndefined, "no-stated-uncertainties"},
-    {"split.lack_of_fit", WarningCode::NoReplicates, "no-replicates"},
+    {"split.lack_of_fit.", WarningCode::FigureUndefined, "no-test"},
+    {"split.regression.", WarningCode::FigureUndefined, "no-test"},
+    {"split.residual.", WarningCode::NoDegreesOfFreedom, "no-degrees-of-freedom"},
+    {"split.hysteresis.", WarningCode::FigureUndefined, "no-test"},
+    {"split.run_offset.", WarningCode::FigureUndefined, "no-test"},
+    {"split.run_slope.", WarningCode::FigureUndefined, "no-test"},
+    {"split.lack_of_fit", WarningCode::NoReplicates, "set-points"},
     {"split.pure_error", WarningCode::NoReplicates, "no-replicates"},
     {"split.hysteresis", WarningCode::OneDirection, "one-direction"},
-    {"split.run_offset", WarningCode::OneRun, "one-run"},
-    {"split.run_slope", WarningCode::OneRun, "one-run"},
-    {"split.repeatability", WarningCode::NoReplicates, "no-replicates"},
+    {"split.run_", WarningCode::OneRun, "one-run"},
+    {"split.repeatability", WarningCode::FigureUndefined, "directions-and-runs"},
     {"split.components.", WarningCode::FigureUndefined, "no-degrees-of-freedom"},
     {"split", WarningCode::FigureUndefined, "no-degrees-of-freedom"},
     {"at.", WarningCode::NoDegreesOfFreedom, "no-degrees-of-freedom"},
@@ -59,7 +64,7 @@ std::vector<Warning> reasonsFor(const std::vector<std::string>& missing, const P
     std::vector<std::pair<std::string, std::string>> figuresOf; // by reason, in order
     for (const std::string& path : missing) {
         const auto* rule = std::find_if(std::begin(rules), std::end(rules), [&](const Rule& r) { return path.starts_with(r.path); });
-        if (rule != std::end(rules) && said(rule->explained))
+        if (rule != std::end(rules) && (said(rule->explained) || (path.starts_with("split.") && said(WarningCode::NoReplicates))))
             continue;
         const std::string reason(rule == std::end(rules) ? "not-given" : rule->reason);
         const auto known = std::find_if(figuresOf.begin(), figuresOf.end(), [&](const auto& entry) { return entry.first == reason; });

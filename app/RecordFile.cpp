@@ -13,7 +13,8 @@ namespace spanwright {
 namespace {
 
 constexpr OptionSpec known[] = {{"--reference"},   {"--indication"},   {"--set-point"}, {"--direction"}, {"--run"},    {"--u-reference"},
-                                {"--u-indication"}, {"--time"}, {"--decimal"},   {"--separator"}, {"--encoding"}, {"--exclude"}};
+                                {"--u-indication"}, {"--time"}, {"--decimal"},   {"--separator"}, {"--encoding"}, {"--missing"},
+                                {"--exclude"}};
 
 Error ofOption(const Error& error, const char* option, const std::string& text) {
     return Error(error.code == ErrorCode::UsageValueBad ? error.code : ErrorCode::UsageValueBad, {{"option", option}, {"text", text}});
@@ -33,6 +34,9 @@ Result<CsvWishes> wishesOf(const Arguments& arguments) {
             return ofOption(separator.error(), "--separator", *text);
         wishes.separator = *separator;
     }
+    for (const auto& [option, text] : arguments.options)
+        if (option == "--missing")
+            wishes.missingWords.push_back(text);
     if (arguments.has("--decimal")) {
         const auto mark = decimalMark(arguments);
         if (!mark)
@@ -42,11 +46,12 @@ Result<CsvWishes> wishesOf(const Arguments& arguments) {
     return wishes;
 }
 
-/// The first column of numbers that is not `other`.
+/// The first column of numbers that is not `other`; where there is none, the first column, so that its cells say what is wrong.
 std::optional<std::size_t> firstNumbersBut(const CsvRules& rules, std::optional<std::size_t> other) {
-    for (std::size_t i = 0; i < rules.columns.size(); ++i)
-        if (rules.columns[i].kind == ColumnKind::Number && i != other)
-            return i;
+    for (const bool anyKind : {false, true})
+        for (std::size_t i = 0; i < rules.columns.size(); ++i)
+            if (i != other && (anyKind || rules.columns[i].kind == ColumnKind::Number))
+                return i;
     return std::nullopt;
 }
 
@@ -91,9 +96,9 @@ Result<ImportMapping> mappingOf(const Arguments& arguments, const CsvRules& rule
     if (!mapping.indication && constant)
         std::swap(mapping.reference, mapping.indication);
     if (!mapping.indication)
-        return Error(ErrorCode::ColumnMissing, {{"name", "indication"}});
+        return Error(ErrorCode::ColumnMissing, {{"quantity", "indication"}});
     if (!mapping.reference && !constant)
-        return Error(ErrorCode::ColumnMissing, {{"name", "reference"}});
+        return Error(ErrorCode::ColumnMissing, {{"quantity", "reference"}});
     return mapping;
 }
 

@@ -40,7 +40,8 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
     // tables of text
     case ErrorCode::UnclosedQuote: return tr("a quotation mark is opened and never closed. Close it in the file.");
     case ErrorCode::RaggedRow:
-        return tr("this line has more or fewer cells than the others. Complete the line, or check the separator.");
+        return tr("the line has more or fewer cells than the others%1. Complete it, or check the separator.")
+            .arg(facts.has("text") ? tr(" (%1)").arg(facts.quoted("text", {})) : QString());
     case ErrorCode::NotANumber:
         return tr("%1 is not a number. Correct the cell, or leave its row out by stating it as excluded.")
             .arg(facts.quoted("text", tr("the cell")));
@@ -51,8 +52,9 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
                   "decimal mark.")
             .arg(facts.quoted("text", tr("the number")));
     case ErrorCode::ColumnMissing:
-        return tr("there is no column %1. Name a column of the header, or its number from 1.")
-            .arg(facts.quoted("name", facts.quoted("column", tr("of that name"))));
+        return facts.has("quantity") ? tr("no column is left for the %1. Check the separator, or name the columns.").arg(facts.plain("quantity"))
+                                     : tr("there is no column %1. Name a column of the header, or its number from 1.")
+                                           .arg(facts.quoted("name", facts.quoted("column", tr("of that name"))));
     case ErrorCode::NoDataRows: return tr("there is no row of readings under the header. Choose the file that holds the readings.");
     case ErrorCode::SeparatorUnclear: return tr("the separator of the columns is not certain; %1 was taken. State it where the guess is wrong.")
             .arg(facts.quoted("separator", tr("one")));
@@ -76,7 +78,11 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
             .arg(facts.quoted("key", facts.quoted("text", tr("there"))));
     // typing
     case ErrorCode::CellEmpty: return tr("there is nothing in the cell. Type a number.");
-    case ErrorCode::CellNotANumber: return tr("%1 is not a number. Type digits, such as 12.04.").arg(facts.quoted("text", tr("this")));
+    case ErrorCode::CellNotANumber:
+        return facts.has("line")
+                   ? tr("%1 is no number. Correct it in the file, state it as a word for missing values, or exclude its row.")
+                         .arg(facts.quoted("text", tr("the cell")))
+                   : tr("%1 is not a number. Type digits, such as 12.04.").arg(facts.quoted("text", tr("this")));
     case ErrorCode::CellDateBad:
         return tr("%1 is not a date. Type year, month and day, such as 2026-11-30.").arg(facts.quoted("text", tr("this")));
     case ErrorCode::CellOutOfRange:
@@ -85,27 +91,28 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
     // the record as a whole
     case ErrorCode::NoReadings: return tr("there are no readings. Enter readings, or take in a file.");
     case ErrorCode::TooFewReadings:
-        return tr("%1 readings are too few for this function, which needs %2. Take more readings, or choose a simpler function.")
-            .arg(facts.plain("count", facts.plain("readings", tr("The"))), facts.plain("needed", tr("more")));
+        return tr("readings: %1, too few for this function, which needs %2. Take more readings, or choose a simpler function.")
+            .arg(facts.plain("got", tr("not enough")), facts.plain("needed", tr("more")));
     case ErrorCode::ReferencesAllEqual:
         return tr("all reference values are equal, so no slope can be found. Take readings at other set points, or choose the "
                   "function “constant”.");
     case ErrorCode::TooFewSetPoints:
-        return tr("%1 set points are too few for this function, which needs %2. Take more set points, or choose a simpler function.")
-            .arg(facts.plain("count", facts.plain("set_points", tr("The"))), facts.plain("needed", tr("more")));
+        return tr("set points: %1, too few for this function, which needs %2. Take more set points, or choose a simpler function.")
+            .arg(facts.plain("got", tr("not enough")), facts.plain("needed", tr("more")));
     case ErrorCode::RankLost:
         return tr("the readings cannot tell these coefficients apart: %1. Choose a simpler function, or spread the set points.")
             .arg(facts.plain("terms", tr("some of them")));
     case ErrorCode::OutsideDomain:
-        return tr("%1 lies outside the values for which this function exists. Exclude the reading with a reason, or choose another "
+        return tr("values in row %1 lie outside those for which this function exists. Exclude them with a reason, or choose another "
                   "function.")
-            .arg(facts.plain("value", facts.quoted("text", tr("A value"))));
+            .arg(facts.plain("rows", tr("one of the table")));
     case ErrorCode::UncertaintyNotPositive:
-        return tr("a stated uncertainty is zero or negative: %1. Correct it; a standard uncertainty is above zero.")
-            .arg(facts.plain("value", facts.quoted("text", tr("see the column"))));
+        return tr("a stated uncertainty in row %1 is zero or negative. Correct it; a standard uncertainty is above zero.")
+            .arg(facts.plain("rows", tr("one of the table")));
     case ErrorCode::UncertaintyMissing:
-        return tr("this way of weighing needs a standard uncertainty for every reading, and some have none. State them, or choose "
-                  "equal weights.");
+        return tr("this way of weighing needs a standard uncertainty for every reading; row %1 has none. State it, or choose equal "
+                  "weights.")
+            .arg(facts.plain("rows", tr("one of the table")));
     case ErrorCode::NoConvergence:
         return tr("the fit did not settle: %1. Choose another function, or check the readings for slips.")
             .arg(facts.plain("reason", tr("the steps did not grow smaller")));
@@ -124,11 +131,11 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
     case ErrorCode::UsageUnknownOption:
         return tr("there is no option %1. See spanwright --help.").arg(facts.quoted("option", facts.quoted("text", tr("of that name"))));
     case ErrorCode::UsageValueBad:
-        return tr("%1 does not take %2. See spanwright --help.")
-            .arg(facts.plain("option", tr("the option")), facts.quoted("text", tr("this value")));
-    case ErrorCode::UsageValueMissing: return tr("%1 needs a value. See spanwright --help.").arg(facts.plain("option", tr("the option")));
+        return tr("the option %1 does not take %2. See spanwright --help.")
+            .arg(facts.plain("option"), facts.quoted("text", tr("this value")));
+    case ErrorCode::UsageValueMissing: return tr("the option %1 needs a value. See spanwright --help.").arg(facts.plain("option"));
     case ErrorCode::UsageNoFile:
-        return tr("%1 needs a file. See spanwright --help.").arg(facts.plain("command", tr("the command")));
+        return tr("a file is needed: spanwright %1 FILE. See spanwright --help.").arg(facts.plain("command"));
     case ErrorCode::UsageUnknownCommand:
         return tr("there is no command or file %1. See spanwright --help.").arg(facts.quoted("text", tr("of that name")));
     }

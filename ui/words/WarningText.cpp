@@ -4,6 +4,8 @@
 
 #include <QCoreApplication>
 
+#include <span>
+
 namespace spanwright {
 
 namespace {
@@ -14,45 +16,86 @@ struct WarningText {
 
   public:
     static QString of(WarningCode code, Sentence& facts);
-    /// Why a figure does not exist, from the reason's code; a code that is not in the list stands as words.
-    static QString reason(Sentence& facts);
+    /// Figures, reasons and methods come as codes; one that is not in its list stands as words.
     static QString figure(Sentence& facts);
+    static QString reason(Sentence& facts);
+    static QString method(Sentence& facts);
+    static QString oneRun(Sentence& facts);
 };
 
+struct Code {
+    const char* code;
+    const char* words;
+};
+
+constexpr Code figures[] = {
+    {"error", QT_TRANSLATE_NOOP("WarningText", "Error of indication")},
+    {"repeatability", QT_TRANSLATE_NOOP("WarningText", "Repeatability")},
+    {"lack_of_fit", QT_TRANSLATE_NOOP("WarningText", "Lack of fit")},
+    {"span", QT_TRANSLATE_NOOP("WarningText", "The output span")},
+    {"durbin_watson", QT_TRANSLATE_NOOP("WarningText", "The p value of the Durbin–Watson test")},
+    {"cochran", QT_TRANSLATE_NOOP("WarningText", "The critical value of the Cochran test")},
+};
+
+constexpr Code reasons[] = {
+    {"no-output-range", QT_TRANSLATE_NOOP("WarningText", "the item's output range is not stated")},
+    {"no-replicates", QT_TRANSLATE_NOOP("WarningText", "no set point was read more than once in the same direction")},
+    {"no-replicates-everywhere", QT_TRANSLATE_NOOP("WarningText", "fewer than two set points were read more than once")},
+    {"no-repeats", QT_TRANSLATE_NOOP("WarningText", "no set point was read more than once in the same direction and run")},
+    {"set-points", QT_TRANSLATE_NOOP("WarningText", "there are no more set points than coefficients")},
+    {"no-degrees-of-freedom", QT_TRANSLATE_NOOP("WarningText", "no degrees of freedom are left")},
+    {"no-test", QT_TRANSLATE_NOOP("WarningText", "there is nothing to test: no degrees of freedom, or residuals that are only rounding")},
+    {"no-spread", QT_TRANSLATE_NOOP("WarningText", "the readings do not vary")},
+    {"no-stated-uncertainties", QT_TRANSLATE_NOOP("WarningText", "the fit does not rest on stated uncertainties")},
+    {"one-direction", QT_TRANSLATE_NOOP("WarningText", "no set point was approached from both directions")},
+    {"one-run", QT_TRANSLATE_NOOP("WarningText", "there is only one run")},
+    {"directions-and-runs", QT_TRANSLATE_NOOP("WarningText", "directions and runs are not known")},
+    {"no-answer", QT_TRANSLATE_NOOP("WarningText", "no reference value in the range belongs to the indication")},
+    {"no-finite-interval", QT_TRANSLATE_NOOP("WarningText", "the interval has no finite end")},
+    {"too-few-readings", QT_TRANSLATE_NOOP("WarningText", "there are too few readings, or they do not scatter")},
+    {"three-to-5000-readings", QT_TRANSLATE_NOOP("WarningText", "the test takes from 3 to 5000 readings that scatter")},
+    {"no-slope-in-function", QT_TRANSLATE_NOOP("WarningText", "it is tested for functions that change with the abscissa")},
+    {"not-a-line", QT_TRANSLATE_NOOP("WarningText", "it is tested for a straight line through four readings or more")},
+    {"no-set-points", QT_TRANSLATE_NOOP("WarningText", "there are fewer than two set points, or far too many")},
+    {"takes-no-part", QT_TRANSLATE_NOOP("WarningText", "the reading takes no part in the fit, or decides a coefficient alone")},
+};
+
+constexpr Code methods[] = {
+    {"normal", QT_TRANSLATE_NOOP("WarningText", "the normal distribution stands in for the exact one")},
+    {"polynomial", QT_TRANSLATE_NOOP("WarningText", "the function is taken as linear in its coefficients")},
+    {"mean-number", QT_TRANSLATE_NOOP("WarningText", "set points have different numbers of readings, and their mean is taken")},
+    {"reference-itself", QT_TRANSLATE_NOOP("WarningText", "the item's range is not stated; a perfect item is taken to show the reference itself")},
+    {"end-points", QT_TRANSLATE_NOOP("WarningText", "the item's range is not stated; the means at both ends stand in for it")},
+};
+
+QString inWords(std::span<const Code> list, const QString& code) {
+    for (const Code& entry : list)
+        if (code == QLatin1String(entry.code))
+            return WarningText::tr(entry.words);
+    return QString(code).replace(QLatin1Char('-'), QLatin1Char(' '));
+}
+
 QString WarningText::figure(Sentence& facts) {
-    const QString name = facts.plain("figure", tr("A figure"));
-    if (name == QLatin1String("error"))
-        return tr("Error of indication");
-    return name == QLatin1String("repeatability") ? tr("Repeatability") : name;
+    return inWords(figures, facts.plain("figure", tr("A figure")));
 }
 
 QString WarningText::reason(Sentence& facts) {
-    static const struct {
-        const char* code;
-        const char* words;
-    } known[] = {
-        {"no-output-range", QT_TR_NOOP("the item's output range is not stated")},
-        {"no-replicates", QT_TR_NOOP("no set point was read more than once in the same direction")},
-        {"no-replicates-everywhere", QT_TR_NOOP("not every set point was read more than once")},
-        {"no-degrees-of-freedom", QT_TR_NOOP("no degrees of freedom are left")},
-        {"no-spread", QT_TR_NOOP("the readings do not vary")},
-        {"no-stated-uncertainties", QT_TR_NOOP("no uncertainties are stated for the readings")},
-        {"one-direction", QT_TR_NOOP("no set point was approached from both directions")},
-        {"one-run", QT_TR_NOOP("there is only one run")},
-        {"no-answer", QT_TR_NOOP("no reference value in the range belongs to the indication")},
-        {"no-finite-interval", QT_TR_NOOP("the interval has no finite end")},
-        {"too-few-readings", QT_TR_NOOP("there are too few readings")},
-        {"three-to-5000-readings", QT_TR_NOOP("the test takes from 3 to 5000 readings")},
-        {"no-slope-in-function", QT_TR_NOOP("the function does not change with the abscissa")},
-        {"not-a-line", QT_TR_NOOP("it is tested for a straight line over at least four readings and three set points")},
-        {"no-set-points", QT_TR_NOOP("the readings give too few set points")},
-        {"takes-no-part", QT_TR_NOOP("the reading takes no part in the fit, or decides a coefficient alone")},
-    };
-    const QString code = facts.plain("reason", tr("the readings do not give it"));
-    for (const auto& entry : known)
-        if (code == QLatin1String(entry.code))
-            return tr(entry.words);
-    return QString(code).replace(QLatin1Char('-'), QLatin1Char(' '));
+    return inWords(reasons, facts.plain("reason", tr("the readings do not give it")));
+}
+
+QString WarningText::method(Sentence& facts) {
+    return inWords(methods, facts.plain("method", tr("no exact method exists")));
+}
+
+QString WarningText::oneRun(Sentence& facts) {
+    const QString reason = facts.plain("reason");
+    if (reason == QLatin1String("not-stated"))
+        return tr("It is not stated to which run a reading belongs, so changes between runs are not known.");
+    if (reason == QLatin1String("too-many"))
+        return tr("There are more runs than there can be: the column seems to count readings. Changes between runs are not known.");
+    if (reason == QLatin1String("no-repeats"))
+        return tr("The runs share no set point, so changes between runs are not known.");
+    return tr("There is only one run, so changes between runs are not known.");
 }
 
 QString WarningText::of(WarningCode code, Sentence& facts) {
@@ -61,9 +104,13 @@ QString WarningText::of(WarningCode code, Sentence& facts) {
         return tr("Some numbers in the column %1 have too many digits to be held exactly; they are used to about 31 digits.")
             .arg(facts.plain("name", facts.plain("column", tr("of readings"))));
     case WarningCode::NoReplicates:
+        facts.plain("figure");
         return tr("No set point was read more than once, so lack of fit cannot be tested and repeatability is not known.");
-    case WarningCode::OneRun: return tr("There is only one run, so changes between runs are not known.");
-    case WarningCode::OneDirection: return tr("No set point was approached from both directions, so hysteresis is not known.");
+    case WarningCode::OneRun: return oneRun(facts);
+    case WarningCode::OneDirection:
+        return facts.plain("reason") == QLatin1String("not-stated")
+                   ? tr("It is not stated whether readings were taken rising or falling, so hysteresis is not known.")
+                   : tr("No set point was approached from both directions, so hysteresis is not known.");
     case WarningCode::NoDegreesOfFreedom:
         return tr("There are as many coefficients as readings, so nothing is left from which to tell an uncertainty.");
     case WarningCode::RankLost:
@@ -89,7 +136,7 @@ QString WarningText::of(WarningCode code, Sentence& facts) {
             .arg(figure(facts), reason(facts));
     case WarningCode::ApproximateMethod:
         return tr("%1 is an approximation: %2.")
-            .arg(facts.plain("figure", tr("A figure")), facts.plain("method", tr("no exact method exists")));
+            .arg(figure(facts), method(facts));
     case WarningCode::SealBroken:
         return tr("The seal does not hold: the file was changed outside the program. Compare it with a backup before it is used.");
     case WarningCode::JournalBroken:
