@@ -258,7 +258,7 @@ void TestFigures::badInputIsRefusedWithItsPlace_data() {
     QTest::newRow("one reading") << QByteArray("x,y\n0,1\n") << "too few";
     QTest::newRow("equal references") << QByteArray("x,y\n2,1\n2,3\n2,5\n") << "equal";
     QTest::newRow("ragged") << QByteArray("x;y\n0;1\n1;3\n2;5;7;9\n3;7\n4;9\n") << "line 4";
-    QTest::newRow("thousands") << QByteArray("x;y\n0;1\n1;1.000,5\n2;5\n3;7\n4;9\n") << "line 3";
+    QTest::newRow("thousands") << QByteArray("x;y\n0;1\n1;1.000,5\n2;5\n3;7\n4;9\n") << "decimal mark";
     QTest::newRow("broken JSON") << QByteArray("{\"layout\": \"spanwright-session\", \"vers") << "bad.csv";
     QTest::newRow("foreign JSON") << QByteArray("{\"name\": \"something else\"}") << "session";
 }

@@ -43,7 +43,8 @@ QString Sentence::plain(const char* name, const QString& otherwise) {
 }
 
 QString Sentence::quoted(const char* name, const QString& otherwise) {
-    return has(name) ? QChar(0x201C) + cut(plain(name)) + QChar(0x201D) : otherwise;
+    const QString text = plain(name);
+    return text.isEmpty() ? otherwise : QChar(0x201C) + cut(text) + QChar(0x201D);
 }
 
 QString Sentence::place() {
