@@ -20,6 +20,7 @@ struct Command {
 
 constexpr Command commands[] = {
     {"figures", figuresCommand},
+    {"check", checkCommand},
 };
 
 bool asksFor(const Words& words, const char* option) {

@@ -4,6 +4,7 @@
 #include "app/ChoiceOptions.h"
 #include "core/exchange/FileBytes.h"
 #include "core/exchange/ReadingImport.h"
+#include "core/session/SessionJson.h"
 #include "ui/words/Words.h"
 
 #include <algorithm>
@@ -194,6 +195,24 @@ Result<LoadedRecord> loadTable(const std::string& path, std::string_view bytes, 
     return loaded;
 }
 
+Result<LoadedRecord> loadSession(const std::string& path, std::string_view bytes, const Arguments& arguments) {
+    auto session = readSession(bytes);
+    if (!session)
+        return session.error().with("file", path);
+    const auto mark = decimalMark(arguments);
+    if (!mark)
+        return mark.error();
+    const auto choices = withOptions(session->record.choices, arguments, *mark);
+    if (!choices)
+        return choices.error();
+    LoadedRecord loaded;
+    loaded.record = std::move(session->record);
+    loaded.record.choices = *choices;
+    for (const Warning& warning : session->warnings)
+        loaded.notes.push_back(path + ": " + warningText(warning).toStdString());
+    return loaded;
+}
+
 Result<void> exclude(Record& record, const std::vector<std::size_t>& rows) {
     for (const std::size_t row : rows) {
         if (row > record.readings->size())
@@ -233,9 +252,8 @@ Result<LoadedRecord> loadRecord(const std::string& path, const Arguments& argume
     const auto file = FileBytes::read(path);
     if (!file)
         return file.error().fact("file").empty() ? file.error().with("file", path) : file.error();
-    if (looksLikeSession(path, file->bytes()))
-        return Error(ErrorCode::NotASession, {{"file", path}});
-    auto loaded = loadTable(path, file->bytes(), arguments, *excluded);
+    auto loaded = looksLikeSession(path, file->bytes()) ? loadSession(path, file->bytes(), arguments)
+                                                        : loadTable(path, file->bytes(), arguments, *excluded);
     if (!loaded)
         return loaded;
     const auto done = exclude(loaded->record, *excluded);

@@ -1,0 +1,125 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/evaluate/KeyFigures.h"
+#include "core/evaluate/evaluate.h"
+#include "core/session/SessionJson.h"
+#include "tests/support/RunCommand.h"
+#include "tests/support/SampleRecord.h"
+
+#include <QtTest>
+
+#include <QJsonArray>
+
+using namespace spanwright;
+using namespace spanwright::test;
+
+namespace {
+
+StoredResults resultsOf(const Record& record) {
+    Progress progress;
+    const auto evaluation = evaluate(record, progress);
+    return {SPANWRIGHT_VERSION, evaluation ? keyFigures(*evaluation) : decltype(StoredResults::figures)()};
+}
+
+QByteArray sessionBytes(const Record& record, const StoredResults& results) {
+    return QByteArray::fromStdString(writeSession(record, results));
+}
+
+} // namespace
+
+class TestSessions : public QObject {
+    Q_OBJECT
+
+  private slots:
+    void figuresOfASessionTakeItsChoices();
+    void anOptionOverridesAChoice();
+    void aSoundSessionIsChecked();
+    void aChangedReadingIsFound();
+    void aStoredResultThatDiffersIsFound();
+    void whatIsNoSessionIsRefused();
+    void everyTruncationIsRefusedOrWarnedOf();
+};
+
+void TestSessions::figuresOfASessionTakeItsChoices() {
+    Desk desk;
+    Record record = pressureTransmitter();
+    record.choices.function = {FunctionFamily::Polynomial, 2};
+    const std::string file = desk.file("pt.spanwright", sessionBytes(record, {}));
+    const Ran ran = runWords({"figures", file, "--json"});
+    QCOMPARE(ran.status, 0);
+    const QJsonObject figures = ran.json();
+    QCOMPARE(figures["function"].toString(), QStringLiteral("polynomial:2"));
+    QCOMPARE(figures["phase"].toString(), QStringLiteral("as-found"));
+    QCOMPARE(figures["readings"].toObject()["used"].toInt(), 66);
+    QCOMPARE(figures["split"].toObject()["against"].toString(), QStringLiteral("repeatability"));
+    const Ran text = runWords({"figures", file});
+    for (const char* part : {"Pressure transmitter, serial NV-20318", "As found", "mA", "hysteresis"})
+        QVERIFY2(text.out.find(part) != std::string::npos, part);
+}
+
+void TestSessions::anOptionOverridesAChoice() {
+    Desk desk;
+    const std::string file = desk.file("pt.spanwright", sessionBytes(pressureTransmitter(), {}));
+    const QJsonObject left = runWords({"figures", file, "--phase", "as-left", "--function", "line", "--exclude", "70", "--json"}).json();
+    QCOMPARE(left["phase"].toString(), QStringLiteral("as-left"));
+    QCOMPARE(left["readings"].toObject()["used"].toInt(), 9);
+    QCOMPARE(left["readings"].toObject()["excluded"].toInt(), 1);
+}
+
+void TestSessions::aSoundSessionIsChecked() {
+    Desk desk;
+    const Record record = pressureTransmitter();
+    const Ran ran = runWords({"check", desk.file("pt.spanwright", sessionBytes(record, resultsOf(record)))});
+    QVERIFY2(ran.err.empty(), ran.err.c_str());
+    QCOMPARE(ran.status, 0);
+    QVERIFY2(ran.out.find("76 readings") != std::string::npos, ran.out.c_str());
+}
+
+void TestSessions::aChangedReadingIsFound() {
+    Desk desk;
+    const Record record = pressureTransmitter();
+    QByteArray bytes = sessionBytes(record, resultsOf(record));
+    QVERIFY(bytes.contains("10.391"));
+    bytes.replace("10.391", "10.319");
+    const Ran ran = runWords({"check", desk.file("pt.spanwright", bytes)});
+    QCOMPARE(ran.status, 1);
+    QVERIFY2(ran.err.find("seal does not hold") != std::string::npos, ran.err.c_str());
+    QVERIFY2(ran.err.find("residual_sd was stored as") != std::string::npos, ran.err.c_str());
+}
+
+void TestSessions::aStoredResultThatDiffersIsFound() {
+    Desk desk;
+    const Record record = pressureTransmitter();
+    StoredResults results = resultsOf(record);
+    for (auto& [name, value] : results.figures)
+        if (name == "as-found.residual_sd")
+            value = "0.0047";
+    const Ran ran = runWords({"check", desk.file("pt.spanwright", sessionBytes(record, results))});
+    QCOMPARE(ran.status, 1);
+    QVERIFY2(ran.err.find("as-found.residual_sd was stored as 0.0047") != std::string::npos, ran.err.c_str());
+    QVERIFY(ran.err.find("seal") == std::string::npos);
+}
+
+void TestSessions::whatIsNoSessionIsRefused() {
+    Desk desk;
+    for (const QByteArray& bytes : {QByteArray(), QByteArray("{"), QByteArray("[1, 2]"), QByteArray("x,y\n1,2\n"), QByteArray("{\"a\": 1}")}) {
+        const Ran ran = runWords({"check", desk.file("no.spanwright", bytes)});
+        QCOMPARE(ran.status, 1);
+        QVERIFY2(ran.err.find("no.spanwright") != std::string::npos, ran.err.c_str());
+        QCOMPARE(std::count(ran.err.begin(), ran.err.end(), '\n'), 1);
+    }
+    QCOMPARE(runWords({"check"}).status, 2);
+    QCOMPARE(runWords({"check", desk.path("missing.spanwright")}).status, 1);
+}
+
+void TestSessions::everyTruncationIsRefusedOrWarnedOf() {
+    Desk desk;
+    const Record record = pressureTransmitter();
+    const QByteArray whole = sessionBytes(record, {});
+    for (qsizetype n = 0; n + 2 < whole.size(); n += 97) {
+        const Ran ran = runWords({"check", desk.file("cut.spanwright", whole.left(n))});
+        QVERIFY2(ran.status == 1 && !ran.err.empty(), qPrintable(QString::number(n)));
+    }
+}
+
+QTEST_APPLESS_MAIN(TestSessions)
+#include "tst_sessions.moc"
