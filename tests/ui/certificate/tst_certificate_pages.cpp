@@ -210,7 +210,7 @@ class CertificatePagesTest : public QObject {
                     grey = std::min(grey, qGray(image.pixel(int(x * perMm), y)));
                 return grey;
             };
-            QVERIFY(darkest(100, 25.5, 26.5) < 160); // the rule under the head
+            QVERIFY(darkest(100, 25.5, 26.5) < 190); // the rule under the head
             QVERIFY(darkest(8, 20, 270) > 220);      // the margin
         }
     }
