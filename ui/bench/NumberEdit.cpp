@@ -1,7 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/bench/NumberEdit.h"
 
-#include "ui/bench/TypedNumber.h"
+#include "ui/look/TypedNumber.h"
 #include "ui/look/Look.h"
 
 #include <QEvent>

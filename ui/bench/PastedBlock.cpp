@@ -1,7 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/bench/PastedBlock.h"
 
-#include "ui/bench/TypedNumber.h"
+#include "ui/look/TypedNumber.h"
 
 #include <QStringList>
 

@@ -9,8 +9,8 @@
 
 namespace spanwright {
 
-/// A part of the record as lines of path and text, "standards.2.due" and "2027-03-14", in the order of the file. Things in a
-/// list are counted from 1; what is missing has no text.
+/// A part of the record as lines of path and text, "standards.1.due" and "2027-03-14", in the order of the file. Things in a
+/// list are counted from 0, as in the file; what is missing has no text.
 using FieldLines = std::vector<std::pair<std::string, std::string>>;
 
 namespace detail {
@@ -56,7 +56,7 @@ void flatten(FieldLines& lines, const std::string& path, const std::optional<T>&
 template <class T>
 void flatten(FieldLines& lines, const std::string& path, const std::vector<T>& values) {
     for (std::size_t i = 0; i < values.size(); ++i)
-        flatten(lines, path + "." + std::to_string(i + 1), values[i]);
+        flatten(lines, path + "." + std::to_string(i), values[i]);
 }
 template <HasFields P>
 void flatten(FieldLines& lines, const std::string& path, const P& part) {

@@ -65,6 +65,15 @@ bool Workbench::evaluating() const {
     return d->progress != nullptr;
 }
 
+void Workbench::settle() {
+    if (!evaluating())
+        return;
+    QFuture<Snapshot> newest = d->running.back();
+    newest.waitForFinished();
+    // Its watcher will find that somebody else took the answer.
+    take(newest.resultCount() > 0 ? newest.result() : nullptr);
+}
+
 QUndoStack& Workbench::undoStack() {
     return d->stack;
 }

@@ -30,6 +30,8 @@ class Workbench : public QObject {
     /// Never null; belongs to the newest record that was evaluated, which may be one step behind record().
     [[nodiscard]] std::shared_ptr<const Evaluation> evaluation() const;
     [[nodiscard]] bool evaluating() const;
+    /// Waits for the evaluation that is on its way, so that evaluation() belongs to record().
+    void settle();
     [[nodiscard]] QUndoStack& undoStack();
     [[nodiscard]] std::int64_t now() const;
     /// Initials that stand in the journal.

@@ -1,5 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "ui/bench/TypedNumber.h"
+#include "ui/look/TypedNumber.h"
 
 namespace spanwright {
 

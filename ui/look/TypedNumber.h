@@ -7,7 +7,7 @@
 
 namespace spanwright {
 
-/// A number as it is typed at the bench: a decimal point or a comma, never a thousands separator. Kept digit for digit.
+/// A number as it is typed: a decimal point or a comma, never a thousands separator. Kept digit for digit.
 /// Errors: CellEmpty, ThousandsSeparator, NumberTooLarge, CellNotANumber (facts: text).
 Result<Decimal> parseTyped(const QString& text);
 

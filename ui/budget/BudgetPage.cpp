@@ -1,0 +1,50 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "ui/budget/BudgetPage.h"
+
+#include "ui/budget/ContributionsCard.h"
+#include "ui/budget/LimitsCard.h"
+#include "ui/budget/ManualLinesCard.h"
+#include "ui/budget/ResultsCard.h"
+#include "ui/look/Look.h"
+
+#include <QHBoxLayout>
+#include <QScrollArea>
+#include <QVBoxLayout>
+
+namespace spanwright {
+
+BudgetPage::BudgetPage(Workbench& bench, QWidget* parent)
+    : QWidget(parent), results_(new ResultsCard(bench)), contributions_(new ContributionsCard(bench)), lines_(new ManualLinesCard(bench)) {
+    setObjectName(QStringLiteral("budgetPage"));
+    auto* row = new QHBoxLayout(this);
+    row->setContentsMargins(space::card, space::card, space::card, space::card);
+    row->setSpacing(space::step + space::half);
+    auto* left = new QVBoxLayout;
+    left->setSpacing(space::step + space::half);
+    left->addWidget(results_, 5);
+    left->addWidget(contributions_, 5);
+    row->addLayout(left, 1);
+
+    auto* scroll = new QScrollArea;
+    scroll->setWidgetResizable(true);
+    scroll->setFocusPolicy(Qt::NoFocus);
+    scroll->setHorizontalScrollBarPolicy(Qt::ScrollBarAlwaysOff);
+    auto* sheet = new QWidget;
+    auto* right = new QVBoxLayout(sheet);
+    right->setContentsMargins(0, 0, 0, 0);
+    right->setSpacing(space::step + space::half);
+    right->addWidget(limitsCard(bench));
+    right->addWidget(lines_);
+    right->addStretch(1);
+    scroll->setWidget(sheet);
+    scroll->setFixedWidth(396);
+    row->addWidget(scroll);
+    connect(results_, &ResultsCard::pointChosen, contributions_, &ContributionsCard::showPoint);
+}
+
+void BudgetPage::prepareField(const QString& field) {
+    if (field.startsWith(QLatin1String("budget.lines.")))
+        lines_->choose(field.section(QLatin1Char('.'), 2, 2).toInt());
+}
+
+} // namespace spanwright

@@ -1,0 +1,71 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "core/exchange/ReadingImport.h"
+#include "core/record/Record.h"
+#include "ui/commands/RecordCommand.h"
+
+#include <QByteArray>
+#include <QDialog>
+
+#include <memory>
+#include <optional>
+
+class QCheckBox;
+class QComboBox;
+class QLabel;
+class QPushButton;
+class QSpinBox;
+class QTableView;
+class QVBoxLayout;
+
+namespace spanwright {
+
+class ImportIssues;
+class ImportPreview;
+
+/// Shows how a table of text was understood, with its first rows, and lets everything be changed before anything is taken in.
+class ImportDialog : public QDialog {
+    Q_OBJECT
+
+  public:
+    ImportDialog(const QByteArray& bytes, const QString& origin, const Record& record, QWidget* parent);
+    ~ImportDialog() override;
+    /// The one step that takes the readings in, once the dialog was accepted.
+    [[nodiscard]] std::unique_ptr<RecordCommand> takeCommand();
+
+  private:
+    void guess();
+    void readAll();
+    void showRules();
+    void showDoubts();
+    void roleChosen(std::size_t column, int role);
+    void makeTop(QVBoxLayout* all);
+    [[nodiscard]] CsvWishes wishes() const;
+    [[nodiscard]] std::string_view bytes() const { return {bytes_.constData(), static_cast<std::size_t>(bytes_.size())}; }
+
+    QByteArray bytes_;
+    QString origin_;
+    Record record_; ///< shares its readings; asked for what is already known
+    std::optional<CsvRules> rules_;
+    ImportMapping mapping_;
+    std::optional<ImportedReadings> read_;
+
+    QComboBox* encoding_;
+    QComboBox* separator_;
+    QComboBox* decimal_;
+    QSpinBox* headerRows_;
+    QCheckBox* unitsRow_;
+    QComboBox* phase_;
+    QCheckBox* takeNames_;
+    QLabel* doubts_;
+    QLabel* sum_;
+    QLabel* issuesHead_;
+    ImportPreview* preview_;
+    ImportIssues* issues_;
+    QTableView* issuesView_;
+    QPushButton* accept_;
+    bool changing_ = false;
+};
+
+} // namespace spanwright

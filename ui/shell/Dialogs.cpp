@@ -1,0 +1,103 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "ui/shell/Dialogs.h"
+
+#include <QCoreApplication>
+#include <QDialog>
+#include <QFileDialog>
+#include <QInputDialog>
+#include <QMessageBox>
+#include <QPushButton>
+
+namespace spanwright {
+
+namespace {
+
+QString tr(const char* text) {
+    return QCoreApplication::translate("Dialogs", text);
+}
+
+/// Text from files is text, never markup.
+QMessageBox* messageBox(QWidget* parent, const QString& title, const QString& text) {
+    auto* box = new QMessageBox(parent);
+    box->setWindowTitle(title);
+    box->setTextFormat(Qt::PlainText);
+    box->setText(title);
+    box->setInformativeText(text);
+    return box;
+}
+
+} // namespace
+
+SaveAnswer ScreenDialogs::askSave(QWidget* parent, const QString& name) {
+    QMessageBox* box = messageBox(parent, tr("Save the changes to “%1”?").arg(name),
+                                  tr("What was entered since the last save is lost when it is not saved."));
+    QPushButton* save = box->addButton(tr("&Save"), QMessageBox::AcceptRole);
+    QPushButton* discard = box->addButton(tr("&Do not save"), QMessageBox::DestructiveRole);
+    box->addButton(tr("&Cancel"), QMessageBox::RejectRole);
+    box->setDefaultButton(save);
+    box->exec();
+    const SaveAnswer answer = box->clickedButton() == save      ? SaveAnswer::Save
+                              : box->clickedButton() == discard ? SaveAnswer::Discard
+                                                                : SaveAnswer::Cancel;
+    delete box;
+    return answer;
+}
+
+RecoveryAnswer ScreenDialogs::askRecovery(QWidget* parent, const QString& text) {
+    QMessageBox* box = messageBox(parent, tr("The program was stopped before everything was saved"), text);
+    QPushButton* takeUp = box->addButton(tr("&Take it up"), QMessageBox::AcceptRole);
+    QPushButton* discard = box->addButton(tr("&Throw it away"), QMessageBox::DestructiveRole);
+    QPushButton* later = box->addButton(tr("&Ask again later"), QMessageBox::RejectRole);
+    box->setDefaultButton(takeUp);
+    box->setEscapeButton(later);
+    box->exec();
+    const RecoveryAnswer answer = box->clickedButton() == takeUp    ? RecoveryAnswer::TakeUp
+                                  : box->clickedButton() == discard ? RecoveryAnswer::Discard
+                                                                    : RecoveryAnswer::Later;
+    delete box;
+    return answer;
+}
+
+QString ScreenDialogs::openPath(QWidget* parent, const QString& folder) {
+    return QFileDialog::getOpenFileName(parent, tr("Open a session or a table of readings"), folder,
+                                        tr("Sessions and tables (*.spanwright *.csv *.tsv *.txt *.dat);;Sessions (*.spanwright);;"
+                                           "Tables of text (*.csv *.tsv *.txt *.dat);;All files (*)"));
+}
+
+QString ScreenDialogs::savePath(QWidget* parent, const QString& suggestion) {
+    QFileDialog dialog(parent, tr("Save the session"), suggestion, tr("Sessions (*.spanwright)"));
+    dialog.setAcceptMode(QFileDialog::AcceptSave);
+    dialog.setDefaultSuffix(QStringLiteral("spanwright"));
+    dialog.selectFile(suggestion);
+    return dialog.exec() == QDialog::Accepted ? dialog.selectedFiles().value(0) : QString();
+}
+
+void ScreenDialogs::tell(QWidget* parent, const QString& title, const QString& text) {
+    QMessageBox* box = messageBox(parent, title, text);
+    box->addButton(tr("&Close"), QMessageBox::AcceptRole);
+    box->exec();
+    delete box;
+}
+
+bool ScreenDialogs::confirm(QWidget* parent, const QString& title, const QString& text, const QString& yes) {
+    QMessageBox* box = messageBox(parent, title, text);
+    QPushButton* accept = box->addButton(yes, QMessageBox::AcceptRole);
+    box->addButton(tr("&Cancel"), QMessageBox::RejectRole);
+    box->setDefaultButton(accept);
+    box->exec();
+    const bool accepted = box->clickedButton() == accept;
+    delete box;
+    return accepted;
+}
+
+QString ScreenDialogs::askText(QWidget* parent, const QString& title, const QString& label, const QString& now) {
+    bool accepted = false;
+    const QString text = QInputDialog::getText(parent, title, label, QLineEdit::Normal, now, &accepted);
+    return accepted ? (text.isNull() ? QStringLiteral("") : text) : QString();
+}
+
+bool ScreenDialogs::run(QDialog& dialog) {
+    return dialog.exec() == QDialog::Accepted;
+}
+
+} // namespace spanwright
