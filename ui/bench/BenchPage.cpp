@@ -191,16 +191,16 @@ void BenchPage::refresh() {
     const QString why = now.phase && now.phase->notFitted ? errorText(*now.phase->notFitted) : tr("What the spread is made of appears here once a function is fitted.");
     const QString name = functionText(workbench_.record().choices.function);
     split_->setSplit(now.phase ? now.phase->split : std::nullopt, name, why);
-    splitCard_->setNote(now.phase && now.phase->fit ? readingsText(now.phase->fit->used) : QString());
+    const std::size_t used = now.phase && now.phase->fit ? now.phase->fit->used : 0;
+    splitCard_->setNote(used == 0 ? QString() : used < 100000 ? readingsText(used) : tr("n = %1").arg(used));
     const std::vector<Finding> found = now.phase ? now.phase->findings : std::vector<Finding>{};
     findings_->setFindings(found, workbench_.record(), now.phase && now.phase->fit ? tr("Nothing stands out.") : tr("Findings appear here as readings come in."));
     findingsCard_->setNote(found.empty() ? QString() : QString::number(found.size()));
     QString words;
     if (now.phase && now.phase->fit) {
         const Fit& fit = *now.phase->fit;
-        const QString unit = fit.weights == Weights::Equal ? QLatin1Char(' ') + QString::fromStdString(now.ordinate().unit) : QString();
         words = equationText(fit, {}) + QStringLiteral("      ") +
-                tr("residual s = %1%2, %3 degrees of freedom").arg(significantText(fit.residualSd, 2), unit).arg(fit.degreesOfFreedom);
+                residualText(fit, now);
     }
     equation_->setText(words);
     equation_->setToolTip(now.phase && now.phase->fit ? equationText(*now.phase->fit, now.item) : QString());

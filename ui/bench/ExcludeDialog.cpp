@@ -29,7 +29,7 @@ ExcludeDialog::ExcludeDialog(Workbench& workbench, std::vector<ReadingId> ids, Q
     setObjectName(QStringLiteral("excludeDialog"));
     setAttribute(Qt::WA_DeleteOnClose);
     setWindowTitle(tr("Exclude %1").arg(readingsText(ids_.size())));
-    setMinimumWidth(440);
+    setMinimumWidth(480);
     auto* all = new QVBoxLayout(this);
     all->setContentsMargins(space::card, space::card, space::card, space::card);
     all->setSpacing(space::step);

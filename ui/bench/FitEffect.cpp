@@ -29,6 +29,12 @@ const Coefficient* coefficientNamed(const PhaseEvaluation* phase, const std::str
     return found == all.end() ? nullptr : &*found;
 }
 
+QString coefficientName(const std::string& name, const PhaseEvaluation* phase) {
+    const QString text = QString::fromStdString(name);
+    const bool straight = phase && phase->fit && (phase->fit->function.family == FunctionFamily::Line || phase->fit->function.family == FunctionFamily::Proportional);
+    return straight && name == "b1" ? tr("slope %1").arg(text) : straight && name == "b0" ? tr("constant %1").arg(text) : text;
+}
+
 /// To one digit beyond the first that its uncertainty touches.
 QString coefficientText(const Coefficient* c) {
     if (!c)
@@ -64,7 +70,7 @@ std::vector<EffectRow> effectRows(const PhaseEvaluation* before, const PhaseEval
             if (std::find(names.begin(), names.end(), c.name) == names.end())
                 names.push_back(c.name);
     for (const std::string& name : names)
-        rows.push_back({QString::fromStdString(name), coefficientText(coefficientNamed(before, name)), coefficientText(coefficientNamed(after, name))});
+        rows.push_back({coefficientName(name, after ? after : before), coefficientText(coefficientNamed(before, name)), coefficientText(coefficientNamed(after, name))});
     const auto figure = [&](const QString& name, auto&& of) { rows.push_back({name, of(before), of(after)}); };
     const bool forward = !after || !after->fit || after->fit->direction == FitDirection::Indication;
     const QString unit = QString::fromStdString(forward ? item.indication.unit : item.reference.unit);

@@ -199,6 +199,8 @@ QString ReadingsModel::plannedText(int row, int column) const {
         return typedText(*reading.setPoint);
     if (column == ReferenceValue && reading.reference)
         return typedText(*reading.reference);
+    if (column == ReferenceValue)
+        return reading.setPoint ? tr("at %1").arg(typedText(*reading.setPoint)) : tr("type here");
     if (column == State)
         return planned ? tr("planned") : QString();
     return {};

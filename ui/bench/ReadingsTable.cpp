@@ -65,6 +65,12 @@ ReadingsTable::ReadingsTable(Workbench& workbench, QWidget* parent)
     });
     connect(&workbench_, &Workbench::selectionChanged, this, &ReadingsTable::showSelection);
     connect(model_, &QAbstractItemModel::headerDataChanged, this, &ReadingsTable::fitColumns);
+    // While nobody works in the table it follows what is taken.
+    connect(&workbench_, &Workbench::recordChanged, this, [this, last = -1]() mutable {
+        if (last != model_->taken() && !hasFocus() && !isAncestorOf(QApplication::focusWidget()))
+            scrollTo(model_->nextCell());
+        last = model_->taken();
+    });
     fitColumns();
 }
 

@@ -100,14 +100,16 @@ SplitTable::SplitTable(const VarianceSplit& split, const QString& unit, QWidget*
     for (const SplitLine& line : splitLines(split))
         put(row++, cellsOf(line), QPalette::WindowText, line.level);
     all->addLayout(grid);
-    auto* note = new QLabel(tr("Sums of squares add up from below. F and p are against %1.").arg(splitPartText(split.against)));
+    auto* note = new QLabel(tr("F and p: the signal against the residual, the other sources against %1.").arg(splitPartText(split.against)));
     note->setForegroundRole(inkRole::quiet);
     note->setFont(textFont(TextRole::Small));
     all->addWidget(note);
     auto* buttons = new QDialogButtonBox;
     QPushButton* copy = buttons->addButton(tr("Copy"), QDialogButtonBox::ActionRole);
     copy->setObjectName(QStringLiteral("copySplit"));
-    buttons->addButton(tr("Close"), QDialogButtonBox::RejectRole)->setDefault(true);
+    QPushButton* close = buttons->addButton(tr("Close"), QDialogButtonBox::RejectRole);
+    close->setDefault(true);
+    close->setFocus();
     connect(copy, &QPushButton::clicked, this, [text = splitTableText(split, unit)] { QApplication::clipboard()->setText(text); });
     connect(buttons, &QDialogButtonBox::rejected, this, &QDialog::reject);
     all->addWidget(buttons);

@@ -141,11 +141,7 @@ void LinePlot::annotate() {
         summary = tr("%1, %2 excluded.").arg(readingsText(phase.rows.size())).arg(phase.excluded);
         if (phase.fit) {
             const QString equation = equationText(*phase.fit, subject_.item);
-            const QString spread = tr("residual s = %1 %2, %3 degrees of freedom")
-                                       .arg(significantText(phase.fit->residualSd, 2),
-                                            phase.fit->weights == Weights::Equal ? QString::fromStdString(subject_.ordinate().unit) : QString())
-                                       .arg(phase.fit->degreesOfFreedom)
-                                       .replace(QStringLiteral(" ,"), QStringLiteral(","));
+            const QString spread = residualText(*phase.fit, subject_);
             summary += QLatin1Char(' ') + equation + QStringLiteral("; ") + spread;
             if (factor_ != 1) {
                 notes.push_back({tr("departures from the line drawn ×%1").arg(factor_), Qt::AlignLeft | Qt::AlignTop, false});
@@ -158,8 +154,11 @@ void LinePlot::annotate() {
         if (meanShown_)
             meanLine(strokes);
         const std::size_t row = selection_.size() == 1 ? phase.rows.indexOf(*selection_.begin()) : phase.rows.size();
-        if (row < phase.rows.size() && phase.fit && std::isfinite(phase.rows.residual[row]))
+        if (row < phase.rows.size() && phase.fit && std::isfinite(phase.rows.residual[row])) {
             distancesOf(row, strokes);
+            notes.push_back({distancesText(row), Qt::AlignRight | Qt::AlignBottom, true});
+            summary += QLatin1Char(' ') + notes.back().text + QLatin1Char('.');
+        }
     }
     setStrokes(std::move(strokes));
     setNotes(std::move(notes));
@@ -185,19 +184,25 @@ void LinePlot::distancesOf(std::size_t row, std::vector<PlotStroke>& strokes) co
     if (!meanShown_)
         meanLine(strokes);
     const double step = frame().x.span() / std::max(1.0, frame().area.width()) * 9;
-    const int decimals = residualDecimals(subject_);
     const bool right = x < (frame().x.low + frame().x.high) / 2;
-    const QPointF aside = right ? QPointF(8, 0) : QPointF(-118, 0);
-    const auto upright = [&](double at, double from, double to, const QColor& color, const QString& label, const QPointF& offset) {
-        strokes.push_back({.points = {{at, from}, {at, (from + to) / 2}}, .color = color, .width = 2.2, .label = label, .labelOffset = offset});
-        strokes.push_back({.points = {{at, (from + to) / 2}, {at, to}}, .color = color, .width = 2.2});
-    };
     const double out = right ? step : -step;
-    upright(x + out, mean, fitted, scheme().accent, tr("explained %1").arg(fixedText(fitted - mean, decimals, SignShown::Both)), aside);
-    upright(x + out, fitted, drawn(y, fitted), scheme().warning,
-            tr("residual %1").arg(fixedText(y - fitted, decimals, SignShown::Both)), aside);
-    upright(x - out, mean, drawn(y, fitted), scheme().quiet, tr("total %1").arg(fixedText(y - mean, decimals, SignShown::Both)),
-            right ? QPointF(-108, 0) : QPointF(8, 0));
+    const auto upright = [&](double at, double from, double to, const QColor& color, const QString& word, double offset) {
+        const bool roomy = std::abs(frame().toY(from) - frame().toY(to)) > 30;
+        strokes.push_back({.points = {{at, from}, {at, (from + to) / 2}}, .color = color, .width = 2.4, .label = roomy ? word : QString(), .labelOffset = {offset, 0}});
+        strokes.push_back({.points = {{at, (from + to) / 2}, {at, to}}, .color = color, .width = 2.4});
+    };
+    upright(x + out, mean, fitted, scheme().accent, tr("explained"), right ? 8 : -66);
+    upright(x + out, fitted, drawn(y, fitted), scheme().warning, tr("residual"), right ? 8 : -58);
+    upright(x - out, mean, drawn(y, fitted), scheme().quiet, tr("total"), right ? -42 : 8);
+}
+
+QString LinePlot::distancesText(std::size_t row) const {
+    const double y = subject_.y()[row], fitted = subject_.phase->rows.fitted[row], mean = level();
+    const int decimals = residualDecimals(subject_);
+    const auto signedText = [&](double value) { return fixedText(value, decimals, SignShown::Both); };
+    return tr("Reading %1: total %2 = explained %3 and residual %4 %5")
+        .arg(QString::number(subject_.phase->rows.ids[row]), signedText(y - mean), signedText(fitted - mean), signedText(y - fitted),
+             QString::fromStdString(subject_.ordinate().unit));
 }
 
 } // namespace spanwright

@@ -33,6 +33,7 @@ class LinePlot : public PlotView {
     void rebuild();
     void annotate();
     void distancesOf(std::size_t row, std::vector<PlotStroke>& strokes) const;
+    [[nodiscard]] QString distancesText(std::size_t row) const;
     void meanLine(std::vector<PlotStroke>& strokes) const;
     [[nodiscard]] int suitableFactor() const;
     [[nodiscard]] double drawn(double value, double fitted) const { return fitted + factor_ * (value - fitted); }

@@ -17,7 +17,7 @@ QString tr(const char* text) {
 }
 
 std::vector<PlotStroke> setPointMeans(const VarianceSplit& split) {
-    PlotStroke means{.points = {}, .color = scheme().lackOfFit, .width = 2, .dots = true, .label = tr("means")};
+    PlotStroke means{.points = {}, .color = scheme().lackOfFit, .width = 2, .dots = true, .label = tr("means"), .labelOffset = {8, -14}};
     for (const SetPointMeans& at : split.setPoints)
         means.points.emplace_back(at.setPoint, at.mean);
     return {means};
@@ -46,7 +46,7 @@ std::vector<PlotStroke> runLines(const VarianceSplit& split, bool sloping, const
                          .width = 2,
                          .style = styles[lines.size() % 4],
                          .label = tr("run %1").arg(run.run),
-                         .labelOffset = {-46, 0}});
+                         .labelOffset = {-46.0 - 52.0 * static_cast<double>(lines.size()), 0}});
     }
     return lines;
 }

@@ -21,7 +21,7 @@ QString tr(const char* text) {
 QString numberAndUnit(const std::optional<Decimal>& value, const std::string& unit) {
     if (!value)
         return {};
-    return unit.empty() ? typedText(*value) : typedText(*value) + QLatin1Char(' ') + QString::fromStdString(unit);
+    return unit.empty() ? typedText(*value) : typedText(*value) + QChar(QChar::Nbsp) + QString::fromStdString(unit);
 }
 
 } // namespace
@@ -83,8 +83,8 @@ QString readingText(const PlotSubject& subject, ReadingId id) {
     QString text = parts.join(QStringLiteral(", "));
     const std::size_t at = subject.phase ? subject.phase->rows.indexOf(id) : 0;
     if (subject.phase && at < subject.phase->rows.size() && std::isfinite(subject.phase->rows.residual[at]))
-        text += QStringLiteral("\n") + tr("residual %1 %2").arg(fixedText(subject.phase->rows.residual[at], residualDecimals(subject), SignShown::Both),
-                                                             QString::fromStdString(subject.ordinate().unit));
+        text += QStringLiteral("\n") + tr("residual %1 %2").arg(fixedText(subject.phase->rows.residual[at], residualDecimals(subject), SignShown::Both),
+                                                                QString::fromStdString(subject.ordinate().unit));
     if (const Exclusion* exclusion = subject.exclusions->find(id)) {
         QString why = reasonText(exclusion->reason);
         if (!exclusion->words.empty())
@@ -107,6 +107,14 @@ QString withUnit(const QString& name, const QString& unit) {
 
 QString readingsText(std::size_t count) {
     return count == 1 ? tr("1 reading") : tr("%1 readings").arg(QLocale().toString(static_cast<qulonglong>(count)));
+}
+
+QString residualText(const Fit& fit, const PlotSubject& subject) {
+    QString s = significantText(fit.residualSd, 2);
+    if (fit.weights == Weights::Equal && !subject.ordinate().unit.empty())
+        s += QChar(QChar::Nbsp) + QString::fromStdString(subject.ordinate().unit);
+    return fit.degreesOfFreedom == 1 ? tr("residual s = %1, 1 degree of freedom").arg(s)
+                                     : tr("residual s = %1, %2 degrees of freedom").arg(s).arg(fit.degreesOfFreedom);
 }
 
 QString sentenceCase(QString text) {

@@ -48,6 +48,8 @@ QString quantityText(const Quantity& quantity, FitDirection role);
 QString withUnit(const QString& name, const QString& unit);
 /// "1 reading", "66 readings".
 QString readingsText(std::size_t count);
+/// "residual s = 0.0048 mA, 64 degrees of freedom".
+QString residualText(const Fit& fit, const PlotSubject& subject);
 /// With a capital letter at its beginning, where a name stands alone.
 QString sentenceCase(QString text);
 

@@ -175,7 +175,7 @@ void PlotView::showRange(const AxisRange& x, const AxisRange& y) {
     frame_.y = y;
     const QFontMetricsF metrics(textFont(TextRole::Small));
     const int across = std::max(2, static_cast<int>(frame_.area.width() / 76));
-    const int up = std::max(2, static_cast<int>(frame_.area.height() / (metrics.height() * 2.6)));
+    const int up = std::max(3, static_cast<int>(frame_.area.height() / (metrics.height() * 2.6)));
     Ticks xTicks = roundTicks(x, across), yTicks = roundTicks(y, up);
     std::vector<QString> names;
     if (!content_.xNames.empty()) {

@@ -61,7 +61,7 @@ void PointCloud::refresh() {
 }
 
 bool PointCloud::showsDensity() const {
-    return static_cast<double>(points_.size()) > frame_.area.width() * frame_.area.height() / 8;
+    return static_cast<double>(points_.size()) > std::min(frame_.area.width() * frame_.area.height() / 25, 20000.0);
 }
 
 double PointCloud::markSize() const {

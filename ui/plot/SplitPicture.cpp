@@ -226,8 +226,11 @@ void SplitPicture::paintPart(QPainter& painter, const Part& part) const {
     painter.drawText(QRectF(part.label.topLeft(), QSizeF(part.label.width(), half)), Qt::AlignLeft | Qt::AlignVCenter, sentenceCase(splitPartText(part.part)));
     painter.setFont(textFont(TextRole::Small));
     painter.setPen(scheme().quiet);
-    painter.drawText(QRectF(part.label.left(), part.label.top() + half, part.label.width() + 20, part.label.height() - half),
-                     Qt::AlignLeft | Qt::AlignVCenter, figuresOf(part));
+    const QFontMetricsF metrics(painter.font());
+    QString figures = figuresOf(part);
+    if (metrics.horizontalAdvance(figures) > part.label.width())
+        figures = tr("%1 of noise").arg(shareText(part.share));
+    painter.drawText(QRectF(part.label.left(), part.label.top() + half, part.label.width(), part.label.height() - half), Qt::AlignLeft | Qt::AlignVCenter, figures);
 }
 
 const SplitPicture::Part* SplitPicture::at(const QPointF& place) const {
