@@ -120,7 +120,7 @@ QString weightsText(Weights weights) {
     case Weights::Stated: return tr("weights from stated uncertainties");
     case Weights::Replicates: return tr("weights from replicates");
     case Weights::Proportional: return tr("weights proportional to level");
-    case Weights::VarianceFunction: return tr("weights from a variance function");
+    case Weights::VarianceFunction: return tr("weights from scatter that grows with level");
     }
     return {};
 }
@@ -166,8 +166,7 @@ ChoiceButton* weightsButton(Workbench& workbench, QWidget* parent) {
         QString text = choices.method == Method::BothUncertain ? tr("both uncertain") : choices.method == Method::Robust ? tr("robust") : QString();
         if (text.isEmpty())
             text = choices.weights == Weights::Equal ? tr("equal weights") : choices.weights == Weights::Stated ? tr("stated weights")
-                   : choices.weights == Weights::Replicates ? tr("replicate weights")
-                   : choices.weights == Weights::Proportional ? tr("proportional weights") : tr("variance-function weights");
+                   : choices.weights == Weights::Replicates ? tr("replicate weights") : choices.weights == Weights::Proportional ? tr("proportional weights") : tr("weights by level");
         button->setChoice(text);
     };
     QObject::connect(button->menu(), &QMenu::aboutToShow, button, [button, &workbench] { fillWeights(*button->menu(), workbench); });

@@ -37,7 +37,7 @@ std::vector<PlotStroke> directionMeans(const VarianceSplit& split) {
 
 std::vector<PlotStroke> runLines(const VarianceSplit& split, bool sloping, const AxisRange& x) {
     std::vector<PlotStroke> lines;
-    const double middle = (x.low + x.high) / 2;
+    const double middle = split.setPoints.empty() ? (x.low + x.high) / 2 : (split.setPoints.front().setPoint + split.setPoints.back().setPoint) / 2;
     const Qt::PenStyle styles[] = {Qt::SolidLine, Qt::DashLine, Qt::DotLine, Qt::DashDotLine};
     for (const RunLine& run : split.runs) {
         const double slope = sloping ? run.slope : 0;
