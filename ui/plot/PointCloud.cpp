@@ -142,12 +142,15 @@ void PointCloud::paintDensity(double ratio) {
     const double xScale = frame_.area.width() / frame_.x.span() * ratio, xShift = (frame_.area.left() - origin.x()) * ratio;
     const double yScale = frame_.area.height() / frame_.y.span() * ratio, yShift = (frame_.area.bottom() - origin.y()) * ratio;
     std::uint32_t most = 0;
+    const double* xs = points_.x.data();
+    const double* ys = points_.y.data();
+    const double xFrom = xShift - frame_.x.low * xScale, yFrom = yShift + frame_.y.low * yScale;
     for (std::size_t i = 0; i < points_.size(); ++i) {
-        const double x = (points_.x[i] - frame_.x.low) * xScale + xShift;
-        const double y = yShift - (points_.y[i] - frame_.y.low) * yScale;
+        const double x = xs[i] * xScale + xFrom, y = yFrom - ys[i] * yScale;
         if (!(x >= 0 && x < width && y >= 0 && y < height) || points_.excluded[i])
             continue;
-        most = std::max(most, ++counts[static_cast<std::size_t>(y) * static_cast<std::size_t>(width) + static_cast<std::size_t>(x)]);
+        std::uint32_t& count = counts[static_cast<std::size_t>(static_cast<int>(y) * width + static_cast<int>(x))];
+        most = std::max(most, ++count);
     }
     const QColor ink = scheme().ink;
     std::array<QRgb, 256> shade{};
