@@ -11,8 +11,10 @@ namespace spanwright {
 namespace {
 
 /// Beyond the first a number is questioned; only a number within the second is offered instead. Two neighbouring digits exchanged
-/// change a number by at least nine units of its last digit, so less than `leastSteps` of them is no slip that could be told.
-constexpr double questioned = 3.5, fitting = 3, leastSteps = 8;
+/// change a number by at least nine units of its last digit, so less than `leastSteps` of them is no slip that could be told. Few
+/// readings do not tell hysteresis from scatter, so among them a thousandth of their range is no slip either.
+constexpr double questioned = 3.5, fitting = 3, leastSteps = 8, leastShare = 0.001;
+constexpr std::size_t few = 20;
 
 /// What the other readings of a phase lead to expect: the robust line, and at the same set point in the same direction the median
 /// of their distances from it, so that neither curvature nor hysteresis is taken for a slip. The nearer of both counts.
@@ -37,8 +39,12 @@ class Expectation {
                 usualDecimals_ = places;
             }
         const double step = record.item.resolution ? record.item.resolution->toDouble() : std::pow(10.0, -usualDecimals_);
-        step_ = step;
         line_ = robustLine(x_, y_, step / std::sqrt(12.0));
+        least_ = leastSteps * step;
+        if (line_ && x_.size() < few) {
+            const auto [low, high] = std::minmax_element(x_.begin(), x_.end());
+            least_ = std::max(least_, leastShare * std::abs(line_->slope) * (*high - *low));
+        }
         for (std::size_t i = 0; line_ && i < x_.size(); ++i)
             if (places_[i])
                 local_[*places_[i]].push_back(y_[i] - line_->at(x_[i]));
@@ -54,7 +60,7 @@ class Expectation {
     }
     [[nodiscard]] bool questions(const Reading& reading) const {
         const double y = reading.indication->toDouble();
-        return std::abs(distance(reading, y)) > questioned && std::abs(y - expected(reading)) > leastSteps * step_;
+        return std::abs(distance(reading, y)) > questioned && std::abs(y - expected(reading)) > least_;
     }
     [[nodiscard]] double expected(const Reading& at) const { return line_->at(at.reference->toDouble()) + shift(at); }
     [[nodiscard]] int usualDecimals() const { return usualDecimals_; }
@@ -78,7 +84,7 @@ class Expectation {
     std::map<Place, std::vector<double>> local_;
     std::optional<RobustLine> line_;
     int usualDecimals_ = 0;
-    double step_ = 0;
+    double least_ = 0;
 };
 
 /// Explanations of an indication that lies far off, best first: the simplest slip, then the closest fit. At most three.
