@@ -28,6 +28,12 @@ QString superscript(int exponent) {
     return text;
 }
 
+/// What somebody was to enter and may have left empty.
+QString stated(Sentence& facts, const char* name) {
+    const QString text = facts.plain(name);
+    return text.isEmpty() ? CertificateText::tr("not stated") : text;
+}
+
 QString phaseOf(Sentence& facts) {
     return facts.plain("phase") == QLatin1String("as-left") ? phaseText(Phase::AsLeft) : phaseText(Phase::AsFound);
 }
@@ -43,9 +49,9 @@ QString CertificateText::of(Statement statement, Sentence& facts) {
                   "hysteresis.")
             .arg(digitsText(facts.plain("set_point").toStdString()));
     case Statement::NoAsFound:
-        return tr("Results from before the adjustment are not available: %1.").arg(facts.plain("reason", tr("no reason is stated")));
+        return tr("Results from before the adjustment are not available: %1.").arg(stated(facts, "reason"));
     case Statement::Replaces:
-        return tr("This certificate replaces certificate %1. Reason: %2.").arg(facts.plain("number"), facts.plain("reason", tr("not stated")));
+        return tr("This certificate replaces certificate %1. Reason: %2.").arg(facts.plain("number"), stated(facts, "reason"));
     case Statement::ErrorSign: return tr("Error of indication = indication − value of a perfect item at the reference; correction = −error.");
     case Statement::ExpandedUncertainty:
         return tr("The expanded uncertainty U is the standard uncertainty of measurement multiplied by the coverage factor k stated "
@@ -65,7 +71,7 @@ QString CertificateText::of(Statement statement, Sentence& facts) {
     case Statement::LineOmitted: {
         const auto line = valueOf<DerivedLine>(facts.plain("line").toStdString());
         return tr("Not included in U: %1. Reason: %2.")
-            .arg(line ? derivedLineText(*line) : QString(), facts.plain("reason", tr("not stated")));
+            .arg(line ? derivedLineText(*line) : QString(), stated(facts, "reason"));
     }
     case Statement::DriftNotIncluded: return tr("U holds for the time of calibration; it includes no drift of the item afterwards.");
     case Statement::CorrectionsApplied:
@@ -75,7 +81,7 @@ QString CertificateText::of(Statement statement, Sentence& facts) {
     case Statement::CorrectionsNone: return tr("No corrections are applied for %1.").arg(facts.plain("standards"));
     case Statement::OverdueStandard:
         return tr("The standard %1 was overdue for calibration by %2 days. Reason for its use: %3. Authorised by: %4.")
-            .arg(facts.plain("standard"), facts.plain("days"), facts.plain("reason", tr("not stated")), facts.plain("by", tr("not stated")));
+            .arg(facts.plain("standard"), facts.plain("days"), stated(facts, "reason"), stated(facts, "by"));
     case Statement::NoSampling: return tr("No sampling was involved.");
     case Statement::OnlyThisItem: return tr("The results relate only to the item described and to the conditions stated.");
     case Statement::NotReproducedInPart:

@@ -140,11 +140,12 @@ QString findingText(Sentence& facts, const Record& record, const Evaluation& eva
 
 QString gapText(const ChecklistItem& item, const Record& record, const Evaluation& evaluation) {
     Sentence facts(item.facts);
+    const auto begun = [](QString text) { return text.replace(0, 1, text.left(1).toUpper()); };
     if (item.gap == Gap::SeriousFinding)
-        return findingText(facts, record, evaluation);
+        return begun(findingText(facts, record, evaluation));
     for (const auto& words : {&GapText::ofIdentification, &GapText::ofTraceability, &GapText::ofResults, &GapText::ofRelease})
         if (QString text = words(item.gap, facts); !text.isEmpty())
-            return text.replace(0, 1, text.left(1).toUpper());
+            return begun(std::move(text));
     return {};
 }
 

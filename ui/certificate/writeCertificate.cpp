@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/certificate/writeCertificate.h"
 
+#include "core/evaluate/KeyFigures.h"
+#include "core/session/SessionJson.h"
 #include "ui/certificate/CertificatePages.h"
 #include "ui/certificate/CertificateText.h"
 
@@ -30,6 +32,15 @@ QStringList blockingGaps(const Record& record, const Evaluation& evaluation) {
         if (item.level == GapLevel::Block)
             gaps << gapText(item, record, evaluation);
     return gaps;
+}
+
+CertificateContext certificateContext(const Record& record, const Evaluation& evaluation, const QString& date) {
+    const std::string session = writeSession(record, {SPANWRIGHT_VERSION, keyFigures(evaluation)});
+    constexpr std::string_view key = "\"seal\": \"";
+    const auto at = session.rfind(key);
+    const auto from = at + key.size();
+    const std::string seal = at == std::string::npos ? std::string() : session.substr(from, session.find('"', from) - from);
+    return {"Spanwright " SPANWRIGHT_VERSION, date.toStdString(), seal};
 }
 
 Pages layOutCertificate(const Record& record, const Evaluation& evaluation, const CertificateContext& context) {

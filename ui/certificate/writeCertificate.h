@@ -14,6 +14,10 @@ namespace spanwright {
 /// What still blocks a complete draft, one sentence each.
 QStringList blockingGaps(const Record& record, const Evaluation& evaluation);
 
+/// What the certificate says about its making: this program, the date, and the seal that a session file saved from this record
+/// carries, so that paper and file can be told to belong together.
+CertificateContext certificateContext(const Record& record, const Evaluation& evaluation, const QString& date);
+
 /// The pages of the certificate of a record.
 Pages layOutCertificate(const Record& record, const Evaluation& evaluation, const CertificateContext& context);
 
