@@ -1,8 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/diagnose/EqualVariances.h"
 
-#include <boost/math/distributions/chi_squared.hpp>
-#include <boost/math/distributions/fisher_f.hpp>
+#include "core/fit/Quantiles.h"
 
 #include <algorithm>
 #include <cmath>
@@ -70,7 +69,7 @@ std::optional<TestResult> bartlettOf(const std::vector<MeanAndSquares>& groups) 
     TestResult result;
     result.statistic = std::max(0.0, (freedom * std::log(squares / freedom) - logs) / (1 + (inverse - 1 / freedom) / (3 * (k - 1))));
     result.df = static_cast<int>(groups.size()) - 1;
-    result.p = boost::math::cdf(boost::math::complement(boost::math::chi_squared(k - 1), result.statistic));
+    result.p = chiSquaredAbove(result.statistic, k - 1);
     return result;
 }
 
@@ -95,15 +94,14 @@ std::optional<TestResult> leveneOf(std::vector<std::vector<double>>& groups) {
     TestResult result;
     result.statistic = (between / (k - 1)) / (within / (n - k));
     result.df = static_cast<int>(parts.size()) - 1;
-    result.p = boost::math::cdf(boost::math::complement(boost::math::fisher_f(k - 1, n - k), result.statistic));
+    result.p = fAbove(result.statistic, k - 1, n - k);
     return result;
 }
 
 } // namespace
 
 double cochranCriticalValue(double groups, double n, double level) {
-    const boost::math::fisher_f fisher(n - 1, (groups - 1) * (n - 1));
-    const double f = boost::math::quantile(boost::math::complement(fisher, level / groups));
+    const double f = fQuantileAbove(level / groups, n - 1, (groups - 1) * (n - 1));
     return 1 / (1 + (groups - 1) / f);
 }
 
@@ -190,7 +188,7 @@ std::optional<TestResult> breuschPagan(std::span<const double> u, const std::vec
     TestResult result;
     result.statistic = static_cast<double>(n) * explained / total;
     result.df = static_cast<int>(basis.size());
-    result.p = boost::math::cdf(boost::math::complement(boost::math::chi_squared(*result.df), result.statistic));
+    result.p = chiSquaredAbove(result.statistic, *result.df);
     return result;
 }
 

@@ -1,10 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/diagnose/FindingRules.h"
 
+#include "core/fit/Quantiles.h"
 #include "core/split/FunctionBasis.h"
-
-#include <boost/math/distributions/fisher_f.hpp>
-#include <boost/math/distributions/students_t.hpp>
 
 #include <algorithm>
 #include <cmath>
@@ -99,7 +97,7 @@ void highestTerm(const FindingsInput& input, std::vector<Finding>& found) {
     if (!(last.standardUncertainty > 0))
         return;
     const double t = last.value / last.standardUncertainty;
-    const double p = 2 * boost::math::cdf(boost::math::complement(boost::math::students_t(fit.degreesOfFreedom), std::abs(t)));
+    const double p = 2 * studentAbove(std::abs(t), fit.degreesOfFreedom);
     // Without the term the residual sum of squares is larger by t² s², over one degree of freedom more. With readings rounded to
     // a coarse step the rounding alone can look like a term, so a gain below the standard uncertainty of the step does not count.
     const double before = std::sqrt((fit.residualSs + t * t * fit.residualSd * fit.residualSd) / (fit.degreesOfFreedom + 1));
@@ -156,7 +154,7 @@ void throughZero(const FindingsInput& input, std::vector<Finding>& found) {
     if (!(size > 1e-12 * static_cast<double>(n)) || !(rest > 0))
         return;
     const double f = gain / (rest / (fit.degreesOfFreedom - 1));
-    const double p = boost::math::cdf(boost::math::complement(boost::math::fisher_f(1, fit.degreesOfFreedom - 1), f));
+    const double p = fAbove(f, 1, fit.degreesOfFreedom - 1);
     if (!(p < certain))
         return;
     Finding finding;

@@ -2,8 +2,7 @@
 #include "core/diagnose/Linearity.h"
 
 #include "core/diagnose/ResidualColumn.h"
-
-#include <boost/math/distributions/fisher_f.hpp>
+#include "core/fit/Quantiles.h"
 
 namespace spanwright {
 namespace {
@@ -58,7 +57,7 @@ std::optional<TestResult> test(const Sample& sample, const PairColumn& weight) {
     const int freedom = static_cast<int>(n) - 3;
     result.df = freedom;
     result.statistic = rounded(T(gain / rest)) * freedom;
-    result.p = boost::math::cdf(boost::math::complement(boost::math::fisher_f(1, freedom), result.statistic));
+    result.p = fAbove(result.statistic, 1, freedom);
     return result;
 }
 

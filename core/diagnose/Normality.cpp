@@ -1,7 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/diagnose/Normality.h"
 
-#include <boost/math/distributions/normal.hpp>
+#include "core/fit/Quantiles.h"
 
 #include <algorithm>
 #include <cmath>
@@ -32,12 +32,11 @@ std::vector<double> weightsOf(std::size_t n) {
     const std::size_t half = n / 2;
     if (n == 3)
         return {std::numbers::sqrt2 / 2};
-    const boost::math::normal normal;
     const double size = static_cast<double>(n);
     std::vector<double> m(half);
     double squares = 0;
     for (std::size_t i = 0; i < half; ++i) {
-        m[i] = -boost::math::quantile(normal, (static_cast<double>(i) + 0.625) / (size + 0.25));
+        m[i] = normalQuantileAbove((static_cast<double>(i) + 0.625) / (size + 0.25));
         squares += 2 * m[i] * m[i];
     }
     const double root = 1 / std::sqrt(size), norm = std::sqrt(squares);

@@ -2,8 +2,7 @@
 #include "core/diagnose/Outliers.h"
 
 #include "core/diagnose/ResidualColumn.h"
-
-#include <boost/math/distributions/students_t.hpp>
+#include "core/fit/Quantiles.h"
 
 #include <algorithm>
 #include <cmath>
@@ -92,8 +91,7 @@ int outlierCount(const std::vector<ExtremeTrial>& trials) {
 
 double grubbsCriticalValue(std::size_t n, double level) {
     const double size = static_cast<double>(n);
-    const boost::math::students_t student(size - 2);
-    const double t = boost::math::quantile(boost::math::complement(student, level / (2 * size)));
+    const double t = studentQuantileAbove(level / (2 * size), size - 2);
     return (size - 1) / std::sqrt(size) * std::sqrt(t * t / (size - 2 + t * t));
 }
 

@@ -3,8 +3,7 @@
 
 #include "core/diagnose/Outliers.h"
 #include "core/diagnose/ResidualColumn.h"
-
-#include <boost/math/distributions/fisher_f.hpp>
+#include "core/fit/Quantiles.h"
 
 #include <algorithm>
 #include <cmath>
@@ -66,8 +65,7 @@ void influential(const FindingsInput& input, std::vector<Finding>& found) {
     const Residuals& residuals = *input.residuals;
     if (fit.degreesOfFreedom < 2 || residuals.leverage.size() != residuals.e.size() || !(fit.residualSd > 0))
         return;
-    const boost::math::fisher_f fisher(static_cast<double>(fit.terms()), fit.degreesOfFreedom);
-    const double limit = boost::math::quantile(fisher, 0.5);
+    const double limit = fQuantileAbove(0.5, static_cast<double>(fit.terms()), fit.degreesOfFreedom);
     Finding finding;
     finding.code = FindingCode::Influential;
     finding.severity = Severity::Attention;

@@ -1,7 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/diagnose/FindingRules.h"
 
-#include <boost/math/distributions/students_t.hpp>
+#include "core/fit/Quantiles.h"
 
 #include <algorithm>
 #include <cmath>
@@ -12,7 +12,7 @@ namespace {
 constexpr double certain = 0.01;
 
 double twoSided(double t, double freedom) {
-    return 2 * boost::math::cdf(boost::math::complement(boost::math::students_t(freedom), std::abs(t)));
+    return 2 * studentAbove(std::abs(t), freedom);
 }
 
 /// p of the gap between rising and falling: F against repeatability, or, where each was read once, Student's t of the gaps over the

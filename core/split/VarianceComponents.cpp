@@ -1,8 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/split/VarianceComponents.h"
 
-#include <boost/math/distributions/chi_squared.hpp>
-#include <boost/math/distributions/fisher_f.hpp>
+#include "core/fit/Quantiles.h"
 
 #include <cmath>
 
@@ -16,10 +15,9 @@ VarianceComponent repeatabilityComponent(const SplitRow& row, double meanVarianc
     component.part = SplitPart::Repeatability;
     component.estimate = component.variance = row.ss / row.df * meanVarianceOfReading;
     component.degreesOfFreedom = row.df;
-    const boost::math::chi_squared chi(row.df);
     const double sum = row.ss * meanVarianceOfReading;
-    component.low = std::sqrt(sum / boost::math::quantile(boost::math::complement(chi, tail)));
-    component.high = std::sqrt(sum / boost::math::quantile(chi, tail));
+    component.low = std::sqrt(sum / chiSquaredQuantileAbove(tail, row.df));
+    component.high = std::sqrt(sum / chiSquaredQuantileAbove(1 - tail, row.df));
     return component;
 }
 
@@ -37,12 +35,9 @@ VarianceComponent randomComponent(SplitPart part, const SplitRow& row, const Spl
     if (!(errorMs > 0))
         return component;
     const double f = ms / errorMs;
-    const boost::math::fisher_f fisher(row.df, error.df);
-    const boost::math::chi_squared chi(row.df);
-    const double upperF = boost::math::quantile(boost::math::complement(fisher, tail));
-    const double lowerF = boost::math::quantile(fisher, tail);
-    const double low = row.ss * (1 - upperF / f) / (weight * boost::math::quantile(boost::math::complement(chi, tail)));
-    const double high = row.ss * (1 - lowerF / f) / (weight * boost::math::quantile(chi, tail));
+    const double upperF = fQuantileAbove(tail, row.df, error.df), lowerF = 1 / fQuantileAbove(tail, error.df, row.df);
+    const double low = row.ss * (1 - upperF / f) / (weight * chiSquaredQuantileAbove(tail, row.df));
+    const double high = row.ss * (1 - lowerF / f) / (weight * chiSquaredQuantileAbove(1 - tail, row.df));
     component.low = std::sqrt(std::max(0.0, low));
     component.high = std::sqrt(std::max(0.0, high));
     return component;

@@ -1,11 +1,10 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/split/VarianceSplit.h"
 
+#include "core/fit/Quantiles.h"
 #include "core/split/AdjustedLackOfFit.h"
 #include "core/split/NoiseChain.h"
 #include "core/split/VarianceComponents.h"
-
-#include <boost/math/distributions/fisher_f.hpp>
 
 #include <cmath>
 
@@ -31,8 +30,7 @@ void testAgainst(SplitRow& tested, const SplitRow& error, double floor) {
     if (tested.df <= 0 || error.df <= 0 || !(error.ss > floor))
         return;
     tested.f = (tested.ss / tested.df) / (error.ss / error.df);
-    const boost::math::fisher_f fisher(tested.df, error.df);
-    tested.p = boost::math::cdf(boost::math::complement(fisher, *tested.f));
+    tested.p = fAbove(*tested.f, tested.df, error.df);
 }
 
 void testAgainst(std::optional<SplitRow>& tested, const std::optional<SplitRow>& error, double floor) {
