@@ -19,6 +19,7 @@ struct FitTask {
     const PairColumn& uy;
     std::shared_ptr<const FunctionModel> model;
     Weighting weighting;
+    double low = 0, high = 0; ///< range of the abscissae
 };
 
 /// A model with its β, and the linear problem at the solution, which carries covariance, residuals and leverages.

@@ -4,12 +4,14 @@
 namespace spanwright {
 
 PolynomialModel::PolynomialModel(std::size_t degree, PolynomialConstant constant, double low, double high)
-    : terms_(constant == PolynomialConstant::With ? degree + 1 : degree), constant_(constant), centre_(low + (high - low) / 2),
-      half_(high > low ? (high - low) / 2 : 1.0) {}
+    : PolynomialModel(degree, constant, DoubleDouble(low + (high - low) / 2), DoubleDouble(high > low ? (high - low) / 2 : 1.0)) {}
+
+PolynomialModel::PolynomialModel(std::size_t degree, PolynomialConstant constant, const DoubleDouble& centre, const DoubleDouble& half)
+    : terms_(constant == PolynomialConstant::With ? degree + 1 : degree), constant_(constant), centre_(centre), half_(half) {}
 
 double PolynomialModel::derivativeOf(double x, const std::vector<double>& beta) const {
     // d/dt Σ β_k T_k = Σ k β_k U_{k−1}
-    const double t = (x - centre_) / half_;
+    const double t = scaled(x);
     double u = 1.0, before = 0.0, sum = 0.0;
     for (std::size_t k = 1; k < terms_; ++k) {
         sum += static_cast<double>(k) * beta[k] * u;
@@ -17,7 +19,7 @@ double PolynomialModel::derivativeOf(double x, const std::vector<double>& beta) 
         before = u;
         u = next;
     }
-    const double slope = sum / half_;
+    const double slope = sum / half_.x[0];
     return hasConstant() ? slope : chebyshevSum(t, beta) + x * slope;
 }
 
@@ -25,7 +27,7 @@ ReportedCoefficients PolynomialModel::reported(const std::vector<DoubleDouble>& 
     const std::size_t p = terms_;
     // Row k of `power`: T_k(t(x)) in powers of x, by T_k = 2 t T_{k−1} − T_{k−2} with t = x/half − centre/half.
     const DoubleDouble scale = DoubleDouble(1.0) / half_;
-    const DoubleDouble shift = -DoubleDouble(centre_) / half_;
+    const DoubleDouble shift = -centre_ / half_;
     std::vector<DoubleDouble> power(p * p, 0.0);
     for (std::size_t k = 0; k < p; ++k) {
         if (k == 0) {

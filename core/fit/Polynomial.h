@@ -13,6 +13,8 @@ enum class PolynomialConstant { With, Without };
 class PolynomialModel final : public ModelOf<PolynomialModel> {
   public:
     PolynomialModel(std::size_t degree, PolynomialConstant constant, double low, double high);
+    /// With t = (x − centre)/half as given.
+    PolynomialModel(std::size_t degree, PolynomialConstant constant, const DoubleDouble& centre, const DoubleDouble& half);
 
     [[nodiscard]] std::size_t terms() const override { return terms_; }
     [[nodiscard]] bool hasConstant() const override { return constant_ == PolynomialConstant::With; }
@@ -20,7 +22,7 @@ class PolynomialModel final : public ModelOf<PolynomialModel> {
 
     template <class T>
     [[nodiscard]] std::vector<T> gradientOf(const T& x, const std::vector<T>&) const {
-        const T t = (x - centre_) / half_;
+        const T t = scaled(x);
         std::vector<T> basis(terms_);
         for (std::size_t k = 0; k < terms_; ++k)
             basis[k] = k == 0 ? T(1.0) : k == 1 ? t : 2.0 * t * basis[k - 1] - basis[k - 2];
@@ -31,12 +33,14 @@ class PolynomialModel final : public ModelOf<PolynomialModel> {
     }
     template <class T>
     [[nodiscard]] T valueOf(const T& x, const std::vector<T>& beta) const {
-        const T sum = chebyshevSum<T>((x - centre_) / half_, beta);
+        const T sum = chebyshevSum<T>(scaled(x), beta);
         return hasConstant() ? sum : x * sum;
     }
     [[nodiscard]] double derivativeOf(double x, const std::vector<double>& beta) const;
 
   private:
+    [[nodiscard]] DoubleDouble scaled(const DoubleDouble& x) const { return (x - centre_) / half_; }
+    [[nodiscard]] double scaled(double x) const { return ((x - centre_.x[0]) - centre_.x[1]) / half_.x[0]; }
     /// Σ β_k T_k(t) by Clenshaw's recurrence.
     template <class T>
     [[nodiscard]] T chebyshevSum(const T& t, const std::vector<T>& beta) const {
@@ -51,7 +55,7 @@ class PolynomialModel final : public ModelOf<PolynomialModel> {
 
     std::size_t terms_;
     PolynomialConstant constant_;
-    double centre_, half_;
+    DoubleDouble centre_, half_;
 };
 
 } // namespace spanwright

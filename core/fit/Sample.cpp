@@ -1,7 +1,10 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/fit/Sample.h"
 
+#include "core/fit/SetPoints.h"
+
 #include <algorithm>
+#include <cstring>
 #include <numeric>
 
 namespace spanwright {
@@ -48,19 +51,6 @@ CorrectionTable tableOf(const std::vector<Standard>& standards, StandardRole rol
     return table;
 }
 
-/// Set points: equal values share a group, groups in rising order.
-void groupByValue(Sample& sample, const PairColumn& value) {
-    std::vector<std::uint32_t> order(value.size());
-    std::iota(order.begin(), order.end(), 0u);
-    std::sort(order.begin(), order.end(), [&](std::uint32_t a, std::uint32_t b) { return value[a] < value[b]; });
-    sample.group.resize(value.size());
-    for (std::size_t i = 0; i < order.size(); ++i) {
-        if (i == 0 || value[order[i]] != value[order[i - 1]])
-            sample.groupValue.push_back(value.high[order[i]]);
-        sample.group[order[i]] = static_cast<std::int32_t>(sample.groupValue.size()) - 1;
-    }
-}
-
 void warnInexact(Sample& sample, const DecimalColumn& column, const char* name) {
     if (!column.exact())
         sample.warnings.push_back({WarningCode::ColumnNotExact, {{"column", name}}});
@@ -81,12 +71,26 @@ struct Chosen {
     std::size_t excluded = 0, incomplete = 0;
 };
 
+/// Whether any byte differs from `value`.
+template <class T>
+bool anyOther(const std::vector<T>& bytes, T value) {
+    static_assert(sizeof(T) == 1);
+    return !bytes.empty() && (bytes.front() != value || std::memcmp(bytes.data(), bytes.data() + 1, bytes.size() - 1) != 0);
+}
+
 Chosen chooseRows(const Record& record, Phase phase, Take take) {
     const ReadingColumns& readings = *record.readings;
     const bool needsReference = record.choices.function.family != FunctionFamily::Constant;
+    const bool allComplete = readings.indication().missing() == 0 && (!needsReference || readings.reference().missing() == 0);
     const auto& excluded = record.exclusions->all();
-    auto next = excluded.begin();
     Chosen chosen;
+    if (allComplete && (excluded.empty() || take == Take::ExcludedToo) && !anyOther(readings.phases(), phase)) {
+        chosen.rows.resize(readings.size());
+        std::iota(chosen.rows.begin(), chosen.rows.end(), std::size_t{0});
+        return chosen;
+    }
+    chosen.rows.reserve(readings.size());
+    auto next = excluded.begin();
     for (std::size_t row = 0; row < readings.size(); ++row) {
         while (next != excluded.end() && next->id < readings.ids()[row])
             ++next;
@@ -104,6 +108,82 @@ Chosen chooseRows(const Record& record, Phase phase, Take take) {
     return chosen;
 }
 
+/// A column of `rows` on its grid: the column itself when every row counts, else kept in `kept`.
+std::span<const std::int64_t> gridOf(const DecimalColumn& column, const std::vector<std::size_t>& rows, std::vector<std::int64_t>& kept) {
+    if (rows.size() == column.size())
+        return column.grid();
+    kept.reserve(rows.size());
+    for (const std::size_t row : rows)
+        kept.push_back(column.grid()[row]);
+    return kept;
+}
+
+PairColumn plainValues(std::span<const std::int64_t> grid, int scale) {
+    // Both exact below 2^53 and 10^22, so that the quotient is the nearest double; beyond, within one unit of the last place.
+    const double divisor = toDouble(powerOfTen(scale));
+    PairColumn column;
+    column.high.resize(grid.size());
+    for (std::size_t i = 0; i < grid.size(); ++i)
+        column.high[i] = static_cast<double>(grid[i]) / divisor;
+    return column;
+}
+
+/// Very many readings on exact grids: plain doubles beside them, set points by their integers.
+void fillMany(Sample& sample, const Record& record) {
+    const ReadingColumns& readings = *record.readings;
+    auto grids = std::make_shared<ExactGrids>();
+    grids->columns = record.readings;
+    grids->referenceScale = readings.reference().scale();
+    grids->indicationScale = readings.indication().scale();
+    grids->reference = gridOf(readings.reference(), sample.rows, grids->keptReference);
+    grids->indication = gridOf(readings.indication(), sample.rows, grids->keptIndication);
+    sample.reference = plainValues(grids->reference, grids->referenceScale);
+    sample.indication = plainValues(grids->indication, grids->indicationScale);
+    if (readings.setPoint().missing() == readings.setPoint().size()) {
+        groupByGrid(sample, grids->reference, grids->referenceScale);
+    } else if (readings.setPoint().missing() == 0 && readings.setPoint().exact()) {
+        std::vector<std::int64_t> kept;
+        groupByGrid(sample, gridOf(readings.setPoint(), sample.rows, kept), readings.setPoint().scale());
+    } else {
+        PairColumn setPoint;
+        for (std::size_t i = 0; i < sample.size(); ++i)
+            setPoint.push_back(readings.setPoint().has(sample.rows[i]) ? readings.setPoint().toDoubleDouble(sample.rows[i]) : sample.reference[i]);
+        groupByValue(sample, setPoint);
+    }
+    sample.grids = std::move(grids);
+}
+
+void fillFew(Sample& sample, const Record& record, const CorrectionTable& referenceTable, const CorrectionTable& indicationTable) {
+    const ReadingColumns& readings = *record.readings;
+    PairColumn setPoint;
+    for (const std::size_t row : sample.rows) {
+        const DoubleDouble reference = readings.reference().has(row)
+                                           ? referenceTable.corrected(readings.reference().toDoubleDouble(row))
+                                           : DoubleDouble(0.0);
+        sample.reference.push_back(reference);
+        sample.indication.push_back(indicationTable.corrected(readings.indication().toDoubleDouble(row)));
+        setPoint.push_back(readings.setPoint().has(row) ? readings.setPoint().toDoubleDouble(row) : reference);
+    }
+    groupByValue(sample, setPoint);
+}
+
+void fillPlaces(Sample& sample, const ReadingColumns& readings) {
+    bool runKnown = false;
+    for (const std::size_t row : sample.rows)
+        runKnown = runKnown || readings.runs()[row] != 0;
+    if (runKnown)
+        for (const std::size_t row : sample.rows)
+            sample.run.push_back(readings.runs()[row]);
+    if (!anyOther(readings.directions(), Direction::Unknown))
+        return;
+    bool directionKnown = false;
+    for (const std::size_t row : sample.rows)
+        directionKnown = directionKnown || readings.directions()[row] != Direction::Unknown;
+    if (directionKnown)
+        for (const std::size_t row : sample.rows)
+            sample.direction.push_back(readings.directions()[row]);
+}
+
 Sample sampleOf(const Record& record, Phase phase, Take take) {
     const ReadingColumns& readings = *record.readings;
     Chosen chosen = chooseRows(record, phase, take);
@@ -114,28 +194,15 @@ Sample sampleOf(const Record& record, Phase phase, Take take) {
     sample.indicationUnit = record.item.indication.unit;
     const CorrectionTable referenceTable = tableOf(record.standards, StandardRole::Reference);
     const CorrectionTable indicationTable = tableOf(record.standards, StandardRole::Indication);
-
-    PairColumn setPoint;
-    bool runKnown = false, directionKnown = false;
-    for (const std::size_t row : sample.rows) {
-        const DoubleDouble reference = readings.reference().has(row)
-                                           ? referenceTable.corrected(readings.reference().toDoubleDouble(row))
-                                           : DoubleDouble(0.0);
-        sample.reference.push_back(reference);
-        sample.indication.push_back(indicationTable.corrected(readings.indication().toDoubleDouble(row)));
-        setPoint.push_back(readings.setPoint().has(row) ? readings.setPoint().toDoubleDouble(row) : reference);
-        runKnown = runKnown || readings.runs()[row] != 0;
-        directionKnown = directionKnown || readings.directions()[row] != Direction::Unknown;
-    }
+    const bool onGrids = readings.reference().exact() && readings.indication().exact() && readings.reference().missing() == 0 &&
+                         referenceTable.at.empty() && indicationTable.at.empty();
+    if (sample.size() >= ManyReadings && onGrids)
+        fillMany(sample, record);
+    else
+        fillFew(sample, record, referenceTable, indicationTable);
     sample.uReference = statedFor(readings.uReference(), sample.rows);
     sample.uIndication = statedFor(readings.uIndication(), sample.rows);
-    groupByValue(sample, setPoint);
-    if (runKnown)
-        for (const std::size_t row : sample.rows)
-            sample.run.push_back(readings.runs()[row]);
-    if (directionKnown)
-        for (const std::size_t row : sample.rows)
-            sample.direction.push_back(readings.directions()[row]);
+    fillPlaces(sample, readings);
 
     if (chosen.incomplete > 0)
         sample.warnings.push_back({WarningCode::IncompleteReadings, {{"count", std::to_string(chosen.incomplete)}}});

@@ -6,6 +6,7 @@
 #include "core/record/Record.h"
 
 #include <cstdint>
+#include <memory>
 #include <span>
 #include <string>
 #include <vector>
@@ -26,6 +27,17 @@ struct PairColumn {
     }
 };
 
+/// From this many readings on they are held as plain doubles beside their exact grids, and fitted in streams.
+inline constexpr std::size_t ManyReadings = 200'000;
+
+/// The numbers of very many readings as integers on their decimal grids, value = integer · 10^(−scale).
+struct ExactGrids {
+    std::span<const std::int64_t> reference, indication;
+    int referenceScale = 0, indicationScale = 0;
+    Shared<ReadingColumns> columns;                            ///< keeps what the spans look at,
+    std::vector<std::int64_t> keptReference, keptIndication;   ///< or these do, where not every row counts
+};
+
 /// The readings of one phase that count (complete and not excluded), in the order taken, with the standard's correction applied
 /// to the reference where its table is to be applied.
 struct Sample {
@@ -36,6 +48,7 @@ struct Sample {
     std::vector<double> groupValue;        ///< set points in rising order: the stated one, else the reference itself
     std::vector<std::int32_t> run;         ///< empty when no run is known
     std::vector<Direction> direction;      ///< empty when no direction is known
+    std::shared_ptr<const ExactGrids> grids; ///< with ManyReadings on exact grids and no correction to apply
     std::string referenceUnit, indicationUnit;
     std::size_t excluded = 0;              ///< complete readings of the phase that were left out
     std::vector<Warning> warnings;         ///< ColumnNotExact, IncompleteReadings, …

@@ -15,7 +15,7 @@ namespace {
 
 /// Total about the weighted mean (or zero), regression as Σ w (ŷ − centre)², both free of cancellation. Where residuals and fitted
 /// values are not orthogonal (iterated fits), regression is what the residual leaves of the total.
-void fillSums(Fit& fit, const FitTask& task, const LinearSolution& solution) {
+SumsOfSquares sumsOf(const FitTask& task, const LinearSolution& solution) {
     const bool orthogonal = task.model->linear() && task.choices.method == Method::LeastSquares;
     const std::size_t n = task.sample.size();
     const auto weight = [&](std::size_t i) {
@@ -39,13 +39,17 @@ void fillSums(Fit& fit, const FitTask& task, const LinearSolution& solution) {
         regression = total - solution.residualSs;
     if (regression <= total * 1e-26)
         regression = 0.0;
-    fit.totalSs = toDouble(total);
-    fit.regressionSs = toDouble(regression);
+    return {total, regression};
+}
+
+void fillSums(Fit& fit, const FitTask& task, const LinearSolution& solution, const SumsOfSquares& sums) {
+    fit.totalSs = toDouble(sums.total);
+    fit.regressionSs = toDouble(sums.regression);
     fit.residualSs = toDouble(solution.residualSs);
-    fit.totalDf = static_cast<int>(n) - (task.model->hasConstant() ? 1 : 0);
+    fit.totalDf = static_cast<int>(fit.used) - (task.model->hasConstant() ? 1 : 0);
     fit.regressionDf = static_cast<int>(fit.terms()) - (task.model->hasConstant() ? 1 : 0);
-    if (total > 0.0)
-        fit.rSquared = toDouble(regression / total);
+    if (sums.total > 0.0)
+        fit.rSquared = toDouble(sums.regression / sums.total);
 }
 
 /// Coefficients as reported, with J·scale·(AᵀWA)⁻¹·Jᵀ in double-double, rounded once.
@@ -124,8 +128,8 @@ void describe(Fit& fit, const FitTask& task) {
     fit.used = task.sample.size();
     fit.excluded = task.sample.excluded;
     fit.setPoints = task.sample.groupValue.size();
-    fit.low = *std::min_element(task.x.high.begin(), task.x.high.end());
-    fit.high = *std::max_element(task.x.high.begin(), task.x.high.end());
+    fit.low = task.low;
+    fit.high = task.high;
     const int df = static_cast<int>(fit.used - task.model->terms());
     fit.degreesOfFreedom = df;
     const double tail = toDouble((1.0 - task.choices.coverage.toDoubleDouble()) / 2.0);
@@ -135,16 +139,14 @@ void describe(Fit& fit, const FitTask& task) {
 
 } // namespace
 
-FitOutcome assembleFit(const FitTask& task, SolvedModel solved) {
-    LinearSolution& solution = solved.linear;
-    dropRounding(solution, task.y);
-    FitOutcome outcome;
-    Fit& fit = outcome.fit;
+Fit assembleFigures(const FitTask& task, SolvedModel solved, const SumsOfSquares& sums) {
+    const LinearSolution& solution = solved.linear;
+    Fit fit;
     describe(fit, task);
     const int df = fit.degreesOfFreedom;
     const DoubleDouble scale = covarianceScale(task, solved, df);
     fillCoefficients(fit, task, solved, scale);
-    fillSums(fit, task, solution);
+    fillSums(fit, task, solution, sums);
     fit.residualSd = df > 0 ? toDouble(sqrt(solution.residualSs / static_cast<double>(df))) : std::numeric_limits<double>::quiet_NaN();
     if (solved.robustSd)
         fit.residualSd = *solved.robustSd;
@@ -162,8 +164,14 @@ FitOutcome assembleFit(const FitTask& task, SolvedModel solved) {
         fit.warnings.push_back({WarningCode::ApproximateMethod, {{"figure", "standard_uncertainty"}, {"method", "robust"}}});
     fit.weighedDown = std::move(solved.weighedDown);
     fit.curve = std::make_shared<ModelCurve>(task.model, solved.beta, solution.inverseRoot, toDouble(scale), task.weighting.profile);
-    outcome.residuals = residualsOf(task, solution);
-    return outcome;
+    return fit;
+}
+
+FitOutcome assembleFit(const FitTask& task, SolvedModel solved) {
+    dropRounding(solved.linear, task.y);
+    const SumsOfSquares sums = sumsOf(task, solved.linear);
+    Residuals residuals = residualsOf(task, solved.linear);
+    return {assembleFigures(task, std::move(solved), sums), std::move(residuals)};
 }
 
 } // namespace spanwright

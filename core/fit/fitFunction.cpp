@@ -5,6 +5,7 @@
 #include "core/fit/CalibrationFunction.h"
 #include "core/fit/Robust.h"
 #include "core/fit/assembleFit.h"
+#include "core/fit/fitMany.h"
 #include "core/fit/solveModel.h"
 
 #include <algorithm>
@@ -80,6 +81,10 @@ Result<FitOutcome> fitFunction(const Sample& sample, const Choices& choices) {
     const bool indication = direction == FitDirection::Indication;
     const PairColumn& x = indication ? sample.reference : sample.indication;
     const PairColumn& y = indication ? sample.indication : sample.reference;
+    if (sample.grids) {
+        if (auto streamed = fitMany(sample, choices))
+            return std::move(*streamed);
+    }
     const auto [low, high] = std::minmax_element(x.high.begin(), x.high.end());
     auto model = makeModel(choices.function, {*low, *high, &sample, direction});
     if (!model)
@@ -92,7 +97,9 @@ Result<FitOutcome> fitFunction(const Sample& sample, const Choices& choices) {
                  indication ? sample.uReference : sample.uIndication,
                  indication ? sample.uIndication : sample.uReference,
                  std::move(*model),
-                 {}};
+                 {},
+                 *low,
+                 *high};
     if (const auto enough = checkEnough(task); !enough)
         return enough.error();
     auto solved = solve(task);

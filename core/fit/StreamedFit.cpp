@@ -1,0 +1,351 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/fit/StreamedFit.h"
+
+#include "core/base/Decimal.h"
+#include "core/fit/StreamKernel.h"
+
+#include <algorithm>
+#include <cmath>
+#include <functional>
+#include <thread>
+
+namespace spanwright {
+
+namespace {
+
+constexpr std::size_t BlockSize = 512, ChunkSize = 128 * BlockSize;
+constexpr std::int64_t WidestGrid = std::int64_t{1} << 51;
+/// Share of a diagonal entry below which a pivot of the normal equations is made of lost digits.
+constexpr double PivotBelow = 1e-8;
+
+static_assert(sizeof(long) == sizeof(std::int64_t));
+
+const long* asLong(const std::int64_t* m) { return reinterpret_cast<const long*>(m); }
+
+StreamBlock blockOf(const StreamMap& map, const std::int64_t* x, const std::int64_t* y, std::size_t n) {
+    return {asLong(x), asLong(y), n, map.x0, map.y0, map.xStep, toDouble(map.unit())};
+}
+
+/// Sums over all readings of what `kernel` gives for a block: blocks in double, chunks of blocks in double-double and in order,
+/// so that the number of threads does not show.
+using BlockSum = std::function<void(const StreamBlock&, double*)>;
+
+std::vector<DoubleDouble> streamedSums(const StreamMap& map, const GridColumn& x, const GridColumn& y, std::size_t width,
+                                       const BlockSum& kernel, unsigned threads) {
+    const std::size_t n = x.grid.size(), chunks = (n + ChunkSize - 1) / ChunkSize;
+    std::vector<DoubleDouble> totals(chunks * width, 0.0);
+    const auto chunk = [&](std::size_t c) {
+        double sums[64];
+        const std::size_t end = std::min(n, (c + 1) * ChunkSize);
+        for (std::size_t from = c * ChunkSize; from < end; from += BlockSize) {
+            const std::size_t count = std::min(BlockSize, end - from), whole = count - count % 4;
+            if (whole > 0) {
+                kernel(blockOf(map, x.grid.data() + from, y.grid.data() + from, whole), sums);
+                for (std::size_t k = 0; k < width; ++k)
+                    totals[c * width + k] += sums[k];
+            }
+            for (std::size_t i = from + whole; i < end && i < from + count; ++i) {
+                // A last reading alone: four of it, a quarter of the sums.
+                const std::int64_t mx[4] = {x.grid[i], x.grid[i], x.grid[i], x.grid[i]};
+                const std::int64_t my[4] = {y.grid[i], y.grid[i], y.grid[i], y.grid[i]};
+                kernel(blockOf(map, mx, my, 4), sums);
+                for (std::size_t k = 0; k < width; ++k)
+                    totals[c * width + k] += sums[k] / 4;
+            }
+        }
+    };
+    const auto part = [&](unsigned which) {
+        for (std::size_t c = which; c < chunks; c += threads)
+            chunk(c);
+    };
+    std::vector<std::thread> others;
+    for (unsigned which = 1; which < threads; ++which)
+        others.emplace_back(part, which);
+    part(0);
+    for (std::thread& other : others)
+        other.join();
+    std::vector<DoubleDouble> sum(width, 0.0);
+    for (std::size_t c = 0; c < chunks; ++c)
+        for (std::size_t k = 0; k < width; ++k)
+            sum[k] += totals[c * width + k];
+    return sum;
+}
+
+/// The basis of the fit in T_0…T_D, row by row: the identity, or x·T_k = centre·T_k + half·(T_{k+1} + T_{|k−1|})/2.
+std::vector<DoubleDouble> basisInChebyshev(const StreamMap& map, int degree, StreamedConstant constant) {
+    const auto width = static_cast<std::size_t>(degree) + 1;
+    const std::size_t p = constant == StreamedConstant::With ? width : width - 1;
+    std::vector<DoubleDouble> basis(p * width, 0.0);
+    for (std::size_t k = 0; k < p; ++k) {
+        if (constant == StreamedConstant::With) {
+            basis[k * width + k] = 1.0;
+            continue;
+        }
+        basis[k * width + k] += map.centre();
+        basis[k * width + k + 1] += map.half() * 0.5;
+        basis[k * width + (k > 0 ? k - 1 : 1)] += map.half() * 0.5;
+    }
+    return basis;
+}
+
+/// Σ T_j T_k = (Σ T_{j+k} + Σ T_{|j−k|})/2 in the basis of the fit.
+std::vector<DoubleDouble> gramOf(const StreamSums& sums, const std::vector<DoubleDouble>& basis, std::size_t p) {
+    const auto width = static_cast<std::size_t>(sums.degree) + 1;
+    std::vector<DoubleDouble> gram(p * p, 0.0);
+    for (std::size_t a = 0; a < p; ++a)
+        for (std::size_t b = 0; b < p; ++b)
+            for (std::size_t j = 0; j < width; ++j)
+                for (std::size_t k = 0; k < width; ++k) {
+                    const DoubleDouble factor = basis[a * width + j] * basis[b * width + k];
+                    if (factor.x[0] != 0)
+                        gram[a * p + b] += factor * (sums.moment[j + k] + sums.moment[j > k ? j - k : k - j]) * 0.5;
+                }
+    return gram;
+}
+
+std::vector<DoubleDouble> inBasis(const std::vector<DoubleDouble>& basis, const std::vector<DoubleDouble>& cross, std::size_t p) {
+    const std::size_t width = cross.size();
+    std::vector<DoubleDouble> result(p, 0.0);
+    for (std::size_t a = 0; a < p; ++a)
+        for (std::size_t j = 0; j < width; ++j)
+            result[a] += basis[a * width + j] * cross[j];
+    return result;
+}
+
+/// R⁻¹ with G = RᵀR; empty when a pivot is lost.
+std::optional<std::vector<DoubleDouble>> inverseCholesky(const std::vector<DoubleDouble>& gram, std::size_t p) {
+    std::vector<DoubleDouble> r(p * p, 0.0), inverse(p * p, 0.0);
+    for (std::size_t j = 0; j < p; ++j) {
+        for (std::size_t i = 0; i <= j; ++i) {
+            DoubleDouble sum = gram[i * p + j];
+            for (std::size_t k = 0; k < i; ++k)
+                sum -= r[k * p + i] * r[k * p + j];
+            if (i < j)
+                r[i * p + j] = sum / r[i * p + i];
+            else if (sum > gram[j * p + j] * PivotBelow)
+                r[j * p + j] = sqrt(sum);
+            else
+                return std::nullopt;
+        }
+    }
+    for (std::size_t j = 0; j < p; ++j) {
+        inverse[j * p + j] = 1.0 / r[j * p + j];
+        for (std::size_t i = j; i-- > 0;) {
+            DoubleDouble sum = 0.0;
+            for (std::size_t k = i + 1; k <= j; ++k)
+                sum += r[i * p + k] * inverse[k * p + j];
+            inverse[i * p + j] = -sum / r[i * p + i];
+        }
+    }
+    return inverse;
+}
+
+/// G⁻¹ b = R⁻¹ R⁻ᵀ b
+std::vector<DoubleDouble> solved(const std::vector<DoubleDouble>& inverse, const std::vector<DoubleDouble>& b) {
+    const std::size_t p = b.size();
+    std::vector<DoubleDouble> half(p, 0.0), x(p, 0.0);
+    for (std::size_t j = 0; j < p; ++j)
+        for (std::size_t k = 0; k <= j; ++k)
+            half[j] += inverse[k * p + j] * b[k];
+    for (std::size_t i = 0; i < p; ++i)
+        for (std::size_t j = i; j < p; ++j)
+            x[i] += inverse[i * p + j] * half[j];
+    return x;
+}
+
+DoubleDouble product(const std::vector<DoubleDouble>& a, const std::vector<DoubleDouble>& b) {
+    DoubleDouble sum = 0.0;
+    for (std::size_t k = 0; k < a.size(); ++k)
+        sum += a[k] * b[k];
+    return sum;
+}
+
+/// Coefficients of T_0…T_D of the ordinate counted from offset().
+std::vector<DoubleDouble> chebyshevOf(const StreamedFit& fit, const std::vector<DoubleDouble>& beta) {
+    const auto basis = basisInChebyshev(fit.sums.map, fit.sums.degree, fit.constant);
+    const auto width = static_cast<std::size_t>(fit.sums.degree) + 1;
+    std::vector<DoubleDouble> c(width, 0.0);
+    for (std::size_t a = 0; a < beta.size(); ++a)
+        for (std::size_t j = 0; j < width; ++j)
+            c[j] += beta[a] * basis[a * width + j];
+    c[0] -= fit.sums.map.offset();
+    return c;
+}
+
+/// Total about the mean, or about zero, from the sums.
+DoubleDouble totalOf(const StreamSums& sums, StreamedConstant constant) {
+    const auto n = static_cast<double>(sums.n);
+    if (constant == StreamedConstant::With)
+        return sums.square - sqr(sums.cross[0]) / n;
+    const DoubleDouble y0 = sums.map.offset();
+    return sums.square + 2.0 * y0 * sums.cross[0] + n * y0 * y0;
+}
+
+/// Σ φ y in the basis of the fit, y counted from zero.
+std::vector<DoubleDouble> rightSide(const StreamSums& sums, const std::vector<DoubleDouble>& basis, std::size_t p) {
+    std::vector<DoubleDouble> cross = sums.cross;
+    for (std::size_t j = 0; j < cross.size(); ++j)
+        cross[j] += sums.map.offset() * sums.moment[j];
+    return inBasis(basis, cross, p);
+}
+
+std::optional<StreamSums> gathered(const GridColumn& x, const GridColumn& y, int degree, unsigned threads) {
+    const StreamKernel& kernel = streamKernel();
+    long lowX = 0, highX = 0, lowY = 0, highY = 0;
+    kernel.extremes(asLong(x.grid.data()), x.grid.size(), &lowX, &highX);
+    kernel.extremes(asLong(y.grid.data()), y.grid.size(), &lowY, &highY);
+    if (highX - lowX >= WidestGrid || highY - lowY >= WidestGrid || (degree > 0 && highX == lowX))
+        return std::nullopt;
+    StreamSums sums;
+    sums.degree = degree;
+    sums.n = x.grid.size();
+    sums.lowX = lowX;
+    sums.highX = highX;
+    sums.map = {lowX + (highX - lowX) / 2, lowY + (highY - lowY) / 2, 1.0, x.scale, y.scale};
+    sums.map.xStep = highX > lowX ? 2.0 / static_cast<double>(highX - lowX) : 1.0;
+    const auto d = static_cast<std::size_t>(degree);
+    const auto all = streamedSums(sums.map, x, y, 3 * d + 3, kernel.moments[d], threads);
+    const auto from = [&](std::size_t at) { return all.begin() + static_cast<std::ptrdiff_t>(at); };
+    sums.moment.assign(from(0), from(2 * d + 1));
+    sums.cross.assign(from(2 * d + 1), from(3 * d + 2));
+    sums.square = all.back();
+    return sums;
+}
+
+/// One step of refinement with residuals of the rounded coefficients, and Σe² of the refined ones.
+void refine(StreamedFit& fit, const GridColumn& x, const GridColumn& y, unsigned threads) {
+    const auto d = static_cast<std::size_t>(fit.sums.degree);
+    const auto basis = basisInChebyshev(fit.sums.map, fit.sums.degree, fit.constant);
+    const std::vector<DoubleDouble> exact = chebyshevOf(fit, fit.beta);
+    std::vector<double> c;
+    std::vector<DoubleDouble> lost;
+    for (const DoubleDouble& value : exact) {
+        c.push_back(toDouble(value));
+        lost.push_back(value - c.back());
+    }
+    const auto kernel = streamKernel().residuals[d];
+    const auto sums = streamedSums(fit.sums.map, x, y, d + 2, [&](const StreamBlock& block, double* out) { kernel(block, c.data(), out); }, threads);
+    // Residuals of β itself differ from those of the rounded c by Σ lost_j T_j: carried through the moments.
+    std::vector<DoubleDouble> gradient(sums.begin(), sums.begin() + static_cast<std::ptrdiff_t>(d + 1));
+    DoubleDouble square = sums.back();
+    for (std::size_t j = 0; j <= d; ++j)
+        square -= 2.0 * lost[j] * gradient[j];
+    for (std::size_t j = 0; j <= d; ++j)
+        for (std::size_t k = 0; k <= d; ++k) {
+            const DoubleDouble moment = (fit.sums.moment[j + k] + fit.sums.moment[j > k ? j - k : k - j]) * 0.5;
+            gradient[j] -= moment * lost[k];
+            square += lost[j] * lost[k] * moment;
+        }
+    const std::vector<DoubleDouble> right = inBasis(basis, gradient, fit.terms());
+    const std::vector<DoubleDouble> step = solved(fit.inverseRoot, right);
+    for (std::size_t k = 0; k < step.size(); ++k)
+        fit.beta[k] += step[k];
+    fit.residualSs = square - product(step, right);
+}
+
+} // namespace
+
+DoubleDouble StreamMap::centre() const { return toDoubleDouble(x0) * powerOfTen(-xScale); }
+DoubleDouble StreamMap::half() const { return powerOfTen(-xScale) / xStep; }
+DoubleDouble StreamMap::offset() const { return toDoubleDouble(y0); }
+DoubleDouble StreamMap::unit() const { return powerOfTen(-yScale); }
+DoubleDouble StreamMap::v(std::int64_t y) const { return toDoubleDouble(y - y0); }
+
+std::optional<StreamedFit> fitStreamed(const GridColumn& x, const GridColumn& y, int degree, StreamedConstant constant, unsigned threads) {
+    if (degree > MostStreamedDegree || x.grid.size() < 2 || x.grid.size() != y.grid.size())
+        return std::nullopt;
+    auto sums = gathered(x, y, degree, threads);
+    if (!sums)
+        return std::nullopt;
+    StreamedFit fit;
+    fit.sums = std::move(*sums);
+    fit.constant = constant;
+    const auto basis = basisInChebyshev(fit.sums.map, degree, constant);
+    const std::size_t p = static_cast<std::size_t>(degree) + (constant == StreamedConstant::With ? 1 : 0);
+    auto inverse = inverseCholesky(gramOf(fit.sums, basis, p), p);
+    if (!inverse)
+        return std::nullopt;
+    fit.inverseRoot = std::move(*inverse);
+    fit.beta = solved(fit.inverseRoot, rightSide(fit.sums, basis, p));
+    fit.totalSs = totalOf(fit.sums, constant);
+    refine(fit, x, y, threads);
+    return fit;
+}
+
+StreamedRows streamedRows(const StreamedFit& fit, const GridColumn& x, const GridColumn& y, unsigned threads) {
+    const std::size_t n = x.grid.size(), p = fit.terms();
+    const auto d = static_cast<std::size_t>(fit.sums.degree), width = d + 1;
+    std::vector<double> c, h(2 * d + 1, 0.0);
+    for (const DoubleDouble& value : chebyshevOf(fit, fit.beta))
+        c.push_back(toDouble(value));
+    // h(t) = ‖R⁻ᵀ φ‖²: products of T_j T_k = (T_{j+k} + T_{|j−k|})/2
+    const auto basis = basisInChebyshev(fit.sums.map, fit.sums.degree, fit.constant);
+    for (std::size_t a = 0; a < p; ++a) {
+        std::vector<DoubleDouble> z(width, 0.0);
+        for (std::size_t b = 0; b <= a; ++b)
+            for (std::size_t j = 0; j < width; ++j)
+                z[j] += fit.inverseRoot[b * p + a] * basis[b * width + j];
+        for (std::size_t j = 0; j < width; ++j)
+            for (std::size_t k = 0; k < width; ++k) {
+                const double half = toDouble(z[j] * z[k]) / 2;
+                h[j + k] += half;
+                h[j > k ? j - k : k - j] += half;
+            }
+    }
+    StreamedRows rows{std::vector<double>(n), std::vector<double>(n)};
+    const auto kernel = streamKernel().elements[d];
+    const auto part = [&](unsigned which) {
+        const std::size_t share = (n / threads) & ~std::size_t{3};
+        const std::size_t from = which * share, to = which + 1 == threads ? n : from + share, whole = (to - from) & ~std::size_t{3};
+        kernel(blockOf(fit.sums.map, x.grid.data() + from, y.grid.data() + from, whole), c.data(), h.data(), rows.residual.data() + from,
+               rows.leverage.data() + from);
+        for (std::size_t i = from + whole; i < to; ++i) {
+            const std::int64_t mx[4] = {x.grid[i], x.grid[i], x.grid[i], x.grid[i]}, my[4] = {y.grid[i], y.grid[i], y.grid[i], y.grid[i]};
+            double e[4], l[4];
+            kernel(blockOf(fit.sums.map, mx, my, 4), c.data(), h.data(), e, l);
+            rows.residual[i] = e[0];
+            rows.leverage[i] = l[0];
+        }
+    };
+    std::vector<std::thread> others;
+    for (unsigned which = 1; which < threads; ++which)
+        others.emplace_back(part, which);
+    part(0);
+    for (std::thread& other : others)
+        other.join();
+    return rows;
+}
+
+std::optional<StreamedFit> changedBy(const StreamedFit& fit, StreamedChange change, std::int64_t x, std::int64_t y) {
+    const double sign = change == StreamedChange::Exclude ? -1.0 : 1.0;
+    const auto width = static_cast<std::size_t>(fit.sums.degree) + 1;
+    const std::size_t p = fit.terms();
+    StreamedFit changed = fit;
+    const DoubleDouble t = toDoubleDouble(x - fit.sums.map.x0) * fit.sums.map.xStep, v = fit.sums.map.v(y);
+    std::vector<DoubleDouble> chebyshev(2 * width - 1, 1.0);
+    for (std::size_t j = 1; j < chebyshev.size(); ++j)
+        chebyshev[j] = j == 1 ? t : 2.0 * t * chebyshev[j - 1] - chebyshev[j - 2];
+    for (std::size_t j = 0; j < chebyshev.size(); ++j)
+        changed.sums.moment[j] += sign * chebyshev[j];
+    for (std::size_t j = 0; j < width; ++j)
+        changed.sums.cross[j] += sign * chebyshev[j] * v;
+    changed.sums.square += sign * v * v;
+    changed.sums.n = change == StreamedChange::Exclude ? fit.sums.n - 1 : fit.sums.n + 1;
+
+    const auto basis = basisInChebyshev(fit.sums.map, fit.sums.degree, fit.constant);
+    auto inverse = inverseCholesky(gramOf(changed.sums, basis, p), p);
+    if (!inverse)
+        return std::nullopt;
+    const std::vector<DoubleDouble> phi = inBasis(basis, {chebyshev.begin(), chebyshev.begin() + static_cast<std::ptrdiff_t>(width)}, p);
+    const DoubleDouble e = v + fit.sums.map.offset() - product(fit.beta, phi);
+    const std::vector<DoubleDouble> pull = solved(fit.inverseRoot, phi);
+    const DoubleDouble share = e / (1.0 + sign * product(pull, phi));
+    for (std::size_t k = 0; k < p; ++k)
+        changed.beta[k] += sign * share * pull[k];
+    changed.residualSs += sign * e * share;
+    changed.inverseRoot = std::move(*inverse);
+    changed.totalSs = totalOf(changed.sums, fit.constant);
+    return changed;
+}
+
+} // namespace spanwright

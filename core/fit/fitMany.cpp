@@ -1,0 +1,95 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/fit/fitMany.h"
+
+#include "core/fit/Polynomial.h"
+#include "core/fit/StreamedFit.h"
+#include "core/fit/assembleFit.h"
+
+#include <algorithm>
+#include <thread>
+
+namespace spanwright {
+
+namespace {
+
+struct Shape {
+    int degree = 0;
+    StreamedConstant constant = StreamedConstant::With;
+};
+
+std::optional<Shape> shapeOf(const FunctionChoice& function) {
+    switch (function.family) {
+    case FunctionFamily::Constant:
+        return Shape{0, StreamedConstant::With};
+    case FunctionFamily::Line:
+        return Shape{1, StreamedConstant::With};
+    case FunctionFamily::Proportional:
+        return Shape{1, StreamedConstant::Without};
+    case FunctionFamily::Polynomial:
+        return Shape{function.order, StreamedConstant::With};
+    case FunctionFamily::PolynomialNoConstant:
+        return Shape{function.order, StreamedConstant::Without};
+    default:
+        return std::nullopt;
+    }
+}
+
+/// The streamed solution in the user's units, as if it had been solved reading by reading.
+SolvedModel solvedModel(const StreamedFit& fit) {
+    SolvedModel solved;
+    const DoubleDouble unit = fit.sums.map.unit();
+    for (const DoubleDouble& value : fit.beta)
+        solved.beta.push_back(value * unit);
+    solved.linear.inverseRoot = fit.inverseRoot;
+    solved.linear.residualSs = fit.residualSs * sqr(unit);
+    solved.convergence = {true, 1, "linear"};
+    return solved;
+}
+
+} // namespace
+
+std::optional<FitOutcome> fitMany(const Sample& sample, const Choices& choices) {
+    const auto shape = shapeOf(choices.function);
+    const bool even = choices.weights == Weights::Equal && choices.covariance == CovarianceScale::Residuals;
+    if (!shape || !even || choices.method != Method::LeastSquares)
+        return std::nullopt;
+    const FitDirection direction = directionOf(choices);
+    const bool indication = direction == FitDirection::Indication;
+    const ExactGrids& grids = *sample.grids;
+    GridColumn x{grids.reference, grids.referenceScale}, y{grids.indication, grids.indicationScale};
+    if (!indication)
+        std::swap(x, y);
+    const unsigned threads = std::clamp(std::thread::hardware_concurrency(), 1u, 4u);
+    const auto streamed = fitStreamed(x, y, shape->degree, shape->constant, threads);
+    if (!streamed || !(streamed->residualSs > 0.0))
+        return std::nullopt;
+
+    const StreamMap& map = streamed->sums.map;
+    const auto place = [&](std::int64_t m) { return toDouble(toDoubleDouble(m) * powerOfTen(-x.scale)); };
+    const FitTask task{sample,
+                       choices,
+                       direction,
+                       indication ? sample.reference : sample.indication,
+                       indication ? sample.indication : sample.reference,
+                       indication ? sample.uReference : sample.uIndication,
+                       indication ? sample.uIndication : sample.uReference,
+                       std::make_shared<PolynomialModel>(static_cast<std::size_t>(shape->degree),
+                                                         shape->constant == StreamedConstant::With ? PolynomialConstant::With : PolynomialConstant::Without,
+                                                         map.centre(), map.half()),
+                       {},
+                       place(streamed->sums.lowX),
+                       place(streamed->sums.highX)};
+    const SolvedModel solved = solvedModel(*streamed);
+    const DoubleDouble total = streamed->totalSs * sqr(map.unit());
+    FitOutcome outcome{assembleFigures(task, solved, {total, total - solved.linear.residualSs}), {}};
+
+    StreamedRows rows = streamedRows(*streamed, x, y, threads);
+    outcome.residuals.fitted.resize(rows.residual.size());
+    for (std::size_t i = 0; i < rows.residual.size(); ++i)
+        outcome.residuals.fitted[i] = task.y.high[i] - rows.residual[i];
+    outcome.residuals.e.high = std::move(rows.residual);
+    outcome.residuals.leverage = std::move(rows.leverage);
+    return outcome;
+}
+
+} // namespace spanwright
