@@ -6,7 +6,7 @@ set -euo pipefail
 cd "$(dirname "${BASH_SOURCE[0]}")/../.."
 . app/prepare.sh
 
-install_missing "${build_packages[@]}"
+install_missing "${build_packages[@]}" libgsl-dev
 names=("$@")
 [ $# -gt 0 ] || mapfile -t names < <(basename -a -s .cpp tests/bench/bench_*.cpp | sed 's/^bench_//')
 targets=("${names[@]/#/bench_}")
