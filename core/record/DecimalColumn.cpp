@@ -39,7 +39,7 @@ void DecimalColumn::push_back(const std::optional<Decimal>& value) {
 }
 
 void DecimalColumn::set(std::size_t row, const std::optional<Decimal>& value) {
-    if (decimals_[row] == Aside)
+    if (decimals_[row] == KeptAside)
         aside_.erase(row);
     if (decimals_[row] != Missing)
         ++missing_;
@@ -81,7 +81,7 @@ void DecimalColumn::resize(std::size_t n) {
 std::optional<Decimal> DecimalColumn::at(std::size_t row) const {
     if (decimals_[row] == Missing)
         return std::nullopt;
-    if (decimals_[row] == Aside)
+    if (decimals_[row] == KeptAside)
         return aside_.at(row);
     std::int64_t mantissa = grid_[row];
     for (int i = decimals_[row]; i < scale_; ++i)
@@ -94,7 +94,7 @@ double DecimalColumn::toDouble(std::size_t row) const {
         return std::numeric_limits<double>::quiet_NaN();
     constexpr std::int64_t exactInDouble = std::int64_t{1} << 53;
     const std::int64_t integer = grid_[row];
-    if (decimals_[row] != Aside && integer < exactInDouble && integer > -exactInDouble) {
+    if (decimals_[row] != KeptAside && integer < exactInDouble && integer > -exactInDouble) {
         static constexpr double powers[] = {1e0,  1e1,  1e2,  1e3,  1e4,  1e5,  1e6,  1e7,  1e8, 1e9,
                                             1e10, 1e11, 1e12, 1e13, 1e14, 1e15, 1e16, 1e17, 1e18};
         return static_cast<double>(integer) / powers[scale_]; // both exact, so the quotient is the nearest double
@@ -104,7 +104,7 @@ double DecimalColumn::toDouble(std::size_t row) const {
 
 DoubleDouble DecimalColumn::toDoubleDouble(std::size_t row) const {
     assert(has(row));
-    if (decimals_[row] == Aside)
+    if (decimals_[row] == KeptAside)
         return aside_.at(row).toDoubleDouble();
     return spanwright::toDoubleDouble(grid_[row]) / powerOfTen(scale_);
 }
@@ -148,7 +148,7 @@ void DecimalColumn::place(std::size_t row, const std::optional<Decimal>& value) 
             return;
         }
     }
-    decimals_[row] = Aside;
+    decimals_[row] = KeptAside;
     aside_.insert_or_assign(row, *value);
 }
 

@@ -34,6 +34,8 @@ class DecimalColumn {
     [[nodiscard]] int scale() const { return scale_; }
     /// The integers on the grid; 0 where the value is missing or kept aside.
     [[nodiscard]] std::span<const std::int64_t> grid() const { return grid_; }
+    /// Digits after the mark of each value as typed; Missing, or KeptAside where only at() gives the value.
+    [[nodiscard]] std::span<const std::uint8_t> decimals() const { return decimals_; }
     /// Whether every value that is present lies on the grid; a zero kept aside for its minus sign does.
     [[nodiscard]] bool exact() const;
     /// Number of rows without a value.
@@ -44,12 +46,12 @@ class DecimalColumn {
 
     /// Marks a row without a value in the decimals given to fromGrid().
     static constexpr std::uint8_t Missing = 255;
+    static constexpr std::uint8_t KeptAside = 254;
 
     /// Equal as typed.
     friend bool operator==(const DecimalColumn& a, const DecimalColumn& b);
 
   private:
-    static constexpr std::uint8_t Aside = 254;
     bool widenGrid(int scale);
     void place(std::size_t row, const std::optional<Decimal>& value);
 

@@ -15,16 +15,19 @@ class SessionFile {
     ~SessionFile();
 
     struct Opened;
-    /// Reads and locks. When another program holds the lock, the session opens read-only and `heldBy` says who. Errors: as
-    /// FileBytes::read() and readSession(), with fact file.
+    /// Reads and locks. When another program holds the lock, the session opens read-only and `heldBy` says who; when the folder
+    /// cannot be written there is no lock, and saving will say why. Errors: as FileBytes::read() and readSession(), with fact
+    /// file.
     static Result<Opened> open(const std::string& path);
 
-    /// Writes a session to a path that this program does not hold open (save as). Whether an existing file may be replaced was
-    /// asked before. Errors: FileInUse (facts: holder), FileNotWritable, FileWriteFailed (facts: reason).
+    /// Writes a session to a path that no SessionFile holds yet (save as; where one does, use save()). Whether an existing file
+    /// may be replaced was asked before. Errors: FileInUse (facts: holder), FileIsDirectory, FileNotWritable, FileWriteFailed
+    /// (facts: reason); all with fact file.
     static Result<SessionFile> saveAs(const std::string& path, const Record& record, const StoredResults& results);
 
-    /// Writes over the file that was opened, whole or not at all. Errors: FileChangedOnDisk, FileInUse (this session was opened
-    /// while another program held it), FileNotWritable, FileWriteFailed; the old file is then as it was.
+    /// Writes over the file that was opened, whole or not at all. Errors: FileChangedOnDisk; FileInUse, while another program
+    /// holds it; NewerLayout, when it was written by a newer program; FileNotWritable, FileWriteFailed. The old file is then as
+    /// it was.
     Result<void> save(const Record& record, const StoredResults& results);
 
     [[nodiscard]] const std::string& path() const;
