@@ -127,6 +127,7 @@ enum class Statement {
     Rectangular,
     HysteresisInUncertainty,
     HysteresisSeparate,      ///< directions are stated separately
+    ResolutionAndRepeatability,  ///< both are counted, and share a part
     RepeatabilityFromOtherPhase, ///< facts: phase
     RepeatabilityMissing,    ///< facts: phase
     LineOmitted,             ///< facts: line, reason

@@ -13,6 +13,8 @@ namespace {
 
 constexpr int FactorDecimals = 2;
 
+enum class ErrorKnown { No, Yes };
+
 Digits optionalText(const std::optional<double>& value, int decimals) {
     return value ? roundedText(*value, decimals) : Digits{};
 }
@@ -88,7 +90,8 @@ BudgetSection budgetSection(const SetPointBudget& budget) {
     return section;
 }
 
-std::vector<PerformanceRow> performanceRows(const ProcessFigures& figures, int decimals) {
+/// Figures that are errors need a stated output to be errors from.
+std::vector<PerformanceRow> performanceRows(const ProcessFigures& figures, int decimals, ErrorKnown known) {
     using Kind = PerformanceRow::Kind;
     const std::pair<Kind, const std::optional<ProcessFigure>*> all[] = {
         {Kind::MeasuredError, &figures.measuredErrorMax},
@@ -103,7 +106,7 @@ std::vector<PerformanceRow> performanceRows(const ProcessFigures& figures, int d
     constexpr int percentDecimals = 3;
     std::vector<PerformanceRow> rows;
     for (const auto& [kind, figure] : all)
-        if (*figure)
+        if (*figure && (known == ErrorKnown::Yes || kind > Kind::InaccuracyLow))
             rows.push_back({kind, roundedText((*figure)->value, decimals), roundedText((*figure)->percentOfSpan, percentDecimals),
                             shortText((*figure)->setPoint)});
     return rows;
@@ -142,7 +145,8 @@ PhaseSection phaseSection(const Record& record, const PhaseEvaluation& phase) {
     if (worst != budgets.end())
         section.budget = budgetSection(*worst);
     if (phase.performance)
-        section.performance = performanceRows(*phase.performance, worst == budgets.end() ? 4 : roundUncertainty(worst->expanded).decimals);
+        section.performance = performanceRows(*phase.performance, worst == budgets.end() ? 4 : roundUncertainty(worst->expanded).decimals,
+                                              section.errorKnown ? ErrorKnown::Yes : ErrorKnown::No);
     return section;
 }
 

@@ -102,22 +102,26 @@ void uncertaintyStatements(const Record& record, const Certificate& certificate,
     const auto& phases = certificate.phases;
     if (std::any_of(phases.begin(), phases.end(), [](const PhaseSection& phase) { return phase.rectangular; }))
         lines.push_back({Statement::Rectangular, {}});
-    bool hysteresis = false;
+    bool hysteresis = false, both = false;
     for (const PhaseSection& phase : phases) {
         const Fact named{"phase", std::string(nameOf(phase.phase))};
         if (!phase.budget)
             continue;
-        bool repeatability = false, otherPhase = false;
+        bool repeatability = false, otherPhase = false, resolution = false;
         for (const BudgetRow& row : phase.budget->rows) {
             hysteresis = hysteresis || row.derived == DerivedLine::Hysteresis;
             repeatability = repeatability || row.derived == DerivedLine::Repeatability;
             otherPhase = otherPhase || row.fromOtherPhase;
+            resolution = resolution || row.derived == DerivedLine::IndicationResolution;
         }
+        both = both || (resolution && repeatability);
         if (otherPhase)
             lines.push_back({Statement::RepeatabilityFromOtherPhase, {named}});
         if (!repeatability)
             lines.push_back({Statement::RepeatabilityMissing, {named}});
     }
+    if (both)
+        lines.push_back({Statement::ResolutionAndRepeatability, {}});
     if (record.choices.separateDirections)
         lines.push_back({Statement::HysteresisSeparate, {}});
     else if (hysteresis)

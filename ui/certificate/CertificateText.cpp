@@ -63,9 +63,11 @@ QString CertificateText::of(Statement statement, Sentence& facts) {
     case Statement::HysteresisInUncertainty:
         return tr("The mean of rising and falling is stated; half of their difference is included in U as a rectangular contribution.");
     case Statement::HysteresisSeparate: return tr("Rising and falling are stated separately; U does not include their difference.");
+    case Statement::ResolutionAndRepeatability:
+        return tr("The budget counts the resolution of the indication beside the repeatability, which holds a part of it: U is not too small by this.");
     case Statement::RepeatabilityFromOtherPhase:
-        return tr("Readings %1 were taken once at each point and direction; their repeatability is that of the readings of the other phase.")
-            .arg(phaseOf(facts));
+        return tr("Readings %1 were taken once at each point and direction; their repeatability is that of the readings %2.")
+            .arg(phaseOf(facts), facts.plain("phase") == QLatin1String("as-left") ? phaseText(Phase::AsFound) : phaseText(Phase::AsLeft));
     case Statement::RepeatabilityMissing:
         return tr("Readings %1 were not repeated; U includes no repeatability.").arg(phaseOf(facts));
     case Statement::LineOmitted: {
@@ -168,8 +170,11 @@ QString decisionText(const Limits& limits) {
     const double risk = acceptanceRisk(limits, factor);
     const QString share = risk >= 0.01 ? QLocale().toString(100 * risk, 'f', risk < 0.5 ? 1 : 0)
                                        : significantText(100 * risk, 2);
-    return CertificateText::tr("%1; the risk of accepting an item that does not conform is at most %2 % at an acceptance limit")
-        .arg(decisionRuleText(limits), share);
+    const QString words = CertificateText::tr("%1; the risk of accepting an item that does not conform is at most %2 % at an acceptance limit")
+                              .arg(decisionRuleText(limits), share);
+    if (limits.rule != DecisionRule::FourState)
+        return words;
+    return words + CertificateText::tr(", and up to 50 % for a conditional pass (inside a limit by less than U); a conditional fail is outside by less than U");
 }
 
 QString equationForm(const FunctionSection& function) {

@@ -44,14 +44,14 @@ QString checksText(const FunctionSection& function, const QString& x, const QStr
     return ClosingSections::tr("Check values: %1.").arg(checks.join(QStringLiteral("; ")));
 }
 
-QString budgetName(const BudgetRow& row) {
+QString budgetName(const BudgetRow& row, Phase phase) {
     if (!row.derived)
         return row.name.empty() ? ClosingSections::tr("added by hand") : text(row.name);
     QString name = derivedLineText(*row.derived);
     if (!row.name.empty())
         name += QStringLiteral(", ") + text(row.name);
     if (row.fromOtherPhase)
-        name += ClosingSections::tr(" (of the other phase)");
+        name += ClosingSections::tr(" (readings %1)").arg(phaseText(phase == Phase::AsLeft ? Phase::AsFound : Phase::AsLeft));
     return name;
 }
 
@@ -129,7 +129,7 @@ void addBudget(Flow& flow, const Certificate& certificate, const PhaseSection& s
     const Item& item = certificate.item;
     Table table;
     table.points = 8;
-    table.columns = {{ClosingSections::tr("contribution"), {}, ColumnAlign::Left, 4.4},
+    table.columns = {{ClosingSections::tr("contribution"), {}, ColumnAlign::Left, 4.3},
                      {ClosingSections::tr("amount"), {}, ColumnAlign::Right, 1.6},
                      {ClosingSections::tr("distribution"), {}, ColumnAlign::Left, 1.5},
                      {ClosingSections::tr("divisor"), {}, ColumnAlign::DecimalMark, 0.9},
@@ -137,10 +137,10 @@ void addBudget(Flow& flow, const Certificate& certificate, const PhaseSection& s
                      {ClosingSections::tr("ν"), {}, ColumnAlign::Right, 0.7},
                      {ClosingSections::tr("c"), {}, ColumnAlign::DecimalMark, 1},
                      {ClosingSections::tr("|c| u"), text(item.indication.unit), ColumnAlign::DecimalMark, 1.2},
-                     {ClosingSections::tr("share"), {}, ColumnAlign::Right, 0.95}};
+                     {ClosingSections::tr("share"), {}, ColumnAlign::Right, 1.15}};
     for (const BudgetRow& row : budget.rows) {
         const std::string& unit = row.side == Side::Reference ? item.reference.unit : item.indication.unit;
-        table.rows.push_back({{budgetName(row)},
+        table.rows.push_back({{budgetName(row, section.phase)},
                               {withUnit(digitsText(row.amount), unit)},
                               {distributionText(row.distribution)},
                               {digitsText(row.divisor)},

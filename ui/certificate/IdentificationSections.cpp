@@ -28,8 +28,8 @@ LabelledText wanted(const QString& label, const std::string& value) {
     return {label, text(value)};
 }
 
-QString joined(const std::string& a, const std::string& b) {
-    return a.empty() || b.empty() ? text(a + b) : text(a) + QLatin1Char(' ') + text(b);
+std::string joined(const std::string& a, const std::string& b) {
+    return a.empty() || b.empty() ? a + b : a + ' ' + b;
 }
 
 QString interval(const std::optional<Decimal>& low, const std::optional<Decimal>& high, const std::string& unit) {
@@ -45,8 +45,7 @@ std::vector<LabelledText> itemColumn(const Certificate& certificate) {
         wanted(CertificateSections::tr("Customer"), job.customer),
         wanted(CertificateSections::tr("Contact"), job.customerContact),
         wanted(CertificateSections::tr("Item"), item.description),
-        {CertificateSections::tr("Maker, model"), joined(item.maker, item.model),
-         item.maker.empty() && item.model.empty() ? PageInk::Warning : PageInk::Text},
+        wanted(CertificateSections::tr("Maker, model"), joined(item.maker, item.model)),
         wanted(CertificateSections::tr("Serial number"), item.serial),
     };
     if (!item.tag.empty())
