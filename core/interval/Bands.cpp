@@ -2,8 +2,10 @@
 #include "core/interval/Bands.h"
 
 #include "core/fit/Quantiles.h"
+#include "core/interval/ToleranceFactor.h"
 
 #include <cmath>
+#include <limits>
 
 namespace spanwright {
 
@@ -34,6 +36,14 @@ BandPoint bandWith(const Fit& fit, double x, double simultaneous) {
 } // namespace
 
 BandPoint bandAt(const Fit& fit, double x) { return bandWith(fit, x, simultaneousFactor(fit)); }
+
+Interval toleranceAt(const Fit& fit, double x, double share) {
+    const double value = fit.curve->value(x), noise = fit.curve->readingVariance(x);
+    const double factor = fit.covarianceScale == CovarianceScale::Stated
+                              ? std::numeric_limits<double>::quiet_NaN()
+                              : toleranceFactorTwoSided(noise / fit.curve->variance(x), fit.degreesOfFreedom, share, fit.coverage);
+    return {value - factor * std::sqrt(noise), value + factor * std::sqrt(noise)};
+}
 
 std::vector<BandPoint> bandCurve(const Fit& fit, double low, double high, std::size_t points) {
     const double simultaneous = simultaneousFactor(fit);

@@ -22,6 +22,9 @@ struct BandPoint {
 };
 
 BandPoint bandAt(const Fit& fit, double x);
+/// Where at least `share` of all readings at x lie, with the fit's coverage as confidence: ŷ ± k σ(x) with the exact two-sided factor
+/// for an effective number of readings σ²/u²(ŷ) (Wallis 1951). NaN where the uncertainties are taken as they are.
+Interval toleranceAt(const Fit& fit, double x, double share);
 /// `points` equidistant abscissae from low to high.
 std::vector<BandPoint> bandCurve(const Fit& fit, double low, double high, std::size_t points);
 
