@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/diagnose/Autocorrelation.h"
 
+#include "core/diagnose/Orthonormal.h"
 #include "core/diagnose/ResidualColumn.h"
 
 #include <algorithm>
@@ -87,38 +88,15 @@ class LogProduct {
     int count_ = 0;
 };
 
-/// Orthonormal columns of the same span (modified Gram–Schmidt, twice), row by row; dependent columns are dropped.
-struct Orthonormal {
+/// Orthonormal columns, row by row.
+struct Rows {
     std::size_t rows = 0, terms = 0;
     std::vector<double> byRow;
 };
 
-Orthonormal orthonormal(const std::vector<std::vector<double>>& columns) {
-    std::vector<std::vector<double>> q;
-    for (const auto& column : columns) {
-        std::vector<double> v = column;
-        double before = 0;
-        for (const double value : v)
-            before += value * value;
-        for (int pass = 0; pass < 2; ++pass)
-            for (const auto& other : q) {
-                double dot = 0;
-                for (std::size_t i = 0; i < v.size(); ++i)
-                    dot += other[i] * v[i];
-                for (std::size_t i = 0; i < v.size(); ++i)
-                    v[i] -= dot * other[i];
-            }
-        double after = 0;
-        for (const double value : v)
-            after += value * value;
-        if (!(after > 1e-24 * before))
-            continue;
-        const double scale = 1 / std::sqrt(after);
-        for (double& value : v)
-            value *= scale;
-        q.push_back(std::move(v));
-    }
-    Orthonormal result;
+Rows orthonormalRows(const std::vector<std::vector<double>>& columns) {
+    const std::vector<std::vector<double>> q = orthonormal(columns);
+    Rows result;
     result.terms = q.size();
     result.rows = columns.empty() ? 0 : columns.front().size();
     result.byRow.resize(result.rows * result.terms);
@@ -131,7 +109,7 @@ Orthonormal orthonormal(const std::vector<std::vector<double>>& columns) {
 /// Im φ(t) and |φ(t)| of Q = u'(A − d)u with u normal in the complement of the columns, where u'Au is the sum of squared steps.
 class QuadraticForm {
   public:
-    QuadraticForm(double observed, Orthonormal q) : d_(observed), q_(std::move(q)), last_(q_.terms), next_(q_.terms) {}
+    QuadraticForm(double observed, Rows q) : d_(observed), q_(std::move(q)), last_(q_.terms), next_(q_.terms) {}
 
     struct Value {
         double imaginary = 0, size = 0;
@@ -184,7 +162,7 @@ class QuadraticForm {
 
   private:
     double d_;
-    Orthonormal q_;
+    Rows q_;
     std::vector<Complex> last_, next_;
 };
 
@@ -193,7 +171,7 @@ struct Moments {
 };
 
 /// Exact mean and variance of d (Durbin and Watson, Biometrika 38 (1951) 159).
-Moments momentsOf(const Orthonormal& q, std::size_t n) {
+Moments momentsOf(const Rows& q, std::size_t n) {
     const std::size_t p = q.terms;
     std::vector<double> aq(n * p);
     const auto at = [&](std::size_t i, std::size_t j) { return q.byRow[i * p + j]; };
@@ -235,7 +213,7 @@ std::optional<double> durbinWatson(std::span<const DoubleDouble> u) {
 }
 
 double durbinWatsonBelow(double observed, const std::vector<std::vector<double>>& columns) {
-    Orthonormal q = orthonormal(columns);
+    Rows q = orthonormalRows(columns);
     const double n = static_cast<double>(q.rows);
     QuadraticForm form(observed, std::move(q));
     // t = τ exp(s − e^{−s}), dt/t = (1 + e^{−s}) ds: both ends fall off fast enough for equal steps in s.
@@ -265,7 +243,7 @@ double durbinWatsonBelow(double observed, const std::vector<std::vector<double>>
 }
 
 double durbinWatsonBelowNormal(double observed, const std::vector<std::vector<double>>& columns, std::size_t n) {
-    const Moments moments = momentsOf(orthonormal(columns), n);
+    const Moments moments = momentsOf(orthonormalRows(columns), n);
     return 0.5 * std::erfc(-(observed - moments.mean) / std::sqrt(2 * moments.variance));
 }
 

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/diagnose/EqualVariances.h"
 
+#include "core/diagnose/Orthonormal.h"
 #include "core/fit/Quantiles.h"
 
 #include <algorithm>
@@ -147,47 +148,20 @@ std::optional<TestResult> breuschPagan(std::span<const double> u, const std::vec
     }
     if (!(total > 0))
         return std::nullopt;
-    // Gram–Schmidt against the constant and the columns before; what each new direction takes from the squares adds up to n R².
-    std::vector<std::vector<double>> basis;
-    double explained = 0;
-    for (const auto& column : columns) {
-        std::vector<double> v = column;
-        double size = 0;
-        for (const double value : v)
-            size += value * value;
-        for (int pass = 0; pass < 2; ++pass) {
-            double centre = 0;
-            for (const double value : v)
-                centre += value;
-            centre /= static_cast<double>(n);
-            for (double& value : v)
-                value -= centre;
-            for (const auto& other : basis) {
-                double dot = 0;
-                for (std::size_t i = 0; i < n; ++i)
-                    dot += other[i] * v[i];
-                for (std::size_t i = 0; i < n; ++i)
-                    v[i] -= dot * other[i];
-            }
-        }
-        double rest = 0, dot = 0;
-        for (std::size_t i = 0; i < n; ++i) {
-            rest += v[i] * v[i];
-            dot += v[i] * squares[i];
-        }
-        if (!(rest > 1e-24 * size))
-            continue;
-        explained += dot * dot / rest;
-        const double scale = 1 / std::sqrt(rest);
-        for (double& value : v)
-            value *= scale;
-        basis.push_back(std::move(v));
-    }
-    if (basis.empty())
+    // What each direction beside the constant takes from the squares adds up to R².
+    std::vector<std::vector<double>> all(1, std::vector<double>(n, 1.0));
+    all.insert(all.end(), columns.begin(), columns.end());
+    const std::vector<std::vector<double>> basis = orthonormal(std::move(all));
+    if (basis.size() < 2)
         return std::nullopt;
+    double explained = 0;
+    for (std::size_t j = 1; j < basis.size(); ++j) {
+        const double along = dot(basis[j], squares);
+        explained += along * along;
+    }
     TestResult result;
     result.statistic = static_cast<double>(n) * explained / total;
-    result.df = static_cast<int>(basis.size());
+    result.df = static_cast<int>(basis.size()) - 1;
     result.p = chiSquaredAbove(result.statistic, *result.df);
     return result;
 }

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/diagnose/FindingRules.h"
 
+#include "core/diagnose/Orthonormal.h"
 #include "core/fit/Quantiles.h"
 #include "core/split/FunctionBasis.h"
 
@@ -130,28 +131,20 @@ void throughZero(const FindingsInput& input, std::vector<Finding>& found) {
     const auto root = [&](std::size_t i) { return input.residuals->weight.empty() ? 1 : std::sqrt(input.residuals->weight.high[i]); };
     std::vector<std::vector<double>> columns;
     for (std::size_t j = 0; j <= basis.terms; ++j) {
-        std::vector<double> v(n);
+        std::vector<double>& v = columns.emplace_back(n);
         for (std::size_t i = 0; i < n; ++i)
             v[i] = root(i) * (j < basis.terms ? basis.column(j)[i] : 1.0);
-        for (int pass = 0; pass < 2; ++pass)
-            for (const auto& other : columns) {
-                double dot = 0, size = 0;
-                for (std::size_t i = 0; i < n; ++i) {
-                    dot += other[i] * v[i];
-                    size += other[i] * other[i];
-                }
-                for (std::size_t i = 0; size > 0 && i < n; ++i)
-                    v[i] -= dot / size * other[i];
-            }
-        columns.push_back(std::move(v));
     }
-    double product = 0, size = 0;
-    for (std::size_t i = 0; i < n; ++i) {
-        product += columns.back()[i] * root(i) * input.residuals->e.high[i];
-        size += columns.back()[i] * columns.back()[i];
-    }
-    const double gain = product * product / size, rest = fit.residualSs - gain;
-    if (!(size > 1e-12 * static_cast<double>(n)) || !(rest > 0))
+    const std::vector<double> ones = columns.back();
+    const std::vector<std::vector<double>> directions = orthonormal(std::move(columns));
+    if (directions.size() <= basis.terms)
+        return;
+    const std::vector<double>& beside = directions.back();
+    double along = 0;
+    for (std::size_t i = 0; i < n; ++i)
+        along += beside[i] * root(i) * input.residuals->e.high[i];
+    const double gain = along * along, rest = fit.residualSs - gain;
+    if (!(rest > 0))
         return;
     const double f = gain / (rest / (fit.degreesOfFreedom - 1));
     const double p = fAbove(f, 1, fit.degreesOfFreedom - 1);
@@ -160,7 +153,7 @@ void throughZero(const FindingsInput& input, std::vector<Finding>& found) {
     Finding finding;
     finding.code = FindingCode::ThroughZeroNotSupported;
     finding.severity = Severity::Serious;
-    finding.figures = {{"f", f}, {"p", p}, {"value", product / size}};
+    finding.figures = {{"f", f}, {"p", p}, {"value", along / dot(beside, ones)}};
     finding.remedy = Remedy::CompareFunction;
     finding.suggestion = fit.function.family == FunctionFamily::Proportional ? FunctionChoice{FunctionFamily::Line, 0}
                                                                               : FunctionChoice{FunctionFamily::Polynomial, fit.function.order};
