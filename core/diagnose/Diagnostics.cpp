@@ -67,12 +67,6 @@ void watsonP(const Residuals& residuals, Design design, Diagnostics& result) {
     if (!result.durbinWatson || n <= design.columns.size() + 1)
         return;
     const double d = *result.durbinWatson;
-    if (n > mostForWatsonMoments) {
-        const double size = static_cast<double>(n);
-        result.durbinWatsonP = 0.5 * std::erfc(-(d - 2) * std::sqrt(size / 8));
-        result.warnings.push_back(approximate("durbin_watson", "normal"));
-        return;
-    }
     multiplyByRoots(design.columns, residuals.weight);
     if (n > mostForExactWatson) {
         result.durbinWatsonP = durbinWatsonBelowNormal(d, design.columns, n);
@@ -100,6 +94,26 @@ void outliers(std::span<const T> u, const Sample& sample, const DiagnoseQuestion
     }
 }
 
+/// The tests that look at the function's columns.
+void regressions(const Sample& sample, const Residuals& residuals, const Fit& fit, std::span<const double> u, Diagnostics& result) {
+    if (u.size() <= mostForWatsonMoments) {
+        Design design = designOf(sample, fit);
+        result.breuschPagan = breuschPagan(u, design.columns);
+        watsonP(residuals, std::move(design), result);
+        return;
+    }
+    const PairColumn& abscissa = fit.direction == FitDirection::Indication ? sample.reference : sample.indication;
+    if (fit.terms() == 2) {
+        result.breuschPagan = breuschPagan(u, std::span<const double>(abscissa.high));
+    } else if (hasFunctionBasis(fit.function)) {
+        result.breuschPagan = breuschPagan(u, designOf(sample, fit).columns);
+    }
+    if (result.durbinWatson) {
+        result.durbinWatsonP = 0.5 * std::erfc(-(*result.durbinWatson - 2) * std::sqrt(static_cast<double>(u.size()) / 8));
+        result.warnings.push_back(approximate("durbin_watson", "normal"));
+    }
+}
+
 void variances(const Sample& sample, std::span<const double> u, Diagnostics& result) {
     const EqualVariances equal = equalVariances({u, sample.group, sample.groupValue.size()});
     result.bartlett = equal.bartlett;
@@ -117,22 +131,22 @@ Diagnostics diagnose(const Sample& sample, const Residuals& residuals, const Fit
     Diagnostics result;
     if (sample.size() < 2 || !(fit.residualSs > roundingSquares(residuals)))
         return result;
-    const std::vector<double> u = weightedResiduals<double>(residuals);
+    const std::vector<double> weighted = residuals.weight.empty() ? std::vector<double>{} : weightedResiduals<double>(residuals);
+    const std::span<const double> u = residuals.weight.empty() ? residuals.e.high : weighted;
     if (residuals.e.low.empty()) {
-        orderOfTaking(std::span<const double>(u), result);
-        outliers(std::span<const double>(u), sample, question, result);
+        orderOfTaking(u, result);
+        outliers(u, sample, question, result);
     } else {
         const std::vector<DoubleDouble> exact = weightedResiduals<DoubleDouble>(residuals);
         orderOfTaking(std::span<const DoubleDouble>(exact), result);
         outliers(std::span<const DoubleDouble>(exact), sample, question, result);
     }
-    result.shapiroWilk = shapiroWilk(u.size() <= 5000 ? u : std::vector<double>{});
-    Design design = designOf(sample, fit);
-    result.breuschPagan = breuschPagan(u, design.columns);
+    if (u.size() <= 5000)
+        result.shapiroWilk = shapiroWilk({u.begin(), u.end()});
     variances(sample, u, result);
     if (fit.function.family != FunctionFamily::Constant)
         result.linearity = linearityTest(sample, residuals.weight);
-    watsonP(residuals, std::move(design), result);
+    regressions(sample, residuals, fit, u, result);
     return result;
 }
 

@@ -6,55 +6,130 @@
 
 #include <algorithm>
 #include <cmath>
+#include <cstdint>
+#include <iterator>
 
 namespace spanwright {
 namespace {
-
-/// Values sorted into their groups (counting sort); groups with fewer than two are left out.
-std::vector<std::vector<double>> replicateGroups(const GroupedValues& values) {
-    std::vector<std::uint32_t> count(values.groups, 0);
-    for (const std::int32_t g : values.group)
-        ++count[static_cast<std::size_t>(g)];
-    std::vector<std::int32_t> place(values.groups, -1);
-    std::vector<std::vector<double>> groups;
-    for (std::size_t g = 0; g < values.groups; ++g) {
-        if (count[g] < 2)
-            continue;
-        place[g] = static_cast<std::int32_t>(groups.size());
-        groups.emplace_back().reserve(count[g]);
-    }
-    if (groups.size() < 2)
-        return {};
-    for (std::size_t i = 0; i < values.u.size(); ++i) {
-        const std::int32_t at = place[static_cast<std::size_t>(values.group[i])];
-        if (at >= 0)
-            groups[static_cast<std::size_t>(at)].push_back(values.u[i]);
-    }
-    return groups;
-}
 
 struct MeanAndSquares {
     double n = 0, mean = 0, squares = 0;
 };
 
-MeanAndSquares meanAndSquares(const std::vector<double>& values) {
-    MeanAndSquares result;
-    result.n = static_cast<double>(values.size());
-    for (const double value : values)
-        result.mean += value;
-    result.mean /= result.n;
-    for (const double value : values)
-        result.squares += (value - result.mean) * (value - result.mean);
-    return result;
+/// Means and squares of |u − centre of its group| or, without centres, of u, for every group.
+std::vector<MeanAndSquares> meansAndSquares(const GroupedValues& values, std::span<const double> centre) {
+    std::vector<MeanAndSquares> parts(values.groups);
+    const auto value = [&](std::size_t i) {
+        return centre.empty() ? values.u[i] : std::abs(values.u[i] - centre[static_cast<std::size_t>(values.group[i])]);
+    };
+    for (std::size_t i = 0; i < values.u.size(); ++i) {
+        MeanAndSquares& part = parts[static_cast<std::size_t>(values.group[i])];
+        ++part.n;
+        part.mean += value(i);
+    }
+    for (MeanAndSquares& part : parts)
+        part.mean /= part.n;
+    for (std::size_t i = 0; i < values.u.size(); ++i) {
+        MeanAndSquares& part = parts[static_cast<std::size_t>(values.group[i])];
+        part.squares += (value(i) - part.mean) * (value(i) - part.mean);
+    }
+    return parts;
 }
 
-double median(std::vector<double>& values) {
-    const auto middle = values.begin() + static_cast<std::ptrdiff_t>(values.size() / 2);
-    std::nth_element(values.begin(), middle, values.end());
-    if (values.size() % 2 == 1)
-        return *middle;
-    return (*std::max_element(values.begin(), middle) + *middle) / 2;
+/// Groups with two values or more.
+std::vector<MeanAndSquares> replicated(const std::vector<MeanAndSquares>& parts) {
+    std::vector<MeanAndSquares> kept;
+    std::copy_if(parts.begin(), parts.end(), std::back_inserter(kept), [](const MeanAndSquares& part) { return part.n >= 2; });
+    return kept;
 }
+
+/// Median of every group, exact. Large groups are first counted into buckets between their ends, so that only one bucket of each
+/// is gathered and nothing is copied.
+class GroupMedians {
+  public:
+    explicit GroupMedians(const GroupedValues& values) : values_(values), buckets_(values.u.size() > 20'000 ? 1024 : 1), groups_(values.groups) {
+        for (std::size_t i = 0; i < values.u.size(); ++i) {
+            Group& group = at(i);
+            group.low = std::min(group.low, values.u[i]);
+            group.high = std::max(group.high, values.u[i]);
+            ++group.n;
+        }
+        count();
+        gather();
+    }
+
+    [[nodiscard]] std::vector<double> medians() {
+        std::vector<double> result(groups_.size(), 0.0);
+        for (std::size_t g = 0; g < groups_.size(); ++g)
+            if (groups_[g].n > 0)
+                result[g] = median(groups_[g]);
+        return result;
+    }
+
+  private:
+    struct Group {
+        double low = INFINITY, high = -INFINITY;
+        std::size_t n = 0;
+        std::size_t firstBucket = 0, lastBucket = 0, below = 0; ///< that hold both middle values; values below them
+        std::vector<double> middle;
+    };
+
+    Group& at(std::size_t i) { return groups_[static_cast<std::size_t>(values_.group[i])]; }
+
+    [[nodiscard]] std::size_t bucketOf(const Group& group, double u) const {
+        if (buckets_ == 1 || !(group.high > group.low))
+            return 0;
+        const double share = (u - group.low) / (group.high - group.low);
+        return std::min(buckets_ - 1, static_cast<std::size_t>(share * static_cast<double>(buckets_)));
+    }
+
+    void count() {
+        if (buckets_ == 1)
+            return;
+        std::vector<std::uint32_t> counts(groups_.size() * buckets_, 0);
+        for (std::size_t i = 0; i < values_.u.size(); ++i) {
+            const auto g = static_cast<std::size_t>(values_.group[i]);
+            ++counts[g * buckets_ + bucketOf(groups_[g], values_.u[i])];
+        }
+        for (std::size_t g = 0; g < groups_.size(); ++g) {
+            Group& group = groups_[g];
+            std::size_t before = 0, bucket = 0;
+            const auto advance = [&](std::size_t rank) {
+                while (before + counts[g * buckets_ + bucket] <= rank)
+                    before += counts[g * buckets_ + bucket++];
+            };
+            if (group.n == 0)
+                continue;
+            advance((group.n - 1) / 2);
+            group.firstBucket = bucket;
+            group.below = before;
+            advance(group.n / 2);
+            group.lastBucket = bucket;
+        }
+    }
+
+    void gather() {
+        for (std::size_t i = 0; i < values_.u.size(); ++i) {
+            Group& group = at(i);
+            const std::size_t bucket = bucketOf(group, values_.u[i]);
+            if (bucket >= group.firstBucket && bucket <= group.lastBucket)
+                group.middle.push_back(values_.u[i]);
+        }
+    }
+
+    static double median(Group& group) {
+        const auto nth = [&](std::size_t rank) {
+            const auto place = group.middle.begin() + static_cast<std::ptrdiff_t>(rank - group.below);
+            std::nth_element(group.middle.begin(), place, group.middle.end());
+            return *place;
+        };
+        return (nth((group.n - 1) / 2) + nth(group.n / 2)) / 2;
+    }
+
+    const GroupedValues& values_;
+    std::size_t buckets_;
+    std::vector<Group> groups_;
+};
 
 std::optional<TestResult> bartlettOf(const std::vector<MeanAndSquares>& groups) {
     const double k = static_cast<double>(groups.size());
@@ -74,19 +149,13 @@ std::optional<TestResult> bartlettOf(const std::vector<MeanAndSquares>& groups) 
     return result;
 }
 
-std::optional<TestResult> leveneOf(std::vector<std::vector<double>>& groups) {
-    double n = 0, sum = 0, within = 0;
-    std::vector<MeanAndSquares> parts;
-    for (auto& group : groups) {
-        const double middle = median(group);
-        for (double& value : group)
-            value = std::abs(value - middle);
-        parts.push_back(meanAndSquares(group));
-        n += parts.back().n;
-        sum += parts.back().n * parts.back().mean;
-        within += parts.back().squares;
+std::optional<TestResult> leveneOf(const std::vector<MeanAndSquares>& parts) {
+    double n = 0, sum = 0, within = 0, between = 0;
+    for (const auto& part : parts) {
+        n += part.n;
+        sum += part.n * part.mean;
+        within += part.squares;
     }
-    double between = 0;
     for (const auto& part : parts)
         between += part.n * (part.mean - sum / n) * (part.mean - sum / n);
     const double k = static_cast<double>(parts.size());
@@ -108,27 +177,27 @@ double cochranCriticalValue(double groups, double n, double level) {
 
 EqualVariances equalVariances(const GroupedValues& values) {
     EqualVariances result;
-    std::vector<std::vector<double>> groups = replicateGroups(values);
-    if (groups.empty())
+    if (values.groups < 2 || values.groups >= values.u.size())
         return result;
-    std::vector<MeanAndSquares> parts;
+    const std::vector<MeanAndSquares> parts = replicated(meansAndSquares(values, {}));
+    if (parts.size() < 2)
+        return result;
     double sum = 0, largest = 0, n = 0;
-    for (const auto& group : groups) {
-        parts.push_back(meanAndSquares(group));
-        const double variance = parts.back().squares / (parts.back().n - 1);
+    for (const auto& part : parts) {
+        const double variance = part.squares / (part.n - 1);
         sum += variance;
         largest = std::max(largest, variance);
-        n += parts.back().n;
-        result.equalSizes = result.equalSizes && group.size() == groups.front().size();
+        n += part.n;
+        result.equalSizes = result.equalSizes && !(std::abs(part.n - parts.front().n) > 0);
     }
     result.bartlett = bartlettOf(parts);
     if (sum > 0) {
-        const double k = static_cast<double>(groups.size());
+        const double k = static_cast<double>(parts.size());
         result.cochran = largest / sum;
         result.cochranCritical = cochranCriticalValue(k, n / k, 0.05);
         result.cochranCriticalOutlier = cochranCriticalValue(k, n / k, 0.01);
     }
-    result.levene = leveneOf(groups);
+    result.levene = leveneOf(replicated(meansAndSquares(values, GroupMedians(values).medians())));
     return result;
 }
 
@@ -163,6 +232,32 @@ std::optional<TestResult> breuschPagan(std::span<const double> u, const std::vec
     result.statistic = static_cast<double>(n) * explained / total;
     result.df = static_cast<int>(basis.size()) - 1;
     result.p = chiSquaredAbove(result.statistic, *result.df);
+    return result;
+}
+
+std::optional<TestResult> breuschPagan(std::span<const double> u, std::span<const double> column) {
+    const std::size_t n = u.size();
+    const double size = static_cast<double>(n);
+    double meanX = 0, meanV = 0;
+    for (std::size_t i = 0; i < n; ++i) {
+        meanX += column[i];
+        meanV += u[i] * u[i];
+    }
+    meanX /= size;
+    meanV /= size;
+    double xx = 0, vv = 0, xv = 0;
+    for (std::size_t i = 0; i < n; ++i) {
+        const double x = column[i] - meanX, v = u[i] * u[i] - meanV;
+        xx += x * x;
+        vv += v * v;
+        xv += x * v;
+    }
+    if (!(xx > 0) || !(vv > 0))
+        return std::nullopt;
+    TestResult result;
+    result.statistic = size * (xv / xx) * (xv / vv);
+    result.df = 1;
+    result.p = chiSquaredAbove(result.statistic, 1);
     return result;
 }
 

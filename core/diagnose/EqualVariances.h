@@ -34,4 +34,7 @@ struct EqualVariances {
 /// that count (Breusch and Pagan 1979, studentised by Koenker, J. Econometrics 17 (1981) 107). Empty without columns.
 [[nodiscard]] std::optional<TestResult> breuschPagan(std::span<const double> u, const std::vector<std::vector<double>>& columns);
 
+/// The same for one column, in two passes and without memory of its own.
+[[nodiscard]] std::optional<TestResult> breuschPagan(std::span<const double> u, std::span<const double> column);
+
 } // namespace spanwright

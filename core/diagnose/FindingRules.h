@@ -5,11 +5,11 @@
 
 namespace spanwright {
 
-/// The families of rules behind findings(), each in a source file of its own.
+/// The families of rules behind findings(), each in a source file of its own. `deviations` are repeatabilityDeviations().
 void addFunctionFindings(const FindingsInput& input, std::vector<Finding>& found);
 void addRunFindings(const FindingsInput& input, std::vector<Finding>& found);
-void addScatterFindings(const FindingsInput& input, std::vector<Finding>& found);
-void addReadingFindings(const FindingsInput& input, std::vector<Finding>& found);
+void addScatterFindings(const FindingsInput& input, const std::vector<double>& deviations, std::vector<Finding>& found);
+void addReadingFindings(const FindingsInput& input, const std::vector<double>& deviations, std::vector<Finding>& found);
 void addRecordFindings(const FindingsInput& input, std::vector<Finding>& found);
 
 /// Lack of fit as it is judged: after direction and run where the readings are unbalanced, against repeatability where there is any,

@@ -73,11 +73,15 @@ std::vector<double> repeatabilityDeviations(const FindingsInput& input) {
         cell.sum += weight * left[i];
         ++cell.n;
     }
+    // What one mean takes from a cell of few makes its deviations too small by √(1 − 1/n).
+    std::vector<double> widen;
+    for (Cell& cell : cells) {
+        cell.sum /= cell.weight;
+        widen.push_back(cell.n > 1 ? 1 / std::sqrt(1 - 1 / static_cast<double>(cell.n)) : 0);
+    }
     for (std::size_t i = 0; i < n; ++i) {
         const Cell& cell = cellOf(i);
-        left[i] = (left[i] - cell.sum / cell.weight) * (w.empty() ? 1 : std::sqrt(w[i]));
-        // What one mean takes from a cell of few makes its deviations too small by √(1 − 1/n).
-        left[i] = cell.n > 1 ? left[i] / std::sqrt(1 - 1 / static_cast<double>(cell.n)) : 0;
+        left[i] = (left[i] - cell.sum) * widen[static_cast<std::size_t>(&cell - cells.data())] * (w.empty() ? 1 : std::sqrt(w[i]));
     }
     return left;
 }
@@ -91,8 +95,9 @@ std::vector<Finding> findings(const FindingsInput& input) {
     if (input.fit && input.residuals) {
         addFunctionFindings(input, found);
         addRunFindings(input, found);
-        addReadingFindings(input, found);
-        addScatterFindings(input, found);
+        const std::vector<double> deviations = repeatabilityDeviations(input);
+        addReadingFindings(input, deviations, found);
+        addScatterFindings(input, deviations, found);
     }
     addRecordFindings(input, found);
     std::stable_sort(found.begin(), found.end(), [](const Finding& a, const Finding& b) {

@@ -20,17 +20,21 @@ Ends endsOf(std::span<const T> u, std::size_t most) {
     Ends ends;
     const auto less = [&](std::size_t a, std::size_t b) { return u[a] < u[b] || (u[a] == u[b] && a < b); };
     const auto more = [&](std::size_t a, std::size_t b) { return u[a] > u[b] || (u[a] == u[b] && a < b); };
+    const auto keep = [&](std::vector<std::size_t>& kept, std::size_t i, auto before) {
+        if (kept.size() == most)
+            kept.pop_back();
+        kept.insert(std::upper_bound(kept.begin(), kept.end(), i, before), i);
+    };
+    T lowLimit(0.0), highLimit(0.0);
     for (std::size_t i = 0; i < u.size(); ++i) {
-        const auto keep = [&](std::vector<std::size_t>& heap, auto before) {
-            if (heap.size() == most) {
-                if (!before(i, heap.back()))
-                    return;
-                heap.pop_back();
-            }
-            heap.insert(std::upper_bound(heap.begin(), heap.end(), i, before), i);
-        };
-        keep(ends.low, less);
-        keep(ends.high, more);
+        if (ends.low.size() < most || u[i] < lowLimit) {
+            keep(ends.low, i, less);
+            lowLimit = u[ends.low.back()];
+        }
+        if (ends.high.size() < most || u[i] > highLimit) {
+            keep(ends.high, i, more);
+            highLimit = u[ends.high.back()];
+        }
     }
     return ends;
 }
@@ -64,12 +68,17 @@ std::vector<ExtremeTrial> trialsOf(std::span<const T> u, int most, double level)
         ++(takeHigh ? high : low);
         const T d = u[found] - mean;
         const double variance = rounded(squares) / (left - 1);
-        trials.push_back({found, std::abs(rounded(d)) / std::sqrt(variance), grubbsCriticalValue(n - i, level)});
+        trials.push_back({found, std::abs(rounded(d)) / std::sqrt(variance), level > 0 ? grubbsCriticalValue(n - i, level) : 0});
         // Mean and squares without the value: ū' = ū − d/(m−1), S' = S − d² m/(m−1).
         mean = mean - d / (left - 1);
         squares = squares - d * d * (left / (left - 1));
     }
     return trials;
+}
+
+double criticalFrom(double quantile, std::size_t n) {
+    const double size = static_cast<double>(n);
+    return (size - 1) / std::sqrt(size) * std::sqrt(quantile * quantile / (size - 2 + quantile * quantile));
 }
 
 } // namespace
@@ -82,6 +91,20 @@ std::vector<ExtremeTrial> extremeTrials(std::span<const double> u, int most, dou
     return trialsOf(u, most, level);
 }
 
+std::vector<ExtremeTrial> extremeTrials(std::span<const double> u, int most) {
+    return trialsOf(u, most, 0);
+}
+
+int outlierCount(const std::vector<ExtremeTrial>& trials, std::size_t n, double level) {
+    for (std::size_t k = trials.size(); k > 0; --k) {
+        const std::size_t left = n - (k - 1);
+        const double least = criticalFrom(normalQuantileAbove(level / (2 * static_cast<double>(left))), left);
+        if (trials[k - 1].r > least && trials[k - 1].r > grubbsCriticalValue(left, level))
+            return static_cast<int>(k);
+    }
+    return 0;
+}
+
 int outlierCount(const std::vector<ExtremeTrial>& trials) {
     for (std::size_t k = trials.size(); k > 0; --k)
         if (trials[k - 1].r > trials[k - 1].lambda)
@@ -91,8 +114,7 @@ int outlierCount(const std::vector<ExtremeTrial>& trials) {
 
 double grubbsCriticalValue(std::size_t n, double level) {
     const double size = static_cast<double>(n);
-    const double t = studentQuantileAbove(level / (2 * size), size - 2);
-    return (size - 1) / std::sqrt(size) * std::sqrt(t * t / (size - 2 + t * t));
+    return criticalFrom(studentQuantileAbove(level / (2 * size), size - 2), n);
 }
 
 } // namespace spanwright

@@ -14,7 +14,7 @@ namespace {
 
 /// Stragglers at 5 % and outliers at 1 % (ISO 5725-2:2019, 8.3.4), among the residuals and among the deviations from set point,
 /// direction and run, where a gap between rising and falling hides nothing. A technical cause is to be looked for; nothing is removed.
-void outlying(const FindingsInput& input, std::vector<Finding>& found) {
+void outlying(const FindingsInput& input, const std::vector<double>& deviations, std::vector<Finding>& found) {
     const std::size_t n = input.sample.size();
     const int most = static_cast<int>(std::clamp<std::size_t>(n / 10, 1, 10));
     struct Mark {
@@ -22,23 +22,26 @@ void outlying(const FindingsInput& input, std::vector<Finding>& found) {
         bool outlier = false;
     };
     std::map<std::size_t, Mark> marks;
-    const auto look = [&](const std::vector<double>& u) {
+    const auto look = [&](std::span<const double> u) {
         if (u.size() < 5)
             return;
-        const std::vector<ExtremeTrial> trials = extremeTrials(std::span<const double>(u), most, 0.05);
-        const std::vector<ExtremeTrial> strict = extremeTrials(std::span<const double>(u), most, 0.01);
-        const int stragglers = outlierCount(trials), outliers = outlierCount(strict);
+        const std::vector<ExtremeTrial> trials = extremeTrials(u, most);
+        const int stragglers = outlierCount(trials, u.size(), 0.05);
+        const int outliers = stragglers > 0 ? outlierCount(trials, u.size(), 0.01) : 0;
         for (int k = 0; k < stragglers; ++k) {
-            Mark& mark = marks[trials[static_cast<std::size_t>(k)].index];
+            const auto at = static_cast<std::size_t>(k);
+            Mark& mark = marks[trials[at].index];
             const bool outlier = k < outliers;
-            if (mark.r > 0 && !outlier)
+            if (mark.r > 0 && (mark.outlier || !outlier))
                 continue;
-            const ExtremeTrial& trial = outlier ? strict[static_cast<std::size_t>(k)] : trials[static_cast<std::size_t>(k)];
-            mark = {trial.r, trial.lambda, outlier};
+            mark = {trials[at].r, grubbsCriticalValue(u.size() - at, outlier ? 0.01 : 0.05), outlier};
         }
     };
-    look(weightedResiduals<double>(*input.residuals));
-    look(repeatabilityDeviations(input));
+    if (input.residuals->weight.empty())
+        look(input.residuals->e.high);
+    else
+        look(weightedResiduals<double>(*input.residuals));
+    look(deviations);
     for (const bool outlier : {true, false}) {
         Finding finding;
         finding.code = outlier ? FindingCode::Outlier : FindingCode::Straggler;
@@ -149,8 +152,8 @@ void repeatedReadings(const FindingsInput& input, std::vector<Finding>& found) {
 
 } // namespace
 
-void addReadingFindings(const FindingsInput& input, std::vector<Finding>& found) {
-    outlying(input, found);
+void addReadingFindings(const FindingsInput& input, const std::vector<double>& deviations, std::vector<Finding>& found) {
+    outlying(input, deviations, found);
     influential(input, found);
     outsideBand(input, found);
     repeatedReadings(input, found);

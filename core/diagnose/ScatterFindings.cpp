@@ -2,8 +2,8 @@
 #include "core/diagnose/FindingRules.h"
 
 #include "core/diagnose/Autocorrelation.h"
-#include "core/diagnose/EqualVariances.h"
 #include "core/diagnose/Normality.h"
+#include "core/fit/Quantiles.h"
 
 #include <algorithm>
 #include <cmath>
@@ -13,33 +13,24 @@ namespace {
 
 constexpr double certain = 0.01;
 
-/// Standard deviations within set points and how they go with the level: exponent b of s = c·|x|^b by least squares on logarithms,
-/// and the variance at the highest level over that at the lowest (ISO 8466-1).
+/// Standard deviations within set points and how they go with the level |set point|: exponent b of s = c·level^b by least squares on
+/// logarithms; the variance at the highest level over that at the lowest (ISO 8466-1); and p of Koenker's test on the level.
 struct ScatterTrend {
-    double exponent = 0, varianceRatio = 1;
+    double exponent = 0, varianceRatio = 1, p = 1;
     std::size_t levels = 0;
 };
 
-ScatterTrend scatterTrend(const Sample& sample, const std::vector<double>& deviations) {
-    std::vector<double> squares(sample.groupValue.size(), 0.0), count(sample.groupValue.size(), 0.0);
-    for (std::size_t i = 0; i < sample.size(); ++i) {
-        squares[static_cast<std::size_t>(sample.group[i])] += deviations[i] * deviations[i];
-        ++count[static_cast<std::size_t>(sample.group[i])];
-    }
-    ScatterTrend trend;
+struct Level {
+    double level = 0, n = 0, squares = 0;
+};
+
+/// Slope of ln s over ln level.
+double exponentOf(const std::vector<Level>& levels) {
     double n = 0, sumX = 0, sumY = 0, sumXX = 0, sumXY = 0;
-    std::optional<double> lowest, highest;
-    for (std::size_t g = 0; g < squares.size(); ++g) {
-        if (!(squares[g] > 0))
+    for (const Level& one : levels) {
+        if (!(one.level > 0) || !(one.squares > 0))
             continue;
-        const double variance = squares[g] / count[g];
-        if (!lowest)
-            lowest = variance;
-        highest = variance;
-        ++trend.levels;
-        if (!(std::abs(sample.groupValue[g]) > 0))
-            continue;
-        const double x = std::log(std::abs(sample.groupValue[g])), y = std::log(variance) / 2;
+        const double x = std::log(one.level), y = std::log(one.squares / one.n) / 2;
         ++n;
         sumX += x;
         sumY += y;
@@ -47,10 +38,40 @@ ScatterTrend scatterTrend(const Sample& sample, const std::vector<double>& devia
         sumXY += x * y;
     }
     const double spread = sumXX - sumX * sumX / n;
-    if (n > 1 && spread > 0)
-        trend.exponent = (sumXY - sumX * sumY / n) / spread;
-    if (lowest && *lowest > 0)
-        trend.varianceRatio = *highest / *lowest;
+    return n > 1 && spread > 0 ? (sumXY - sumX * sumY / n) / spread : 0;
+}
+
+ScatterTrend scatterTrend(const Sample& sample, const std::vector<double>& deviations) {
+    std::vector<Level> levels(sample.groupValue.size());
+    for (std::size_t g = 0; g < levels.size(); ++g)
+        levels[g].level = std::abs(sample.groupValue[g]);
+    double fourth = 0;
+    for (std::size_t i = 0; i < sample.size(); ++i) {
+        const double square = deviations[i] * deviations[i];
+        Level& one = levels[static_cast<std::size_t>(sample.group[i])];
+        ++one.n;
+        one.squares += square;
+        fourth += square * square;
+    }
+    std::sort(levels.begin(), levels.end(), [](const Level& a, const Level& b) { return a.level < b.level; });
+    ScatterTrend trend;
+    trend.exponent = exponentOf(levels);
+    const double n = static_cast<double>(sample.size());
+    double meanLevel = 0, meanSquare = 0, xx = 0, xv = 0;
+    for (const Level& one : levels) {
+        meanLevel += one.n * one.level / n;
+        meanSquare += one.squares / n;
+        trend.levels += one.squares > 0 ? 1 : 0;
+    }
+    for (const Level& one : levels) {
+        xx += one.n * (one.level - meanLevel) * (one.level - meanLevel);
+        xv += (one.level - meanLevel) * (one.squares - one.n * meanSquare);
+    }
+    const double vv = fourth - n * meanSquare * meanSquare;
+    if (xx > 0 && vv > 0 && levels.front().squares > 0) {
+        trend.p = chiSquaredAbove(n * (xv / xx) * (xv / vv), 1);
+        trend.varianceRatio = (levels.back().squares / levels.back().n) / (levels.front().squares / levels.front().n);
+    }
     return trend;
 }
 
@@ -70,14 +91,10 @@ void scatterGrows(const FindingsInput& input, const std::vector<double>& deviati
         found.push_back(finding);
         return;
     }
-    std::vector<double> level(input.sample.size());
-    for (std::size_t i = 0; i < level.size(); ++i)
-        level[i] = std::abs(input.sample.groupValue[static_cast<std::size_t>(input.sample.group[i])]);
-    const auto test = breuschPagan(deviations, {level});
     const ScatterTrend trend = scatterTrend(input.sample, deviations);
-    if (!test || !(test->p < certain) || trend.levels < 3 || !(trend.varianceRatio > 1) || !(trend.exponent > 0.2))
+    if (!(trend.p < certain) || trend.levels < 3 || !(trend.varianceRatio > 1) || !(trend.exponent > 0.2))
         return;
-    finding.figures = {{"variance_ratio", trend.varianceRatio}, {"exponent", trend.exponent}, {"p", test->p}};
+    finding.figures = {{"variance_ratio", trend.varianceRatio}, {"exponent", trend.exponent}, {"p", trend.p}};
     found.push_back(finding);
 }
 
@@ -128,8 +145,7 @@ void nonNormal(const FindingsInput& input, const std::vector<double>& deviations
 
 } // namespace
 
-void addScatterFindings(const FindingsInput& input, std::vector<Finding>& found) {
-    const std::vector<double> deviations = repeatabilityDeviations(input);
+void addScatterFindings(const FindingsInput& input, const std::vector<double>& deviations, std::vector<Finding>& found) {
     scatterGrows(input, deviations, found);
     autocorrelated(input, deviations, found);
     nonNormal(input, deviations, found);

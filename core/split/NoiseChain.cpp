@@ -4,6 +4,7 @@
 #include <algorithm>
 #include <array>
 #include <cmath>
+#include <span>
 
 namespace spanwright {
 namespace {
@@ -15,20 +16,10 @@ double plain(const DoubleDouble& value) {
     return toDouble(value);
 }
 
-template <class T>
-T take(const PairColumn& column, std::size_t i);
-template <>
-double take<double>(const PairColumn& column, std::size_t i) {
-    return column.high[i];
-}
-template <>
-DoubleDouble take<DoubleDouble>(const PairColumn& column, std::size_t i) {
-    return column[i];
-}
-
 /// Which cell and which run a reading belongs to.
 struct Places {
-    std::vector<std::int32_t> cell;
+    std::vector<std::int32_t> ownCell; ///< where cells are not simply set points
+    std::span<const std::int32_t> cell;
     std::vector<std::int32_t> run; ///< index into runNumbers; empty when no run is known
     std::vector<int> runNumbers;   ///< rising
     bool tooManyRuns = false;
@@ -50,15 +41,16 @@ std::vector<int> runNumbers(const std::vector<std::int32_t>& runs) {
     return numbers;
 }
 
-Places findPlaces(const Sample& sample, NoiseChain& chain) {
-    const std::size_t n = sample.size();
-    const std::size_t groups = sample.groupValue.size();
-    Places places;
+std::size_t directionOf(const Sample& sample, std::size_t i) {
+    return sample.direction.empty() ? 0 : static_cast<std::size_t>(sample.direction[i]);
+}
+
+/// Cells in rising order of set point: one for each direction where a set point has both, else one for the set point.
+void findCells(const Sample& sample, Places& places, NoiseChain& chain) {
+    const std::size_t n = sample.size(), groups = sample.groupValue.size();
     std::vector<std::array<std::int32_t, 3>> seen(groups, {0, 0, 0});
-    for (std::size_t i = 0; i < n; ++i) {
-        const auto d = sample.direction.empty() ? std::size_t{0} : static_cast<std::size_t>(sample.direction[i]);
-        ++seen[static_cast<std::size_t>(sample.group[i])][d];
-    }
+    for (std::size_t i = 0; i < n; ++i)
+        ++seen[static_cast<std::size_t>(sample.group[i])][directionOf(sample, i)];
     std::vector<std::array<std::int32_t, 3>> cellOf(groups, {-1, -1, -1});
     for (std::size_t g = 0; g < groups; ++g) {
         const bool both = seen[g][1] > 0 && seen[g][2] > 0;
@@ -66,8 +58,7 @@ Places findPlaces(const Sample& sample, NoiseChain& chain) {
         for (std::size_t d = 0; d < 3; ++d) {
             if (seen[g][d] == 0)
                 continue;
-            if (d > 0)
-                chain.directionsKnown = true;
+            chain.directionsKnown = chain.directionsKnown || d > 0;
             if (!any || both) {
                 NoiseChain::Cell cell;
                 cell.group = static_cast<std::int32_t>(g);
@@ -78,15 +69,25 @@ Places findPlaces(const Sample& sample, NoiseChain& chain) {
             }
             any = true;
             cellOf[g][d] = static_cast<std::int32_t>(chain.cells.size() - 1);
+            chain.cells.back().n += static_cast<std::size_t>(seen[g][d]);
         }
         chain.setPoints += any ? 1 : 0;
     }
     chain.contrasts = static_cast<int>(chain.cells.size()) - chain.setPoints;
-    places.cell.resize(n);
-    for (std::size_t i = 0; i < n; ++i) {
-        const auto d = sample.direction.empty() ? std::size_t{0} : static_cast<std::size_t>(sample.direction[i]);
-        places.cell[i] = cellOf[static_cast<std::size_t>(sample.group[i])][d];
+    if (chain.contrasts == 0 && chain.cells.size() == groups) {
+        places.cell = sample.group;
+        return;
     }
+    places.ownCell.resize(n);
+    for (std::size_t i = 0; i < n; ++i)
+        places.ownCell[i] = cellOf[static_cast<std::size_t>(sample.group[i])][directionOf(sample, i)];
+    places.cell = places.ownCell;
+}
+
+Places findPlaces(const Sample& sample, NoiseChain& chain) {
+    Places places;
+    findCells(sample, places, chain);
+    const std::size_t n = sample.size();
     if (!sample.run.empty()) {
         places.runNumbers = runNumbers(sample.run);
         places.tooManyRuns = places.runNumbers.size() > mostRuns;
@@ -109,7 +110,7 @@ struct Sums {
 
 /// Weighted means of e in the classes named by `of`, second pass included: the mean of what the first one left.
 template <class T>
-Sums<T> meansOf(const std::vector<std::int32_t>& of, std::size_t classes, const std::vector<T>& e, const std::vector<T>& w) {
+Sums<T> meansOf(std::span<const std::int32_t> of, std::size_t classes, std::span<const T> e, std::span<const T> w) {
     Sums<T> sums{std::vector<T>(classes, T(0.0)), std::vector<T>(classes, T(0.0))};
     for (std::size_t i = 0; i < e.size(); ++i) {
         const auto c = static_cast<std::size_t>(of[i]);
@@ -128,7 +129,7 @@ Sums<T> meansOf(const std::vector<std::int32_t>& of, std::size_t classes, const 
 }
 
 template <class T>
-T squaresAbout(const std::vector<std::int32_t>& of, const std::vector<T>& mean, const std::vector<T>& e, const std::vector<T>& w) {
+T squaresAbout(std::span<const std::int32_t> of, const std::vector<T>& mean, std::span<const T> e, std::span<const T> w) {
     T sum(0.0);
     for (std::size_t i = 0; i < e.size(); ++i) {
         const T d = e[i] - mean[static_cast<std::size_t>(of[i])];
@@ -203,8 +204,8 @@ struct CellRunSums {
 
 /// Readings in order of cell (counting sort), then the sums for each run inside each cell.
 template <class T, class Use>
-void eachCell(const NoiseChain& chain, const Places& places, const std::vector<T>& e, const std::vector<T>& w,
-              const std::vector<T>& mean, Use&& use) {
+void eachCell(const NoiseChain& chain, const Places& places, std::span<const T> e, std::span<const T> w, const std::vector<T>& mean,
+              Use&& use) {
     const std::size_t cells = chain.cells.size();
     std::vector<std::size_t> begin(cells + 1, 0);
     for (const std::int32_t c : places.cell)
@@ -250,7 +251,7 @@ Range rangeOf(const Sample& sample) {
 }
 
 template <class T>
-void addRuns(const Sample& sample, const Places& places, const std::vector<T>& e, const std::vector<T>& w, const Sums<T>& cellSums,
+void addRuns(const Sample& sample, const Places& places, std::span<const T> e, std::span<const T> w, const Sums<T>& cellSums,
              NoiseChain& chain) {
     const std::size_t runs = chain.runs;
     const Range range = rangeOf(sample);
@@ -328,17 +329,7 @@ double runInContrast(const NoiseChain& chain) {
 }
 
 template <class T>
-std::vector<T> columnOf(const PairColumn& column) {
-    std::vector<T> values(column.size());
-    for (std::size_t i = 0; i < values.size(); ++i)
-        values[i] = take<T>(column, i);
-    return values;
-}
-
-template <class T>
-void build(const Sample& sample, const Residuals& residuals, NoiseChain& chain) {
-    const std::vector<T> e = columnOf<T>(residuals.e);
-    const std::vector<T> w = columnOf<T>(residuals.weight);
+void build(const Sample& sample, std::span<const T> e, std::span<const T> w, NoiseChain& chain) {
     const Places places = findPlaces(sample, chain);
     T all(0.0);
     for (std::size_t i = 0; i < e.size(); ++i)
@@ -346,16 +337,13 @@ void build(const Sample& sample, const Residuals& residuals, NoiseChain& chain) 
     chain.s1 = all;
     const Sums<T> groups = meansOf<T>(sample.group, sample.groupValue.size(), e, w);
     chain.s2 = squaresAbout<T>(sample.group, groups.mean, e, w);
-    const Sums<T> cells = meansOf<T>(places.cell, chain.cells.size(), e, w);
-    chain.s3 = chain.contrasts == 0 ? chain.s2 : DoubleDouble(squaresAbout<T>(places.cell, cells.mean, e, w));
+    const bool divided = !places.ownCell.empty();
+    const Sums<T> cells = divided ? meansOf<T>(places.cell, chain.cells.size(), e, w) : groups;
+    chain.s3 = divided ? DoubleDouble(squaresAbout<T>(places.cell, cells.mean, e, w)) : chain.s2;
     chain.s4 = chain.s5 = chain.s3;
 
-    std::vector<std::size_t> n(chain.cells.size(), 0);
-    for (const std::int32_t c : places.cell)
-        ++n[static_cast<std::size_t>(c)];
     for (std::size_t c = 0; c < chain.cells.size(); ++c) {
         NoiseChain::Cell& cell = chain.cells[c];
-        cell.n = n[c];
         cell.weight = plain(cells.weight[c]);
         cell.mean = plain(cells.mean[c]);
         chain.balanced = chain.balanced && cell.n == chain.cells.front().n;
@@ -376,11 +364,17 @@ NoiseChain noiseChain(const Sample& sample, const Residuals& residuals) {
     chain.readings = sample.size();
     if (chain.readings == 0 || sample.groupValue.empty())
         return chain;
-    const bool doubles = residuals.e.low.empty();
-    if (doubles)
-        build<double>(sample, residuals, chain);
-    else
-        build<DoubleDouble>(sample, residuals, chain);
+    if (residuals.e.low.empty()) {
+        build<double>(sample, residuals.e.high, residuals.weight.high, chain);
+        return chain;
+    }
+    const auto exact = [](const PairColumn& column) {
+        std::vector<DoubleDouble> values(column.size());
+        for (std::size_t i = 0; i < values.size(); ++i)
+            values[i] = column[i];
+        return values;
+    };
+    build<DoubleDouble>(sample, exact(residuals.e), exact(residuals.weight), chain);
     return chain;
 }
 
