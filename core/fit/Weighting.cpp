@@ -113,8 +113,20 @@ struct Straight {
     double c0 = 0, c1 = 0;
 };
 
-/// c0 + c1 x with both at least 0, weights w.
-Straight nonNegativeLine(const std::vector<Spread>& points, const std::vector<double>& w) {
+/// Share of the pooled standard deviation below which c0 is not taken, so that no reading counts as perfect (common practice).
+constexpr double LeastConstant = 0.1;
+
+double pooled(const std::vector<Spread>& points) {
+    double square = 0, freedom = 0;
+    for (const Spread& spread : points) {
+        square += spread.freedom * spread.sd * spread.sd;
+        freedom += spread.freedom;
+    }
+    return std::sqrt(square / freedom);
+}
+
+/// c0 + c1 x with c0 ≥ `least` and c1 ≥ 0, weights w.
+Straight boundedLine(const std::vector<Spread>& points, const std::vector<double>& w, double least) {
     double sw = 0, sx = 0, sy = 0, sxx = 0, sxy = 0;
     for (std::size_t i = 0; i < points.size(); ++i) {
         sw += w[i];
@@ -126,8 +138,8 @@ Straight nonNegativeLine(const std::vector<Spread>& points, const std::vector<do
     const double determinant = sw * sxx - sx * sx;
     const Straight free{(sxx * sy - sx * sxy) / determinant, (sw * sxy - sx * sy) / determinant};
     if (!(free.c1 > 0))
-        return {sy / sw, 0};
-    return free.c0 >= 0 ? free : Straight{0, sxy / sxx};
+        return {std::max(least, sy / sw), 0};
+    return free.c0 >= least ? free : Straight{least, std::max(0.0, (sxy - least * sx) / sxx)};
 }
 
 } // namespace
@@ -154,14 +166,14 @@ Result<Weighting> varianceFunctionWeighting(const Sample& sample, const PairColu
     std::vector<double> w;
     for (const Spread& spread : points)
         w.push_back(spread.freedom);
-    Straight line = nonNegativeLine(points, w);
-    for (int iteration = 0; iteration < 50; ++iteration) {
+    const double least = LeastConstant * pooled(points);
+    Straight line = boundedLine(points, w, least);
+    for (int iteration = 0; iteration < 50 && least > 0; ++iteration) {
         for (std::size_t i = 0; i < points.size(); ++i) {
             const double u = line.c0 + line.c1 * points[i].place;
-            if (u > 0)
-                w[i] = points[i].freedom / (u * u);
+            w[i] = points[i].freedom / (u * u);
         }
-        line = nonNegativeLine(points, w);
+        line = boundedLine(points, w, least);
     }
     std::vector<double> u;
     std::vector<std::size_t> without;

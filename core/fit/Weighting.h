@@ -38,8 +38,9 @@ Result<Weighting> statedWeighting(const Sample& sample, const PairColumn& x, con
 /// (facts: rows) where a set point has fewer than two readings or no spread.
 Result<Weighting> replicateWeighting(const Sample& sample, const PairColumn& x, const std::vector<DoubleDouble>& residual);
 
-/// Weights from u(x) = c0 + c1 |x|, c0 and c1 ≥ 0, fitted to the standard deviations at the set points with weights ν/u² (the
-/// variance of a standard deviation is u²/2ν), iterated. Errors: TooFewSetPoints (facts: needed, got) with fewer than two set points that have replicates.
+/// Weights from u(x) = c0 + c1 |x|, c1 ≥ 0 and c0 at least a tenth of the pooled spread, fitted to the standard deviations at the set points with weights ν/u² (the
+/// variance of a standard deviation is u²/2ν), iterated. Errors: TooFewSetPoints (facts: needed, got)
+/// with fewer than two set points that have replicates, UncertaintyNotPositive (facts: rows) without any spread.
 Result<Weighting> varianceFunctionWeighting(const Sample& sample, const PairColumn& x, const std::vector<DoubleDouble>& residual);
 
 /// Weights from u ∝ |x| (ISO 11095:1996, proportional residual standard deviation). Error: OutsideDomain (facts: rows) at x = 0.
