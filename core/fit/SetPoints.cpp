@@ -38,18 +38,22 @@ void groupByTable(Sample& sample, std::span<const std::int64_t> grid, int scale,
         sample.group[i] = table[static_cast<std::size_t>(grid[i] - low)];
 }
 
-/// Key and row in one number, sorted by digits of the key.
+/// Key and row in one number, sorted by digits of the key; the digits of all passes are counted in one.
 void sortByDigits(std::vector<std::uint64_t>& items, int keyAt, int keyBits) {
     constexpr int Bits = 11;
+    constexpr std::uint64_t Mask = (1u << Bits) - 1;
+    const auto passes = static_cast<std::size_t>((keyBits + Bits - 1) / Bits);
+    std::vector<std::array<std::uint32_t, Mask + 1>> places(passes);
+    for (const std::uint64_t item : items)
+        for (std::size_t pass = 0; pass < passes; ++pass)
+            places[pass][(item >> (keyAt + static_cast<int>(pass) * Bits)) & Mask] += 1;
     std::vector<std::uint64_t> other(items.size());
-    for (int shift = keyAt; shift < keyAt + keyBits; shift += Bits) {
-        std::array<std::uint32_t, std::size_t{1} << Bits> place{};
-        const auto digit = [shift](std::uint64_t item) { return static_cast<std::size_t>((item >> shift) & ((1u << Bits) - 1)); };
-        for (const std::uint64_t item : items)
-            place[digit(item)] += 1;
+    for (std::size_t pass = 0; pass < passes; ++pass) {
+        auto& place = places[pass];
+        const int shift = keyAt + static_cast<int>(pass) * Bits;
         std::exclusive_scan(place.begin(), place.end(), place.begin(), std::uint32_t{0});
         for (const std::uint64_t item : items)
-            other[place[digit(item)]++] = item;
+            other[place[(item >> shift) & Mask]++] = item;
         items.swap(other);
     }
 }
@@ -61,11 +65,13 @@ void groupByDigits(Sample& sample, std::span<const std::int64_t> grid, int scale
     sortByDigits(items, rowBits, keyBits);
     const GridValue valueOf(scale);
     const std::uint64_t rowMask = (std::uint64_t{1} << rowBits) - 1;
+    std::uint64_t before = 0;
     for (std::size_t i = 0; i < items.size(); ++i) {
-        const auto row = static_cast<std::size_t>(items[i] & rowMask);
-        if (i == 0 || items[i] >> rowBits != items[i - 1] >> rowBits)
-            sample.groupValue.push_back(valueOf(grid[row]));
-        sample.group[row] = static_cast<std::int32_t>(sample.groupValue.size()) - 1;
+        const std::uint64_t key = items[i] >> rowBits;
+        if (i == 0 || key != before)
+            sample.groupValue.push_back(valueOf(low + static_cast<std::int64_t>(key)));
+        before = key;
+        sample.group[static_cast<std::size_t>(items[i] & rowMask)] = static_cast<std::int32_t>(sample.groupValue.size()) - 1;
     }
 }
 

@@ -5,7 +5,7 @@ namespace spanwright {
 
 inline constexpr int MostStreamedDegree = 10;
 
-/// Readings on their decimal grids, a multiple of four: t = (x − x0)·xStep in [−1, 1], v = y − y0, exact.
+/// Readings on their decimal grids, a multiple of four: t = (x − x0)·xStep in about [−1, 1], v = y − y0, exact.
 struct StreamBlock {
     const long* x = nullptr;
     const long* y = nullptr;
@@ -14,15 +14,20 @@ struct StreamBlock {
     double xStep = 1, yUnit = 1;
 };
 
+/// Kept while streaming: the lowest and highest x, and the bits of y − y0 + 2^51 of all readings together.
+struct StreamRange {
+    long low = 0, high = 0;
+    unsigned long wide = 0;
+};
+
 /// The inner loops by degree d of the polynomial, written in StreamKernel.inc for every processor and for AVX2, with equal bits.
 struct StreamKernel {
     /// Σ T_j(t) for j = 0…2d, Σ T_j(t) v for j = 0…d, Σ v².
-    void (*moments[MostStreamedDegree + 1])(const StreamBlock&, double*);
+    void (*moments[MostStreamedDegree + 1])(const StreamBlock&, double*, StreamRange&);
     /// With e = v − Σ c_j T_j(t): Σ T_j(t) e for j = 0…d, Σ e².
     void (*residuals[MostStreamedDegree + 1])(const StreamBlock&, const double*, double*);
     /// e·yUnit and Σ h_j T_j(t), j = 0…2d, of every reading.
     void (*elements[MostStreamedDegree + 1])(const StreamBlock&, const double*, const double*, double*, double*);
-    void (*extremes)(const long*, unsigned long, long*, long*);
 };
 
 namespace plain {

@@ -14,7 +14,7 @@ namespace spanwright {
 namespace {
 
 constexpr std::size_t BlockSize = 512, ChunkSize = 128 * BlockSize;
-constexpr std::int64_t WidestGrid = std::int64_t{1} << 51;
+constexpr std::uint64_t WidestGrid = std::uint64_t{1} << 51;
 /// Share of a diagonal entry below which a pivot of the normal equations is made of lost digits.
 constexpr double PivotBelow = 1e-8;
 
@@ -28,7 +28,8 @@ StreamBlock blockOf(const StreamMap& map, const std::int64_t* x, const std::int6
 
 /// Sums over all readings of what `kernel` gives for a block: blocks in double, chunks of blocks in double-double and in order,
 /// so that the number of threads does not show.
-using BlockSum = std::function<void(const StreamBlock&, double*)>;
+/// `kernel` also gets the number of the chunk.
+using BlockSum = std::function<void(const StreamBlock&, double*, std::size_t)>;
 
 std::vector<DoubleDouble> streamedSums(const StreamMap& map, const GridColumn& x, const GridColumn& y, std::size_t width,
                                        const BlockSum& kernel, unsigned threads) {
@@ -40,7 +41,7 @@ std::vector<DoubleDouble> streamedSums(const StreamMap& map, const GridColumn& x
         for (std::size_t from = c * ChunkSize; from < end; from += BlockSize) {
             const std::size_t count = std::min(BlockSize, end - from), whole = count - count % 4;
             if (whole > 0) {
-                kernel(blockOf(map, x.grid.data() + from, y.grid.data() + from, whole), sums);
+                kernel(blockOf(map, x.grid.data() + from, y.grid.data() + from, whole), sums, c);
                 for (std::size_t k = 0; k < width; ++k)
                     totals[c * width + k] += sums[k];
             }
@@ -48,7 +49,7 @@ std::vector<DoubleDouble> streamedSums(const StreamMap& map, const GridColumn& x
                 // A last reading alone: four of it, a quarter of the sums.
                 const std::int64_t mx[4] = {x.grid[i], x.grid[i], x.grid[i], x.grid[i]};
                 const std::int64_t my[4] = {y.grid[i], y.grid[i], y.grid[i], y.grid[i]};
-                kernel(blockOf(map, mx, my, 4), sums);
+                kernel(blockOf(map, mx, my, 4), sums, c);
                 for (std::size_t k = 0; k < width; ++k)
                     totals[c * width + k] += sums[k] / 4;
             }
@@ -189,27 +190,66 @@ std::vector<DoubleDouble> rightSide(const StreamSums& sums, const std::vector<Do
     return inBasis(basis, cross, p);
 }
 
-std::optional<StreamSums> gathered(const GridColumn& x, const GridColumn& y, int degree, unsigned threads) {
-    const StreamKernel& kernel = streamKernel();
-    long lowX = 0, highX = 0, lowY = 0, highY = 0;
-    kernel.extremes(asLong(x.grid.data()), x.grid.size(), &lowX, &highX);
-    kernel.extremes(asLong(y.grid.data()), y.grid.size(), &lowY, &highY);
-    if (highX - lowX >= WidestGrid || highY - lowY >= WidestGrid || (degree > 0 && highX == lowX))
-        return std::nullopt;
+/// The extremes of some readings, enough to place t and v; all of them are known after the first pass.
+StreamRange guessedRange(std::span<const std::int64_t> grid) {
+    constexpr std::size_t Looked = 4096;
+    const std::size_t step = std::max<std::size_t>(1, grid.size() / Looked);
+    StreamRange range{grid.front(), grid.front(), 0};
+    for (std::size_t i = 0; i < grid.size(); i += step) {
+        range.low = std::min<long>(range.low, grid[i]);
+        range.high = std::max<long>(range.high, grid[i]);
+    }
+    return range;
+}
+
+StreamMap mapOver(const StreamRange& x, const StreamRange& y, int xScale, int yScale) {
+    StreamMap map{x.low + (x.high - x.low) / 2, y.low + (y.high - y.low) / 2, 1.0, xScale, yScale};
+    if (x.high > x.low)
+        map.xStep = 2.0 / static_cast<double>(x.high - x.low);
+    return map;
+}
+
+/// Moments with t over `guess`, and the range that there was.
+struct Gathered {
     StreamSums sums;
-    sums.degree = degree;
-    sums.n = x.grid.size();
-    sums.lowX = lowX;
-    sums.highX = highX;
-    sums.map = {lowX + (highX - lowX) / 2, lowY + (highY - lowY) / 2, 1.0, x.scale, y.scale};
-    sums.map.xStep = highX > lowX ? 2.0 / static_cast<double>(highX - lowX) : 1.0;
+    StreamRange range;
+};
+
+Gathered gatheredOver(const StreamMap& map, const GridColumn& x, const GridColumn& y, int degree, unsigned threads) {
     const auto d = static_cast<std::size_t>(degree);
-    const auto all = streamedSums(sums.map, x, y, 3 * d + 3, kernel.moments[d], threads);
+    const auto kernel = streamKernel().moments[d];
+    std::vector<StreamRange> ranges((x.grid.size() + ChunkSize - 1) / ChunkSize, {x.grid.front(), x.grid.front(), 0});
+    const BlockSum sum = [&](const StreamBlock& block, double* out, std::size_t chunk) { kernel(block, out, ranges[chunk]); };
+    const auto all = streamedSums(map, x, y, 3 * d + 3, sum, threads);
     const auto from = [&](std::size_t at) { return all.begin() + static_cast<std::ptrdiff_t>(at); };
-    sums.moment.assign(from(0), from(2 * d + 1));
-    sums.cross.assign(from(2 * d + 1), from(3 * d + 2));
-    sums.square = all.back();
-    return sums;
+    Gathered gathered{{degree, map, x.grid.size(), 0, 0, {}, {}, all.back()}, ranges.front()};
+    for (const StreamRange& range : ranges) {
+        gathered.range.low = std::min(gathered.range.low, range.low);
+        gathered.range.high = std::max(gathered.range.high, range.high);
+        gathered.range.wide |= range.wide;
+    }
+    gathered.sums.lowX = gathered.range.low;
+    gathered.sums.highX = gathered.range.high;
+    gathered.sums.moment.assign(from(0), from(2 * d + 1));
+    gathered.sums.cross.assign(from(2 * d + 1), from(3 * d + 2));
+    return gathered;
+}
+
+std::optional<StreamSums> gathered(const GridColumn& x, const GridColumn& y, int degree, unsigned threads) {
+    const auto tooWide = [](std::int64_t low, std::int64_t high) { return static_cast<std::uint64_t>(high) - static_cast<std::uint64_t>(low) >= WidestGrid; };
+    const StreamRange guess = guessedRange(x.grid), guessY = guessedRange(y.grid);
+    if (tooWide(guess.low, guess.high) || tooWide(guessY.low, guessY.high))
+        return std::nullopt;
+    StreamMap map = mapOver(guess, guessY, x.scale, y.scale);
+    Gathered first = gatheredOver(map, x, y, degree, threads);
+    const StreamRange& range = first.range;
+    if (tooWide(range.low, range.high) || (range.wide >> 52) != 0 || (degree > 0 && range.high == range.low))
+        return std::nullopt;
+    // Readings far outside the guess would make the Chebyshev polynomials grow: once more, over the whole range.
+    const double beyond = std::max(static_cast<double>(range.high - map.x0), static_cast<double>(map.x0 - range.low)) * map.xStep;
+    if (beyond <= 1.02)
+        return std::move(first.sums);
+    return gatheredOver(mapOver(range, guessY, x.scale, y.scale), x, y, degree, threads).sums;
 }
 
 /// One step of refinement with residuals of the rounded coefficients, and Σe² of the refined ones.
@@ -224,7 +264,7 @@ void refine(StreamedFit& fit, const GridColumn& x, const GridColumn& y, unsigned
         lost.push_back(value - c.back());
     }
     const auto kernel = streamKernel().residuals[d];
-    const auto sums = streamedSums(fit.sums.map, x, y, d + 2, [&](const StreamBlock& block, double* out) { kernel(block, c.data(), out); }, threads);
+    const auto sums = streamedSums(fit.sums.map, x, y, d + 2, [&](const StreamBlock& block, double* out, std::size_t) { kernel(block, c.data(), out); }, threads);
     // Residuals of β itself differ from those of the rounded c by Σ lost_j T_j: carried through the moments.
     std::vector<DoubleDouble> gradient(sums.begin(), sums.begin() + static_cast<std::ptrdiff_t>(d + 1));
     DoubleDouble square = sums.back();

@@ -16,7 +16,7 @@ struct GridColumn {
     int scale = 0;
 };
 
-/// How the grids are mapped: t = (m_x − x0)·xStep in [−1, 1] and v = m_y − y0, an exact
+/// How the grids are mapped: t = (m_x − x0)·xStep in about [−1, 1] and v = m_y − y0, an exact
 /// integer. Ordinates are counted in units of their grid, unit() of which is one, until they are reported.
 struct StreamMap {
     std::int64_t x0 = 0, y0 = 0;
@@ -55,8 +55,7 @@ struct StreamedFit {
     [[nodiscard]] std::size_t terms() const { return beta.size(); }
 };
 
-/// Least squares on 64-bit grids: extremes, moments and residuals in three passes of streamed doubles with block sums in
-/// double-double, the normal equations in the Chebyshev basis solved in double-double by Cholesky, one refinement from the
+/// Least squares on 64-bit grids: moments and residuals in two passes of streamed doubles with block sums in double-double, the normal equations in the Chebyshev basis solved in double-double by Cholesky, one refinement from the
 /// residuals (Björck, Numerical Methods for Least Squares Problems, 2.9.2). About 13 digits of the coefficients, 14 of their
 /// uncertainties. The same bits for any number of `threads` and any processor. Empty when a grid spans 2^51 or more, or when the
 /// moments lose more than half of their digits: then the readings need double-double throughout.
