@@ -96,6 +96,8 @@ class TableReader {
         for (std::size_t i = 0; i < builders_.size(); ++i)
             if (isNumber(table_.columns[i].kind))
                 builders_[i].reserve(rows);
+            else if (table_.columns[i].kind == ColumnKind::Time)
+                table_.columns[i].times.reserve(rows);
     }
 
     void readRow() {

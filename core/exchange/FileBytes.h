@@ -20,7 +20,13 @@ class FileBytes {
     [[nodiscard]] std::string_view bytes() const { return {data_.get(), size_}; }
 
   private:
-    std::unique_ptr<char[]> data_;
+    struct Release {
+        void operator()(char* data) const;
+    };
+    using Room = std::unique_ptr<char[], Release>;
+    static Room makeRoom(std::size_t bytes);
+
+    Room data_;
     std::size_t size_ = 0;
 };
 

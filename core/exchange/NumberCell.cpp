@@ -18,23 +18,23 @@ void NumberColumnBuilder::add(const Decimal& number) {
         addMissing();
         return;
     }
-    mantissas_.push_back(number.mantissa);
-    decimals_.push_back(static_cast<std::uint8_t>(number.decimals));
+    add(PlainNumber{nullptr, number.mantissa, static_cast<std::uint8_t>(number.decimals)});
 }
 
 DecimalColumn NumberColumnBuilder::finish() && {
-    int scale = 0;
-    for (const std::uint8_t d : decimals_)
-        scale = std::max(scale, d == DecimalColumn::Missing ? 0 : static_cast<int>(d));
+    const int scale = most_;
+    if (least_ == most_) // already on one grid, as loggers write
+        return withAside(DecimalColumn::fromGrid(std::move(mantissas_), std::move(decimals_), scale));
     std::int64_t factors[LargestScale + 1] = {1};
     for (int i = 1; i <= LargestScale; ++i)
         factors[i] = factors[i - 1] * 10;
+    std::int64_t largest[LargestScale + 1];
+    for (int d = 0; d <= scale; ++d)
+        largest[d] = LargestOnGrid / factors[scale - d];
 
     const auto fits = [&](std::size_t i) {
-        if (decimals_[i] == DecimalColumn::Missing)
-            return true;
-        const std::int64_t most = LargestOnGrid / factors[scale - decimals_[i]];
-        return mantissas_[i] <= most && mantissas_[i] >= -most;
+        return decimals_[i] == DecimalColumn::Missing ||
+               (mantissas_[i] <= largest[decimals_[i]] && mantissas_[i] >= -largest[decimals_[i]]);
     };
     bool oneGrid = true;
     for (std::size_t i = 0; i < mantissas_.size() && oneGrid; ++i)
@@ -55,7 +55,10 @@ DecimalColumn NumberColumnBuilder::finish() && {
     for (std::size_t i = 0; i < mantissas_.size(); ++i)
         if (decimals_[i] != DecimalColumn::Missing)
             mantissas_[i] *= factors[scale - decimals_[i]];
-    DecimalColumn column = DecimalColumn::fromGrid(std::move(mantissas_), std::move(decimals_), scale);
+    return withAside(DecimalColumn::fromGrid(std::move(mantissas_), std::move(decimals_), scale));
+}
+
+DecimalColumn NumberColumnBuilder::withAside(DecimalColumn column) const {
     for (const auto& [row, number] : aside_)
         column.set(row, number);
     return column;

@@ -3,6 +3,7 @@
 
 #include "core/record/DecimalColumn.h"
 
+#include <algorithm>
 #include <bit>
 #include <cstring>
 #include <map>
@@ -80,6 +81,8 @@ class NumberColumnBuilder {
     void add(const PlainNumber& number) {
         mantissas_.push_back(number.mantissa);
         decimals_.push_back(number.decimals);
+        least_ = std::min(least_, number.decimals);
+        most_ = std::max(most_, number.decimals);
     }
     void add(const Decimal& number);
     void addMissing() {
@@ -89,9 +92,13 @@ class NumberColumnBuilder {
     [[nodiscard]] DecimalColumn finish() &&;
 
   private:
+    [[nodiscard]] DecimalColumn withAside(DecimalColumn column) const;
+
     std::vector<std::int64_t> mantissas_;
     std::vector<std::uint8_t> decimals_;
     std::map<std::size_t, Decimal> aside_;
+    std::uint8_t least_ = DecimalColumn::Missing; ///< decimals of any number so far
+    std::uint8_t most_ = 0;
 };
 
 } // namespace spanwright

@@ -175,9 +175,11 @@ Result<ImportedReadings> readReadings(std::string_view bytes, const CsvRules& ru
         block.directions = words.directions(table.columns[*direction]);
     if (run)
         block.runs = words.runs(table.columns[*run]);
-    if (time)
+    if (time) {
+        block.enteredAt.reserve(table.rows);
         for (const auto& at : table.columns[*time].times)
             block.enteredAt.push_back(at.value_or(0));
+    }
     for (const auto& value : {reference, indication})
         imported.missing += value ? table.columns[*value].missing : 0;
     const auto take = [&](std::optional<std::size_t> from, DecimalColumn& to) {

@@ -153,9 +153,42 @@ std::optional<minutes> takeZone(TimeScanner& scan) {
     return west ? -east : east;
 }
 
+/// "2026-03-01T08:15:30.250Z" and "2026-03-01 08:15:30", as programs write them, by their places; empty for anything else.
+std::optional<std::int64_t> parsePlainIso(std::string_view text) {
+    constexpr std::size_t shortest = 19;
+    constexpr std::size_t withThousandths = 23;
+    if (text.ends_with('Z'))
+        text.remove_suffix(1);
+    const bool thousandths = text.size() == withThousandths;
+    if (text.size() != shortest && !thousandths)
+        return std::nullopt;
+    bool digitsOnly = true;
+    const auto number = [&](std::size_t at, std::size_t digits) {
+        int value = 0;
+        for (std::size_t i = at; i < at + digits; ++i) {
+            digitsOnly = digitsOnly && text[i] >= '0' && text[i] <= '9';
+            value = value * 10 + (text[i] - '0');
+        }
+        return value;
+    };
+    const year_month_day date{year{number(0, 4)}, month{static_cast<unsigned>(number(5, 2))}, day{static_cast<unsigned>(number(8, 2))}};
+    const int hour = number(11, 2);
+    const int minute = number(14, 2);
+    const int second = number(17, 2);
+    const int fraction = thousandths ? number(20, 3) : 0;
+    const bool marks = text[4] == '-' && text[7] == '-' && (text[10] == 'T' || text[10] == ' ') && text[13] == ':' &&
+                       text[16] == ':' && (!thousandths || text[19] == '.');
+    if (!digitsOnly || !marks || !date.ok() || hour > 23 || minute > 59 || second > 59)
+        return std::nullopt;
+    const milliseconds time = sys_days{date}.time_since_epoch() + hours{hour} + minutes{minute} + seconds{second} + milliseconds{fraction};
+    return time.count();
+}
+
 } // namespace
 
 std::optional<std::int64_t> parseTime(std::string_view text, DateOrder order) {
+    if (const auto plain = parsePlainIso(text))
+        return plain;
     TimeScanner scan(withoutBlanks(text));
     const auto date = takeDate(scan, order);
     if (!date)

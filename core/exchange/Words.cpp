@@ -10,6 +10,9 @@ constexpr std::string_view blanks[] = {" ", "\t", "\f", "\xC2\xA0", "\xE2\x80\xA
 } // namespace
 
 std::string_view withoutBlanks(std::string_view text) {
+    const auto plain = [](char c) { return c > ' ' && c < '\x7F'; };
+    if (!text.empty() && plain(text.front()) && plain(text.back()))
+        return text;
     const auto cut = [&] {
         for (const std::string_view blank : blanks) {
             if (text.starts_with(blank)) {

@@ -62,11 +62,6 @@ void JsonScanner::failValue(std::string_view key, std::string_view text) {
                                                       {"text", std::string(text.substr(0, 80))}});
 }
 
-void JsonScanner::skipBlanks() {
-    while (at_ < json_.size() && (json_[at_] == ' ' || json_[at_] == '\n' || json_[at_] == '\r' || json_[at_] == '\t'))
-        ++at_;
-}
-
 bool JsonScanner::enter(char bracket) {
     skipBlanks();
     if (failed() || peek() != bracket) {
@@ -78,7 +73,7 @@ bool JsonScanner::enter(char bracket) {
     return true;
 }
 
-bool JsonScanner::nextItem() {
+bool JsonScanner::nextItemAnyhow() {
     skipBlanks();
     if (failed())
         return false;

@@ -29,7 +29,17 @@ class JsonScanner {
     std::optional<std::string> nextKey();
     bool enterArray() { return enter('['); }
     /// Whether there is another item in the array entered last; at its end that is passed.
-    bool nextItem();
+    bool nextItem() {
+        if (at_ < json_.size() && json_[at_] == ',' && !first_ && !failed()) { // as this program writes rows
+            ++at_;
+            skipBlanks();
+            if (at_ < json_.size() && json_[at_] != ']')
+                return true;
+            failSyntax();
+            return false;
+        }
+        return nextItemAnyhow();
+    }
 
     /// Passes a null, when there is one.
     bool takeNull();
@@ -50,7 +60,11 @@ class JsonScanner {
 
   private:
     bool enter(char bracket);
-    void skipBlanks();
+    bool nextItemAnyhow();
+    void skipBlanks() {
+        while (at_ < json_.size() && (json_[at_] == ' ' || json_[at_] == '\n' || json_[at_] == '\r' || json_[at_] == '\t'))
+            ++at_;
+    }
     void skipAny(int depth);
     char32_t hexadecimal();
     void appendEscape(std::string& text);

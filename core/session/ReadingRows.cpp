@@ -63,24 +63,43 @@ void appendInteger(std::string& json, I number) {
     json.append(digits, static_cast<std::size_t>(end - digits));
 }
 
-/// The number as typed between quotation marks: Decimal::text() without its allocations.
+/// The number as typed between quotation marks, straight from the grid where it lies there.
 void appendNumber(std::string& json, const DecimalColumn& column, std::size_t row) {
-    const std::optional<Decimal> number = column.at(row);
-    if (!number) {
+    static constexpr std::uint64_t powers[] = {1ull,
+                                               10ull,
+                                               100ull,
+                                               1'000ull,
+                                               10'000ull,
+                                               100'000ull,
+                                               1'000'000ull,
+                                               10'000'000ull,
+                                               100'000'000ull,
+                                               1'000'000'000ull,
+                                               10'000'000'000ull,
+                                               100'000'000'000ull,
+                                               1'000'000'000'000ull,
+                                               10'000'000'000'000ull,
+                                               100'000'000'000'000ull,
+                                               1'000'000'000'000'000ull,
+                                               10'000'000'000'000'000ull,
+                                               100'000'000'000'000'000ull,
+                                               1'000'000'000'000'000'000ull};
+    const std::size_t decimals = column.decimals()[row];
+    if (decimals == DecimalColumn::Missing) {
         json += "null";
         return;
     }
     json += '"';
-    if (number->isWide() || number->decimals < 0 || number->decimals > 18) {
-        json += number->text();
+    if (decimals == DecimalColumn::KeptAside) {
+        json += column.at(row)->text();
     } else {
+        const std::int64_t integer = column.grid()[row];
+        const std::uint64_t magnitude = (integer < 0 ? 0 - static_cast<std::uint64_t>(integer) : static_cast<std::uint64_t>(integer)) /
+                                        powers[static_cast<std::size_t>(column.scale()) - decimals];
         char digits[24];
-        const std::uint64_t magnitude =
-            number->mantissa < 0 ? 0 - static_cast<std::uint64_t>(number->mantissa) : static_cast<std::uint64_t>(number->mantissa);
         const auto [end, problem] = std::to_chars(digits, digits + sizeof digits, magnitude);
         const auto count = static_cast<std::size_t>(end - digits);
-        const auto decimals = static_cast<std::size_t>(number->decimals);
-        if (number->mantissa < 0)
+        if (integer < 0)
             json += '-';
         if (decimals == 0) {
             json.append(digits, count);
@@ -97,19 +116,24 @@ void appendNumber(std::string& json, const DecimalColumn& column, std::size_t ro
     json += '"';
 }
 
-void appendRow(std::string& json, const ReadingColumns& readings, std::size_t row, const std::vector<RowField>& used) {
+struct UsedColumn {
+    RowField field;
+    const DecimalColumn* numbers; ///< null for those that hold none
+};
+
+void appendRow(std::string& json, const ReadingColumns& readings, std::size_t row, const std::vector<UsedColumn>& used) {
     char before = '[';
-    for (const RowField field : used) {
+    for (const UsedColumn& column : used) {
         json += before;
         before = ',';
-        switch (field) {
+        switch (column.field) {
         case RowField::Id: appendInteger(json, readings.ids()[row]); break;
         case RowField::Phase: json.append(1, '"').append(nameOf(readings.phases()[row])).append(1, '"'); break;
         case RowField::Run: appendInteger(json, readings.runs()[row]); break;
         case RowField::Direction: json.append(1, '"').append(nameOf(readings.directions()[row])).append(1, '"'); break;
         case RowField::EnteredAt: appendMoment(json, readings.enteredAt()[row]); break;
         case RowField::EnteredBy: appendQuoted(json, readings.enteredBy(row)); break;
-        default: appendNumber(json, readings.number(*numberOf(field)), row);
+        default: appendNumber(json, *column.numbers, row);
         }
     }
     json += ']';
@@ -183,6 +207,15 @@ class RowReader {
     }
 
     std::int64_t readInteger(RowField field, std::int64_t least, std::int64_t most) {
+        const std::string_view json = scan_.json();
+        const PlainNumber plain = readPlainNumber(json.data() + scan_.offset(), json.data() + json.size(), DecimalMark::Point);
+        const auto isDigit = [](char c) { return c >= '0' && c <= '9'; };
+        if (plain.end != nullptr && isDigit(json[scan_.offset()]) && isDigit(plain.end[-1]) && plain.decimals == 0 &&
+            plain.end != json.data() + json.size() && (*plain.end == ',' || *plain.end == ']') && plain.mantissa >= least &&
+            plain.mantissa <= most) {
+            scan_.passTo(static_cast<std::size_t>(plain.end - json.data()));
+            return plain.mantissa;
+        }
         const std::string_view digits = scan_.skip();
         std::int64_t number = 0;
         const auto [end, problem] = std::from_chars(digits.data(), digits.data() + digits.size(), number);
@@ -316,11 +349,12 @@ void writeReadingRows(JsonText& json, const ReadingColumns& readings) {
 }
 
 void writeReadingRows(JsonText& json, const ReadingColumns& readings, std::span<const std::size_t> rows) {
-    std::vector<RowField> used;
+    std::vector<UsedColumn> used;
     json.key("columns").beginArray(JsonText::Layout::OneLine);
     for (std::size_t i = 0; i < fieldNames.size(); ++i)
         if (const auto field = static_cast<RowField>(i); isUsed(readings, rows, field)) {
-            used.push_back(field);
+            const auto numbers = numberOf(field);
+            used.push_back({field, numbers ? &readings.number(*numbers) : nullptr});
             json.string(fieldNames[i]);
         }
     json.endArray();

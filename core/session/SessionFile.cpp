@@ -138,7 +138,6 @@ Result<SessionFile::Opened> SessionFile::open(const std::string& path) {
         return session.error().with("file", path);
     opened->remember(file->bytes());
     opened->version = session->version;
-    session->readOnly = session->readOnly || !heldBy.empty();
     return Opened{SessionFile(std::move(opened)), std::move(*session), std::move(heldBy)};
 }
 

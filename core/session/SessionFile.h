@@ -15,8 +15,8 @@ class SessionFile {
     ~SessionFile();
 
     struct Opened;
-    /// Reads and locks. When another program holds the lock, the session opens read-only and `heldBy` says who; when the folder
-    /// cannot be written there is no lock, and saving will say why. Errors: as FileBytes::read() and readSession(), with fact
+    /// Reads and locks. When another program holds the lock, `heldBy` says who, and the session is only to be looked at; when the
+    /// folder cannot be written there is no lock, and saving will say why. Errors: as FileBytes::read() and readSession(), with fact
     /// file.
     static Result<Opened> open(const std::string& path);
 

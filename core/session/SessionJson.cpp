@@ -11,6 +11,7 @@
 
 #include <algorithm>
 #include <charconv>
+#include <future>
 
 namespace spanwright {
 
@@ -55,6 +56,7 @@ class SessionReader {
     explicit SessionReader(std::string_view json) : scan_(json) {}
 
     Result<Session> read() {
+        hashAhead();
         if (scan_.enterObject())
             while (const auto key = scan_.nextKey())
                 readMember(*key);
@@ -152,11 +154,21 @@ class SessionReader {
         }
     }
 
+    /// Digests what is most likely sealed while the rows are read: it takes as long as they do.
+    void hashAhead() {
+        constexpr std::size_t large = std::size_t{1} << 20;
+        hashedTo_ = scan_.json().rfind(sealKey);
+        if (scan_.json().size() > large && hashedTo_ != std::string_view::npos)
+            ahead_ = std::async(std::launch::async, [sealed = scan_.json().substr(0, hashedTo_)] { return sha256(sealed); });
+    }
+
     void readSeal() {
         const std::size_t sealAt = scan_.json().rfind(sealKey, scan_.offset());
         const std::string_view stated = scan_.skip();
+        const std::string digest =
+            ahead_.valid() && hashedTo_ == sealAt ? ahead_.get() : sha256(scan_.json().substr(0, sealAt));
         sealSeen_ = true;
-        sealBroken_ = stated != "\"" + sha256(scan_.json().substr(0, sealAt)) + "\"";
+        sealBroken_ = stated != "\"" + digest + "\"";
     }
 
     Error whyNot() {
@@ -182,6 +194,8 @@ class SessionReader {
     }
 
     JsonScanner scan_;
+    std::size_t hashedTo_ = 0;
+    std::future<std::string> ahead_;
     Session session_;
     std::vector<std::string> seen_;
     bool layoutSeen_ = false;
