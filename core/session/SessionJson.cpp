@@ -247,4 +247,24 @@ Result<Session> readSession(std::string_view json) {
     return SessionReader(json).read();
 }
 
+std::vector<JournalEntry> entriesAbout(const std::vector<Warning>& warnings, std::int64_t at, const std::string& who) {
+    std::vector<JournalEntry> entries;
+    for (const Warning& warning : warnings) {
+        JournalEntry entry;
+        entry.at = at;
+        entry.who = who;
+        if (warning.code == WarningCode::SealBroken) {
+            entry.what = "seal-broken";
+            entry.where = "session";
+        } else if (warning.code == WarningCode::JournalBroken) {
+            entry.what = "journal-broken";
+            entry.where = "journal entry " + warning.facts.front().value;
+        } else {
+            continue;
+        }
+        entries.push_back(std::move(entry));
+    }
+    return entries;
+}
+
 } // namespace spanwright

@@ -30,4 +30,8 @@ std::string writeSession(const Record& record, const StoredResults& results);
 /// (facts: line, key, text).
 Result<Session> readSession(std::string_view json);
 
+/// What the journal has to tell of a file that did not hold, before saving seals and chains it anew: "seal-broken" and
+/// "journal-broken", one entry for each of these warnings.
+std::vector<JournalEntry> entriesAbout(const std::vector<Warning>& warnings, std::int64_t at, const std::string& who);
+
 } // namespace spanwright

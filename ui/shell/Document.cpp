@@ -78,6 +78,9 @@ Result<QStringList> Document::open(const QString& path) {
         return opened.error();
     QStringList notes = notesOf(opened->session, opened->heldBy);
     const bool readOnly = opened->session.readOnly || !opened->heldBy.empty();
+    // Saving seals the file anew; that it once did not hold stays in the journal.
+    for (JournalEntry& entry : entriesAbout(opened->session.warnings, bench_.now(), bench_.person().toStdString()))
+        opened->session.record.journal.edit().append(std::move(entry));
     file_.emplace(std::move(opened->file));
     bench_.setRecord(std::move(opened->session.record));
     bench_.setReadOnly(readOnly);

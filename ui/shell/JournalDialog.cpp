@@ -62,6 +62,8 @@ QString journalWord(const std::string& what) {
         {"changed", QT_TRANSLATE_NOOP("Journal", "changed")},
         {"undone", QT_TRANSLATE_NOOP("Journal", "undone")},
         {"redone", QT_TRANSLATE_NOOP("Journal", "redone")},
+        {"seal-broken", QT_TRANSLATE_NOOP("Journal", "opened, changed outside the program")},
+        {"journal-broken", QT_TRANSLATE_NOOP("Journal", "opened, an entry did not fit the one before")},
     };
     for (const auto& [code, word] : words)
         if (what == code)

@@ -275,6 +275,22 @@ class SessionJsonTest : public QObject {
         QVERIFY(codes(*last) == QList{WarningCode::SealBroken});
     }
 
+    void whatDidNotHoldIsToldInTheJournal() {
+        const std::string changed =
+            replaced(writeSession(test::filledRecord(), results), "reading 2 indication", "reading 9 indication");
+        auto session = readSession(changed);
+        const auto entries = entriesAbout(session->warnings, 77, "TL");
+        QCOMPARE(entries.size(), std::size_t(2));
+        QVERIFY((entries[0] == JournalEntry{77, "TL", "seal-broken", "session", "", "", ""}));
+        QVERIFY((entries[1] == JournalEntry{77, "TL", "journal-broken", "journal entry 3", "", "", ""}));
+        // Saved with them, the file holds again and says that it once did not.
+        for (const JournalEntry& entry : entries)
+            session->record.journal.edit().append(entry);
+        const auto again = readSession(writeSession(session->record, results));
+        QVERIFY(again->warnings.empty());
+        QCOMPARE(again->record.journal->entries().back().what, std::string("journal-broken"));
+    }
+
     void aTruncatedFileIsRefusedWhereverItEnds() {
         const std::string good = writeSession(test::filledRecord(), results);
         const std::size_t lastBrace = good.rfind('}');
