@@ -1,0 +1,112 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/performance/ForceFigures.h"
+#include "tests/support/Paths.h"
+#include "tests/support/SampleRecord.h"
+
+#include <QFile>
+#include <QTest>
+
+#include <cmath>
+
+using namespace spanwright;
+using spanwright::test::number;
+
+namespace {
+
+/// sample-data/load-cell.csv: invented readings of a 50 kN load cell, runs 1 and 2 at 0°, 3 at 120°, 4 at 240°.
+Record loadCell() {
+    Record record;
+    QFile file(QString::fromStdString(spanwright::test::sourceDir()) + "/sample-data/load-cell.csv");
+    if (!file.open(QIODevice::ReadOnly))
+        qFatal("no load-cell.csv");
+    file.readLine();
+    file.readLine();
+    while (!file.atEnd()) {
+        const QList<QByteArray> cells = file.readLine().trimmed().split(',');
+        if (cells.size() < 3)
+            continue;
+        Reading reading;
+        reading.id = record.nextReadingId++;
+        reading.reference = reading.setPoint = number(cells[0].constData());
+        reading.indication = number(cells[1].constData());
+        reading.run = cells[2].toInt();
+        record.readings.edit().append(reading);
+    }
+    return record;
+}
+
+const ForceStep& at(const ForceFigures& figures, double force) {
+    for (const ForceStep& step : figures.steps)
+        if (std::abs(step.force - force) < 1e-9)
+            return step;
+    qFatal("no such force");
+}
+
+} // namespace
+
+class ForceFiguresTest : public QObject {
+    Q_OBJECT
+
+  private slots:
+    // Figures computed beside the invented readings, to the digits given there.
+    void loadCellGivesTheFiguresOfItsDescription() {
+        const Record record = loadCell();
+        const auto figures = forceFigures(makeSample(record, Phase::AsFound), record.choices, 0.000002);
+        QVERIFY(figures);
+        QCOMPARE(figures->degree, 2);
+        QVERIFY(std::abs(figures->residualSd - 2.34e-5) < 0.005e-5);
+        QVERIFY(std::abs(figures->lowerLimitFactor - 5.62e-5) < 0.01e-5);
+        QVERIFY(std::abs(figures->lowerLimitForce - 0.00140) < 0.000006);
+        QVERIFY(std::abs(figures->lowestForceClassA - 0.56) < 0.005);
+        QVERIFY(std::abs(figures->lowestForceClassAA - 2.81) < 0.01);
+        QVERIFY(std::abs(*at(*figures, 5).reproducibility - 0.008) < 0.0005);
+        QVERIFY(std::abs(*at(*figures, 25).reproducibility - 0.005) < 0.0005);
+        QVERIFY(std::abs(*at(*figures, 50).reproducibility - 0.003) < 0.0005);
+        QVERIFY(std::abs(*at(*figures, 5).repeatability - 0.001) < 0.0005);
+        QVERIFY(std::abs(*at(*figures, 25).repeatability - 0.003) < 0.0005);
+        QVERIFY(std::abs(*at(*figures, 50).repeatability - 0.0002) < 0.00005);
+        QVERIFY(!figures->zero && !at(*figures, 5).reversibility);
+        QVERIFY(std::abs(*at(*figures, 5).interpolation) < 0.01);
+    }
+
+    // By hand: zero 0.1 before, 0.12 after each series; deflections 10, 20, 30 but 10.1 in the second, 20.2 in the turned series.
+    void zeroAndReversibilityComeOutAsByHand() {
+        Record record;
+        const auto add = [&](int run, Direction direction, const char* force, const char* indication) {
+            Reading reading;
+            reading.id = record.nextReadingId++;
+            reading.run = run;
+            reading.direction = direction;
+            reading.reference = reading.setPoint = number(force);
+            reading.indication = number(indication);
+            record.readings.edit().append(reading);
+        };
+        for (const int run : {1, 2, 3}) {
+            add(run, Direction::Rising, "0", "0.1");
+            add(run, Direction::Rising, "1", run == 2 ? "10.2" : "10.1");
+            add(run, Direction::Rising, "2", run == 3 ? "20.3" : "20.1");
+            add(run, Direction::Rising, "3", "30.1");
+            add(run, Direction::Rising, "4", "40.1");
+            add(run, Direction::Falling, "2", run == 3 ? "20.5" : "20.1");
+            add(run, Direction::Falling, "0", "0.12");
+        }
+        const auto figures = forceFigures(makeSample(record, Phase::AsFound), record.choices, 0.1);
+        QVERIFY(figures);
+        QVERIFY(std::abs(*at(*figures, 1).repeatability - 100 * 0.1 / 10.05) < 1e-9);
+        QVERIFY(std::abs(*at(*figures, 2).reproducibility - 100 * 0.2 / 20.1) < 1e-9);
+        QVERIFY(std::abs(*at(*figures, 2).reversibility - 50 * 0.2 / 20.2) < 1e-9);
+        QVERIFY(std::abs(*figures->zero - 100 * 0.02 / 40) < 1e-9);
+        QCOMPARE(figures->degree, 1);
+        QCOMPARE(figures->lowerLimitFactor, std::max(2.4 * figures->residualSd, 0.1));
+    }
+
+    void withoutRotatedSeriesThereAreNone() {
+        const Record record = spanwright::test::pressureTransmitter();
+        ForceSeries none;
+        none.again = 99;
+        QVERIFY(!forceFigures(makeSample(record, Phase::AsFound), record.choices, 0.001, none));
+    }
+};
+
+QTEST_APPLESS_MAIN(ForceFiguresTest)
+#include "tst_force_figures.moc"
