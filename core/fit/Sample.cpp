@@ -217,4 +217,21 @@ Sample makeSample(const Record& record, Phase phase) { return sampleOf(record, p
 
 Sample makeSampleWithExcluded(const Record& record, Phase phase) { return sampleOf(record, phase, Take::ExcludedToo); }
 
+Sample withExactColumns(const Sample& sample) {
+    Sample exact = sample;
+    if (!exact.grids)
+        return exact;
+    const auto columnOf = [](std::span<const std::int64_t> grid, int scale) {
+        PairColumn column;
+        const DoubleDouble divisor = powerOfTen(scale);
+        for (const std::int64_t integer : grid)
+            column.push_back(toDoubleDouble(integer) / divisor);
+        return column;
+    };
+    exact.reference = columnOf(sample.grids->reference, sample.grids->referenceScale);
+    exact.indication = columnOf(sample.grids->indication, sample.grids->indicationScale);
+    exact.grids = nullptr;
+    return exact;
+}
+
 } // namespace spanwright

@@ -62,6 +62,9 @@ Sample makeSample(const Record& record, Phase phase);
 /// The same with the excluded readings among them, to show what excluding did.
 Sample makeSampleWithExcluded(const Record& record, Phase phase);
 
+/// The same readings reading by reading in double-double, where they were held on their grids.
+Sample withExactColumns(const Sample& sample);
+
 /// Residuals e = y − ŷ of the readings of a sample, unit of the ordinate, with the weights w of the fit (empty: all 1).
 struct Residuals {
     PairColumn e;

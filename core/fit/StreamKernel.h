@@ -20,6 +20,16 @@ struct StreamRange {
     unsigned long wide = 0;
 };
 
+/// Abscissae, a multiple of four, with t = (x − centre)·scale: f = Σ c_j T_j(t), u² = Σ h_j T_j(t) + noise.
+struct BandBlock {
+    const double* x = nullptr;
+    unsigned long n = 0;
+    double centre = 0, scale = 1;
+    const double* c = nullptr; ///< j = 0…d
+    const double* h = nullptr; ///< j = 0…2d
+    double noise = 0, factor = 0;
+};
+
 /// The inner loops by degree d of the polynomial, written in StreamKernel.inc for every processor and for AVX2, with equal bits.
 struct StreamKernel {
     /// Σ T_j(t) for j = 0…2d, Σ T_j(t) v for j = 0…d, Σ v².
@@ -28,6 +38,8 @@ struct StreamKernel {
     void (*residuals[MostStreamedDegree + 1])(const StreamBlock&, const double*, double*);
     /// e·yUnit and Σ h_j T_j(t), j = 0…2d, of every reading.
     void (*elements[MostStreamedDegree + 1])(const StreamBlock&, const double*, const double*, double*, double*);
+    /// f, f − factor·u and f + factor·u.
+    void (*band[MostStreamedDegree + 1])(const BandBlock&, double*, double*, double*);
 };
 
 namespace plain {

@@ -84,6 +84,7 @@ Result<FitOutcome> fitFunction(const Sample& sample, const Choices& choices) {
     if (sample.grids) {
         if (auto streamed = fitMany(sample, choices))
             return std::move(*streamed);
+        return fitFunction(withExactColumns(sample), choices);
     }
     const auto [low, high] = std::minmax_element(x.high.begin(), x.high.end());
     auto model = makeModel(choices.function, {*low, *high, &sample, direction});

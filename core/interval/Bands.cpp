@@ -2,22 +2,17 @@
 #include "core/interval/Bands.h"
 
 #include "core/fit/Quantiles.h"
+#include "core/fit/StreamKernel.h"
 #include "core/interval/ToleranceFactor.h"
 
 #include <cmath>
 #include <limits>
+#include <numbers>
+#include <optional>
 
 namespace spanwright {
 
 namespace {
-
-/// √(p F) with n − p degrees of freedom, or √χ² where the uncertainties are taken as they are (Working and Hotelling 1929; Scheffé).
-double simultaneousFactor(const Fit& fit) {
-    const double tail = 1.0 - fit.coverage;
-    const auto p = static_cast<double>(fit.terms());
-    return fit.covarianceScale == CovarianceScale::Stated ? std::sqrt(chiSquaredQuantileAbove(tail, p))
-                                                          : std::sqrt(p * fQuantileAbove(tail, p, fit.degreesOfFreedom));
-}
 
 BandPoint bandWith(const Fit& fit, double x, double simultaneous) {
     const double value = fit.curve->value(x);
@@ -33,7 +28,52 @@ BandPoint bandWith(const Fit& fit, double x, double simultaneous) {
     return point;
 }
 
+/// Degree of a polynomial; empty when the function is none.
+std::optional<int> degreeOf(const FunctionChoice& function) {
+    switch (function.family) {
+    case FunctionFamily::Constant:
+        return 0;
+    case FunctionFamily::Line:
+    case FunctionFamily::Proportional:
+        return 1;
+    case FunctionFamily::Polynomial:
+    case FunctionFamily::PolynomialNoConstant:
+        return function.order;
+    default:
+        return std::nullopt;
+    }
+}
+
+/// Chebyshev coefficients of a polynomial of degree m over [centre − half, centre + half], from its values at m + 1 points
+/// (Trefethen, Approximation Theory and Approximation Practice, chapter 3: the discrete cosine sum at the roots of T_{m+1}).
+template <class F>
+std::vector<double> chebyshevCoefficients(int m, double centre, double half, const F& f) {
+    std::vector<double> coefficients(static_cast<std::size_t>(m) + 1, 0.0);
+    for (int k = 0; k <= m; ++k) {
+        const double angle = std::numbers::pi * (k + 0.5) / (m + 1);
+        const double value = f(centre + half * std::cos(angle));
+        for (int j = 0; j <= m; ++j)
+            coefficients[static_cast<std::size_t>(j)] += value * std::cos(j * angle) * (j == 0 ? 1.0 : 2.0) / (m + 1);
+    }
+    return coefficients;
+}
+
+bool evenNoise(const Fit& fit) {
+    const double middle = fit.curve->readingVariance(fit.low + (fit.high - fit.low) / 2);
+    for (int i = 0; i <= 16; ++i)
+        if (fit.curve->readingVariance(fit.low + (fit.high - fit.low) * i / 16) != middle)
+            return false;
+    return true;
+}
+
 } // namespace
+
+double simultaneousFactor(const Fit& fit) {
+    const double tail = 1.0 - fit.coverage;
+    const auto p = static_cast<double>(fit.terms());
+    return fit.covarianceScale == CovarianceScale::Stated ? std::sqrt(chiSquaredQuantileAbove(tail, p))
+                                                          : std::sqrt(p * fQuantileAbove(tail, p, fit.degreesOfFreedom));
+}
 
 BandPoint bandAt(const Fit& fit, double x) { return bandWith(fit, x, simultaneousFactor(fit)); }
 
@@ -54,6 +94,28 @@ std::vector<BandPoint> bandCurve(const Fit& fit, double low, double high, std::s
         curve.push_back(bandWith(fit, i + 1 == points ? high : low + share * (high - low), simultaneous));
     }
     return curve;
+}
+
+BandColumns newReadingBand(const Fit& fit, std::span<const double> x) {
+    const std::size_t n = x.size();
+    BandColumns band{std::vector<double>(n), std::vector<double>(n), std::vector<double>(n)};
+    const std::optional<int> degree = degreeOf(fit.function);
+    std::size_t done = 0;
+    if (degree && *degree <= MostStreamedDegree && evenNoise(fit)) {
+        const double centre = fit.low + (fit.high - fit.low) / 2, half = fit.high > fit.low ? (fit.high - fit.low) / 2 : 1.0;
+        const auto c = chebyshevCoefficients(*degree, centre, half, [&](double at) { return fit.curve->value(at); });
+        const auto h = chebyshevCoefficients(2 * *degree, centre, half, [&](double at) { return fit.curve->variance(at); });
+        done = n - n % 4;
+        const BandBlock block{x.data(), done, centre, 1 / half, c.data(), h.data(), fit.curve->readingVariance(centre), fit.coverageFactor};
+        streamKernel().band[static_cast<std::size_t>(*degree)](block, band.value.data(), band.low.data(), band.high.data());
+    }
+    for (std::size_t i = done; i < n; ++i) {
+        const BandPoint point = bandWith(fit, x[i], 0.0);
+        band.value[i] = point.value;
+        band.low[i] = point.newReading.low;
+        band.high[i] = point.newReading.high;
+    }
+    return band;
 }
 
 } // namespace spanwright

@@ -3,6 +3,7 @@
 
 #include "core/fit/Fit.h"
 
+#include <span>
 #include <vector>
 
 namespace spanwright {
@@ -27,5 +28,18 @@ BandPoint bandAt(const Fit& fit, double x);
 Interval toleranceAt(const Fit& fit, double x, double share);
 /// `points` equidistant abscissae from low to high.
 std::vector<BandPoint> bandCurve(const Fit& fit, double low, double high, std::size_t points);
+
+/// Quantile that multiplies a standard uncertainty so that an interval holds for all coefficients and all values of the function
+/// together: √(p F), or √χ² where the uncertainties are taken as they are (Working and Hotelling 1929; Scheffé 1953).
+double simultaneousFactor(const Fit& fit);
+
+/// Value and band for one new reading at very many abscissae, as columns.
+struct BandColumns {
+    std::vector<double> value, low, high;
+};
+
+/// For polynomials with the same noise everywhere, value and variance are polynomials: found once from values at the Chebyshev points,
+/// then one recurrence a point. Other functions are asked point by point.
+BandColumns newReadingBand(const Fit& fit, std::span<const double> x);
 
 } // namespace spanwright

@@ -3,6 +3,7 @@
 // against summing the two columns, against gsl_fit_linear and against Eigen's column-pivoting QR, all in one run.
 #include "core/fit/StreamedFit.h"
 #include "core/fit/fitFunction.h"
+#include "core/interval/Bands.h"
 
 #include <Eigen/QR>
 #include <gsl/gsl_fit.h>
@@ -313,6 +314,23 @@ void wholeRoad() {
     std::printf("road      n = 1000000: sample %.1f, fit with residuals and leverages %.1f times summing both columns\n", sampled / reading, fitted / reading);
 }
 
+void band(std::size_t n) {
+    Record record = recordOf(makeData(1000, 0, 100));
+    std::vector<double> x(n);
+    for (std::size_t i = 0; i < n; ++i)
+        x[i] = 100.0 * static_cast<double>(i) / static_cast<double>(n);
+    const double copying = seconds([&] {
+        const std::vector<double> a = x, b = x, c = x;
+        sink = a[n / 2] + b[n / 3] + c[n / 4];
+    }, 9);
+    for (const char* name : {"line", "polynomial:2", "polynomial:6"}) {
+        record.choices.function = *parseFunctionName(name);
+        const Fit fit = fitFunction(makeSample(record, Phase::AsFound), record.choices)->fit;
+        const double time = seconds([&] { sink = newReadingBand(fit, x).high[n / 2]; }, 9);
+        std::printf("band      %s at %zu places: %.2f times copying three columns\n", name, n, time / copying);
+    }
+}
+
 } // namespace
 
 int main(int argc, char** argv) {
@@ -323,6 +341,7 @@ int main(int argc, char** argv) {
     speed(n);
     againstLibraries(1'000'000);
     exclusion(1'000'000);
+    band(1'000'000);
     accuracy("0 … 100", 0, 100);
     accuracy("20000 … 20001", 20000, 1);
     return 0;

@@ -97,18 +97,10 @@ class StreamedFits : public QObject {
         QFETCH(double, least);
         Record record = recordOf(makeGrids(ManyReadings + 3, from));
         record.choices.function = *parseFunctionName(function.toStdString());
-        Sample sample = makeSample(record, Phase::AsFound);
+        const Sample sample = makeSample(record, Phase::AsFound);
         QVERIFY(sample.grids != nullptr);
         const auto streamed = fitFunction(sample, record.choices);
-        sample.grids = nullptr;
-        for (std::size_t i = 0; i < sample.size(); ++i) { // the exact numbers again
-            const DoubleDouble x = record.readings->reference().toDoubleDouble(i), y = record.readings->indication().toDoubleDouble(i);
-            sample.reference.high[i] = x.x[0];
-            sample.reference.low.push_back(x.x[1]);
-            sample.indication.high[i] = y.x[0];
-            sample.indication.low.push_back(y.x[1]);
-        }
-        const auto exact = fitFunction(sample, record.choices);
+        const auto exact = fitFunction(withExactColumns(sample), record.choices);
         QVERIFY(streamed.ok() && exact.ok());
         for (std::size_t k = 0; k < exact->fit.terms(); ++k) {
             const double value = digits(streamed->fit.coefficients[k].value, exact->fit.coefficients[k].value);
@@ -187,6 +179,17 @@ class StreamedFits : public QObject {
         QVERIFY(!fitStreamed(wide.gx(), wide.gy(), 1, StreamedConstant::With, 1));
         Grids twoPlaces{{0, 0, 10, 10}, {1, 2, 3, 4}};
         QVERIFY(!fitStreamed(twoPlaces.gx(), twoPlaces.gy(), 2, StreamedConstant::With, 1));
+    }
+
+    /// A perfect line leaves exactly nothing, however many readings lie on it.
+    void perfectLineOfManyReadings() {
+        Grids grids = makeGrids(ManyReadings, 0);
+        for (std::size_t i = 0; i < grids.x.size(); ++i)
+            grids.y[i] = 4'000'000 + 160 * grids.x[i];
+        Record record = recordOf(grids);
+        const auto outcome = fitFunction(makeSample(record, Phase::AsFound), record.choices);
+        QCOMPARE(outcome->fit.residualSs, 0.0);
+        QCOMPARE(outcome->fit.coefficients[1].value, 1.6);
     }
 
     /// One reading far outside all that was looked at first: the moments are taken again over the whole range.

@@ -140,6 +140,28 @@ class Intervals : public QObject {
         QVERIFY(answer.low < *answer.reference && *answer.reference < answer.high);
     }
 
+    /// At very many places the band is a polynomial found once: the same as place by place.
+    void bandInColumnsIsTheBand_data() {
+        QTest::addColumn<QString>("function");
+        for (const char* name : {"constant", "line", "proportional", "polynomial:2", "polynomial:4", "polynomial-no-constant:3", "square-root"})
+            QTest::newRow(name) << name;
+    }
+    void bandInColumnsIsTheBand() {
+        QFETCH(QString, function);
+        Record record = recordOf({"1", "2", "3", "4", "5", "6", "7"}, {"1.1", "2.0", "3.2", "4.4", "5.4", "6.9", "8.2"});
+        const Fit fit = fitOf(record, function.toLatin1().constData());
+        std::vector<double> x;
+        for (int i = 0; i < 103; ++i)
+            x.push_back(0.9 + 0.06 * i);
+        const BandColumns columns = newReadingBand(fit, x);
+        for (std::size_t i = 0; i < x.size(); ++i) {
+            const BandPoint point = bandAt(fit, x[i]);
+            QVERIFY(std::fabs(columns.value[i] - point.value) < 1e-13);
+            QVERIFY(std::fabs(columns.low[i] - point.newReading.low) < 1e-12);
+            QVERIFY(std::fabs(columns.high[i] - point.newReading.high) < 1e-12);
+        }
+    }
+
     void severalAnswersNoneAndExtrapolation() {
         Record record = recordOf({"0", "1", "2", "3", "4", "5"}, {"0.01", "3.98", "6.01", "6.02", "3.99", "0.02"});
         const Fit fit = fitOf(record, "polynomial:2");
