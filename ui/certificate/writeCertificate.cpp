@@ -1,12 +1,14 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/certificate/writeCertificate.h"
 
+#include "core/certificate/CertificateXml.h"
 #include "core/evaluate/KeyFigures.h"
 #include "core/session/SessionJson.h"
 #include "ui/certificate/CertificatePages.h"
 #include "ui/certificate/CertificateText.h"
 
 #include <QCoreApplication>
+#include <QFileInfo>
 #include <QPageLayout>
 #include <QPainter>
 #include <QPdfWriter>
@@ -85,6 +87,33 @@ Result<void> writeCertificatePdf(const Record& record, const Evaluation& evaluat
             return fileError(ErrorCode::FileWriteFailed, path, file.errorString());
     }
     if (!file.commit())
+        return fileError(ErrorCode::FileWriteFailed, path, file.errorString());
+    return {};
+}
+
+Result<void> writeCertificateXml(const Record& record, const Evaluation& evaluation, const QString& path, const QString& pdfPath,
+                                 const CertificateContext& context) {
+    const Certificate certificate = buildCertificate(record, evaluation, context);
+    CertificateXmlParts parts;
+    for (const auto& lines : {certificate.notices, certificate.statements})
+        for (const StatementLine& line : lines)
+            parts.statements.push_back(statementText(line).toStdString());
+    if (record.limits.stated)
+        parts.decisionRule = (limitsText(record.limits, record.item) + QStringLiteral("; ") + decisionText(record.limits)).toStdString();
+    if (certificate.function)
+        parts.functionForm = equationForm(*certificate.function).toStdString();
+    if (!pdfPath.isEmpty()) {
+        QFile pdf(pdfPath);
+        if (!pdf.open(QIODevice::ReadOnly))
+            return fileError(ErrorCode::FileNotReadable, pdfPath, pdf.errorString());
+        parts.pdfName = QFileInfo(pdfPath).fileName().toStdString();
+        parts.pdfBase64 = pdf.readAll().toBase64().toStdString();
+    }
+    QSaveFile file(path);
+    if (!file.open(QIODevice::WriteOnly))
+        return fileError(ErrorCode::FileNotWritable, path, file.errorString());
+    const std::string xml = certificateXml(certificate, parts);
+    if (file.write(xml.data(), static_cast<qint64>(xml.size())) != static_cast<qint64>(xml.size()) || !file.commit())
         return fileError(ErrorCode::FileWriteFailed, path, file.errorString());
     return {};
 }

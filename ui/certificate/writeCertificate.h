@@ -33,4 +33,9 @@ enum class WithGaps { Refuse, MarkIncomplete };
 Result<void> writeCertificatePdf(const Record& record, const Evaluation& evaluation, const QString& path,
                                  const CertificateContext& context, WithGaps withGaps);
 
+/// Writes the same draft in machine-readable form (core/certificate/CertificateXml), with the PDF at `pdfPath` inside it unless
+/// that is empty. Errors: FileNotReadable (of the PDF), FileNotWritable, FileWriteFailed.
+Result<void> writeCertificateXml(const Record& record, const Evaluation& evaluation, const QString& path, const QString& pdfPath,
+                                 const CertificateContext& context);
+
 } // namespace spanwright
