@@ -163,12 +163,19 @@ void throughZero(const FindingsInput& input, std::vector<Finding>& found) {
 void extrapolation(const FindingsInput& input, std::vector<Finding>& found) {
     const Fit& fit = *input.fit;
     const Choices& choices = input.record.choices;
-    Finding finding;
+    // The value asked for that lies furthest out, in shares of the range, and how many lie outside.
+    double furthest = 0, askedFor = 0;
+    int count = 0;
     const auto outside = [&](double value, double a, double b) {
-        const auto [low, high] = std::minmax(a, b);
-        const double slack = 1e-9 * (high - low);
-        if (value < low - slack || value > high + slack)
-            finding.figures.push_back({"asked_for", value});
+        const double low = std::min(a, b), high = std::max(a, b);
+        const double beyond = std::max(low - value, value - high) / (high - low);
+        if (!(beyond > 1e-9))
+            return;
+        ++count;
+        if (beyond > furthest) {
+            furthest = beyond;
+            askedFor = value;
+        }
     };
     const bool ofReference = fit.direction == FitDirection::Indication;
     const double first = fit.curve ? fit.curve->value(fit.low) : 0, last = fit.curve ? fit.curve->value(fit.high) : 0;
@@ -178,10 +185,12 @@ void extrapolation(const FindingsInput& input, std::vector<Finding>& found) {
         for (const Decimal& y : choices.read)
             ofReference ? outside(y.toDouble(), first, last) : outside(y.toDouble(), fit.low, fit.high);
     }
-    if (finding.figures.empty())
+    if (count == 0)
         return;
+    Finding finding;
     finding.code = FindingCode::Extrapolation;
     finding.severity = Severity::Attention;
+    finding.figures = {{"asked_for", askedFor}, {"values_outside", static_cast<double>(count)}};
     finding.remedy = Remedy::TakeMoreReadings;
     found.push_back(finding);
 }

@@ -66,7 +66,7 @@ void outlying(const FindingsInput& input, const std::vector<double>& deviations,
 void influential(const FindingsInput& input, std::vector<Finding>& found) {
     const Fit& fit = *input.fit;
     const Residuals& residuals = *input.residuals;
-    if (fit.degreesOfFreedom < 2 || residuals.leverage.size() != residuals.e.size() || !(fit.residualSd > 0))
+    if (fit.degreesOfFreedom < 2 || fit.function.family == FunctionFamily::Constant || residuals.leverage.size() != residuals.e.size() || !(fit.residualSd > 0))
         return;
     const double limit = fQuantileAbove(0.5, static_cast<double>(fit.terms()), fit.degreesOfFreedom);
     Finding finding;

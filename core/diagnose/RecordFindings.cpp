@@ -86,7 +86,9 @@ void tooFew(const FindingsInput& input, std::vector<Finding>& found) {
         finding.figures = {{"count", n}};
     } else {
         const int freedom = input.fit->degreesOfFreedom;
-        const bool fewPoints = input.fit->function.family != FunctionFamily::Constant && input.sample.groupValue.size() < input.fit->terms() + 1;
+        const FunctionFamily family = input.fit->function.family;
+        const bool fewPoints = family != FunctionFamily::Constant && family != FunctionFamily::Table &&
+                               input.sample.groupValue.size() < input.fit->terms() + 1;
         if (freedom >= 5 && !fewPoints)
             return;
         finding.severity = freedom < 1 ? Severity::Serious : freedom < 3 || fewPoints ? Severity::Attention : Severity::Note;

@@ -51,35 +51,59 @@ QString FindingText::sentence(const Finding& finding) {
     return {};
 }
 
+/// Figures whose words are a pattern around the value.
+struct FigurePattern {
+    const char* name;
+    const char* words;
+};
+
+constexpr FigurePattern patterns[] = {
+    {"f", QT_TRANSLATE_NOOP("FindingText", "F = %1")},
+    {"f_naive", QT_TRANSLATE_NOOP("FindingText", "F pooled = %1")},
+    {"percent_of_span", QT_TRANSLATE_NOOP("FindingText", "%1 % of span")},
+    {"degrees_of_freedom", QT_TRANSLATE_NOOP("FindingText", "%1 degrees of freedom")},
+    {"df", QT_TRANSLATE_NOOP("FindingText", "%1 degrees of freedom")},
+    {"run", QT_TRANSLATE_NOOP("FindingText", "run %1")},
+    {"t", QT_TRANSLATE_NOOP("FindingText", "t = %1")},
+    {"w", QT_TRANSLATE_NOOP("FindingText", "W = %1")},
+    {"r", QT_TRANSLATE_NOOP("FindingText", "%1 standard deviations out")},
+    {"critical", QT_TRANSLATE_NOOP("FindingText", "critical value %1")},
+    {"cook", QT_TRANSLATE_NOOP("FindingText", "Cook's distance %1")},
+    {"limit", QT_TRANSLATE_NOOP("FindingText", "limit %1")},
+    {"expected", QT_TRANSLATE_NOOP("FindingText", "%1 to be expected")},
+    {"lag_1", QT_TRANSLATE_NOOP("FindingText", "correlation of neighbours %1")},
+    {"effective_readings", QT_TRANSLATE_NOOP("FindingText", "worth %1 independent readings")},
+    {"variance_ratio", QT_TRANSLATE_NOOP("FindingText", "variance ratio %1")},
+    {"exponent", QT_TRANSLATE_NOOP("FindingText", "scatter goes with level to the power %1")},
+    {"asked_for", QT_TRANSLATE_NOOP("FindingText", "%1 was asked for")},
+    {"residual_sd_with", QT_TRANSLATE_NOOP("FindingText", "residual s %1 with them")},
+    {"residual_sd", QT_TRANSLATE_NOOP("FindingText", "%1 without")},
+};
+
 QString FindingText::figure(const Figure& figure, const Record& record) {
     const QString value = significantText(figure.value, 3);
     const auto withUnit = [&](const Quantity& quantity) {
         return quantity.unit.empty() ? value : value + QLatin1Char(' ') + QString::fromStdString(quantity.unit);
     };
     const std::string& name = figure.name;
-    if (name == "f")
-        return tr("F = %1").arg(value);
-    if (name == "f_naive")
-        return tr("F pooled = %1").arg(value);
+    for (const FigurePattern& pattern : patterns)
+        if (name == pattern.name)
+            return tr(pattern.words).arg(value);
     if (name == "p" || name == "p_naive") {
         const QString p = pText(figure.value);
         const QString label = name == "p" ? tr("p") : tr("p pooled");
         return p.startsWith(QLatin1Char('<')) ? label + QLatin1Char(' ') + p : label + QStringLiteral(" = ") + p;
     }
     if (name == "value")
-        return withUnit(record.item.indication);
-    if (name == "percent_of_span")
-        return tr("%1 % of span").arg(value);
+        return withUnit(record.choices.fit == FitDirection::Reference ? record.item.reference : record.item.indication);
     if (name == "set_point")
         return tr("at %1").arg(withUnit(record.item.reference));
     if (name == "share")
         return shareText(figure.value);
     if (name == "count")
         return tr("%n reading(s)", nullptr, static_cast<int>(figure.value));
-    if (name == "degrees_of_freedom" || name == "df")
-        return tr("%1 degrees of freedom").arg(value);
-    if (name == "run")
-        return tr("run %1").arg(value);
+    if (name == "values_outside")
+        return tr("%n value(s) outside", nullptr, static_cast<int>(figure.value));
     QString words = QString::fromStdString(name);
     return words.replace(QLatin1Char('_'), QLatin1Char(' ')) + QStringLiteral(" = ") + value;
 }
