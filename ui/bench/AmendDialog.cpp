@@ -45,6 +45,11 @@ AmendDialog::AmendDialog(const QString& what, const QString& before, const QStri
                 button->setEnabled(!reason().isEmpty());
     };
     connect(reason_, &QComboBox::editTextChanged, this, complete);
+    // An editable list keeps Enter to itself; here it answers.
+    connect(reason_->lineEdit(), &QLineEdit::returnPressed, this, [this] {
+        if (isVisible() && !reason().isEmpty())
+            accept();
+    });
     connect(buttons, &QDialogButtonBox::accepted, this, &QDialog::accept);
     connect(buttons, &QDialogButtonBox::rejected, this, &QDialog::reject);
     reason_->setFocus();

@@ -57,11 +57,12 @@ ReadingsTable::ReadingsTable(Workbench& workbench, QWidget* parent)
     words_->setMargin(6);
     words_->hide();
     connect(delegate_, &ReadingsDelegate::typed, this, &ReadingsTable::accept);
+    connect(delegate_, &QAbstractItemDelegate::closeEditor, this, &ReadingsTable::silence);
     connect(delegate_, &ReadingsDelegate::refused, this, [this](NumberEdit* editor, const Error& error) { say(errorText(error), editor->geometry()); });
     connect(delegate_, &ReadingsDelegate::editing, this, [this](NumberEdit* editor) {
         silence();
         connect(editor, &QLineEdit::textEdited, this, &ReadingsTable::silence);
-        connect(editor, &QObject::destroyed, this, &ReadingsTable::silence);
+        connect(editor, &QObject::destroyed, words_, &QWidget::hide);
     });
     connect(&workbench_, &Workbench::selectionChanged, this, &ReadingsTable::showSelection);
     connect(model_, &QAbstractItemModel::headerDataChanged, this, &ReadingsTable::fitColumns);

@@ -1,0 +1,407 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "tests/support/SampleRecord.h"
+#include "ui/bench/BenchPage.h"
+#include "ui/bench/NumberEdit.h"
+#include "ui/bench/PastedBlock.h"
+#include "ui/bench/PlanRows.h"
+#include "ui/bench/ReadingsTable.h"
+#include "ui/look/TypedNumber.h"
+#include "ui/commands/ExclusionCommands.h"
+#include "ui/look/Look.h"
+#include "ui/plot/LinePlot.h"
+#include "ui/plot/ResidualPlot.h"
+#include "ui/plot/SplitPicture.h"
+
+#include <QAction>
+#include <QApplication>
+#include <QClipboard>
+#include <QComboBox>
+#include <QDialog>
+#include <QLabel>
+#include <QMenu>
+#include <QPushButton>
+#include <QSignalSpy>
+#include <QTest>
+#include <QToolButton>
+
+using namespace spanwright;
+
+namespace {
+
+/// A transmitter with a plan of three set points, rising and falling, two runs, and nothing taken yet.
+Record planned() {
+    const Record sample = test::pressureTransmitter();
+    Record record;
+    record.item = sample.item;
+    record.plan.setPoints = {test::number("0"), test::number("5"), test::number("10")};
+    record.plan.runs = 2;
+    return record;
+}
+
+/// The bench in a window, with keys and mouse at hand.
+class Bench {
+  public:
+    explicit Bench(const Record& record) : workbench([this] { return now; }), page(workbench) {
+        workbench.setPerson(QStringLiteral("IO"));
+        workbench.setRecord(record);
+        page.resize(1280, 720);
+        page.show();
+        QApplication::setActiveWindow(&page);
+        QTest::qWait(0);
+    }
+    template <class T>
+    T* find(const char* name) const {
+        T* found = page.findChild<T*>(QLatin1String(name));
+        Q_ASSERT(found);
+        return found;
+    }
+    ReadingsTable* table() const { return find<ReadingsTable>("readingsTable"); }
+    NumberEdit* cell() const {
+        for (NumberEdit* editor : table()->viewport()->findChildren<NumberEdit*>(QStringLiteral("cellEditor")))
+            if (editor->isVisible())
+                return editor;
+        return nullptr;
+    }
+    /// Types into the widget that has the focus of the bench.
+    static void type(QWidget* widget, const char* keys) {
+        QTest::keyClicks(widget, QLatin1String(keys));
+    }
+    void enter(const char* name, const char* keys) {
+        auto* field = find<NumberEdit>(name);
+        field->setFocus();
+        type(field, keys);
+        QTest::keyClick(field, Qt::Key_Return);
+    }
+    const ReadingColumns& readings() const { return *workbench.record().readings; }
+    QDialog* dialog(const char* name) const {
+        QDialog* found = nullptr;
+        for (QDialog* candidate : page.findChildren<QDialog*>(QLatin1String(name)))
+            if (candidate->isVisible())
+                found = candidate;
+        return found;
+    }
+    void act(const char* id) const { find<QAction>(id)->trigger(); }
+
+    std::int64_t now = 1764590400000;
+    Workbench workbench;
+    BenchPage page;
+};
+
+std::string text(const std::optional<Decimal>& value) {
+    return value ? value->text() : "none";
+}
+
+} // namespace
+
+class BenchTest : public QObject {
+    Q_OBJECT
+
+  private slots:
+    void initTestCase() {
+        setScheme(*qApp, SchemeName::Light);
+        QLocale::setDefault(QLocale::c());
+    }
+
+    void aPointOrACommaIsTypedAndKept() {
+        QCOMPARE(parseTyped(QStringLiteral("100,10"))->text(), std::string("100.10"));
+        QCOMPARE(parseTyped(QStringLiteral("100.10"))->text(), std::string("100.10"));
+        QCOMPARE(parseTyped(QStringLiteral(" −0,50 "))->text(), std::string("-0.50"));
+        QVERIFY(parseTyped(QStringLiteral("1,234.5")).error().code == ErrorCode::ThousandsSeparator);
+        QVERIFY(parseTyped(QStringLiteral("1 234")).error().code == ErrorCode::ThousandsSeparator);
+        QVERIFY(parseTyped(QStringLiteral("open")).error().code == ErrorCode::CellNotANumber);
+        QVERIFY(parseTyped(QString()).error().code == ErrorCode::CellEmpty);
+    }
+
+    void thePanelTakesThePlannedReadingsInTurn() {
+        Bench bench(planned());
+        QCOMPARE(bench.find<QLabel>("setPointFigure")->text(), QStringLiteral("0"));
+        QCOMPARE(bench.find<QLabel>("placeWords")->text(), QStringLiteral("rising, run 1"));
+        bench.enter("referenceField", "0.0001");
+        QVERIFY(bench.find<NumberEdit>("indicationField")->hasFocus());
+        bench.enter("indicationField", "4,00");
+        QCOMPARE(bench.readings().size(), std::size_t(1));
+        const Reading first = bench.readings().row(0);
+        QCOMPARE(text(first.reference), std::string("0.0001"));
+        QCOMPARE(text(first.indication), std::string("4.00"));
+        QCOMPARE(text(first.setPoint), std::string("0"));
+        QVERIFY(first.direction == Direction::Rising);
+        QCOMPARE(first.run, 1);
+        QCOMPARE(first.enteredAt, bench.now);
+        QCOMPARE(first.enteredBy, std::string("IO"));
+        QCOMPARE(bench.find<QLabel>("setPointFigure")->text(), QStringLiteral("5"));
+        QCOMPARE(bench.find<QLabel>("takenCounter")->text(), QStringLiteral("1 of 12 taken"));
+        QVERIFY(bench.find<NumberEdit>("referenceField")->hasFocus());
+    }
+
+    void aDoubtfulValueIsAskedAboutAndNeverChanged() {
+        Bench bench(planned());
+        bench.enter("referenceField", "0.0001");
+        bench.enter("indicationField", "40.02"); // a perfect item reads 4.00
+        QCOMPARE(bench.readings().size(), std::size_t(0));
+        QVERIFY(bench.find<QLabel>("typedWords")->text().startsWith(QStringLiteral("40.02: more than a fifth of the span")));
+        QTest::keyClick(bench.find<NumberEdit>("indicationField"), Qt::Key_Return);
+        QCOMPARE(bench.readings().size(), std::size_t(1));
+        QCOMPARE(text(bench.readings().row(0).indication), std::string("40.02"));
+    }
+
+    void aWordInThePanelIsRefusedInPlace() {
+        Bench bench(planned());
+        bench.enter("referenceField", "zero");
+        auto* field = bench.find<NumberEdit>("referenceField");
+        QVERIFY(field->refused());
+        QCOMPARE(field->text(), QStringLiteral("zero"));
+        QVERIFY(bench.find<QLabel>("typedWords")->text().contains(QStringLiteral("is not a number")));
+        bench.type(field, "1");
+        QVERIFY(!field->refused());
+    }
+
+    void enterInTheTableGoesToTheNextPlannedCell() {
+        Bench bench(planned());
+        ReadingsTable* table = bench.table();
+        table->setFocus();
+        table->typeNext();
+        QVERIFY(bench.cell());
+        QCOMPARE(table->currentIndex().column(), int(ReadingsModel::ReferenceValue));
+        bench.type(bench.cell(), "0.0002");
+        QTest::keyClick(bench.cell(), Qt::Key_Return);
+        QVERIFY(bench.cell());
+        QCOMPARE(table->currentIndex().column(), int(ReadingsModel::IndicationValue));
+        QCOMPARE(table->currentIndex().row(), 0);
+        bench.type(bench.cell(), "4.001");
+        QTest::keyClick(bench.cell(), Qt::Key_Return);
+        QCOMPARE(bench.readings().size(), std::size_t(1));
+        QCOMPARE(text(bench.readings().row(0).indication), std::string("4.001"));
+        QCOMPARE(table->currentIndex().row(), 1);
+        QCOMPARE(table->currentIndex().column(), int(ReadingsModel::ReferenceValue));
+        QCOMPARE(table->readings().rowCount(), 12);
+        // A later planned reading may be taken first; then the table goes back to the one that is left out.
+        QTest::keyClick(bench.cell(), Qt::Key_Escape);
+        const QModelIndex fourth = table->readings().index(4, ReadingsModel::ReferenceValue);
+        table->setCurrentIndex(fourth);
+        QTest::keyClicks(table, QStringLiteral("5"));
+        bench.type(bench.cell(), ".0003");
+        QTest::keyClick(bench.cell(), Qt::Key_Return);
+        bench.type(bench.cell(), "12.002");
+        QTest::keyClick(bench.cell(), Qt::Key_Return);
+        const Reading second = bench.readings().row(1);
+        QCOMPARE(text(second.setPoint), std::string("5"));
+        QVERIFY(second.direction == Direction::Falling);
+        QCOMPARE(table->currentIndex().row(), 2);
+        QVERIFY(table->readings().readingAt(2).direction == Direction::Rising);
+    }
+
+    void wordsEmptyCellsAndThousandsAreRefusedInTheCell() {
+        Bench bench(planned());
+        ReadingsTable* table = bench.table();
+        table->setFocus();
+        table->typeNext();
+        for (const char* bad : {"four", "1,234.5", ""}) {
+            bench.cell()->clear();
+            bench.type(bench.cell(), bad);
+            QTest::keyClick(bench.cell(), Qt::Key_Return);
+            QVERIFY(bench.cell());
+            QCOMPARE(bench.cell()->text(), QLatin1String(bad));
+            QVERIFY(bench.cell()->refused());
+            QVERIFY(!table->refusal().isEmpty());
+            QCOMPARE(bench.readings().size(), std::size_t(0));
+        }
+        // Not even a click elsewhere loses what was typed.
+        bench.type(bench.cell(), "five");
+        QTest::mouseClick(table->viewport(), Qt::LeftButton, {}, table->visualRect(table->readings().index(5, ReadingsModel::Number)).center());
+        QVERIFY(bench.cell());
+        QCOMPARE(bench.cell()->text(), QStringLiteral("five"));
+        QVERIFY(table->refusal().contains(QStringLiteral("five")));
+        QTest::keyClick(bench.cell(), Qt::Key_Escape);
+        QVERIFY(table->refusal().isEmpty());
+    }
+
+    void aValueIsAmendedWithAReasonAndItsHistoryIsShown() {
+        Bench bench(test::pressureTransmitter());
+        ReadingsTable* table = bench.table();
+        table->setFocus();
+        const QModelIndex cell = table->readings().index(2, ReadingsModel::IndicationValue);
+        table->setCurrentIndex(cell);
+        QTest::keyClick(table, Qt::Key_Return);
+        QVERIFY(bench.cell());
+        QCOMPARE(bench.cell()->text(), QStringLiteral("7.195"));
+        bench.type(bench.cell(), "7.159");
+        QTest::keyClick(bench.cell(), Qt::Key_Return);
+        QDialog* dialog = bench.dialog("amendDialog");
+        QVERIFY(dialog);
+        QCOMPARE(text(bench.readings().row(2).indication), std::string("7.195"));
+        auto* reason = dialog->findChild<QComboBox*>(QStringLiteral("amendReason"));
+        QCOMPARE(reason->currentText(), QStringLiteral("typed wrongly"));
+        QTest::keyClick(reason, Qt::Key_Return);
+        QVERIFY(!dialog->isVisible());
+        QCOMPARE(text(bench.readings().row(2).indication), std::string("7.159"));
+        const JournalEntry& entry = bench.workbench.record().journal->entries().back();
+        QCOMPARE(entry.before, std::string("7.195"));
+        QCOMPARE(entry.reason, std::string("typed wrongly"));
+        QVERIFY(cell.data(ReadingsModel::AmendedRole).toBool());
+        QVERIFY(cell.data(Qt::ToolTipRole).toString().contains(QStringLiteral("7.195 → 7.159")));
+        bench.workbench.undoStack().undo();
+        QVERIFY(bench.workbench.record() == test::pressureTransmitter());
+    }
+
+    void aBlockIsPastedWholeOrNotAtAll() {
+        const PastedBlock block = readPasted(QStringLiteral("0,0001\t4,002\r\n4,9998\t12,003\r\n\r\n"));
+        QCOMPARE(block.rows.size(), std::size_t(2));
+        QCOMPARE(block.rows[1][0].text(), std::string("4.9998"));
+        const PastedBlock bad = readPasted(QStringLiteral("0.1\t4.0\n5.0\tOVR\n1,000.0\t9\n3"));
+        QVERIFY(bad.rows.empty());
+        QCOMPARE(bad.refused.size(), std::size_t(3));
+        QCOMPARE(bad.refused[0].row, 2);
+        QCOMPARE(bad.refused[0].column, 2);
+        QVERIFY(bad.refused[2].error.code == ErrorCode::RaggedRow);
+
+        Bench bench(planned());
+        ReadingsTable* table = bench.table();
+        table->setFocus();
+        table->setCurrentIndex(table->readings().nextCell());
+        QApplication::clipboard()->setText(QStringLiteral("0.0001\t4.002\n4.9998\tOVR\n"));
+        QTest::keySequence(table, QKeySequence::Paste);
+        QCOMPARE(bench.readings().size(), std::size_t(0));
+        QVERIFY(table->refusal().contains(QStringLiteral("Line 2, cell 2")));
+        QVERIFY(table->refusal().contains(QStringLiteral("OVR")));
+        QApplication::clipboard()->setText(QStringLiteral("0.0001\t4.002\n4.9998\t12.003\n10.0000\t20.00\n"));
+        QTest::keySequence(table, QKeySequence::Paste);
+        QCOMPARE(bench.readings().size(), std::size_t(3));
+        QCOMPARE(text(bench.readings().row(2).reference), std::string("10.0000"));
+        QCOMPARE(text(bench.readings().row(2).setPoint), std::string("10"));
+        QCOMPARE(bench.workbench.undoStack().count(), 1);
+        bench.workbench.undoStack().undo();
+        QCOMPARE(bench.readings().size(), std::size_t(0));
+    }
+
+    void selectingInOnePlaceSelectsInAll() {
+        Bench bench(test::pressureTransmitter());
+        auto* residual = bench.find<ResidualPlot>("residualPlot");
+        auto* line = bench.find<LinePlot>("linePlot");
+        QTest::mouseClick(residual->viewport(), Qt::LeftButton, {}, residual->placeOf(6).toPoint());
+        QCOMPARE(bench.workbench.selection(), std::set<ReadingId>{6});
+        QCOMPARE(line->cloud().selection(), std::set<ReadingId>{6});
+        QCOMPARE(bench.table()->selectionModel()->selectedRows().size(), 1);
+        QCOMPARE(bench.table()->selectionModel()->selectedRows()[0].row(), 5);
+        bench.table()->selectRow(10);
+        QCOMPARE(residual->cloud().selection(), std::set<ReadingId>{11});
+        QVERIFY(bench.find<QWidget>("selectionBar")->isVisible());
+        bench.find<QToolButton>("clearSelection")->click();
+        QVERIFY(bench.table()->selectionModel()->selectedRows().isEmpty());
+    }
+
+    void readingsAreExcludedWithAReasonAndTakenBack() {
+        Bench bench(test::pressureTransmitter());
+        const Record before = bench.workbench.record();
+        auto* residual = bench.find<ResidualPlot>("residualPlot");
+        QTest::mouseClick(residual->viewport(), Qt::LeftButton, {}, residual->placeOf(6).toPoint());
+        QTest::keyClick(residual, Qt::Key_X);
+        QDialog* dialog = bench.dialog("excludeDialog");
+        QVERIFY(dialog);
+        auto* accept = dialog->findChild<QPushButton*>(QStringLiteral("excludeAccept"));
+        QVERIFY(!accept->isEnabled());
+        auto* reason = dialog->findChild<QComboBox*>(QStringLiteral("excludeReason"));
+        reason->setCurrentIndex(reason->count() - 1); // other: needs words
+        QVERIFY(!accept->isEnabled());
+        QTest::keyClicks(dialog->findChild<QLineEdit*>(QStringLiteral("excludeWords")), QStringLiteral("valve still moving"));
+        QVERIFY(accept->isEnabled());
+        auto* effect = dialog->findChild<QWidget*>(QStringLiteral("effectTable"));
+        QTRY_VERIFY(effect->accessibleDescription().contains(QStringLiteral("readings used\t66\t65")));
+        QVERIFY(effect->accessibleDescription().contains(QStringLiteral("slope b1\t1.60010\t")));
+        accept->click();
+        QVERIFY(bench.workbench.record().exclusions->contains(6));
+        QCOMPARE(bench.workbench.record().exclusions->find(6)->words, std::string("valve still moving"));
+        QCOMPARE(residual->points().excluded[5], std::uint8_t(1));
+        QVERIFY(bench.table()->readings().index(5, 0).data(ReadingsModel::ExcludedRole).toBool());
+        QVERIFY(residual->ink().notes().front().text.contains(QStringLiteral("valve still moving")));
+        bench.find<QToolButton>("readmitSelected")->click();
+        QVERIFY(bench.workbench.record() == before);
+    }
+
+    void theCalibrationFunctionIsChosenAndUndone() {
+        Bench bench(test::pressureTransmitter());
+        auto* choice = bench.find<QToolButton>("functionChoice");
+        QVERIFY(bench.find<QLabel>("equation")->text().contains(QStringLiteral("1.60010 x")));
+        choice->findChild<QAction*>(QStringLiteral("polynomial:2"))->trigger();
+        QVERIFY(bench.workbench.record().choices.function == (FunctionChoice{FunctionFamily::Polynomial, 2}));
+        QVERIFY(bench.find<QLabel>("equation")->text().contains(QStringLiteral("x²")));
+        QVERIFY(choice->text().contains(QStringLiteral("degree 2")));
+        bench.workbench.undoStack().undo();
+        QVERIFY(choice->text().contains(QStringLiteral("Straight line")));
+    }
+
+    void aPartOfTheSplitShowsItselfOnTheResiduals() {
+        Bench bench(test::pressureTransmitter());
+        auto* picture = bench.find<SplitPicture>("splitPicture");
+        auto* residual = bench.find<ResidualPlot>("residualPlot");
+        picture->setFocus();
+        QTest::keyClick(picture, Qt::Key_Down);
+        QTest::keyClick(picture, Qt::Key_Down);
+        QVERIFY(residual->part() == SplitPart::LackOfFit);
+        QTest::keyClick(picture, Qt::Key_Down);
+        QVERIFY(residual->part() == SplitPart::Hysteresis);
+        QTest::keyClick(picture, Qt::Key_Escape);
+        QVERIFY(!residual->part());
+        bench.act("bench.split-table");
+        QDialog* table = bench.dialog("splitTable");
+        QVERIFY(table);
+        table->findChild<QPushButton*>(QStringLiteral("copySplit"))->click();
+        QVERIFY(QApplication::clipboard()->text().contains(QStringLiteral("lack of fit\t0.00023")));
+    }
+
+    void goingOnAsLeftIsGuarded() {
+        Record record = planned();
+        record.plan.asLeftRuns = 1;
+        Bench bench(record);
+        const auto chooseLeft = [&] { bench.find<QToolButton>("phaseChoice")->menu()->actions()[1]->trigger(); };
+        chooseLeft();
+        QVERIFY(bench.workbench.record().choices.phase == Phase::AsFound);
+        QDialog* guard = bench.dialog("phaseGuard");
+        QVERIFY(guard);
+        guard->reject();
+        QVERIFY(bench.workbench.record().choices.phase == Phase::AsFound);
+        Bench full(test::pressureTransmitter());
+        full.find<QToolButton>("phaseChoice")->menu()->actions()[1]->trigger();
+        QVERIFY(full.workbench.record().choices.phase == Phase::AsLeft);
+        QCOMPARE(full.table()->readings().taken(), 10);
+    }
+
+    void aMillionReadingsAreShownAtOnce() {
+        Record record;
+        const std::size_t n = 1000000;
+        std::vector<std::int64_t> x(n), y(n);
+        for (std::size_t i = 0; i < n; ++i) {
+            x[i] = static_cast<std::int64_t>(i % 1000);
+            y[i] = 400 + 16 * x[i] / 10 + static_cast<std::int64_t>(i % 7);
+        }
+        ReadingColumns::Block block;
+        block.n = n;
+        block.reference = DecimalColumn::fromGrid(x, std::vector<std::uint8_t>(n, 2), 2);
+        block.indication = DecimalColumn::fromGrid(y, std::vector<std::uint8_t>(n, 2), 2);
+        record.readings.edit().appendBlock(block, 1);
+        record.nextReadingId = static_cast<ReadingId>(n + 1);
+        Bench bench(record);
+        QCOMPARE(bench.table()->readings().rowCount(), int(n) + 1);
+        QTRY_VERIFY_WITH_TIMEOUT(bench.find<LinePlot>("linePlot")->points().size() == n, 60000);
+        QVERIFY(bench.find<LinePlot>("linePlot")->cloud().showsDensity());
+        bench.table()->scrollTo(bench.table()->readings().index(999999, 0));
+        QCOMPARE(bench.table()->readings().index(999999, ReadingsModel::ReferenceValue).data().toString(), QStringLiteral("9.99"));
+    }
+
+    void nothingIsClippedInASmallWindow() {
+        Bench bench(test::pressureTransmitter());
+        for (const QToolButton* button : bench.page.findChildren<QToolButton*>())
+            if (button->isVisible() && !button->text().isEmpty())
+                QVERIFY2(button->width() >= button->fontMetrics().horizontalAdvance(button->text()), qPrintable(button->text()));
+        for (const QLabel* label : bench.page.findChildren<QLabel*>())
+            if (label->isVisible() && !label->wordWrap() && !label->text().isEmpty())
+                QVERIFY2(label->width() >= label->fontMetrics().horizontalAdvance(label->text()), qPrintable(label->text()));
+        for (const QWidget* widget : bench.page.findChildren<QWidget*>())
+            if (widget->focusPolicy() != Qt::NoFocus && widget->isVisible() && widget->parentWidget() != bench.table()->viewport() && !widget->inherits("QScrollBar") &&
+                !widget->parentWidget()->inherits("QAbstractScrollArea") &&
+                !widget->inherits("QHeaderView"))
+                QVERIFY2(!widget->accessibleName().isEmpty() || !widget->property("text").toString().isEmpty(), qPrintable(QString::fromLatin1(widget->metaObject()->className()) + widget->objectName() + QStringLiteral(" in ") + QString::fromLatin1(widget->parentWidget()->metaObject()->className())));
+    }
+};
+
+QTEST_MAIN(BenchTest)
+#include "tst_bench.moc"
