@@ -1,12 +1,16 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/bench/BenchPage.h"
 
+#include "core/diagnose/FindingName.h"
 #include "ui/bench/ChoiceMenus.h"
 #include "ui/bench/CompareDialog.h"
+#include "ui/bench/ConvertDialog.h"
+#include "ui/bench/Dismissals.h"
 #include "ui/bench/ExcludeDialog.h"
 #include "ui/bench/FindingsView.h"
 #include "ui/bench/NextReading.h"
 #include "ui/bench/ReadingsTable.h"
+#include "ui/bench/ReasonDialog.h"
 #include "ui/bench/SelectionBar.h"
 #include "ui/bench/SplitTable.h"
 #include "ui/commands/ExclusionCommands.h"
@@ -21,6 +25,7 @@
 #include "ui/words/Words.h"
 
 #include <QAction>
+#include <QDateTime>
 #include <QHBoxLayout>
 #include <QLabel>
 #include <QMenu>
@@ -140,6 +145,8 @@ QWidget* BenchPage::buildRight() {
     rows->setMinimumWidth(256);
     connect(findings_, &FindingsView::remedyChosen, this, &BenchPage::follow);
     connect(findings_, &FindingsView::readingsChosen, this, [this](const std::vector<ReadingId>& ids) { workbench_.select({ids.begin(), ids.end()}); });
+    connect(findings_, &FindingsView::dismissChosen, this, &BenchPage::dismiss);
+    connect(findings_, &FindingsView::recallChosen, this, &BenchPage::recall);
     connect(split_, &SplitPicture::partSelected, this, &BenchPage::showPart);
     return rows;
 }
@@ -160,6 +167,7 @@ void BenchPage::buildActions() {
     add("bench.compare-exclusions", tr("Compare with and without the exclusions"), {}, [this] {
         (new CompareDialog(workbench_, CompareDialog::withoutExclusions(workbench_.record()), this))->open();
     });
+    add("bench.convert", tr("Value from a reading"), QKeySequence(Qt::CTRL | Qt::Key_B), [this] { (new ConvertDialog(workbench_, this))->show(); });
     add("bench.line", tr("Go to the line plot"), QKeySequence(Qt::CTRL | Qt::Key_L), [this] { line_->setFocus(); });
     add("bench.residuals", tr("Go to the residuals"), QKeySequence(Qt::CTRL | Qt::Key_R), [this] { residual_->setFocus(); });
     add("bench.table", tr("Go to the readings"), QKeySequence(Qt::CTRL | Qt::Key_G), [this] { table_->setFocus(); });
@@ -282,6 +290,34 @@ void BenchPage::follow(const Finding& finding) {
     }
     case Remedy::None: break;
     }
+}
+
+void BenchPage::dismiss(const Finding& finding) {
+    if (workbench_.readOnly())
+        return;
+    const FindingWords words = findingWords(finding, workbench_.record());
+    const ReasonDialog::Question question{tr("Dismiss a finding"),
+                                          words.sentence,
+                                          {},
+                                          tr("&Why? It stays listed, and comes back when its figures change."),
+                                          {},
+                                          tr("Dismiss"),
+                                          tr("Keep it")};
+    auto* dialog = new ReasonDialog(QStringLiteral("dismissDialog"), question, this);
+    connect(dialog, &QDialog::accepted, this, [this, finding, dialog] {
+        const QString date = QDateTime::fromMSecsSinceEpoch(workbench_.now()).date().toString(Qt::ISODate);
+        workbench_.perform(changePart(workbench_.record(), &Record::dismissals, tr("dismiss a finding"), [&](std::vector<Dismissal>& all) {
+            all.push_back({std::string(findingName(finding.code)), figuresKey(finding), dialog->reason().toStdString(), workbench_.person().toStdString(), date.toStdString()});
+        }));
+    });
+    dialog->open();
+}
+
+void BenchPage::recall(const Finding& finding) {
+    const Dismissal* found = dismissalOf(finding, workbench_.record());
+    if (!found)
+        return;
+    workbench_.perform(changePart(workbench_.record(), &Record::dismissals, tr("bring a finding back"), [gone = *found](std::vector<Dismissal>& all) { std::erase(all, gone); }));
 }
 
 void BenchPage::showSplitTable() {

@@ -51,6 +51,8 @@ class BenchPage : public QWidget {
     void exclude();
     void readmit();
     void follow(const Finding& finding);
+    void dismiss(const Finding& finding);
+    void recall(const Finding& finding);
     void compare(const FunctionChoice& function);
     void showSplitTable();
     [[nodiscard]] PlotSubject subject() const;

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/bench/FindingsView.h"
 
+#include "ui/bench/Dismissals.h"
 #include "ui/look/Look.h"
 #include "ui/words/Words.h"
 
@@ -74,14 +75,51 @@ void FindingsView::setFindings(std::vector<Finding> findings, const Record& reco
         delete item;
     }
     findings_ = std::move(findings);
+    bool any = false;
     for (const Finding& finding : findings_)
-        add(finding, record);
-    if (findings_.empty()) {
+        if (!dismissalOf(finding, record)) {
+            add(finding, record);
+            any = true;
+        }
+    if (!any) {
         QLabel* none = wrapped(whenNone, QFont::Normal);
         none->setForegroundRole(inkRole::quiet);
         list_->addWidget(none);
     }
+    for (const Finding& finding : findings_)
+        if (const Dismissal* dismissal = dismissalOf(finding, record))
+            addDismissed(finding, *dismissal, record);
     list_->addStretch(1);
+}
+
+QToolButton* FindingsView::link(QHBoxLayout* into, const QString& text, const QString& name, const QString& about) {
+    auto* button = new QToolButton;
+    button->setObjectName(name);
+    button->setProperty("link", true);
+    button->setFont(textFont(TextRole::Small));
+    button->setText(text);
+    button->setAccessibleName(text + QStringLiteral(": ") + about);
+    button->setStyleSheet(QStringLiteral("QToolButton { padding: 1px 0px; }"));
+    button->setCursor(Qt::PointingHandCursor);
+    into->addWidget(button);
+    return button;
+}
+
+void FindingsView::addDismissed(const Finding& finding, const Dismissal& dismissal, const Record& record) {
+    const FindingWords words = findingWords(finding, record);
+    QLabel* line = wrapped(tr("Dismissed: %1").arg(words.sentence), QFont::Normal);
+    QLabel* why = wrapped(tr("%1 %2: %3").arg(QString::fromStdString(dismissal.by), QString::fromStdString(dismissal.date), QString::fromStdString(dismissal.reason)).trimmed(), QFont::Normal);
+    for (QLabel* label : {line, why}) {
+        label->setForegroundRole(inkRole::quiet);
+        list_->addWidget(label);
+    }
+    auto* actions = new QHBoxLayout;
+    connect(link(actions, tr("Bring back"), QStringLiteral("recall"), words.sentence), &QToolButton::clicked, this, [this, finding] { emit recallChosen(finding); });
+    actions->addStretch(1);
+    auto* row = new QWidget;
+    row->setLayout(actions);
+    actions->setContentsMargins(0, 0, 0, space::half);
+    list_->addWidget(row);
 }
 
 void FindingsView::add(const Finding& finding, const Record& record) {
@@ -101,22 +139,11 @@ void FindingsView::add(const Finding& finding, const Record& record) {
     }
     auto* actions = new QHBoxLayout;
     actions->setSpacing(space::step);
-    const auto link = [&](const QString& text, const QString& name) {
-        auto* button = new QToolButton;
-        button->setObjectName(name);
-        button->setProperty("link", true);
-        button->setFont(textFont(TextRole::Small));
-        button->setText(text);
-        button->setAccessibleName(text + QStringLiteral(": ") + words.sentence);
-        button->setStyleSheet(QStringLiteral("QToolButton { padding: 1px 0px; }"));
-        button->setCursor(Qt::PointingHandCursor);
-        actions->addWidget(button);
-        return button;
-    };
     if (!words.remedy.isEmpty())
-        connect(link(words.remedy, QStringLiteral("remedy")), &QToolButton::clicked, this, [this, finding] { emit remedyChosen(finding); });
+        connect(link(actions, words.remedy, QStringLiteral("remedy"), words.sentence), &QToolButton::clicked, this, [this, finding] { emit remedyChosen(finding); });
     if (!finding.rows.empty() && finding.remedy != Remedy::SeeReadings)
-        connect(link(tr("Show"), QStringLiteral("showReadings")), &QToolButton::clicked, this, [this, finding] { emit readingsChosen(finding.rows); });
+        connect(link(actions, tr("Show"), QStringLiteral("showReadings"), words.sentence), &QToolButton::clicked, this, [this, finding] { emit readingsChosen(finding.rows); });
+    connect(link(actions, tr("Dismiss"), QStringLiteral("dismiss"), words.sentence), &QToolButton::clicked, this, [this, finding] { emit dismissChosen(finding); });
     actions->addStretch(1);
     lines->addLayout(actions, 2, 1);
     list_->addWidget(entry);

@@ -8,11 +8,14 @@
 
 #include <vector>
 
+class QHBoxLayout;
+class QToolButton;
 class QVBoxLayout;
 
 namespace spanwright {
 
-/// The findings, most serious first: one plain sentence, the figures behind it, one thing to do about it.
+/// The findings, most serious first: one plain sentence, the figures behind it, one thing to do about it. Dismissed ones stay listed
+/// below, with who and why, and stand above again when their figures change.
 class FindingsView : public QScrollArea {
     Q_OBJECT
 
@@ -25,9 +28,13 @@ class FindingsView : public QScrollArea {
     void remedyChosen(const spanwright::Finding& finding);
     /// The sentence was pressed: show the readings it is about.
     void readingsChosen(const std::vector<spanwright::ReadingId>& ids);
+    void dismissChosen(const spanwright::Finding& finding);
+    void recallChosen(const spanwright::Finding& finding);
 
   private:
     void add(const Finding& finding, const Record& record);
+    void addDismissed(const Finding& finding, const Dismissal& dismissal, const Record& record);
+    QToolButton* link(QHBoxLayout* into, const QString& text, const QString& name, const QString& about);
     std::vector<Finding> findings_;
     QVBoxLayout* list_;
 };

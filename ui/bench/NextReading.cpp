@@ -327,25 +327,43 @@ void NextReading::acceptIndication(bool sure) {
         reference_->setFocus();
         return;
     }
-    const TypedCheck check = checkIndication(*number, *reference(), figures(), workbench_.record().item);
-    if (check.doubtful && !sure) {
-        ask(check.sentence, std::nullopt);
+    if (!sure && asked(*number))
         return;
-    }
     record(*number);
 }
 
+/// Asks about a number that a slip of the hand could have made, or that lies outside what is expected.
+bool NextReading::asked(const Decimal& indication) {
+    Reading typed = next_;
+    if (referenceTyped())
+        typed.reference = *reference_->number();
+    typed.indication = indication;
+    typed.enteredAt = workbench_.now();
+    for (const Slip& slip : slipsOf(workbench_.record(), typed)) {
+        if (slip.kind == SlipKind::BeforeSettled || slip.kind == SlipKind::OffResolution)
+            continue;
+        const bool reference = slip.column == NumberColumn::Reference;
+        ask(slipText(slip, reference ? *typed.reference : indication), reference ? std::nullopt : slip.suggestion, slip.column);
+        return true;
+    }
+    const TypedCheck check = checkIndication(indication, *reference(), figures(), workbench_.record().item);
+    if (check.doubtful)
+        ask(tr("%1: %2.").arg(indication_->text().trimmed(), check.sentence), std::nullopt, NumberColumn::Indication);
+    return check.doubtful;
+}
+
 /// Nothing is recorded until one of the answers is chosen; Enter once more keeps what was typed where there is no suggestion.
-void NextReading::ask(const QString& sentence, const std::optional<Decimal>& suggestion) {
+void NextReading::ask(const QString& sentence, const std::optional<Decimal>& suggestion, NumberColumn column) {
     asking_ = true;
     suggestion_ = suggestion;
-    const QString typed = indication_->text().trimmed();
-    tell(suggestion ? sentence : tr("%1: %2. Read again, or press Enter once more to record it.").arg(typed, sentence), true);
-    keep_->setText(tr("Keep %1").arg(typed));
+    tell(suggestion ? sentence : tr("%1 Read again, or press Enter once more to record it.").arg(sentence), true);
+    keep_->setText(tr("Keep %1").arg((column == NumberColumn::Reference ? reference_ : indication_)->text().trimmed()));
     keep_->show();
     use_->setVisible(suggestion.has_value());
-    if (suggestion)
+    if (suggestion) {
         use_->setText(tr("Use %1").arg(typedText(*suggestion)));
+        use_->setFocus();
+    }
 }
 
 void NextReading::record(const Decimal& indication) {

@@ -47,7 +47,8 @@ class NextReading : public QFrame {
     void acceptReference();
     void acceptIndication(bool sure);
     void record(const Decimal& indication);
-    void ask(const QString& sentence, const std::optional<Decimal>& suggestion);
+    bool asked(const Decimal& indication);
+    void ask(const QString& sentence, const std::optional<Decimal>& suggestion, NumberColumn column);
     void settle();
     void askPhase(Phase phase);
     void choosePhase(Phase phase);

@@ -1,10 +1,10 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/bench/ReadingsTable.h"
 
-#include "ui/bench/AmendDialog.h"
 #include "ui/bench/NumberEdit.h"
 #include "ui/bench/PastedBlock.h"
 #include "ui/bench/ReadingsDelegate.h"
+#include "ui/bench/ReasonDialog.h"
 #include "ui/commands/ReadingCommands.h"
 #include "ui/look/Look.h"
 #include "ui/look/NumberText.h"
@@ -137,7 +137,14 @@ void ReadingsTable::amend(ReadingId id, NumberColumn column, const Decimal& befo
                       : column == NumberColumn::Reference ? ReadingsModel::ReferenceValue
                                                           : ReadingsModel::IndicationValue;
     const QString what = tr("Reading %1, %2").arg(id).arg(model_->headerData(shown, Qt::Horizontal, Qt::DisplayRole).toString());
-    auto* dialog = new AmendDialog(what, typedText(before), typedText(after), this);
+    const ReasonDialog::Question question{tr("Change a recorded value"),
+                                          what,
+                                          typedText(before) + QStringLiteral("  →  ") + typedText(after),
+                                          tr("&Why? The value before is kept beside the new one."),
+                                          {tr("typed wrongly"), tr("read again at the instrument"), tr("typed in the wrong place")},
+                                          tr("Record the change"),
+                                          tr("Keep the value")};
+    auto* dialog = new ReasonDialog(QStringLiteral("amendDialog"), question, this);
     connect(dialog, &QDialog::accepted, this, [=, this] {
         workbench_.perform(std::make_unique<AmendValue>(id, column, after, dialog->reason().toStdString()));
         setFocus();

@@ -4,6 +4,7 @@
 #include "core/base/Error.h"
 #include "core/base/Warning.h"
 #include "core/diagnose/Finding.h"
+#include "core/diagnose/Slips.h"
 #include "core/evaluate/Evaluation.h"
 #include "core/record/Record.h"
 
@@ -22,6 +23,9 @@ struct FindingWords {
     QString remedy; ///< label of the action; empty when there is none
 };
 FindingWords findingWords(const Finding& finding, const Record& record);
+
+/// A question about a typed number: "You typed 1.847. 1.487 would fit. Digits swapped?"
+QString slipText(const Slip& slip, const Decimal& typed);
 
 /// Names as they stand on screen and paper.
 QString phaseText(Phase phase);

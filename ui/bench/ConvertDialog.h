@@ -1,0 +1,34 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "ui/commands/Workbench.h"
+
+#include <QDialog>
+
+class QLabel;
+class QSpinBox;
+
+namespace spanwright {
+
+class NumberEdit;
+
+/// Type an indication, read the value and its uncertainty: the calibration function read backwards, as the item's user will. Stays
+/// open beside the work and follows it.
+class ConvertDialog : public QDialog {
+    Q_OBJECT
+
+  public:
+    explicit ConvertDialog(Workbench& workbench, QWidget* parent = nullptr);
+
+  private:
+    void convert();
+
+    Workbench& workbench_;
+    NumberEdit* indication_;
+    QSpinBox* repeats_;
+    QLabel* value_;
+    QLabel* interval_;
+    QLabel* warnings_;
+};
+
+} // namespace spanwright
