@@ -196,6 +196,29 @@ void writePerformance(JsonWriter& json, const std::optional<ProcessFigures>& per
     json.endObject();
 }
 
+/// Figures of a force transducer, in % of the deflection unless named otherwise; those without readings are left out.
+void writeForce(JsonWriter& json, const ForceFigures& force) {
+    const auto known = [&](std::string_view name, const std::optional<double>& figure) {
+        if (figure)
+            json.field(name, *figure);
+    };
+    json.key("force").beginObject(Layout::Lines);
+    json.field("degree", force.degree).field("residual_sd", force.residualSd);
+    json.field("lower_limit_factor", force.lowerLimitFactor).field("lower_limit_force", force.lowerLimitForce);
+    json.field("lowest_force_class_a", force.lowestForceClassA).field("lowest_force_class_aa", force.lowestForceClassAA);
+    known("zero", force.zero);
+    json.key("steps").beginArray(Layout::Lines);
+    for (const ForceStep& step : force.steps) {
+        json.beginObject().field("force", step.force).field("mean", step.mean);
+        known("reproducibility", step.reproducibility);
+        known("repeatability", step.repeatability);
+        known("interpolation", step.interpolation);
+        known("reversibility", step.reversibility);
+        json.endObject();
+    }
+    json.endArray().endObject();
+}
+
 void writeFindings(JsonWriter& json, const Record& record, const std::vector<Finding>& findings) {
     json.key("findings").beginArray(Layout::Lines);
     for (const Finding& finding : findings) {
@@ -250,6 +273,8 @@ std::string figuresJson(const Record& record, const PhaseEvaluation& evaluation,
 
     writeDiagnostics(json, evaluation.diagnostics);
     writePerformance(json, evaluation.performance);
+    if (evaluation.force)
+        writeForce(json, *evaluation.force);
     writeFindings(json, record, evaluation.findings);
     if (rows == RowsShown::Yes)
         writeRows(json, record, evaluation.rows);

@@ -7,6 +7,7 @@
 #include "core/fit/Fit.h"
 #include "core/interval/Bands.h"
 #include "core/interval/ReadBack.h"
+#include "core/performance/ForceFigures.h"
 #include "core/performance/ProcessFigures.h"
 #include "core/split/VarianceSplit.h"
 #include "core/verdict/Verdict.h"
@@ -49,6 +50,7 @@ struct PhaseEvaluation {
     std::optional<VarianceSplit> split;
     std::optional<Diagnostics> diagnostics;
     std::optional<ProcessFigures> performance;
+    std::optional<ForceFigures> force; ///< where the reference is a force and the item was turned between runs
     RowFigures rows;
     std::vector<BandPoint> curve; ///< at most 400 points over the range of all readings, a little beyond
     std::vector<BandPoint> at;    ///< at the chosen reference values
