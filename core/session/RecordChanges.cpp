@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/session/RecordChanges.h"
 
+#include "core/exchange/TextEncoding.h"
 #include "core/record/Fields.h"
 #include "core/session/ListsJson.h"
 #include "core/session/PartsJson.h"
@@ -182,6 +183,8 @@ std::optional<std::string> writeChanges(const Record& before, const Record& afte
 Result<void> applyChanges(Record& record, std::string_view changes) {
     JsonScanner scan(changes);
     std::vector<std::string> columns;
+    if (validUtf8(changes) != changes.size())
+        scan.failSyntax();
     if (scan.enterObject())
         while (const auto key = scan.nextKey()) {
             if (*key == "readings_removed") {
