@@ -12,27 +12,46 @@
 namespace spanwright {
 namespace {
 
+constexpr std::size_t mostGroups = 10'000;
+
 struct MeanAndSquares {
     double n = 0, mean = 0, squares = 0;
 };
 
+/// Calls use(group, first, last) for every stretch of neighbours in one group, so that sums of a plateau stay in registers.
+template <class Use>
+void eachStretch(const GroupedValues& values, Use&& use) {
+    for (std::size_t i = 0; i < values.u.size();) {
+        const std::int32_t group = values.group[i];
+        std::size_t last = i + 1;
+        while (last < values.u.size() && values.group[last] == group)
+            ++last;
+        use(static_cast<std::size_t>(group), i, last);
+        i = last;
+    }
+}
+
 /// Means and squares of |u − centre of its group| or, without centres, of u, for every group.
 std::vector<MeanAndSquares> meansAndSquares(const GroupedValues& values, std::span<const double> centre) {
     std::vector<MeanAndSquares> parts(values.groups);
-    const auto value = [&](std::size_t i) {
-        return centre.empty() ? values.u[i] : std::abs(values.u[i] - centre[static_cast<std::size_t>(values.group[i])]);
-    };
-    for (std::size_t i = 0; i < values.u.size(); ++i) {
-        MeanAndSquares& part = parts[static_cast<std::size_t>(values.group[i])];
-        ++part.n;
-        part.mean += value(i);
-    }
+    const auto value = [&](std::size_t i, double middle) { return centre.empty() ? values.u[i] : std::abs(values.u[i] - middle); };
+    eachStretch(values, [&](std::size_t g, std::size_t first, std::size_t last) {
+        const double middle = centre.empty() ? 0 : centre[g];
+        double sum = 0;
+        for (std::size_t i = first; i < last; ++i)
+            sum += value(i, middle);
+        parts[g].n += static_cast<double>(last - first);
+        parts[g].mean += sum;
+    });
     for (MeanAndSquares& part : parts)
         part.mean /= part.n;
-    for (std::size_t i = 0; i < values.u.size(); ++i) {
-        MeanAndSquares& part = parts[static_cast<std::size_t>(values.group[i])];
-        part.squares += (value(i) - part.mean) * (value(i) - part.mean);
-    }
+    eachStretch(values, [&](std::size_t g, std::size_t first, std::size_t last) {
+        const double middle = centre.empty() ? 0 : centre[g], mean = parts[g].mean;
+        double sum = 0;
+        for (std::size_t i = first; i < last; ++i)
+            sum += (value(i, middle) - mean) * (value(i, middle) - mean);
+        parts[g].squares += sum;
+    });
     return parts;
 }
 
@@ -47,13 +66,17 @@ std::vector<MeanAndSquares> replicated(const std::vector<MeanAndSquares>& parts)
 /// is gathered and nothing is copied.
 class GroupMedians {
   public:
-    explicit GroupMedians(const GroupedValues& values) : values_(values), buckets_(values.u.size() > 20'000 ? 1024 : 1), groups_(values.groups) {
-        for (std::size_t i = 0; i < values.u.size(); ++i) {
-            Group& group = at(i);
-            group.low = std::min(group.low, values.u[i]);
-            group.high = std::max(group.high, values.u[i]);
-            ++group.n;
-        }
+    explicit GroupMedians(const GroupedValues& values) : values_(values), buckets_(values.u.size() > 1024 * values.groups ? 1024 : 1), groups_(values.groups) {
+        eachStretch(values, [&](std::size_t g, std::size_t first, std::size_t last) {
+            double low = groups_[g].low, high = groups_[g].high;
+            for (std::size_t i = first; i < last; ++i) {
+                low = std::min(low, values.u[i]);
+                high = std::max(high, values.u[i]);
+            }
+            groups_[g].low = low;
+            groups_[g].high = high;
+            groups_[g].n += last - first;
+        });
         count();
         gather();
     }
@@ -177,7 +200,7 @@ double cochranCriticalValue(double groups, double n, double level) {
 
 EqualVariances equalVariances(const GroupedValues& values) {
     EqualVariances result;
-    if (values.groups < 2 || values.groups >= values.u.size())
+    if (values.groups < 2 || values.groups >= values.u.size() || values.groups > mostGroups)
         return result;
     const std::vector<MeanAndSquares> parts = replicated(meansAndSquares(values, {}));
     if (parts.size() < 2)

@@ -23,7 +23,7 @@ struct EqualVariances {
     bool equalSizes = true;             ///< Cochran's critical values suppose equal numbers; else the mean number is used
 };
 
-/// Empty parts where fewer than two groups have two values or more, or nothing varies.
+/// Empty parts where fewer than two groups have two values or more, or nothing varies, or there are more than 10,000 groups.
 [[nodiscard]] EqualVariances equalVariances(const GroupedValues& values);
 
 /// Critical value of Cochran's C for `groups` of `n` each: 1/(1 + (g − 1)/F), F exceeded with probability level/g at n − 1 and

@@ -19,6 +19,9 @@ constexpr std::array order{
     FindingCode::DegreeNotJustified, FindingCode::OutsideBand,  FindingCode::RepeatedReading,         FindingCode::NonNormal,
     FindingCode::ExcludedReadings};
 
+/// More set points than this are a logger's record: what repeats there is by chance.
+constexpr std::size_t mostSetPoints = 10'000;
+
 std::ptrdiff_t rank(FindingCode code) {
     return std::find(order.begin(), order.end(), code) - order.begin();
 }
@@ -42,7 +45,7 @@ ReadingId idOf(const FindingsInput& input, std::size_t index) {
 std::vector<double> repeatabilityDeviations(const FindingsInput& input) {
     const Sample& sample = input.sample;
     const std::size_t n = sample.size();
-    if (!input.residuals || !input.split || !input.split->pureError)
+    if (!input.residuals || !input.split || !input.split->pureError || sample.groupValue.size() > mostSetPoints)
         return {};
     struct Cell {
         double weight = 0, sum = 0;

@@ -65,12 +65,14 @@ void lackOfFit(const FindingsInput& input, std::vector<Finding>& found) {
     Finding finding;
     finding.code = FindingCode::LackOfFit;
     finding.severity = *judged->p < certain ? Severity::Serious : Severity::Attention;
-    finding.figures = {{"f", *judged->f}, {"p", *judged->p}, {"value", worst.mean}, {"set_point", worst.setPoint}};
+    finding.figures = {{"f", *judged->f}, {"p", *judged->p}};
+    if (!input.split->setPoints.empty())
+        finding.figures.insert(finding.figures.end(), {{"value", worst.mean}, {"set_point", worst.setPoint}});
     for (std::size_t i = 0; i < input.sample.size() && finding.rows.size() < mostRowsNamed; ++i)
         if (static_cast<std::size_t>(input.sample.group[i]) < input.sample.groupValue.size() &&
             input.sample.groupValue[static_cast<std::size_t>(input.sample.group[i])] == worst.setPoint)
             finding.rows.push_back(idOf(input, i));
-    const FunctionChoice next = richer(input.fit->function, input.split->setPoints.size());
+    const FunctionChoice next = richer(input.fit->function, input.sample.groupValue.size());
     if (!(next == input.fit->function)) {
         finding.remedy = Remedy::CompareFunction;
         finding.suggestion = next;

@@ -48,6 +48,11 @@ std::size_t directionOf(const Sample& sample, std::size_t i) {
 /// Cells in rising order of set point: one for each direction where a set point has both, else one for the set point.
 void findCells(const Sample& sample, Places& places, NoiseChain& chain) {
     const std::size_t n = sample.size(), groups = sample.groupValue.size();
+    if (groups > mostListedCells && sample.direction.empty() && sample.run.empty()) {
+        chain.setPoints = static_cast<int>(groups);
+        places.cell = sample.group;
+        return;
+    }
     std::vector<std::array<std::int32_t, 3>> seen(groups, {0, 0, 0});
     for (std::size_t i = 0; i < n; ++i)
         ++seen[static_cast<std::size_t>(sample.group[i])][directionOf(sample, i)];

@@ -40,7 +40,7 @@ struct NoiseChain {
         std::size_t n = 0;
         double weight = 0, mean = 0;
     };
-    std::vector<Cell> cells;       ///< in rising order of set point
+    std::vector<Cell> cells;       ///< in rising order of set point; left out for more than `mostListedCells` bare set points
     struct CellRun {
         std::int32_t cell = 0, run = 0; ///< indices; run into `effects`
         std::size_t n = 0;
@@ -56,6 +56,9 @@ struct NoiseChain {
 
 /// More runs than this are not taken as runs: the column is a counter.
 inline constexpr std::size_t mostRuns = 200;
+
+/// Beyond this, set points without runs and directions are a logger's record and are not listed one by one.
+inline constexpr std::size_t mostListedCells = 10'000;
 
 /// Builds the chain in O(n) for few runs: means within cells, then elimination of the run columns on their cross products within
 /// cells, which are sums of weights and lose no digits that matter.

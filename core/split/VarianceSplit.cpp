@@ -11,9 +11,6 @@
 namespace spanwright {
 namespace {
 
-/// More set points than this, each with one reading, are not listed: there is nothing to draw a mean of.
-constexpr std::size_t mostLoneSetPoints = 10'000;
-
 SplitRow row(const DoubleDouble& ss, int df) {
     SplitRow made;
     made.ss = std::max(0.0, toDouble(ss));
@@ -89,7 +86,7 @@ void addTests(VarianceSplit& split, const Sample& sample, const NoiseChain& chai
 }
 
 void addMeans(VarianceSplit& split, const Sample& sample, const NoiseChain& chain) {
-    if (chain.dfPure() <= 0 && chain.cells.size() > mostLoneSetPoints)
+    if (chain.cells.size() > mostListedCells)
         return;
     for (std::size_t c = 0; c < chain.cells.size();) {
         SetPointMeans means;

@@ -55,7 +55,7 @@ struct VarianceSplit {
     SplitPart against = SplitPart::PureError;      ///< what lack of fit, hysteresis and run terms are tested against
     std::optional<SplitRow> lackOfFitNaive;        ///< against pure error, as in textbooks
     std::optional<SplitRow> lackOfFitAdjusted;     ///< after direction and run, for unbalanced data
-    std::vector<SetPointMeans> setPoints;
+    std::vector<SetPointMeans> setPoints; ///< empty beyond 10,000 of them
     std::vector<RunLine> runs;
     std::vector<VarianceComponent> components;
     std::vector<Warning> warnings;
