@@ -199,6 +199,25 @@ Moments momentsOf(const Rows& q, std::size_t n) {
 
 } // namespace
 
+SerialStatistics serialStatistics(std::span<const double> u) {
+    const double n = static_cast<double>(u.size());
+    if (u.size() < 2)
+        return {};
+    double sum = u[0], squares = u[0] * u[0], products = 0, steps = 0;
+    for (std::size_t i = 1; i < u.size(); ++i) {
+        const double step = u[i] - u[i - 1];
+        sum += u[i];
+        squares += u[i] * u[i];
+        products += u[i] * u[i - 1];
+        steps += step * step;
+    }
+    const double mean = sum / n, centred = squares - n * mean * mean;
+    if (!(centred > 0))
+        return {};
+    const double lagged = products - mean * (2 * sum - u.front() - u.back()) + (n - 1) * mean * mean;
+    return {lagged / centred, steps / squares};
+}
+
 std::optional<double> lagOneAutocorrelation(std::span<const double> u) {
     return lagOne(u);
 }

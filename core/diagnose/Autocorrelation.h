@@ -9,6 +9,12 @@
 
 namespace spanwright {
 
+/// Both statistics of very many residuals in one pass, for residuals whose mean is small beside their scatter.
+struct SerialStatistics {
+    std::optional<double> lagOne, durbinWatson;
+};
+[[nodiscard]] SerialStatistics serialStatistics(std::span<const double> u);
+
 /// r₁ = Σ (u_t − ū)(u_{t+1} − ū) / Σ (u_t − ū)²; empty when all are equal. As in the NIST reference data sets for univariate
 /// statistics.
 [[nodiscard]] std::optional<double> lagOneAutocorrelation(std::span<const double> u);

@@ -12,6 +12,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <future>
 
 namespace spanwright {
 namespace {
@@ -20,6 +21,8 @@ namespace {
 /// the moments of white noise: the terms of the function no longer matter.
 constexpr std::size_t mostForExactWatson = 2000;
 constexpr std::size_t mostForWatsonMoments = 100'000;
+/// Below this a second thread costs more than it gives.
+constexpr std::size_t fewerThanThreads = 200'000;
 
 /// Columns of the function at the readings; for a function that is none of the polynomials, a polynomial of as many terms,
 /// which `approximate` says.
@@ -54,8 +57,14 @@ Warning approximate(const char* figure, const char* method) {
 
 template <class T>
 void orderOfTaking(std::span<const T> u, Diagnostics& result) {
-    result.lag1Autocorrelation = lagOneAutocorrelation(u);
-    result.durbinWatson = durbinWatson(u);
+    if constexpr (std::is_same_v<T, double>) {
+        const SerialStatistics both = serialStatistics(u);
+        result.lag1Autocorrelation = both.lagOne;
+        result.durbinWatson = both.durbinWatson;
+    } else {
+        result.lag1Autocorrelation = lagOneAutocorrelation(u);
+        result.durbinWatson = durbinWatson(u);
+    }
     if (result.lag1Autocorrelation) {
         const double r = *result.lag1Autocorrelation, n = static_cast<double>(u.size());
         result.effectiveReadings = std::min(n, n * (1 - r) / (1 + r));
@@ -114,8 +123,7 @@ void regressions(const Sample& sample, const Residuals& residuals, const Fit& fi
     }
 }
 
-void variances(const Sample& sample, std::span<const double> u, Diagnostics& result) {
-    const EqualVariances equal = equalVariances({u, sample.group, sample.groupValue.size()});
+void take(const EqualVariances& equal, Diagnostics& result) {
     result.bartlett = equal.bartlett;
     result.levene = equal.levene;
     result.cochran = equal.cochran;
@@ -133,6 +141,9 @@ Diagnostics diagnose(const Sample& sample, const Residuals& residuals, const Fit
         return result;
     const std::vector<double> weighted = residuals.weight.empty() ? std::vector<double>{} : weightedResiduals<double>(residuals);
     const std::span<const double> u = residuals.weight.empty() ? residuals.e.high : weighted;
+    // Independent of the rest, so for very many readings beside it.
+    auto variances = std::async(u.size() > fewerThanThreads ? std::launch::async : std::launch::deferred,
+                                [&] { return equalVariances({u, sample.group, sample.groupValue.size()}); });
     if (residuals.e.low.empty()) {
         orderOfTaking(u, result);
         outliers(u, sample, question, result);
@@ -143,10 +154,10 @@ Diagnostics diagnose(const Sample& sample, const Residuals& residuals, const Fit
     }
     if (u.size() <= 5000)
         result.shapiroWilk = shapiroWilk({u.begin(), u.end()});
-    variances(sample, u, result);
     if (fit.function.family != FunctionFamily::Constant)
         result.linearity = linearityTest(sample, residuals.weight);
     regressions(sample, residuals, fit, u, result);
+    take(variances.get(), result);
     return result;
 }
 

@@ -77,6 +77,9 @@ class GroupMedians {
             groups_[g].high = high;
             groups_[g].n += last - first;
         });
+        for (Group& group : groups_)
+            if (buckets_ > 1 && group.high > group.low)
+                group.bucketsPerUnit = static_cast<double>(buckets_) / (group.high - group.low);
         count();
         gather();
     }
@@ -92,28 +95,26 @@ class GroupMedians {
   private:
     struct Group {
         double low = INFINITY, high = -INFINITY;
+        double bucketsPerUnit = 0;
         std::size_t n = 0;
         std::size_t firstBucket = 0, lastBucket = 0, below = 0; ///< that hold both middle values; values below them
         std::vector<double> middle;
     };
 
-    Group& at(std::size_t i) { return groups_[static_cast<std::size_t>(values_.group[i])]; }
-
     [[nodiscard]] std::size_t bucketOf(const Group& group, double u) const {
-        if (buckets_ == 1 || !(group.high > group.low))
-            return 0;
-        const double share = (u - group.low) / (group.high - group.low);
-        return std::min(buckets_ - 1, static_cast<std::size_t>(share * static_cast<double>(buckets_)));
+        return std::min(buckets_ - 1, static_cast<std::size_t>((u - group.low) * group.bucketsPerUnit));
     }
 
     void count() {
         if (buckets_ == 1)
             return;
         std::vector<std::uint32_t> counts(groups_.size() * buckets_, 0);
-        for (std::size_t i = 0; i < values_.u.size(); ++i) {
-            const auto g = static_cast<std::size_t>(values_.group[i]);
-            ++counts[g * buckets_ + bucketOf(groups_[g], values_.u[i])];
-        }
+        eachStretch(values_, [&](std::size_t g, std::size_t first, std::size_t last) {
+            const Group group{groups_[g].low, groups_[g].high, groups_[g].bucketsPerUnit, 0, 0, 0, 0, {}};
+            std::uint32_t* const of = counts.data() + g * buckets_;
+            for (std::size_t i = first; i < last; ++i)
+                ++of[bucketOf(group, values_.u[i])];
+        });
         for (std::size_t g = 0; g < groups_.size(); ++g) {
             Group& group = groups_[g];
             std::size_t before = 0, bucket = 0;
@@ -132,12 +133,14 @@ class GroupMedians {
     }
 
     void gather() {
-        for (std::size_t i = 0; i < values_.u.size(); ++i) {
-            Group& group = at(i);
-            const std::size_t bucket = bucketOf(group, values_.u[i]);
-            if (bucket >= group.firstBucket && bucket <= group.lastBucket)
-                group.middle.push_back(values_.u[i]);
-        }
+        eachStretch(values_, [&](std::size_t g, std::size_t first, std::size_t last) {
+            Group& group = groups_[g];
+            for (std::size_t i = first; i < last; ++i) {
+                const std::size_t bucket = bucketOf(group, values_.u[i]);
+                if (bucket >= group.firstBucket && bucket <= group.lastBucket)
+                    group.middle.push_back(values_.u[i]);
+            }
+        });
     }
 
     static double median(Group& group) {

@@ -121,8 +121,14 @@ double meanVarianceOfReading(const Residuals& residuals) {
 
 double roundingSquares(const Residuals& residuals) {
     double largest = 0, weight = residuals.weight.empty() ? 1 : 0;
-    for (const double value : residuals.fitted)
-        largest = std::max(largest, std::abs(value));
+    // Two at a time: a chain of maxima waits for itself.
+    double other = 0;
+    for (std::size_t i = 0; i + 1 < residuals.fitted.size(); i += 2) {
+        largest = std::max(largest, std::abs(residuals.fitted[i]));
+        other = std::max(other, std::abs(residuals.fitted[i + 1]));
+    }
+    if (!residuals.fitted.empty())
+        largest = std::max({largest, other, std::abs(residuals.fitted.back())});
     for (const double w : residuals.weight.high)
         weight = std::max(weight, w);
     const double unit = largest * (residuals.e.low.empty() ? 4 * 2.2e-16 : 64 * 1.3e-32);

@@ -338,6 +338,58 @@ class ResidualTestsTest : public QObject {
         QCOMPARE(r.diagnostics.grubbs->row, 51 - d.diagnostics.grubbs->row);
     }
 
+    // Very many readings are computed in plain doubles, by other routes.
+    void plainDoublesAgreeWithDoubleDoubles() {
+        const auto set = publishedSet("alaska_pipeline");
+        Diagnosed d = diagnosed(recordOf(set.column("lab"), set.column("field")), line);
+        const auto exact = d.diagnostics;
+        d.sample.reference.low.clear();
+        d.sample.indication.low.clear();
+        d.outcome.residuals.e.low.clear();
+        const Diagnostics plain = diagnose(d.sample, d.outcome.residuals, d.outcome.fit, {{}, 0, 0.05});
+        QVERIFY(digitsAgreed(*plain.durbinWatson, *exact.durbinWatson) > 12);
+        QVERIFY(digitsAgreed(*plain.lag1Autocorrelation, *exact.lag1Autocorrelation) > 12);
+        QVERIFY(digitsAgreed(plain.linearity->statistic, exact.linearity->statistic) > 9);
+        QVERIFY(digitsAgreed(plain.grubbs->g, exact.grubbs->g) > 12);
+        QCOMPARE(plain.grubbs->row, exact.grubbs->row);
+    }
+
+    void manyReadingsInGroupsHaveExactMedians() {
+        std::vector<double> u;
+        std::vector<std::int32_t> group;
+        unsigned seed = 5;
+        for (int i = 0; i < 30'001; ++i) {
+            seed = seed * 1664525u + 1013904223u;
+            u.push_back(std::floor(static_cast<double>(seed >> 8) / 4096) * (1 + i % 7)); // with ties
+            group.push_back(i / 5000);
+        }
+        const EqualVariances fast = equalVariances({u, group, 7});
+        double n = 0, sum = 0, within = 0, between = 0;
+        std::vector<std::vector<double>> parts(6);
+        for (std::size_t i = 0; i < 30'000; ++i) // the last group has one value and takes no part
+            parts[static_cast<std::size_t>(group[i])].push_back(u[i]);
+        for (auto& part : parts) {
+            std::sort(part.begin(), part.end());
+            const double median = (part[2499] + part[2500]) / 2;
+            for (double& value : part) {
+                value = std::abs(value - median);
+                sum += value;
+            }
+            n += static_cast<double>(part.size());
+        }
+        for (const auto& part : parts) {
+            const double mean = std::accumulate(part.begin(), part.end(), 0.0) / 5000;
+            between += 5000 * (mean - sum / n) * (mean - sum / n);
+            for (const double value : part)
+                within += (value - mean) * (value - mean);
+        }
+        QVERIFY(digitsAgreed(fast.levene->statistic, (between / 5) / (within / (n - 6))) > 11);
+        std::vector<double> x(u.size());
+        for (std::size_t i = 0; i < x.size(); ++i)
+            x[i] = static_cast<double>(i % 100);
+        QVERIFY(digitsAgreed(breuschPagan(u, std::span<const double>(x))->statistic, breuschPagan(u, std::vector<std::vector<double>>{x})->statistic) > 9);
+    }
+
     void aPerfectLineIsNotDiagnosed() {
         const Diagnosed d = diagnosed(recordOf({"0", "1", "2", "3"}, {"0.1", "0.4", "0.7", "1.0"}), line);
         QVERIFY(!d.diagnostics.durbinWatson && !d.diagnostics.shapiroWilk && !d.diagnostics.grubbs);
