@@ -100,7 +100,7 @@ struct Place {
 
 Place placeAt(const Record& record, const Fit* fit, double reference, double indication) {
     Place place{reference, indication, sensitivityAt(record.item, fit, reference, indication), 1};
-    if (fit != nullptr && fit->weights != Weights::Equal) {
+    if (fit != nullptr && (fit->weights != Weights::Equal || fit->method == Method::BothUncertain)) {
         const double here = fit->curve->readingVariance(fit->direction == FitDirection::Indication ? reference : indication);
         const double unit = fit->covarianceScale == CovarianceScale::Residuals ? fit->residualSd * fit->residualSd : 1;
         if (unit > 0 && std::isfinite(here / unit))
@@ -216,11 +216,22 @@ SetPointBudget budgetAt(const Record& record, const PointMeans& point, const Fit
     return combine(point.setPoint, point.direction, lines.take(), coverage, place.slope);
 }
 
-SetPointBudget readBackAt(const Record& record, const Fit& fit, double x, double coverage) {
+struct ReadBackLines {
+    Place place;
+    std::vector<BudgetItem> items;
+    /// u² of the reference value.
+    [[nodiscard]] double variance() const {
+        double sum = 0;
+        for (const BudgetItem& item : items)
+            sum += item.contribution * item.contribution;
+        return sum / (place.slope * place.slope);
+    }
+};
+
+ReadBackLines readBackAt(const Record& record, const Fit& fit, double x) {
     const bool forward = fit.direction == FitDirection::Indication;
     const double y = fit.curve->value(x);
-    const double reference = forward ? x : y;
-    const Place place = placeAt(record, &fit, reference, forward ? y : x);
+    const Place place = placeAt(record, &fit, forward ? x : y, forward ? y : x);
     const Side side = forward ? Side::Indication : Side::Reference;
     const double df = fit.degreesOfFreedom > 0 ? fit.degreesOfFreedom : Infinite;
     Lines lines(record, place);
@@ -229,20 +240,25 @@ SetPointBudget readBackAt(const Record& record, const Fit& fit, double x, double
     lines.add(DerivedLine::Fit, side, Distribution::Student, std::sqrt(fit.curve->variance(x)), 1, df);
     lines.add(DerivedLine::Repeatability, side, Distribution::Student, std::sqrt(fit.curve->readingVariance(x)), 1, df);
     lines.addManual();
-    return combine(reference, Direction::Unknown, lines.take(), coverage, place.slope);
+    return {place, lines.take()};
 }
 
 std::optional<SetPointBudget> worstReadBack(const Record& record, const Fit& fit, double coverage) {
     if (fit.function.family == FunctionFamily::Constant || fit.degreesOfFreedom <= 0 || !(fit.high > fit.low))
         return std::nullopt;
-    std::optional<SetPointBudget> worst;
+    std::optional<ReadBackLines> worst;
+    double largest = -1;
     for (int i = 0; i < ReadBackPlaces; ++i) {
-        const double x = fit.low + (fit.high - fit.low) * i / (ReadBackPlaces - 1);
-        SetPointBudget here = readBackAt(record, fit, x, coverage);
-        if (std::isfinite(here.expandedReference) && (!worst || here.expandedReference > worst->expandedReference))
+        ReadBackLines here = readBackAt(record, fit, fit.low + (fit.high - fit.low) * i / (ReadBackPlaces - 1));
+        const double variance = here.variance();
+        if (std::isfinite(variance) && variance > largest) {
+            largest = variance;
             worst = std::move(here);
+        }
     }
-    return worst;
+    if (!worst)
+        return std::nullopt;
+    return combine(worst->place.reference, Direction::Unknown, std::move(worst->items), coverage, worst->place.slope);
 }
 
 } // namespace

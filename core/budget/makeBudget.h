@@ -22,7 +22,7 @@ namespace spanwright {
 /// Rounding of the indication also scatters repeated readings, so resolution is in part contained in repeatability; both are kept,
 /// which is an upper bound (without any scatter, resolution is all that is seen). Lines in `record.budget.omitted` are left out.
 ///
-/// Read back (one new reading, at the place in the calibrated range where U in the unit of the reference is largest): covariance of
+/// Read back (one new reading, at the place in the calibrated range where u in the unit of the reference is largest): covariance of
 /// the function, scatter of one reading about it (which holds repeatability, runs, hysteresis and the rounding of the
 /// indication), the standards, the resolution of the reference, lines by hand.
 ///

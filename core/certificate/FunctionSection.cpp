@@ -130,7 +130,7 @@ std::optional<FunctionSection> functionSection(const PhaseEvaluation& phase) {
     section.high = roundedText(fit.high, rangeDecimals);
     section.residualSd = significantDigits(fit.residualSd, 2);
     section.degreesOfFreedom = fit.degreesOfFreedom;
-    section.weighted = fit.weights != Weights::Equal;
+    section.weighted = fit.weights != Weights::Equal || fit.method == Method::BothUncertain;
     section.largestResidual = roundedText(largestResidual(phase.rows), std::isfinite(expanded) ? decimalsFor(expanded, 2) : 6);
     addChecks(fit, expanded, section);
     if (phase.budget.readBack) {

@@ -33,6 +33,7 @@ constexpr Code figures[] = {
     {"repeatability", QT_TRANSLATE_NOOP("WarningText", "Repeatability")},
     {"lack_of_fit", QT_TRANSLATE_NOOP("WarningText", "Lack of fit")},
     {"span", QT_TRANSLATE_NOOP("WarningText", "The output span")},
+    {"results", QT_TRANSLATE_NOOP("WarningText", "Results at each set point")},
     {"durbin_watson", QT_TRANSLATE_NOOP("WarningText", "The p value of the Durbin–Watson test")},
     {"cochran", QT_TRANSLATE_NOOP("WarningText", "The critical value of the Cochran test")},
 };
@@ -57,6 +58,7 @@ constexpr Code reasons[] = {
     {"no-slope-in-function", QT_TRANSLATE_NOOP("WarningText", "it is tested for functions that change with the abscissa")},
     {"not-a-line", QT_TRANSLATE_NOOP("WarningText", "it is tested for a straight line through four readings or more")},
     {"no-set-points", QT_TRANSLATE_NOOP("WarningText", "there are fewer than two set points, or far too many")},
+    {"too-many-set-points", QT_TRANSLATE_NOOP("WarningText", "there are more than 1000 set points; state the set points of the readings")},
     {"takes-no-part", QT_TRANSLATE_NOOP("WarningText", "the reading takes no part in the fit, or decides a coefficient alone")},
 };
 
