@@ -138,7 +138,7 @@ void components(bool gaps) {
     std::mt19937_64 engine(7);
     double sum[3] = {}, squares[3] = {};
     int inside[3] = {};
-    const int repeats = sets / 5;
+    const int repeats = sets;
     for (int set = 0; set < repeats; ++set) {
         const LineFit line = lineThrough(design.x, simulate(design, effects, engine));
         for (const VarianceComponent& component : splitVariance(design.sample, line.residuals, line.fit).components)

@@ -314,6 +314,61 @@ class VarianceSplitTest : public QObject {
         QVERIFY(digitsAgreed(s.regression.ss + s.lackOfFit->ss, published.recomputed.at(p + "ss_between")) > 14);
     }
 
+    // GUM H.5: ten days of five voltages, known by daily mean and standard deviation; mean − s twice, mean, mean + s twice have both.
+    // Days as set points of a constant give its F, days as runs its between-day component.
+    void voltagesOfTenDaysSplitAsInTheGum() {
+        const auto set = spanwright::test::publishedSet("gum_h5");
+        Record days, runs;
+        for (const auto& row : set.rows)
+            for (const int step : {-1, -1, 0, 1, 1}) {
+                Decimal value = number(row[1].c_str());
+                value.mantissa += step * number(row[2].c_str()).mantissa;
+                Reading reading;
+                reading.id = days.nextReadingId++;
+                reading.indication = value;
+                reading.setPoint = number(row[0].c_str());
+                days.readings.edit().append(reading);
+                reading.setPoint = number("10");
+                reading.run = std::stoi(row[0]);
+                runs.readings.edit().append(reading);
+            }
+        const VarianceSplit byDay = splitOf(days, {FunctionFamily::Constant, 0}).split;
+        QCOMPARE(byDay.lackOfFit->df, 9);
+        QCOMPARE(byDay.pureError->df, 40);
+        QVERIFY(digitsAgreed(*byDay.lackOfFit->f, set.recomputed.at("F")) > 12);
+        QVERIFY(digitsAgreed(*byDay.lackOfFit->p, set.recomputed.at("p")) > 10);
+        QVERIFY(digitsAgreed(std::sqrt(*byDay.pureError->ms), set.recomputed.at("s_b")) > 13);
+        const VarianceSplit byRun = splitOf(runs, {FunctionFamily::Constant, 0}).split;
+        QVERIFY(digitsAgreed(*byRun.runOffset->f, set.recomputed.at("F")) > 12);
+        QVERIFY(!byRun.lackOfFit && !byRun.runSlope);
+        QCOMPARE(byRun.components.front().part, SplitPart::RunOffset);
+        QVERIFY(digitsAgreed(std::sqrt(byRun.components.front().variance), set.recomputed.at("s_between")) > 12);
+    }
+
+    // sample-data/temperature-probe.csv: invented platinum readings with the curvature of IEC 60751, figures computed beside them.
+    void temperatureProbeBendsThoughItLooksStraight() {
+        QFile file(QString::fromStdString(spanwright::test::sourceDir()) + "/sample-data/temperature-probe.csv");
+        QVERIFY(file.open(QIODevice::ReadOnly));
+        file.readLine();
+        file.readLine();
+        Record record;
+        while (!file.atEnd()) {
+            const QList<QByteArray> cells = file.readLine().trimmed().split(',');
+            Reading reading;
+            reading.id = record.nextReadingId++;
+            reading.reference = number(cells[0].constData());
+            reading.indication = number(cells[1].constData());
+            reading.setPoint = number(cells[2].constData());
+            record.readings.edit().append(reading);
+        }
+        const Split straight = splitOf(record, line), curved = splitOf(record, quadratic);
+        QVERIFY(std::abs(straight.outcome.fit.residualSd - 0.333) < 0.0005);
+        QVERIFY(std::abs(*straight.split.lackOfFit->f / 1.8e5 - 1) < 0.03);
+        QVERIFY(std::abs(curved.outcome.fit.residualSd - 0.00170) < 0.00001);
+        QVERIFY(std::abs(*curved.split.lackOfFit->f - 0.16) < 0.05);
+        QCOMPARE(straight.split.against, SplitPart::PureError);
+    }
+
     // By hand: at 0, 1, 2 the readings 0 2 | 1 1 | 0 4 about the line through their means.
     void aSmallSetComesOutAsByHand() {
         const Record record = recordOf({{"0", "0", "0"}, {"0", "0", "2"}, {"1", "1", "1"}, {"1", "1", "1"}, {"2", "2", "0"}, {"2", "2", "4"}});
