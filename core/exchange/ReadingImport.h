@@ -20,7 +20,8 @@ ImportMapping firstTwoColumns(const CsvRules& rules);
 /// The same, but columns whose names say what they are ("set point", "direction", "run", "u_ref", "time", …) are taken as that.
 ImportMapping mappingByNames(const CsvRules& rules);
 
-/// up, rising, increasing, ↑, 1, +1 and down, falling, decreasing, ↓, -1; without case; blank is Unknown. Empty for other words.
+/// up, rising, increasing, ↑, 1, +1 and down, falling, decreasing, ↓, -1; without case; blank is Unknown. Empty for other
+/// words.
 std::optional<Direction> parseDirection(std::string_view word);
 
 struct ImportedReadings {

@@ -25,7 +25,9 @@ constexpr std::array<char16_t, 32> windows1252{0x20AC, 0,      0x201A, 0x0192, 0
 /// Length of the valid UTF-8 sequence at `at`, 0 when there is none (Unicode Standard, table 3-7).
 std::size_t utf8Length(std::string_view s, std::size_t at) {
     const auto byte = [&](std::size_t i) { return at + i < s.size() ? static_cast<unsigned char>(s[at + i]) : 0u; };
-    const auto follows = [&](std::size_t i, unsigned low = 0x80, unsigned high = 0xBF) { return byte(i) >= low && byte(i) <= high; };
+    const auto follows = [&](std::size_t i, unsigned low = 0x80, unsigned high = 0xBF) {
+        return byte(i) >= low && byte(i) <= high;
+    };
     const unsigned lead = byte(0);
     if (lead < 0x80)
         return 1;
@@ -46,7 +48,8 @@ std::optional<std::size_t> firstControl(std::string_view whole) {
     const std::string_view s = whole.substr(0, looked);
     const auto found = std::find_if(s.begin(), s.end(), [&](char c) {
         const auto byte = static_cast<unsigned char>(c);
-        return byte < 0x20 && byte != '\t' && byte != '\n' && byte != '\r' && byte != '\f' && !(byte == 0x1A && &c == &whole.back());
+        const bool endOfFile = byte == 0x1A && &c == &whole.back();
+        return byte < 0x20 && byte != '\t' && byte != '\n' && byte != '\r' && byte != '\f' && !endOfFile;
     });
     if (found == s.end())
         return std::nullopt;

@@ -171,7 +171,8 @@ std::optional<std::int64_t> parsePlainIso(std::string_view text) {
         }
         return value;
     };
-    const year_month_day date{year{number(0, 4)}, month{static_cast<unsigned>(number(5, 2))}, day{static_cast<unsigned>(number(8, 2))}};
+    const year_month_day date{year{number(0, 4)}, month{static_cast<unsigned>(number(5, 2))},
+                              day{static_cast<unsigned>(number(8, 2))}};
     const int hour = number(11, 2);
     const int minute = number(14, 2);
     const int second = number(17, 2);
@@ -180,8 +181,8 @@ std::optional<std::int64_t> parsePlainIso(std::string_view text) {
                        text[16] == ':' && (!thousandths || text[19] == '.');
     if (!digitsOnly || !marks || !date.ok() || hour > 23 || minute > 59 || second > 59)
         return std::nullopt;
-    const milliseconds time = sys_days{date}.time_since_epoch() + hours{hour} + minutes{minute} + seconds{second} + milliseconds{fraction};
-    return time.count();
+    const milliseconds sinceMidnight = hours{hour} + minutes{minute} + seconds{second} + milliseconds{fraction};
+    return (sys_days{date}.time_since_epoch() + sinceMidnight).count();
 }
 
 } // namespace

@@ -4,6 +4,7 @@
 #include "core/exchange/TextEncoding.h"
 
 #include <algorithm>
+#include <charconv>
 
 namespace spanwright {
 
@@ -227,6 +228,16 @@ std::string_view JsonScanner::scalar() {
     }
     at_ += length;
     return rest.substr(0, length);
+}
+
+std::int64_t JsonScanner::integer(std::string_view key, std::int64_t least, std::int64_t most) {
+    const std::string_view digits = skip();
+    std::int64_t number = 0;
+    const auto [end, problem] = std::from_chars(digits.data(), digits.data() + digits.size(), number);
+    if (problem == std::errc{} && end == digits.data() + digits.size() && number >= least && number <= most)
+        return number;
+    failValue(key, digits);
+    return least;
 }
 
 std::string_view JsonScanner::skip() {

@@ -47,6 +47,8 @@ class JsonScanner {
     std::string string();
     /// A number, true or false as it stands.
     std::string_view scalar();
+    /// A whole number of the range; SessionValueBad at `key` for any other value.
+    std::int64_t integer(std::string_view key, std::int64_t least, std::int64_t most);
     /// Passes any value, which must be well-formed, and gives it as it stands.
     std::string_view skip();
     /// Whether only blanks follow.

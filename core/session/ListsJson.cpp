@@ -2,11 +2,12 @@
 #include "core/session/ListsJson.h"
 
 #include "core/record/Fields.h"
-#include "core/session/ReadingRows.h"
+#include "core/session/Moment.h"
 #include "core/session/Sha256.h"
 #include "core/session/UnknownKeys.h"
 
-#include <charconv>
+#include <algorithm>
+#include <limits>
 
 namespace spanwright {
 
@@ -35,10 +36,7 @@ Exclusion readExclusion(JsonScanner& scan, Record& record, const std::string& po
     while (const auto key = scan.nextKey()) {
         const std::string at = childPointer(pointer, *key);
         if (*key == "id") {
-            const std::string_view digits = scan.skip();
-            const auto [end, problem] = std::from_chars(digits.data(), digits.data() + digits.size(), exclusion.id);
-            if (problem != std::errc{} || end != digits.data() + digits.size())
-                scan.failValue(at, digits);
+            exclusion.id = scan.integer(at, 1, std::numeric_limits<ReadingId>::max());
         } else if (*key == "reason") {
             const std::string name = textAt(scan, at);
             const auto reason = valueOf<ExclusionReason>(name);
@@ -71,11 +69,13 @@ ChainedEntry readEntry(JsonScanner& scan, Record& record, const std::string& poi
         std::string_view key;
         std::string JournalEntry::* field;
     };
-    static constexpr Name names[] = {{"who", &JournalEntry::who},       {"what", &JournalEntry::what},   {"where", &JournalEntry::where},
-                                     {"before", &JournalEntry::before}, {"after", &JournalEntry::after}, {"reason", &JournalEntry::reason}};
+    static constexpr Name names[] = {{"who", &JournalEntry::who},       {"what", &JournalEntry::what},
+                                     {"where", &JournalEntry::where},   {"before", &JournalEntry::before},
+                                     {"after", &JournalEntry::after},   {"reason", &JournalEntry::reason}};
     while (const auto key = scan.nextKey()) {
         const std::string at = childPointer(pointer, *key);
-        const auto* const known = std::find_if(std::begin(names), std::end(names), [&](const Name& name) { return name.key == *key; });
+        const auto* const known =
+            std::find_if(std::begin(names), std::end(names), [&](const Name& name) { return name.key == *key; });
         if (known != std::end(names))
             read.entry.*known->field = textAt(scan, at);
         else if (*key == "at")

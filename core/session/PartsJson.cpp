@@ -4,7 +4,8 @@
 #include "core/record/Fields.h"
 #include "core/session/UnknownKeys.h"
 
-#include <charconv>
+#include <algorithm>
+#include <limits>
 
 namespace spanwright {
 
@@ -24,8 +25,9 @@ using Layout = JsonText::Layout;
 
 /// Small parts stand on one line.
 template <class T>
-constexpr Layout layoutOf =
-    std::same_as<T, Quantity> || std::same_as<T, CorrectionPoint> || std::same_as<T, OmittedLine> ? Layout::OneLine : Layout::Lines;
+constexpr bool isSmall = std::same_as<T, Quantity> || std::same_as<T, CorrectionPoint> || std::same_as<T, OmittedLine>;
+template <class T>
+constexpr Layout layoutOf = isSmall<T> ? Layout::OneLine : Layout::Lines;
 
 class PartWriter {
   public:
@@ -99,10 +101,8 @@ class PartReader {
             bad(word);
     }
     void read(int& number) {
-        const std::string_view digits = scan_.skip();
-        const auto [end, problem] = std::from_chars(digits.data(), digits.data() + digits.size(), number);
-        if (problem != std::errc{} || end != digits.data() + digits.size())
-            bad(digits);
+        using Range = std::numeric_limits<int>;
+        number = static_cast<int>(scan_.integer(pointer_, Range::min(), Range::max()));
     }
     void read(Decimal& number) {
         const std::string text = scan_.atString() ? scan_.string() : std::string(scan_.skip());

@@ -6,10 +6,11 @@
 #include "core/session/ListsJson.h"
 #include "core/session/PartsJson.h"
 #include "core/session/ReadingRows.h"
+#include "core/session/RowReader.h"
 #include "core/session/UnknownKeys.h"
 
 #include <algorithm>
-#include <charconv>
+#include <limits>
 
 namespace spanwright {
 
@@ -124,12 +125,8 @@ std::vector<ReadingId> readIds(JsonScanner& scan) {
     std::vector<ReadingId> ids;
     if (!scan.enterArray())
         return ids;
-    while (scan.nextItem()) {
-        const std::string_view digits = scan.scalar();
-        ReadingId id = 0;
-        std::from_chars(digits.data(), digits.data() + digits.size(), id);
-        ids.push_back(id);
-    }
+    while (scan.nextItem())
+        ids.push_back(scan.integer("/readings_removed", 1, std::numeric_limits<ReadingId>::max()));
     return ids;
 }
 
@@ -204,8 +201,7 @@ Result<void> applyChanges(Record& record, std::string_view changes) {
             } else if (*key == "journal") {
                 readJournal(scan, record, {});
             } else if (*key == "next_id") {
-                const std::string_view digits = scan.scalar();
-                std::from_chars(digits.data(), digits.data() + digits.size(), record.nextReadingId);
+                record.nextReadingId = scan.integer("/next_id", 1, LargestReadingId);
             } else if (!readPart(scan, record, *key)) {
                 scan.skip();
             }

@@ -167,8 +167,9 @@ std::string Recovery::path() const {
 std::vector<Recovery::Found> Recovery::find(const std::string& folder, const std::vector<std::string>& sessionPaths) {
     QFileInfoList candidates;
     const auto list = [&candidates](const QDir& place, const QString& pattern) {
+        const QStringList names{pattern + ".recovery", pattern + ".recovery-*"};
         if (place.exists())
-            candidates += place.entryInfoList({pattern + ".recovery", pattern + ".recovery-*"}, QDir::Files | QDir::Hidden, QDir::Name);
+            candidates += place.entryInfoList(names, QDir::Files | QDir::Hidden, QDir::Name);
     };
     list(QDir(QString::fromStdString(folder)), "*");
     for (const std::string& path : sessionPaths) {

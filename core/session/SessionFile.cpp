@@ -129,7 +129,8 @@ SessionFile::~SessionFile() = default;
 Result<SessionFile::Opened> SessionFile::open(const std::string& path) {
     auto opened = std::make_unique<Private>(path);
     // Locked before it is read, so that nobody writes in between. Nothing is locked that is not there.
-    std::string heldBy = Fingerprint::of(path).exists() && !QFileInfo(QString::fromStdString(path)).isDir() ? opened->take() : std::string{};
+    const bool isFile = QFileInfo(QString::fromStdString(path)).isFile();
+    std::string heldBy = isFile ? opened->take() : std::string{};
     const auto file = FileBytes::read(path);
     if (!file)
         return file.error();

@@ -16,8 +16,8 @@ class SessionFile {
 
     struct Opened;
     /// Reads and locks. When another program holds the lock, `heldBy` says who, and the session is only to be looked at; when the
-    /// folder cannot be written there is no lock, and saving will say why. Errors: as FileBytes::read() and readSession(), with fact
-    /// file.
+    /// folder cannot be written there is no lock, and saving will say why. Errors: as FileBytes::read() and readSession(), with
+    /// fact file.
     static Result<Opened> open(const std::string& path);
 
     /// Writes a session to a path that no SessionFile holds yet (save as; where one does, use save()). Whether an existing file

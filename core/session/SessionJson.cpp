@@ -6,12 +6,13 @@
 #include "core/session/ListsJson.h"
 #include "core/session/PartsJson.h"
 #include "core/session/ReadingRows.h"
+#include "core/session/RowReader.h"
 #include "core/session/Sha256.h"
 #include "core/session/UnknownKeys.h"
 
 #include <algorithm>
-#include <charconv>
 #include <future>
+#include <limits>
 
 namespace spanwright {
 
@@ -105,10 +106,7 @@ class SessionReader {
     }
 
     void readVersion() {
-        const std::string_view digits = scan_.skip();
-        const auto [end, problem] = std::from_chars(digits.data(), digits.data() + digits.size(), session_.version);
-        if (problem != std::errc{} || end != digits.data() + digits.size() || session_.version < 1)
-            scan_.failValue("/version", digits);
+        session_.version = static_cast<int>(scan_.integer("/version", 1, std::numeric_limits<int>::max()));
         session_.readOnly = session_.version > SessionVersion;
     }
 
@@ -118,10 +116,7 @@ class SessionReader {
             return;
         while (const auto key = scan_.nextKey()) {
             if (*key == "next_id") {
-                const std::string_view digits = scan_.skip();
-                const auto [end, problem] = std::from_chars(digits.data(), digits.data() + digits.size(), session_.record.nextReadingId);
-                if (problem != std::errc{} || end != digits.data() + digits.size())
-                    scan_.failValue(childPointer(pointer, *key), digits);
+                session_.record.nextReadingId = scan_.integer(childPointer(pointer, *key), 1, LargestReadingId);
             } else if (*key == "columns") {
                 columns = readColumnNames(scan_, session_.readOnly ? StrangeColumn::PassOver : StrangeColumn::Refuse);
             } else if (*key == "rows") {
@@ -241,9 +236,8 @@ Result<Session> readSession(std::string_view json) {
     constexpr std::string_view byteOrderMark = "\xEF\xBB\xBF";
     if (json.starts_with(byteOrderMark))
         json.remove_prefix(byteOrderMark.size());
-    if (const std::size_t valid = validUtf8(json); valid != json.size())
-        return Error(ErrorCode::NotJson,
-                     {{"line", std::to_string(std::count(json.begin(), json.begin() + static_cast<std::ptrdiff_t>(valid), '\n') + 1)}});
+    if (const std::string_view valid = json.substr(0, validUtf8(json)); valid.size() != json.size())
+        return Error(ErrorCode::NotJson, {{"line", std::to_string(std::count(valid.begin(), valid.end(), '\n') + 1)}});
     return SessionReader(json).read();
 }
 
