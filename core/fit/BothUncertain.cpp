@@ -19,7 +19,8 @@ bool straight(const FunctionChoice& function) {
 Result<void> checkStated(const FitTask& task) {
     std::vector<std::size_t> missing, notPositive;
     for (std::size_t i = 0; i < task.sample.size(); ++i) {
-        const bool known = !task.ux.empty() && !task.uy.empty() && task.ux.high[i] == task.ux.high[i] && task.uy.high[i] == task.uy.high[i];
+        const bool known = !task.ux.empty() && !task.uy.empty() && task.ux.high[i] == task.ux.high[i] &&
+                           task.uy.high[i] == task.uy.high[i];
         if (!known)
             missing.push_back(i);
         else if (task.ux.high[i] < 0 || task.uy.high[i] < 0 || !(task.ux.high[i] + task.uy.high[i] > 0))
@@ -62,7 +63,8 @@ VarianceProfile readingProfile(const FitTask& task) {
 
 Result<SolvedModel> solveBothUncertain(FitTask& task) {
     if (!straight(task.choices.function))
-        return Error(ErrorCode::FunctionUnknown, {{"text", functionName(task.choices.function)}, {"method", "both-uncertain"}});
+        return Error(ErrorCode::FunctionUnknown,
+                     {{"text", functionName(task.choices.function)}, {"method", "both-uncertain"}});
     if (const auto stated = checkStated(task); !stated)
         return stated.error();
     DoubleDouble largest = 0.0;

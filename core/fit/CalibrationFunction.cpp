@@ -22,12 +22,14 @@ constexpr std::array<FunctionFacts, 14> table{{
     {F::Logarithmic, "y = b0 + b1·lg x", "x > 0", "IUPAC 1994, Pure Appl. Chem. 66, 2527", 0, 0, 2, true, {}},
     {F::Power, "y = a·x^b", "x > 0, y > 0", "common practice", 0, 0, 2, false, {}},
     {F::ExponentialApproach, "y = y_inf − A·exp(−x/L)", "", "common practice", 0, 0, 3, false, {}},
-    {F::CallendarVanDusen, "R = R0·(1 + A·t + B·t² + [t < 0]·C·(t − 100)·t³)", "−200 °C ≤ t ≤ 850 °C", "IEC 60751:2022, 5.2", 0, 0,
-     3, true, Indication},
-    {F::ThermistorB, "R = R25·exp(B·(1/T − 1/298.15 K))", "T > 0 K, R > 0", "IEC 60539-1:2022, 3.2", 0, 0, 2, false, Indication},
+    {F::CallendarVanDusen, "R = R0·(1 + A·t + B·t² + [t < 0]·C·(t − 100)·t³)", "−200 °C ≤ t ≤ 850 °C",
+     "IEC 60751:2022, 5.2", 0, 0, 3, true, Indication},
+    {F::ThermistorB, "R = R25·exp(B·(1/T − 1/298.15 K))", "T > 0 K, R > 0", "IEC 60539-1:2022, 3.2", 0, 0, 2, false,
+     Indication},
     {F::SteinhartHart, "1/T = A + B·ln R + C·(ln R)³ + D·(ln R)²", "R > 0",
      "Steinhart and Hart 1968, Deep-Sea Research 15, 497", 2, 4, 0, false, Reference},
-    {F::Nernst, "E = E0 − slope·k(25 °C)·(pH − 7)", "", "IUPAC 2002, Pure Appl. Chem. 74, 2169", 0, 0, 2, true, Indication},
+    {F::Nernst, "E = E0 − slope·k(25 °C)·(pH − 7)", "", "IUPAC 2002, Pure Appl. Chem. 74, 2169", 0, 0, 2, true,
+     Indication},
     {F::Table, "linear between the means at the set points", "", "common practice", 0, 0, 2, true, {}},
 }};
 
@@ -53,15 +55,21 @@ std::vector<CoefficientName> powerNames(int first, std::size_t count, const std:
 
 } // namespace
 
-std::span<const FunctionFacts> calibrationFunctions() { return table; }
+std::span<const FunctionFacts> calibrationFunctions() {
+    return table;
+}
 
-const FunctionFacts& factsOf(FunctionFamily family) { return table[static_cast<std::size_t>(family)]; }
+const FunctionFacts& factsOf(FunctionFamily family) {
+    return table[static_cast<std::size_t>(family)];
+}
 
 std::size_t coefficientCount(const FunctionChoice& choice) {
     return static_cast<std::size_t>(choice.order) + factsOf(choice.family).termsBeyondOrder;
 }
 
-std::size_t leastSetPoints(const FunctionChoice& choice) { return coefficientCount(choice); }
+std::size_t leastSetPoints(const FunctionChoice& choice) {
+    return coefficientCount(choice);
+}
 
 std::vector<CoefficientName> coefficientNames(const FunctionChoice& choice, const std::string& x, const std::string& y,
                                               std::size_t count) {

@@ -11,17 +11,17 @@
 
 namespace spanwright {
 
-/// What there is to know about a family of calibration functions before it is fitted; x and y are abscissa and ordinate. One table,
-/// used by the window's chooser, the fit and the tests.
+/// What there is to know about a family of calibration functions before it is fitted; x and y are abscissa and
+/// ordinate. One table, used by the window's chooser, the fit and the tests.
 struct FunctionFacts {
     FunctionFamily family;
     std::string_view formula;
-    std::string_view where;  ///< the domain as a formula; empty: everywhere
-    std::string_view source; ///< where it is published
+    std::string_view where;                ///< the domain as a formula; empty: everywhere
+    std::string_view source;               ///< where it is published
     int lowestOrder = 0, highestOrder = 0; ///< degree or terms; 0 when there is none to choose
-    std::size_t termsBeyondOrder = 0; ///< coefficients = order + this
-    bool linear = true;               ///< in its coefficients
-    std::optional<FitDirection> only; ///< where it gives one quantity only
+    std::size_t termsBeyondOrder = 0;      ///< coefficients = order + this
+    bool linear = true;                    ///< in its coefficients
+    std::optional<FitDirection> only;      ///< where it gives one quantity only
 };
 
 std::span<const FunctionFacts> calibrationFunctions();

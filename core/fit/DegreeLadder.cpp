@@ -103,7 +103,8 @@ void fillE74(DegreeLadder& ladder, const Sample& sample, Choices choices) {
     }
 }
 
-DegreeStep stepOf(const std::vector<Fit>& fits, std::size_t i, const std::vector<double>& setPoints, double resolution) {
+DegreeStep stepOf(const std::vector<Fit>& fits, std::size_t i, const std::vector<double>& setPoints,
+                  double resolution) {
     const Fit& fit = fits[i];
     DegreeStep step;
     step.degree = static_cast<int>(i) + 1;
@@ -150,7 +151,8 @@ DegreeLadder degreeLadder(const Sample& sample, const Choices& choices, double r
     }
     fillE74(ladder, sample, choices);
     int degree = std::min({ladder.byPartialF, ladder.byAicc, ladder.byE74});
-    while (degree > 1 && !(ladder.steps[static_cast<std::size_t>(degree - 1)].worth && ladder.steps[static_cast<std::size_t>(degree - 1)].monotonic))
+    while (degree > 1 && !(ladder.steps[static_cast<std::size_t>(degree - 1)].worth &&
+                           ladder.steps[static_cast<std::size_t>(degree - 1)].monotonic))
         --degree;
     ladder.suggested = degree;
     return ladder;

@@ -11,8 +11,9 @@
 
 namespace spanwright {
 
-/// A fitted calibration function as something to evaluate, with the covariance of its coefficients inside. The abscissa is the
-/// reference when the function gives the indication, and the indication when it gives the reference. All in the user's units.
+/// A fitted calibration function as something to evaluate, with the covariance of its coefficients inside. The abscissa
+/// is the reference when the function gives the indication, and the indication when it gives the reference. All in the
+/// user's units.
 class FittedFunction {
   public:
     virtual ~FittedFunction() = default;
@@ -55,16 +56,17 @@ struct Fit {
     double coverage = 0.95;
     std::size_t used = 0, excluded = 0, setPoints = 0;
     std::vector<Coefficient> coefficients;
-    std::vector<double> covariance; ///< p × p, row by row
-    double residualSd = 0;          ///< s = √(Σ w e² / ν); a pure number when weighted
-    int degreesOfFreedom = 0;       ///< ν = n − p
+    std::vector<double> covariance;                       ///< p × p, row by row
+    double residualSd = 0;                                ///< s = √(Σ w e² / ν); a pure number when weighted
+    int degreesOfFreedom = 0;                             ///< ν = n − p
     double totalSs = 0, regressionSs = 0, residualSs = 0; ///< Σ w (…)², rounded from double-double; they add up
-    int totalDf = 0, regressionDf = 0; ///< total is about the mean (n − 1), or about zero (n) for a function without a constant
-    std::optional<double> rSquared; ///< regression over total; empty when total is 0
+    int totalDf = 0,
+        regressionDf = 0; ///< total is about the mean (n − 1), or about zero (n) for a function without a constant
+    std::optional<double> rSquared;                ///< regression over total; empty when total is 0
     std::optional<double> chiSquared, chiSquaredP; ///< with stated uncertainties
-    double coverageFactor = 0;      ///< quantile that multiplies a standard uncertainty of the fit for `coverage`
-    double low = 0, high = 0;       ///< calibrated range of the abscissa, over the readings used
-    std::shared_ptr<const FittedFunction> curve;     ///< never null in a Fit that was made
+    double coverageFactor = 0; ///< quantile that multiplies a standard uncertainty of the fit for `coverage`
+    double low = 0, high = 0;  ///< calibrated range of the abscissa, over the readings used
+    std::shared_ptr<const FittedFunction> curve; ///< never null in a Fit that was made
     Convergence convergence;
     std::vector<WeighedDown> weighedDown; ///< by a robust fit, in the order taken
     std::vector<Warning> warnings;

@@ -27,7 +27,7 @@ struct SolvedModel {
     std::vector<DoubleDouble> beta;
     LinearSolution linear;
     Convergence convergence;
-    std::optional<double> robustSd;       ///< spread of the residuals as a robust fit sees it
+    std::optional<double> robustSd;              ///< spread of the residuals as a robust fit sees it
     std::optional<DoubleDouble> covarianceScale; ///< where it is not s²
     std::vector<WeighedDown> weighedDown;
 };

@@ -31,7 +31,8 @@ class FunctionModel {
     /// Whether the transform on which a fit starts exists for this ordinate.
     [[nodiscard]] virtual bool ordinateDefined(double) const { return true; }
     /// ∂f/∂β.
-    [[nodiscard]] virtual std::vector<DoubleDouble> gradient(const DoubleDouble& x, const std::vector<DoubleDouble>& beta) const = 0;
+    [[nodiscard]] virtual std::vector<DoubleDouble> gradient(const DoubleDouble& x,
+                                                             const std::vector<DoubleDouble>& beta) const = 0;
     [[nodiscard]] virtual std::vector<double> gradient(double x, const std::vector<double>& beta) const = 0;
     [[nodiscard]] virtual DoubleDouble value(const DoubleDouble& x, const std::vector<DoubleDouble>& beta) const = 0;
     [[nodiscard]] virtual double value(double x, const std::vector<double>& beta) const = 0;
@@ -43,7 +44,7 @@ class FunctionModel {
 
 /// What a model is made for: the readings' abscissae and the units of both quantities.
 struct ModelContext {
-    double low = 0, high = 0;         ///< range of the abscissae
+    double low = 0, high = 0; ///< range of the abscissae
     const Sample* sample = nullptr;
     FitDirection direction = FitDirection::Indication; ///< which quantity is the ordinate
 };

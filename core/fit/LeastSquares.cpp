@@ -107,7 +107,8 @@ void fillResiduals(LinearSolution& solution, const LinearProblem& problem) {
     for (std::size_t i = 0; i < n; ++i) {
         for (std::size_t k = 0; k < p; ++k)
             solution.residual[i] -= problem.design[k * n + i] * solution.beta[k];
-        const DoubleDouble scaled = problem.rootWeight.empty() ? solution.residual[i] : solution.residual[i] * problem.rootWeight[i];
+        const DoubleDouble scaled =
+            problem.rootWeight.empty() ? solution.residual[i] : solution.residual[i] * problem.rootWeight[i];
         solution.residualSs += scaled * scaled;
     }
 }

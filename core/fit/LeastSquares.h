@@ -27,8 +27,8 @@ struct LinearSolution {
     std::vector<std::size_t> lostTerms;    ///< columns that depend on the ones before; when any, only these are filled
 };
 
-/// Householder QR of √W·A without pivoting (Golub and Van Loan, Matrix Computations, 5.2 and 5.3), so a lost term is named as
-/// the first that adds nothing to those before it: |R_kk| below 10⁻²⁴ of its column. Requires n ≥ p.
+/// Householder QR of √W·A without pivoting (Golub and Van Loan, Matrix Computations, 5.2 and 5.3), so a lost term is
+/// named as the first that adds nothing to those before it: |R_kk| below 10⁻²⁴ of its column. Requires n ≥ p.
 LinearSolution solveLeastSquares(const LinearProblem& problem);
 
 /// (AᵀWA)⁻¹ from its root, p × p, row by row.

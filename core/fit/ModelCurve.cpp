@@ -16,11 +16,16 @@ std::vector<double> rounded(const std::vector<DoubleDouble>& values) {
 
 ModelCurve::ModelCurve(std::shared_ptr<const FunctionModel> model, const std::vector<DoubleDouble>& beta,
                        const std::vector<DoubleDouble>& inverseRoot, double scale, VarianceProfile profile)
-    : model_(std::move(model)), beta_(rounded(beta)), inverseRoot_(rounded(inverseRoot)), scale_(scale), profile_(std::move(profile)) {}
+    : model_(std::move(model)), beta_(rounded(beta)), inverseRoot_(rounded(inverseRoot)), scale_(scale),
+      profile_(std::move(profile)) {}
 
-double ModelCurve::value(double x) const { return model_->value(x, beta_); }
+double ModelCurve::value(double x) const {
+    return model_->value(x, beta_);
+}
 
-double ModelCurve::derivative(double x) const { return model_->derivative(x, beta_); }
+double ModelCurve::derivative(double x) const {
+    return model_->derivative(x, beta_);
+}
 
 double ModelCurve::variance(double x) const {
     const std::vector<double> v = model_->gradient(x, beta_);
@@ -35,6 +40,8 @@ double ModelCurve::variance(double x) const {
     return scale_ * sum;
 }
 
-double ModelCurve::readingVariance(double x) const { return scale_ * profile_.at(x); }
+double ModelCurve::readingVariance(double x) const {
+    return scale_ * profile_.at(x);
+}
 
 } // namespace spanwright

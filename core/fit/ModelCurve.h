@@ -7,10 +7,12 @@
 
 namespace spanwright {
 
-/// A fitted model, evaluated in the basis in which it was fitted: vᵀVv = scale·‖R⁻ᵀv‖², so a variance is never negative.
+/// A fitted model, evaluated in the basis in which it was fitted: vᵀVv = scale·‖R⁻ᵀv‖², so a variance is never
+/// negative.
 class ModelCurve final : public FittedFunction {
   public:
-    /// `scale`: s², or 1 where the stated uncertainties are taken as they are; it multiplies the covariance and the profile.
+    /// `scale`: s², or 1 where the stated uncertainties are taken as they are; it multiplies the covariance and the
+    /// profile.
     ModelCurve(std::shared_ptr<const FunctionModel> model, const std::vector<DoubleDouble>& beta,
                const std::vector<DoubleDouble>& inverseRoot, double scale, VarianceProfile profile);
 

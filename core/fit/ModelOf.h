@@ -5,11 +5,13 @@
 
 namespace spanwright {
 
-/// Writes both precisions of a model from one source: `Family` has templates gradientOf(x, β), valueOf(x, β) and derivativeOf(x, β).
+/// Writes both precisions of a model from one source: `Family` has templates gradientOf(x, β), valueOf(x, β) and
+/// derivativeOf(x, β).
 template <class Family>
 class ModelOf : public FunctionModel {
   public:
-    [[nodiscard]] std::vector<DoubleDouble> gradient(const DoubleDouble& x, const std::vector<DoubleDouble>& beta) const override {
+    [[nodiscard]] std::vector<DoubleDouble> gradient(const DoubleDouble& x,
+                                                     const std::vector<DoubleDouble>& beta) const override {
         return self().template gradientOf<DoubleDouble>(x, beta);
     }
     [[nodiscard]] std::vector<double> gradient(double x, const std::vector<double>& beta) const override {
@@ -21,7 +23,9 @@ class ModelOf : public FunctionModel {
     [[nodiscard]] double value(double x, const std::vector<double>& beta) const override {
         return self().template valueOf<double>(x, beta);
     }
-    [[nodiscard]] double derivative(double x, const std::vector<double>& beta) const override { return self().derivativeOf(x, beta); }
+    [[nodiscard]] double derivative(double x, const std::vector<double>& beta) const override {
+        return self().derivativeOf(x, beta);
+    }
 
   private:
     [[nodiscard]] const Family& self() const { return static_cast<const Family&>(*this); }

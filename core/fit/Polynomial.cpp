@@ -4,10 +4,13 @@
 namespace spanwright {
 
 PolynomialModel::PolynomialModel(std::size_t degree, PolynomialConstant constant, double low, double high)
-    : PolynomialModel(degree, constant, DoubleDouble(low + (high - low) / 2), DoubleDouble(high > low ? (high - low) / 2 : 1.0)) {}
+    : PolynomialModel(degree, constant, DoubleDouble(low + (high - low) / 2),
+                      DoubleDouble(high > low ? (high - low) / 2 : 1.0)) {}
 
-PolynomialModel::PolynomialModel(std::size_t degree, PolynomialConstant constant, const DoubleDouble& centre, const DoubleDouble& half)
-    : terms_(constant == PolynomialConstant::With ? degree + 1 : degree), constant_(constant), centre_(centre), half_(half) {}
+PolynomialModel::PolynomialModel(std::size_t degree, PolynomialConstant constant, const DoubleDouble& centre,
+                                 const DoubleDouble& half)
+    : terms_(constant == PolynomialConstant::With ? degree + 1 : degree), constant_(constant), centre_(centre),
+      half_(half) {}
 
 double PolynomialModel::derivativeOf(double x, const std::vector<double>& beta) const {
     // d/dt Σ β_k T_k = Σ k β_k U_{k−1}

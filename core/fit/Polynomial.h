@@ -7,14 +7,15 @@ namespace spanwright {
 
 enum class PolynomialConstant { With, Without };
 
-/// y = Σ c_k x^k, fitted in Chebyshev polynomials T_k(t), t = (x − centre)/half over the range of the readings, or in x·T_k(t)
-/// without a constant. Reported as raw powers by a conversion in double-double, since it is there that digits are lost.
-/// A line is degree 1, a constant degree 0, a proportional function degree 1 without a constant.
+/// y = Σ c_k x^k, fitted in Chebyshev polynomials T_k(t), t = (x − centre)/half over the range of the readings, or in
+/// x·T_k(t) without a constant. Reported as raw powers by a conversion in double-double, since it is there that digits
+/// are lost. A line is degree 1, a constant degree 0, a proportional function degree 1 without a constant.
 class PolynomialModel final : public ModelOf<PolynomialModel> {
   public:
     PolynomialModel(std::size_t degree, PolynomialConstant constant, double low, double high);
     /// With t = (x − centre)/half as given.
-    PolynomialModel(std::size_t degree, PolynomialConstant constant, const DoubleDouble& centre, const DoubleDouble& half);
+    PolynomialModel(std::size_t degree, PolynomialConstant constant, const DoubleDouble& centre,
+                    const DoubleDouble& half);
 
     [[nodiscard]] std::size_t terms() const override { return terms_; }
     [[nodiscard]] bool hasConstant() const override { return constant_ == PolynomialConstant::With; }

@@ -16,12 +16,12 @@ namespace {
 using boost::math::complement;
 
 // Statistics of a user's data may be infinite (a perfect fit) or undefined: that is an answer here, never an exception.
-using Quiet = boost::math::policies::policy<
-    boost::math::policies::domain_error<boost::math::policies::ignore_error>,
-    boost::math::policies::pole_error<boost::math::policies::ignore_error>,
-    boost::math::policies::overflow_error<boost::math::policies::ignore_error>,
-    boost::math::policies::evaluation_error<boost::math::policies::ignore_error>,
-    boost::math::policies::promote_double<true>>;
+using Quiet =
+    boost::math::policies::policy<boost::math::policies::domain_error<boost::math::policies::ignore_error>,
+                                  boost::math::policies::pole_error<boost::math::policies::ignore_error>,
+                                  boost::math::policies::overflow_error<boost::math::policies::ignore_error>,
+                                  boost::math::policies::evaluation_error<boost::math::policies::ignore_error>,
+                                  boost::math::policies::promote_double<true>>;
 using Student = boost::math::students_t_distribution<double, Quiet>;
 using Normal = boost::math::normal_distribution<double, Quiet>;
 using Fisher = boost::math::fisher_f_distribution<double, Quiet>;
@@ -31,9 +31,13 @@ constexpr double NoValue = std::numeric_limits<double>::quiet_NaN();
 
 } // namespace
 
-double studentQuantileAbove(double tail, double df) { return df > 0 ? quantile(complement(Student(df), tail)) : NoValue; }
+double studentQuantileAbove(double tail, double df) {
+    return df > 0 ? quantile(complement(Student(df), tail)) : NoValue;
+}
 
-double normalQuantileAbove(double tail) { return quantile(complement(Normal(), tail)); }
+double normalQuantileAbove(double tail) {
+    return quantile(complement(Normal(), tail));
+}
 
 double fQuantileAbove(double tail, double df1, double df2) {
     if (!(df1 > 0 && df2 > 0))
@@ -43,9 +47,13 @@ double fQuantileAbove(double tail, double df1, double df2) {
     return df2 * x / (df1 * y);
 }
 
-double chiSquaredQuantileAbove(double tail, double df) { return df > 0 ? quantile(complement(ChiSquared(df), tail)) : NoValue; }
+double chiSquaredQuantileAbove(double tail, double df) {
+    return df > 0 ? quantile(complement(ChiSquared(df), tail)) : NoValue;
+}
 
-double chiSquaredAbove(double x, double df) { return df > 0 && x == x ? cdf(complement(ChiSquared(df), x)) : NoValue; }
+double chiSquaredAbove(double x, double df) {
+    return df > 0 && x == x ? cdf(complement(ChiSquared(df), x)) : NoValue;
+}
 
 double fAbove(double x, double df1, double df2) {
     if (!(df1 > 0 && df2 > 0) || x != x)

@@ -48,7 +48,8 @@ double spreadOf(std::vector<double> residual) {
     std::nth_element(residual.begin(), residual.begin() + static_cast<std::ptrdiff_t>(half), residual.end());
     double middle = residual[half];
     if (n % 2 == 0)
-        middle = (middle + *std::max_element(residual.begin(), residual.begin() + static_cast<std::ptrdiff_t>(half))) / 2;
+        middle =
+            (middle + *std::max_element(residual.begin(), residual.begin() + static_cast<std::ptrdiff_t>(half))) / 2;
     return middle / 0.6745;
 }
 
@@ -71,7 +72,8 @@ Result<Iterated> reweighted(FitTask task, RobustWeight kind, std::vector<DoubleD
         }
         task.weighting.rootWeight.assign(task.sample.size(), 1.0);
         for (std::size_t i = 0; i < residual.size(); ++i)
-            task.weighting.rootWeight[i] = (base.empty() ? DoubleDouble(1.0) : base[i]) * std::sqrt(weightOf(kind, residual[i] / spread));
+            task.weighting.rootWeight[i] =
+                (base.empty() ? DoubleDouble(1.0) : base[i]) * std::sqrt(weightOf(kind, residual[i] / spread));
         auto solved = solveModel(task);
         if (!solved)
             return solved.error();
@@ -127,7 +129,9 @@ Result<SolvedModel> solveRobust(FitTask& task) {
     solved->linear.residualSs = 0.0;
     for (std::size_t i = 0; i < task.sample.size(); ++i) {
         solved->linear.residual[i] = task.y[i] - task.model->value(task.x[i], solved->beta);
-        const DoubleDouble scaled = task.weighting.rootWeight.empty() ? solved->linear.residual[i] : solved->linear.residual[i] * task.weighting.rootWeight[i];
+        const DoubleDouble scaled = task.weighting.rootWeight.empty()
+                                        ? solved->linear.residual[i]
+                                        : solved->linear.residual[i] * task.weighting.rootWeight[i];
         solved->linear.residualSs += sqr(scaled);
     }
     // A bisquare weight list holds nearly every reading; those below half count as weighed down there.

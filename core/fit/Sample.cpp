@@ -75,13 +75,15 @@ struct Chosen {
 template <class T>
 bool anyOther(const std::vector<T>& bytes, T value) {
     static_assert(sizeof(T) == 1);
-    return !bytes.empty() && (bytes.front() != value || std::memcmp(bytes.data(), bytes.data() + 1, bytes.size() - 1) != 0);
+    return !bytes.empty() &&
+           (bytes.front() != value || std::memcmp(bytes.data(), bytes.data() + 1, bytes.size() - 1) != 0);
 }
 
 Chosen chooseRows(const Record& record, Phase phase, Take take) {
     const ReadingColumns& readings = *record.readings;
     const bool needsReference = record.choices.function.family != FunctionFamily::Constant;
-    const bool allComplete = readings.indication().missing() == 0 && (!needsReference || readings.reference().missing() == 0);
+    const bool allComplete =
+        readings.indication().missing() == 0 && (!needsReference || readings.reference().missing() == 0);
     const auto& excluded = record.exclusions->all();
     Chosen chosen;
     if (allComplete && (excluded.empty() || take == Take::ExcludedToo) && !anyOther(readings.phases(), phase)) {
@@ -109,7 +111,8 @@ Chosen chooseRows(const Record& record, Phase phase, Take take) {
 }
 
 /// A column of `rows` on its grid: the column itself when every row counts, else kept in `kept`.
-std::span<const std::int64_t> gridOf(const DecimalColumn& column, const std::vector<std::size_t>& rows, std::vector<std::int64_t>& kept) {
+std::span<const std::int64_t> gridOf(const DecimalColumn& column, const std::vector<std::size_t>& rows,
+                                     std::vector<std::int64_t>& kept) {
     if (rows.size() == column.size())
         return column.grid();
     kept.reserve(rows.size());
@@ -119,7 +122,8 @@ std::span<const std::int64_t> gridOf(const DecimalColumn& column, const std::vec
 }
 
 PairColumn plainValues(std::span<const std::int64_t> grid, int scale) {
-    // Both exact below 2^53 and 10^22, so that the quotient is the nearest double; beyond, within one unit of the last place.
+    // Both exact below 2^53 and 10^22, so that the quotient is the nearest double; beyond, within one unit of the last
+    // place.
     const double divisor = toDouble(powerOfTen(scale));
     PairColumn column;
     column.high.resize(grid.size());
@@ -147,13 +151,16 @@ void fillMany(Sample& sample, const Record& record) {
     } else {
         PairColumn setPoint;
         for (std::size_t i = 0; i < sample.size(); ++i)
-            setPoint.push_back(readings.setPoint().has(sample.rows[i]) ? readings.setPoint().toDoubleDouble(sample.rows[i]) : sample.reference[i]);
+            setPoint.push_back(readings.setPoint().has(sample.rows[i])
+                                   ? readings.setPoint().toDoubleDouble(sample.rows[i])
+                                   : sample.reference[i]);
         groupByValue(sample, setPoint);
     }
     sample.grids = std::move(grids);
 }
 
-void fillFew(Sample& sample, const Record& record, const CorrectionTable& referenceTable, const CorrectionTable& indicationTable) {
+void fillFew(Sample& sample, const Record& record, const CorrectionTable& referenceTable,
+             const CorrectionTable& indicationTable) {
     const ReadingColumns& readings = *record.readings;
     PairColumn setPoint;
     for (const std::size_t row : sample.rows) {
@@ -194,8 +201,8 @@ Sample sampleOf(const Record& record, Phase phase, Take take) {
     sample.indicationUnit = record.item.indication.unit;
     const CorrectionTable referenceTable = tableOf(record.standards, StandardRole::Reference);
     const CorrectionTable indicationTable = tableOf(record.standards, StandardRole::Indication);
-    const bool onGrids = readings.reference().exact() && readings.indication().exact() && readings.reference().missing() == 0 &&
-                         referenceTable.at.empty() && indicationTable.at.empty();
+    const bool onGrids = readings.reference().exact() && readings.indication().exact() &&
+                         readings.reference().missing() == 0 && referenceTable.at.empty() && indicationTable.at.empty();
     if (sample.size() >= ManyReadings && onGrids)
         fillMany(sample, record);
     else
@@ -213,9 +220,13 @@ Sample sampleOf(const Record& record, Phase phase, Take take) {
 
 } // namespace
 
-Sample makeSample(const Record& record, Phase phase) { return sampleOf(record, phase, Take::Counting); }
+Sample makeSample(const Record& record, Phase phase) {
+    return sampleOf(record, phase, Take::Counting);
+}
 
-Sample makeSampleWithExcluded(const Record& record, Phase phase) { return sampleOf(record, phase, Take::ExcludedToo); }
+Sample makeSampleWithExcluded(const Record& record, Phase phase) {
+    return sampleOf(record, phase, Take::ExcludedToo);
+}
 
 Sample withExactColumns(const Sample& sample) {
     Sample exact = sample;

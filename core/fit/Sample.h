@@ -13,14 +13,16 @@
 
 namespace spanwright {
 
-/// Numbers in double-double as two columns; `low` is empty when the numbers are plain doubles (very many readings, where the
-/// exact grid is used instead).
+/// Numbers in double-double as two columns; `low` is empty when the numbers are plain doubles (very many readings,
+/// where the exact grid is used instead).
 struct PairColumn {
     std::vector<double> high, low;
 
     [[nodiscard]] std::size_t size() const { return high.size(); }
     [[nodiscard]] bool empty() const { return high.empty(); }
-    [[nodiscard]] DoubleDouble operator[](std::size_t i) const { return low.empty() ? DoubleDouble(high[i]) : DoubleDouble(high[i], low[i]); }
+    [[nodiscard]] DoubleDouble operator[](std::size_t i) const {
+        return low.empty() ? DoubleDouble(high[i]) : DoubleDouble(high[i], low[i]);
+    }
     void push_back(const DoubleDouble& value) {
         high.push_back(value.x[0]);
         low.push_back(value.x[1]);
@@ -34,30 +36,30 @@ inline constexpr std::size_t ManyReadings = 200'000;
 struct ExactGrids {
     std::span<const std::int64_t> reference, indication;
     int referenceScale = 0, indicationScale = 0;
-    Shared<ReadingColumns> columns;                            ///< keeps what the spans look at,
-    std::vector<std::int64_t> keptReference, keptIndication;   ///< or these do, where not every row counts
+    Shared<ReadingColumns> columns;                          ///< keeps what the spans look at,
+    std::vector<std::int64_t> keptReference, keptIndication; ///< or these do, where not every row counts
 };
 
-/// The readings of one phase that count (complete and not excluded), in the order taken, with the standard's correction applied
-/// to the reference where its table is to be applied.
+/// The readings of one phase that count (complete and not excluded), in the order taken, with the standard's correction
+/// applied to the reference where its table is to be applied.
 struct Sample {
     std::vector<std::size_t> rows; ///< row in ReadingColumns
     PairColumn reference, indication;
-    PairColumn uReference, uIndication;    ///< stated standard uncertainties; empty when none are stated
-    std::vector<std::int32_t> group;       ///< set point, an index into groupValue
-    std::vector<double> groupValue;        ///< set points in rising order: the stated one, else the reference itself
-    std::vector<std::int32_t> run;         ///< empty when no run is known
-    std::vector<Direction> direction;      ///< empty when no direction is known
+    PairColumn uReference, uIndication;      ///< stated standard uncertainties; empty when none are stated
+    std::vector<std::int32_t> group;         ///< set point, an index into groupValue
+    std::vector<double> groupValue;          ///< set points in rising order: the stated one, else the reference itself
+    std::vector<std::int32_t> run;           ///< empty when no run is known
+    std::vector<Direction> direction;        ///< empty when no direction is known
     std::shared_ptr<const ExactGrids> grids; ///< with ManyReadings on exact grids and no correction to apply
     std::string referenceUnit, indicationUnit;
-    std::size_t excluded = 0;              ///< complete readings of the phase that were left out
-    std::vector<Warning> warnings;         ///< ColumnNotExact, IncompleteReadings, …
+    std::size_t excluded = 0;      ///< complete readings of the phase that were left out
+    std::vector<Warning> warnings; ///< ColumnNotExact, IncompleteReadings, …
 
     [[nodiscard]] std::size_t size() const { return rows.size(); }
 };
 
-/// The readings of a phase that count. A constant function needs no reference: then a reading without one counts too, with a
-/// reference of 0. Corrections are interpolated linearly in the standard's table and constant beyond its ends.
+/// The readings of a phase that count. A constant function needs no reference: then a reading without one counts too,
+/// with a reference of 0. Corrections are interpolated linearly in the standard's table and constant beyond its ends.
 Sample makeSample(const Record& record, Phase phase);
 /// The same with the excluded readings among them, to show what excluding did.
 Sample makeSampleWithExcluded(const Record& record, Phase phase);

@@ -12,8 +12,8 @@ namespace {
 using Function = std::function<DoubleDouble(const DoubleDouble&)>;
 
 /// Least-squares line of g(y) on φ(x), each weighted by w(y): the transform on which a non-linear fit starts.
-std::vector<DoubleDouble> lineOfTransform(const PairColumn& x, const PairColumn& y, const Function& phi, const Function& g,
-                                          const Function& rootWeight) {
+std::vector<DoubleDouble> lineOfTransform(const PairColumn& x, const PairColumn& y, const Function& phi,
+                                          const Function& g, const Function& rootWeight) {
     const std::size_t n = x.size();
     LinearProblem problem{2, std::vector<DoubleDouble>(2 * n, 1.0), {}, {}};
     for (std::size_t i = 0; i < n; ++i) {
@@ -24,8 +24,12 @@ std::vector<DoubleDouble> lineOfTransform(const PairColumn& x, const PairColumn&
     return solveLeastSquares(problem).beta;
 }
 
-DoubleDouble logOf(const DoubleDouble& value) { return log(value); }
-DoubleDouble itself(const DoubleDouble& value) { return value; }
+DoubleDouble logOf(const DoubleDouble& value) {
+    return log(value);
+}
+DoubleDouble itself(const DoubleDouble& value) {
+    return value;
+}
 
 } // namespace
 
@@ -80,14 +84,17 @@ ReportedCoefficients CallendarVanDusen::reported(const std::vector<DoubleDouble>
 }
 
 Result<std::vector<DoubleDouble>> PowerLaw::start(const PairColumn& x, const PairColumn& y) const {
-    auto line = lineOfTransform(x, y, [this](const DoubleDouble& at) { return log(at / middle_); }, logOf, itself);
+    auto line = lineOfTransform(
+        x, y, [this](const DoubleDouble& at) { return log(at / middle_); }, logOf, itself);
     if (line.empty())
         return Error(ErrorCode::RankLost, {{"terms", "b"}});
     line[0] = exp(line[0]);
     return line;
 }
 
-double PowerLaw::derivativeOf(double x, const std::vector<double>& beta) const { return beta[1] * valueOf(x, beta) / x; }
+double PowerLaw::derivativeOf(double x, const std::vector<double>& beta) const {
+    return beta[1] * valueOf(x, beta) / x;
+}
 
 ReportedCoefficients PowerLaw::reported(const std::vector<DoubleDouble>& beta) const {
     const DoubleDouble l = log(DoubleDouble(middle_)), factor = exp(-beta[1] * l);
@@ -125,13 +132,14 @@ double ExponentialApproach::derivativeOf(double x, const std::vector<double>& be
 ReportedCoefficients ExponentialApproach::reported(const std::vector<DoubleDouble>& beta) const {
     const DoubleDouble factor = exp(beta[2] * low_), length = 1.0 / beta[2];
     return {{beta[0], beta[1] * factor, length},
-            {1.0, 0.0, 0.0, //
+            {1.0, 0.0, 0.0,                        //
              0.0, factor, beta[1] * factor * low_, //
              0.0, 0.0, -sqr(length)}};
 }
 
 Result<std::vector<DoubleDouble>> ThermistorB::start(const PairColumn& x, const PairColumn& y) const {
-    auto line = lineOfTransform(x, y, [this](const DoubleDouble& at) { return reciprocal(at); }, logOf, itself);
+    auto line = lineOfTransform(
+        x, y, [this](const DoubleDouble& at) { return reciprocal(at); }, logOf, itself);
     if (line.empty())
         return Error(ErrorCode::RankLost, {{"terms", "B"}});
     line[0] = exp(line[0]);

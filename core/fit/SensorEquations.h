@@ -17,7 +17,8 @@ enum class Transform {
 
 class TransformedLine final : public ModelOf<TransformedLine> {
   public:
-    /// `theoreticalSlope`: with Nernst, ln(10)·RT/F at 25 °C in the unit of the ordinate, of which the slope is reported in percent.
+    /// `theoreticalSlope`: with Nernst, ln(10)·RT/F at 25 °C in the unit of the ordinate, of which the slope is
+    /// reported in percent.
     explicit TransformedLine(Transform transform, double theoreticalSlope = 1.0);
 
     [[nodiscard]] std::size_t terms() const override { return 2; }
@@ -38,15 +39,17 @@ class TransformedLine final : public ModelOf<TransformedLine> {
     template <class T>
     [[nodiscard]] T phi(const T& x) const {
         using std::log10, std::sqrt;
-        return transform_ == Transform::SquareRoot ? sqrt(x) : transform_ == Transform::Logarithm ? log10(x) : T(7.0 - x);
+        return transform_ == Transform::SquareRoot  ? sqrt(x)
+               : transform_ == Transform::Logarithm ? log10(x)
+                                                    : T(7.0 - x);
     }
 
     Transform transform_;
     double theoreticalSlope_;
 };
 
-/// Callendar and Van Dusen, IEC 60751:2022, 5.2: R = R0 (1 + A t + B t²) for t ≥ 0, and + R0 C (t − 100) t³ below. Linear in R0,
-/// R0 A, R0 B, R0 C; without readings below 0 °C there is no C.
+/// Callendar and Van Dusen, IEC 60751:2022, 5.2: R = R0 (1 + A t + B t²) for t ≥ 0, and + R0 C (t − 100) t³ below.
+/// Linear in R0, R0 A, R0 B, R0 C; without readings below 0 °C there is no C.
 class CallendarVanDusen final : public ModelOf<CallendarVanDusen> {
   public:
     enum class Ranges { FromZeroUp, Both };
@@ -80,8 +83,8 @@ class CallendarVanDusen final : public ModelOf<CallendarVanDusen> {
     double zeroCelsius_;
 };
 
-/// y = a x^b, x > 0, least squares in the user's unit: metal-oxide gas sensors, photoresistors. Fitted as c (x/x0)^b with x0 the
-/// geometric middle of the range.
+/// y = a x^b, x > 0, least squares in the user's unit: metal-oxide gas sensors, photoresistors. Fitted as c (x/x0)^b
+/// with x0 the geometric middle of the range.
 class PowerLaw final : public ModelOf<PowerLaw> {
   public:
     PowerLaw(double low, double high) : middle_(std::sqrt(low) * std::sqrt(high)) {}
@@ -110,7 +113,8 @@ class PowerLaw final : public ModelOf<PowerLaw> {
     double middle_;
 };
 
-/// y = y∞ − A exp(−x/L): saturating optical and humidity sensors. Fitted in y∞, A exp(−x0/L) and 1/L with x0 the low end.
+/// y = y∞ − A exp(−x/L): saturating optical and humidity sensors. Fitted in y∞, A exp(−x0/L) and 1/L with x0 the low
+/// end.
 class ExponentialApproach final : public ModelOf<ExponentialApproach> {
   public:
     ExponentialApproach(double low, double high) : low_(low), span_(high - low) {}
@@ -137,7 +141,8 @@ class ExponentialApproach final : public ModelOf<ExponentialApproach> {
     double low_, span_;
 };
 
-/// R = R25 exp[B (1/T − 1/298.15 K)], T = t + 273.15: the B-parameter equation, IEC 60539-1:2022, 3.2. Least squares in R.
+/// R = R25 exp[B (1/T − 1/298.15 K)], T = t + 273.15: the B-parameter equation, IEC 60539-1:2022, 3.2. Least squares in
+/// R.
 class ThermistorB final : public ModelOf<ThermistorB> {
   public:
     /// `zeroCelsius`: 0 °C in the unit of the abscissa.

@@ -22,9 +22,12 @@ class GridValue {
     double divisor_;
 };
 
-int bitsOf(std::uint64_t value) { return static_cast<int>(std::bit_width(value)); }
+int bitsOf(std::uint64_t value) {
+    return static_cast<int>(std::bit_width(value));
+}
 
-void groupByTable(Sample& sample, std::span<const std::int64_t> grid, int scale, std::int64_t low, std::uint64_t range) {
+void groupByTable(Sample& sample, std::span<const std::int64_t> grid, int scale, std::int64_t low,
+                  std::uint64_t range) {
     const GridValue valueOf(scale);
     std::vector<std::int32_t> table(range, -1);
     for (const std::int64_t m : grid)
@@ -58,7 +61,8 @@ void sortByDigits(std::vector<std::uint64_t>& items, int keyAt, int keyBits) {
     }
 }
 
-void groupByDigits(Sample& sample, std::span<const std::int64_t> grid, int scale, std::int64_t low, int rowBits, int keyBits) {
+void groupByDigits(Sample& sample, std::span<const std::int64_t> grid, int scale, std::int64_t low, int rowBits,
+                   int keyBits) {
     std::vector<std::uint64_t> items(grid.size());
     for (std::size_t i = 0; i < grid.size(); ++i)
         items[i] = ((static_cast<std::uint64_t>(grid[i]) - static_cast<std::uint64_t>(low)) << rowBits) | i;
@@ -71,7 +75,8 @@ void groupByDigits(Sample& sample, std::span<const std::int64_t> grid, int scale
         if (i == 0 || key != before)
             sample.groupValue.push_back(valueOf(low + static_cast<std::int64_t>(key)));
         before = key;
-        sample.group[static_cast<std::size_t>(items[i] & rowMask)] = static_cast<std::int32_t>(sample.groupValue.size()) - 1;
+        sample.group[static_cast<std::size_t>(items[i] & rowMask)] =
+            static_cast<std::int32_t>(sample.groupValue.size()) - 1;
     }
 }
 
@@ -84,7 +89,8 @@ void groupBySorting(Sample& sample, std::span<const std::int64_t> grid, int scal
     for (const std::int64_t value : values)
         sample.groupValue.push_back(valueOf(value));
     for (std::size_t i = 0; i < grid.size(); ++i)
-        sample.group[i] = static_cast<std::int32_t>(std::lower_bound(values.begin(), values.end(), grid[i]) - values.begin());
+        sample.group[i] =
+            static_cast<std::int32_t>(std::lower_bound(values.begin(), values.end(), grid[i]) - values.begin());
 }
 
 } // namespace

@@ -5,11 +5,12 @@
 
 namespace spanwright {
 
-/// Fills `group` and `groupValue`: equal values share a set point, set points in rising order. O(n log n), for few readings.
+/// Fills `group` and `groupValue`: equal values share a set point, set points in rising order. O(n log n), for few
+/// readings.
 void groupByValue(Sample& sample, const PairColumn& value);
 
-/// The same by integers on a decimal grid, in O(n): by direct addressing where the range is small against the readings, else by
-/// sorting digits of 11 bits (O(n log n) where the grid is wider than 2^44 or so).
+/// The same by integers on a decimal grid, in O(n): by direct addressing where the range is small against the readings,
+/// else by sorting digits of 11 bits (O(n log n) where the grid is wider than 2^44 or so).
 void groupByGrid(Sample& sample, std::span<const std::int64_t> grid, int scale);
 
 } // namespace spanwright

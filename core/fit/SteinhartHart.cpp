@@ -43,15 +43,27 @@ ReportedCoefficients SteinhartHart::reported(const std::vector<DoubleDouble>& be
     if (terms_ == 2)
         return {{beta[0] - beta[1] * m / h, beta[1] / h}, {1.0, -m / h, 0.0, 1.0 / h}};
     std::vector<DoubleDouble> jacobian;
-    if (terms_ == 3) // h δ³ + 3 m δ² = (L³ − 3 m² L + 2 m³)/h²
-        jacobian = {1.0, -m / h, 2.0 * m * m * m / sqr(h), //
-                    0.0, 1.0 / h, -3.0 * sqr(m) / sqr(h), //
-                    0.0, 0.0, 1.0 / sqr(h)};
+    if (terms_ == 3)                                        // h δ³ + 3 m δ² = (L³ − 3 m² L + 2 m³)/h²
+        jacobian = {1.0, -m / h,  2.0 * m * m * m / sqr(h), //
+                    0.0, 1.0 / h, -3.0 * sqr(m) / sqr(h),   //
+                    0.0, 0.0,     1.0 / sqr(h)};
     else // rows A, B, C (of L³), D (of L²)
-        jacobian = {1.0, -m / h, sqr(m) / sqr(h), -m * m * m / (h * h * h), //
-                    0.0, 1.0 / h, -2.0 * m / sqr(h), 3.0 * sqr(m) / (h * h * h), //
-                    0.0, 0.0, 0.0, 1.0 / (h * h * h), //
-                    0.0, 0.0, 1.0 / sqr(h), -3.0 * m / (h * h * h)};
+        jacobian = {1.0,
+                    -m / h,
+                    sqr(m) / sqr(h),
+                    -m * m * m / (h * h * h), //
+                    0.0,
+                    1.0 / h,
+                    -2.0 * m / sqr(h),
+                    3.0 * sqr(m) / (h * h * h), //
+                    0.0,
+                    0.0,
+                    0.0,
+                    1.0 / (h * h * h), //
+                    0.0,
+                    0.0,
+                    1.0 / sqr(h),
+                    -3.0 * m / (h * h * h)};
     ReportedCoefficients reported{std::vector<DoubleDouble>(terms_, 0.0), std::move(jacobian)};
     for (std::size_t i = 0; i < terms_; ++i)
         for (std::size_t k = 0; k < terms_; ++k)

@@ -7,10 +7,10 @@
 
 namespace spanwright {
 
-/// Temperature of a thermistor from its resistance: 1/T = A + B ln R + C (ln R)³, with 2 terms A, B, with 4 also D (ln R)²
-/// (Steinhart and Hart 1968, Deep-Sea Research 15, 497). Least squares in the temperature, not in 1/T. Fitted in powers of
-/// δ = (ln R − m)/h about the middle m of the readings; the third term of three is h δ³ + 3 m δ², which spans (ln R)³ with the
-/// first two.
+/// Temperature of a thermistor from its resistance: 1/T = A + B ln R + C (ln R)³, with 2 terms A, B, with 4 also D (ln
+/// R)² (Steinhart and Hart 1968, Deep-Sea Research 15, 497). Least squares in the temperature, not in 1/T. Fitted in
+/// powers of δ = (ln R − m)/h about the middle m of the readings; the third term of three is h δ³ + 3 m δ², which spans
+/// (ln R)³ with the first two.
 class SteinhartHart final : public ModelOf<SteinhartHart> {
   public:
     /// `low`, `high`: range of the resistances; `zeroCelsius`: 0 °C in the unit of the ordinate.

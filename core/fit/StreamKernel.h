@@ -30,7 +30,8 @@ struct BandBlock {
     double noise = 0, factor = 0;
 };
 
-/// The inner loops by degree d of the polynomial, written in StreamKernel.inc for every processor and for AVX2, with equal bits.
+/// The inner loops by degree d of the polynomial, written in StreamKernel.inc for every processor and for AVX2, with
+/// equal bits.
 struct StreamKernel {
     /// Σ T_j(t) for j = 0…2d, Σ T_j(t) v for j = 0…d, Σ v².
     void (*moments[MostStreamedDegree + 1])(const StreamBlock&, double*, StreamRange&);

@@ -1,76 +1,14 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/fit/StreamedFit.h"
 
-#include "core/base/Decimal.h"
-#include "core/fit/StreamKernel.h"
-
-#include <algorithm>
 #include <cmath>
-#include <functional>
-#include <thread>
 
 namespace spanwright {
 
 namespace {
 
-constexpr std::size_t BlockSize = 512, ChunkSize = 128 * BlockSize;
-constexpr std::uint64_t WidestGrid = std::uint64_t{1} << 51;
 /// Share of a diagonal entry below which a pivot of the normal equations is made of lost digits.
 constexpr double PivotBelow = 1e-8;
-
-static_assert(sizeof(long) == sizeof(std::int64_t));
-
-const long* asLong(const std::int64_t* m) { return reinterpret_cast<const long*>(m); }
-
-StreamBlock blockOf(const StreamMap& map, const std::int64_t* x, const std::int64_t* y, std::size_t n) {
-    return {asLong(x), asLong(y), n, map.x0, map.y0, map.xStep, toDouble(map.unit())};
-}
-
-/// Sums over all readings of what `kernel` gives for a block: blocks in double, chunks of blocks in double-double and in order,
-/// so that the number of threads does not show.
-/// `kernel` also gets the number of the chunk.
-using BlockSum = std::function<void(const StreamBlock&, double*, std::size_t)>;
-
-std::vector<DoubleDouble> streamedSums(const StreamMap& map, const GridColumn& x, const GridColumn& y, std::size_t width,
-                                       const BlockSum& kernel, unsigned threads) {
-    const std::size_t n = x.grid.size(), chunks = (n + ChunkSize - 1) / ChunkSize;
-    std::vector<DoubleDouble> totals(chunks * width, 0.0);
-    const auto chunk = [&](std::size_t c) {
-        double sums[64];
-        const std::size_t end = std::min(n, (c + 1) * ChunkSize);
-        for (std::size_t from = c * ChunkSize; from < end; from += BlockSize) {
-            const std::size_t count = std::min(BlockSize, end - from), whole = count - count % 4;
-            if (whole > 0) {
-                kernel(blockOf(map, x.grid.data() + from, y.grid.data() + from, whole), sums, c);
-                for (std::size_t k = 0; k < width; ++k)
-                    totals[c * width + k] += sums[k];
-            }
-            for (std::size_t i = from + whole; i < end && i < from + count; ++i) {
-                // A last reading alone: four of it, a quarter of the sums.
-                const std::int64_t mx[4] = {x.grid[i], x.grid[i], x.grid[i], x.grid[i]};
-                const std::int64_t my[4] = {y.grid[i], y.grid[i], y.grid[i], y.grid[i]};
-                kernel(blockOf(map, mx, my, 4), sums, c);
-                for (std::size_t k = 0; k < width; ++k)
-                    totals[c * width + k] += sums[k] / 4;
-            }
-        }
-    };
-    const auto part = [&](unsigned which) {
-        for (std::size_t c = which; c < chunks; c += threads)
-            chunk(c);
-    };
-    std::vector<std::thread> others;
-    for (unsigned which = 1; which < threads; ++which)
-        others.emplace_back(part, which);
-    part(0);
-    for (std::thread& other : others)
-        other.join();
-    std::vector<DoubleDouble> sum(width, 0.0);
-    for (std::size_t c = 0; c < chunks; ++c)
-        for (std::size_t k = 0; k < width; ++k)
-            sum[k] += totals[c * width + k];
-    return sum;
-}
 
 /// The basis of the fit in T_0…T_D, row by row: the identity, or x·T_k = centre·T_k + half·(T_{k+1} + T_{|k−1|})/2.
 std::vector<DoubleDouble> basisInChebyshev(const StreamMap& map, int degree, StreamedConstant constant) {
@@ -89,22 +27,24 @@ std::vector<DoubleDouble> basisInChebyshev(const StreamMap& map, int degree, Str
     return basis;
 }
 
-/// Σ T_j T_k = (Σ T_{j+k} + Σ T_{|j−k|})/2 in the basis of the fit.
+/// Σ φ φᵀ in the basis of the fit.
 std::vector<DoubleDouble> gramOf(const StreamSums& sums, const std::vector<DoubleDouble>& basis, std::size_t p) {
     const auto width = static_cast<std::size_t>(sums.degree) + 1;
     std::vector<DoubleDouble> gram(p * p, 0.0);
     for (std::size_t a = 0; a < p; ++a)
         for (std::size_t b = 0; b < p; ++b)
-            for (std::size_t j = 0; j < width; ++j)
-                for (std::size_t k = 0; k < width; ++k) {
-                    const DoubleDouble factor = basis[a * width + j] * basis[b * width + k];
-                    if (factor.x[0] != 0)
-                        gram[a * p + b] += factor * (sums.moment[j + k] + sums.moment[j > k ? j - k : k - j]) * 0.5;
-                }
+            for (std::size_t j = 0; j < width; ++j) {
+                if (basis[a * width + j].x[0] == 0) // mostly the identity
+                    continue;
+                for (std::size_t k = 0; k < width; ++k)
+                    if (basis[b * width + k].x[0] != 0)
+                        gram[a * p + b] += basis[a * width + j] * basis[b * width + k] * productSum(sums, j, k);
+            }
     return gram;
 }
 
-std::vector<DoubleDouble> inBasis(const std::vector<DoubleDouble>& basis, const std::vector<DoubleDouble>& cross, std::size_t p) {
+std::vector<DoubleDouble> inBasis(const std::vector<DoubleDouble>& basis, const std::vector<DoubleDouble>& cross,
+                                  std::size_t p) {
     const std::size_t width = cross.size();
     std::vector<DoubleDouble> result(p, 0.0);
     for (std::size_t a = 0; a < p; ++a)
@@ -190,68 +130,6 @@ std::vector<DoubleDouble> rightSide(const StreamSums& sums, const std::vector<Do
     return inBasis(basis, cross, p);
 }
 
-/// The extremes of some readings, enough to place t and v; all of them are known after the first pass.
-StreamRange guessedRange(std::span<const std::int64_t> grid) {
-    constexpr std::size_t Looked = 4096;
-    const std::size_t step = std::max<std::size_t>(1, grid.size() / Looked);
-    StreamRange range{grid.front(), grid.front(), 0};
-    for (std::size_t i = 0; i < grid.size(); i += step) {
-        range.low = std::min<long>(range.low, grid[i]);
-        range.high = std::max<long>(range.high, grid[i]);
-    }
-    return range;
-}
-
-StreamMap mapOver(const StreamRange& x, const StreamRange& y, int xScale, int yScale) {
-    StreamMap map{x.low + (x.high - x.low) / 2, y.low + (y.high - y.low) / 2, 1.0, xScale, yScale};
-    if (x.high > x.low)
-        map.xStep = 2.0 / static_cast<double>(x.high - x.low);
-    return map;
-}
-
-/// Moments with t over `guess`, and the range that there was.
-struct Gathered {
-    StreamSums sums;
-    StreamRange range;
-};
-
-Gathered gatheredOver(const StreamMap& map, const GridColumn& x, const GridColumn& y, int degree, unsigned threads) {
-    const auto d = static_cast<std::size_t>(degree);
-    const auto kernel = streamKernel().moments[d];
-    std::vector<StreamRange> ranges((x.grid.size() + ChunkSize - 1) / ChunkSize, {x.grid.front(), x.grid.front(), 0});
-    const BlockSum sum = [&](const StreamBlock& block, double* out, std::size_t chunk) { kernel(block, out, ranges[chunk]); };
-    const auto all = streamedSums(map, x, y, 3 * d + 3, sum, threads);
-    const auto from = [&](std::size_t at) { return all.begin() + static_cast<std::ptrdiff_t>(at); };
-    Gathered gathered{{degree, map, x.grid.size(), 0, 0, {}, {}, all.back()}, ranges.front()};
-    for (const StreamRange& range : ranges) {
-        gathered.range.low = std::min(gathered.range.low, range.low);
-        gathered.range.high = std::max(gathered.range.high, range.high);
-        gathered.range.wide |= range.wide;
-    }
-    gathered.sums.lowX = gathered.range.low;
-    gathered.sums.highX = gathered.range.high;
-    gathered.sums.moment.assign(from(0), from(2 * d + 1));
-    gathered.sums.cross.assign(from(2 * d + 1), from(3 * d + 2));
-    return gathered;
-}
-
-std::optional<StreamSums> gathered(const GridColumn& x, const GridColumn& y, int degree, unsigned threads) {
-    const auto tooWide = [](std::int64_t low, std::int64_t high) { return static_cast<std::uint64_t>(high) - static_cast<std::uint64_t>(low) >= WidestGrid; };
-    const StreamRange guess = guessedRange(x.grid), guessY = guessedRange(y.grid);
-    if (tooWide(guess.low, guess.high) || tooWide(guessY.low, guessY.high))
-        return std::nullopt;
-    StreamMap map = mapOver(guess, guessY, x.scale, y.scale);
-    Gathered first = gatheredOver(map, x, y, degree, threads);
-    const StreamRange& range = first.range;
-    if (tooWide(range.low, range.high) || (range.wide >> 52) != 0 || (degree > 0 && range.high == range.low))
-        return std::nullopt;
-    // Readings far outside the guess would make the Chebyshev polynomials grow: once more, over the whole range.
-    const double beyond = std::max(static_cast<double>(range.high - map.x0), static_cast<double>(map.x0 - range.low)) * map.xStep;
-    if (beyond <= 1.02)
-        return std::move(first.sums);
-    return gatheredOver(mapOver(range, guessY, x.scale, y.scale), x, y, degree, threads).sums;
-}
-
 /// One step of refinement with residuals of the rounded coefficients, and Σe² of the refined ones.
 void refine(StreamedFit& fit, const GridColumn& x, const GridColumn& y, unsigned threads) {
     const auto d = static_cast<std::size_t>(fit.sums.degree);
@@ -264,7 +142,9 @@ void refine(StreamedFit& fit, const GridColumn& x, const GridColumn& y, unsigned
         lost.push_back(value - c.back());
     }
     const auto kernel = streamKernel().residuals[d];
-    const auto sums = streamedSums(fit.sums.map, x, y, d + 2, [&](const StreamBlock& block, double* out, std::size_t) { kernel(block, c.data(), out); }, threads);
+    const auto sums = streamedSums(
+        fit.sums.map, x, y, d + 2,
+        [&](const StreamBlock& block, double* out, std::size_t) { kernel(block, c.data(), out); }, threads);
     // Residuals of β itself differ from those of the rounded c by Σ lost_j T_j: carried through the moments.
     std::vector<DoubleDouble> gradient(sums.begin(), sums.begin() + static_cast<std::ptrdiff_t>(d + 1));
     DoubleDouble square = sums.back();
@@ -272,7 +152,7 @@ void refine(StreamedFit& fit, const GridColumn& x, const GridColumn& y, unsigned
         square -= 2.0 * lost[j] * gradient[j];
     for (std::size_t j = 0; j <= d; ++j)
         for (std::size_t k = 0; k <= d; ++k) {
-            const DoubleDouble moment = (fit.sums.moment[j + k] + fit.sums.moment[j > k ? j - k : k - j]) * 0.5;
+            const DoubleDouble moment = productSum(fit.sums, j, k);
             gradient[j] -= moment * lost[k];
             square += lost[j] * lost[k] * moment;
         }
@@ -285,16 +165,11 @@ void refine(StreamedFit& fit, const GridColumn& x, const GridColumn& y, unsigned
 
 } // namespace
 
-DoubleDouble StreamMap::centre() const { return toDoubleDouble(x0) * powerOfTen(-xScale); }
-DoubleDouble StreamMap::half() const { return powerOfTen(-xScale) / xStep; }
-DoubleDouble StreamMap::offset() const { return toDoubleDouble(y0); }
-DoubleDouble StreamMap::unit() const { return powerOfTen(-yScale); }
-DoubleDouble StreamMap::v(std::int64_t y) const { return toDoubleDouble(y - y0); }
-
-std::optional<StreamedFit> fitStreamed(const GridColumn& x, const GridColumn& y, int degree, StreamedConstant constant, unsigned threads) {
+std::optional<StreamedFit> fitStreamed(const GridColumn& x, const GridColumn& y, int degree, StreamedConstant constant,
+                                       unsigned threads) {
     if (degree > MostStreamedDegree || x.grid.size() < 2 || x.grid.size() != y.grid.size())
         return std::nullopt;
-    auto sums = gathered(x, y, degree, threads);
+    auto sums = gatherSums(x, y, degree, threads);
     if (!sums)
         return std::nullopt;
     StreamedFit fit;
@@ -336,23 +211,20 @@ StreamedRows streamedRows(const StreamedFit& fit, const GridColumn& x, const Gri
     const auto kernel = streamKernel().elements[d];
     const auto part = [&](unsigned which) {
         const std::size_t share = (n / threads) & ~std::size_t{3};
-        const std::size_t from = which * share, to = which + 1 == threads ? n : from + share, whole = (to - from) & ~std::size_t{3};
-        kernel(blockOf(fit.sums.map, x.grid.data() + from, y.grid.data() + from, whole), c.data(), h.data(), rows.residual.data() + from,
-               rows.leverage.data() + from);
+        const std::size_t from = which * share, to = which + 1 == threads ? n : from + share,
+                          whole = (to - from) & ~std::size_t{3};
+        kernel(streamBlock(fit.sums.map, x.grid.data() + from, y.grid.data() + from, whole), c.data(), h.data(),
+               rows.residual.data() + from, rows.leverage.data() + from);
         for (std::size_t i = from + whole; i < to; ++i) {
-            const std::int64_t mx[4] = {x.grid[i], x.grid[i], x.grid[i], x.grid[i]}, my[4] = {y.grid[i], y.grid[i], y.grid[i], y.grid[i]};
+            const std::int64_t mx[4] = {x.grid[i], x.grid[i], x.grid[i], x.grid[i]},
+                               my[4] = {y.grid[i], y.grid[i], y.grid[i], y.grid[i]};
             double e[4], l[4];
-            kernel(blockOf(fit.sums.map, mx, my, 4), c.data(), h.data(), e, l);
+            kernel(streamBlock(fit.sums.map, mx, my, 4), c.data(), h.data(), e, l);
             rows.residual[i] = e[0];
             rows.leverage[i] = l[0];
         }
     };
-    std::vector<std::thread> others;
-    for (unsigned which = 1; which < threads; ++which)
-        others.emplace_back(part, which);
-    part(0);
-    for (std::thread& other : others)
-        other.join();
+    inParallel(threads, part);
     return rows;
 }
 
@@ -376,7 +248,8 @@ std::optional<StreamedFit> changedBy(const StreamedFit& fit, StreamedChange chan
     auto inverse = inverseCholesky(gramOf(changed.sums, basis, p), p);
     if (!inverse)
         return std::nullopt;
-    const std::vector<DoubleDouble> phi = inBasis(basis, {chebyshev.begin(), chebyshev.begin() + static_cast<std::ptrdiff_t>(width)}, p);
+    const std::vector<DoubleDouble> phi =
+        inBasis(basis, {chebyshev.begin(), chebyshev.begin() + static_cast<std::ptrdiff_t>(width)}, p);
     const DoubleDouble e = v + fit.sums.map.offset() - product(fit.beta, phi);
     const std::vector<DoubleDouble> pull = solved(fit.inverseRoot, phi);
     const DoubleDouble share = e / (1.0 + sign * product(pull, phi));

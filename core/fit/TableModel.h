@@ -5,8 +5,8 @@
 
 namespace spanwright {
 
-/// Linear between knots at the set points: least squares in hat functions, which gives the mean of each set point where its
-/// abscissae are equal. Beyond the ends the outer segments go on.
+/// Linear between knots at the set points: least squares in hat functions, which gives the mean of each set point where
+/// its abscissae are equal. Beyond the ends the outer segments go on.
 class TableModel final : public ModelOf<TableModel> {
   public:
     /// `knots` in rising order, at least two.

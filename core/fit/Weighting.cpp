@@ -76,7 +76,8 @@ struct Spread {
     double sd = 0, freedom = 0, place = 0;
 };
 
-std::vector<Spread> spreadAtSetPoints(const Sample& sample, const PairColumn& x, const std::vector<DoubleDouble>& residual) {
+std::vector<Spread> spreadAtSetPoints(const Sample& sample, const PairColumn& x,
+                                      const std::vector<DoubleDouble>& residual) {
     std::vector<DoubleDouble> sum(sample.groupValue.size(), 0.0), square(sample.groupValue.size(), 0.0);
     std::vector<Spread> spread(sample.groupValue.size());
     for (std::size_t i = 0; i < sample.size(); ++i) {
@@ -113,7 +114,8 @@ struct Straight {
     double c0 = 0, c1 = 0;
 };
 
-/// Share of the pooled standard deviation below which c0 is not taken, so that no reading counts as perfect (common practice).
+/// Share of the pooled standard deviation below which c0 is not taken, so that no reading counts as perfect (common
+/// practice).
 constexpr double LeastConstant = 0.1;
 
 double pooled(const std::vector<Spread>& points) {
@@ -144,7 +146,8 @@ Straight boundedLine(const std::vector<Spread>& points, const std::vector<double
 
 } // namespace
 
-Result<Weighting> replicateWeighting(const Sample& sample, const PairColumn& x, const std::vector<DoubleDouble>& residual) {
+Result<Weighting> replicateWeighting(const Sample& sample, const PairColumn& x,
+                                     const std::vector<DoubleDouble>& residual) {
     const std::vector<Spread> spread = spreadAtSetPoints(sample, x, residual);
     std::vector<std::size_t> without;
     std::vector<double> u;
@@ -154,11 +157,13 @@ Result<Weighting> replicateWeighting(const Sample& sample, const PairColumn& x, 
             without.push_back(i);
     }
     if (!without.empty())
-        return Error(ErrorCode::UncertaintyNotPositive, {{"rows", rowsFact(sample, without)}, {"weights", "replicates"}});
+        return Error(ErrorCode::UncertaintyNotPositive,
+                     {{"rows", rowsFact(sample, without)}, {"weights", "replicates"}});
     return fromUncertainties(x, u);
 }
 
-Result<Weighting> varianceFunctionWeighting(const Sample& sample, const PairColumn& x, const std::vector<DoubleDouble>& residual) {
+Result<Weighting> varianceFunctionWeighting(const Sample& sample, const PairColumn& x,
+                                            const std::vector<DoubleDouble>& residual) {
     std::vector<Spread> points = spreadAtSetPoints(sample, x, residual);
     std::erase_if(points, [](const Spread& spread) { return !(spread.freedom > 0); });
     if (points.size() < 2)
@@ -183,7 +188,8 @@ Result<Weighting> varianceFunctionWeighting(const Sample& sample, const PairColu
             without.push_back(i);
     }
     if (!without.empty())
-        return Error(ErrorCode::UncertaintyNotPositive, {{"rows", rowsFact(sample, without)}, {"weights", "variance-function"}});
+        return Error(ErrorCode::UncertaintyNotPositive,
+                     {{"rows", rowsFact(sample, without)}, {"weights", "variance-function"}});
     return fromUncertainties(x, u);
 }
 
@@ -196,7 +202,8 @@ Result<Weighting> proportionalWeighting(const Sample& sample, const PairColumn& 
             atZero.push_back(i);
     }
     if (!atZero.empty())
-        return Error(ErrorCode::OutsideDomain, {{"function", "proportional weights"}, {"rows", rowsFact(sample, atZero)}});
+        return Error(ErrorCode::OutsideDomain,
+                     {{"function", "proportional weights"}, {"rows", rowsFact(sample, atZero)}});
     return fromUncertainties(x, u);
 }
 

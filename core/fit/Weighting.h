@@ -29,21 +29,25 @@ struct Weighting {
     VarianceProfile profile;              ///< u²
 };
 
-/// Weights from the stated standard uncertainties of the ordinate. A new reading is taken to have the uncertainty that was stated
-/// at its place. Errors: UncertaintyMissing, UncertaintyNotPositive (facts: rows).
+/// Weights from the stated standard uncertainties of the ordinate. A new reading is taken to have the uncertainty that
+/// was stated at its place. Errors: UncertaintyMissing, UncertaintyNotPositive (facts: rows).
 Result<Weighting> statedWeighting(const Sample& sample, const PairColumn& x, const PairColumn& u);
 
-/// Weights from the spread of the readings at each set point: u_i is the standard deviation there of the residuals of an
-/// unweighted fit, so that a reference that wanders about its set point does not count as spread. Errors: UncertaintyNotPositive
-/// (facts: rows) where a set point has fewer than two readings or no spread.
-Result<Weighting> replicateWeighting(const Sample& sample, const PairColumn& x, const std::vector<DoubleDouble>& residual);
+/// Weights from the spread of the readings at each set point: u_i is the standard deviation there of the residuals of
+/// an unweighted fit, so that a reference that wanders about its set point does not count as spread. Errors:
+/// UncertaintyNotPositive (facts: rows) where a set point has fewer than two readings or no spread.
+Result<Weighting> replicateWeighting(const Sample& sample, const PairColumn& x,
+                                     const std::vector<DoubleDouble>& residual);
 
-/// Weights from u(x) = c0 + c1 |x|, c1 ≥ 0 and c0 at least a tenth of the pooled spread, fitted to the standard deviations at the set points with weights ν/u² (the
-/// variance of a standard deviation is u²/2ν), iterated. Errors: TooFewSetPoints (facts: needed, got)
-/// with fewer than two set points that have replicates, UncertaintyNotPositive (facts: rows) without any spread.
-Result<Weighting> varianceFunctionWeighting(const Sample& sample, const PairColumn& x, const std::vector<DoubleDouble>& residual);
+/// Weights from u(x) = c0 + c1 |x|, c1 ≥ 0 and c0 at least a tenth of the pooled spread, fitted to the standard
+/// deviations at the set points with weights ν/u² (the variance of a standard deviation is u²/2ν), iterated. Errors:
+/// TooFewSetPoints (facts: needed, got) with fewer than two set points that have replicates, UncertaintyNotPositive
+/// (facts: rows) without any spread.
+Result<Weighting> varianceFunctionWeighting(const Sample& sample, const PairColumn& x,
+                                            const std::vector<DoubleDouble>& residual);
 
-/// Weights from u ∝ |x| (ISO 11095:1996, proportional residual standard deviation). Error: OutsideDomain (facts: rows) at x = 0.
+/// Weights from u ∝ |x| (ISO 11095:1996, proportional residual standard deviation). Error: OutsideDomain (facts: rows)
+/// at x = 0.
 Result<Weighting> proportionalWeighting(const Sample& sample, const PairColumn& x);
 
 /// Data rows from 1 as a fact, "3, 7, 12, …".

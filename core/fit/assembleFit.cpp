@@ -13,8 +13,8 @@ namespace spanwright {
 
 namespace {
 
-/// Total about the weighted mean (or zero), regression as Σ w (ŷ − centre)², both free of cancellation. Where residuals and fitted
-/// values are not orthogonal (iterated fits), regression is what the residual leaves of the total.
+/// Total about the weighted mean (or zero), regression as Σ w (ŷ − centre)², both free of cancellation. Where residuals
+/// and fitted values are not orthogonal (iterated fits), regression is what the residual leaves of the total.
 SumsOfSquares sumsOf(const FitTask& task, const LinearSolution& solution) {
     const bool orthogonal = task.model->linear() && task.choices.method == Method::LeastSquares;
     const std::size_t n = task.sample.size();
@@ -63,8 +63,9 @@ void fillCoefficients(Fit& fit, const FitTask& task, const SolvedModel& solved, 
             for (std::size_t k = 0; k < p; ++k)
                 half[i * p + j] += reported.jacobian[i * p + k] * inner[k * p + j];
     const bool indication = task.direction == FitDirection::Indication;
-    const auto names = coefficientNames(task.choices.function, indication ? task.sample.referenceUnit : task.sample.indicationUnit,
-                                        indication ? task.sample.indicationUnit : task.sample.referenceUnit, p);
+    const auto names =
+        coefficientNames(task.choices.function, indication ? task.sample.referenceUnit : task.sample.indicationUnit,
+                         indication ? task.sample.indicationUnit : task.sample.referenceUnit, p);
     fit.covariance.resize(p * p);
     for (std::size_t i = 0; i < p; ++i) {
         DoubleDouble variance = 0.0;
@@ -78,12 +79,13 @@ void fillCoefficients(Fit& fit, const FitTask& task, const SolvedModel& solved, 
         }
         const double value = toDouble(reported.value[i]);
         const double u = variance.isnan() ? std::numeric_limits<double>::quiet_NaN() : toDouble(sqrt(variance));
-        fit.coefficients.push_back({names[i].name, names[i].unit, value, u, value - fit.coverageFactor * u, value + fit.coverageFactor * u});
+        fit.coefficients.push_back(
+            {names[i].name, names[i].unit, value, u, value - fit.coverageFactor * u, value + fit.coverageFactor * u});
     }
 }
 
-/// Residuals below 10⁻²⁵ of the largest ordinate are the rounding of 31-digit arithmetic: readings typed with up to 18 digits that
-/// do not lie on the function leave at least 10⁻¹⁸.
+/// Residuals below 10⁻²⁵ of the largest ordinate are the rounding of 31-digit arithmetic: readings typed with up to 18
+/// digits that do not lie on the function leave at least 10⁻¹⁸.
 void dropRounding(LinearSolution& solution, const PairColumn& y) {
     DoubleDouble largest = 0.0, largestOrdinate = 0.0;
     for (std::size_t i = 0; i < y.size(); ++i) {
@@ -121,7 +123,8 @@ void describe(Fit& fit, const FitTask& task) {
     fit.function = task.choices.function;
     fit.direction = task.direction;
     fit.method = task.choices.method;
-    const bool stated = task.choices.covariance == CovarianceScale::Stated || task.choices.method == Method::BothUncertain;
+    const bool stated =
+        task.choices.covariance == CovarianceScale::Stated || task.choices.method == Method::BothUncertain;
     fit.weights = stated ? Weights::Stated : task.choices.weights;
     fit.covarianceScale = task.choices.covariance;
     fit.coverage = task.choices.coverage.toDouble();
@@ -133,8 +136,8 @@ void describe(Fit& fit, const FitTask& task) {
     const int df = static_cast<int>(fit.used - task.model->terms());
     fit.degreesOfFreedom = df;
     const double tail = toDouble((1.0 - task.choices.coverage.toDoubleDouble()) / 2.0);
-    fit.coverageFactor = fit.covarianceScale == CovarianceScale::Stated ? normalQuantileAbove(tail) : studentQuantileAbove(tail, df);
-
+    fit.coverageFactor =
+        fit.covarianceScale == CovarianceScale::Stated ? normalQuantileAbove(tail) : studentQuantileAbove(tail, df);
 }
 
 } // namespace
@@ -147,7 +150,8 @@ Fit assembleFigures(const FitTask& task, SolvedModel solved, const SumsOfSquares
     const DoubleDouble scale = covarianceScale(task, solved, df);
     fillCoefficients(fit, task, solved, scale);
     fillSums(fit, task, solution, sums);
-    fit.residualSd = df > 0 ? toDouble(sqrt(solution.residualSs / static_cast<double>(df))) : std::numeric_limits<double>::quiet_NaN();
+    fit.residualSd = df > 0 ? toDouble(sqrt(solution.residualSs / static_cast<double>(df)))
+                            : std::numeric_limits<double>::quiet_NaN();
     if (solved.robustSd)
         fit.residualSd = *solved.robustSd;
     if (fit.weights == Weights::Stated) {
@@ -161,9 +165,11 @@ Fit assembleFigures(const FitTask& task, SolvedModel solved, const SumsOfSquares
     if (!fit.convergence.reached)
         fit.warnings.push_back({WarningCode::NotConverged, {{"reason", fit.convergence.reason}}});
     if (task.choices.method == Method::Robust)
-        fit.warnings.push_back({WarningCode::ApproximateMethod, {{"figure", "standard_uncertainty"}, {"method", "robust"}}});
+        fit.warnings.push_back(
+            {WarningCode::ApproximateMethod, {{"figure", "standard_uncertainty"}, {"method", "robust"}}});
     fit.weighedDown = std::move(solved.weighedDown);
-    fit.curve = std::make_shared<ModelCurve>(task.model, solved.beta, solution.inverseRoot, toDouble(scale), task.weighting.profile);
+    fit.curve = std::make_shared<ModelCurve>(task.model, solved.beta, solution.inverseRoot, toDouble(scale),
+                                             task.weighting.profile);
     return fit;
 }
 

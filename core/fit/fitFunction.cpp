@@ -56,8 +56,9 @@ Result<Weighting> chosenWeighting(const FitTask& task) {
     const auto even = solveModel(task);
     if (!even)
         return even.error();
-    return task.choices.weights == Weights::Replicates ? replicateWeighting(task.sample, task.x, even->linear.residual)
-                                                       : varianceFunctionWeighting(task.sample, task.x, even->linear.residual);
+    return task.choices.weights == Weights::Replicates
+               ? replicateWeighting(task.sample, task.x, even->linear.residual)
+               : varianceFunctionWeighting(task.sample, task.x, even->linear.residual);
 }
 
 Result<SolvedModel> solve(FitTask& task) {
@@ -72,7 +73,9 @@ Result<SolvedModel> solve(FitTask& task) {
 
 } // namespace
 
-FitDirection directionOf(const Choices& choices) { return factsOf(choices.function.family).only.value_or(choices.fit); }
+FitDirection directionOf(const Choices& choices) {
+    return factsOf(choices.function.family).only.value_or(choices.fit);
+}
 
 Result<FitOutcome> fitFunction(const Sample& sample, const Choices& choices) {
     if (sample.size() == 0)

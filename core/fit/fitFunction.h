@@ -12,16 +12,16 @@ struct FitOutcome {
     Residuals residuals;
 };
 
-/// Fits the chosen calibration function: min Σ w (y − f(x))², y the indication (or the reference, when that is what the function
-/// gives). Coefficients, covariance and sums of squares are computed in double-double and rounded once.
+/// Fits the chosen calibration function: min Σ w (y − f(x))², y the indication (or the reference, when that is what the
+/// function gives). Coefficients, covariance and sums of squares are computed in double-double and rounded once.
 ///
-/// Covariance: s²(AᵀWA)⁻¹ with s² = Σ w e²/(n − p), or (AᵀWA)⁻¹ where the stated uncertainties are taken as they are (GUM H.3;
-/// ISO/TS 28037:2010, 6 and annex E). Coefficient intervals and bands multiply by Student's quantile with n − p degrees of
-/// freedom, or by the normal one.
+/// Covariance: s²(AᵀWA)⁻¹ with s² = Σ w e²/(n − p), or (AᵀWA)⁻¹ where the stated uncertainties are taken as they are
+/// (GUM H.3; ISO/TS 28037:2010, 6 and annex E). Coefficient intervals and bands multiply by Student's quantile with n −
+/// p degrees of freedom, or by the normal one.
 ///
 /// Errors: NoReadings; TooFewReadings, TooFewSetPoints (facts: needed, got); ReferencesAllEqual; UncertaintyMissing,
-/// UncertaintyNotPositive, OutsideDomain (facts: rows, data rows from 1); RankLost (facts: terms); NoConvergence (facts: reason);
-/// FunctionUnknown (facts: text).
+/// UncertaintyNotPositive, OutsideDomain (facts: rows, data rows from 1); RankLost (facts: terms); NoConvergence
+/// (facts: reason); FunctionUnknown (facts: text).
 Result<FitOutcome> fitFunction(const Sample& sample, const Choices& choices);
 
 /// The direction in which the chosen function is fitted: some sensor equations give one quantity only.

@@ -74,7 +74,9 @@ std::optional<FitOutcome> fitMany(const Sample& sample, const Choices& choices) 
                        indication ? sample.uReference : sample.uIndication,
                        indication ? sample.uIndication : sample.uReference,
                        std::make_shared<PolynomialModel>(static_cast<std::size_t>(shape->degree),
-                                                         shape->constant == StreamedConstant::With ? PolynomialConstant::With : PolynomialConstant::Without,
+                                                         shape->constant == StreamedConstant::With
+                                                             ? PolynomialConstant::With
+                                                             : PolynomialConstant::Without,
                                                          map.centre(), map.half()),
                        {},
                        place(streamed->sums.lowX),

@@ -7,8 +7,8 @@
 
 namespace spanwright {
 
-/// Polynomials with equal weights through very many readings on exact grids, by StreamedFit; empty where another function or
-/// method is chosen, or where the streams would lose digits.
+/// Polynomials with equal weights through very many readings on exact grids, by StreamedFit; empty where another
+/// function or method is chosen, or where the streams would lose digits.
 std::optional<FitOutcome> fitMany(const Sample& sample, const Choices& choices);
 
 } // namespace spanwright

@@ -31,7 +31,9 @@ Made polynomial(int degree, PolynomialConstant constant, const ModelContext& con
 }
 
 /// 0 °C in the unit in which temperatures are typed: kelvin when it says so, else degrees Celsius.
-double zeroCelsius(const ModelContext& context) { return context.sample->referenceUnit == "K" ? 273.15 : 0.0; }
+double zeroCelsius(const ModelContext& context) {
+    return context.sample->referenceUnit == "K" ? 273.15 : 0.0;
+}
 
 /// ln(10)·R·T/F at 298.15 K, 59.159 mV, with R and F as fixed by the SI (CODATA 2018), in the unit of the indication.
 double nernstSlope(const ModelContext& context) {
@@ -91,8 +93,8 @@ Result<Made> makeModel(const FunctionChoice& choice, const ModelContext& context
         return Made(std::make_unique<ExponentialApproach>(context.low, context.high));
     case FunctionFamily::CallendarVanDusen: {
         const bool below = context.low < zeroCelsius(context);
-        return Made(std::make_unique<CallendarVanDusen>(below ? CallendarVanDusen::Ranges::Both : CallendarVanDusen::Ranges::FromZeroUp,
-                                                        zeroCelsius(context)));
+        return Made(std::make_unique<CallendarVanDusen>(
+            below ? CallendarVanDusen::Ranges::Both : CallendarVanDusen::Ranges::FromZeroUp, zeroCelsius(context)));
     }
     case FunctionFamily::ThermistorB:
         return Made(std::make_unique<ThermistorB>(zeroCelsius(context)));

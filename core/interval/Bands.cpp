@@ -44,8 +44,9 @@ std::optional<int> degreeOf(const FunctionChoice& function) {
     }
 }
 
-/// Chebyshev coefficients of a polynomial of degree m over [centre − half, centre + half], from its values at m + 1 points
-/// (Trefethen, Approximation Theory and Approximation Practice, chapter 3: the discrete cosine sum at the roots of T_{m+1}).
+/// Chebyshev coefficients of a polynomial of degree m over [centre − half, centre + half], from its values at m + 1
+/// points (Trefethen, Approximation Theory and Approximation Practice, chapter 3: the discrete cosine sum at the roots
+/// of T_{m+1}).
 template <class F>
 std::vector<double> chebyshevCoefficients(int m, double centre, double half, const F& f) {
     std::vector<double> coefficients(static_cast<std::size_t>(m) + 1, 0.0);
@@ -71,17 +72,21 @@ bool evenNoise(const Fit& fit) {
 double simultaneousFactor(const Fit& fit) {
     const double tail = 1.0 - fit.coverage;
     const auto p = static_cast<double>(fit.terms());
-    return fit.covarianceScale == CovarianceScale::Stated ? std::sqrt(chiSquaredQuantileAbove(tail, p))
-                                                          : std::sqrt(p * fQuantileAbove(tail, p, fit.degreesOfFreedom));
+    return fit.covarianceScale == CovarianceScale::Stated
+               ? std::sqrt(chiSquaredQuantileAbove(tail, p))
+               : std::sqrt(p * fQuantileAbove(tail, p, fit.degreesOfFreedom));
 }
 
-BandPoint bandAt(const Fit& fit, double x) { return bandWith(fit, x, simultaneousFactor(fit)); }
+BandPoint bandAt(const Fit& fit, double x) {
+    return bandWith(fit, x, simultaneousFactor(fit));
+}
 
 Interval toleranceAt(const Fit& fit, double x, double share) {
     const double value = fit.curve->value(x), noise = fit.curve->readingVariance(x);
-    const double factor = fit.covarianceScale == CovarianceScale::Stated
-                              ? std::numeric_limits<double>::quiet_NaN()
-                              : toleranceFactorTwoSided(noise / fit.curve->variance(x), fit.degreesOfFreedom, share, fit.coverage);
+    const double factor =
+        fit.covarianceScale == CovarianceScale::Stated
+            ? std::numeric_limits<double>::quiet_NaN()
+            : toleranceFactorTwoSided(noise / fit.curve->variance(x), fit.degreesOfFreedom, share, fit.coverage);
     return {value - factor * std::sqrt(noise), value + factor * std::sqrt(noise)};
 }
 
@@ -98,16 +103,22 @@ std::vector<BandPoint> bandCurve(const Fit& fit, double low, double high, std::s
 
 BandColumns newReadingBand(const Fit& fit, std::span<const double> x) {
     const std::size_t n = x.size();
-    BandColumns band{std::vector<double>(n), std::vector<double>(n), std::vector<double>(n)};
+    const auto column = [n] { return std::make_unique_for_overwrite<double[]>(n); };
+    BandColumns band{n, column(), column(), column()};
     const std::optional<int> degree = degreeOf(fit.function);
     std::size_t done = 0;
     if (degree && *degree <= MostStreamedDegree && evenNoise(fit)) {
-        const double centre = fit.low + (fit.high - fit.low) / 2, half = fit.high > fit.low ? (fit.high - fit.low) / 2 : 1.0;
+        const double centre = fit.low + (fit.high - fit.low) / 2,
+                     half = fit.high > fit.low ? (fit.high - fit.low) / 2 : 1.0;
         const auto c = chebyshevCoefficients(*degree, centre, half, [&](double at) { return fit.curve->value(at); });
-        const auto h = chebyshevCoefficients(2 * *degree, centre, half, [&](double at) { return fit.curve->variance(at); });
+        const auto h =
+            chebyshevCoefficients(2 * *degree, centre, half, [&](double at) { return fit.curve->variance(at); });
         done = n - n % 4;
-        const BandBlock block{x.data(), done, centre, 1 / half, c.data(), h.data(), fit.curve->readingVariance(centre), fit.coverageFactor};
-        streamKernel().band[static_cast<std::size_t>(*degree)](block, band.value.data(), band.low.data(), band.high.data());
+        const BandBlock block{
+            x.data(),          done, centre, 1 / half, c.data(), h.data(), fit.curve->readingVariance(centre),
+            fit.coverageFactor};
+        streamKernel().band[static_cast<std::size_t>(*degree)](block, band.value.get(), band.low.get(),
+                                                               band.high.get());
     }
     for (std::size_t i = done; i < n; ++i) {
         const BandPoint point = bandWith(fit, x[i], 0.0);

@@ -3,6 +3,7 @@
 
 #include "core/fit/Fit.h"
 
+#include <memory>
 #include <span>
 #include <vector>
 
@@ -23,23 +24,27 @@ struct BandPoint {
 };
 
 BandPoint bandAt(const Fit& fit, double x);
-/// Where at least `share` of all readings at x lie, with the fit's coverage as confidence: ŷ ± k σ(x) with the exact two-sided factor
-/// for an effective number of readings σ²/u²(ŷ) (Wallis 1951). NaN where the uncertainties are taken as they are.
+/// Where at least `share` of all readings at x lie, with the fit's coverage as confidence: ŷ ± k σ(x) with the exact
+/// two-sided factor for an effective number of readings σ²/u²(ŷ) (Wallis 1951). NaN where the uncertainties are taken
+/// as they are.
 Interval toleranceAt(const Fit& fit, double x, double share);
 /// `points` equidistant abscissae from low to high.
 std::vector<BandPoint> bandCurve(const Fit& fit, double low, double high, std::size_t points);
 
-/// Quantile that multiplies a standard uncertainty so that an interval holds for all coefficients and all values of the function
-/// together: √(p F), or √χ² where the uncertainties are taken as they are (Working and Hotelling 1929; Scheffé 1953).
+/// Quantile that multiplies a standard uncertainty so that an interval holds for all coefficients and all values of the
+/// function together: √(p F), or √χ² where the uncertainties are taken as they are (Working and Hotelling 1929; Scheffé
+/// 1953).
 double simultaneousFactor(const Fit& fit);
 
-/// Value and band for one new reading at very many abscissae, as columns.
+/// Value and band for one new reading at very many abscissae, as columns of n numbers (not vectors, which would be
+/// filled twice).
 struct BandColumns {
-    std::vector<double> value, low, high;
+    std::size_t n = 0;
+    std::unique_ptr<double[]> value, low, high;
 };
 
-/// For polynomials with the same noise everywhere, value and variance are polynomials: found once from values at the Chebyshev points,
-/// then one recurrence a point. Other functions are asked point by point.
+/// For polynomials with the same noise everywhere, value and variance are polynomials: found once from values at the
+/// Chebyshev points, then one recurrence a point. Other functions are asked point by point.
 BandColumns newReadingBand(const Fit& fit, std::span<const double> x);
 
 } // namespace spanwright

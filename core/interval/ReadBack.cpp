@@ -20,7 +20,9 @@ std::string textOf(double value) {
     return text;
 }
 
-Warning warn(WarningCode code, double value) { return {code, {{"value", textOf(value)}}}; }
+Warning warn(WarningCode code, double value) {
+    return {code, {{"value", textOf(value)}}};
+}
 
 /// One indication, or the mean of some, that is to be read back.
 struct Asked {
@@ -60,7 +62,8 @@ void straightInterval(const Asked& asked, ReadBackAnswer& answer) {
     const Fit& fit = asked.fit;
     const double c = fit.low + (fit.high - fit.low) / 2, h = fit.high > fit.low ? (fit.high - fit.low) / 2 : 1.0;
     const double b = fit.curve->derivative(c), k2 = fit.coverageFactor * fit.coverageFactor;
-    const double middle = fit.curve->variance(c), above = fit.curve->variance(c + h), below = fit.curve->variance(c - h);
+    const double middle = fit.curve->variance(c), above = fit.curve->variance(c + h),
+                 below = fit.curve->variance(c - h);
     const double vab = (above - below) / (4 * h), vbb = ((above - middle) + (below - middle)) / (2 * h * h);
     const double distance = asked.indication - fit.curve->value(c);
     const double a2 = b * b - k2 * vbb, a1 = b * distance + k2 * vab;
@@ -149,7 +152,8 @@ ReadBackAnswer readBack(const Fit& fit, double indication, std::optional<int> re
             return answer;
         }
         const double middle = fit.low + (fit.high - fit.low) / 2;
-        std::stable_sort(roots.begin(), roots.end(), [&](double a, double b) { return std::fabs(a - middle) < std::fabs(b - middle); });
+        std::stable_sort(roots.begin(), roots.end(),
+                         [&](double a, double b) { return std::fabs(a - middle) < std::fabs(b - middle); });
         const double x = roots.front();
         answer.reference = x;
         answer.others.assign(roots.begin() + 1, roots.end());

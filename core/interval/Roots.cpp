@@ -14,7 +14,9 @@ namespace {
 
 constexpr int Steps = 400;
 
-double along(double from, double to, int step) { return step == Steps ? to : from + (to - from) * step / Steps; }
+double along(double from, double to, int step) {
+    return step == Steps ? to : from + (to - from) * step / Steps;
+}
 
 } // namespace
 
@@ -49,8 +51,10 @@ double rootBetween(const RealFunction& f, double a, double b) {
     if ((fa > 0) == (fb > 0))
         return std::fabs(fa) < std::fabs(fb) ? a : b;
     std::uintmax_t iterations = 200;
-    const auto [low, high] = a < b ? boost::math::tools::toms748_solve(f, a, b, fa, fb, boost::math::tools::eps_tolerance<double>(53), iterations)
-                                   : boost::math::tools::toms748_solve(f, b, a, fb, fa, boost::math::tools::eps_tolerance<double>(53), iterations);
+    const auto [low, high] = a < b ? boost::math::tools::toms748_solve(
+                                         f, a, b, fa, fb, boost::math::tools::eps_tolerance<double>(53), iterations)
+                                   : boost::math::tools::toms748_solve(
+                                         f, b, a, fb, fa, boost::math::tools::eps_tolerance<double>(53), iterations);
     return low + (high - low) / 2;
 }
 
@@ -71,7 +75,8 @@ std::vector<double> rootsIn(const RealFunction& f, double low, double high) {
             // |f| has a least value near xa without a change of sign on the grid: it may touch or cross zero twice.
             const double sign = fa > 0 ? 1.0 : -1.0;
             const double xBefore = along(low, high, step - 2);
-            const auto [x, least] = boost::math::tools::brent_find_minima([&](double at) { return sign * f(at); }, xBefore, xb, 52);
+            const auto [x, least] =
+                boost::math::tools::brent_find_minima([&](double at) { return sign * f(at); }, xBefore, xb, 52);
             if (least < 0) {
                 add(rootBetween(f, xBefore, x));
                 add(rootBetween(f, x, xb));

@@ -9,7 +9,8 @@
 
 namespace spanwright {
 
-/// Where answers and ends of intervals are sought: the calibrated range and a span on either side, within the function's domain.
+/// Where answers and ends of intervals are sought: the calibrated range and a span on either side, within the
+/// function's domain.
 struct RangeOfSearch {
     double low = 0, high = 0;
 };
@@ -26,8 +27,8 @@ std::optional<Crossing> firstCrossing(const RealFunction& f, double from, double
 /// The root between two places of different sign, to the last bits (Alefeld, Potra and Shi 1995, algorithm 748).
 double rootBetween(const RealFunction& f, double a, double b);
 
-/// Every root of a smooth function in [low, high], in rising order: sign changes on a grid of 400 steps, with touching extremes
-/// refined so that a pair of roots between two grid points is not missed.
+/// Every root of a smooth function in [low, high], in rising order: sign changes on a grid of 400 steps, with touching
+/// extremes refined so that a pair of roots between two grid points is not missed.
 std::vector<double> rootsIn(const RealFunction& f, double low, double high);
 
 } // namespace spanwright

@@ -16,8 +16,12 @@ namespace {
 
 constexpr double NoValue = std::numeric_limits<double>::quiet_NaN();
 
-double normalBelow(double z) { return 0.5 * std::erfc(-z / std::numbers::sqrt2); }
-double normalDensity(double z) { return std::exp(-z * z / 2) / std::sqrt(2 * std::numbers::pi); }
+double normalBelow(double z) {
+    return 0.5 * std::erfc(-z / std::numbers::sqrt2);
+}
+double normalDensity(double z) {
+    return std::exp(-z * z / 2) / std::sqrt(2 * std::numbers::pi);
+}
 
 /// Half-width r about a centre at distance d from the mean (in σ) that holds `share`.
 double halfWidthHolding(double share, double d) {
@@ -34,8 +38,8 @@ double halfWidthHolding(double share, double d) {
     return r;
 }
 
-/// P(at least `share` is held) for a factor k: the trapezoidal rule on the line converges faster than any power for the normal
-/// density (Trefethen and Weideman 2014, SIAM Review 56, 385).
+/// P(at least `share` is held) for a factor k: the trapezoidal rule on the line converges faster than any power for the
+/// normal density (Trefethen and Weideman 2014, SIAM Review 56, 385).
 double probabilityHeld(double k, double effective, double df, double share) {
     constexpr double Step = 0.25, Reach = 9;
     double sum = 0;

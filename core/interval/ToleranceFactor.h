@@ -3,9 +3,9 @@
 
 namespace spanwright {
 
-/// Factors of a statistical tolerance interval mean ± k s of a normal variable (ISO 16269-6:2014): with probability `confidence` it
-/// holds at least the share `share` of all values. `effective` is n where the mean has variance σ²/n; on a calibration function it is
-/// σ²/u²(f(x)), at every abscissa its own. `df` are the degrees of freedom of s.
+/// Factors of a statistical tolerance interval mean ± k s of a normal variable (ISO 16269-6:2014): with probability
+/// `confidence` it holds at least the share `share` of all values. `effective` is n where the mean has variance σ²/n;
+/// on a calibration function it is σ²/u²(f(x)), at every abscissa its own. `df` are the degrees of freedom of s.
 
 /// One-sided: t'_{confidence}(df, δ)/√n with the noncentral t of δ = z_share·√n.
 double toleranceFactorOneSided(double effective, double df, double share, double confidence);

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-// How often intervals that are stated at 95 % hold the true value, over simulated calibrations: between 94.8 and 95.2 % where theory
-// is exact (three standard deviations of 10^5 trials are 0.2 %), and the difference where it is approximate.
+// How often intervals that are stated at 95 % hold the true value, over simulated calibrations: between 94.8 and 95.2 %
+// where theory is exact (three standard deviations of 10^5 trials are 0.2 %), and the difference where it is
+// approximate.
 #include "core/fit/fitFunction.h"
 #include "core/interval/Bands.h"
 #include "core/interval/ReadBack.h"
@@ -32,7 +33,7 @@ struct Scene {
     std::function<double(double)> truth;
     std::function<double(double)> sigma; ///< of the indication at x
     double sigmaReference;
-    double asked; ///< abscissa at which intervals are examined
+    double asked;                     ///< abscissa at which intervals are examined
     std::vector<double> coefficients; ///< true ones, as reported
 };
 
@@ -56,17 +57,127 @@ std::vector<Scene> scenes() {
     const auto Scaled = CovarianceScale::Residuals, Known = CovarianceScale::Stated;
     return {
         {"line", "line", Theory::Exact, LS, Weights::Equal, Scaled, x, line, even, 0, 7.3, {4, 1.6}},
-        {"line, 3 readings", "line", Theory::Exact, LS, Weights::Equal, Scaled, {0, 5, 10}, line, even, 0, 7.3, {4, 1.6}},
-        {"line, stated u, scaled", "line", Theory::Exact, LS, Weights::Stated, Scaled, x, line, growing, 0, 7.5, {4, 1.6}},
-        {"line, stated u, as they are", "line", Theory::Exact, LS, Weights::Stated, Known, x, line, growing, 0, 7.5, {4, 1.6}},
-        {"proportional", "proportional", Theory::Exact, LS, Weights::Equal, Scaled, inner, [](double v) { return 1.6 * v; }, even, 0, 7.3, {1.6}},
-        {"quadratic", "polynomial:2", Theory::Exact, LS, Weights::Equal, Scaled, x, quadratic, even, 0, 7.3, {4, 1.6, -0.02}},
-        {"logarithmic", "logarithmic", Theory::Exact, LS, Weights::Equal, Scaled, inner, [](double v) { return 2 + 3 * std::log10(v); }, even, 0, 7.3, {2, 3}},
-        {"line, both uncertain", "line", Theory::Approximate, Method::BothUncertain, Weights::Stated, Known, x, line, even, 0.03, 7.3, {4, 1.6}},
-        {"line, variance function", "line", Theory::Approximate, LS, Weights::VarianceFunction, Scaled, evenly(0, 10, 5, 4), line, growing, 0, 7.5, {4, 1.6}},
-        {"line, robust", "line", Theory::Approximate, Method::Robust, Weights::Equal, Scaled, evenly(0, 10, 5, 4), line, even, 0, 7.3, {4, 1.6}},
+        {"line, 3 readings",
+         "line",
+         Theory::Exact,
+         LS,
+         Weights::Equal,
+         Scaled,
+         {0, 5, 10},
+         line,
+         even,
+         0,
+         7.3,
+         {4, 1.6}},
+        {"line, stated u, scaled",
+         "line",
+         Theory::Exact,
+         LS,
+         Weights::Stated,
+         Scaled,
+         x,
+         line,
+         growing,
+         0,
+         7.5,
+         {4, 1.6}},
+        {"line, stated u, as they are",
+         "line",
+         Theory::Exact,
+         LS,
+         Weights::Stated,
+         Known,
+         x,
+         line,
+         growing,
+         0,
+         7.5,
+         {4, 1.6}},
+        {"proportional",
+         "proportional",
+         Theory::Exact,
+         LS,
+         Weights::Equal,
+         Scaled,
+         inner,
+         [](double v) { return 1.6 * v; },
+         even,
+         0,
+         7.3,
+         {1.6}},
+        {"quadratic",
+         "polynomial:2",
+         Theory::Exact,
+         LS,
+         Weights::Equal,
+         Scaled,
+         x,
+         quadratic,
+         even,
+         0,
+         7.3,
+         {4, 1.6, -0.02}},
+        {"logarithmic",
+         "logarithmic",
+         Theory::Exact,
+         LS,
+         Weights::Equal,
+         Scaled,
+         inner,
+         [](double v) { return 2 + 3 * std::log10(v); },
+         even,
+         0,
+         7.3,
+         {2, 3}},
+        {"line, both uncertain",
+         "line",
+         Theory::Approximate,
+         Method::BothUncertain,
+         Weights::Stated,
+         Known,
+         x,
+         line,
+         even,
+         0.03,
+         7.3,
+         {4, 1.6}},
+        {"line, variance function",
+         "line",
+         Theory::Approximate,
+         LS,
+         Weights::VarianceFunction,
+         Scaled,
+         evenly(0, 10, 5, 4),
+         line,
+         growing,
+         0,
+         7.5,
+         {4, 1.6}},
+        {"line, robust",
+         "line",
+         Theory::Approximate,
+         Method::Robust,
+         Weights::Equal,
+         Scaled,
+         evenly(0, 10, 5, 4),
+         line,
+         even,
+         0,
+         7.3,
+         {4, 1.6}},
         {"power", "power", Theory::Approximate, LS, Weights::Equal, Scaled, inner, power, even, 0, 7.3, {3.5, 0.62}},
-        {"exponential approach", "exponential-approach", Theory::Approximate, LS, Weights::Equal, Scaled, x, approach, even, 0, 5.3, {9.5, 8, 4}},
+        {"exponential approach",
+         "exponential-approach",
+         Theory::Approximate,
+         LS,
+         Weights::Equal,
+         Scaled,
+         x,
+         approach,
+         even,
+         0,
+         5.3,
+         {9.5, 8, 4}},
     };
 }
 
@@ -104,7 +215,9 @@ struct Count {
     [[nodiscard]] double percent() const { return 100.0 * static_cast<double>(held) / static_cast<double>(tried); }
 };
 
-bool within(double value, double low, double high) { return value >= low && value <= high; }
+bool within(double value, double low, double high) {
+    return value >= low && value <= high;
+}
 
 /// The readings of a scene, fitted `trials` times; counts by kind of interval, in the order of their names.
 std::map<std::string, Count> countsOf(const Scene& scene, int trials, std::size_t& failed) {
@@ -125,7 +238,8 @@ std::map<std::string, Count> countsOf(const Scene& scene, int trials, std::size_
         }
         const Fit& fit = outcome->fit;
         for (std::size_t k = 0; k < scene.coefficients.size(); ++k)
-            counts["coefficient " + fit.coefficients[k].name].add(within(scene.coefficients[k], fit.coefficients[k].low, fit.coefficients[k].high));
+            counts["coefficient " + fit.coefficients[k].name].add(
+                within(scene.coefficients[k], fit.coefficients[k].low, fit.coefficients[k].high));
         const double x = scene.asked, truth = scene.truth(x), sigma = scene.sigma(x);
         const double reading = truth + sigma * normal(random);
         const BandPoint band = bandAt(fit, x);
@@ -145,7 +259,9 @@ std::map<std::string, Count> countsOf(const Scene& scene, int trials, std::size_
         counts["simultaneous (at least)"].add(all);
         if (scene.theory == Theory::Exact && trial % 20 == 0 && scene.covariance == CovarianceScale::Residuals) {
             const Interval tolerance = toleranceAt(fit, x, 0.9);
-            const double share = (std::erf((tolerance.high - truth) / sigma / std::sqrt(2.0)) - std::erf((tolerance.low - truth) / sigma / std::sqrt(2.0))) / 2;
+            const double share = (std::erf((tolerance.high - truth) / sigma / std::sqrt(2.0)) -
+                                  std::erf((tolerance.low - truth) / sigma / std::sqrt(2.0))) /
+                                 2;
             counts["tolerance of 90 % (1 in 20)"].add(share >= 0.9);
         }
     }
@@ -159,15 +275,18 @@ int main(int argc, char** argv) {
     bool honest = true;
     for (const Scene& scene : scenes()) {
         std::size_t failed = 0;
-        std::printf("%s (%s), %d calibrations\n", scene.words, scene.theory == Theory::Exact ? "exact" : "approximate", trials);
+        std::printf("%s (%s), %d calibrations\n", scene.words, scene.theory == Theory::Exact ? "exact" : "approximate",
+                    trials);
         for (const auto& [kind, count] : countsOf(scene, trials, failed)) {
-            const double percent = count.percent(), deviation = std::sqrt(95.0 * 5.0 / static_cast<double>(count.tried));
+            const double percent = count.percent(),
+                         deviation = std::sqrt(95.0 * 5.0 / static_cast<double>(count.tried));
             const bool conservative = kind.find("at least") != std::string::npos;
             const double room = std::max(0.2, 3 * deviation);
             const bool fine = std::fabs(percent - 95) <= room || (conservative && percent >= 95 - room);
             if (scene.theory == Theory::Exact && !fine)
                 honest = false;
-            std::printf("    %-34s %6.2f %%  %+.2f%s\n", kind.c_str(), percent, percent - 95, scene.theory == Theory::Exact && !fine ? "   NOT HELD" : "");
+            std::printf("    %-34s %6.2f %%  %+.2f%s\n", kind.c_str(), percent, percent - 95,
+                        scene.theory == Theory::Exact && !fine ? "   NOT HELD" : "");
         }
         if (failed > 0)
             std::printf("    not fitted: %zu\n", failed);

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-// Accuracy and speed of the fit of very many readings: digits against the same fit in 113-bit arithmetic, and times as ratios
-// against summing the two columns, against gsl_fit_linear and against Eigen's column-pivoting QR, all in one run.
+// Accuracy and speed of the fit of very many readings: digits against the same fit in 113-bit arithmetic, and times as
+// ratios against summing the two columns, against gsl_fit_linear and against Eigen's column-pivoting QR, all in one
+// run.
 #include "core/fit/StreamedFit.h"
 #include "core/fit/fitFunction.h"
 #include "core/interval/Bands.h"
@@ -9,7 +10,6 @@
 #include <gsl/gsl_fit.h>
 
 #include <algorithm>
-#include <chrono>
 #include <cmath>
 #include <cstdio>
 #include <cstdlib>
@@ -18,21 +18,28 @@
 #include <random>
 #include <vector>
 
+#include <time.h>
+
 using namespace spanwright;
 
 namespace {
 
 using Quad = __float128;
 
+/// Least time of some runs, of the processor for this thread alone: other programs on the machine then hardly show.
 double seconds(const std::function<void()>& work, int repeats) {
-    std::vector<double> times;
+    const auto now = [] {
+        timespec time{};
+        clock_gettime(CLOCK_THREAD_CPUTIME_ID, &time);
+        return static_cast<double>(time.tv_sec) + 1e-9 * static_cast<double>(time.tv_nsec);
+    };
+    double least = 1e9;
     for (int i = 0; i < repeats; ++i) {
-        const auto start = std::chrono::steady_clock::now();
+        const double start = now();
         work();
-        times.push_back(std::chrono::duration<double>(std::chrono::steady_clock::now() - start).count());
+        least = std::min(least, now() - start);
     }
-    std::sort(times.begin(), times.end());
-    return times[times.size() / 2];
+    return least;
 }
 
 struct Data {
@@ -71,7 +78,8 @@ Quad quadRoot(Quad value) {
     return root;
 }
 
-/// Coefficients as raw powers, their standard deviations and Σe², from normal equations in powers of the centred abscissa.
+/// Coefficients as raw powers, their standard deviations and Σe², from normal equations in powers of the centred
+/// abscissa.
 struct Exact {
     std::vector<Quad> b, sd;
     Quad ss = 0;
@@ -103,7 +111,8 @@ std::vector<Quad> inverseOf(std::vector<Quad> a, std::size_t p) {
 Exact exactFit(const Data& data, int degree) {
     const std::size_t p = static_cast<std::size_t>(degree) + 1, n = data.x.size();
     const auto [low, high] = std::minmax_element(data.x.begin(), data.x.end());
-    const Quad centre = (static_cast<Quad>(*low) + static_cast<Quad>(*high)) / 2, half = (static_cast<Quad>(*high) - static_cast<Quad>(*low)) / 2;
+    const Quad centre = (static_cast<Quad>(*low) + static_cast<Quad>(*high)) / 2,
+               half = (static_cast<Quad>(*high) - static_cast<Quad>(*low)) / 2;
     const Quad unit = quadPower(-data.yScale);
     std::vector<Quad> gram(p * p, 0), right(p, 0), power(p);
     const auto fill = [&](std::size_t i) {
@@ -138,7 +147,8 @@ Exact exactFit(const Data& data, int degree) {
     rows[0] = 1;
     for (std::size_t k = 1; k < p; ++k)
         for (std::size_t j = 0; j <= k; ++j)
-            rows[k * p + j] = shift * rows[(k - 1) * p + j] + (j > 0 ? scale * rows[(k - 1) * p + j - 1] : static_cast<Quad>(0));
+            rows[k * p + j] =
+                shift * rows[(k - 1) * p + j] + (j > 0 ? scale * rows[(k - 1) * p + j - 1] : static_cast<Quad>(0));
     for (std::size_t j = 0; j < p; ++j) {
         Quad value = 0, variance = 0;
         for (std::size_t k = 0; k < p; ++k) {
@@ -180,8 +190,8 @@ void accuracy(const char* words, double from, double span) {
             b = std::min(b, digits(outcome->fit.coefficients[k].value, exact.b[k]));
             sd = std::min(sd, digits(outcome->fit.coefficients[k].standardUncertainty, exact.sd[k]));
         }
-        std::printf("accuracy  %-14s %-13s coefficients %.1f  uncertainties %.1f  sum of squares %.1f digits\n", words, name, b, sd,
-                    digits(outcome->fit.residualSs, exact.ss));
+        std::printf("accuracy  %-14s %-13s coefficients %.1f  uncertainties %.1f  sum of squares %.1f digits\n", words,
+                    name, b, sd, digits(outcome->fit.residualSs, exact.ss));
     }
 }
 
@@ -201,13 +211,15 @@ volatile double sink;
 void speed(std::size_t n) {
     const Data data = makeData(n, 0, 100);
     const double reading = seconds([&] { sink = summed(data); }, 9);
-    std::printf("speed     n = %zu, summing both columns %.2f ns a reading\n", n, reading / static_cast<double>(n) * 1e9);
-    for (const int degree : {1, 2, 6})
-        for (const unsigned threads : {1u, 2u}) {
-            const double fit = seconds([&] { sink = toDouble(fitStreamed(data.gx(), data.gy(), degree, StreamedConstant::With, threads)->residualSs); }, 9);
-            std::printf("speed     degree %d, %u thread%s: full fit %.2f ns a reading, %.2f times summing\n", degree, threads, threads > 1 ? "s" : "",
-                        fit / static_cast<double>(n) * 1e9, fit / reading);
-        }
+    std::printf("speed     n = %zu, summing both columns %.2f ns a reading\n", n,
+                reading / static_cast<double>(n) * 1e9);
+    for (const int degree : {1, 2, 6}) {
+        const double fit = seconds(
+            [&] { sink = toDouble(fitStreamed(data.gx(), data.gy(), degree, StreamedConstant::With, 1)->residualSs); },
+            9);
+        std::printf("speed     degree %d, one thread: full fit %.2f ns a reading, %.2f times summing\n", degree,
+                    fit / static_cast<double>(n) * 1e9, fit / reading);
+    }
 }
 
 void againstLibraries(std::size_t n) {
@@ -218,27 +230,34 @@ void againstLibraries(std::size_t n) {
         y[i] = static_cast<double>(data.y[i]) * 1e-8;
     }
     const auto ours = [&](int degree) {
-        return seconds([&] { sink = toDouble(fitStreamed(data.gx(), data.gy(), degree, StreamedConstant::With, 1)->residualSs); }, 7);
+        return seconds(
+            [&] { sink = toDouble(fitStreamed(data.gx(), data.gy(), degree, StreamedConstant::With, 1)->residualSs); },
+            7);
     };
-    const double gsl = seconds([&] {
-        double c0, c1, v00, v01, v11, ss;
-        gsl_fit_linear(x.data(), 1, y.data(), 1, n, &c0, &c1, &v00, &v01, &v11, &ss);
-        sink = ss;
-    }, 5);
+    const double gsl = seconds(
+        [&] {
+            double c0, c1, v00, v01, v11, ss;
+            gsl_fit_linear(x.data(), 1, y.data(), 1, n, &c0, &c1, &v00, &v01, &v11, &ss);
+            sink = ss;
+        },
+        5);
     std::printf("against   line, n = %zu: gsl_fit_linear takes %.1f times as long\n", n, gsl / ours(1));
     for (const int degree : {1, 2, 6}) {
-        const double eigen = seconds([&] {
-            Eigen::MatrixXd a(static_cast<Eigen::Index>(n), degree + 1);
-            for (std::size_t i = 0; i < n; ++i) {
-                double power = 1;
-                for (int k = 0; k <= degree; ++k, power *= x[i])
-                    a(static_cast<Eigen::Index>(i), k) = power;
-            }
-            const Eigen::Map<const Eigen::VectorXd> right(y.data(), static_cast<Eigen::Index>(n));
-            const Eigen::VectorXd b = a.colPivHouseholderQr().solve(right);
-            sink = (right - a * b).squaredNorm();
-        }, 3);
-        std::printf("against   degree %d, n = %zu: column-pivoting QR takes %.0f times as long\n", degree, n, eigen / ours(degree));
+        const double eigen = seconds(
+            [&] {
+                Eigen::MatrixXd a(static_cast<Eigen::Index>(n), degree + 1);
+                for (std::size_t i = 0; i < n; ++i) {
+                    double power = 1;
+                    for (int k = 0; k <= degree; ++k, power *= x[i])
+                        a(static_cast<Eigen::Index>(i), k) = power;
+                }
+                const Eigen::Map<const Eigen::VectorXd> right(y.data(), static_cast<Eigen::Index>(n));
+                const Eigen::VectorXd b = a.colPivHouseholderQr().solve(right);
+                sink = (right - a * b).squaredNorm();
+            },
+            3);
+        std::printf("against   degree %d, n = %zu: column-pivoting QR takes %.0f times as long\n", degree, n,
+                    eigen / ours(degree));
     }
 }
 
@@ -246,20 +265,26 @@ void exclusion(std::size_t n) {
     const Data data = makeData(n, 0, 100);
     for (const int degree : {1, 2, 6}) {
         const StreamedFit all = *fitStreamed(data.gx(), data.gy(), degree, StreamedConstant::With, 1);
-        const double full = seconds([&] { sink = toDouble(fitStreamed(data.gx(), data.gy(), degree, StreamedConstant::With, 1)->residualSs); }, 5);
+        const double full = seconds(
+            [&] { sink = toDouble(fitStreamed(data.gx(), data.gy(), degree, StreamedConstant::With, 1)->residualSs); },
+            5);
         StreamedFit chain = all;
-        const double one = seconds([&] {
-            chain = all;
-            for (std::size_t i = 0; i < 1000; ++i)
-                chain = *changedBy(chain, StreamedChange::Exclude, data.x[i * 7], data.y[i * 7]);
-        }, 3) / 1000;
+        const double one = seconds(
+                               [&] {
+                                   chain = all;
+                                   for (std::size_t i = 0; i < 1000; ++i)
+                                       chain = *changedBy(chain, StreamedChange::Exclude, data.x[i * 7], data.y[i * 7]);
+                               },
+                               3) /
+                           1000;
         Data rest;
         for (std::size_t i = 0; i < n; ++i)
             if (i >= 7000 || i % 7 != 0) {
                 rest.x.push_back(data.x[i]);
                 rest.y.push_back(data.y[i]);
             }
-        // Both in the basis of all readings: the range of the rest may be smaller, so compare the function at nine places.
+        // Both in the basis of all readings: the range of the rest may be smaller, so compare the function at nine
+        // places.
         const StreamedFit refit = *fitStreamed(rest.gx(), rest.gy(), degree, StreamedConstant::With, 1);
         double worst = 0;
         for (int k = 0; k <= 8; ++k) {
@@ -276,9 +301,11 @@ void exclusion(std::size_t n) {
             };
             worst = std::max(worst, std::fabs(toDouble((valueOf(chain) - valueOf(refit)) / valueOf(refit))));
         }
-        std::printf("exclusion degree %d, n = %zu: one reading in %.2f us, 1/%.0f of the full refit; 1000 in a chain agree to %.1g (values), "
+        std::printf("exclusion degree %d, n = %zu: one reading in %.2f us, 1/%.0f of the full refit; 1000 in a chain "
+                    "agree to %.1g (values), "
                     "%.1g (sum of squares)\n",
-                    degree, n, one * 1e6, full / one, worst, std::fabs(toDouble((chain.residualSs - refit.residualSs) / refit.residualSs)));
+                    degree, n, one * 1e6, full / one, worst,
+                    std::fabs(toDouble((chain.residualSs - refit.residualSs) / refit.residualSs)));
     }
 }
 
@@ -299,7 +326,8 @@ void small() {
         for (const char* name : {"line", "polynomial:2", "polynomial:6"}) {
             record.choices.function = *parseFunctionName(name);
             const Sample sample = makeSample(record, Phase::AsFound);
-            std::printf("small     n = %zu, %s: %.0f us\n", n, name, seconds([&] { sink = fitFunction(sample, record.choices)->fit.residualSs; }, 9) * 1e6);
+            std::printf("small     n = %zu, %s: %.0f us\n", n, name,
+                        seconds([&] { sink = fitFunction(sample, record.choices)->fit.residualSs; }, 9) * 1e6);
         }
     }
 }
@@ -311,7 +339,9 @@ void wholeRoad() {
     Sample sample;
     const double sampled = seconds([&] { sample = makeSample(record, Phase::AsFound); }, 5);
     const double fitted = seconds([&] { sink = fitFunction(sample, record.choices)->fit.residualSs; }, 5);
-    std::printf("road      n = 1000000: sample %.1f, fit with residuals and leverages %.1f times summing both columns\n", sampled / reading, fitted / reading);
+    std::printf(
+        "road      n = 1000000: sample %.1f, fit with residuals and leverages %.1f times summing both columns\n",
+        sampled / reading, fitted / reading);
 }
 
 void band(std::size_t n) {
@@ -319,10 +349,12 @@ void band(std::size_t n) {
     std::vector<double> x(n);
     for (std::size_t i = 0; i < n; ++i)
         x[i] = 100.0 * static_cast<double>(i) / static_cast<double>(n);
-    const double copying = seconds([&] {
-        const std::vector<double> a = x, b = x, c = x;
-        sink = a[n / 2] + b[n / 3] + c[n / 4];
-    }, 9);
+    const double copying = seconds(
+        [&] {
+            const std::vector<double> a = x, b = x, c = x;
+            sink = a[n / 2] + b[n / 3] + c[n / 4];
+        },
+        9);
     for (const char* name : {"line", "polynomial:2", "polynomial:6"}) {
         record.choices.function = *parseFunctionName(name);
         const Fit fit = fitFunction(makeSample(record, Phase::AsFound), record.choices)->fit;

@@ -21,9 +21,12 @@ Record recordOf(const TypedReadings& readings) {
     PublishedSet set;
     set.id = "typed in the test";
     set.columns = {"x", "y", "ux", "uy"};
-    const auto at = [](const std::vector<std::string>& column, std::size_t i) { return column.empty() ? std::string{} : column[i]; };
+    const auto at = [](const std::vector<std::string>& column, std::size_t i) {
+        return column.empty() ? std::string{} : column[i];
+    };
     for (std::size_t i = 0; i < readings.indication.size(); ++i)
-        set.rows.push_back({at(readings.reference, i), readings.indication[i], at(readings.uReference, i), at(readings.uIndication, i)});
+        set.rows.push_back({at(readings.reference, i), readings.indication[i], at(readings.uReference, i),
+                            at(readings.uIndication, i)});
     return recordOf(set, {"x", "y", "", "ux", "uy"});
 }
 

@@ -39,17 +39,27 @@ std::vector<Family> families() {
     const double k = 59.15935; // mV at 25 °C; printed as 59.16 mV (IUPAC 2002)
     return {
         {"line", {0, 1, 2, 3, 4}, [](double x) { return 4 + 1.6 * x; }, {4, 1.6}},
-        {"polynomial-no-constant:3", {1, 2, 3, 4, 5, 6}, [](double x) { return 2 * x - 0.1 * x * x + 0.003 * x * x * x; }, {2, -0.1, 0.003}},
+        {"polynomial-no-constant:3",
+         {1, 2, 3, 4, 5, 6},
+         [](double x) { return 2 * x - 0.1 * x * x + 0.003 * x * x * x; },
+         {2, -0.1, 0.003}},
         {"square-root", {0, 1, 4, 9, 16, 25}, [](double x) { return 0.5 + 3 * std::sqrt(x); }, {0.5, 3}},
         {"logarithmic", {0.01, 0.1, 1, 10, 100}, [](double x) { return 200 + 58 * std::log10(x); }, {200, 58}},
         {"power", {1, 2, 5, 10, 20, 50}, [](double x) { return 3.5 * std::pow(x, -0.62); }, {3.5, -0.62}},
-        {"exponential-approach", {0, 5, 10, 20, 40, 60, 90}, [](double x) { return 9.5 - 8 * std::exp(-x / 25); }, {9.5, 8, 25}},
-        {"callendar-van-dusen", {-180, -100, -50, 0, 100, 250, 400},
+        {"exponential-approach",
+         {0, 5, 10, 20, 40, 60, 90},
+         [](double x) { return 9.5 - 8 * std::exp(-x / 25); },
+         {9.5, 8, 25}},
+        {"callendar-van-dusen",
+         {-180, -100, -50, 0, 100, 250, 400},
          [](double t) {
              return 100 * (1 + 3.9083e-3 * t - 5.775e-7 * t * t + (t < 0 ? -4.183e-12 * (t - 100) * t * t * t : 0.0));
          },
          {100, 3.9083e-3, -5.775e-7, -4.183e-12}},
-        {"thermistor-b", {-20, 0, 25, 50, 85}, [](double t) { return 10000 * std::exp(3435 * (1 / (t + 273.15) - 1 / 298.15)); }, {10000, 3435}},
+        {"thermistor-b",
+         {-20, 0, 25, 50, 85},
+         [](double t) { return 10000 * std::exp(3435 * (1 / (t + 273.15) - 1 / 298.15)); },
+         {10000, 3435}},
         {"nernst", {1.68, 4.01, 6.86, 9.18}, [k](double pH) { return 2 - 0.97 * k * (pH - 7); }, {2, 97}},
     };
 }
@@ -74,12 +84,16 @@ class CalibrationFunctions : public QObject {
         const Fit fit = fitted(record, family.function).fit;
         QCOMPARE(fit.terms(), family.coefficients.size());
         for (std::size_t i = 0; i < fit.terms(); ++i)
-            QVERIFY2(std::fabs(fit.coefficients[i].value - family.coefficients[i]) <= std::fabs(family.coefficients[i]) * 2e-6,
-                     qPrintable(QString("%1: %2").arg(QString::fromStdString(fit.coefficients[i].name)).arg(fit.coefficients[i].value, 0, 'g', 17)));
+            QVERIFY2(std::fabs(fit.coefficients[i].value - family.coefficients[i]) <=
+                         std::fabs(family.coefficients[i]) * 2e-6,
+                     qPrintable(QString("%1: %2")
+                                    .arg(QString::fromStdString(fit.coefficients[i].name))
+                                    .arg(fit.coefficients[i].value, 0, 'g', 17)));
         QVERIFY(fit.convergence.reached);
         // The derivative by central differences, and the answer that leads back.
         const double x = (family.x[1] + family.x[2]) / 2;
-        QVERIFY(std::fabs(fit.curve->derivative(x) - slopeOf(*fit.curve, x)) <= 1e-6 * std::fabs(fit.curve->derivative(x)));
+        QVERIFY(std::fabs(fit.curve->derivative(x) - slopeOf(*fit.curve, x)) <=
+                1e-6 * std::fabs(fit.curve->derivative(x)));
         const ReadBackAnswer answer = readBack(fit, family.f(x), 1);
         QVERIFY(answer.reference && std::fabs(*answer.reference - x) < 1e-4);
     }
@@ -93,7 +107,8 @@ class CalibrationFunctions : public QObject {
     }
     void iteratedFitIsAMinimum() {
         QFETCH(QString, function);
-        Record record = recordOf({{"5", "10", "20", "40", "60", "90"}, {"8.02", "6.49", "4.61", "2.51", "1.83", "1.22"}, {}, {}});
+        Record record =
+            recordOf({{"5", "10", "20", "40", "60", "90"}, {"8.02", "6.49", "4.61", "2.51", "1.83", "1.22"}, {}, {}});
         const FitOutcome outcome = fitted(record, function.toLatin1().constData());
         const Fit& fit = outcome.fit;
         QVERIFY(fit.convergence.reached);
@@ -141,19 +156,23 @@ class CalibrationFunctions : public QObject {
         QVERIFY(digitsAgreed(fit.coefficients[2].value, std::string("-5.775e-7")) >= 14.5);
         QVERIFY(digitsAgreed(fit.coefficients[3].value, std::string("-4.183e-12")) >= 14.5);
         for (const auto& row : set.rows)
-            QVERIFY2(agreesAsPrinted(fit.curve->value(std::stod(row[0])), set.published.at("R[" + row[0] + "]")), row[0].c_str());
+            QVERIFY2(agreesAsPrinted(fit.curve->value(std::stod(row[0])), set.published.at("R[" + row[0] + "]")),
+                     row[0].c_str());
         for (const auto& [name, wanted] : set.recomputed) {
             if (name.rfind("t_of_R(", 0) != 0)
                 continue;
             const ReadBackAnswer answer = readBack(fit, std::stod(name.substr(7)), std::nullopt);
-            QVERIFY2(answer.reference && (digitsAgreed(*answer.reference, wanted) >= 11 || std::fabs(*answer.reference - std::stod(wanted)) < 1e-10), name.c_str());
+            QVERIFY2(answer.reference && (digitsAgreed(*answer.reference, wanted) >= 11 ||
+                                          std::fabs(*answer.reference - std::stod(wanted)) < 1e-10),
+                     name.c_str());
         }
         // Without readings below 0 °C there is no C.
         Record above = recordOf({{"0", "100", "200", "400"}, {"100.00", "138.51", "175.86", "247.09"}, {}, {}});
         QCOMPARE(fitted(above, "callendar-van-dusen").fit.terms(), std::size_t{3});
     }
 
-    /// NIST StRD MGH10 (Meyer 1970), linearised: 1/T on ln R and (ln R)³ by ordinary least squares, as recomputed in the set.
+    /// NIST StRD MGH10 (Meyer 1970), linearised: 1/T on ln R and (ln R)³ by ordinary least squares, as recomputed in
+    /// the set.
     void thermistorLinearised() {
         const PublishedSet set = publishedSet("mgh10_thermistor");
         const auto r = set.column("y"), t = set.column("x");
@@ -163,15 +182,17 @@ class CalibrationFunctions : public QObject {
             const DoubleDouble l = log(Decimal::parse(r[i])->toDoubleDouble());
             problem.design[n + i] = l;
             problem.design[2 * n + i] = l * l * l;
-            problem.ordinate.push_back(1.0 / (Decimal::parse(t[i])->toDoubleDouble() + Decimal::parse("273.15")->toDoubleDouble()));
+            problem.ordinate.push_back(
+                1.0 / (Decimal::parse(t[i])->toDoubleDouble() + Decimal::parse("273.15")->toDoubleDouble()));
         }
         const LinearSolution solution = solveLeastSquares(problem);
         for (std::size_t k = 0; k < 3; ++k)
-            QVERIFY(digitsAgreed(toDouble(solution.beta[k]), set.recomputed.at("steinhart.b" + std::to_string(k))) >= 14.9);
+            QVERIFY(digitsAgreed(toDouble(solution.beta[k]), set.recomputed.at("steinhart.b" + std::to_string(k))) >=
+                    14.9);
     }
 
-    /// Fitted in the temperature, the three terms differ from the linearised ones by far less than their uncertainty, and the
-    /// residuals are in degrees.
+    /// Fitted in the temperature, the three terms differ from the linearised ones by far less than their uncertainty,
+    /// and the residuals are in degrees.
     void thermistorInDegrees() {
         const PublishedSet set = publishedSet("mgh10_thermistor");
         Record record = recordOf(set, {"x", "y", "", "", ""}); // reference: temperature, indication: resistance
@@ -186,19 +207,22 @@ class CalibrationFunctions : public QObject {
         QVERIFY(fit.residualSd < 0.05); // °C
         QVERIFY(std::fabs(fit.curve->value(34780) - 50) < 0.1);
         const double x = 10000;
-        QVERIFY(std::fabs(fit.curve->derivative(x) - slopeOf(*fit.curve, x)) <= 1e-6 * std::fabs(fit.curve->derivative(x)));
+        QVERIFY(std::fabs(fit.curve->derivative(x) - slopeOf(*fit.curve, x)) <=
+                1e-6 * std::fabs(fit.curve->derivative(x)));
         // Two terms are the B equation, four hold three.
         QVERIFY(fitted(record, "steinhart-hart:2").fit.residualSs > fit.residualSs);
         QVERIFY(fitted(record, "steinhart-hart:4").fit.residualSs < fit.residualSs);
         const Fit four = fitted(record, "steinhart-hart:4").fit;
         const double l = std::log(x);
-        const double direct = 1 / (four.coefficients[0].value + four.coefficients[1].value * l + four.coefficients[2].value * l * l * l +
-                                   four.coefficients[3].value * l * l) - 273.15;
+        const double direct = 1 / (four.coefficients[0].value + four.coefficients[1].value * l +
+                                   four.coefficients[2].value * l * l * l + four.coefficients[3].value * l * l) -
+                              273.15;
         QVERIFY(std::fabs(four.curve->value(x) - direct) < 1e-7);
     }
 
     void tableGoesThroughTheMeans() {
-        Record record = recordOf({{"0", "0", "5", "5", "10", "10"}, {"1.0", "1.2", "2.0", "2.4", "2.9", "3.1"}, {}, {}});
+        Record record =
+            recordOf({{"0", "0", "5", "5", "10", "10"}, {"1.0", "1.2", "2.0", "2.4", "2.9", "3.1"}, {}, {}});
         const Fit fit = fitted(record, "table").fit;
         QCOMPARE(fit.terms(), std::size_t{3});
         for (const auto& [x, y] : {std::pair{0.0, 1.1}, {5.0, 2.2}, {10.0, 3.0}, {2.5, 1.65}})

@@ -28,7 +28,8 @@ class DegreeLadders : public QObject {
             QVERIFY2(agreesAsPrinted(*ladder.steps[i].e74, printed[i - 1]), printed[i - 1]);
     }
 
-    /// NIST/SEMATECH 4.6.1: the load cell needs a quadratic, and no more; a resolution as coarse as the gain forbids it.
+    /// NIST/SEMATECH 4.6.1: the load cell needs a quadratic, and no more; a resolution as coarse as the gain forbids
+    /// it.
     void loadCellNeedsAQuadratic() {
         const PublishedSet set = publishedSet("loadcell");
         Record record = recordOf(set, {"load", "deflection", "", "", ""});
@@ -38,14 +39,18 @@ class DegreeLadders : public QObject {
         QCOMPARE(ladder.suggested, 2);
         QVERIFY(digitsAgreed(ladder.steps[0].residualSd, set.recomputed.at("line.residual_sd")) >= 14.9);
         QVERIFY(digitsAgreed(ladder.steps[1].residualSd, set.recomputed.at("quad.residual_sd")) >= 14.9);
-        const double ssLine = std::stod(set.recomputed.at("line.ss_residual")), ssQuad = std::stod(set.recomputed.at("quad.ss_residual"));
+        const double ssLine = std::stod(set.recomputed.at("line.ss_residual")),
+                     ssQuad = std::stod(set.recomputed.at("quad.ss_residual"));
         QVERIFY(std::fabs(*ladder.steps[1].f / ((ssLine - ssQuad) / (ssQuad / 37)) - 1) < 1e-11);
         QVERIFY(ladder.steps[1].change > 0.001 && ladder.steps[1].monotonic);
         QCOMPARE(degreeLadder(sample, record.choices, 0.01).suggested, 1);
     }
 
     void turningFunctionsAreRefused() {
-        Record record = recordOf({{"0", "1", "2", "3", "4", "5", "6", "7"}, {"0.0", "5.1", "7.9", "9.2", "8.8", "8.1", "5.0", "0.1"}, {}, {}});
+        Record record = recordOf({{"0", "1", "2", "3", "4", "5", "6", "7"},
+                                  {"0.0", "5.1", "7.9", "9.2", "8.8", "8.1", "5.0", "0.1"},
+                                  {},
+                                  {}});
         const DegreeLadder ladder = degreeLadder(makeSample(record, Phase::AsFound), record.choices, 0.01, 4);
         QVERIFY(!ladder.steps[1].monotonic);
         QCOMPARE(ladder.suggested, 1);

@@ -13,16 +13,21 @@ using namespace spanwright::test;
 
 namespace {
 
-Decimal number(const char* text) { return *Decimal::parse(text); }
+Decimal number(const char* text) {
+    return *Decimal::parse(text);
+}
 
 /// Ten readings of a transmitter, two at each set point.
 TypedReadings transmitter() {
     return {{"0", "0", "2.5", "2.5", "5", "5", "7.5", "7.5", "10", "10"},
-            {"4.003", "4.001", "8.010", "8.006", "12.013", "12.009", "16.011", "16.005", "20.004", "19.998"}, {}, {}};
+            {"4.003", "4.001", "8.010", "8.006", "12.013", "12.009", "16.011", "16.005", "20.004", "19.998"},
+            {},
+            {}};
 }
 
 /// The same readings with every reference and indication mapped.
-TypedReadings mapped(const TypedReadings& readings, const std::function<std::string(const Decimal&)>& x, const std::function<std::string(const Decimal&)>& y) {
+TypedReadings mapped(const TypedReadings& readings, const std::function<std::string(const Decimal&)>& x,
+                     const std::function<std::string(const Decimal&)>& y) {
     TypedReadings result;
     for (const std::string& text : readings.reference)
         result.reference.push_back(x(number(text.c_str())));
@@ -31,8 +36,12 @@ TypedReadings mapped(const TypedReadings& readings, const std::function<std::str
     return result;
 }
 
-std::string same(const Decimal& value) { return value.text(); }
-std::string timesThousand(const Decimal& value) { return Decimal{value.mantissa, value.decimals - 3, {}}.text(); }
+std::string same(const Decimal& value) {
+    return value.text();
+}
+std::string timesThousand(const Decimal& value) {
+    return Decimal{value.mantissa, value.decimals - 3, {}}.text();
+}
 std::string plusMillion(const Decimal& value) {
     std::int64_t power = 1;
     for (int i = 0; i < value.decimals; ++i)
@@ -81,7 +90,8 @@ class FitCases : public QObject {
         QCOMPARE(outcome.fit.residualSd, 0.0);
         QCOMPARE(*outcome.fit.rSquared, 1.0);
         QCOMPARE(outcome.fit.coefficients[1].value, 3.0);
-        QVERIFY(std::all_of(outcome.residuals.e.high.begin(), outcome.residuals.e.high.end(), [](double e) { return e == 0; }));
+        QVERIFY(std::all_of(outcome.residuals.e.high.begin(), outcome.residuals.e.high.end(),
+                            [](double e) { return e == 0; }));
     }
 
     void structurelessSetExplainsNothing() {
@@ -108,7 +118,8 @@ class FitCases : public QObject {
         }
     }
 
-    /// Shifting either quantity by a million and scaling the reference by a thousand leaves s and the slope as they were.
+    /// Shifting either quantity by a million and scaling the reference by a thousand leaves s and the slope as they
+    /// were.
     void shiftAndScaleDoNotMatter() {
         Record plain = recordOf(transmitter()), scaled = recordOf(mapped(transmitter(), timesThousand, same));
         Record shifted = recordOf(mapped(transmitter(), plusMillion, plusMillion));

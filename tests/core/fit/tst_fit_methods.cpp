@@ -46,7 +46,8 @@ class FitMethods : public QObject {
 
     /// Pearson's data with York's weights: a = 5.47991022, b = −0.480533407, χ² = 11.86635 (York 1966; from memory).
     void pearsonWithYorksWeights() {
-        const std::vector<double> wx{1000, 1000, 500, 800, 200, 80, 60, 20, 1.8, 1}, wy{1, 1.8, 4, 8, 20, 20, 70, 70, 100, 500};
+        const std::vector<double> wx{1000, 1000, 500, 800, 200, 80, 60, 20, 1.8, 1},
+            wy{1, 1.8, 4, 8, 20, 20, 70, 70, 100, 500};
         std::vector<double> ux, uy;
         for (std::size_t i = 0; i < wx.size(); ++i) {
             ux.push_back(1 / std::sqrt(wx[i]));
@@ -54,7 +55,8 @@ class FitMethods : public QObject {
         }
         Record record = bothUncertain({{"0", "0.9", "1.8", "2.6", "3.3", "4.4", "5.2", "6.1", "6.5", "7.4"},
                                        {"5.9", "5.4", "4.4", "4.6", "3.5", "3.7", "2.8", "2.8", "2.4", "1.5"},
-                                       typed(ux), typed(uy)});
+                                       typed(ux),
+                                       typed(uy)});
         const Fit fit = fitted(record, "line").fit;
         QVERIFY(agreesAsPrinted(fit.coefficients[0].value, "5.47991022"));
         QVERIFY(agreesAsPrinted(fit.coefficients[1].value, "-0.480533407"));
@@ -64,7 +66,9 @@ class FitMethods : public QObject {
     /// The line does not depend on which quantity is called x: b and 1/b, χ² the same.
     void bothUncertainIsSymmetric() {
         const TypedReadings readings = bothUncertainExample();
-        Record record = bothUncertain(readings), swapped = bothUncertain({readings.indication, readings.reference, readings.uIndication, readings.uReference});
+        Record record = bothUncertain(readings),
+               swapped =
+                   bothUncertain({readings.indication, readings.reference, readings.uIndication, readings.uReference});
         const Fit fit = fitted(record, "line").fit, other = fitted(swapped, "line").fit;
         QVERIFY(std::fabs(fit.coefficients[1].value * other.coefficients[1].value - 1) < 1e-14);
         QVERIFY(std::fabs(*fit.chiSquared - *other.chiSquared) < 1e-13);
@@ -83,23 +87,26 @@ class FitMethods : public QObject {
         const Fit weighted = fitted(record, "line").fit;
         for (std::size_t i = 0; i < 2; ++i) {
             QVERIFY(std::fabs(both.coefficients[i].value / weighted.coefficients[i].value - 1) < 1e-14);
-            QVERIFY(std::fabs(both.coefficients[i].standardUncertainty / weighted.coefficients[i].standardUncertainty - 1) < 1e-14);
+            QVERIFY(std::fabs(both.coefficients[i].standardUncertainty / weighted.coefficients[i].standardUncertainty -
+                              1) < 1e-14);
         }
     }
 
-    /// Kessel, Kacker and Sommer (2012): a line through the two end points of a pressure sensor; the reference is uncertain by
-    /// 115·10⁻⁶ of itself, the display by its rounding of ±0.00005. The function gives the reference.
+    /// Kessel, Kacker and Sommer (2012): a line through the two end points of a pressure sensor; the reference is
+    /// uncertain by 115·10⁻⁶ of itself, the display by its rounding of ±0.00005. The function gives the reference.
     void pressureSensorFromTwoPoints() {
         const PublishedSet set = publishedSet("pressure_sensor_range");
         const double rounding = 0.00005 / std::sqrt(3.0);
-        Record record = bothUncertain({{"0.0", "20.0"}, {"0.0000", "2.0410"}, {"0", "0.0023"}, typed({rounding, rounding})});
+        Record record =
+            bothUncertain({{"0.0", "20.0"}, {"0.0000", "2.0410"}, {"0", "0.0023"}, typed({rounding, rounding})});
         record.choices.fit = FitDirection::Reference;
         const Fit fit = fitted(record, "line").fit;
         QVERIFY(std::fabs(fit.coefficients[0].value) < 1e-25);
         QVERIFY(digitsAgreed(fit.coefficients[1].value, set.recomputed.at("raw.b")) >= 14.9);
         QVERIFY(digitsAgreed(fit.coefficients[0].standardUncertainty, set.recomputed.at("raw.u_a")) >= 13);
         QVERIFY(digitsAgreed(fit.coefficients[1].standardUncertainty, set.recomputed.at("raw.u_b")) >= 13);
-        const double r = fit.covariance[1] / (fit.coefficients[0].standardUncertainty * fit.coefficients[1].standardUncertainty);
+        const double r =
+            fit.covariance[1] / (fit.coefficients[0].standardUncertainty * fit.coefficients[1].standardUncertainty);
         QVERIFY(digitsAgreed(r, set.recomputed.at("raw.r_ab")) >= 12.5);
     }
 
@@ -142,11 +149,13 @@ class FitMethods : public QObject {
 
     /// Equal stated uncertainties change nothing but the scale.
     void equalStatedUncertaintiesAreEqualWeights() {
-        Record record = recordOf({{"1", "2", "3", "4"}, {"1.1", "1.9", "3.2", "3.9"}, {}, {"0.2", "0.2", "0.2", "0.2"}});
+        Record record =
+            recordOf({{"1", "2", "3", "4"}, {"1.1", "1.9", "3.2", "3.9"}, {}, {"0.2", "0.2", "0.2", "0.2"}});
         const Fit equal = fitted(record, "line").fit;
         record.choices.weights = Weights::Stated;
         const Fit stated = fitted(record, "line").fit;
-        QVERIFY(std::fabs(stated.coefficients[1].standardUncertainty / equal.coefficients[1].standardUncertainty - 1) < 1e-15);
+        QVERIFY(std::fabs(stated.coefficients[1].standardUncertainty / equal.coefficients[1].standardUncertainty - 1) <
+                1e-15);
         QVERIFY(std::fabs(stated.residualSd * 0.2 / equal.residualSd - 1) < 1e-14);
         QVERIFY(std::fabs(std::sqrt(stated.curve->readingVariance(2.5)) / equal.residualSd - 1) < 1e-14);
         record.choices.covariance = CovarianceScale::Stated;
@@ -157,7 +166,9 @@ class FitMethods : public QObject {
 
     void robustKeepsToTheMany() {
         Record record = recordOf({{"0", "1", "2", "3", "4", "5", "6", "7", "8", "9"},
-                                  {"0.01", "1.02", "1.99", "3.00", "4.01", "4.98", "6.02", "7.01", "7.99", "12.0"}, {}, {}});
+                                  {"0.01", "1.02", "1.99", "3.00", "4.01", "4.98", "6.02", "7.01", "7.99", "12.0"},
+                                  {},
+                                  {}});
         const double plain = fitted(record, "line").fit.coefficients[1].value;
         record.choices.method = Method::Robust;
         for (const RobustWeight kind : {RobustWeight::Huber, RobustWeight::Bisquare}) {

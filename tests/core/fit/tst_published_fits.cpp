@@ -41,7 +41,8 @@ const std::vector<Wanted> wantedFits{
 
 /// What a set calls a figure, and what the fit gives.
 std::vector<std::pair<std::string, double>> figuresOf(const Fit& fit, bool statedScale) {
-    std::vector<std::pair<std::string, double>> figures{{"ss_residual", fit.residualSs}, {"df_residual", fit.degreesOfFreedom}};
+    std::vector<std::pair<std::string, double>> figures{{"ss_residual", fit.residualSs},
+                                                        {"df_residual", fit.degreesOfFreedom}};
     for (std::size_t i = 0; i < fit.terms(); ++i) {
         figures.emplace_back("b" + std::to_string(i), fit.coefficients[i].value);
         figures.emplace_back("sd_b" + std::to_string(i), fit.coefficients[i].standardUncertainty);
@@ -116,10 +117,12 @@ class PublishedFits : public QObject {
         QVERIFY(outcome.ok());
         QVERIFY(digitsAgreed(outcome->fit.coefficients[0].value, set.recomputed.at("mean")) >= 14.999);
         QVERIFY(digitsAgreed(outcome->fit.residualSd, set.recomputed.at("sd")) >= 14.999);
-        QVERIFY(digitsAgreed(outcome->fit.coefficients[0].standardUncertainty, set.recomputed.at("sd_of_mean")) >= 14.999);
+        QVERIFY(digitsAgreed(outcome->fit.coefficients[0].standardUncertainty, set.recomputed.at("sd_of_mean")) >=
+                14.999);
     }
 
-    /// JCGM 100:2008, H.3: the abscissa is t − 20 °C; y1, y2, s(y1), s(y2), r, b(30 °C) and its u as printed in H.3.4 and H.3.5.
+    /// JCGM 100:2008, H.3: the abscissa is t − 20 °C; y1, y2, s(y1), s(y2), r, b(30 °C) and its u as printed in H.3.4
+    /// and H.3.5.
     void correctionOfAThermometer() {
         const PublishedSet set = publishedSet("gum_h3");
         std::vector<std::string> shifted;
@@ -136,12 +139,15 @@ class PublishedFits : public QObject {
         QVERIFY(agreesAsPrinted(fit.coefficients[0].standardUncertainty, "0.0029"));
         QVERIFY(agreesAsPrinted(fit.coefficients[1].standardUncertainty, "0.00067"));
         QVERIFY(agreesAsPrinted(fit.residualSd, "0.0035"));
-        const double r = fit.covariance[1] / (fit.coefficients[0].standardUncertainty * fit.coefficients[1].standardUncertainty);
+        const double r =
+            fit.covariance[1] / (fit.coefficients[0].standardUncertainty * fit.coefficients[1].standardUncertainty);
         QVERIFY(agreesAsPrinted(r, "-0.930"));
         QVERIFY(agreesAsPrinted(fit.curve->value(10.0), "-0.1494"));
         QVERIFY(agreesAsPrinted(std::sqrt(fit.curve->variance(10.0)), "0.0041"));
-        for (const auto& [name, got] : {std::pair{"line.b0", fit.coefficients[0].value}, {"line.cov_b0_b1", fit.covariance[1]},
-                                        {"b30.fit", fit.curve->value(10.0)}, {"b30.se_fit", std::sqrt(fit.curve->variance(10.0))}})
+        for (const auto& [name, got] : {std::pair{"line.b0", fit.coefficients[0].value},
+                                        {"line.cov_b0_b1", fit.covariance[1]},
+                                        {"b30.fit", fit.curve->value(10.0)},
+                                        {"b30.se_fit", std::sqrt(fit.curve->variance(10.0))}})
             QVERIFY2(digitsAgreed(got, set.recomputed.at(name)) >= 14.5, name);
     }
 };

@@ -44,7 +44,9 @@ Record recordOf(const Grids& grids) {
     return record;
 }
 
-double digits(double got, double wanted) { return got == wanted ? 17 : -std::log10(std::fabs((got - wanted) / wanted)); }
+double digits(double got, double wanted) {
+    return got == wanted ? 17 : -std::log10(std::fabs((got - wanted) / wanted));
+}
 
 /// Function and leverage at an integer of the grid, whatever the basis is scaled to.
 struct Place {
@@ -104,8 +106,10 @@ class StreamedFits : public QObject {
         QVERIFY(streamed.ok() && exact.ok());
         for (std::size_t k = 0; k < exact->fit.terms(); ++k) {
             const double value = digits(streamed->fit.coefficients[k].value, exact->fit.coefficients[k].value);
-            const double u = digits(streamed->fit.coefficients[k].standardUncertainty, exact->fit.coefficients[k].standardUncertainty);
-            QVERIFY2(value >= least && u >= 12.5, qPrintable(QString("b%1: %2 digits, uncertainty %3").arg(k).arg(value).arg(u)));
+            const double u = digits(streamed->fit.coefficients[k].standardUncertainty,
+                                    exact->fit.coefficients[k].standardUncertainty);
+            QVERIFY2(value >= least && u >= 12.5,
+                     qPrintable(QString("b%1: %2 digits, uncertainty %3").arg(k).arg(value).arg(u)));
         }
         QVERIFY(digits(streamed->fit.residualSs, exact->fit.residualSs) >= 13);
         QVERIFY(digits(streamed->fit.totalSs, exact->fit.totalSs) >= 14);
@@ -113,7 +117,8 @@ class StreamedFits : public QObject {
             QVERIFY(std::fabs(streamed->residuals.e.high[i] - exact->residuals.e.high[i]) < 1e-12);
             QVERIFY(digits(streamed->residuals.leverage[i], exact->residuals.leverage[i]) > 9);
         }
-        QVERIFY(digits(streamed->fit.curve->variance(exact->fit.high), exact->fit.curve->variance(exact->fit.high)) > 12);
+        QVERIFY(digits(streamed->fit.curve->variance(exact->fit.high), exact->fit.curve->variance(exact->fit.high)) >
+                12);
     }
 
     void sameBitsForThreadsAndProcessors() {
@@ -125,7 +130,13 @@ class StreamedFits : public QObject {
         }
         if (&streamKernel() == &plain::kernel)
             QSKIP("no AVX2 here");
-        const StreamBlock block{reinterpret_cast<const long*>(grids.x.data()), reinterpret_cast<const long*>(grids.y.data()), 512, 5007, 12'000'000, 1 / 5000.0, 1e-6};
+        const StreamBlock block{reinterpret_cast<const long*>(grids.x.data()),
+                                reinterpret_cast<const long*>(grids.y.data()),
+                                512,
+                                5007,
+                                12'000'000,
+                                1 / 5000.0,
+                                1e-6};
         for (std::size_t d = 0; d <= MostStreamedDegree; ++d) {
             double a[64] = {}, b[64] = {};
             StreamRange one{block.x[0], block.x[0], 0}, other = one;

@@ -52,7 +52,8 @@ class Intervals : public QObject {
     Q_OBJECT
 
   private slots:
-    /// Inverse prediction by inverting the band: Graybill and Iyer (1994), NIST/SEMATECH 4.6.1, ISO/TS 28037 annex E, DIN 32645.
+    /// Inverse prediction by inverting the band: Graybill and Iyer (1994), NIST/SEMATECH 4.6.1, ISO/TS 28037 annex E,
+    /// DIN 32645.
     void readsBackAsPublished_data() {
         QTest::addColumn<int>("index");
         for (std::size_t i = 0; i < inverses.size(); ++i)
@@ -67,9 +68,13 @@ class Intervals : public QObject {
         const ReadBackAnswer answer =
             readBack(fit, wanted.indication, wanted.repeats > 0 ? std::optional<int>(wanted.repeats) : std::nullopt);
         const std::string prefix = wanted.prefix;
-        for (const auto& [name, got] : {std::pair{"x0", *answer.reference}, {"se", answer.standardUncertainty}, {"lower", answer.low}, {"upper", answer.high}}) {
+        for (const auto& [name, got] : {std::pair{"x0", *answer.reference},
+                                        {"se", answer.standardUncertainty},
+                                        {"lower", answer.low},
+                                        {"upper", answer.high}}) {
             const double digits = digitsAgreed(got, set.recomputed.at(prefix + name));
-            QVERIFY2(digits >= 12.5, qPrintable(QString("%1: %2 digits, got %3").arg(name).arg(digits).arg(got, 0, 'g', 17)));
+            QVERIFY2(digits >= 12.5,
+                     qPrintable(QString("%1: %2 digits, got %3").arg(name).arg(digits).arg(got, 0, 'g', 17)));
         }
     }
 
@@ -80,8 +85,10 @@ class Intervals : public QObject {
         const Fit fit = fitOf(record, "line", "0.90");
         for (const char* x : {"30", "65", "100"}) {
             const BandPoint point = bandAt(fit, std::atof(x));
-            QVERIFY(digitsAgreed(point.simultaneous.low, set.recomputed.at(std::string("band.lower[") + x + "]")) >= 13);
-            QVERIFY(digitsAgreed(point.simultaneous.high, set.recomputed.at(std::string("band.upper[") + x + "]")) >= 13);
+            QVERIFY(digitsAgreed(point.simultaneous.low, set.recomputed.at(std::string("band.lower[") + x + "]")) >=
+                    13);
+            QVERIFY(digitsAgreed(point.simultaneous.high, set.recomputed.at(std::string("band.upper[") + x + "]")) >=
+                    13);
         }
     }
 
@@ -90,8 +97,11 @@ class Intervals : public QObject {
         const PublishedSet set = publishedSet("r_formaldehyde");
         Record record = recordOf(set, {"x", "y", "", "", ""});
         const BandPoint point = bandAt(fitOf(record, "line"), 0.45);
-        for (const auto& [name, got] : {std::pair{"fit", point.value}, {"ci_lower", point.mean.low}, {"ci_upper", point.mean.high},
-                                        {"pi_lower", point.newReading.low}, {"pi_upper", point.newReading.high}})
+        for (const auto& [name, got] : {std::pair{"fit", point.value},
+                                        {"ci_lower", point.mean.low},
+                                        {"ci_upper", point.mean.high},
+                                        {"pi_lower", point.newReading.low},
+                                        {"pi_upper", point.newReading.high}})
             QVERIFY2(digitsAgreed(got, set.recomputed.at(std::string("predict.") + name)) >= 13.5, name);
     }
 
@@ -131,7 +141,8 @@ class Intervals : public QObject {
     }
     void intervalIsTheInvertedBand() {
         QFETCH(QString, function);
-        Record record = recordOf({"1", "2", "3", "4", "5", "6", "7"}, {"1.1", "2.0", "3.2", "4.4", "5.4", "6.9", "8.2"});
+        Record record =
+            recordOf({"1", "2", "3", "4", "5", "6", "7"}, {"1.1", "2.0", "3.2", "4.4", "5.4", "6.9", "8.2"});
         const Fit fit = fitOf(record, function.toLatin1().constData());
         const ReadBackAnswer answer = readBack(fit, 4.1, 1);
         const BandPoint low = bandAt(fit, answer.low), high = bandAt(fit, answer.high);
@@ -143,12 +154,14 @@ class Intervals : public QObject {
     /// At very many places the band is a polynomial found once: the same as place by place.
     void bandInColumnsIsTheBand_data() {
         QTest::addColumn<QString>("function");
-        for (const char* name : {"constant", "line", "proportional", "polynomial:2", "polynomial:4", "polynomial-no-constant:3", "square-root"})
+        for (const char* name : {"constant", "line", "proportional", "polynomial:2", "polynomial:4",
+                                 "polynomial-no-constant:3", "square-root"})
             QTest::newRow(name) << name;
     }
     void bandInColumnsIsTheBand() {
         QFETCH(QString, function);
-        Record record = recordOf({"1", "2", "3", "4", "5", "6", "7"}, {"1.1", "2.0", "3.2", "4.4", "5.4", "6.9", "8.2"});
+        Record record =
+            recordOf({"1", "2", "3", "4", "5", "6", "7"}, {"1.1", "2.0", "3.2", "4.4", "5.4", "6.9", "8.2"});
         const Fit fit = fitOf(record, function.toLatin1().constData());
         std::vector<double> x;
         for (int i = 0; i < 103; ++i)

@@ -16,13 +16,15 @@ class ToleranceFactors : public QObject {
     Q_OBJECT
 
   private slots:
-    /// ISO 16269-6 tables and NIST/SEMATECH 7.2.6.3, as printed and to twelve digits as recomputed by exact integration.
+    /// ISO 16269-6 tables and NIST/SEMATECH 7.2.6.3, as printed and to twelve digits as recomputed by exact
+    /// integration.
     void agreesWithTheTables() {
         const PublishedSet set = publishedSet("tolerance_factors");
         int compared = 0;
         for (const auto& [name, wanted] : set.recomputed) {
             const QString inside = QString::fromStdString(name).section('[', 1).chopped(1);
-            const double n = inside.section(',', 0, 0).toDouble(), share = inside.section(',', 1, 1).toDouble(), confidence = inside.section(',', 2, 2).toDouble();
+            const double n = inside.section(',', 0, 0).toDouble(), share = inside.section(',', 1, 1).toDouble(),
+                         confidence = inside.section(',', 2, 2).toDouble();
             double got = 0;
             if (name.rfind("k1", 0) == 0)
                 got = toleranceFactorOneSided(n, n - 1, share, confidence);
@@ -30,7 +32,10 @@ class ToleranceFactors : public QObject {
                 got = toleranceFactorHowe(n, n - 1, share, confidence);
             else
                 got = toleranceFactorTwoSided(n, n - 1, share, confidence);
-            QVERIFY2(digitsAgreed(got, wanted) >= 12, qPrintable(QString("%1: got %2, wanted %3").arg(QString::fromStdString(name)).arg(got, 0, 'g', 16).arg(QString::fromStdString(wanted))));
+            QVERIFY2(digitsAgreed(got, wanted) >= 12, qPrintable(QString("%1: got %2, wanted %3")
+                                                                     .arg(QString::fromStdString(name))
+                                                                     .arg(got, 0, 'g', 16)
+                                                                     .arg(QString::fromStdString(wanted))));
             const auto printed = set.published.find(name);
             if (printed != set.published.end())
                 QVERIFY2(agreesAsPrinted(got, printed->second), name.c_str());
