@@ -111,6 +111,19 @@ class SessionJsonTest : public QObject {
         QCOMPARE(test::schemaBreaches(schema, broken).size(), 2);
     }
 
+    void theSampleSessionHoldsTheSchemaAndIsStable() {
+        QFile schemaFile(QString::fromStdString(test::sourceDir()) + "/resources/session.schema.json");
+        QFile sample(QString::fromStdString(test::sourceDir()) + "/sample-data/pressure-transmitter.spanwright");
+        QVERIFY(schemaFile.open(QIODevice::ReadOnly) && sample.open(QIODevice::ReadOnly));
+        const QByteArray bytes = sample.readAll();
+        const QJsonObject schema = QJsonDocument::fromJson(schemaFile.readAll()).object();
+        QCOMPARE(test::schemaBreaches(schema, QJsonDocument::fromJson(bytes).object()), QStringList{});
+        const auto session = readSession(bytes.toStdString());
+        QVERIFY(session.ok());
+        QVERIFY(session->warnings.empty());
+        QCOMPARE(bytesOf(writeSession(session->record, session->results)), bytes);
+    }
+
     void theSchemaKnowsEveryKey() {
         QFile file(QString::fromStdString(test::sourceDir()) + "/resources/session.schema.json");
         QVERIFY(file.open(QIODevice::ReadOnly));
