@@ -5,6 +5,8 @@
 
 #include <QCoreApplication>
 
+#include <algorithm>
+
 namespace spanwright {
 
 namespace {
@@ -30,18 +32,31 @@ QString fitting(const QString& words, const TextStyle& style, double width) {
     return cut.trimmed() + QChar(0x2026);
 }
 
+/// The style in the largest size in which the words fit; cut words are stated in full on the first page (addIdentification).
+TextStyle shrunk(const QString& words, TextStyle style, double width) {
+    constexpr double smallest = 7;
+    const double needed = textWidth(words, style);
+    if (needed > width)
+        style.points = std::max(smallest, style.points * width / needed * 0.99);
+    return style;
+}
+
 void addHead(Page& page, const Certificate& certificate, const QString& number) {
-    const TextStyle strong{11, true, PageInk::Text}, strongRight{9.5, true, PageInk::Text}, small{8, false, PageInk::Quiet};
-    const double half = Content.width() * 0.6;
+    const TextStyle small{8, false, PageInk::Quiet};
     const QString laboratory = certificate.job.laboratory.empty() ? CertificatePages::tr("Laboratory not named") : text(certificate.job.laboratory);
     const QString certificateNumber = CertificatePages::tr("Certificate %1").arg(orDash(certificate.job.certificateNumber));
     const auto put = [&page](double x, double baseline, const QString& words, const TextStyle& style, Qt::Alignment end = Qt::AlignLeft) {
         if (!words.isEmpty())
             page.blocks.push_back(textBlock(x, baseline, words, style, end));
     };
-    put(Content.left(), 17.5, fitting(laboratory, strong, half), strong);
-    put(Content.left(), 22, fitting(text(certificate.job.laboratoryAddress), small, half), small);
-    put(Content.right(), 17.5, fitting(certificateNumber, strongRight, Content.width() - half - 4), strongRight, Qt::AlignRight);
+    // The number identifies every page, so it has the first claim on the width.
+    constexpr double gap = 6, mostForNumber = 110;
+    const TextStyle right = shrunk(certificateNumber, {9.5, true, PageInk::Text}, mostForNumber);
+    const double rest = Content.width() - gap - std::min(mostForNumber, textWidth(certificateNumber, right));
+    const TextStyle left = shrunk(laboratory, {11, true, PageInk::Text}, rest);
+    put(Content.left(), 17.5, fitting(laboratory, left, rest), left);
+    put(Content.left(), 22, fitting(text(certificate.job.laboratoryAddress), small, Content.width() - 30), small);
+    put(Content.right(), 17.5, fitting(certificateNumber, right, mostForNumber), right, Qt::AlignRight);
     put(Content.right(), 22, number, small, Qt::AlignRight);
     page.blocks.push_back({QRectF(Content.left(), 26, Content.width(), 0), Rule{0.4, PageInk::Text}});
 }

@@ -41,13 +41,20 @@ QString interval(const std::optional<Decimal>& low, const std::optional<Decimal>
 std::vector<LabelledText> itemColumn(const Certificate& certificate) {
     const Item& item = certificate.item;
     const Job& job = certificate.job;
-    std::vector<LabelledText> entries = {
+    std::vector<LabelledText> entries;
+    constexpr std::size_t mostInHead = 48;
+    if (job.laboratory.size() > mostInHead || job.laboratoryAddress.size() > 2 * mostInHead)
+        entries.push_back({CertificateSections::tr("Laboratory"), text(job.laboratory) + QStringLiteral(", ") + text(job.laboratoryAddress)});
+    if (job.certificateNumber.size() > mostInHead)
+        entries.push_back({CertificateSections::tr("Certificate"), text(job.certificateNumber)});
+    const std::vector<LabelledText> identity = {
         wanted(CertificateSections::tr("Customer"), job.customer),
         wanted(CertificateSections::tr("Contact"), job.customerContact),
         wanted(CertificateSections::tr("Item"), item.description),
         wanted(CertificateSections::tr("Maker, model"), joined(item.maker, item.model)),
         wanted(CertificateSections::tr("Serial number"), item.serial),
     };
+    entries.insert(entries.end(), identity.begin(), identity.end());
     if (!item.tag.empty())
         entries.push_back({CertificateSections::tr("Tag"), text(item.tag)});
     entries.push_back({CertificateSections::tr("Range"), interval(item.rangeLow, item.rangeHigh, item.reference.unit)});

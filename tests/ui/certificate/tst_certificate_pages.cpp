@@ -165,6 +165,8 @@ class CertificatePagesTest : public QObject {
         }
         QVERIFY(withReadings >= 3);
         QVERIFY(simplified(pages).contains("This certificate replaces certificate QC-2026-0400"));
+        for (const QString& page : pages) // the whole number identifies every page, however long it is
+            QVERIFY(page.contains("QC-2026-0418-REPLACEMENT-OF-THE-SECOND-DRAFT-0001"));
     }
 
     void refusesADraftWithGapsAndNamesThem() {
