@@ -140,6 +140,18 @@ void describe(Fit& fit, const FitTask& task) {
         fit.covarianceScale == CovarianceScale::Stated ? normalQuantileAbove(tail) : studentQuantileAbove(tail, df);
 }
 
+/// Whether the function turns in the calibrated range, so that an indication may belong to several references.
+bool turns(const Fit& fit) {
+    constexpr int Steps = 100;
+    bool rises = false, falls = false;
+    for (int i = 0; i <= Steps && !(rises && falls); ++i) {
+        const double slope = fit.curve->derivative(fit.low + (fit.high - fit.low) * i / Steps);
+        rises = rises || slope > 0;
+        falls = falls || slope < 0;
+    }
+    return rises && falls;
+}
+
 } // namespace
 
 Fit assembleFigures(const FitTask& task, SolvedModel solved, const SumsOfSquares& sums) {
@@ -170,6 +182,8 @@ Fit assembleFigures(const FitTask& task, SolvedModel solved, const SumsOfSquares
     fit.weighedDown = std::move(solved.weighedDown);
     fit.curve = std::make_shared<ModelCurve>(task.model, solved.beta, solution.inverseRoot, toDouble(scale),
                                              task.weighting.profile);
+    if (fit.terms() > 2 && turns(fit))
+        fit.warnings.push_back({WarningCode::NotMonotonic, {}});
     return fit;
 }
 

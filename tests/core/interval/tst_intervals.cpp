@@ -178,6 +178,7 @@ class Intervals : public QObject {
     void severalAnswersNoneAndExtrapolation() {
         Record record = recordOf({"0", "1", "2", "3", "4", "5"}, {"0.01", "3.98", "6.01", "6.02", "3.99", "0.02"});
         const Fit fit = fitOf(record, "polynomial:2");
+        QCOMPARE(fit.warnings.front().code, WarningCode::NotMonotonic);
         const ReadBackAnswer two = readBack(fit, 5.0, 1);
         QCOMPARE(two.others.size(), std::size_t{1});
         QCOMPARE(two.warnings.back().code, WarningCode::SeveralAnswers);
