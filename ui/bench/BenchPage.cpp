@@ -164,7 +164,7 @@ void BenchPage::buildActions() {
     add("bench.exclude", tr("Exclude the selected readings"), QKeySequence(Qt::CTRL | Qt::Key_E), [this] { exclude(); });
     add("bench.readmit", tr("Take the selected readings back in"), QKeySequence(Qt::CTRL | Qt::SHIFT | Qt::Key_E), [this] { readmit(); });
     add("bench.split-table", tr("Variance split as a table"), QKeySequence(Qt::CTRL | Qt::Key_T), [this] { showSplitTable(); });
-    add("bench.compare-exclusions", tr("Compare with and without the exclusions"), {}, [this] {
+    add("bench.compare-exclusions", tr("Compare with and without the exclusions"), QKeySequence(Qt::CTRL | Qt::SHIFT | Qt::Key_X), [this] {
         (new CompareDialog(workbench_, CompareDialog::withoutExclusions(workbench_.record()), this))->open();
     });
     add("bench.convert", tr("Value from a reading"), QKeySequence(Qt::CTRL | Qt::Key_B), [this] { (new ConvertDialog(workbench_, this))->show(); });

@@ -39,22 +39,21 @@ QString lineName(const BudgetItem& item) {
     const QString name = QString::fromStdString(item.name);
     if (!item.derived)
         return name.isEmpty() ? ContributionsCard::tr("(without a name)") : name;
-    return name.isEmpty() ? derivedLineText(*item.derived) : derivedLineText(*item.derived) + QStringLiteral(" · ") + name;
+    return name.isEmpty() ? derivedLineText(*item.derived) : name + QStringLiteral(" · ") + derivedLineText(*item.derived);
 }
 
 std::vector<TextTable::Cell> rowOf(const BudgetItem& item, const Item& unit) {
     const std::string& u = item.side == Side::Reference ? unit.reference.unit : unit.indication.unit;
-    std::vector<TextTable::Cell> row(9);
+    std::vector<TextTable::Cell> row(8);
     row[0].text = lineName(item);
-    row[1].text = significantText(item.amount, 3);
-    row[2].text = QString::fromStdString(u);
-    row[3].text = distributionText(item.distribution);
-    row[4].text = significantText(item.divisor, 3);
-    row[5].text = significantText(item.sensitivity, 4);
-    row[6].text = significantText(item.contribution, 3);
-    row[7].text = std::isfinite(item.degreesOfFreedom) ? significantText(item.degreesOfFreedom, 3) : QString(QChar(0x221e));
-    row[8].text = shareText(item.share);
-    row[8].share = item.share;
+    row[1].text = significantText(item.amount, 3) + QLatin1Char(' ') + QString::fromStdString(u);
+    row[2].text = distributionText(item.distribution);
+    row[3].text = significantText(item.divisor, 3);
+    row[4].text = significantText(item.sensitivity, 4);
+    row[5].text = significantText(item.contribution, 3);
+    row[6].text = std::isfinite(item.degreesOfFreedom) ? significantText(item.degreesOfFreedom, 3) : QString(QChar(0x221e));
+    row[7].text = shareText(item.share);
+    row[7].share = item.share;
     return row;
 }
 
@@ -64,13 +63,12 @@ ContributionsCard::ContributionsCard(Workbench& bench, QWidget* parent)
     : Card(tr("Contributions"), parent), bench_(bench),
       table_(new TextTable({{tr("contribution"), false},
                             {tr("amount"), true},
-                            {tr("unit"), false},
                             {tr("distribution"), false},
                             {tr("divisor"), true},
                             {tr("sensitivity"), true},
-                            {tr("u contributed"), true},
+                            {tr("contributed"), true},
                             {tr("\u03bd"), true},
-                            {tr("share of variance"), true}},
+                            {tr("share of\nvariance"), true}},
                            this)),
       view_(textView(table_, QStringLiteral("budget.contributions"), tr("Contributions"))), sum_(smallLabel(QStringLiteral("budget.sum"))),
       readBack_(smallLabel(QStringLiteral("budget.readBack"))), omitted_(new QVBoxLayout), line_(new QComboBox), reason_(new QLineEdit),
@@ -78,9 +76,10 @@ ContributionsCard::ContributionsCard(Workbench& bench, QWidget* parent)
     QHeaderView* head = view_->horizontalHeader();
     head->setSectionResizeMode(QHeaderView::ResizeToContents);
     head->setSectionResizeMode(0, QHeaderView::Stretch);
-    head->setSectionResizeMode(8, QHeaderView::Fixed);
-    head->resizeSection(8, 170);
-    view_->setItemDelegateForColumn(8, new ShareDelegate(view_));
+    head->setMinimumSectionSize(40);
+    head->setSectionResizeMode(7, QHeaderView::Fixed);
+    head->resizeSection(7, 150);
+    view_->setItemDelegateForColumn(7, new ShareDelegate(view_));
     body()->addWidget(view_, 1);
     sum_->setForegroundRole(QPalette::WindowText);
     body()->addWidget(sum_);
@@ -153,7 +152,7 @@ void ContributionsCard::show() {
         setTitle(tr("Contributions"));
         setNote({});
     }
-    table_->setHead(6, tr("u contributed %1").arg(y).trimmed());
+    table_->setHead(5, tr("contributed\n%1").arg(y).trimmed());
     table_->fill(std::move(rows));
     sum_->setText(sum);
     sum_->setVisible(!sum.isEmpty());

@@ -3,6 +3,7 @@
 
 #include "ui/commands/FieldForm.h"
 #include "ui/look/Look.h"
+#include "ui/look/PaddedDelegate.h"
 #include "ui/words/Words.h"
 
 #include <QHeaderView>
@@ -84,6 +85,7 @@ ManualLinesCard::ManualLinesCard(Workbench& bench, QWidget* parent)
     table_->verticalHeader()->hide();
     table_->verticalHeader()->setDefaultSectionSize(26);
     table_->setShowGrid(false);
+    table_->setItemDelegate(new PaddedDelegate(table_));
     table_->setTabKeyNavigation(false);
     table_->setSelectionBehavior(QAbstractItemView::SelectRows);
     table_->setSelectionMode(QAbstractItemView::SingleSelection);
@@ -118,7 +120,7 @@ void ManualLinesCard::show() {
     }
     if (count() > 0)
         table_->setCurrentCell(chosen_, 0);
-    table_->setFixedHeight(30 + 26 * std::max(1, std::min(count(), 5)));
+    table_->setFixedHeight(34 + 26 * std::max(1, std::min(count(), 5)));
     setNote(count() == 0 ? tr("none yet") : QString());
     remove_->setVisible(count() > 0);
     remove_->setEnabled(!bench_.readOnly());
@@ -135,6 +137,7 @@ void ManualLinesCard::showEditor() {
         return;
     editor_ = lineEditor(bench_, static_cast<std::size_t>(editing_));
     body()->addWidget(editor_);
+    editor_->show();
 }
 
 void ManualLinesCard::add() {

@@ -30,6 +30,10 @@ const SetPointBudget* budgetOf(const Budget& budget, const PointResult& point) {
     return nullptr;
 }
 
+QString probabilityText(double p) {
+    return p > 0.999 && p < 1 ? QStringLiteral("> ") + fixedText(99.9, 1) + QStringLiteral(" %") : fixedText(100 * p, 1) + QStringLiteral(" %");
+}
+
 std::vector<TextTable::Cell> rowOf(const PointResult& p, const Budget& budget, int referenceDecimals) {
     const int decimals = decimalsOf(p.expanded);
     const SetPointBudget* made = budgetOf(budget, p);
@@ -46,7 +50,7 @@ std::vector<TextTable::Cell> rowOf(const PointResult& p, const Budget& budget, i
     row[Limit].text = p.limit ? QStringLiteral("\u00b1") + fixedText(*p.limit, decimals) : QString();
     row[Decision].text = p.state ? conformityText(*p.state) : QString();
     row[Decision].warning = bad;
-    row[Probability].text = p.conformanceProbability ? shareText(*p.conformanceProbability) : QString();
+    row[Probability].text = p.conformanceProbability ? probabilityText(*p.conformanceProbability) : QString();
     return row;
 }
 
@@ -71,10 +75,10 @@ ResultsCard::ResultsCard(Workbench& bench, QWidget* parent)
                             {tr("error"), true},
                             {tr("U"), true},
                             {tr("k"), true},
-                            {tr("\u03bd eff"), true},
+                            {tr("\u03bd\neff"), true},
                             {tr("limit"), true},
                             {tr("decision"), false},
-                            {tr("p conform"), true}},
+                            {tr("p of\nconformity"), true}},
                            this)),
       view_(textView(table_, QStringLiteral("budget.results"), tr("Results at each set point"))), empty_(new QLabel) {
     empty_->setForegroundRole(inkRole::quiet);
@@ -82,10 +86,8 @@ ResultsCard::ResultsCard(Workbench& bench, QWidget* parent)
     body()->addWidget(empty_);
     body()->addWidget(view_, 1);
     view_->horizontalHeader()->setSectionResizeMode(QHeaderView::Stretch);
-    view_->horizontalHeader()->setSectionResizeMode(Factor, QHeaderView::ResizeToContents);
-    view_->horizontalHeader()->setSectionResizeMode(Freedom, QHeaderView::ResizeToContents);
-    view_->horizontalHeader()->setSectionResizeMode(Way, QHeaderView::ResizeToContents);
-    view_->horizontalHeader()->setSectionResizeMode(Decision, QHeaderView::ResizeToContents);
+    for (const int narrow : {Way, Factor, Freedom, Decision, Probability})
+        view_->horizontalHeader()->setSectionResizeMode(narrow, QHeaderView::ResizeToContents);
     connect(view_->selectionModel(), &QItemSelectionModel::currentRowChanged, this,
             [this](const QModelIndex& row) { emit pointChosen(row.row()); });
     connect(&bench, &Workbench::evaluationChanged, this, &ResultsCard::show);
@@ -97,12 +99,12 @@ void ResultsCard::show() {
     const auto evaluation = bench_.evaluation();
     const PhaseEvaluation* phase = evaluation->phase(record.choices.phase);
     const QString x = QString::fromStdString(record.item.reference.unit), y = QString::fromStdString(record.item.indication.unit);
-    table_->setHead(SetPoint, tr("set point %1").arg(x).trimmed());
-    table_->setHead(Reference, tr("reference %1").arg(x).trimmed());
-    table_->setHead(Indication, tr("indication %1").arg(y).trimmed());
-    table_->setHead(ErrorShown, tr("error %1").arg(y).trimmed());
-    table_->setHead(Expanded, tr("U %1").arg(y).trimmed());
-    table_->setHead(Limit, tr("limit %1").arg(y).trimmed());
+    table_->setHead(SetPoint, tr("set point\n%1").arg(x).trimmed());
+    table_->setHead(Reference, tr("reference\n%1").arg(x).trimmed());
+    table_->setHead(Indication, tr("indication\n%1").arg(y).trimmed());
+    table_->setHead(ErrorShown, tr("error\n%1").arg(y).trimmed());
+    table_->setHead(Expanded, tr("U\n%1").arg(y).trimmed());
+    table_->setHead(Limit, tr("limit\n%1").arg(y).trimmed());
     std::vector<std::vector<TextTable::Cell>> rows;
     if (phase) {
         const int decimals = record.readings->setPoint().scale();

@@ -2,6 +2,7 @@
 #include "ui/budget/TextTable.h"
 
 #include "ui/look/Look.h"
+#include "ui/look/PaddedDelegate.h"
 
 #include <QHeaderView>
 #include <QPainter>
@@ -60,7 +61,6 @@ QVariant TextTable::headerData(int section, Qt::Orientation orientation, int rol
 }
 
 void ShareDelegate::paint(QPainter* painter, const QStyleOptionViewItem& option, const QModelIndex& index) const {
-    QStyledItemDelegate::paint(painter, option, QModelIndex());
     const double share = index.data(TextTable::ShareRole).toDouble();
     painter->save();
     if (option.state & QStyle::State_Selected)
@@ -79,6 +79,7 @@ QTableView* textView(TextTable* model, const QString& id, const QString& name) {
     view->setObjectName(id);
     view->setAccessibleName(name);
     view->setModel(model);
+    view->setItemDelegate(new PaddedDelegate(view));
     view->setSelectionBehavior(QAbstractItemView::SelectRows);
     view->setSelectionMode(QAbstractItemView::SingleSelection);
     view->setTabKeyNavigation(false);

@@ -58,7 +58,7 @@ CertificatePage::CertificatePage(Workbench& workbench, CertificateAsks asks, QWi
     : QWidget(parent), workbench_(workbench), asks_(std::move(asks)), preview_(new PagePreview) {
     setObjectName(QStringLiteral("certificatePage"));
     addPageAction("certificate.print", tr("&Print the certificate draft…"), QKeySequence::Print, &CertificatePage::print);
-    addPageAction("certificate.pdf", tr("Save the certificate draft as P&DF…"), QKeySequence(QStringLiteral("Ctrl+E")), &CertificatePage::saveAsPdf);
+    addPageAction("certificate.pdf", tr("Save the certificate draft as P&DF…"), QKeySequence(QStringLiteral("Ctrl+Shift+P")), &CertificatePage::saveAsPdf);
     auto* row = new QHBoxLayout(this);
     row->setContentsMargins(space::card, space::card, space::card, space::card);
     row->setSpacing(space::step + space::half);

@@ -6,6 +6,7 @@
 #include "ui/commands/Together.h"
 #include "ui/import/ImportTables.h"
 #include "ui/look/Look.h"
+#include "ui/look/PaddedDelegate.h"
 #include "ui/words/Words.h"
 
 #include <QCheckBox>
@@ -105,6 +106,7 @@ ImportDialog::ImportDialog(const QByteArray& bytes, const QString& origin, const
     issuesView_->verticalHeader()->hide();
     issuesView_->verticalHeader()->setDefaultSectionSize(24);
     issuesView_->setShowGrid(false);
+    issuesView_->setItemDelegate(new PaddedDelegate(issuesView_));
     issuesView_->setSelectionBehavior(QAbstractItemView::SelectRows);
     issuesView_->horizontalHeader()->setStretchLastSection(true);
     issuesView_->horizontalHeader()->setDefaultAlignment(Qt::AlignLeft | Qt::AlignVCenter);
@@ -253,7 +255,7 @@ void ImportDialog::readAll() {
             const auto rows = static_cast<int>(read_->block.n);
             sum = tr("%n reading(s) will be taken in", nullptr, rows);
             if (read_->missing > 0)
-                sum += tr("; %n cell(s) are empty or stand for no value", nullptr, static_cast<int>(read_->missing));
+                sum += tr("; %n cell(s) [is|are] empty or [stands|stand] for no value", nullptr, static_cast<int>(read_->missing));
             sum += QLatin1Char('.');
         } else {
             sum = errorText(read.error());
@@ -262,8 +264,8 @@ void ImportDialog::readAll() {
     sum_->setText(sum);
     sum_->setForegroundRole(read_ ? QPalette::WindowText : inkRole::warning);
     const std::size_t issues = read_ ? read_->issues.count : 0;
-    issuesHead_->setText(tr("%n cell(s) cannot be taken in as they stand. Their rows come in without that value, to be completed on the "
-                            "bench; or correct the file and open it again.",
+    issuesHead_->setText(tr("%n cell(s) cannot be taken in as [it stands|they stand]. [Its row comes|Their rows come] in without that value, "
+                            "to be completed on the bench; or correct the file and open it again.",
                             nullptr, static_cast<int>(issues)));
     issuesHead_->setVisible(issues > 0);
     issuesView_->setVisible(issues > 0);

@@ -140,6 +140,7 @@ void ConditionsCard::show() {
         grid->addWidget(away, static_cast<int>(i) + 1, 6);
     }
     rows_->addWidget(table);
+    table->show();
 }
 
 } // namespace spanwright

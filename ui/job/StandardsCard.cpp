@@ -4,6 +4,7 @@
 #include "ui/commands/PartCommand.h"
 #include "ui/job/StandardEditor.h"
 #include "ui/look/Look.h"
+#include "ui/look/PaddedDelegate.h"
 
 #include <QHeaderView>
 #include <QTableWidget>
@@ -25,7 +26,7 @@ QString dueText(const Standard& standard, int index, const Evaluation& evaluatio
 } // namespace
 
 StandardsCard::StandardsCard(Workbench& bench, QWidget* parent)
-    : Card(tr("Reference standards"), parent), bench_(bench), table_(new QTableWidget(0, 4)), remove_(new QToolButton) {
+    : Card(tr("Reference standards"), parent), bench_(bench), table_(new QTableWidget(0, 3)), remove_(new QToolButton) {
     auto* addButton = new QToolButton;
     addButton->setObjectName(QStringLiteral("standards.add"));
     addButton->setText(tr("Add a standard"));
@@ -41,16 +42,16 @@ StandardsCard::StandardsCard(Workbench& bench, QWidget* parent)
 
     table_->setObjectName(QStringLiteral("standards"));
     table_->setAccessibleName(tr("Reference standards"));
-    table_->setHorizontalHeaderLabels({tr("id"), tr("what"), tr("certificate"), tr("due")});
+    table_->setHorizontalHeaderLabels({tr("id"), tr("what"), tr("due")});
     table_->horizontalHeader()->setDefaultAlignment(Qt::AlignLeft | Qt::AlignVCenter);
     table_->horizontalHeader()->setHighlightSections(false);
     table_->horizontalHeader()->setSectionResizeMode(1, QHeaderView::Stretch);
     table_->setColumnWidth(0, 84);
-    table_->setColumnWidth(2, 100);
-    table_->setColumnWidth(3, 128);
+    table_->setColumnWidth(2, 140);
     table_->verticalHeader()->hide();
     table_->verticalHeader()->setDefaultSectionSize(26);
     table_->setShowGrid(false);
+    table_->setItemDelegate(new PaddedDelegate(table_));
     table_->setTabKeyNavigation(false);
     table_->setSelectionBehavior(QAbstractItemView::SelectRows);
     table_->setSelectionMode(QAbstractItemView::SingleSelection);
@@ -83,19 +84,19 @@ void StandardsCard::show() {
     table_->setRowCount(count());
     for (int row = 0; row < count(); ++row) {
         const Standard& s = standards[static_cast<std::size_t>(row)];
-        const QString texts[] = {QString::fromStdString(s.id), QString::fromStdString(s.description), QString::fromStdString(s.certificate),
+        const QString texts[] = {QString::fromStdString(s.id), QString::fromStdString(s.description),
                                  dueText(s, row, *bench_.evaluation())};
-        for (int column = 0; column < 4; ++column) {
+        for (int column = 0; column < 3; ++column) {
             auto* item = new QTableWidgetItem(texts[column]);
             item->setToolTip(texts[column]);
-            if (column == 3 && texts[3] != QString::fromStdString(s.due))
+            if (column == 2 && texts[2] != QString::fromStdString(s.due))
                 item->setForeground(scheme().warning);
             table_->setItem(row, column, item);
         }
     }
     if (count() > 0)
         table_->setCurrentCell(chosen_, 0);
-    table_->setFixedHeight(30 + 26 * std::max(1, std::min(count(), 5)));
+    table_->setFixedHeight(34 + 26 * std::max(1, std::min(count(), 5)));
     remove_->setEnabled(count() > 0 && !bench_.readOnly());
     if (editing_ != (count() > 0 ? chosen_ : -1))
         showEditor();
@@ -109,6 +110,7 @@ void StandardsCard::showEditor() {
         return;
     editor_ = makeStandardEditor(bench_, static_cast<std::size_t>(editing_));
     body()->addWidget(editor_);
+    editor_->show();
 }
 
 void StandardsCard::add() {

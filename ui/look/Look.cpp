@@ -8,6 +8,11 @@
 
 #include <cmath>
 
+/// The arrows lie in a library that is linked in, so they must be asked for by name; outside of any namespace, as the macro wants.
+static void loadResources() {
+    Q_INIT_RESOURCE(resources);
+}
+
 namespace spanwright {
 
 namespace {
@@ -92,7 +97,12 @@ QLineEdit, QPlainTextEdit, QTextEdit, QAbstractSpinBox, QComboBox {
 QLineEdit:focus, QPlainTextEdit:focus, QTextEdit:focus, QAbstractSpinBox:focus, QComboBox:focus { border: 1px solid @accent; }
 QLineEdit[refused="true"], QComboBox[refused="true"], QAbstractSpinBox[refused="true"] { border: 1px solid @warning; }
 QLineEdit:disabled, QComboBox:disabled, QAbstractSpinBox:disabled { background: @paper; }
-QComboBox::drop-down { border: none; width: 20px; }
+QComboBox::drop-down { border: none; width: 22px; }
+QComboBox::down-arrow, QAbstractSpinBox::down-arrow { image: url(:/look/down-@name.png); width: 10px; height: 6px; }
+QAbstractSpinBox::up-arrow { image: url(:/look/up-@name.png); width: 10px; height: 6px; }
+QAbstractSpinBox::up-button, QAbstractSpinBox::down-button { border: none; background: transparent; width: 20px; }
+QAbstractSpinBox::up-button { subcontrol-position: top right; }
+QAbstractSpinBox::down-button { subcontrol-position: bottom right; }
 QComboBox QAbstractItemView { background: @card; border: 1px solid @edge; selection-background-color: @selection;
   selection-color: @ink; outline: none; }
 QPushButton { background: @card; border: 1px solid @edge; border-radius: 4px; padding: 4px 14px; }
@@ -133,6 +143,7 @@ QSplitter::handle { background: transparent; }
 )");
     const QColor edge = s.name == SchemeName::Light ? s.line.darker(122) : s.line.lighter(150);
     QString sheet = form;
+    sheet.replace(QLatin1String("@name"), s.name == SchemeName::Light ? QLatin1String("light") : QLatin1String("dark"));
     // Longer names first, so that @onAccent is not read as @on….
     const std::pair<const char*, QColor> names[] = {{"@selection", s.selection}, {"@onAccent", s.onAccent}, {"@warning", s.warning},
                                                     {"@accent", s.accent},       {"@quiet", s.quiet},       {"@paper", s.paper},
@@ -167,6 +178,7 @@ const Scheme& paperScheme() {
 }
 
 void setScheme(QApplication& application, SchemeName name) {
+    loadResources();
     current() = name == SchemeName::Light ? lightScheme() : darkScheme();
     if (!application.style() || application.style()->name() != QLatin1String("fusion"))
         application.setStyle(QStyleFactory::create(QStringLiteral("Fusion")));

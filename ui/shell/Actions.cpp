@@ -29,13 +29,9 @@ QAction* Actions::find(const QString& id) const {
 }
 
 void Actions::adopt(QWidget* page) {
-    QList<QWidget*> widgets = page->findChildren<QWidget*>();
-    widgets.prepend(page);
-    for (const QWidget* widget : widgets)
-        for (QAction* action : widget->actions())
-            if (!action->isSeparator() && !action->menu() && !action->objectName().isEmpty() && !action->text().isEmpty() &&
-                std::find(all_.begin(), all_.end(), action) == all_.end())
-                all_.push_back(action);
+    for (QAction* action : page->actions())
+        if (!action->isSeparator() && !action->objectName().isEmpty() && !action->text().isEmpty())
+            all_.push_back(action);
 }
 
 QString plainText(const QAction* action) {

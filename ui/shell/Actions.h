@@ -30,7 +30,7 @@ class Actions : public QObject {
     QAction* add(QMenu* menu, const ActionSpec& spec);
     [[nodiscard]] QAction* find(const QString& id) const;
     [[nodiscard]] const std::vector<QAction*>& all() const { return all_; }
-    /// Takes up actions that other rooms put on their widgets (QWidget::actions()), so that they can be found too.
+    /// Takes up the actions of a page of another room (QWidget::actions()), so that they can be found too.
     void adopt(QWidget* page);
 
   private:

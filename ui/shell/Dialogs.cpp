@@ -72,6 +72,10 @@ QString ScreenDialogs::savePath(QWidget* parent, const QString& suggestion) {
     return dialog.exec() == QDialog::Accepted ? dialog.selectedFiles().value(0) : QString();
 }
 
+QString ScreenDialogs::pdfPath(QWidget* parent, const QString& suggestion) {
+    return QFileDialog::getSaveFileName(parent, tr("Save the draft as PDF"), suggestion, tr("PDF (*.pdf)"));
+}
+
 void ScreenDialogs::tell(QWidget* parent, const QString& title, const QString& text) {
     QMessageBox* box = messageBox(parent, title, text);
     box->addButton(tr("&Close"), QMessageBox::AcceptRole);

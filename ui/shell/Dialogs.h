@@ -20,6 +20,7 @@ class Dialogs {
     /// Empty when given up.
     virtual QString openPath(QWidget* parent, const QString& folder) = 0;
     virtual QString savePath(QWidget* parent, const QString& suggestion) = 0;
+    virtual QString pdfPath(QWidget* parent, const QString& suggestion) = 0;
     virtual void tell(QWidget* parent, const QString& title, const QString& text) = 0;
     virtual bool confirm(QWidget* parent, const QString& title, const QString& text, const QString& yes) = 0;
     /// A line of text; null when given up.
@@ -35,6 +36,7 @@ class ScreenDialogs : public Dialogs {
     RecoveryAnswer askRecovery(QWidget* parent, const QString& text) override;
     QString openPath(QWidget* parent, const QString& folder) override;
     QString savePath(QWidget* parent, const QString& suggestion) override;
+    QString pdfPath(QWidget* parent, const QString& suggestion) override;
     void tell(QWidget* parent, const QString& title, const QString& text) override;
     bool confirm(QWidget* parent, const QString& title, const QString& text, const QString& yes) override;
     QString askText(QWidget* parent, const QString& title, const QString& label, const QString& now) override;

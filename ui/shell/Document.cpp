@@ -24,7 +24,7 @@ QString differenceText(const StoredResults& stored, const Evaluation& now) {
     const std::vector<Warning> all = differingFigures(stored.figures, now);
     if (all.empty())
         return {};
-    return Document::tr("%n stored figure(s) differ from what is computed now; the session was saved by version %1. The first: %2", nullptr,
+    return Document::tr("%n stored figure(s) [differs|differ] from what is computed now; the session was saved by version %1. The first: %2", nullptr,
                         static_cast<int>(all.size()))
         .arg(QString::fromStdString(stored.program), warningText(all.front()));
 }
@@ -172,7 +172,7 @@ QString Document::path() const {
 }
 
 bool Document::pristine() const {
-    return !file_ && !modified() && bench_.undoStack().count() == 0 && bench_.record().readings->empty();
+    return !file_ && bench_.record() == Record{};
 }
 
 void Document::keepNow() {

@@ -2,6 +2,7 @@
 #include "ui/shell/JournalDialog.h"
 
 #include "ui/look/Look.h"
+#include "ui/look/PaddedDelegate.h"
 
 #include <QAbstractTableModel>
 #include <QCoreApplication>
@@ -83,6 +84,7 @@ JournalDialog::JournalDialog(const Record& record, QWidget* parent) : QDialog(pa
     table->verticalHeader()->hide();
     table->verticalHeader()->setDefaultSectionSize(24);
     table->setShowGrid(false);
+    table->setItemDelegate(new PaddedDelegate(table));
     table->setSelectionBehavior(QAbstractItemView::SelectRows);
     table->horizontalHeader()->setDefaultAlignment(Qt::AlignLeft | Qt::AlignVCenter);
     const int widths[] = {150, 50, 120, 190, 140, 140};

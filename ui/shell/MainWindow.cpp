@@ -52,6 +52,18 @@ QString savedText(const Document& document) {
     return MainWindow::tr("saved %1").arg(at.toString(today ? QStringLiteral("HH:mm") : QStringLiteral("yyyy-MM-dd HH:mm")));
 }
 
+/// To the widget or the first thing in it that takes the focus.
+bool giveFocus(QWidget* widget) {
+    QList<QWidget*> candidates = widget->findChildren<QWidget*>();
+    candidates.prepend(widget);
+    for (QWidget* candidate : candidates)
+        if (candidate->focusPolicy() & Qt::TabFocus && candidate->isVisible() && candidate->isEnabled()) {
+            candidate->setFocus(Qt::ShortcutFocusReason);
+            return true;
+        }
+    return false;
+}
+
 QStringList localFiles(const QMimeData* data) {
     QStringList paths;
     for (const QUrl& url : data->urls())
@@ -114,7 +126,9 @@ void MainWindow::makePages() {
     job_ = new JobPage(bench_);
     budget_ = new BudgetPage(bench_);
     const PageLinks links{.showField = [this](const QString& stage, const QString& field) { showField(stage, field); },
-                          .importTable = [this](const QByteArray& bytes, const QString& origin) { files_.importTable(bytes, origin); }};
+                          .pdfPath = [this](QWidget* from, const QString& suggestion) { return around_.dialogs.pdfPath(from, suggestion); },
+                          .tell = [this](QWidget* from, const QString& title,
+                                         const QString& text) { around_.dialogs.tell(from, title, text); }};
     pages_->addWidget(job_);
     pages_->addWidget(makeBenchPage(bench_, links));
     pages_->addWidget(budget_);
@@ -126,9 +140,7 @@ void MainWindow::showStage(Stage stage) {
     stage_ = stage;
     bar_->setCurrent(stage);
     pages_->setCurrentIndex(static_cast<int>(stage));
-    if (QWidget* page = pages_->currentWidget(); page->focusProxy() || page->focusPolicy() != Qt::NoFocus)
-        page->setFocus(Qt::OtherFocusReason);
-    else
+    if (!enterPage(pages_->currentWidget()))
         goToPart(0);
 }
 
@@ -143,9 +155,9 @@ void MainWindow::showField(const QString& stage, const QString& field) {
     while (!name.isEmpty()) {
         auto* editor = pages_->currentWidget()->findChild<QWidget*>(name);
         if (editor && !editor->isHidden()) {
-            editor->setFocus(Qt::ShortcutFocusReason);
-            if (editor->focusPolicy() == Qt::NoFocus && editor->nextInFocusChain())
-                editor->nextInFocusChain()->setFocus(Qt::ShortcutFocusReason);
+            // What takes no focus itself hands it to its first child, and an empty part to what its card offers.
+            for (QWidget* place = editor; place && !giveFocus(place); place = place->parentWidget()) {
+            }
             if (stage_ == Stage::Job)
                 job_->bringIntoView(editor);
             return;

@@ -20,22 +20,22 @@ void MainWindow::makeFileMenu() {
             doIt();
         });
     };
-    add({"file.new", tr("&New session"), QKeySequence::New}, [this] { files_.newSession(); });
+    add({"file.new", tr("&New session"), QKeySequence(QStringLiteral("Ctrl+N"))}, [this] { files_.newSession(); });
     add({"file.window", tr("New &window"), QKeySequence(QStringLiteral("Ctrl+Shift+N"))}, [this] { emit newWindowWanted(); });
-    add({"file.open", tr("&Open\u2026"), QKeySequence::Open}, [this] { files_.open(); });
+    add({"file.open", tr("&Open\u2026"), QKeySequence(QStringLiteral("Ctrl+O"))}, [this] { files_.open(); });
     QMenu* recent = menu->addMenu(tr("Open &recent"));
     recent->setObjectName(QStringLiteral("menu.recent"));
     connect(&files_, &FileDesk::recentChanged, this, [this, recent] { fillRecent(recent); });
     fillRecent(recent);
     menu->addSeparator();
-    add({"file.save", tr("&Save"), QKeySequence::Save}, [this] { files_.save(); });
+    add({"file.save", tr("&Save"), QKeySequence(QStringLiteral("Ctrl+S"))}, [this] { files_.save(); });
     add({"file.save-as", tr("Save &as\u2026"), QKeySequence(QStringLiteral("Ctrl+Shift+S"))}, [this] { files_.saveAs(); });
     menu->addSeparator();
     add({"file.import", tr("&Import readings\u2026"), QKeySequence(QStringLiteral("Ctrl+I"))}, [this] { files_.import(); });
     add({"file.paste-table", tr("Import from the clip&board\u2026"), QKeySequence(QStringLiteral("Ctrl+Shift+V"))}, [this] { pasteTable(); });
     menu->addSeparator();
-    add({"file.close", tr("&Close"), QKeySequence::Close}, [this] { close(); });
-    add({"file.quit", tr("&Quit"), QKeySequence::Quit}, [] { QApplication::closeAllWindows(); });
+    add({"file.close", tr("&Close"), QKeySequence(QStringLiteral("Ctrl+W"))}, [this] { close(); });
+    add({"file.quit", tr("&Quit"), QKeySequence(QStringLiteral("Ctrl+Q"))}, [] { QApplication::closeAllWindows(); });
 }
 
 void MainWindow::fillRecent(QMenu* menu) {
@@ -55,8 +55,8 @@ void MainWindow::makeEditMenu() {
     QMenu* menu = menuBar()->addMenu(tr("&Edit"));
     menu->setObjectName(QStringLiteral("menu.edit"));
     QUndoStack& stack = bench_.undoStack();
-    QAction* undo = actions_.add(menu, {"edit.undo", tr("&Undo"), QKeySequence::Undo});
-    QAction* redo = actions_.add(menu, {"edit.redo", tr("&Redo"), QKeySequence::Redo});
+    QAction* undo = actions_.add(menu, {"edit.undo", tr("&Undo"), QKeySequence(QStringLiteral("Ctrl+Z"))});
+    QAction* redo = actions_.add(menu, {"edit.redo", tr("&Redo"), QKeySequence(QStringLiteral("Ctrl+Shift+Z"))});
     const auto follow = [this, undo, redo] {
         QUndoStack& s = bench_.undoStack();
         undo->setEnabled(s.canUndo() && !bench_.readOnly());
@@ -95,13 +95,15 @@ void MainWindow::makeRecordMenu() {
 void MainWindow::makeViewMenu() {
     QMenu* menu = menuBar()->addMenu(tr("&View"));
     menu->setObjectName(QStringLiteral("menu.view"));
+    const std::pair<const char*, QString> stages[] = {{"view.job", tr("Go to &Job")},
+                                                      {"view.bench", tr("Go to &Bench")},
+                                                      {"view.budget", tr("Go to B&udget")},
+                                                      {"view.certificate", tr("Go to &Certificate")}};
     int number = 0;
     for (const Stage stage : allStages) {
-        static constexpr const char* ids[] = {"view.job", "view.bench", "view.budget", "view.certificate"};
-        ++number;
-        connect(actions_.add(menu, {ids[number - 1], tr("&%1 %2").arg(number).arg(stageTitle(stage)),
-                                    QKeySequence(QStringLiteral("Ctrl+%1").arg(number))}),
-                &QAction::triggered, this, [this, stage] { showStage(stage); });
+        const auto& [id, text] = stages[number++];
+        connect(actions_.add(menu, {id, text, QKeySequence(QStringLiteral("Ctrl+%1").arg(number))}), &QAction::triggered, this,
+                [this, stage] { showStage(stage); });
     }
     menu->addSeparator();
     connect(actions_.add(menu, {"view.next-part", tr("&Next part"), QKeySequence(Qt::Key_F6)}), &QAction::triggered, this,

@@ -2,9 +2,7 @@
 #include "ui/shell/Pages.h"
 
 #include "ui/bench/BenchPage.h"
-#if __has_include("ui/certificate/CertificatePage.h")
 #include "ui/certificate/CertificatePage.h"
-#endif
 
 namespace spanwright {
 
@@ -17,8 +15,21 @@ QWidget* makeBenchPage(Workbench& bench, const PageLinks& links) {
     return page;
 }
 
-QWidget* makeCertificatePage(Workbench&, const PageLinks&) {
-    return new QWidget;
+QWidget* makeCertificatePage(Workbench& bench, const PageLinks& links) {
+    CertificateAsks asks = screenAsks();
+    asks.pdfPath = links.pdfPath;
+    asks.tell = links.tell;
+    auto* page = new CertificatePage(bench, asks);
+    QObject::connect(page, &CertificatePage::goTo, page, links.showField);
+    return page;
+}
+
+bool enterPage(QWidget* page) {
+    if (auto* bench = qobject_cast<BenchPage*>(page)) {
+        bench->startTyping();
+        return true;
+    }
+    return false;
 }
 
 } // namespace spanwright

@@ -1,7 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
-#include <QByteArray>
 #include <QString>
 
 #include <functional>
@@ -15,10 +14,14 @@ class Workbench;
 /// What a page asks of the window.
 struct PageLinks {
     std::function<void(const QString& stage, const QString& field)> showField;
-    std::function<void(const QByteArray& bytes, const QString& origin)> importTable;
+    std::function<QString(QWidget* parent, const QString& suggestion)> pdfPath;
+    std::function<void(QWidget* parent, const QString& title, const QString& text)> tell;
 };
 
 QWidget* makeBenchPage(Workbench& bench, const PageLinks& links);
 QWidget* makeCertificatePage(Workbench& bench, const PageLinks& links);
+
+/// Puts the cursor where the work of the page goes on. False: the page leaves that to the window.
+bool enterPage(QWidget* page);
 
 } // namespace spanwright

@@ -2,6 +2,7 @@
 #include "ui/shell/Start.h"
 
 #include "ui/shell/MainWindow.h"
+#include "ui/words/EnglishPlurals.h"
 
 #include <QApplication>
 #include <QDateTime>
@@ -59,7 +60,7 @@ class Windows {
 } // namespace
 
 int runWindow(QApplication& application, const StartOptions& options) {
-    QApplication::setApplicationDisplayName(QStringLiteral("Spanwright"));
+    speakEnglish(application);
     Settings settings;
     ScreenDialogs dialogs;
     setScheme(application, options.scheme.value_or(settings.scheme()));
