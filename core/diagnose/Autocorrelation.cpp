@@ -79,7 +79,9 @@ class LogProduct {
         }
     }
     [[nodiscard]] double logSize() const { return logSize_ + std::log(std::hypot(product_.re, product_.im)); }
-    [[nodiscard]] double argument() const { return std::atan2(product_.im, product_.re) + 2 * std::numbers::pi * turns_; }
+    [[nodiscard]] double argument() const {
+        return std::atan2(product_.im, product_.re) + 2 * std::numbers::pi * turns_;
+    }
 
   private:
     Complex product_{1, 0};
@@ -106,7 +108,8 @@ Rows orthonormalRows(const std::vector<std::vector<double>>& columns) {
     return result;
 }
 
-/// Im φ(t) and |φ(t)| of Q = u'(A − d)u with u normal in the complement of the columns, where u'Au is the sum of squared steps.
+/// Im φ(t) and |φ(t)| of Q = u'(A − d)u with u normal in the complement of the columns, where u'Au is the sum of
+/// squared steps.
 class QuadraticForm {
   public:
     QuadraticForm(double observed, Rows q) : d_(observed), q_(std::move(q)), last_(q_.terms), next_(q_.terms) {}

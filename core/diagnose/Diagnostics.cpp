@@ -17,15 +17,15 @@
 namespace spanwright {
 namespace {
 
-/// Beyond this, Durbin and Watson's p comes from the normal distribution with the exact moments, and beyond the second bound from
-/// the moments of white noise: the terms of the function no longer matter.
+/// Beyond this, Durbin and Watson's p comes from the normal distribution with the exact moments, and beyond the second
+/// bound from the moments of white noise: the terms of the function no longer matter.
 constexpr std::size_t mostForExactWatson = 2000;
 constexpr std::size_t mostForWatsonMoments = 100'000;
 /// Below this a second thread costs more than it gives.
 constexpr std::size_t fewerThanThreads = 200'000;
 
-/// Columns of the function at the readings; for a function that is none of the polynomials, a polynomial of as many terms,
-/// which `approximate` says.
+/// Columns of the function at the readings; for a function that is none of the polynomials, a polynomial of as many
+/// terms, which `approximate` says.
 struct Design {
     std::vector<std::vector<double>> columns;
     bool approximate = false;
@@ -34,7 +34,8 @@ struct Design {
 Design designOf(const Sample& sample, const Fit& fit) {
     Design design;
     const bool known = hasFunctionBasis(fit.function);
-    const FunctionChoice function = known ? fit.function : FunctionChoice{FunctionFamily::Polynomial, static_cast<int>(fit.terms()) - 1};
+    const FunctionChoice function =
+        known ? fit.function : FunctionChoice{FunctionFamily::Polynomial, static_cast<int>(fit.terms()) - 1};
     const PairColumn& abscissa = fit.direction == FitDirection::Indication ? sample.reference : sample.indication;
     const FunctionBasis basis = functionBasis(function, abscissa.high);
     for (std::size_t j = 0; j < basis.terms; ++j)
@@ -104,7 +105,8 @@ void outliers(std::span<const T> u, const Sample& sample, const DiagnoseQuestion
 }
 
 /// The tests that look at the function's columns.
-void regressions(const Sample& sample, const Residuals& residuals, const Fit& fit, std::span<const double> u, Diagnostics& result) {
+void regressions(const Sample& sample, const Residuals& residuals, const Fit& fit, std::span<const double> u,
+                 Diagnostics& result) {
     if (u.size() <= mostForWatsonMoments) {
         Design design = designOf(sample, fit);
         result.breuschPagan = breuschPagan(u, design.columns);
@@ -118,7 +120,8 @@ void regressions(const Sample& sample, const Residuals& residuals, const Fit& fi
         result.breuschPagan = breuschPagan(u, designOf(sample, fit).columns);
     }
     if (result.durbinWatson) {
-        result.durbinWatsonP = 0.5 * std::erfc(-(*result.durbinWatson - 2) * std::sqrt(static_cast<double>(u.size()) / 8));
+        result.durbinWatsonP =
+            0.5 * std::erfc(-(*result.durbinWatson - 2) * std::sqrt(static_cast<double>(u.size()) / 8));
         result.warnings.push_back(approximate("durbin_watson", "normal"));
     }
 }
@@ -135,15 +138,18 @@ void take(const EqualVariances& equal, Diagnostics& result) {
 
 } // namespace
 
-Diagnostics diagnose(const Sample& sample, const Residuals& residuals, const Fit& fit, const DiagnoseQuestion& question) {
+Diagnostics diagnose(const Sample& sample, const Residuals& residuals, const Fit& fit,
+                     const DiagnoseQuestion& question) {
     Diagnostics result;
     if (sample.size() < 2 || !(fit.residualSs > roundingSquares(residuals)))
         return result;
-    const std::vector<double> weighted = residuals.weight.empty() ? std::vector<double>{} : weightedResiduals<double>(residuals);
+    const std::vector<double> weighted =
+        residuals.weight.empty() ? std::vector<double>{} : weightedResiduals<double>(residuals);
     const std::span<const double> u = residuals.weight.empty() ? residuals.e.high : weighted;
     // Independent of the rest, so for very many readings beside it.
-    auto variances = std::async(u.size() > fewerThanThreads ? std::launch::async : std::launch::deferred,
-                                [&] { return equalVariances({u, sample.group, sample.groupValue.size()}); });
+    auto variances = std::async(u.size() > fewerThanThreads ? std::launch::async : std::launch::deferred, [&] {
+        return equalVariances({u, sample.group, sample.groupValue.size()});
+    });
     if (residuals.e.low.empty()) {
         orderOfTaking(u, result);
         outliers(u, sample, question, result);

@@ -48,8 +48,9 @@ struct DiagnoseQuestion {
     double outlierLevel = 0.05;
 };
 
-/// Every test, on residuals multiplied by the root of their weights, in the order taken. In double-double while the residuals
-/// have their low parts. Sources stand with each test. Nothing where the residuals are no more than rounding.
-[[nodiscard]] Diagnostics diagnose(const Sample& sample, const Residuals& residuals, const Fit& fit, const DiagnoseQuestion& question);
+/// Every test, on residuals multiplied by the root of their weights, in the order taken. In double-double while the
+/// residuals have their low parts. Sources stand with each test. Nothing where the residuals are no more than rounding.
+[[nodiscard]] Diagnostics diagnose(const Sample& sample, const Residuals& residuals, const Fit& fit,
+                                   const DiagnoseQuestion& question);
 
 } // namespace spanwright

@@ -37,7 +37,16 @@ enum class FindingCode {
 inline constexpr FindingCode lastFindingCode = FindingCode::Extrapolation;
 
 /// The one thing to do about a finding.
-enum class Remedy { None, CompareFunction, CarryToBudget, SeeExclusions, SeeReadings, ChooseWeights, TakeMoreReadings, CheckRun };
+enum class Remedy {
+    None,
+    CompareFunction,
+    CarryToBudget,
+    SeeExclusions,
+    SeeReadings,
+    ChooseWeights,
+    TakeMoreReadings,
+    CheckRun
+};
 
 struct Figure {
     std::string name; ///< as in figures JSON: "f", "p", "value", "percent_of_span", …

@@ -5,23 +5,25 @@
 
 namespace spanwright {
 
-/// The families of rules behind findings(), each in a source file of its own. `deviations` are repeatabilityDeviations().
+/// The families of rules behind findings(), each in a source file of its own. `deviations` are
+/// repeatabilityDeviations().
 void addFunctionFindings(const FindingsInput& input, std::vector<Finding>& found);
 void addRunFindings(const FindingsInput& input, std::vector<Finding>& found);
 void addScatterFindings(const FindingsInput& input, const std::vector<double>& deviations, std::vector<Finding>& found);
 void addReadingFindings(const FindingsInput& input, const std::vector<double>& deviations, std::vector<Finding>& found);
 void addRecordFindings(const FindingsInput& input, std::vector<Finding>& found);
 
-/// Lack of fit as it is judged: after direction and run where the readings are unbalanced, against repeatability where there is any,
-/// else against pure error. Null when nothing can be tested.
+/// Lack of fit as it is judged: after direction and run where the readings are unbalanced, against repeatability where
+/// there is any, else against pure error. Null when nothing can be tested.
 const SplitRow* judgedLackOfFit(const VarianceSplit& split);
 
 /// Ids of readings of the sample by index, at most this many.
 inline constexpr std::size_t mostRowsNamed = 50;
 ReadingId idOf(const FindingsInput& input, std::size_t index);
 
-/// Deviations of the readings from the mean of their set point and direction and from the line of their run, times the root of
-/// their weights, in the order taken: what is left when everything that the split knows is taken out. Empty without repeats.
+/// Deviations of the readings from the mean of their set point and direction and from the line of their run, times the
+/// root of their weights, in the order taken: what is left when everything that the split knows is taken out. Empty
+/// without repeats.
 std::vector<double> repeatabilityDeviations(const FindingsInput& input);
 
 /// Whether a finding of that code is there already.

@@ -10,14 +10,16 @@
 namespace spanwright {
 namespace {
 
-/// Codes in order of consequence: what makes the result wrong before what makes it uncertain before what is merely worth knowing.
+/// Codes in order of consequence: what makes the result wrong before what makes it uncertain before what is merely
+/// worth knowing.
 constexpr std::array order{
-    FindingCode::LackOfFit,       FindingCode::HiddenCurvature, FindingCode::ThroughZeroNotSupported, FindingCode::Outlier,
-    FindingCode::SetPointExcluded, FindingCode::ManyExcluded,   FindingCode::TooFewReadings,          FindingCode::Extrapolation,
-    FindingCode::Hysteresis,      FindingCode::FirstRunDiffers, FindingCode::RunZeroShift,            FindingCode::RunGainChange,
-    FindingCode::ScatterGrows,    FindingCode::Autocorrelated,  FindingCode::Influential,             FindingCode::Straggler,
-    FindingCode::DegreeNotJustified, FindingCode::OutsideBand,  FindingCode::RepeatedReading,         FindingCode::NonNormal,
-    FindingCode::ExcludedReadings};
+    FindingCode::LackOfFit,       FindingCode::HiddenCurvature,    FindingCode::ThroughZeroNotSupported,
+    FindingCode::Outlier,         FindingCode::SetPointExcluded,   FindingCode::ManyExcluded,
+    FindingCode::TooFewReadings,  FindingCode::Extrapolation,      FindingCode::Hysteresis,
+    FindingCode::FirstRunDiffers, FindingCode::RunZeroShift,       FindingCode::RunGainChange,
+    FindingCode::ScatterGrows,    FindingCode::Autocorrelated,     FindingCode::Influential,
+    FindingCode::Straggler,       FindingCode::DegreeNotJustified, FindingCode::OutsideBand,
+    FindingCode::RepeatedReading, FindingCode::NonNormal,          FindingCode::ExcludedReadings};
 
 /// More set points than this are a logger's record: what repeats there is by chance.
 constexpr std::size_t mostSetPoints = 10'000;
@@ -64,9 +66,12 @@ std::vector<double> repeatabilityDeviations(const FindingsInput& input) {
         for (std::size_t i = 0; i < n; ++i) {
             const auto& runs = input.split->runs;
             if (at >= runs.size() || runs[at].run != sample.run[i])
-                at = static_cast<std::size_t>(std::find_if(runs.begin(), runs.end(), [&](const RunLine& r) { return r.run == sample.run[i]; }) - runs.begin());
+                at = static_cast<std::size_t>(
+                    std::find_if(runs.begin(), runs.end(), [&](const RunLine& r) { return r.run == sample.run[i]; }) -
+                    runs.begin());
             if (at < runs.size())
-                left[i] -= runs[at].offset + runs[at].slope * (sample.groupValue[static_cast<std::size_t>(sample.group[i])] - middle);
+                left[i] -= runs[at].offset +
+                           runs[at].slope * (sample.groupValue[static_cast<std::size_t>(sample.group[i])] - middle);
         }
     }
     for (std::size_t i = 0; i < n; ++i) {
@@ -84,7 +89,8 @@ std::vector<double> repeatabilityDeviations(const FindingsInput& input) {
     }
     for (std::size_t i = 0; i < n; ++i) {
         const Cell& cell = cellOf(i);
-        left[i] = (left[i] - cell.sum) * widen[static_cast<std::size_t>(&cell - cells.data())] * (w.empty() ? 1 : std::sqrt(w[i]));
+        left[i] = (left[i] - cell.sum) * widen[static_cast<std::size_t>(&cell - cells.data())] *
+                  (w.empty() ? 1 : std::sqrt(w[i]));
     }
     return left;
 }

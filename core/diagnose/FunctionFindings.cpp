@@ -82,7 +82,8 @@ void lackOfFit(const FindingsInput& input, std::vector<Finding>& found) {
     found.push_back(finding);
 
     const auto& naive = input.split->lackOfFitNaive;
-    if (input.split->against == SplitPart::Repeatability && naive && naive->p && *naive->p >= doubtful && judged != &*naive) {
+    if (input.split->against == SplitPart::Repeatability && naive && naive->p && *naive->p >= doubtful &&
+        judged != &*naive) {
         Finding hidden = finding;
         hidden.code = FindingCode::HiddenCurvature;
         hidden.severity = Severity::Attention;
@@ -93,20 +94,25 @@ void lackOfFit(const FindingsInput& input, std::vector<Finding>& found) {
 
 void highestTerm(const FindingsInput& input, std::vector<Finding>& found) {
     const Fit& fit = *input.fit;
-    const bool polynomial = fit.function.family == FunctionFamily::Polynomial || fit.function.family == FunctionFamily::PolynomialNoConstant;
-    if (!polynomial || fit.function.order < 2 || fit.degreesOfFreedom < 1 || fit.covarianceScale == CovarianceScale::Stated)
+    const bool polynomial = fit.function.family == FunctionFamily::Polynomial ||
+                            fit.function.family == FunctionFamily::PolynomialNoConstant;
+    if (!polynomial || fit.function.order < 2 || fit.degreesOfFreedom < 1 ||
+        fit.covarianceScale == CovarianceScale::Stated)
         return;
     const Coefficient& last = fit.coefficients.back();
     if (!(last.standardUncertainty > 0))
         return;
     const double t = last.value / last.standardUncertainty;
     const double p = 2 * studentAbove(std::abs(t), fit.degreesOfFreedom);
-    // Without the term the residual sum of squares is larger by t² s², over one degree of freedom more. With readings rounded to
-    // a coarse step the rounding alone can look like a term, so a gain below the standard uncertainty of the step does not count.
-    const double before = std::sqrt((fit.residualSs + t * t * fit.residualSd * fit.residualSd) / (fit.degreesOfFreedom + 1));
+    // Without the term the residual sum of squares is larger by t² s², over one degree of freedom more. With readings
+    // rounded to a coarse step the rounding alone can look like a term, so a gain below the standard uncertainty of the
+    // step does not count.
+    const double before =
+        std::sqrt((fit.residualSs + t * t * fit.residualSd * fit.residualSd) / (fit.degreesOfFreedom + 1));
     const auto& resolution = input.record.item.resolution;
     const bool coarse = resolution && fit.weights == Weights::Equal && fit.direction == FitDirection::Indication &&
-                        before - fit.residualSd < resolution->toDouble() / std::sqrt(12.0) && before < resolution->toDouble();
+                        before - fit.residualSd < resolution->toDouble() / std::sqrt(12.0) &&
+                        before < resolution->toDouble();
     if (p < doubtful && !coarse)
         return;
     Finding finding;
@@ -117,20 +123,26 @@ void highestTerm(const FindingsInput& input, std::vector<Finding>& found) {
     finding.suggestion = fit.function;
     --finding.suggestion.order;
     if (finding.suggestion.order == 1)
-        finding.suggestion = {fit.function.family == FunctionFamily::Polynomial ? FunctionFamily::Line : FunctionFamily::Proportional, 0};
+        finding.suggestion = {
+            fit.function.family == FunctionFamily::Polynomial ? FunctionFamily::Line : FunctionFamily::Proportional, 0};
     found.push_back(finding);
 }
 
-/// F of adding a constant to a function without one: what the part of 1 that the function does not span takes from the residuals.
+/// F of adding a constant to a function without one: what the part of 1 that the function does not span takes from the
+/// residuals.
 void throughZero(const FindingsInput& input, std::vector<Finding>& found) {
     const Fit& fit = *input.fit;
-    const bool noConstant = fit.function.family == FunctionFamily::Proportional || fit.function.family == FunctionFamily::PolynomialNoConstant;
+    const bool noConstant = fit.function.family == FunctionFamily::Proportional ||
+                            fit.function.family == FunctionFamily::PolynomialNoConstant;
     if (!noConstant || fit.degreesOfFreedom < 2)
         return;
-    const PairColumn& abscissa = fit.direction == FitDirection::Indication ? input.sample.reference : input.sample.indication;
+    const PairColumn& abscissa =
+        fit.direction == FitDirection::Indication ? input.sample.reference : input.sample.indication;
     const FunctionBasis basis = functionBasis(fit.function, abscissa.high);
     const std::size_t n = basis.rows;
-    const auto root = [&](std::size_t i) { return input.residuals->weight.empty() ? 1 : std::sqrt(input.residuals->weight.high[i]); };
+    const auto root = [&](std::size_t i) {
+        return input.residuals->weight.empty() ? 1 : std::sqrt(input.residuals->weight.high[i]);
+    };
     std::vector<std::vector<double>> columns;
     for (std::size_t j = 0; j <= basis.terms; ++j) {
         std::vector<double>& v = columns.emplace_back(n);
@@ -157,8 +169,9 @@ void throughZero(const FindingsInput& input, std::vector<Finding>& found) {
     finding.severity = Severity::Serious;
     finding.figures = {{"f", f}, {"p", p}, {"value", along / dot(beside, ones)}};
     finding.remedy = Remedy::CompareFunction;
-    finding.suggestion = fit.function.family == FunctionFamily::Proportional ? FunctionChoice{FunctionFamily::Line, 0}
-                                                                              : FunctionChoice{FunctionFamily::Polynomial, fit.function.order};
+    finding.suggestion = fit.function.family == FunctionFamily::Proportional
+                             ? FunctionChoice{FunctionFamily::Line, 0}
+                             : FunctionChoice{FunctionFamily::Polynomial, fit.function.order};
     found.push_back(finding);
 }
 

@@ -15,7 +15,8 @@ T at(const PairColumn& column, std::size_t i) {
         return column[i];
 }
 
-/// Sums over orthogonal polynomials 1, φ₁ = x − x̄, φ₂ = φ₁² − b φ₁ − c under the weights (Forsythe, J. SIAM 5 (1957) 74).
+/// Sums over orthogonal polynomials 1, φ₁ = x − x̄, φ₂ = φ₁² − b φ₁ − c under the weights (Forsythe, J. SIAM 5 (1957)
+/// 74).
 template <class T>
 std::optional<TestResult> test(const Sample& sample, const PairColumn& weight) {
     const std::size_t n = sample.size();

@@ -63,12 +63,14 @@ std::vector<ExtremeTrial> trialsOf(std::span<const T> u, int most, double level)
         if (!(rounded(squares) > 1e-28 * rounded(all)))
             break;
         const std::size_t below = ends.low[low], above = ends.high[high];
-        const bool takeHigh = u[above] - mean > mean - u[below] || (u[above] - mean == mean - u[below] && above < below);
+        const bool takeHigh =
+            u[above] - mean > mean - u[below] || (u[above] - mean == mean - u[below] && above < below);
         const std::size_t found = takeHigh ? above : below;
         ++(takeHigh ? high : low);
         const T d = u[found] - mean;
         const double variance = rounded(squares) / (left - 1);
-        trials.push_back({found, std::abs(rounded(d)) / std::sqrt(variance), level > 0 ? grubbsCriticalValue(n - i, level) : 0});
+        trials.push_back(
+            {found, std::abs(rounded(d)) / std::sqrt(variance), level > 0 ? grubbsCriticalValue(n - i, level) : 0});
         // Mean and squares without the value: ū' = ū − d/(m−1), S' = S − d² m/(m−1).
         mean = mean - d / (left - 1);
         squares = squares - d * d * (left / (left - 1));

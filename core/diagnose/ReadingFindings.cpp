@@ -12,8 +12,9 @@
 namespace spanwright {
 namespace {
 
-/// Stragglers at 5 % and outliers at 1 % (ISO 5725-2:2019, 8.3.4), among the residuals and among the deviations from set point,
-/// direction and run, where a gap between rising and falling hides nothing. A technical cause is to be looked for; nothing is removed.
+/// Stragglers at 5 % and outliers at 1 % (ISO 5725-2:2019, 8.3.4), among the residuals and among the deviations from
+/// set point, direction and run, where a gap between rising and falling hides nothing. A technical cause is to be
+/// looked for; nothing is removed.
 void outlying(const FindingsInput& input, const std::vector<double>& deviations, std::vector<Finding>& found) {
     const std::size_t n = input.sample.size();
     const int most = static_cast<int>(std::clamp<std::size_t>(n / 10, 1, 10));
@@ -56,17 +57,19 @@ void outlying(const FindingsInput& input, const std::vector<double>& deviations,
             }
         if (finding.rows.empty())
             continue;
-        finding.figures = {{"count", static_cast<double>(finding.rows.size())}, {"r", worst.r}, {"critical", worst.lambda}};
+        finding.figures = {
+            {"count", static_cast<double>(finding.rows.size())}, {"r", worst.r}, {"critical", worst.lambda}};
         found.push_back(finding);
     }
 }
 
-/// Cook's distance beyond the median of F with p and n − p degrees of freedom: leaving the reading out would move the coefficients
-/// to the edge of their 50 % region (Cook, Technometrics 19 (1977) 15).
+/// Cook's distance beyond the median of F with p and n − p degrees of freedom: leaving the reading out would move the
+/// coefficients to the edge of their 50 % region (Cook, Technometrics 19 (1977) 15).
 void influential(const FindingsInput& input, std::vector<Finding>& found) {
     const Fit& fit = *input.fit;
     const Residuals& residuals = *input.residuals;
-    if (fit.degreesOfFreedom < 2 || fit.function.family == FunctionFamily::Constant || residuals.leverage.size() != residuals.e.size() || !(fit.residualSd > 0))
+    if (fit.degreesOfFreedom < 2 || fit.function.family == FunctionFamily::Constant ||
+        residuals.leverage.size() != residuals.e.size() || !(fit.residualSd > 0))
         return;
     const double limit = fQuantileAbove(0.5, static_cast<double>(fit.terms()), fit.degreesOfFreedom);
     Finding finding;
@@ -90,12 +93,13 @@ void influential(const FindingsInput& input, std::vector<Finding>& found) {
     found.push_back(finding);
 }
 
-/// Readings outside ŷ ± t √(σ²(1 + h)). A share of 1 − coverage is to be expected there, so few are no finding unless one lies
-/// half as far again.
+/// Readings outside ŷ ± t √(σ²(1 + h)). A share of 1 − coverage is to be expected there, so few are no finding unless
+/// one lies half as far again.
 void outsideBand(const FindingsInput& input, std::vector<Finding>& found) {
     const Fit& fit = *input.fit;
     const Residuals& residuals = *input.residuals;
-    const double scale = fit.covarianceScale == CovarianceScale::Stated && fit.weights != Weights::Equal ? 1 : fit.residualSd;
+    const double scale =
+        fit.covarianceScale == CovarianceScale::Stated && fit.weights != Weights::Equal ? 1 : fit.residualSd;
     if (fit.degreesOfFreedom < 1 || !(scale > 0) || residuals.leverage.size() != residuals.e.size())
         return;
     Finding finding;
@@ -105,7 +109,8 @@ void outsideBand(const FindingsInput& input, std::vector<Finding>& found) {
     std::size_t count = 0;
     for (std::size_t i = 0; i < residuals.e.size(); ++i) {
         const double root = residuals.weight.empty() ? 1 : std::sqrt(residuals.weight.high[i]);
-        const double ratio = std::abs(residuals.e.high[i]) * root / (fit.coverageFactor * scale * std::sqrt(1 + residuals.leverage[i]));
+        const double ratio =
+            std::abs(residuals.e.high[i]) * root / (fit.coverageFactor * scale * std::sqrt(1 + residuals.leverage[i]));
         if (!(ratio > 1))
             continue;
         worst = std::max(worst, ratio);
@@ -122,8 +127,8 @@ void outsideBand(const FindingsInput& input, std::vector<Finding>& found) {
     found.push_back(finding);
 }
 
-/// A reading that repeats both numbers of the one before as typed, where references otherwise wander, so that the same one twice is
-/// rather a habit of the hand than the instrument.
+/// A reading that repeats both numbers of the one before as typed, where references otherwise wander, so that the same
+/// one twice is rather a habit of the hand than the instrument.
 void repeatedReadings(const FindingsInput& input, std::vector<Finding>& found) {
     const Sample& sample = input.sample;
     const ReadingColumns& readings = *input.record.readings;
@@ -135,7 +140,9 @@ void repeatedReadings(const FindingsInput& input, std::vector<Finding>& found) {
         if (sample.group[i] != sample.group[i - 1] || sample.rows[i] != sample.rows[i - 1] + 1)
             continue;
         const std::size_t row = sample.rows[i];
-        const auto same = [&](const DecimalColumn& column) { return column.has(row) && column.has(row - 1) && column.at(row) == column.at(row - 1); };
+        const auto same = [&](const DecimalColumn& column) {
+            return column.has(row) && column.has(row - 1) && column.at(row) == column.at(row - 1);
+        };
         if (!same(readings.reference()))
             wander = true;
         else if (same(readings.indication()) && readings.reference().at(row) != readings.setPoint().at(row))
@@ -152,7 +159,8 @@ void repeatedReadings(const FindingsInput& input, std::vector<Finding>& found) {
 
 } // namespace
 
-void addReadingFindings(const FindingsInput& input, const std::vector<double>& deviations, std::vector<Finding>& found) {
+void addReadingFindings(const FindingsInput& input, const std::vector<double>& deviations,
+                        std::vector<Finding>& found) {
     outlying(input, deviations, found);
     influential(input, found);
     outsideBand(input, found);

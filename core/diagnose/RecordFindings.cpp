@@ -28,7 +28,8 @@ std::vector<ExcludedReading> excludedReadings(const FindingsInput& input) {
     return result;
 }
 
-void wholeSetPoints(const FindingsInput& input, const std::vector<ExcludedReading>& excluded, std::vector<Finding>& found) {
+void wholeSetPoints(const FindingsInput& input, const std::vector<ExcludedReading>& excluded,
+                    std::vector<Finding>& found) {
     const ReadingColumns& readings = *input.record.readings;
     std::map<double, std::vector<ReadingId>> gone;
     for (const ExcludedReading& one : excluded) {
@@ -63,11 +64,13 @@ void exclusions(const FindingsInput& input, std::vector<Finding>& found) {
     for (const ExcludedReading& one : excluded)
         finding.rows.push_back(one.id);
     if (input.fit && input.residualSdWithAll)
-        finding.figures.insert(finding.figures.end(), {{"residual_sd_with", *input.residualSdWithAll}, {"residual_sd", input.fit->residualSd}});
+        finding.figures.insert(finding.figures.end(), {{"residual_sd_with", *input.residualSdWithAll},
+                                                       {"residual_sd", input.fit->residualSd}});
     found.push_back(finding);
 
     wholeSetPoints(input, excluded, found);
-    const double share = static_cast<double>(excluded.size()) / static_cast<double>(excluded.size() + input.sample.size());
+    const double share =
+        static_cast<double>(excluded.size()) / static_cast<double>(excluded.size() + input.sample.size());
     if (share > manyExcluded) {
         finding.code = FindingCode::ManyExcluded;
         finding.severity = share > tooManyExcluded ? Severity::Serious : Severity::Attention;
@@ -91,7 +94,9 @@ void tooFew(const FindingsInput& input, std::vector<Finding>& found) {
                                input.sample.groupValue.size() < input.fit->terms() + 1;
         if (freedom >= 5 && !fewPoints)
             return;
-        finding.severity = freedom < 1 ? Severity::Serious : freedom < 3 || fewPoints ? Severity::Attention : Severity::Note;
+        finding.severity = freedom < 1                ? Severity::Serious
+                           : freedom < 3 || fewPoints ? Severity::Attention
+                                                      : Severity::Note;
         finding.figures = {{"count", n}, {"degrees_of_freedom", static_cast<double>(freedom)}};
     }
     found.push_back(finding);

@@ -20,7 +20,8 @@ std::vector<T> weightedResiduals(const Residuals& residuals) {
     std::vector<T> u(residuals.e.size());
     for (std::size_t i = 0; i < u.size(); ++i) {
         if constexpr (std::is_same_v<T, double>)
-            u[i] = residuals.weight.empty() ? residuals.e.high[i] : residuals.e.high[i] * std::sqrt(residuals.weight.high[i]);
+            u[i] = residuals.weight.empty() ? residuals.e.high[i]
+                                            : residuals.e.high[i] * std::sqrt(residuals.weight.high[i]);
         else
             u[i] = residuals.weight.empty() ? residuals.e[i] : residuals.e[i] * sqrt(residuals.weight[i]);
     }

@@ -72,7 +72,8 @@ std::optional<RobustLine> robustLine(std::span<const double> allX, std::span<con
     }
     std::vector<double> sorted = level;
     const double middle = medianOf(sorted);
-    const double lower = halfScatter(level, residual, middle, false), upper = halfScatter(level, residual, middle, true);
+    const double lower = halfScatter(level, residual, middle, false),
+                 upper = halfScatter(level, residual, middle, true);
     line.relative = n >= 12 && upper > 2.5 * std::max(lower, least);
     for (std::size_t i = 0; i < n; ++i)
         values[i] = std::abs(residual[i]) / (line.relative ? std::max(level[i], 1e-300) : 1);

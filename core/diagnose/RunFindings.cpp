@@ -15,8 +15,8 @@ double twoSided(double t, double freedom) {
     return 2 * studentAbove(std::abs(t), freedom);
 }
 
-/// p of the gap between rising and falling: F against repeatability, or, where each was read once, Student's t of the gaps over the
-/// set points, which takes a gap for real when it has one sign throughout.
+/// p of the gap between rising and falling: F against repeatability, or, where each was read once, Student's t of the
+/// gaps over the set points, which takes a gap for real when it has one sign throughout.
 std::optional<double> gapProbability(const VarianceSplit& split) {
     if (split.hysteresis->p)
         return split.hysteresis->p;
@@ -77,7 +77,8 @@ Finding runFinding(const FindingsInput& input, FindingCode code, const RunLine& 
     return finding;
 }
 
-/// The first run against the mean of the others, which lie closer to each other than to it: an item that was not exercised.
+/// The first run against the mean of the others, which lie closer to each other than to it: an item that was not
+/// exercised.
 std::optional<Finding> firstRun(const FindingsInput& input) {
     const auto& runs = input.split->runs;
     const auto& error = input.split->repeatability;
@@ -89,7 +90,8 @@ std::optional<Finding> firstRun(const FindingsInput& input) {
         mean += static_cast<double>(runs[i].n) * runs[i].offset;
     }
     mean /= n;
-    const auto [low, high] = std::minmax_element(runs.begin() + 1, runs.end(), [](const RunLine& a, const RunLine& b) { return a.offset < b.offset; });
+    const auto [low, high] = std::minmax_element(
+        runs.begin() + 1, runs.end(), [](const RunLine& a, const RunLine& b) { return a.offset < b.offset; });
     const double shift = runs.front().offset - mean;
     const double t = shift / std::sqrt(*error->ms * (1 / n + 1 / static_cast<double>(runs.front().n)));
     const double p = twoSided(t, error->df);
@@ -109,19 +111,27 @@ void runs(const FindingsInput& input, std::vector<Finding>& found) {
         if (const auto first = firstRun(input)) {
             found.push_back(*first);
         } else {
-            const auto worst = std::max_element(split.runs.begin(), split.runs.end(),
-                                                [&](const RunLine& a, const RunLine& b) { return larger(a.offset, b.offset); });
+            const auto worst =
+                std::max_element(split.runs.begin(), split.runs.end(),
+                                 [&](const RunLine& a, const RunLine& b) { return larger(a.offset, b.offset); });
             Finding finding = runFinding(input, FindingCode::RunZeroShift, *worst);
-            finding.figures = {{"value", worst->offset}, {"run", static_cast<double>(worst->run)}, {"f", *split.runOffset->f}, {"p", *split.runOffset->p}};
+            finding.figures = {{"value", worst->offset},
+                               {"run", static_cast<double>(worst->run)},
+                               {"f", *split.runOffset->f},
+                               {"p", *split.runOffset->p}};
             found.push_back(finding);
         }
     }
     if (split.runSlope && split.runSlope->p && *split.runSlope->p < certain) {
-        const auto worst = std::max_element(split.runs.begin(), split.runs.end(),
-                                            [&](const RunLine& a, const RunLine& b) { return larger(a.slope, b.slope); });
+        const auto worst =
+            std::max_element(split.runs.begin(), split.runs.end(),
+                             [&](const RunLine& a, const RunLine& b) { return larger(a.slope, b.slope); });
         Finding finding = runFinding(input, FindingCode::RunGainChange, *worst);
         const double overRange = worst->slope * (input.sample.groupValue.back() - input.sample.groupValue.front());
-        finding.figures = {{"value", overRange}, {"run", static_cast<double>(worst->run)}, {"f", *split.runSlope->f}, {"p", *split.runSlope->p}};
+        finding.figures = {{"value", overRange},
+                           {"run", static_cast<double>(worst->run)},
+                           {"f", *split.runSlope->f},
+                           {"p", *split.runSlope->p}};
         found.push_back(finding);
     }
 }

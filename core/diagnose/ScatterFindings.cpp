@@ -13,8 +13,9 @@ namespace {
 
 constexpr double certain = 0.01;
 
-/// Standard deviations within set points and how they go with the level |set point|: exponent b of s = c·level^b by least squares on
-/// logarithms; the variance at the highest level over that at the lowest (ISO 8466-1); and p of Koenker's test on the level.
+/// Standard deviations within set points and how they go with the level |set point|: exponent b of s = c·level^b by
+/// least squares on logarithms; the variance at the highest level over that at the lowest (ISO 8466-1); and p of
+/// Koenker's test on the level.
 struct ScatterTrend {
     double exponent = 0, varianceRatio = 1, p = 1;
     std::size_t levels = 0;
@@ -98,8 +99,8 @@ void scatterGrows(const FindingsInput& input, const std::vector<double>& deviati
     found.push_back(finding);
 }
 
-/// Neighbours in the order taken. Curvature and hysteresis make neighbours alike too, so where there are repeats the correlation is
-/// that of what is left after them.
+/// Neighbours in the order taken. Curvature and hysteresis make neighbours alike too, so where there are repeats the
+/// correlation is that of what is left after them.
 void autocorrelated(const FindingsInput& input, const std::vector<double>& deviations, std::vector<Finding>& found) {
     const double n = static_cast<double>(input.sample.size());
     if (!input.diagnostics || n < 10)
@@ -132,7 +133,8 @@ void nonNormal(const FindingsInput& input, const std::vector<double>& deviations
                             contains(found, FindingCode::RunZeroShift) || contains(found, FindingCode::FirstRunDiffers);
     std::optional<TestResult> test = input.diagnostics->shapiroWilk;
     if (structured)
-        test = deviations.empty() ? std::nullopt : shapiroWilk(deviations.size() <= 5000 ? deviations : std::vector<double>{});
+        test = deviations.empty() ? std::nullopt
+                                  : shapiroWilk(deviations.size() <= 5000 ? deviations : std::vector<double>{});
     if (!test || !(test->p < certain) || input.sample.size() < 8)
         return;
     Finding finding;
@@ -145,7 +147,8 @@ void nonNormal(const FindingsInput& input, const std::vector<double>& deviations
 
 } // namespace
 
-void addScatterFindings(const FindingsInput& input, const std::vector<double>& deviations, std::vector<Finding>& found) {
+void addScatterFindings(const FindingsInput& input, const std::vector<double>& deviations,
+                        std::vector<Finding>& found) {
     scatterGrows(input, deviations, found);
     autocorrelated(input, deviations, found);
     nonNormal(input, deviations, found);

@@ -16,18 +16,28 @@ struct UnitConversion {
 };
 
 // Factors by definition of the units (ISO 80000; the pound-force per square inch from memory, 6894.757 Pa).
-constexpr std::array conversions{
-    UnitConversion{"bar", "psi", 0.06894757, 0},   UnitConversion{"psi", "bar", 14.503774, 0},
-    UnitConversion{"bar", "kPa", 0.01, 0},         UnitConversion{"kPa", "bar", 100, 0},
-    UnitConversion{"kPa", "psi", 6.894757, 0},     UnitConversion{"psi", "kPa", 0.14503774, 0},
-    UnitConversion{"mbar", "kPa", 10, 0},          UnitConversion{"kPa", "mbar", 0.1, 0},
-    UnitConversion{"mbar", "mmH2O", 0.0980665, 0}, UnitConversion{"mmH2O", "mbar", 10.197162, 0},
-    UnitConversion{"bar", "bar absolute", 1, -1.01325}, UnitConversion{"bar", "bar gauge", 1, 1.01325},
-    UnitConversion{"kPa", "kPa absolute", 1, -101.325}, UnitConversion{"kPa", "kPa gauge", 1, 101.325},
-    UnitConversion{"°C", "°F", 5.0 / 9, -160.0 / 9}, UnitConversion{"°F", "°C", 1.8, 32},
-    UnitConversion{"°C", "K", 1, -273.15},         UnitConversion{"K", "°C", 1, 273.15},
-    UnitConversion{"kN", "kgf", 0.00980665, 0},    UnitConversion{"kN", "lbf", 0.0044482216, 0},
-    UnitConversion{"L/min", "m³/h", 1000.0 / 60, 0}, UnitConversion{"m³/h", "L/min", 0.06, 0}};
+constexpr std::array conversions{UnitConversion{"bar", "psi", 0.06894757, 0},
+                                 UnitConversion{"psi", "bar", 14.503774, 0},
+                                 UnitConversion{"bar", "kPa", 0.01, 0},
+                                 UnitConversion{"kPa", "bar", 100, 0},
+                                 UnitConversion{"kPa", "psi", 6.894757, 0},
+                                 UnitConversion{"psi", "kPa", 0.14503774, 0},
+                                 UnitConversion{"mbar", "kPa", 10, 0},
+                                 UnitConversion{"kPa", "mbar", 0.1, 0},
+                                 UnitConversion{"mbar", "mmH2O", 0.0980665, 0},
+                                 UnitConversion{"mmH2O", "mbar", 10.197162, 0},
+                                 UnitConversion{"bar", "bar absolute", 1, -1.01325},
+                                 UnitConversion{"bar", "bar gauge", 1, 1.01325},
+                                 UnitConversion{"kPa", "kPa absolute", 1, -101.325},
+                                 UnitConversion{"kPa", "kPa gauge", 1, 101.325},
+                                 UnitConversion{"°C", "°F", 5.0 / 9, -160.0 / 9},
+                                 UnitConversion{"°F", "°C", 1.8, 32},
+                                 UnitConversion{"°C", "K", 1, -273.15},
+                                 UnitConversion{"K", "°C", 1, 273.15},
+                                 UnitConversion{"kN", "kgf", 0.00980665, 0},
+                                 UnitConversion{"kN", "lbf", 0.0044482216, 0},
+                                 UnitConversion{"L/min", "m³/h", 1000.0 / 60, 0},
+                                 UnitConversion{"m³/h", "L/min", 0.06, 0}};
 
 /// Digits without a mark, and how many of them come after it.
 struct Digits {
@@ -95,7 +105,8 @@ void doubledOrMissing(const Digits& typed, int usualDecimals, Collector& collect
         }
     if (typed.decimals >= usualDecimals)
         return;
-    // A digit fell out after the mark: the last one cannot be told from rounding, so it must have stood before another one.
+    // A digit fell out after the mark: the last one cannot be told from rounding, so it must have stood before another
+    // one.
     for (int at = size - typed.decimals; at < size; ++at)
         for (char digit = '0'; digit <= '9'; ++digit) {
             Digits longer = typed;

@@ -10,14 +10,16 @@
 namespace spanwright {
 namespace {
 
-/// Beyond the first a number is questioned; only a number within the second is offered instead. Two neighbouring digits exchanged
-/// change a number by at least nine units of its last digit, so less than `leastSteps` of them is no slip that could be told. Few
-/// readings do not tell hysteresis from scatter, so among them a thousandth of their range is no slip either.
+/// Beyond the first a number is questioned; only a number within the second is offered instead. Two neighbouring digits
+/// exchanged change a number by at least nine units of its last digit, so less than `leastSteps` of them is no slip
+/// that could be told. Few readings do not tell hysteresis from scatter, so among them a thousandth of their range is
+/// no slip either.
 constexpr double questioned = 3.5, fitting = 3, leastSteps = 8, leastShare = 0.001;
 constexpr std::size_t few = 20;
 
-/// What the other readings of a phase lead to expect: the robust line, and at the same set point in the same direction the median
-/// of their distances from it, so that neither curvature nor hysteresis is taken for a slip. The nearer of both counts.
+/// What the other readings of a phase lead to expect: the robust line, and at the same set point in the same direction
+/// the median of their distances from it, so that neither curvature nor hysteresis is taken for a slip. The nearer of
+/// both counts.
 class Expectation {
   public:
     Expectation(const Record& record, Phase phase, ReadingId without) {
@@ -25,7 +27,8 @@ class Expectation {
         std::map<int, int> decimals;
         for (std::size_t row = 0; row < readings.size(); ++row) {
             const ReadingId id = readings.ids()[row];
-            if (readings.phases()[row] != phase || !readings.complete(row) || id == without || record.exclusions->contains(id))
+            if (readings.phases()[row] != phase || !readings.complete(row) || id == without ||
+                record.exclusions->contains(id))
                 continue;
             x_.push_back(readings.reference().toDouble(row));
             y_.push_back(readings.indication().toDouble(row));
@@ -38,7 +41,8 @@ class Expectation {
                 most = count;
                 usualDecimals_ = places;
             }
-        const double step = record.item.resolution ? record.item.resolution->toDouble() : std::pow(10.0, -usualDecimals_);
+        const double step =
+            record.item.resolution ? record.item.resolution->toDouble() : std::pow(10.0, -usualDecimals_);
         line_ = robustLine(x_, y_, step / std::sqrt(12.0));
         least_ = leastSteps * step;
         if (line_ && x_.size() < few) {
@@ -97,15 +101,18 @@ std::vector<Slip> explained(const Record& record, const Reading& typed, const Ex
     slip.id = typed.id;
     slip.distance = z;
     slip.expected = expectation.expected(typed);
-    for (const SlipCandidate& candidate : slipCandidates(*typed.indication, expectation.usualDecimals(), record.item.indication.unit)) {
+    for (const SlipCandidate& candidate :
+         slipCandidates(*typed.indication, expectation.usualDecimals(), record.item.indication.unit)) {
         if (!(std::abs(expectation.distance(typed, candidate.value.toDouble())) < fitting))
             continue;
         slip.kind = candidate.kind;
         slip.suggestion = candidate.value;
-        const auto same = std::find_if(slips.begin(), slips.end(), [&](const Slip& other) { return other.kind == slip.kind; });
+        const auto same =
+            std::find_if(slips.begin(), slips.end(), [&](const Slip& other) { return other.kind == slip.kind; });
         if (same == slips.end())
             slips.push_back(slip);
-        else if (std::abs(expectation.distance(typed, candidate.value.toDouble())) < std::abs(expectation.distance(typed, same->suggestion->toDouble())))
+        else if (std::abs(expectation.distance(typed, candidate.value.toDouble())) <
+                 std::abs(expectation.distance(typed, same->suggestion->toDouble())))
             *same = slip;
     }
     std::stable_sort(slips.begin(), slips.end(), [](const Slip& a, const Slip& b) { return a.kind < b.kind; });
@@ -143,7 +150,8 @@ bool offResolution(const Decimal& value, const std::optional<Decimal>& resolutio
 }
 
 /// Checks that need no other reading of the same kind, and work from the first reading on.
-void plainChecks(const Record& record, const Reading& typed, const std::optional<Reading>& before, std::vector<Slip>& slips) {
+void plainChecks(const Record& record, const Reading& typed, const std::optional<Reading>& before,
+                 std::vector<Slip>& slips) {
     const Item& item = record.item;
     if (typed.indication) {
         if (beyond(*typed.indication, item.outputLow, item.outputHigh))
@@ -157,8 +165,10 @@ void plainChecks(const Record& record, const Reading& typed, const std::optional
         if (offResolution(*typed.reference, item.referenceResolution))
             plain(slips, typed, SlipKind::OffResolution, NumberColumn::Reference);
         for (const Standard& standard : record.standards)
-            if (standard.role == StandardRole::Reference && standard.rangeLow && standard.rangeHigh && standard.unit == item.reference.unit &&
-                (typed.reference->toDouble() > standard.rangeHigh->toDouble() || beyond(*typed.reference, standard.rangeLow, standard.rangeHigh))) {
+            if (standard.role == StandardRole::Reference && standard.rangeLow && standard.rangeHigh &&
+                standard.unit == item.reference.unit &&
+                (typed.reference->toDouble() > standard.rangeHigh->toDouble() ||
+                 beyond(*typed.reference, standard.rangeLow, standard.rangeHigh))) {
                 plain(slips, typed, SlipKind::OutsideStandardRange, NumberColumn::Reference);
                 break;
             }
@@ -168,13 +178,15 @@ void plainChecks(const Record& record, const Reading& typed, const std::optional
     const bool sameReference = typed.reference && before->reference == typed.reference;
     if (sameReference && typed.indication && before->indication == typed.indication && record.plan.referenceTyped)
         plain(slips, typed, SlipKind::RepeatsRowBefore, NumberColumn::Indication);
-    if (typed.reference && before->reference && typed.direction == before->direction && typed.setPoint && before->setPoint &&
-        compareValue(*typed.setPoint, *before->setPoint) != 0) {
+    if (typed.reference && before->reference && typed.direction == before->direction && typed.setPoint &&
+        before->setPoint && compareValue(*typed.setPoint, *before->setPoint) != 0) {
         const int moved = compareValue(*typed.reference, *before->reference);
-        if ((typed.direction == Direction::Rising && moved <= 0) || (typed.direction == Direction::Falling && moved >= 0))
+        if ((typed.direction == Direction::Rising && moved <= 0) ||
+            (typed.direction == Direction::Falling && moved >= 0))
             plain(slips, typed, SlipKind::AgainstDirection, NumberColumn::Reference);
     }
-    if (typed.enteredAt > 0 && before->enteredAt > 0 && record.plan.dwellSeconds > 0 && typed.setPoint != before->setPoint &&
+    if (typed.enteredAt > 0 && before->enteredAt > 0 && record.plan.dwellSeconds > 0 &&
+        typed.setPoint != before->setPoint &&
         typed.enteredAt - before->enteredAt < std::int64_t{1000} * record.plan.dwellSeconds)
         plain(slips, typed, SlipKind::BeforeSettled, NumberColumn::Indication);
 }
@@ -194,7 +206,8 @@ void exchanges(const Expectation& expectation, const std::vector<Reading>& readi
             if (one.id == other.id || !(std::abs(expectation.distance(one, other.indication->toDouble())) < fitting) ||
                 !(std::abs(expectation.distance(other, one.indication->toDouble())) < fitting))
                 continue;
-            std::erase_if(slips, [&](const Slip& slip) { return slip.id == one.id && slip.kind == SlipKind::Unexplained; });
+            std::erase_if(slips,
+                          [&](const Slip& slip) { return slip.id == one.id && slip.kind == SlipKind::Unexplained; });
             Slip slip;
             slip.id = one.id;
             slip.other = other.id;
@@ -243,7 +256,8 @@ std::vector<Slip> slipsIn(const Record& record, Phase phase) {
     }
     if (questionable.size() <= mostForPairs)
         exchanges(expectation, questionable, slips);
-    std::stable_sort(slips.begin(), slips.end(), [](const Slip& a, const Slip& b) { return a.id != b.id ? a.id < b.id : a.kind < b.kind; });
+    std::stable_sort(slips.begin(), slips.end(),
+                     [](const Slip& a, const Slip& b) { return a.id != b.id ? a.id < b.id : a.kind < b.kind; });
     return slips;
 }
 

@@ -17,7 +17,7 @@ struct Deflections {
 };
 
 struct Table {
-    std::map<double, Deflections> at; ///< by force
+    std::map<double, Deflections> at;         ///< by force
     std::map<int, std::vector<double>> zeros; ///< readings at force 0 by run, in the order taken
 };
 
@@ -46,7 +46,8 @@ Table tableOf(const Sample& sample) {
     };
     for (const auto& [force, byRun] : sums)
         for (const auto& [place, sum] : byRun)
-            (place.second ? table.at[force].falling : table.at[force].rising)[place.first] = sum.sum / sum.n - zeroOf(place.first);
+            (place.second ? table.at[force].falling : table.at[force].rising)[place.first] =
+                sum.sum / sum.n - zeroOf(place.first);
     return table;
 }
 
@@ -77,7 +78,8 @@ Sample risingOf(const Sample& sample, const std::vector<int>& runs, const Table&
 
 Choices polynomialChoice(const Choices& choices, int degree) {
     Choices changed = choices;
-    changed.function = degree < 2 ? FunctionChoice{FunctionFamily::Line, 0} : FunctionChoice{FunctionFamily::Polynomial, degree};
+    changed.function =
+        degree < 2 ? FunctionChoice{FunctionFamily::Line, 0} : FunctionChoice{FunctionFamily::Polynomial, degree};
     changed.fit = FitDirection::Indication;
     changed.method = Method::LeastSquares;
     changed.weights = Weights::Equal;
@@ -126,7 +128,8 @@ std::optional<double> zeroFigure(const Table& table, double largest) {
 
 } // namespace
 
-std::optional<ForceFigures> forceFigures(const Sample& sample, const Choices& choices, double resolution, const ForceSeries& series) {
+std::optional<ForceFigures> forceFigures(const Sample& sample, const Choices& choices, double resolution,
+                                         const ForceSeries& series) {
     if (sample.run.empty() || sample.reference.size() != sample.size())
         return std::nullopt;
     std::vector<int> rotated = series.rotated;

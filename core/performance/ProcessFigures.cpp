@@ -7,13 +7,13 @@
 #include <cmath>
 #include <map>
 
-// Definitions, e the error of a reading, averages over the runs (IEC 61298-2 from memory; the terms hysteresis within a cycle and
-// repeatability as in 43 CFR 3175.135):
+// Definitions, e the error of a reading, averages over the runs (IEC 61298-2 from memory; the terms hysteresis within a
+// cycle and repeatability as in 43 CFR 3175.135):
 //   measured error        the average of rising or of falling readings at a set point that is furthest from 0
 //   inaccuracy            the largest and the smallest single e
-//   hysteresis            largest |average rising − average falling| at a set point; within a run: largest such gap of one run
-//   non-repeatability     largest e minus smallest e at a set point in one direction
-//   non-linearity         of the mean of both averages: from the chord through both ends (terminal), from the line that makes the
+//   hysteresis            largest |average rising − average falling| at a set point; within a run: largest such gap of
+//   one run non-repeatability     largest e minus smallest e at a set point in one direction non-linearity         of
+//   the mean of both averages: from the chord through both ends (terminal), from the line that makes the
 //                         largest deviation smallest (independent), the same through the lower end (zero-based)
 
 namespace spanwright {
@@ -52,7 +52,8 @@ Ideal statedIdeal(const Item& item) {
 
 Ideal idealOf(const Sample& sample, const Item& item) {
     const bool stated = item.rangeLow && item.rangeHigh && item.outputLow && item.outputHigh &&
-                        compareValue(*item.rangeLow, *item.rangeHigh) != 0 && compareValue(*item.outputLow, *item.outputHigh) != 0;
+                        compareValue(*item.rangeLow, *item.rangeHigh) != 0 &&
+                        compareValue(*item.outputLow, *item.outputHigh) != 0;
     if (stated)
         return statedIdeal(item);
     Ideal ideal;
@@ -88,7 +89,7 @@ Ideal idealOf(const Sample& sample, const Item& item) {
 
 /// Errors of a sample by set point and direction.
 struct Errors {
-    std::vector<std::array<Spread, 3>> at; ///< by set point, by direction
+    std::vector<std::array<Spread, 3>> at;                                        ///< by set point, by direction
     std::map<std::pair<std::int32_t, std::int32_t>, std::array<Spread, 3>> inRun; ///< by (set point, run)
 };
 
@@ -99,8 +100,9 @@ Errors errorsOf(const Sample& sample, const Ideal& ideal) {
     const double intercept = toDouble(ideal.intercept), slope = toDouble(ideal.slope);
     const bool byRun = !sample.direction.empty() && sample.size() <= 100'000;
     for (std::size_t i = 0; i < sample.size(); ++i) {
-        const double e = doubles ? sample.indication.high[i] - (intercept + slope * sample.reference.high[i])
-                                 : toDouble(sample.indication[i] - (ideal.intercept + ideal.slope * sample.reference[i]));
+        const double e = doubles
+                             ? sample.indication.high[i] - (intercept + slope * sample.reference.high[i])
+                             : toDouble(sample.indication[i] - (ideal.intercept + ideal.slope * sample.reference[i]));
         const auto d = sample.direction.empty() ? std::size_t{0} : static_cast<std::size_t>(sample.direction[i]);
         errors.at[static_cast<std::size_t>(sample.group[i])][d].add(e);
         if (byRun)
@@ -113,7 +115,8 @@ constexpr std::size_t rising = 1, falling = 2;
 
 class FigureMaker {
   public:
-    FigureMaker(const Sample& sample, const Errors& errors, double span) : sample_(sample), errors_(errors), span_(span) {}
+    FigureMaker(const Sample& sample, const Errors& errors, double span)
+        : sample_(sample), errors_(errors), span_(span) {}
 
     void fill(ProcessFigures& figures) const {
         for (std::size_t i = 0; i < errors_.at.size(); ++i)
@@ -122,7 +125,8 @@ class FigureMaker {
                     single(figures, spread, i);
         for (const auto& [place, spreads] : errors_.inRun)
             if (spreads[rising].n > 0 && spreads[falling].n > 0)
-                larger(figures.hysteresisInCycle, std::abs(spreads[rising].mean() - spreads[falling].mean()), static_cast<std::size_t>(place.first));
+                larger(figures.hysteresisInCycle, std::abs(spreads[rising].mean() - spreads[falling].mean()),
+                       static_cast<std::size_t>(place.first));
         lines(figures);
     }
 
@@ -165,7 +169,9 @@ class FigureMaker {
         }
         if (x.size() < 3)
             return;
-        const auto put = [&](std::optional<ProcessFigure>& held, const DeviationLine& line) { held = figure(line.deviation, group[line.at]); };
+        const auto put = [&](std::optional<ProcessFigure>& held, const DeviationLine& line) {
+            held = figure(line.deviation, group[line.at]);
+        };
         put(figures.nonLinearityTerminal, terminalLine({x, y}));
         put(figures.nonLinearityIndependent, minimaxLine({x, y}));
         put(figures.nonLinearityZeroBased, zeroBasedLine({x, y}));
@@ -179,7 +185,8 @@ class FigureMaker {
 } // namespace
 
 std::optional<ProcessFigures> processFigures(const Sample& sample, const Item& item) {
-    if (sample.groupValue.size() < 2 || sample.groupValue.size() > mostSetPoints || sample.reference.size() != sample.size())
+    if (sample.groupValue.size() < 2 || sample.groupValue.size() > mostSetPoints ||
+        sample.reference.size() != sample.size())
         return std::nullopt;
     const Ideal ideal = idealOf(sample, item);
     if (!(ideal.span > 0) || !std::isfinite(ideal.span))

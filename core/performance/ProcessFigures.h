@@ -23,10 +23,11 @@ struct ProcessFigures {
     std::vector<Warning> warnings; ///< ApproximateMethod: span or ideal output not stated (facts: figure, method)
 };
 
-/// Figures of one phase. The error of a reading is its indication minus what a perfect item with the stated range and output would
-/// show at its reference, so a reference that wanders about its set point does no harm. Where range and output are not stated, the
-/// perfect item shows the reference itself if both have one unit, else lies on the chord through the means at both ends; a
-/// warning says so. Empty without two set points, or for more than 2000 of them (a logger's record, no plan of set points).
+/// Figures of one phase. The error of a reading is its indication minus what a perfect item with the stated range and
+/// output would show at its reference, so a reference that wanders about its set point does no harm. Where range and
+/// output are not stated, the perfect item shows the reference itself if both have one unit, else lies on the chord
+/// through the means at both ends; a warning says so. Empty without two set points, or for more than 2000 of them (a
+/// logger's record, no plan of set points).
 [[nodiscard]] std::optional<ProcessFigures> processFigures(const Sample& sample, const Item& item);
 
 } // namespace spanwright

@@ -66,8 +66,9 @@ DeviationLine minimaxLine(const Points& points) {
 }
 
 DeviationLine zeroBasedLine(const Points& points) {
-    // Deviations d − s t and s t − d are lines in the slope s; the lowest point of their upper envelope lies where a falling and a
-    // rising one cross. Start from any crossing and exchange the line that rises above it until none does.
+    // Deviations d − s t and s t − d are lines in the slope s; the lowest point of their upper envelope lies where a
+    // falling and a rising one cross. Start from any crossing and exchange the line that rises above it until none
+    // does.
     struct Edge {
         double t = 0, d = 0; // value d − s t
     };

@@ -20,11 +20,13 @@ struct Points {
 /// The chord from the first point to the last.
 [[nodiscard]] DeviationLine terminalLine(const Points& points);
 
-/// The line with the smallest largest deviation: it leaves three points at that deviation with alternating signs, and is parallel to
-/// an edge of the convex hull of the points (Chebyshev; the vertical width of a hull is least at an edge). Exact.
+/// The line with the smallest largest deviation: it leaves three points at that deviation with alternating signs, and
+/// is parallel to an edge of the convex hull of the points (Chebyshev; the vertical width of a hull is least at an
+/// edge). Exact.
 [[nodiscard]] DeviationLine minimaxLine(const Points& points);
 
-/// The line through the first point with the smallest largest deviation: two points at that deviation with opposite signs. Exact.
+/// The line through the first point with the smallest largest deviation: two points at that deviation with opposite
+/// signs. Exact.
 [[nodiscard]] DeviationLine zeroBasedLine(const Points& points);
 
 } // namespace spanwright

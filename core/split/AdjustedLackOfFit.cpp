@@ -24,12 +24,14 @@ std::vector<Node> nodesOf(const NoiseChain& chain) {
             nodes.push_back({c, 0, chain.cells[c].weight, chain.cells[c].mean});
     } else {
         for (const auto& one : chain.cellRuns)
-            nodes.push_back({static_cast<std::size_t>(one.cell), static_cast<std::size_t>(one.run), one.weight, one.mean});
+            nodes.push_back(
+                {static_cast<std::size_t>(one.cell), static_cast<std::size_t>(one.run), one.weight, one.mean});
     }
     return nodes;
 }
 
-/// For each cell the column of its direction contrast, or −1; several columns when readings of unknown direction share the point.
+/// For each cell the column of its direction contrast, or −1; several columns when readings of unknown direction share
+/// the point.
 std::vector<int> contrastColumns(const NoiseChain& chain) {
     std::vector<int> column(chain.cells.size(), -1);
     int next = 0;
@@ -58,7 +60,8 @@ std::optional<SplitRow> adjustedLackOfFit(const Sample& sample, const NoiseChain
     if (nodes.size() * columns * columns > 50'000'000)
         return std::nullopt;
 
-    Eigen::MatrixXd design = Eigen::MatrixXd::Zero(static_cast<Eigen::Index>(nodes.size()), static_cast<Eigen::Index>(columns));
+    Eigen::MatrixXd design =
+        Eigen::MatrixXd::Zero(static_cast<Eigen::Index>(nodes.size()), static_cast<Eigen::Index>(columns));
     Eigen::VectorXd right(static_cast<Eigen::Index>(nodes.size()));
     const double middle = (sample.groupValue.front() + sample.groupValue.back()) / 2;
     const double half = std::max((sample.groupValue.back() - sample.groupValue.front()) / 2, 1e-300);
@@ -66,13 +69,16 @@ std::optional<SplitRow> adjustedLackOfFit(const Sample& sample, const NoiseChain
     for (std::size_t k = 0; k < nodes.size(); ++k) {
         const auto row = static_cast<Eigen::Index>(k);
         const double root = std::sqrt(nodes[k].weight);
-        const auto put = [&](std::size_t column, double value) { design(row, static_cast<Eigen::Index>(column)) += root * value; };
+        const auto put = [&](std::size_t column, double value) {
+            design(row, static_cast<Eigen::Index>(column)) += root * value;
+        };
         for (std::size_t j = 0; j < basis.terms; ++j)
             put(j, basis.column(j)[k]);
         const std::size_t c = nodes[k].cell;
         if (contrast[c] >= 0)
             put(basis.terms + static_cast<std::size_t>(contrast[c]), 0.5);
-        for (std::size_t next = c + 1; next < chain.cells.size() && chain.cells[next].group == chain.cells[c].group; ++next)
+        for (std::size_t next = c + 1; next < chain.cells.size() && chain.cells[next].group == chain.cells[c].group;
+             ++next)
             put(basis.terms + static_cast<std::size_t>(contrast[next]), -0.5);
         for (std::size_t r = 0; r < runTerms; ++r) {
             const double code = nodes[k].run == r ? 1 : nodes[k].run == runTerms ? -1 : 0;

@@ -9,10 +9,10 @@
 
 namespace spanwright {
 
-/// Columns that span a calibration function that is linear in its coefficients, at given abscissae: powers of the abscissa
-/// centred and scaled to [−1, 1] (scaled only, without a constant). The space is what counts, for hat matrices and nested
-/// models; the coefficients are not those of the function. Column by column, `terms` of them; empty when the function is not
-/// of this kind.
+/// Columns that span a calibration function that is linear in its coefficients, at given abscissae: powers of the
+/// abscissa centred and scaled to [−1, 1] (scaled only, without a constant). The space is what counts, for hat matrices
+/// and nested models; the coefficients are not those of the function. Column by column, `terms` of them; empty when the
+/// function is not of this kind.
 struct FunctionBasis {
     std::size_t rows = 0, terms = 0;
     std::vector<double> columns;

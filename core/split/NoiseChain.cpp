@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/split/NoiseChain.h"
 
+#include "core/split/RunSystem.h"
+
 #include <algorithm>
 #include <array>
 #include <cmath>
@@ -8,13 +10,6 @@
 
 namespace spanwright {
 namespace {
-
-double plain(double value) {
-    return value;
-}
-double plain(const DoubleDouble& value) {
-    return toDouble(value);
-}
 
 /// Which cell and which run a reading belongs to.
 struct Places {
@@ -103,7 +98,8 @@ Places findPlaces(const Sample& sample, NoiseChain& chain) {
         places.run.resize(n);
         for (std::size_t i = 0; i < n; ++i)
             places.run[i] = static_cast<std::int32_t>(
-                std::lower_bound(places.runNumbers.begin(), places.runNumbers.end(), sample.run[i]) - places.runNumbers.begin());
+                std::lower_bound(places.runNumbers.begin(), places.runNumbers.end(), sample.run[i]) -
+                places.runNumbers.begin());
     }
     return places;
 }
@@ -134,7 +130,8 @@ Sums<T> meansOf(std::span<const std::int32_t> of, std::size_t classes, std::span
 }
 
 template <class T>
-T squaresAbout(std::span<const std::int32_t> of, const std::vector<T>& mean, std::span<const T> e, std::span<const T> w) {
+T squaresAbout(std::span<const std::int32_t> of, const std::vector<T>& mean, std::span<const T> e,
+               std::span<const T> w) {
     T sum(0.0);
     for (std::size_t i = 0; i < e.size(); ++i) {
         const T d = e[i] - mean[static_cast<std::size_t>(of[i])];
@@ -142,63 +139,6 @@ T squaresAbout(std::span<const std::int32_t> of, const std::vector<T>& mean, std
     }
     return sum;
 }
-
-/// Symmetric system A ρ = b over the columns "offset of run r" and "slope of run r", within cells.
-template <class T>
-struct RunSystem {
-    std::size_t size = 0;
-    std::vector<T> a, b;
-    std::vector<char> used;
-    std::vector<std::size_t> order;
-    T explained = T(0.0);
-
-    explicit RunSystem(std::size_t columns) : size(columns), a(columns * columns, T(0.0)), b(columns, T(0.0)), used(columns, 0) {}
-    T& at(std::size_t i, std::size_t j) { return a[i * size + j]; }
-
-    /// Eliminates the columns [from, to) as far as they are not dependent on those before; returns the rank added.
-    int eliminate(std::size_t from, std::size_t to, const std::vector<double>& scale) {
-        int rank = 0;
-        for (;;) {
-            std::size_t pivot = size;
-            double best = 1e-11;
-            for (std::size_t j = from; j < to; ++j)
-                if (!used[j] && scale[j] > 0 && plain(at(j, j)) / scale[j] > best) {
-                    best = plain(at(j, j)) / scale[j];
-                    pivot = j;
-                }
-            if (pivot == size)
-                return rank;
-            used[pivot] = 1;
-            order.push_back(pivot);
-            ++rank;
-            explained += b[pivot] * b[pivot] / at(pivot, pivot);
-            for (std::size_t i = 0; i < size; ++i) {
-                if (used[i])
-                    continue;
-                const T factor = at(i, pivot) / at(pivot, pivot);
-                for (std::size_t j = 0; j < size; ++j)
-                    if (!used[j])
-                        at(i, j) -= factor * at(pivot, j);
-                b[i] -= factor * b[pivot];
-            }
-        }
-    }
-
-    /// Solution with dependent columns at zero.
-    std::vector<double> solve() {
-        std::vector<T> x(size, T(0.0));
-        for (std::size_t k = order.size(); k-- > 0;) {
-            const std::size_t i = order[k];
-            T right = b[i];
-            for (std::size_t m = k + 1; m < order.size(); ++m)
-                right -= at(i, order[m]) * x[order[m]];
-            x[i] = right / at(i, i);
-        }
-        std::vector<double> result(size);
-        std::transform(x.begin(), x.end(), result.begin(), [](const T& value) { return plain(value); });
-        return result;
-    }
-};
 
 template <class T>
 struct CellRunSums {
@@ -209,8 +149,8 @@ struct CellRunSums {
 
 /// Readings in order of cell (counting sort), then the sums for each run inside each cell.
 template <class T, class Use>
-void eachCell(const NoiseChain& chain, const Places& places, std::span<const T> e, std::span<const T> w, const std::vector<T>& mean,
-              Use&& use) {
+void eachCell(const NoiseChain& chain, const Places& places, std::span<const T> e, std::span<const T> w,
+              const std::vector<T>& mean, Use&& use) {
     const std::size_t cells = chain.cells.size();
     std::vector<std::size_t> begin(cells + 1, 0);
     for (const std::int32_t c : places.cell)
@@ -256,8 +196,8 @@ Range rangeOf(const Sample& sample) {
 }
 
 template <class T>
-void addRuns(const Sample& sample, const Places& places, std::span<const T> e, std::span<const T> w, const Sums<T>& cellSums,
-             NoiseChain& chain) {
+void addRuns(const Sample& sample, const Places& places, std::span<const T> e, std::span<const T> w,
+             const Sums<T>& cellSums, NoiseChain& chain) {
     const std::size_t runs = chain.runs;
     const Range range = rangeOf(sample);
     RunSystem<T> system(2 * runs);
@@ -308,7 +248,8 @@ void addRuns(const Sample& sample, const Places& places, std::span<const T> e, s
         slopeMean += effect[runs + r] * static_cast<double>(count[r]) / static_cast<double>(chain.readings);
     }
     for (std::size_t r = 0; r < runs; ++r)
-        chain.effects.push_back({places.runNumbers[r], count[r], effect[r] - offsetMean, (effect[runs + r] - slopeMean) / range.half});
+        chain.effects.push_back(
+            {places.runNumbers[r], count[r], effect[r] - offsetMean, (effect[runs + r] - slopeMean) / range.half});
 }
 
 /// tr Zᵀ(P₃ − P₂)Z for the run columns Z: how much of a run effect leaks into the contrast of rising and falling.

@@ -21,8 +21,10 @@ VarianceComponent repeatabilityComponent(const SplitRow& row, double meanVarianc
     return component;
 }
 
-/// The component behind `row`, whose mean square expects s² + weight·σ² + `other`, the share of a further component known already.
-VarianceComponent randomComponent(SplitPart part, const SplitRow& row, const SplitRow& error, double trace, double other) {
+/// The component behind `row`, whose mean square expects s² + weight·σ² + `other`, the share of a further component
+/// known already.
+VarianceComponent randomComponent(SplitPart part, const SplitRow& row, const SplitRow& error, double trace,
+                                  double other) {
     VarianceComponent component;
     component.part = part;
     const double weight = trace / row.df;
@@ -31,7 +33,8 @@ VarianceComponent randomComponent(SplitPart part, const SplitRow& row, const Spl
     component.estimate = (ms - error.ss / error.df - other) / weight;
     component.variance = std::max(0.0, component.estimate);
     const double difference = ms - errorMs;
-    component.degreesOfFreedom = difference > 0 ? difference * difference / (ms * ms / row.df + errorMs * errorMs / error.df) : 0;
+    component.degreesOfFreedom =
+        difference > 0 ? difference * difference / (ms * ms / row.df + errorMs * errorMs / error.df) : 0;
     if (!(errorMs > 0))
         return component;
     const double f = ms / errorMs;
@@ -45,7 +48,8 @@ VarianceComponent randomComponent(SplitPart part, const SplitRow& row, const Spl
 
 } // namespace
 
-std::vector<VarianceComponent> varianceComponents(const NoiseChain& chain, const VarianceSplit& split, double meanVarianceOfReading) {
+std::vector<VarianceComponent> varianceComponents(const NoiseChain& chain, const VarianceSplit& split,
+                                                  double meanVarianceOfReading) {
     std::vector<VarianceComponent> components;
     const auto& error = split.repeatability ? split.repeatability : split.pureError;
     if (!error || error->df <= 0)
@@ -57,8 +61,8 @@ std::vector<VarianceComponent> varianceComponents(const NoiseChain& chain, const
     }
     if (split.hysteresis && split.hysteresis->df > 0 && chain.contrastWeight > 0) {
         const double leaked = chain.runInContrastWeight * runVariance / split.hysteresis->df;
-        components.insert(components.begin(),
-                          randomComponent(SplitPart::Hysteresis, *split.hysteresis, *error, chain.contrastWeight, leaked));
+        components.insert(components.begin(), randomComponent(SplitPart::Hysteresis, *split.hysteresis, *error,
+                                                              chain.contrastWeight, leaked));
     }
     components.push_back(repeatabilityComponent(*error, meanVarianceOfReading));
 

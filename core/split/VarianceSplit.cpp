@@ -53,12 +53,16 @@ void addRows(VarianceSplit& split, const NoiseChain& chain, int terms) {
     if (chain.contrasts > 0)
         split.hysteresis = row(chain.s2 - chain.s3, chain.contrasts);
     else
-        split.warnings.push_back({WarningCode::OneDirection, {{"reason", chain.directionsKnown ? "one" : "not-stated"}}});
+        split.warnings.push_back(
+            {WarningCode::OneDirection, {{"reason", chain.directionsKnown ? "one" : "not-stated"}}});
     if (chain.runOffsets > 0)
         split.runOffset = row(chain.s3 - chain.s4, chain.runOffsets);
     else
         split.warnings.push_back({WarningCode::OneRun,
-                                  {{"reason", chain.runs > mostRuns ? "too-many" : chain.runs > 1 ? "no-repeats" : chain.runs == 1 ? "one" : "not-stated"}}});
+                                  {{"reason", chain.runs > mostRuns ? "too-many"
+                                              : chain.runs > 1      ? "no-repeats"
+                                              : chain.runs == 1     ? "one"
+                                                                    : "not-stated"}}});
     if (chain.runSlopes > 0)
         split.runSlope = row(chain.s4 - chain.s5, chain.runSlopes);
     if (!split.hysteresis && !split.runOffset)

@@ -1,7 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-// Prints, for data sets simulated without the effect in question: how often each F test of the variance split rejects at 5 %; how the
-// variance components come out on average; how far the chain is from adding up to the total; and what one split and one set of
-// diagnostics cost.
+// Prints, for data sets simulated without the effect in question: how often each F test of the variance split rejects
+// at 5 %; how the variance components come out on average; how far the chain is from adding up to the total; and what
+// one split and one set of diagnostics cost.
 #include "core/diagnose/Diagnostics.h"
 #include "core/diagnose/Findings.h"
 #include "core/fit/fitFunction.h"
@@ -9,9 +9,9 @@
 #include "tests/support/SampleRecord.h"
 
 #include <algorithm>
-#include <ctime>
 #include <cmath>
 #include <cstdio>
+#include <ctime>
 #include <functional>
 #include <map>
 #include <random>
@@ -97,7 +97,8 @@ std::vector<double> simulate(const Design& design, const Effects& effects, std::
     std::vector<double> y;
     for (std::size_t i = 0; i < design.x.size(); ++i)
         y.push_back(4 + 1.6 * design.x[i] + run[design.sample.run[i]] +
-                    gap[design.sample.group[i]][design.sample.direction[i] == Direction::Rising ? 0 : 1] + normal(engine));
+                    gap[design.sample.group[i]][design.sample.direction[i] == Direction::Rising ? 0 : 1] +
+                    normal(engine));
     return y;
 }
 
@@ -119,11 +120,12 @@ void rejections(bool gaps) {
         count("hysteresis", split.hysteresis);
         count("run offset", split.runOffset);
         count("run slope", split.runSlope);
-        const double sum = split.regression.ss + split.lackOfFit->ss + split.hysteresis->ss + split.runOffset->ss + split.runSlope->ss +
-                           split.repeatability->ss;
+        const double sum = split.regression.ss + split.lackOfFit->ss + split.hysteresis->ss + split.runOffset->ss +
+                           split.runSlope->ss + split.repeatability->ss;
         worstSum = std::max(worstSum, std::abs(sum / split.total.ss - 1));
     }
-    std::printf("%s, %d null sets of %zu readings: rejected at 5 %%\n", gaps ? "with gaps" : "balanced", sets, design.x.size());
+    std::printf("%s, %d null sets of %zu readings: rejected at 5 %%\n", gaps ? "with gaps" : "balanced", sets,
+                design.x.size());
     for (const auto& [name, times] : rejected)
         std::printf("  %-22s %5.2f %%\n", name.c_str(), 100.0 * times / sets);
     std::printf("  parts add up to the total within %.1e\n", worstSum);
@@ -146,11 +148,13 @@ void components(bool gaps) {
                 if (component.part == parts[k]) {
                     sum[k] += component.estimate;
                     squares[k] += component.estimate * component.estimate;
-                    inside[k] += *component.low <= std::sqrt(truth[k]) && std::sqrt(truth[k]) <= *component.high ? 1 : 0;
+                    inside[k] +=
+                        *component.low <= std::sqrt(truth[k]) && std::sqrt(truth[k]) <= *component.high ? 1 : 0;
                 }
     }
-    std::printf("%s, components over %d sets: true, mean, error of the mean, share of 95 %% intervals that hold the truth\n",
-                gaps ? "with gaps" : "balanced", repeats);
+    std::printf(
+        "%s, components over %d sets: true, mean, error of the mean, share of 95 %% intervals that hold the truth\n",
+        gaps ? "with gaps" : "balanced", repeats);
     for (int k = 0; k < 3; ++k) {
         const double mean = sum[k] / repeats;
         std::printf("  %-22s %6.3f %7.4f %7.4f %5.1f %%\n", names[k], truth[k], mean,
@@ -171,13 +175,18 @@ void costs() {
     const Sample sample = makeSample(record, Phase::AsFound);
     const auto outcome = fitFunction(sample, record.choices);
     double kept = 0;
-    std::printf("66 readings: fit %.3f ms, ", milliseconds(200, [&] { kept += fitFunction(sample, record.choices)->fit.residualSs; }));
-    std::printf("split %.3f ms, ", milliseconds(200, [&] { kept += splitVariance(sample, outcome->residuals, outcome->fit).residual.ss; }));
-    std::printf("diagnostics %.3f ms, ", milliseconds(200, [&] {
-                    kept += *diagnose(sample, outcome->residuals, outcome->fit, {record.readings->ids(), 0, 0.05}).durbinWatson;
+    std::printf("66 readings: fit %.3f ms, ",
+                milliseconds(200, [&] { kept += fitFunction(sample, record.choices)->fit.residualSs; }));
+    std::printf("split %.3f ms, ", milliseconds(200, [&] {
+                    kept += splitVariance(sample, outcome->residuals, outcome->fit).residual.ss;
                 }));
+    std::printf(
+        "diagnostics %.3f ms, ", milliseconds(200, [&] {
+            kept += *diagnose(sample, outcome->residuals, outcome->fit, {record.readings->ids(), 0, 0.05}).durbinWatson;
+        }));
     const VarianceSplit split = splitVariance(sample, outcome->residuals, outcome->fit);
-    const Diagnostics diagnostics = diagnose(sample, outcome->residuals, outcome->fit, {record.readings->ids(), 0, 0.05});
+    const Diagnostics diagnostics =
+        diagnose(sample, outcome->residuals, outcome->fit, {record.readings->ids(), 0, 0.05});
     const auto performance = processFigures(sample, record.item);
     FindingsInput input{record, Phase::AsFound, sample};
     input.fit = &outcome->fit;
@@ -218,7 +227,9 @@ void manyReadings() {
     const std::vector<ReadingId> ids(n, 1);
     std::printf("%zu readings: summing two columns %.2f ms, split %.1f times that, diagnostics %.1f times\n", n, sum,
                 milliseconds(3, [&] { kept += splitVariance(sample, line.residuals, line.fit).residual.ss; }) / sum,
-                milliseconds(3, [&] { kept += *diagnose(sample, line.residuals, line.fit, {ids, 0, 0.05}).durbinWatson; }) / sum);
+                milliseconds(3, [&] {
+                    kept += *diagnose(sample, line.residuals, line.fit, {ids, 0, 0.05}).durbinWatson;
+                }) / sum);
     if (!(kept != 0))
         std::printf("no figures\n");
 }

@@ -25,7 +25,8 @@ std::vector<Finding> findingsOf(const Record& record, Phase phase = Phase::AsFou
     if (!outcome)
         return findings(input);
     const VarianceSplit split = splitVariance(sample, outcome->residuals, outcome->fit);
-    const Diagnostics diagnostics = diagnose(sample, outcome->residuals, outcome->fit, {record.readings->ids(), 0, 0.05});
+    const Diagnostics diagnostics =
+        diagnose(sample, outcome->residuals, outcome->fit, {record.readings->ids(), 0, 0.05});
     const auto performance = processFigures(sample, record.item);
     input.fit = &outcome->fit;
     input.residuals = &outcome->residuals;
@@ -36,7 +37,8 @@ std::vector<Finding> findingsOf(const Record& record, Phase phase = Phase::AsFou
 }
 
 const Finding* find(const std::vector<Finding>& found, FindingCode code) {
-    const auto at = std::find_if(found.begin(), found.end(), [&](const Finding& finding) { return finding.code == code; });
+    const auto at =
+        std::find_if(found.begin(), found.end(), [&](const Finding& finding) { return finding.code == code; });
     return at == found.end() ? nullptr : &*at;
 }
 
@@ -47,7 +49,8 @@ double figure(const Finding& finding, const std::string& name) {
     return std::nan("");
 }
 
-/// sample-data/NAME with columns reference, indication and, where named, set point and run; the row of units is skipped.
+/// sample-data/NAME with columns reference, indication and, where named, set point and run; the row of units is
+/// skipped.
 Record sampleData(const char* name, int setPoint, int run) {
     Record record;
     QFile file(QString::fromStdString(sourceDir()) + "/sample-data/" + name);
@@ -118,7 +121,8 @@ class FindingsTest : public QObject {
         QVERIFY((found.front().suggestion == FunctionChoice{FunctionFamily::Polynomial, 2}));
         QVERIFY(std::abs(figure(found.front(), "f") - 19.2) < 0.05);
         const Finding* hidden = find(found, FindingCode::HiddenCurvature);
-        QVERIFY(hidden && std::abs(figure(*hidden, "f_naive") - 1.15) < 0.005 && std::abs(figure(*hidden, "p_naive") - 0.34) < 0.005);
+        QVERIFY(hidden && std::abs(figure(*hidden, "f_naive") - 1.15) < 0.005 &&
+                std::abs(figure(*hidden, "p_naive") - 0.34) < 0.005);
         const Finding* gap = find(found, FindingCode::Hysteresis);
         QVERIFY(gap && figure(*gap, "set_point") == 5 && std::abs(figure(*gap, "percent_of_span") - 0.077) < 0.0005);
         QCOMPARE(gap->rows.size(), std::size_t{6});
@@ -127,11 +131,13 @@ class FindingsTest : public QObject {
 
         record.choices.function = {FunctionFamily::Polynomial, 2};
         const auto curved = findingsOf(record);
-        QVERIFY(!find(curved, FindingCode::LackOfFit) && !find(curved, FindingCode::HiddenCurvature) && !find(curved, FindingCode::DegreeNotJustified));
+        QVERIFY(!find(curved, FindingCode::LackOfFit) && !find(curved, FindingCode::HiddenCurvature) &&
+                !find(curved, FindingCode::DegreeNotJustified));
         record.choices.function = {FunctionFamily::Polynomial, 3};
         const auto cubic = findingsOf(record);
         QVERIFY(find(cubic, FindingCode::DegreeNotJustified));
-        QVERIFY((find(cubic, FindingCode::DegreeNotJustified)->suggestion == FunctionChoice{FunctionFamily::Polynomial, 2}));
+        QVERIFY((find(cubic, FindingCode::DegreeNotJustified)->suggestion ==
+                 FunctionChoice{FunctionFamily::Polynomial, 2}));
     }
 
     void loadCellRunsDifferInGain() {
@@ -162,9 +168,12 @@ class FindingsTest : public QObject {
             for (const Finding& finding : findingsOf(madeRecord(nothing, seed)))
                 ++alarms[static_cast<int>(finding.code)];
         for (const auto& [code, count] : alarms)
-            QVERIFY2(count <= (code == static_cast<int>(FindingCode::LackOfFit) || code == static_cast<int>(FindingCode::Straggler) ||
-                                       code == static_cast<int>(FindingCode::HiddenCurvature) || code == static_cast<int>(FindingCode::OutsideBand)
-                                   ? 26 : 10),
+            QVERIFY2(count <= (code == static_cast<int>(FindingCode::LackOfFit) ||
+                                       code == static_cast<int>(FindingCode::Straggler) ||
+                                       code == static_cast<int>(FindingCode::HiddenCurvature) ||
+                                       code == static_cast<int>(FindingCode::OutsideBand)
+                                   ? 26
+                                   : 10),
                      qPrintable(QString("code %1: %2 of 200").arg(code).arg(count)));
     }
 
@@ -242,7 +251,9 @@ class FindingsTest : public QObject {
 
     void exclusionsAreListedAndTooManyAreSaid() {
         Record record = madeRecord(nothing);
-        const auto exclude = [&](ReadingId id) { record.exclusions.edit().add({id, ExclusionReason::Disturbance, "", "TL", 0}); };
+        const auto exclude = [&](ReadingId id) {
+            record.exclusions.edit().add({id, ExclusionReason::Disturbance, "", "TL", 0});
+        };
         exclude(4);
         auto found = findingsOf(record);
         const Finding* listed = find(found, FindingCode::ExcludedReadings);
@@ -252,9 +263,11 @@ class FindingsTest : public QObject {
             if (record.readings->setPoint().toDouble(i) == 3)
                 exclude(record.readings->ids()[i]);
         found = findingsOf(record);
-        QVERIFY(find(found, FindingCode::SetPointExcluded) && figure(*find(found, FindingCode::SetPointExcluded), "set_point") == 3);
+        QVERIFY(find(found, FindingCode::SetPointExcluded) &&
+                figure(*find(found, FindingCode::SetPointExcluded), "set_point") == 3);
         QVERIFY(find(found, FindingCode::ManyExcluded));
-        QVERIFY(std::is_sorted(found.begin(), found.end(), [](const Finding& a, const Finding& b) { return a.severity > b.severity; }));
+        QVERIFY(std::is_sorted(found.begin(), found.end(),
+                               [](const Finding& a, const Finding& b) { return a.severity > b.severity; }));
     }
 
     void fewReadingsAndExtrapolationAreSaid() {
@@ -269,7 +282,8 @@ class FindingsTest : public QObject {
     }
 
     void aReadingFarOutIsInfluentialAndOutsideTheBand() {
-        const auto found = findingsOf(recordOf(std::vector<std::string>{"0", "1", "2", "3", "4", "20"}, {"0.0", "1.1", "1.9", "3.1", "3.9", "25"}));
+        const auto found = findingsOf(recordOf(std::vector<std::string>{"0", "1", "2", "3", "4", "20"},
+                                               {"0.0", "1.1", "1.9", "3.1", "3.9", "25"}));
         QVERIFY(find(found, FindingCode::Influential));
         QCOMPARE(find(found, FindingCode::Influential)->rows.back(), ReadingId{6});
     }

@@ -46,7 +46,9 @@ constexpr FunctionChoice constant{FunctionFamily::Constant, 0};
 void compare(const PublishedSet& set, const std::string& name, const std::optional<double>& got, double digits) {
     QVERIFY2(got, name.c_str());
     const double agreed = digitsAgreed(*got, set.recomputed.at(name));
-    QVERIFY2(agreed >= digits, qPrintable(QString("%1: %2 digits, got %3").arg(QString::fromStdString(name)).arg(agreed).arg(*got, 0, 'g', 17)));
+    QVERIFY2(agreed >= digits,
+             qPrintable(
+                 QString("%1: %2 digits, got %3").arg(QString::fromStdString(name)).arg(agreed).arg(*got, 0, 'g', 17)));
 }
 
 std::optional<double> statistic(const std::optional<TestResult>& test) {
@@ -63,7 +65,8 @@ std::vector<double> doubles(const std::vector<std::string>& cells) {
     return values;
 }
 
-/// Columns 1, x, … of a regression with k regressors whose column space is spanned by given eigenvectors of the difference matrix.
+/// Columns 1, x, … of a regression with k regressors whose column space is spanned by given eigenvectors of the
+/// difference matrix.
 std::vector<std::vector<double>> eigenvectorColumns(int n, int k, bool largest) {
     std::vector<std::vector<double>> columns(1, std::vector<double>(static_cast<std::size_t>(n), 1.0));
     for (int j = 1; j <= k; ++j) {
@@ -130,14 +133,17 @@ class ResidualTestsTest : public QObject {
         compare(published, "dw.p_positive", durbinWatsonBelow(d, columns), 9);
     }
 
-    // Savin and White, Econometrica 45 (1977), from memory; the bounds are quantiles for regressors that are eigenvectors.
+    // Savin and White, Econometrica 45 (1977), from memory; the bounds are quantiles for regressors that are
+    // eigenvectors.
     void durbinWatsonBoundsAreQuantiles() {
         const auto set = publishedSet("durbin_watson_bounds");
         for (const auto& row : set.rows) {
             const std::string key = "[" + row[0] + "," + row[1] + "," + row[2] + "]";
             const int n = std::stoi(row[1]), k = std::stoi(row[2]);
-            const double lower = durbinWatsonBelow(std::stod(set.recomputed.at("dL" + key)), eigenvectorColumns(n, k, true));
-            const double upper = durbinWatsonBelow(std::stod(set.recomputed.at("dU" + key)), eigenvectorColumns(n, k, false));
+            const double lower =
+                durbinWatsonBelow(std::stod(set.recomputed.at("dL" + key)), eigenvectorColumns(n, k, true));
+            const double upper =
+                durbinWatsonBelow(std::stod(set.recomputed.at("dU" + key)), eigenvectorColumns(n, k, false));
             const double alpha = std::stod(row[0]);
             // The lower bound belongs to the smallest roots, which are left when the regressors take the largest.
             QVERIFY2(std::abs(lower / alpha - 1) < 1e-9, (key + " " + std::to_string(lower)).c_str());
@@ -161,7 +167,8 @@ class ResidualTestsTest : public QObject {
             }
             const Eigen::MatrixXd q = Eigen::HouseholderQR<Eigen::MatrixXd>(x).householderQ();
             const Eigen::MatrixXd rest = q.rightCols(n - 2);
-            const Eigen::VectorXd roots = Eigen::SelfAdjointEigenSolver<Eigen::MatrixXd>(rest.transpose() * a * rest).eigenvalues();
+            const Eigen::VectorXd roots =
+                Eigen::SelfAdjointEigenSolver<Eigen::MatrixXd>(rest.transpose() * a * rest).eigenvalues();
             for (const double d : {1.2, 1.9, 2.6}) {
                 double integral = 0;
                 const double h = 0.02;
@@ -273,19 +280,23 @@ class ResidualTestsTest : public QObject {
         QCOMPARE(set.rows[d.diagnostics.grubbs->row - 1][0], std::string("245.57"));
     }
 
-    // Rosner's 54 values (Technometrics 25 (1983) 165; NIST handbook 1.3.5.17.3), from memory, with R and λ as printed there.
+    // Rosner's 54 values (Technometrics 25 (1983) 165; NIST handbook 1.3.5.17.3), from memory, with R and λ as printed
+    // there.
     void rosnersExampleFindsThreeOutliers() {
-        const char* values[] = {"-0.25", "0.68", "0.94", "1.15", "1.20", "1.26", "1.26", "1.34", "1.38", "1.43", "1.49", "1.49", "1.55", "1.56",
-                                "1.58", "1.65", "1.69", "1.70", "1.76", "1.77", "1.81", "1.91", "1.94", "1.96", "1.99", "2.06", "2.09", "2.10",
-                                "2.14", "2.15", "2.23", "2.24", "2.26", "2.35", "2.37", "2.40", "2.47", "2.54", "2.62", "2.64", "2.90", "2.92",
-                                "2.92", "2.93", "3.21", "3.26", "3.30", "3.59", "3.68", "4.30", "4.64", "5.34", "5.42", "6.01"};
+        const char* values[] = {"-0.25", "0.68", "0.94", "1.15", "1.20", "1.26", "1.26", "1.34", "1.38", "1.43", "1.49",
+                                "1.49",  "1.55", "1.56", "1.58", "1.65", "1.69", "1.70", "1.76", "1.77", "1.81", "1.91",
+                                "1.94",  "1.96", "1.99", "2.06", "2.09", "2.10", "2.14", "2.15", "2.23", "2.24", "2.26",
+                                "2.35",  "2.37", "2.40", "2.47", "2.54", "2.62", "2.64", "2.90", "2.92", "2.92", "2.93",
+                                "3.21",  "3.26", "3.30", "3.59", "3.68", "4.30", "4.64", "5.34", "5.42", "6.01"};
         const std::vector<std::string> y(std::begin(values), std::end(values));
         const Diagnosed d = diagnosed(recordOf({}, y), constant, 10);
         const char* r[] = {"3.118", "2.942", "3.179", "2.810", "2.815", "2.848", "2.279", "2.310", "2.101", "2.067"};
-        const char* lambda[] = {"3.158", "3.151", "3.143", "3.136", "3.128", "3.120", "3.111", "3.103", "3.094", "3.085"};
+        const char* lambda[] = {"3.158", "3.151", "3.143", "3.136", "3.128",
+                                "3.120", "3.111", "3.103", "3.094", "3.085"};
         QCOMPARE(d.diagnostics.esd.size(), std::size_t{10});
         for (std::size_t i = 0; i < 10; ++i) {
-            QVERIFY2(std::abs(d.diagnostics.esd[i].r - std::stod(r[i])) <= 0.00101, r[i]); // the handbook truncates some
+            QVERIFY2(std::abs(d.diagnostics.esd[i].r - std::stod(r[i])) <= 0.00101,
+                     r[i]); // the handbook truncates some
             QVERIFY2(std::abs(d.diagnostics.esd[i].lambda - std::stod(lambda[i])) <= 0.00101, lambda[i]);
         }
         QCOMPARE(d.diagnostics.esdCount, 3);
@@ -295,14 +306,16 @@ class ResidualTestsTest : public QObject {
     // Invented readings, figures computed beside them: six readings at eight flows, scatter in proportion to the flow.
     void scatterInProportionToFlowIsSeen() {
         const std::vector<std::pair<const char*, const char*>> rows{
-            {"2.002", "0.203"}, {"1.995", "0.200"}, {"2.004", "0.202"}, {"2.002", "0.203"}, {"1.998", "0.201"}, {"1.999", "0.203"},
-            {"5.002", "0.497"}, {"4.997", "0.499"}, {"4.999", "0.498"}, {"5.003", "0.500"}, {"5.005", "0.502"}, {"4.989", "0.499"},
-            {"10.005", "1.003"}, {"9.997", "1.000"}, {"10.004", "1.000"}, {"9.985", "0.998"}, {"10.005", "1.002"}, {"9.993", "0.998"},
-            {"14.991", "1.487"}, {"14.986", "1.500"}, {"14.977", "1.491"}, {"15.025", "1.501"}, {"14.994", "1.494"}, {"14.992", "1.509"},
-            {"19.995", "1.985"}, {"19.966", "1.994"}, {"19.982", "2.002"}, {"20.002", "1.996"}, {"20.017", "2.011"}, {"19.972", "1.993"},
-            {"29.974", "2.965"}, {"30.011", "2.996"}, {"30.017", "3.001"}, {"30.089", "3.024"}, {"30.047", "2.997"}, {"30.005", "2.997"},
-            {"39.934", "3.970"}, {"39.994", "4.018"}, {"40.000", "3.992"}, {"40.056", "4.026"}, {"39.919", "3.982"}, {"39.973", "3.969"},
-            {"49.911", "5.011"}, {"50.003", "4.979"}, {"50.005", "5.010"}, {"50.062", "4.997"}, {"49.961", "5.015"}, {"50.081", "5.002"}};
+            {"2.002", "0.203"},  {"1.995", "0.200"},  {"2.004", "0.202"},  {"2.002", "0.203"},  {"1.998", "0.201"},
+            {"1.999", "0.203"},  {"5.002", "0.497"},  {"4.997", "0.499"},  {"4.999", "0.498"},  {"5.003", "0.500"},
+            {"5.005", "0.502"},  {"4.989", "0.499"},  {"10.005", "1.003"}, {"9.997", "1.000"},  {"10.004", "1.000"},
+            {"9.985", "0.998"},  {"10.005", "1.002"}, {"9.993", "0.998"},  {"14.991", "1.487"}, {"14.986", "1.500"},
+            {"14.977", "1.491"}, {"15.025", "1.501"}, {"14.994", "1.494"}, {"14.992", "1.509"}, {"19.995", "1.985"},
+            {"19.966", "1.994"}, {"19.982", "2.002"}, {"20.002", "1.996"}, {"20.017", "2.011"}, {"19.972", "1.993"},
+            {"29.974", "2.965"}, {"30.011", "2.996"}, {"30.017", "3.001"}, {"30.089", "3.024"}, {"30.047", "2.997"},
+            {"30.005", "2.997"}, {"39.934", "3.970"}, {"39.994", "4.018"}, {"40.000", "3.992"}, {"40.056", "4.026"},
+            {"39.919", "3.982"}, {"39.973", "3.969"}, {"49.911", "5.011"}, {"50.003", "4.979"}, {"50.005", "5.010"},
+            {"50.062", "4.997"}, {"49.961", "5.015"}, {"50.081", "5.002"}};
         const char* nominal[] = {"2", "5", "10", "15", "20", "30", "40", "50"};
         Record record;
         for (std::size_t i = 0; i < rows.size(); ++i) {
@@ -314,7 +327,8 @@ class ResidualTestsTest : public QObject {
             record.readings.edit().append(reading);
         }
         const Diagnosed d = diagnosed(record, line);
-        QVERIFY2(std::abs(*d.diagnostics.cochran - 0.397) < 0.0006, qPrintable(QString::number(*d.diagnostics.cochran)));
+        QVERIFY2(std::abs(*d.diagnostics.cochran - 0.397) < 0.0006,
+                 qPrintable(QString::number(*d.diagnostics.cochran)));
         QVERIFY(agreesAsPrinted(*d.diagnostics.cochranCritical, "0.359"));
         QVERIFY(agreesAsPrinted(*d.diagnostics.cochranCriticalOutlier, "0.423"));
         QVERIFY(d.diagnostics.bartlett->p < 1e-6);
@@ -387,7 +401,8 @@ class ResidualTestsTest : public QObject {
         std::vector<double> x(u.size());
         for (std::size_t i = 0; i < x.size(); ++i)
             x[i] = static_cast<double>(i % 100);
-        QVERIFY(digitsAgreed(breuschPagan(u, std::span<const double>(x))->statistic, breuschPagan(u, std::vector<std::vector<double>>{x})->statistic) > 9);
+        QVERIFY(digitsAgreed(breuschPagan(u, std::span<const double>(x))->statistic,
+                             breuschPagan(u, std::vector<std::vector<double>>{x})->statistic) > 9);
     }
 
     void aPerfectLineIsNotDiagnosed() {

@@ -105,7 +105,8 @@ class SlipsTest : public QObject {
         QVERIFY(offers(slipCandidates(number("0.05"), 2, "V"), SlipKind::DigitsSwapped, "0.50"));
         for (const SlipCandidate& candidate : swapped) {
             QVERIFY(compareValue(candidate.value, number("1.847")) != 0);
-            if (candidate.kind == SlipKind::DigitsSwapped) // a swap changes a number by a multiple of nine units of the last digit
+            if (candidate.kind ==
+                SlipKind::DigitsSwapped) // a swap changes a number by a multiple of nine units of the last digit
                 QCOMPARE((candidate.value.mantissa - 1847) % 9, std::int64_t{0});
         }
     }
@@ -143,8 +144,9 @@ class SlipsTest : public QObject {
         second.id = record.nextReadingId++;
         second.setPoint = number("5");
         second.enteredAt = 1'010'000;
-        QCOMPARE(kinds(slipsOf(record, second)),
-                 (std::vector<SlipKind>{SlipKind::RepeatsRowBefore, SlipKind::AgainstDirection, SlipKind::BeforeSettled}));
+        QCOMPARE(
+            kinds(slipsOf(record, second)),
+            (std::vector<SlipKind>{SlipKind::RepeatsRowBefore, SlipKind::AgainstDirection, SlipKind::BeforeSettled}));
         second.reference = number("5.001");
         second.indication = number("12.004");
         second.enteredAt = 1'040'000;

@@ -69,7 +69,8 @@ class ForceFiguresTest : public QObject {
         QVERIFY(std::abs(*at(*figures, 5).interpolation) < 0.01);
     }
 
-    // By hand: zero 0.1 before, 0.12 after each series; deflections 10, 20, 30 but 10.1 in the second, 20.2 in the turned series.
+    // By hand: zero 0.1 before, 0.12 after each series; deflections 10, 20, 30 but 10.1 in the second, 20.2 in the
+    // turned series.
     void zeroAndReversibilityComeOutAsByHand() {
         Record record;
         const auto add = [&](int run, Direction direction, const char* force, const char* indication) {

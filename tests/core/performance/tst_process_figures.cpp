@@ -13,7 +13,8 @@ using spanwright::test::number;
 
 namespace {
 
-Record recordOf(const std::vector<std::array<const char*, 3>>& rows, const std::vector<Direction>& directions, const std::vector<int>& runs) {
+Record recordOf(const std::vector<std::array<const char*, 3>>& rows, const std::vector<Direction>& directions,
+                const std::vector<int>& runs) {
     Record record;
     for (std::size_t i = 0; i < rows.size(); ++i) {
         Reading reading;
@@ -61,11 +62,13 @@ class ProcessFiguresTest : public QObject {
 
     // By hand: range 0–10 to 0–100, errors rising 0, −1, 0 and 0, −3, 2; falling 1, 1, 0 and 1, 3, 2.
     void aSmallSetComesOutAsByHand() {
-        const std::vector<std::array<const char*, 3>> rows{
-            {"0", "0", "0"}, {"5", "5.1", "50"}, {"10", "10", "100"}, {"10", "10", "100"}, {"5", "5", "51"}, {"0", "0", "1"},
-            {"0", "0", "0"}, {"5", "5", "47"}, {"10", "10", "102"}, {"10", "10", "102"}, {"5", "5", "53"}, {"0", "0", "1"}};
+        const std::vector<std::array<const char*, 3>> rows{{"0", "0", "0"},     {"5", "5.1", "50"}, {"10", "10", "100"},
+                                                           {"10", "10", "100"}, {"5", "5", "51"},   {"0", "0", "1"},
+                                                           {"0", "0", "0"},     {"5", "5", "47"},   {"10", "10", "102"},
+                                                           {"10", "10", "102"}, {"5", "5", "53"},   {"0", "0", "1"}};
         const auto up = Direction::Rising, down = Direction::Falling;
-        Record record = recordOf(rows, {up, up, up, down, down, down, up, up, up, down, down, down}, {1, 1, 1, 1, 1, 1, 2, 2, 2, 2, 2, 2});
+        Record record = recordOf(rows, {up, up, up, down, down, down, up, up, up, down, down, down},
+                                 {1, 1, 1, 1, 1, 1, 2, 2, 2, 2, 2, 2});
         record.item.rangeLow = number("0");
         record.item.rangeHigh = number("10");
         record.item.outputLow = number("0");
@@ -79,8 +82,8 @@ class ProcessFiguresTest : public QObject {
         QCOMPARE(f->hysteresisInCycle->value, 6.0); // −3 against 3
         QCOMPARE(f->hysteresisInCycle->setPoint, 5.0);
         QCOMPARE(f->nonRepeatability->value, 2.0);
-        // Averages 0.5, 0, 1: chord 0.5, 0.75, 1 → −0.75; minimax half of it; through the lower end: r5 = −(0.5 + 5b), r10 = 0.5 − 10b,
-        // equal and opposite at b = 0: 0.5.
+        // Averages 0.5, 0, 1: chord 0.5, 0.75, 1 → −0.75; minimax half of it; through the lower end: r5 = −(0.5 + 5b),
+        // r10 = 0.5 − 10b, equal and opposite at b = 0: 0.5.
         QCOMPARE(f->nonLinearityTerminal->value, -0.75);
         QCOMPARE(std::abs(f->nonLinearityIndependent->value), 0.375);
         QCOMPARE(std::abs(f->nonLinearityZeroBased->value), 0.5);
@@ -88,7 +91,8 @@ class ProcessFiguresTest : public QObject {
     }
 
     void withoutAStatedOutputTheEndsStandInAndItIsSaid() {
-        const std::vector<std::array<const char*, 3>> rows{{"0", "0", "4.00"}, {"5", "5", "12.02"}, {"10", "10", "20.00"}};
+        const std::vector<std::array<const char*, 3>> rows{
+            {"0", "0", "4.00"}, {"5", "5", "12.02"}, {"10", "10", "20.00"}};
         Record record = recordOf(rows, std::vector<Direction>(3), {0, 0, 0});
         const auto f = processFigures(makeSample(record, Phase::AsFound), record.item);
         QVERIFY(f);

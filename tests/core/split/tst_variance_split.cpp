@@ -118,7 +118,8 @@ class VarianceSplitTest : public QObject {
     Q_OBJECT
 
   private slots:
-    // Invented readings; the figures were computed beside them from readings moved to the nominal pressure, without run slopes.
+    // Invented readings; the figures were computed beside them from readings moved to the nominal pressure, without run
+    // slopes.
     void pressureTransmitterGivesTheFiguresOfItsDescription() {
         const VarianceSplit s = splitOf(spanwright::test::pressureTransmitter(), line).split;
         QVERIFY(s.lackOfFit && s.pureError && s.hysteresis && s.runOffset && s.runSlope && s.repeatability);
@@ -155,7 +156,8 @@ class VarianceSplitTest : public QObject {
         QVERIFY(prints(curved.lackOfFit->ss / curved.lackOfFit->df / curvedRest, "0.91"));
     }
 
-    // GUM-like closed forms for m points, 2 directions, R runs, one reading each (common textbook forms, balanced two-way layouts).
+    // GUM-like closed forms for m points, 2 directions, R runs, one reading each (common textbook forms, balanced
+    // two-way layouts).
     void balancedReadingsAgreeWithTheClosedForms() {
         const Split made = splitOf(spanwright::test::pressureTransmitter(), quadratic);
         const auto& sample = made.sample;
@@ -200,10 +202,12 @@ class VarianceSplitTest : public QObject {
     // Invented readings of a rotated load cell (runs 1, 3 and 4), figures computed beside them: sample-data/README.md.
     void rotatedLoadCellShowsThatItsRunsDifferInGain() {
         const char* force[] = {"5", "10", "15", "20", "25", "30", "35", "40", "45", "50"};
-        const char* signal[3][10] = {
-            {"0.199886", "0.399828", "0.599774", "0.799798", "0.999860", "1.199902", "1.400034", "1.600168", "1.800352", "2.000594"},
-            {"0.199890", "0.399824", "0.599800", "0.799814", "0.999840", "1.199928", "1.400050", "1.600210", "1.800420", "2.000634"},
-            {"0.199902", "0.399816", "0.599756", "0.799762", "0.999812", "1.199860", "1.400000", "1.600160", "1.800354", "2.000572"}};
+        const char* signal[3][10] = {{"0.199886", "0.399828", "0.599774", "0.799798", "0.999860", "1.199902",
+                                      "1.400034", "1.600168", "1.800352", "2.000594"},
+                                     {"0.199890", "0.399824", "0.599800", "0.799814", "0.999840", "1.199928",
+                                      "1.400050", "1.600210", "1.800420", "2.000634"},
+                                     {"0.199902", "0.399816", "0.599756", "0.799762", "0.999812", "1.199860",
+                                      "1.400000", "1.600160", "1.800354", "2.000572"}};
         std::vector<Row> rows;
         for (int r = 0; r < 3; ++r)
             for (int i = 0; i < 10; ++i)
@@ -241,16 +245,19 @@ class VarianceSplitTest : public QObject {
             record.choices.weights = Weights::Stated;
         const VarianceSplit s = splitOf(record, {FunctionFamily::Polynomial, degree}).split;
         const std::map<std::string, const SplitRow*> rows{
-            {"residual", &s.residual}, {"lack_of_fit", &*s.lackOfFit}, {"hysteresis", &*s.hysteresis}, {"run_offset", &*s.runOffset},
-            {"run_slope", &*s.runSlope}, {"repeatability", &*s.repeatability}, {"pure_error", &*s.pureError},
-            {"naive", &*s.lackOfFitNaive}, {"adjusted", &*s.lackOfFitAdjusted}};
+            {"residual", &s.residual},     {"lack_of_fit", &*s.lackOfFit}, {"hysteresis", &*s.hysteresis},
+            {"run_offset", &*s.runOffset}, {"run_slope", &*s.runSlope},    {"repeatability", &*s.repeatability},
+            {"pure_error", &*s.pureError}, {"naive", &*s.lackOfFitNaive},  {"adjusted", &*s.lackOfFitAdjusted}};
         for (const auto& [name, expected] : figures) {
             const std::size_t dot = name.find('.');
             const SplitRow& row = *rows.at(name.substr(0, dot));
             const std::string part = name.substr(dot + 1);
             const double got = part == "ss" ? row.ss : part == "df" ? row.df : part == "f" ? *row.f : *row.p;
             const double digits = digitsAgreed(got, expected);
-            QVERIFY2(digits > 8, qPrintable(QString("%1: %2, R has %3").arg(QString::fromStdString(name)).arg(got, 0, 'g', 15).arg(expected, 0, 'g', 15)));
+            QVERIFY2(digits > 8, qPrintable(QString("%1: %2, R has %3")
+                                                .arg(QString::fromStdString(name))
+                                                .arg(got, 0, 'g', 15)
+                                                .arg(expected, 0, 'g', 15)));
         }
     }
 
@@ -260,12 +267,24 @@ class VarianceSplitTest : public QObject {
         QTest::addColumn<QString>("y");
         QTest::addColumn<int>("degree");
         QTest::addColumn<QString>("prefix");
-        QTest::newRow("load cell, line: NIST handbook 4.6.1") << "loadcell" << "load" << "deflection" << 1 << "line_lof.";
-        QTest::newRow("load cell, quadratic") << "loadcell" << "load" << "deflection" << 2 << "quad_lof.";
-        QTest::newRow("stopping distances of cars") << "r_cars_lack_of_fit" << "x" << "y" << 1 << "lof.";
-        QTest::newRow("arsenic") << "arsenic_inverse" << "x" << "y" << 1 << "lof.";
-        QTest::newRow("Toluca company") << "toluca_working_hotelling" << "x" << "y" << 1 << "lof.";
-        QTest::newRow("Alaska pipeline") << "alaska_pipeline" << "lab" << "field" << 1 << "line_lof.";
+        QTest::newRow("load cell, line: NIST handbook 4.6.1") << "loadcell"
+                                                              << "load"
+                                                              << "deflection" << 1 << "line_lof.";
+        QTest::newRow("load cell, quadratic") << "loadcell"
+                                              << "load"
+                                              << "deflection" << 2 << "quad_lof.";
+        QTest::newRow("stopping distances of cars") << "r_cars_lack_of_fit"
+                                                    << "x"
+                                                    << "y" << 1 << "lof.";
+        QTest::newRow("arsenic") << "arsenic_inverse"
+                                 << "x"
+                                 << "y" << 1 << "lof.";
+        QTest::newRow("Toluca company") << "toluca_working_hotelling"
+                                        << "x"
+                                        << "y" << 1 << "lof.";
+        QTest::newRow("Alaska pipeline") << "alaska_pipeline"
+                                         << "lab"
+                                         << "field" << 1 << "line_lof.";
     }
     void publishedLackOfFitAndOneWaySplits() {
         QFETCH(QString, set);
@@ -288,13 +307,15 @@ class VarianceSplitTest : public QObject {
         QCOMPARE(s.against, SplitPart::PureError);
     }
 
-    // NIST reference data sets and handbook 7.4.3, InsectSprays in R: the sum within groups is pure error, whatever the line.
+    // NIST reference data sets and handbook 7.4.3, InsectSprays in R: the sum within groups is pure error, whatever the
+    // line.
     void publishedOneWaySplits_data() {
         QTest::addColumn<QString>("set");
         QTest::addColumn<QString>("prefix");
         for (const char* name : {"sirstv", "smls01", "smls02", "smls04", "smls05", "smls07", "handbook_anova"})
             QTest::newRow(name) << name << "";
-        QTest::newRow("r_insectsprays_variances") << "r_insectsprays_variances" << "anova.";
+        QTest::newRow("r_insectsprays_variances") << "r_insectsprays_variances"
+                                                  << "anova.";
     }
     void publishedOneWaySplits() {
         QFETCH(QString, set);
@@ -314,8 +335,8 @@ class VarianceSplitTest : public QObject {
         QVERIFY(digitsAgreed(s.regression.ss + s.lackOfFit->ss, published.recomputed.at(p + "ss_between")) > 14);
     }
 
-    // GUM H.5: ten days of five voltages, known by daily mean and standard deviation; mean − s twice, mean, mean + s twice have both.
-    // Days as set points of a constant give its F, days as runs its between-day component.
+    // GUM H.5: ten days of five voltages, known by daily mean and standard deviation; mean − s twice, mean, mean + s
+    // twice have both. Days as set points of a constant give its F, days as runs its between-day component.
     void voltagesOfTenDaysSplitAsInTheGum() {
         const auto set = spanwright::test::publishedSet("gum_h5");
         Record days, runs;
@@ -345,7 +366,8 @@ class VarianceSplitTest : public QObject {
         QVERIFY(digitsAgreed(std::sqrt(byRun.components.front().variance), set.recomputed.at("s_between")) > 12);
     }
 
-    // sample-data/temperature-probe.csv: invented platinum readings with the curvature of IEC 60751, figures computed beside them.
+    // sample-data/temperature-probe.csv: invented platinum readings with the curvature of IEC 60751, figures computed
+    // beside them.
     void temperatureProbeBendsThoughItLooksStraight() {
         QFile file(QString::fromStdString(spanwright::test::sourceDir()) + "/sample-data/temperature-probe.csv");
         QVERIFY(file.open(QIODevice::ReadOnly));
@@ -371,8 +393,10 @@ class VarianceSplitTest : public QObject {
 
     // By hand: at 0, 1, 2 the readings 0 2 | 1 1 | 0 4 about the line through their means.
     void aSmallSetComesOutAsByHand() {
-        const Record record = recordOf({{"0", "0", "0"}, {"0", "0", "2"}, {"1", "1", "1"}, {"1", "1", "1"}, {"2", "2", "0"}, {"2", "2", "4"}});
-        // Means 1, 1, 2: line 5/6 + x/2, so 1/6, −1/3, 1/6 twice each: lack of fit 2(1/36 + 4/36 + 1/36) = 1/3; within 2 + 0 + 8.
+        const Record record = recordOf(
+            {{"0", "0", "0"}, {"0", "0", "2"}, {"1", "1", "1"}, {"1", "1", "1"}, {"2", "2", "0"}, {"2", "2", "4"}});
+        // Means 1, 1, 2: line 5/6 + x/2, so 1/6, −1/3, 1/6 twice each: lack of fit 2(1/36 + 4/36 + 1/36) = 1/3; within
+        // 2 + 0 + 8.
         const VarianceSplit s = splitOf(record, line).split;
         QVERIFY(std::abs(s.lackOfFit->ss - 1.0 / 3) < 1e-15);
         QVERIFY(std::abs(s.pureError->ss - 10) < 1e-14);
@@ -386,7 +410,8 @@ class VarianceSplitTest : public QObject {
         const Record record = unbalancedRecord(false);
         const VarianceSplit s = splitOf(record, line).split;
         QVERIFY(std::abs(partsSum(s) / s.total.ss - 1) < 1e-15);
-        QVERIFY(std::abs((s.hysteresis->ss + s.runOffset->ss + s.runSlope->ss + s.repeatability->ss) / s.pureError->ss - 1) < 1e-13);
+        QVERIFY(std::abs((s.hysteresis->ss + s.runOffset->ss + s.runSlope->ss + s.repeatability->ss) / s.pureError->ss -
+                         1) < 1e-13);
 
         Record moved;
         for (std::size_t i = record.readings->size(); i-- > 0;) {
@@ -429,13 +454,19 @@ class VarianceSplitTest : public QObject {
         QVERIFY(has(single, WarningCode::OneRun) && has(single, WarningCode::FigureUndefined));
 
         // Two set points under a line: nothing is left over for lack of fit.
-        const VarianceSplit two = splitOf(recordOf({{"0", "0", "0"}, {"0", "0", "0.2"}, {"1", "1", "1"}, {"1", "1", "1.1"}}), line).split;
+        const VarianceSplit two =
+            splitOf(recordOf({{"0", "0", "0"}, {"0", "0", "0.2"}, {"1", "1", "1"}, {"1", "1", "1.1"}}), line).split;
         QVERIFY(two.pureError && !two.lackOfFit);
         QVERIFY(has(two, WarningCode::OneDirection));
     }
 
     void aPerfectLineLeavesNothingAndIsNotTested() {
-        const VarianceSplit s = splitOf(recordOf({{"0", "0", "0.1"}, {"0", "0", "0.1"}, {"1", "1", "0.4"}, {"1", "1", "0.4"}, {"2", "2", "0.7"}}), line).split;
+        const VarianceSplit s =
+            splitOf(
+                recordOf(
+                    {{"0", "0", "0.1"}, {"0", "0", "0.1"}, {"1", "1", "0.4"}, {"1", "1", "0.4"}, {"2", "2", "0.7"}}),
+                line)
+                .split;
         QCOMPARE(s.residual.ss, 0.0);
         QCOMPARE(s.lackOfFit->ss, 0.0);
         QCOMPARE(s.pureError->ss, 0.0);
