@@ -56,7 +56,7 @@ BenchPage::BenchPage(Workbench& workbench, QWidget* parent) : QWidget(parent), w
     columns->setStretchFactor(0, 0);
     columns->setStretchFactor(1, 1);
     columns->setStretchFactor(2, 0);
-    columns->setSizes({384, 590, 272});
+    columns->setSizes({384, 572, 288});
     all->addWidget(columns);
     new PlotPair(*line_, *residual_, this);
     buildActions();
@@ -142,7 +142,7 @@ QWidget* BenchPage::buildRight() {
     rows->setStretchFactor(0, 3);
     rows->setStretchFactor(1, 2);
     rows->setSizes({420, 290});
-    rows->setMinimumWidth(256);
+    rows->setMinimumWidth(264);
     connect(findings_, &FindingsView::remedyChosen, this, &BenchPage::follow);
     connect(findings_, &FindingsView::readingsChosen, this, [this](const std::vector<ReadingId>& ids) { workbench_.select({ids.begin(), ids.end()}); });
     connect(findings_, &FindingsView::dismissChosen, this, &BenchPage::dismiss);

@@ -137,15 +137,23 @@ void FindingsView::add(const Finding& finding, const Record& record) {
         figures->setForegroundRole(inkRole::quiet);
         lines->addWidget(figures, 1, 1);
     }
-    auto* actions = new QHBoxLayout;
-    actions->setSpacing(space::step);
-    if (!words.remedy.isEmpty())
-        connect(link(actions, words.remedy, QStringLiteral("remedy"), words.sentence), &QToolButton::clicked, this, [this, finding] { emit remedyChosen(finding); });
+    // The remedy has a line of its own: its words may be as wide as the card.
+    const auto row = [&](int at) {
+        auto* actions = new QHBoxLayout;
+        actions->setSpacing(space::card);
+        lines->addLayout(actions, at, 1);
+        return actions;
+    };
+    if (!words.remedy.isEmpty()) {
+        QHBoxLayout* first = row(2);
+        connect(link(first, words.remedy, QStringLiteral("remedy"), words.sentence), &QToolButton::clicked, this, [this, finding] { emit remedyChosen(finding); });
+        first->addStretch(1);
+    }
+    QHBoxLayout* second = row(3);
     if (!finding.rows.empty() && finding.remedy != Remedy::SeeReadings)
-        connect(link(actions, tr("Show"), QStringLiteral("showReadings"), words.sentence), &QToolButton::clicked, this, [this, finding] { emit readingsChosen(finding.rows); });
-    connect(link(actions, tr("Dismiss"), QStringLiteral("dismiss"), words.sentence), &QToolButton::clicked, this, [this, finding] { emit dismissChosen(finding); });
-    actions->addStretch(1);
-    lines->addLayout(actions, 2, 1);
+        connect(link(second, tr("Show"), QStringLiteral("showReadings"), words.sentence), &QToolButton::clicked, this, [this, finding] { emit readingsChosen(finding.rows); });
+    connect(link(second, tr("Dismiss"), QStringLiteral("dismiss"), words.sentence), &QToolButton::clicked, this, [this, finding] { emit dismissChosen(finding); });
+    second->addStretch(1);
     list_->addWidget(entry);
     auto* rule = new QFrame;
     rule->setFrameShape(QFrame::HLine);

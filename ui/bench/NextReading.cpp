@@ -143,6 +143,8 @@ void NextReading::buildFields(QVBoxLayout* all) {
             record(*suggestion_);
     });
     connect(keep_, &QPushButton::clicked, this, [this] { acceptIndication(true); });
+    for (QPushButton* answer : {use_, keep_})
+        answer->setAutoDefault(true); // Enter answers once the button is reached; Enter in the field only asks again
     answers->addWidget(use_);
     answers->addWidget(keep_);
     answers->addStretch(1);
@@ -357,13 +359,11 @@ void NextReading::ask(const QString& sentence, const std::optional<Decimal>& sug
     asking_ = true;
     suggestion_ = suggestion;
     tell(suggestion ? sentence : tr("%1 Read again, or press Enter once more to record it.").arg(sentence), true);
-    keep_->setText(tr("Keep %1").arg((column == NumberColumn::Reference ? reference_ : indication_)->text().trimmed()));
+    keep_->setText(tr("&Keep %1").arg((column == NumberColumn::Reference ? reference_ : indication_)->text().trimmed()));
     keep_->show();
     use_->setVisible(suggestion.has_value());
-    if (suggestion) {
-        use_->setText(tr("Use %1").arg(typedText(*suggestion)));
-        use_->setFocus();
-    }
+    if (suggestion)
+        use_->setText(tr("&Use %1").arg(typedText(*suggestion)));
 }
 
 void NextReading::record(const Decimal& indication) {

@@ -46,7 +46,7 @@ std::vector<PlotStroke> runLines(const VarianceSplit& split, bool sloping, const
                          .width = 2,
                          .style = styles[lines.size() % 4],
                          .label = tr("run %1").arg(run.run),
-                         .labelOffset = {-46.0 - 52.0 * static_cast<double>(lines.size()), 0}});
+                         .labelOffset = {-46.0 - 52.0 * static_cast<double>(lines.size()), -11}});
     }
     return lines;
 }

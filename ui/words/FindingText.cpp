@@ -111,7 +111,7 @@ QString FindingText::figure(const Figure& figure, const Record& record) {
 QString FindingText::remedy(const Finding& finding) {
     switch (finding.remedy) {
     case Remedy::None: return {};
-    case Remedy::CompareFunction: return tr("Compare with: %1").arg(functionText(finding.suggestion));
+    case Remedy::CompareFunction: return tr("Compare %1").arg(functionText(finding.suggestion));
     case Remedy::CarryToBudget: return tr("Carry to the budget");
     case Remedy::SeeExclusions: return tr("See the exclusions");
     case Remedy::SeeReadings: return tr("See the readings");

@@ -366,6 +366,47 @@ class BenchTest : public QObject {
         QVERIFY(QApplication::clipboard()->text().contains(QStringLiteral("lack of fit\t0.00023")));
     }
 
+    void aFindingLeadsToItsRemedyOrIsDismissedWithAReason() {
+        Bench bench(test::pressureTransmitter());
+        auto* view = bench.find<QWidget>("findings");
+        QVERIFY(view->findChild<QToolButton*>(QStringLiteral("remedy")));
+        for (const QToolButton* button : view->findChildren<QToolButton*>())
+            QVERIFY2(button->mapTo(view, QPoint(button->width(), 0)).x() <= view->width(), qPrintable(QStringLiteral("%1 in %2: %3").arg(button->width()).arg(view->width()).arg(button->text())));
+        view->findChild<QToolButton*>(QStringLiteral("remedy"))->click(); // lack of fit: compare with a quadratic
+        QDialog* compare = bench.dialog("compareDialog");
+        QVERIFY(compare);
+        auto* take = compare->findChild<QPushButton*>(QStringLiteral("takeOver"));
+        QTRY_VERIFY(take->isEnabled());
+        QVERIFY(compare->findChild<QLabel*>(QStringLiteral("compareFindings"))->text().contains(QStringLiteral("Only straight line")));
+        take->click();
+        QVERIFY(bench.workbench.record().choices.function == (FunctionChoice{FunctionFamily::Polynomial, 2}));
+        bench.workbench.undoStack().undo();
+        QTRY_VERIFY(!view->findChildren<QToolButton*>(QStringLiteral("dismiss")).isEmpty());
+        view->findChildren<QToolButton*>(QStringLiteral("dismiss")).back()->click();
+        QDialog* dialog = bench.dialog("dismissDialog");
+        QVERIFY(dialog);
+        auto* reason = dialog->findChild<QComboBox*>(QStringLiteral("reason"));
+        QTest::keyClick(reason, Qt::Key_Return);
+        QVERIFY(bench.workbench.record().dismissals.empty());
+        QTest::keyClicks(reason, QStringLiteral("known of this type"));
+        QTest::keyClick(reason, Qt::Key_Return);
+        QCOMPARE(bench.workbench.record().dismissals.size(), std::size_t(1));
+        QCOMPARE(bench.workbench.record().dismissals[0].reason, std::string("known of this type"));
+        QVERIFY(view->findChild<QToolButton*>(QStringLiteral("recall")));
+        view->findChild<QToolButton*>(QStringLiteral("recall"))->click();
+        QVERIFY(bench.workbench.record().dismissals.empty());
+    }
+
+    void anIndicationIsConvertedBesideTheWork() {
+        Bench bench(test::pressureTransmitter());
+        bench.act("bench.convert");
+        QDialog* dialog = bench.dialog("convertDialog");
+        QVERIFY(dialog);
+        QTest::keyClicks(dialog->findChild<QLineEdit*>(QStringLiteral("convertIndication")), QStringLiteral("12,000"));
+        const QString value = dialog->findChild<QLabel*>(QStringLiteral("convertValue"))->text();
+        QVERIFY2(value.startsWith(QStringLiteral("5.000")) && value.contains(QStringLiteral("bar, U = 0.0061")), qPrintable(value));
+    }
+
     void goingOnAsLeftIsGuarded() {
         Record record = planned();
         record.plan.asLeftRuns = 1;
