@@ -21,6 +21,7 @@ struct Command {
 constexpr Command commands[] = {
     {"figures", figuresCommand},
     {"check", checkCommand},
+    {"certificate", certificateCommand},
 };
 
 bool asksFor(const Words& words, const char* option) {

@@ -8,5 +8,6 @@ namespace spanwright {
 /// The commands that need no window. `words` is what follows the command's name; the result is the exit status.
 int figuresCommand(const Words& words, Console console);
 int checkCommand(const Words& words, Console console);
+int certificateCommand(const Words& words, Console console);
 
 } // namespace spanwright

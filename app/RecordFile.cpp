@@ -195,22 +195,41 @@ Result<LoadedRecord> loadTable(const std::string& path, std::string_view bytes, 
     return loaded;
 }
 
-Result<LoadedRecord> loadSession(const std::string& path, std::string_view bytes, const Arguments& arguments) {
+/// The seal that stands at the end of a session file.
+std::string sealIn(std::string_view bytes) {
+    constexpr std::string_view mark = "\"sha256:";
+    constexpr std::size_t length = 7 + 64;
+    const std::size_t at = bytes.rfind(mark);
+    return at == std::string_view::npos ? std::string() : std::string(bytes.substr(at + 1, length));
+}
+
+Result<LoadedSession> sessionFrom(const std::string& path, std::string_view bytes) {
     auto session = readSession(bytes);
     if (!session)
         return session.error().with("file", path);
+    for (const Warning& warning : session->warnings) {
+        if (warning.code == WarningCode::SealBroken)
+            return Error(ErrorCode::SealBroken, warning.facts).with("file", path);
+        if (warning.code == WarningCode::JournalBroken)
+            return Error(ErrorCode::JournalBroken, warning.facts).with("file", path);
+    }
+    if (session->readOnly)
+        return Error(ErrorCode::NewerLayout, {{"version", std::to_string(session->version)}, {"file", path}});
+    return LoadedSession{std::move(session->record), std::move(session->results), sealIn(bytes)};
+}
+
+Result<LoadedRecord> loadSession(const std::string& path, std::string_view bytes, const Arguments& arguments) {
+    auto session = sessionFrom(path, bytes);
+    if (!session)
+        return session.error();
     const auto mark = decimalMark(arguments);
     if (!mark)
         return mark.error();
     const auto choices = withOptions(session->record.choices, arguments, *mark);
     if (!choices)
         return choices.error();
-    LoadedRecord loaded;
-    loaded.record = std::move(session->record);
-    loaded.record.choices = *choices;
-    for (const Warning& warning : session->warnings)
-        loaded.notes.push_back(path + ": " + warningText(warning).toStdString());
-    return loaded;
+    session->record.choices = *choices;
+    return LoadedRecord{std::move(session->record), {}};
 }
 
 Result<void> exclude(Record& record, const std::vector<std::size_t>& rows) {
@@ -245,13 +264,18 @@ bool looksLikeSession(const std::string& path, std::string_view bytes) {
     return path.ends_with(".spanwright") || (first != std::string_view::npos && (bytes[first] == '{' || bytes[first] == '['));
 }
 
+Result<LoadedSession> loadSessionFile(const std::string& path) {
+    const auto file = FileBytes::read(path);
+    return file ? sessionFrom(path, file->bytes()) : file.error();
+}
+
 Result<LoadedRecord> loadRecord(const std::string& path, const Arguments& arguments) {
     const auto excluded = excludedRows(arguments);
     if (!excluded)
         return excluded.error();
     const auto file = FileBytes::read(path);
     if (!file)
-        return file.error().fact("file").empty() ? file.error().with("file", path) : file.error();
+        return file.error();
     auto loaded = looksLikeSession(path, file->bytes()) ? loadSession(path, file->bytes(), arguments)
                                                         : loadTable(path, file->bytes(), arguments, *excluded);
     if (!loaded)

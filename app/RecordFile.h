@@ -3,6 +3,7 @@
 
 #include "app/Arguments.h"
 #include "core/record/Record.h"
+#include "core/session/StoredResults.h"
 
 namespace spanwright {
 
@@ -20,6 +21,17 @@ Result<DecimalMark> decimalMark(const Arguments& arguments);
 
 /// Whether the bytes are meant as a session: JSON, or a name that ends in .spanwright.
 bool looksLikeSession(const std::string& path, std::string_view bytes);
+
+/// A session that may be built upon, and its seal ("sha256:…").
+struct LoadedSession {
+    Record record;
+    StoredResults results;
+    std::string seal;
+};
+
+/// Reads a session whole. Errors: of the readers, with fact file; SealBroken and JournalBroken (facts: entry), where the file is
+/// not what was saved; NewerLayout (facts: version), which only a newer program understands in full.
+Result<LoadedSession> loadSessionFile(const std::string& path);
 
 /// Reads a session or a CSV into a record, with the options of choiceOptions() and --exclude put over it. A cell of a used column
 /// that is no number refuses the file, unless its row is excluded. Errors: of the readers, with fact file; UsageValueBad.
