@@ -45,6 +45,8 @@ int certificateCommand(const Words& words, Console console) {
     const auto loaded = loadSessionFile(file);
     if (!loaded)
         return refuse(console, loaded.error());
+    if (!loaded->broken.empty())
+        return refuseFile(console, file, loaded->broken);
     Progress progress;
     const auto evaluation = evaluate(loaded->record, progress);
     if (!evaluation)

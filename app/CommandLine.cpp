@@ -3,6 +3,7 @@
 
 #include "app/Commands.h"
 #include "app/Help.h"
+#include "app/WindowCommand.h"
 
 #include <QLocale>
 
@@ -22,6 +23,8 @@ constexpr Command commands[] = {
     {"figures", figuresCommand},
     {"check", checkCommand},
     {"certificate", certificateCommand},
+    {"convert", convertCommand},
+    {"self-test", selfTestCommand},
 };
 
 bool asksFor(const Words& words, const char* option) {
@@ -55,7 +58,7 @@ int runProgram(int argc, char** argv) {
     if (const auto status = runCommand(words, {std::cout, std::cerr}))
         return *status;
     QLocale::setDefault(own);
-    return refuse({std::cout, std::cerr}, Error(ErrorCode::UsageUnknownCommand, {{"text", words.empty() ? "" : words.front()}}));
+    return windowCommand(argc, argv, words, {std::cout, std::cerr});
 }
 
 } // namespace spanwright

@@ -9,5 +9,7 @@ namespace spanwright {
 int figuresCommand(const Words& words, Console console);
 int checkCommand(const Words& words, Console console);
 int certificateCommand(const Words& words, Console console);
+int convertCommand(const Words& words, Console console);
+int selfTestCommand(const Words& words, Console console);
 
 } // namespace spanwright

@@ -20,4 +20,10 @@ int refuse(Console console, const Error& error) {
     }
 }
 
+int refuseFile(Console console, const std::string& file, const std::vector<Warning>& wrong) {
+    for (const Warning& warning : wrong)
+        console.err << "spanwright: " << file << ": " << warningText(warning).toStdString() << '\n';
+    return Refused;
+}
+
 } // namespace spanwright

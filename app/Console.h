@@ -1,7 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
-#include "core/base/Error.h"
+#include "core/base/Warning.h"
 
 #include <iosfwd>
 #include <string>
@@ -20,6 +20,9 @@ enum ExitStatus : int { Done = 0, Refused = 1, WrongUsage = 2, CertificateBlocke
 
 /// One line on the error stream, and the status that belongs to the error.
 int refuse(Console console, const Error& error);
+
+/// One line for each thing that is wrong with a file; Refused.
+int refuseFile(Console console, const std::string& file, const std::vector<Warning>& wrong);
 
 using Words = std::vector<std::string>;
 

@@ -41,6 +41,8 @@ int figuresCommand(const Words& words, Console console) {
     const auto loaded = loadRecord(file, *arguments);
     if (!loaded)
         return refuse(console, loaded.error());
+    if (!loaded->broken.empty())
+        return refuseFile(console, file, loaded->broken);
     for (const std::string& note : loaded->notes)
         console.err << "spanwright: " << note << '\n';
 

@@ -2,6 +2,7 @@
 #include "app/PaperApplication.h"
 
 #include <QGuiApplication>
+#include <QLoggingCategory>
 
 namespace spanwright {
 
@@ -14,8 +15,12 @@ char* argumentList[] = {name, option, platform, nullptr};
 } // namespace
 
 PaperApplication::PaperApplication() {
-    if (QCoreApplication::instance() == nullptr)
-        application_ = std::make_unique<QGuiApplication>(argumentCount, argumentList);
+    if (QCoreApplication::instance() != nullptr)
+        return;
+    // Without a desktop Qt complains about folders that are not needed for paper; the error stream is for what the user must know.
+    QLoggingCategory::setFilterRules(QStringLiteral("default.warning=false"));
+    application_ = std::make_unique<QGuiApplication>(argumentCount, argumentList);
+    QLoggingCategory::setFilterRules({});
 }
 
 PaperApplication::~PaperApplication() = default;

@@ -207,15 +207,9 @@ Result<LoadedSession> sessionFrom(const std::string& path, std::string_view byte
     auto session = readSession(bytes);
     if (!session)
         return session.error().with("file", path);
-    for (const Warning& warning : session->warnings) {
-        if (warning.code == WarningCode::SealBroken)
-            return Error(ErrorCode::SealBroken, warning.facts).with("file", path);
-        if (warning.code == WarningCode::JournalBroken)
-            return Error(ErrorCode::JournalBroken, warning.facts).with("file", path);
-    }
     if (session->readOnly)
         return Error(ErrorCode::NewerLayout, {{"version", std::to_string(session->version)}, {"file", path}});
-    return LoadedSession{std::move(session->record), std::move(session->results), sealIn(bytes)};
+    return LoadedSession{std::move(session->record), std::move(session->results), sealIn(bytes), std::move(session->warnings)};
 }
 
 Result<LoadedRecord> loadSession(const std::string& path, std::string_view bytes, const Arguments& arguments) {
@@ -229,7 +223,7 @@ Result<LoadedRecord> loadSession(const std::string& path, std::string_view bytes
     if (!choices)
         return choices.error();
     session->record.choices = *choices;
-    return LoadedRecord{std::move(session->record), {}};
+    return LoadedRecord{std::move(session->record), {}, std::move(session->broken)};
 }
 
 Result<void> exclude(Record& record, const std::vector<std::size_t>& rows) {
@@ -242,6 +236,18 @@ Result<void> exclude(Record& record, const std::vector<std::size_t>& rows) {
 }
 
 } // namespace
+
+Result<LoadedRecord> loadIndications(const std::string& path, const Arguments& arguments) {
+    const auto file = FileBytes::read(path);
+    if (!file)
+        return file.error();
+    // A constant is the function that needs nothing but indications.
+    Arguments alone = arguments;
+    alone.options.emplace_back("--function", "constant");
+    if (!alone.has("--indication"))
+        alone.options.emplace_back("--indication", "1");
+    return loadTable(path, file->bytes(), alone, {});
+}
 
 std::span<const OptionSpec> tableOptions() {
     return known;

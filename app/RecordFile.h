@@ -14,6 +14,7 @@ std::span<const OptionSpec> tableOptions();
 struct LoadedRecord {
     Record record;
     std::vector<std::string> notes;
+    std::vector<Warning> broken; ///< of a session: SealBroken, JournalBroken
 };
 
 /// The decimal mark of --decimal, point when it is not given. Error: UsageValueBad.
@@ -22,19 +23,23 @@ Result<DecimalMark> decimalMark(const Arguments& arguments);
 /// Whether the bytes are meant as a session: JSON, or a name that ends in .spanwright.
 bool looksLikeSession(const std::string& path, std::string_view bytes);
 
-/// A session that may be built upon, and its seal ("sha256:…").
+/// A session as it was read, and its seal ("sha256:…").
 struct LoadedSession {
     Record record;
     StoredResults results;
     std::string seal;
+    std::vector<Warning> broken; ///< SealBroken, JournalBroken: nothing may be built upon the file
 };
 
-/// Reads a session whole. Errors: of the readers, with fact file; SealBroken and JournalBroken (facts: entry), where the file is
-/// not what was saved; NewerLayout (facts: version), which only a newer program understands in full.
+/// Reads a session whole. Errors: of the readers, with fact file; NewerLayout (facts: version), which only a newer program
+/// understands in full.
 Result<LoadedSession> loadSessionFile(const std::string& path);
 
 /// Reads a session or a CSV into a record, with the options of choiceOptions() and --exclude put over it. A cell of a used column
 /// that is no number refuses the file, unless its row is excluded. Errors: of the readers, with fact file; UsageValueBad.
 Result<LoadedRecord> loadRecord(const std::string& path, const Arguments& arguments);
+
+/// Reads a column of indications from a CSV, by the same options; other columns are not looked at.
+Result<LoadedRecord> loadIndications(const std::string& path, const Arguments& arguments);
 
 } // namespace spanwright

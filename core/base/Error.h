@@ -39,8 +39,6 @@ enum class ErrorCode {
     NotASession,
     NewerLayout,
     SessionValueBad,
-    SealBroken,    ///< a session that was changed outside the program; facts: as of the warning
-    JournalBroken, ///< facts: entry
     // typing
     CellEmpty,
     CellNotANumber,

@@ -35,6 +35,9 @@ class TestSessions : public QObject {
     void aSoundSessionIsChecked();
     void aChangedReadingIsFound();
     void aStoredResultThatDiffersIsFound();
+    void figuresAndCertificateRefuseAFileThatWasChanged();
+    void aCertificateIsDrawnUp();
+    void aCertificateWithGapsIsBlockedAndEachIsNamed();
     void whatIsNoSessionIsRefused();
     void everyTruncationIsRefusedOrWarnedOf();
 };
@@ -99,6 +102,48 @@ void TestSessions::aStoredResultThatDiffersIsFound() {
     QVERIFY(ran.err.find("seal") == std::string::npos);
 }
 
+void TestSessions::figuresAndCertificateRefuseAFileThatWasChanged() {
+    Desk desk;
+    QByteArray bytes = sessionBytes(pressureTransmitter(), {});
+    bytes.replace("10.391", "10.319");
+    const std::string file = desk.file("pt.spanwright", bytes);
+    for (const Ran& ran : {runWords({"figures", file}), runWords({"certificate", file, "--to", desk.path("a.pdf")})}) {
+        QCOMPARE(ran.status, 1);
+        QVERIFY2(ran.err.find("pt.spanwright: The seal does not hold") != std::string::npos, ran.err.c_str());
+        QVERIFY(ran.out.empty());
+    }
+    QVERIFY(!QFile::exists(QString::fromStdString(desk.path("a.pdf"))));
+}
+
+void TestSessions::aCertificateIsDrawnUp() {
+    Desk desk;
+    const std::string file = desk.file("pt.spanwright", sessionBytes(pressureTransmitter(), {}));
+    const Ran ran = runWords({"certificate", file, "--to", desk.path("a.pdf")});
+    QVERIFY2(ran.status == 0, ran.err.c_str());
+    QFile pdf(QString::fromStdString(desk.path("a.pdf")));
+    QVERIFY(pdf.open(QIODevice::ReadOnly));
+    QVERIFY(pdf.read(5) == "%PDF-");
+    const Ran nowhere = runWords({"certificate", file, "--to", desk.path("no/such/folder/a.pdf")});
+    QCOMPARE(nowhere.status, 1);
+    QCOMPARE(runWords({"certificate", file}).status, 2);
+}
+
+void TestSessions::aCertificateWithGapsIsBlockedAndEachIsNamed() {
+    Desk desk;
+    Record record = pressureTransmitter();
+    record.job.customer.clear();
+    record.item.serial.clear();
+    const std::string file = desk.file("pt.spanwright", sessionBytes(record, {}));
+    const Ran blocked = runWords({"certificate", file, "--to", desk.path("a.pdf")});
+    QCOMPARE(blocked.status, 3);
+    QVERIFY2(std::count(blocked.err.begin(), blocked.err.end(), '\n') >= 3, blocked.err.c_str());
+    QVERIFY2(QString::fromStdString(blocked.err).contains("customer", Qt::CaseInsensitive), blocked.err.c_str());
+    QVERIFY2(QString::fromStdString(blocked.err).contains("serial", Qt::CaseInsensitive), blocked.err.c_str());
+    QVERIFY(!QFile::exists(QString::fromStdString(desk.path("a.pdf"))));
+    QCOMPARE(runWords({"certificate", file, "--to", desk.path("a.pdf"), "--incomplete"}).status, 0);
+    QVERIFY(QFile::exists(QString::fromStdString(desk.path("a.pdf"))));
+}
+
 void TestSessions::whatIsNoSessionIsRefused() {
     Desk desk;
     for (const QByteArray& bytes : {QByteArray(), QByteArray("{"), QByteArray("[1, 2]"), QByteArray("x,y\n1,2\n"), QByteArray("{\"a\": 1}")}) {
@@ -121,5 +166,5 @@ void TestSessions::everyTruncationIsRefusedOrWarnedOf() {
     }
 }
 
-QTEST_APPLESS_MAIN(TestSessions)
+QTEST_MAIN(TestSessions)
 #include "tst_sessions.moc"

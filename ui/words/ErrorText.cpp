@@ -76,13 +76,6 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
     case ErrorCode::SessionValueBad:
         return tr("the value %1 cannot be read. Correct it in the file, or open the backup.")
             .arg(facts.quoted("key", facts.quoted("text", tr("there"))));
-    case ErrorCode::SealBroken:
-        return tr("the seal does not hold: the file was changed outside the program. Open it in the window to look at it, or take the "
-                  "backup.");
-    case ErrorCode::JournalBroken:
-        return tr("the journal does not hold from entry %1 on: something was changed or taken out. Open it in the window to look at "
-                  "it, or take the backup.")
-            .arg(facts.plain("entry", tr("one")));
     // typing
     case ErrorCode::CellEmpty: return tr("there is nothing in the cell. Type a number.");
     case ErrorCode::CellNotANumber:

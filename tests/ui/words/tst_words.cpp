@@ -139,7 +139,7 @@ void TestWords::figuresOfAFindingCarryTheirUnits() {
     record.item.indication = {"current", "mA"};
     Finding finding;
     finding.figures = {{"f", 19.6}, {"p", 2e-12}, {"value", 0.0142}, {"set_point", 5}};
-    QCOMPARE(findingWords(finding, record).figures, QStringLiteral("F = 19.6, p < 0.001, 0.0142 mA, at 5.00 bar"));
+    QCOMPARE(findingWords(finding, record).figures, QStringLiteral("F = 19.6, p < 0.001, 0.0142 mA, at 5 bar"));
 }
 
 void TestWords::theEquationHasTheDigitsThatItsUncertaintiesSupport() {

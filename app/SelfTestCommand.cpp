@@ -1,0 +1,34 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/Arguments.h"
+#include "app/Commands.h"
+#include "app/PaperApplication.h"
+#include "ui/selftest/SelfTest.h"
+
+#include <QDateTime>
+#include <QSysInfo>
+
+#include <ostream>
+
+namespace spanwright {
+
+int selfTestCommand(const Words& words, Console console) {
+    static constexpr OptionSpec known[] = {{"--to"}};
+    const auto arguments = parseArguments(words, known);
+    if (!arguments)
+        return refuse(console, arguments.error());
+    if (!arguments->files.empty())
+        return refuse(console, Error(ErrorCode::UsageUnknownCommand, {{"text", arguments->files.front()}}));
+    const SelfTestOutcome outcome = runSelfTest();
+    console.out << selfTestText(outcome).toStdString();
+    if (const auto to = arguments->value("--to")) {
+        const PaperApplication paper;
+        const SelfTestOccasion occasion{QDateTime::currentDateTime().toOffsetFromUtc(QDateTime::currentDateTime().offsetFromUtc()).toString(Qt::ISODate),
+                                        QStringLiteral("Spanwright " SPANWRIGHT_VERSION),
+                                        QSysInfo::prettyProductName() + QStringLiteral(", ") + QSysInfo::currentCpuArchitecture()};
+        if (!writeSelfTestPdf(outcome, occasion, QString::fromStdString(*to)))
+            return refuse(console, Error(ErrorCode::FileNotWritable, {{"file", *to}}));
+    }
+    return outcome.cases.empty() || outcome.failed() > 0 ? Refused : Done;
+}
+
+} // namespace spanwright

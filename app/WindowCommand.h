@@ -1,0 +1,12 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include "app/Console.h"
+
+namespace spanwright {
+
+/// Opens the window on what the words name (sessions and tables; --stage, --scheme) and returns when it is closed. Where it
+/// cannot be opened, says why.
+int windowCommand(int& argc, char** argv, const Words& words, Console console);
+
+} // namespace spanwright

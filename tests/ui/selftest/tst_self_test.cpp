@@ -1,0 +1,59 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "tests/support/RunCommand.h"
+#include "ui/selftest/SelfTest.h"
+
+#include <QtTest>
+
+using namespace spanwright;
+using namespace spanwright::test;
+
+class TestSelfTest : public QObject {
+    Q_OBJECT
+
+  private slots:
+    void everyPublishedFigureIsMet();
+    void eachCaseNamesItsSource();
+    void aFigureThatDiffersIsSaid();
+    void theCommandPrintsAndWritesARecord();
+};
+
+void TestSelfTest::everyPublishedFigureIsMet() {
+    const SelfTestOutcome outcome = runSelfTest();
+    QVERIFY(outcome.cases.size() >= 15);
+    QVERIFY(outcome.figures() >= 100);
+    for (const SelfTestCase& one : outcome.cases)
+        for (const SelfTestFigure& figure : one.figures)
+            QVERIFY2(figure.holds, qPrintable(one.name + ' ' + figure.name + ' ' + figure.printed + ' ' + QString::number(figure.got, 'g', 17)));
+    QCOMPARE(outcome.failed(), std::size_t{0});
+}
+
+void TestSelfTest::eachCaseNamesItsSource() {
+    for (const SelfTestCase& one : runSelfTest().cases) {
+        QVERIFY(one.source.size() > 10);
+        QVERIFY(!one.figures.empty());
+        QVERIFY(one.readings >= 3);
+    }
+}
+
+void TestSelfTest::aFigureThatDiffersIsSaid() {
+    SelfTestOutcome outcome = runSelfTest();
+    outcome.cases[0].figures[0].holds = false;
+    QCOMPARE(outcome.failed(), std::size_t{1});
+    QVERIFY(selfTestText(outcome).contains(QStringLiteral("DIFFERS")));
+}
+
+void TestSelfTest::theCommandPrintsAndWritesARecord() {
+    Desk desk;
+    const Ran ran = runWords({"self-test", "--to", desk.path("record.pdf")});
+    QVERIFY2(ran.status == 0, ran.out.c_str());
+    QVERIFY(ran.out.find("-0.262323073774029") != std::string::npos);
+    QVERIFY(ran.out.find("All ") != std::string::npos);
+    QFile pdf(QString::fromStdString(desk.path("record.pdf")));
+    QVERIFY(pdf.open(QIODevice::ReadOnly));
+    QVERIFY(pdf.read(5) == "%PDF-");
+    QCOMPARE(runWords({"self-test", "--to", desk.path("no/folder/record.pdf")}).status, 1);
+    QCOMPARE(runWords({"self-test", "extra"}).status, 2);
+}
+
+QTEST_MAIN(TestSelfTest)
+#include "tst_self_test.moc"

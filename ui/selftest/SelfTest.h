@@ -1,0 +1,50 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include <QString>
+
+#include <vector>
+
+namespace spanwright {
+
+/// One published figure beside what this program computes for it.
+struct SelfTestFigure {
+    QString name;    ///< as in figures: "coefficients.0.value"
+    QString printed; ///< as the source prints it
+    double got = 0;  ///< NaN when it was not computed
+    double digits = 0; ///< −log10 of the relative difference, at most 15
+    bool holds = false; ///< rounds to what is printed: within half a unit of its last digit
+};
+
+struct SelfTestCase {
+    QString name;
+    QString source;
+    std::size_t readings = 0;
+    std::vector<SelfTestFigure> figures;
+};
+
+struct SelfTestOutcome {
+    std::vector<SelfTestCase> cases;
+
+    [[nodiscard]] std::size_t figures() const;
+    [[nodiscard]] std::size_t failed() const;
+};
+
+/// Recomputes the published cases built into the program (resources/self-test.json) by the one road that every record takes
+/// (ISO/IEC 17025:2017, 7.11.2).
+SelfTestOutcome runSelfTest();
+
+/// The outcome as lines of plain text.
+QString selfTestText(const SelfTestOutcome& outcome);
+
+/// When, where and with which program the outcome came about.
+struct SelfTestOccasion {
+    QString date;    ///< ISO 8601, with time
+    QString program; ///< name and version
+    QString machine; ///< operating system and processor
+};
+
+/// A dated validation record on A4 as PDF. Whether it could be written. Needs a QGuiApplication.
+bool writeSelfTestPdf(const SelfTestOutcome& outcome, const SelfTestOccasion& occasion, const QString& path);
+
+} // namespace spanwright
