@@ -2,7 +2,8 @@
 #include "app/PaperApplication.h"
 
 #include <QGuiApplication>
-#include <QLoggingCategory>
+
+#include <cstdio>
 
 namespace spanwright {
 
@@ -12,17 +13,24 @@ int argumentCount = 3;
 char name[] = "spanwright", option[] = "-platform", platform[] = "offscreen";
 char* argumentList[] = {name, option, platform, nullptr};
 
+/// Without a desktop Qt complains about folders that paper does not need; the error stream is for what the user must know.
+void passOn(QtMsgType type, const QMessageLogContext&, const QString& text) {
+    if (type == QtCriticalMsg || type == QtFatalMsg)
+        std::fprintf(stderr, "spanwright: %s\n", qPrintable(text));
+}
+
 } // namespace
 
 PaperApplication::PaperApplication() {
     if (QCoreApplication::instance() != nullptr)
         return;
-    // Without a desktop Qt complains about folders that are not needed for paper; the error stream is for what the user must know.
-    QLoggingCategory::setFilterRules(QStringLiteral("default.warning=false"));
+    previous_ = qInstallMessageHandler(passOn);
     application_ = std::make_unique<QGuiApplication>(argumentCount, argumentList);
-    QLoggingCategory::setFilterRules({});
 }
 
-PaperApplication::~PaperApplication() = default;
+PaperApplication::~PaperApplication() {
+    if (application_)
+        qInstallMessageHandler(previous_);
+}
 
 } // namespace spanwright

@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include <QtGlobal>
+
 #include <memory>
 
 class QGuiApplication;
@@ -18,6 +20,7 @@ class PaperApplication {
 
   private:
     std::unique_ptr<QGuiApplication> application_;
+    QtMessageHandler previous_ = nullptr;
 };
 
 } // namespace spanwright

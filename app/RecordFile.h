@@ -2,6 +2,7 @@
 #pragma once
 
 #include "app/Arguments.h"
+#include "core/base/Warning.h"
 #include "core/record/Record.h"
 #include "core/session/StoredResults.h"
 

@@ -13,6 +13,11 @@
 #include <cmath>
 #include <limits>
 
+/// The resources of a static library are taken in only where somebody asks for them; the macro must stand in no namespace.
+static void takeInResources() {
+    Q_INIT_RESOURCE(resources);
+}
+
 namespace spanwright {
 
 namespace {
@@ -159,6 +164,7 @@ std::size_t SelfTestOutcome::failed() const {
 }
 
 SelfTestOutcome runSelfTest() {
+    takeInResources();
     QFile file(QStringLiteral(":/self-test.json"));
     SelfTestOutcome outcome;
     if (!file.open(QIODevice::ReadOnly))
