@@ -14,7 +14,7 @@ namespace spanwright {
 
 namespace {
 
-constexpr OptionSpec known[] = {{"--to"}, {"--incomplete", OptionKind::Flag}};
+constexpr OptionSpec known[] = {{"--to"}, {"--xml"}, {"--incomplete", OptionKind::Flag}};
 
 /// Every gap on a line of its own: each is something to enter.
 int refuseGaps(Console console, const std::string& file, const Error& error) {
@@ -53,14 +53,21 @@ int certificateCommand(const Words& words, Console console) {
         return refuse(console, evaluation.error().with("file", file));
 
     const PaperApplication paper;
-    const CertificateContext context{"Spanwright " SPANWRIGHT_VERSION, QDate::currentDate().toString(Qt::ISODate).toStdString(),
-                                     loaded->seal};
+    const CertificateContext context =
+        certificateContext(loaded->record, *evaluation, QDate::currentDate().toString(Qt::ISODate));
     const WithGaps withGaps = arguments->has("--incomplete") ? WithGaps::MarkIncomplete : WithGaps::Refuse;
     const auto written = writeCertificatePdf(loaded->record, *evaluation, QString::fromStdString(*to), context, withGaps);
     if (!written)
         return written.error().code == ErrorCode::CertificateIncomplete ? refuseGaps(console, file, written.error())
                                                                         : refuse(console, written.error());
     console.out << *to << '\n';
+    if (const auto xml = arguments->value("--xml")) {
+        const auto machineReadable =
+            writeCertificateXml(loaded->record, *evaluation, QString::fromStdString(*xml), QString::fromStdString(*to), context);
+        if (!machineReadable)
+            return refuse(console, machineReadable.error());
+        console.out << *xml << '\n';
+    }
     return Done;
 }
 

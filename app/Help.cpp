@@ -9,7 +9,7 @@ std::string_view helpText() {
   spanwright [--stage job|bench|budget|certificate] [--scheme light|dark] [FILE…]
                                         the window; FILE is a session or a CSV
   spanwright figures FILE [options]     what follows from the readings of a CSV or a session
-  spanwright certificate SESSION --to OUT.pdf [--incomplete]
+  spanwright certificate SESSION --to OUT.pdf [--xml OUT.xml] [--incomplete]
                                         the certificate draft as PDF
   spanwright convert CSV --with SESSION --to OUT.csv
                                         new readings to values, each with its expanded uncertainty

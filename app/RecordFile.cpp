@@ -195,21 +195,13 @@ Result<LoadedRecord> loadTable(const std::string& path, std::string_view bytes, 
     return loaded;
 }
 
-/// The seal that stands at the end of a session file.
-std::string sealIn(std::string_view bytes) {
-    constexpr std::string_view mark = "\"sha256:";
-    constexpr std::size_t length = 7 + 64;
-    const std::size_t at = bytes.rfind(mark);
-    return at == std::string_view::npos ? std::string() : std::string(bytes.substr(at + 1, length));
-}
-
 Result<LoadedSession> sessionFrom(const std::string& path, std::string_view bytes) {
     auto session = readSession(bytes);
     if (!session)
         return session.error().with("file", path);
     if (session->readOnly)
         return Error(ErrorCode::NewerLayout, {{"version", std::to_string(session->version)}, {"file", path}});
-    return LoadedSession{std::move(session->record), std::move(session->results), sealIn(bytes), std::move(session->warnings)};
+    return LoadedSession{std::move(session->record), std::move(session->results), std::move(session->warnings)};
 }
 
 Result<LoadedRecord> loadSession(const std::string& path, std::string_view bytes, const Arguments& arguments) {

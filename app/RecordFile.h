@@ -24,11 +24,10 @@ Result<DecimalMark> decimalMark(const Arguments& arguments);
 /// Whether the bytes are meant as a session: JSON, or a name that ends in .spanwright.
 bool looksLikeSession(const std::string& path, std::string_view bytes);
 
-/// A session as it was read, and its seal ("sha256:…").
+/// A session as it was read.
 struct LoadedSession {
     Record record;
     StoredResults results;
-    std::string seal;
     std::vector<Warning> broken; ///< SealBroken, JournalBroken: nothing may be built upon the file
 };
 

@@ -123,6 +123,10 @@ void TestSessions::aCertificateIsDrawnUp() {
     QFile pdf(QString::fromStdString(desk.path("a.pdf")));
     QVERIFY(pdf.open(QIODevice::ReadOnly));
     QVERIFY(pdf.read(5) == "%PDF-");
+    QCOMPARE(runWords({"certificate", file, "--to", desk.path("a.pdf"), "--xml", desk.path("a.xml")}).status, 0);
+    QFile xml(QString::fromStdString(desk.path("a.xml")));
+    QVERIFY(xml.open(QIODevice::ReadOnly));
+    QVERIFY(xml.readAll().contains("NV-20318"));
     const Ran nowhere = runWords({"certificate", file, "--to", desk.path("no/such/folder/a.pdf")});
     QCOMPARE(nowhere.status, 1);
     QCOMPARE(runWords({"certificate", file}).status, 2);

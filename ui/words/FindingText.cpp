@@ -81,7 +81,11 @@ constexpr FigurePattern patterns[] = {
 };
 
 QString FindingText::figure(const Figure& figure, const Record& record) {
-    const QString value = significantText(figure.value, 3);
+    // What was counted or typed has no digits of its own to lose.
+    static const QStringList whole{"run", "degrees_of_freedom", "df", "set_point", "asked_for"};
+    const QString value = whole.contains(QString::fromStdString(figure.name))
+                              ? QLocale().toString(figure.value, 'g', 6).replace(QLatin1Char('-'), QChar(0x2212))
+                              : significantText(figure.value, 3);
     const auto withUnit = [&](const Quantity& quantity) {
         return quantity.unit.empty() ? value : value + QLatin1Char(' ') + QString::fromStdString(quantity.unit);
     };
