@@ -3,6 +3,8 @@
 
 #include "core/fit/Sample.h"
 
+#include <cmath>
+#include <type_traits>
 #include <vector>
 
 namespace spanwright {
