@@ -191,7 +191,7 @@ void NextReading::refresh() {
     reference_->setVisible(referenceTyped());
     const bool moved = before.setPoint != next_.setPoint || before.run != next_.run || before.direction != next_.direction || before.phase != next_.phase;
     if (moved && !reference_->isModified())
-        reference_->clear();
+        reference_->setText({});
     if (next_.reference && referenceTyped() && !reference_->isModified())
         reference_->setText(typedText(*next_.reference));
     for (QWidget* widget : std::initializer_list<QWidget*>{reference_, indication_})
@@ -296,7 +296,7 @@ bool NextReading::eventFilter(QObject* object, QEvent* event) {
             return true;
         }
         if (key == Qt::Key_Escape) {
-            static_cast<NumberEdit*>(object)->clear();
+            static_cast<NumberEdit*>(object)->setText({});
             judgeTyping();
             return true;
         }
@@ -376,8 +376,8 @@ void NextReading::record(const Decimal& indication) {
     }
     reading.indication = indication;
     settle();
-    reference_->clear();
-    indication_->clear();
+    reference_->setText({});
+    indication_->setText({});
     tell({}, false);
     if (reading.id == 0)
         workbench_.perform(std::make_unique<AddReadings>(std::vector<Reading>{reading}));

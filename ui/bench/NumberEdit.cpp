@@ -5,6 +5,7 @@
 #include "ui/look/Look.h"
 
 #include <QEvent>
+#include <QKeyEvent>
 #include <QPainter>
 #include <QStyle>
 
@@ -37,6 +38,18 @@ void NumberEdit::setRefused(bool refused) {
     style()->polish(this);
     makeRoom();
     update();
+}
+
+bool NumberEdit::event(QEvent* event) {
+    // Undo and redo belong to the record unless something is being typed.
+    if (event->type() == QEvent::ShortcutOverride && !isModified()) {
+        const auto* key = static_cast<QKeyEvent*>(event);
+        if (key->matches(QKeySequence::Undo) || key->matches(QKeySequence::Redo)) {
+            event->ignore();
+            return true;
+        }
+    }
+    return QLineEdit::event(event);
 }
 
 void NumberEdit::changeEvent(QEvent* event) {

@@ -21,6 +21,7 @@ class NumberEdit : public QLineEdit {
     [[nodiscard]] bool refused() const { return property("refused").toBool(); }
 
   protected:
+    bool event(QEvent* event) override;
     void paintEvent(QPaintEvent* event) override;
     void changeEvent(QEvent* event) override;
 
