@@ -46,7 +46,7 @@ SaveAnswer ScreenDialogs::askSave(QWidget* parent, const QString& name) {
 RecoveryAnswer ScreenDialogs::askRecovery(QWidget* parent, const QString& text) {
     QMessageBox* box = messageBox(parent, tr("The program was stopped before everything was saved"), text);
     QPushButton* takeUp = box->addButton(tr("&Take it up"), QMessageBox::AcceptRole);
-    QPushButton* discard = box->addButton(tr("&Throw it away"), QMessageBox::DestructiveRole);
+    QPushButton* discard = box->addButton(tr("Thr&ow it away"), QMessageBox::DestructiveRole);
     QPushButton* later = box->addButton(tr("&Ask again later"), QMessageBox::RejectRole);
     box->setDefaultButton(takeUp);
     box->setEscapeButton(later);

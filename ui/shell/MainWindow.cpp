@@ -22,6 +22,7 @@
 #include <QMenu>
 #include <QMenuBar>
 #include <QMimeData>
+#include <QScreen>
 #include <QStackedWidget>
 #include <QVBoxLayout>
 
@@ -80,7 +81,7 @@ MainWindow::MainWindow(const WindowSurroundings& surroundings, QWidget* parent)
       pages_(new QStackedWidget), status_(new StatusLine) {
     setObjectName(QStringLiteral("mainWindow"));
     setAcceptDrops(true);
-    resize(1440, 900);
+    resize(QSize(1440, 900).boundedTo(screen()->availableSize() - QSize(0, 40)));
     bench_.setPerson(around_.settings.person());
 
     auto* sheet = new QWidget;
