@@ -155,7 +155,8 @@ const CellIssue* standingIssue(const CellIssues& issues, const std::vector<std::
     for (const CellIssue& issue : issues.first)
         if (!std::binary_search(excluded.begin(), excluded.end(), issue.row))
             return &issue;
-    return nullptr;
+    // Beyond the issues that are kept, nobody knows whether their rows are excluded.
+    return issues.count > issues.first.size() ? &issues.first.back() : nullptr;
 }
 
 Result<LoadedRecord> loadTable(const std::string& path, std::string_view bytes, const Arguments& arguments,
