@@ -53,9 +53,9 @@ BenchPage::BenchPage(Workbench& workbench, QWidget* parent) : QWidget(parent), w
     all->setContentsMargins(space::card, space::card, space::card, space::card);
     QSplitter* columns = parted(Qt::Horizontal, {buildLeft(), buildMiddle(), buildRight()});
     columns->setObjectName(QStringLiteral("benchColumns"));
-    columns->setStretchFactor(0, 0);
-    columns->setStretchFactor(1, 1);
-    columns->setStretchFactor(2, 0);
+    columns->setStretchFactor(0, 1); // a wide window also shows the set point and the state of every reading
+    columns->setStretchFactor(1, 4);
+    columns->setStretchFactor(2, 1);
     columns->setSizes({384, 572, 288});
     all->addWidget(columns);
     new PlotPair(*line_, *residual_, this);
