@@ -2,6 +2,7 @@
 #include "app/Arguments.h"
 #include "app/Commands.h"
 #include "app/RecordFile.h"
+#include "app/TextApplication.h"
 #include "core/evaluate/KeyFigures.h"
 #include "core/evaluate/evaluate.h"
 
@@ -10,6 +11,7 @@
 namespace spanwright {
 
 int checkCommand(const Words& words, Console console) {
+    const TextApplication application;
     const auto arguments = parseArguments(words, {});
     if (!arguments)
         return refuse(console, arguments.error());

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/Commands.h"
 #include "app/RecordFile.h"
+#include "app/TextApplication.h"
 #include "core/evaluate/evaluate.h"
 #include "core/exchange/TableWriter.h"
 #include "core/interval/ReadBack.h"
@@ -76,6 +77,7 @@ Result<void> writeWhole(const std::string& path, const std::string& bytes) {
 } // namespace
 
 int convertCommand(const Words& words, Console console) {
+    const TextApplication application;
     const auto arguments = parseArguments(words, ownOptions);
     if (!arguments)
         return refuse(console, arguments.error());

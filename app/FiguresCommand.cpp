@@ -3,6 +3,7 @@
 #include "app/Commands.h"
 #include "app/FiguresText.h"
 #include "app/RecordFile.h"
+#include "app/TextApplication.h"
 #include "core/evaluate/evaluate.h"
 
 #include <ostream>
@@ -34,6 +35,7 @@ const PhaseEvaluation* shownPhase(const Evaluation& evaluation, Phase chosen) {
 } // namespace
 
 int figuresCommand(const Words& words, Console console) {
+    const TextApplication application;
     const auto arguments = argumentsOf(words);
     if (!arguments)
         return refuse(console, arguments.error());

@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/PaperApplication.h"
 
+#include "ui/words/EnglishPlurals.h"
+
 #include <QGuiApplication>
 
 #include <cstdio>
@@ -26,6 +28,7 @@ PaperApplication::PaperApplication() {
         return;
     previous_ = qInstallMessageHandler(passOn);
     application_ = std::make_unique<QGuiApplication>(argumentCount, argumentList);
+    speakEnglish(*application_);
 }
 
 PaperApplication::~PaperApplication() {

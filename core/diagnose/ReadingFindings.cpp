@@ -94,7 +94,7 @@ void influential(const FindingsInput& input, std::vector<Finding>& found) {
 }
 
 /// Readings outside ŷ ± t √(σ²(1 + h)). A share of 1 − coverage is to be expected there, so few are no finding unless
-/// one lies half as far again.
+/// one lies half as far again, and farther than the largest of so many would.
 void outsideBand(const FindingsInput& input, std::vector<Finding>& found) {
     const Fit& fit = *input.fit;
     const Residuals& residuals = *input.residuals;
@@ -120,7 +120,9 @@ void outsideBand(const FindingsInput& input, std::vector<Finding>& found) {
     }
     const double expected = static_cast<double>(residuals.e.size()) * (1 - fit.coverage);
     const bool many = static_cast<double>(count) > expected + 2 * std::sqrt(expected);
-    if (count == 0 || (!many && worst < 1.5))
+    // The largest of n sound readings lies beyond this once in twenty sets (Bonferroni).
+    const double far = studentQuantileAbove(0.025 / static_cast<double>(residuals.e.size()), fit.degreesOfFreedom) / fit.coverageFactor;
+    if (count == 0 || (!many && worst < std::max(1.5, far)))
         return;
     finding.severity = many ? Severity::Attention : Severity::Note;
     finding.figures = {{"count", static_cast<double>(count)}, {"expected", expected}};
