@@ -121,6 +121,9 @@ MainWindow::~MainWindow() {
     bench_.undoStack().disconnect();
     bench_.disconnect();
     document_.disconnect();
+    // The pages look at the workbench to their last moment, so they go before it does.
+    hide();
+    delete takeCentralWidget();
 }
 
 void MainWindow::makePages() {
