@@ -10,8 +10,9 @@ here=$OLDPWD
 
 # Whether an X server answers at $DISPLAY.
 display_reachable() {
-  local host=${DISPLAY%:*} number=${DISPLAY##*:}
-  [ -n "${DISPLAY:-}" ] || return 1
+  local display=${DISPLAY:-}
+  local host=${display%:*} number=${display##*:}
+  [ -n "$display" ] || return 1
   case $host in
     '' | unix) [ -S "/tmp/.X11-unix/X${number%%.*}" ] ;;
     *) (exec 3<>"/dev/tcp/$host/$((6000 + ${number%%.*}))") 2>/dev/null ;;
