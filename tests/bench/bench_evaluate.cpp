@@ -1,0 +1,83 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+// Speed of evaluate(): of a straight line on 10^6 readings as a ratio to summing the two columns in the same run, once with eleven
+// set points and once with references that all differ; and of a usual calibration.
+#include "core/evaluate/evaluate.h"
+#include "tests/support/SampleRecord.h"
+
+#include <algorithm>
+#include <cstdio>
+#include <cstdlib>
+#include <ctime>
+#include <functional>
+#include <random>
+
+using namespace spanwright;
+
+namespace {
+
+/// Median of the processor time of this process, which other programs do not disturb.
+double seconds(const std::function<void()>& work, int repeats) {
+    std::vector<double> times;
+    for (int i = 0; i < repeats; ++i) {
+        const std::clock_t start = std::clock();
+        work();
+        times.push_back(static_cast<double>(std::clock() - start) / CLOCKS_PER_SEC);
+    }
+    std::sort(times.begin(), times.end());
+    return times[times.size() / 2];
+}
+
+enum class References { ElevenSetPoints, AllDiffer };
+
+Record manyReadings(std::size_t n, References references) {
+    std::mt19937_64 random(1);
+    std::normal_distribution<double> noise(0, 20);
+    ReadingColumns::Block block;
+    block.n = n;
+    for (std::size_t i = 0; i < n; ++i) {
+        const auto x = references == References::AllDiffer ? static_cast<std::int64_t>(random() % 10'000'000)
+                                                           : static_cast<std::int64_t>(i % 11) * 1'000'000;
+        block.reference.push_back(Decimal{x, 6, {}});
+        block.indication.push_back(Decimal{40'000 + x * 16 / 1000 + static_cast<std::int64_t>(noise(random)), 4, {}});
+    }
+    Record record;
+    record.readings.edit().appendBlock(std::move(block), 1);
+    return record;
+}
+
+void evaluateOnce(const Record& record) {
+    Progress progress;
+    const auto evaluation = evaluate(record, progress);
+    if (!evaluation || !evaluation->phase(Phase::AsFound) || !evaluation->phase(Phase::AsFound)->fit)
+        std::abort();
+}
+
+volatile std::int64_t sink = 0;
+
+void compare(const char* what, References references) {
+    const Record record = manyReadings(1'000'000, references);
+    const double sum = seconds(
+        [&] {
+            std::int64_t total = 0;
+            for (const std::int64_t value : record.readings->reference().grid())
+                total += value;
+            for (const std::int64_t value : record.readings->indication().grid())
+                total += value;
+            sink = total;
+        },
+        51);
+    const double whole = seconds([&] { evaluateOnce(record); }, 5);
+    std::printf("evaluate() of a line on 10^6 readings, %s: %.1f ms, %.0f times summing the two columns (%.2f ms)\n", what,
+                whole * 1e3, whole / sum, sum * 1e3);
+}
+
+} // namespace
+
+int main() {
+    const Record usual = test::pressureTransmitter();
+    std::printf("evaluate() of the sample, 66 readings as found and 10 as left: %.2f ms\n",
+                seconds([&] { evaluateOnce(usual); }, 51) * 1e3);
+    compare("eleven set points", References::ElevenSetPoints);
+    compare("references that all differ", References::AllDiffer);
+    return 0;
+}
