@@ -2,6 +2,7 @@
 // Speed of evaluate(): of a straight line on 10^6 readings as a ratio to summing the two columns in the same run, once with eleven
 // set points and once with references that all differ; and of a usual calibration.
 #include "core/evaluate/evaluate.h"
+#include "tests/bench/ProcessorTime.h"
 #include "tests/support/SampleRecord.h"
 
 #include <algorithm>
@@ -12,20 +13,9 @@
 #include <random>
 
 using namespace spanwright;
+using test::processorSeconds;
 
 namespace {
-
-/// Median of the processor time of this process, which other programs do not disturb.
-double seconds(const std::function<void()>& work, int repeats) {
-    std::vector<double> times;
-    for (int i = 0; i < repeats; ++i) {
-        const std::clock_t start = std::clock();
-        work();
-        times.push_back(static_cast<double>(std::clock() - start) / CLOCKS_PER_SEC);
-    }
-    std::sort(times.begin(), times.end());
-    return times[times.size() / 2];
-}
 
 enum class References { ElevenSetPoints, AllDiffer };
 
@@ -56,7 +46,7 @@ volatile std::int64_t sink = 0;
 
 void compare(const char* what, References references) {
     const Record record = manyReadings(1'000'000, references);
-    const double sum = seconds(
+    const double sum = processorSeconds(
         [&] {
             std::int64_t total = 0;
             for (const std::int64_t value : record.readings->reference().grid())
@@ -66,7 +56,7 @@ void compare(const char* what, References references) {
             sink = total;
         },
         51);
-    const double whole = seconds([&] { evaluateOnce(record); }, 5);
+    const double whole = processorSeconds([&] { evaluateOnce(record); }, 5);
     std::printf("evaluate() of a line on 10^6 readings, %s: %.1f ms, %.0f times summing the two columns (%.2f ms)\n", what,
                 whole * 1e3, whole / sum, sum * 1e3);
 }
@@ -76,7 +66,7 @@ void compare(const char* what, References references) {
 int main() {
     const Record usual = test::pressureTransmitter();
     std::printf("evaluate() of the sample, 66 readings as found and 10 as left: %.2f ms\n",
-                seconds([&] { evaluateOnce(usual); }, 51) * 1e3);
+                processorSeconds([&] { evaluateOnce(usual); }, 51) * 1e3);
     compare("eleven set points", References::ElevenSetPoints);
     compare("references that all differ", References::AllDiffer);
     return 0;

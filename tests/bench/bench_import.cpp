@@ -2,6 +2,7 @@
 // Speed of the import of a CSV: time as a ratio against mmap and std::from_chars over the same bytes, in the same run.
 #include "core/exchange/FileBytes.h"
 #include "core/exchange/ReadingImport.h"
+#include "tests/bench/ProcessorTime.h"
 
 #include <QTemporaryDir>
 
@@ -18,20 +19,9 @@
 #include <unistd.h>
 
 using namespace spanwright;
+using test::processorSeconds;
 
 namespace {
-
-/// Median of the processor time of this process, which other programs do not disturb.
-double seconds(const std::function<void()>& work, int repeats) {
-    std::vector<double> times;
-    for (int i = 0; i < repeats; ++i) {
-        const std::clock_t start = std::clock();
-        work();
-        times.push_back(static_cast<double>(std::clock() - start) / CLOCKS_PER_SEC);
-    }
-    std::sort(times.begin(), times.end());
-    return times[times.size() / 2];
-}
 
 /// A logger's file: ISO time with milliseconds, then numbers with 6, 7 and 4 decimals.
 std::string loggerFile(const std::string& folder, std::size_t rows) {
@@ -105,10 +95,10 @@ int main() {
     all.time = 0;
 
     std::size_t read = 0;
-    const double reference = seconds([&] { read += readMapped(path, rows).columns[2].size(); }, 5);
-    const double three = seconds([&] { read += import(path, numbers); }, 5);
-    const double four = seconds([&] { read += import(path, all); }, 5);
-    const double guess = seconds([&] { read += guessRules(FileBytes::read(path)->bytes())->columns.size(); }, 5);
+    const double reference = processorSeconds([&] { read += readMapped(path, rows).columns[2].size(); }, 5);
+    const double three = processorSeconds([&] { read += import(path, numbers); }, 5);
+    const double four = processorSeconds([&] { read += import(path, all); }, 5);
+    const double guess = processorSeconds([&] { read += guessRules(FileBytes::read(path)->bytes())->columns.size(); }, 5);
     std::printf("import of %zu rows (%zu read): mmap + from_chars %.3f s\n", rows, read, reference);
     std::printf("  three columns of numbers, guess included: %.3f s, ratio %.2f (aim 3)\n", three, three / reference);
     std::printf("  and the times:                            %.3f s, ratio %.2f\n", four, four / reference);

@@ -3,6 +3,7 @@
 // run; and of keeping one changed reading of it in the recovery file.
 #include "core/session/Recovery.h"
 #include "core/session/SessionFile.h"
+#include "tests/bench/ProcessorTime.h"
 
 #include <QJsonArray>
 #include <QJsonDocument>
@@ -16,20 +17,9 @@
 #include <functional>
 
 using namespace spanwright;
+using test::processorSeconds;
 
 namespace {
-
-/// Median of the processor time of this process, which other programs do not disturb.
-double seconds(const std::function<void()>& work, int repeats) {
-    std::vector<double> times;
-    for (int i = 0; i < repeats; ++i) {
-        const std::clock_t start = std::clock();
-        work();
-        times.push_back(static_cast<double>(std::clock() - start) / CLOCKS_PER_SEC);
-    }
-    std::sort(times.begin(), times.end());
-    return times[times.size() / 2];
-}
 
 Record manyReadings(std::size_t n) {
     std::uint64_t state = 1;
@@ -87,11 +77,11 @@ int main() {
     const QByteArray same(bytes.data(), static_cast<qsizetype>(bytes.size()));
     std::size_t sum = 0;
 
-    const double parse = seconds([&] { sum += QJsonDocument::fromJson(same).isObject() ? 1 : 0; }, 1);
-    const double otherRead = seconds([&] { sum += openByDocument(same); }, 1);
-    const double otherWrite = seconds([&] { sum += saveByDocument(record); }, 1);
-    const double read = seconds([&] { sum += readSession(bytes)->record.readings->size(); }, 3);
-    const double write = seconds([&] { sum += writeSession(record, {}).size(); }, 3);
+    const double parse = processorSeconds([&] { sum += QJsonDocument::fromJson(same).isObject() ? 1 : 0; }, 1);
+    const double otherRead = processorSeconds([&] { sum += openByDocument(same); }, 1);
+    const double otherWrite = processorSeconds([&] { sum += saveByDocument(record); }, 1);
+    const double read = processorSeconds([&] { sum += readSession(bytes)->record.readings->size(); }, 3);
+    const double write = processorSeconds([&] { sum += writeSession(record, {}).size(); }, 3);
     std::printf("session of %zu readings, %.1f MB (%zu)\n", n, static_cast<double>(bytes.size()) * 1e-6, sum);
     std::printf("  open: QJsonDocument to columns %.2f s (parsing alone %.2f s); here, seal verified, %.2f s: %.1f times faster (aim 4; "
                 "than parsing alone %.1f)\n",
@@ -101,14 +91,14 @@ int main() {
 
     const QTemporaryDir folder;
     const std::string path = folder.filePath("many.spanwright").toStdString();
-    const double save = seconds([&] { sum += SessionFile::saveAs(path, record, {}).ok() ? 1 : 0; }, 3);
-    const double open = seconds([&] { sum += SessionFile::open(path)->session.record.readings->size(); }, 3);
+    const double save = processorSeconds([&] { sum += SessionFile::saveAs(path, record, {}).ok() ? 1 : 0; }, 3);
+    const double open = processorSeconds([&] { sum += SessionFile::open(path)->session.record.readings->size(); }, 3);
     std::printf("  save to disk, flushed: %.2f s; open from disk: %.2f s\n", save, open);
 
     Recovery recovery(path, folder.filePath("data").toStdString());
-    const double first = seconds([&] { sum += recovery.keep(record).ok() ? 1 : 0; }, 1);
+    const double first = processorSeconds([&] { sum += recovery.keep(record).ok() ? 1 : 0; }, 1);
     std::size_t row = 0;
-    const double next = seconds(
+    const double next = processorSeconds(
         [&] {
             row += 1000;
             record.readings.edit().setNumber(row, NumberColumn::Indication, Decimal{static_cast<std::int64_t>(row), 7, {}});
