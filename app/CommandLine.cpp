@@ -4,6 +4,7 @@
 #include "app/Commands.h"
 #include "app/Help.h"
 #include "app/WindowCommand.h"
+#include "core/base/LargeBlocks.h"
 
 #include <QLocale>
 
@@ -51,6 +52,7 @@ std::optional<int> runCommand(const Words& words, Console console) {
 }
 
 int runProgram(int argc, char** argv) {
+    keepLargeBlocks();
     const Words words(argv + 1, argv + argc);
     // What commands print is read by programs and pasted into reports: the same in every locale.
     const QLocale own;

@@ -239,8 +239,9 @@ void writeRows(JsonWriter& json, const Record& record, const RowFigures& rows) {
     for (std::size_t i = 0; i < rows.size(); ++i) {
         json.beginObject().field("row", record.readings->indexOf(rows.ids[i]) + 1).field("reference", rows.reference[i]);
         json.field("indication", rows.indication[i]).field("fitted", rows.fitted[i]).field("residual", rows.residual[i]);
-        json.field("standardised", rows.standardised[i]).field("studentised", rows.studentised[i]);
-        json.field("leverage", rows.leverage[i]).field("cook", rows.cook[i]).field("excluded", rows.excluded[i] != 0).endObject();
+        const InfluenceFigures influence = rows.influenceOf(i);
+        json.field("standardised", influence.standardised).field("studentised", influence.studentised);
+        json.field("leverage", rows.leverage[i]).field("cook", influence.cook).field("excluded", rows.excluded[i] != 0).endObject();
     }
     json.endArray();
 }

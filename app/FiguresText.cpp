@@ -133,10 +133,13 @@ QString findingsText(const Record& record, const PhaseEvaluation& e) {
 QString rowsText(const Record& record, const RowFigures& rows) {
     TextTable table({tr("Row"), tr("reference"), tr("indication"), tr("fitted"), tr("residual"), tr("standardised"), tr("studentised"),
                      tr("leverage"), tr("Cook"), {}});
-    for (std::size_t i = 0; i < rows.size(); ++i)
+    for (std::size_t i = 0; i < rows.size(); ++i) {
+        const InfluenceFigures influence = rows.influenceOf(i);
         table.add({QString::number(record.readings->indexOf(rows.ids[i]) + 1), figure(rows.reference[i], 10), figure(rows.indication[i], 10),
-                   figure(rows.fitted[i], 10), figure(rows.residual[i], 4), figure(rows.standardised[i], 4), figure(rows.studentised[i], 4),
-                   figure(rows.leverage[i], 4), figure(rows.cook[i], 4), rows.excluded[i] != 0 ? tr("excluded") : QString()});
+                   figure(rows.fitted[i], 10), figure(rows.residual[i], 4), figure(influence.standardised, 4),
+                   figure(influence.studentised, 4), figure(rows.leverage[i], 4), figure(influence.cook, 4),
+                   rows.excluded[i] != 0 ? tr("excluded") : QString()});
+    }
     return table.text() + QLatin1Char('\n');
 }
 

@@ -2,8 +2,8 @@
 #pragma once
 
 #include "core/base/Warning.h"
+#include "core/budget/PointMeans.h"
 #include "core/record/BudgetLine.h"
-#include "core/record/ReadingColumns.h"
 
 #include <optional>
 #include <string>
@@ -43,7 +43,8 @@ struct SetPointBudget {
 
 struct Budget {
     double coverage = 0.9545;
-    std::vector<SetPointBudget> points;
+    std::vector<PointMeans> means;      ///< of the readings, and
+    std::vector<SetPointBudget> points; ///< what stands for each of them
     std::optional<SetPointBudget> readBack; ///< of a reference value taken from the function by one new reading, worst in range
     std::vector<Warning> warnings;
 };

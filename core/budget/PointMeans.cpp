@@ -2,6 +2,7 @@
 #include "core/budget/PointMeans.h"
 
 #include <algorithm>
+#include <array>
 #include <cmath>
 #include <set>
 
@@ -39,13 +40,51 @@ struct Cells {
     Cell unknown, rising, falling;
 };
 
-std::vector<Cells> cellsOf(const Sample& sample) {
-    std::vector<Cells> cells(sample.groupValue.size());
+Cell& cellOf(std::vector<Cells>& cells, const Sample& sample, std::size_t i) {
+    Cells& at = cells[static_cast<std::size_t>(sample.group[i])];
+    const Direction direction = sample.direction.empty() ? Direction::Unknown : sample.direction[i];
+    return direction == Direction::Rising ? at.rising : direction == Direction::Falling ? at.falling : at.unknown;
+}
+
+/// Very many readings of no run, held as plain numbers: sums of the distances from the first of each set point, which are
+/// short numbers, so that plain sums lose nothing that shows.
+std::vector<Cells> cellsOfMany(const Sample& sample) {
+    struct Distances {
+        double fromReference = 0, fromIndication = 0, reference = 0, indication = 0, n = 0;
+    };
+    std::vector<std::array<Distances, 3>> sums(sample.groupValue.size());
     for (std::size_t i = 0; i < sample.size(); ++i) {
-        Cells& at = cells[static_cast<std::size_t>(sample.group[i])];
-        const Direction direction = sample.direction.empty() ? Direction::Unknown : sample.direction[i];
-        (direction == Direction::Rising ? at.rising : direction == Direction::Falling ? at.falling : at.unknown).add(sample, i);
+        Distances& at = sums[static_cast<std::size_t>(sample.group[i])]
+                            [sample.direction.empty() ? 0 : static_cast<std::size_t>(sample.direction[i])];
+        if (!(at.n > 0)) {
+            at.fromReference = sample.reference.high[i];
+            at.fromIndication = sample.indication.high[i];
+        }
+        at.n += 1;
+        at.reference += sample.reference.high[i] - at.fromReference;
+        at.indication += sample.indication.high[i] - at.fromIndication;
     }
+    std::vector<Cells> cells(sums.size());
+    for (std::size_t g = 0; g < sums.size(); ++g) {
+        const auto fill = [&](Cell& cell, Direction direction) {
+            const Distances& at = sums[g][static_cast<std::size_t>(direction)];
+            cell.n = static_cast<std::size_t>(at.n);
+            cell.reference = DoubleDouble(at.fromReference) * at.n + at.reference;
+            cell.indication = DoubleDouble(at.fromIndication) * at.n + at.indication;
+        };
+        fill(cells[g].unknown, Direction::Unknown);
+        fill(cells[g].rising, Direction::Rising);
+        fill(cells[g].falling, Direction::Falling);
+    }
+    return cells;
+}
+
+std::vector<Cells> cellsOf(const Sample& sample) {
+    if (sample.reference.low.empty() && sample.indication.low.empty() && sample.run.empty())
+        return cellsOfMany(sample);
+    std::vector<Cells> cells(sample.groupValue.size());
+    for (std::size_t i = 0; i < sample.size(); ++i)
+        cellOf(cells, sample, i).add(sample, i);
     return cells;
 }
 

@@ -272,7 +272,8 @@ Budget makeBudget(const Record& record, const Sample& sample, const Fit* fit, co
         budget.warnings.push_back({WarningCode::FigureUndefined, {{"figure", "repeatability"}, {"reason", "no-replicates"}}});
     if (sample.groupValue.size() > MostStatedPoints)
         budget.warnings.push_back({WarningCode::FigureUndefined, {{"figure", "results"}, {"reason", "too-many-set-points"}}});
-    for (const PointMeans& point : pointMeans(record, sample, fit))
+    budget.means = pointMeans(record, sample, fit);
+    for (const PointMeans& point : budget.means)
         budget.points.push_back(budgetAt(record, point, fit, spreads, budget.coverage));
     if (fit != nullptr && fit->curve != nullptr)
         budget.readBack = worstReadBack(record, *fit, budget.coverage);

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/diagnose/Autocorrelation.h"
 
+#include "core/base/LaneSums.h"
 #include "core/diagnose/Orthonormal.h"
 #include "core/diagnose/ResidualColumn.h"
 
@@ -206,14 +207,12 @@ SerialStatistics serialStatistics(std::span<const double> u) {
     const double n = static_cast<double>(u.size());
     if (u.size() < 2)
         return {};
-    double sum = u[0], squares = u[0] * u[0], products = 0, steps = 0;
-    for (std::size_t i = 1; i < u.size(); ++i) {
-        const double step = u[i] - u[i - 1];
-        sum += u[i];
-        squares += u[i] * u[i];
-        products += u[i] * u[i - 1];
-        steps += step * step;
-    }
+    const auto [rest, restSquares, products, steps] =
+        laneSums<4>(1, u.size(), [&](std::size_t i) -> std::array<double, 4> {
+            const double step = u[i] - u[i - 1];
+            return {u[i], u[i] * u[i], u[i] * u[i - 1], step * step};
+        });
+    const double sum = u[0] + rest, squares = u[0] * u[0] + restSquares;
     const double mean = sum / n, centred = squares - n * mean * mean;
     if (!(centred > 0))
         return {};

@@ -161,7 +161,7 @@ Diagnostics diagnose(const Sample& sample, const Residuals& residuals, const Fit
     if (u.size() <= 5000)
         result.shapiroWilk = shapiroWilk({u.begin(), u.end()});
     if (fit.function.family != FunctionFamily::Constant)
-        result.linearity = linearityTest(sample, residuals.weight);
+        result.linearity = linearityTest(sample, residuals, fit);
     regressions(sample, residuals, fit, u, result);
     take(variances.get(), result);
     return result;

@@ -1,11 +1,12 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/diagnose/EqualVariances.h"
 
-#include "core/diagnose/GroupMedians.h"
+#include "core/base/LaneSums.h"
 #include "core/diagnose/Orthonormal.h"
 #include "core/fit/Quantiles.h"
 
 #include <algorithm>
+#include <array>
 #include <cmath>
 #include <cstdint>
 #include <iterator>
@@ -19,30 +20,18 @@ struct MeanAndSquares {
     double n = 0, mean = 0, squares = 0;
 };
 
-/// Means and squares of |u − centre of its group| or, without centres, of u, for every group.
-std::vector<MeanAndSquares> meansAndSquares(const GroupedValues& values, std::span<const double> centre) {
-    std::vector<MeanAndSquares> parts(values.groups);
-    const auto value = [&](std::size_t i, double middle) {
-        return centre.empty() ? values.u[i] : std::abs(values.u[i] - middle);
-    };
-    eachStretch(values, [&](std::size_t g, std::size_t first, std::size_t last) {
-        const double middle = centre.empty() ? 0 : centre[g];
-        double sum = 0;
-        for (std::size_t i = first; i < last; ++i)
-            sum += value(i, middle);
-        parts[g].n += static_cast<double>(last - first);
-        parts[g].mean += sum;
+/// Mean and squares of transform(value) in one pass, from the distances to the first, which lies as near to the mean as the
+/// values spread.
+template <class Transform>
+MeanAndSquares meanAndSquares(std::span<const double> values, Transform&& transform) {
+    if (values.empty())
+        return {};
+    const double origin = transform(values.front()), n = static_cast<double>(values.size());
+    const auto [sum, squares] = laneSums<2>(0, values.size(), [&](std::size_t i) -> std::array<double, 2> {
+        const double d = transform(values[i]) - origin;
+        return {d, d * d};
     });
-    for (MeanAndSquares& part : parts)
-        part.mean /= part.n;
-    eachStretch(values, [&](std::size_t g, std::size_t first, std::size_t last) {
-        const double middle = centre.empty() ? 0 : centre[g], mean = parts[g].mean;
-        double sum = 0;
-        for (std::size_t i = first; i < last; ++i)
-            sum += (value(i, middle) - mean) * (value(i, middle) - mean);
-        parts[g].squares += sum;
-    });
-    return parts;
+    return {n, origin + sum / n, squares - sum * (sum / n)};
 }
 
 /// Groups with two values or more.
@@ -102,7 +91,11 @@ EqualVariances equalVariances(const GroupedValues& values) {
     EqualVariances result;
     if (values.groups < 2 || values.groups >= values.u.size() || values.groups > mostGroups)
         return result;
-    const std::vector<MeanAndSquares> parts = replicated(meansAndSquares(values, {}));
+    const GroupedColumn column(values);
+    std::vector<MeanAndSquares> all;
+    for (std::size_t g = 0; g < column.groups(); ++g)
+        all.push_back(meanAndSquares(column[g], [](double u) { return u; }));
+    const std::vector<MeanAndSquares> parts = replicated(all);
     if (parts.size() < 2)
         return result;
     double sum = 0, largest = 0, n = 0;
@@ -120,7 +113,9 @@ EqualVariances equalVariances(const GroupedValues& values) {
         result.cochranCritical = cochranCriticalValue(k, n / k, 0.05);
         result.cochranCriticalOutlier = cochranCriticalValue(k, n / k, 0.01);
     }
-    result.levene = leveneOf(replicated(meansAndSquares(values, groupMedians(values))));
+    for (std::size_t g = 0; g < column.groups(); ++g)
+        all[g] = meanAndSquares(column[g], [middle = medianOf(column[g])](double u) { return std::abs(u - middle); });
+    result.levene = leveneOf(replicated(all));
     return result;
 }
 
@@ -159,26 +154,18 @@ std::optional<TestResult> breuschPagan(std::span<const double> u, const std::vec
 }
 
 std::optional<TestResult> breuschPagan(std::span<const double> u, std::span<const double> column) {
-    const std::size_t n = u.size();
-    const double size = static_cast<double>(n);
-    double meanX = 0, meanV = 0;
-    for (std::size_t i = 0; i < n; ++i) {
-        meanX += column[i];
-        meanV += u[i] * u[i];
-    }
-    meanX /= size;
-    meanV /= size;
-    double xx = 0, vv = 0, xv = 0;
-    for (std::size_t i = 0; i < n; ++i) {
-        const double x = column[i] - meanX, v = u[i] * u[i] - meanV;
-        xx += x * x;
-        vv += v * v;
-        xv += x * v;
-    }
-    if (!(xx > 0) || !(vv > 0))
+    if (u.empty())
+        return std::nullopt;
+    const double n = static_cast<double>(u.size()), origin = column.front();
+    const auto [x, v, xx, vv, xv] = laneSums<5>(0, u.size(), [&](std::size_t i) -> std::array<double, 5> {
+        const double distance = column[i] - origin, square = u[i] * u[i];
+        return {distance, square, distance * distance, square * square, distance * square};
+    });
+    const double squaresX = xx - x * (x / n), squaresV = vv - v * (v / n), products = xv - x * (v / n);
+    if (!(squaresX > 0) || !(squaresV > 0))
         return std::nullopt;
     TestResult result;
-    result.statistic = size * (xv / xx) * (xv / vv);
+    result.statistic = n * (products / squaresX) * (products / squaresV);
     result.df = 1;
     result.p = chiSquaredAbove(result.statistic, 1);
     return result;

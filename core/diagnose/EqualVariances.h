@@ -2,7 +2,7 @@
 #pragma once
 
 #include "core/diagnose/Diagnostics.h"
-#include "core/diagnose/GroupMedians.h"
+#include "core/diagnose/GroupedColumn.h"
 
 #include <span>
 #include <vector>
@@ -32,7 +32,7 @@ struct EqualVariances {
 [[nodiscard]] std::optional<TestResult> breuschPagan(std::span<const double> u,
                                                      const std::vector<std::vector<double>>& columns);
 
-/// The same for one column, in two passes and without memory of its own.
+/// The same for one column, in one pass and without memory of its own.
 [[nodiscard]] std::optional<TestResult> breuschPagan(std::span<const double> u, std::span<const double> column);
 
 } // namespace spanwright

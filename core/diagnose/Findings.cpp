@@ -81,16 +81,14 @@ std::vector<double> repeatabilityDeviations(const FindingsInput& input) {
         cell.sum += weight * left[i];
         ++cell.n;
     }
-    // What one mean takes from a cell of few makes its deviations too small by √(1 − 1/n).
-    std::vector<double> widen;
     for (Cell& cell : cells) {
         cell.sum /= cell.weight;
-        widen.push_back(cell.n > 1 ? 1 / std::sqrt(1 - 1 / static_cast<double>(cell.n)) : 0);
+        // What one mean takes from a cell of few makes its deviations too small by √(1 − 1/n).
+        cell.weight = cell.n > 1 ? 1 / std::sqrt(1 - 1 / static_cast<double>(cell.n)) : 0;
     }
     for (std::size_t i = 0; i < n; ++i) {
         const Cell& cell = cellOf(i);
-        left[i] = (left[i] - cell.sum) * widen[static_cast<std::size_t>(&cell - cells.data())] *
-                  (w.empty() ? 1 : std::sqrt(w[i]));
+        left[i] = (left[i] - cell.sum) * cell.weight * (w.empty() ? 1 : std::sqrt(w[i]));
     }
     return left;
 }

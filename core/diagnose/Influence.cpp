@@ -6,34 +6,33 @@
 
 namespace spanwright {
 
-Influence influence(const Residuals& residuals, int terms) {
-    const std::size_t n = residuals.e.size();
-    constexpr double none = std::numeric_limits<double>::quiet_NaN();
-    Influence result{std::vector<double>(n, none), std::vector<double>(n, none), std::vector<double>(n, none)};
-    const double freedom = static_cast<double>(n) - terms;
-    if (freedom <= 0 || residuals.leverage.size() != n)
-        return result;
+namespace {
+
+/// Below this 1 − h is made of rounding: the function passes through the reading whatever it is.
+constexpr double leastRest = 1e-13;
+
+} // namespace
+
+Influence::Influence(const Residuals& residuals, int terms)
+    : freedom_(static_cast<double>(residuals.e.size()) - terms), terms_(terms) {
+    if (freedom_ <= 0 || residuals.leverage.size() != residuals.e.size())
+        return;
     const double* e = residuals.e.high.data();
     const double* w = residuals.weight.empty() ? nullptr : residuals.weight.high.data();
     double sum = 0;
-    for (std::size_t i = 0; i < n; ++i)
+    for (std::size_t i = 0; i < residuals.e.size(); ++i)
         sum += w ? w[i] * e[i] * e[i] : e[i] * e[i];
-    const double variance = sum / freedom;
-    if (!(variance > 0))
-        return result;
-    for (std::size_t i = 0; i < n; ++i) {
-        const double h = residuals.leverage[i];
-        const double rest = 1 - h;
-        if (rest < 1e-13)
-            continue;
-        const double scale = w ? w[i] / (variance * rest) : 1 / (variance * rest);
-        const double r = e[i] * std::sqrt(scale);
-        result.standardised[i] = r;
-        if (freedom > 1 && freedom > r * r)
-            result.studentised[i] = r * std::sqrt((freedom - 1) / (freedom - r * r));
-        result.cook[i] = r * r * h / (terms * rest);
-    }
-    return result;
+    variance_ = sum / freedom_;
+}
+
+InfluenceFigures Influence::of(double e, double h, double w) const {
+    constexpr double none = std::numeric_limits<double>::quiet_NaN();
+    const double rest = 1 - h;
+    if (!(variance_ > 0) || !(rest >= leastRest))
+        return {none, none, none};
+    const double r = e * std::sqrt(w / (variance_ * rest));
+    const bool others = freedom_ > 1 && freedom_ > r * r;
+    return {r, others ? r * std::sqrt((freedom_ - 1) / (freedom_ - r * r)) : none, r * r * h / (terms_ * rest)};
 }
 
 } // namespace spanwright

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/diagnose/Linearity.h"
 
+#include "core/base/LaneSums.h"
 #include "core/diagnose/ResidualColumn.h"
 #include "core/fit/Quantiles.h"
 
@@ -13,6 +14,19 @@ T at(const PairColumn& column, std::size_t i) {
         return column.high[i];
     else
         return column[i];
+}
+
+/// F from what the quadratic takes and what it leaves; empty where it leaves nothing.
+template <class T>
+std::optional<TestResult> result(const T& gain, const T& rest, std::size_t n) {
+    if (!(rounded(rest) > 1e-12 * rounded(gain)) || !(rounded(rest) > 0))
+        return std::nullopt;
+    TestResult result;
+    const int freedom = static_cast<int>(n) - 3;
+    result.df = freedom;
+    result.statistic = rounded(T(gain / rest)) * freedom;
+    result.p = fAbove(result.statistic, 1, freedom);
+    return result;
 }
 
 /// Sums over orthogonal polynomials 1, φ₁ = x − x̄, φ₂ = φ₁² − b φ₁ − c under the weights (Forsythe, J. SIAM 5 (1957)
@@ -51,24 +65,40 @@ std::optional<TestResult> test(const Sample& sample, const PairColumn& weight) {
     if (!(rounded(squares) > 1e-20 * rounded(T(second * second / sumW))))
         return std::nullopt;
     const T gain = product * product / squares;
-    const T rest = line - gain;
-    if (!(rounded(rest) > 1e-12 * rounded(gain)) || !(rounded(rest) > 0))
+    return result(gain, T(line - gain), n);
+}
+
+/// Of very many readings through which the line was fitted: what the quadratic takes from its residuals, in one pass.
+std::optional<TestResult> testOfLine(const Sample& sample, const Residuals& residuals, const Fit& fit) {
+    const std::vector<double>& x = sample.reference.high;
+    const std::vector<double>& e = residuals.e.high;
+    const double middle = (fit.low + fit.high) / 2, scale = 2 / (fit.high - fit.low), n = static_cast<double>(x.size());
+    const auto [t1, t2, t3, t4, e0, e1, e2] = laneSums<7>(0, x.size(), [&](std::size_t i) -> std::array<double, 7> {
+        const double t = (x[i] - middle) * scale, square = t * t;
+        return {t, square, t * square, square * square, e[i], t * e[i], square * e[i]};
+    });
+    // About the means: of t², what t does not explain; e has neither a mean nor a slope but for rounding.
+    const double second = t2 - t1 * (t1 / n), third = t3 - t1 * (t2 / n), fourth = t4 - t2 * (t2 / n);
+    if (!(second > 0))
         return std::nullopt;
-    TestResult result;
-    const int freedom = static_cast<int>(n) - 3;
-    result.df = freedom;
-    result.statistic = rounded(T(gain / rest)) * freedom;
-    result.p = fAbove(result.statistic, 1, freedom);
-    return result;
+    const double squares = fourth - third * (third / second);
+    const double product = e2 - t2 / n * e0 - third / second * (e1 - t1 / n * e0);
+    if (!(squares > 1e-12 * fourth))
+        return std::nullopt;
+    const double gain = product * (product / squares);
+    return result(gain, fit.residualSs - gain, x.size());
 }
 
 } // namespace
 
-std::optional<TestResult> linearityTest(const Sample& sample, const PairColumn& weight) {
+std::optional<TestResult> linearityTest(const Sample& sample, const Residuals& residuals, const Fit& fit) {
     if (sample.size() < 4 || sample.reference.size() != sample.size())
         return std::nullopt;
     const bool doubles = sample.reference.low.empty() && sample.indication.low.empty();
-    return doubles ? test<double>(sample, weight) : test<DoubleDouble>(sample, weight);
+    if (doubles && residuals.weight.empty() && fit.function.family == FunctionFamily::Line &&
+        fit.direction == FitDirection::Indication && fit.method == Method::LeastSquares)
+        return testOfLine(sample, residuals, fit);
+    return doubles ? test<double>(sample, residuals.weight) : test<DoubleDouble>(sample, residuals.weight);
 }
 
 } // namespace spanwright

@@ -1,43 +1,123 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/diagnose/Outliers.h"
 
+#include "core/base/LaneSums.h"
 #include "core/diagnose/ResidualColumn.h"
 #include "core/fit/Quantiles.h"
 
 #include <algorithm>
+#include <array>
 #include <cmath>
+#include <type_traits>
+#include <utility>
 
 namespace spanwright {
 namespace {
 
 /// The `most` smallest and the `most` largest values by index, in rising order: no other can be found.
-struct Ends {
+template <class T>
+class Ends {
+  public:
+    Ends(std::span<const T> u, std::size_t most) : u_(u), most_(most) {}
+
+    /// Whether a value belongs among those held.
+    [[nodiscard]] bool wants(const T& value) const {
+        return low.size() < most_ || value < lowLimit_ || value > highLimit_;
+    }
+    void take(std::size_t i) {
+        if (low.size() < most_ || u_[i] < lowLimit_) {
+            keep(low, i, [this](std::size_t a, std::size_t b) { return u_[a] < u_[b] || (u_[a] == u_[b] && a < b); });
+            lowLimit_ = u_[low.back()];
+        }
+        if (high.size() < most_ || u_[i] > highLimit_) {
+            keep(high, i, [this](std::size_t a, std::size_t b) { return u_[a] > u_[b] || (u_[a] == u_[b] && a < b); });
+            highLimit_ = u_[high.back()];
+        }
+    }
+
     std::vector<std::size_t> low, high;
+
+  private:
+    void keep(std::vector<std::size_t>& kept, std::size_t i, auto before) const {
+        if (kept.size() == most_)
+            kept.pop_back();
+        kept.insert(std::upper_bound(kept.begin(), kept.end(), i, before), i);
+    }
+
+    std::span<const T> u_;
+    std::size_t most_;
+    T lowLimit_ = T(0.0), highLimit_ = T(0.0);
+};
+
+/// Mean, squares about it, and the ends.
+template <class T>
+struct Spread {
+    T mean = T(0.0), squares = T(0.0);
+    Ends<T> ends;
 };
 
 template <class T>
-Ends endsOf(std::span<const T> u, std::size_t most) {
-    Ends ends;
-    const auto less = [&](std::size_t a, std::size_t b) { return u[a] < u[b] || (u[a] == u[b] && a < b); };
-    const auto more = [&](std::size_t a, std::size_t b) { return u[a] > u[b] || (u[a] == u[b] && a < b); };
-    const auto keep = [&](std::vector<std::size_t>& kept, std::size_t i, auto before) {
-        if (kept.size() == most)
-            kept.pop_back();
-        kept.insert(std::upper_bound(kept.begin(), kept.end(), i, before), i);
-    };
-    T lowLimit(0.0), highLimit(0.0);
+Spread<T> spreadOf(std::span<const T> u, std::size_t most) {
+    Spread<T> spread{T(0.0), T(0.0), Ends<T>(u, most)};
+    for (const T& value : u)
+        spread.mean += value;
+    spread.mean = spread.mean / static_cast<double>(u.size());
     for (std::size_t i = 0; i < u.size(); ++i) {
-        if (ends.low.size() < most || u[i] < lowLimit) {
-            keep(ends.low, i, less);
-            lowLimit = u[ends.low.back()];
-        }
-        if (ends.high.size() < most || u[i] > highLimit) {
-            keep(ends.high, i, more);
-            highLimit = u[ends.high.back()];
+        const T d = u[i] - spread.mean;
+        spread.squares += d * d;
+        if (spread.ends.wants(u[i]))
+            spread.ends.take(i);
+    }
+    return spread;
+}
+
+/// Smallest and largest of a stretch.
+std::pair<double, double> boundsOf(std::span<const double> u) {
+    std::array<double, 4> low{u[0], u[0], u[0], u[0]}, high = low;
+    std::size_t i = 0;
+    for (; i + low.size() <= u.size(); i += low.size()) {
+#pragma GCC unroll 4
+        for (std::size_t lane = 0; lane < low.size(); ++lane) {
+            low[lane] = std::min(low[lane], u[i + lane]);
+            high[lane] = std::max(high[lane], u[i + lane]);
         }
     }
-    return ends;
+    for (; i < u.size(); ++i) {
+        low[0] = std::min(low[0], u[i]);
+        high[0] = std::max(high[0], u[i]);
+    }
+    return {*std::min_element(low.begin(), low.end()), *std::max_element(high.begin(), high.end())};
 }
+
+/// In one pass for very many values: in blocks, of which few hold an end, and with the distances from the first value, so
+/// that a common level costs no digits.
+Spread<double> spreadOfMany(std::span<const double> u, std::size_t most) {
+    constexpr std::size_t Block = 512;
+    Spread<double> spread{0, 0, Ends<double>(u, most)};
+    const double origin = u[0], n = static_cast<double>(u.size());
+    double sum = 0;
+    for (std::size_t first = 0; first < u.size(); first += Block) {
+        const std::size_t last = std::min(first + Block, u.size());
+        const auto [part, squares] = laneSums<2>(first, last, [&](std::size_t i) -> std::array<double, 2> {
+            const double d = u[i] - origin;
+            return {d, d * d};
+        });
+        sum += part;
+        spread.squares += squares;
+        const auto [low, high] = boundsOf(u.subspan(first, last - first));
+        if (!spread.ends.wants(low) && !spread.ends.wants(high))
+            continue;
+        for (std::size_t i = first; i < last; ++i)
+            if (spread.ends.wants(u[i]))
+                spread.ends.take(i);
+    }
+    spread.mean = origin + sum / n;
+    spread.squares -= sum * (sum / n);
+    return spread;
+}
+
+/// From here on the values are gone through once, in plain sums.
+constexpr std::size_t ManyValues = 100'000;
 
 template <class T>
 std::vector<ExtremeTrial> trialsOf(std::span<const T> u, int most, double level) {
@@ -46,17 +126,14 @@ std::vector<ExtremeTrial> trialsOf(std::span<const T> u, int most, double level)
     if (n < 3 || most < 1)
         return trials;
     const auto wanted = std::min(static_cast<std::size_t>(most), n - 2);
-    T sum(0.0);
-    for (const T& value : u)
-        sum += value;
-    T mean = sum / static_cast<double>(n);
-    T squares(0.0);
-    for (const T& value : u) {
-        const T d = value - mean;
-        squares += d * d;
-    }
+    Spread<T> spread{T(0.0), T(0.0), Ends<T>(u, 0)};
+    if constexpr (std::is_same_v<T, double>)
+        spread = n < ManyValues ? spreadOf(u, wanted) : spreadOfMany(u, wanted);
+    else
+        spread = spreadOf(u, wanted);
+    const Ends<T>& ends = spread.ends;
+    T mean = spread.mean, squares = spread.squares;
     const T all = squares;
-    const Ends ends = endsOf(u, wanted);
     std::size_t low = 0, high = 0;
     for (std::size_t i = 0; i < wanted; ++i) {
         const double left = static_cast<double>(n - i);

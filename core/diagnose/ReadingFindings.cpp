@@ -81,11 +81,11 @@ void influential(const FindingsInput& input, std::vector<Finding>& found) {
     for (std::size_t i = 0; i < residuals.e.size() && finding.rows.size() < mostRowsNamed; ++i) {
         const double e = residuals.e.high[i], h = residuals.leverage[i];
         const double w = residuals.weight.empty() ? 1 : residuals.weight.high[i];
-        const double cook = w * e * e * h / (variance * (1 - h) * (1 - h));
-        if (!(cook > limit) || 1 - h < 1e-13)
+        const double above = w * e * e * h, below = variance * (1 - h) * (1 - h);
+        if (!(above > limit * below) || 1 - h < 1e-13)
             continue;
         finding.rows.push_back(idOf(input, i));
-        most = std::max(most, cook);
+        most = std::max(most, above / below);
     }
     if (finding.rows.empty())
         return;
@@ -105,15 +105,15 @@ void outsideBand(const FindingsInput& input, std::vector<Finding>& found) {
     Finding finding;
     finding.code = FindingCode::OutsideBand;
     finding.remedy = Remedy::SeeReadings;
+    const double edge = fit.coverageFactor * fit.coverageFactor * scale * scale;
     double worst = 0;
     std::size_t count = 0;
     for (std::size_t i = 0; i < residuals.e.size(); ++i) {
-        const double root = residuals.weight.empty() ? 1 : std::sqrt(residuals.weight.high[i]);
-        const double ratio =
-            std::abs(residuals.e.high[i]) * root / (fit.coverageFactor * scale * std::sqrt(1 + residuals.leverage[i]));
-        if (!(ratio > 1))
+        const double e = residuals.e.high[i], w = residuals.weight.empty() ? 1 : residuals.weight.high[i];
+        const double square = w * e * e, limit = edge * (1 + residuals.leverage[i]);
+        if (!(square > limit))
             continue;
-        worst = std::max(worst, ratio);
+        worst = std::max(worst, std::sqrt(square / limit));
         ++count;
         if (finding.rows.size() < mostRowsNamed)
             finding.rows.push_back(idOf(input, i));

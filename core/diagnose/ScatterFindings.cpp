@@ -107,8 +107,7 @@ void autocorrelated(const FindingsInput& input, const std::vector<double>& devia
         return;
     double r = 0, p = 1;
     if (!deviations.empty()) {
-        const auto lag = lagOneAutocorrelation(std::span<const double>(deviations));
-        r = lag.value_or(0);
+        r = serialStatistics(deviations).lagOne.value_or(0);
         p = 0.5 * std::erfc(r * std::sqrt(n / 2));
     } else if (input.diagnostics->durbinWatsonP && input.diagnostics->lag1Autocorrelation) {
         r = *input.diagnostics->lag1Autocorrelation;

@@ -4,6 +4,7 @@
 #include "core/budget/Budget.h"
 #include "core/diagnose/Diagnostics.h"
 #include "core/diagnose/Finding.h"
+#include "core/diagnose/Influence.h"
 #include "core/fit/Fit.h"
 #include "core/interval/Bands.h"
 #include "core/interval/ReadBack.h"
@@ -23,15 +24,20 @@ namespace spanwright {
 /// there too: their residual is the distance from the function fitted without them. NaN where a value does not exist.
 struct RowFigures {
     std::vector<ReadingId> ids;
-    std::vector<double> setPoint, reference, indication; ///< reference corrected where the standard's table is applied
-    std::vector<double> fitted, residual, standardised, studentised, leverage, cook;
+    std::vector<double> reference, indication; ///< reference corrected where the standard's table is applied
+    std::vector<double> fitted, residual, leverage;
+    std::vector<double> weight; ///< of the fit; empty: all 1
     std::vector<std::uint8_t> excluded;
     std::vector<std::int32_t> runs;
     std::vector<Direction> directions;
+    Influence influence;
 
     [[nodiscard]] std::size_t size() const { return ids.size(); }
     /// Row of an id; size() when it is not there. O(log n).
     [[nodiscard]] std::size_t indexOf(ReadingId id) const;
+    [[nodiscard]] InfluenceFigures influenceOf(std::size_t row) const {
+        return influence.of(residual[row], leverage[row], weight.empty() ? 1 : weight[row]);
+    }
 };
 
 /// What excluding did: the same fit over all readings.

@@ -1,8 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/evaluate/RowTable.h"
 
-#include "core/diagnose/Influence.h"
-
+#include <algorithm>
 #include <limits>
 
 namespace spanwright {
@@ -11,52 +10,81 @@ namespace {
 
 constexpr double missing = std::numeric_limits<double>::quiet_NaN();
 
-/// Rows of the phase as they were read: one entry a reading, complete or not.
-std::vector<std::size_t> fillAsRead(RowFigures& table, const Record& record, Phase phase) {
-    const ReadingColumns& readings = *record.readings;
+/// Rows of the phase in the order taken, complete or not.
+std::vector<std::size_t> rowsOf(const ReadingColumns& readings, Phase phase) {
     std::vector<std::size_t> rows;
     for (std::size_t row = 0; row < readings.size(); ++row)
         if (readings.phases()[row] == phase)
             rows.push_back(row);
+    return rows;
+}
+
+/// Whether every reading of the record counts, so that the columns of the sample are those of the table.
+bool everyReadingCounts(const RowSources& sources) {
+    return !sources.all && sources.used.size() == sources.record.readings->size() &&
+           sources.record.readings->reference().missing() == 0;
+}
+
+RowFigures takenOver(RowSources sources) {
+    const ReadingColumns& readings = *sources.record.readings;
+    RowFigures table;
+    table.ids = readings.ids();
+    table.runs = readings.runs();
+    table.directions = readings.directions();
+    table.excluded.assign(readings.size(), 0);
+    table.reference = std::move(sources.used.reference.high);
+    table.indication = std::move(sources.used.indication.high);
+    if (sources.fit != nullptr) {
+        table.fitted = std::move(sources.residuals->fitted);
+        table.residual = std::move(sources.residuals->e.high);
+        table.leverage = std::move(sources.residuals->leverage);
+        table.weight = std::move(sources.residuals->weight.high);
+    } else {
+        for (std::vector<double>* column : {&table.fitted, &table.residual, &table.leverage})
+            column->assign(readings.size(), missing);
+    }
+    return table;
+}
+
+/// Rows as they were read: one entry a reading, complete or not.
+RowFigures asRead(const Record& record, const std::vector<std::size_t>& rows) {
+    const ReadingColumns& readings = *record.readings;
+    RowFigures table;
     for (const std::size_t row : rows) {
         table.ids.push_back(readings.ids()[row]);
-        table.setPoint.push_back(readings.setPoint().toDouble(row));
         table.reference.push_back(readings.reference().toDouble(row));
         table.indication.push_back(readings.indication().toDouble(row));
         table.runs.push_back(readings.runs()[row]);
         table.directions.push_back(readings.directions()[row]);
     }
-    const std::size_t n = rows.size();
-    table.excluded.assign(n, 0);
-    for (std::vector<double>* column :
-         {&table.fitted, &table.residual, &table.standardised, &table.studentised, &table.leverage, &table.cook})
-        column->assign(n, missing);
+    table.excluded.assign(rows.size(), 0);
+    for (std::vector<double>* column : {&table.fitted, &table.residual, &table.leverage})
+        column->assign(rows.size(), missing);
     auto next = record.exclusions->all().begin();
     const auto end = record.exclusions->all().end();
-    for (std::size_t i = 0; i < n; ++i) {
+    for (std::size_t i = 0; i < rows.size(); ++i) {
         while (next != end && next->id < table.ids[i])
             ++next;
         table.excluded[i] = next != end && next->id == table.ids[i] ? 1 : 0;
     }
-    return rows;
+    return table;
 }
 
-} // namespace
-
-RowFigures rowTable(const RowSources& sources) {
-    RowFigures table;
-    const std::vector<std::size_t> rows = fillAsRead(table, sources.record, sources.phase);
+/// Puts what follows for the complete readings to their rows.
+void place(const RowSources& sources, const std::vector<std::size_t>& rows, RowFigures& table) {
+    const Sample& all = sources.all ? *sources.all : sources.used;
     const bool forward = sources.fit == nullptr || sources.fit->direction == FitDirection::Indication;
-    const Influence figures =
-        sources.fit != nullptr ? influence(*sources.residuals, static_cast<int>(sources.fit->terms())) : Influence();
+    const bool weighted = sources.fit != nullptr && !sources.residuals->weight.empty();
+    if (weighted)
+        table.weight.assign(rows.size(), missing);
     std::size_t inAll = 0, inUsed = 0;
     for (std::size_t at = 0; at < rows.size(); ++at) {
-        if (inAll == sources.all.size() || sources.all.rows[inAll] != rows[at])
+        if (inAll == all.size() || all.rows[inAll] != rows[at])
             continue; // incomplete: nothing follows for it
         const std::size_t i = inAll++;
         if (sources.record.readings->reference().has(rows[at]))
-            table.reference[at] = sources.all.reference.high[i];
-        table.indication[at] = sources.all.indication.high[i];
+            table.reference[at] = all.reference.high[i];
+        table.indication[at] = all.indication.high[i];
         const bool counts = inUsed < sources.used.size() && sources.used.rows[inUsed] == rows[at];
         const std::size_t u = counts ? inUsed++ : 0;
         if (sources.fit == nullptr)
@@ -65,16 +93,32 @@ RowFigures rowTable(const RowSources& sources) {
             table.fitted[at] = sources.residuals->fitted[u];
             table.residual[at] = sources.residuals->e.high[u];
             table.leverage[at] = sources.residuals->leverage[u];
-            table.standardised[at] = figures.standardised[u];
-            table.studentised[at] = figures.studentised[u];
-            table.cook[at] = figures.cook[u];
+            if (weighted)
+                table.weight[at] = sources.residuals->weight.high[u];
         } else {
-            const double x = forward ? sources.all.reference.high[i] : sources.all.indication.high[i];
-            const DoubleDouble y = forward ? sources.all.indication[i] : sources.all.reference[i];
+            const double x = forward ? all.reference.high[i] : all.indication.high[i];
+            const DoubleDouble y = forward ? all.indication[i] : all.reference[i];
             table.fitted[at] = sources.fit->curve->value(x);
             table.residual[at] = toDouble(y - table.fitted[at]);
         }
     }
+}
+
+} // namespace
+
+RowFigures rowTable(RowSources sources) {
+    const Influence influence = sources.fit != nullptr
+                                    ? Influence(*sources.residuals, static_cast<int>(sources.fit->terms()))
+                                    : Influence();
+    RowFigures table;
+    if (everyReadingCounts(sources)) {
+        table = takenOver(std::move(sources));
+    } else {
+        const std::vector<std::size_t> rows = rowsOf(*sources.record.readings, sources.phase);
+        table = asRead(sources.record, rows);
+        place(sources, rows, table);
+    }
+    table.influence = influence;
     return table;
 }
 

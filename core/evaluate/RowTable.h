@@ -6,19 +6,19 @@
 
 namespace spanwright {
 
-/// What the rows of a phase are made of. `used` are the readings that count, `all` the complete ones with the excluded among them;
-/// both are the same object when nothing is excluded.
+/// What the rows of a phase are made of, taken over: the table keeps its columns where they already are one a reading. `all` are
+/// the complete readings with the excluded among them; empty when nothing is excluded.
 struct RowSources {
     const Record& record;
     Phase phase;
-    const Sample& used;
-    const Sample& all;
-    const Fit* fit = nullptr;             ///< null: only what was read
-    const Residuals* residuals = nullptr; ///< of `used`
+    Sample used; ///< the readings that count
+    std::optional<Sample> all;
+    const Fit* fit = nullptr;          ///< null: only what was read
+    std::optional<Residuals> residuals; ///< of `used`
 };
 
 /// Every reading of the phase with what follows for it (core/diagnose/Influence). NaN where a reading takes no part or a figure does
 /// not exist.
-RowFigures rowTable(const RowSources& sources);
+RowFigures rowTable(RowSources sources);
 
 } // namespace spanwright

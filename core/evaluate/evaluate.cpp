@@ -50,7 +50,7 @@ class PhaseSteps {
         count();
         if (result_.excluded > 0)
             withExcluded_ = makeSampleWithExcluded(record_, result_.phase);
-        const Result<FitOutcome> fitted = fitFunction(used_, choices_);
+        Result<FitOutcome> fitted = fitFunction(used_, choices_);
         if (progress_.cancelled())
             return Error(ErrorCode::Cancelled);
         progress_.report(0.4);
@@ -63,7 +63,6 @@ class PhaseSteps {
         const std::string& unit = record_.item.reference.unit;
         if (unit == "N" || unit == "kN" || unit == "MN")
             result_.force = forceFigures(used_, choices_, record_.item.resolution ? record_.item.resolution->toDouble() : 0);
-        result_.rows = rowTable({record_, result_.phase, used_, all(), fit(), residuals});
         if (fitted) {
             examine(fitted->residuals);
             draw();
@@ -76,6 +75,10 @@ class PhaseSteps {
         progress_.report(0.8);
         decide();
         gatherWarnings();
+        std::optional<Residuals> left;
+        if (fitted)
+            left = std::move(fitted->residuals);
+        result_.rows = rowTable({record_, result_.phase, std::move(used_), std::move(withExcluded_), fit(), std::move(left)});
         return std::move(result_);
     }
 
@@ -146,7 +149,7 @@ class PhaseSteps {
         const VarianceSplit* split = result_.split ? &*result_.split : nullptr;
         const VarianceSplit* other = earlier_ != nullptr && earlier_->split ? &*earlier_->split : nullptr;
         result_.budget = makeBudget(record_, used_, fit(), split, other);
-        result_.verdict = makeVerdict(record_, used_, fit(), result_.budget);
+        result_.verdict = makeVerdict(record_, fit(), result_.budget);
     }
 
     void gatherWarnings() {

@@ -175,9 +175,8 @@ void fillFew(Sample& sample, const Record& record, const CorrectionTable& refere
 }
 
 void fillPlaces(Sample& sample, const ReadingColumns& readings) {
-    bool runKnown = false;
-    for (const std::size_t row : sample.rows)
-        runKnown = runKnown || readings.runs()[row] != 0;
+    const auto knownRun = [&](std::size_t row) { return readings.runs()[row] != 0; };
+    const bool runKnown = std::any_of(sample.rows.begin(), sample.rows.end(), knownRun);
     if (runKnown)
         for (const std::size_t row : sample.rows)
             sample.run.push_back(readings.runs()[row]);

@@ -10,7 +10,8 @@ namespace spanwright {
 
 namespace {
 
-constexpr std::uint64_t WidestTable = 4; ///< places a reading that direct addressing may take
+/// Bits a reading that a map of all values between the ends may take.
+constexpr std::uint64_t WidestMap = 64;
 
 /// A set point from its integer; within one unit of the last place of a double beyond 2^53.
 class GridValue {
@@ -26,19 +27,87 @@ int bitsOf(std::uint64_t value) {
     return static_cast<int>(std::bit_width(value));
 }
 
-void groupByTable(Sample& sample, std::span<const std::int64_t> grid, int scale, std::int64_t low,
-                  std::uint64_t range) {
-    const GridValue valueOf(scale);
-    std::vector<std::int32_t> table(range, -1);
-    for (const std::int64_t m : grid)
-        table[static_cast<std::size_t>(m - low)] = 0;
-    for (std::size_t i = 0; i < table.size(); ++i)
-        if (table[i] == 0) {
-            table[i] = static_cast<std::int32_t>(sample.groupValue.size());
-            sample.groupValue.push_back(valueOf(low + static_cast<std::int64_t>(i)));
+/// The different values met so far, at most `Most`, each with a number; an open-addressed table.
+class FewValues {
+  public:
+    static constexpr std::int32_t Most = 1024;
+
+    FewValues() { numbers_.fill(-1); }
+
+    /// Number of a value; −1 when there are too many.
+    std::int32_t numberOf(std::int64_t value) {
+        std::size_t place = (static_cast<std::uint64_t>(value) * 0x9e3779b97f4a7c15u) >> (64 - PlaceBits);
+        while (numbers_[place] >= 0) {
+            if (held_[place] == value)
+                return numbers_[place];
+            place = (place + 1) % held_.size();
         }
-    for (std::size_t i = 0; i < grid.size(); ++i)
-        sample.group[i] = table[static_cast<std::size_t>(grid[i] - low)];
+        if (values_.size() == static_cast<std::size_t>(Most))
+            return -1;
+        held_[place] = value;
+        numbers_[place] = static_cast<std::int32_t>(values_.size());
+        values_.push_back(value);
+        return numbers_[place];
+    }
+    [[nodiscard]] const std::vector<std::int64_t>& values() const { return values_; }
+
+  private:
+    static constexpr int PlaceBits = 12;
+    std::array<std::int64_t, std::size_t{1} << PlaceBits> held_{};
+    std::array<std::int32_t, std::size_t{1} << PlaceBits> numbers_{};
+    std::vector<std::int64_t> values_;
+};
+
+/// False, and nothing done that counts, when there are too many set points for it.
+bool groupByFew(Sample& sample, std::span<const std::int64_t> grid, int scale) {
+    FewValues few;
+    std::int64_t before = grid[0];
+    std::int32_t number = few.numberOf(before);
+    for (std::size_t i = 0; i < grid.size(); ++i) {
+        if (grid[i] != before) {
+            before = grid[i];
+            number = few.numberOf(before);
+            if (number < 0)
+                return false;
+        }
+        sample.group[i] = number;
+    }
+    std::vector<std::int32_t> rising(few.values().size()), rank(few.values().size());
+    std::iota(rising.begin(), rising.end(), 0);
+    const auto value = [&](std::int32_t at) { return few.values()[static_cast<std::size_t>(at)]; };
+    std::sort(rising.begin(), rising.end(), [&](std::int32_t a, std::int32_t b) { return value(a) < value(b); });
+    const GridValue valueOf(scale);
+    for (const std::int32_t at : rising) {
+        rank[static_cast<std::size_t>(at)] = static_cast<std::int32_t>(sample.groupValue.size());
+        sample.groupValue.push_back(valueOf(value(at)));
+    }
+    for (std::int32_t& group : sample.group)
+        group = rank[static_cast<std::size_t>(group)];
+    return true;
+}
+
+/// One bit for each value between the ends, set where a reading has it: the number of bits below is the set point.
+void groupByMap(Sample& sample, std::span<const std::int64_t> grid, int scale, std::int64_t low, std::uint64_t range) {
+    const GridValue valueOf(scale);
+    std::vector<std::uint64_t> map(range / 64 + 1, 0);
+    const auto placeOf = [&](std::int64_t m) { return static_cast<std::uint64_t>(m) - static_cast<std::uint64_t>(low); };
+    for (const std::int64_t m : grid)
+        map[placeOf(m) / 64] |= std::uint64_t{1} << (placeOf(m) % 64);
+    std::vector<std::int32_t> below(map.size());
+    std::int32_t count = 0;
+    for (std::size_t word = 0; word < map.size(); ++word) {
+        below[word] = count;
+        count += std::popcount(map[word]);
+    }
+    sample.groupValue.reserve(static_cast<std::size_t>(count));
+    for (std::size_t word = 0; word < map.size(); ++word)
+        for (std::uint64_t left = map[word]; left != 0; left &= left - 1)
+            sample.groupValue.push_back(valueOf(
+                low + static_cast<std::int64_t>(64 * word + static_cast<std::size_t>(std::countr_zero(left)))));
+    for (std::size_t i = 0; i < grid.size(); ++i) {
+        const std::uint64_t place = placeOf(grid[i]), lower = (std::uint64_t{1} << (place % 64)) - 1;
+        sample.group[i] = below[place / 64] + std::popcount(map[place / 64] & lower);
+    }
 }
 
 /// Key and row in one number, sorted by digits of the key; the digits of all passes are counted in one.
@@ -111,10 +180,12 @@ void groupByGrid(Sample& sample, std::span<const std::int64_t> grid, int scale) 
     sample.group.resize(grid.size());
     if (grid.empty())
         return;
+    if (groupByFew(sample, grid, scale))
+        return;
     const auto [low, high] = std::minmax_element(grid.begin(), grid.end());
     const std::uint64_t range = static_cast<std::uint64_t>(*high) - static_cast<std::uint64_t>(*low) + 1;
-    if (range <= WidestTable * grid.size())
-        groupByTable(sample, grid, scale, *low, range);
+    if (range - 1 < WidestMap * grid.size())
+        groupByMap(sample, grid, scale, *low, range);
     else if (const int rowBits = bitsOf(grid.size()), keyBits = bitsOf(range - 1); rowBits + keyBits <= 64)
         groupByDigits(sample, grid, scale, *low, rowBits, keyBits);
     else

@@ -9,8 +9,9 @@ namespace spanwright {
 /// readings.
 void groupByValue(Sample& sample, const PairColumn& value);
 
-/// The same by integers on a decimal grid, in O(n): by direct addressing where the range is small against the readings,
-/// else by sorting digits of 11 bits (O(n log n) where the grid is wider than 2^44 or so).
+/// The same by integers on a decimal grid, in O(n): by a small table where set points are few, by a map of bits where the
+/// range is not too wide for the readings, else by sorting digits of 11 bits (O(n log n) where the grid is wider than
+/// 2^44 or so).
 void groupByGrid(Sample& sample, std::span<const std::int64_t> grid, int scale);
 
 } // namespace spanwright

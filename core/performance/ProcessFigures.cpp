@@ -50,6 +50,41 @@ Ideal statedIdeal(const Item& item) {
     return ideal;
 }
 
+struct EndMeans {
+    std::array<DoubleDouble, 2> x, y;
+};
+
+/// Mean reference and indication at the first and the last set point. The distances from the first reading of each are short
+/// numbers, which plain sums hold where the readings are plain numbers too.
+EndMeans meansAtEnds(const Sample& sample, std::size_t last) {
+    const bool doubles = sample.reference.low.empty() && sample.indication.low.empty();
+    EndMeans from{}, sum{{0.0, 0.0}, {0.0, 0.0}};
+    std::array<double, 2> n{0, 0}, plainX{0, 0}, plainY{0, 0};
+    for (std::size_t i = 0; i < sample.size(); ++i) {
+        const auto group = static_cast<std::size_t>(sample.group[i]);
+        if (group != 0 && group != last)
+            continue;
+        const std::size_t end = group == 0 ? 0 : 1;
+        if (!(n[end] > 0)) {
+            from.x[end] = sample.reference[i];
+            from.y[end] = sample.indication[i];
+        }
+        n[end] += 1;
+        if (doubles) {
+            plainX[end] += sample.reference.high[i] - from.x[end].x[0];
+            plainY[end] += sample.indication.high[i] - from.y[end].x[0];
+        } else {
+            sum.x[end] += sample.reference[i] - from.x[end];
+            sum.y[end] += sample.indication[i] - from.y[end];
+        }
+    }
+    for (std::size_t end = 0; end < 2; ++end) {
+        from.x[end] += (sum.x[end] + plainX[end]) / n[end];
+        from.y[end] += (sum.y[end] + plainY[end]) / n[end];
+    }
+    return from;
+}
+
 Ideal idealOf(const Sample& sample, const Item& item) {
     const bool stated = item.rangeLow && item.rangeHigh && item.outputLow && item.outputHigh &&
                         compareValue(*item.rangeLow, *item.rangeHigh) != 0 &&
@@ -65,21 +100,7 @@ Ideal idealOf(const Sample& sample, const Item& item) {
         ideal.method = "reference-itself";
         return ideal;
     }
-    std::array<DoubleDouble, 2> x{0.0, 0.0}, y{0.0, 0.0};
-    std::array<double, 2> n{0, 0};
-    for (std::size_t i = 0; i < sample.size(); ++i) {
-        const auto group = static_cast<std::size_t>(sample.group[i]);
-        if (group != 0 && group != last)
-            continue;
-        const std::size_t end = group == 0 ? 0 : 1;
-        x[end] += sample.reference[i];
-        y[end] += sample.indication[i];
-        ++n[end];
-    }
-    for (std::size_t end = 0; end < 2; ++end) {
-        x[end] /= n[end];
-        y[end] /= n[end];
-    }
+    const auto [x, y] = meansAtEnds(sample, last);
     ideal.slope = (y[1] - y[0]) / (x[1] - x[0]);
     ideal.intercept = y[0] - ideal.slope * x[0];
     ideal.span = std::abs(toDouble(y[1] - y[0]));

@@ -79,11 +79,10 @@ std::optional<double> limitHalfWidth(const Limits& limits, const Item& item, dou
     return ofReference ? half * std::fabs(slope) : half;
 }
 
-Verdict makeVerdict(const Record& record, const Sample& sample, const Fit* fit, const Budget& budget) {
+Verdict makeVerdict(const Record& record, const Fit* fit, const Budget& budget) {
     Verdict verdict;
-    const std::vector<PointMeans> points = pointMeans(record, sample, fit);
-    for (std::size_t i = 0; i < points.size() && i < budget.points.size(); ++i) {
-        PointResult result = resultOf(record.item, points[i], budget.points[i]);
+    for (std::size_t i = 0; i < budget.points.size(); ++i) {
+        PointResult result = resultOf(record.item, budget.means[i], budget.points[i]);
         const double slope = sensitivityAt(record.item, fit, result.reference, result.indication);
         if (record.limits.stated)
             if (const auto limit = limitHalfWidth(record.limits, record.item, result.reference, result.indication, slope))

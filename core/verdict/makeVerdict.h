@@ -3,7 +3,6 @@
 
 #include "core/budget/Budget.h"
 #include "core/fit/Fit.h"
-#include "core/fit/Sample.h"
 #include "core/record/Record.h"
 #include "core/verdict/Verdict.h"
 
@@ -19,8 +18,7 @@ std::optional<double> outputSpan(const Item& item);
 /// stated, or a part of the span without a span.
 std::optional<double> limitHalfWidth(const Limits& limits, const Item& item, double reference, double indication, double slope);
 
-/// Results and decisions at every point of the budget. `budget` must be made from the same sample. The decision is taken on
-/// unrounded values.
-Verdict makeVerdict(const Record& record, const Sample& sample, const Fit* fit, const Budget& budget);
+/// Results and decisions at every point of the budget. The decision is taken on unrounded values.
+Verdict makeVerdict(const Record& record, const Fit* fit, const Budget& budget);
 
 } // namespace spanwright

@@ -2,7 +2,7 @@
 // Speed of the import of a CSV: time as a ratio against mmap and std::from_chars over the same bytes, in the same run.
 #include "core/exchange/FileBytes.h"
 #include "core/exchange/ReadingImport.h"
-#include "tests/bench/ProcessorTime.h"
+#include "tests/bench/Stopwatch.h"
 
 #include <QTemporaryDir>
 

@@ -3,7 +3,7 @@
 // run; and of keeping one changed reading of it in the recovery file.
 #include "core/session/Recovery.h"
 #include "core/session/SessionFile.h"
-#include "tests/bench/ProcessorTime.h"
+#include "tests/bench/Stopwatch.h"
 
 #include <QJsonArray>
 #include <QJsonDocument>

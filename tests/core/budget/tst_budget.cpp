@@ -319,7 +319,7 @@ class BudgetTest : public QObject {
         const Fit fit = sampleLine();
         const VarianceSplit split = sampleSplit();
         const Sample sample = sampleOf(record, Phase::AsFound);
-        const Verdict verdict = makeVerdict(record, sample, &fit, makeBudget(record, sample, &fit, &split));
+        const Verdict verdict = makeVerdict(record, &fit, makeBudget(record, sample, &fit, &split));
         QCOMPARE(verdict.points.size(), std::size_t(22));
         for (const PointResult& point : verdict.points) {
             if (point.setPoint != 5 || point.direction != Direction::Rising)

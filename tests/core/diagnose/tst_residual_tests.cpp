@@ -106,13 +106,15 @@ class ResidualTestsTest : public QObject {
         compare(set, "bp.p", pValue(d.diagnostics.breuschPagan), 12);
         compare(set, "shapiro.W", statistic(d.diagnostics.shapiroWilk), 13);
         compare(set, "shapiro.p", pValue(d.diagnostics.shapiroWilk), 10);
-        const Influence influenced = influence(d.outcome.residuals, 2);
+        const Influence influence(d.outcome.residuals, 2);
         for (const std::size_t row : {23, 49}) {
             const std::string index = "[" + std::to_string(row) + "]";
             compare(set, "influence.leverage" + index, d.outcome.residuals.leverage[row - 1], 13);
-            compare(set, "influence.standardised_residual" + index, influenced.standardised[row - 1], 13);
-            compare(set, "influence.studentised_residual" + index, influenced.studentised[row - 1], 13);
-            compare(set, "influence.cook" + index, influenced.cook[row - 1], 13);
+            const InfluenceFigures figures =
+                influence.of(d.outcome.residuals.e.high[row - 1], d.outcome.residuals.leverage[row - 1]);
+            compare(set, "influence.standardised_residual" + index, figures.standardised, 13);
+            compare(set, "influence.studentised_residual" + index, figures.studentised, 13);
+            compare(set, "influence.cook" + index, figures.cook, 13);
         }
     }
 

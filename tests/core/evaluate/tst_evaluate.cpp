@@ -150,15 +150,15 @@ void TestEvaluate::figuresByHand() {
         QVERIFY(std::abs(found.rows.leverage[i] - leverage[i]) < 1e-14);
         QVERIFY(std::abs(found.rows.residual[i] - residual[i]) < 1e-14);
         const double standardised = residual[i] / std::sqrt(0.0035 * (1 - leverage[i]));
-        QVERIFY(std::abs(found.rows.standardised[i] - standardised) < 1e-12);
-        QVERIFY(std::abs(found.rows.cook[i] - standardised * standardised * leverage[i] / (2 * (1 - leverage[i]))) < 1e-12);
+        QVERIFY(std::abs(found.rows.influenceOf(i).standardised - standardised) < 1e-12);
+        QVERIFY(std::abs(found.rows.influenceOf(i).cook - standardised * standardised * leverage[i] / (2 * (1 - leverage[i]))) < 1e-12);
     }
     // The second reading alone is off: the others leave almost nothing.
     const double without = 0.007 - 0.07 * 0.07 / 0.7;
     QVERIFY(without < 1e-12);
-    QVERIFY(!(found.rows.studentised[1] < 1e6)); // as good as infinite, or said not to exist
+    QVERIFY(!(found.rows.influenceOf(1).studentised < 1e6)); // as good as infinite, or said not to exist
     const double left = 0.007 - 0.04 * 0.04 / 0.3;
-    QVERIFY(std::abs(found.rows.studentised[0] + 0.04 / std::sqrt(left * 0.3)) < 1e-10);
+    QVERIFY(std::abs(found.rows.influenceOf(0).studentised + 0.04 / std::sqrt(left * 0.3)) < 1e-10);
 }
 
 void TestEvaluate::answersStandInTheOrderAsked() {
