@@ -20,14 +20,21 @@ struct StreamRange {
     unsigned long wide = 0;
 };
 
-/// Abscissae, a multiple of four, with t = (x − centre)·scale: f = Σ c_j T_j(t), u² = Σ h_j T_j(t) + noise.
+/// A polynomial of degree m in t as even(s) + t·odd(s), s = 2t² − 1 in [−1, 1], both in powers of s: half the degree, so that
+/// powers lose few digits, and half the work.
+struct EvenOdd {
+    double even[MostStreamedDegree + 1] = {}; ///< k = 0…m/2
+    double odd[MostStreamedDegree + 1] = {};  ///< k = 0…(m − 1)/2
+};
+
+/// Abscissae, a multiple of four, with t = (x − centre)·scale; the function f of degree d, and u² of one new reading of degree
+/// 2d.
 struct BandBlock {
     const double* x = nullptr;
     unsigned long n = 0;
     double centre = 0, scale = 1;
-    const double* c = nullptr; ///< j = 0…d
-    const double* h = nullptr; ///< j = 0…2d
-    double noise = 0, factor = 0;
+    EvenOdd value, variance;
+    double factor = 0;
 };
 
 /// The inner loops by degree d of the polynomial, written in StreamKernel.inc for every processor and for AVX2, with
@@ -39,7 +46,7 @@ struct StreamKernel {
     void (*residuals[MostStreamedDegree + 1])(const StreamBlock&, const double*, double*);
     /// e·yUnit and Σ h_j T_j(t), j = 0…2d, of every reading.
     void (*elements[MostStreamedDegree + 1])(const StreamBlock&, const double*, const double*, double*, double*);
-    /// f, f − factor·u and f + factor·u.
+    /// f, f − factor·u and f + factor·u at every abscissa.
     void (*band[MostStreamedDegree + 1])(const BandBlock&, double*, double*, double*);
 };
 

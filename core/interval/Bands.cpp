@@ -9,6 +9,7 @@
 #include <limits>
 #include <numbers>
 #include <optional>
+#include <utility>
 
 namespace spanwright {
 
@@ -44,19 +45,37 @@ std::optional<int> degreeOf(const FunctionChoice& function) {
     }
 }
 
-/// Chebyshev coefficients of a polynomial of degree m over [centre − half, centre + half], from its values at m + 1
-/// points (Trefethen, Approximation Theory and Approximation Practice, chapter 3: the discrete cosine sum at the roots
-/// of T_{m+1}).
+/// Coefficients of a polynomial of degree m, in powers of s in [−1, 1], from its values at the roots of T_{m+1}: the
+/// discrete cosine sum for those of T_j (Trefethen, Approximation Theory and Approximation Practice, chapter 3), then T_{j+1} =
+/// 2 s T_j − T_{j−1}.
 template <class F>
-std::vector<double> chebyshevCoefficients(int m, double centre, double half, const F& f) {
-    std::vector<double> coefficients(static_cast<std::size_t>(m) + 1, 0.0);
-    for (int k = 0; k <= m; ++k) {
-        const double angle = std::numbers::pi * (k + 0.5) / (m + 1);
-        const double value = f(centre + half * std::cos(angle));
-        for (int j = 0; j <= m; ++j)
-            coefficients[static_cast<std::size_t>(j)] += value * std::cos(j * angle) * (j == 0 ? 1.0 : 2.0) / (m + 1);
+void fillPowers(int m, double* powers, const F& f) {
+    const auto width = static_cast<std::size_t>(m) + 1;
+    std::vector<double> before(width, 0.0), now(width, 0.0), next(width, 0.0);
+    now[0] = 1;
+    for (int j = 0; j <= m; ++j) {
+        double coefficient = 0;
+        for (int k = 0; k <= m; ++k) {
+            const double angle = std::numbers::pi * (k + 0.5) / (m + 1);
+            coefficient += f(std::cos(angle)) * std::cos(j * angle) * (j == 0 ? 1.0 : 2.0) / (m + 1);
+        }
+        for (std::size_t k = 0; k < width; ++k)
+            powers[k] += coefficient * now[k];
+        for (std::size_t k = 0; k < width; ++k)
+            next[k] = (j == 0 ? 1 : 2) * (k > 0 ? now[k - 1] : 0) - before[k];
+        before = std::exchange(now, next);
     }
-    return coefficients;
+}
+
+/// A polynomial g(t) of degree m.
+template <class G>
+EvenOdd evenOdd(int m, const G& g) {
+    EvenOdd parts;
+    const auto place = [](double s) { return std::sqrt((s + 1) / 2); };
+    fillPowers(m / 2, parts.even, [&](double s) { return (g(place(s)) + g(-place(s))) / 2; });
+    if (m > 0)
+        fillPowers((m - 1) / 2, parts.odd, [&](double s) { return (g(place(s)) - g(-place(s))) / (2 * place(s)); });
+    return parts;
 }
 
 bool evenNoise(const Fit& fit) {
@@ -110,13 +129,16 @@ BandColumns newReadingBand(const Fit& fit, std::span<const double> x) {
     if (degree && *degree <= MostStreamedDegree && evenNoise(fit)) {
         const double centre = fit.low + (fit.high - fit.low) / 2,
                      half = fit.high > fit.low ? (fit.high - fit.low) / 2 : 1.0;
-        const auto c = chebyshevCoefficients(*degree, centre, half, [&](double at) { return fit.curve->value(at); });
-        const auto h =
-            chebyshevCoefficients(2 * *degree, centre, half, [&](double at) { return fit.curve->variance(at); });
+        const double noise = fit.curve->readingVariance(centre);
+        const auto at = [&](double t) { return centre + half * t; };
         done = n - n % 4;
-        const BandBlock block{
-            x.data(),          done, centre, 1 / half, c.data(), h.data(), fit.curve->readingVariance(centre),
-            fit.coverageFactor};
+        const BandBlock block{x.data(),
+                              done,
+                              centre,
+                              1 / half,
+                              evenOdd(*degree, [&](double t) { return fit.curve->value(at(t)); }),
+                              evenOdd(2 * *degree, [&](double t) { return fit.curve->variance(at(t)) + noise; }),
+                              fit.coverageFactor};
         streamKernel().band[static_cast<std::size_t>(*degree)](block, band.value.get(), band.low.get(),
                                                                band.high.get());
     }
