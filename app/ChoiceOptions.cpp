@@ -99,13 +99,10 @@ class Applier {
     }
 
     bool append(std::vector<Decimal>& list, std::string_view text) const {
-        for (const std::string_view part : divided(text, mark_ == DecimalMark::Comma ? ";" : ",;")) {
-            const Result<Decimal> number = Decimal::parse(part, mark_);
-            if (!number)
-                return false;
-            list.push_back(*number);
-        }
-        return true;
+        const Result<std::vector<Decimal>> more = numberList({}, text, mark_);
+        if (more)
+            list.insert(list.end(), more->begin(), more->end());
+        return more.ok();
     }
 
     bool setRepeats(std::string_view text) {
@@ -143,6 +140,17 @@ Result<Choices> withOptions(Choices choices, const Arguments& arguments, Decimal
             if (spec.name == option && !applier.apply(option, text))
                 return badValue(option, text);
     return choices;
+}
+
+Result<std::vector<Decimal>> numberList(std::string_view option, std::string_view text, DecimalMark mark) {
+    std::vector<Decimal> numbers;
+    for (const std::string_view part : divided(text, mark == DecimalMark::Comma ? ";" : ",;")) {
+        const Result<Decimal> number = Decimal::parse(part, mark);
+        if (!number)
+            return badValue(option, text);
+        numbers.push_back(*number);
+    }
+    return numbers;
 }
 
 Result<std::vector<std::size_t>> rowList(std::string_view option, std::string_view text) {

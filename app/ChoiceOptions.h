@@ -14,6 +14,9 @@ std::span<const OptionSpec> choiceOptions();
 /// semicolons when the comma is the decimal mark. Errors: UsageValueBad (facts: option, text).
 Result<Choices> withOptions(Choices choices, const Arguments& arguments, DecimalMark mark);
 
+/// Numbers divided at commas, or at semicolons when the comma is the decimal mark. Error: UsageValueBad (facts: option, text).
+Result<std::vector<Decimal>> numberList(std::string_view option, std::string_view text, DecimalMark mark);
+
 /// Whole numbers from 1, divided by commas or semicolons. Error: UsageValueBad (facts: option, text).
 Result<std::vector<std::size_t>> rowList(std::string_view option, std::string_view text);
 

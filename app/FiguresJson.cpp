@@ -207,6 +207,18 @@ void writeForce(JsonWriter& json, const ForceFigures& force) {
     json.field("lower_limit_factor", force.lowerLimitFactor).field("lower_limit_force", force.lowerLimitForce);
     json.field("lowest_force_class_a", force.lowestForceClassA).field("lowest_force_class_aa", force.lowestForceClassAA);
     known("zero", force.zero);
+    const auto largest = [&](std::string_view name, const std::optional<ForceFigures::Largest>& figure) {
+        if (figure)
+            json.key(name).beginObject().field("percent", figure->value).field("force", figure->force).endObject();
+    };
+    largest("reproducibility_max", force.reproducibility);
+    largest("repeatability_max", force.repeatability);
+    largest("interpolation_max", force.interpolation);
+    largest("reversibility_max", force.reversibility);
+    json.key("rotated_runs").beginArray();
+    for (const int run : force.series.rotated)
+        json.value(static_cast<std::size_t>(run));
+    json.endArray();
     json.key("steps").beginArray(Layout::Lines);
     for (const ForceStep& step : force.steps) {
         json.beginObject().field("force", step.force).field("mean", step.mean);

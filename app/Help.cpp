@@ -35,6 +35,7 @@ Options of figures
   --at X[,X…]                           band and prediction at these reference values
   --read Y[,Y…] [--repeats Q|inf]       reference value from a mean of Q new readings; inf: an exact indication
   --outliers N --outlier-level P        most outliers tried; level of their tests, 0.05
+  --positions D[,D…]                    how the item was turned in run 1, 2, …, degrees: adds the force figures
   --exclude ROW[,ROW…]                  data rows from 1
   --rows                                figures of every reading
   --json                                one JSON object instead of text

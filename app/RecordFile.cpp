@@ -15,7 +15,7 @@ namespace {
 
 constexpr OptionSpec known[] = {{"--reference"},   {"--indication"},   {"--set-point"}, {"--direction"}, {"--run"},    {"--u-reference"},
                                 {"--u-indication"}, {"--time"}, {"--decimal"},   {"--separator"}, {"--encoding"}, {"--missing"},
-                                {"--exclude"}};
+                                {"--exclude"}, {"--positions"}};
 
 Error ofOption(const Error& error, const char* option, const std::string& text) {
     return Error(error.code == ErrorCode::UsageValueBad ? error.code : ErrorCode::UsageValueBad, {{"option", option}, {"text", text}});
@@ -279,6 +279,13 @@ Result<LoadedRecord> loadRecord(const std::string& path, const Arguments& argume
                                                         : loadTable(path, file->bytes(), arguments, *excluded);
     if (!loaded)
         return loaded;
+    if (const auto text = arguments.value("--positions")) {
+        const auto mark = decimalMark(arguments);
+        const auto positions = mark ? numberList("--positions", *text, *mark) : mark.error();
+        if (!positions)
+            return positions.error();
+        loaded->record.plan.positions = *positions;
+    }
     const auto done = exclude(loaded->record, *excluded);
     if (!done)
         return done.error();

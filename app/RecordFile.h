@@ -35,7 +35,7 @@ struct LoadedSession {
 /// understands in full.
 Result<LoadedSession> loadSessionFile(const std::string& path);
 
-/// Reads a session or a CSV into a record, with the options of choiceOptions() and --exclude put over it. A cell of a used column
+/// Reads a session or a CSV into a record, with the options of choiceOptions(), --positions and --exclude put over it. A cell of a used column
 /// that is no number refuses the file, unless its row is excluded. Errors: of the readers, with fact file; UsageValueBad.
 Result<LoadedRecord> loadRecord(const std::string& path, const Arguments& arguments);
 

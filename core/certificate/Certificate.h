@@ -66,6 +66,39 @@ struct PerformanceRow {
     Digits value, percentOfSpan, setPoint;
 };
 
+/// Figures of a force transducer, in % of the deflection unless named otherwise.
+struct ForceSection {
+    struct Step {
+        Digits force, mean, reproducibility, repeatability, interpolation, reversibility;
+    };
+    std::vector<Step> steps;
+    Digits zero;
+    int degree = 1, interpolationDegree = 1;
+    Digits lowerLimitFactor, lowerLimitForce, lowestForceClassA, lowestForceClassAA;
+};
+
+/// A line of the variance split as a table.
+struct SplitTableLine {
+    /// Of the chain of nested models; or lack of fit once more, against pure error with direction and run in it, or after
+    /// direction and run.
+    enum class Test { Chain, Naive, Adjusted };
+    SplitPart part = SplitPart::Total;
+    Test test = Test::Chain;
+    int level = 0; ///< how far it is indented: a part of the line above with a smaller one
+    Digits sumOfSquares, meanSquare, f, p;
+    int degreesOfFreedom = 0;
+    std::optional<double> share; ///< of the total; not for a second test
+};
+
+/// The variance split as it is printed.
+struct SplitSection {
+    FunctionChoice function;
+    FitDirection direction = FitDirection::Indication; ///< the unit is that of this quantity, squared
+    bool weighted = false;                             ///< pure numbers
+    std::vector<SplitTableLine> lines;
+    SplitPart against = SplitPart::PureError;
+};
+
 struct PhaseSection {
     Phase phase = Phase::AsFound;
     std::size_t readings = 0, used = 0, excluded = 0;
@@ -78,6 +111,8 @@ struct PhaseSection {
     std::optional<std::size_t> largest; ///< line with the error of largest magnitude
     std::optional<BudgetSection> budget;
     std::vector<PerformanceRow> performance;
+    std::optional<SplitSection> split; ///< where it is wanted
+    std::optional<ForceSection> force;
 };
 
 struct FunctionSection {
@@ -120,6 +155,7 @@ enum class Statement {
     AsFoundOutsideLimits,
     AsFoundNotAccepted,      ///< inside the limits, but not every error inside the acceptance limits
     HysteresisLeft,          ///< as-left errors of opposite sign at one set point: no trim removes hysteresis; facts: set_point
+    ManyExcluded,            ///< facts: phase, count, of, limit
     NoAsFound,               ///< facts: reason
     Replaces,                ///< facts: number, reason
     ErrorSign,

@@ -181,9 +181,10 @@ void readingsOf(const Record& record, const PhaseEvaluation& phase, List& list) 
         list.add(Gap::PlanNotDone, Warn, "bench", "readings",
                  {named, {"planned", std::to_string(phase.planned)}, {"complete", std::to_string(phase.complete)}});
     const double share = phase.complete > 0 ? static_cast<double>(phase.excluded) / static_cast<double>(phase.complete) : 0;
-    if (100 * share > record.choices.exclusionLimit.toDouble())
+    if (share > record.choices.exclusionLimit.toDouble())
         list.add(Gap::ManyExcluded, Warn, "bench", "exclusions",
-                 {named, {"count", std::to_string(phase.excluded)}, {"of", std::to_string(phase.complete)}});
+                 {named, {"count", std::to_string(phase.excluded)}, {"of", std::to_string(phase.complete)},
+                  {"limit", record.choices.exclusionLimit.text()}});
     const auto& points = phase.budget.points;
     const bool stated = !points.empty() && std::all_of(points.begin(), points.end(), [](const SetPointBudget& point) {
         return point.expanded > 0 && std::isfinite(point.expanded);

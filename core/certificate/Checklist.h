@@ -34,7 +34,7 @@ enum class Gap {
     NoResults,              ///< 7.8.2.1 m
     PlanNotDone,            ///< facts: phase, planned, complete
     ExclusionWithoutReason, ///< 7.8.2.1 n; facts: count
-    ManyExcluded,           ///< facts: phase, count, of
+    ManyExcluded,           ///< facts: phase, count, of, limit
     NotPerformed,           ///< no name of the person who performed
     NotChecked,
     NotAuthorised,          ///< 7.8.2.1 o

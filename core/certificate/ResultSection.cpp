@@ -3,6 +3,7 @@
 
 #include "core/base/Rounding.h"
 #include "core/certificate/ShortText.h"
+#include "core/certificate/SplitSection.h"
 
 #include <algorithm>
 #include <cmath>
@@ -147,6 +148,9 @@ PhaseSection phaseSection(const Record& record, const PhaseEvaluation& phase) {
     if (phase.performance)
         section.performance = performanceRows(*phase.performance, worst == budgets.end() ? 4 : roundUncertainty(worst->expanded).decimals,
                                               section.errorKnown ? ErrorKnown::Yes : ErrorKnown::No);
+    if (record.choices.splitOnCertificate && phase.phase == record.choices.phase)
+        section.split = splitSection(phase);
+    section.force = forceSection(phase);
     return section;
 }
 

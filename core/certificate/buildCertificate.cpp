@@ -67,6 +67,10 @@ std::optional<double> hysteresisLeft(const PhaseEvaluation* left) {
     return place;
 }
 
+bool exceedsLimit(const PhaseEvaluation& phase, double limit) {
+    return static_cast<double>(phase.excluded) > limit * static_cast<double>(phase.complete);
+}
+
 std::vector<StatementLine> noticesOf(const Record& record, const Evaluation& evaluation) {
     std::vector<StatementLine> notices;
     if (!record.job.replaces.empty())
@@ -84,6 +88,11 @@ std::vector<StatementLine> noticesOf(const Record& record, const Evaluation& eva
     }
     if (record.job.adjusted && found == nullptr)
         notices.push_back({Statement::NoAsFound, {{"reason", record.job.noAsFoundReason}}});
+    const double limit = record.choices.exclusionLimit.toDouble();
+    for (const Phase which : bothPhases)
+        if (const PhaseEvaluation* phase = evaluation.phase(which); phase != nullptr && exceedsLimit(*phase, limit))
+            notices.push_back({Statement::ManyExcluded, {{"phase", std::string(nameOf(which))}, {"count", std::to_string(phase->excluded)},
+                                                         {"of", std::to_string(phase->complete)}, {"limit", shortText(std::stod(roundedText(100 * limit, 2)))}}});
     if (const auto setPoint = hysteresisLeft(evaluation.phase(Phase::AsLeft)))
         notices.push_back({Statement::HysteresisLeft, {{"set_point", shortText(*setPoint)}}});
     for (const Evaluation::OverdueStandard& late : evaluation.overdue) {

@@ -24,8 +24,8 @@ constexpr std::size_t mostForWatsonMoments = 100'000;
 /// Below this a second thread costs more than it gives.
 constexpr std::size_t fewerThanThreads = 200'000;
 
-/// Columns of the function at the readings; for a function that is none of the polynomials, a polynomial of as many
-/// terms, which `approximate` says.
+/// Columns of the function at the readings; for a function that is not linear in its coefficients, of its tangent, which
+/// `approximate` says.
 struct Design {
     std::vector<std::vector<double>> columns;
     bool approximate = false;
@@ -33,14 +33,11 @@ struct Design {
 
 Design designOf(const Sample& sample, const Fit& fit) {
     Design design;
-    const bool known = hasFunctionBasis(fit.function);
-    const FunctionChoice function =
-        known ? fit.function : FunctionChoice{FunctionFamily::Polynomial, static_cast<int>(fit.terms()) - 1};
     const PairColumn& abscissa = fit.direction == FitDirection::Indication ? sample.reference : sample.indication;
-    const FunctionBasis basis = functionBasis(function, abscissa.high);
+    const FunctionBasis basis = functionBasis(fit, abscissa.high);
     for (std::size_t j = 0; j < basis.terms; ++j)
         design.columns.emplace_back(basis.column(j).begin(), basis.column(j).end());
-    design.approximate = !known;
+    design.approximate = !basis.linear;
     return design;
 }
 
@@ -85,7 +82,7 @@ void watsonP(const Residuals& residuals, Design design, Diagnostics& result) {
     }
     result.durbinWatsonP = durbinWatsonBelow(d, design.columns);
     if (design.approximate)
-        result.warnings.push_back(approximate("durbin_watson", "polynomial"));
+        result.warnings.push_back(approximate("durbin_watson", "linearised"));
 }
 
 template <class T>
@@ -116,7 +113,7 @@ void regressions(const Sample& sample, const Residuals& residuals, const Fit& fi
     const PairColumn& abscissa = fit.direction == FitDirection::Indication ? sample.reference : sample.indication;
     if (fit.terms() == 2) {
         result.breuschPagan = breuschPagan(u, std::span<const double>(abscissa.high));
-    } else if (hasFunctionBasis(fit.function)) {
+    } else if (spannedByPowers(fit.function)) {
         result.breuschPagan = breuschPagan(u, designOf(sample, fit).columns);
     }
     if (result.durbinWatson) {

@@ -138,7 +138,7 @@ void throughZero(const FindingsInput& input, std::vector<Finding>& found) {
         return;
     const PairColumn& abscissa =
         fit.direction == FitDirection::Indication ? input.sample.reference : input.sample.indication;
-    const FunctionBasis basis = functionBasis(fit.function, abscissa.high);
+    const FunctionBasis basis = functionBasis(fit, abscissa.high);
     const std::size_t n = basis.rows;
     const auto root = [&](std::size_t i) {
         return input.residuals->weight.empty() ? 1 : std::sqrt(input.residuals->weight.high[i]);

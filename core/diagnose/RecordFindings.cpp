@@ -8,9 +8,6 @@
 namespace spanwright {
 namespace {
 
-/// Shares of the readings of a phase beyond which exclusions are called many (common practice).
-constexpr double manyExcluded = 0.10, tooManyExcluded = 0.20;
-
 struct ExcludedReading {
     ReadingId id = 0;
     std::size_t row = 0;
@@ -71,10 +68,11 @@ void exclusions(const FindingsInput& input, std::vector<Finding>& found) {
     wholeSetPoints(input, excluded, found);
     const double share =
         static_cast<double>(excluded.size()) / static_cast<double>(excluded.size() + input.sample.size());
-    if (share > manyExcluded) {
+    const double limit = input.record.choices.exclusionLimit.toDouble();
+    if (share > limit) {
         finding.code = FindingCode::ManyExcluded;
-        finding.severity = share > tooManyExcluded ? Severity::Serious : Severity::Attention;
-        finding.figures = {{"share", share}, {"count", static_cast<double>(excluded.size())}};
+        finding.severity = share > 2 * limit ? Severity::Serious : Severity::Attention; // twice the limit: common practice
+        finding.figures = {{"share", share}, {"exclusion_limit", limit}, {"count", static_cast<double>(excluded.size())}};
         found.push_back(finding);
     }
 }

@@ -56,7 +56,7 @@ struct PhaseEvaluation {
     std::optional<VarianceSplit> split;
     std::optional<Diagnostics> diagnostics;
     std::optional<ProcessFigures> performance;
-    std::optional<ForceFigures> force; ///< where the reference is a force and the item was turned between runs
+    std::optional<ForceFigures> force; ///< where the plan says that the item was turned between runs
     RowFigures rows;
     std::vector<BandPoint> curve; ///< at most 400 points over the range of all readings, a little beyond
     std::vector<BandPoint> at;    ///< at the chosen reference values

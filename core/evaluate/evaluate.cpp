@@ -60,9 +60,7 @@ class PhaseSteps {
             result_.notFitted = fitted.error();
         const Residuals* residuals = fitted ? &fitted->residuals : nullptr;
         result_.performance = processFigures(used_, record_.item);
-        const std::string& unit = record_.item.reference.unit;
-        if (unit == "N" || unit == "kN" || unit == "MN")
-            result_.force = forceFigures(used_, choices_, record_.item.resolution ? record_.item.resolution->toDouble() : 0);
+        result_.force = forceFigures(used_, choices_, record_.item.resolution ? record_.item.resolution->toDouble() : 0, record_.plan.positions);
         if (fitted) {
             examine(fitted->residuals);
             draw();

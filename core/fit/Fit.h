@@ -21,6 +21,8 @@ class FittedFunction {
     [[nodiscard]] virtual double derivative(double x) const = 0;
     /// u² of value(x) from the coefficients: vᵀ V v with v = ∂value/∂coefficients.
     [[nodiscard]] virtual double variance(double x) const = 0;
+    /// ∂value/∂coefficients in the basis of the fit, for what asks which functions lie near; may be empty.
+    [[nodiscard]] virtual std::vector<double> gradient(double) const { return {}; }
     /// Variance of one new reading at x about the function (σ²; with a variance function or weights it depends on x).
     [[nodiscard]] virtual double readingVariance(double x) const = 0;
 };

@@ -40,6 +40,10 @@ double ModelCurve::variance(double x) const {
     return scale_ * sum;
 }
 
+std::vector<double> ModelCurve::gradient(double x) const {
+    return model_->gradient(x, beta_);
+}
+
 double ModelCurve::readingVariance(double x) const {
     return scale_ * profile_.at(x);
 }

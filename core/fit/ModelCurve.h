@@ -19,6 +19,7 @@ class ModelCurve final : public FittedFunction {
     [[nodiscard]] double value(double x) const override;
     [[nodiscard]] double derivative(double x) const override;
     [[nodiscard]] double variance(double x) const override;
+    [[nodiscard]] std::vector<double> gradient(double x) const override;
     [[nodiscard]] double readingVariance(double x) const override;
 
   private:

@@ -87,12 +87,12 @@ Choices polynomialChoice(const Choices& choices, int degree) {
     return changed;
 }
 
-ForceStep stepOf(double force, const Deflections& here, const ForceSeries& series, const std::vector<int>& rotated) {
+ForceStep stepOf(double force, const Deflections& here, const ForceSeries& series) {
     ForceStep step;
     step.force = force;
     double low = INFINITY, high = -INFINITY, sum = 0, reversal = 0;
     int n = 0, reversals = 0;
-    for (const int run : rotated) {
+    for (const int run : series.rotated) {
         const auto up = here.rising.find(run);
         if (up == here.rising.end())
             continue;
@@ -112,10 +112,18 @@ ForceStep stepOf(double force, const Deflections& here, const ForceSeries& serie
         step.reproducibility = 100 * (high - low) / std::abs(step.mean);
     if (reversals > 0)
         step.reversibility = 100 * reversal / reversals;
-    const auto first = here.rising.find(series.first), again = here.rising.find(series.again);
-    if (first != here.rising.end() && again != here.rising.end())
+    const auto first = here.rising.find(series.first.value_or(0)), again = here.rising.find(series.again.value_or(0));
+    if (series.again && first != here.rising.end() && again != here.rising.end())
         step.repeatability = 100 * std::abs((again->second - first->second) / ((first->second + again->second) / 2));
     return step;
+}
+
+std::optional<ForceFigures::Largest> largestOf(const std::vector<ForceStep>& steps, std::optional<double> ForceStep::*figure) {
+    std::optional<ForceFigures::Largest> largest;
+    for (const ForceStep& step : steps)
+        if (step.*figure && (!largest || std::abs(*(step.*figure)) > std::abs(largest->value)))
+            largest = {*(step.*figure), step.force};
+    return largest;
 }
 
 std::optional<double> zeroFigure(const Table& table, double largest) {
@@ -128,24 +136,41 @@ std::optional<double> zeroFigure(const Table& table, double largest) {
 
 } // namespace
 
+std::optional<ForceSeries> turnedSeries(const std::vector<Decimal>& positions, const std::vector<std::int32_t>& runs) {
+    ForceSeries series;
+    std::map<double, int> firstIn; // run by position
+    for (std::size_t i = 0; i < positions.size(); ++i) {
+        const int run = static_cast<int>(i) + 1;
+        if (std::find(runs.begin(), runs.end(), run) == runs.end())
+            continue;
+        const double turn = std::fmod(std::fmod(positions[i].toDouble(), 360) + 360, 360);
+        const auto [place, isNew] = firstIn.emplace(turn, run);
+        if (isNew) {
+            series.rotated.push_back(run);
+        } else if (!series.again) {
+            series.first = place->second;
+            series.again = run;
+        }
+    }
+    if (series.rotated.size() < 2)
+        return std::nullopt;
+    return series;
+}
+
 std::optional<ForceFigures> forceFigures(const Sample& sample, const Choices& choices, double resolution,
-                                         const ForceSeries& series) {
+                                         const std::vector<Decimal>& positions) {
     if (sample.run.empty() || sample.reference.size() != sample.size())
         return std::nullopt;
-    std::vector<int> rotated = series.rotated;
-    if (rotated.empty()) {
-        rotated.push_back(series.first);
-        for (const std::int32_t run : sample.run)
-            if (run > series.again && std::find(rotated.begin(), rotated.end(), run) == rotated.end())
-                rotated.push_back(run);
-    }
+    const std::optional<ForceSeries> series = turnedSeries(positions, sample.run);
+    if (!series)
+        return std::nullopt;
     const Table table = tableOf(sample);
-    const bool again = std::find(sample.run.begin(), sample.run.end(), series.again) != sample.run.end();
-    if (rotated.size() < 2 || !again || table.at.size() < 3)
+    if (table.at.size() < 3)
         return std::nullopt;
 
-    const Sample turned = risingOf(sample, rotated, table);
+    const Sample turned = risingOf(sample, series->rotated, table);
     ForceFigures figures;
+    figures.series = *series;
     figures.degree = degreeLadder(turned, polynomialChoice(choices, 1), resolution).byE74;
     figures.interpolationDegree = std::min(figures.degree, 3);
     const auto outcome = fitFunction(turned, polynomialChoice(choices, figures.degree));
@@ -153,12 +178,16 @@ std::optional<ForceFigures> forceFigures(const Sample& sample, const Choices& ch
     if (!outcome || !curve)
         return std::nullopt;
     for (const auto& [force, deflections] : table.at) {
-        ForceStep step = stepOf(force, deflections, series, rotated);
+        ForceStep step = stepOf(force, deflections, *series);
         const double computed = curve->fit.curve->value(force);
         if (std::abs(computed) > 0)
             step.interpolation = 100 * (step.mean - computed) / computed;
         figures.steps.push_back(step);
     }
+    figures.reproducibility = largestOf(figures.steps, &ForceStep::reproducibility);
+    figures.repeatability = largestOf(figures.steps, &ForceStep::repeatability);
+    figures.interpolation = largestOf(figures.steps, &ForceStep::interpolation);
+    figures.reversibility = largestOf(figures.steps, &ForceStep::reversibility);
     const ForceStep& largest = figures.steps.back();
     figures.zero = zeroFigure(table, largest.mean);
     figures.residualSd = outcome->fit.residualSd;

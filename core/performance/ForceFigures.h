@@ -19,6 +19,12 @@ struct ForceStep {
     std::optional<double> reversibility; ///< v = 100 · mean |X' − X|/X of falling against rising in the rotated series
 };
 
+/// Runs by number.
+struct ForceSeries {
+    std::vector<int> rotated;      ///< one for each position
+    std::optional<int> first, again; ///< two in one position
+};
+
 /// Figures of a force transducer (terms of ISO 376:2011 and ASTM E74, both from memory).
 struct ForceFigures {
     std::vector<ForceStep> steps; ///< without force 0
@@ -29,18 +35,22 @@ struct ForceFigures {
     double lowerLimitFactor = 0; ///< 2.4 s_m, not below the resolution; unit of the indication
     double lowerLimitForce = 0;  ///< the same as a force, by the mean slope
     double lowestForceClassA = 0, lowestForceClassAA = 0; ///< 400 and 2000 times that
+    /// The largest of each figure over the forces, with its sign, and where it occurs.
+    struct Largest {
+        double value = 0, force = 0;
+    };
+    std::optional<Largest> reproducibility, repeatability, interpolation, reversibility;
+    ForceSeries series;
 };
 
-/// The series by run number: two in one position, and those with the transducer turned between them (one of the first
-/// two among them). By default runs 1 and 2 stand, and 1, 3, 4, … are turned.
-struct ForceSeries {
-    int first = 1, again = 2;
-    std::vector<int> rotated; ///< empty: first and every run after `again`
-};
+/// The series with the item turned between them: the first run in each position, in the order of the runs. The first two runs in
+/// one position show the repeatability. Positions of runs 1, 2, … in degrees; a whole turn is no turn. Empty with fewer than two
+/// positions among the runs that were taken.
+[[nodiscard]] std::optional<ForceSeries> turnedSeries(const std::vector<Decimal>& positions, const std::vector<std::int32_t>& runs);
 
-/// Empty with fewer than two rotated series, three forces, or no reading in the second series, or when no function can
-/// be fitted. Indications are deflections: the zero before each series is taken off already or is read at force 0.
+/// Empty unless the item was turned (turnedSeries), with fewer than three forces, or when no function can be fitted. Indications
+/// are deflections: the zero before each series is taken off already or is read at force 0.
 [[nodiscard]] std::optional<ForceFigures> forceFigures(const Sample& sample, const Choices& choices, double resolution,
-                                                       const ForceSeries& series = {});
+                                                       const std::vector<Decimal>& positions);
 
 } // namespace spanwright

@@ -64,6 +64,7 @@ struct Choices {
     Decimal toleranceShare{95, 2, {}}; ///< share of all readings that the tolerance band is to hold
     Decimal exclusionLimit{10, 2, {}}; ///< share of excluded readings above which findings and certificate say so
     bool separateDirections = false; ///< state rising and falling separately in results and budget
+    bool splitOnCertificate = false; ///< print the variance split as a table
     bool operator==(const Choices&) const = default;
 };
 

@@ -183,6 +183,7 @@ void fields(P& part, V&& visit)
     visit("as_left_runs", part.asLeftRuns);
     visit("dwell_seconds", part.dwellSeconds);
     visit("preloads", part.preloads);
+    visit("positions", part.positions);
     visit("reference_typed", part.referenceTyped);
 }
 
@@ -206,6 +207,7 @@ void fields(P& part, V&& visit)
     visit("tolerance_share", part.toleranceShare);
     visit("exclusion_limit", part.exclusionLimit);
     visit("separate_directions", part.separateDirections);
+    visit("split_on_certificate", part.splitOnCertificate);
 }
 
 template <class P, class V>

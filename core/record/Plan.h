@@ -19,6 +19,7 @@ struct Plan {
     int asLeftRuns = 0;   ///< passes after adjustment; 0: none planned
     int dwellSeconds = 0; ///< least wait at a set point
     int preloads = 0;     ///< exercises to full scale before the first run
+    std::vector<Decimal> positions; ///< how the item is turned about its axis in run 1, 2, …, degrees; empty: never turned
     bool referenceTyped = true; ///< false: the reference is the set point and only the indication is typed
     bool operator==(const Plan&) const = default;
 };

@@ -41,24 +41,45 @@ std::vector<int> contrastColumns(const NoiseChain& chain) {
     return column;
 }
 
+/// Where the function stands for each set point: the set point itself, or, where the function gives the reference, the mean of
+/// the indications there.
+std::vector<double> placesOf(const Sample& sample, const Fit& fit) {
+    if (fit.direction == FitDirection::Indication)
+        return sample.groupValue;
+    std::vector<double> sum(sample.groupValue.size()), n(sum.size());
+    for (std::size_t i = 0; i < sample.size(); ++i) {
+        const auto group = static_cast<std::size_t>(sample.group[i]);
+        sum[group] += sample.indication.high[i];
+        ++n[group];
+    }
+    for (std::size_t g = 0; g < sum.size(); ++g)
+        sum[g] /= n[g];
+    return sum;
+}
+
 } // namespace
 
-std::optional<SplitRow> adjustedLackOfFit(const Sample& sample, const NoiseChain& chain, const Fit& fit) {
-    if (chain.balanced || fit.direction != FitDirection::Indication || !hasFunctionBasis(fit.function))
-        return std::nullopt;
-    if (chain.contrasts == 0 && chain.runOffsets == 0)
-        return std::nullopt;
+AdjustedLackOfFit adjustedLackOfFit(const Sample& sample, const NoiseChain& chain, const Fit& fit) {
+    AdjustedLackOfFit result;
+    if (chain.balanced || (chain.contrasts == 0 && chain.runOffsets == 0))
+        return result;
     const std::vector<Node> nodes = nodesOf(chain);
-    std::vector<double> abscissa;
-    for (const Node& node : nodes)
-        abscissa.push_back(sample.groupValue[static_cast<std::size_t>(chain.cells[node.cell].group)]);
-    const FunctionBasis basis = functionBasis(fit.function, abscissa);
+    const std::vector<double> places = placesOf(sample, fit);
+    std::vector<double> abscissa, setPoint;
+    for (const Node& node : nodes) {
+        const auto group = static_cast<std::size_t>(chain.cells[node.cell].group);
+        abscissa.push_back(places[group]);
+        setPoint.push_back(sample.groupValue[group]);
+    }
+    const FunctionBasis basis = functionBasis(fit, abscissa);
+    if (basis.empty())
+        return result;
     const std::vector<int> contrast = contrastColumns(chain);
     const std::size_t runTerms = chain.runOffsets > 0 ? chain.runs - 1 : 0;
     const std::size_t runAt = basis.terms + static_cast<std::size_t>(chain.contrasts);
     const std::size_t columns = runAt + 2 * runTerms;
     if (nodes.size() * columns * columns > 50'000'000)
-        return std::nullopt;
+        return result;
 
     Eigen::MatrixXd design =
         Eigen::MatrixXd::Zero(static_cast<Eigen::Index>(nodes.size()), static_cast<Eigen::Index>(columns));
@@ -83,7 +104,7 @@ std::optional<SplitRow> adjustedLackOfFit(const Sample& sample, const NoiseChain
         for (std::size_t r = 0; r < runTerms; ++r) {
             const double code = nodes[k].run == r ? 1 : nodes[k].run == runTerms ? -1 : 0;
             put(runAt + r, code);
-            put(runAt + runTerms + r, code * (abscissa[k] - middle) / half);
+            put(runAt + runTerms + r, code * (setPoint[k] - middle) / half);
         }
         right(row) = root * nodes[k].mean;
         explainedByMeans += nodes[k].weight * nodes[k].mean * nodes[k].mean;
@@ -97,9 +118,14 @@ std::optional<SplitRow> adjustedLackOfFit(const Sample& sample, const NoiseChain
     row.ss = std::max(0.0, toDouble(chain.s1) - explainedByMeans + rest - toDouble(chain.s5));
     row.df = chain.setPoints + chain.contrasts + chain.runOffsets + chain.runSlopes - static_cast<int>(qr.rank());
     if (row.df <= 0)
-        return std::nullopt;
+        return result;
     row.ms = row.ss / row.df;
-    return row;
+    result.row = row;
+    if (!basis.linear)
+        result.approximation = "linearised";
+    else if (fit.direction == FitDirection::Reference)
+        result.approximation = "mean-indication";
+    return result;
 }
 
 } // namespace spanwright

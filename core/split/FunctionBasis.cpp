@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/split/FunctionBasis.h"
 
+#include "core/fit/CalibrationFunction.h"
+
 #include <algorithm>
 #include <cmath>
 
@@ -29,18 +31,8 @@ Powers powersOf(const FunctionChoice& function) {
     }
 }
 
-} // namespace
-
-bool hasFunctionBasis(const FunctionChoice& function) {
-    const Powers powers = powersOf(function);
-    return powers.highest >= powers.lowest;
-}
-
-FunctionBasis functionBasis(const FunctionChoice& function, std::span<const double> abscissa) {
+FunctionBasis powerBasis(const Powers& powers, std::span<const double> abscissa) {
     FunctionBasis basis;
-    const Powers powers = powersOf(function);
-    if (powers.highest < powers.lowest || abscissa.empty())
-        return basis;
     basis.rows = abscissa.size();
     basis.terms = static_cast<std::size_t>(powers.highest - powers.lowest + 1);
     basis.columns.resize(basis.rows * basis.terms);
@@ -57,6 +49,35 @@ FunctionBasis functionBasis(const FunctionChoice& function, std::span<const doub
         }
     }
     return basis;
+}
+
+FunctionBasis gradientBasis(const Fit& fit, std::span<const double> abscissa) {
+    FunctionBasis basis;
+    basis.linear = factsOf(fit.function.family).linear;
+    basis.rows = abscissa.size();
+    for (std::size_t i = 0; i < basis.rows; ++i) {
+        const std::vector<double> gradient = fit.curve->gradient(abscissa[i]);
+        if (i == 0) {
+            basis.terms = gradient.size();
+            basis.columns.resize(basis.rows * basis.terms);
+        }
+        for (std::size_t j = 0; j < basis.terms; ++j)
+            basis.columns[j * basis.rows + i] = gradient[j];
+    }
+    return basis;
+}
+
+} // namespace
+
+bool spannedByPowers(const FunctionChoice& function) {
+    const Powers powers = powersOf(function);
+    return powers.highest >= powers.lowest;
+}
+
+FunctionBasis functionBasis(const Fit& fit, std::span<const double> abscissa) {
+    if (abscissa.empty())
+        return {};
+    return spannedByPowers(fit.function) ? powerBasis(powersOf(fit.function), abscissa) : gradientBasis(fit, abscissa);
 }
 
 } // namespace spanwright

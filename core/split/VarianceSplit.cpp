@@ -84,7 +84,10 @@ void addTests(VarianceSplit& split, const Sample& sample, const NoiseChain& chai
     split.lackOfFitNaive = split.lackOfFit;
     testAgainst(split.lackOfFitNaive, split.pureError, floor);
     if (split.lackOfFit) {
-        split.lackOfFitAdjusted = adjustedLackOfFit(sample, chain, fit);
+        AdjustedLackOfFit adjusted = adjustedLackOfFit(sample, chain, fit);
+        split.lackOfFitAdjusted = adjusted.row;
+        if (!adjusted.approximation.empty())
+            split.warnings.push_back({WarningCode::ApproximateMethod, {{"figure", "lack_of_fit_adjusted"}, {"method", adjusted.approximation}}});
         testAgainst(split.lackOfFitAdjusted, error, floor);
     }
 }

@@ -49,10 +49,17 @@ class SampleDataTest : public QObject {
   private slots:
     void climateLoggerIsWhatItsModelMakes() { compareOrWrite("climate-logger.csv", QByteArray::fromStdString(climateLogger())); }
 
-    void transmitterIsWhatTheProgramWrites() {
-        const QString name = "pressure-transmitter.spanwright";
-        const Record record = pressureTransmitterAsTaken();
-        QVERIFY(record == pressureTransmitter());
+    void sessionsAreWhatTheProgramWrites_data() {
+        QTest::addColumn<QString>("name");
+        for (const char* name : {"pressure-transmitter", "temperature-probe", "load-cell", "flow-sensor"})
+            QTest::newRow(name) << QString(name) + ".spanwright";
+    }
+    void sessionsAreWhatTheProgramWrites() {
+        QFETCH(QString, name);
+        const Record wanted = name.startsWith("pressure") ? pressureTransmitter() : name.startsWith("temperature") ? temperatureProbe()
+                              : name.startsWith("load") ? loadCell() : flowSensorAsTyped();
+        const Record record = name.startsWith("pressure") ? pressureTransmitterAsTaken() : asTaken(wanted);
+        QVERIFY(record == wanted);
         const Evaluation now = evaluated(record);
         // The figures stored in the sample are compared as opening compares them; all else is compared byte for byte.
         const Result<Session> stored = readSession(contents(name).toStdString());

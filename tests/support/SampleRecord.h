@@ -14,6 +14,13 @@ Record pressureTransmitter();
 /// then every reading as it was typed, one with two digits exchanged and put right, then the signatures.
 Record pressureTransmitterAsTaken();
 
+/// The records of the sample sessions of that name. Their readings are those of the tables beside them; their journals are empty.
+Record temperatureProbe();
+Record loadCell();
+Record flowSensorAsTyped();
+/// A record as its people made it through the commands of the window: the job first, then every reading as it was typed.
+Record asTaken(const Record& wanted);
+
 /// A number from its text; the text must be a number.
 Decimal number(const char* text);
 

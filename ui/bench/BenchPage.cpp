@@ -7,8 +7,10 @@
 #include "ui/bench/ConvertDialog.h"
 #include "ui/bench/Dismissals.h"
 #include "ui/bench/ExcludeDialog.h"
+#include "ui/bench/ExclusionsDialog.h"
 #include "ui/bench/FindingsView.h"
 #include "ui/bench/NextReading.h"
+#include "ui/bench/PerformanceDialog.h"
 #include "ui/bench/ReadingsTable.h"
 #include "ui/bench/ReasonDialog.h"
 #include "ui/bench/SelectionBar.h"
@@ -35,6 +37,17 @@
 namespace spanwright {
 
 namespace {
+
+/// The line of the budget that holds what a finding is about.
+std::optional<DerivedLine> budgetLineOf(FindingCode code) {
+    switch (code) {
+    case FindingCode::Hysteresis: return DerivedLine::Hysteresis;
+    case FindingCode::RunZeroShift:
+    case FindingCode::RunGainChange:
+    case FindingCode::FirstRunDiffers: return DerivedLine::RunToRun;
+    default: return std::nullopt;
+    }
+}
 
 QSplitter* parted(Qt::Orientation orientation, std::initializer_list<QWidget*> widgets) {
     auto* splitter = new QSplitter(orientation);
@@ -123,19 +136,28 @@ QWidget* BenchPage::buildMiddle() {
     return rows;
 }
 
+QToolButton* BenchPage::cardLink(const QString& name, const QString& text, void (BenchPage::*what)()) {
+    auto* link = new QToolButton;
+    link->setObjectName(name);
+    link->setProperty("link", true);
+    link->setFont(textFont(TextRole::Small));
+    link->setText(text);
+    link->setStyleSheet(QStringLiteral("QToolButton { padding: 2px 0px; }"));
+    connect(link, &QToolButton::clicked, this, what);
+    return link;
+}
+
 QWidget* BenchPage::buildRight() {
     split_ = new SplitPicture;
     findings_ = new FindingsView;
     splitCard_ = new Card(tr("Variance split"));
-    auto* figures = new QToolButton;
-    figures->setObjectName(QStringLiteral("splitFigures"));
-    figures->setProperty("link", true);
-    figures->setFont(textFont(TextRole::Small));
-    figures->setText(tr("Table"));
-    figures->setStyleSheet(QStringLiteral("QToolButton { padding: 2px 0px; }"));
-    connect(figures, &QToolButton::clicked, this, &BenchPage::showSplitTable);
-    splitCard_->addHeadWidget(figures);
     splitCard_->body()->addWidget(split_);
+    auto* links = new QHBoxLayout;
+    links->setSpacing(space::card);
+    links->addWidget(cardLink(QStringLiteral("splitFigures"), tr("As a table"), &BenchPage::showSplitTable));
+    links->addWidget(cardLink(QStringLiteral("performanceFigures"), tr("Performance figures"), &BenchPage::showPerformance));
+    links->addStretch(1);
+    splitCard_->body()->addLayout(links);
     findingsCard_ = new Card(tr("Findings"));
     findingsCard_->body()->addWidget(findings_);
     QSplitter* rows = parted(Qt::Vertical, {splitCard_, findingsCard_});
@@ -164,9 +186,12 @@ void BenchPage::buildActions() {
     add("bench.exclude", tr("Exclude the selected readings"), QKeySequence(Qt::CTRL | Qt::Key_E), [this] { exclude(); });
     add("bench.readmit", tr("Take the selected readings back in"), QKeySequence(Qt::CTRL | Qt::SHIFT | Qt::Key_E), [this] { readmit(); });
     add("bench.split-table", tr("Variance split as a table"), QKeySequence(Qt::CTRL | Qt::Key_T), [this] { showSplitTable(); });
-    add("bench.compare-exclusions", tr("Compare with and without the exclusions"), QKeySequence(Qt::CTRL | Qt::SHIFT | Qt::Key_X), [this] {
-        (new CompareDialog(workbench_, CompareDialog::withoutExclusions(workbench_.record()), this))->open();
+    add("bench.performance", tr("Performance figures"), QKeySequence(Qt::CTRL | Qt::SHIFT | Qt::Key_T), [this] { showPerformance(); });
+    add("bench.compare", tr("Compare with another function or method"), QKeySequence(Qt::CTRL | Qt::SHIFT | Qt::Key_C), [this] {
+        const Method now = workbench_.record().choices.method;
+        (new CompareDialog(workbench_, CompareDialog::withMethod(workbench_.record(), now == Method::Robust ? Method::LeastSquares : Method::Robust), this))->open();
     });
+    add("bench.exclusions", tr("What the exclusions do"), QKeySequence(Qt::CTRL | Qt::SHIFT | Qt::Key_X), [this] { showExclusions(); });
     add("bench.convert", tr("Value from a reading"), QKeySequence(Qt::CTRL | Qt::Key_B), [this] { (new ConvertDialog(workbench_, this))->show(); });
     add("bench.line", tr("Go to the line plot"), QKeySequence(Qt::CTRL | Qt::Key_L), [this] { line_->setFocus(); });
     add("bench.residuals", tr("Go to the residuals"), QKeySequence(Qt::CTRL | Qt::Key_R), [this] { residual_->setFocus(); });
@@ -261,21 +286,19 @@ void BenchPage::readmit() {
         workbench_.perform(std::make_unique<Readmit>(std::move(ids)));
 }
 
-void BenchPage::compare(const FunctionChoice& function) {
-    auto* dialog = new CompareDialog(workbench_, CompareDialog::withFunction(workbench_.record(), function), this);
-    connect(dialog, &CompareDialog::takenOver, this, [this, function] {
-        workbench_.perform(changePart(workbench_.record(), &Record::choices, tr("choose %1").arg(functionText(function)), [&](Choices& choices) { choices.function = function; }));
-    });
-    dialog->open();
+void BenchPage::showExclusions() {
+    (new ExclusionsDialog(workbench_, this))->open();
+}
+
+void BenchPage::showPerformance() {
+    (new PerformanceDialog(workbench_, this))->open();
 }
 
 void BenchPage::follow(const Finding& finding) {
     switch (finding.remedy) {
-    case Remedy::CompareFunction: compare(finding.suggestion); break;
-    case Remedy::CarryToBudget:
-        emit budgetRequested(finding.code == FindingCode::Hysteresis ? DerivedLine::Hysteresis : DerivedLine::RunToRun);
-        break;
-    case Remedy::SeeExclusions: (new CompareDialog(workbench_, CompareDialog::withoutExclusions(workbench_.record()), this))->open(); break;
+    case Remedy::CompareFunction: (new CompareDialog(workbench_, CompareDialog::withFunction(workbench_.record(), finding.suggestion), this))->open(); break;
+    case Remedy::CarryToBudget: emit budgetRequested(budgetLineOf(finding.code)); break;
+    case Remedy::SeeExclusions: showExclusions(); break;
     case Remedy::SeeReadings:
         workbench_.select({finding.rows.begin(), finding.rows.end()});
         table_->setFocus();
@@ -321,9 +344,7 @@ void BenchPage::recall(const Finding& finding) {
 }
 
 void BenchPage::showSplitTable() {
-    const PlotSubject now = subject();
-    if (now.phase && now.phase->split)
-        (new SplitTable(*now.phase->split, QString::fromStdString(now.ordinate().unit), this))->open();
+    (new SplitTable(workbench_, this))->open();
 }
 
 } // namespace spanwright

@@ -9,6 +9,7 @@
 
 class QLabel;
 class QSplitter;
+class QToolButton;
 
 namespace spanwright {
 
@@ -32,8 +33,8 @@ class BenchPage : public QWidget {
     void startTyping();
 
   signals:
-    /// The budget is wanted, to carry `line` into it.
-    void budgetRequested(spanwright::DerivedLine line);
+    /// The budget is wanted, to carry `line` into it; empty: to look at it.
+    void budgetRequested(std::optional<spanwright::DerivedLine> line);
     /// The plan of set points is wanted (on the page of the job).
     void planRequested();
 
@@ -53,7 +54,9 @@ class BenchPage : public QWidget {
     void follow(const Finding& finding);
     void dismiss(const Finding& finding);
     void recall(const Finding& finding);
-    void compare(const FunctionChoice& function);
+    void showExclusions();
+    void showPerformance();
+    QToolButton* cardLink(const QString& name, const QString& text, void (BenchPage::*what)());
     void showSplitTable();
     [[nodiscard]] PlotSubject subject() const;
 

@@ -1,13 +1,19 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/bench/CompareDialog.h"
 
+#include "core/fit/CalibrationFunction.h"
+#include "ui/bench/ChoiceMenus.h"
 #include "ui/bench/FitEffect.h"
 #include "ui/bench/TrialEvaluation.h"
+#include "ui/commands/PartCommand.h"
 #include "ui/look/Look.h"
 #include "ui/look/NumberText.h"
+#include "ui/plot/PlotSubject.h"
 #include "ui/words/Words.h"
 
+#include <QComboBox>
 #include <QDialogButtonBox>
+#include <QHBoxLayout>
 #include <QLabel>
 #include <QPushButton>
 #include <QVBoxLayout>
@@ -30,54 +36,123 @@ QStringList onlyIn(const PhaseEvaluation& one, const PhaseEvaluation* other, con
     return sentences;
 }
 
-/// Values of both functions at the ends, the middle and a quarter of the range.
-void addValues(std::vector<EffectRow>& rows, const PhaseEvaluation* now, const PhaseEvaluation* trial, const Item& item) {
+/// Where values are compared: the reference values (or indications) that were chosen for the figures, else the ends of the range
+/// and three places between.
+std::vector<double> placesOf(const Fit& fit, const Choices& choices) {
+    const std::vector<Decimal>& chosen = fit.direction == FitDirection::Indication ? choices.at : choices.read;
+    std::vector<double> places;
+    for (const Decimal& one : chosen)
+        places.push_back(one.toDouble());
+    if (places.empty())
+        for (const double share : {0.0, 0.25, 0.5, 0.75, 1.0})
+            places.push_back(fit.low + share * (fit.high - fit.low));
+    std::sort(places.begin(), places.end());
+    places.erase(std::unique(places.begin(), places.end()), places.end());
+    return places;
+}
+
+void addValues(std::vector<EffectRow>& rows, const PhaseEvaluation* now, const PhaseEvaluation* trial, const Record& record) {
     if (!now || !trial || !now->fit || !trial->fit || now->fit->direction != trial->fit->direction)
         return;
+    constexpr std::size_t most = 9;
+    const Item& item = record.item;
     const bool forward = now->fit->direction == FitDirection::Indication;
     const QString in = QString::fromStdString(forward ? item.reference.unit : item.indication.unit);
-    const double low = now->fit->low, high = now->fit->high;
-    const double s = now->fit->weights == Weights::Equal ? now->fit->residualSd : 0;
+    const QString out = QString::fromStdString(forward ? item.indication.unit : item.reference.unit);
+    const double s = now->fit->weights == Weights::Equal ? now->fit->residualSd : std::sqrt(now->fit->curve->readingVariance(now->fit->low));
     const int decimals = s > 0 ? std::clamp(1 - static_cast<int>(std::floor(std::log10(s))), 0, 12) : 4;
-    for (const double share : {0.0, 0.25, 0.5, 0.75, 1.0}) {
-        const double x = low + share * (high - low);
-        rows.push_back({CompareDialog::tr("value at %1 %2").arg(significantText(x, 4), in), fixedText(now->fit->curve->value(x), decimals), fixedText(trial->fit->curve->value(x), decimals)});
-    }
+    std::vector<double> places = placesOf(*now->fit, record.choices);
+    places.resize(std::min(places.size(), most));
+    for (const double x : places)
+        rows.push_back({inUnit(CompareDialog::tr("value at %1 %2").arg(placeText(x), in).trimmed(), out),
+                        fixedText(now->fit->curve->value(x), decimals), fixedText(trial->fit->curve->value(x), decimals)});
+}
+
+/// The functions that give the same quantity, each family up to the order that is of use.
+std::vector<FunctionChoice> functionsFor(FitDirection direction) {
+    constexpr int highestPower = 5;
+    std::vector<FunctionChoice> all;
+    for (const FunctionFacts& facts : calibrationFunctions())
+        for (int order = facts.lowestOrder; order <= std::min(facts.highestOrder, highestPower); ++order)
+            if (!facts.only || *facts.only == direction)
+                all.push_back({facts.family, order});
+    return all;
 }
 
 } // namespace
 
-CompareDialog::CompareDialog(Workbench& workbench, Other other, QWidget* parent)
-    : QDialog(parent), workbench_(workbench), other_(std::move(other)), effect_(new EffectTable), findings_(new QLabel), trial_(new TrialEvaluation(this)) {
+CompareDialog::CompareDialog(Workbench& workbench, const Other& other, QWidget* parent)
+    : QDialog(parent), workbench_(workbench), choice_(new QComboBox), effect_(new EffectTable), findings_(new QLabel),
+      trial_(new TrialEvaluation(this)) {
     setObjectName(QStringLiteral("compareDialog"));
     setAttribute(Qt::WA_DeleteOnClose);
     setWindowTitle(tr("Side by side"));
     setMinimumWidth(480);
     auto* all = new QVBoxLayout(this);
     all->setContentsMargins(space::card, space::card, space::card, space::card);
-    all->setSpacing(space::card);
+    all->setSpacing(space::step + space::half);
+    auto* with = new QLabel(tr("Compare &with"));
+    with->setBuddy(choice_);
+    with->setForegroundRole(inkRole::quiet);
+    choice_->setObjectName(QStringLiteral("compareWith"));
+    choice_->setMaxVisibleItems(24);
+    auto* top = new QHBoxLayout;
+    top->addWidget(with);
+    top->addWidget(choice_, 1);
+    all->addLayout(top);
     all->addWidget(effect_);
     findings_->setObjectName(QStringLiteral("compareFindings"));
     findings_->setTextFormat(Qt::PlainText);
     findings_->setWordWrap(true);
     findings_->setFont(textFont(TextRole::Small));
+    findings_->setTextInteractionFlags(Qt::TextSelectableByMouse);
     all->addWidget(findings_);
     auto* buttons = new QDialogButtonBox;
-    if (!other_.takeOver.isEmpty()) {
-        take_ = buttons->addButton(other_.takeOver, QDialogButtonBox::AcceptRole);
-        take_->setObjectName(QStringLiteral("takeOver"));
-        take_->setEnabled(false);
-    }
+    take_ = buttons->addButton(QString(), QDialogButtonBox::AcceptRole);
+    take_->setObjectName(QStringLiteral("takeOver"));
     buttons->addButton(tr("Close"), QDialogButtonBox::RejectRole);
-    connect(buttons, &QDialogButtonBox::accepted, this, [this] {
-        emit takenOver();
-        accept();
-    });
+    connect(buttons, &QDialogButtonBox::accepted, this, &CompareDialog::take);
     connect(buttons, &QDialogButtonBox::rejected, this, &QDialog::reject);
     all->addWidget(buttons);
+    connect(trial_, &TrialEvaluation::ready, this, &CompareDialog::show);
+    fillChoice(other);
+    connect(choice_, &QComboBox::currentIndexChanged, this, [this](int index) { compare(others_[static_cast<std::size_t>(index)]); });
+    compare(other);
+}
+
+/// Everything that can be compared, the one asked for chosen.
+void CompareDialog::fillChoice(const Other& first) {
+    const Record& record = workbench_.record();
+    const auto add = [&](Other other) {
+        choice_->addItem(sentenceCase(other.name));
+        if (other.name == first.name)
+            choice_->setCurrentIndex(choice_->count() - 1);
+        others_.push_back(std::move(other));
+    };
+    if (!record.exclusions->empty())
+        add(withoutExclusions(record));
+    for (const Method method : {Method::LeastSquares, Method::Robust})
+        if (method != record.choices.method)
+            add(withMethod(record, method));
+    choice_->insertSeparator(choice_->count());
+    others_.emplace_back();
+    for (const FunctionChoice& function : functionsFor(record.choices.fit))
+        if (!(function == record.choices.function))
+            add(withFunction(record, function));
+    if (choice_->itemText(choice_->currentIndex()) != sentenceCase(first.name)) {
+        add(first);
+        choice_->setCurrentIndex(choice_->count() - 1);
+    }
+}
+
+void CompareDialog::compare(const Other& other) {
+    other_ = other;
+    take_->setVisible(static_cast<bool>(other_.takeOver));
+    take_->setText(tr("Use %1").arg(other_.name));
+    take_->setEnabled(false);
     const PhaseEvaluation* now = workbench_.evaluation()->phase(workbench_.record().choices.phase);
     effect_->show(other_.nameOfNow, other_.name, effectRows(now, nullptr, workbench_.record().item));
-    connect(trial_, &TrialEvaluation::ready, this, &CompareDialog::show);
+    findings_->clear();
     trial_->start(other_.record);
 }
 
@@ -86,7 +161,7 @@ void CompareDialog::show(const std::shared_ptr<const Evaluation>& trial) {
     const PhaseEvaluation* now = workbench_.evaluation()->phase(record.choices.phase);
     const PhaseEvaluation* then = trial->phase(record.choices.phase);
     std::vector<EffectRow> rows = effectRows(now, then, record.item);
-    addValues(rows, now, then, record.item);
+    addValues(rows, now, then, record);
     effect_->show(other_.nameOfNow, other_.name, rows);
     QStringList lines;
     if (then && then->notFitted)
@@ -100,14 +175,27 @@ void CompareDialog::show(const std::shared_ptr<const Evaluation>& trial) {
             lines << tr("Both lead to the same findings.");
     }
     findings_->setText(lines.join(QLatin1Char('\n')));
-    if (take_)
-        take_->setEnabled(then && then->fit);
+    take_->setEnabled(then && then->fit && !workbench_.readOnly());
     adjustSize();
 }
 
+void CompareDialog::take() {
+    workbench_.perform(changePart(workbench_.record(), &Record::choices, tr("choose %1").arg(other_.name), other_.takeOver));
+    accept();
+}
+
 CompareDialog::Other CompareDialog::withFunction(const Record& record, const FunctionChoice& function) {
-    Other other{functionText(function), functionText(record.choices.function), record, tr("Use %1").arg(functionText(function))};
-    other.record.choices.function = function;
+    Other other{functionText(function), functionText(record.choices.function), record, [function](Choices& choices) { choices.function = function; }};
+    other.takeOver(other.record.choices);
+    return other;
+}
+
+CompareDialog::Other CompareDialog::withMethod(const Record& record, Method method) {
+    const auto name = [](Method one) { return one == Method::Robust ? tr("robust fit") : methodText(one); };
+    Other other{name(method), name(record.choices.method), record, {}};
+    other.record.choices.method = method;
+    if (method != Method::Robust) // which is for comparison only
+        other.takeOver = [method](Choices& choices) { choices.method = method; };
     return other;
 }
 

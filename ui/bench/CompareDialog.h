@@ -5,6 +5,10 @@
 
 #include <QDialog>
 
+#include <functional>
+#include <vector>
+
+class QComboBox;
 class QLabel;
 class QPushButton;
 
@@ -13,35 +17,40 @@ namespace spanwright {
 class EffectTable;
 class TrialEvaluation;
 
-/// Two evaluations of the same readings side by side: two functions, or with and without the exclusions. Coefficients, s, U, largest
-/// residual, and the findings that differ. The other one can be taken over.
+/// Two evaluations of the same readings side by side: another function, another method, or all readings without the exclusions.
+/// Coefficients, s, U, largest residual, values at chosen points, and the findings that differ. What is compared is chosen at the
+/// top; the other one can be taken over.
 class CompareDialog : public QDialog {
     Q_OBJECT
 
   public:
     /// What is compared with the record as it is.
     struct Other {
-        QString name;     ///< heading of the other side
+        QString name;      ///< heading of the other side
         QString nameOfNow;
         Record record;
-        QString takeOver; ///< label of the button; empty: only looked at
+        std::function<void(Choices&)> takeOver; ///< empty: only looked at
     };
-    CompareDialog(Workbench& workbench, Other other, QWidget* parent = nullptr);
+    CompareDialog(Workbench& workbench, const Other& other, QWidget* parent = nullptr);
 
     static Other withFunction(const Record& record, const FunctionChoice& function);
+    /// A robust fit beside least squares, or the other way round.
+    static Other withMethod(const Record& record, Method method);
     static Other withoutExclusions(const Record& record);
 
-  signals:
-    void takenOver();
-
   private:
+    void fillChoice(const Other& first);
+    void compare(const Other& other);
     void show(const std::shared_ptr<const Evaluation>& trial);
+    void take();
 
     Workbench& workbench_;
+    std::vector<Other> others_;
     Other other_;
+    QComboBox* choice_;
     EffectTable* effect_;
     QLabel* findings_;
-    QPushButton* take_ = nullptr;
+    QPushButton* take_;
     TrialEvaluation* trial_;
 };
 

@@ -44,14 +44,6 @@ QString coefficientText(const Coefficient* c) {
     return fixedText(c->value, std::clamp(1 - static_cast<int>(std::floor(std::log10(c->standardUncertainty))), 0, 20));
 }
 
-double halfWidth(const PhaseEvaluation* phase) {
-    double largest = std::numeric_limits<double>::quiet_NaN();
-    for (const BandPoint& point : phase ? phase->curve : std::vector<BandPoint>{})
-        if (point.inside)
-            largest = std::fmax(largest, (point.newReading.high - point.newReading.low) / 2);
-    return largest;
-}
-
 double largestResidual(const PhaseEvaluation* phase) {
     double largest = std::numeric_limits<double>::quiet_NaN();
     for (std::size_t i = 0; phase && i < phase->rows.size(); ++i)
@@ -61,6 +53,18 @@ double largestResidual(const PhaseEvaluation* phase) {
 }
 
 } // namespace
+
+QString inUnit(const QString& name, const QString& unit) {
+    return unit.isEmpty() ? name : name + QStringLiteral(", ") + unit;
+}
+
+double largestHalfWidth(const PhaseEvaluation* phase) {
+    double largest = std::numeric_limits<double>::quiet_NaN();
+    for (const BandPoint& point : phase ? phase->curve : std::vector<BandPoint>{})
+        if (point.inside)
+            largest = std::fmax(largest, (point.newReading.high - point.newReading.low) / 2);
+    return largest;
+}
 
 std::vector<EffectRow> effectRows(const PhaseEvaluation* before, const PhaseEvaluation* after, const Item& item) {
     std::vector<EffectRow> rows;
@@ -74,9 +78,9 @@ std::vector<EffectRow> effectRows(const PhaseEvaluation* before, const PhaseEval
     const auto figure = [&](const QString& name, auto&& of) { rows.push_back({name, of(before), of(after)}); };
     const bool forward = !after || !after->fit || after->fit->direction == FitDirection::Indication;
     const QString unit = QString::fromStdString(forward ? item.indication.unit : item.reference.unit);
-    figure(withUnit(tr("residual s"), unit), [](const PhaseEvaluation* p) { return p && p->fit ? significantText(p->fit->residualSd, 3) : QStringLiteral("–"); });
-    figure(withUnit(tr("U of a new reading, largest"), unit), [](const PhaseEvaluation* p) { return significantText(halfWidth(p), 3); });
-    figure(withUnit(tr("largest residual"), unit), [](const PhaseEvaluation* p) { return significantText(largestResidual(p), 3); });
+    figure(inUnit(tr("residual s"), unit), [](const PhaseEvaluation* p) { return p && p->fit ? significantText(p->fit->residualSd, 3) : QStringLiteral("–"); });
+    figure(inUnit(tr("U of a new reading, largest"), unit), [](const PhaseEvaluation* p) { return significantText(largestHalfWidth(p), 3); });
+    figure(inUnit(tr("largest residual"), unit), [](const PhaseEvaluation* p) { return significantText(largestResidual(p), 3); });
     figure(tr("readings used"), [](const PhaseEvaluation* p) { return p && p->fit ? QLocale().toString(static_cast<qulonglong>(p->fit->used)) : QStringLiteral("–"); });
     return rows;
 }

@@ -21,6 +21,11 @@ struct EffectRow {
 /// phase. A figure that one of them has not is a dash.
 std::vector<EffectRow> effectRows(const PhaseEvaluation* before, const PhaseEvaluation* after, const Item& item);
 
+/// "residual s, mA"
+QString inUnit(const QString& name, const QString& unit);
+/// Half-width of the new-reading band where it is widest in the range; NaN without a fit.
+double largestHalfWidth(const PhaseEvaluation* phase);
+
 /// Those rows as a small table with two headings.
 class EffectTable : public QWidget {
     Q_OBJECT

@@ -1,14 +1,13 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/bench/SplitTable.h"
 
+#include "ui/commands/FieldForm.h"
+#include "ui/commands/Workbench.h"
 #include "ui/look/Look.h"
 #include "ui/look/NumberText.h"
 #include "ui/words/Words.h"
 
-#include <QApplication>
-#include <QClipboard>
 #include <QDialogButtonBox>
-#include <QGridLayout>
 #include <QLabel>
 #include <QPushButton>
 #include <QVBoxLayout>
@@ -17,102 +16,107 @@ namespace spanwright {
 
 namespace {
 
-QString tr(const char* text) {
-    return QCoreApplication::translate("SplitTable", text);
+/// Sums of squares that shares are shares of.
+struct Whole {
+    double total = 0, noise = 0;
+};
+
+QString shareOf(double part, double whole) {
+    return whole > 0 ? shareText(part / whole) : QString();
 }
 
-SplitLine lineOf(const QString& source, const SplitRow& row, double total, int level) {
-    SplitLine line{source, significantText(row.ss, 5), QString::number(row.df), {}, {}, {}, {}, level};
-    if (row.ms)
-        line.meanSquare = significantText(*row.ms, 5);
-    if (row.f)
-        line.f = significantText(*row.f, 4);
-    if (row.p)
-        line.p = pText(*row.p);
-    if (total > 0)
-        line.share = shareText(row.ss / total);
-    return line;
+FiguresRow rowOf(const QString& source, const SplitRow& row, const Whole& whole, int level) {
+    FiguresRow made;
+    made.level = level;
+    made.cells = {source, significantText(row.ss, 5), QString::number(row.df), row.ms ? significantText(*row.ms, 5) : QString(),
+                  row.f ? significantText(*row.f, 4) : QString(), row.p ? pText(*row.p) : QString(), shareOf(row.ss, whole.total), shareOf(row.ss, level > 0 ? whole.noise : 0)};
+    return made;
 }
 
-QStringList cellsOf(const SplitLine& line) {
-    return {line.source, line.sumOfSquares, line.degreesOfFreedom, line.meanSquare, line.f, line.p, line.share};
-}
-
-QStringList headings(const QString& unit) {
-    const QString squared = unit.isEmpty() ? QString() : QStringLiteral(" (") + unit + QStringLiteral(")²");
-    return {tr("source"), tr("sum of squares") + squared, tr("d.f."), tr("mean square"), tr("F"), tr("p"), tr("share")};
+/// Another test of a row that is there already: its sum of squares is no part of the total.
+FiguresRow testOf(const QString& name, const SplitRow& row) {
+    FiguresRow made = rowOf(name, row, {}, 3);
+    made.quiet = true;
+    return made;
 }
 
 } // namespace
 
-std::vector<SplitLine> splitLines(const VarianceSplit& split) {
-    std::vector<SplitLine> lines;
-    const double total = split.total.ss;
+QStringList splitHeadings(const QString& unit) {
+    const QString squared = unit.isEmpty() ? QString() : QStringLiteral("\n(") + unit + QStringLiteral(")²");
+    return {SplitTable::tr("source"), SplitTable::tr("sum of squares") + squared, SplitTable::tr("d.f."), SplitTable::tr("mean square") + squared,
+            SplitTable::tr("F"), SplitTable::tr("p"), SplitTable::tr("share\nof total"), SplitTable::tr("share\nof noise")};
+}
+
+std::vector<FiguresRow> splitRows(const VarianceSplit& split) {
+    std::vector<FiguresRow> rows;
+    const Whole whole{split.total.ss, split.residual.ss};
     const auto add = [&](SplitPart part, const std::optional<SplitRow>& row, int level) {
         if (row)
-            lines.push_back(lineOf(splitPartText(part), *row, total, level));
+            rows.push_back(rowOf(part == SplitPart::Regression ? SplitTable::tr("signal (regression)") : splitPartText(part), *row, part == SplitPart::Regression ? Whole{whole.total, 0} : whole, level));
     };
     add(SplitPart::Total, split.total, 0);
     add(SplitPart::Regression, split.regression, 1);
     add(SplitPart::Residual, split.residual, 1);
     add(SplitPart::LackOfFit, split.lackOfFit, 2);
-    if (split.lackOfFitNaive && split.against != SplitPart::PureError)
-        lines.push_back(lineOf(tr("lack of fit against pure error, pooled"), *split.lackOfFitNaive, 0, 3));
-    if (split.lackOfFitAdjusted)
-        lines.push_back(lineOf(tr("lack of fit after direction and run"), *split.lackOfFitAdjusted, 0, 3));
+    if (split.lackOfFitAdjusted && split.lackOfFitAdjusted->f)
+        rows.push_back(testOf(SplitTable::tr("adjusted for direction and run, against %1").arg(splitPartText(split.against).toLower()), *split.lackOfFitAdjusted));
+    if (split.lackOfFitNaive && split.lackOfFitNaive->f && split.against != SplitPart::PureError)
+        rows.push_back(testOf(SplitTable::tr("naive, against pure error"), *split.lackOfFitNaive));
     add(SplitPart::PureError, split.pureError, 2);
     add(SplitPart::Hysteresis, split.hysteresis, 3);
     add(SplitPart::RunOffset, split.runOffset, 3);
     add(SplitPart::RunSlope, split.runSlope, 3);
     add(SplitPart::Repeatability, split.repeatability, 3);
-    return lines;
+    return rows;
 }
 
-QString splitTableText(const VarianceSplit& split, const QString& unit) {
-    QStringList rows{headings(unit).join(QLatin1Char('\t'))};
-    for (const SplitLine& line : splitLines(split))
-        rows << cellsOf(line).join(QLatin1Char('\t')).replace(QChar(0x2212), QLatin1Char('-'));
-    return rows.join(QLatin1Char('\n')) + QLatin1Char('\n');
-}
-
-SplitTable::SplitTable(const VarianceSplit& split, const QString& unit, QWidget* parent) : QDialog(parent) {
+SplitTable::SplitTable(Workbench& workbench, QWidget* parent)
+    : QDialog(parent), workbench_(workbench), table_(new FiguresTable(QStringLiteral("splitFiguresTable"), tr("Variance split"))), note_(new QLabel) {
     setObjectName(QStringLiteral("splitTable"));
     setAttribute(Qt::WA_DeleteOnClose);
     setWindowTitle(tr("Variance split"));
     auto* all = new QVBoxLayout(this);
     all->setContentsMargins(space::card, space::card, space::card, space::card);
-    all->setSpacing(space::card);
-    auto* grid = new QGridLayout;
-    grid->setHorizontalSpacing(space::card + space::step);
-    grid->setVerticalSpacing(space::half + 1);
-    const auto put = [&](int row, const QStringList& cells, QPalette::ColorRole role, int level) {
-        for (int column = 0; column < cells.size(); ++column) {
-            auto* cell = new QLabel(cells[column]);
-            cell->setTextFormat(Qt::PlainText);
-            cell->setForegroundRole(role);
-            if (column == 0)
-                cell->setContentsMargins(level * space::card, 0, 0, 0);
-            grid->addWidget(cell, row, column, column == 0 ? Qt::AlignLeft : Qt::AlignRight);
-        }
-    };
-    put(0, headings(unit), inkRole::quiet, 0);
-    int row = 1;
-    for (const SplitLine& line : splitLines(split))
-        put(row++, cellsOf(line), QPalette::WindowText, line.level);
-    all->addLayout(grid);
-    auto* note = new QLabel(tr("F and p: the signal against the residual, the other sources against %1.").arg(splitPartText(split.against)));
-    note->setForegroundRole(inkRole::quiet);
-    note->setFont(textFont(TextRole::Small));
-    all->addWidget(note);
+    all->setSpacing(space::step + space::half);
+    all->addWidget(table_, 1);
+    note_->setObjectName(QStringLiteral("splitNote"));
+    note_->setForegroundRole(inkRole::quiet);
+    note_->setFont(textFont(TextRole::Small));
+    note_->setTextFormat(Qt::PlainText);
+    note_->setWordWrap(true);
+    all->addWidget(note_);
+    all->addWidget(fieldCheck(workbench, QStringLiteral("choices.split_on_certificate"), tr("Print this table on the certificate"), &Record::choices,
+                              [](Choices& choices) -> bool& { return choices.splitOnCertificate; }));
     auto* buttons = new QDialogButtonBox;
     QPushButton* copy = buttons->addButton(tr("Copy"), QDialogButtonBox::ActionRole);
     copy->setObjectName(QStringLiteral("copySplit"));
-    QPushButton* close = buttons->addButton(tr("Close"), QDialogButtonBox::RejectRole);
-    close->setDefault(true);
-    close->setFocus();
-    connect(copy, &QPushButton::clicked, this, [text = splitTableText(split, unit)] { QApplication::clipboard()->setText(text); });
+    copy->setAutoDefault(false);
+    buttons->addButton(tr("Close"), QDialogButtonBox::RejectRole)->setDefault(true);
+    connect(copy, &QPushButton::clicked, table_, &FiguresTable::copy);
     connect(buttons, &QDialogButtonBox::rejected, this, &QDialog::reject);
     all->addWidget(buttons);
+    connect(&workbench_, &Workbench::evaluationChanged, this, &SplitTable::refresh);
+    refresh();
+    table_->setFocus();
+}
+
+void SplitTable::refresh() {
+    const Record& record = workbench_.record();
+    const PhaseEvaluation* phase = workbench_.evaluation()->phase(record.choices.phase);
+    if (!phase || !phase->split || !phase->fit) {
+        table_->setFigures(splitHeadings({}), {});
+        note_->setText(phase && phase->notFitted ? errorText(*phase->notFitted) : tr("There are no readings in this phase yet."));
+        return;
+    }
+    const VarianceSplit& split = *phase->split;
+    const std::string& unit = phase->fit->direction == FitDirection::Indication ? record.item.indication.unit : record.item.reference.unit;
+    table_->setFigures(splitHeadings(phase->fit->weights == Weights::Equal ? QString::fromStdString(unit) : QString()), splitRows(split));
+    QStringList lines{tr("F and p: the signal against the residual, the other sources against %1. Each source is what it adds to those above it.")
+                          .arg(splitPartText(split.against).toLower())};
+    for (const Warning& warning : split.warnings)
+        lines << warningText(warning);
+    note_->setText(lines.join(QLatin1Char('\n')));
 }
 
 } // namespace spanwright

@@ -2,26 +2,34 @@
 #pragma once
 
 #include "core/split/VarianceSplit.h"
+#include "ui/bench/FiguresTable.h"
 
 #include <QDialog>
 
+class QLabel;
+
 namespace spanwright {
 
-/// One source of the spread as it stands in the table.
-struct SplitLine {
-    QString source, sumOfSquares, degreesOfFreedom, meanSquare, f, p, share;
-    int level = 0; ///< how far the source is indented
-};
-std::vector<SplitLine> splitLines(const VarianceSplit& split);
-/// The table for a spreadsheet, with a heading.
-QString splitTableText(const VarianceSplit& split, const QString& unit);
+class Workbench;
 
-/// The figures behind the split picture, to be copied.
+/// The variance split as rows of a table: source, sum of squares, degrees of freedom, mean square, F, p, share. Lack of fit stands
+/// there up to three times, each test by its name.
+QStringList splitHeadings(const QString& unit);
+std::vector<FiguresRow> splitRows(const VarianceSplit& split);
+
+/// The figures behind the split picture, to be copied and, when wanted, printed on the certificate.
 class SplitTable : public QDialog {
     Q_OBJECT
 
   public:
-    SplitTable(const VarianceSplit& split, const QString& unit, QWidget* parent = nullptr);
+    explicit SplitTable(Workbench& workbench, QWidget* parent = nullptr);
+
+  private:
+    void refresh();
+
+    Workbench& workbench_;
+    FiguresTable* table_;
+    QLabel* note_;
 };
 
 } // namespace spanwright

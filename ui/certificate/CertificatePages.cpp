@@ -118,9 +118,13 @@ Pages certificatePages(const Certificate& certificate, const QStringList& gaps) 
         addResults(flow, certificate, section);
     addFunction(flow, certificate);
     for (const PhaseSection& section : certificate.phases)
+        addSplit(flow, certificate, section);
+    for (const PhaseSection& section : certificate.phases)
         addBudget(flow, certificate, section);
     for (const PhaseSection& section : certificate.phases)
         addPerformance(flow, certificate, section);
+    for (const PhaseSection& section : certificate.phases)
+        addForce(flow, certificate, section);
     addExclusions(flow, certificate);
     addStatements(flow, certificate, gaps);
     addSignOffs(flow, certificate);

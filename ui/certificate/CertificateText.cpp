@@ -48,6 +48,9 @@ QString CertificateText::of(Statement statement, Sentence& facts) {
         return tr("As left, rising and falling errors near %1 have opposite signs: no adjustment of zero or span removes this "
                   "hysteresis.")
             .arg(digitsText(facts.plain("set_point").toStdString()));
+    case Statement::ManyExcluded:
+        return tr("Of the %1 readings %2, %3 are excluded, more than the limit of %4 %. They are listed with their reasons.")
+            .arg(facts.plain("of"), phaseOf(facts), facts.plain("count"), digitsText(facts.plain("limit").toStdString()));
     case Statement::NoAsFound:
         return tr("Results from before the adjustment are not available: %1.").arg(stated(facts, "reason"));
     case Statement::Replaces:

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/record/Fields.h"
 #include "ui/certificate/CertificateText.h"
+#include "ui/look/NumberText.h"
 #include "ui/words/Sentence.h"
 #include "ui/words/Words.h"
 
@@ -92,7 +93,8 @@ QString GapText::ofResults(Gap gap, Sentence& facts) {
         return tr("%1: %2 of %3 planned readings are there.").arg(phase(facts), facts.plain("complete"), facts.plain("planned"));
     case Gap::ExclusionWithoutReason: return tr("%1 excluded readings have no reason in words.").arg(facts.plain("count"));
     case Gap::ManyExcluded:
-        return tr("%1: %2 of %3 readings are excluded, more than the limit.").arg(phase(facts), facts.plain("count"), facts.plain("of"));
+        return tr("%1: %2 of %3 readings are excluded, more than the limit of %4 %.")
+            .arg(phase(facts), facts.plain("count"), facts.plain("of"), significantText(100 * facts.plain("limit").toDouble(), 3));
     case Gap::NoUncertainty: return tr("%1: the uncertainty is not stated at every point.").arg(phase(facts));
     case Gap::NoRepeatability: return tr("%1: no reading was repeated, so the budget holds no repeatability.").arg(phase(facts));
     case Gap::OmittedWithoutReason: {

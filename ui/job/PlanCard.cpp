@@ -19,20 +19,44 @@ namespace spanwright {
 
 namespace {
 
-QString setPointsText(const std::vector<Decimal>& points) {
+QString numbersText(const std::vector<Decimal>& points) {
     QStringList texts;
     for (const Decimal& point : points)
         texts << typedText(point);
     return texts.join(QStringLiteral("; "));
 }
 
+Result<std::vector<Decimal>> parseNumbers(const QString& text) {
+    // A comma followed by a blank separates; any other comma is a decimal mark.
+    static const QRegularExpression between(QStringLiteral("\\s*;\\s*|,\\s+|\\s+"));
+    std::vector<Decimal> numbers;
+    for (const QString& piece : text.trimmed().split(between, Qt::SkipEmptyParts)) {
+        Result<Decimal> number = parseTyped(piece);
+        if (!number)
+            return number.error();
+        numbers.push_back(*number);
+    }
+    return numbers;
+}
+
 FieldBinding setPointsBinding() {
-    return {[](const Record& record) { return setPointsText(record.plan.setPoints); },
+    return {[](const Record& record) { return numbersText(record.plan.setPoints); },
             [](const Record& record, const QString& text) -> Result<std::unique_ptr<RecordCommand>> {
                 Result<std::vector<Decimal>> points = parseSetPoints(text);
                 if (!points)
                     return points.error();
                 return changePart(record, &Record::plan, PlanCard::tr("set points"), [&](Plan& plan) { plan.setPoints = *points; });
+            }};
+}
+
+/// Angles in the order of the runs, each as often as it was typed.
+FieldBinding positionsBinding() {
+    return {[](const Record& record) { return numbersText(record.plan.positions); },
+            [](const Record& record, const QString& text) -> Result<std::unique_ptr<RecordCommand>> {
+                Result<std::vector<Decimal>> positions = parseNumbers(text);
+                if (!positions)
+                    return positions.error();
+                return changePart(record, &Record::plan, PlanCard::tr("mounting positions"), [&](Plan& plan) { plan.positions = *positions; });
             }};
 }
 
@@ -45,17 +69,12 @@ void sortAndUnite(std::vector<Decimal>& points) {
 } // namespace
 
 Result<std::vector<Decimal>> parseSetPoints(const QString& text) {
-    // A comma followed by a blank separates; any other comma is a decimal mark.
-    static const QRegularExpression between(QStringLiteral("\\s*;\\s*|,\\s+|\\s+"));
-    std::vector<Decimal> points;
-    for (const QString& piece : text.trimmed().split(between, Qt::SkipEmptyParts)) {
-        Result<Decimal> point = parseTyped(piece);
-        if (!point)
-            return point.error();
-        points.push_back(*point);
-    }
-    sortAndUnite(points);
-    return points;
+    Result<std::vector<Decimal>> points = parseNumbers(text);
+    if (!points)
+        return points;
+    std::vector<Decimal> sorted = *points;
+    sortAndUnite(sorted);
+    return sorted;
 }
 
 std::vector<Decimal> evenSetPoints(const Decimal& from, const Decimal& to, int count) {
@@ -129,6 +148,9 @@ PlanCard::PlanCard(Workbench& bench, QWidget* parent)
     count("plan.repeats", tr("Readings a visit"), 1, 99, &Plan::repeats);
     count("plan.dwell_seconds", tr("Least wait, seconds"), 0, 86400, &Plan::dwellSeconds);
     count("plan.preloads", tr("Preloads"), 0, 99, &Plan::preloads);
+    FieldBox* positions = fieldBox(bench, QStringLiteral("plan.positions"), tr("Turned to, degrees, run by run"), positionsBinding());
+    positions->findChild<FieldLine*>()->setPlaceholderText(tr("not turned; for a force transducer: 0; 0; 120; 240"));
+    grid->add(positions, 3);
     grid->add(fieldCheck(bench, QStringLiteral("plan.reference_typed"), tr("The reference is typed at each reading"), &Record::plan,
                          [](Plan& plan) -> bool& { return plan.referenceTyped; }),
               3);
@@ -176,6 +198,9 @@ void PlanCard::showSummary() {
                                      : tr("%n reading(s) as found", nullptr, found);
     if (left > 0)
         text += tr(", %n as left", nullptr, left);
+    const auto turned = static_cast<int>(plan.positions.size());
+    if (turned > 0 && turned < plan.runs)
+        text += tr(". Runs after run %1 have no position and take no part in the force figures").arg(turned);
     summary_->setText(text);
     from_->setPlaceholderText(shownNumber(bench_.record().item.rangeLow));
     to_->setPlaceholderText(shownNumber(bench_.record().item.rangeHigh));

@@ -75,6 +75,14 @@ QString significantText(double value, int digits, const QLocale& locale) {
            superscript(exponent);
 }
 
+QString placeText(double value, const QLocale& locale) {
+    if (!std::isfinite(value))
+        return missing(value);
+    QLocale plain = locale;
+    plain.setNumberOptions(QLocale::OmitGroupSeparator);
+    return plain.toString(value, 'g', 8).replace(QLatin1Char('-'), QChar(0x2212));
+}
+
 QString shareText(double share, const QLocale& locale) {
     if (!std::isfinite(share))
         return missing(share);

@@ -15,6 +15,8 @@ enum class SignShown { Minus, Both };
 QString fixedText(double value, int decimals, SignShown sign = SignShown::Minus, const QLocale& locale = QLocale());
 /// A computed number to `digits` significant digits; an exponent as ×10ⁿ where needed. ∞ and – for infinite and missing.
 QString significantText(double value, int digits, const QLocale& locale = QLocale());
+/// A number that somebody chose, a set point say, no longer than it need be: "5", "2.5".
+QString placeText(double value, const QLocale& locale = QLocale());
 /// A share as a percentage; a share below 1 is never printed as 100 %, one above 0 never as 0 %.
 QString shareText(double share, const QLocale& locale = QLocale());
 /// A p value: "0.34", "< 0.001".

@@ -9,7 +9,7 @@ namespace spanwright {
 QWidget* makeBenchPage(Workbench& bench, const PageLinks& links) {
     auto* page = new BenchPage(bench);
     QObject::connect(page, &BenchPage::budgetRequested, page,
-                     [links](DerivedLine) { links.showField(QStringLiteral("budget"), QStringLiteral("budget.contributions")); });
+                     [links](std::optional<DerivedLine>) { links.showField(QStringLiteral("budget"), QStringLiteral("budget.contributions")); });
     QObject::connect(page, &BenchPage::planRequested, page,
                      [links] { links.showField(QStringLiteral("job"), QStringLiteral("plan.set_points")); });
     return page;

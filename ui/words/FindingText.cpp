@@ -40,7 +40,7 @@ QString FindingText::sentence(const Finding& finding) {
     case FindingCode::Influential: return tr("The function hangs on a single reading more than on the others.");
     case FindingCode::ExcludedReadings: return tr("Readings were excluded.");
     case FindingCode::SetPointExcluded: return tr("Every reading of a set point is excluded.");
-    case FindingCode::ManyExcluded: return tr("A large share of the readings is excluded; the result may no longer describe the item.");
+    case FindingCode::ManyExcluded: return tr("More readings are excluded than the limit allows; the result may no longer describe the item.");
     case FindingCode::TooFewReadings: return tr("There are few readings for this function, so its uncertainty is poorly known.");
     case FindingCode::OutsideBand: return tr("Readings lie outside the band in which new readings are expected.");
     case FindingCode::DegreeNotJustified: return tr("The highest term of the function is not supported by the readings.");
@@ -104,6 +104,8 @@ QString FindingText::figure(const Figure& figure, const Record& record) {
         return tr("at %1").arg(withUnit(record.item.reference));
     if (name == "share")
         return shareText(figure.value);
+    if (name == "exclusion_limit")
+        return tr("limit %1").arg(shareText(figure.value));
     if (name == "count")
         return tr("%n reading(s)", nullptr, static_cast<int>(figure.value));
     if (name == "values_outside")

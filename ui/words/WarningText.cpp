@@ -32,6 +32,7 @@ constexpr Code figures[] = {
     {"error", QT_TRANSLATE_NOOP("WarningText", "Error of indication")},
     {"repeatability", QT_TRANSLATE_NOOP("WarningText", "Repeatability")},
     {"lack_of_fit", QT_TRANSLATE_NOOP("WarningText", "Lack of fit")},
+    {"lack_of_fit_adjusted", QT_TRANSLATE_NOOP("WarningText", "Lack of fit after direction and run")},
     {"span", QT_TRANSLATE_NOOP("WarningText", "The output span")},
     {"results", QT_TRANSLATE_NOOP("WarningText", "Results at each set point")},
     {"durbin_watson", QT_TRANSLATE_NOOP("WarningText", "The p value of the Durbin–Watson test")},
@@ -64,7 +65,8 @@ constexpr Code reasons[] = {
 
 constexpr Code methods[] = {
     {"normal", QT_TRANSLATE_NOOP("WarningText", "the normal distribution stands in for the exact one")},
-    {"polynomial", QT_TRANSLATE_NOOP("WarningText", "the function is taken as linear in its coefficients")},
+    {"linearised", QT_TRANSLATE_NOOP("WarningText", "the function is not linear in its coefficients and is taken by its tangent")},
+    {"mean-indication", QT_TRANSLATE_NOOP("WarningText", "the function gives the reference, and is taken at the mean indication of each set point")},
     {"mean-number", QT_TRANSLATE_NOOP("WarningText", "set points have different numbers of readings, and their mean is taken")},
     {"reference-itself", QT_TRANSLATE_NOOP("WarningText", "the item's range is not stated; a perfect item is taken to show the reference itself")},
     {"end-points", QT_TRANSLATE_NOOP("WarningText", "the item's range is not stated; the means at both ends stand in for it")},

@@ -35,6 +35,13 @@ Record loadCell() {
     return record;
 }
 
+std::vector<Decimal> positions(std::initializer_list<const char*> degrees) {
+    std::vector<Decimal> all;
+    for (const char* one : degrees)
+        all.push_back(number(one));
+    return all;
+}
+
 const ForceStep& at(const ForceFigures& figures, double force) {
     for (const ForceStep& step : figures.steps)
         if (std::abs(step.force - force) < 1e-9)
@@ -51,7 +58,7 @@ class ForceFiguresTest : public QObject {
     // Figures computed beside the invented readings, to the digits given there.
     void loadCellGivesTheFiguresOfItsDescription() {
         const Record record = loadCell();
-        const auto figures = forceFigures(makeSample(record, Phase::AsFound), record.choices, 0.000002);
+        const auto figures = forceFigures(makeSample(record, Phase::AsFound), record.choices, 0.000002, positions({"0", "0", "120", "240"}));
         QVERIFY(figures);
         QCOMPARE(figures->degree, 2);
         QVERIFY(std::abs(figures->residualSd - 2.34e-5) < 0.005e-5);
@@ -91,7 +98,7 @@ class ForceFiguresTest : public QObject {
             add(run, Direction::Falling, "2", run == 3 ? "20.5" : "20.1");
             add(run, Direction::Falling, "0", "0.12");
         }
-        const auto figures = forceFigures(makeSample(record, Phase::AsFound), record.choices, 0.1);
+        const auto figures = forceFigures(makeSample(record, Phase::AsFound), record.choices, 0.1, positions({"0", "0", "180"}));
         QVERIFY(figures);
         QVERIFY(std::abs(*at(*figures, 1).repeatability - 100 * 0.1 / 10.05) < 1e-9);
         QVERIFY(std::abs(*at(*figures, 2).reproducibility - 100 * 0.2 / 20.1) < 1e-9);
@@ -101,11 +108,35 @@ class ForceFiguresTest : public QObject {
         QCOMPARE(figures->lowerLimitFactor, std::max(2.4 * figures->residualSd, 0.1));
     }
 
+    void theFirstRunInEachPositionIsARotatedOne() {
+        const std::vector<std::int32_t> runs{1, 2, 3, 4, 5, 6};
+        const auto series = turnedSeries(positions({"0", "0", "120", "-240", "240", "600"}), runs); // −240° is 120°, 600° is 240°
+        QVERIFY(series);
+        QCOMPARE(series->rotated, std::vector<int>({1, 3, 5}));
+        QCOMPARE(series->first, std::optional(1));
+        QCOMPARE(series->again, std::optional(2));
+        const auto apart = turnedSeries(positions({"0", "120", "240"}), runs);
+        QVERIFY(apart && !apart->again);
+        QCOMPARE(apart->rotated, std::vector<int>({1, 2, 3}));
+    }
+
+    void largestFiguresSayWhereTheyOccur() {
+        const Record record = loadCell();
+        const auto figures = forceFigures(makeSample(record, Phase::AsFound), record.choices, 0.000002, positions({"0", "0", "120", "240"}));
+        QVERIFY(figures && figures->reproducibility && figures->repeatability && figures->interpolation && !figures->reversibility);
+        for (const ForceStep& step : figures->steps) {
+            QVERIFY(*step.reproducibility <= figures->reproducibility->value);
+            QVERIFY(std::abs(*step.interpolation) <= std::abs(figures->interpolation->value));
+        }
+        QCOMPARE(*at(*figures, figures->reproducibility->force).reproducibility, figures->reproducibility->value);
+    }
+
     void withoutRotatedSeriesThereAreNone() {
         const Record record = spanwright::test::pressureTransmitter();
-        ForceSeries none;
-        none.again = 99;
-        QVERIFY(!forceFigures(makeSample(record, Phase::AsFound), record.choices, 0.001, none));
+        const Sample sample = makeSample(record, Phase::AsFound);
+        QVERIFY(!forceFigures(sample, record.choices, 0.001, {}));
+        QVERIFY(!forceFigures(sample, record.choices, 0.001, positions({"0", "0", "360"}))); // a whole turn is none
+        QVERIFY(!forceFigures(sample, record.choices, 0.001, positions({"0", "0", "0", "120"}))); // run 4 was not taken
     }
 };
 

@@ -363,7 +363,7 @@ class BenchTest : public QObject {
         QDialog* table = bench.dialog("splitTable");
         QVERIFY(table);
         table->findChild<QPushButton*>(QStringLiteral("copySplit"))->click();
-        QVERIFY(QApplication::clipboard()->text().contains(QStringLiteral("lack of fit\t0.00023")));
+        QVERIFY(QApplication::clipboard()->text().contains(QStringLiteral("\nlack of fit\t0.00023864\t9\t")));
     }
 
     void aFindingLeadsToItsRemedyOrIsDismissedWithAReason() {

@@ -1,0 +1,104 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/certificate/SplitSection.h"
+
+#include "core/base/Rounding.h"
+#include "core/certificate/ShortText.h"
+
+namespace spanwright {
+
+namespace {
+
+constexpr int SquareDigits = 4, RatioDigits = 3;
+
+Digits significant(double value, int digits) {
+    return shortText(std::stod(significantDigits(value, digits)));
+}
+
+/// Sums of squares differ by orders of magnitude: plain digits where they are few, else with an exponent.
+Digits square(double value) {
+    return significantDigits(value, SquareDigits);
+}
+
+Digits probability(double p) {
+    return p < 0.001 ? "<0.001" : roundedText(p, 3);
+}
+
+SplitTableLine lineOf(SplitPart part, const SplitRow& row, int level) {
+    SplitTableLine line;
+    line.part = part;
+    line.level = level;
+    line.sumOfSquares = square(row.ss);
+    line.degreesOfFreedom = row.df;
+    if (row.ms)
+        line.meanSquare = square(*row.ms);
+    if (row.f)
+        line.f = significant(*row.f, RatioDigits);
+    if (row.p)
+        line.p = probability(*row.p);
+    return line;
+}
+
+Digits percent(const std::optional<double>& value) {
+    constexpr int decimals = 4;
+    return value ? roundedText(*value, decimals) : Digits{};
+}
+
+} // namespace
+
+std::optional<SplitSection> splitSection(const PhaseEvaluation& phase) {
+    if (!phase.fit || !phase.split)
+        return std::nullopt;
+    const VarianceSplit& split = *phase.split;
+    SplitSection section;
+    section.function = phase.fit->function;
+    section.direction = phase.fit->direction;
+    section.weighted = phase.fit->weights != Weights::Equal;
+    section.against = split.against;
+    const auto add = [&](SplitPart part, const std::optional<SplitRow>& row, int level) {
+        if (!row)
+            return;
+        section.lines.push_back(lineOf(part, *row, level));
+        if (split.total.ss > 0)
+            section.lines.back().share = row->ss / split.total.ss;
+    };
+    const auto addTest = [&](SplitTableLine::Test test, const std::optional<SplitRow>& row) {
+        if (!row || !row->f)
+            return;
+        section.lines.push_back(lineOf(SplitPart::LackOfFit, *row, 3));
+        section.lines.back().test = test;
+    };
+    add(SplitPart::Total, split.total, 0);
+    add(SplitPart::Regression, split.regression, 1);
+    add(SplitPart::Residual, split.residual, 1);
+    add(SplitPart::LackOfFit, split.lackOfFit, 2);
+    addTest(SplitTableLine::Test::Adjusted, split.lackOfFitAdjusted);
+    if (split.against != SplitPart::PureError)
+        addTest(SplitTableLine::Test::Naive, split.lackOfFitNaive);
+    add(SplitPart::PureError, split.pureError, 2);
+    add(SplitPart::Hysteresis, split.hysteresis, 3);
+    add(SplitPart::RunOffset, split.runOffset, 3);
+    add(SplitPart::RunSlope, split.runSlope, 3);
+    add(SplitPart::Repeatability, split.repeatability, 3);
+    return section;
+}
+
+std::optional<ForceSection> forceSection(const PhaseEvaluation& phase) {
+    if (!phase.force)
+        return std::nullopt;
+    constexpr int meanDigits = 7;
+    const ForceFigures& figures = *phase.force;
+    ForceSection section;
+    for (const ForceStep& step : figures.steps)
+        section.steps.push_back({shortText(step.force), significant(step.mean, meanDigits), percent(step.reproducibility), percent(step.repeatability),
+                                 percent(step.interpolation), percent(step.reversibility)});
+    section.zero = percent(figures.zero);
+    section.degree = figures.degree;
+    section.interpolationDegree = figures.interpolationDegree;
+    section.lowerLimitFactor = significant(figures.lowerLimitFactor, RatioDigits);
+    section.lowerLimitForce = significant(figures.lowerLimitForce, RatioDigits);
+    section.lowestForceClassA = significant(figures.lowestForceClassA, RatioDigits);
+    section.lowestForceClassAA = significant(figures.lowestForceClassAA, RatioDigits);
+    return section;
+}
+
+} // namespace spanwright
