@@ -214,15 +214,14 @@ void addRuns(const Sample& sample, const Places& places, std::span<const T> e, s
             scale[runs + r] += plain(one.weight * x * x);
             system.b[r] += one.sum;
             system.b[runs + r] += x * one.sum;
+            const T share = one.weight / cellSums.weight[c];
             for (const auto& other : inside) {
                 const auto s = static_cast<std::size_t>(other.run);
-                T entry = -one.weight * other.weight / cellSums.weight[c];
-                if (r == s)
-                    entry += one.weight;
+                const T entry = (r == s ? one.weight : T(0.0)) - share * other.weight, sloped = x * entry;
                 system.at(r, s) += entry;
-                system.at(r, runs + s) += x * entry;
-                system.at(runs + r, s) += x * entry;
-                system.at(runs + r, runs + s) += x * x * entry;
+                system.at(r, runs + s) += sloped;
+                system.at(runs + r, s) += sloped;
+                system.at(runs + r, runs + s) += x * sloped;
             }
             chain.cellRuns.push_back({static_cast<std::int32_t>(c), one.run, one.n, plain(one.weight),
                                       plain(cellSums.mean[c] + one.sum / one.weight)});

@@ -51,9 +51,11 @@ struct RunSystem {
                 if (used[i])
                     continue;
                 const T factor = at(i, pivot) / at(pivot, pivot);
-                for (std::size_t j = 0; j < size; ++j)
-                    if (!used[j])
+                for (std::size_t j = 0; j <= i; ++j)
+                    if (!used[j]) {
                         at(i, j) -= factor * at(pivot, j);
+                        at(j, i) = at(i, j);
+                    }
                 b[i] -= factor * b[pivot];
             }
         }

@@ -65,7 +65,6 @@ CertificatePage::CertificatePage(Workbench& workbench, CertificateAsks asks, QWi
     row->addWidget(preview_, 1);
     row->addWidget(buildSide());
     connect(&workbench_, &Workbench::evaluationChanged, this, &CertificatePage::refresh);
-    connect(&workbench_, &Workbench::recordChanged, this, &CertificatePage::refresh);
     refresh();
 }
 

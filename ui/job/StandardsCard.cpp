@@ -62,7 +62,6 @@ StandardsCard::StandardsCard(Workbench& bench, QWidget* parent)
             choose(row);
     });
     body()->addWidget(table_);
-    connect(&bench, &Workbench::recordChanged, this, &StandardsCard::show);
     connect(&bench, &Workbench::evaluationChanged, this, &StandardsCard::show);
     show();
 }

@@ -72,18 +72,24 @@ void PlotView::setContent(Content content) {
     content_ = std::move(content);
     const bool empty = !content_.emptyText.isEmpty();
     grid_->setVisible(!empty);
-    line_->replace(listOf(content_.line));
-    edges_[0]->replace(listOf(content_.inner.low));
-    edges_[1]->replace(listOf(content_.inner.high));
-    edges_[2]->replace(listOf(content_.outer.low));
-    edges_[3]->replace(listOf(content_.outer.high));
+    const std::pair<QLineSeries*, const std::vector<QPointF>*> series[] = {
+        {line_, &content_.line},
+        {edges_[0], &content_.inner.low},
+        {edges_[1], &content_.inner.high},
+        {edges_[2], &content_.outer.low},
+        {edges_[3], &content_.outer.high}};
+    // Emptied while the range changes: the chart would lay out the old points once more for each axis.
+    for (const auto& [line, points] : series)
+        line->clear();
+    showRange(zoomedAcross_ && !empty ? frame_.x : content_.x, zoomedUp_ && !empty ? frame_.y : content_.y);
+    for (const auto& [line, points] : series)
+        line->replace(listOf(*points));
     inner_->setVisible(!content_.inner.low.empty());
     outer_->setVisible(!content_.outer.low.empty());
     line_->setVisible(!content_.line.empty());
     cloud_->setPoints(empty ? PlotPoints{} : std::move(content_.points));
     content_.points = {};
     ink_->setEmptyText(content_.emptyText);
-    showRange(zoomedAcross_ && !empty ? frame_.x : content_.x, zoomedUp_ && !empty ? frame_.y : content_.y);
 }
 
 void PlotView::setStrokes(std::vector<PlotStroke> strokes) {
