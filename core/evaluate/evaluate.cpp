@@ -6,6 +6,7 @@
 #include "core/evaluate/Dates.h"
 #include "core/evaluate/RowTable.h"
 #include "core/fit/fitFunction.h"
+#include "core/fit/fitMany.h"
 #include "core/verdict/makeVerdict.h"
 
 #include <algorithm>
@@ -65,7 +66,7 @@ class PhaseSteps {
             examine(fitted->residuals);
             draw();
             answer();
-            compare();
+            compare(*fitted);
         }
         interpret(residuals);
         if (progress_.cancelled())
@@ -117,15 +118,17 @@ class PhaseSteps {
             result_.read.push_back(readBack(*result_.fit, y.toDouble(), choices_.repeats));
     }
 
-    /// The same fit with the excluded readings among them.
-    void compare() {
+    /// The same function with the excluded readings among them.
+    void compare(const FitOutcome& without) {
         if (!withExcluded_)
             return;
-        const Result<FitOutcome> other = fitFunction(*withExcluded_, choices_);
+        std::optional<Fit> other = fitTakenBackIn(without, used_, *withExcluded_, choices_);
         if (!other)
-            return;
-        result_.withoutExclusions = WithoutExclusions{other->fit.coefficients, other->fit.residualSd,
-                                                      largestHalfWidth(other->fit, other->fit.low, other->fit.high)};
+            if (Result<FitOutcome> fitted = fitFunction(*withExcluded_, choices_))
+                other = std::move(fitted->fit);
+        if (other)
+            result_.withoutExclusions =
+                WithoutExclusions{other->coefficients, other->residualSd, largestHalfWidth(*other, other->low, other->high)};
     }
 
     void interpret(const Residuals* residuals) {

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/fit/StreamedFit.h"
 
+#include <algorithm>
 #include <cmath>
 
 namespace spanwright {
@@ -242,6 +243,10 @@ std::optional<StreamedFit> changedBy(const StreamedFit& fit, StreamedChange chan
     for (std::size_t j = 0; j < width; ++j)
         changed.sums.cross[j] += sign * chebyshev[j] * v;
     changed.sums.square += sign * v * v;
+    if (change == StreamedChange::Include) {
+        changed.sums.lowX = std::min(changed.sums.lowX, x);
+        changed.sums.highX = std::max(changed.sums.highX, x);
+    }
     changed.sums.n = change == StreamedChange::Exclude ? fit.sums.n - 1 : fit.sums.n + 1;
 
     const auto basis = basisInChebyshev(fit.sums.map, fit.sums.degree, fit.constant);

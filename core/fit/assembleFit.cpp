@@ -191,7 +191,7 @@ FitOutcome assembleFit(const FitTask& task, SolvedModel solved) {
     dropRounding(solved.linear, task.y);
     const SumsOfSquares sums = sumsOf(task, solved.linear);
     Residuals residuals = residualsOf(task, solved.linear);
-    return {assembleFigures(task, std::move(solved), sums), std::move(residuals)};
+    return {assembleFigures(task, std::move(solved), sums), std::move(residuals), {}};
 }
 
 } // namespace spanwright

@@ -7,9 +7,12 @@
 
 namespace spanwright {
 
+struct StreamedFit;
+
 struct FitOutcome {
     Fit fit;
     Residuals residuals;
+    std::shared_ptr<const StreamedFit> streamed; ///< the sums behind a fit of very many readings; else null
 };
 
 /// Fits the chosen calibration function: min Σ w (y − f(x))², y the indication (or the reference, when that is what the

@@ -46,6 +46,42 @@ SolvedModel solvedModel(const StreamedFit& fit) {
     return solved;
 }
 
+GridColumn abscissaOf(const ExactGrids& grids, FitDirection direction) {
+    return direction == FitDirection::Indication ? GridColumn{grids.reference, grids.referenceScale}
+                                                 : GridColumn{grids.indication, grids.indicationScale};
+}
+
+GridColumn ordinateOf(const ExactGrids& grids, FitDirection direction) {
+    return direction == FitDirection::Indication ? GridColumn{grids.indication, grids.indicationScale}
+                                                 : GridColumn{grids.reference, grids.referenceScale};
+}
+
+/// The figures of a streamed fit of the readings of a sample.
+Fit figuresOf(const StreamedFit& streamed, const Shape& shape, const Sample& sample, const Choices& choices) {
+    const FitDirection direction = directionOf(choices);
+    const bool indication = direction == FitDirection::Indication;
+    const StreamMap& map = streamed.sums.map;
+    const auto place = [&](std::int64_t m) { return toDouble(toDoubleDouble(m) * powerOfTen(-map.xScale)); };
+    const FitTask task{sample,
+                       choices,
+                       direction,
+                       indication ? sample.reference : sample.indication,
+                       indication ? sample.indication : sample.reference,
+                       indication ? sample.uReference : sample.uIndication,
+                       indication ? sample.uIndication : sample.uReference,
+                       std::make_shared<PolynomialModel>(static_cast<std::size_t>(shape.degree),
+                                                         shape.constant == StreamedConstant::With
+                                                             ? PolynomialConstant::With
+                                                             : PolynomialConstant::Without,
+                                                         map.centre(), map.half()),
+                       {},
+                       place(streamed.sums.lowX),
+                       place(streamed.sums.highX)};
+    const SolvedModel solved = solvedModel(streamed);
+    const DoubleDouble total = streamed.totalSs * sqr(map.unit());
+    return assembleFigures(task, solved, {total, total - solved.linear.residualSs});
+}
+
 } // namespace
 
 std::optional<FitOutcome> fitMany(const Sample& sample, const Choices& choices) {
@@ -54,44 +90,42 @@ std::optional<FitOutcome> fitMany(const Sample& sample, const Choices& choices) 
     if (!shape || !even || choices.method != Method::LeastSquares)
         return std::nullopt;
     const FitDirection direction = directionOf(choices);
-    const bool indication = direction == FitDirection::Indication;
-    const ExactGrids& grids = *sample.grids;
-    GridColumn x{grids.reference, grids.referenceScale}, y{grids.indication, grids.indicationScale};
-    if (!indication)
-        std::swap(x, y);
+    const GridColumn x = abscissaOf(*sample.grids, direction), y = ordinateOf(*sample.grids, direction);
     const unsigned threads = std::clamp(std::thread::hardware_concurrency(), 1u, 4u);
-    const auto streamed = fitStreamed(x, y, shape->degree, shape->constant, threads);
+    auto streamed = fitStreamed(x, y, shape->degree, shape->constant, threads);
     if (!streamed || !(streamed->residualSs > 0.0))
         return std::nullopt;
 
-    const StreamMap& map = streamed->sums.map;
-    const auto place = [&](std::int64_t m) { return toDouble(toDoubleDouble(m) * powerOfTen(-x.scale)); };
-    const FitTask task{sample,
-                       choices,
-                       direction,
-                       indication ? sample.reference : sample.indication,
-                       indication ? sample.indication : sample.reference,
-                       indication ? sample.uReference : sample.uIndication,
-                       indication ? sample.uIndication : sample.uReference,
-                       std::make_shared<PolynomialModel>(static_cast<std::size_t>(shape->degree),
-                                                         shape->constant == StreamedConstant::With
-                                                             ? PolynomialConstant::With
-                                                             : PolynomialConstant::Without,
-                                                         map.centre(), map.half()),
-                       {},
-                       place(streamed->sums.lowX),
-                       place(streamed->sums.highX)};
-    const SolvedModel solved = solvedModel(*streamed);
-    const DoubleDouble total = streamed->totalSs * sqr(map.unit());
-    FitOutcome outcome{assembleFigures(task, solved, {total, total - solved.linear.residualSs}), {}};
-
+    FitOutcome outcome{figuresOf(*streamed, *shape, sample, choices), {}, {}};
     StreamedRows rows = streamedRows(*streamed, x, y, threads);
+    const std::vector<double>& ordinate =
+        direction == FitDirection::Indication ? sample.indication.high : sample.reference.high;
     outcome.residuals.fitted.resize(rows.residual.size());
     for (std::size_t i = 0; i < rows.residual.size(); ++i)
-        outcome.residuals.fitted[i] = task.y.high[i] - rows.residual[i];
+        outcome.residuals.fitted[i] = ordinate[i] - rows.residual[i];
     outcome.residuals.e.high = std::move(rows.residual);
     outcome.residuals.leverage = std::move(rows.leverage);
+    outcome.streamed = std::make_shared<const StreamedFit>(std::move(*streamed));
     return outcome;
+}
+
+std::optional<Fit> fitTakenBackIn(const FitOutcome& outcome, const Sample& used, const Sample& all, const Choices& choices) {
+    const auto shape = shapeOf(choices.function);
+    if (!shape || !outcome.streamed || !all.grids)
+        return std::nullopt;
+    const FitDirection direction = directionOf(choices);
+    const GridColumn x = abscissaOf(*all.grids, direction), y = ordinateOf(*all.grids, direction);
+    std::optional<StreamedFit> fit = *outcome.streamed;
+    std::size_t next = 0;
+    for (std::size_t i = 0; fit && i < all.size(); ++i) {
+        if (next < used.size() && used.rows[next] == all.rows[i])
+            ++next;
+        else
+            fit = changedBy(*fit, StreamedChange::Include, x.grid[i], y.grid[i]);
+    }
+    if (!fit)
+        return std::nullopt;
+    return figuresOf(*fit, *shape, all, choices);
 }
 
 } // namespace spanwright

@@ -11,4 +11,8 @@ namespace spanwright {
 /// function or method is chosen, or where the streams would lose digits.
 std::optional<FitOutcome> fitMany(const Sample& sample, const Choices& choices);
 
+/// The same function through `all`, from a fit of the readings `used` among them: each of the others is added to its sums,
+/// which takes no pass over the readings. Empty where the fit was not streamed.
+std::optional<Fit> fitTakenBackIn(const FitOutcome& outcome, const Sample& used, const Sample& all, const Choices& choices);
+
 } // namespace spanwright

@@ -8,6 +8,7 @@
 #include <QtTest>
 
 #include <cmath>
+#include <random>
 
 using namespace spanwright;
 using namespace spanwright::test;
@@ -47,6 +48,7 @@ class TestEvaluate : public QObject {
     void everyReadingStandsInTheTableInTheOrderTaken();
     void anExcludedReadingIsMeasuredFromTheFunctionFittedWithoutIt();
     void whatExcludingDidIsTheFitOverAllReadings();
+    void veryManyReadingsAreTakenBackInFromTheirSums();
     void aReadingWithoutIndicationTakesNoPart();
     void figuresByHand();
     void answersStandInTheOrderAsked();
@@ -120,6 +122,33 @@ void TestEvaluate::whatExcludingDidIsTheFitOverAllReadings() {
     QCOMPARE(without.residualSd, asFound(whole).fit->residualSd);
     QVERIFY(without.largestExpanded > 0);
     QVERIFY(asFound(less).fit->residualSd != without.residualSd);
+}
+
+void TestEvaluate::veryManyReadingsAreTakenBackInFromTheirSums() {
+    std::mt19937_64 random(5);
+    ReadingColumns::Block block;
+    block.n = ManyReadings + 50;
+    for (std::size_t i = 0; i < block.n; ++i) {
+        const auto x = static_cast<std::int64_t>(random() % 10'000'000);
+        block.reference.push_back(Decimal{x, 6, {}});
+        block.indication.push_back(Decimal{40'000 + x * 16 / 1000 + x * x / 10'000'000'000 + static_cast<std::int64_t>(random() % 80), 4, {}});
+    }
+    Record record;
+    record.choices.function = {FunctionFamily::Polynomial, 2};
+    record.readings.edit().appendBlock(std::move(block), 1);
+    const Evaluation whole = evaluated(record);
+    for (const std::size_t row : {std::size_t{0}, std::size_t{7}, ManyReadings})
+        record.exclusions.edit().add({record.readings->ids()[row], ExclusionReason::NotSettled, {}, "IO", 0});
+    const Evaluation less = evaluated(record);
+    const WithoutExclusions& without = *asFound(less).withoutExclusions;
+    const Fit& fit = *asFound(whole).fit;
+    QCOMPARE(asFound(less).fit->used, ManyReadings + 47);
+    for (std::size_t k = 0; k < 3; ++k) {
+        QVERIFY(std::abs(without.coefficients[k].value / fit.coefficients[k].value - 1) < 1e-11);
+        QVERIFY(std::abs(without.coefficients[k].standardUncertainty / fit.coefficients[k].standardUncertainty - 1) < 1e-11);
+    }
+    QVERIFY(std::abs(without.residualSd / fit.residualSd - 1) < 1e-11);
+    QVERIFY(without.residualSd != asFound(less).fit->residualSd);
 }
 
 void TestEvaluate::aReadingWithoutIndicationTakesNoPart() {
