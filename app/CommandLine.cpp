@@ -25,6 +25,7 @@ constexpr Command commands[] = {
     {"check", checkCommand},
     {"certificate", certificateCommand},
     {"convert", convertCommand},
+    {"coefficients", coefficientsCommand},
     {"self-test", selfTestCommand},
 };
 

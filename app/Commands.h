@@ -10,6 +10,7 @@ int figuresCommand(const Words& words, Console console);
 int checkCommand(const Words& words, Console console);
 int certificateCommand(const Words& words, Console console);
 int convertCommand(const Words& words, Console console);
+int coefficientsCommand(const Words& words, Console console);
 int selfTestCommand(const Words& words, Console console);
 
 } // namespace spanwright

@@ -1,119 +1,149 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/ChoiceOptions.h"
 #include "app/Commands.h"
 #include "app/RecordFile.h"
 #include "app/TextApplication.h"
+#include "core/session/WholeFile.h"
+#include "core/base/Rounding.h"
+#include "core/evaluate/Calibration.h"
 #include "core/evaluate/evaluate.h"
-#include "core/exchange/TableWriter.h"
-#include "core/interval/ReadBack.h"
+#include "core/exchange/AddedColumns.h"
+#include "ui/words/Words.h"
 
-#include <QSaveFile>
+#include <QCoreApplication>
 
-#include <cmath>
+#include <array>
 #include <ostream>
 
 namespace spanwright {
 
 namespace {
 
-constexpr OptionSpec ownOptions[] = {{"--with"}, {"--to"}, {"--indication"}, {"--decimal"}, {"--separator"}, {"--encoding"}, {"--missing"}};
+constexpr OptionSpec ownOptions[] = {{"--with"}, {"--to"}, {"--replace", OptionKind::Flag}, {"--phase"}, {"--repeats"},
+                                     {"--indication"}, {"--decimal"}, {"--separator"}, {"--encoding"}, {"--missing"}};
 
-/// The phase whose function is used: the readings as left describe the item as it is now.
-const PhaseEvaluation* newestFit(const Evaluation& evaluation) {
-    for (const Phase phase : {Phase::AsLeft, Phase::AsFound})
-        if (const PhaseEvaluation* found = evaluation.phase(phase); found != nullptr && found->fit)
-            return found;
-    return nullptr;
+/// The columns behind those of the table.
+std::array<AddedColumn, 4> addedColumns(const Quantity& reference) {
+    return {AddedColumn{reference.name.empty() ? "value" : reference.name, reference.unit}, AddedColumn{"U", reference.unit},
+            AddedColumn{"k", {}}, AddedColumn{"remark", {}}};
 }
 
-std::string heading(const char* what, const Quantity& quantity) {
-    const std::string name = quantity.name.empty() ? what : quantity.name;
-    return quantity.unit.empty() ? name : name + " / " + quantity.unit;
+std::string remark(const ReadValue& value) {
+    std::string text = valueStateText(value.state).toStdString();
+    if (value.state != ValueState::SeveralAnswers)
+        return text;
+    text += ": " + significantDigits(*value.reference, 6);
+    for (const double other : value.others)
+        text += ", " + significantDigits(other, 6);
+    return text;
 }
 
-struct Conversion {
-    std::string table;
-    std::size_t values = 0, without = 0; ///< without: outside the calibrated range, or without one answer
+/// Value, U, k and what there is to say, one row of the table after the other.
+class Conversion {
+  public:
+    Conversion(const Record& record, const PhaseEvaluation& phase, const DecimalColumn& indications)
+        : record_(record), phase_(phase), indications_(indications) {}
+
+    std::vector<AddedCell> cells(std::size_t row) {
+        if (!indications_.has(row)) {
+            ++blank_;
+            return {{}, {}, {}, {"no indication", false}};
+        }
+        ++values_;
+        const ReadValue value = readValue(record_, *phase_.fit, indications_.toDouble(row), record_.choices.repeats);
+        without_ += value.state == ValueState::Sound ? 0 : 1;
+        const StatedValue stated = statedValue(value, phase_.budget.readBack);
+        return {{stated.value, true}, {stated.expanded, true}, {stated.coverageFactor, true}, {remark(value), false}};
+    }
+
+    [[nodiscard]] std::string summary(const std::string& to) const {
+        const auto counted = [](const char* words, std::size_t n) { return QCoreApplication::translate("ConvertCommand", words, nullptr, static_cast<int>(n)); };
+        QString text = counted("%n value(s) written to %1, from the readings %2", values_).arg(QString::fromStdString(to), phaseText(phase_.phase));
+        if (without_ > 0)
+            text += counted("; %n of them without an uncertainty, see the column remark", without_);
+        if (blank_ > 0)
+            text += counted("; %n row(s) without an indication", blank_);
+        return text.toStdString() + '\n';
+    }
+
+  private:
+    const Record& record_;
+    const PhaseEvaluation& phase_;
+    const DecimalColumn& indications_;
+    std::size_t values_ = 0, without_ = 0, blank_ = 0;
 };
 
-/// One line an indication: as typed, the value, its expanded uncertainty (of the budget for a value read back, the largest in
-/// the range) and k. A value outside the calibrated range stands without an uncertainty, and says so.
-Conversion convert(const DecimalColumn& indications, const PhaseEvaluation& phase, const Item& item) {
-    Conversion conversion;
-    TableWriter table;
-    const std::string unit = item.reference.unit.empty() ? std::string() : " / " + item.reference.unit;
-    table.text(heading("indication", item.indication)).text(heading("reference", item.reference)).text("U" + unit).text("k").text("note").endRow();
-    for (std::size_t row = 0; row < indications.size(); ++row) {
-        if (!indications.has(row))
-            continue;
-        const double y = indications.toDouble(row);
-        const ReadBackAnswer answer = readBack(*phase.fit, y, 1);
-        const bool sound = answer.reference && answer.insideRange && answer.others.empty() && phase.budget.readBack;
-        table.number(indications.at(row)).number(answer.reference.value_or(std::nan("")));
-        table.number(sound ? phase.budget.readBack->expandedReference : std::nan(""));
-        table.number(sound ? phase.budget.readBack->coverageFactor : std::nan(""));
-        table.text(sound               ? ""
-                   : !answer.reference ? "no value in the calibrated range"
-                   : !answer.insideRange ? "outside the calibrated range"
-                   : !answer.others.empty() ? "several values"
-                                            : "no uncertainty budget");
-        table.endRow();
-        conversion.values += 1;
-        conversion.without += sound ? 0 : 1;
-    }
-    conversion.table = table.written();
-    return conversion;
+/// One column has no separator: then it is the comma, unless the table has commas of its own.
+CsvRules rulesOfResult(const LoadedIndications& indications, const Arguments& arguments) {
+    CsvRules rules = indications.rules;
+    if (rules.columns.size() == 1 && !arguments.has("--separator") && indications.file.bytes().find(',') == std::string_view::npos)
+        rules.separator = ',';
+    return rules;
 }
 
-Result<void> writeWhole(const std::string& path, const std::string& bytes) {
-    QSaveFile file(QString::fromStdString(path));
-    const auto failed = [&](ErrorCode code) { return Error(code, {{"file", path}, {"reason", file.errorString().toStdString()}}); };
-    if (!file.open(QIODevice::WriteOnly))
-        return failed(ErrorCode::FileNotWritable);
-    if (file.write(bytes.data(), static_cast<qint64>(bytes.size())) != static_cast<qint64>(bytes.size()) || !file.commit())
-        return failed(ErrorCode::FileWriteFailed);
-    return {};
+Result<Arguments> argumentsOf(const Words& words) {
+    auto arguments = parseArguments(words, ownOptions);
+    if (!arguments)
+        return arguments;
+    if (arguments->files.empty())
+        return Error(ErrorCode::UsageNoFile, {{"command", "convert"}});
+    if (arguments->files.size() > 1)
+        return Error(ErrorCode::UsageUnknownCommand, {{"text", arguments->files[1]}});
+    for (const char* option : {"--with", "--to"})
+        if (arguments->value(option).value_or("").empty())
+            return Error(ErrorCode::UsageValueMissing, {{"option", option}});
+    return arguments;
 }
 
 } // namespace
 
 int convertCommand(const Words& words, Console console) {
     const TextApplication application;
-    const auto arguments = parseArguments(words, ownOptions);
+    const auto arguments = argumentsOf(words);
     if (!arguments)
         return refuse(console, arguments.error());
-    if (arguments->files.size() != 1)
-        return refuse(console, Error(ErrorCode::UsageNoFile, {{"command", "convert"}}));
-    for (const char* option : {"--with", "--to"})
-        if (arguments->value(option).value_or("").empty())
-            return refuse(console, Error(ErrorCode::UsageValueMissing, {{"option", option}}));
+    const std::string& from = arguments->files.front();
+    const std::string with = *arguments->value("--with"), to = *arguments->value("--to");
+    const Replacing replacing = arguments->has("--replace") ? Replacing::Allowed : Replacing::Refused;
+    if (const auto free = mayBeWritten(to, {from, with}, replacing); !free)
+        return refuse(console, free.error());
 
-    const std::string with = *arguments->value("--with");
-    const auto session = loadSessionFile(with);
+    auto session = loadSessionFile(with);
     if (!session)
         return refuse(console, session.error());
     if (!session->broken.empty())
         return refuseFile(console, with, session->broken);
+    Record& record = session->record;
+    const auto choices = withOptions(record.choices, *arguments, DecimalMark::Point);
+    if (!choices)
+        return refuse(console, choices.error());
+    record.choices.phase = choices->phase;
+    record.choices.repeats = arguments->has("--repeats") ? choices->repeats : 1;
     Progress progress;
-    const auto evaluation = evaluate(session->record, progress);
+    const auto evaluation = evaluate(record, progress);
     if (!evaluation)
         return refuse(console, evaluation.error().with("file", with));
-    const PhaseEvaluation* phase = newestFit(*evaluation);
+    const PhaseEvaluation* phase = calibrationOf(*evaluation, record.choices.phase);
     if (phase == nullptr)
         return refuse(console, Error(ErrorCode::NoReadings, {{"file", with}}));
 
-    const auto readings = loadIndications(arguments->files.front(), *arguments);
-    if (!readings)
-        return refuse(console, readings.error());
-    for (const std::string& note : readings->notes)
+    const auto indications = loadIndications(from, *arguments, record.item.indication);
+    if (!indications)
+        return refuse(console, indications.error());
+    for (const std::string& note : indications->notes)
         console.err << "spanwright: " << note << '\n';
-    const Conversion conversion = convert(readings->record.readings->indication(), *phase, session->record.item);
-    const auto written = writeWhole(*arguments->value("--to"), conversion.table);
-    if (!written)
+    const PhaseEvaluation* asLeft = evaluation->phase(Phase::AsLeft);
+    if (phase->phase == Phase::AsFound && asLeft != nullptr && asLeft->fit)
+        console.err << "spanwright: " << with << ": there are readings as left too; --phase as-left takes their function\n";
+    Conversion conversion(record, *phase, indications->values);
+    const DecimalMark mark = indications->rules.columns[indications->column].decimal;
+    const auto table = withAddedColumns(indications->file.bytes(), rulesOfResult(*indications, *arguments), mark, addedColumns(record.item.reference),
+                                        [&](std::size_t row) { return conversion.cells(row); });
+    if (!table)
+        return refuse(console, table.error().with("file", from));
+    if (const auto written = writeWhole(to, *table); !written)
         return refuse(console, written.error());
-    console.out << conversion.values << " values written to " << *arguments->value("--to");
-    if (conversion.without > 0)
-        console.out << "; " << conversion.without << " of them without an uncertainty, see the column note";
-    console.out << '\n';
+    console.out << conversion.summary(to);
     return Done;
 }
 

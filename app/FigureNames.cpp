@@ -81,4 +81,16 @@ std::string_view codeName(ConformityState state) {
     return {};
 }
 
+std::string_view codeName(ValueState state) {
+    switch (state) {
+    case ValueState::Sound: return "sound";
+    case ValueState::NoAnswer: return "no-answer";
+    case ValueState::OutsideRange: return "outside-range";
+    case ValueState::SeveralAnswers: return "several-answers";
+    case ValueState::NoFiniteInterval: return "no-finite-interval";
+    case ValueState::NoUncertainty: return "no-uncertainty";
+    }
+    return {};
+}
+
 } // namespace spanwright

@@ -3,6 +3,7 @@
 
 #include "core/base/Warning.h"
 #include "core/diagnose/Finding.h"
+#include "core/evaluate/ReadValue.h"
 #include "core/split/VarianceSplit.h"
 #include "core/verdict/Verdict.h"
 
@@ -18,5 +19,6 @@ std::string_view codeName(Severity severity);
 std::string_view codeName(Remedy remedy);
 std::string_view codeName(SplitPart part);
 std::string_view codeName(ConformityState state);
+std::string_view codeName(ValueState state);
 
 } // namespace spanwright

@@ -99,10 +99,12 @@ void writeAnswers(JsonWriter& json, const PhaseEvaluation& evaluation) {
     }
     json.endArray();
     json.key("read").beginArray(Layout::Lines);
-    for (const ReadBackAnswer& answer : evaluation.read) {
+    for (const ReadValue& answer : evaluation.read) {
         json.beginObject().field("indication", answer.indication).field("reference", answer.reference);
         json.field("standard_uncertainty", answer.standardUncertainty).field("low", answer.low).field("high", answer.high);
-        json.field("inside_range", answer.insideRange);
+        json.field("inside_range", answer.insideRange).field("state", codeName(answer.state));
+        if (answer.budget)
+            json.field("expanded_uncertainty", answer.budget->expandedReference).field("coverage_factor", answer.budget->coverageFactor);
         if (!answer.others.empty()) {
             json.key("others").beginArray();
             for (const double other : answer.others)

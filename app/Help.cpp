@@ -11,8 +11,10 @@ std::string_view helpText() {
   spanwright figures FILE [options]     what follows from the readings of a CSV or a session
   spanwright certificate SESSION --to OUT.pdf [--xml OUT.xml] [--incomplete]
                                         the certificate draft as PDF
-  spanwright convert CSV --with SESSION --to OUT.csv
+  spanwright convert CSV --with SESSION --to OUT.csv [--indication COL] [--repeats Q] [--phase P] [--replace]
                                         new readings to values, each with its expanded uncertainty
+  spanwright coefficients SESSION [--form plain|c|csv] [--to FILE] [--phase P] [--replace]
+                                        the function for a data logger, in as few digits as its uncertainty allows
   spanwright check SESSION              verifies the seal, recomputes, compares with the stored results
   spanwright self-test [--to OUT.pdf]   recomputes published cases
   spanwright --help, --version

@@ -68,6 +68,17 @@ const Error* doubtAboutNumbers(const CsvRules& rules, const ImportMapping& mappi
     return nullptr;
 }
 
+Result<std::size_t> indicationColumn(const Arguments& arguments, const CsvRules& rules, const Quantity& quantity) {
+    if (const auto text = arguments.value("--indication"))
+        return findColumn(rules, *text);
+    if (!quantity.name.empty())
+        if (const auto named = findColumn(rules, quantity.name))
+            return *named;
+    if (const auto first = firstNumbersBut(rules, std::nullopt))
+        return *first;
+    return Error(ErrorCode::ColumnMissing, {{"quantity", "indication"}});
+}
+
 /// Columns named by options; the first two columns of numbers stand in for those that are not named. A constant needs no
 /// reference: it is taken only where it is named, or where two columns are there and none is named.
 Result<ImportMapping> mappingOf(const Arguments& arguments, const CsvRules& rules, const FunctionChoice& function) {
@@ -230,16 +241,34 @@ Result<void> exclude(Record& record, const std::vector<std::size_t>& rows) {
 
 } // namespace
 
-Result<LoadedRecord> loadIndications(const std::string& path, const Arguments& arguments) {
-    const auto file = FileBytes::read(path);
+Result<LoadedIndications> loadIndications(const std::string& path, const Arguments& arguments, const Quantity& quantity) {
+    auto file = FileBytes::read(path);
     if (!file)
         return file.error();
-    // A constant is the function that needs nothing but indications.
-    Arguments alone = arguments;
-    alone.options.emplace_back("--function", "constant");
-    if (!alone.has("--indication"))
-        alone.options.emplace_back("--indication", "1");
-    return loadTable(path, file->bytes(), alone, {});
+    const auto wishes = wishesOf(arguments);
+    if (!wishes)
+        return wishes.error();
+    auto rules = guessRules(file->bytes(), *wishes);
+    if (!rules)
+        return rules.error().with("file", path);
+    const auto column = indicationColumn(arguments, *rules, quantity);
+    if (!column)
+        return column.error().with("file", path);
+    ImportMapping mapping;
+    mapping.indication = *column;
+    if (const Error* doubt = doubtAboutNumbers(*rules, mapping))
+        return doubt->with("file", path);
+    const std::string& unit = rules->columns[*column].unit;
+    if (!unit.empty() && !quantity.unit.empty() && unit != quantity.unit)
+        return Error(ErrorCode::UnitsDiffer, {{"name", columnLabel(*rules, *column)}, {"unit", unit}, {"expected", quantity.unit}, {"file", path}});
+    Progress progress;
+    auto imported = readReadings(file->bytes(), *rules, mapping, progress);
+    if (!imported)
+        return imported.error().with("file", path);
+    if (const CellIssue* issue = standingIssue(imported->issues, {}))
+        return issue->error(*rules).with("file", path);
+    std::vector<std::string> notes{understood(path, *rules, mapping)};
+    return LoadedIndications{std::move(*file), std::move(*rules), *column, std::move(imported->block.indication), std::move(notes)};
 }
 
 std::span<const OptionSpec> tableOptions() {

@@ -3,6 +3,8 @@
 
 #include "app/Arguments.h"
 #include "core/base/Warning.h"
+#include "core/exchange/CsvRules.h"
+#include "core/exchange/FileBytes.h"
 #include "core/record/Record.h"
 #include "core/session/StoredResults.h"
 
@@ -39,7 +41,18 @@ Result<LoadedSession> loadSessionFile(const std::string& path);
 /// that is no number refuses the file, unless its row is excluded. Errors: of the readers, with fact file; UsageValueBad.
 Result<LoadedRecord> loadRecord(const std::string& path, const Arguments& arguments);
 
-/// Reads a column of indications from a CSV, by the same options; other columns are not looked at.
-Result<LoadedRecord> loadIndications(const std::string& path, const Arguments& arguments);
+/// A column of indications, and the table that it stands in.
+struct LoadedIndications {
+    FileBytes file;
+    CsvRules rules;
+    std::size_t column = 0; ///< in rules.columns
+    DecimalColumn values;   ///< one a data row; a blank cell is missing
+    std::vector<std::string> notes;
+};
+
+/// Reads a column of indications from a CSV, by the same options; other columns are not looked at. Without --indication it is the
+/// column of the quantity's name, else the first column of numbers. Errors: of the readers, with fact file; a cell that is no
+/// number; UnitsDiffer where the header states another unit than the quantity has.
+Result<LoadedIndications> loadIndications(const std::string& path, const Arguments& arguments, const Quantity& quantity);
 
 } // namespace spanwright

@@ -4,9 +4,6 @@
 #include "app/PaperApplication.h"
 #include "ui/selftest/SelfTest.h"
 
-#include <QDateTime>
-#include <QSysInfo>
-
 #include <ostream>
 
 namespace spanwright {
@@ -22,10 +19,7 @@ int selfTestCommand(const Words& words, Console console) {
     console.out << selfTestText(outcome).toStdString();
     if (const auto to = arguments->value("--to")) {
         const PaperApplication paper;
-        const SelfTestOccasion occasion{QDateTime::currentDateTime().toOffsetFromUtc(QDateTime::currentDateTime().offsetFromUtc()).toString(Qt::ISODate),
-                                        QStringLiteral("Spanwright " SPANWRIGHT_VERSION),
-                                        QSysInfo::prettyProductName() + QStringLiteral(", ") + QSysInfo::currentCpuArchitecture()};
-        if (!writeSelfTestPdf(outcome, occasion, QString::fromStdString(*to)))
+        if (!writeSelfTestPdf(outcome, selfTestOccasion(), QString::fromStdString(*to)))
             return refuse(console, Error(ErrorCode::FileNotWritable, {{"file", *to}}));
     }
     return outcome.cases.empty() || outcome.failed() > 0 ? Refused : Done;

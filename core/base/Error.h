@@ -20,6 +20,8 @@ enum class ErrorCode {
     FileWriteFailed,
     FileChangedOnDisk,
     FileInUse,
+    FileExists,
+    FileIsInput, ///< would be written over while it is read
     FileBinary,
     FileEncoding,
     // tables of text
@@ -34,6 +36,7 @@ enum class ErrorCode {
     DecimalMarkUnclear,
     DateOrderUnclear,
     DirectionUnknown,
+    UnitsDiffer,
     // session files
     NotJson,
     NotASession,

@@ -14,11 +14,23 @@ namespace {
 
 constexpr double LargestRestBesideRectangular = 0.3; // EA-4/02 M, S9.14
 
+/// The covariance of the function and the scatter about it are scaled by the same s, so they are one estimate and not two.
 double effectiveDegreesOfFreedom(const std::vector<BudgetItem>& items, double combined) {
-    double sum = 0;
-    for (const BudgetItem& item : items)
-        if (std::isfinite(item.degreesOfFreedom) && item.contribution > 0)
-            sum += std::pow(item.contribution / combined, 4) / item.degreesOfFreedom;
+    const bool readBack = std::any_of(items.begin(), items.end(), [](const BudgetItem& item) { return item.derived == DerivedLine::Fit; });
+    double sum = 0, ofResiduals = 0, residualDf = 0;
+    for (const BudgetItem& item : items) {
+        if (!std::isfinite(item.degreesOfFreedom) || !(item.contribution > 0))
+            continue;
+        const double share = std::pow(item.contribution / combined, 2);
+        if (readBack && (item.derived == DerivedLine::Fit || item.derived == DerivedLine::Repeatability)) {
+            ofResiduals += share;
+            residualDf = item.degreesOfFreedom;
+        } else {
+            sum += share * share / item.degreesOfFreedom;
+        }
+    }
+    if (ofResiduals > 0)
+        sum += ofResiduals * ofResiduals / residualDf;
     return sum > 0 ? std::max(1.0, std::floor(1 / sum * (1 + 1e-12))) : std::numeric_limits<double>::infinity();
 }
 

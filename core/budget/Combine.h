@@ -18,7 +18,7 @@ BudgetItem budgetItem(Side side, Distribution distribution, double amount, doubl
 double coverageFactor(double coverage, double degreesOfFreedom);
 
 /// Combines uncorrelated contributions: u_c = √Σ(c u)² (JCGM 100:2008, 5.1.2); ν_eff by Welch and Satterthwaite, cut to the next
-/// lower integer (G.4.1, G.6.4); k from Student's distribution; U = k u_c; shares of the variance. Where one rectangular
+/// lower integer (G.4.1, G.6.4), function and scatter about it counting as one estimate; k from Student's distribution; U = k u_c; shares of the variance. Where one rectangular
 /// contribution dominates, the others together being at most 0.3 of it, the result is taken as rectangular and k = p √3 (EA-4/02 M,
 /// supplement S9). `slope`: change of the indication per change of the reference.
 SetPointBudget combine(double setPoint, Direction direction, std::vector<BudgetItem> items, double coverage, double slope);

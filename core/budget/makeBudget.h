@@ -22,9 +22,7 @@ namespace spanwright {
 /// Rounding of the indication also scatters repeated readings, so resolution is in part contained in repeatability; both are kept,
 /// which is an upper bound (without any scatter, resolution is all that is seen). Lines in `record.budget.omitted` are left out.
 ///
-/// Read back (one new reading, at the place in the calibrated range where u in the unit of the reference is largest): covariance of
-/// the function, scatter of one reading about it (which holds repeatability, runs, hysteresis and the rounding of the
-/// indication), the standards, the resolution of the reference, lines by hand.
+/// For a value read back, see core/budget/ReadBackBudget.h.
 ///
 /// Where each point and direction of the phase was read only once, repeatability and run to run are taken from `otherPhase`: an
 /// adjustment of zero and span does not change the scatter (pooled estimate, JCGM 100:2008, 4.2.4).

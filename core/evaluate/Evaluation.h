@@ -5,9 +5,9 @@
 #include "core/diagnose/Diagnostics.h"
 #include "core/diagnose/Finding.h"
 #include "core/diagnose/Influence.h"
+#include "core/evaluate/ReadValue.h"
 #include "core/fit/Fit.h"
 #include "core/interval/Bands.h"
-#include "core/interval/ReadBack.h"
 #include "core/performance/ForceFigures.h"
 #include "core/performance/ProcessFigures.h"
 #include "core/split/VarianceSplit.h"
@@ -60,7 +60,7 @@ struct PhaseEvaluation {
     RowFigures rows;
     std::vector<BandPoint> curve; ///< at most 400 points over the range of all readings, a little beyond
     std::vector<BandPoint> at;    ///< at the chosen reference values
-    std::vector<ReadBackAnswer> read;
+    std::vector<ReadValue> read;
     std::optional<WithoutExclusions> withoutExclusions;
     Budget budget;
     Verdict verdict;

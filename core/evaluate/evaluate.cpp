@@ -115,7 +115,7 @@ class PhaseSteps {
                 result_.warnings.push_back({WarningCode::Extrapolated, {{"value", x.text()}}});
         }
         for (const Decimal& y : choices_.read)
-            result_.read.push_back(readBack(*result_.fit, y.toDouble(), choices_.repeats));
+            result_.read.push_back(readValue(record_, *result_.fit, y.toDouble(), choices_.repeats));
     }
 
     /// The same function with the excluded readings among them.

@@ -25,6 +25,8 @@ class FittedFunction {
     [[nodiscard]] virtual std::vector<double> gradient(double) const { return {}; }
     /// Variance of one new reading at x about the function (σ²; with a variance function or weights it depends on x).
     [[nodiscard]] virtual double readingVariance(double x) const = 0;
+    /// Abscissae between which a function made of pieces is straight, in rising order; empty for all others.
+    [[nodiscard]] virtual std::vector<double> knots() const { return {}; }
 };
 
 struct Coefficient {

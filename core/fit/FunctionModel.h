@@ -37,6 +37,8 @@ class FunctionModel {
     [[nodiscard]] virtual DoubleDouble value(const DoubleDouble& x, const std::vector<DoubleDouble>& beta) const = 0;
     [[nodiscard]] virtual double value(double x, const std::vector<double>& beta) const = 0;
     [[nodiscard]] virtual double derivative(double x, const std::vector<double>& beta) const = 0;
+    /// Abscissae between which a function made of pieces is straight, in rising order; empty for all others.
+    [[nodiscard]] virtual std::vector<double> knots() const { return {}; }
     /// β from which a non-linear fit starts. Error: OutsideDomain, RankLost.
     [[nodiscard]] virtual Result<std::vector<DoubleDouble>> start(const PairColumn& x, const PairColumn& y) const;
     [[nodiscard]] virtual ReportedCoefficients reported(const std::vector<DoubleDouble>& beta) const;

@@ -21,6 +21,7 @@ class ModelCurve final : public FittedFunction {
     [[nodiscard]] double variance(double x) const override;
     [[nodiscard]] std::vector<double> gradient(double x) const override;
     [[nodiscard]] double readingVariance(double x) const override;
+    [[nodiscard]] std::vector<double> knots() const override { return model_->knots(); }
 
   private:
     std::shared_ptr<const FunctionModel> model_;

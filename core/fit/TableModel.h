@@ -13,6 +13,7 @@ class TableModel final : public ModelOf<TableModel> {
     explicit TableModel(std::vector<double> knots) : knots_(std::move(knots)) {}
 
     [[nodiscard]] std::size_t terms() const override { return knots_.size(); }
+    [[nodiscard]] std::vector<double> knots() const override { return knots_; }
 
     template <class T>
     [[nodiscard]] std::vector<T> gradientOf(const T& x, const std::vector<T>&) const {

@@ -4,6 +4,7 @@
 #include "core/diagnose/FindingName.h"
 #include "ui/bench/ChoiceMenus.h"
 #include "ui/bench/CompareDialog.h"
+#include "ui/bench/CoefficientsDialog.h"
 #include "ui/bench/ConvertDialog.h"
 #include "ui/bench/Dismissals.h"
 #include "ui/bench/ExcludeDialog.h"
@@ -193,6 +194,8 @@ void BenchPage::buildActions() {
     });
     add("bench.exclusions", tr("What the exclusions do"), QKeySequence(Qt::CTRL | Qt::SHIFT | Qt::Key_X), [this] { showExclusions(); });
     add("bench.convert", tr("Value from a reading"), QKeySequence(Qt::CTRL | Qt::Key_B), [this] { (new ConvertDialog(workbench_, this))->show(); });
+    add("bench.coefficients", tr("Coefficients for a data logger"), QKeySequence(Qt::CTRL | Qt::SHIFT | Qt::Key_B),
+        [this] { (new CoefficientsDialog(workbench_, screenTextPath(), this))->show(); });
     add("bench.line", tr("Go to the line plot"), QKeySequence(Qt::CTRL | Qt::Key_L), [this] { line_->setFocus(); });
     add("bench.residuals", tr("Go to the residuals"), QKeySequence(Qt::CTRL | Qt::Key_R), [this] { residual_->setFocus(); });
     add("bench.table", tr("Go to the readings"), QKeySequence(Qt::CTRL | Qt::Key_G), [this] { table_->setFocus(); });

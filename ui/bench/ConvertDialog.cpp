@@ -1,7 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/bench/ConvertDialog.h"
 
-#include "core/interval/ReadBack.h"
+#include "core/base/Rounding.h"
+#include "core/evaluate/Calibration.h"
 #include "ui/bench/NumberEdit.h"
 #include "ui/look/Look.h"
 #include "ui/look/NumberText.h"
@@ -55,13 +56,13 @@ ConvertDialog::ConvertDialog(Workbench& workbench, QWidget* parent)
 
 void ConvertDialog::convert() {
     const Record& record = workbench_.record();
-    const PhaseEvaluation* phase = workbench_.evaluation()->phase(record.choices.phase);
+    const PhaseEvaluation* phase = calibrationOf(*workbench_.evaluation(), record.choices.phase);
     const QString unit = QString::fromStdString(record.item.reference.unit);
     indication_->setUnit(QString::fromStdString(record.item.indication.unit));
     for (QLabel* label : {value_, interval_, warnings_})
         label->clear();
     const Result<Decimal> typed = indication_->number();
-    if (!phase || !phase->fit) {
+    if (phase == nullptr) {
         warnings_->setText(tr("There is no calibration function yet."));
         return;
     }
@@ -70,21 +71,35 @@ void ConvertDialog::convert() {
             warnings_->setText(errorText(typed.error()));
         return;
     }
-    const ReadBackAnswer answer = readBack(*phase->fit, typed->toDouble(), repeats_->value());
-    const double u = answer.standardUncertainty;
-    const int decimals = u > 0 && std::isfinite(u) ? std::clamp(1 - static_cast<int>(std::floor(std::log10(u))), 0, 12) : 4;
-    if (answer.reference) {
-        value_->setText(tr("%1 %2, U = %3 %2 (k = %4)")
-                            .arg(fixedText(*answer.reference, decimals), unit, significantText(u * phase->fit->coverageFactor, 2), fixedText(phase->fit->coverageFactor, 2)));
-        interval_->setText(tr("between %1 and %2 %3 with a probability of %4, from the calibration function alone")
-                               .arg(fixedText(answer.low, decimals), fixedText(answer.high, decimals), unit, shareText(phase->fit->coverage)));
-    }
-    QStringList warned;
-    for (const Warning& warning : answer.warnings)
-        warned << warningText(warning);
-    if (!answer.insideRange && warned.isEmpty())
-        warned << tr("This lies outside the calibrated range.");
-    warnings_->setText(warned.join(QLatin1Char('\n')));
+    const ReadValue value = readValue(record, *phase->fit, typed->toDouble(), repeats_->value());
+    showValue(value, statedValue(value, phase->budget.readBack), unit);
+    showInterval(value, *phase->fit, unit);
+    QStringList said;
+    for (const Warning& warning : value.warnings)
+        said << warningText(warning);
+    const QString state = valueStateText(value.state);
+    if (said.isEmpty() && !state.isEmpty())
+        said << tr("No uncertainty can be stated: %1.").arg(state);
+    warnings_->setText(said.join(QLatin1Char('\n')));
+}
+
+void ConvertDialog::showValue(const ReadValue& value, const StatedValue& stated, const QString& unit) {
+    const auto shown = [](const std::string& digits) {
+        const auto number = Decimal::parse(digits);
+        return number ? typedText(*number) : QString();
+    };
+    if (value.state == ValueState::Sound)
+        value_->setText(tr("%1 %2, U = %3 %2 (k = %4)").arg(shown(stated.value), unit, shown(stated.expanded), shown(stated.coverageFactor)));
+    else if (!stated.value.empty())
+        value_->setText(tr("%1 %2, without an uncertainty").arg(shown(stated.value), unit));
+}
+
+void ConvertDialog::showInterval(const ReadValue& value, const Fit& fit, const QString& unit) {
+    if (!value.reference || !std::isfinite(value.low) || !std::isfinite(value.high))
+        return;
+    const int decimals = std::max(0, decimalsFor(value.high - value.low, 2));
+    interval_->setText(tr("From the calibration function alone, between %1 and %2 %3 with a probability of %4")
+                           .arg(fixedText(value.low, decimals), fixedText(value.high, decimals), unit, shareText(fit.coverage)));
 }
 
 } // namespace spanwright

@@ -22,6 +22,8 @@ class ConvertDialog : public QDialog {
 
   private:
     void convert();
+    void showValue(const ReadValue& value, const StatedValue& stated, const QString& unit);
+    void showInterval(const ReadValue& value, const Fit& fit, const QString& unit);
 
     Workbench& workbench_;
     NumberEdit* indication_;

@@ -158,20 +158,42 @@ std::size_t SelfTestOutcome::figures() const {
 std::size_t SelfTestOutcome::failed() const {
     std::size_t count = 0;
     for (const SelfTestCase& one : cases)
-        count += static_cast<std::size_t>(
-            std::count_if(one.figures.begin(), one.figures.end(), [](const SelfTestFigure& figure) { return !figure.holds; }));
+        count += one.failed();
     return count;
 }
 
+std::size_t SelfTestCase::failed() const {
+    return static_cast<std::size_t>(
+        std::count_if(figures.begin(), figures.end(), [](const SelfTestFigure& figure) { return !figure.holds; }));
+}
+
 SelfTestOutcome runSelfTest() {
+    Progress progress;
+    return runSelfTest(progress);
+}
+
+SelfTestOutcome runSelfTest(Progress& progress) {
     takeInResources();
     QFile file(QStringLiteral(":/self-test.json"));
     SelfTestOutcome outcome;
     if (!file.open(QIODevice::ReadOnly))
         return outcome;
-    for (const QJsonValue& stated : QJsonDocument::fromJson(file.readAll()).object()["cases"].toArray())
+    const QJsonArray cases = QJsonDocument::fromJson(file.readAll()).object()["cases"].toArray();
+    for (const QJsonValue& stated : cases) {
+        if (progress.cancelled())
+            break;
         outcome.cases.push_back(runCase(stated.toObject()));
+        progress.report(static_cast<double>(outcome.cases.size()) / static_cast<double>(cases.size()));
+    }
     return outcome;
+}
+
+std::vector<const SelfTestCase*> failuresFirst(const SelfTestOutcome& outcome) {
+    std::vector<const SelfTestCase*> cases;
+    for (const SelfTestCase& one : outcome.cases)
+        cases.push_back(&one);
+    std::stable_partition(cases.begin(), cases.end(), [](const SelfTestCase* one) { return one->failed() > 0; });
+    return cases;
 }
 
 } // namespace spanwright

@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include "core/base/Progress.h"
+
 #include <QString>
 
 #include <vector>
@@ -21,6 +23,8 @@ struct SelfTestCase {
     QString source;
     std::size_t readings = 0;
     std::vector<SelfTestFigure> figures;
+
+    [[nodiscard]] std::size_t failed() const;
 };
 
 struct SelfTestOutcome {
@@ -33,9 +37,20 @@ struct SelfTestOutcome {
 /// Recomputes the published cases built into the program (resources/self-test.json) by the one road that every record takes
 /// (ISO/IEC 17025:2017, 7.11.2).
 SelfTestOutcome runSelfTest();
+/// The same, told how far it has come after every case; what was computed so far when it is cancelled.
+SelfTestOutcome runSelfTest(Progress& progress);
 
-/// The outcome as lines of plain text.
+/// The cases in the order in which they are looked at: those with a figure that differs first.
+std::vector<const SelfTestCase*> failuresFirst(const SelfTestOutcome& outcome);
+
+/// The outcome as lines of plain text, figures by their path in figures JSON.
 QString selfTestText(const SelfTestOutcome& outcome);
+/// The outcome in one sentence.
+QString selfTestVerdict(const SelfTestOutcome& outcome);
+/// A figure in words, from its path in figures JSON.
+QString selfTestFigureText(const QString& name);
+/// A computed number to 16 digits; a dash where it was not computed.
+QString selfTestNumberText(double value);
 
 /// When, where and with which program the outcome came about.
 struct SelfTestOccasion {
@@ -43,6 +58,9 @@ struct SelfTestOccasion {
     QString program; ///< name and version
     QString machine; ///< operating system and processor
 };
+
+/// Now, here, by this program.
+SelfTestOccasion selfTestOccasion();
 
 /// A dated validation record on A4 as PDF. Whether it could be written. Needs a QGuiApplication.
 bool writeSelfTestPdf(const SelfTestOutcome& outcome, const SelfTestOccasion& occasion, const QString& path);

@@ -1,12 +1,9 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/selftest/SelfTest.h"
 
-#include <QBuffer>
 #include <QCoreApplication>
-#include <QPageLayout>
-#include <QPdfWriter>
-#include <QSaveFile>
-#include <QTextDocument>
+#include <QDateTime>
+#include <QSysInfo>
 
 #include <cmath>
 
@@ -18,11 +15,51 @@ struct Text {
     Q_DECLARE_TR_FUNCTIONS(SelfTest)
 };
 
-QString gotText(double value) {
+QString rowText(const QString& row) {
+    if (row == QLatin1String("residual"))
+        return Text::tr("residual");
+    if (row == QLatin1String("regression"))
+        return Text::tr("signal");
+    if (row == QLatin1String("lack_of_fit"))
+        return Text::tr("lack of fit");
+    return row == QLatin1String("pure_error") ? Text::tr("pure error") : row;
+}
+
+QString endText(const QString& end) {
+    return end == QLatin1String("low") ? Text::tr("lower limit") : end == QLatin1String("high") ? Text::tr("upper limit") : Text::tr("value");
+}
+
+} // namespace
+
+QString selfTestFigureText(const QString& name) {
+    const QStringList path = name.split(QLatin1Char('.'));
+    const QString& first = path.front();
+    const int number = path.value(1).toInt() + 1;
+    if (first == QLatin1String("coefficients"))
+        return path.back() == QLatin1String("value") ? Text::tr("coefficient %1").arg(number) : Text::tr("coefficient %1, standard uncertainty").arg(number);
+    if (first == QLatin1String("residual_sd"))
+        return Text::tr("residual standard deviation");
+    if (first == QLatin1String("r_squared"))
+        return QStringLiteral("R²");
+    if (first == QLatin1String("chi_squared"))
+        return QStringLiteral("χ²");
+    if (first == QLatin1String("lag1_autocorrelation"))
+        return Text::tr("autocorrelation of neighbours");
+    if (first == QLatin1String("split"))
+        return path.back() == QLatin1String("f") ? Text::tr("F of %1").arg(rowText(path[1])) : Text::tr("sum of squares, %1").arg(rowText(path[1]));
+    if (first == QLatin1String("at"))
+        return path.contains(QLatin1String("simultaneous")) ? Text::tr("band for all values, place %1, %2").arg(number).arg(endText(path.back()))
+                                                             : Text::tr("function, place %1").arg(number);
+    if (first == QLatin1String("read"))
+        return path.back() == QLatin1String("reference") ? Text::tr("value read back") : Text::tr("value read back, %1").arg(endText(path.back()));
+    return name;
+}
+
+QString selfTestNumberText(double value) {
     return std::isnan(value) ? QStringLiteral("–") : QString::number(value, 'g', 16);
 }
 
-QString verdictText(const SelfTestOutcome& outcome) {
+QString selfTestVerdict(const SelfTestOutcome& outcome) {
     const std::size_t failed = outcome.failed();
     if (outcome.cases.empty())
         return Text::tr("No case could be read.");
@@ -32,35 +69,6 @@ QString verdictText(const SelfTestOutcome& outcome) {
                        : Text::tr("%1 of %2 figures do not agree with their sources.").arg(failed).arg(outcome.figures());
 }
 
-QString cell(const QString& text) {
-    return QStringLiteral("<td>") + text.toHtmlEscaped() + QStringLiteral("</td>");
-}
-
-QString pageText(const SelfTestOutcome& outcome, const SelfTestOccasion& occasion) {
-    QString html = QStringLiteral("<h2>%1</h2><p>%2<br/>%3<br/>%4</p><p><b>%5</b></p>")
-                       .arg(Text::tr("Validation record").toHtmlEscaped(), occasion.program.toHtmlEscaped(),
-                            occasion.machine.toHtmlEscaped(), occasion.date.toHtmlEscaped(), verdictText(outcome).toHtmlEscaped());
-    html += QStringLiteral("<p>%1</p>")
-                .arg(Text::tr("Published cases, recomputed with this program on this machine. A figure agrees when it rounds to what the "
-                              "source prints. The record is one part of a validation; it does not replace the laboratory's own.")
-                         .toHtmlEscaped());
-    for (const SelfTestCase& one : outcome.cases) {
-        html += QStringLiteral("<h4>%1</h4><p>%2; %3</p><table cellpadding='2' width='100%'><tr>")
-                    .arg(one.name.toHtmlEscaped(), one.source.toHtmlEscaped(), Text::tr("%1 readings").arg(one.readings));
-        for (const QString& head : {Text::tr("Figure"), Text::tr("Printed"), Text::tr("Computed"), Text::tr("Digits"), QString()})
-            html += QStringLiteral("<th align='left'>") + head.toHtmlEscaped() + QStringLiteral("</th>");
-        html += QStringLiteral("</tr>");
-        for (const SelfTestFigure& figure : one.figures)
-            html += QStringLiteral("<tr>") + cell(figure.name) + cell(figure.printed) + cell(gotText(figure.got)) +
-                    cell(QString::number(figure.digits, 'f', 1)) + cell(figure.holds ? Text::tr("agrees") : Text::tr("differs")) +
-                    QStringLiteral("</tr>");
-        html += QStringLiteral("</table>");
-    }
-    return html;
-}
-
-} // namespace
-
 QString selfTestText(const SelfTestOutcome& outcome) {
     QString text;
     for (const SelfTestCase& one : outcome.cases) {
@@ -69,29 +77,17 @@ QString selfTestText(const SelfTestOutcome& outcome) {
             text += QStringLiteral("  %1 %2 %3 %4  %5\n")
                         .arg(figure.name, -40)
                         .arg(figure.printed, 24)
-                        .arg(gotText(figure.got), 24)
+                        .arg(selfTestNumberText(figure.got), 24)
                         .arg(figure.digits, 5, 'f', 1)
                         .arg(figure.holds ? Text::tr("agrees") : Text::tr("DIFFERS"));
     }
-    return text + verdictText(outcome) + QLatin1Char('\n');
+    return text + selfTestVerdict(outcome) + QLatin1Char('\n');
 }
 
-bool writeSelfTestPdf(const SelfTestOutcome& outcome, const SelfTestOccasion& occasion, const QString& path) {
-    QByteArray bytes;
-    {
-        QBuffer buffer(&bytes);
-        buffer.open(QIODevice::WriteOnly);
-        QPdfWriter writer(&buffer);
-        writer.setTitle(Text::tr("Validation record"));
-        writer.setCreator(occasion.program);
-        writer.setPageLayout(QPageLayout(QPageSize(QPageSize::A4), QPageLayout::Portrait, QMarginsF(18, 18, 18, 18), QPageLayout::Millimeter));
-        QTextDocument document;
-        document.setDefaultFont(QFont(QStringLiteral("Sans Serif"), 8));
-        document.setHtml(pageText(outcome, occasion));
-        document.print(&writer);
-    }
-    QSaveFile file(path);
-    return file.open(QIODevice::WriteOnly) && file.write(bytes) == bytes.size() && file.commit();
+SelfTestOccasion selfTestOccasion() {
+    const QDateTime now = QDateTime::currentDateTime();
+    return {now.toOffsetFromUtc(now.offsetFromUtc()).toString(Qt::ISODate), QStringLiteral("Spanwright " SPANWRIGHT_VERSION),
+            QSysInfo::prettyProductName() + QStringLiteral(", ") + QSysInfo::currentCpuArchitecture()};
 }
 
 } // namespace spanwright

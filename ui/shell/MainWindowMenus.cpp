@@ -1,7 +1,9 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include "ui/shell/MainWindow.h"
+
+#include "ui/selftest/SelfTestDialog.h"
 #include "ui/shell/HelpDialogs.h"
 #include "ui/shell/JournalDialog.h"
-#include "ui/shell/MainWindow.h"
 
 #include <QApplication>
 #include <QFileInfo>
@@ -129,6 +131,10 @@ void MainWindow::makeHelpMenu() {
             [this, open] { open(userHelp(this)); });
     connect(actions_.add(menu, {"help.keyboard", tr("&Keyboard"), QKeySequence(QStringLiteral("Ctrl+F1"))}), &QAction::triggered, this,
             [this, open] { open(keyboardHelp(actions_.all(), this)); });
+    connect(actions_.add(menu, {"help.self-test", tr("&Self-test…"), {}, "run after an installation"}), &QAction::triggered, this, [this] {
+        SelfTestDialog dialog([this](QWidget* from, const QString& suggestion) { return around_.dialogs.pdfPath(from, suggestion); }, this);
+        around_.dialogs.run(dialog);
+    });
     connect(actions_.add(menu, {"help.about", tr("&About"), {}, "looked at once in a while"}), &QAction::triggered, this,
             [this, open] { open(aboutProgram(this)); });
 }

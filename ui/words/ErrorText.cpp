@@ -33,6 +33,9 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
     case ErrorCode::FileInUse:
         return tr("the file is open elsewhere, by %1. Close it there, or save under another name.")
             .arg(facts.plain("holder", facts.plain("by", tr("another program"))));
+    case ErrorCode::FileExists:
+        return tr("there is such a file already, and it was left as it is. Give another name, or add --replace to write over it.");
+    case ErrorCode::FileIsInput: return tr("this file is read here and would be written over. Give another name for the result.");
     case ErrorCode::FileBinary: return tr("this is not text. Export the readings as CSV and open that file.");
     case ErrorCode::FileEncoding:
         return tr("the bytes are not valid in the encoding %1. State the encoding in which the file was written.")
@@ -65,6 +68,9 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
             .arg(facts.quoted("text", tr("the dates")));
     case ErrorCode::DirectionUnknown:
         return tr("%1 is no direction. Write up or down, rising or falling.").arg(facts.quoted("text", tr("the cell")));
+    case ErrorCode::UnitsDiffer:
+        return tr("the column %1 is in %2, the calibration in %3. Convert the column, or correct its unit in the header.")
+            .arg(facts.quoted("name", tr("chosen")), facts.plain("unit", tr("one unit")), facts.plain("expected", tr("another")));
     // session files
     case ErrorCode::NotJson:
         return tr("this is no session: the text is broken or cut off. Open the backup or the recovery file beside it.");

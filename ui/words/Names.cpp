@@ -130,4 +130,16 @@ QString splitPartText(SplitPart part) {
     return {};
 }
 
+QString valueStateText(ValueState state) {
+    switch (state) {
+    case ValueState::Sound: return {};
+    case ValueState::NoAnswer: return Names::tr("no value belongs to this indication");
+    case ValueState::OutsideRange: return Names::tr("outside the calibrated range");
+    case ValueState::SeveralAnswers: return Names::tr("several values belong to this indication");
+    case ValueState::NoFiniteInterval: return Names::tr("the slope is too uncertain to bound the value");
+    case ValueState::NoUncertainty: return Names::tr("too few readings for an uncertainty");
+    }
+    return {};
+}
+
 } // namespace spanwright

@@ -38,6 +38,8 @@ QString decisionRuleText(const Limits& limits);
 QString conformityText(ConformityState state);
 QString signOffText(SignOffRole role);
 QString splitPartText(SplitPart part);
+/// Why a value read back stands without an uncertainty; empty for a sound one.
+QString valueStateText(ValueState state);
 
 /// "y = 4.0005 + 0.0266639 x" with the units' names, to as many digits as the uncertainties support, true minus signs.
 QString equationText(const Fit& fit, const Item& item);

@@ -126,6 +126,8 @@ void TestWords::everyNameHasWords() {
         QVERIFY(!signOffText(role).isEmpty());
     for (const SplitPart part : walk(SplitPart::Repeatability))
         QVERIFY(!splitPartText(part).isEmpty());
+    for (const ValueState state : walk(lastValueState))
+        QCOMPARE(valueStateText(state).isEmpty(), state == ValueState::Sound);
     Limits limits;
     for (const DecisionRule rule : walk(DecisionRule::FourState)) {
         limits.rule = rule;

@@ -1,0 +1,77 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "app/ChoiceOptions.h"
+#include "app/Commands.h"
+#include "app/RecordFile.h"
+#include "app/TextApplication.h"
+#include "core/session/WholeFile.h"
+#include "core/evaluate/Calibration.h"
+#include "core/evaluate/evaluate.h"
+#include "ui/words/CoefficientText.h"
+
+#include <ostream>
+
+namespace spanwright {
+
+namespace {
+
+constexpr OptionSpec known[] = {{"--form"}, {"--to"}, {"--replace", OptionKind::Flag}, {"--phase"}};
+
+Result<Arguments> argumentsOf(const Words& words) {
+    auto arguments = parseArguments(words, known);
+    if (!arguments)
+        return arguments;
+    if (arguments->files.empty())
+        return Error(ErrorCode::UsageNoFile, {{"command", "coefficients"}});
+    if (arguments->files.size() > 1)
+        return Error(ErrorCode::UsageUnknownCommand, {{"text", arguments->files[1]}});
+    return arguments;
+}
+
+} // namespace
+
+int coefficientsCommand(const Words& words, Console console) {
+    const TextApplication application;
+    const auto arguments = argumentsOf(words);
+    if (!arguments)
+        return refuse(console, arguments.error());
+    const std::string name = arguments->value("--form").value_or("plain");
+    const auto form = coefficientForm(QString::fromStdString(name));
+    if (!form)
+        return refuse(console, Error(ErrorCode::UsageValueBad, {{"option", "--form"}, {"text", name}}));
+    const std::string& file = arguments->files.front();
+    const auto to = arguments->value("--to");
+    if (to)
+        if (const auto free = mayBeWritten(*to, {file}, arguments->has("--replace") ? Replacing::Allowed : Replacing::Refused); !free)
+            return refuse(console, free.error());
+
+    auto session = loadSessionFile(file);
+    if (!session)
+        return refuse(console, session.error());
+    if (!session->broken.empty())
+        return refuseFile(console, file, session->broken);
+    Record& record = session->record;
+    const auto choices = withOptions(record.choices, *arguments, DecimalMark::Point);
+    if (!choices)
+        return refuse(console, choices.error());
+    record.choices.phase = choices->phase;
+    Progress progress;
+    const auto evaluation = evaluate(record, progress);
+    if (!evaluation)
+        return refuse(console, evaluation.error().with("file", file));
+    const PhaseEvaluation* phase = calibrationOf(*evaluation, record.choices.phase);
+    const auto printed = phase != nullptr ? printedFunction(record, *phase) : std::nullopt;
+    if (!printed)
+        return refuse(console, Error(ErrorCode::NoReadings, {{"file", file}}));
+    const std::string text = coefficientText(record, *printed, *form).toStdString();
+    if (to) {
+        if (const auto written = writeWhole(*to, text); !written)
+            return refuse(console, written.error());
+        console.out << "coefficients written to " << *to << '\n';
+        return Done;
+    }
+    console.out << text;
+    console.out.flush();
+    return console.out.good() ? Done : refuse(console, Error(ErrorCode::FileWriteFailed, {{"file", "standard output"}}));
+}
+
+} // namespace spanwright

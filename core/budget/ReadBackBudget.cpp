@@ -1,0 +1,99 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/budget/ReadBackBudget.h"
+
+#include "core/budget/BudgetLines.h"
+#include "core/budget/Combine.h"
+
+#include <algorithm>
+#include <cmath>
+#include <limits>
+
+namespace spanwright {
+
+namespace {
+
+constexpr int Places = 101; // at which the largest uncertainty is sought
+
+struct ReadBackLines {
+    BudgetPlace place;
+    std::vector<BudgetItem> items;
+    /// u² of the reference value.
+    [[nodiscard]] double variance() const {
+        double sum = 0;
+        for (const BudgetItem& item : items)
+            sum += item.contribution * item.contribution;
+        return sum / (place.slope * place.slope);
+    }
+};
+
+/// Scatter of the mean of new readings, or the rounding of what is read where that is larger: equal readings hide their scatter
+/// below the resolution, and their mean gains nothing (JCGM 100:2008, F.2.2.1).
+std::vector<BudgetItem> scatterLine(const Record& record, const BudgetPlace& place, Side side, double variance, double df) {
+    BudgetLines scatter(record, place), rounding(record, place);
+    scatter.add(DerivedLine::Repeatability, side, Distribution::Student, std::sqrt(variance), 1, df);
+    rounding.addIndicationResolution();
+    std::vector<BudgetItem> seen = scatter.take(), hidden = rounding.take();
+    const bool roundingIsLarger = !seen.empty() && !hidden.empty() && hidden.front().contribution > seen.front().contribution;
+    return roundingIsLarger ? hidden : seen;
+}
+
+/// Where the stated uncertainties are taken as they are, the residuals tell nothing of them.
+double degreesOfFreedom(const Fit& fit) {
+    return fit.covarianceScale == CovarianceScale::Stated ? std::numeric_limits<double>::infinity() : fit.degreesOfFreedom;
+}
+
+/// `share`: 1/repeats; 0 for an exact indication.
+ReadBackLines linesAt(const Record& record, const Fit& fit, double x, double share) {
+    const bool forward = fit.direction == FitDirection::Indication;
+    const double y = fit.curve->value(x);
+    const BudgetPlace place = budgetPlace(record, &fit, forward ? x : y, forward ? y : x);
+    const Side side = forward ? Side::Indication : Side::Reference;
+    const double df = degreesOfFreedom(fit);
+    BudgetLines lines(record, place);
+    lines.addStandards();
+    lines.addReferenceResolution();
+    lines.add(DerivedLine::Fit, side, Distribution::Student, std::sqrt(fit.curve->variance(x)), 1, df);
+    lines.addManual();
+    std::vector<BudgetItem> items = lines.take();
+    if (share > 0)
+        for (BudgetItem& item : scatterLine(record, place, side, fit.curve->readingVariance(x) * share, df))
+            items.push_back(std::move(item));
+    return {place, std::move(items)};
+}
+
+bool canBeReadBack(const Fit& fit) {
+    return fit.function.family != FunctionFamily::Constant && degreesOfFreedom(fit) > 0 && fit.high > fit.low;
+}
+
+SetPointBudget combined(const Record& record, ReadBackLines lines) {
+    return combine(lines.place.reference, Direction::Unknown, std::move(lines.items), record.budget.coverage.toDouble(), lines.place.slope);
+}
+
+} // namespace
+
+std::optional<SetPointBudget> readBackBudget(const Record& record, const Fit& fit, double abscissa, std::optional<int> repeats) {
+    if (!canBeReadBack(fit) || fit.curve->derivative(abscissa) == 0)
+        return std::nullopt;
+    ReadBackLines here = linesAt(record, fit, abscissa, repeats ? 1.0 / std::max(1, *repeats) : 0.0);
+    if (!std::isfinite(here.variance()))
+        return std::nullopt;
+    return combined(record, std::move(here));
+}
+
+std::optional<SetPointBudget> worstReadBackBudget(const Record& record, const Fit& fit) {
+    if (!canBeReadBack(fit))
+        return std::nullopt;
+    std::optional<ReadBackLines> worst;
+    double largest = -1;
+    for (int i = 0; i < Places; ++i) {
+        ReadBackLines here = linesAt(record, fit, fit.low + (fit.high - fit.low) * i / (Places - 1), 1);
+        const double variance = here.variance();
+        if (std::isfinite(variance) && variance > largest) {
+            largest = variance;
+            worst = std::move(here);
+        }
+    }
+    return worst ? std::optional(combined(record, std::move(*worst))) : std::nullopt;
+}
+
+} // namespace spanwright

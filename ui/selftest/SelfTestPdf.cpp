@@ -1,0 +1,99 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "ui/certificate/Flow.h"
+#include "ui/certificate/writeCertificate.h"
+#include "ui/selftest/SelfTest.h"
+
+#include <QBuffer>
+#include <QCoreApplication>
+#include <QPdfWriter>
+#include <QSaveFile>
+
+namespace spanwright {
+
+namespace {
+
+constexpr QRectF Content(17, 12, 176, 275); // inside the margins of A4
+constexpr QRectF Area(17, 25, 176, 250);    // between head and foot
+
+struct SelfTestPdf {
+    Q_DECLARE_TR_FUNCTIONS(SelfTestPdf)
+};
+
+Table tableOf(const SelfTestCase& one) {
+    Table table;
+    table.points = 8;
+    table.columns = {{SelfTestPdf::tr("figure"), {}, ColumnAlign::Left, 3.2},
+                     {SelfTestPdf::tr("printed"), {}, ColumnAlign::Right, 2.4},
+                     {SelfTestPdf::tr("computed"), {}, ColumnAlign::Right, 2.4},
+                     {SelfTestPdf::tr("digits"), {}, ColumnAlign::Right, 0.8},
+                     {{}, {}, ColumnAlign::Left, 1.0}};
+    for (const SelfTestFigure& figure : one.figures)
+        table.rows.push_back({{selfTestFigureText(figure.name)},
+                              {figure.printed},
+                              {selfTestNumberText(figure.got)},
+                              {QString::number(figure.digits, 'f', 1)},
+                              {figure.holds ? SelfTestPdf::tr("agrees") : SelfTestPdf::tr("DIFFERS"), figure.holds ? PageInk::Quiet : PageInk::Warning, !figure.holds}});
+    return table;
+}
+
+void addCase(Flow& flow, const SelfTestCase& one) {
+    constexpr double headAndTwoRows = 24;
+    flow.heading(one.name, SelfTestPdf::tr("%n reading(s)", nullptr, static_cast<int>(one.readings)), headAndTwoRows);
+    flow.paragraph(one.source, {8, false, PageInk::Quiet});
+    flow.space(0.8);
+    flow.table(tableOf(one));
+    flow.space(3);
+}
+
+void addHeadAndFoot(Page& page, const SelfTestOccasion& occasion, const QString& number) {
+    const TextStyle small{8, false, PageInk::Quiet};
+    page.blocks.push_back(textBlock(Content.left(), 17.5, SelfTestPdf::tr("Validation record of a self-test"), {9.5, true, PageInk::Text}));
+    page.blocks.push_back(textBlock(Content.right(), 17.5, number, small, Qt::AlignRight));
+    page.blocks.push_back({QRectF(Content.left(), 20, Content.width(), 0), Rule{0.4, PageInk::Text}});
+    page.blocks.push_back({QRectF(Content.left(), 280, Content.width(), 0), Rule{0.2, PageInk::Line}});
+    page.blocks.push_back(textBlock(Content.left(), 284.5, occasion.program + QStringLiteral(" · ") + occasion.date, small));
+    page.blocks.push_back(textBlock(Content.right(), 284.5, number, small, Qt::AlignRight));
+}
+
+Pages selfTestPages(const SelfTestOutcome& outcome, const SelfTestOccasion& occasion) {
+    Pages document;
+    document.content = Content;
+    Flow flow(document, Area);
+    flow.title(SelfTestPdf::tr("Validation record"));
+    flow.labelled({{SelfTestPdf::tr("Program"), occasion.program}, {SelfTestPdf::tr("Machine"), occasion.machine}},
+                  {{SelfTestPdf::tr("Recomputed"), occasion.date}, {SelfTestPdf::tr("Method"), SelfTestPdf::tr("published cases by the road of every record")}});
+    flow.space(2);
+    flow.notice(selfTestVerdict(outcome), outcome.cases.empty() || outcome.failed() > 0 ? PageInk::Warning : PageInk::Accent);
+    flow.paragraph(SelfTestPdf::tr("Published cases, recomputed with this program on this machine. A figure agrees when it rounds to what the source "
+                                   "prints; digits are those agreed, 15 at most. The record is one part of a validation (ISO/IEC 17025:2017, 7.11.2); "
+                                   "it does not replace the laboratory's own."),
+                   {8.5, false, PageInk::Text});
+    flow.space(2);
+    for (const SelfTestCase* one : failuresFirst(outcome))
+        addCase(flow, *one);
+    Pages pages = flow.take();
+    for (std::size_t i = 0; i < pages.pages.size(); ++i)
+        addHeadAndFoot(pages.pages[i], occasion, SelfTestPdf::tr("page %1 of %2").arg(i + 1).arg(pages.pages.size()));
+    return pages;
+}
+
+} // namespace
+
+bool writeSelfTestPdf(const SelfTestOutcome& outcome, const SelfTestOccasion& occasion, const QString& path) {
+    QByteArray bytes;
+    {
+        QBuffer buffer(&bytes);
+        buffer.open(QIODevice::WriteOnly);
+        QPdfWriter writer(&buffer);
+        writer.setPdfVersion(QPagedPaintDevice::PdfVersion_A1b);
+        writer.setResolution(1200);
+        writer.setTitle(SelfTestPdf::tr("Validation record"));
+        writer.setCreator(occasion.program);
+        if (!paintDocument(selfTestPages(outcome, occasion), writer))
+            return false;
+    }
+    QSaveFile file(path);
+    return file.open(QIODevice::WriteOnly) && file.write(bytes) == bytes.size() && file.commit();
+}
+
+} // namespace spanwright
