@@ -2,6 +2,7 @@
 #include "core/diagnose/Slips.h"
 
 #include "core/diagnose/RobustLine.h"
+#include "core/diagnose/Settling.h"
 
 #include <algorithm>
 #include <cmath>
@@ -185,9 +186,7 @@ void plainChecks(const Record& record, const Reading& typed, const std::optional
             (typed.direction == Direction::Falling && moved >= 0))
             plain(slips, typed, SlipKind::AgainstDirection, NumberColumn::Reference);
     }
-    if (typed.enteredAt > 0 && before->enteredAt > 0 && record.plan.dwellSeconds > 0 &&
-        typed.setPoint != before->setPoint &&
-        typed.enteredAt - before->enteredAt < std::int64_t{1000} * record.plan.dwellSeconds)
+    if (hurried(record.plan, *before, typed))
         plain(slips, typed, SlipKind::BeforeSettled, NumberColumn::Indication);
 }
 

@@ -140,7 +140,7 @@ void NextReading::buildFields(QVBoxLayout* all) {
     keep_->setObjectName(QStringLiteral("keepTyped"));
     connect(use_, &QPushButton::clicked, this, [this] {
         if (suggestion_)
-            record(*suggestion_);
+            record(*suggestion_, tr("taken instead of %1 when asked").arg(indication_->text().trimmed()));
     });
     connect(keep_, &QPushButton::clicked, this, [this] { acceptIndication(true); });
     for (QPushButton* answer : {use_, keep_})
@@ -268,6 +268,7 @@ void NextReading::tell(const QString& sentence, bool warning) {
 
 void NextReading::settle() {
     asking_ = false;
+    question_.clear();
     suggestion_.reset();
     use_->hide();
     keep_->hide();
@@ -331,7 +332,7 @@ void NextReading::acceptIndication(bool sure) {
     }
     if (!sure && asked(*number))
         return;
-    record(*number);
+    record(*number, question_.isEmpty() ? QString() : tr("kept as typed when asked: %1").arg(question_));
 }
 
 /// Asks about a number that a slip of the hand could have made, or that lies outside what is expected.
@@ -357,6 +358,7 @@ bool NextReading::asked(const Decimal& indication) {
 /// Nothing is recorded until one of the answers is chosen; Enter once more keeps what was typed where there is no suggestion.
 void NextReading::ask(const QString& sentence, const std::optional<Decimal>& suggestion, NumberColumn column) {
     asking_ = true;
+    question_ = sentence;
     suggestion_ = suggestion;
     tell(suggestion ? sentence : tr("%1 Read again, or press Enter once more to record it.").arg(sentence), true);
     keep_->setText(tr("&Keep %1").arg((column == NumberColumn::Reference ? reference_ : indication_)->text().trimmed()));
@@ -366,7 +368,7 @@ void NextReading::ask(const QString& sentence, const std::optional<Decimal>& sug
         use_->setText(tr("&Use %1").arg(typedText(*suggestion)));
 }
 
-void NextReading::record(const Decimal& indication) {
+void NextReading::record(const Decimal& indication, const QString& answer) {
     Reading reading = next_;
     if (referenceTyped()) {
         const Result<Decimal> typed = reference_->number();
@@ -379,10 +381,8 @@ void NextReading::record(const Decimal& indication) {
     reference_->setText({});
     indication_->setText({});
     tell({}, false);
-    if (reading.id == 0)
-        workbench_.perform(std::make_unique<AddReadings>(std::vector<Reading>{reading}));
-    else
-        workbench_.perform(std::make_unique<PutReadings>(tr("complete a reading"), std::vector<Reading>{reading}));
+    const QString step = reading.id == 0 ? tr("enter a reading") : tr("complete a reading");
+    workbench_.perform(std::make_unique<PutReadings>(step, std::vector<Reading>{reading}, answer.toStdString()));
     startTyping();
     emit entered();
 }

@@ -46,7 +46,8 @@ class NextReading : public QFrame {
     void judgeTyping();
     void acceptReference();
     void acceptIndication(bool sure);
-    void record(const Decimal& indication);
+    /// `answer`: what the journal says of the question before; empty when none was asked.
+    void record(const Decimal& indication, const QString& answer = {});
     bool asked(const Decimal& indication);
     void ask(const QString& sentence, const std::optional<Decimal>& suggestion, NumberColumn column);
     void settle();
@@ -75,6 +76,7 @@ class NextReading : public QFrame {
     QTimer* clock_;
     std::optional<Decimal> suggestion_;
     bool asking_ = false;
+    QString question_; ///< what was asked about, for the journal
 };
 
 } // namespace spanwright

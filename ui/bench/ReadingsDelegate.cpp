@@ -123,7 +123,8 @@ void ReadingsDelegate::paint(QPainter* painter, const QStyleOptionViewItem& opti
     QFont font = textFont(column == ReadingsModel::State ? TextRole::Small : TextRole::Body);
     font.setStrikeOut(excluded && column != ReadingsModel::State && column != ReadingsModel::ResidualValue && column != ReadingsModel::Number);
     painter->setFont(font);
-    const bool warns = excluded && (column == ReadingsModel::ResidualValue || column == ReadingsModel::State);
+    const bool hurried = column == ReadingsModel::State && index.data(ReadingsModel::HurriedRole).toBool();
+    const bool warns = hurried || (excluded && (column == ReadingsModel::ResidualValue || column == ReadingsModel::State));
     painter->setPen(warns ? colours.warning : strong || (column == ReadingsModel::ResidualValue && !excluded) ? colours.ink : colours.quiet);
     const int missing = index.data(ReadingsModel::MissingDigitsRole).toInt();
     const int inset = missing > 0 ? QFontMetrics(font).horizontalAdvance(QString(missing, QLatin1Char('0'))) : 0;
@@ -134,6 +135,12 @@ void ReadingsDelegate::paint(QPainter* painter, const QStyleOptionViewItem& opti
         painter->setPen(Qt::NoPen);
         painter->setBrush(colours.accent);
         painter->drawPolygon(QPolygonF() << corner << corner - QPointF(7, 0) << corner + QPointF(0, 7));
+    }
+    if (column == ReadingsModel::IndicationValue && index.data(ReadingsModel::HurriedRole).toBool()) { // the lower corner: taken early
+        const QPointF corner = QRectF(option.rect).bottomLeft() + QPointF(0, 1);
+        painter->setPen(Qt::NoPen);
+        painter->setBrush(colours.warning);
+        painter->drawPolygon(QPolygonF() << corner << corner + QPointF(7, 0) << corner - QPointF(0, 7));
     }
     if (option.state.testFlag(QStyle::State_HasFocus)) {
         painter->setPen(QPen(colours.accent, 1));

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/bench/ReadingsModel.h"
 
+#include "core/diagnose/Settling.h"
 #include "ui/bench/PlanRows.h"
 #include "ui/look/NumberText.h"
 #include "ui/plot/PlotSubject.h"
@@ -216,7 +217,17 @@ QString ReadingsModel::stateText(int row) const {
     for (const auto& [column, name] : journalNames)
         if (amended_.contains({id, column}))
             return tr("amended");
-    return {};
+    return hurriedText(row).isEmpty() ? QString() : tr("early");
+}
+
+/// Why a reading counts as taken early, in words; empty where it does not.
+QString ReadingsModel::hurriedText(int row) const {
+    const Plan& plan = workbench_.record().plan;
+    if (plan.dwellSeconds <= 0 || row <= 0 || row >= taken())
+        return {};
+    const ReadingColumns& readings = *workbench_.record().readings;
+    const auto waited = hurried(plan, readings.row(recordRow(row - 1)), readings.row(recordRow(row)));
+    return waited ? tr("Taken early: %1 s after the reading before; the plan asks for %2 s at a new set point.").arg(*waited).arg(plan.dwellSeconds) : QString();
 }
 
 QString ReadingsModel::history(int row, int column) const {
@@ -249,6 +260,8 @@ QString ReadingsModel::tip(int row, int column) const {
     if (!reading.enteredBy.empty() || reading.enteredAt != 0)
         text += QLatin1Char('\n') + tr("entered %1 %2").arg(QString::fromStdString(reading.enteredBy),
                                                           reading.enteredAt == 0 ? QString() : QLocale().toString(QDateTime::fromMSecsSinceEpoch(reading.enteredAt), QLocale::ShortFormat)).simplified();
+    if (const QString early = hurriedText(row); !early.isEmpty())
+        text += QLatin1Char('\n') + early;
     const QString past = history(row, column);
     return past.isEmpty() ? text : text + QLatin1Char('\n') + past;
 }
@@ -283,6 +296,7 @@ QVariant ReadingsModel::data(const QModelIndex& index, int role) const {
         return id && number && amended_.contains({*id, *number});
     }
     case PlannedRole: return !id;
+    case HurriedRole: return !hurriedText(row).isEmpty();
     case DirectionRole: return static_cast<int>(readingAt(row).direction);
     case MissingDigitsRole: return missingDigits(row, column);
     default: return {};

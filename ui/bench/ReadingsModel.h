@@ -19,7 +19,7 @@ class ReadingsModel : public QAbstractTableModel {
 
   public:
     enum Column { Number, Run, DirectionMark, SetPoint, ReferenceValue, IndicationValue, ResidualValue, State, ColumnCount };
-    enum Role { ExcludedRole = Qt::UserRole, AmendedRole, PlannedRole, DirectionRole, MissingDigitsRole, OutsideRole };
+    enum Role { ExcludedRole = Qt::UserRole, AmendedRole, PlannedRole, DirectionRole, MissingDigitsRole, OutsideRole, HurriedRole };
 
     explicit ReadingsModel(Workbench& workbench, QObject* parent = nullptr);
 
@@ -51,6 +51,7 @@ class ReadingsModel : public QAbstractTableModel {
     [[nodiscard]] QString text(int row, int column) const;
     [[nodiscard]] QString plannedText(int row, int column) const;
     [[nodiscard]] QString stateText(int row) const;
+    [[nodiscard]] QString hurriedText(int row) const;
     [[nodiscard]] QString tip(int row, int column) const;
     [[nodiscard]] double residual(ReadingId id) const;
     [[nodiscard]] int missingDigits(int row, int column) const;

@@ -5,6 +5,8 @@
 #include "ui/bench/PastedBlock.h"
 #include "ui/bench/ReadingsDelegate.h"
 #include "ui/bench/ReasonDialog.h"
+#include "ui/bench/Suspects.h"
+#include "ui/bench/recordAsked.h"
 #include "ui/commands/ReadingCommands.h"
 #include "ui/look/Look.h"
 #include "ui/look/NumberText.h"
@@ -21,6 +23,16 @@
 #include <algorithm>
 
 namespace spanwright {
+
+namespace {
+
+int shownColumn(NumberColumn column) {
+    return column == NumberColumn::SetPoint    ? ReadingsModel::SetPoint
+           : column == NumberColumn::Reference ? ReadingsModel::ReferenceValue
+                                               : ReadingsModel::IndicationValue;
+}
+
+} // namespace
 
 ReadingsTable::ReadingsTable(Workbench& workbench, QWidget* parent)
     : QTableView(parent), workbench_(workbench), model_(new ReadingsModel(workbench, this)), delegate_(new ReadingsDelegate(this)),
@@ -102,45 +114,59 @@ void ReadingsTable::accept(const QModelIndex& index, const Decimal& value, bool 
     if (!column)
         return;
     const std::optional<ReadingId> id = model_->idAt(index.row());
-    if (!id) {
-        const int row = index.row();
-        const ReadingId made = workbench_.record().nextReadingId;
-        enterNew(row, *column, value);
-        if (onward && model_->rowOf(made) >= 0)
-            goOn(model_->index(model_->rowOf(made), index.column()));
-        return;
-    }
-    const auto before = workbench_.record().readings->number(*column).at(workbench_.record().readings->indexOf(*id));
-    if (before && *before != value) {
+    const auto before = id ? workbench_.record().readings->number(*column).at(workbench_.record().readings->indexOf(*id)) : std::nullopt;
+    if (before && *before != value)
         amend(*id, *column, *before, value, onward);
-        return;
-    }
-    if (!before)
-        workbench_.perform(std::make_unique<AmendValue>(*id, *column, value));
-    if (onward)
+    else if (!before)
+        enter(model_->readingAt(index.row()), *column, value, onward);
+    else if (onward)
         goOn(model_->index(model_->rowOf(*id), index.column()));
 }
 
-void ReadingsTable::enterNew(int row, NumberColumn column, const Decimal& value) {
-    Reading reading = model_->readingAt(row);
-    if (column == NumberColumn::SetPoint)
-        reading.setPoint = value;
-    else if (column == NumberColumn::Reference)
-        reading.reference = value;
-    else
-        reading.indication = value;
-    workbench_.perform(std::make_unique<AddReadings>(std::vector<Reading>{reading}));
+/// A value where there was none: of a new reading, or of one that was begun.
+void ReadingsTable::enter(Reading reading, NumberColumn column, const Decimal& value, bool onward) {
+    const ReadingId id = reading.id != 0 ? reading.id : workbench_.record().nextReadingId;
+    const int row = reading.id != 0 ? model_->rowOf(reading.id) : currentIndex().row();
+    const int shown = shownColumn(column);
+    (column == NumberColumn::SetPoint ? reading.setPoint : column == NumberColumn::Reference ? reading.reference : reading.indication) = value;
+    const QString step = reading.id != 0 ? tr("complete a reading") : tr("enter a reading");
+    recordAsked(
+        workbench_, {step, {std::move(reading)}, {column}, {}}, this,
+        [=, this] {
+            setFocus();
+            if (onward && model_->rowOf(id) >= 0)
+                goOn(model_->index(model_->rowOf(id), shown));
+        },
+        [=, this] { editAgain(row, column, value); });
+}
+
+/// What was typed stands in its cell again, to be looked at.
+void ReadingsTable::editAgain(int row, NumberColumn column, const Decimal& value) {
+    const QModelIndex index = model_->index(row, shownColumn(column));
+    setFocus();
+    setCurrentIndex(index);
+    edit(index);
+    for (NumberEdit* editor : viewport()->findChildren<NumberEdit*>()) {
+        if (!editor->isVisible()) // the one that was closed before
+            continue;
+        editor->setText(typedText(value));
+        editor->setModified(true);
+        editor->selectAll();
+    }
 }
 
 void ReadingsTable::amend(ReadingId id, NumberColumn column, const Decimal& before, const Decimal& after, bool onward) {
-    const int shown = column == NumberColumn::SetPoint    ? ReadingsModel::SetPoint
-                      : column == NumberColumn::Reference ? ReadingsModel::ReferenceValue
-                                                          : ReadingsModel::IndicationValue;
+    const int shown = shownColumn(column);
+    Reading amended = workbench_.record().readings->row(workbench_.record().readings->indexOf(id));
+    (column == NumberColumn::SetPoint ? amended.setPoint : column == NumberColumn::Reference ? amended.reference : amended.indication) = after;
+    QString ask = tr("&Why? The value before is kept beside the new one.");
+    for (const Suspect& suspect : suspectsAmong(workbench_.record(), {amended}, {column}))
+        ask.prepend(suspect.sentence + QLatin1Char('\n'));
     const QString what = tr("Reading %1, %2").arg(id).arg(model_->headerData(shown, Qt::Horizontal, Qt::DisplayRole).toString());
     const ReasonDialog::Question question{tr("Change a recorded value"),
                                           what,
                                           typedText(before) + QStringLiteral("  →  ") + typedText(after),
-                                          tr("&Why? The value before is kept beside the new one."),
+                                          ask,
                                           {tr("typed wrongly"), tr("read again at the instrument"), tr("typed in the wrong place")},
                                           tr("Record the change"),
                                           tr("Keep the value")};
@@ -188,7 +214,10 @@ void ReadingsTable::paste(const QString& text) {
         }
         rows.push_back(std::move(reading));
     }
-    workbench_.perform(std::make_unique<PutReadings>(tr("paste readings"), std::move(rows), tr("pasted").toStdString()));
+    std::set<NumberColumn> columns;
+    for (int c = 0; c < block.width(); ++c)
+        columns.insert(*ReadingsModel::numberColumn(first + c));
+    recordAsked(workbench_, {tr("paste readings"), std::move(rows), std::move(columns), tr("pasted").toStdString()}, this, [this] { setFocus(); }, [this] { setFocus(); });
 }
 
 QString ReadingsTable::selectedText() const {

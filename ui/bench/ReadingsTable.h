@@ -47,7 +47,8 @@ class ReadingsTable : public QTableView {
   private:
     void accept(const QModelIndex& index, const Decimal& value, bool onward);
     void amend(ReadingId id, NumberColumn column, const Decimal& before, const Decimal& after, bool onward);
-    void enterNew(int row, NumberColumn column, const Decimal& value);
+    void enter(Reading reading, NumberColumn column, const Decimal& value, bool onward);
+    void editAgain(int row, NumberColumn column, const Decimal& value);
     void goOn(const QModelIndex& from);
     void say(const QString& words, const QRect& under);
     void silence();

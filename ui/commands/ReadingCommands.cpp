@@ -88,6 +88,18 @@ PutReadings::PutReadings(const QString& text, std::vector<Reading> rows, std::st
         added_.push_back(row.id == 0);
 }
 
+void PutReadings::remark(std::size_t row, const std::string& words) {
+    remarks_.resize(rows_.size());
+    std::string& said = remarks_[row];
+    said += said.empty() ? words : "; " + words;
+}
+
+std::string PutReadings::reasonOf(std::size_t row) const {
+    if (remarks_.empty() || remarks_[row].empty())
+        return reason_;
+    return reason_.empty() ? remarks_[row] : reason_ + "; " + remarks_[row];
+}
+
 std::vector<ReadingId> PutReadings::ids() const {
     std::vector<ReadingId> all;
     for (const Reading& row : rows_)
@@ -137,9 +149,9 @@ std::vector<JournalEntry> PutReadings::entries(const Record&, const Record&) con
     for (std::size_t i = 0; i < rows_.size(); ++i) {
         if (added_[i])
             made.push_back(
-                {.who = {}, .what = "reading-entered", .where = where(rows_[i].id), .before = {}, .after = wholeText(rows_[i]), .reason = reason_});
+                {.who = {}, .what = "reading-entered", .where = where(rows_[i].id), .before = {}, .after = wholeText(rows_[i]), .reason = reasonOf(i)});
         else
-            entriesOfChange(made, replaced_[replaced++], rows_[i], reason_);
+            entriesOfChange(made, replaced_[replaced++], rows_[i], reasonOf(i));
     }
     return made;
 }

@@ -14,6 +14,8 @@ namespace spanwright {
 class PutReadings : public RecordCommand {
   public:
     PutReadings(const QString& text, std::vector<Reading> rows, std::string reason = {});
+    /// What the journal is to say of one row besides the reason.
+    void remark(std::size_t row, const std::string& words);
     /// Ids of the rows, once performed.
     [[nodiscard]] std::vector<ReadingId> ids() const;
 
@@ -24,9 +26,12 @@ class PutReadings : public RecordCommand {
     void stamp(std::int64_t now, const std::string& person) override;
 
   private:
+    [[nodiscard]] std::string reasonOf(std::size_t row) const;
+
     std::vector<Reading> rows_;
     std::vector<Reading> replaced_;
     std::string reason_;
+    std::vector<std::string> remarks_; ///< by row; empty where there is nothing to say of any
     std::vector<bool> added_;
 };
 

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "tests/support/SampleRecord.h"
 #include "ui/bench/BenchPage.h"
+#include "ui/bench/CoefficientsDialog.h"
 #include "ui/bench/NumberEdit.h"
 #include "ui/bench/PastedBlock.h"
 #include "ui/bench/PlanRows.h"
@@ -19,8 +20,10 @@
 #include <QDialog>
 #include <QLabel>
 #include <QMenu>
+#include <QPlainTextEdit>
 #include <QPushButton>
 #include <QSignalSpy>
+#include <QTemporaryDir>
 #include <QTest>
 #include <QToolButton>
 
@@ -289,6 +292,142 @@ class BenchTest : public QObject {
         QCOMPARE(bench.workbench.undoStack().count(), 1);
         bench.workbench.undoStack().undo();
         QCOMPARE(bench.readings().size(), std::size_t(0));
+    }
+
+    /// The sample's reading 40 was 10.404 mA; typed in the table with its digits exchanged.
+    void aSlipInTheTableIsAskedAboutOnce() {
+        Record record = test::pressureTransmitter();
+        ReadingColumns& columns = record.readings.edit();
+        while (columns.size() > 39)
+            columns.remove(columns.ids().back());
+        Bench bench(record);
+        ReadingsTable* table = bench.table();
+        table->setFocus();
+        table->typeNext();
+        bench.type(bench.cell(), "4.0002");
+        QTest::keyClick(bench.cell(), Qt::Key_Return);
+        QCOMPARE(bench.readings().size(), std::size_t(40));
+        bench.type(bench.cell(), "14.004");
+        QTest::keyClick(bench.cell(), Qt::Key_Return);
+        QDialog* dialog = bench.dialog("suspectsDialog");
+        QVERIFY(dialog);
+        QVERIFY(!bench.readings().indication().has(39)); // nothing is recorded before the answer
+        auto* answer = dialog->findChild<QComboBox*>(QStringLiteral("suspectAnswer.0"));
+        QCOMPARE(answer->currentText(), QStringLiteral("14.004, as typed"));
+        QCOMPARE(answer->itemText(1), QStringLiteral("10.404 instead"));
+        dialog->reject();
+        QVERIFY(bench.cell());
+        QCOMPARE(bench.cell()->text(), QStringLiteral("14.004")); // to be looked at again
+        QTest::keyClick(bench.cell(), Qt::Key_Return);
+        dialog = bench.dialog("suspectsDialog");
+        QVERIFY(dialog);
+        QTest::keyClick(dialog->findChild<QPushButton*>(QStringLiteral("suspectsRecord")), Qt::Key_Space);
+        QCOMPARE(text(bench.readings().row(39).indication), std::string("14.004"));
+        const JournalEntry& entry = bench.workbench.record().journal->entries().back();
+        QVERIFY2(entry.reason.starts_with("kept as typed when asked: You typed 14.004. 10.404 would fit."), entry.reason.c_str());
+        QVERIFY(!bench.dialog("suspectsDialog"));
+        bench.workbench.undoStack().undo();
+        bench.workbench.undoStack().undo();
+        QVERIFY(bench.workbench.record() == record);
+    }
+
+    /// Readings 40 to 42 of the sample, the first with a slipped decimal mark; and a reference far from its set point.
+    void aPastedBlockIsAskedAboutInOneQuestion() {
+        const Record sample = test::pressureTransmitter();
+        Record record = sample;
+        ReadingColumns& columns = record.readings.edit();
+        while (columns.size() > 39)
+            columns.remove(columns.ids().back());
+        Bench bench(record);
+        ReadingsTable* table = bench.table();
+        const auto block = [&](const QString& slipped) {
+            QString text;
+            for (std::size_t row = 39; row < 42; ++row) {
+                const Reading reading = sample.readings->row(row);
+                text += QString::fromStdString(reading.reference->text()) + u'\t' + (row == 39 ? slipped : QString::fromStdString(reading.indication->text())) + u'\n';
+            }
+            return text;
+        };
+        table->setFocus();
+        table->setCurrentIndex(table->readings().nextCell());
+        table->paste(block(QStringLiteral("104.04")));
+        QDialog* dialog = bench.dialog("suspectsDialog");
+        QVERIFY(dialog);
+        QCOMPARE(bench.readings().size(), std::size_t(39));
+        QVERIFY(dialog->findChild<QComboBox*>(QStringLiteral("suspectAnswer.0")));
+        QVERIFY(!dialog->findChild<QComboBox*>(QStringLiteral("suspectAnswer.1")));
+        auto* answer = dialog->findChild<QComboBox*>(QStringLiteral("suspectAnswer.0"));
+        QCOMPARE(answer->count(), 2);
+        answer->setCurrentIndex(1);
+        dialog->accept();
+        QCOMPARE(bench.readings().size(), std::size_t(42));
+        QCOMPARE(text(bench.readings().row(39).indication), std::string("10.404"));
+        const auto& entries = bench.workbench.record().journal->entries();
+        QCOMPARE(entries[entries.size() - 3].reason, std::string("pasted; taken instead of 104.04 when asked"));
+        QCOMPARE(entries.back().reason, std::string("pasted"));
+        QCOMPARE(bench.workbench.undoStack().count(), 1);
+        bench.workbench.undoStack().undo();
+        QVERIFY(bench.workbench.record() == record);
+        table->setCurrentIndex(table->readings().nextCell());
+        table->paste(QStringLiteral("9.0001\n"));
+        dialog = bench.dialog("suspectsDialog");
+        QVERIFY(dialog);
+        dialog->reject();
+        QVERIFY(bench.workbench.record() == record);
+        table->setCurrentIndex(table->readings().nextCell());
+        table->paste(block(QStringLiteral("10.404"))); // nothing doubtful, nothing asked
+        QVERIFY(!bench.dialog("suspectsDialog"));
+        QCOMPARE(bench.readings().size(), std::size_t(42));
+    }
+
+    void aReadingTakenBeforeTheWaitIsMarked() {
+        Record record = planned();
+        record.plan.dwellSeconds = 60;
+        Bench bench(record);
+        bench.enter("referenceField", "0.0001");
+        bench.enter("indicationField", "4.00");
+        bench.now += 12'000;
+        bench.enter("referenceField", "5.0001");
+        bench.enter("indicationField", "12.00");
+        bench.now += 61'000;
+        bench.enter("referenceField", "10.0001");
+        bench.enter("indicationField", "20.00");
+        const ReadingsModel& model = bench.table()->readings();
+        QCOMPARE(model.taken(), 3);
+        for (int row = 0; row < 3; ++row) {
+            QCOMPARE(model.index(row, 0).data(ReadingsModel::HurriedRole).toBool(), row == 1);
+            QCOMPARE(model.index(row, ReadingsModel::State).data().toString(), row == 1 ? QStringLiteral("early") : QString());
+        }
+        const QString tip = model.index(1, ReadingsModel::IndicationValue).data(Qt::ToolTipRole).toString();
+        QVERIFY2(tip.contains(QStringLiteral("Taken early: 12 s after the reading before; the plan asks for 60 s")), qPrintable(tip));
+    }
+
+    void theFunctionIsCopiedAndSavedForALogger() {
+        Bench bench(test::pressureTransmitter());
+        bench.act("bench.coefficients");
+        QDialog* dialog = bench.dialog("coefficientsDialog");
+        QVERIFY(dialog);
+        auto* shown = dialog->findChild<QPlainTextEdit*>(QStringLiteral("coefficientText"));
+        QVERIFY2(shown->toPlainText().contains(QStringLiteral("b1 = 1.6001 mA/bar")), qPrintable(shown->toPlainText()));
+        dialog->findChild<QComboBox*>(QStringLiteral("coefficientForm"))->setCurrentIndex(1);
+        QVERIFY(shown->toPlainText().contains(QStringLiteral("double pressure_from_current(double current)")));
+        dialog->findChild<QPushButton*>(QStringLiteral("coefficientCopy"))->click();
+        QCOMPARE(QApplication::clipboard()->text(), shown->toPlainText());
+        dialog->close();
+
+        QTemporaryDir folder;
+        QString suggested;
+        CoefficientsDialog saving(bench.workbench, [&](QWidget*, const QString& suggestion) { return folder.filePath(suggested = suggestion); });
+        saving.setAttribute(Qt::WA_DeleteOnClose, false);
+        saving.show();
+        saving.findChild<QPushButton*>(QStringLiteral("coefficientSave"))->click();
+        QCOMPARE(suggested, QStringLiteral("NV-20318-coefficients.txt"));
+        QFile file(folder.filePath(suggested));
+        QVERIFY(file.open(QIODevice::ReadOnly));
+        QCOMPARE(QString::fromUtf8(file.readAll()), saving.findChild<QPlainTextEdit*>(QStringLiteral("coefficientText"))->toPlainText());
+        bench.workbench.setRecord(planned());
+        bench.workbench.settle();
+        QVERIFY(!saving.findChild<QPushButton*>(QStringLiteral("coefficientSave"))->isEnabled());
     }
 
     void selectingInOnePlaceSelectsInAll() {
