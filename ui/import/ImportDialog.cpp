@@ -15,6 +15,7 @@
 #include <QHBoxLayout>
 #include <QHeaderView>
 #include <QLabel>
+#include <QProgressBar>
 #include <QPushButton>
 #include <QSpinBox>
 #include <QTableView>
@@ -25,8 +26,6 @@
 namespace spanwright {
 
 namespace {
-
-constexpr std::size_t previewCount = 12;
 
 struct SeparatorChoice {
     char separator;
@@ -82,11 +81,11 @@ std::vector<Decimal> setPointsIn(const ReadingColumns::Block& block) {
 
 } // namespace
 
-ImportDialog::ImportDialog(const QByteArray& bytes, const QString& origin, const Record& record, QWidget* parent)
-    : QDialog(parent), bytes_(bytes), origin_(origin), record_(record), encoding_(new QComboBox), separator_(new QComboBox),
+ImportDialog::ImportDialog(TableSource source, const QString& origin, const Record& record, QWidget* parent)
+    : QDialog(parent), reading_(new TableReading(std::move(source), this)), origin_(origin), record_(record), encoding_(new QComboBox), separator_(new QComboBox),
       decimal_(new QComboBox), headerRows_(new QSpinBox), unitsRow_(new QCheckBox(tr("The last header line holds units"))),
       phase_(new QComboBox), takeNames_(new QCheckBox(tr("Take names and units of the columns over into the job"))),
-      doubts_(words(QStringLiteral("import.doubts"), inkRole::warning)), sum_(words(QStringLiteral("import.sum"), QPalette::WindowText)),
+      doubts_(words(QStringLiteral("import.doubts"), inkRole::warning)), sum_(words(QStringLiteral("import.sum"), QPalette::WindowText)), bar_(new QProgressBar),
       issuesHead_(words(QStringLiteral("import.issuesHead"), inkRole::warning)), preview_(new ImportPreview),
       issues_(new ImportIssues(this)), issuesView_(new QTableView) {
     setObjectName(QStringLiteral("importDialog"));
@@ -99,6 +98,11 @@ ImportDialog::ImportDialog(const QByteArray& bytes, const QString& origin, const
     all->addWidget(doubts_);
     all->addWidget(preview_, 3);
     all->addWidget(sum_);
+    bar_->setObjectName(QStringLiteral("import.progress"));
+    bar_->setAccessibleName(tr("How far the table was read"));
+    bar_->setRange(0, 100);
+    bar_->hide();
+    all->addWidget(bar_);
     all->addWidget(issuesHead_);
     issuesView_->setObjectName(QStringLiteral("import.issues"));
     issuesView_->setAccessibleName(tr("Cells that were not understood"));
@@ -121,6 +125,9 @@ ImportDialog::ImportDialog(const QByteArray& bytes, const QString& origin, const
     connect(buttons, &QDialogButtonBox::rejected, this, &QDialog::reject);
     all->addWidget(buttons);
     connect(preview_, &ImportPreview::roleChosen, this, &ImportDialog::roleChosen, Qt::QueuedConnection);
+    connect(reading_, &TableReading::progressed, this, &ImportDialog::showBusy);
+    connect(reading_, &TableReading::looked, this, &ImportDialog::showLook);
+    connect(reading_, &TableReading::wasRead, this, [this](const std::shared_ptr<Result<ImportedReadings>>& read) { showRead(std::move(*read)); });
     guess();
     accept_->setFocus();
 }
@@ -194,22 +201,45 @@ void ImportDialog::guess() {
     rules_.reset();
     read_.reset();
     issues_->clear();
-    Result<CsvRules> guessed = guessRules(bytes(), wishes());
-    if (!guessed) {
-        preview_->clearAll();
-        sum_->setText(tr("Nothing can be taken in: %1").arg(errorText(guessed.error())));
-        sum_->setForegroundRole(inkRole::warning);
-        doubts_->hide();
-        issuesHead_->hide();
-        issuesView_->hide();
-        accept_->setEnabled(false);
+    reading_->look(wishes());
+}
+
+void ImportDialog::showLook(const TableLook& look) {
+    if (!look.rules) {
+        refuse(look.rules.error());
         return;
     }
-    rules_ = *guessed;
+    rules_ = *look.rules;
+    rows_ = look.rows;
     mapping_ = mappingByNames(*rules_);
     showRules();
     showDoubts();
     readAll();
+}
+
+void ImportDialog::refuse(const Error& error) {
+    bar_->hide();
+    preview_->clearAll();
+    sum_->setText(tr("Nothing can be taken in: %1").arg(errorText(error)));
+    sum_->setForegroundRole(inkRole::warning);
+    doubts_->hide();
+    issuesHead_->hide();
+    issuesView_->hide();
+    accept_->setEnabled(false);
+}
+
+/// While a large table is read nothing can be taken in.
+void ImportDialog::showBusy(double share) {
+    bar_->setRange(0, share > 0 ? 100 : 0);
+    bar_->setValue(static_cast<int>(100 * share));
+    bar_->show();
+    sum_->setForegroundRole(QPalette::WindowText);
+    sum_->setText(rules_ ? tr("Reading the table. Cancel gives it up; nothing is taken in before it was read whole.") : tr("Looking at the table."));
+    doubts_->setVisible(rules_ && !rules_->doubts.empty());
+    issuesHead_->hide();
+    issuesView_->hide();
+    accept_->setEnabled(false);
+    accept_->setText(tr("&Take in"));
 }
 
 void ImportDialog::showRules() {
@@ -228,8 +258,7 @@ void ImportDialog::showRules() {
     unitsRow_->setChecked(rules_->unitsRow.has_value());
     unitsRow_->setEnabled(rules_->headerRows > 0);
     changing_ = false;
-    if (Result<std::vector<PreviewRow>> rows = previewRows(bytes(), *rules_, previewCount))
-        preview_->show(*rules_, mapping_, *rows);
+    preview_->show(*rules_, mapping_, rows_);
 }
 
 void ImportDialog::showDoubts() {
@@ -243,24 +272,29 @@ void ImportDialog::showDoubts() {
 void ImportDialog::readAll() {
     read_.reset();
     issues_->clear();
-    QString sum;
-    if (!mapping_.reference || !mapping_.indication) {
-        sum = tr("Choose which column is the reference and which the indication.");
-    } else {
-        Progress progress;
-        Result<ImportedReadings> read = readReadings(bytes(), *rules_, mapping_, progress);
-        if (read) {
-            read_ = std::move(read).value();
-            issues_->fill(read_->issues, *rules_);
-            const auto rows = static_cast<int>(read_->block.n);
-            sum = tr("%n reading(s) will be taken in", nullptr, rows);
-            if (read_->missing > 0)
-                sum += tr("; %n cell(s) [is|are] empty or [stands|stand] for no value", nullptr, static_cast<int>(read_->missing));
-            sum += QLatin1Char('.');
-        } else {
-            sum = errorText(read.error());
-        }
+    if (mapping_.reference && mapping_.indication) {
+        reading_->read(*rules_, mapping_);
+        return;
     }
+    reading_->cancel();
+    showSum(tr("Choose which column is the reference and which the indication."));
+}
+
+void ImportDialog::showRead(Result<ImportedReadings> read) {
+    if (!read) {
+        showSum(errorText(read.error()));
+        return;
+    }
+    read_ = std::move(read).value();
+    issues_->fill(read_->issues, *rules_);
+    QString sum = tr("%n reading(s) will be taken in", nullptr, static_cast<int>(read_->block.n));
+    if (read_->missing > 0)
+        sum += tr("; %n cell(s) [is|are] empty or [stands|stand] for no value", nullptr, static_cast<int>(read_->missing));
+    showSum(sum + QLatin1Char('.'));
+}
+
+void ImportDialog::showSum(const QString& sum) {
+    bar_->hide();
     sum_->setText(sum);
     sum_->setForegroundRole(read_ ? QPalette::WindowText : inkRole::warning);
     const std::size_t issues = read_ ? read_->issues.count : 0;
@@ -271,6 +305,8 @@ void ImportDialog::readAll() {
     issuesView_->setVisible(issues > 0);
     accept_->setEnabled(read_ && read_->block.n > 0);
     accept_->setText(read_ ? tr("&Take in %n reading(s)", nullptr, static_cast<int>(read_->block.n)) : tr("&Take in"));
+    if (accept_->isEnabled() && !focusWidget())
+        accept_->setFocus();
 }
 
 void ImportDialog::roleChosen(std::size_t column, int role) {
@@ -280,8 +316,7 @@ void ImportDialog::roleChosen(std::size_t column, int role) {
             held.reset();
     if (role != static_cast<int>(ImportRole::None))
         roleColumn(mapping_, static_cast<ImportRole>(role)) = column;
-    if (Result<std::vector<PreviewRow>> rows = previewRows(bytes(), *rules_, previewCount))
-        preview_->show(*rules_, mapping_, *rows);
+    preview_->show(*rules_, mapping_, rows_);
     readAll();
     if (auto* chooser = preview_->findChild<QComboBox*>(QStringLiteral("import.role.%1").arg(column)))
         chooser->setFocus();

@@ -1,11 +1,10 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
-#include "core/exchange/ReadingImport.h"
 #include "core/record/Record.h"
 #include "ui/commands/RecordCommand.h"
+#include "ui/import/TableReading.h"
 
-#include <QByteArray>
 #include <QDialog>
 
 #include <memory>
@@ -14,6 +13,7 @@
 class QCheckBox;
 class QComboBox;
 class QLabel;
+class QProgressBar;
 class QPushButton;
 class QSpinBox;
 class QTableView;
@@ -24,31 +24,37 @@ namespace spanwright {
 class ImportIssues;
 class ImportPreview;
 
-/// Shows how a table of text was understood, with its first rows, and lets everything be changed before anything is taken in.
+/// Shows how a table of text was understood, with its first rows, and lets everything be changed before anything is taken in. A large
+/// table is read beside the window, and given up with the dialog.
 class ImportDialog : public QDialog {
     Q_OBJECT
 
   public:
-    ImportDialog(const QByteArray& bytes, const QString& origin, const Record& record, QWidget* parent);
+    ImportDialog(TableSource source, const QString& origin, const Record& record, QWidget* parent);
     ~ImportDialog() override;
     /// The one step that takes the readings in, once the dialog was accepted.
     [[nodiscard]] std::unique_ptr<RecordCommand> takeCommand();
 
   private:
     void guess();
+    void showLook(const TableLook& look);
+    void refuse(const Error& error);
     void readAll();
+    void showRead(Result<ImportedReadings> read);
+    void showSum(const QString& sum);
+    void showBusy(double share);
     void showRules();
     void showDoubts();
     void roleChosen(std::size_t column, int role);
     void makeTop(QVBoxLayout* all);
     [[nodiscard]] CsvWishes wishes() const;
-    [[nodiscard]] std::string_view bytes() const { return {bytes_.constData(), static_cast<std::size_t>(bytes_.size())}; }
 
-    QByteArray bytes_;
+    TableReading* reading_;
     QString origin_;
     Record record_; ///< shares its readings; asked for what is already known
     std::optional<CsvRules> rules_;
     ImportMapping mapping_;
+    std::vector<PreviewRow> rows_;
     std::optional<ImportedReadings> read_;
 
     QComboBox* encoding_;
@@ -60,6 +66,7 @@ class ImportDialog : public QDialog {
     QCheckBox* takeNames_;
     QLabel* doubts_;
     QLabel* sum_;
+    QProgressBar* bar_;
     QLabel* issuesHead_;
     ImportPreview* preview_;
     ImportIssues* issues_;

@@ -93,7 +93,11 @@ bool FileDesk::openSession(const QString& path) {
     return true;
 }
 
+/// A large table is read beside the window, by the dialog that shows it.
 bool FileDesk::openTable(const QString& path) {
+    TableSource later{{}, path, {}};
+    if (later.large())
+        return take(std::move(later), QFileInfo(path).fileName());
     const Result<FileBytes> file = FileBytes::read(path.toStdString());
     if (!file) {
         tellError(tr("The table was not opened"), file.error());
@@ -104,11 +108,15 @@ bool FileDesk::openTable(const QString& path) {
 }
 
 bool FileDesk::importTable(const QByteArray& bytes, const QString& origin) {
+    return take({bytes, {}, {}}, origin);
+}
+
+bool FileDesk::take(TableSource source, const QString& origin) {
     if (bench_.readOnly()) {
         dialogs_.tell(window_, tr("Nothing was taken in"), tr("This session can only be looked at. Save it under another name first."));
         return false;
     }
-    ImportDialog dialog(bytes, origin, bench_.record(), window_);
+    ImportDialog dialog(std::move(source), origin, bench_.record(), window_);
     if (!dialogs_.run(dialog))
         return false;
     std::unique_ptr<RecordCommand> command = dialog.takeCommand();

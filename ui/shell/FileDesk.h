@@ -9,6 +9,8 @@
 
 namespace spanwright {
 
+struct TableSource;
+
 /// New, open, save, import: what a document does, with the questions and sentences that go with it.
 class FileDesk : public QObject {
     Q_OBJECT
@@ -39,6 +41,7 @@ class FileDesk : public QObject {
   private:
     bool openSession(const QString& path);
     bool openTable(const QString& path);
+    bool take(TableSource source, const QString& origin);
     void tellError(const QString& title, const Error& error);
     void tellNotes(const QStringList& notes);
     void remember(const QString& path);

@@ -11,6 +11,7 @@
 #include "ui/shell/Pages.h"
 #include "ui/shell/StageBar.h"
 #include "ui/shell/StatusLine.h"
+#include "ui/shell/UndoKeys.h"
 #include "ui/words/Words.h"
 
 #include <QApplication>
@@ -101,6 +102,7 @@ MainWindow::MainWindow(const WindowSurroundings& surroundings, QWidget* parent)
     makeHelpMenu();
     for (int i = 0; i < pages_->count(); ++i)
         actions_.adopt(pages_->widget(i));
+    new UndoKeys(this);
     bar_->addAtEnd(actions_.find(QStringLiteral("edit.undo")), tr("Undo"));
     bar_->addAtEnd(actions_.find(QStringLiteral("edit.redo")), tr("Redo"));
     bar_->addAtEnd(actions_.find(QStringLiteral("edit.find")), tr("Find a command  Ctrl+K"));

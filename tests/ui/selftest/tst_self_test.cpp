@@ -1,6 +1,10 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "tests/support/RunCommand.h"
-#include "ui/selftest/SelfTest.h"
+#include "ui/selftest/SelfTestDialog.h"
+
+#include <QLabel>
+#include <QPushButton>
+#include <QTreeWidget>
 
 #include <QtTest>
 
@@ -15,6 +19,8 @@ class TestSelfTest : public QObject {
     void eachCaseNamesItsSource();
     void aFigureThatDiffersIsSaid();
     void theCommandPrintsAndWritesARecord();
+    void theDialogShowsWhatDiffersFirstAndSavesTheRecord();
+    void everyFigureHasWords();
 };
 
 void TestSelfTest::everyPublishedFigureIsMet() {
@@ -53,6 +59,36 @@ void TestSelfTest::theCommandPrintsAndWritesARecord() {
     QVERIFY(pdf.read(5) == "%PDF-");
     QCOMPARE(runWords({"self-test", "--to", desk.path("no/folder/record.pdf")}).status, 1);
     QCOMPARE(runWords({"self-test", "extra"}).status, 2);
+}
+
+void TestSelfTest::theDialogShowsWhatDiffersFirstAndSavesTheRecord() {
+    Desk desk;
+    const QString path = QString::fromStdString(desk.path("record.pdf"));
+    SelfTestDialog dialog([&](QWidget*, const QString&) { return path; });
+    dialog.show();
+    auto* save = dialog.findChild<QPushButton*>(QStringLiteral("selfTestSave"));
+    QVERIFY(!save->isEnabled()); // it runs beside the window
+    QTRY_VERIFY(save->isEnabled());
+    QVERIFY(dialog.findChild<QLabel*>(QStringLiteral("selfTestVerdict"))->text().startsWith(QStringLiteral("All ")));
+    auto* table = dialog.findChild<QTreeWidget*>(QStringLiteral("selfTestTable"));
+    QCOMPARE(table->topLevelItemCount(), static_cast<int>(runSelfTest().figures()));
+    save->click();
+    QVERIFY(QFile::exists(path));
+
+    SelfTestOutcome outcome = runSelfTest();
+    outcome.cases.back().figures.front().holds = false;
+    QCOMPARE(failuresFirst(outcome).front(), &outcome.cases.back());
+    Progress cancelled;
+    cancelled.cancel();
+    QVERIFY(runSelfTest(cancelled).cases.empty());
+}
+
+void TestSelfTest::everyFigureHasWords() {
+    for (const SelfTestCase& one : runSelfTest().cases)
+        for (const SelfTestFigure& figure : one.figures) {
+            const QString words = selfTestFigureText(figure.name);
+            QVERIFY2(!words.isEmpty() && !words.contains(u'_') && !words.contains(u'.'), qPrintable(words));
+        }
 }
 
 QTEST_MAIN(TestSelfTest)

@@ -13,7 +13,10 @@
 #include <QListWidget>
 #include <QMenu>
 #include <QMimeData>
+#include <QProgressBar>
+#include <QSpinBox>
 #include <QTableView>
+#include <QTimer>
 #include <QToolButton>
 #include <QtTest>
 
@@ -368,6 +371,75 @@ class MainWindowTest : public QObject {
         QVERIFY(!desk.window->files().openPath(desk.write("flow.csv", table)));
         QVERIFY(desk.record() == Record{});
         QCOMPARE(desk.window->workbench().undoStack().count(), 0);
+    }
+
+    /// 100 000 rows are read beside the window: it goes on living, nothing is there before they were read whole, and giving up in between
+    /// leaves nothing.
+    void aLargeTableIsReadBesideTheWindow() {
+        Desk desk;
+        QByteArray rows = "reference / bar,indication / mA\n";
+        for (int i = 0; i < 100'000; ++i)
+            rows += QByteArray::number(i % 11) + ".0001," + QByteArray::number(4 + 1.6 * (i % 11) + 0.001 * (i % 7), 'f', 4) + '\n';
+        const QString path = desk.write("large.csv", rows);
+        desk.dialogs.inDialog = [](QDialog& dialog) { return dialog.findChild<QWidget*>("import.accept")->isEnabled(); };
+        QVERIFY(!desk.window->files().openPath(path)); // at once: still being read
+        QVERIFY(desk.record() == Record{});
+
+        bool seenBusy = false;
+        int turns = 0;
+        desk.dialogs.inDialog = [&](QDialog& dialog) {
+            auto* accept = dialog.findChild<QWidget*>("import.accept");
+            auto* bar = dialog.findChild<QProgressBar*>("import.progress");
+            seenBusy = bar->isVisible() && !accept->isEnabled();
+            QTimer turning;
+            connect(&turning, &QTimer::timeout, &dialog, [&] { ++turns; });
+            turning.start(0);
+            return QTest::qWaitFor([&] { return accept->isEnabled(); }) && !bar->isVisible();
+        };
+        QVERIFY(desk.window->files().openPath(path));
+        QVERIFY(seenBusy);
+        QVERIFY(turns > 0);
+        QCOMPARE(desk.record().readings->size(), std::size_t{100'000});
+        desk.window->workbench().settle();
+        QCOMPARE(desk.window->workbench().undoStack().count(), 1);
+        desk.trigger("edit.undo");
+        QVERIFY(desk.record() == Record{});
+        desk.window->workbench().settle();
+    }
+
+    /// A spin box or a line editor in which nothing waits to be handed over leaves the keys of undo to the record.
+    void undoReachesTheRecordFromAnEditor() {
+        Desk desk;
+        desk.window->workbench().setRecord(test::pressureTransmitter());
+        const Record before = desk.record();
+        desk.type("job.customer", "Someone else");
+        auto* spin = desk.find<QSpinBox>("plan.runs");
+        QVERIFY(spin);
+        spin->setFocus();
+        QVERIFY(spin->hasFocus());
+        QTest::keyClick(spin, Qt::Key_Z, Qt::ControlModifier);
+        QCOMPARE(desk.record().job.customer, before.job.customer);
+        QTest::keyClick(spin, Qt::Key_Z, Qt::ControlModifier | Qt::ShiftModifier);
+        QCOMPARE(desk.record().job.customer, std::string("Someone else"));
+        auto* line = desk.find<QLineEdit>("item.serial");
+        line->setFocus();
+        QTest::keyClicks(line, "7"); // being typed: the keys are the editor's
+        QTest::keyClick(line, Qt::Key_Z, Qt::ControlModifier);
+        QCOMPARE(desk.record().job.customer, std::string("Someone else"));
+    }
+
+    void theSelfTestStandsUnderHelp() {
+        Desk desk;
+        desk.dialogs.pdf = desk.path("record.pdf");
+        desk.dialogs.inDialog = [](QDialog& dialog) {
+            auto* save = dialog.findChild<QAbstractButton*>("selfTestSave");
+            if (!QTest::qWaitFor([&] { return save->isEnabled(); }))
+                return false;
+            save->click();
+            return true;
+        };
+        desk.trigger("help.self-test");
+        QVERIFY(QFileInfo(desk.path("record.pdf")).size() > 10'000);
     }
 
     void columnsCanBeTakenAsSomethingElse() {
