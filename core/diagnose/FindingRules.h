@@ -23,8 +23,8 @@ ReadingId idOf(const FindingsInput& input, std::size_t index);
 
 /// Deviations of the readings from the mean of their set point and direction and from the line of their run, times the
 /// root of their weights, in the order taken: what is left when everything that the split knows is taken out. Empty
-/// without repeats.
-std::vector<double> repeatabilityDeviations(const FindingsInput& input);
+/// without repeats. Readings left out (by index, rising) take no part in the means and deviate by 0.
+std::vector<double> repeatabilityDeviations(const FindingsInput& input, const std::vector<std::size_t>& leftOut = {});
 
 /// Whether a finding of that code is there already.
 bool contains(const std::vector<Finding>& found, FindingCode code);

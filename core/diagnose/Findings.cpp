@@ -44,7 +44,7 @@ ReadingId idOf(const FindingsInput& input, std::size_t index) {
     return input.record.readings->ids()[input.sample.rows[index]];
 }
 
-std::vector<double> repeatabilityDeviations(const FindingsInput& input) {
+std::vector<double> repeatabilityDeviations(const FindingsInput& input, const std::vector<std::size_t>& leftOut) {
     const Sample& sample = input.sample;
     const std::size_t n = sample.size();
     if (!input.residuals || !input.split || !input.split->pureError || sample.groupValue.size() > mostSetPoints)
@@ -74,7 +74,12 @@ std::vector<double> repeatabilityDeviations(const FindingsInput& input) {
                            runs[at].slope * (sample.groupValue[static_cast<std::size_t>(sample.group[i])] - middle);
         }
     }
+    std::size_t next = 0;
     for (std::size_t i = 0; i < n; ++i) {
+        if (next < leftOut.size() && leftOut[next] == i) {
+            ++next;
+            continue;
+        }
         const double weight = w.empty() ? 1 : w[i];
         Cell& cell = cellOf(i);
         cell.weight += weight;
@@ -90,6 +95,8 @@ std::vector<double> repeatabilityDeviations(const FindingsInput& input) {
         const Cell& cell = cellOf(i);
         left[i] = (left[i] - cell.sum) * cell.weight * (w.empty() ? 1 : std::sqrt(w[i]));
     }
+    for (const std::size_t i : leftOut)
+        left[i] = 0;
     return left;
 }
 

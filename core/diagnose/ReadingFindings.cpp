@@ -12,6 +12,35 @@
 namespace spanwright {
 namespace {
 
+/// One after the other, the reading that lies furthest from the mean of its set point, direction and run when those found before
+/// are left out of that mean: a wild reading pulls the mean of its set point towards it, and its sound neighbours would seem to be
+/// out. With very many readings the means are taken once.
+std::vector<ExtremeTrial> cleanedTrials(const FindingsInput& input, const std::vector<double>& deviations, int most) {
+    constexpr std::size_t mostCleaned = 20'000;
+    if (deviations.size() > mostCleaned)
+        return extremeTrials(deviations, most);
+    std::vector<ExtremeTrial> trials;
+    std::vector<std::size_t> leftOut;
+    std::vector<double> all = deviations;
+    for (int k = 0; k < most; ++k) {
+        std::vector<double> kept;
+        std::vector<std::size_t> index;
+        for (std::size_t i = 0; i < all.size(); ++i)
+            if (!std::binary_search(leftOut.begin(), leftOut.end(), i)) {
+                kept.push_back(all[i]);
+                index.push_back(i);
+            }
+        const std::vector<ExtremeTrial> furthest = extremeTrials(kept, 1);
+        if (furthest.empty())
+            break;
+        trials.push_back(furthest.front());
+        trials.back().index = index[furthest.front().index];
+        leftOut.insert(std::lower_bound(leftOut.begin(), leftOut.end(), trials.back().index), trials.back().index);
+        all = repeatabilityDeviations(input, leftOut);
+    }
+    return trials;
+}
+
 /// Stragglers at 5 % and outliers at 1 % (ISO 5725-2:2019, 8.3.4), among the residuals and among the deviations from
 /// set point, direction and run, where a gap between rising and falling hides nothing. A technical cause is to be
 /// looked for; nothing is removed.
@@ -23,10 +52,9 @@ void outlying(const FindingsInput& input, const std::vector<double>& deviations,
         bool outlier = false;
     };
     std::map<std::size_t, Mark> marks;
-    const auto look = [&](std::span<const double> u) {
+    const auto look = [&](std::span<const double> u, const std::vector<ExtremeTrial>& trials) {
         if (u.size() < 5)
             return;
-        const std::vector<ExtremeTrial> trials = extremeTrials(u, most);
         const int stragglers = outlierCount(trials, u.size(), 0.05);
         const int outliers = stragglers > 0 ? outlierCount(trials, u.size(), 0.01) : 0;
         for (int k = 0; k < stragglers; ++k) {
@@ -39,10 +67,10 @@ void outlying(const FindingsInput& input, const std::vector<double>& deviations,
         }
     };
     if (input.residuals->weight.empty())
-        look(input.residuals->e.high);
-    else
-        look(weightedResiduals<double>(*input.residuals));
-    look(deviations);
+        look(input.residuals->e.high, extremeTrials(input.residuals->e.high, most));
+    else if (const std::vector<double> weighted = weightedResiduals<double>(*input.residuals); true)
+        look(weighted, extremeTrials(weighted, most));
+    look(deviations, cleanedTrials(input, deviations, most));
     for (const bool outlier : {true, false}) {
         Finding finding;
         finding.code = outlier ? FindingCode::Outlier : FindingCode::Straggler;

@@ -19,6 +19,7 @@
 #include "ui/commands/ExclusionCommands.h"
 #include "ui/commands/PartCommand.h"
 #include "ui/look/Card.h"
+#include "ui/look/LinkButton.h"
 #include "ui/look/Look.h"
 #include "ui/look/NumberText.h"
 #include "ui/plot/LinePlot.h"
@@ -138,12 +139,7 @@ QWidget* BenchPage::buildMiddle() {
 }
 
 QToolButton* BenchPage::cardLink(const QString& name, const QString& text, void (BenchPage::*what)()) {
-    auto* link = new QToolButton;
-    link->setObjectName(name);
-    link->setProperty("link", true);
-    link->setFont(textFont(TextRole::Small));
-    link->setText(text);
-    link->setStyleSheet(QStringLiteral("QToolButton { padding: 2px 0px; }"));
+    auto* link = new LinkButton(name, text);
     connect(link, &QToolButton::clicked, this, what);
     return link;
 }

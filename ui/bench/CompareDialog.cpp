@@ -3,6 +3,7 @@
 
 #include "core/fit/CalibrationFunction.h"
 #include "ui/bench/ChoiceMenus.h"
+#include "ui/bench/FiguresTable.h"
 #include "ui/bench/FitEffect.h"
 #include "ui/bench/TrialEvaluation.h"
 #include "ui/commands/PartCommand.h"
@@ -176,7 +177,7 @@ void CompareDialog::show(const std::shared_ptr<const Evaluation>& trial) {
     }
     findings_->setText(lines.join(QLatin1Char('\n')));
     take_->setEnabled(then && then->fit && !workbench_.readOnly());
-    adjustSize();
+    fitToContents(*this);
 }
 
 void CompareDialog::take() {

@@ -113,6 +113,7 @@ ExclusionsDialog::ExclusionsDialog(Workbench& workbench, QWidget* parent)
     connect(evaluation_, &TrialEvaluation::ready, this, &ExclusionsDialog::take);
     connect(&workbench_, &Workbench::evaluationChanged, this, &ExclusionsDialog::start);
     start();
+    fitToContents(*this);
     list_->setFocus();
 }
 
@@ -172,6 +173,8 @@ void ExclusionsDialog::take(const std::shared_ptr<const Evaluation>& evaluation)
     }
     showList();
     showEffect();
+    if (next_ == 1)
+        fitToContents(*this);
     evaluateNext();
 }
 

@@ -9,7 +9,9 @@
 #include <QContextMenuEvent>
 #include <QHeaderView>
 #include <QKeyEvent>
+#include <QLayout>
 #include <QMenu>
+#include <QScreen>
 
 #include <algorithm>
 #include <numeric>
@@ -18,7 +20,7 @@ namespace spanwright {
 
 namespace {
 
-constexpr int RowHeight = 26;
+constexpr int RowHeight = 26, CellPadding = 26;
 constexpr QChar Indent(0x2003);
 
 /// As a spreadsheet reads it: no indent, a minus that it knows.
@@ -68,6 +70,11 @@ void FiguresTable::setFigures(const QStringList& headings, const std::vector<Fig
             setItem(row, column, item);
         }
     }
+    int lines = 1;
+    for (const QString& heading : headings)
+        lines = std::max(lines, static_cast<int>(heading.count(QLatin1Char('\n'))) + 1);
+    headHeight_ = lines * QFontMetrics(font()).lineSpacing() + 12;
+    horizontalHeader()->setFixedHeight(headHeight_);
     horizontalHeader()->setSectionResizeMode(0, QHeaderView::Stretch);
     if (chosen >= 0 && chosen < rowCount())
         setCurrentCell(chosen, 0);
@@ -121,18 +128,26 @@ void FiguresTable::copy() {
     QApplication::clipboard()->setText(selectedText());
 }
 
+/// Measured on the words themselves: the view measures only what it shows, and it is asked before it shows anything.
 QSize FiguresTable::sizeHint() const {
+    const QFontMetrics metrics(font());
     int width = 2 * frameWidth() + 2;
-    for (int column = 0; column < columnCount(); ++column)
-        width += std::max(sizeHintForColumn(column) + 4, horizontalHeader()->sectionSizeHint(column));
+    for (int column = 0; column < columnCount(); ++column) {
+        int widest = 0;
+        for (const QString& line : horizontalHeaderItem(column)->text().split(QLatin1Char('\n')))
+            widest = std::max(widest, metrics.horizontalAdvance(line));
+        for (int row = 0; row < rowCount(); ++row)
+            widest = std::max(widest, metrics.horizontalAdvance(item(row, column)->text()));
+        width += widest + CellPadding;
+    }
     const int rows = std::min(rowCount(), mostRows_);
     if (rowCount() > mostRows_)
         width += style()->pixelMetric(QStyle::PM_ScrollBarExtent) + 4;
-    return {width, horizontalHeader()->sizeHint().height() + rows * RowHeight + 2 * frameWidth() + 2};
+    return {width, headHeight_ + rows * RowHeight + 2 * frameWidth() + 2};
 }
 
 QSize FiguresTable::minimumSizeHint() const {
-    return {std::min(320, sizeHint().width()), std::min(sizeHint().height(), horizontalHeader()->sizeHint().height() + 4 * RowHeight)};
+    return {std::min(720, sizeHint().width()), sizeHint().height()}; // rows are seen whole or scrolled
 }
 
 void FiguresTable::keyPressEvent(QKeyEvent* event) {
@@ -154,6 +169,17 @@ void FiguresTable::contextMenuEvent(QContextMenuEvent* event) {
     some->setEnabled(selectionModel()->hasSelection());
     menu.addAction(tr("Copy the whole table"), this, [this] { QApplication::clipboard()->setText(text()); });
     menu.exec(event->globalPos());
+}
+
+void fitToContents(QDialog& dialog) {
+    constexpr int frame = 60; // of the window manager
+    dialog.ensurePolished();
+    QLayout* layout = dialog.layout();
+    layout->activate();
+    const QSize room = dialog.screen()->availableSize() - QSize(frame, frame);
+    const int width = std::min(std::max(layout->totalSizeHint().width(), dialog.minimumWidth()), room.width());
+    const int tall = layout->hasHeightForWidth() ? layout->totalHeightForWidth(width) : layout->totalSizeHint().height();
+    dialog.resize(width, std::min(std::max(tall, layout->totalMinimumSize().height()), room.height()));
 }
 
 } // namespace spanwright

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include <QDialog>
 #include <QTableWidget>
 
 #include <set>
@@ -43,7 +44,10 @@ class FiguresTable : public QTableWidget {
     [[nodiscard]] Qt::Alignment sideOf(int column) const;
 
     std::set<int> words_{0};
-    int mostRows_ = 16;
+    int mostRows_ = 16, headHeight_ = 0;
 };
+
+/// Gives a dialog the size at which its tables and its wrapped texts are seen whole, as far as the screen allows.
+void fitToContents(QDialog& dialog);
 
 } // namespace spanwright

@@ -2,6 +2,7 @@
 #include "ui/bench/FindingsView.h"
 
 #include "ui/bench/Dismissals.h"
+#include "ui/look/LinkButton.h"
 #include "ui/look/Look.h"
 #include "ui/words/Words.h"
 
@@ -93,14 +94,8 @@ void FindingsView::setFindings(std::vector<Finding> findings, const Record& reco
 }
 
 QToolButton* FindingsView::link(QHBoxLayout* into, const QString& text, const QString& name, const QString& about) {
-    auto* button = new QToolButton;
-    button->setObjectName(name);
-    button->setProperty("link", true);
-    button->setFont(textFont(TextRole::Small));
-    button->setText(text);
+    auto* button = new LinkButton(name, text);
     button->setAccessibleName(text + QStringLiteral(": ") + about);
-    button->setStyleSheet(QStringLiteral("QToolButton { padding: 1px 0px; }"));
-    button->setCursor(Qt::PointingHandCursor);
     into->addWidget(button);
     return button;
 }

@@ -247,6 +247,7 @@ void NextReading::showExpected() {
         expected_->setText(expected->from == Expected::From::Readings ? tr("expected %1 to %2 %3").arg(low, high, unit)
                                                                      : tr("a perfect item reads %1 %2").arg(fixedText((expected->low + expected->high) / 2, decimals), unit));
     }
+    expected_->setVisible(planned_ || expected);
     judgeTyping();
 }
 
@@ -263,6 +264,7 @@ void NextReading::showDwell() {
 
 void NextReading::tell(const QString& sentence, bool warning) {
     sentence_->setText(sentence);
+    sentence_->setVisible(planned_ || !sentence.isEmpty()); // a line kept free would be an empty strip once the plan is done
     sentence_->setForegroundRole(warning ? inkRole::warning : inkRole::accent);
 }
 

@@ -9,6 +9,7 @@
 #include <QApplication>
 #include <QClipboard>
 #include <QDialogButtonBox>
+#include <QHBoxLayout>
 #include <QLabel>
 #include <QPushButton>
 #include <QVBoxLayout>
@@ -109,8 +110,8 @@ QStringList processHeadings(const Item& item) {
 std::vector<FiguresRow> processRows(const ProcessFigures& figures) {
     const std::pair<QString, const std::optional<ProcessFigure>*> all[] = {
         {PerformanceDialog::tr("largest measured error (means)"), &figures.measuredErrorMax},
-        {PerformanceDialog::tr("inaccuracy, largest positive error of one reading"), &figures.inaccuracyHigh},
-        {PerformanceDialog::tr("inaccuracy, largest negative error of one reading"), &figures.inaccuracyLow},
+        {PerformanceDialog::tr("inaccuracy, most positive reading"), &figures.inaccuracyHigh},
+        {PerformanceDialog::tr("inaccuracy, most negative reading"), &figures.inaccuracyLow},
         {PerformanceDialog::tr("hysteresis (means)"), &figures.hysteresis},
         {PerformanceDialog::tr("hysteresis within one run"), &figures.hysteresisInCycle},
         {PerformanceDialog::tr("non-repeatability (largest spread)"), &figures.nonRepeatability},
@@ -128,7 +129,7 @@ std::vector<FiguresRow> processRows(const ProcessFigures& figures) {
 
 QStringList forceHeadings(const Item& item) {
     return {headed(PerformanceDialog::tr("force"), item.reference.unit), headed(PerformanceDialog::tr("mean deflection"), item.indication.unit),
-            PerformanceDialog::tr("reproduc-\nibility b, %"), PerformanceDialog::tr("repeat-\nability b′, %"), PerformanceDialog::tr("interpolation\nerror f꜀, %"),
+            PerformanceDialog::tr("reproduc-\nibility b, %"), PerformanceDialog::tr("repeat-\nability b′, %"), PerformanceDialog::tr("interpolation\nerror, %"),
             PerformanceDialog::tr("reversi-\nbility v, %")};
 }
 
@@ -146,17 +147,29 @@ std::vector<FiguresRow> forceRows(const ForceFigures& figures) {
 
 PerformanceDialog::PerformanceDialog(Workbench& workbench, QWidget* parent)
     : QDialog(parent), workbench_(workbench), process_(new FiguresTable(QStringLiteral("processFigures"), tr("Performance figures"))),
-      processNote_(quietLabel(QStringLiteral("processNote"))), forceHead_(heading(tr("Force figures"))),
-      force_(new FiguresTable(QStringLiteral("forceFigures"), tr("Force figures"))), forceNote_(quietLabel(QStringLiteral("forceNote"))) {
+      processNote_(quietLabel(QStringLiteral("processNote"))), processHead_(heading(QString())), forceHead_(heading(tr("Force figures"))),
+      force_(new FiguresTable(QStringLiteral("forceFigures"), tr("Force figures"))), forceNote_(quietLabel(QStringLiteral("forceNote"))), noForce_(quietLabel(QStringLiteral("noForce"))) {
     setObjectName(QStringLiteral("performanceDialog"));
     setAttribute(Qt::WA_DeleteOnClose);
     setWindowTitle(tr("Performance figures"));
     auto* all = new QVBoxLayout(this);
     all->setContentsMargins(space::card, space::card, space::card, space::card);
     all->setSpacing(space::step);
-    force_->setMostRowsShown(8);
-    for (QWidget* widget : std::initializer_list<QWidget*>{process_, processNote_, forceHead_, force_, forceNote_})
-        all->addWidget(widget, widget == force_ ? 1 : 0);
+    processHead_->setText(tr("In % of span"));
+    auto* sides = new QHBoxLayout;
+    sides->setSpacing(2 * space::card);
+    const auto column = [&](std::initializer_list<QWidget*> widgets) {
+        auto* made = new QVBoxLayout;
+        made->setSpacing(space::step);
+        for (QWidget* widget : widgets)
+            made->addWidget(widget);
+        made->addStretch(1);
+        sides->addLayout(made);
+    };
+    column({processHead_, process_, processNote_});
+    column({forceHead_, force_, forceNote_});
+    all->addLayout(sides);
+    all->addWidget(noForce_);
     auto* buttons = new QDialogButtonBox;
     QPushButton* copy = buttons->addButton(tr("Copy"), QDialogButtonBox::ActionRole);
     copy->setObjectName(QStringLiteral("copyPerformance"));
@@ -171,6 +184,7 @@ PerformanceDialog::PerformanceDialog(Workbench& workbench, QWidget* parent)
     all->addWidget(buttons);
     connect(&workbench_, &Workbench::evaluationChanged, this, &PerformanceDialog::refresh);
     refresh();
+    fitToContents(*this);
     process_->setFocus();
 }
 
@@ -196,15 +210,16 @@ void PerformanceDialog::refresh() {
 void PerformanceDialog::showForce(const PhaseEvaluation* phase) {
     const Record& record = workbench_.record();
     const bool wanted = !record.plan.positions.empty();
-    forceHead_->setVisible(wanted);
     const ForceFigures* figures = phase && phase->force ? &*phase->force : nullptr;
-    force_->setVisible(figures != nullptr);
+    for (QWidget* widget : std::initializer_list<QWidget*>{forceHead_, force_, forceNote_, processHead_})
+        widget->setVisible(figures != nullptr);
+    noForce_->setVisible(figures == nullptr);
     if (figures) {
         force_->setFigures(forceHeadings(record.item), forceRows(*figures));
         forceNote_->setText(forceText(*figures, record.item));
     } else {
-        forceNote_->setText(wanted ? tr("There are no force figures: they take runs in two positions or more, three forces, and a function that fits.")
-                                   : tr("Force figures are added when the plan on the Job stage says how the item is turned from run to run."));
+        noForce_->setText(wanted ? tr("There are no force figures: they take runs in two positions or more, three forces, and a function that fits.")
+                                 : tr("Force figures are added when the plan on the Job stage says how the item is turned from run to run."));
     }
 }
 

@@ -33,9 +33,11 @@ class PerformanceDialog : public QDialog {
     Workbench& workbench_;
     FiguresTable* process_;
     QLabel* processNote_;
+    QLabel* processHead_;
     QLabel* forceHead_;
     FiguresTable* force_;
     QLabel* forceNote_;
+    QLabel* noForce_;
 };
 
 } // namespace spanwright

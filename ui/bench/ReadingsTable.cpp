@@ -290,30 +290,35 @@ void ReadingsTable::contextMenuEvent(QContextMenuEvent* event) {
     menu->popup(event->globalPos());
 }
 
-/// The column of the set point and that of the state give way where the table is narrow.
+/// The column of the set point and that of the state give way where the table is narrow, and where it is narrower still, each
+/// column of numbers is as wide as its own head.
 void ReadingsTable::fitColumns() {
-    const QFontMetrics metrics(textFont(TextRole::Body));
-    const int digit = metrics.horizontalAdvance(QLatin1Char('0'));
+    const int digit = QFontMetrics(textFont(TextRole::Body)).horizontalAdvance(QLatin1Char('0'));
     const QFontMetrics small(textFont(TextRole::Small));
-    const int number = digit * 3 + 14, run = digit * 2 + 18, mark = 22;
+    const int number = digit * 3 + 12, run = digit * 2 + 16, mark = 22;
     const int room = viewport()->width();
-    int value = digit * 8 + 14;
-    for (const int column : {ReadingsModel::ReferenceValue, ReadingsModel::IndicationValue, ReadingsModel::ResidualValue})
-        value = std::max(value, std::min(small.horizontalAdvance(model_->headerData(column, Qt::Horizontal, Qt::DisplayRole).toString()) + 12, digit * 14));
-    const int setPoint = digit * 6 + 28, state = digit * 8 + 16;
-    const int least = number + run + mark + 3 * value;
-    const bool withSetPoint = room >= least + setPoint;
-    const bool withState = room >= least + setPoint + state;
+    constexpr int columns[] = {ReadingsModel::ReferenceValue, ReadingsModel::IndicationValue, ReadingsModel::ResidualValue};
+    int widths[std::size(columns)], widest = 0, sum = 0;
+    for (std::size_t i = 0; i < std::size(columns); ++i) {
+        const int head = small.horizontalAdvance(model_->headerData(columns[i], Qt::Horizontal, Qt::DisplayRole).toString()) + 12;
+        widths[i] = std::clamp(head, digit * 8 + 12, digit * 14);
+        widest = std::max(widest, widths[i]);
+        sum += widths[i];
+    }
+    const int others = number + run + mark, least = others + 3 * widest;
+    const int setPoint = std::max(digit * 6 + 28, small.horizontalAdvance(model_->headerData(ReadingsModel::SetPoint, Qt::Horizontal, Qt::DisplayRole).toString()) + 12);
+    const int state = digit * 8 + 16;
+    const bool withSetPoint = room >= least + setPoint, withState = room >= least + setPoint + state;
     setColumnHidden(ReadingsModel::SetPoint, !withSetPoint);
     setColumnHidden(ReadingsModel::State, !withState);
-    const int spare = std::max(0, room - least - (withSetPoint ? setPoint : 0) - (withState ? state : 0));
     const int parts = 3 + (withSetPoint ? 1 : 0);
+    const int spare = room - least - (withSetPoint ? setPoint : 0) - (withState ? state : 0);
     setColumnWidth(ReadingsModel::Number, number);
     setColumnWidth(ReadingsModel::Run, run);
     setColumnWidth(ReadingsModel::DirectionMark, mark);
-    setColumnWidth(ReadingsModel::SetPoint, setPoint + spare / parts);
-    for (const int column : {ReadingsModel::ReferenceValue, ReadingsModel::IndicationValue, ReadingsModel::ResidualValue})
-        setColumnWidth(column, value + spare / parts);
+    setColumnWidth(ReadingsModel::SetPoint, setPoint + std::max(0, spare) / parts);
+    for (std::size_t i = 0; i < std::size(columns); ++i)
+        setColumnWidth(columns[i], spare >= 0 ? widest + spare / parts : std::max(digit * 6, widths[i] + (room - others - sum) / 3));
     setColumnWidth(ReadingsModel::State, state);
 }
 

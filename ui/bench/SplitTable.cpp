@@ -98,6 +98,7 @@ SplitTable::SplitTable(Workbench& workbench, QWidget* parent)
     all->addWidget(buttons);
     connect(&workbench_, &Workbench::evaluationChanged, this, &SplitTable::refresh);
     refresh();
+    fitToContents(*this);
     table_->setFocus();
 }
 

@@ -10,7 +10,25 @@
 
 namespace spanwright {
 
-Card::Card(const QString& title, QWidget* parent) : QFrame(parent), title_(new QLabel(title)), note_(new QLabel) {
+namespace {
+
+/// A title that gives way to what stands beside it, and says so with an ellipsis.
+class ElidedTitle : public QLabel {
+  public:
+    using QLabel::QLabel;
+    [[nodiscard]] QSize minimumSizeHint() const override { return {QFontMetrics(font()).horizontalAdvance(QStringLiteral("Mmmm…")), QLabel::minimumSizeHint().height()}; }
+
+  protected:
+    void paintEvent(QPaintEvent*) override {
+        QPainter painter(this);
+        const QString shown = QFontMetrics(font()).elidedText(text(), Qt::ElideRight, width());
+        painter.drawText(rect(), Qt::AlignLeft | Qt::AlignVCenter, shown);
+    }
+};
+
+} // namespace
+
+Card::Card(const QString& title, QWidget* parent) : QFrame(parent), title_(new ElidedTitle(title)), note_(new QLabel) {
     auto* all = new QVBoxLayout(this);
     all->setContentsMargins(space::card, space::step + space::half, space::card, space::card);
     all->setSpacing(space::step);

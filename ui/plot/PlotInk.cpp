@@ -64,6 +64,8 @@ void PlotInk::paint(QPainter* painter, const QStyleOptionGraphicsItem*, QWidget*
     paintNumbers(*painter);
     for (const PlotStroke& stroke : strokes_)
         paintStroke(*painter, stroke);
+    for (const PlotStroke& stroke : strokes_) // over every line, so that none runs through words
+        paintLabel(*painter, stroke);
     paintNotes(*painter);
 }
 
@@ -108,11 +110,14 @@ void PlotInk::paintStroke(QPainter& painter, const PlotStroke& stroke) const {
             painter.drawEllipse(at, 3.5, 3.5);
     }
     painter.restore();
-    if (stroke.label.isEmpty())
+}
+
+void PlotInk::paintLabel(QPainter& painter, const PlotStroke& stroke) const {
+    if (stroke.label.isEmpty() || stroke.points.empty())
         return;
     const QFontMetricsF metrics(painter.font());
     const QSizeF size(metrics.horizontalAdvance(stroke.label) + 4, metrics.height());
-    QPointF at = line.back() + stroke.labelOffset - QPointF(0, size.height() / 2);
+    QPointF at = frame_.toPoint(stroke.points.back()) + stroke.labelOffset - QPointF(0, size.height() / 2);
     at.setX(std::clamp(at.x(), frame_.area.left(), std::max(frame_.area.left(), frame_.area.right() - size.width())));
     at.setY(std::clamp(at.y(), frame_.area.top(), frame_.area.bottom() - size.height()));
     QColor ground = scheme().card;

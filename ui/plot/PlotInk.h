@@ -61,6 +61,7 @@ class PlotInk : public QGraphicsObject {
   private:
     void paintNumbers(QPainter& painter) const;
     void paintStroke(QPainter& painter, const PlotStroke& stroke) const;
+    void paintLabel(QPainter& painter, const PlotStroke& stroke) const;
     void paintNotes(QPainter& painter) const;
 
     PlotFrame frame_;

@@ -27,6 +27,21 @@ QFont strongFont() {
     return font;
 }
 
+/// Whether the text has room along the bar.
+bool writeUpwards(QPainter& painter, const QRectF& bar, const QString& text, const QColor& color) {
+    painter.setFont(strongFont());
+    const double length = QFontMetricsF(painter.font()).horizontalAdvance(text);
+    if (length + 8 > bar.height())
+        return false;
+    painter.save();
+    painter.translate(bar.center());
+    painter.rotate(-90);
+    painter.setPen(color);
+    painter.drawText(QRectF(-length, -columnWidth / 2, 2 * length, columnWidth), Qt::AlignCenter, text);
+    painter.restore();
+    return true;
+}
+
 double labelHeight() {
     return QFontMetricsF(strongFont()).height() + QFontMetricsF(textFont(TextRole::Small)).height();
 }
@@ -189,17 +204,9 @@ void SplitPicture::paintSignal(QPainter& painter) const {
         painter.setPen(QPen(scheme().ink, 2));
         painter.drawRect(signal.bar.adjusted(1, 1, -1, -1));
     }
-    painter.setFont(strongFont());
-    const QString text = functionName_ + QLatin1Char(' ') + shareText(signal.share);
-    const double length = QFontMetricsF(painter.font()).horizontalAdvance(text);
-    if (length + 8 > signal.bar.height())
-        return;
-    painter.save();
-    painter.translate(signal.bar.center());
-    painter.rotate(-90);
-    painter.setPen(scheme().onAccent);
-    painter.drawText(QRectF(-length, -columnWidth / 2, 2 * length, columnWidth), Qt::AlignCenter, text);
-    painter.restore();
+    // Beside a small signal, how much the noise is.
+    if (!writeUpwards(painter, signal.bar, functionName_ + QLatin1Char(' ') + shareText(signal.share), scheme().onAccent))
+        writeUpwards(painter, sliver_, tr("noise %1").arg(shareText(1 - signal.share)), scheme().card);
 }
 
 void SplitPicture::paintPart(QPainter& painter, const Part& part) const {

@@ -8,11 +8,11 @@
 
 namespace spanwright {
 
-Ticks roundTicks(const AxisRange& range, int atMost) {
+namespace {
+
+/// Steps of at least `wanted`.
+Ticks ticksOf(const AxisRange& range, double wanted) {
     Ticks ticks;
-    if (!(range.span() > 0) || !std::isfinite(range.span()) || atMost < 1)
-        return ticks;
-    const double wanted = range.span() / atMost;
     const double power = std::floor(std::log10(wanted));
     const double unit = std::pow(10.0, power);
     const double lead = wanted / unit;
@@ -24,6 +24,18 @@ Ticks roundTicks(const AxisRange& range, int atMost) {
     ticks.first = from * ticks.step;
     for (double i = from; i <= to; ++i)
         ticks.places.push_back(i * ticks.step);
+    return ticks;
+}
+
+} // namespace
+
+Ticks roundTicks(const AxisRange& range, int atMost) {
+    if (!(range.span() > 0) || !std::isfinite(range.span()) || atMost < 1)
+        return {};
+    Ticks ticks = ticksOf(range, range.span() / atMost);
+    // One number alone does not say how long an axis is.
+    if (atMost > 1 && ticks.places.size() < 3)
+        ticks = ticksOf(range, ticks.step / 2.5);
     return ticks;
 }
 

@@ -22,7 +22,8 @@ struct Ticks {
     std::vector<double> places;
 };
 
-/// Steps of 1, 2 or 5 times a power of ten, as many as fit without exceeding `atMost`.
+/// Steps of 1, 2 or 5 times a power of ten, as many as fit without exceeding `atMost`, but where that
+/// leaves fewer than three, the next smaller step.
 Ticks roundTicks(const AxisRange& range, int atMost);
 
 enum class TickSign { Minus, Both };

@@ -35,8 +35,14 @@ QString FindingText::sentence(const Finding& finding) {
     case FindingCode::Autocorrelated:
         return tr("Neighbouring readings resemble each other; there is less information in them than their number suggests.");
     case FindingCode::NonNormal: return tr("The residuals are not normally distributed; intervals are approximate.");
-    case FindingCode::Straggler: return tr("A reading is a straggler (5 % level). Look for a technical cause; it stays in.");
-    case FindingCode::Outlier: return tr("A reading is a statistical outlier (1 % level). Look for a technical cause; it stays in.");
+    case FindingCode::Straggler:
+        if (finding.rows.size() > 1)
+            return tr("%1 readings are stragglers (5 % level). Look for technical causes; they stay in.").arg(finding.rows.size());
+        return tr("A reading is a straggler (5 % level). Look for a technical cause; it stays in.");
+    case FindingCode::Outlier:
+        if (finding.rows.size() > 1)
+            return tr("%1 readings are statistical outliers (1 % level). Look for technical causes; they stay in.").arg(finding.rows.size());
+        return tr("A reading is a statistical outlier (1 % level). Look for a technical cause; it stays in.");
     case FindingCode::Influential: return tr("The function hangs on a single reading more than on the others.");
     case FindingCode::ExcludedReadings: return tr("Readings were excluded.");
     case FindingCode::SetPointExcluded: return tr("Every reading of a set point is excluded.");

@@ -151,6 +151,11 @@ class FindingsTest : public QObject {
         const Finding* outlier = find(typed, FindingCode::Outlier);
         QVERIFY(outlier && outlier->remedy == Remedy::SeeReadings);
         QCOMPARE(typed.front().severity, Severity::Serious);
+        // The wild reading pulls the mean of its set point, but its sound neighbours are not called out for it.
+        QVERIFY(std::find(outlier->rows.begin(), outlier->rows.end(), ReadingId(16)) != outlier->rows.end());
+        for (const ReadingId sound : {13, 14, 15, 17, 18})
+            QVERIFY(std::find(outlier->rows.begin(), outlier->rows.end(), sound) == outlier->rows.end());
+        QVERIFY(std::find(outlier->rows.begin(), outlier->rows.end(), ReadingId(8)) != outlier->rows.end());
     }
 
     void scatterThatGrowsAsksForWeights() {

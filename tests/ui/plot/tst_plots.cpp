@@ -70,6 +70,9 @@ class PlotsTest : public QObject {
         QCOMPARE(tickText(ticks.places.back(), ticks, TickSign::Both, QLocale(QLocale::German)), QStringLiteral("+0,010"));
         QCOMPARE(roundTicks({0, 600}, 7).step, 100.0);
         QVERIFY(roundTicks({3, 3}, 5).places.empty());
+        const Ticks few = roundTicks({-0.028, 0.028}, 3); // 0 alone would not say how long the axis is
+        QCOMPARE(few.step, 0.02);
+        QCOMPARE(few.places.size(), std::size_t(3));
     }
 
     void theLinePlotShowsEveryReadingAndLabelsItsEnlargement() {
