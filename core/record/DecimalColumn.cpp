@@ -71,9 +71,13 @@ void DecimalColumn::erase(std::size_t row) {
 }
 
 void DecimalColumn::resize(std::size_t n) {
-    while (size() > n)
-        erase(size() - 1);
-    missing_ += n - size();
+    if (n < size()) {
+        const auto from = decimals_.begin() + static_cast<std::ptrdiff_t>(n);
+        missing_ -= static_cast<std::size_t>(std::count(from, decimals_.end(), Missing));
+        aside_.erase(aside_.lower_bound(n), aside_.end());
+    } else {
+        missing_ += n - size();
+    }
     grid_.resize(n, 0);
     decimals_.resize(n, Missing);
 }

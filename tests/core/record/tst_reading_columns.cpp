@@ -74,6 +74,26 @@ class ReadingColumnsTest : public QObject {
         QCOMPARE(column.at(1)->text(), std::string("7.50"));
     }
 
+    /// Numbers kept aside, here zeros with a minus sign, must not make taking back a block cost their square.
+    void aLargeBlockOfNumbersKeptAsideIsTakenBack() {
+        const Decimal zero = *Decimal::parse("-0.0"), one = *Decimal::parse("1.5");
+        ReadingColumns::Block block;
+        block.n = 200'000;
+        for (std::size_t i = 0; i < block.n; ++i) {
+            block.reference.push_back(i % 3 == 0 ? std::optional<Decimal>() : zero);
+            block.indication.push_back(i % 2 == 0 ? one : zero);
+        }
+        ReadingColumns columns;
+        columns.append(reading(1, "-0.0", "1.5"));
+        const ReadingColumns before = columns;
+        columns.appendBlock(block, 2);
+        QCOMPARE(columns.size(), std::size_t{200'001});
+        columns.removeBlock(2, block.n);
+        QVERIFY(columns == before);
+        QCOMPARE(columns.reference().at(0)->text(), std::string("-0.0"));
+        QVERIFY(columns.complete(0));
+    }
+
     void blocksAreAppendedAndTakenBack() {
         ReadingColumns columns;
         columns.append(reading(1, "1", "2"));
