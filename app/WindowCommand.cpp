@@ -2,7 +2,6 @@
 #include "app/WindowCommand.h"
 
 #include "app/Arguments.h"
-#include "ui/shell/Start.h"
 
 #include <QApplication>
 #include <QFileInfo>
@@ -18,6 +17,19 @@ constexpr OptionSpec known[] = {{"--stage"}, {"--scheme"}};
 Error badValue(const char* option, const std::string& text) {
     return Error(ErrorCode::UsageValueBad, {{"option", option}, {"text", text}});
 }
+
+/// Whether there is something to draw on. Qt would end the program otherwise, with a message about plug-ins.
+bool displayThere() {
+    if (!qEnvironmentVariableIsEmpty("QT_QPA_PLATFORM") || !qEnvironmentVariableIsEmpty("WAYLAND_DISPLAY"))
+        return true;
+    const QString display = qEnvironmentVariable("DISPLAY");
+    if (!display.startsWith(QLatin1Char(':')))
+        return !display.isEmpty();
+    const QString number = display.mid(1).section(QLatin1Char('.'), 0, 0);
+    return QFileInfo::exists(QStringLiteral("/tmp/.X11-unix/X") + number);
+}
+
+} // namespace
 
 Result<StartOptions> startOptions(const Words& words) {
     const auto arguments = parseArguments(words, known);
@@ -43,19 +55,6 @@ Result<StartOptions> startOptions(const Words& words) {
     }
     return options;
 }
-
-/// Whether there is something to draw on. Qt would end the program otherwise, with a message about plug-ins.
-bool displayThere() {
-    if (!qEnvironmentVariableIsEmpty("QT_QPA_PLATFORM") || !qEnvironmentVariableIsEmpty("WAYLAND_DISPLAY"))
-        return true;
-    const QString display = qEnvironmentVariable("DISPLAY");
-    if (!display.startsWith(QLatin1Char(':')))
-        return !display.isEmpty();
-    const QString number = display.mid(1).section(QLatin1Char('.'), 0, 0);
-    return QFileInfo::exists(QStringLiteral("/tmp/.X11-unix/X") + number);
-}
-
-} // namespace
 
 int windowCommand(int& argc, char** argv, const Words& words, Console console) {
     const auto options = startOptions(words);

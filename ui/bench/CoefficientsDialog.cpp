@@ -53,7 +53,7 @@ CoefficientsDialog::CoefficientsDialog(Workbench& workbench, TextPathAsk ask, QW
     setObjectName(QStringLiteral("coefficientsDialog"));
     setWindowTitle(tr("Coefficients for a data logger"));
     setAttribute(Qt::WA_DeleteOnClose);
-    resize(760, 560);
+    resize(800, 600);
     auto* all = new QVBoxLayout(this);
     all->setContentsMargins(space::card, space::card, space::card, space::card);
     all->setSpacing(space::step);

@@ -73,7 +73,7 @@ void ConvertDialog::convert() {
     }
     const ReadValue value = readValue(record, *phase->fit, typed->toDouble(), repeats_->value());
     showValue(value, statedValue(value, phase->budget.readBack), unit);
-    showInterval(value, *phase->fit, unit);
+    showInterval(value, *phase, unit);
     QStringList said;
     for (const Warning& warning : value.warnings)
         said << warningText(warning);
@@ -94,12 +94,12 @@ void ConvertDialog::showValue(const ReadValue& value, const StatedValue& stated,
         value_->setText(tr("%1 %2, without an uncertainty").arg(shown(stated.value), unit));
 }
 
-void ConvertDialog::showInterval(const ReadValue& value, const Fit& fit, const QString& unit) {
+void ConvertDialog::showInterval(const ReadValue& value, const PhaseEvaluation& phase, const QString& unit) {
     if (!value.reference || !std::isfinite(value.low) || !std::isfinite(value.high))
         return;
-    const int decimals = std::max(0, decimalsFor(value.high - value.low, 2));
-    interval_->setText(tr("From the calibration function alone, between %1 and %2 %3 with a probability of %4")
-                           .arg(fixedText(value.low, decimals), fixedText(value.high, decimals), unit, shareText(fit.coverage)));
+    const int decimals = std::max(0, decimalsFor(value.high - value.low, 3));
+    interval_->setText(tr("Function of the readings %1; it alone says between %2 and %3 %4 with a probability of %5.")
+                           .arg(phaseText(phase.phase), fixedText(value.low, decimals), fixedText(value.high, decimals), unit, shareText(phase.fit->coverage)));
 }
 
 } // namespace spanwright

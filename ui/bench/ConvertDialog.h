@@ -23,7 +23,7 @@ class ConvertDialog : public QDialog {
   private:
     void convert();
     void showValue(const ReadValue& value, const StatedValue& stated, const QString& unit);
-    void showInterval(const ReadValue& value, const Fit& fit, const QString& unit);
+    void showInterval(const ReadValue& value, const PhaseEvaluation& phase, const QString& unit);
 
     Workbench& workbench_;
     NumberEdit* indication_;

@@ -25,22 +25,34 @@ namespace {
 
 constexpr int LookEvery = 50; // ms
 
-enum Column { Verdict, Case, Figure, Printed, Computed, Digits, Source, Columns };
+enum Column { FigureColumn, PrintedColumn, ComputedColumn, DigitsColumn, VerdictColumn };
 
-QTreeWidgetItem* rowOf(const SelfTestCase& one, const SelfTestFigure& figure) {
-    auto* row = new QTreeWidgetItem({figure.holds ? SelfTestDialog::tr("agrees") : SelfTestDialog::tr("DIFFERS"), one.name,
-                                     selfTestFigureText(figure.name), figure.printed, selfTestNumberText(figure.got),
-                                     QString::number(figure.digits, 'f', 1), one.source});
-    for (const Column column : {Printed, Computed, Digits})
+QTreeWidgetItem* figureRow(const SelfTestFigure& figure) {
+    auto* row = new QTreeWidgetItem({selfTestFigureText(figure.name), figure.printed, selfTestNumberText(figure.got), QString::number(figure.digits, 'f', 1),
+                                     figure.holds ? SelfTestDialog::tr("agrees") : SelfTestDialog::tr("DIFFERS")});
+    for (const Column column : {PrintedColumn, ComputedColumn, DigitsColumn})
         row->setTextAlignment(column, Qt::AlignRight | Qt::AlignVCenter);
-    row->setToolTip(Source, one.source);
-    row->setToolTip(Figure, figure.name);
+    row->setToolTip(FigureColumn, figure.name);
     if (!figure.holds) {
-        QFont bold = row->font(Verdict);
+        QFont bold = row->font(VerdictColumn);
         bold.setBold(true);
-        row->setFont(Verdict, bold);
-        row->setForeground(Verdict, scheme().warning);
+        row->setFont(VerdictColumn, bold);
+        row->setForeground(VerdictColumn, scheme().warning);
     }
+    return row;
+}
+
+/// The case with its source over the whole width, and its figures under it, those that differ first.
+QTreeWidgetItem* caseRow(const SelfTestCase& one) {
+    auto* row = new QTreeWidgetItem({one.name + QStringLiteral("   ") + one.source});
+    QFont font = row->font(FigureColumn);
+    font.setWeight(QFont::DemiBold);
+    row->setFont(FigureColumn, font);
+    row->setToolTip(FigureColumn, one.source);
+    for (const bool holds : {false, true})
+        for (const SelfTestFigure& figure : one.figures)
+            if (figure.holds == holds)
+                row->addChild(figureRow(figure));
     return row;
 }
 
@@ -51,7 +63,7 @@ SelfTestDialog::SelfTestDialog(PdfPathAsk ask, QWidget* parent)
       table_(new QTreeWidget) {
     setObjectName(QStringLiteral("selfTestDialog"));
     setWindowTitle(tr("Self-test"));
-    resize(1060, 620);
+    resize(920, 640);
     auto* all = new QVBoxLayout(this);
     all->setContentsMargins(space::card, space::card, space::card, space::card);
     all->setSpacing(space::step);
@@ -65,8 +77,9 @@ SelfTestDialog::SelfTestDialog(PdfPathAsk ask, QWidget* parent)
     all->addWidget(bar_);
     table_->setObjectName(QStringLiteral("selfTestTable"));
     table_->setAccessibleName(tr("Published figures beside those computed here, those that differ first"));
-    table_->setHeaderLabels({tr("verdict"), tr("case"), tr("figure"), tr("printed"), tr("computed"), tr("digits"), tr("source")});
-    table_->setRootIsDecorated(false);
+    table_->setHeaderLabels({tr("figure"), tr("printed"), tr("computed"), tr("digits"), tr("verdict")});
+    for (const Column column : {PrintedColumn, ComputedColumn, DigitsColumn})
+        table_->headerItem()->setTextAlignment(column, Qt::AlignRight | Qt::AlignVCenter);
     table_->setUniformRowHeights(true);
     table_->setItemDelegate(new PaddedDelegate(table_));
     all->addWidget(table_, 1);
@@ -101,15 +114,14 @@ void SelfTestDialog::showOutcome() {
     verdict_->setText(selfTestVerdict(outcome_));
     verdict_->setForegroundRole(outcome_.failed() > 0 || outcome_.cases.empty() ? inkRole::warning : QPalette::WindowText);
     for (const SelfTestCase* one : failuresFirst(outcome_)) {
-        std::vector<const SelfTestFigure*> figures;
-        for (const SelfTestFigure& figure : one->figures)
-            figures.push_back(&figure);
-        std::stable_partition(figures.begin(), figures.end(), [](const SelfTestFigure* figure) { return !figure->holds; });
-        for (const SelfTestFigure* figure : figures)
-            table_->addTopLevelItem(rowOf(*one, *figure));
+        QTreeWidgetItem* row = caseRow(*one);
+        table_->addTopLevelItem(row);
+        row->setFirstColumnSpanned(true);
+        row->setExpanded(true);
     }
-    for (int column = 0; column < Columns; ++column)
-        table_->resizeColumnToContents(column);
+    const int widths[] = {320, 190, 190, 70};
+    for (int column = 0; column < VerdictColumn; ++column)
+        table_->setColumnWidth(column, widths[column]);
     save_->setEnabled(!outcome_.cases.empty());
 }
 

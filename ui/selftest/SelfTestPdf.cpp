@@ -64,6 +64,7 @@ Pages selfTestPages(const SelfTestOutcome& outcome, const SelfTestOccasion& occa
                   {{SelfTestPdf::tr("Recomputed"), occasion.date}, {SelfTestPdf::tr("Method"), SelfTestPdf::tr("published cases by the road of every record")}});
     flow.space(2);
     flow.notice(selfTestVerdict(outcome), outcome.cases.empty() || outcome.failed() > 0 ? PageInk::Warning : PageInk::Accent);
+    flow.space(1.5);
     flow.paragraph(SelfTestPdf::tr("Published cases, recomputed with this program on this machine. A figure agrees when it rounds to what the source "
                                    "prints; digits are those agreed, 15 at most. The record is one part of a validation (ISO/IEC 17025:2017, 7.11.2); "
                                    "it does not replace the laboratory's own."),

@@ -24,9 +24,9 @@ QString q(const std::string& text) {
     return QString::fromStdString(text);
 }
 
-/// Lines of at most 100 characters, broken between words.
+/// Lines of at most 84 characters, broken between words.
 QStringList wrapped(const QStringList& lines) {
-    constexpr qsizetype Widest = 100;
+    constexpr qsizetype Widest = 84;
     QStringList all;
     for (QString line : lines) {
         while (line.size() > Widest && line.lastIndexOf(QLatin1Char(' '), Widest) > 0) {

@@ -71,7 +71,9 @@ void TestSelfTest::theDialogShowsWhatDiffersFirstAndSavesTheRecord() {
     QTRY_VERIFY(save->isEnabled());
     QVERIFY(dialog.findChild<QLabel*>(QStringLiteral("selfTestVerdict"))->text().startsWith(QStringLiteral("All ")));
     auto* table = dialog.findChild<QTreeWidget*>(QStringLiteral("selfTestTable"));
-    QCOMPARE(table->topLevelItemCount(), static_cast<int>(runSelfTest().figures()));
+    QCOMPARE(table->topLevelItemCount(), static_cast<int>(runSelfTest().cases.size()));
+    QVERIFY(table->topLevelItem(0)->text(0).contains(QStringLiteral("NIST/ITL Statistical Reference Datasets")));
+    QCOMPARE(table->topLevelItem(0)->childCount(), static_cast<int>(runSelfTest().cases.front().figures.size()));
     save->click();
     QVERIFY(QFile::exists(path));
 
