@@ -154,7 +154,7 @@ struct ExcludedLine {
 enum class Statement {
     AsFoundOutsideLimits,
     AsFoundNotAccepted,      ///< inside the limits, but not every error inside the acceptance limits
-    HysteresisLeft,          ///< as-left errors of opposite sign at one set point: no trim removes hysteresis; facts: set_point
+    HysteresisLeft,          ///< as-left errors of opposite sign at one set point: no trim removes hysteresis; facts: set_point, unit
     ManyExcluded,            ///< facts: phase, count, of, limit
     NoAsFound,               ///< facts: reason
     Replaces,                ///< facts: number, reason

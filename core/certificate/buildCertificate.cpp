@@ -94,7 +94,7 @@ std::vector<StatementLine> noticesOf(const Record& record, const Evaluation& eva
             notices.push_back({Statement::ManyExcluded, {{"phase", std::string(nameOf(which))}, {"count", std::to_string(phase->excluded)},
                                                          {"of", std::to_string(phase->complete)}, {"limit", shortText(std::stod(roundedText(100 * limit, 2)))}}});
     if (const auto setPoint = hysteresisLeft(evaluation.phase(Phase::AsLeft)))
-        notices.push_back({Statement::HysteresisLeft, {{"set_point", shortText(*setPoint)}}});
+        notices.push_back({Statement::HysteresisLeft, {{"set_point", shortText(*setPoint)}, {"unit", record.item.reference.unit}}});
     for (const Evaluation::OverdueStandard& late : evaluation.overdue) {
         const Standard& standard = record.standards[late.index];
         notices.push_back({Statement::OverdueStandard,

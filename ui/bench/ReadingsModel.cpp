@@ -33,6 +33,10 @@ std::optional<std::pair<ReadingId, NumberColumn>> placeOf(const std::string& whe
     return std::nullopt;
 }
 
+QString overUnit(const QString& name, const QString& unit) {
+    return unit.isEmpty() ? name : name + QLatin1Char('\n') + unit;
+}
+
 QString shown(const std::string& decimal) {
     const auto value = Decimal::parse(decimal);
     return value ? typedText(*value) : QString::fromStdString(decimal);
@@ -315,10 +319,10 @@ QVariant ReadingsModel::headerData(int section, Qt::Orientation orientation, int
     switch (section) {
     case Number: return tr("#");
     case Run: return tr("run");
-    case SetPoint: return withUnit(tr("set point"), x);
-    case ReferenceValue: return withUnit(tr("reference"), x);
-    case IndicationValue: return withUnit(tr("indication"), y);
-    case ResidualValue: return withUnit(tr("residual"), workbench_.record().choices.fit == FitDirection::Indication ? y : x);
+    case SetPoint: return overUnit(tr("set point"), x);
+    case ReferenceValue: return overUnit(tr("reference"), x);
+    case IndicationValue: return overUnit(tr("indication"), y);
+    case ResidualValue: return overUnit(tr("residual"), workbench_.record().choices.fit == FitDirection::Indication ? y : x);
     case State: return tr("state");
     default: return {};
     }

@@ -21,6 +21,7 @@
 #include <QScrollBar>
 
 #include <algorithm>
+#include <map>
 
 namespace spanwright {
 
@@ -50,7 +51,8 @@ ReadingsTable::ReadingsTable(Workbench& workbench, QWidget* parent)
     setSelectionBehavior(SelectRows);
     setSelectionMode(ExtendedSelection);
     setEditTriggers(DoubleClicked | EditKeyPressed | AnyKeyPressed);
-    setHorizontalScrollBarPolicy(Qt::ScrollBarAlwaysOff);
+    setHorizontalScrollBarPolicy(Qt::ScrollBarAsNeeded);
+    setHorizontalScrollMode(ScrollPerPixel);
     setVerticalScrollMode(ScrollPerPixel);
     verticalHeader()->hide();
     verticalHeader()->setSectionResizeMode(QHeaderView::Fixed);
@@ -78,6 +80,7 @@ ReadingsTable::ReadingsTable(Workbench& workbench, QWidget* parent)
     });
     connect(&workbench_, &Workbench::selectionChanged, this, &ReadingsTable::showSelection);
     connect(model_, &QAbstractItemModel::headerDataChanged, this, &ReadingsTable::fitColumns);
+    connect(&workbench_, &Workbench::evaluationChanged, this, &ReadingsTable::fitColumns);
     // While nobody works in the table it follows what is taken.
     connect(&workbench_, &Workbench::recordChanged, this, [this, last = -1]() mutable {
         if (last != model_->taken() && !hasFocus() && !isAncestorOf(QApplication::focusWidget()))
@@ -290,35 +293,42 @@ void ReadingsTable::contextMenuEvent(QContextMenuEvent* event) {
     menu->popup(event->globalPos());
 }
 
-/// The column of the set point and that of the state give way where the table is narrow, and where it is narrower still, each
-/// column of numbers is as wide as its own head.
+/// What a column of numbers needs: its head, and its texts at both ends of the table, where the widest mostly are.
+int ReadingsTable::widthOfNumbers(int column) const {
+    constexpr int Looked = 60;
+    const QFontMetrics body(textFont(TextRole::Body)), small(textFont(TextRole::Small));
+    int widest = body.horizontalAdvance(QStringLiteral("000000"));
+    for (const QString& line : model_->headerData(column, Qt::Horizontal, Qt::DisplayRole).toString().split(QLatin1Char('\n')))
+        widest = std::max(widest, small.horizontalAdvance(line));
+    const int rows = model_->rowCount();
+    for (int row = 0; row < rows; row = row + 1 == Looked ? std::max(Looked, rows - Looked) : row + 1)
+        widest = std::max(widest, body.horizontalAdvance(model_->index(row, column).data().toString()));
+    return widest + 14;
+}
+
+/// The column of the set point and that of the state give way where the table is narrow; where even the rest does not fit, the
+/// table is moved sideways.
 void ReadingsTable::fitColumns() {
     const int digit = QFontMetrics(textFont(TextRole::Body)).horizontalAdvance(QLatin1Char('0'));
-    const QFontMetrics small(textFont(TextRole::Small));
-    const int number = digit * 3 + 12, run = digit * 2 + 16, mark = 22;
+    const int number = digit * 3 + 14, run = digit * 2 + 18, mark = 22, state = digit * 8 + 16;
+    const int setPoint = widthOfNumbers(ReadingsModel::SetPoint) + 14;
+    std::map<int, int> widths;
+    int least = number + run + mark;
+    for (const int column : {ReadingsModel::ReferenceValue, ReadingsModel::IndicationValue, ReadingsModel::ResidualValue})
+        least += widths[column] = widthOfNumbers(column);
     const int room = viewport()->width();
-    constexpr int columns[] = {ReadingsModel::ReferenceValue, ReadingsModel::IndicationValue, ReadingsModel::ResidualValue};
-    int widths[std::size(columns)], widest = 0, sum = 0;
-    for (std::size_t i = 0; i < std::size(columns); ++i) {
-        const int head = small.horizontalAdvance(model_->headerData(columns[i], Qt::Horizontal, Qt::DisplayRole).toString()) + 12;
-        widths[i] = std::clamp(head, digit * 8 + 12, digit * 14);
-        widest = std::max(widest, widths[i]);
-        sum += widths[i];
-    }
-    const int others = number + run + mark, least = others + 3 * widest;
-    const int setPoint = std::max(digit * 6 + 28, small.horizontalAdvance(model_->headerData(ReadingsModel::SetPoint, Qt::Horizontal, Qt::DisplayRole).toString()) + 12);
-    const int state = digit * 8 + 16;
-    const bool withSetPoint = room >= least + setPoint, withState = room >= least + setPoint + state;
+    const bool withSetPoint = room >= least + setPoint;
+    const bool withState = room >= least + setPoint + state;
     setColumnHidden(ReadingsModel::SetPoint, !withSetPoint);
     setColumnHidden(ReadingsModel::State, !withState);
+    const int spare = std::max(0, room - least - (withSetPoint ? setPoint : 0) - (withState ? state : 0));
     const int parts = 3 + (withSetPoint ? 1 : 0);
-    const int spare = room - least - (withSetPoint ? setPoint : 0) - (withState ? state : 0);
     setColumnWidth(ReadingsModel::Number, number);
     setColumnWidth(ReadingsModel::Run, run);
     setColumnWidth(ReadingsModel::DirectionMark, mark);
-    setColumnWidth(ReadingsModel::SetPoint, setPoint + std::max(0, spare) / parts);
-    for (std::size_t i = 0; i < std::size(columns); ++i)
-        setColumnWidth(columns[i], spare >= 0 ? widest + spare / parts : std::max(digit * 6, widths[i] + (room - others - sum) / 3));
+    setColumnWidth(ReadingsModel::SetPoint, setPoint + spare / parts);
+    for (const auto& [column, width] : widths)
+        setColumnWidth(column, width + spare / parts);
     setColumnWidth(ReadingsModel::State, state);
 }
 

@@ -53,6 +53,7 @@ class ReadingsTable : public QTableView {
     void say(const QString& words, const QRect& under);
     void silence();
     void showSelection();
+    [[nodiscard]] int widthOfNumbers(int column) const;
     void fitColumns();
     void place(const std::function<void(Place&)>& edit);
 

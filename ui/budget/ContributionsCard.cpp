@@ -78,7 +78,7 @@ ContributionsCard::ContributionsCard(Workbench& bench, QWidget* parent)
     head->setSectionResizeMode(0, QHeaderView::Stretch);
     head->setMinimumSectionSize(40);
     head->setSectionResizeMode(7, QHeaderView::Fixed);
-    head->resizeSection(7, 150);
+    head->resizeSection(7, 104);
     view_->setItemDelegateForColumn(7, new ShareDelegate(view_));
     body()->addWidget(view_, 1);
     sum_->setForegroundRole(QPalette::WindowText);

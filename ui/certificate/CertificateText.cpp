@@ -3,6 +3,7 @@
 
 #include "core/record/Fields.h"
 #include "core/verdict/Conformity.h"
+#include "ui/certificate/CertificateSections.h"
 #include "ui/words/Sentence.h"
 #include "ui/words/Words.h"
 
@@ -47,7 +48,7 @@ QString CertificateText::of(Statement statement, Sentence& facts) {
     case Statement::HysteresisLeft:
         return tr("As left, rising and falling errors near %1 have opposite signs: no adjustment of zero or span removes this "
                   "hysteresis.")
-            .arg(digitsText(facts.plain("set_point").toStdString()));
+            .arg(withUnit(digitsText(facts.plain("set_point").toStdString()), facts.plain("unit").toStdString()));
     case Statement::ManyExcluded:
         return tr("Of the %1 readings %2, %3 are excluded, more than the limit of %4 %. They are listed with their reasons.")
             .arg(facts.plain("of"), phaseOf(facts), facts.plain("count"), digitsText(facts.plain("limit").toStdString()));
