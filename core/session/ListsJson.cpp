@@ -53,6 +53,8 @@ Exclusion readExclusion(JsonScanner& scan, Record& record, const std::string& po
             keepUnknown(scan, record, at);
         }
     }
+    if (exclusion.id == 0) // of no reading
+        scan.failValue(childPointer(pointer, "id"), {});
     return exclusion;
 }
 
