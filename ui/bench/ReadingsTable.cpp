@@ -21,7 +21,6 @@
 #include <QScrollBar>
 
 #include <algorithm>
-#include <map>
 
 namespace spanwright {
 
@@ -79,15 +78,15 @@ ReadingsTable::ReadingsTable(Workbench& workbench, QWidget* parent)
         connect(editor, &QObject::destroyed, words_, &QWidget::hide);
     });
     connect(&workbench_, &Workbench::selectionChanged, this, &ReadingsTable::showSelection);
-    connect(model_, &QAbstractItemModel::headerDataChanged, this, &ReadingsTable::fitColumns);
-    connect(&workbench_, &Workbench::evaluationChanged, this, &ReadingsTable::fitColumns);
+    connect(model_, &QAbstractItemModel::headerDataChanged, this, &ReadingsTable::measureColumns);
+    connect(&workbench_, &Workbench::evaluationChanged, this, &ReadingsTable::measureColumns);
     // While nobody works in the table it follows what is taken.
     connect(&workbench_, &Workbench::recordChanged, this, [this, last = -1]() mutable {
         if (last != model_->taken() && !hasFocus() && !isAncestorOf(QApplication::focusWidget()))
             scrollTo(model_->nextCell());
         last = model_->taken();
     });
-    fitColumns();
+    measureColumns();
 }
 
 QString ReadingsTable::refusal() const {
@@ -306,16 +305,22 @@ int ReadingsTable::widthOfNumbers(int column) const {
     return widest + 14;
 }
 
+void ReadingsTable::measureColumns() {
+    for (const int column : {ReadingsModel::SetPoint, ReadingsModel::ReferenceValue, ReadingsModel::IndicationValue, ReadingsModel::ResidualValue})
+        needed_[column] = widthOfNumbers(column);
+    fitColumns();
+}
+
 /// The column of the set point and that of the state give way where the table is narrow; where even the rest does not fit, the
 /// table is moved sideways.
 void ReadingsTable::fitColumns() {
     const int digit = QFontMetrics(textFont(TextRole::Body)).horizontalAdvance(QLatin1Char('0'));
     const int number = digit * 3 + 14, run = digit * 2 + 18, mark = 22, state = digit * 8 + 16;
-    const int setPoint = widthOfNumbers(ReadingsModel::SetPoint) + 14;
-    std::map<int, int> widths;
+    const int setPoint = needed_[ReadingsModel::SetPoint] + 14;
+    constexpr int numbers[] = {ReadingsModel::ReferenceValue, ReadingsModel::IndicationValue, ReadingsModel::ResidualValue};
     int least = number + run + mark;
-    for (const int column : {ReadingsModel::ReferenceValue, ReadingsModel::IndicationValue, ReadingsModel::ResidualValue})
-        least += widths[column] = widthOfNumbers(column);
+    for (const int column : numbers)
+        least += needed_[column];
     const int room = viewport()->width();
     const bool withSetPoint = room >= least + setPoint;
     const bool withState = room >= least + setPoint + state;
@@ -327,8 +332,8 @@ void ReadingsTable::fitColumns() {
     setColumnWidth(ReadingsModel::Run, run);
     setColumnWidth(ReadingsModel::DirectionMark, mark);
     setColumnWidth(ReadingsModel::SetPoint, setPoint + spare / parts);
-    for (const auto& [column, width] : widths)
-        setColumnWidth(column, width + spare / parts);
+    for (const int column : numbers)
+        setColumnWidth(column, needed_[column] + spare / parts);
     setColumnWidth(ReadingsModel::State, state);
 }
 

@@ -6,6 +6,7 @@
 #include <QTableView>
 
 #include <functional>
+#include <map>
 
 class QLabel;
 
@@ -54,11 +55,13 @@ class ReadingsTable : public QTableView {
     void silence();
     void showSelection();
     [[nodiscard]] int widthOfNumbers(int column) const;
+    void measureColumns();
     void fitColumns();
     void place(const std::function<void(Place&)>& edit);
 
     Workbench& workbench_;
     ReadingsModel* model_;
+    std::map<int, int> needed_; ///< by column of numbers, px
     ReadingsDelegate* delegate_;
     QLabel* words_;
     bool following_ = false; ///< the selection is being taken over from the workbench
