@@ -4,17 +4,25 @@
 #include "app/PaperApplication.h"
 #include "app/RecordFile.h"
 #include "core/evaluate/evaluate.h"
+#include "core/session/SameNumber.h"
+#include "ui/certificate/CertificateText.h"
 #include "ui/certificate/writeCertificate.h"
 
 #include <QDate>
 
+#include <algorithm>
 #include <ostream>
 
 namespace spanwright {
 
 namespace {
 
-constexpr OptionSpec known[] = {{"--to"}, {"--xml"}, {"--incomplete", OptionKind::Flag}};
+constexpr OptionSpec known[] = {{"--to"}, {"--xml"}, {"--country"}, {"--incomplete", OptionKind::Flag}};
+
+/// Two capital letters (ISO 3166-1).
+bool isCountryCode(const std::string& text) {
+    return text.size() == 2 && std::all_of(text.begin(), text.end(), [](char c) { return c >= 'A' && c <= 'Z'; });
+}
 
 /// Every gap on a line of its own: each is something to enter.
 int refuseGaps(Console console, const std::string& file, const Error& error) {
@@ -41,6 +49,8 @@ int certificateCommand(const Words& words, Console console) {
     if (!to || to->empty())
         return refuse(console, Error(ErrorCode::UsageValueMissing, {{"option", "--to"}}));
 
+    if (const auto country = arguments->value("--country"); country && !isCountryCode(*country))
+        return refuse(console, Error(ErrorCode::UsageValueBad, {{"option", "--country"}, {"text", *country}}));
     const std::string& file = arguments->files.front();
     const auto loaded = loadSessionFile(file);
     if (!loaded)
@@ -61,9 +71,16 @@ int certificateCommand(const Words& words, Console console) {
         return written.error().code == ErrorCode::CertificateIncomplete ? refuseGaps(console, file, written.error())
                                                                         : refuse(console, written.error());
     console.out << *to << '\n';
+    const std::string other = sessionWithNumber(file, loaded->record.job.certificateNumber);
+    if (!other.empty())
+        console.err << "spanwright: " << file << ": "
+                    << gapText(numberUsedElsewhere(loaded->record.job.certificateNumber, other), loaded->record, *evaluation).toStdString() << '\n';
     if (const auto xml = arguments->value("--xml")) {
+        const std::string country = arguments->value("--country").value_or(std::string());
+        if (country.empty())
+            console.err << "spanwright: " << *xml << ": no country is stated, so it stands as ZZ, not stated; give it with --country\n";
         const auto machineReadable =
-            writeCertificateXml(loaded->record, *evaluation, QString::fromStdString(*xml), QString::fromStdString(*to), context);
+            writeCertificateXml(loaded->record, *evaluation, QString::fromStdString(*xml), {QString::fromStdString(*to), country}, context);
         if (!machineReadable)
             return refuse(console, machineReadable.error());
         console.out << *xml << '\n';

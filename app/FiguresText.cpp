@@ -72,11 +72,15 @@ QString spreadText(const Record& record, const PhaseEvaluation& e) {
     return text + QStringLiteral("\n\n");
 }
 
-void addSplitRow(TextTable& table, SplitPart part, const std::optional<SplitRow>& row) {
+void addSplitRow(TextTable& table, const QString& name, const std::optional<SplitRow>& row) {
     if (!row)
         return;
-    table.add({splitPartText(part), figure(row->ss), QString::number(row->df), row->ms ? figure(*row->ms, 5) : QString(),
+    table.add({name, figure(row->ss), QString::number(row->df), row->ms ? figure(*row->ms, 5) : QString(),
                row->f ? figure(*row->f, 4) : QString(), row->p ? pText(*row->p) : QString()});
+}
+
+void addSplitRow(TextTable& table, SplitPart part, const std::optional<SplitRow>& row) {
+    addSplitRow(table, splitPartText(part), row);
 }
 
 QString splitText(const VarianceSplit& split) {
@@ -85,6 +89,10 @@ QString splitText(const VarianceSplit& split) {
     addSplitRow(table, SplitPart::Regression, split.regression);
     addSplitRow(table, SplitPart::Residual, split.residual);
     addSplitRow(table, SplitPart::LackOfFit, split.lackOfFit);
+    if (split.lackOfFitAdjusted && split.lackOfFitAdjusted->f)
+        addSplitRow(table, tr("  adjusted for direction and run"), split.lackOfFitAdjusted);
+    if (split.lackOfFitNaive && split.lackOfFitNaive->f && split.against != SplitPart::PureError)
+        addSplitRow(table, tr("  naive, against pure error"), split.lackOfFitNaive);
     addSplitRow(table, SplitPart::PureError, split.pureError);
     addSplitRow(table, SplitPart::Hysteresis, split.hysteresis);
     addSplitRow(table, SplitPart::RunOffset, split.runOffset);
@@ -114,6 +122,40 @@ QString answersText(const Record& record, const PhaseEvaluation& e) {
         if (!table->empty())
             text += table->text() + QLatin1Char('\n');
     return text;
+}
+
+QString performanceText(const Record& record, const ProcessFigures& figures) {
+    const std::pair<QString, const std::optional<ProcessFigure>*> all[] = {
+        {tr("largest measured error (means)"), &figures.measuredErrorMax},
+        {tr("inaccuracy, most positive reading"), &figures.inaccuracyHigh},
+        {tr("inaccuracy, most negative reading"), &figures.inaccuracyLow},
+        {tr("hysteresis (means)"), &figures.hysteresis},
+        {tr("hysteresis within one run"), &figures.hysteresisInCycle},
+        {tr("non-repeatability (largest spread)"), &figures.nonRepeatability},
+        {tr("non-linearity, terminal-based"), &figures.nonLinearityTerminal},
+        {tr("non-linearity, independent"), &figures.nonLinearityIndependent},
+        {tr("non-linearity, zero-based"), &figures.nonLinearityZeroBased}};
+    TextTable table({tr("Performance figure"), withUnit(tr("value"), record.item.indication.unit), tr("% of span"), withUnit(tr("at"), record.item.reference.unit)});
+    for (const auto& [name, one] : all)
+        if (*one)
+            table.add({name, figure((*one)->value, 3), fixedText((*one)->percentOfSpan, 3), placeText((*one)->setPoint)});
+    return table.text() + QLatin1Char('\n');
+}
+
+QString forceText(const Record& record, const ForceFigures& figures) {
+    const auto percent4 = [](const std::optional<double>& value) { return value ? fixedText(*value, 4) : QStringLiteral("–"); };
+    TextTable table({withUnit(tr("Force"), record.item.reference.unit), withUnit(tr("mean deflection"), record.item.indication.unit), tr("b / %"), tr("b′ / %"),
+                     tr("interpolation / %"), tr("v / %")});
+    for (const ForceStep& step : figures.steps)
+        table.add({placeText(step.force), figure(step.mean, 7), percent4(step.reproducibility), percent4(step.repeatability), percent4(step.interpolation),
+                   percent4(step.reversibility)});
+    QString text = table.text();
+    if (figures.zero)
+        text += tr("Zero error f0 = %1 %").arg(percent4(figures.zero)) + QLatin1Char('\n');
+    return text + tr("Lower limit factor %1 %2, or %3 %4; loading range from %5 %4 (class AA) or %6 %4 (class A); function of degree %7\n\n")
+                      .arg(figure(figures.lowerLimitFactor, 3), QString::fromStdString(record.item.indication.unit), figure(figures.lowerLimitForce, 3),
+                           QString::fromStdString(record.item.reference.unit), figure(figures.lowestForceClassAA, 3), figure(figures.lowestForceClassA, 3))
+                      .arg(figures.degree);
 }
 
 QString findingsText(const Record& record, const PhaseEvaluation& e) {
@@ -149,6 +191,10 @@ QString figuresText(const Record& record, const PhaseEvaluation& evaluation, Row
     QString text = headText(record, evaluation) + coefficientsText(*evaluation.fit) + spreadText(record, evaluation);
     if (evaluation.split)
         text += splitText(*evaluation.split);
+    if (evaluation.performance)
+        text += performanceText(record, *evaluation.performance);
+    if (evaluation.force)
+        text += forceText(record, *evaluation.force);
     text += answersText(record, evaluation) + findingsText(record, evaluation);
     if (rows == RowsShown::Yes)
         text += rowsText(record, evaluation.rows);

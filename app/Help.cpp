@@ -9,8 +9,8 @@ std::string_view helpText() {
   spanwright [--stage job|bench|budget|certificate] [--scheme light|dark] [FILE…]
                                         the window; FILE is a session or a CSV
   spanwright figures FILE [options]     what follows from the readings of a CSV or a session
-  spanwright certificate SESSION --to OUT.pdf [--xml OUT.xml] [--incomplete]
-                                        the certificate draft as PDF
+  spanwright certificate SESSION --to OUT.pdf [--xml OUT.xml [--country CC]] [--incomplete]
+                                        the certificate draft as PDF, and in the open schema for digital certificates
   spanwright convert CSV --with SESSION --to OUT.csv [--indication COL] [--repeats Q] [--phase P] [--replace]
                                         new readings to values, each with its expanded uncertainty
   spanwright coefficients SESSION [--form plain|c|csv] [--to FILE] [--phase P] [--replace]

@@ -53,6 +53,9 @@ void identification(const Record& record, List& list) {
         list.add(Gap::NoOutput, Warn, "job", item.outputLow ? "item.output_high" : "item.output_low");
     list.want(job.conditionReceived, Gap::NoCondition, Warn, "job.condition_received");
     list.want(job.received, Gap::NoReceipt, Warn, "job.received");
+    list.want(job.place, Gap::NoPlace, Warn, "job.place");
+    list.want(job.customerSupplied, Gap::NoCustomerData, Warn, "job.customer_supplied");
+    list.want(job.externalProviders, Gap::NoExternalProviders, Warn, "job.external_providers");
     if (!job.replaces.empty() && job.replaces == job.certificateNumber)
         list.add(Gap::ReplacesItself, Block, "job", "job.certificate_number");
     if (!job.replaces.empty())
@@ -280,6 +283,10 @@ std::vector<ChecklistItem> checklist(const Record& record, const Evaluation& eva
 
 bool blocked(const std::vector<ChecklistItem>& list) {
     return std::any_of(list.begin(), list.end(), [](const ChecklistItem& item) { return item.level == GapLevel::Block; });
+}
+
+ChecklistItem numberUsedElsewhere(const std::string& number, const std::string& file) {
+    return {Gap::NumberUsedElsewhere, Warn, "job", "job.certificate_number", {{"number", number}, {"file", file}}};
 }
 
 } // namespace spanwright

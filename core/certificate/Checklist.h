@@ -27,6 +27,10 @@ enum class Gap {
     NoOutput,               ///< without it there is no error of indication
     NoCondition,            ///< 7.8.2.1 g
     NoReceipt,              ///< 7.8.2.1 h
+    NoPlace,                ///< 7.8.2.1 c; "at the laboratory" is an answer
+    NoCustomerData,         ///< 7.8.2.2; "none" is an answer
+    NoExternalProviders,    ///< 7.8.2.1 p; "none" is an answer
+    NumberUsedElsewhere,    ///< 7.8.2.1 d; from the folder, not from the record; facts: number, file
     NoCalibrationDate,      ///< 7.8.2.1 i
     CalibratedAfterIssue,   ///< 7.8.2.1 i; facts: calibrated, issued
     CalibratedBeforeReceipt,///< facts: calibrated, received
@@ -88,6 +92,9 @@ struct ChecklistItem {
     std::vector<Fact> facts;
     bool operator==(const ChecklistItem&) const = default;
 };
+
+/// That another session bears this certificate's number; for who knows the folder.
+ChecklistItem numberUsedElsewhere(const std::string& number, const std::string& file);
 
 /// What is missing or doubtful, in the order of the certificate, what blocks and what warns mixed.
 std::vector<ChecklistItem> checklist(const Record& record, const Evaluation& evaluation);

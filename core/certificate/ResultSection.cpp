@@ -6,6 +6,7 @@
 #include "core/certificate/SplitSection.h"
 
 #include <algorithm>
+#include <charconv>
 #include <cmath>
 
 namespace spanwright {
@@ -56,6 +57,17 @@ ResultLine resultLine(const PointResult& point) {
     return line;
 }
 
+/// Three digits without zeros at the end; with an exponent where the plain form would be long.
+Digits short3(double value) {
+    constexpr int digits = 3;
+    constexpr double small = 1e-4;
+    const double rounded = std::stod(significantDigits(value, digits));
+    if (rounded == 0 || std::fabs(rounded) >= small)
+        return shortText(rounded);
+    char buffer[32];
+    return {buffer, std::to_chars(std::begin(buffer), std::end(buffer), rounded, std::chars_format::scientific).ptr};
+}
+
 BudgetRow budgetRow(const BudgetItem& item, int decimals) {
     constexpr int digits = 3;
     BudgetRow row;
@@ -64,9 +76,9 @@ BudgetRow budgetRow(const BudgetItem& item, int decimals) {
     row.fromOtherPhase = item.fromOtherPhase;
     row.side = item.side;
     row.distribution = item.distribution;
-    row.amount = shortText(std::stod(significantDigits(item.amount, digits)));
+    row.amount = short3(item.amount);
     row.divisor = shortText(std::stod(significantDigits(item.divisor, digits)));
-    row.standardUncertainty = shortText(std::stod(significantDigits(item.standardUncertainty, digits)));
+    row.standardUncertainty = short3(item.standardUncertainty);
     row.degreesOfFreedom = std::isfinite(item.degreesOfFreedom) ? shortText(std::stod(roundedText(item.degreesOfFreedom, item.degreesOfFreedom < 10 ? 1 : 0))) : Digits{};
     row.sensitivity = shortText(std::stod(significantDigits(item.sensitivity, digits + 1)));
     row.contribution = roundedText(item.contribution, decimals);

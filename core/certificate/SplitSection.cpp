@@ -32,7 +32,7 @@ SplitTableLine lineOf(SplitPart part, const SplitRow& row, int level) {
     if (row.ms)
         line.meanSquare = square(*row.ms);
     if (row.f)
-        line.f = significant(*row.f, RatioDigits);
+        line.f = significantDigits(*row.f, RatioDigits);
     if (row.p)
         line.p = probability(*row.p);
     return line;
@@ -85,11 +85,12 @@ std::optional<SplitSection> splitSection(const PhaseEvaluation& phase) {
 std::optional<ForceSection> forceSection(const PhaseEvaluation& phase) {
     if (!phase.force)
         return std::nullopt;
-    constexpr int meanDigits = 7;
+    constexpr int meanDigits = 7; // of the smallest deflection
     const ForceFigures& figures = *phase.force;
+    const int decimals = figures.steps.empty() ? 0 : decimalsFor(figures.steps.front().mean, meanDigits);
     ForceSection section;
     for (const ForceStep& step : figures.steps)
-        section.steps.push_back({shortText(step.force), significant(step.mean, meanDigits), percent(step.reproducibility), percent(step.repeatability),
+        section.steps.push_back({shortText(step.force), roundedText(step.mean, decimals), percent(step.reproducibility), percent(step.repeatability),
                                  percent(step.interpolation), percent(step.reversibility)});
     section.zero = percent(figures.zero);
     section.degree = figures.degree;

@@ -96,6 +96,8 @@ void tooFew(const FindingsInput& input, std::vector<Finding>& found) {
                            : freedom < 3 || fewPoints ? Severity::Attention
                                                       : Severity::Note;
         finding.figures = {{"count", n}, {"degrees_of_freedom", static_cast<double>(freedom)}};
+        if (fewPoints)
+            finding.figures.insert(finding.figures.begin(), {"set_points", static_cast<double>(input.sample.groupValue.size())});
     }
     found.push_back(finding);
 }

@@ -125,15 +125,35 @@ void autocorrelated(const FindingsInput& input, const std::vector<double>& devia
     found.push_back(finding);
 }
 
+/// Readings on a coarse grid fall on few values, and the ties alone look like a departure from the normal distribution. Each is
+/// therefore spread over its step before the test, evenly and always in the same way.
+std::vector<double> withoutGrid(const FindingsInput& input, std::vector<double> u) {
+    constexpr double golden = 0.6180339887498949, coarse = 0.1;
+    if (input.fit->direction != FitDirection::Indication || input.fit->weights != Weights::Equal)
+        return u;
+    const auto& resolution = input.record.item.resolution;
+    const double step = std::max(resolution ? resolution->toDouble() : 0, std::pow(10.0, -input.record.readings->indication().scale()));
+    if (step < coarse * input.fit->residualSd)
+        return u;
+    double turn = 0;
+    for (double& value : u) {
+        turn = std::fmod(turn + golden, 1);
+        value += step * (turn - 0.5);
+    }
+    return u;
+}
+
 void nonNormal(const FindingsInput& input, const std::vector<double>& deviations, std::vector<Finding>& found) {
     if (contains(found, FindingCode::Outlier) || contains(found, FindingCode::ScatterGrows) || !input.diagnostics)
         return;
     const bool structured = contains(found, FindingCode::LackOfFit) || contains(found, FindingCode::Hysteresis) ||
                             contains(found, FindingCode::RunZeroShift) || contains(found, FindingCode::FirstRunDiffers);
+    constexpr std::size_t most = 5000;
     std::optional<TestResult> test = input.diagnostics->shapiroWilk;
     if (structured)
-        test = deviations.empty() ? std::nullopt
-                                  : shapiroWilk(deviations.size() <= 5000 ? deviations : std::vector<double>{});
+        test = deviations.empty() || deviations.size() > most ? std::nullopt : shapiroWilk(withoutGrid(input, deviations));
+    else if (test && test->p < certain && input.residuals->e.size() <= most)
+        test = shapiroWilk(withoutGrid(input, input.residuals->e.high));
     if (!test || !(test->p < certain) || input.sample.size() < 8)
         return;
     Finding finding;

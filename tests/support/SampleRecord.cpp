@@ -102,9 +102,11 @@ Job job() {
     job.certificateNumber = "QC-2026-0418";
     job.laboratory = "Quillmere Calibration Room";
     job.laboratoryAddress = "7 Sluice Lane, Quillmere";
+    job.place = "At the laboratory";
     job.customer = "Brackwater Pumping Station";
     job.customerContact = "Instrument workshop, Brackwater";
     job.customerSupplied = "Tag and measuring range";
+    job.externalProviders = "none";
     job.method = "QP-11 Pressure transmitters, comparison with a pressure controller";
     job.methodEdition = "4";
     job.received = "2026-10-09";

@@ -118,8 +118,20 @@ QString CertificatePage::today() const {
 
 void CertificatePage::showEvent(QShowEvent* event) {
     QWidget::showEvent(event);
+    number_.clear();
+    lookForNumber();
     if (stale_)
         refresh();
+}
+
+void CertificatePage::lookForNumber() {
+    const std::string& number = workbench_.record().job.certificateNumber;
+    if (number == number_)
+        return;
+    number_ = number;
+    const std::string found = asks_.sameNumber ? asks_.sameNumber(QString::fromStdString(number)).toStdString() : std::string();
+    stale_ = stale_ || found != sameNumberIn_;
+    sameNumberIn_ = found;
 }
 
 void CertificatePage::refresh() {
@@ -128,7 +140,10 @@ void CertificatePage::refresh() {
         return;
     const Record& record = workbench_.record();
     const auto evaluation = workbench_.evaluation();
-    const std::vector<ChecklistItem> gaps = checklist(record, *evaluation);
+    lookForNumber();
+    std::vector<ChecklistItem> gaps = checklist(record, *evaluation);
+    if (!sameNumberIn_.empty())
+        gaps.push_back(numberUsedElsewhere(number_, sameNumberIn_));
     checklist_->show(gaps, record, *evaluation);
     state_->setText(stateText(gaps));
     preview_->setPages(layOutCertificate(record, *evaluation, certificateContext(record, *evaluation, today())));

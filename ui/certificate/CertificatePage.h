@@ -22,6 +22,8 @@ struct CertificateAsks {
     /// Sets the printer up; false when given up.
     std::function<bool(QWidget* parent, QPrinter& printer)> printer;
     std::function<void(QWidget* parent, const QString& title, const QString& text)> tell;
+    /// Another file with this certificate number, where the files are known; empty: none.
+    std::function<QString(const QString& number)> sameNumber = {};
 };
 CertificateAsks screenAsks();
 
@@ -47,12 +49,14 @@ class CertificatePage : public QWidget {
     void saveAsPdf();
     void print();
     [[nodiscard]] QString today() const;
+    void lookForNumber();
 
     Workbench& workbench_;
     CertificateAsks asks_;
     PagePreview* preview_;
     ChecklistView* checklist_ = nullptr;
     QLabel* state_ = nullptr;
+    std::string number_, sameNumberIn_; ///< looked for when the page is shown and when the number changes
     bool stale_ = true; ///< laid out only while it can be seen
 };
 

@@ -115,10 +115,10 @@ Pages certificatePages(const Certificate& certificate, const QStringList& gaps) 
     addConditions(flow, certificate);
     addSummary(flow, certificate);
     for (const PhaseSection& section : certificate.phases)
+        addSplit(flow, certificate, section);
+    for (const PhaseSection& section : certificate.phases)
         addResults(flow, certificate, section);
     addFunction(flow, certificate);
-    for (const PhaseSection& section : certificate.phases)
-        addSplit(flow, certificate, section);
     for (const PhaseSection& section : certificate.phases)
         addBudget(flow, certificate, section);
     for (const PhaseSection& section : certificate.phases)

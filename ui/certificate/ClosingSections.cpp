@@ -129,14 +129,14 @@ void addBudget(Flow& flow, const Certificate& certificate, const PhaseSection& s
     const Item& item = certificate.item;
     Table table;
     table.points = 8;
-    table.columns = {{ClosingSections::tr("contribution"), {}, ColumnAlign::Left, 4.3},
-                     {ClosingSections::tr("amount"), {}, ColumnAlign::Right, 1.6},
+    table.columns = {{ClosingSections::tr("contribution"), {}, ColumnAlign::Left, 3.4},
+                     {ClosingSections::tr("amount"), {}, ColumnAlign::Right, 2},
                      {ClosingSections::tr("distribution"), {}, ColumnAlign::Left, 1.5},
-                     {ClosingSections::tr("divisor"), {}, ColumnAlign::DecimalMark, 0.9},
-                     {ClosingSections::tr("u"), {}, ColumnAlign::Right, 1.9},
+                     {ClosingSections::tr("divisor"), {}, ColumnAlign::DecimalMark, 1.1},
+                     {ClosingSections::tr("u"), {}, ColumnAlign::Right, 2},
                      {ClosingSections::tr("ν"), {}, ColumnAlign::Right, 0.7},
-                     {ClosingSections::tr("c"), {}, ColumnAlign::DecimalMark, 1},
-                     {ClosingSections::tr("|c| u"), text(item.indication.unit), ColumnAlign::DecimalMark, 1.2},
+                     {ClosingSections::tr("c"), {}, ColumnAlign::DecimalMark, 1.1},
+                     {ClosingSections::tr("|c| u"), text(item.indication.unit), ColumnAlign::DecimalMark, 1.4},
                      {ClosingSections::tr("share"), {}, ColumnAlign::Right, 1.15}};
     for (const BudgetRow& row : budget.rows) {
         const std::string& unit = row.side == Side::Reference ? item.reference.unit : item.indication.unit;

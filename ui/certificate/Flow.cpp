@@ -32,7 +32,7 @@ TextStyle cellStyle(const Table& table, const TableCell& cell) {
 constexpr double MarkRoom = 3.2; // mm before the text of a cell with a mark
 
 double roomFor(const TableCell& cell, double width) {
-    return cell.mark ? width - MarkRoom : width;
+    return (cell.mark ? width - MarkRoom : width) - cell.indent;
 }
 
 } // namespace
@@ -70,6 +70,11 @@ void Flow::place(PageBlock block) {
 void Flow::textAt(double x, double baseline, const QString& text, const TextStyle& style, Qt::Alignment end) {
     if (!text.isEmpty())
         place(textBlock(x, baseline, text, style, end));
+}
+
+void Flow::leaveFirstPage() {
+    if (document_.pages.size() == 1)
+        newPage();
 }
 
 void Flow::title(const QString& text) {
@@ -230,8 +235,8 @@ void Flow::tableHead(const Table& table, const Widths& widths) {
 void Flow::tableCell(const Table& table, const TableCell& cell, std::size_t column, const Widths& widths) {
     const TextStyle style = cellStyle(table, cell);
     const ColumnAlign align = table.columns[column].align;
-    double left = widths.left[column];
-    const double right = left + widths.width[column];
+    double left = widths.left[column] + cell.indent;
+    const double right = widths.left[column] + widths.width[column];
     double baseline = y_ + RowPadding + Ascent * lineHeight(style);
     if (cell.mark) {
         const QRectF box(left, y_ + RowPadding, MarkRoom - 0.8, lineHeight(style));
@@ -262,7 +267,8 @@ double Flow::rowHeight(const Table& table, const std::vector<TableCell>& row, co
     double height = 0;
     for (std::size_t c = 0; c < row.size(); ++c) {
         const TextStyle style = cellStyle(table, row[c]);
-        const auto lines = wrapped(row[c].text, style, roomFor(row[c], widths.width[c])).size();
+        const bool oneLine = table.columns[c].align == ColumnAlign::DecimalMark && isNumber(row[c].text); // as tableCell() sets it
+        const auto lines = oneLine ? 1 : wrapped(row[c].text, style, roomFor(row[c], widths.width[c])).size();
         height = std::max(height, static_cast<double>(std::max<std::size_t>(lines, 1)) * lineHeight(style) + 2 * RowPadding);
     }
     return height;

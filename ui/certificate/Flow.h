@@ -24,6 +24,7 @@ struct TableCell {
     PageInk ink = PageInk::Text;
     bool strong = false;
     std::optional<PlotMark::Shape> mark = std::nullopt; ///< drawn before the text
+    double indent = 0;                                  ///< mm, of a cell that stands at the left
 };
 
 struct Table {
@@ -46,6 +47,8 @@ class Flow {
     Flow(Pages document, const QRectF& area);
 
     void space(double mm);
+    /// Goes on at the top of the second page, unless the first is full already.
+    void leaveFirstPage();
     void title(const QString& text);
     /// `note` stands at the right end. Moves to the next page unless `follow` mm of what comes after fit below.
     void heading(const QString& text, const QString& note = {}, double follow = 18);

@@ -42,6 +42,11 @@ QString GapText::ofIdentification(Gap gap, Sentence& facts) {
     case Gap::NoOutput: return tr("The item's output at both ends of its range is not stated, so there is no error of indication.");
     case Gap::NoCondition: return tr("The item's condition on receipt is not described.");
     case Gap::NoReceipt: return tr("The date of receipt is missing.");
+    case Gap::NoPlace: return tr("The place of calibration is missing. If it was the laboratory, say so.");
+    case Gap::NoCustomerData: return tr("It is not stated which data the customer supplied. If there are none, write “none”.");
+    case Gap::NoExternalProviders: return tr("It is not stated which results come from external providers. If there are none, write “none”.");
+    case Gap::NumberUsedElsewhere:
+        return tr("The certificate number %1 is also that of %2 in this folder.").arg(facts.plain("number"), facts.plain("file"));
     case Gap::NoCalibrationDate: return tr("The date of calibration is missing.");
     case Gap::CalibratedAfterIssue:
         return tr("The date of calibration, %1, is later than the date of issue, %2.").arg(facts.plain("calibrated"), facts.plain("issued"));

@@ -77,12 +77,12 @@ std::vector<LabelledText> jobColumn(const Certificate& certificate) {
     entries.push_back({CertificateSections::tr("Issued"), job.issued.empty()
                                                              ? CertificateSections::tr("not yet; draft of %1").arg(text(certificate.drawnUpOn))
                                                              : text(job.issued)});
-    entries.push_back({CertificateSections::tr("Place"), job.place.empty() ? CertificateSections::tr("at the laboratory") : text(job.place)});
+    entries.push_back(wanted(CertificateSections::tr("Place"), job.place));
     const std::string method = job.methodEdition.empty() ? job.method : job.method + ", edition " + job.methodEdition;
     entries.push_back(wanted(CertificateSections::tr("Method"), method));
     entries.push_back({CertificateSections::tr("Deviations"), job.methodDeviations.empty() ? none : text(job.methodDeviations)});
-    entries.push_back({CertificateSections::tr("Customer's data"), job.customerSupplied.empty() ? none : text(job.customerSupplied)});
-    entries.push_back({CertificateSections::tr("External results"), job.externalProviders.empty() ? none : text(job.externalProviders)});
+    entries.push_back(wanted(CertificateSections::tr("Customer's data"), job.customerSupplied));
+    entries.push_back(wanted(CertificateSections::tr("External results"), job.externalProviders));
     return entries;
 }
 

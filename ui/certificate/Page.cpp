@@ -106,6 +106,10 @@ double lineHeight(const TextStyle& style) {
 std::vector<QString> wrapped(const QString& text, const TextStyle& style, double width) {
     std::vector<QString> lines;
     for (const QString& part : text.split(QLatin1Char('\n'))) {
+        if (part.isEmpty()) {
+            lines.emplace_back();
+            continue;
+        }
         QTextLayout layout(part, pageFont(style));
         QTextOption option;
         option.setWrapMode(QTextOption::WrapAtWordBoundaryOrAnywhere);
@@ -116,8 +120,6 @@ std::vector<QString> wrapped(const QString& text, const TextStyle& style, double
             lines.push_back(part.mid(line.textStart(), line.textLength()).trimmed());
         }
         layout.endLayout();
-        if (part.isEmpty())
-            lines.emplace_back();
     }
     return lines;
 }

@@ -14,6 +14,7 @@ struct SplitSections {
 };
 
 constexpr TextStyle Small{8.5, false, PageInk::Quiet};
+constexpr double IndentStep = 2.5; // mm
 
 QString text(const std::string& from) {
     return QString::fromStdString(from);
@@ -26,7 +27,7 @@ QString sourceText(const SplitTableLine& line) {
     case SplitTableLine::Test::Naive: name = SplitSections::tr("the same, naive: against pure error"); break;
     case SplitTableLine::Test::Adjusted: name = SplitSections::tr("the same, adjusted for direction and run"); break;
     }
-    return QString(3 * line.level, QChar(0x2002)) + name;
+    return name;
 }
 
 QString squared(const SplitSection& split, const Item& item) {
@@ -39,20 +40,21 @@ QString squared(const SplitSection& split, const Item& item) {
 void addSplit(Flow& flow, const Certificate& certificate, const PhaseSection& section) {
     if (!section.split)
         return;
+    flow.leaveFirstPage();
     const SplitSection& split = *section.split;
     const QString unit = squared(split, certificate.item);
     Table table;
-    table.columns = {{SplitSections::tr("source"), {}, ColumnAlign::Left, 4.2},
+    table.columns = {{SplitSections::tr("source"), {}, ColumnAlign::Left, 4},
                      {SplitSections::tr("sum of squares"), unit, ColumnAlign::Right, 1.7},
                      {SplitSections::tr("d.f."), {}, ColumnAlign::Right, 0.7},
                      {SplitSections::tr("mean square"), unit, ColumnAlign::Right, 1.7},
-                     {SplitSections::tr("F"), {}, ColumnAlign::DecimalMark, 1.1},
-                     {SplitSections::tr("p"), {}, ColumnAlign::DecimalMark, 1.1},
-                     {SplitSections::tr("share"), {}, ColumnAlign::Right, 1.3}};
+                     {SplitSections::tr("F"), {}, ColumnAlign::Right, 1.2},
+                     {SplitSections::tr("p"), {}, ColumnAlign::Right, 1},
+                     {SplitSections::tr("share"), {}, ColumnAlign::Right, 1.8}};
     for (const SplitTableLine& line : split.lines) {
         const bool chain = line.test == SplitTableLine::Test::Chain;
         const PageInk ink = chain ? PageInk::Text : PageInk::Quiet;
-        table.rows.push_back({{sourceText(line), ink},
+        table.rows.push_back({{sourceText(line), ink, false, std::nullopt, IndentStep * line.level},
                               {chain ? digitsText(line.sumOfSquares) : QString(), ink},
                               {QString::number(line.degreesOfFreedom), ink},
                               {digitsText(line.meanSquare), ink},

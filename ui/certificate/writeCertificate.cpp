@@ -91,7 +91,7 @@ Result<void> writeCertificatePdf(const Record& record, const Evaluation& evaluat
     return {};
 }
 
-Result<void> writeCertificateXml(const Record& record, const Evaluation& evaluation, const QString& path, const QString& pdfPath,
+Result<void> writeCertificateXml(const Record& record, const Evaluation& evaluation, const QString& path, const XmlWishes& wishes,
                                  const CertificateContext& context) {
     const Certificate certificate = buildCertificate(record, evaluation, context);
     CertificateXmlParts parts;
@@ -102,11 +102,13 @@ Result<void> writeCertificateXml(const Record& record, const Evaluation& evaluat
         parts.decisionRule = (limitsText(record.limits, record.item) + QStringLiteral("; ") + decisionText(record.limits)).toStdString();
     if (certificate.function)
         parts.functionForm = equationForm(*certificate.function).toStdString();
-    if (!pdfPath.isEmpty()) {
-        QFile pdf(pdfPath);
+    if (!wishes.country.empty())
+        parts.countryCode = wishes.country;
+    if (!wishes.pdfPath.isEmpty()) {
+        QFile pdf(wishes.pdfPath);
         if (!pdf.open(QIODevice::ReadOnly))
-            return fileError(ErrorCode::FileNotReadable, pdfPath, pdf.errorString());
-        parts.pdfName = QFileInfo(pdfPath).fileName().toStdString();
+            return fileError(ErrorCode::FileNotReadable, wishes.pdfPath, pdf.errorString());
+        parts.pdfName = QFileInfo(wishes.pdfPath).fileName().toStdString();
         parts.pdfBase64 = pdf.readAll().toBase64().toStdString();
     }
     QSaveFile file(path);

@@ -33,9 +33,14 @@ enum class WithGaps { Refuse, MarkIncomplete };
 Result<void> writeCertificatePdf(const Record& record, const Evaluation& evaluation, const QString& path,
                                  const CertificateContext& context, WithGaps withGaps);
 
-/// Writes the same draft in machine-readable form (core/certificate/CertificateXml), with the PDF at `pdfPath` inside it unless
-/// that is empty. Errors: FileNotReadable (of the PDF), FileNotWritable, FileWriteFailed.
-Result<void> writeCertificateXml(const Record& record, const Evaluation& evaluation, const QString& path, const QString& pdfPath,
+/// What the machine-readable form takes from elsewhere.
+struct XmlWishes {
+    QString pdfPath;     ///< the PDF that goes inside; empty: none
+    std::string country; ///< of the laboratory, ISO 3166-1; empty: not stated
+};
+
+/// Writes the same draft in machine-readable form (core/certificate/CertificateXml). Errors: FileNotReadable (of the PDF), FileNotWritable, FileWriteFailed.
+Result<void> writeCertificateXml(const Record& record, const Evaluation& evaluation, const QString& path, const XmlWishes& wishes,
                                  const CertificateContext& context);
 
 } // namespace spanwright

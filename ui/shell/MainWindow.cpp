@@ -134,7 +134,8 @@ void MainWindow::makePages() {
     const PageLinks links{.showField = [this](const QString& stage, const QString& field) { showField(stage, field); },
                           .pdfPath = [this](QWidget* from, const QString& suggestion) { return around_.dialogs.pdfPath(from, suggestion); },
                           .tell = [this](QWidget* from, const QString& title,
-                                         const QString& text) { around_.dialogs.tell(from, title, text); }};
+                                         const QString& text) { around_.dialogs.tell(from, title, text); },
+                          .path = [this] { return document_.path(); }};
     pages_->addWidget(job_);
     pages_->addWidget(makeBenchPage(bench_, links));
     pages_->addWidget(budget_);

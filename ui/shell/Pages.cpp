@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/shell/Pages.h"
 
+#include "core/session/SameNumber.h"
 #include "ui/bench/BenchPage.h"
 #include "ui/certificate/CertificatePage.h"
 
@@ -19,6 +20,9 @@ QWidget* makeCertificatePage(Workbench& bench, const PageLinks& links) {
     CertificateAsks asks = screenAsks();
     asks.pdfPath = links.pdfPath;
     asks.tell = links.tell;
+    asks.sameNumber = [links](const QString& number) {
+        return QString::fromStdString(sessionWithNumber(links.path().toStdString(), number.toStdString()));
+    };
     auto* page = new CertificatePage(bench, asks);
     QObject::connect(page, &CertificatePage::goTo, page, links.showField);
     return page;

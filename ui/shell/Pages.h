@@ -16,6 +16,7 @@ struct PageLinks {
     std::function<void(const QString& stage, const QString& field)> showField;
     std::function<QString(QWidget* parent, const QString& suggestion)> pdfPath;
     std::function<void(QWidget* parent, const QString& title, const QString& text)> tell;
+    std::function<QString()> path; ///< of the session's file; empty where it has none
 };
 
 QWidget* makeBenchPage(Workbench& bench, const PageLinks& links);

@@ -5,6 +5,7 @@
 #include <QCoreApplication>
 #include <QStringList>
 
+#include <algorithm>
 #include <cmath>
 
 namespace spanwright {
@@ -20,6 +21,10 @@ struct FindingText {
     static QString remedy(const Finding& finding);
 };
 
+bool has(const Finding& finding, const char* figure) {
+    return std::any_of(finding.figures.begin(), finding.figures.end(), [&](const Figure& one) { return one.name == figure; });
+}
+
 /// No default in the switch: a new code without a sentence does not compile.
 QString FindingText::sentence(const Finding& finding) {
     switch (finding.code) {
@@ -27,7 +32,10 @@ QString FindingText::sentence(const Finding& finding) {
     case FindingCode::HiddenCurvature:
         return tr("The gap between rising and falling readings hides curvature: pooled, the function seems to fit; against "
                   "repeatability it does not.");
-    case FindingCode::Hysteresis: return tr("Rising and falling readings differ by more than repeatability explains.");
+    case FindingCode::Hysteresis:
+        if (!has(finding, "f")) // nothing was repeated; the gaps over the set points speak for themselves
+            return tr("Falling readings differ from rising ones at most set points in the same sense.");
+        return tr("Rising and falling readings differ by more than repeatability explains.");
     case FindingCode::RunZeroShift: return tr("The zero shifts from run to run by more than repeatability explains.");
     case FindingCode::RunGainChange: return tr("The slope changes from run to run by more than repeatability explains.");
     case FindingCode::FirstRunDiffers: return tr("The first run differs from the others, as an item that was not exercised does.");
@@ -47,7 +55,10 @@ QString FindingText::sentence(const Finding& finding) {
     case FindingCode::ExcludedReadings: return tr("Readings were excluded.");
     case FindingCode::SetPointExcluded: return tr("Every reading of a set point is excluded.");
     case FindingCode::ManyExcluded: return tr("More readings are excluded than the limit allows; the result may no longer describe the item.");
-    case FindingCode::TooFewReadings: return tr("There are few readings for this function, so its uncertainty is poorly known.");
+    case FindingCode::TooFewReadings:
+        if (has(finding, "set_points"))
+            return tr("There are too few set points for this function: readings at the same ones again do not tell its shape.");
+        return tr("There are few readings for this function, so its uncertainty is poorly known.");
     case FindingCode::OutsideBand: return tr("Readings lie outside the band in which new readings are expected.");
     case FindingCode::DegreeNotJustified: return tr("The highest term of the function is not supported by the readings.");
     case FindingCode::ThroughZeroNotSupported: return tr("A line through zero is not supported: the constant differs from zero.");
@@ -67,8 +78,6 @@ constexpr FigurePattern patterns[] = {
     {"f", QT_TRANSLATE_NOOP("FindingText", "F = %1")},
     {"f_naive", QT_TRANSLATE_NOOP("FindingText", "F pooled = %1")},
     {"percent_of_span", QT_TRANSLATE_NOOP("FindingText", "%1 % of span")},
-    {"degrees_of_freedom", QT_TRANSLATE_NOOP("FindingText", "%1 degrees of freedom")},
-    {"df", QT_TRANSLATE_NOOP("FindingText", "%1 degrees of freedom")},
     {"run", QT_TRANSLATE_NOOP("FindingText", "run %1")},
     {"t", QT_TRANSLATE_NOOP("FindingText", "t = %1")},
     {"w", QT_TRANSLATE_NOOP("FindingText", "W = %1")},
@@ -112,6 +121,10 @@ QString FindingText::figure(const Figure& figure, const Record& record) {
         return shareText(figure.value);
     if (name == "exclusion_limit")
         return tr("limit %1").arg(shareText(figure.value));
+    if (name == "set_points")
+        return tr("%n set point(s)", nullptr, static_cast<int>(figure.value));
+    if (name == "degrees_of_freedom" || name == "df")
+        return tr("%n degree(s) of freedom", nullptr, static_cast<int>(figure.value));
     if (name == "count")
         return tr("%n reading(s)", nullptr, static_cast<int>(figure.value));
     if (name == "values_outside")

@@ -126,6 +126,55 @@ class CertificateTest : public QObject {
             QVERIFY2(term.value.size() < 14, term.value.c_str()); // no more digits than it takes
     }
 
+    // The figures of the split, rounded: practice of the sample by hand (F of lack of fit 19.2 against repeatability, 1.15 naive).
+    void printsTheSplitOnlyWhenItIsWanted() {
+        Record record = test::pressureTransmitter();
+        QVERIFY(!certificateOf(record).phases[0].split);
+        record.choices.splitOnCertificate = true;
+        const Certificate certificate = certificateOf(record);
+        QVERIFY(certificate.phases[0].split && !certificate.phases[1].split); // of the phase that the function is taken from
+        const auto& lines = certificate.phases[0].split->lines;
+        const auto find = [&](SplitPart part, SplitTableLine::Test test) {
+            return std::find_if(lines.begin(), lines.end(), [&](const SplitTableLine& l) { return l.part == part && l.test == test; });
+        };
+        const auto fit = find(SplitPart::LackOfFit, SplitTableLine::Test::Chain), naive = find(SplitPart::LackOfFit, SplitTableLine::Test::Naive);
+        QVERIFY(fit != lines.end() && naive != lines.end());
+        QCOMPARE(fit->f, Digits("19.2"));
+        QCOMPARE(fit->p, Digits("<0.001"));
+        QCOMPARE(fit->degreesOfFreedom, 9);
+        QCOMPARE(naive->f, Digits("1.15"));
+        QVERIFY(naive->p.starts_with("0.34"));
+        QVERIFY(!naive->share && *fit->share < 1e-6);
+        QCOMPARE(find(SplitPart::Total, SplitTableLine::Test::Chain)->sumOfSquares, Digits("1690"));
+        QCOMPARE(find(SplitPart::Repeatability, SplitTableLine::Test::Chain)->degreesOfFreedom, 40);
+    }
+
+    void saysOnTheFirstPageThatTooMuchIsExcluded() {
+        Record record = test::pressureTransmitter();
+        const auto said = [&] {
+            const auto notices = certificateOf(record).notices;
+            return std::any_of(notices.begin(), notices.end(), [](const StatementLine& line) { return line.statement == Statement::ManyExcluded; });
+        };
+        for (ReadingId id = 1; id <= 6; ++id) // of 66: 9.1 %
+            record.exclusions.edit().add({id, ExclusionReason::NotSettled, {}, "IO", 0});
+        QVERIFY(!said());
+        record.exclusions.edit().add({7, ExclusionReason::NotSettled, {}, "IO", 0});
+        QVERIFY(said());
+        record.choices.exclusionLimit = test::number("0.15");
+        QVERIFY(!said());
+    }
+
+    void statesForceFiguresWhereTheItemWasTurned() {
+        QVERIFY(!certificateOf(test::pressureTransmitter()).phases[0].force);
+        const auto force = certificateOf(test::loadCell()).phases[0].force;
+        QVERIFY(force.has_value());
+        QCOMPARE(force->steps.size(), std::size_t(10));
+        QCOMPARE(force->steps[0].mean, Digits("0.1998927"));
+        QCOMPARE(force->degree, 2);
+        QCOMPARE(force->lowerLimitFactor, Digits("0.0000562")); // 5.62·10⁻⁵ as computed beside the readings
+        QVERIFY(force->zero.empty() && force->steps[0].reversibility.empty());
+    }
+
     void listsExcludedReadingsAsTyped() {
         Record record = test::pressureTransmitter();
         record.exclusions.edit().add({17, ExclusionReason::NotSettled, "door opened", "TL", 0});

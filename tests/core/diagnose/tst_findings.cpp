@@ -158,6 +158,27 @@ class FindingsTest : public QObject {
         QVERIFY(std::find(outlier->rows.begin(), outlier->rows.end(), ReadingId(8)) != outlier->rows.end());
     }
 
+    // Normal noise of two steps of the display: that it falls on few values is not held against it.
+    void aCoarseDisplayIsNoDepartureFromNormal() {
+        Record record;
+        unsigned seed = 11;
+        const auto uniform = [&] {
+            seed = seed * 1664525u + 1013904223u;
+            return static_cast<double>(seed >> 8) / 16777216.0;
+        };
+        for (int i = 0; i < 800; ++i) {
+            double noise = -6;
+            for (int k = 0; k < 12; ++k)
+                noise += uniform();
+            Reading reading;
+            reading.id = record.nextReadingId++;
+            reading.reference = reading.setPoint = Decimal{i % 200, 1, {}};
+            reading.indication = Decimal{static_cast<std::int64_t>(std::lround(1000 * (4 + 0.16 * (i % 200)) + 2 * noise)), 3, {}};
+            record.readings.edit().append(reading);
+        }
+        QVERIFY(!find(findingsOf(record), FindingCode::NonNormal));
+    }
+
     void scatterThatGrowsAsksForWeights() {
         const auto found = findingsOf(madeRecord([](int, Direction, int point, double&, double& y) {
             y = 1 + 2.0 * point + (y - 1 - 2.0 * point) * (0.1 + 2.0 * point);

@@ -10,9 +10,9 @@ rss <- function(y, X, w) {
     list(ss = sum(qr.resid(q, y * sqrt(w))^2), rank = q$rank)
 }
 
-chain <- function(case, x, degree, w) {
-    n <- nrow(d); ones <- rep(1, n)
-    X <- outer(x - 5, 0:degree, `^`)
+# X: columns of the function at the references, Xn: at the set points.
+chain <- function(case, d, X, Xn, w) {
+    n <- nrow(d)
     e <- qr.resid(qr(X * sqrt(w)), d$indication * sqrt(w)) / sqrt(w)
     sp <- model.matrix(~ 0 + factor(d$set_point))
     both <- names(which(tapply(d$direction, d$set_point, function(v) length(unique(v))) == 2))
@@ -21,7 +21,7 @@ chain <- function(case, x, degree, w) {
     R <- model.matrix(~ r)[, -1]
     G <- R * (d$set_point - 5)
     s2 <- rss(e, sp, w); s3 <- rss(e, cbind(sp, D), w); s4 <- rss(e, cbind(sp, D, R), w); s5 <- rss(e, cbind(sp, D, R, G), w)
-    s1 <- sum(w * e^2); p <- degree + 1
+    s1 <- sum(w * e^2); p <- ncol(X)
     ms <- s5$ss / (n - s5$rank)
     line <- function(name, ss, df) {
         show(case, paste0(name, ".ss"), ss); show(case, paste0(name, ".df"), df)
@@ -36,14 +36,24 @@ chain <- function(case, x, degree, w) {
     show(case, "pure_error.ss", s2$ss); show(case, "pure_error.df", n - s2$rank)
     naive <- ((s1 - s2$ss) / (s2$rank - p)) / (s2$ss / (n - s2$rank))
     show(case, "naive.f", naive); show(case, "naive.p", pf(naive, s2$rank - p, n - s2$rank, lower.tail = FALSE))
-    Xn <- outer(d$set_point - 5, 0:degree, `^`)
     a <- rss(e, cbind(Xn, D, R, G), w)
     line("adjusted", a$ss - s5$ss, s5$rank - a$rank)
 }
 
-chain("line", d$reference, 1, rep(1, nrow(d)))
-chain("nominal_quadratic", d$set_point, 2, rep(1, nrow(d)))
-chain("weighted_quadratic", d$reference, 2, 1 / d$u^2)
+powers <- function(x, degree) outer(x - 5, 0:degree, `^`)
+polynomial <- function(case, d, x, degree, w) chain(case, d, powers(x, degree), powers(d$set_point, degree), w)
+polynomial("line", d, d$reference, 1, rep(1, nrow(d)))
+polynomial("nominal_quadratic", d, d$set_point, 2, rep(1, nrow(d)))
+polynomial("weighted_quadratic", d, d$reference, 2, 1 / d$u^2)
+
+# With the readings 5, 17, 18 and 40 excluded, and weights.
+left <- d[-c(5, 17, 18, 40), ]
+polynomial("excluded_weighted_quadratic", left, left$reference, 2, 1 / left$u^2)
+
+# A function that is linear in its coefficients and no polynomial: b0 + b1 sqrt(x), without set point 0.
+above <- d[d$set_point > 0, ]
+root <- function(x) cbind(1, sqrt(x))
+chain("square_root", above, root(above$reference), root(above$set_point), rep(1, nrow(above)))
 
 # Where the reference is the set point itself, the same from the readings by lm and anova.
 f <- factor(d$set_point); r <- factor(d$run); cell <- interaction(f, d$direction, drop = TRUE)

@@ -232,6 +232,8 @@ class VarianceSplitTest : public QObject {
         QTest::newRow("line") << "line" << 1 << false << false;
         QTest::newRow("quadratic on the set points") << "nominal_quadratic" << 2 << true << false;
         QTest::newRow("weighted quadratic") << "weighted_quadratic" << 2 << false << true;
+        QTest::newRow("weighted quadratic, readings excluded") << "excluded_weighted_quadratic" << 2 << false << true;
+        QTest::newRow("square root, linear and no polynomial") << "square_root" << 0 << false << false;
         QTest::newRow("lm and anova") << "anova" << 2 << true << false;
     }
     void unbalancedReadingsAgreeWithNestedModelsInR() {
@@ -243,7 +245,14 @@ class VarianceSplitTest : public QObject {
         Record record = unbalancedRecord(nominal);
         if (weighted)
             record.choices.weights = Weights::Stated;
-        const VarianceSplit s = splitOf(record, {FunctionFamily::Polynomial, degree}).split;
+        for (const ReadingId id : record.readings->ids()) {
+            const bool named = id == 5 || id == 17 || id == 18 || id == 40, atZero = record.readings->row(id - 1).setPoint->mantissa == 0;
+            if (degree == 0 ? atZero : named && which.startsWith("excluded"))
+                record.exclusions.edit().add({id, ExclusionReason::Disturbance, {}, {}, 0});
+        }
+        const FunctionChoice function = degree == 0 ? FunctionChoice{FunctionFamily::SquareRoot, 0} : FunctionChoice{FunctionFamily::Polynomial, degree};
+        const VarianceSplit s = splitOf(record, function).split;
+        QVERIFY(std::none_of(s.warnings.begin(), s.warnings.end(), [](const Warning& w) { return w.code == WarningCode::ApproximateMethod; }));
         const std::map<std::string, const SplitRow*> rows{
             {"residual", &s.residual},     {"lack_of_fit", &*s.lackOfFit}, {"hysteresis", &*s.hysteresis},
             {"run_offset", &*s.runOffset}, {"run_slope", &*s.runSlope},    {"repeatability", &*s.repeatability},
@@ -259,6 +268,28 @@ class VarianceSplitTest : public QObject {
                                                 .arg(got, 0, 'g', 15)
                                                 .arg(expected, 0, 'g', 15)));
         }
+    }
+
+    // Exact by linear theory or said to be approximate, with the reason.
+    void adjustedLackOfFitSaysWhenItIsApproximate() {
+        const auto reason = [](const VarianceSplit& s) {
+            for (const Warning& warning : s.warnings)
+                if (warning.code == WarningCode::ApproximateMethod)
+                    return warning.facts.back().value;
+            return std::string();
+        };
+        Record record = unbalancedRecord(false);
+        QCOMPARE(reason(splitOf(record, line).split), std::string());
+        const Split bent = splitOf(record, {FunctionFamily::ExponentialApproach, 0});
+        QVERIFY(bent.split.lackOfFitAdjusted && bent.split.lackOfFitAdjusted->f);
+        QCOMPARE(reason(bent.split), std::string("linearised"));
+        record.choices.fit = FitDirection::Reference;
+        const Split turned = splitOf(record, line);
+        QVERIFY(turned.split.lackOfFitAdjusted && turned.split.lackOfFitAdjusted->f);
+        QCOMPARE(reason(turned.split), std::string("mean-indication"));
+        // The two ways round tell the same story: the line is bent, and by about as much.
+        const VarianceSplit forward = splitOf(unbalancedRecord(false), line).split;
+        QVERIFY(std::abs(*turned.split.lackOfFitAdjusted->f / *forward.lackOfFitAdjusted->f - 1) < 0.02);
     }
 
     void publishedLackOfFitAndOneWaySplits_data() {

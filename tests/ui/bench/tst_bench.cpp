@@ -16,6 +16,7 @@
 #include <QAction>
 #include <QApplication>
 #include <QClipboard>
+#include <QCheckBox>
 #include <QComboBox>
 #include <QDialog>
 #include <QLabel>
@@ -23,6 +24,7 @@
 #include <QPlainTextEdit>
 #include <QPushButton>
 #include <QSignalSpy>
+#include <QTableWidget>
 #include <QTemporaryDir>
 #include <QTest>
 #include <QToolButton>
@@ -503,6 +505,97 @@ class BenchTest : public QObject {
         QVERIFY(table);
         table->findChild<QPushButton*>(QStringLiteral("copySplit"))->click();
         QVERIFY(QApplication::clipboard()->text().contains(QStringLiteral("\nlack of fit\t0.00023864\t9\t")));
+    }
+
+    void theSplitIsCopiedByKeysAndPutOnTheCertificate() {
+        Bench bench(test::pressureTransmitter());
+        bench.act("bench.split-table");
+        QDialog* dialog = bench.dialog("splitTable");
+        QVERIFY(dialog);
+        auto* table = dialog->findChild<QTableWidget*>(QStringLiteral("splitFiguresTable"));
+        table->setFocus();
+        table->selectRow(4);
+        QTest::keyClick(table, Qt::Key_C, Qt::ControlModifier);
+        const QStringList lines = QApplication::clipboard()->text().split(QLatin1Char('\n'), Qt::SkipEmptyParts);
+        QCOMPARE(lines.size(), 2); // a head and the row
+        QVERIFY(lines[0].startsWith(QStringLiteral("source\tsum of squares (mA)²\t")));
+        QVERIFY(lines[1].startsWith(QStringLiteral("naive, against pure error\t")));
+        QTest::keyClick(table, Qt::Key_A, Qt::ControlModifier);
+        QTest::keyClick(table, Qt::Key_C, Qt::ControlModifier);
+        QCOMPARE(QApplication::clipboard()->text().count(QLatin1Char('\n')), table->rowCount() + 1);
+        QVERIFY(!bench.workbench.record().choices.splitOnCertificate);
+        dialog->findChild<QCheckBox*>(QStringLiteral("choices.split_on_certificate"))->click();
+        QVERIFY(bench.workbench.record().choices.splitOnCertificate);
+        QCOMPARE(bench.workbench.record().journal->entries().back().where, std::string("choices.split_on_certificate"));
+        bench.workbench.undoStack().undo();
+        QVERIFY(!bench.workbench.record().choices.splitOnCertificate);
+    }
+
+    void performanceFiguresSayWhereTheyOccurAndForceFiguresComeWithTurning() {
+        Bench bench(test::loadCell());
+        bench.find<QToolButton>("performanceFigures")->click();
+        QDialog* dialog = bench.dialog("performanceDialog");
+        QVERIFY(dialog);
+        dialog->findChild<QPushButton*>(QStringLiteral("copyPerformance"))->click();
+        const QString text = QApplication::clipboard()->text();
+        QVERIFY(text.contains(QStringLiteral("\nlargest\t\t0.0080\t0.0028\t-0.0014\t–")));
+        QVERIFY(text.contains(QStringLiteral("\nat\t\t5\t25\t15\t–")));
+        QVERIFY(text.contains(QStringLiteral("non-linearity, terminal-based\t-0.000385\t-0.019\t30")));
+        QVERIFY(dialog->findChild<QLabel*>(QStringLiteral("forceNote"))->text().contains(QStringLiteral("No zero error")));
+        dialog->reject();
+        Record still = test::loadCell();
+        still.plan.positions.clear();
+        Bench other(still);
+        other.act("bench.performance");
+        QVERIFY(other.dialog("performanceDialog")->findChild<QWidget*>(QStringLiteral("forceFigures"))->isHidden());
+    }
+
+    void eachExclusionShowsWhatItDoesAndTheLimitIsSet() {
+        Record record = test::pressureTransmitter();
+        record.exclusions.edit().add({6, ExclusionReason::Disturbance, "door", "IO", 0});
+        record.exclusions.edit().add({50, ExclusionReason::NotSettled, {}, "TL", 0});
+        Bench bench(record);
+        bench.act("bench.exclusions");
+        QDialog* dialog = bench.dialog("exclusionsDialog");
+        QVERIFY(dialog);
+        auto* list = dialog->findChild<QTableWidget*>(QStringLiteral("exclusionsList"));
+        QCOMPARE(list->rowCount(), 4); // all, each, none
+        QTRY_VERIFY(!list->item(2, 1)->text().isEmpty());
+        QCOMPARE(list->item(1, 4)->text(), QStringLiteral("disturbance: door"));
+        QVERIFY(list->item(0, 1)->text() != list->item(3, 1)->text());
+        list->setCurrentCell(1, 0);
+        QVERIFY(dialog->findChild<QWidget*>(QStringLiteral("effectTable"))->accessibleDescription().contains(QStringLiteral("readings used\t64\t65")));
+        auto* limit = dialog->findChild<QLineEdit*>(QStringLiteral("choices.exclusion_limit"));
+        QCOMPARE(limit->text(), QStringLiteral("10"));
+        limit->selectAll();
+        QTest::keyClicks(limit, QStringLiteral("2.5"));
+        QTest::keyClick(limit, Qt::Key_Return);
+        QCOMPARE(bench.workbench.record().choices.exclusionLimit.text(), std::string("0.025"));
+        QVERIFY(dialog->findChild<QLabel*>(QStringLiteral("exclusionsShare"))->text().contains(QStringLiteral("more than the limit")));
+        list->setCurrentCell(1, 0);
+        dialog->findChild<QPushButton*>(QStringLiteral("readmitChosen"))->click();
+        QVERIFY(!bench.workbench.record().exclusions->contains(6));
+        bench.workbench.undoStack().undo();
+        bench.workbench.undoStack().undo();
+        QVERIFY(bench.workbench.record() == record);
+    }
+
+    void anyFunctionOrARobustFitStandsBesideTheOneInUse() {
+        Bench bench(test::pressureTransmitter());
+        bench.act("bench.compare");
+        QDialog* dialog = bench.dialog("compareDialog");
+        QVERIFY(dialog);
+        auto* choice = dialog->findChild<QComboBox*>(QStringLiteral("compareWith"));
+        auto* effect = dialog->findChild<QWidget*>(QStringLiteral("effectTable"));
+        auto* take = dialog->findChild<QPushButton*>(QStringLiteral("takeOver"));
+        QCOMPARE(choice->currentText(), QStringLiteral("Robust fit"));
+        QTRY_VERIFY(effect->accessibleDescription().contains(QStringLiteral("value at 5 bar, mA\t11.9999\t12.0000")));
+        QVERIFY(take->isHidden()); // for comparison only
+        choice->setCurrentIndex(choice->findText(QStringLiteral("Polynomial of degree 3")));
+        QTRY_VERIFY(take->isEnabled());
+        QVERIFY(effect->accessibleDescription().contains(QStringLiteral("b3\t–\t")));
+        take->click();
+        QVERIFY(bench.workbench.record().choices.function == (FunctionChoice{FunctionFamily::Polynomial, 3}));
     }
 
     void aFindingLeadsToItsRemedyOrIsDismissedWithAReason() {
