@@ -10,7 +10,8 @@ namespace spanwright {
 namespace {
 
 constexpr OptionSpec known[] = {{"--function"}, {"--fit"},  {"--method"},  {"--weights"},  {"--covariance"},    {"--coverage"},
-                                {"--phase"},    {"--at"},   {"--read"},    {"--repeats"},  {"--outliers"},      {"--outlier-level"}};
+                                {"--phase"},    {"--at"},   {"--read"},    {"--repeats"},  {"--outliers"},      {"--outlier-level"},
+                                {"--shared-error"}, {"--robust"}, {"--tolerance-share"}};
 
 Error badValue(std::string_view option, std::string_view text) {
     return Error(ErrorCode::UsageValueBad, {{"option", std::string(option)}, {"text", std::string(text)}});
@@ -62,6 +63,12 @@ class Applier {
             return set(choices_.weights, text);
         if (option == "--covariance")
             return set(choices_.covariance, text);
+        if (option == "--shared-error")
+            return set(choices_.sharedError, text);
+        if (option == "--robust")
+            return set(choices_.robust, text);
+        if (option == "--tolerance-share")
+            return setProbability(choices_.toleranceShare, text);
         if (option == "--phase")
             return set(choices_.phase, text);
         if (option == "--coverage")

@@ -7,7 +7,7 @@
 namespace spanwright {
 
 /// The options that decide how readings are evaluated: --function, --fit, --method, --weights, --covariance, --coverage, --phase,
-/// --at, --read, --repeats, --outliers, --outlier-level.
+/// --at, --read, --repeats, --outliers, --outlier-level, --shared-error, --robust, --tolerance-share.
 std::span<const OptionSpec> choiceOptions();
 
 /// The choices with the options given put over them. Numbers are read with the decimal mark; a list is divided at commas, or at

@@ -22,6 +22,9 @@ std::string_view codeName(WarningCode code) {
     case WarningCode::IncompleteReadings: return "incomplete-readings";
     case WarningCode::FigureUndefined: return "figure-undefined";
     case WarningCode::ApproximateMethod: return "approximate-method";
+    case WarningCode::NoIndication: return "no-indication";
+    case WarningCode::SeveralIndications: return "several-indications";
+    case WarningCode::MatrixUnused: return "matrix-unused";
     case WarningCode::SealBroken: return "seal-broken";
     case WarningCode::JournalBroken: return "journal-broken";
     case WarningCode::ResultsDiffer: return "results-differ";

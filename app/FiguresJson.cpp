@@ -7,6 +7,8 @@
 #include "core/record/Fields.h"
 #include "ui/words/Words.h"
 
+#include <cmath>
+
 namespace spanwright {
 
 namespace {
@@ -24,6 +26,7 @@ void writeCoefficients(JsonWriter& json, const Fit& fit) {
     for (const Coefficient& c : fit.coefficients) {
         json.beginObject().field("name", c.name).field("value", c.value);
         json.field("standard_uncertainty", c.standardUncertainty).field("low", c.low).field("high", c.high);
+        json.field("joint_low", c.jointLow).field("joint_high", c.jointHigh);
         if (!c.unit.empty())
             json.field("unit", c.unit);
         json.endObject();
@@ -38,6 +41,39 @@ void writeCoefficients(JsonWriter& json, const Fit& fit) {
         json.endArray();
     }
     json.endArray();
+}
+
+/// How it was fitted, where that is more than its name.
+void writeMethod(JsonWriter& json, const Record& record, const Fit& fit) {
+    json.key("convergence").beginObject().field("reached", fit.convergence.reached).field("iterations", fit.convergence.iterations);
+    json.field("reason", fit.convergence.reason).endObject();
+    if (fit.correlated)
+        json.field("correlated", true).field("shared_error", nameOf(fit.sharedError));
+    if (fit.method != Method::Robust)
+        return;
+    json.field("robust", nameOf(record.choices.robust)).key("weighed_down").beginArray();
+    for (const WeighedDown& reading : fit.weighedDown)
+        json.beginObject().field("row", reading.row + 1).field("weight", reading.weight).endObject();
+    json.endArray();
+}
+
+void writeDegrees(JsonWriter& json, const DegreeLadder& ladder) {
+    json.key("degrees").beginObject(Layout::Lines).field("suggested", ladder.suggested);
+    json.field("by_partial_f", ladder.byPartialF).field("by_aicc", ladder.byAicc).field("by_e74", ladder.byE74);
+    json.key("steps").beginArray(Layout::Lines);
+    for (const DegreeStep& step : ladder.steps) {
+        json.beginObject().field("degree", step.degree).field("residual_sd", step.residualSd);
+        if (step.f)
+            json.field("f", *step.f).field("p", step.p);
+        if (std::isfinite(step.aicc))
+            json.field("aicc", step.aicc);
+        if (step.ratio && step.e74 && std::isfinite(*step.e74))
+            json.field("e74_ratio", *step.ratio).field("e74_limit", *step.e74);
+        if (step.degree > 1)
+            json.field("change", step.change).field("change_at", step.changeAt).field("worth_it", step.worth);
+        json.field("monotonic", step.monotonic).endObject();
+    }
+    json.endArray().endObject();
 }
 
 void writeSplitRow(JsonWriter& json, std::string_view name, const std::optional<SplitRow>& row, RowShape shape) {
@@ -95,6 +131,10 @@ void writeAnswers(JsonWriter& json, const PhaseEvaluation& evaluation) {
         writeInterval(json, "mean", point.mean);
         writeInterval(json, "new_reading", point.newReading);
         writeInterval(json, "simultaneous", point.simultaneous);
+        if (point.meanOfRepeats)
+            writeInterval(json, "mean_of_repeats", *point.meanOfRepeats);
+        if (point.tolerance)
+            writeInterval(json, "tolerance", *point.tolerance);
         json.field("inside_range", point.inside).endObject();
     }
     json.endArray();
@@ -282,6 +322,9 @@ std::string figuresJson(const Record& record, const PhaseEvaluation& evaluation,
     json.field("r_squared", fit.rSquared).field("chi_squared", fit.chiSquared);
     if (fit.chiSquared)
         json.field("chi_squared_p", fit.chiSquaredP);
+    writeMethod(json, record, fit);
+    if (evaluation.degrees)
+        writeDegrees(json, *evaluation.degrees);
     writeSplit(json, evaluation.split);
     writeAnswers(json, evaluation);
     const std::size_t warningsHere = json.written().size();

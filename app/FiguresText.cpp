@@ -7,6 +7,8 @@
 
 #include <QCoreApplication>
 
+#include <cmath>
+
 namespace spanwright {
 
 namespace {
@@ -51,11 +53,24 @@ QString headText(const Record& record, const PhaseEvaluation& e) {
 }
 
 QString coefficientsText(const Fit& fit) {
-    TextTable table({tr("Coefficient"), tr("unit"), tr("value"), tr("standard uncertainty"), tr("%1 interval").arg(percent(fit.coverage))});
+    TextTable table({tr("Coefficient"), tr("unit"), tr("value"), tr("standard uncertainty"), tr("%1 interval").arg(percent(fit.coverage)),
+                     tr("%1, all together").arg(percent(fit.coverage))});
     for (const Coefficient& c : fit.coefficients)
         table.add({QString::fromStdString(c.name), QString::fromStdString(c.unit), figure(c.value, 10), figure(c.standardUncertainty, 4),
-                   interval(c.low, c.high)});
+                   interval(c.low, c.high), interval(c.jointLow, c.jointHigh)});
     return table.text();
+}
+
+/// Readings that a robust fit weighs down, on one line.
+QString weighedDownText(const Record& record, const Fit& fit) {
+    if (fit.method != Method::Robust)
+        return {};
+    QStringList rows;
+    for (const WeighedDown& reading : fit.weighedDown)
+        rows << tr("%1 (weight %2)").arg(reading.row + 1).arg(figure(reading.weight, 2));
+    const QString name = record.choices.robust == RobustWeight::Huber ? tr("Robust after Huber") : tr("Robust, bisquare");
+    return rows.isEmpty() ? tr("%1, for comparison only: no reading is weighed down.").arg(name) + QStringLiteral("\n\n")
+                          : tr("%1, for comparison only: weighs down row %2.").arg(name, rows.join(QStringLiteral(", "))) + QStringLiteral("\n\n");
 }
 
 QString spreadText(const Record& record, const PhaseEvaluation& e) {
@@ -69,7 +84,25 @@ QString spreadText(const Record& record, const PhaseEvaluation& e) {
         text += tr("; χ² = %1").arg(figure(*fit.chiSquared, 5));
     if (fit.chiSquared && fit.chiSquaredP)
         text += QStringLiteral(", p = ") + pText(*fit.chiSquaredP);
-    return text + QStringLiteral("\n\n");
+    text += QLatin1Char('\n');
+    if (const QString settled = convergenceText(fit.convergence); !settled.isEmpty())
+        text += tr("The fit %1.").arg(settled) + QLatin1Char('\n');
+    if (fit.correlated)
+        text += fit.sharedError == SharedError::Fit
+                    ? tr("The calibration error that the readings of a standard share is in the fit, and not in the budget of a value read back.")
+                    : tr("Covariances between readings, from %1, are in the fit.").arg(QString::fromStdString(record.uncertaintyMatrix.source));
+    return text.trimmed() + QStringLiteral("\n\n") + weighedDownText(record, fit);
+}
+
+QString degreesText(const DegreeLadder& ladder) {
+    TextTable table({tr("Degree"), tr("s"), tr("F"), tr("p"), tr("AICc"), tr("ratio of s"), tr("ASTM E74 needs"), tr("largest change"), tr("at"), {}});
+    for (const DegreeStep& step : ladder.steps)
+        table.add({QString::number(step.degree), figure(step.residualSd, 4), step.f ? figure(*step.f, 4) : QString(), step.p ? pText(*step.p) : QString(),
+                   std::isfinite(step.aicc) ? figure(step.aicc, 5) : QString(), step.ratio ? figure(*step.ratio, 4) : QString(),
+                   step.e74 && std::isfinite(*step.e74) ? figure(*step.e74, 4) : QString(), step.degree > 1 ? figure(step.change, 3) : QString(),
+                   step.degree > 1 ? figure(step.changeAt, 6) : QString(),
+                   !step.monotonic ? tr("turns in the range") : step.worth ? QString() : tr("gain below resolution/√12")});
+    return table.text() + tr("Suggested degree: %1.").arg(ladder.suggested) + QStringLiteral("\n\n");
 }
 
 void addSplitRow(TextTable& table, const QString& name, const std::optional<SplitRow>& row) {
@@ -107,11 +140,24 @@ QString splitText(const VarianceSplit& split) {
 QString answersText(const Record& record, const PhaseEvaluation& e) {
     const QString coverage = percent(e.fit->coverage);
     const bool forward = e.fit->direction == FitDirection::Indication;
-    TextTable at({tr("At ") + withUnit(tr("reference"), record.item.reference.unit), withUnit(tr("indication"), record.item.indication.unit),
-                  tr("function, %1").arg(coverage), tr("new reading, %1").arg(coverage)});
-    for (const BandPoint& p : e.at)
-        at.add({figure(forward ? p.x : p.value, 10), figure(forward ? p.value : p.x, 10), interval(p.mean.low, p.mean.high),
-                interval(p.newReading.low, p.newReading.high)});
+    const bool ofMean = record.choices.repeats != 1 && !e.at.empty();
+    const bool tolerance = !e.at.empty() && e.at.front().tolerance;
+    QStringList heads{tr("At ") + withUnit(tr("reference"), record.item.reference.unit), withUnit(tr("indication"), record.item.indication.unit),
+                      tr("function, %1").arg(coverage), tr("new reading, %1").arg(coverage)};
+    if (ofMean)
+        heads << (record.choices.repeats ? tr("mean of %1, %2").arg(*record.choices.repeats).arg(coverage) : tr("exact mean, %1").arg(coverage));
+    if (tolerance)
+        heads << tr("%1 of all readings").arg(percent(record.choices.toleranceShare.toDouble()));
+    TextTable at(heads);
+    for (const BandPoint& p : e.at) {
+        QStringList cells{figure(forward ? p.x : p.value, 10), figure(forward ? p.value : p.x, 10), interval(p.mean.low, p.mean.high),
+                          interval(p.newReading.low, p.newReading.high)};
+        if (ofMean)
+            cells << (p.meanOfRepeats ? interval(p.meanOfRepeats->low, p.meanOfRepeats->high) : QString());
+        if (tolerance)
+            cells << (p.tolerance ? interval(p.tolerance->low, p.tolerance->high) : QString());
+        at.add(cells);
+    }
     TextTable read({tr("Read ") + withUnit(tr("indication"), record.item.indication.unit), withUnit(tr("reference"), record.item.reference.unit),
                     tr("standard uncertainty"), tr("%1 interval").arg(coverage)});
     for (const ReadBackAnswer& r : e.read)
@@ -189,6 +235,8 @@ QString rowsText(const Record& record, const RowFigures& rows) {
 
 QString figuresText(const Record& record, const PhaseEvaluation& evaluation, RowsShown rows) {
     QString text = headText(record, evaluation) + coefficientsText(*evaluation.fit) + spreadText(record, evaluation);
+    if (evaluation.degrees)
+        text += degreesText(*evaluation.degrees);
     if (evaluation.split)
         text += splitText(*evaluation.split);
     if (evaluation.performance)

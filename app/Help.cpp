@@ -24,14 +24,20 @@ Options of figures
   --set-point COL --direction COL --run COL
                                         grouping columns; a direction is up, down, rising or falling
   --u-reference COL --u-indication COL  standard uncertainties
+  --u-covariance COL                    covariance of the errors of reference and indication of each reading
+  --uncertainty-matrix FILE             covariances between readings: as many rows and columns of numbers as there are readings
+                                        (indications), or twice as many (all references, then all indications)
+  --shared-error budget|fit             where the calibration error that all readings of a standard share is counted
   --time COL                            time of each reading
   --function NAME                       constant, line, proportional, polynomial:N, polynomial-no-constant:N, square-root,
                                         logarithmic, power, exponential-approach, callendar-van-dusen, thermistor-b,
                                         steinhart-hart:N, nernst, table; a constant needs no reference
   --fit indication|reference            the quantity that the function gives
   --method least-squares|both-uncertain|robust
-  --weights equal|stated|replicates|proportional
+  --weights equal|stated|replicates|proportional|variance-function
   --covariance residuals|stated         scaled by the residuals, or from the stated uncertainties as they are
+  --robust huber|bisquare               which robust fit, for comparison
+  --tolerance-share P                   share of all readings that the tolerance band holds, 0.95
   --coverage P                          probability of every interval, 0.95
   --phase as-found|as-left              of a session
   --at X[,X…]                           band and prediction at these reference values

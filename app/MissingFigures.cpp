@@ -62,11 +62,14 @@ std::vector<Warning> reasonsFor(const std::vector<std::string>& missing, const P
                std::any_of(evaluation.warnings.begin(), evaluation.warnings.end(), [&](const Warning& w) { return w.code == code; });
     };
     std::vector<std::pair<std::string, std::string>> figuresOf; // by reason, in order
+    const bool correlated = evaluation.fit && evaluation.fit->correlated;
     for (const std::string& path : missing) {
+        if (correlated && (path == "split" || path == "diagnostics"))
+            continue; // said by a warning of its own
         const auto* rule = std::find_if(std::begin(rules), std::end(rules), [&](const Rule& r) { return path.starts_with(r.path); });
         if (rule != std::end(rules) && (said(rule->explained) || (path.starts_with("split.") && said(WarningCode::NoReplicates))))
             continue;
-        const std::string reason(rule == std::end(rules) ? "not-given" : rule->reason);
+        const std::string reason(correlated && path.starts_with("rows.") ? "correlated" : rule == std::end(rules) ? "not-given" : rule->reason);
         const auto known = std::find_if(figuresOf.begin(), figuresOf.end(), [&](const auto& entry) { return entry.first == reason; });
         if (known == figuresOf.end())
             figuresOf.emplace_back(reason, path);

@@ -3,7 +3,9 @@
 
 #include "app/ChoiceOptions.h"
 #include "core/exchange/FileBytes.h"
+#include "core/exchange/MatrixTable.h"
 #include "core/exchange/ReadingImport.h"
+#include "core/fit/StatedCovariance.h"
 #include "core/session/SessionJson.h"
 #include "ui/words/Words.h"
 
@@ -14,7 +16,7 @@ namespace spanwright {
 namespace {
 
 constexpr OptionSpec known[] = {{"--reference"},   {"--indication"},   {"--set-point"}, {"--direction"}, {"--run"},    {"--u-reference"},
-                                {"--u-indication"}, {"--time"}, {"--decimal"},   {"--separator"}, {"--encoding"}, {"--missing"},
+                                {"--u-indication"}, {"--u-covariance"}, {"--uncertainty-matrix"}, {"--time"}, {"--decimal"},   {"--separator"}, {"--encoding"}, {"--missing"},
                                 {"--exclude"}, {"--positions"}};
 
 Error ofOption(const Error& error, const char* option, const std::string& text) {
@@ -61,7 +63,7 @@ const Error* doubtAboutNumbers(const CsvRules& rules, const ImportMapping& mappi
     for (const Error& doubt : rules.doubts) {
         if (doubt.code != ErrorCode::DecimalMarkUnclear)
             continue;
-        for (const auto& column : {mapping.reference, mapping.indication, mapping.setPoint, mapping.uReference, mapping.uIndication})
+        for (const auto& column : {mapping.reference, mapping.indication, mapping.setPoint, mapping.uReference, mapping.uIndication, mapping.uCovariance})
             if (column && doubt.fact("column") == columnLabel(rules, *column))
                 return &doubt;
     }
@@ -89,7 +91,7 @@ Result<ImportMapping> mappingOf(const Arguments& arguments, const CsvRules& rule
     static constexpr Named named[] = {
         {"--reference", &ImportMapping::reference},    {"--indication", &ImportMapping::indication}, {"--set-point", &ImportMapping::setPoint},
         {"--direction", &ImportMapping::direction},    {"--run", &ImportMapping::run},               {"--u-reference", &ImportMapping::uReference},
-        {"--u-indication", &ImportMapping::uIndication}, {"--time", &ImportMapping::time}};
+        {"--u-indication", &ImportMapping::uIndication}, {"--u-covariance", &ImportMapping::uCovariance}, {"--time", &ImportMapping::time}};
     ImportMapping mapping;
     for (const Named& one : named)
         if (const auto text = arguments.value(one.option)) {
@@ -139,7 +141,7 @@ std::string understood(const std::string& path, const CsvRules& rules, const Imp
     note += columnNote("reference", rules, mapping.reference) + columnNote("indication", rules, mapping.indication);
     note += columnNote("set point", rules, mapping.setPoint) + columnNote("direction", rules, mapping.direction);
     note += columnNote("run", rules, mapping.run) + columnNote("u of reference", rules, mapping.uReference);
-    note += columnNote("u of indication", rules, mapping.uIndication) + columnNote("time", rules, mapping.time);
+    note += columnNote("u of indication", rules, mapping.uIndication) + columnNote("covariance", rules, mapping.uCovariance) + columnNote("time", rules, mapping.time);
     return note;
 }
 
@@ -230,6 +232,31 @@ Result<LoadedRecord> loadSession(const std::string& path, std::string_view bytes
     return LoadedRecord{std::move(session->record), {}, std::move(session->broken)};
 }
 
+/// Covariances between readings from the file that the option names.
+Result<void> takeMatrix(Record& record, const Arguments& arguments) {
+    const auto path = arguments.value("--uncertainty-matrix");
+    if (!path)
+        return {};
+    const auto file = FileBytes::read(*path);
+    if (!file)
+        return file.error();
+    std::optional<DecimalMark> mark;
+    if (arguments.has("--decimal")) {
+        const auto stated = decimalMark(arguments);
+        if (!stated)
+            return stated.error();
+        mark = *stated;
+    }
+    const auto numbers = readMatrix(file->bytes(), mark);
+    if (!numbers)
+        return numbers.error().with("file", *path);
+    auto matrix = uncertaintyMatrix(*numbers, record, record.choices.phase, path->substr(path->find_last_of('/') + 1));
+    if (!matrix)
+        return matrix.error().with("file", *path);
+    record.uncertaintyMatrix = std::move(matrix).value();
+    return {};
+}
+
 Result<void> exclude(Record& record, const std::vector<std::size_t>& rows) {
     for (const std::size_t row : rows) {
         if (row > record.readings->size())
@@ -318,6 +345,8 @@ Result<LoadedRecord> loadRecord(const std::string& path, const Arguments& argume
     const auto done = exclude(loaded->record, *excluded);
     if (!done)
         return done.error();
+    if (const auto taken = takeMatrix(loaded->record, arguments); !taken)
+        return taken.error();
     return loaded;
 }
 

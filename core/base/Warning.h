@@ -18,10 +18,13 @@ enum class WarningCode {
     NoFiniteInterval,      ///< facts: value
     NoAnswer,              ///< facts: value
     SeveralAnswers,        ///< facts: value
+    NoIndication,          ///< facts: value, a reference that the function does not reach
+    SeveralIndications,    ///< facts: value
     NotMonotonic,
     IncompleteReadings,    ///< rows that lack a reference or an indication; facts: count
     FigureUndefined,       ///< facts: figure, reason
     ApproximateMethod,     ///< facts: figure, method
+    MatrixUnused,          ///< covariances between readings are stated, and the method does not use them
     SealBroken,            ///< a session file was changed outside the program
     JournalBroken,         ///< facts: entry, the first from 1 that does not fit the one before
     ResultsDiffer,         ///< stored with a session, and recomputed; facts: figure, stored, now

@@ -50,7 +50,8 @@ ReadBackLines linesAt(const Record& record, const Fit& fit, double x, double sha
     const Side side = forward ? Side::Indication : Side::Reference;
     const double df = degreesOfFreedom(fit);
     BudgetLines lines(record, place);
-    lines.addStandards();
+    if (fit.sharedError == SharedError::Budget) // else the covariance of the function holds their errors
+        lines.addStandards();
     lines.addReferenceResolution();
     lines.add(DerivedLine::Fit, side, Distribution::Student, std::sqrt(fit.curve->variance(x)), 1, df);
     lines.addManual();

@@ -6,6 +6,7 @@
 #include "core/diagnose/Finding.h"
 #include "core/diagnose/Influence.h"
 #include "core/evaluate/ReadValue.h"
+#include "core/fit/DegreeLadder.h"
 #include "core/fit/Fit.h"
 #include "core/interval/Bands.h"
 #include "core/performance/ForceFigures.h"
@@ -53,6 +54,7 @@ struct PhaseEvaluation {
     std::size_t readings = 0, complete = 0, excluded = 0, planned = 0;
     std::optional<Error> notFitted; ///< why there is no fit (too few readings, all references equal, …)
     std::optional<Fit> fit;
+    std::optional<DegreeLadder> degrees; ///< where the function is a polynomial and the readings are few
     std::optional<VarianceSplit> split;
     std::optional<Diagnostics> diagnostics;
     std::optional<ProcessFigures> performance;

@@ -107,7 +107,8 @@ void place(const RowSources& sources, const std::vector<std::size_t>& rows, RowF
 } // namespace
 
 RowFigures rowTable(RowSources sources) {
-    const Influence influence = sources.fit != nullptr
+    // The figures of influence are those of independent readings.
+    const Influence influence = sources.fit != nullptr && !sources.fit->correlated
                                     ? Influence(*sources.residuals, static_cast<int>(sources.fit->terms()))
                                     : Influence();
     RowFigures table;

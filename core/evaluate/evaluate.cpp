@@ -5,6 +5,7 @@
 #include "core/diagnose/Findings.h"
 #include "core/evaluate/Dates.h"
 #include "core/evaluate/RowTable.h"
+#include "core/fit/DegreeLadder.h"
 #include "core/fit/fitFunction.h"
 #include "core/fit/fitMany.h"
 #include "core/verdict/makeVerdict.h"
@@ -16,6 +17,7 @@ namespace spanwright {
 namespace {
 
 constexpr std::size_t CurvePoints = 241;
+constexpr std::size_t MostOnLadder = 1000;
 constexpr double BeyondRange = 0.03; ///< share of the range by which the curve is drawn further on both sides
 
 struct Range {
@@ -65,6 +67,7 @@ class PhaseSteps {
         if (fitted) {
             examine(fitted->residuals);
             draw();
+            climb();
             answer();
             compare(*fitted);
         }
@@ -93,7 +96,13 @@ class PhaseSteps {
         result_.planned = plannedReadings(record_.plan, result_.phase).size();
     }
 
+    /// The split and the tests are defined for readings whose errors are independent.
     void examine(const Residuals& residuals) {
+        if (result_.fit->correlated) {
+            for (const char* figure : {"split", "diagnostics"})
+                result_.warnings.push_back({WarningCode::FigureUndefined, {{"figure", figure}, {"reason", "correlated"}}});
+            return;
+        }
         result_.split = splitVariance(used_, residuals, *result_.fit);
         const DiagnoseQuestion question{record_.readings->ids(), choices_.outliers, choices_.outlierLevel.toDouble()};
         result_.diagnostics = diagnose(used_, residuals, *result_.fit, question);
@@ -108,14 +117,45 @@ class PhaseSteps {
             result_.curve = {bandAt(*result_.fit, range.low)};
     }
 
+    /// Degrees side by side, where the function is one of them and the readings are few enough for every change.
+    void climb() {
+        const FunctionFamily family = choices_.function.family;
+        if ((family != FunctionFamily::Line && family != FunctionFamily::Polynomial) || used_.size() > MostOnLadder ||
+            choices_.method != Method::LeastSquares || result_.fit->correlated)
+            return;
+        const bool indication = result_.fit->direction == FitDirection::Indication;
+        const auto& resolution = indication ? record_.item.resolution : record_.item.referenceResolution;
+        DegreeLadder ladder = degreeLadder(used_, choices_, resolution ? resolution->toDouble() : 0);
+        if (!ladder.steps.empty())
+            result_.degrees = std::move(ladder);
+    }
+
     void answer() {
-        for (const Decimal& x : choices_.at) {
-            result_.at.push_back(bandAt(*result_.fit, x.toDouble()));
-            if (!result_.at.back().inside)
-                result_.warnings.push_back({WarningCode::Extrapolated, {{"value", x.text()}}});
-        }
+        for (const Decimal& reference : choices_.at)
+            answerAt(reference);
         for (const Decimal& y : choices_.read)
             result_.read.push_back(readValue(record_, *result_.fit, y.toDouble(), choices_.repeats));
+    }
+
+    /// The bands at a reference value; of a function that gives the reference, at the indication that belongs to it.
+    void answerAt(const Decimal& reference) {
+        const Fit& fit = *result_.fit;
+        double x = reference.toDouble();
+        if (fit.direction == FitDirection::Reference) {
+            const std::vector<double> places = abscissaeOf(fit, x);
+            if (places.size() != 1)
+                result_.warnings.push_back({places.empty() ? WarningCode::NoIndication : WarningCode::SeveralIndications, {{"value", reference.text()}}});
+            if (places.empty())
+                return;
+            x = places.front();
+        }
+        BandPoint point = bandAt(fit, x);
+        point.meanOfRepeats = meanOfRepeatsAt(fit, x, choices_.repeats);
+        if (fit.covarianceScale == CovarianceScale::Residuals && fit.degreesOfFreedom > 0)
+            point.tolerance = toleranceAt(fit, x, choices_.toleranceShare.toDouble());
+        if (!point.inside)
+            result_.warnings.push_back({WarningCode::Extrapolated, {{"value", reference.text()}}});
+        result_.at.push_back(point);
     }
 
     /// The same function with the excluded readings among them.
@@ -135,7 +175,7 @@ class PhaseSteps {
         const auto pointer = [](const auto& part) { return part ? &*part : nullptr; };
         FindingsInput input{record_, result_.phase, used_};
         input.fit = fit();
-        input.residuals = residuals;
+        input.residuals = fit() != nullptr && fit()->correlated ? nullptr : residuals;
         input.split = pointer(result_.split);
         input.diagnostics = pointer(result_.diagnostics);
         input.performance = pointer(result_.performance);

@@ -22,9 +22,10 @@ struct KnownNames {
     std::optional<std::size_t> ImportMapping::* target;
     std::array<std::string_view, 8> names;
 };
-constexpr std::array<KnownNames, 8> knownNames{{
+constexpr std::array<KnownNames, 9> knownNames{{
     {&ImportMapping::uReference, {"ureference", "uref", "ux"}},
     {&ImportMapping::uIndication, {"uindication", "uind", "uy"}},
+    {&ImportMapping::uCovariance, {"ucovariance", "covariance", "cov", "uxy", "covxy"}},
     {&ImportMapping::setPoint, {"setpoint", "nominal", "sp", "point", "level", "target"}},
     {&ImportMapping::direction, {"direction", "dir", "updown"}},
     {&ImportMapping::run, {"run", "pass", "cycle", "series"}},
@@ -160,6 +161,7 @@ Result<ImportedReadings> readReadings(std::string_view bytes, const CsvRules& ru
     const auto run = plan.add(mapping.run, ColumnKind::Number);
     const auto uReference = plan.add(mapping.uReference, ColumnKind::Number);
     const auto uIndication = plan.add(mapping.uIndication, ColumnKind::Number);
+    const auto uCovariance = plan.add(mapping.uCovariance, ColumnKind::Number);
     const auto time = plan.add(mapping.time, ColumnKind::Time);
 
     auto read = readTable(bytes, rules, plan.wanted, progress);
@@ -191,6 +193,7 @@ Result<ImportedReadings> readReadings(std::string_view bytes, const CsvRules& ru
     take(setPoint, block.setPoint);
     take(uReference, block.uReference);
     take(uIndication, block.uIndication);
+    take(uCovariance, block.uCovariance);
     imported.lines = std::move(table.lines);
     return imported;
 }

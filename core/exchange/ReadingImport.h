@@ -10,7 +10,7 @@ namespace spanwright {
 struct ImportMapping {
     std::optional<std::size_t> reference, indication;
     std::optional<std::size_t> setPoint, direction, run;
-    std::optional<std::size_t> uReference, uIndication;
+    std::optional<std::size_t> uReference, uIndication, uCovariance;
     std::optional<std::size_t> time;
     bool operator==(const ImportMapping&) const = default;
 };

@@ -11,13 +11,15 @@ namespace {
 
 constexpr int MostIterations = 500;
 
-bool straight(const FunctionChoice& function) {
-    return function.family == FunctionFamily::Line || function.family == FunctionFamily::Proportional;
+/// Covariance of both errors of a reading; 0 where none is stated.
+DoubleDouble covarianceOf(const FitTask& task, std::size_t i) {
+    const PairColumn& column = task.sample.uCovariance;
+    return column.empty() || column.high[i] != column.high[i] ? DoubleDouble(0.0) : column[i];
 }
 
-/// Both uncertainties stated for every reading, none negative, not both zero.
+/// Both uncertainties stated for every reading, none negative, not both zero, and a covariance that both allow.
 Result<void> checkStated(const FitTask& task) {
-    std::vector<std::size_t> missing, notPositive;
+    std::vector<std::size_t> missing, notPositive, tooLarge;
     for (std::size_t i = 0; i < task.sample.size(); ++i) {
         const bool known = !task.ux.empty() && !task.uy.empty() && task.ux.high[i] == task.ux.high[i] &&
                            task.uy.high[i] == task.uy.high[i];
@@ -25,11 +27,15 @@ Result<void> checkStated(const FitTask& task) {
             missing.push_back(i);
         else if (task.ux.high[i] < 0 || task.uy.high[i] < 0 || !(task.ux.high[i] + task.uy.high[i] > 0))
             notPositive.push_back(i);
+        else if (abs(covarianceOf(task, i)) > task.ux[i] * task.uy[i])
+            tooLarge.push_back(i);
     }
     if (!missing.empty())
         return Error(ErrorCode::UncertaintyMissing, {{"rows", rowsFact(task.sample, missing)}});
     if (!notPositive.empty())
         return Error(ErrorCode::UncertaintyNotPositive, {{"rows", rowsFact(task.sample, notPositive)}});
+    if (!tooLarge.empty())
+        return Error(ErrorCode::CovarianceTooLarge, {{"rows", rowsFact(task.sample, tooLarge)}});
     return {};
 }
 
@@ -41,8 +47,8 @@ LinearProblem incrementProblem(const FitTask& task, const std::vector<DoubleDoub
     LinearProblem problem{p, std::vector<DoubleDouble>(n * p), {}, {}};
     for (std::size_t i = 0; i < n; ++i) {
         const DoubleDouble x = task.x[i], y = task.y[i], vx = sqr(task.ux[i]), vy = sqr(task.uy[i]);
-        const DoubleDouble t = 1.0 / (vy + b * b * vx);
-        const DoubleDouble adjusted = (x * vy + b * vx * (y - a)) * t;
+        const DoubleDouble c = covarianceOf(task, i), t = 1.0 / (vy - 2.0 * b * c + b * b * vx);
+        const DoubleDouble adjusted = x + (b * vx - c) * t * (y - a - b * x);
         const std::vector<DoubleDouble> row = task.model->gradient(adjusted, beta);
         for (std::size_t k = 0; k < p; ++k)
             problem.design[k * n + i] = row[k];
@@ -62,9 +68,6 @@ VarianceProfile readingProfile(const FitTask& task) {
 } // namespace
 
 Result<SolvedModel> solveBothUncertain(FitTask& task) {
-    if (!straight(task.choices.function))
-        return Error(ErrorCode::FunctionUnknown,
-                     {{"text", functionName(task.choices.function)}, {"method", "both-uncertain"}});
     if (const auto stated = checkStated(task); !stated)
         return stated.error();
     DoubleDouble largest = 0.0;

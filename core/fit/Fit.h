@@ -35,6 +35,7 @@ struct Coefficient {
     double value = 0;
     double standardUncertainty = 0; ///< NaN without degrees of freedom
     double low = 0, high = 0;       ///< interval at the chosen coverage
+    double jointLow = 0, jointHigh = 0; ///< together with all others at that coverage (Bonferroni)
 };
 
 /// How an iterated fit ended; a linear one is reached in one step.
@@ -57,6 +58,8 @@ struct Fit {
     Method method = Method::LeastSquares;
     Weights weights = Weights::Equal;
     CovarianceScale covarianceScale = CovarianceScale::Residuals;
+    SharedError sharedError = SharedError::Budget;
+    bool correlated = false; ///< covariances between readings took part (ISO/TS 28037:2010, clauses 9 and 10)
     double coverage = 0.95;
     std::size_t used = 0, excluded = 0, setPoints = 0;
     std::vector<Coefficient> coefficients;
@@ -69,6 +72,7 @@ struct Fit {
     std::optional<double> rSquared;                ///< regression over total; empty when total is 0
     std::optional<double> chiSquared, chiSquaredP; ///< with stated uncertainties
     double coverageFactor = 0; ///< quantile that multiplies a standard uncertainty of the fit for `coverage`
+    double jointFactor = 0;    ///< the same for all coefficients together: quantile at (1 − coverage)/p (Bonferroni)
     double low = 0, high = 0;  ///< calibrated range of the abscissa, over the readings used
     std::shared_ptr<const FittedFunction> curve; ///< never null in a Fit that was made
     Convergence convergence;

@@ -29,6 +29,7 @@ struct SolvedModel {
     Convergence convergence;
     std::optional<double> robustSd;              ///< spread of the residuals as a robust fit sees it
     std::optional<DoubleDouble> covarianceScale; ///< where it is not s²
+    std::optional<DoubleDouble> totalSs;         ///< where covariances between readings took part
     std::vector<WeighedDown> weighedDown;
 };
 

@@ -5,6 +5,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <limits>
 
 namespace spanwright {
 
@@ -95,8 +96,8 @@ Result<Iterated> reweighted(FitTask task, RobustWeight kind, std::vector<DoubleD
 void describe(SolvedModel& solved, const FitTask& task, RobustWeight kind) {
     const std::vector<double> residual = scaledResiduals(task, solved.beta, task.weighting.rootWeight);
     const double spread = spreadOf(residual);
-    solved.robustSd = spread;
     const auto n = static_cast<double>(residual.size()), p = static_cast<double>(task.model->terms());
+    solved.robustSd = n > p ? spread : std::numeric_limits<double>::quiet_NaN();
     if (!(spread > 0) || n <= p)
         return;
     double square = 0, slope = 0, slopeSquare = 0;

@@ -2,6 +2,7 @@
 #include "core/fit/Sample.h"
 
 #include "core/fit/SetPoints.h"
+#include "core/fit/StatedCovariance.h"
 
 #include <algorithm>
 #include <cstring>
@@ -208,6 +209,14 @@ Sample sampleOf(const Record& record, Phase phase, Take take) {
         fillFew(sample, record, referenceTable, indicationTable);
     sample.uReference = statedFor(readings.uReference(), sample.rows);
     sample.uIndication = statedFor(readings.uIndication(), sample.rows);
+    sample.uCovariance = statedFor(readings.uCovariance(), sample.rows);
+    sample.shared = sharedTerms(record.standards);
+    if (!record.uncertaintyMatrix.empty()) {
+        std::vector<ReadingId> ids;
+        for (const std::size_t row : sample.rows)
+            ids.push_back(readings.ids()[row]);
+        sample.matrix = sampleMatrix(record.uncertaintyMatrix, ids);
+    }
     fillPlaces(sample, readings);
 
     if (chosen.incomplete > 0)

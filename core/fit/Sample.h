@@ -40,12 +40,33 @@ struct ExactGrids {
     std::vector<std::int64_t> keptReference, keptIndication; ///< or these do, where not every row counts
 };
 
+/// Covariances between the readings of a sample, as a matrix stated them: of the indications, or of all references followed by
+/// all indications.
+struct SampleMatrix {
+    enum class Extent { Indications, Both };
+    Extent extent = Extent::Indications;
+    std::vector<DoubleDouble> values;    ///< n × n or 2n × 2n, row by row
+    std::vector<std::size_t> row;        ///< of the record's matrix, from 0, of each of these rows
+    std::vector<std::size_t> unknown;    ///< readings of the sample that have no row; then `values` is empty
+};
+
+/// An error that all readings of a standard share, with the standard uncertainty u, or u·|value| where it is relative.
+struct SharedTerm {
+    enum class Form { Absolute, Relative };
+    Side side = Side::Reference;
+    Form form = Form::Absolute;
+    DoubleDouble u = 0.0;
+};
+
 /// The readings of one phase that count (complete and not excluded), in the order taken, with the standard's correction
 /// applied to the reference where its table is to be applied.
 struct Sample {
     std::vector<std::size_t> rows; ///< row in ReadingColumns
     PairColumn reference, indication;
     PairColumn uReference, uIndication;      ///< stated standard uncertainties; empty when none are stated
+    PairColumn uCovariance;                  ///< stated covariance of both errors of a reading; empty when none are stated
+    std::shared_ptr<const SampleMatrix> matrix; ///< null where no covariances between readings are stated
+    std::vector<SharedTerm> shared;
     std::vector<std::int32_t> group;         ///< set point, an index into groupValue
     std::vector<double> groupValue;          ///< set points in rising order: the stated one, else the reference itself
     std::vector<std::int32_t> run;           ///< empty when no run is known

@@ -157,8 +157,7 @@ Result<Weighting> replicateWeighting(const Sample& sample, const PairColumn& x,
             without.push_back(i);
     }
     if (!without.empty())
-        return Error(ErrorCode::UncertaintyNotPositive,
-                     {{"rows", rowsFact(sample, without)}, {"weights", "replicates"}});
+        return Error(ErrorCode::NoSpread, {{"rows", rowsFact(sample, without)}});
     return fromUncertainties(x, u);
 }
 
@@ -167,7 +166,7 @@ Result<Weighting> varianceFunctionWeighting(const Sample& sample, const PairColu
     std::vector<Spread> points = spreadAtSetPoints(sample, x, residual);
     std::erase_if(points, [](const Spread& spread) { return !(spread.freedom > 0); });
     if (points.size() < 2)
-        return Error(ErrorCode::TooFewSetPoints, {{"needed", "2"}, {"got", std::to_string(points.size())}});
+        return Error(ErrorCode::TooFewReplicates, {{"needed", "2"}, {"got", std::to_string(points.size())}});
     std::vector<double> w;
     for (const Spread& spread : points)
         w.push_back(spread.freedom);
@@ -188,8 +187,7 @@ Result<Weighting> varianceFunctionWeighting(const Sample& sample, const PairColu
             without.push_back(i);
     }
     if (!without.empty())
-        return Error(ErrorCode::UncertaintyNotPositive,
-                     {{"rows", rowsFact(sample, without)}, {"weights", "variance-function"}});
+        return Error(ErrorCode::NoSpread, {{"rows", rowsFact(sample, without)}});
     return fromUncertainties(x, u);
 }
 
@@ -202,8 +200,7 @@ Result<Weighting> proportionalWeighting(const Sample& sample, const PairColumn& 
             atZero.push_back(i);
     }
     if (!atZero.empty())
-        return Error(ErrorCode::OutsideDomain,
-                     {{"function", "proportional weights"}, {"rows", rowsFact(sample, atZero)}});
+        return Error(ErrorCode::LevelZero, {{"rows", rowsFact(sample, atZero)}});
     return fromUncertainties(x, u);
 }
 

@@ -35,18 +35,18 @@ Result<Weighting> statedWeighting(const Sample& sample, const PairColumn& x, con
 
 /// Weights from the spread of the readings at each set point: u_i is the standard deviation there of the residuals of
 /// an unweighted fit, so that a reference that wanders about its set point does not count as spread. Errors:
-/// UncertaintyNotPositive (facts: rows) where a set point has fewer than two readings or no spread.
+/// NoSpread (facts: rows) where a set point has fewer than two readings or no spread.
 Result<Weighting> replicateWeighting(const Sample& sample, const PairColumn& x,
                                      const std::vector<DoubleDouble>& residual);
 
 /// Weights from u(x) = c0 + c1 |x|, c1 ≥ 0 and c0 at least a tenth of the pooled spread, fitted to the standard
 /// deviations at the set points with weights ν/u² (the variance of a standard deviation is u²/2ν), iterated. Errors:
-/// TooFewSetPoints (facts: needed, got) with fewer than two set points that have replicates, UncertaintyNotPositive
-/// (facts: rows) without any spread.
+/// TooFewReplicates (facts: needed, got) with fewer than two set points that have replicates, NoSpread (facts: rows)
+/// without any spread.
 Result<Weighting> varianceFunctionWeighting(const Sample& sample, const PairColumn& x,
                                             const std::vector<DoubleDouble>& residual);
 
-/// Weights from u ∝ |x| (ISO 11095:1996, proportional residual standard deviation). Error: OutsideDomain (facts: rows)
+/// Weights from u ∝ |x| (ISO 11095:1996, proportional residual standard deviation). Error: LevelZero (facts: rows)
 /// at x = 0.
 Result<Weighting> proportionalWeighting(const Sample& sample, const PairColumn& x);
 

@@ -15,7 +15,10 @@ namespace {
 
 /// Total about the weighted mean (or zero), regression as Σ w (ŷ − centre)², both free of cancellation. Where residuals
 /// and fitted values are not orthogonal (iterated fits), regression is what the residual leaves of the total.
-SumsOfSquares sumsOf(const FitTask& task, const LinearSolution& solution) {
+SumsOfSquares sumsOf(const FitTask& task, const SolvedModel& solved) {
+    const LinearSolution& solution = solved.linear;
+    if (solved.totalSs)
+        return {*solved.totalSs, *solved.totalSs - solution.residualSs};
     const bool orthogonal = task.model->linear() && task.choices.method == Method::LeastSquares;
     const std::size_t n = task.sample.size();
     const auto weight = [&](std::size_t i) {
@@ -80,7 +83,8 @@ void fillCoefficients(Fit& fit, const FitTask& task, const SolvedModel& solved, 
         const double value = toDouble(reported.value[i]);
         const double u = variance.isnan() ? std::numeric_limits<double>::quiet_NaN() : toDouble(sqrt(variance));
         fit.coefficients.push_back(
-            {names[i].name, names[i].unit, value, u, value - fit.coverageFactor * u, value + fit.coverageFactor * u});
+            {names[i].name, names[i].unit, value, u, value - fit.coverageFactor * u, value + fit.coverageFactor * u,
+             value - fit.jointFactor * u, value + fit.jointFactor * u});
     }
 }
 
@@ -127,6 +131,7 @@ void describe(Fit& fit, const FitTask& task) {
         task.choices.covariance == CovarianceScale::Stated || task.choices.method == Method::BothUncertain;
     fit.weights = stated ? Weights::Stated : task.choices.weights;
     fit.covarianceScale = task.choices.covariance;
+    fit.sharedError = task.sample.shared.empty() ? SharedError::Budget : task.choices.sharedError;
     fit.coverage = task.choices.coverage.toDouble();
     fit.used = task.sample.size();
     fit.excluded = task.sample.excluded;
@@ -136,8 +141,11 @@ void describe(Fit& fit, const FitTask& task) {
     const int df = static_cast<int>(fit.used - task.model->terms());
     fit.degreesOfFreedom = df;
     const double tail = toDouble((1.0 - task.choices.coverage.toDoubleDouble()) / 2.0);
-    fit.coverageFactor =
-        fit.covarianceScale == CovarianceScale::Stated ? normalQuantileAbove(tail) : studentQuantileAbove(tail, df);
+    const auto quantile = [&](double above) {
+        return fit.covarianceScale == CovarianceScale::Stated ? normalQuantileAbove(above) : studentQuantileAbove(above, df);
+    };
+    fit.coverageFactor = quantile(tail);
+    fit.jointFactor = quantile(tail / static_cast<double>(task.model->terms()));
 }
 
 /// Whether the function turns in the calibrated range, so that an indication may belong to several references.
@@ -171,6 +179,8 @@ Fit assembleFigures(const FitTask& task, SolvedModel solved, const SumsOfSquares
         if (df > 0)
             fit.chiSquaredP = chiSquaredAbove(fit.residualSs, df);
     }
+    if (task.sample.matrix != nullptr && !fit.correlated)
+        fit.warnings.push_back({WarningCode::MatrixUnused, {}});
     if (df == 0)
         fit.warnings.push_back({WarningCode::NoDegreesOfFreedom, {}});
     fit.convergence = solved.convergence;
@@ -180,6 +190,7 @@ Fit assembleFigures(const FitTask& task, SolvedModel solved, const SumsOfSquares
         fit.warnings.push_back(
             {WarningCode::ApproximateMethod, {{"figure", "standard_uncertainty"}, {"method", "robust"}}});
     fit.weighedDown = std::move(solved.weighedDown);
+    fit.correlated = solved.totalSs.has_value();
     fit.curve = std::make_shared<ModelCurve>(task.model, solved.beta, solution.inverseRoot, toDouble(scale),
                                              task.weighting.profile);
     if (fit.terms() > 2 && turns(fit))
@@ -189,7 +200,7 @@ Fit assembleFigures(const FitTask& task, SolvedModel solved, const SumsOfSquares
 
 FitOutcome assembleFit(const FitTask& task, SolvedModel solved) {
     dropRounding(solved.linear, task.y);
-    const SumsOfSquares sums = sumsOf(task, solved.linear);
+    const SumsOfSquares sums = sumsOf(task, solved);
     Residuals residuals = residualsOf(task, solved.linear);
     return {assembleFigures(task, std::move(solved), sums), std::move(residuals), {}};
 }

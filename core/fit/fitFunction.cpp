@@ -3,12 +3,15 @@
 
 #include "core/fit/BothUncertain.h"
 #include "core/fit/CalibrationFunction.h"
+#include "core/fit/CorrelatedFit.h"
 #include "core/fit/Robust.h"
+#include "core/fit/StatedCovariance.h"
 #include "core/fit/assembleFit.h"
 #include "core/fit/fitMany.h"
 #include "core/fit/solveModel.h"
 
 #include <algorithm>
+#include <charconv>
 
 namespace spanwright {
 
@@ -23,6 +26,11 @@ std::size_t distinctUpTo(const PairColumn& x, std::size_t enough) {
     return seen.size();
 }
 
+std::string shortest(double value) {
+    char text[32];
+    return {text, std::to_chars(text, text + sizeof text, value).ptr};
+}
+
 Error shortOf(ErrorCode code, std::size_t needed, std::size_t got) {
     return Error(code, {{"needed", std::to_string(needed)}, {"got", std::to_string(got)}});
 }
@@ -33,7 +41,7 @@ Result<void> checkEnough(const FitTask& task) {
         return shortOf(ErrorCode::TooFewReadings, p, n);
     const std::size_t distinct = distinctUpTo(task.x, p);
     if (distinct < p)
-        return distinct == 1 ? Error(ErrorCode::ReferencesAllEqual, {{"value", std::to_string(task.x.high.front())}})
+        return distinct == 1 ? Error(ErrorCode::ReferencesAllEqual, {{"value", shortest(task.x.high.front())}})
                              : shortOf(ErrorCode::TooFewSetPoints, p, distinct);
     std::vector<std::size_t> outside;
     for (std::size_t i = 0; i < n; ++i)
@@ -41,7 +49,9 @@ Result<void> checkEnough(const FitTask& task) {
             outside.push_back(i);
     if (!outside.empty())
         return Error(ErrorCode::OutsideDomain,
-                     {{"function", functionName(task.choices.function)}, {"rows", rowsFact(task.sample, outside)}});
+                     {{"function", functionName(task.choices.function)},
+                      {"rows", rowsFact(task.sample, outside)},
+                      {"where", std::string(factsOf(task.choices.function.family).where)}});
     return {};
 }
 
@@ -61,7 +71,19 @@ Result<Weighting> chosenWeighting(const FitTask& task) {
                : varianceFunctionWeighting(task.sample, task.x, even->linear.residual);
 }
 
+bool straight(const FunctionChoice& function) {
+    return function.family == FunctionFamily::Line || function.family == FunctionFamily::Proportional;
+}
+
 Result<SolvedModel> solve(FitTask& task) {
+    if (task.choices.method == Method::BothUncertain && !straight(task.choices.function))
+        return Error(ErrorCode::MethodUnfit,
+                     {{"reason", "function"}, {"text", functionName(task.choices.function)}});
+    const auto correlated = takesCovariances(task);
+    if (!correlated)
+        return correlated.error();
+    if (*correlated)
+        return solveCorrelated(task);
     if (task.choices.method == Method::BothUncertain)
         return solveBothUncertain(task);
     auto weighting = chosenWeighting(task);
@@ -85,8 +107,9 @@ Result<FitOutcome> fitFunction(const Sample& sample, const Choices& choices) {
     const PairColumn& x = indication ? sample.reference : sample.indication;
     const PairColumn& y = indication ? sample.indication : sample.reference;
     if (sample.grids) {
-        if (auto streamed = fitMany(sample, choices))
-            return std::move(*streamed);
+        if (choices.sharedError == SharedError::Budget)
+            if (auto streamed = fitMany(sample, choices))
+                return std::move(*streamed);
         return fitFunction(withExactColumns(sample), choices);
     }
     const auto [low, high] = std::minmax_element(x.high.begin(), x.high.end());

@@ -24,7 +24,8 @@ struct FitOutcome {
 ///
 /// Errors: NoReadings; TooFewReadings, TooFewSetPoints (facts: needed, got); ReferencesAllEqual; UncertaintyMissing,
 /// UncertaintyNotPositive, OutsideDomain (facts: rows, data rows from 1); RankLost (facts: terms); NoConvergence
-/// (facts: reason); FunctionUnknown (facts: text).
+/// (facts: reason); FunctionUnknown (facts: text); MethodUnfit (facts: reason, text); those of the weights, of
+/// takesCovariances() and of jointCovariance().
 Result<FitOutcome> fitFunction(const Sample& sample, const Choices& choices);
 
 /// The direction in which the chosen function is fitted: some sensor equations give one quantity only.

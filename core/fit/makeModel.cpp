@@ -48,7 +48,7 @@ Result<Made> table(const ModelContext& context) {
     if (m < 2)
         return Error(ErrorCode::TooFewSetPoints, {{"needed", "2"}, {"got", std::to_string(m)}});
     if (m > MostKnots)
-        return Error(ErrorCode::FunctionUnknown, {{"text", "table"}, {"set_points", std::to_string(m)}});
+        return Error(ErrorCode::MethodUnfit, {{"reason", "knots"}, {"got", std::to_string(m)}, {"most", std::to_string(MostKnots)}});
     const PairColumn& x = context.direction == FitDirection::Indication ? sample.reference : sample.indication;
     std::vector<DoubleDouble> sum(m, 0.0);
     std::vector<double> n(m, 0.0);

@@ -100,6 +100,13 @@ BandPoint bandAt(const Fit& fit, double x) {
     return bandWith(fit, x, simultaneousFactor(fit));
 }
 
+Interval meanOfRepeatsAt(const Fit& fit, double x, std::optional<int> repeats) {
+    const double value = fit.curve->value(x);
+    const double noise = repeats ? fit.curve->readingVariance(x) / *repeats : 0;
+    const double half = fit.coverageFactor * std::sqrt(fit.curve->variance(x) + noise);
+    return {value - half, value + half};
+}
+
 Interval toleranceAt(const Fit& fit, double x, double share) {
     const double value = fit.curve->value(x), noise = fit.curve->readingVariance(x);
     const double factor =

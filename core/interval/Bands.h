@@ -4,6 +4,7 @@
 #include "core/fit/Fit.h"
 
 #include <memory>
+#include <optional>
 #include <span>
 #include <vector>
 
@@ -21,9 +22,13 @@ struct BandPoint {
     Interval newReading;   ///< where the next reading will be: ŷ ± t √(vᵀVv + σ²)
     Interval simultaneous; ///< Working–Hotelling: t replaced by √(p F)
     bool inside = true;    ///< within the calibrated range
+    std::optional<Interval> meanOfRepeats; ///< where the mean of the chosen number of new readings will be
+    std::optional<Interval> tolerance;     ///< where the chosen share of all readings lies
 };
 
 BandPoint bandAt(const Fit& fit, double x);
+/// Where the mean of `repeats` new readings will be: ŷ ± t √(vᵀVv + σ²/q); empty: an exact one, q without end.
+Interval meanOfRepeatsAt(const Fit& fit, double x, std::optional<int> repeats);
 /// Where at least `share` of all readings at x lie, with the fit's coverage as confidence: ŷ ± k σ(x) with the exact
 /// two-sided factor for an effective number of readings σ²/u²(ŷ) (Wallis 1951). NaN where the uncertainties are taken
 /// as they are.

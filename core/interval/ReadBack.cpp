@@ -117,24 +117,25 @@ ReadBackAnswer evaluated(const Asked& asked) {
     return answer;
 }
 
-/// Every x with f(x) = y: in the calibrated range, or else in a span on either side of it.
-std::vector<double> answersOf(const Asked& asked, const RangeOfSearch& range) {
-    const Fit& fit = asked.fit;
+} // namespace
+
+std::vector<double> abscissaeOf(const Fit& fit, double ordinate) {
+    const double middle = fit.low + (fit.high - fit.low) / 2;
     if (straight(fit)) {
-        const double c = fit.low + (fit.high - fit.low) / 2, b = fit.curve->derivative(c);
-        return b != 0 ? std::vector<double>{c + (asked.indication - fit.curve->value(c)) / b} : std::vector<double>{};
+        const double b = fit.curve->derivative(middle);
+        return b != 0 ? std::vector<double>{middle + (ordinate - fit.curve->value(middle)) / b} : std::vector<double>{};
     }
-    const auto above = [&](double x) { return fit.curve->value(x) - asked.indication; };
+    const auto above = [&](double x) { return fit.curve->value(x) - ordinate; };
     std::vector<double> roots = rootsIn(above, fit.low, fit.high);
     if (roots.empty()) {
+        const RangeOfSearch range = searchRange(fit);
         roots = rootsIn(above, range.low, fit.low);
         const std::vector<double> beyond = rootsIn(above, fit.high, range.high);
         roots.insert(roots.end(), beyond.begin(), beyond.end());
     }
+    std::stable_sort(roots.begin(), roots.end(), [&](double a, double b) { return std::fabs(a - middle) < std::fabs(b - middle); });
     return roots;
 }
-
-} // namespace
 
 ReadBackAnswer readBack(const Fit& fit, double indication, std::optional<int> repeats) {
     const Asked asked{fit, indication, repeats ? 1.0 / std::max(1, *repeats) : 0.0};
@@ -144,16 +145,13 @@ ReadBackAnswer readBack(const Fit& fit, double indication, std::optional<int> re
     } else {
         answer.indication = indication;
         const RangeOfSearch range = searchRange(fit);
-        std::vector<double> roots = answersOf(asked, range);
+        const std::vector<double> roots = abscissaeOf(fit, indication);
         if (roots.empty()) {
             answer.low = answer.high = answer.standardUncertainty = std::numeric_limits<double>::quiet_NaN();
             answer.insideRange = false;
             answer.warnings.push_back(warn(WarningCode::NoAnswer, indication));
             return answer;
         }
-        const double middle = fit.low + (fit.high - fit.low) / 2;
-        std::stable_sort(roots.begin(), roots.end(),
-                         [&](double a, double b) { return std::fabs(a - middle) < std::fabs(b - middle); });
         const double x = roots.front();
         answer.reference = x;
         answer.others.assign(roots.begin() + 1, roots.end());

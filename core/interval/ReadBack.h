@@ -20,6 +20,10 @@ struct ReadBackAnswer {
     std::vector<Warning> warnings;
 };
 
+/// Every abscissa at which the function has this value, the one nearest to the middle of the calibrated range first: in the range,
+/// or else in a span on either side of it.
+std::vector<double> abscissaeOf(const Fit& fit, double ordinate);
+
 /// The set {x : |y − f(x)| ≤ k √(u²(f(x)) + σ²(x)/q)}, so that a value is in it exactly when the indication is in the
 /// band there: for a line the closed form of Fieller (1954), which may be all values, or all but a finite gap (then low
 /// and high are infinite, and NoFiniteInterval carries the gap); for curves the ends next to the answer, sought over

@@ -45,6 +45,9 @@ enum class RobustWeight { Huber, Bisquare };
 /// Equal; 1/u² from the stated uncertainties; from the spread at each set point; u ∝ |x|; u = c0 + c1 |x| from the replicates.
 enum class Weights { Equal, Stated, Replicates, Proportional, VarianceFunction };
 enum class CovarianceScale { Residuals, Stated };
+/// Where the calibration error that all readings of a standard share is accounted for: as a line of the budget, or as a covariance
+/// of all its readings in the fit. Never in both.
+enum class SharedError { Budget, Fit };
 
 /// What the engineer decided, and the places at which answers are wanted.
 struct Choices {
@@ -53,6 +56,7 @@ struct Choices {
     Method method = Method::LeastSquares;
     Weights weights = Weights::Equal;
     CovarianceScale covariance = CovarianceScale::Residuals;
+    SharedError sharedError = SharedError::Budget;
     Decimal coverage{95, 2, {}}; ///< probability of every interval
     Phase phase = Phase::AsFound; ///< shown on the bench, and the one that the calibration function is taken from
     std::vector<Decimal> at;      ///< reference values for band and prediction

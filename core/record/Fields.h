@@ -34,6 +34,7 @@ SPANWRIGHT_ENUM_NAMES(Method, "least-squares", "both-uncertain", "robust");
 SPANWRIGHT_ENUM_NAMES(RobustWeight, "huber", "bisquare");
 SPANWRIGHT_ENUM_NAMES(Weights, "equal", "stated", "replicates", "proportional", "variance-function");
 SPANWRIGHT_ENUM_NAMES(CovarianceScale, "residuals", "stated");
+SPANWRIGHT_ENUM_NAMES(SharedError, "budget", "fit");
 SPANWRIGHT_ENUM_NAMES(Distribution, "normal", "rectangular", "triangular", "u-shaped", "student");
 SPANWRIGHT_ENUM_NAMES(Side, "reference", "indication");
 SPANWRIGHT_ENUM_NAMES(DerivedLine, "standard", "standard-drift", "reference-resolution", "indication-resolution",
@@ -59,7 +60,7 @@ std::optional<E> valueOf(std::string_view name) {
 }
 
 /// Visits every field of a part of the record in the order of the file: visitor(name, field). A field is a string, a bool, an
-/// int, an enumeration, a FunctionChoice, a Decimal, an optional of these, a part that fields() also knows, or a vector of
+/// int, a ReadingId, an enumeration, a FunctionChoice, a Decimal, an optional of these, a part that fields() also knows, or a vector of
 /// these. The session file, the journal's differences and the tests all walk records this way, so a new field is added here
 /// once. `P` is the part or the const part.
 template <class P, class V>
@@ -196,6 +197,7 @@ void fields(P& part, V&& visit)
     visit("method", part.method);
     visit("weights", part.weights);
     visit("covariance", part.covariance);
+    visit("shared_error", part.sharedError);
     visit("coverage", part.coverage);
     visit("phase", part.phase);
     visit("at", part.at);
@@ -278,6 +280,23 @@ void fields(P& part, V&& visit)
     visit("date", part.date);
 }
 
+template <class P, class V>
+void fields(P& part, V&& visit)
+    requires std::same_as<std::remove_const_t<P>, MatrixRow>
+{
+    visit("reading", part.reading);
+    visit("side", part.side);
+    visit("covariances", part.covariances);
+}
+
+template <class P, class V>
+void fields(P& part, V&& visit)
+    requires std::same_as<std::remove_const_t<P>, UncertaintyMatrix>
+{
+    visit("source", part.source);
+    visit("rows", part.rows);
+}
+
 /// The parts of a record that are changed as a whole (all but readings, exclusions and journal), in the order of the file.
 template <class R, class V>
 void parts(R& record, V&& visit)
@@ -289,6 +308,7 @@ void parts(R& record, V&& visit)
     visit("conditions", record.conditions);
     visit("plan", record.plan);
     visit("choices", record.choices);
+    visit("uncertainty_matrix", record.uncertaintyMatrix);
     visit("budget", record.budget);
     visit("limits", record.limits);
     visit("signoffs", record.signOffs);

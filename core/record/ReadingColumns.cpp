@@ -45,7 +45,7 @@ void ReadingColumns::reserve(std::size_t n) {
     phases_.reserve(n);
     runs_.reserve(n);
     directions_.reserve(n);
-    for (DecimalColumn* column : {&setPoint_, &reference_, &indication_, &uReference_, &uIndication_})
+    for (DecimalColumn* column : {&setPoint_, &reference_, &indication_, &uReference_, &uIndication_, &uCovariance_})
         column->reserve(n);
     enteredAt_.reserve(n);
     enteredBy_.reserve(n);
@@ -68,6 +68,7 @@ void ReadingColumns::restore(const Reading& reading) {
     indication_.insert(row, reading.indication);
     uReference_.insert(row, reading.uReference);
     uIndication_.insert(row, reading.uIndication);
+    uCovariance_.insert(row, reading.uCovariance);
     insertAt(enteredAt_, row, reading.enteredAt);
     insertAt(enteredBy_, row, person(reading.enteredBy));
 }
@@ -79,7 +80,7 @@ void ReadingColumns::remove(ReadingId id) {
     eraseAt(phases_, row);
     eraseAt(runs_, row);
     eraseAt(directions_, row);
-    for (DecimalColumn* column : {&setPoint_, &reference_, &indication_, &uReference_, &uIndication_})
+    for (DecimalColumn* column : {&setPoint_, &reference_, &indication_, &uReference_, &uIndication_, &uCovariance_})
         column->erase(row);
     eraseAt(enteredAt_, row);
     eraseAt(enteredBy_, row);
@@ -95,6 +96,7 @@ Reading ReadingColumns::row(std::size_t index) const {
             .indication = indication_.at(index),
             .uReference = uReference_.at(index),
             .uIndication = uIndication_.at(index),
+            .uCovariance = uCovariance_.at(index),
             .enteredAt = enteredAt_[index],
             .enteredBy = people_[enteredBy_[index]]};
 }
@@ -110,9 +112,10 @@ const DecimalColumn& ReadingColumns::number(NumberColumn column) const {
     case NumberColumn::Reference: return reference_;
     case NumberColumn::Indication: return indication_;
     case NumberColumn::UReference: return uReference_;
-    case NumberColumn::UIndication: break;
+    case NumberColumn::UIndication: return uIndication_;
+    case NumberColumn::UCovariance: break;
     }
-    return uIndication_;
+    return uCovariance_;
 }
 
 void ReadingColumns::setNumber(std::size_t row, NumberColumn column, const std::optional<Decimal>& value) {
@@ -144,6 +147,7 @@ void ReadingColumns::appendBlock(Block block, ReadingId firstId) {
     extend(indication_, std::move(block.indication), n);
     extend(uReference_, std::move(block.uReference), n);
     extend(uIndication_, std::move(block.uIndication), n);
+    extend(uCovariance_, std::move(block.uCovariance), n);
     extend(enteredAt_, block.enteredAt, n, std::int64_t{0});
     enteredBy_.resize(enteredBy_.size() + n, person(block.enteredBy));
 }
@@ -159,6 +163,7 @@ ReadingColumns ReadingColumns::fromWhole(Whole whole) {
     all.indication_ = std::move(whole.indication);
     all.uReference_ = std::move(whole.uReference);
     all.uIndication_ = std::move(whole.uIndication);
+    all.uCovariance_ = std::move(whole.uCovariance);
     all.enteredAt_ = std::move(whole.enteredAt);
     all.enteredBy_ = std::move(whole.enteredBy);
     all.people_ = std::move(whole.people);
@@ -177,7 +182,7 @@ void ReadingColumns::removeBlock(ReadingId firstId, std::size_t n) {
     cut(phases_);
     cut(runs_);
     cut(directions_);
-    for (DecimalColumn* column : {&setPoint_, &reference_, &indication_, &uReference_, &uIndication_}) {
+    for (DecimalColumn* column : {&setPoint_, &reference_, &indication_, &uReference_, &uIndication_, &uCovariance_}) {
         if (atEnd) {
             column->resize(from);
             continue;
@@ -201,7 +206,7 @@ bool operator==(const ReadingColumns& a, const ReadingColumns& b) {
         if (a.enteredBy(i) != b.enteredBy(i))
             return false;
     return a.setPoint_ == b.setPoint_ && a.reference_ == b.reference_ && a.indication_ == b.indication_ &&
-           a.uReference_ == b.uReference_ && a.uIndication_ == b.uIndication_;
+           a.uReference_ == b.uReference_ && a.uIndication_ == b.uIndication_ && a.uCovariance_ == b.uCovariance_;
 }
 
 std::uint16_t ReadingColumns::person(const std::string& initials) {

@@ -29,6 +29,7 @@ struct Reading {
     std::optional<Decimal> indication;
     std::optional<Decimal> uReference;  ///< standard uncertainty, unit of the reference
     std::optional<Decimal> uIndication; ///< standard uncertainty, unit of the indication
+    std::optional<Decimal> uCovariance; ///< covariance of the errors of reference and indication, unit of their product
     std::int64_t enteredAt = 0;         ///< ms since 1970-01-01 UTC; 0 when not known
     std::string enteredBy;              ///< initials
 
@@ -36,7 +37,10 @@ struct Reading {
 };
 
 /// The columns of numbers of a reading, for commands that change one cell.
-enum class NumberColumn { SetPoint, Reference, Indication, UReference, UIndication };
+enum class NumberColumn { SetPoint, Reference, Indication, UReference, UIndication, UCovariance };
+inline constexpr NumberColumn numberColumns[] = {NumberColumn::SetPoint,   NumberColumn::Reference,
+                                                 NumberColumn::Indication, NumberColumn::UReference,
+                                                 NumberColumn::UIndication, NumberColumn::UCovariance};
 
 /// All readings as columns of equal length, in the order in which they were taken. Ids are stable, rise strictly, and are never
 /// used twice within a record.
@@ -68,6 +72,7 @@ class ReadingColumns {
     [[nodiscard]] const DecimalColumn& indication() const { return indication_; }
     [[nodiscard]] const DecimalColumn& uReference() const { return uReference_; }
     [[nodiscard]] const DecimalColumn& uIndication() const { return uIndication_; }
+    [[nodiscard]] const DecimalColumn& uCovariance() const { return uCovariance_; }
     [[nodiscard]] const std::vector<std::int64_t>& enteredAt() const { return enteredAt_; }
     [[nodiscard]] const std::string& enteredBy(std::size_t row) const { return people_[enteredBy_[row]]; }
 
@@ -80,7 +85,7 @@ class ReadingColumns {
         Phase phase = Phase::AsFound;
         std::vector<std::int32_t> runs;
         std::vector<Direction> directions;
-        DecimalColumn setPoint, reference, indication, uReference, uIndication;
+        DecimalColumn setPoint, reference, indication, uReference, uIndication, uCovariance;
         std::vector<std::int64_t> enteredAt; ///< empty: all 0
         std::string enteredBy;
     };
@@ -93,7 +98,7 @@ class ReadingColumns {
         std::vector<Phase> phases;
         std::vector<std::int32_t> runs;
         std::vector<Direction> directions;
-        DecimalColumn setPoint, reference, indication, uReference, uIndication;
+        DecimalColumn setPoint, reference, indication, uReference, uIndication, uCovariance;
         std::vector<std::int64_t> enteredAt;
         std::vector<std::uint16_t> enteredBy;
         std::vector<std::string> people{std::string{}};
@@ -112,7 +117,7 @@ class ReadingColumns {
     std::vector<Phase> phases_;
     std::vector<std::int32_t> runs_;
     std::vector<Direction> directions_;
-    DecimalColumn setPoint_, reference_, indication_, uReference_, uIndication_;
+    DecimalColumn setPoint_, reference_, indication_, uReference_, uIndication_, uCovariance_;
     std::vector<std::int64_t> enteredAt_;
     std::vector<std::uint16_t> enteredBy_;
     std::vector<std::string> people_{std::string{}};

@@ -12,6 +12,7 @@
 #include "core/record/Plan.h"
 #include "core/record/ReadingColumns.h"
 #include "core/record/SignOff.h"
+#include "core/record/UncertaintyMatrix.h"
 
 #include <map>
 #include <string>
@@ -28,6 +29,7 @@ struct Record {
     Plan plan;
     Shared<ReadingColumns> readings;
     Shared<Exclusions> exclusions;
+    UncertaintyMatrix uncertaintyMatrix;
     Choices choices;
     BudgetInput budget;
     Limits limits;

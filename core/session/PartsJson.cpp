@@ -2,6 +2,7 @@
 #include "core/session/PartsJson.h"
 
 #include "core/record/Fields.h"
+#include "core/session/RowReader.h"
 #include "core/session/UnknownKeys.h"
 
 #include <algorithm>
@@ -25,7 +26,8 @@ using Layout = JsonText::Layout;
 
 /// Small parts stand on one line.
 template <class T>
-constexpr bool isSmall = std::same_as<T, Quantity> || std::same_as<T, CorrectionPoint> || std::same_as<T, OmittedLine>;
+constexpr bool isSmall = std::same_as<T, Quantity> || std::same_as<T, CorrectionPoint> || std::same_as<T, OmittedLine> ||
+                         std::same_as<T, MatrixRow>;
 template <class T>
 constexpr Layout layoutOf = isSmall<T> ? Layout::OneLine : Layout::Lines;
 
@@ -37,6 +39,7 @@ class PartWriter {
     void write(const std::string& text) { json_.string(text); }
     void write(bool flag) { json_.raw(flag ? "true" : "false"); }
     void write(int number) { json_.raw(std::to_string(number)); }
+    void write(ReadingId id) { json_.raw(std::to_string(id)); }
     void write(const Decimal& number) { json_.string(number.text()); }
     void write(const FunctionChoice& choice) { json_.string(functionName(choice)); }
     template <Named E>
@@ -104,6 +107,7 @@ class PartReader {
         using Range = std::numeric_limits<int>;
         number = static_cast<int>(scan_.integer(pointer_, Range::min(), Range::max()));
     }
+    void read(ReadingId& id) { id = scan_.integer(pointer_, 1, LargestReadingId); }
     void read(Decimal& number) {
         const std::string text = scan_.atString() ? scan_.string() : std::string(scan_.skip());
         auto parsed = Decimal::parse(text);

@@ -16,9 +16,6 @@ namespace spanwright {
 
 namespace {
 
-constexpr NumberColumn numberColumns[] = {NumberColumn::SetPoint, NumberColumn::Reference, NumberColumn::Indication,
-                                          NumberColumn::UReference, NumberColumn::UIndication};
-
 /// Compares rows of two sets of readings without taking them apart where their numbers lie on the same grid.
 class RowComparison {
   public:

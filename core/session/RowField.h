@@ -10,11 +10,11 @@
 namespace spanwright {
 
 /// What can stand in a place of a row of readings in a session file.
-enum class RowField { Id, Phase, Run, Direction, SetPoint, Reference, Indication, UReference, UIndication, EnteredAt, EnteredBy };
+enum class RowField { Id, Phase, Run, Direction, SetPoint, Reference, Indication, UReference, UIndication, EnteredAt, EnteredBy, UCovariance };
 
-inline constexpr std::array<std::string_view, 11> rowFieldNames{
+inline constexpr std::array<std::string_view, 12> rowFieldNames{
     "id",          "phase",      "run",         "direction",    "set_point", "reference",
-    "indication",  "u_reference", "u_indication", "entered_at", "entered_by"};
+    "indication",  "u_reference", "u_indication", "entered_at", "entered_by", "u_covariance"};
 
 constexpr std::string_view nameOf(RowField field) {
     return rowFieldNames[static_cast<std::size_t>(field)];
@@ -36,6 +36,7 @@ constexpr std::optional<NumberColumn> numberColumnOf(RowField field) {
     case RowField::Indication: return NumberColumn::Indication;
     case RowField::UReference: return NumberColumn::UReference;
     case RowField::UIndication: return NumberColumn::UIndication;
+    case RowField::UCovariance: return NumberColumn::UCovariance;
     default: return std::nullopt;
     }
 }

@@ -44,7 +44,8 @@ class RowReader {
         all_.directions.resize(n, Direction::Unknown);
         all_.enteredAt.resize(n, 0);
         all_.enteredBy.resize(n, 0);
-        DecimalColumn* const targets[] = {&all_.setPoint, &all_.reference, &all_.indication, &all_.uReference, &all_.uIndication};
+        DecimalColumn* const targets[] = {&all_.setPoint, &all_.reference, &all_.indication, &all_.uReference,
+                                          &all_.uIndication, &all_.uCovariance};
         for (std::size_t i = 0; i < numbers_.size(); ++i) {
             *targets[i] = std::move(numbers_[i]).finish();
             targets[i]->resize(n);
@@ -179,7 +180,7 @@ class RowReader {
     std::vector<std::optional<RowField>> columns_;
     std::size_t row_ = 0;
     ReadingColumns::Whole all_;
-    std::array<NumberColumnBuilder, 5> numbers_;
+    std::array<NumberColumnBuilder, 6> numbers_;
     LastName<Phase> phase_;
     LastName<Direction> direction_;
     std::size_t person_ = 0;

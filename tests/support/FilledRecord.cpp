@@ -18,6 +18,7 @@ class Filler {
     void fill(std::string& text) { text = "text " + std::to_string(++count_) + " \"<b>\\\n\t\xC2\xB0\xE2\x88\x92\xF0\x9F\x98\x80\x01"; }
     void fill(bool& flag) { flag = !flag; }
     void fill(int& number) { number = ++count_; }
+    void fill(ReadingId& id) { id = ++count_; }
     void fill(Decimal& number) { number = Decimal{100'10 + ++count_ * 10, count_ % 7, {}}; }
     void fill(FunctionChoice& choice) { choice = {FunctionFamily::Polynomial, 3}; }
     template <class E>
@@ -63,6 +64,7 @@ Record filledRecord() {
             reading.indication = Decimal{-id, 4, {}};
         reading.uReference = *Decimal::parse("12345678901234567890.10");
         reading.uIndication = *Decimal::parse("1.50e-200");
+        reading.uCovariance = *Decimal::parse("-0.000250");
         reading.enteredAt = 1'772'352'930'250 + id;
         reading.enteredBy = id == 5 ? "" : "T\"L";
         readings.append(reading);

@@ -27,7 +27,10 @@ Record recordOf(const TypedReadings& readings) {
     for (std::size_t i = 0; i < readings.indication.size(); ++i)
         set.rows.push_back({at(readings.reference, i), readings.indication[i], at(readings.uReference, i),
                             at(readings.uIndication, i)});
-    return recordOf(set, {"x", "y", "", "ux", "uy"});
+    Record record = recordOf(set, {"x", "y", "", "ux", "uy"});
+    for (std::size_t i = 0; i < readings.uCovariance.size(); ++i)
+        record.readings.edit().setNumber(i, NumberColumn::UCovariance, *Decimal::parse(readings.uCovariance[i]));
+    return record;
 }
 
 FitOutcome fitted(Record& record, const char* function) {

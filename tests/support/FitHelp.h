@@ -15,6 +15,7 @@ std::vector<std::string> typed(const std::vector<double>& values);
 /// A record with readings of one phase; columns that are empty are left out.
 struct TypedReadings {
     std::vector<std::string> reference, indication, uReference, uIndication;
+    std::vector<std::string> uCovariance = {};
 };
 Record recordOf(const TypedReadings& readings);
 

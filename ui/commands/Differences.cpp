@@ -5,6 +5,18 @@
 
 namespace spanwright {
 
+std::string matrixText(const UncertaintyMatrix& matrix) {
+    if (matrix.empty())
+        return {};
+    std::string text = matrix.source;
+    for (const MatrixRow& row : matrix.rows) {
+        text += "; " + std::string(nameOf(row.side)) + " " + std::to_string(row.reading) + ":";
+        for (const Decimal& covariance : row.covariances)
+            text += " " + covariance.text();
+    }
+    return text;
+}
+
 std::vector<JournalEntry> differences(const FieldLines& before, const FieldLines& after) {
     std::map<std::string_view, std::string_view> earlier, later;
     for (const auto& [path, text] : before)

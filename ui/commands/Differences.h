@@ -13,6 +13,9 @@ namespace spanwright {
 /// list are counted from 0, as in the file; what is missing has no text.
 using FieldLines = std::vector<std::pair<std::string, std::string>>;
 
+/// A whole matrix on one line: it is changed only as a whole, so it is one entry of the journal.
+std::string matrixText(const UncertaintyMatrix& matrix);
+
 namespace detail {
 
 struct IgnoreField {
@@ -27,8 +30,14 @@ inline void flatten(FieldLines& lines, const std::string& path, const std::strin
 inline void flatten(FieldLines& lines, const std::string& path, bool value) {
     lines.emplace_back(path, value ? "true" : "false");
 }
+inline void flatten(FieldLines& lines, const std::string& path, ReadingId value) {
+    lines.emplace_back(path, std::to_string(value));
+}
 inline void flatten(FieldLines& lines, const std::string& path, int value) {
     lines.emplace_back(path, std::to_string(value));
+}
+inline void flatten(FieldLines& lines, const std::string& path, const UncertaintyMatrix& matrix) {
+    lines.emplace_back(path, matrixText(matrix));
 }
 inline void flatten(FieldLines& lines, const std::string& path, const Decimal& value) {
     lines.emplace_back(path, value.text());

@@ -28,6 +28,7 @@ constexpr ColumnName columnNames[] = {
     {NumberColumn::Indication, "indication", &Reading::indication},
     {NumberColumn::UReference, "u of reference", &Reading::uReference},
     {NumberColumn::UIndication, "u of indication", &Reading::uIndication},
+    {NumberColumn::UCovariance, "covariance", &Reading::uCovariance},
 };
 
 std::string textOf(const std::optional<Decimal>& value) {

@@ -15,6 +15,13 @@ using Snapshot = std::shared_ptr<const Evaluation>;
 
 /// Up to so many readings the evaluation takes less than a frame, and is there before the next key is pressed.
 constexpr std::size_t fewReadings = 2000;
+/// The same with covariances between readings, which cost the third power of their number.
+constexpr std::size_t fewCorrelated = 50;
+
+bool takesLong(const Record& record) {
+    const bool correlated = !record.uncertaintyMatrix.empty() || record.choices.sharedError == SharedError::Fit;
+    return record.readings->size() > (correlated ? fewCorrelated : fewReadings);
+}
 
 Snapshot evaluated(const Record& record, Progress& progress) {
     Result<Evaluation> result = evaluate(record, progress);
@@ -140,7 +147,7 @@ void Workbench::change(const std::function<std::vector<JournalEntry>(Record&)>& 
 void Workbench::evaluateNow() {
     const bool wasBusy = evaluating();
     d->stop();
-    if (d->record.readings->size() > fewReadings) {
+    if (takesLong(d->record)) {
         evaluateAside();
         emit recordChanged();
         if (!wasBusy)

@@ -21,6 +21,7 @@ QString importRoleText(ImportRole role) {
     case ImportRole::Run: return tr("run");
     case ImportRole::UReference: return tr("u of reference");
     case ImportRole::UIndication: return tr("u of indication");
+    case ImportRole::UCovariance: return tr("covariance of reference and indication");
     case ImportRole::Time: break;
     }
     return tr("time");
@@ -35,6 +36,7 @@ std::optional<std::size_t>& roleColumn(ImportMapping& mapping, ImportRole role) 
     case ImportRole::Run: return mapping.run;
     case ImportRole::UReference: return mapping.uReference;
     case ImportRole::UIndication: return mapping.uIndication;
+    case ImportRole::UCovariance: return mapping.uCovariance;
     case ImportRole::None:
     case ImportRole::Time: break;
     }

@@ -10,8 +10,8 @@
 namespace spanwright {
 
 /// What a column of the table can be of a reading, in the order of the chooser; the first is "not taken in".
-enum class ImportRole { None, Reference, Indication, SetPoint, Direction, Run, UReference, UIndication, Time };
-inline constexpr int ImportRoles = 9;
+enum class ImportRole { None, Reference, Indication, SetPoint, Direction, Run, UReference, UIndication, UCovariance, Time };
+inline constexpr int ImportRoles = static_cast<int>(ImportRole::Time) + 1;
 QString importRoleText(ImportRole role);
 std::optional<std::size_t>& roleColumn(ImportMapping& mapping, ImportRole role);
 ImportRole roleOf(const ImportMapping& mapping, std::size_t column);

@@ -113,8 +113,12 @@ QString residualText(const Fit& fit, const PlotSubject& subject) {
     QString s = significantText(fit.residualSd, 2);
     if (fit.weights == Weights::Equal && !subject.ordinate().unit.empty())
         s += QChar(QChar::Nbsp) + QString::fromStdString(subject.ordinate().unit);
-    return fit.degreesOfFreedom == 1 ? tr("residual s = %1, 1 degree of freedom").arg(s)
-                                     : tr("residual s = %1, %2 degrees of freedom").arg(s).arg(fit.degreesOfFreedom);
+    QString text = fit.degreesOfFreedom == 1 ? tr("residual s = %1, 1 degree of freedom").arg(s)
+                                             : tr("residual s = %1, %2 degrees of freedom").arg(s).arg(fit.degreesOfFreedom);
+    if (fit.chiSquared && fit.chiSquaredP)
+        text += tr(", χ² = %1, p = %2").arg(significantText(*fit.chiSquared, 4), pText(*fit.chiSquaredP)).replace(QStringLiteral("= <"), QStringLiteral("<"));
+    const QString settled = convergenceText(fit.convergence);
+    return settled.isEmpty() ? text : text + QStringLiteral(", ") + settled;
 }
 
 QString sentenceCase(QString text) {

@@ -15,7 +15,32 @@ struct ErrorText {
 
   public:
     static QString of(ErrorCode code, Sentence& facts);
+    static QString methodUnfit(Sentence& facts);
 };
+
+QString ErrorText::methodUnfit(Sentence& facts) {
+    const QString reason = facts.plain("reason"), function = facts.quoted("text", tr("this function"));
+    if (reason == QLatin1String("function"))
+        return tr("with both quantities uncertain, a line or a line through zero can be fitted, not %1. Choose one of these, or weights from "
+                  "the stated uncertainties.")
+            .arg(function);
+    if (reason == QLatin1String("non-linear"))
+        return tr("covariances between readings are taken in for functions that are linear in their coefficients, not for %1. Choose "
+                  "another function, or remove the matrix.")
+            .arg(function);
+    if (reason == QLatin1String("knots"))
+        return tr("a table takes at most %1 set points; there are %2. State the set points of the readings, or choose another function.")
+            .arg(facts.plain("most", tr("some")), facts.plain("got", tr("more")));
+    if (reason == QLatin1String("robust"))
+        return tr("a robust fit does not use covariances between readings. Choose least squares, or remove the matrix.");
+    if (reason == QLatin1String("abscissa"))
+        return tr("this function takes its abscissa as exact, so the calibration error of the standard has no place in it. Choose “both "
+                  "uncertain”, or carry the error to the budget.");
+    if (reason == QLatin1String("scaled"))
+        return tr("a stated calibration error cannot be scaled by the residuals. Take the stated uncertainties as they are, or carry the "
+                  "error to the budget.");
+    return tr("this way of fitting is not possible here. Choose another method.");
+}
 
 QString ErrorText::of(ErrorCode code, Sentence& facts) {
     switch (code) {
@@ -100,8 +125,8 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
         return tr("readings: %1, too few for this function, which needs %2. Take more readings, or choose a simpler function.")
             .arg(facts.plain("got", tr("not enough")), facts.plain("needed", tr("more")));
     case ErrorCode::ReferencesAllEqual:
-        return tr("all reference values are equal, so no slope can be found. Take readings at other set points, or choose the "
-                  "function “constant”.");
+        return tr("all values are equal%1, so no slope can be found. Take readings at other set points, or choose the function “constant”.")
+            .arg(facts.has("value") ? tr(" to %1").arg(facts.plain("value")) : QString());
     case ErrorCode::TooFewSetPoints:
         return tr("set points: %1, too few for this function, which needs %2. Take more set points, or choose a simpler function.")
             .arg(facts.plain("got", tr("not enough")), facts.plain("needed", tr("more")));
@@ -109,15 +134,27 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
         return tr("the readings cannot tell these coefficients apart: %1. Choose a simpler function, or spread the set points.")
             .arg(facts.plain("terms", tr("some of them")));
     case ErrorCode::OutsideDomain:
-        return tr("values in row %1 lie outside those for which this function exists. Exclude them with a reason, or choose another "
+        facts.plain("function");
+        return tr("values in row %1 lie outside those for which this function exists%2. Exclude them with a reason, or choose another "
                   "function.")
-            .arg(facts.plain("rows", tr("one of the table")));
+            .arg(facts.plain("rows", tr("one of the table")), facts.has("where") ? QStringLiteral(" (") + facts.plain("where") + QLatin1Char(')') : QString());
     case ErrorCode::UncertaintyNotPositive:
         return tr("a stated uncertainty in row %1 is zero or negative. Correct it; a standard uncertainty is above zero.")
             .arg(facts.plain("rows", tr("one of the table")));
     case ErrorCode::UncertaintyMissing:
         return tr("this way of weighing needs a standard uncertainty for every reading; row %1 has none. State it, or choose equal "
-                  "weights.")
+                  "weights and the residual spread.")
+            .arg(facts.plain("rows", tr("one of the table")));
+    case ErrorCode::NoSpread:
+        return tr("weights from replicates need readings that differ at each set point; those in row %1 stand alone or do not differ. Read "
+                  "each set point again, or choose weights by level or equal weights.")
+            .arg(facts.plain("rows", tr("one of the table")));
+    case ErrorCode::TooFewReplicates:
+        return tr("weights by level need %1 set points that were read more than once; there are %2. Read them again, or choose equal weights.")
+            .arg(facts.plain("needed", tr("two")), facts.plain("got", tr("fewer")));
+    case ErrorCode::LevelZero:
+        return tr("weights proportional to level have no value at level zero, in row %1. Exclude it with a reason, or choose weights that "
+                  "grow with level from a constant.")
             .arg(facts.plain("rows", tr("one of the table")));
     case ErrorCode::NoConvergence:
         return tr("the fit did not settle: %1. Choose another function, or check the readings for slips.")
@@ -129,6 +166,34 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
         return tr("%1 is no calibration function known here. Write, for example, line or polynomial:2.")
             .arg(facts.quoted("text", tr("this")));
     case ErrorCode::ColumnUnfit: return tr("the column %1 cannot be used for this.").arg(facts.quoted("name", tr("chosen")));
+    case ErrorCode::MethodUnfit: return methodUnfit(facts);
+    case ErrorCode::CovarianceTooLarge:
+        return tr("the covariance in row %1 is larger than the product of both stated uncertainties. Correct the covariance or the "
+                  "uncertainties.")
+            .arg(facts.plain("rows", tr("one of the table")));
+    case ErrorCode::MatrixShape:
+        return tr("a covariance matrix is square, and row %1 has %2 numbers where there are %3 rows. Complete the row, or check the "
+                  "separator.")
+            .arg(facts.plain("row", tr("one")), facts.plain("got", tr("other")), facts.plain("needed", tr("other")));
+    case ErrorCode::MatrixSize:
+        return tr("the matrix has %1 rows, and there are %2 readings. Give %2 rows for the indications alone, or %3 for all references "
+                  "followed by all indications.")
+            .arg(facts.plain("got", tr("other")), facts.plain("readings", tr("other")), facts.plain("both", tr("twice as many")));
+    case ErrorCode::MatrixTooLarge:
+        return tr("covariances between readings are taken in for at most %1 readings; there are %2. State them for fewer readings, such as "
+                  "the means of the set points.")
+            .arg(facts.plain("most", tr("some")), facts.plain("got", tr("more")));
+    case ErrorCode::MatrixNotSymmetric:
+        return tr("the matrix is not symmetric: row %1, column %2 has %3, and row %2, column %1 has %4. Correct one of them.")
+            .arg(facts.plain("row"), facts.plain("column"), facts.plain("text"), facts.plain("mirror"));
+    case ErrorCode::MatrixNotPositive:
+        return tr("the matrix is not positive definite: row %1 is determined by the rows before it, or contradicts them. Check its "
+                  "variance and its covariances; none may exceed the product of the two standard uncertainties.")
+            .arg(facts.plain("row", tr("one")));
+    case ErrorCode::MatrixRowMissing:
+        return tr("the covariance matrix has no row for reading %1. Load a matrix with all readings, exclude the reading, or remove the "
+                  "matrix.")
+            .arg(facts.plain("rows", tr("one of the table")));
     case ErrorCode::Cancelled: return tr("the computation was stopped before its end. Nothing was changed.");
     case ErrorCode::CertificateIncomplete:
         return tr("the certificate is not complete: %1. Enter it, or print the draft as incomplete.")

@@ -1,4 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/fit/fitFunction.h"
 #include "ui/look/NumberText.h"
 #include "ui/words/Words.h"
 
@@ -114,7 +115,7 @@ QString FindingText::figure(const Figure& figure, const Record& record) {
         return p.startsWith(QLatin1Char('<')) ? label + QLatin1Char(' ') + p : label + QStringLiteral(" = ") + p;
     }
     if (name == "value")
-        return withUnit(record.choices.fit == FitDirection::Reference ? record.item.reference : record.item.indication);
+        return withUnit(directionOf(record.choices) == FitDirection::Reference ? record.item.reference : record.item.indication);
     if (name == "set_point")
         return tr("at %1").arg(withUnit(record.item.reference));
     if (name == "share")

@@ -1,4 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/fit/CalibrationFunction.h"
 #include "ui/look/NumberText.h"
 #include "ui/words/Words.h"
 
@@ -45,6 +46,30 @@ QString functionText(const FunctionChoice& function) {
     case FunctionFamily::Table: return Names::tr("table, straight between set points");
     }
     return {};
+}
+
+QString formulaText(const FunctionChoice& function) {
+    const FunctionFacts& facts = factsOf(function.family);
+    const auto text = [](std::string_view words) { return QString::fromUtf8(words.data(), static_cast<qsizetype>(words.size())); };
+    QString formula = text(facts.formula);
+    if (function.family == FunctionFamily::Polynomial || function.family == FunctionFamily::PolynomialNoConstant)
+        formula.replace(QLatin1Char('N'), QString::number(function.order));
+    if (function.order == 2)
+        formula.replace(QStringLiteral(" + … + "), QStringLiteral(" + "));
+    if (!facts.where.empty())
+        formula += Names::tr("   for %1").arg(text(facts.where));
+    const QString source = facts.source == "common practice" ? Names::tr("common practice") : text(facts.source);
+    return formula + QLatin1Char('\n') + source;
+}
+
+QString convergenceText(const Convergence& convergence) {
+    if (convergence.reason == "linear")
+        return {};
+    if (convergence.reached)
+        return convergence.reason == "rounding" ? Names::tr("settled to rounding after %1 steps").arg(convergence.iterations)
+                                                : Names::tr("settled after %1 steps").arg(convergence.iterations);
+    return convergence.reason == "no-decrease" ? Names::tr("did not settle: no step lowers the residuals further")
+                                               : Names::tr("did not settle in %1 steps").arg(convergence.iterations);
 }
 
 QString reasonText(ExclusionReason reason) {

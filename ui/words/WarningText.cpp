@@ -36,6 +36,9 @@ constexpr Code figures[] = {
     {"span", QT_TRANSLATE_NOOP("WarningText", "The output span")},
     {"results", QT_TRANSLATE_NOOP("WarningText", "Results at each set point")},
     {"durbin_watson", QT_TRANSLATE_NOOP("WarningText", "The p value of the Durbin–Watson test")},
+    {"split", QT_TRANSLATE_NOOP("WarningText", "The variance split")},
+    {"diagnostics", QT_TRANSLATE_NOOP("WarningText", "Tests of the residuals")},
+    {"tolerance", QT_TRANSLATE_NOOP("WarningText", "The tolerance band")},
     {"cochran", QT_TRANSLATE_NOOP("WarningText", "The critical value of the Cochran test")},
 };
 
@@ -60,6 +63,8 @@ constexpr Code reasons[] = {
     {"not-a-line", QT_TRANSLATE_NOOP("WarningText", "it is tested for a straight line through four readings or more")},
     {"no-set-points", QT_TRANSLATE_NOOP("WarningText", "there are fewer than two set points, or far too many")},
     {"too-many-set-points", QT_TRANSLATE_NOOP("WarningText", "there are more than 1000 set points; state the set points of the readings")},
+    {"correlated", QT_TRANSLATE_NOOP("WarningText", "it is defined for readings without covariances between them")},
+    {"stated-covariance", QT_TRANSLATE_NOOP("WarningText", "the stated uncertainties are taken as they are, without a spread of the readings")},
     {"takes-no-part", QT_TRANSLATE_NOOP("WarningText", "the reading takes no part in the fit, or decides a coefficient alone")},
 };
 
@@ -131,6 +136,11 @@ QString WarningText::of(WarningCode code, Sentence& facts) {
         return tr("No reference value in the range belongs to the indication %1.").arg(facts.plain("value", tr("asked for")));
     case WarningCode::SeveralAnswers:
         return tr("More than one reference value belongs to the indication %1.").arg(facts.plain("value", tr("asked for")));
+    case WarningCode::NoIndication:
+        return tr("The function reaches the reference value %1 for no indication in the range or near it.").arg(facts.plain("value", tr("asked for")));
+    case WarningCode::SeveralIndications:
+        return tr("The reference value %1 belongs to more than one indication; the one nearest to the middle of the range was taken.")
+            .arg(facts.plain("value", tr("asked for")));
     case WarningCode::NotMonotonic:
         return tr("The function rises and falls within the range, so an indication may belong to several reference values.");
     case WarningCode::IncompleteReadings:
@@ -141,6 +151,9 @@ QString WarningText::of(WarningCode code, Sentence& facts) {
     case WarningCode::ApproximateMethod:
         return tr("%1 is an approximation: %2.")
             .arg(figure(facts), method(facts));
+    case WarningCode::MatrixUnused:
+        return tr("Covariances between readings are stated, and this way of weighing does not use them: choose weights from the stated "
+                  "uncertainties, or both uncertain.");
     case WarningCode::SealBroken:
         return tr("The seal does not hold: the file was changed outside the program. Compare it with a backup before it is used.");
     case WarningCode::JournalBroken:

@@ -31,6 +31,10 @@ QString slipText(const Slip& slip, const Decimal& typed);
 QString phaseText(Phase phase);
 QString directionText(Direction direction);
 QString functionText(const FunctionChoice& function);
+/// "y = b0 + b1·x", where it is valid, and where it is published.
+QString formulaText(const FunctionChoice& function);
+/// How an iterated fit ended; empty for one that is solved in a single step.
+QString convergenceText(const Convergence& convergence);
 QString reasonText(ExclusionReason reason);
 QString distributionText(Distribution distribution);
 QString derivedLineText(DerivedLine line);

@@ -116,7 +116,7 @@ class FitMethods : public QObject {
         Record missing = bothUncertain(readings);
         QCOMPARE(refused(missing, "line").code, ErrorCode::UncertaintyMissing);
         Record curve = bothUncertain(bothUncertainExample());
-        QCOMPARE(refused(curve, "polynomial:2").code, ErrorCode::FunctionUnknown);
+        QCOMPARE(refused(curve, "polynomial:2").code, ErrorCode::MethodUnfit);
         readings = bothUncertainExample();
         readings.uReference[2] = readings.uIndication[2] = "0";
         Record zero = bothUncertain(readings);
@@ -144,7 +144,7 @@ class FitMethods : public QObject {
         QVERIFY(std::fabs(fit.coefficients[0].value - (2.1 + 1.95 + 2.1) / 3) < 1e-15);
         Record zero = recordOf({{"0", "2", "4"}, {"0.1", "3.9", "8.4"}, {}, {}});
         zero.choices.weights = Weights::Proportional;
-        QCOMPARE(refused(zero, "line").code, ErrorCode::OutsideDomain);
+        QCOMPARE(refused(zero, "line").code, ErrorCode::LevelZero);
     }
 
     /// Equal stated uncertainties change nothing but the scale.

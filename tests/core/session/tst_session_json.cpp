@@ -213,7 +213,7 @@ class SessionJsonTest : public QObject {
         row("[5,\"as-found\",5", "[5,\"as-found\",-5", "/readings/rows/2/run", "-5");
         row("\"100.101\"", "\"100.1O1\"", "/readings/rows/0/reference", "100.1O1");
         row("\"12345678901234567890.10\",", "", "/readings/rows/0/u_indication", "");
-        row("\"1.50e-200\",", "\"1.50e-200\",null,", "/readings/rows/0", "");
+        row("\"-0.000250\"]", "\"-0.000250\",null]", "/readings/rows/0", "");
         row("\"id\", \"phase\"", "\"id\", \"mood\"", "/readings/columns", "mood");
         row("\"id\", \"phase\"", "\"phase\", \"phase\"", "/readings/columns", "phase");
         row("\"reason\": \"typing-slip\"", "\"reason\": \"whim\"", "/exclusions/1/reason", "whim");
