@@ -1,15 +1,19 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/bench/BenchPage.h"
 
+#include "core/fit/fitFunction.h"
 #include "core/diagnose/FindingName.h"
 #include "ui/bench/ChoiceMenus.h"
 #include "ui/bench/CompareDialog.h"
 #include "ui/bench/CoefficientsDialog.h"
 #include "ui/bench/ConvertDialog.h"
+#include "ui/bench/DegreeTable.h"
 #include "ui/bench/Dismissals.h"
 #include "ui/bench/ExcludeDialog.h"
 #include "ui/bench/ExclusionsDialog.h"
 #include "ui/bench/FindingsView.h"
+#include "ui/bench/IntervalsDialog.h"
+#include "ui/bench/MatrixDialog.h"
 #include "ui/bench/NextReading.h"
 #include "ui/bench/PerformanceDialog.h"
 #include "ui/bench/ReadingsTable.h"
@@ -60,6 +64,10 @@ QSplitter* parted(Qt::Orientation orientation, std::initializer_list<QWidget*> w
     return splitter;
 }
 
+QString robustWords(const Fit& fit) {
+    return BenchPage::tr("for comparison only: weighs down %1").arg(readingsText(fit.weighedDown.size()));
+}
+
 } // namespace
 
 BenchPage::BenchPage(Workbench& workbench, QWidget* parent) : QWidget(parent), workbench_(workbench) {
@@ -106,8 +114,9 @@ QWidget* BenchPage::buildMiddle() {
     line_ = new LinePlot;
     residual_ = new ResidualPlot;
     lineCard_ = new Card(tr("Indication against reference"));
+    functionButton_ = functionButton(workbench_, lineCard_);
     weightsButton_ = weightsButton(workbench_, lineCard_);
-    for (QWidget* control : std::initializer_list<QWidget*>{functionButton(workbench_, lineCard_), weightsButton_, coverageButton(workbench_, lineCard_), enlargementButton(*line_, lineCard_)})
+    for (QWidget* control : std::initializer_list<QWidget*>{functionButton_, weightsButton_, coverageButton(workbench_, lineCard_), enlargementButton(*line_, lineCard_)})
         lineCard_->addHeadWidget(control);
     equation_ = new QLabel;
     equation_->setObjectName(QStringLiteral("equation"));
@@ -185,13 +194,20 @@ void BenchPage::buildActions() {
     add("bench.split-table", tr("Variance split as a table"), QKeySequence(Qt::CTRL | Qt::Key_T), [this] { showSplitTable(); });
     add("bench.performance", tr("Performance figures"), QKeySequence(Qt::CTRL | Qt::SHIFT | Qt::Key_T), [this] { showPerformance(); });
     add("bench.compare", tr("Compare with another function or method"), QKeySequence(Qt::CTRL | Qt::SHIFT | Qt::Key_C), [this] {
-        const Method now = workbench_.record().choices.method;
-        (new CompareDialog(workbench_, CompareDialog::withMethod(workbench_.record(), now == Method::Robust ? Method::LeastSquares : Method::Robust), this))->open();
+        const Record& record = workbench_.record();
+        const bool robust = record.choices.method == Method::Robust;
+        (new CompareDialog(workbench_, robust ? CompareDialog::withMethod(record, Method::LeastSquares) : CompareDialog::withRobust(record, record.choices.robust), this))->open();
     });
     add("bench.exclusions", tr("What the exclusions do"), QKeySequence(Qt::CTRL | Qt::SHIFT | Qt::Key_X), [this] { showExclusions(); });
     add("bench.convert", tr("Value from a reading"), QKeySequence(Qt::CTRL | Qt::Key_B), [this] { (new ConvertDialog(workbench_, this))->show(); });
     add("bench.coefficients", tr("Coefficients for a data logger"), QKeySequence(Qt::CTRL | Qt::SHIFT | Qt::Key_B),
         [this] { (new CoefficientsDialog(workbench_, screenTextPath(), this))->show(); });
+    add("bench.intervals", tr("Coefficients and intervals"), QKeySequence(Qt::CTRL | Qt::SHIFT | Qt::Key_K), [this] { (new IntervalsDialog(workbench_, this))->show(); });
+    add("bench.degrees", tr("Choosing a degree"), QKeySequence(Qt::CTRL | Qt::SHIFT | Qt::Key_G), [this] { showDegrees(); });
+    add("bench.covariances", tr("Covariances between readings"), QKeySequence(Qt::CTRL | Qt::SHIFT | Qt::Key_M), [this] { (new MatrixDialog(workbench_, this))->open(); });
+    const auto named = [this](const char* id) { return findChild<QAction*>(QLatin1String(id)); };
+    functionButton_->setFurther({named("bench.degrees"), named("bench.intervals")});
+    weightsButton_->setFurther({named("bench.covariances"), named("bench.compare")});
     add("bench.line", tr("Go to the line plot"), QKeySequence(Qt::CTRL | Qt::Key_L), [this] { line_->setFocus(); });
     add("bench.residuals", tr("Go to the residuals"), QKeySequence(Qt::CTRL | Qt::Key_R), [this] { residual_->setFocus(); });
     add("bench.table", tr("Go to the readings"), QKeySequence(Qt::CTRL | Qt::Key_G), [this] { table_->setFocus(); });
@@ -213,14 +229,17 @@ void BenchPage::startTyping() {
 
 PlotSubject BenchPage::subject() const {
     const Record& record = workbench_.record();
-    return {phaseOf(workbench_.evaluation(), record.choices.phase), record.item, record.readings, record.exclusions, record.choices.fit};
+    return {phaseOf(workbench_.evaluation(), record.choices.phase), record.item, record.readings, record.exclusions, directionOf(record.choices)};
 }
 
 void BenchPage::refresh() {
     const PlotSubject now = subject();
     line_->setSubject(now);
     residual_->setSubject(now);
-    const QString why = now.phase && now.phase->notFitted ? errorText(*now.phase->notFitted) : tr("What the spread is made of appears here once a function is fitted.");
+    const bool correlated = now.phase && now.phase->fit && now.phase->fit->correlated;
+    const QString why = now.phase && now.phase->notFitted ? errorText(*now.phase->notFitted)
+                        : correlated ? tr("With covariances between readings there is no split: it is defined for readings whose errors are independent.")
+                                     : tr("What the spread is made of appears here once a function is fitted.");
     const QString name = functionText(workbench_.record().choices.function);
     split_->setSplit(now.phase ? now.phase->split : std::nullopt, name, why);
     const std::size_t used = now.phase && now.phase->fit ? now.phase->fit->used : 0;
@@ -231,10 +250,13 @@ void BenchPage::refresh() {
     QString words;
     if (now.phase && now.phase->fit) {
         const Fit& fit = *now.phase->fit;
-        words = equationText(fit, {}) + QStringLiteral("      ") +
-                residualText(fit, now);
+        words = equationText(fit, {}) + QStringLiteral("      ") + residualText(fit, now);
+        if (fit.method == Method::Robust)
+            words += QStringLiteral("      ") + robustWords(fit);
     }
     equation_->setText(words);
+    if (auto* degrees = findChild<QAction*>(QStringLiteral("bench.degrees")))
+        degrees->setEnabled(now.phase && now.phase->degrees);
     equation_->setToolTip(now.phase && now.phase->fit ? equationText(*now.phase->fit, now.item) : QString());
     showSelection();
 }
@@ -242,7 +264,7 @@ void BenchPage::refresh() {
 void BenchPage::refreshWords() {
     const Record& record = workbench_.record();
     readingsCard_->setTitle(tr("Readings %1").arg(phaseText(record.choices.phase)));
-    lineCard_->setTitle(record.choices.fit == FitDirection::Indication ? tr("Indication against reference") : tr("Reference against indication"));
+    lineCard_->setTitle(directionOf(record.choices) == FitDirection::Indication ? tr("Indication against reference") : tr("Reference against indication"));
     setView(residual_->view());
 }
 
@@ -291,6 +313,24 @@ void BenchPage::showExclusions() {
 
 void BenchPage::showPerformance() {
     (new PerformanceDialog(workbench_, this))->open();
+}
+
+void BenchPage::showDegrees() {
+    const PlotSubject now = subject();
+    if (!now.phase || !now.phase->degrees)
+        return;
+    const Record& record = workbench_.record();
+    const bool forward = directionOf(record.choices) == FitDirection::Indication;
+    const std::optional<Decimal>& resolution = forward ? record.item.resolution : record.item.referenceResolution;
+    const FunctionChoice& function = record.choices.function;
+    auto* dialog = new DegreeTable({*now.phase->degrees, resolution ? resolution->toDouble() : 0, function.family == FunctionFamily::Line ? 1 : function.order,
+                                    QString::fromStdString(now.ordinate().unit), QString::fromStdString(now.abscissa().unit)},
+                                   this);
+    connect(dialog, &DegreeTable::degreeChosen, this, [this](int degree) {
+        const FunctionChoice chosen = degree == 1 ? FunctionChoice{FunctionFamily::Line, 0} : FunctionChoice{FunctionFamily::Polynomial, degree};
+        workbench_.perform(changePart(workbench_.record(), &Record::choices, tr("choose %1").arg(functionText(chosen)), [&](Choices& choices) { choices.function = chosen; }));
+    });
+    dialog->open();
 }
 
 void BenchPage::follow(const Finding& finding) {

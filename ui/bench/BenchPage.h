@@ -58,6 +58,7 @@ class BenchPage : public QWidget {
     void showPerformance();
     QToolButton* cardLink(const QString& name, const QString& text, void (BenchPage::*what)());
     void showSplitTable();
+    void showDegrees();
     [[nodiscard]] PlotSubject subject() const;
 
     Workbench& workbench_;
@@ -72,6 +73,7 @@ class BenchPage : public QWidget {
     Card* splitCard_;
     Card* findingsCard_;
     ChoiceButton* viewButton_;
+    ChoiceButton* functionButton_;
     ChoiceButton* weightsButton_;
     QLabel* equation_;
 };

@@ -1,13 +1,17 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/bench/ChoiceMenus.h"
 
+#include "core/fit/CalibrationFunction.h"
+#include "core/fit/fitFunction.h"
 #include "ui/commands/PartCommand.h"
 #include "ui/look/Look.h"
 #include "ui/look/NumberText.h"
 #include "ui/words/Words.h"
 
 #include <QCoreApplication>
+#include <QLabel>
 #include <QMenu>
+#include <QWidgetAction>
 
 namespace spanwright {
 
@@ -40,6 +44,22 @@ const std::vector<Group>& groups() {
     return all;
 }
 
+/// Words in a list that cannot be chosen, as far from the edge as its entries.
+QLabel* addWords(QMenu& menu, const QString& text) {
+    constexpr int entryIndent = 30;
+    auto* label = new QLabel(text);
+    label->setTextFormat(Qt::PlainText);
+    label->setFont(textFont(TextRole::Small));
+    label->setForegroundRole(inkRole::quiet);
+    label->setContentsMargins(entryIndent, space::half, space::card, space::half);
+    auto* action = new QWidgetAction(&menu);
+    action->setDefaultWidget(label);
+    if (!menu.isEmpty())
+        menu.addSeparator();
+    menu.addAction(action);
+    return label;
+}
+
 void fillFunctions(QMenu& menu, Workbench& workbench) {
     menu.clear();
     const Choices& choices = workbench.record().choices;
@@ -48,6 +68,8 @@ void fillFunctions(QMenu& menu, Workbench& workbench) {
         action->setObjectName(QString::fromStdString(functionName(function)));
         action->setCheckable(true);
         action->setChecked(choices.function == function);
+        action->setToolTip(formulaText(function));
+        into.setToolTipsVisible(true);
         QObject::connect(action, &QAction::triggered, &workbench, [&workbench, function] {
             change(workbench, tr("choose %1").arg(functionText(function)), [&](Choices& c) { c.function = function; });
         });
@@ -65,9 +87,11 @@ void fillFunctions(QMenu& menu, Workbench& workbench) {
         const QString text = direction == FitDirection::Indication ? tr("Gives the indication from the reference") : tr("Gives the reference from the indication");
         QAction* action = menu.addAction(text);
         action->setCheckable(true);
-        action->setChecked(choices.fit == direction);
+        action->setChecked(directionOf(choices) == direction);
+        action->setEnabled(!factsOf(choices.function.family).only); // some sensor equations give one quantity only
         QObject::connect(action, &QAction::triggered, &workbench, [&workbench, direction, text] { change(workbench, text.toLower(), [&](Choices& c) { c.fit = direction; }); });
     }
+    addWords(menu, formulaText(choices.function))->setObjectName(QStringLiteral("functionFormula"));
 }
 
 void fillWeights(QMenu& menu, Workbench& workbench) {
@@ -79,14 +103,26 @@ void fillWeights(QMenu& menu, Workbench& workbench) {
         action->setChecked(checked);
         QObject::connect(action, &QAction::triggered, &workbench, [&workbench, text, edit] { change(workbench, tr("choose %1").arg(text), edit); });
     };
+    addWords(menu, tr("Weights"));
     for (const Weights weights : {Weights::Equal, Weights::Stated, Weights::Replicates, Weights::Proportional, Weights::VarianceFunction})
         entry(weightsText(weights), choices.weights == weights, [weights](Choices& c) { c.weights = weights; });
-    menu.addSeparator();
-    for (const Method method : {Method::LeastSquares, Method::BothUncertain, Method::Robust})
+    addWords(menu, tr("Method"));
+    for (const Method method : {Method::LeastSquares, Method::BothUncertain})
         entry(methodText(method), choices.method == method, [method](Choices& c) { c.method = method; });
-    menu.addSeparator();
-    entry(tr("uncertainty from the scatter of the residuals"), choices.covariance == CovarianceScale::Residuals, [](Choices& c) { c.covariance = CovarianceScale::Residuals; });
-    entry(tr("uncertainty from the stated uncertainties as they are"), choices.covariance == CovarianceScale::Stated, [](Choices& c) { c.covariance = CovarianceScale::Stated; });
+    for (const RobustWeight robust : {RobustWeight::Huber, RobustWeight::Bisquare})
+        entry(robustText(robust), choices.method == Method::Robust && choices.robust == robust, [robust](Choices& c) {
+            c.method = Method::Robust;
+            c.robust = robust;
+        });
+    addWords(menu, tr("Uncertainty of the function"));
+    entry(tr("from the residual spread"), choices.covariance == CovarianceScale::Residuals, [](Choices& c) { c.covariance = CovarianceScale::Residuals; });
+    entry(tr("from the stated uncertainties as they are"), choices.covariance == CovarianceScale::Stated, [](Choices& c) { c.covariance = CovarianceScale::Stated; });
+    addWords(menu, tr("Calibration error that readings of a standard share"));
+    entry(tr("carried to the budget, not the fit"), choices.sharedError == SharedError::Budget, [](Choices& c) { c.sharedError = SharedError::Budget; });
+    entry(tr("in the fit, with the stated uncertainties as they are"), choices.sharedError == SharedError::Fit, [](Choices& c) {
+        c.sharedError = SharedError::Fit;
+        c.covariance = CovarianceScale::Stated; // what is stated cannot be scaled by the residuals
+    });
 }
 
 } // namespace
@@ -100,6 +136,18 @@ ChoiceButton::ChoiceButton(const QString& name, const QString& accessibleName, Q
     setFocusPolicy(Qt::TabFocus);
     setForegroundRole(inkRole::quiet);
     setStyleSheet(QStringLiteral("QToolButton { padding: 2px 4px; }"));
+}
+
+void ChoiceButton::fillWith(const std::function<void(QMenu&)>& fill) {
+    const auto all = [this, fill] {
+        fill(*menu());
+        if (!further_.empty())
+            menu()->addSeparator();
+        for (QAction* action : further_)
+            menu()->addAction(action);
+    };
+    connect(menu(), &QMenu::aboutToShow, this, all);
+    all();
 }
 
 void ChoiceButton::setChoice(const QString& text) {
@@ -125,6 +173,10 @@ QString weightsText(Weights weights) {
     return {};
 }
 
+QString robustText(RobustWeight weight) {
+    return weight == RobustWeight::Huber ? tr("robust after Huber, for comparison only") : tr("robust, bisquare, for comparison only");
+}
+
 QString methodText(Method method) {
     switch (method) {
     case Method::LeastSquares: return tr("least squares");
@@ -138,8 +190,7 @@ ChoiceButton* functionButton(Workbench& workbench, QWidget* parent) {
     auto* button = new ChoiceButton(QStringLiteral("functionChoice"), tr("Calibration function"), parent);
     const auto refresh = [button, &workbench] { button->setChoice(sentenceCase(functionText(workbench.record().choices.function))); };
     QObject::connect(&workbench, &Workbench::recordChanged, button, refresh);
-    QObject::connect(button->menu(), &QMenu::aboutToShow, button, [button, &workbench] { fillFunctions(*button->menu(), workbench); });
-    fillFunctions(*button->menu(), workbench);
+    button->fillWith([&workbench](QMenu& menu) { fillFunctions(menu, workbench); });
     refresh();
     return button;
 }
@@ -169,9 +220,8 @@ ChoiceButton* weightsButton(Workbench& workbench, QWidget* parent) {
                    : choices.weights == Weights::Replicates ? tr("replicate weights") : choices.weights == Weights::Proportional ? tr("proportional weights") : tr("weights by level");
         button->setChoice(text);
     };
-    QObject::connect(button->menu(), &QMenu::aboutToShow, button, [button, &workbench] { fillWeights(*button->menu(), workbench); });
+    button->fillWith([&workbench](QMenu& menu) { fillWeights(menu, workbench); });
     QObject::connect(&workbench, &Workbench::recordChanged, button, refresh);
-    fillWeights(*button->menu(), workbench);
     refresh();
     return button;
 }

@@ -7,6 +7,9 @@
 
 #include <QToolButton>
 
+#include <functional>
+#include <vector>
+
 namespace spanwright {
 
 /// A quiet button in the head of a card that shows the choice in use and opens the list of the others.
@@ -16,13 +19,20 @@ class ChoiceButton : public QToolButton {
   public:
     ChoiceButton(const QString& name, const QString& accessibleName, QWidget* parent = nullptr);
     void setChoice(const QString& text);
+    /// The list is filled anew each time it opens; the further actions stand at its end.
+    void fillWith(const std::function<void(QMenu&)>& fill);
+    void setFurther(std::vector<QAction*> further) { further_ = std::move(further); }
     QSize sizeHint() const override;
     QSize minimumSizeHint() const override { return sizeHint(); }
+
+  private:
+    std::vector<QAction*> further_;
 };
 
 /// Words of a way of weighing.
 QString weightsText(Weights weights);
 QString methodText(Method method);
+QString robustText(RobustWeight weight);
 
 /// The calibration function: all families in groups, and which quantity it gives.
 ChoiceButton* functionButton(Workbench& workbench, QWidget* parent);

@@ -2,6 +2,7 @@
 #include "ui/bench/CompareDialog.h"
 
 #include "core/fit/CalibrationFunction.h"
+#include "core/fit/fitFunction.h"
 #include "ui/bench/ChoiceMenus.h"
 #include "ui/bench/FiguresTable.h"
 #include "ui/bench/FitEffect.h"
@@ -16,6 +17,7 @@
 #include <QDialogButtonBox>
 #include <QHBoxLayout>
 #include <QLabel>
+#include <QListWidget>
 #include <QPushButton>
 #include <QVBoxLayout>
 
@@ -69,6 +71,10 @@ void addValues(std::vector<EffectRow>& rows, const PhaseEvaluation* now, const P
                         fixedText(now->fit->curve->value(x), decimals), fixedText(trial->fit->curve->value(x), decimals)});
 }
 
+QString nameOfMethod(const Choices& choices) {
+    return choices.method == Method::Robust ? robustText(choices.robust) : methodText(choices.method);
+}
+
 /// The functions that give the same quantity, each family up to the order that is of use.
 std::vector<FunctionChoice> functionsFor(FitDirection direction) {
     constexpr int highestPower = 5;
@@ -84,7 +90,7 @@ std::vector<FunctionChoice> functionsFor(FitDirection direction) {
 
 CompareDialog::CompareDialog(Workbench& workbench, const Other& other, QWidget* parent)
     : QDialog(parent), workbench_(workbench), choice_(new QComboBox), effect_(new EffectTable), findings_(new QLabel),
-      trial_(new TrialEvaluation(this)) {
+      weighedDown_(new QListWidget), trial_(new TrialEvaluation(this)) {
     setObjectName(QStringLiteral("compareDialog"));
     setAttribute(Qt::WA_DeleteOnClose);
     setWindowTitle(tr("Side by side"));
@@ -108,6 +114,15 @@ CompareDialog::CompareDialog(Workbench& workbench, const Other& other, QWidget* 
     findings_->setFont(textFont(TextRole::Small));
     findings_->setTextInteractionFlags(Qt::TextSelectableByMouse);
     all->addWidget(findings_);
+    weighedDown_->setObjectName(QStringLiteral("weighedDown"));
+    weighedDown_->setAccessibleName(tr("Readings that the robust fit weighs down"));
+    weighedDown_->setMaximumHeight(140);
+    weighedDown_->hide();
+    connect(weighedDown_, &QListWidget::currentItemChanged, this, [this](QListWidgetItem* item) {
+        if (item)
+            workbench_.select({item->data(Qt::UserRole).toLongLong()});
+    });
+    all->addWidget(weighedDown_);
     auto* buttons = new QDialogButtonBox;
     take_ = buttons->addButton(QString(), QDialogButtonBox::AcceptRole);
     take_->setObjectName(QStringLiteral("takeOver"));
@@ -132,12 +147,14 @@ void CompareDialog::fillChoice(const Other& first) {
     };
     if (!record.exclusions->empty())
         add(withoutExclusions(record));
-    for (const Method method : {Method::LeastSquares, Method::Robust})
-        if (method != record.choices.method)
-            add(withMethod(record, method));
+    if (record.choices.method != Method::LeastSquares)
+        add(withMethod(record, Method::LeastSquares));
+    for (const RobustWeight weight : {RobustWeight::Huber, RobustWeight::Bisquare})
+        if (record.choices.method != Method::Robust || record.choices.robust != weight)
+            add(withRobust(record, weight));
     choice_->insertSeparator(choice_->count());
     others_.emplace_back();
-    for (const FunctionChoice& function : functionsFor(record.choices.fit))
+    for (const FunctionChoice& function : functionsFor(directionOf(record.choices)))
         if (!(function == record.choices.function))
             add(withFunction(record, function));
     if (choice_->itemText(choice_->currentIndex()) != sentenceCase(first.name)) {
@@ -154,6 +171,8 @@ void CompareDialog::compare(const Other& other) {
     const PhaseEvaluation* now = workbench_.evaluation()->phase(workbench_.record().choices.phase);
     effect_->show(other_.nameOfNow, other_.name, effectRows(now, nullptr, workbench_.record().item));
     findings_->clear();
+    weighedDown_->clear();
+    weighedDown_->hide();
     trial_->start(other_.record);
 }
 
@@ -175,6 +194,11 @@ void CompareDialog::show(const std::shared_ptr<const Evaluation>& trial) {
         if (lines.isEmpty())
             lines << tr("Both lead to the same findings.");
     }
+    if (then && then->fit && then->fit->method == Method::Robust) {
+        listWeighedDown(*then);
+        lines << (weighedDown_->count() == 0 ? tr("The robust fit weighs no reading down.")
+                                             : tr("The robust fit weighs these readings down; choose one to see it in the plots:"));
+    }
     findings_->setText(lines.join(QLatin1Char('\n')));
     take_->setEnabled(then && then->fit && !workbench_.readOnly());
     fitToContents(*this);
@@ -185,6 +209,23 @@ void CompareDialog::take() {
     accept();
 }
 
+void CompareDialog::listWeighedDown(const PhaseEvaluation& trial) {
+    weighedDown_->clear();
+    const std::vector<ReadingId>& ids = other_.record.readings->ids();
+    for (const WeighedDown& reading : trial.fit->weighedDown) {
+        auto* item = new QListWidgetItem(tr("reading %1, weight %2").arg(ids[reading.row]).arg(fixedText(reading.weight, 2)), weighedDown_);
+        item->setData(Qt::UserRole, QVariant::fromValue<qlonglong>(ids[reading.row]));
+    }
+    weighedDown_->setVisible(weighedDown_->count() > 0);
+}
+
+CompareDialog::Other CompareDialog::withRobust(const Record& record, RobustWeight weight) {
+    Other other{robustText(weight), nameOfMethod(record.choices), record, {}};
+    other.record.choices.method = Method::Robust;
+    other.record.choices.robust = weight;
+    return other;
+}
+
 CompareDialog::Other CompareDialog::withFunction(const Record& record, const FunctionChoice& function) {
     Other other{functionText(function), functionText(record.choices.function), record, [function](Choices& choices) { choices.function = function; }};
     other.takeOver(other.record.choices);
@@ -192,11 +233,8 @@ CompareDialog::Other CompareDialog::withFunction(const Record& record, const Fun
 }
 
 CompareDialog::Other CompareDialog::withMethod(const Record& record, Method method) {
-    const auto name = [](Method one) { return one == Method::Robust ? tr("robust fit") : methodText(one); };
-    Other other{name(method), name(record.choices.method), record, {}};
-    other.record.choices.method = method;
-    if (method != Method::Robust) // which is for comparison only
-        other.takeOver = [method](Choices& choices) { choices.method = method; };
+    Other other{methodText(method), nameOfMethod(record.choices), record, [method](Choices& choices) { choices.method = method; }};
+    other.takeOver(other.record.choices);
     return other;
 }
 

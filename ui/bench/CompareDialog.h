@@ -10,6 +10,7 @@
 
 class QComboBox;
 class QLabel;
+class QListWidget;
 class QPushButton;
 
 namespace spanwright {
@@ -34,15 +35,17 @@ class CompareDialog : public QDialog {
     CompareDialog(Workbench& workbench, const Other& other, QWidget* parent = nullptr);
 
     static Other withFunction(const Record& record, const FunctionChoice& function);
-    /// A robust fit beside least squares, or the other way round.
     static Other withMethod(const Record& record, Method method);
     static Other withoutExclusions(const Record& record);
+    /// Only looked at: a robust fit never becomes the calibration function. Readings that it weighs down are listed to select.
+    static Other withRobust(const Record& record, RobustWeight weight);
 
   private:
     void fillChoice(const Other& first);
     void compare(const Other& other);
     void show(const std::shared_ptr<const Evaluation>& trial);
     void take();
+    void listWeighedDown(const PhaseEvaluation& trial);
 
     Workbench& workbench_;
     std::vector<Other> others_;
@@ -50,6 +53,7 @@ class CompareDialog : public QDialog {
     QComboBox* choice_;
     EffectTable* effect_;
     QLabel* findings_;
+    QListWidget* weighedDown_;
     QPushButton* take_;
     TrialEvaluation* trial_;
 };

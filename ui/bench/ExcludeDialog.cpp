@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/bench/ExcludeDialog.h"
 
+#include "core/fit/fitFunction.h"
 #include "ui/bench/FitEffect.h"
 #include "ui/bench/TrialEvaluation.h"
 #include "ui/commands/ExclusionCommands.h"
@@ -34,7 +35,7 @@ ExcludeDialog::ExcludeDialog(Workbench& workbench, std::vector<ReadingId> ids, Q
     all->setContentsMargins(space::card, space::card, space::card, space::card);
     all->setSpacing(space::step);
     const Record& record = workbench_.record();
-    const PlotSubject subject{phaseOf(workbench_.evaluation(), record.choices.phase), record.item, record.readings, record.exclusions, record.choices.fit};
+    const PlotSubject subject{phaseOf(workbench_.evaluation(), record.choices.phase), record.item, record.readings, record.exclusions, directionOf(record.choices)};
     QStringList lines;
     for (const ReadingId id : ids_) {
         if (lines.size() == 4 && ids_.size() > 5) {

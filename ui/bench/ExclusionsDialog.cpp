@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/bench/ExclusionsDialog.h"
 
+#include "core/fit/fitFunction.h"
 #include "ui/bench/FiguresTable.h"
 #include "ui/bench/TrialEvaluation.h"
 #include "ui/commands/ExclusionCommands.h"
@@ -181,7 +182,7 @@ void ExclusionsDialog::take(const std::shared_ptr<const Evaluation>& evaluation)
 void ExclusionsDialog::showList() {
     const Record& record = workbench_.record();
     const PhaseEvaluation* now = workbench_.evaluation()->phase(record.choices.phase);
-    const bool forward = record.choices.fit == FitDirection::Indication;
+    const bool forward = directionOf(record.choices) == FitDirection::Indication;
     const QString unit = QString::fromStdString(forward ? record.item.indication.unit : record.item.reference.unit);
     const QString under = unit.isEmpty() ? QString() : QLatin1Char('\n') + unit;
     const bool weighted = now && now->fit && now->fit->weights != Weights::Equal;

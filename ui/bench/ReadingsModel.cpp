@@ -2,6 +2,7 @@
 #include "ui/bench/ReadingsModel.h"
 
 #include "core/diagnose/Settling.h"
+#include "core/fit/fitFunction.h"
 #include "ui/bench/PlanRows.h"
 #include "ui/look/NumberText.h"
 #include "ui/plot/PlotSubject.h"
@@ -17,9 +18,10 @@ namespace spanwright {
 
 namespace {
 
-constexpr std::pair<NumberColumn, const char*> journalNames[] = {{NumberColumn::SetPoint, "set point"},
-                                                                 {NumberColumn::Reference, "reference"},
-                                                                 {NumberColumn::Indication, "indication"}};
+constexpr std::pair<NumberColumn, const char*> journalNames[] = {
+    {NumberColumn::SetPoint, "set point"},           {NumberColumn::Reference, "reference"},
+    {NumberColumn::Indication, "indication"},        {NumberColumn::UReference, "u of reference"},
+    {NumberColumn::UIndication, "u of indication"}, {NumberColumn::UCovariance, "covariance"}};
 
 /// "reading 17 indication" in the journal.
 std::optional<std::pair<ReadingId, NumberColumn>> placeOf(const std::string& where) {
@@ -93,7 +95,7 @@ void ReadingsModel::refreshRecord() {
 void ReadingsModel::refreshFigures() {
     figures_ = phaseOf(workbench_.evaluation(), phase_);
     const Record& record = workbench_.record();
-    residualDecimals_ = spanwright::residualDecimals({figures_, record.item, record.readings, record.exclusions, record.choices.fit});
+    residualDecimals_ = spanwright::residualDecimals({figures_, record.item, record.readings, record.exclusions, directionOf(record.choices)});
     emit dataChanged(index(0, ResidualValue), index(rowCount() - 1, State));
 }
 
@@ -125,8 +127,28 @@ std::optional<NumberColumn> ReadingsModel::numberColumn(int column) {
     case SetPoint: return NumberColumn::SetPoint;
     case ReferenceValue: return NumberColumn::Reference;
     case IndicationValue: return NumberColumn::Indication;
+    case ReferenceUncertainty: return NumberColumn::UReference;
+    case IndicationUncertainty: return NumberColumn::UIndication;
+    case Covariance: return NumberColumn::UCovariance;
     default: return std::nullopt;
     }
+}
+
+ReadingsModel::Column ReadingsModel::columnOf(NumberColumn column) {
+    switch (column) {
+    case NumberColumn::SetPoint: return SetPoint;
+    case NumberColumn::Reference: return ReferenceValue;
+    case NumberColumn::Indication: return IndicationValue;
+    case NumberColumn::UReference: return ReferenceUncertainty;
+    case NumberColumn::UIndication: return IndicationUncertainty;
+    case NumberColumn::UCovariance: break;
+    }
+    return Covariance;
+}
+
+bool ReadingsModel::isStated(Column column) const {
+    const DecimalColumn& values = workbench_.record().readings->number(*numberColumn(column));
+    return values.missing() < values.size();
 }
 
 std::optional<ReadingId> ReadingsModel::idAt(int row) const {
@@ -182,7 +204,10 @@ QString ReadingsModel::text(int row, int column) const {
     case Run: return readings.runs()[at] > 0 ? QString::number(readings.runs()[at]) : QString();
     case SetPoint:
     case ReferenceValue:
-    case IndicationValue: {
+    case IndicationValue:
+    case ReferenceUncertainty:
+    case IndicationUncertainty:
+    case Covariance: {
         const auto value = readings.number(*numberColumn(column)).at(at);
         return value ? typedText(*value) : QString();
     }
@@ -259,7 +284,7 @@ QString ReadingsModel::tip(int row, int column) const {
     if (!id)
         return {};
     const Record& record = workbench_.record();
-    QString text = readingText({figures_, record.item, record.readings, record.exclusions, record.choices.fit}, *id);
+    QString text = readingText({figures_, record.item, record.readings, record.exclusions, directionOf(record.choices)}, *id);
     const Reading reading = readingAt(row);
     if (!reading.enteredBy.empty() || reading.enteredAt != 0)
         text += QLatin1Char('\n') + tr("entered %1 %2").arg(QString::fromStdString(reading.enteredBy),
@@ -322,7 +347,10 @@ QVariant ReadingsModel::headerData(int section, Qt::Orientation orientation, int
     case SetPoint: return overUnit(tr("set point"), x);
     case ReferenceValue: return overUnit(tr("reference"), x);
     case IndicationValue: return overUnit(tr("indication"), y);
-    case ResidualValue: return overUnit(tr("residual"), workbench_.record().choices.fit == FitDirection::Indication ? y : x);
+    case ReferenceUncertainty: return overUnit(tr("u ref."), x);
+    case IndicationUncertainty: return overUnit(tr("u ind."), y);
+    case Covariance: return overUnit(tr("covariance"), x.isEmpty() || y.isEmpty() ? x + y : x + QChar(0x00B7) + y);
+    case ResidualValue: return overUnit(tr("residual"), directionOf(workbench_.record().choices) == FitDirection::Indication ? y : x);
     case State: return tr("state");
     default: return {};
     }
@@ -332,7 +360,9 @@ Qt::ItemFlags ReadingsModel::flags(const QModelIndex& index) const {
     Qt::ItemFlags flags = Qt::ItemIsSelectable | Qt::ItemIsEnabled | Qt::ItemNeverHasChildren;
     if (workbench_.readOnly() || !numberColumn(index.column()))
         return flags;
-    const bool planned = index.row() >= taken() && !planned_.empty();
+    const bool ahead = index.row() >= taken(), planned = ahead && !planned_.empty();
+    if (ahead && index.column() > IndicationValue)
+        return flags; // stated of readings that are there
     if (planned && (index.column() == SetPoint || (index.column() == ReferenceValue && !workbench_.record().plan.referenceTyped)))
         return flags;
     return flags | Qt::ItemIsEditable;

@@ -18,7 +18,22 @@ class ReadingsModel : public QAbstractTableModel {
     Q_OBJECT
 
   public:
-    enum Column { Number, Run, DirectionMark, SetPoint, ReferenceValue, IndicationValue, ResidualValue, State, ColumnCount };
+    enum Column {
+        Number,
+        Run,
+        DirectionMark,
+        SetPoint,
+        ReferenceValue,
+        IndicationValue,
+        ReferenceUncertainty,
+        IndicationUncertainty,
+        Covariance,
+        ResidualValue,
+        State,
+        ColumnCount
+    };
+    /// What is stated of a reading's uncertainty; shown where it is used.
+    static constexpr Column statedColumns[] = {ReferenceUncertainty, IndicationUncertainty, Covariance};
     enum Role { ExcludedRole = Qt::UserRole, AmendedRole, PlannedRole, DirectionRole, MissingDigitsRole, OutsideRole, HurriedRole };
 
     explicit ReadingsModel(Workbench& workbench, QObject* parent = nullptr);
@@ -40,6 +55,9 @@ class ReadingsModel : public QAbstractTableModel {
     [[nodiscard]] QModelIndex nextCell() const;
     /// The column of the record that a column of the table shows; empty for those that cannot be typed.
     static std::optional<NumberColumn> numberColumn(int column);
+    static Column columnOf(NumberColumn column);
+    /// Whether any reading states it.
+    [[nodiscard]] bool isStated(Column column) const;
     /// What happened to a value: the journal's entries about it, in words, oldest first.
     [[nodiscard]] QString history(int row, int column) const;
 

@@ -26,10 +26,16 @@ namespace spanwright {
 
 namespace {
 
-int shownColumn(NumberColumn column) {
-    return column == NumberColumn::SetPoint    ? ReadingsModel::SetPoint
-           : column == NumberColumn::Reference ? ReadingsModel::ReferenceValue
-                                               : ReadingsModel::IndicationValue;
+std::optional<Decimal>& valueOf(Reading& reading, NumberColumn column) {
+    switch (column) {
+    case NumberColumn::SetPoint: return reading.setPoint;
+    case NumberColumn::Reference: return reading.reference;
+    case NumberColumn::Indication: return reading.indication;
+    case NumberColumn::UReference: return reading.uReference;
+    case NumberColumn::UIndication: return reading.uIndication;
+    case NumberColumn::UCovariance: break;
+    }
+    return reading.uCovariance;
 }
 
 } // namespace
@@ -80,6 +86,7 @@ ReadingsTable::ReadingsTable(Workbench& workbench, QWidget* parent)
     connect(&workbench_, &Workbench::selectionChanged, this, &ReadingsTable::showSelection);
     connect(model_, &QAbstractItemModel::headerDataChanged, this, &ReadingsTable::measureColumns);
     connect(&workbench_, &Workbench::evaluationChanged, this, &ReadingsTable::measureColumns);
+    connect(model_, &QAbstractItemModel::modelReset, this, &ReadingsTable::measureColumns);
     // While nobody works in the table it follows what is taken.
     connect(&workbench_, &Workbench::recordChanged, this, [this, last = -1]() mutable {
         if (last != model_->taken() && !hasFocus() && !isAncestorOf(QApplication::focusWidget()))
@@ -102,6 +109,11 @@ void ReadingsTable::typeNext() {
 
 void ReadingsTable::goOn(const QModelIndex& from) {
     const QModelIndex beside = from.siblingAtColumn(ReadingsModel::IndicationValue);
+    if (from.column() > ReadingsModel::IndicationValue && from.row() + 1 < model_->taken()) { // what is stated is typed down a column
+        setCurrentIndex(from.siblingAtRow(from.row() + 1));
+        edit(currentIndex());
+        return;
+    }
     const bool indicationNext = from.column() == ReadingsModel::ReferenceValue && beside.data().toString().isEmpty();
     const QModelIndex next = from.column() == ReadingsModel::SetPoint ? from.siblingAtColumn(ReadingsModel::ReferenceValue)
                              : indicationNext                         ? beside
@@ -129,8 +141,8 @@ void ReadingsTable::accept(const QModelIndex& index, const Decimal& value, bool 
 void ReadingsTable::enter(Reading reading, NumberColumn column, const Decimal& value, bool onward) {
     const ReadingId id = reading.id != 0 ? reading.id : workbench_.record().nextReadingId;
     const int row = reading.id != 0 ? model_->rowOf(reading.id) : currentIndex().row();
-    const int shown = shownColumn(column);
-    (column == NumberColumn::SetPoint ? reading.setPoint : column == NumberColumn::Reference ? reading.reference : reading.indication) = value;
+    const int shown = ReadingsModel::columnOf(column);
+    valueOf(reading, column) = value;
     const QString step = reading.id != 0 ? tr("complete a reading") : tr("enter a reading");
     recordAsked(
         workbench_, {step, {std::move(reading)}, {column}, {}}, this,
@@ -144,7 +156,7 @@ void ReadingsTable::enter(Reading reading, NumberColumn column, const Decimal& v
 
 /// What was typed stands in its cell again, to be looked at.
 void ReadingsTable::editAgain(int row, NumberColumn column, const Decimal& value) {
-    const QModelIndex index = model_->index(row, shownColumn(column));
+    const QModelIndex index = model_->index(row, ReadingsModel::columnOf(column));
     setFocus();
     setCurrentIndex(index);
     edit(index);
@@ -158,9 +170,9 @@ void ReadingsTable::editAgain(int row, NumberColumn column, const Decimal& value
 }
 
 void ReadingsTable::amend(ReadingId id, NumberColumn column, const Decimal& before, const Decimal& after, bool onward) {
-    const int shown = shownColumn(column);
+    const int shown = ReadingsModel::columnOf(column);
     Reading amended = workbench_.record().readings->row(workbench_.record().readings->indexOf(id));
-    (column == NumberColumn::SetPoint ? amended.setPoint : column == NumberColumn::Reference ? amended.reference : amended.indication) = after;
+    valueOf(amended, column) = after;
     QString ask = tr("&Why? The value before is kept beside the new one.");
     for (const Suspect& suspect : suspectsAmong(workbench_.record(), {amended}, {column}))
         ask.prepend(suspect.sentence + QLatin1Char('\n'));
@@ -201,7 +213,7 @@ void ReadingsTable::paste(const QString& text) {
         return;
     }
     const int first = ReadingsModel::numberColumn(start.column()) ? start.column() : static_cast<int>(ReadingsModel::ReferenceValue);
-    if (first + block.width() - 1 > ReadingsModel::IndicationValue) {
+    if (first + block.width() - 1 > lastTyped(start.row() + static_cast<int>(block.rows.size()))) {
         say(tr("Nothing was pasted. The block is %1 columns wide and does not fit from here: start at an earlier column.").arg(block.width()), visualRect(start));
         return;
     }
@@ -211,8 +223,7 @@ void ReadingsTable::paste(const QString& text) {
         Reading reading = model_->readingAt(row);
         for (int c = 0; c < block.width(); ++c) {
             const Decimal& value = block.rows[i][static_cast<std::size_t>(c)];
-            const NumberColumn column = *ReadingsModel::numberColumn(first + c);
-            (column == NumberColumn::SetPoint ? reading.setPoint : column == NumberColumn::Reference ? reading.reference : reading.indication) = value;
+            valueOf(reading, *ReadingsModel::numberColumn(first + c)) = value;
         }
         rows.push_back(std::move(reading));
     }
@@ -231,7 +242,8 @@ QString ReadingsTable::selectedText() const {
     for (const int row : rows) {
         QStringList cells;
         for (int column = 0; column < ReadingsModel::ColumnCount; ++column)
-            cells << model_->index(row, column).data(column == ReadingsModel::DirectionMark ? Qt::AccessibleTextRole : Qt::DisplayRole).toString().replace(QChar(0x2212), QLatin1Char('-'));
+            if (!isColumnHidden(column) || !ReadingsModel::numberColumn(column) || column <= ReadingsModel::IndicationValue)
+                cells << model_->index(row, column).data(column == ReadingsModel::DirectionMark ? Qt::AccessibleTextRole : Qt::DisplayRole).toString().replace(QChar(0x2212), QLatin1Char('-'));
         text += cells.join(QLatin1Char('\t')) + QLatin1Char('\n');
     }
     return text;
@@ -289,6 +301,10 @@ void ReadingsTable::contextMenuEvent(QContextMenuEvent* event) {
     menu->addSeparator();
     menu->addAction(tr("Copy"), this, [this] { QApplication::clipboard()->setText(selectedText()); })->setEnabled(any);
     menu->addAction(tr("Paste"), this, [this] { paste(QApplication::clipboard()->text()); });
+    menu->addSeparator();
+    QAction* stated = menu->addAction(tr("Columns of stated uncertainties"), this, &ReadingsTable::showStated);
+    stated->setCheckable(true);
+    stated->setChecked(!isColumnHidden(ReadingsModel::Covariance));
     menu->popup(event->globalPos());
 }
 
@@ -308,7 +324,26 @@ int ReadingsTable::widthOfNumbers(int column) const {
 void ReadingsTable::measureColumns() {
     for (const int column : {ReadingsModel::SetPoint, ReadingsModel::ReferenceValue, ReadingsModel::IndicationValue, ReadingsModel::ResidualValue})
         needed_[column] = widthOfNumbers(column);
+    for (const ReadingsModel::Column column : ReadingsModel::statedColumns) {
+        const bool shown = statedShown_ || model_->isStated(column);
+        setColumnHidden(column, !shown);
+        needed_[column] = shown ? widthOfNumbers(column) : 0;
+    }
     fitColumns();
+}
+
+/// The last column that a block of values may reach which ends before `row`: what is not shown is not pasted into.
+int ReadingsTable::lastTyped(int row) const {
+    int last = ReadingsModel::IndicationValue;
+    for (const int column : ReadingsModel::statedColumns)
+        if (!isColumnHidden(column) && row <= model_->taken())
+            last = column;
+    return last;
+}
+
+void ReadingsTable::showStated(bool shown) {
+    statedShown_ = shown;
+    measureColumns();
 }
 
 /// The column of the set point and that of the state give way where the table is narrow; where even the rest does not fit, the
@@ -321,6 +356,10 @@ void ReadingsTable::fitColumns() {
     int least = number + run + mark;
     for (const int column : numbers)
         least += needed_[column];
+    for (const int column : ReadingsModel::statedColumns) {
+        setColumnWidth(column, needed_[column]);
+        least += needed_[column];
+    }
     const int room = viewport()->width();
     const bool withSetPoint = room >= least + setPoint;
     const bool withState = room >= least + setPoint + state;

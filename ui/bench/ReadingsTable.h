@@ -30,6 +30,8 @@ class ReadingsTable : public QTableView {
     /// The words under a refused cell; empty when nothing is refused.
     [[nodiscard]] QString refusal() const;
     void paste(const QString& text);
+    /// Columns of stated uncertainties, to type in what no reading has yet.
+    void showStated(bool shown);
     /// The selected rows as text for a spreadsheet.
     [[nodiscard]] QString selectedText() const;
 
@@ -57,6 +59,7 @@ class ReadingsTable : public QTableView {
     [[nodiscard]] int widthOfNumbers(int column) const;
     void measureColumns();
     void fitColumns();
+    [[nodiscard]] int lastTyped(int row) const;
     void place(const std::function<void(Place&)>& edit);
 
     Workbench& workbench_;
@@ -64,6 +67,7 @@ class ReadingsTable : public QTableView {
     std::map<int, int> needed_; ///< by column of numbers, px
     ReadingsDelegate* delegate_;
     QLabel* words_;
+    bool statedShown_ = false; ///< columns of stated uncertainties were asked for
     bool following_ = false; ///< the selection is being taken over from the workbench
 };
 
