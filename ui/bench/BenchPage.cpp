@@ -20,6 +20,7 @@
 #include "ui/bench/ReasonDialog.h"
 #include "ui/bench/SelectionBar.h"
 #include "ui/bench/SplitTable.h"
+#include "ui/bench/WholeRows.h"
 #include "ui/commands/ExclusionCommands.h"
 #include "ui/commands/PartCommand.h"
 #include "ui/look/Card.h"
@@ -43,6 +44,29 @@
 namespace spanwright {
 
 namespace {
+
+/// What the readings cannot tell, and why, in few words; empty when they tell everything.
+QString unknownText(const VarianceSplit& split) {
+    QStringList parts;
+    for (const Warning& warning : split.warnings) {
+        std::string figure, reason;
+        for (const Fact& fact : warning.facts)
+            (fact.name == "figure" ? figure : reason) = fact.value;
+        const bool silent = reason == "not-stated";
+        switch (warning.code) {
+        case WarningCode::NoReplicates: parts << BenchPage::tr("lack of fit, repeatability (no set point read twice)"); break;
+        case WarningCode::OneDirection: parts << (silent ? BenchPage::tr("hysteresis (directions not stated)") : BenchPage::tr("hysteresis (no set point from both directions)")); break;
+        case WarningCode::OneRun:
+            parts << (silent ? BenchPage::tr("run to run (runs not stated)") : reason == "one" ? BenchPage::tr("run to run (one run)") : BenchPage::tr("run to run (no runs to compare)"));
+            break;
+        case WarningCode::FigureUndefined:
+            parts << (figure == "lack_of_fit" ? BenchPage::tr("lack of fit (no more set points than coefficients)") : BenchPage::tr("repeatability (nothing read twice in one run)"));
+            break;
+        default: break;
+        }
+    }
+    return parts.isEmpty() ? QString() : BenchPage::tr("Not known: %1.").arg(parts.join(QStringLiteral("; ")));
+}
 
 /// The line of the budget that holds what a finding is about.
 std::optional<DerivedLine> budgetLineOf(FindingCode code) {
@@ -98,7 +122,7 @@ QWidget* BenchPage::buildLeft() {
     // The table reaches from edge to edge; the head stays where the heads of other cards are.
     readingsCard_->layout()->setContentsMargins(1, space::step + space::half, 1, space::step);
     readingsCard_->layout()->itemAt(0)->layout()->setContentsMargins(space::card - 1, 0, space::card - 1, 0);
-    readingsCard_->body()->addWidget(table_);
+    readingsCard_->body()->addWidget(new WholeRows(table_));
     auto* left = new QWidget;
     auto* column = new QVBoxLayout(left);
     column->setContentsMargins(0, 0, 0, 0);
@@ -158,6 +182,12 @@ QWidget* BenchPage::buildRight() {
     findings_ = new FindingsView;
     splitCard_ = new Card(tr("Variance split"));
     splitCard_->body()->addWidget(split_);
+    unknown_ = new QLabel;
+    unknown_->setObjectName(QStringLiteral("splitUnknown"));
+    unknown_->setFont(textFont(TextRole::Small));
+    unknown_->setForegroundRole(inkRole::quiet);
+    unknown_->setWordWrap(true);
+    splitCard_->body()->addWidget(unknown_);
     auto* links = new QHBoxLayout;
     links->setSpacing(space::card);
     links->addWidget(cardLink(QStringLiteral("splitFigures"), tr("As a table"), &BenchPage::showSplitTable));
@@ -242,6 +272,9 @@ void BenchPage::refresh() {
                                      : tr("What the spread is made of appears here once a function is fitted.");
     const QString name = functionText(workbench_.record().choices.function);
     split_->setSplit(now.phase ? now.phase->split : std::nullopt, name, why);
+    const QString unknown = now.phase && now.phase->split ? unknownText(*now.phase->split) : QString();
+    unknown_->setText(unknown);
+    unknown_->setVisible(!unknown.isEmpty());
     const std::size_t used = now.phase && now.phase->fit ? now.phase->fit->used : 0;
     splitCard_->setNote(used == 0 ? QString() : used < 100000 ? readingsText(used) : tr("n = %1").arg(used));
     const std::vector<Finding> found = now.phase ? now.phase->findings : std::vector<Finding>{};

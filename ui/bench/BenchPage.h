@@ -76,6 +76,7 @@ class BenchPage : public QWidget {
     ChoiceButton* functionButton_;
     ChoiceButton* weightsButton_;
     QLabel* equation_;
+    QLabel* unknown_;
 };
 
 } // namespace spanwright

@@ -75,6 +75,8 @@ class PlotView : public QChartView {
     void leftNeededChanged();
 
   protected:
+    /// The next content is shown whole.
+    void forgetZoom() { zoomedAcross_ = zoomedUp_ = false; }
     void resizeEvent(QResizeEvent* event) override;
     void changeEvent(QEvent* event) override;
     bool viewportEvent(QEvent* event) override;

@@ -24,14 +24,18 @@ void ResidualPlot::setSubject(PlotSubject subject) {
 }
 
 void ResidualPlot::setView(ResidualView view) {
+    if (view != view_)
+        forgetZoom(); // a part of one axis is no part of another
     view_ = view;
     rebuild();
 }
 
 void ResidualPlot::showPart(std::optional<SplitPart> part) {
     part_ = part;
-    if (part && *part != SplitPart::Regression)
+    if (part && *part != SplitPart::Regression && view_ != ResidualView::Reference) {
+        forgetZoom();
         view_ = ResidualView::Reference;
+    }
     rebuild();
 }
 

@@ -111,6 +111,32 @@ class PlotsTest : public QObject {
         QVERIFY(line.frame().x.span() > 10);
     }
 
+    // Also beside a line plot whose axis it follows, and after a zoom.
+    void everyViewOfTheResidualsShowsAllOfThem() {
+        LinePlot line;
+        ResidualPlot residual;
+        PlotPair pair(line, residual);
+        line.setSubject(subjectOf(test::flowSensorAsTyped()));
+        residual.setSubject(subjectOf(test::flowSensorAsTyped()));
+        shown(line);
+        shown(residual);
+        QTest::keyClick(&line, Qt::Key_Plus);
+        for (const ResidualView view : residualViews) {
+            if (view == ResidualView::Reference)
+                continue;
+            residual.setView(view);
+            const AxisRange range = residual.frame().x;
+            double low = range.high, high = range.low;
+            for (const double x : residual.points().x)
+                if (std::isfinite(x)) {
+                    QVERIFY2(x >= range.low && x <= range.high, qPrintable(residualViewText(view, subjectOf(test::flowSensorAsTyped()))));
+                    low = std::min(low, x);
+                    high = std::max(high, x);
+                }
+            QVERIFY(view == ResidualView::Run || high - low > 0.8 * range.span());
+        }
+    }
+
     void aClickSelectsTheMarkUnderIt() {
         ResidualPlot plot;
         plot.setSubject(subjectOf(test::pressureTransmitter()));
