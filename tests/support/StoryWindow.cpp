@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "tests/support/StoryWindow.h"
 
+#include "ui/shell/PageStack.h"
+
 #include <QApplication>
 
 namespace spanwright::test {
@@ -14,6 +16,9 @@ StoryWindow::StoryWindow(const QString& home) : now(1'791'884'400'000), settings
     window_->activateWindow();
     if (!QTest::qWaitForWindowActive(window_.get()))
         QTest::qFail("the window did not become active", __FILE__, __LINE__);
+    const auto* pages = window_->findChild<PageStack*>();
+    if (!QTest::qWaitFor([&] { return pages->complete(); }))
+        QTest::qFail("the pages were not made", __FILE__, __LINE__);
 }
 
 QString StoryWindow::told() const {

@@ -8,6 +8,7 @@
 #include "ui/look/Card.h"
 #include "ui/shell/CommandFinder.h"
 #include "ui/shell/HelpDialogs.h"
+#include "ui/shell/PageStack.h"
 #include "ui/shell/Pages.h"
 #include "ui/shell/StageBar.h"
 #include "ui/shell/StatusLine.h"
@@ -24,7 +25,6 @@
 #include <QMenuBar>
 #include <QMimeData>
 #include <QScreen>
-#include <QStackedWidget>
 #include <QVBoxLayout>
 
 namespace spanwright {
@@ -79,7 +79,7 @@ QStringList localFiles(const QMimeData* data) {
 MainWindow::MainWindow(const WindowSurroundings& surroundings, QWidget* parent)
     : QMainWindow(parent), around_(surroundings), bench_(surroundings.clock), document_(bench_, surroundings.dataFolder),
       files_(this, bench_, document_, surroundings.settings, surroundings.dialogs), actions_(this), bar_(new StageBar),
-      pages_(new QStackedWidget), status_(new StatusLine) {
+      pages_(new PageStack), status_(new StatusLine) {
     setObjectName(QStringLiteral("mainWindow"));
     setAcceptDrops(true);
     resize(QSize(1440, 900).boundedTo(screen()->availableSize() - QSize(0, 40)));
@@ -100,8 +100,6 @@ MainWindow::MainWindow(const WindowSurroundings& surroundings, QWidget* parent)
     makeRecordMenu();
     makeViewMenu();
     makeHelpMenu();
-    for (int i = 0; i < pages_->count(); ++i)
-        actions_.adopt(pages_->widget(i));
     new UndoKeys(this);
     bar_->addAtEnd(actions_.find(QStringLiteral("edit.undo")), tr("Undo"));
     bar_->addAtEnd(actions_.find(QStringLiteral("edit.redo")), tr("Redo"));
@@ -113,9 +111,12 @@ MainWindow::MainWindow(const WindowSurroundings& surroundings, QWidget* parent)
     connect(&bench_, &Workbench::evaluatingChanged, status_, &StatusLine::setBusy);
     connect(&document_, &Document::stateChanged, this, &MainWindow::showState);
     connect(&files_, &FileDesk::imported, this, [this] { showStage(Stage::Bench); });
+    connect(&files_, &FileDesk::opened, this, &MainWindow::showFirstStage);
     showState();
     showCompleteness();
-    showStage(Stage::Job);
+    bar_->setCurrent(stage_);
+    // Whoever opens the window with a session or for a stage does so before this is called.
+    QMetaObject::invokeMethod(this, &MainWindow::showFirstStage, Qt::QueuedConnection);
 }
 
 MainWindow::~MainWindow() {
@@ -129,25 +130,31 @@ MainWindow::~MainWindow() {
 }
 
 void MainWindow::makePages() {
-    job_ = new JobPage(bench_);
-    budget_ = new BudgetPage(bench_);
     const PageLinks links{.showField = [this](const QString& stage, const QString& field) { showField(stage, field); },
                           .pdfPath = [this](QWidget* from, const QString& suggestion) { return around_.dialogs.pdfPath(from, suggestion); },
                           .tell = [this](QWidget* from, const QString& title,
                                          const QString& text) { around_.dialogs.tell(from, title, text); },
                           .path = [this] { return document_.path(); }};
-    pages_->addWidget(job_);
-    pages_->addWidget(makeBenchPage(bench_, links));
-    pages_->addWidget(budget_);
-    pages_->addWidget(makeCertificatePage(bench_, links));
+    pages_->append([this] { return job_ = new JobPage(bench_); });
+    pages_->append([this, links] { return makeBenchPage(bench_, links); });
+    pages_->append([this] { return budget_ = new BudgetPage(bench_); });
+    pages_->append([this, links] { return makeCertificatePage(bench_, links); });
+    connect(pages_, &PageStack::completed, this, &MainWindow::takeOverActions);
+}
+
+void MainWindow::showFirstStage() {
+    if (!begun_)
+        showStage(bench_.record().readings->empty() ? Stage::Job : Stage::Bench);
 }
 
 void MainWindow::showStage(Stage stage) {
+    begun_ = true;
     commitEditing();
     stage_ = stage;
     bar_->setCurrent(stage);
-    pages_->setCurrentIndex(static_cast<int>(stage));
-    if (!enterPage(pages_->currentWidget()))
+    QWidget* const page = pages_->page(static_cast<int>(stage));
+    pages_->setCurrentWidget(page);
+    if (!enterPage(page))
         goToPart(0);
 }
 
@@ -211,6 +218,7 @@ void MainWindow::showCompleteness() {
 }
 
 void MainWindow::findCommand() {
+    pages_->makeAll();
     CommandFinder finder(actions_.all(), this);
     if (around_.dialogs.run(finder) && finder.chosen())
         finder.chosen()->trigger();

@@ -11,12 +11,12 @@
 #include <QMainWindow>
 
 class QLabel;
-class QStackedWidget;
 
 namespace spanwright {
 
 class BudgetPage;
 class JobPage;
+class PageStack;
 class StageBar;
 class StatusLine;
 
@@ -55,9 +55,13 @@ class MainWindow : public QMainWindow {
 
   private:
     void makePages();
+    /// A session with readings starts on the bench; nothing is done when a stage has been chosen.
+    void showFirstStage();
     void makeFileMenu();
     void makeEditMenu();
     void makeRecordMenu();
+    /// What the pages offer, into the menu and among the commands, when all of them are there.
+    void takeOverActions();
     void makeViewMenu();
     void makeHelpMenu();
     void fillRecent(QMenu* menu);
@@ -79,11 +83,13 @@ class MainWindow : public QMainWindow {
     FileDesk files_;
     Actions actions_;
     StageBar* bar_;
-    QStackedWidget* pages_;
+    PageStack* pages_;
     StatusLine* status_;
     JobPage* job_ = nullptr;
     BudgetPage* budget_ = nullptr;
+    QMenu* recordMenu_ = nullptr;
     Stage stage_ = Stage::Job;
+    bool begun_ = false; ///< whether a stage has been shown
 };
 
 } // namespace spanwright

@@ -4,6 +4,7 @@
 #include "ui/selftest/SelfTestDialog.h"
 #include "ui/shell/HelpDialogs.h"
 #include "ui/shell/JournalDialog.h"
+#include "ui/shell/PageStack.h"
 
 #include <QApplication>
 #include <QFileInfo>
@@ -77,14 +78,9 @@ void MainWindow::makeEditMenu() {
 }
 
 void MainWindow::makeRecordMenu() {
-    QMenu* menu = menuBar()->addMenu(tr("&Record"));
+    QMenu* menu = recordMenu_ = menuBar()->addMenu(tr("&Record"));
     menu->setObjectName(QStringLiteral("menu.record"));
-    for (int i = 0; i < pages_->count(); ++i) {
-        for (QAction* action : pages_->widget(i)->actions())
-            menu->addAction(action);
-        if (!pages_->widget(i)->actions().isEmpty())
-            menu->addSeparator();
-    }
+    connect(menu, &QMenu::aboutToShow, pages_, &PageStack::makeAll);
     connect(actions_.add(menu, {"record.person", tr("Your &initials\u2026"), QKeySequence(QStringLiteral("Ctrl+Shift+I"))}),
             &QAction::triggered, this, &MainWindow::askPerson);
     connect(actions_.add(menu, {"record.journal", tr("&Journal\u2026"), QKeySequence(QStringLiteral("Ctrl+J"))}), &QAction::triggered, this,
@@ -92,6 +88,17 @@ void MainWindow::makeRecordMenu() {
                 JournalDialog dialog(bench_.record(), this);
                 around_.dialogs.run(dialog);
             });
+}
+
+void MainWindow::takeOverActions() {
+    QAction* const own = recordMenu_->actions().constFirst();
+    for (int i = 0; i < pages_->count(); ++i) {
+        QWidget* const page = pages_->page(i);
+        recordMenu_->insertActions(own, page->actions());
+        if (!page->actions().isEmpty())
+            recordMenu_->insertSeparator(own);
+        actions_.adopt(page);
+    }
 }
 
 void MainWindow::makeViewMenu() {

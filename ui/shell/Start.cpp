@@ -75,8 +75,8 @@ int runWindow(QApplication& application, const StartOptions& options) {
         window->show();
         if (!file.isEmpty())
             window->files().openPath(QFileInfo(file).absoluteFilePath());
-        const Stage usual = window->workbench().record().readings->empty() ? Stage::Job : Stage::Bench;
-        window->showStage(options.stage.value_or(usual));
+        if (options.stage)
+            window->showStage(*options.stage);
     }
     return QApplication::exec();
 }

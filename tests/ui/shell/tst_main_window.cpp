@@ -5,6 +5,7 @@
 #include "ui/commands/FieldForm.h"
 #include "ui/commands/ReadingCommands.h"
 #include "ui/shell/MainWindow.h"
+#include "ui/shell/PageStack.h"
 #include "ui/words/EnglishPlurals.h"
 
 #include <QAbstractItemView>
@@ -40,6 +41,8 @@ struct Desk {
         window = std::make_unique<MainWindow>(WindowSurroundings{settings, dialogs, [] { return noon; }, folder.filePath("data")});
         window->show();
         QVERIFY(QTest::qWaitForWindowActive(window.get()));
+        const auto* pages = window->findChild<PageStack*>();
+        QVERIFY(QTest::qWaitFor([&] { return pages->complete(); }));
     }
     const Record& record() const { return window->workbench().record(); }
     template <class T = QWidget>
