@@ -12,6 +12,7 @@
 
 #include <QCoreApplication>
 
+#include <algorithm>
 #include <array>
 #include <ostream>
 
@@ -22,10 +23,19 @@ namespace {
 constexpr OptionSpec ownOptions[] = {{"--with"}, {"--to"}, {"--replace", OptionKind::Flag}, {"--phase"}, {"--repeats"},
                                      {"--indication"}, {"--decimal"}, {"--separator"}, {"--encoding"}, {"--missing"}};
 
-/// The columns behind those of the table.
-std::array<AddedColumn, 4> addedColumns(const Quantity& reference) {
-    return {AddedColumn{reference.name.empty() ? "value" : reference.name, reference.unit}, AddedColumn{"U", reference.unit},
-            AddedColumn{"k", {}}, AddedColumn{"remark", {}}};
+/// The columns behind those of the table, under names that it does not use yet.
+std::array<AddedColumn, 4> addedColumns(const Quantity& reference, const CsvRules& rules) {
+    std::array<AddedColumn, 4> added{AddedColumn{reference.name.empty() ? "value" : reference.name, reference.unit}, AddedColumn{"U", reference.unit},
+                                     AddedColumn{"k", {}}, AddedColumn{"remark", {}}};
+    const auto used = [&](const std::string& name) {
+        return std::any_of(rules.columns.begin(), rules.columns.end(), [&](const CsvColumn& column) { return column.name == name; });
+    };
+    for (AddedColumn& column : added) {
+        const std::string name = column.name;
+        for (int number = 2; used(column.name); ++number)
+            column.name = name + ' ' + std::to_string(number);
+    }
+    return added;
 }
 
 std::string remark(const ReadValue& value) {
@@ -137,7 +147,7 @@ int convertCommand(const Words& words, Console console) {
         console.err << "spanwright: " << with << ": there are readings as left too; --phase as-left takes their function\n";
     Conversion conversion(record, *phase, indications->values);
     const DecimalMark mark = indications->rules.columns[indications->column].decimal;
-    const auto table = withAddedColumns(indications->file.bytes(), rulesOfResult(*indications, *arguments), mark, addedColumns(record.item.reference),
+    const auto table = withAddedColumns(indications->file.bytes(), rulesOfResult(*indications, *arguments), mark, addedColumns(record.item.reference, indications->rules),
                                         [&](std::size_t row) { return conversion.cells(row); });
     if (!table)
         return refuse(console, table.error().with("file", from));

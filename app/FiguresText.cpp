@@ -159,10 +159,12 @@ QString answersText(const Record& record, const PhaseEvaluation& e) {
         at.add(cells);
     }
     TextTable read({tr("Read ") + withUnit(tr("indication"), record.item.indication.unit), withUnit(tr("reference"), record.item.reference.unit),
-                    tr("standard uncertainty"), tr("%1 interval").arg(coverage)});
-    for (const ReadBackAnswer& r : e.read)
+                    tr("standard uncertainty"), tr("%1 interval").arg(coverage), tr("U of the budget"), tr("k"), {}});
+    for (const ReadValue& r : e.read) {
+        const StatedValue stated = statedValue(r, e.budget.readBack);
         read.add({figure(r.indication, 10), r.reference ? figure(*r.reference, 10) : tr("none"), figure(r.standardUncertainty, 4),
-                  interval(r.low, r.high)});
+                  interval(r.low, r.high), QString::fromStdString(stated.expanded), QString::fromStdString(stated.coverageFactor), valueStateText(r.state)});
+    }
     QString text;
     for (const TextTable* table : {&at, &read})
         if (!table->empty())

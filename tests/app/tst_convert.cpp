@@ -175,6 +175,10 @@ void TestConvert::whatTheTableHoldsStaysAsItIs() {
     const std::vector<AddedColumn> added{{"c", "V"}, {"d", {}}};
     const auto spaced = withAddedColumns("a b\n1 2 \n", *rules, DecimalMark::Point, added, [](std::size_t) { return std::vector<AddedCell>{{"1.5", true}, {}}; });
     QCOMPARE(QString::fromStdString(*spaced), QStringLiteral("a b \"c / V\" d\n1 2  1.5 \"\"\n"));
+    // A table that was converted before gets further columns, not the same names once more.
+    const std::string again = desk.path("again.csv");
+    QCOMPARE(runWords({"convert", out, "--with", file, "--to", again, "--indication", "2"}).status, 0);
+    QVERIFY2(bytesOf(again).contains(";pressure;U;k;remark;pressure 2;U 2;k 2;remark 2\r\n"), bytesOf(again).constData());
     // Without a header there is none to add to.
     QCOMPARE(runWords({"convert", desk.file("bare.csv", "12.000\n13.000\n"), "--with", file, "--to", out, "--replace"}).status, 0);
     QVERIFY2(bytesOf(out).startsWith("12.000,5.000"), bytesOf(out).constData());
