@@ -43,7 +43,8 @@ void hysteresis(const FindingsInput& input, std::vector<Finding>& found) {
     Finding finding;
     finding.code = FindingCode::Hysteresis;
     finding.severity = Severity::Attention;
-    finding.remedy = Remedy::CarryToBudget;
+    // Where rising and falling are stated apart, their difference is no part of U.
+    finding.remedy = input.record.choices.separateDirections ? Remedy::SeeReadings : Remedy::CarryToBudget;
     double gap = 0, setPoint = 0;
     for (const SetPointMeans& point : input.split->setPoints)
         if (point.rising && point.falling && std::abs(*point.falling - *point.rising) > gap) {

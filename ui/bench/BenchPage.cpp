@@ -41,6 +41,8 @@
 #include <QSplitter>
 #include <QVBoxLayout>
 
+#include <algorithm>
+
 namespace spanwright {
 
 namespace {
@@ -279,7 +281,9 @@ void BenchPage::refresh() {
     splitCard_->setNote(used == 0 ? QString() : used < 100000 ? readingsText(used) : tr("n = %1").arg(used));
     const std::vector<Finding> found = now.phase ? now.phase->findings : std::vector<Finding>{};
     findings_->setFindings(found, workbench_.record(), now.phase && now.phase->fit ? tr("Nothing stands out.") : tr("Findings appear here as readings come in."));
-    findingsCard_->setNote(found.empty() ? QString() : QString::number(found.size()));
+    const auto dismissed = std::count_if(found.begin(), found.end(), [&](const Finding& finding) { return dismissalOf(finding, workbench_.record()) != nullptr; });
+    const qsizetype open = static_cast<qsizetype>(found.size()) - dismissed;
+    findingsCard_->setNote(found.empty() ? QString() : dismissed == 0 ? QString::number(open) : tr("%1, %2 dismissed").arg(open).arg(dismissed));
     QString words;
     if (now.phase && now.phase->fit) {
         const Fit& fit = *now.phase->fit;
@@ -369,7 +373,7 @@ void BenchPage::showDegrees() {
 void BenchPage::follow(const Finding& finding) {
     switch (finding.remedy) {
     case Remedy::CompareFunction: (new CompareDialog(workbench_, CompareDialog::withFunction(workbench_.record(), finding.suggestion), this))->open(); break;
-    case Remedy::CarryToBudget: emit budgetRequested(budgetLineOf(finding.code)); break;
+    case Remedy::CarryToBudget: carryToBudget(budgetLineOf(finding.code)); break;
     case Remedy::SeeExclusions: showExclusions(); break;
     case Remedy::SeeReadings:
         workbench_.select({finding.rows.begin(), finding.rows.end()});
@@ -385,6 +389,16 @@ void BenchPage::follow(const Finding& finding) {
     }
     case Remedy::None: break;
     }
+}
+
+/// A line that was left out counts again; one that counts is shown.
+void BenchPage::carryToBudget(std::optional<DerivedLine> line) {
+    const auto& omitted = workbench_.record().budget.omitted;
+    if (line && !workbench_.readOnly() && std::any_of(omitted.begin(), omitted.end(), [&](const OmittedLine& one) { return one.line == *line; }))
+        workbench_.perform(changePart(workbench_.record(), &Record::budget, tr("take %1 into the budget").arg(derivedLineText(*line)), [line](BudgetInput& budget) {
+            std::erase_if(budget.omitted, [&](const OmittedLine& one) { return one.line == *line; });
+        }));
+    emit budgetRequested(line);
 }
 
 void BenchPage::dismiss(const Finding& finding) {

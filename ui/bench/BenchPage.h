@@ -52,6 +52,7 @@ class BenchPage : public QWidget {
     void exclude();
     void readmit();
     void follow(const Finding& finding);
+    void carryToBudget(std::optional<DerivedLine> line);
     void dismiss(const Finding& finding);
     void recall(const Finding& finding);
     void showExclusions();

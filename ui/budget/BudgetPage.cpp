@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/budget/BudgetPage.h"
 
+#include "core/record/Fields.h"
 #include "ui/budget/ContributionsCard.h"
 #include "ui/budget/LimitsCard.h"
 #include "ui/budget/ManualLinesCard.h"
@@ -45,6 +46,9 @@ BudgetPage::BudgetPage(Workbench& bench, QWidget* parent)
 void BudgetPage::prepareField(const QString& field) {
     if (field.startsWith(QLatin1String("budget.lines.")))
         lines_->choose(field.section(QLatin1Char('.'), 2, 2).toInt());
+    if (field.startsWith(QLatin1String("budget.contributions.")))
+        if (const auto line = valueOf<DerivedLine>(field.section(QLatin1Char('.'), 2).toStdString()))
+            contributions_->choose(*line);
 }
 
 } // namespace spanwright

@@ -115,6 +115,16 @@ void ContributionsCard::showPoint(int point) {
     show();
 }
 
+void ContributionsCard::choose(DerivedLine line) {
+    const auto evaluation = bench_.evaluation();
+    const SetPointBudget* b = budget(*evaluation);
+    for (std::size_t i = 0; b && i < b->items.size(); ++i)
+        if (b->items[i].derived == line) {
+            view_->selectRow(static_cast<int>(i));
+            view_->scrollTo(table_->index(static_cast<int>(i), 0));
+        }
+}
+
 const SetPointBudget* ContributionsCard::budget(const Evaluation& evaluation) const {
     const PhaseEvaluation* phase = evaluation.phase(bench_.record().choices.phase);
     if (!phase || point_ < 0 || point_ >= static_cast<int>(phase->verdict.points.size()))

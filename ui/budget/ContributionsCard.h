@@ -23,6 +23,8 @@ class ContributionsCard : public Card {
   public:
     explicit ContributionsCard(Workbench& bench, QWidget* parent = nullptr);
     void showPoint(int point);
+    /// Marks the line of the budget at the chosen set point, if it is there.
+    void choose(DerivedLine line);
 
   private:
     void show();

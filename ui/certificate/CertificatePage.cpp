@@ -5,6 +5,7 @@
 #include "ui/certificate/PagePreview.h"
 #include "ui/certificate/SignOffCard.h"
 #include "ui/certificate/writeCertificate.h"
+#include "ui/commands/FieldForm.h"
 #include "ui/look/Card.h"
 #include "ui/look/Look.h"
 #include "ui/words/Words.h"
@@ -100,6 +101,8 @@ QWidget* CertificatePage::buildSide() {
     }
     buttons->addStretch(1);
     draft->body()->addLayout(buttons);
+    draft->body()->addWidget(fieldCheck(workbench_, QStringLiteral("choices.split_on_certificate"), tr("Print the variance split on the second page"),
+                                        &Record::choices, [](Choices& choices) -> bool& { return choices.splitOnCertificate; }));
     column->addWidget(draft);
 
     auto* list = new Card(tr("Checklist"));

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/shell/Pages.h"
 
+#include "core/record/Fields.h"
 #include "core/session/SameNumber.h"
 #include "ui/bench/BenchPage.h"
 #include "ui/certificate/CertificatePage.h"
@@ -10,7 +11,10 @@ namespace spanwright {
 QWidget* makeBenchPage(Workbench& bench, const PageLinks& links) {
     auto* page = new BenchPage(bench);
     QObject::connect(page, &BenchPage::budgetRequested, page,
-                     [links](std::optional<DerivedLine>) { links.showField(QStringLiteral("budget"), QStringLiteral("budget.contributions")); });
+                     [links](std::optional<DerivedLine> line) {
+                         const QString field = QStringLiteral("budget.contributions");
+                         links.showField(QStringLiteral("budget"), line ? field + QLatin1Char('.') + QLatin1String(nameOf(*line).data()) : field);
+                     });
     QObject::connect(page, &BenchPage::planRequested, page,
                      [links] { links.showField(QStringLiteral("job"), QStringLiteral("plan.set_points")); });
     return page;

@@ -588,7 +588,7 @@ class BenchTest : public QObject {
         auto* choice = dialog->findChild<QComboBox*>(QStringLiteral("compareWith"));
         auto* effect = dialog->findChild<QWidget*>(QStringLiteral("effectTable"));
         auto* take = dialog->findChild<QPushButton*>(QStringLiteral("takeOver"));
-        QCOMPARE(choice->currentText(), QStringLiteral("Robust fit"));
+        QVERIFY(choice->currentText().startsWith(QStringLiteral("Robust")));
         QTRY_VERIFY(effect->accessibleDescription().contains(QStringLiteral("value at 5 bar, mA\t11.9999\t12.0000")));
         QVERIFY(take->isHidden()); // for comparison only
         choice->setCurrentIndex(choice->findText(QStringLiteral("Polynomial of degree 3")));

@@ -228,6 +228,29 @@ class MainWindowTest : public QObject {
         QCOMPARE(contributions->model()->rowCount(), rows);
     }
 
+    // The finding's link ends at the line of the budget that holds it, taken back in where it was left out.
+    void hysteresisIsCarriedFromTheBenchToItsLineOfTheBudget() {
+        Desk desk;
+        Record record = test::pressureTransmitter();
+        record.choices.separateDirections = false;
+        record.budget.omitted.push_back({DerivedLine::Hysteresis, "not asked for"});
+        desk.window->workbench().setRecord(record);
+        desk.trigger("view.bench");
+        QToolButton* carry = nullptr;
+        for (QToolButton* link : desk.window->findChildren<QToolButton*>(QStringLiteral("remedy")))
+            if (link->text() == QStringLiteral("Carry to the budget"))
+                carry = link;
+        QVERIFY(carry);
+        carry->click();
+        QVERIFY(desk.record().budget.omitted.empty());
+        auto* contributions = desk.find<QAbstractItemView>("budget.contributions");
+        QVERIFY(contributions->isVisible());
+        QVERIFY(contributions->currentIndex().isValid());
+        QVERIFY(contributions->currentIndex().siblingAtColumn(0).data().toString().contains(QStringLiteral("hysteresis")));
+        desk.trigger("edit.undo");
+        QCOMPARE(desk.record().budget.omitted.size(), std::size_t{1});
+    }
+
     void aCoverageBeyondReasonIsRefused() {
         Desk desk;
         desk.trigger("view.budget");
