@@ -30,6 +30,8 @@ enum class FindingCode {
     OutsideBand,
     DegreeNotJustified,
     ThroughZeroNotSupported,
+    StatedTooSmall,
+    StatedTooLarge,
     RepeatedReading,
     Extrapolation,
 };

@@ -43,6 +43,10 @@ std::string_view findingName(FindingCode code) {
         return "degree-not-justified";
     case FindingCode::ThroughZeroNotSupported:
         return "through-zero-not-supported";
+    case FindingCode::StatedTooSmall:
+        return "stated-too-small";
+    case FindingCode::StatedTooLarge:
+        return "stated-too-large";
     case FindingCode::RepeatedReading:
         return "repeated-reading";
     case FindingCode::Extrapolation:

@@ -11,6 +11,9 @@ void addFunctionFindings(const FindingsInput& input, std::vector<Finding>& found
 void addRunFindings(const FindingsInput& input, std::vector<Finding>& found);
 void addScatterFindings(const FindingsInput& input, const std::vector<double>& deviations, std::vector<Finding>& found);
 void addReadingFindings(const FindingsInput& input, const std::vector<double>& deviations, std::vector<Finding>& found);
+/// χ² of the stated uncertainties where they are taken as they are: above its 95 % quantile they do not explain the residuals (ISO/TS
+/// 28037:2010, 6.3), below the 1 % quantile the residuals are smaller than they ought to be (common practice).
+void addStatedFindings(const Fit& fit, std::vector<Finding>& found);
 void addRecordFindings(const FindingsInput& input, std::vector<Finding>& found);
 
 /// Lack of fit as it is judged: after direction and run where the readings are unbalanced, against repeatability where

@@ -14,12 +14,13 @@ namespace {
 /// worth knowing.
 constexpr std::array order{
     FindingCode::LackOfFit,       FindingCode::HiddenCurvature,    FindingCode::ThroughZeroNotSupported,
+    FindingCode::StatedTooSmall,
     FindingCode::Outlier,         FindingCode::SetPointExcluded,   FindingCode::ManyExcluded,
     FindingCode::TooFewReadings,  FindingCode::Extrapolation,      FindingCode::Hysteresis,
     FindingCode::FirstRunDiffers, FindingCode::RunZeroShift,       FindingCode::RunGainChange,
     FindingCode::ScatterGrows,    FindingCode::Autocorrelated,     FindingCode::Influential,
     FindingCode::Straggler,       FindingCode::DegreeNotJustified, FindingCode::OutsideBand,
-    FindingCode::RepeatedReading, FindingCode::NonNormal,          FindingCode::ExcludedReadings};
+    FindingCode::RepeatedReading, FindingCode::StatedTooLarge,     FindingCode::NonNormal,          FindingCode::ExcludedReadings};
 
 /// More set points than this are a logger's record: what repeats there is by chance.
 constexpr std::size_t mostSetPoints = 10'000;
@@ -113,6 +114,8 @@ std::vector<Finding> findings(const FindingsInput& input) {
         addReadingFindings(input, deviations, found);
         addScatterFindings(input, deviations, found);
     }
+    if (input.fit)
+        addStatedFindings(*input.fit, found);
     addRecordFindings(input, found);
     std::stable_sort(found.begin(), found.end(), [](const Finding& a, const Finding& b) {
         return a.severity != b.severity ? a.severity > b.severity : rank(a.code) < rank(b.code);

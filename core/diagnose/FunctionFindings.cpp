@@ -219,4 +219,23 @@ void addFunctionFindings(const FindingsInput& input, std::vector<Finding>& found
     extrapolation(input, found);
 }
 
+void addStatedFindings(const Fit& fit, std::vector<Finding>& found) {
+    constexpr double small = 0.01;
+    if (fit.covarianceScale != CovarianceScale::Stated || !fit.chiSquaredP)
+        return;
+    const double p = *fit.chiSquaredP;
+    Finding finding;
+    finding.figures = {{"chi_squared", *fit.chiSquared}, {"degrees_of_freedom", static_cast<double>(fit.degreesOfFreedom)}, {"p", p}};
+    finding.remedy = Remedy::ChooseWeights;
+    if (p < doubtful) {
+        finding.code = FindingCode::StatedTooSmall;
+        finding.severity = p < certain ? Severity::Serious : Severity::Attention;
+        found.push_back(finding);
+    } else if (1 - p < small) {
+        finding.code = FindingCode::StatedTooLarge;
+        finding.severity = Severity::Note;
+        found.push_back(finding);
+    }
+}
+
 } // namespace spanwright

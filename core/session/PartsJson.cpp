@@ -107,7 +107,7 @@ class PartReader {
         using Range = std::numeric_limits<int>;
         number = static_cast<int>(scan_.integer(pointer_, Range::min(), Range::max()));
     }
-    void read(ReadingId& id) { id = scan_.integer(pointer_, 1, LargestReadingId); }
+    void read(ReadingId& id) { id = scan_.integer(pointer_, 0, LargestReadingId); } // 0 is none
     void read(Decimal& number) {
         const std::string text = scan_.atString() ? scan_.string() : std::string(scan_.skip());
         auto parsed = Decimal::parse(text);

@@ -71,8 +71,10 @@ FindingsView::FindingsView(QWidget* parent) : QScrollArea(parent) {
 
 void FindingsView::setFindings(std::vector<Finding> findings, const Record& record, const QString& whenNone) {
     while (QLayoutItem* item = list_->takeAt(0)) {
-        if (item->widget())
+        if (item->widget()) {
+            item->widget()->hide(); // it may stay for a while: a dialog that is open holds deletion back
             item->widget()->deleteLater();
+        }
         delete item;
     }
     findings_ = std::move(findings);

@@ -63,6 +63,9 @@ QString FindingText::sentence(const Finding& finding) {
     case FindingCode::OutsideBand: return tr("Readings lie outside the band in which new readings are expected.");
     case FindingCode::DegreeNotJustified: return tr("The highest term of the function is not supported by the readings.");
     case FindingCode::ThroughZeroNotSupported: return tr("A line through zero is not supported: the constant differs from zero.");
+    case FindingCode::StatedTooSmall:
+        return tr("The residuals are larger than the stated uncertainties explain: the function does not fit, or the uncertainties are too small.");
+    case FindingCode::StatedTooLarge: return tr("The residuals are smaller than the stated uncertainties let expect; they may be stated too large.");
     case FindingCode::RepeatedReading: return tr("A reading is identical to the one before it. Was it read afresh?");
     case FindingCode::Extrapolation: return tr("A value asked for lies outside the calibrated range.");
     }
@@ -80,6 +83,7 @@ constexpr FigurePattern patterns[] = {
     {"f_naive", QT_TRANSLATE_NOOP("FindingText", "F pooled = %1")},
     {"percent_of_span", QT_TRANSLATE_NOOP("FindingText", "%1 % of span")},
     {"run", QT_TRANSLATE_NOOP("FindingText", "run %1")},
+    {"chi_squared", QT_TRANSLATE_NOOP("FindingText", "χ² = %1")},
     {"t", QT_TRANSLATE_NOOP("FindingText", "t = %1")},
     {"w", QT_TRANSLATE_NOOP("FindingText", "W = %1")},
     {"r", QT_TRANSLATE_NOOP("FindingText", "%1 standard deviations out")},

@@ -275,6 +275,24 @@ class FindingsTest : public QObject {
         QVERIFY(digitsAgreed(figure(*finding, "f"), t * t) > 9);
     }
 
+    void statedUncertaintiesAreHeldAgainstTheResiduals() {
+        Record record = madeRecord(nothing);
+        record.choices.weights = Weights::Stated;
+        record.choices.covariance = CovarianceScale::Stated;
+        const auto state = [&](const char* u) {
+            for (std::size_t i = 0; i < record.readings->size(); ++i)
+                record.readings.edit().setNumber(i, NumberColumn::UIndication, *Decimal::parse(u));
+            return findingsOf(record);
+        };
+        const auto small = state("0.000001"), large = state("1000");
+        QVERIFY(find(small, FindingCode::StatedTooSmall) && !find(small, FindingCode::StatedTooLarge));
+        QCOMPARE(find(small, FindingCode::StatedTooSmall)->severity, Severity::Serious);
+        QVERIFY(find(large, FindingCode::StatedTooLarge) && !find(large, FindingCode::StatedTooSmall));
+        record.choices.covariance = CovarianceScale::Residuals; // then only their ratios count
+        const auto scaled = state("1000");
+        QVERIFY(!find(scaled, FindingCode::StatedTooLarge));
+    }
+
     void exclusionsAreListedAndTooManyAreSaid() {
         Record record = madeRecord(nothing);
         const auto exclude = [&](ReadingId id) {
