@@ -18,6 +18,12 @@
 
 namespace spanwright {
 
+namespace {
+
+constexpr int DigitsOfSeveral = 6; // where no uncertainty says how many to trust
+
+} // namespace
+
 ConvertDialog::ConvertDialog(Workbench& workbench, QWidget* parent)
     : QDialog(parent), workbench_(workbench), indication_(new NumberEdit), repeats_(new QSpinBox), value_(new QLabel), interval_(new QLabel), warnings_(new QLabel) {
     setObjectName(QStringLiteral("convertDialog"));
@@ -92,6 +98,12 @@ void ConvertDialog::showValue(const ReadValue& value, const StatedValue& stated,
         value_->setText(tr("%1 %2, U = %3 %2 (k = %4)").arg(shown(stated.value), unit, shown(stated.expanded), shown(stated.coverageFactor)));
     else if (!stated.value.empty())
         value_->setText(tr("%1 %2, without an uncertainty").arg(shown(stated.value), unit));
+    else if (value.state == ValueState::SeveralAnswers) {
+        QStringList answers{significantText(*value.reference, DigitsOfSeveral)};
+        for (const double other : value.others)
+            answers << significantText(other, DigitsOfSeveral);
+        value_->setText(tr("%1 %2, without an uncertainty").arg(answers.join(tr(" or ")), unit));
+    }
 }
 
 void ConvertDialog::showInterval(const ReadValue& value, const PhaseEvaluation& phase, const QString& unit) {

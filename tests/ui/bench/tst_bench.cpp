@@ -643,6 +643,21 @@ class BenchTest : public QObject {
         dialog->findChild<QLineEdit*>(QStringLiteral("convertIndication"))->clear();
         QTest::keyClicks(dialog->findChild<QLineEdit*>(QStringLiteral("convertIndication")), QStringLiteral("25.1"));
         QCOMPARE(dialog->findChild<QLabel*>(QStringLiteral("convertValue"))->text(), QStringLiteral("13.1870 bar, without an uncertainty"));
+        // y = x²: 4 belongs to −2 and 2, and both are shown.
+        Record turning;
+        for (const char* x : {"-3", "-2", "-1", "0", "1", "2", "3"}) {
+            Reading reading;
+            reading.id = turning.nextReadingId++;
+            reading.reference = test::number(x);
+            reading.indication = Decimal{reading.reference->mantissa * reading.reference->mantissa, 0, {}};
+            turning.readings.edit().append(reading);
+        }
+        turning.choices.function = {FunctionFamily::Polynomial, 2};
+        bench.workbench.setRecord(turning);
+        bench.workbench.settle();
+        dialog->findChild<QLineEdit*>(QStringLiteral("convertIndication"))->setText(QStringLiteral("4"));
+        const QString both = dialog->findChild<QLabel*>(QStringLiteral("convertValue"))->text();
+        QVERIFY2(both.contains(QStringLiteral("2.00000")) && both.contains(QStringLiteral("−2.00000")), qPrintable(both));
     }
 
     void goingOnAsLeftIsGuarded() {
