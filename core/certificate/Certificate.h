@@ -156,6 +156,7 @@ enum class Statement {
     AsFoundNotAccepted,      ///< inside the limits, but not every error inside the acceptance limits
     HysteresisLeft,          ///< as-left errors of opposite sign at one set point: no trim removes hysteresis; facts: set_point, unit
     ManyExcluded,            ///< facts: phase, count, of, limit
+    SetPointExcluded,        ///< every reading there is; facts: phase, set_point, unit
     NoAsFound,               ///< facts: reason
     Replaces,                ///< facts: number, reason
     ErrorSign,

@@ -71,6 +71,17 @@ bool exceedsLimit(const PhaseEvaluation& phase, double limit) {
     return static_cast<double>(phase.excluded) > limit * static_cast<double>(phase.complete);
 }
 
+/// Set points at which every reading is excluded.
+std::vector<double> emptiedSetPoints(const PhaseEvaluation& phase) {
+    std::vector<double> setPoints;
+    for (const Finding& finding : phase.findings)
+        if (finding.code == FindingCode::SetPointExcluded)
+            for (const Figure& figure : finding.figures)
+                if (figure.name == "set_point")
+                    setPoints.push_back(figure.value);
+    return setPoints;
+}
+
 std::vector<StatementLine> noticesOf(const Record& record, const Evaluation& evaluation) {
     std::vector<StatementLine> notices;
     if (!record.job.replaces.empty())
@@ -93,6 +104,11 @@ std::vector<StatementLine> noticesOf(const Record& record, const Evaluation& eva
         if (const PhaseEvaluation* phase = evaluation.phase(which); phase != nullptr && exceedsLimit(*phase, limit))
             notices.push_back({Statement::ManyExcluded, {{"phase", std::string(nameOf(which))}, {"count", std::to_string(phase->excluded)},
                                                          {"of", std::to_string(phase->complete)}, {"limit", shortText(std::stod(roundedText(100 * limit, 2)))}}});
+    for (const Phase which : bothPhases)
+        if (const PhaseEvaluation* phase = evaluation.phase(which))
+            for (const double setPoint : emptiedSetPoints(*phase))
+                notices.push_back({Statement::SetPointExcluded, {{"phase", std::string(nameOf(which))}, {"set_point", shortText(setPoint)},
+                                                                 {"unit", record.item.reference.unit}}});
     if (const auto setPoint = hysteresisLeft(evaluation.phase(Phase::AsLeft)))
         notices.push_back({Statement::HysteresisLeft, {{"set_point", shortText(*setPoint)}, {"unit", record.item.reference.unit}}});
     for (const Evaluation::OverdueStandard& late : evaluation.overdue) {

@@ -88,7 +88,7 @@ ReadingsTable::ReadingsTable(Workbench& workbench, QWidget* parent)
     connect(&workbench_, &Workbench::evaluationChanged, this, &ReadingsTable::measureColumns);
     connect(model_, &QAbstractItemModel::modelReset, this, &ReadingsTable::measureColumns);
     // While nobody works in the table it follows what is taken.
-    connect(&workbench_, &Workbench::recordChanged, this, [this, last = -1]() mutable {
+    connect(&workbench_, &Workbench::recordChanged, this, [this, last = model_->taken()]() mutable {
         if (last != model_->taken() && !hasFocus() && !isAncestorOf(QApplication::focusWidget()))
             scrollTo(model_->nextCell());
         last = model_->taken();

@@ -52,6 +52,9 @@ QString CertificateText::of(Statement statement, Sentence& facts) {
     case Statement::ManyExcluded:
         return tr("Of the %1 readings %2, %3 are excluded, more than the limit of %4 %. They are listed with their reasons.")
             .arg(facts.plain("of"), phaseOf(facts), facts.plain("count"), digitsText(facts.plain("limit").toStdString()));
+    case Statement::SetPointExcluded:
+        return tr("Every reading %1 at %2 %3 is excluded, so no result is stated there.")
+            .arg(phaseOf(facts), digitsText(facts.plain("set_point").toStdString()), facts.plain("unit"));
     case Statement::NoAsFound:
         return tr("Results from before the adjustment are not available: %1.").arg(stated(facts, "reason"));
     case Statement::Replaces:

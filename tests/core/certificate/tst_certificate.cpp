@@ -162,6 +162,15 @@ class CertificateTest : public QObject {
         QVERIFY(said());
         record.choices.exclusionLimit = test::number("0.15");
         QVERIFY(!said());
+        // All six readings at 5 bar: it is said that no result stands there.
+        record.exclusions.edit() = {};
+        for (std::size_t row = 0; row < 66; ++row)
+            if (record.readings->setPoint().toDouble(row) == 5)
+                record.exclusions.edit().add({record.readings->ids()[row], ExclusionReason::Disturbance, {}, "IO", 0});
+        const auto notices = certificateOf(record).notices;
+        const auto emptied = std::find_if(notices.begin(), notices.end(), [](const StatementLine& line) { return line.statement == Statement::SetPointExcluded; });
+        QVERIFY(emptied != notices.end());
+        QCOMPARE(emptied->facts[1].value, std::string("5"));
     }
 
     void statesForceFiguresWhereTheItemWasTurned() {
