@@ -54,6 +54,13 @@ std::vector<double> placesOf(const Fit& fit, const Choices& choices) {
     return places;
 }
 
+/// As many digits as the scatter about this function leaves sense in.
+QString valueText(const Fit& fit, double x) {
+    const double s = std::sqrt(fit.curve->readingVariance(x));
+    const int decimals = s > 0 ? std::clamp(1 - static_cast<int>(std::floor(std::log10(s))), 0, 12) : 4;
+    return fixedText(fit.curve->value(x), decimals);
+}
+
 void addValues(std::vector<EffectRow>& rows, const PhaseEvaluation* now, const PhaseEvaluation* trial, const Record& record) {
     if (!now || !trial || !now->fit || !trial->fit || now->fit->direction != trial->fit->direction)
         return;
@@ -62,13 +69,11 @@ void addValues(std::vector<EffectRow>& rows, const PhaseEvaluation* now, const P
     const bool forward = now->fit->direction == FitDirection::Indication;
     const QString in = QString::fromStdString(forward ? item.reference.unit : item.indication.unit);
     const QString out = QString::fromStdString(forward ? item.indication.unit : item.reference.unit);
-    const double s = now->fit->weights == Weights::Equal ? now->fit->residualSd : std::sqrt(now->fit->curve->readingVariance(now->fit->low));
-    const int decimals = s > 0 ? std::clamp(1 - static_cast<int>(std::floor(std::log10(s))), 0, 12) : 4;
     std::vector<double> places = placesOf(*now->fit, record.choices);
     places.resize(std::min(places.size(), most));
     for (const double x : places)
         rows.push_back({inUnit(CompareDialog::tr("value at %1 %2").arg(placeText(x), in).trimmed(), out),
-                        fixedText(now->fit->curve->value(x), decimals), fixedText(trial->fit->curve->value(x), decimals)});
+                        valueText(*now->fit, x), valueText(*trial->fit, x)});
 }
 
 QString nameOfMethod(const Choices& choices) {
