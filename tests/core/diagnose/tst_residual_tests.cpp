@@ -85,6 +85,20 @@ class ResidualTestsTest : public QObject {
     Q_OBJECT
 
   private slots:
+    // A square root on 0, 1, 4, 9, … spans what a line spans on 0, 1, 2, 3, …: the p of Durbin and Watson is the same, and exact.
+    void durbinWatsonIsExactForEveryLinearFunctionAndSaysWhenItIsNot() {
+        const std::vector<std::string> roots{"0", "1", "2", "3", "4", "5", "6", "7", "8", "9"}, squares{"0", "1", "4", "9", "16", "25", "36", "49", "64", "81"};
+        const std::vector<std::string> y{"1.02", "1.48", "2.05", "2.51", "2.97", "3.52", "4.05", "4.46", "5.01", "5.53"};
+        const Diagnosed line = diagnosed(recordOf(roots, y), {FunctionFamily::Line, 0});
+        const Diagnosed root = diagnosed(recordOf(squares, y), {FunctionFamily::SquareRoot, 0});
+        QVERIFY(line.diagnostics.durbinWatsonP && root.diagnostics.durbinWatsonP);
+        QVERIFY(std::abs(*line.diagnostics.durbinWatsonP - *root.diagnostics.durbinWatsonP) < 1e-10);
+        QVERIFY(root.diagnostics.warnings.empty());
+        const Diagnosed bent = diagnosed(recordOf(squares, y), {FunctionFamily::ExponentialApproach, 0});
+        QVERIFY(bent.diagnostics.durbinWatsonP && !bent.diagnostics.warnings.empty());
+        QCOMPARE(bent.diagnostics.warnings.front().facts.back().value, std::string("linearised"));
+    }
+
     void univariateSetsGiveTheLagOneAutocorrelation_data() {
         QTest::addColumn<QString>("set");
         for (const char* name : {"mavro", "michelso", "numacc1", "numacc2", "numacc3"})
