@@ -123,8 +123,9 @@ void writeSplit(JsonWriter& json, const std::optional<VarianceSplit>& split) {
     json.endObject();
 }
 
-void writeAnswers(JsonWriter& json, const PhaseEvaluation& evaluation) {
+void writeAnswers(JsonWriter& json, const PhaseEvaluation& evaluation, double share) {
     const bool forward = evaluation.fit->direction == FitDirection::Indication;
+    const bool spread = evaluation.fit->covarianceScale == CovarianceScale::Residuals && evaluation.fit->degreesOfFreedom > 0;
     json.key("at").beginArray(Layout::Lines);
     for (const BandPoint& point : evaluation.at) {
         json.beginObject().field("reference", forward ? point.x : point.value).field("indication", forward ? point.value : point.x);
@@ -133,8 +134,8 @@ void writeAnswers(JsonWriter& json, const PhaseEvaluation& evaluation) {
         writeInterval(json, "simultaneous", point.simultaneous);
         if (point.meanOfRepeats)
             writeInterval(json, "mean_of_repeats", *point.meanOfRepeats);
-        if (point.tolerance)
-            writeInterval(json, "tolerance", *point.tolerance);
+        if (spread)
+            writeInterval(json, "tolerance", toleranceAt(*evaluation.fit, point.x, share));
         json.field("inside_range", point.inside).endObject();
     }
     json.endArray();
@@ -326,7 +327,7 @@ std::string figuresJson(const Record& record, const PhaseEvaluation& evaluation,
     if (evaluation.degrees)
         writeDegrees(json, *evaluation.degrees);
     writeSplit(json, evaluation.split);
-    writeAnswers(json, evaluation);
+    writeAnswers(json, evaluation, record.choices.toleranceShare.toDouble());
     const std::size_t warningsHere = json.written().size();
 
     writeDiagnostics(json, evaluation.diagnostics);

@@ -137,11 +137,16 @@ QString splitText(const VarianceSplit& split) {
     return text + QLatin1Char('\n');
 }
 
+QString toleranceText(const Fit& fit, double x, double share) {
+    const Interval tolerance = toleranceAt(fit, x, share);
+    return interval(tolerance.low, tolerance.high);
+}
+
 QString answersText(const Record& record, const PhaseEvaluation& e) {
     const QString coverage = percent(e.fit->coverage);
     const bool forward = e.fit->direction == FitDirection::Indication;
     const bool ofMean = record.choices.repeats != 1 && !e.at.empty();
-    const bool tolerance = !e.at.empty() && e.at.front().tolerance;
+    const bool tolerance = !e.at.empty() && e.fit->covarianceScale == CovarianceScale::Residuals && e.fit->degreesOfFreedom > 0;
     QStringList heads{tr("At ") + withUnit(tr("reference"), record.item.reference.unit), withUnit(tr("indication"), record.item.indication.unit),
                       tr("function, %1").arg(coverage), tr("new reading, %1").arg(coverage)};
     if (ofMean)
@@ -155,7 +160,7 @@ QString answersText(const Record& record, const PhaseEvaluation& e) {
         if (ofMean)
             cells << (p.meanOfRepeats ? interval(p.meanOfRepeats->low, p.meanOfRepeats->high) : QString());
         if (tolerance)
-            cells << (p.tolerance ? interval(p.tolerance->low, p.tolerance->high) : QString());
+            cells << toleranceText(*e.fit, p.x, record.choices.toleranceShare.toDouble());
         at.add(cells);
     }
     TextTable read({tr("Read ") + withUnit(tr("indication"), record.item.indication.unit), withUnit(tr("reference"), record.item.reference.unit),

@@ -151,8 +151,6 @@ class PhaseSteps {
         }
         BandPoint point = bandAt(fit, x);
         point.meanOfRepeats = meanOfRepeatsAt(fit, x, choices_.repeats);
-        if (fit.covarianceScale == CovarianceScale::Residuals && fit.degreesOfFreedom > 0)
-            point.tolerance = toleranceAt(fit, x, choices_.toleranceShare.toDouble());
         if (!point.inside)
             result_.warnings.push_back({WarningCode::Extrapolated, {{"value", reference.text()}}});
         result_.at.push_back(point);

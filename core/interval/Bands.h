@@ -23,7 +23,6 @@ struct BandPoint {
     Interval simultaneous; ///< Working–Hotelling: t replaced by √(p F)
     bool inside = true;    ///< within the calibrated range
     std::optional<Interval> meanOfRepeats; ///< where the mean of the chosen number of new readings will be
-    std::optional<Interval> tolerance;     ///< where the chosen share of all readings lies
 };
 
 BandPoint bandAt(const Fit& fit, double x);
@@ -31,7 +30,7 @@ BandPoint bandAt(const Fit& fit, double x);
 Interval meanOfRepeatsAt(const Fit& fit, double x, std::optional<int> repeats);
 /// Where at least `share` of all readings at x lie, with the fit's coverage as confidence: ŷ ± k σ(x) with the exact
 /// two-sided factor for an effective number of readings σ²/u²(ŷ) (Wallis 1951). NaN where the uncertainties are taken
-/// as they are.
+/// as they are. Takes milliseconds: for figures that are asked for, not for every change.
 Interval toleranceAt(const Fit& fit, double x, double share);
 /// `points` equidistant abscissae from low to high.
 std::vector<BandPoint> bandCurve(const Fit& fit, double low, double high, std::size_t points);
