@@ -5,23 +5,44 @@
 #include "app/RecordFile.h"
 #include "core/evaluate/evaluate.h"
 #include "core/session/SameNumber.h"
+#include "core/session/WholeFile.h"
 #include "ui/certificate/CertificateText.h"
 #include "ui/certificate/writeCertificate.h"
 
 #include <QDate>
 
 #include <algorithm>
+#include <filesystem>
 #include <ostream>
 
 namespace spanwright {
 
 namespace {
 
-constexpr OptionSpec known[] = {{"--to"}, {"--xml"}, {"--country"}, {"--incomplete", OptionKind::Flag}};
+constexpr OptionSpec known[] = {{"--to"}, {"--xml"}, {"--country"}, {"--incomplete", OptionKind::Flag}, {"--replace", OptionKind::Flag}};
 
 /// Two capital letters (ISO 3166-1).
 bool isCountryCode(const std::string& text) {
     return text.size() == 2 && std::all_of(text.begin(), text.end(), [](char c) { return c >= 'A' && c <= 'Z'; });
+}
+
+bool sameFile(const std::string& a, const std::string& b) {
+    std::error_code unknown;
+    return std::filesystem::equivalent(a, b, unknown) ||
+           std::filesystem::absolute(a, unknown).lexically_normal() == std::filesystem::absolute(b, unknown).lexically_normal();
+}
+
+/// Whether the files that the options name may be written: neither over the session, nor one over the other.
+Result<void> targetsFree(const Arguments& arguments, const std::string& session) {
+    const std::string to = *arguments.value("--to");
+    const auto xml = arguments.value("--xml");
+    if (xml && xml->empty())
+        return Error(ErrorCode::UsageValueMissing, {{"option", "--xml"}});
+    if (xml && sameFile(to, *xml))
+        return Error(ErrorCode::UsageValueBad, {{"option", "--xml"}, {"text", *xml}});
+    const Replacing replacing = arguments.has("--replace") ? Replacing::Allowed : Replacing::Refused;
+    const auto free = mayBeWritten(to, {session}, replacing);
+    return free && xml ? mayBeWritten(*xml, {session}, replacing) : free;
 }
 
 /// Every gap on a line of its own: each is something to enter.
@@ -52,6 +73,8 @@ int certificateCommand(const Words& words, Console console) {
     if (const auto country = arguments->value("--country"); country && !isCountryCode(*country))
         return refuse(console, Error(ErrorCode::UsageValueBad, {{"option", "--country"}, {"text", *country}}));
     const std::string& file = arguments->files.front();
+    if (const auto free = targetsFree(*arguments, file); !free)
+        return refuse(console, free.error());
     const auto loaded = loadSessionFile(file);
     if (!loaded)
         return refuse(console, loaded.error());

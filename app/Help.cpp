@@ -9,15 +9,25 @@ std::string_view helpText() {
   spanwright [--stage job|bench|budget|certificate] [--scheme light|dark] [FILE…]
                                         the window; FILE is a session or a CSV
   spanwright figures FILE [options]     what follows from the readings of a CSV or a session
-  spanwright certificate SESSION --to OUT.pdf [--xml OUT.xml [--country CC]] [--incomplete]
+  spanwright certificate SESSION --to OUT.pdf [--xml OUT.xml [--country CC]] [--incomplete] [--replace]
                                         the certificate draft as PDF, and in the open schema for digital certificates
   spanwright convert CSV --with SESSION --to OUT.csv [--indication COL] [--repeats Q] [--phase P] [--replace]
                                         new readings to values, each with its expanded uncertainty
   spanwright coefficients SESSION [--form plain|c|csv] [--to FILE] [--phase P] [--replace]
                                         the function for a data logger, in as few digits as its uncertainty allows
   spanwright check SESSION              verifies the seal, recomputes, compares with the stored results
-  spanwright self-test [--to OUT.pdf]   recomputes published cases
+  spanwright self-test [--to OUT.pdf [--replace]]
+                                        recomputes published cases
   spanwright --help, --version
+
+  --replace writes over a file that holds something; what is read is never written over
+
+Options of convert and coefficients
+  --indication COL                      column of the indications, by name or number from 1; by the name of the calibration otherwise
+  --repeats Q|inf                       each row is the mean of Q new readings; inf: without their scatter
+  --phase as-found|as-left              whose function
+  --missing WORD, --decimal comma|point, --separator S, --encoding E
+                                        as for figures
 
 Options of figures
   --reference COL --indication COL      columns by name or number from 1; the first two columns of numbers otherwise

@@ -32,5 +32,5 @@ elif display_reachable; then
   exec "$program" "$sample"
 fi
 "$program" figures "$sample"
-"$program" certificate "$sample" --to "$draft"
+"$program" certificate "$sample" --to "$draft" --replace
 echo "There is no display for the window. The certificate draft of the sample is in $draft"

@@ -37,6 +37,7 @@ class TestSessions : public QObject {
     void aStoredResultThatDiffersIsFound();
     void figuresAndCertificateRefuseAFileThatWasChanged();
     void aCertificateIsDrawnUp();
+    void aCertificateIsWrittenOverNothing();
     void aCertificateWithGapsIsBlockedAndEachIsNamed();
     void whatIsNoSessionIsRefused();
     void everyTruncationIsRefusedOrWarnedOf();
@@ -123,13 +124,41 @@ void TestSessions::aCertificateIsDrawnUp() {
     QFile pdf(QString::fromStdString(desk.path("a.pdf")));
     QVERIFY(pdf.open(QIODevice::ReadOnly));
     QVERIFY(pdf.read(5) == "%PDF-");
-    QCOMPARE(runWords({"certificate", file, "--to", desk.path("a.pdf"), "--xml", desk.path("a.xml")}).status, 0);
+    QCOMPARE(runWords({"certificate", file, "--to", desk.path("a.pdf"), "--xml", desk.path("a.xml"), "--replace"}).status, 0);
     QFile xml(QString::fromStdString(desk.path("a.xml")));
     QVERIFY(xml.open(QIODevice::ReadOnly));
     QVERIFY(xml.readAll().contains("NV-20318"));
     const Ran nowhere = runWords({"certificate", file, "--to", desk.path("no/such/folder/a.pdf")});
     QCOMPARE(nowhere.status, 1);
     QCOMPARE(runWords({"certificate", file}).status, 2);
+}
+
+void TestSessions::aCertificateIsWrittenOverNothing() {
+    Desk desk;
+    const QByteArray bytes = sessionBytes(pressureTransmitter(), {});
+    const std::string file = desk.file("pt.spanwright", bytes), old = desk.file("old.pdf", "precious"), fresh = desk.path("new.pdf");
+    const auto held = [](const std::string& path) {
+        QFile read(QString::fromStdString(path));
+        return read.open(QIODevice::ReadOnly) ? read.readAll() : QByteArray();
+    };
+    const std::string link = desk.path("link.pdf");
+    QVERIFY(QFile::link(QString::fromStdString(file), QString::fromStdString(link)));
+    for (const std::string& input : {file, link}) {
+        QCOMPARE(runWords({"certificate", file, "--to", input, "--replace"}).status, 1);
+        QCOMPARE(runWords({"certificate", file, "--to", fresh, "--xml", input, "--replace"}).status, 1);
+    }
+    const Ran there = runWords({"certificate", file, "--to", old});
+    QCOMPARE(there.status, 1);
+    QVERIFY2(there.err.find("--replace") != std::string::npos, there.err.c_str());
+    QCOMPARE(runWords({"certificate", file, "--to", fresh, "--xml", old}).status, 1);
+    QCOMPARE(runWords({"certificate", file, "--to", fresh, "--xml", fresh}).status, 2);
+    QCOMPARE(runWords({"certificate", file, "--to", fresh, "--xml", desk.path("./new.pdf")}).status, 2);
+    QCOMPARE(runWords({"self-test", "--to", old}).status, 1);
+    QVERIFY(!QFile::exists(QString::fromStdString(fresh)));
+    QCOMPARE(held(file), bytes);
+    QCOMPARE(held(old), QByteArray("precious"));
+    QCOMPARE(runWords({"certificate", file, "--to", old, "--replace"}).status, 0);
+    QVERIFY(held(old).startsWith("%PDF-"));
 }
 
 void TestSessions::aCertificateWithGapsIsBlockedAndEachIsNamed() {
