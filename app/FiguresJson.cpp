@@ -65,8 +65,8 @@ void writeDegrees(JsonWriter& json, const DegreeLadder& ladder) {
         json.beginObject().field("degree", step.degree).field("residual_sd", step.residualSd);
         if (step.f)
             json.field("f", *step.f).field("p", step.p);
-        if (std::isfinite(step.aicc))
-            json.field("aicc", step.aicc);
+        if (step.aicc)
+            json.field("aicc", *step.aicc);
         if (step.ratio && step.e74 && std::isfinite(*step.e74))
             json.field("e74_ratio", *step.ratio).field("e74_limit", *step.e74);
         if (step.degree > 1)

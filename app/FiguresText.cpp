@@ -98,7 +98,7 @@ QString degreesText(const DegreeLadder& ladder) {
     TextTable table({tr("Degree"), tr("s"), tr("F"), tr("p"), tr("AICc"), tr("ratio of s"), tr("ASTM E74 needs"), tr("largest change"), tr("at"), {}});
     for (const DegreeStep& step : ladder.steps)
         table.add({QString::number(step.degree), figure(step.residualSd, 4), step.f ? figure(*step.f, 4) : QString(), step.p ? pText(*step.p) : QString(),
-                   std::isfinite(step.aicc) ? figure(step.aicc, 5) : QString(), step.ratio ? figure(*step.ratio, 4) : QString(),
+                   step.aicc ? figure(*step.aicc, 5) : QString(), step.ratio ? figure(*step.ratio, 4) : QString(),
                    step.e74 && std::isfinite(*step.e74) ? figure(*step.e74, 4) : QString(), step.degree > 1 ? figure(step.change, 3) : QString(),
                    step.degree > 1 ? figure(step.changeAt, 6) : QString(),
                    !step.monotonic ? tr("turns in the range") : step.worth ? QString() : tr("gain below resolution/√12")});

@@ -41,8 +41,10 @@ bool monotonicInRange(const Fit& fit) {
     return rising == 0 || falling == 0;
 }
 
-double aiccOf(const Fit& fit) {
+std::optional<double> aiccOf(const Fit& fit) {
     const auto n = static_cast<double>(fit.used), k = static_cast<double>(fit.terms()) + 1;
+    if (!(n - k - 1 > 0) || !(fit.residualSs > 0))
+        return std::nullopt;
     return n * std::log(fit.residualSs / n) + 2 * k + 2 * k * (k + 1) / (n - k - 1);
 }
 
@@ -144,13 +146,13 @@ DegreeLadder degreeLadder(const Sample& sample, const Choices& choices, double r
         const DegreeStep& step = ladder.steps.back();
         if (step.p && *step.p < Level)
             ladder.byPartialF = step.degree;
-        if (step.aicc < least) {
-            least = step.aicc;
+        if (step.aicc && *step.aicc < least) {
+            least = *step.aicc;
             ladder.byAicc = step.degree;
         }
     }
     fillE74(ladder, sample, choices);
-    int degree = std::min({ladder.byPartialF, ladder.byAicc, ladder.byE74});
+    int degree = std::min({ladder.byPartialF, ladder.byAicc.value_or(ladder.byPartialF), ladder.byE74});
     while (degree > 1 && !(ladder.steps[static_cast<std::size_t>(degree - 1)].worth &&
                            ladder.steps[static_cast<std::size_t>(degree - 1)].monotonic))
         --degree;

@@ -13,7 +13,9 @@ struct DegreeStep {
     int degree = 0;
     double residualSd = 0;
     std::optional<double> f, p;  ///< partial F of the term that was added
-    double aicc = 0;             ///< n ln(Σe²/n) + 2k + 2k(k+1)/(n − k − 1), k = p + 1; smaller is better
+    /// n ln(Σe²/n) + 2k + 2k(k+1)/(n − k − 1), k = p + 1; smaller is better. Empty without a reading beyond k + 1, and for a
+    /// perfect fit.
+    std::optional<double> aicc;
     std::optional<double> ratio; ///< s of the degree below over s of this one, both on the means, and
     std::optional<double> e74;   ///< C(n1, d), which it must exceed for this degree to be kept (ASTM E74)
     double change = 0; ///< largest change of the function at a set point against the degree below, unit of the ordinate
@@ -25,7 +27,7 @@ struct DegreeStep {
 struct DegreeLadder {
     std::vector<DegreeStep> steps; ///< from 1 (a line) upwards, as far as the readings carry
     int byPartialF = 1;            ///< highest degree whose term is significant at 5 %
-    int byAicc = 1;
+    std::optional<int> byAicc; ///< empty where it exists for no degree
     int byE74 = 1;
     int suggested = 1; ///< the lowest of the three that is worth it and monotonic
 };

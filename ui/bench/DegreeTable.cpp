@@ -56,7 +56,7 @@ DegreeTable::DegreeTable(const Question& question, QWidget* parent) : QDialog(pa
     QString words = tr("Suggested: degree %1, the lowest of three (F test at 5 %: %2, AICc: %3, ASTM E74: %4) that gains enough and only rises or falls.")
                         .arg(ladder.suggested)
                         .arg(ladder.byPartialF)
-                        .arg(ladder.byAicc)
+                        .arg(ladder.byAicc ? QString::number(*ladder.byAicc) : QStringLiteral("–"))
                         .arg(ladder.byE74);
     words += QLatin1Char('\n');
     words += question.resolution > 0 ? tr("A degree gains enough when s falls by at least the resolution/√12 = %1.")
@@ -115,7 +115,7 @@ void DegreeTable::fill(const Question& question) {
                                 significantText(step.residualSd, 3),
                                 step.f ? significantText(*step.f, 3) : QStringLiteral("–"),
                                 step.p ? pText(*step.p) : QStringLiteral("–"),
-                                std::isfinite(step.aicc) ? fixedText(step.aicc, 1) : QStringLiteral("–"),
+                                step.aicc ? fixedText(*step.aicc, 1) : QStringLiteral("–"),
                                 ratioText(step),
                                 changeText(step, question.inUnit),
                                 verdictText(step)};

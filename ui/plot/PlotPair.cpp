@@ -8,8 +8,8 @@ namespace spanwright {
 PlotPair::PlotPair(LinePlot& line, ResidualPlot& residual, QObject* parent) : QObject(parent), line_(line), residual_(residual) {
     for (PlotView* plot : std::initializer_list<PlotView*>{&line_, &residual_})
         connect(plot, &PlotView::leftNeededChanged, this, &PlotPair::alignLeft);
-    connect(&line_, &PlotView::horizontalRangeChanged, this, [this](const AxisRange& range) { follow(residual_, range); });
-    connect(&residual_, &PlotView::horizontalRangeChanged, this, [this](const AxisRange& range) { follow(line_, range); });
+    connect(&line_, &PlotView::horizontalRangeChanged, this, [this] { follow(residual_, line_); });
+    connect(&residual_, &PlotView::horizontalRangeChanged, this, [this] { follow(line_, residual_); });
     alignLeft();
 }
 
@@ -23,11 +23,11 @@ void PlotPair::alignLeft() {
     busy_ = false;
 }
 
-void PlotPair::follow(PlotView& other, const AxisRange& range) {
+void PlotPair::follow(PlotView& other, const PlotView& moved) {
     if (busy_ || residual_.view() != ResidualView::Reference)
         return;
     busy_ = true;
-    other.showHorizontal(range);
+    other.followAcross(moved);
     busy_ = false;
 }
 

@@ -18,7 +18,7 @@ class PlotPair : public QObject {
 
   private:
     void alignLeft();
-    void follow(PlotView& other, const AxisRange& range);
+    void follow(PlotView& other, const PlotView& moved);
 
     LinePlot& line_;
     ResidualPlot& residual_;

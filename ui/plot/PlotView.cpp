@@ -71,6 +71,8 @@ PlotView::PlotView(QWidget* parent)
 void PlotView::setContent(Content content) {
     content_ = std::move(content);
     const bool empty = !content_.emptyText.isEmpty();
+    if (empty)
+        zoomedAcross_ = zoomedUp_ = false;
     grid_->setVisible(!empty);
     const std::pair<QLineSeries*, const std::vector<QPointF>*> series[] = {
         {line_, &content_.line},
@@ -81,7 +83,7 @@ void PlotView::setContent(Content content) {
     // Emptied while the range changes: the chart would lay out the old points once more for each axis.
     for (const auto& [line, points] : series)
         line->clear();
-    showRange(zoomedAcross_ && !empty ? frame_.x : content_.x, zoomedUp_ && !empty ? frame_.y : content_.y);
+    showRange(zoomedAcross_ ? frame_.x : content_.x, zoomedUp_ ? frame_.y : content_.y);
     for (const auto& [line, points] : series)
         line->replace(listOf(*points));
     inner_->setVisible(!content_.inner.low.empty());
@@ -127,11 +129,10 @@ void PlotView::setLeft(double left) {
     layOut();
 }
 
-void PlotView::showHorizontal(const AxisRange& range) {
-    if (range == frame_.x)
-        return;
-    zoomedAcross_ = range != content_.x;
-    showRange(range, frame_.y);
+void PlotView::followAcross(const PlotView& other) {
+    zoomedAcross_ = other.zoomedAcross_;
+    if (other.frame_.x != frame_.x)
+        showRange(other.frame_.x, frame_.y);
 }
 
 QPointF PlotView::placeOf(ReadingId id) const {
@@ -199,8 +200,9 @@ void PlotView::showRange(const AxisRange& x, const AxisRange& y) {
     ink_->setFrame(frame_);
     cloud_->setFrame(frame_);
     emit leftNeededChanged();
-    if (moved)
-        emit horizontalRangeChanged(x);
+    // An empty plot has no range of its own that another could follow.
+    if (moved && content_.emptyText.isEmpty())
+        emit horizontalRangeChanged();
 }
 
 bool PlotView::viewportEvent(QEvent* event) {

@@ -55,7 +55,8 @@ class PlotView : public QChartView {
     /// Both plots of a pair take the same left edge and horizontal range.
     [[nodiscard]] double leftNeeded() const;
     void setLeft(double left);
-    void showHorizontal(const AxisRange& range);
+    /// Shows the same abscissae, as zoomed as the other is.
+    void followAcross(const PlotView& other);
 
     [[nodiscard]] const PlotFrame& frame() const { return frame_; }
     [[nodiscard]] const PlotPoints& points() const { return cloud_->points(); }
@@ -71,7 +72,7 @@ class PlotView : public QChartView {
   signals:
     void selected(const std::set<ReadingId>& ids);
     void excludeRequested();
-    void horizontalRangeChanged(const spanwright::AxisRange& range);
+    void horizontalRangeChanged();
     void leftNeededChanged();
 
   protected:

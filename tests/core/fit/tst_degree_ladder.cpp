@@ -56,6 +56,20 @@ class DegreeLadders : public QObject {
         QCOMPARE(ladder.suggested, 1);
     }
 
+    // Hurvich and Tsai's correction divides by n − k − 1, k with the variance: it needs two readings beyond the coefficients.
+    void aiccIsEmptyWithoutReadingsToSpare() {
+        Record record = recordOf({{"0", "1", "2", "3", "4", "5"}, {"0.1", "1.2", "2.1", "3.3", "4.2", "5.1"}, {}, {}});
+        const DegreeLadder ladder = degreeLadder(makeSample(record, Phase::AsFound), record.choices, 0);
+        QCOMPARE(ladder.steps.size(), std::size_t{4});
+        QVERIFY(ladder.steps[0].aicc && ladder.steps[1].aicc);
+        QVERIFY(!ladder.steps[2].aicc && !ladder.steps[3].aicc);
+        QCOMPARE(ladder.byAicc, std::optional<int>(1));
+        Record three = recordOf({{"0", "1", "2"}, {"0.1", "1.2", "2.1"}, {}, {}});
+        const DegreeLadder shorter = degreeLadder(makeSample(three, Phase::AsFound), three.choices, 0);
+        QCOMPARE(shorter.byAicc, std::optional<int>());
+        QCOMPARE(shorter.suggested, 1);
+    }
+
     void stopsWhereReadingsEnd() {
         Record record = recordOf({{"0", "1", "2", "3"}, {"0.0", "1.1", "1.9", "3.1"}, {}, {}});
         QCOMPARE(degreeLadder(makeSample(record, Phase::AsFound), record.choices, 0).steps.size(), std::size_t{2});

@@ -112,6 +112,34 @@ class PlotsTest : public QObject {
     }
 
     // Also beside a line plot whose axis it follows, and after a zoom.
+    // While nothing is fitted the plot of residuals is empty; it must not hold the line to a range of its own.
+    void theRangeGrowsWithTheReadingsTyped() {
+        LinePlot line;
+        ResidualPlot residual;
+        PlotPair pair(line, residual);
+        shown(line);
+        shown(residual);
+        Record record;
+        for (int i = 0; i < 5; ++i) {
+            Reading reading;
+            reading.id = record.nextReadingId++;
+            reading.reference = Decimal{25 * i, 1, {}};
+            reading.indication = Decimal{40 + 41 * i, 1, {}};
+            record.readings.edit().append(reading);
+            line.setSubject(subjectOf(record));
+            residual.setSubject(subjectOf(record));
+            QVERIFY(line.frame().x.high > 2.5 * i);
+            QVERIFY(i < 2 || residual.frame().x == line.frame().x);
+        }
+        record.choices.weights = Weights::Stated; // nothing is stated: refused
+        line.setSubject(subjectOf(record));
+        residual.setSubject(subjectOf(record));
+        record.choices.weights = Weights::Equal;
+        line.setSubject(subjectOf(record));
+        residual.setSubject(subjectOf(record));
+        QVERIFY(line.frame().x.high > 10 && residual.frame().x == line.frame().x);
+    }
+
     void everyViewOfTheResidualsShowsAllOfThem() {
         LinePlot line;
         ResidualPlot residual;
