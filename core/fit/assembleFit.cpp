@@ -8,6 +8,7 @@
 #include <algorithm>
 #include <cmath>
 #include <limits>
+#include <optional>
 
 namespace spanwright {
 
@@ -55,6 +56,44 @@ void fillSums(Fit& fit, const FitTask& task, const LinearSolution& solution, con
         fit.rSquared = toDouble(sums.regression / sums.total);
 }
 
+DoubleDouble largestOf(const PairColumn& column) {
+    DoubleDouble largest = 0.0;
+    for (std::size_t i = 0; i < column.size(); ++i)
+        largest = std::max(largest, abs(column[i]));
+    return largest;
+}
+
+/// Residuals below this share of the largest ordinate are the rounding of 31-digit arithmetic: readings typed with up to 18
+/// digits that do not lie on the function leave at least 10⁻¹⁸. Longer ones may come close to the rounding.
+double roundingShare(const Sample& sample) {
+    const auto longer = [](const Warning& warning) { return warning.code == WarningCode::ColumnNotExact; };
+    return std::any_of(sample.warnings.begin(), sample.warnings.end(), longer) ? 1e-30 : 1e-25;
+}
+
+/// Power of the abscissa that a coefficient belongs to; empty where the function is no polynomial.
+std::optional<int> powerOf(const FunctionChoice& function, std::size_t term) {
+    switch (function.family) {
+    case FunctionFamily::Constant:
+    case FunctionFamily::Line:
+    case FunctionFamily::Polynomial:
+        return static_cast<int>(term);
+    case FunctionFamily::Proportional:
+    case FunctionFamily::PolynomialNoConstant:
+        return static_cast<int>(term) + 1;
+    default:
+        return std::nullopt;
+    }
+}
+
+/// Where the function leaves nothing over, a term that stays below the rounding of the ordinates is no term.
+double withoutRounding(const FitTask& task, const SolvedModel& solved, std::size_t term, double value) {
+    const auto power = powerOf(task.choices.function, term);
+    if (!power || solved.linear.residualSs > 0.0)
+        return value;
+    const double most = std::fabs(value) * std::pow(toDouble(largestOf(task.x)), *power);
+    return most < toDouble(largestOf(task.y)) * roundingShare(task.sample) ? 0.0 : value;
+}
+
 /// Coefficients as reported, with J·scale·(AᵀWA)⁻¹·Jᵀ in double-double, rounded once.
 void fillCoefficients(Fit& fit, const FitTask& task, const SolvedModel& solved, const DoubleDouble& scale) {
     const std::size_t p = task.model->terms();
@@ -80,7 +119,7 @@ void fillCoefficients(Fit& fit, const FitTask& task, const SolvedModel& solved, 
             if (j == i)
                 variance = scale * sum;
         }
-        const double value = toDouble(reported.value[i]);
+        const double value = withoutRounding(task, solved, i, toDouble(reported.value[i]));
         const double u = variance.isnan() ? std::numeric_limits<double>::quiet_NaN() : toDouble(sqrt(variance));
         fit.coefficients.push_back(
             {names[i].name, names[i].unit, value, u, value - fit.coverageFactor * u, value + fit.coverageFactor * u,
@@ -88,15 +127,11 @@ void fillCoefficients(Fit& fit, const FitTask& task, const SolvedModel& solved, 
     }
 }
 
-/// Residuals below 10⁻²⁵ of the largest ordinate are the rounding of 31-digit arithmetic: readings typed with up to 18
-/// digits that do not lie on the function leave at least 10⁻¹⁸.
-void dropRounding(LinearSolution& solution, const PairColumn& y) {
-    DoubleDouble largest = 0.0, largestOrdinate = 0.0;
-    for (std::size_t i = 0; i < y.size(); ++i) {
+void dropRounding(LinearSolution& solution, const FitTask& task) {
+    DoubleDouble largest = 0.0;
+    for (std::size_t i = 0; i < task.y.size(); ++i)
         largest = std::max(largest, abs(solution.residual[i]));
-        largestOrdinate = std::max(largestOrdinate, abs(y[i]));
-    }
-    if (largest > largestOrdinate * 1e-25)
+    if (largest > largestOf(task.y) * roundingShare(task.sample))
         return;
     std::fill(solution.residual.begin(), solution.residual.end(), DoubleDouble(0.0));
     solution.residualSs = 0.0;
@@ -199,7 +234,7 @@ Fit assembleFigures(const FitTask& task, SolvedModel solved, const SumsOfSquares
 }
 
 FitOutcome assembleFit(const FitTask& task, SolvedModel solved) {
-    dropRounding(solved.linear, task.y);
+    dropRounding(solved.linear, task);
     const SumsOfSquares sums = sumsOf(task, solved);
     Residuals residuals = residualsOf(task, solved.linear);
     return {assembleFigures(task, std::move(solved), sums), std::move(residuals), {}};

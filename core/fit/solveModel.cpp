@@ -56,6 +56,10 @@ std::optional<std::vector<DoubleDouble>> stepped(const FitTask& task, const std:
     return std::nullopt;
 }
 
+/// Gain of a step, as a share of the residual squares, that may be rounding: it moves no coefficient by more than 10⁻¹³ of its
+/// uncertainty.
+constexpr double RoundedGain = 1e-26;
+
 Result<SolvedModel> solveNonLinear(const FitTask& task) {
     const auto start = task.model->start(task.x, task.y);
     if (!start)
@@ -67,6 +71,7 @@ Result<SolvedModel> solveNonLinear(const FitTask& task) {
     for (std::size_t i = 0; i < task.sample.size(); ++i)
         ordinates.push_back(task.y[i]);
     const DoubleDouble size = weightedSquare(ordinates, task.weighting.rootWeight);
+    DoubleDouble gainBefore = size;
     while (solved.convergence.iterations < MostIterations) {
         solved.convergence.iterations += 1;
         const LinearProblem problem = linearised(task, solved.beta);
@@ -77,14 +82,18 @@ Result<SolvedModel> solveNonLinear(const FitTask& task) {
         if (!solved.linear.lostTerms.empty())
             return rankLost(task, solved.linear.lostTerms);
         const DoubleDouble gain = current - solved.linear.residualSs;
-        if (gain <= solved.linear.residualSs * 1e-32 || gain <= size * 1e-54) {
+        // Both sums are rounded, so at the end the gain need not fall any further: then no step is left either.
+        const bool rounding = gain <= solved.linear.residualSs * RoundedGain;
+        if (gain <= solved.linear.residualSs * 1e-32 || gain <= size * 1e-54 || (rounding && gain >= gainBefore * 0.25)) {
             solved.convergence.reached = true;
             solved.convergence.reason = solved.linear.residualSs <= size * 1e-54 ? "rounding" : "gradient";
             break;
         }
+        gainBefore = gain;
         const auto next = stepped(task, solved.beta, solved.linear.beta, current);
         if (!next) {
-            solved.convergence.reason = "no-decrease";
+            solved.convergence.reached = rounding;
+            solved.convergence.reason = rounding ? "rounding" : "no-decrease";
             break;
         }
         solved.beta = *next;

@@ -7,6 +7,7 @@
 #include <algorithm>
 #include <cmath>
 #include <functional>
+#include <random>
 
 using namespace spanwright;
 using namespace spanwright::test;
@@ -55,6 +56,48 @@ class FitCases : public QObject {
     Q_OBJECT
 
   private slots:
+    /// By exact fractions of the eight numbers as typed, 30 digits each: slope 27/14000, Σe² = 1/560000.
+    void thirtyDigitsKeepWhatTheirScatterSays() {
+        const char* thousandths[] = {"003", "005", "006", "008", "011", "012", "015", "016"};
+        TypedReadings typed;
+        for (int i = 0; i < 8; ++i) {
+            typed.reference.push_back(std::to_string(i + 1));
+            typed.indication.push_back(std::string("123456789012345678901234567.") + thousandths[i]);
+        }
+        Record record = recordOf(typed);
+        const Fit fit = fitted(record, "line").fit;
+        QVERIFY(std::fabs(fit.coefficients[1].value / (27.0 / 14000) - 1) < 0.02);
+        QVERIFY(std::fabs(fit.residualSd / std::sqrt(1.0 / 560000 / 6) - 1) < 0.05);
+    }
+
+    /// On the line exactly: what 31 digits leave of a constant is none.
+    void aPerfectLineThroughZeroHasNoConstant() {
+        Record record = recordOf({{"1", "2", "3", "7"}, {"0.3", "0.6", "0.9", "2.1"}, {}, {}});
+        const Fit fit = fitted(record, "line").fit;
+        QCOMPARE(fit.coefficients[0].value, 0.0);
+        QCOMPARE(fit.coefficients[1].value, 0.3);
+        const Fit curve = fitted(record, "polynomial:2").fit;
+        QCOMPARE(curve.coefficients[2].value, 0.0);
+    }
+
+    /// Ordinary thermistors: noise of 0.03 % on B = 3950 K, a different set for every seed. The fit settles for each.
+    void iteratedFitsSettle() {
+        for (unsigned seed = 1; seed <= 20; ++seed) {
+            std::mt19937 random(seed);
+            TypedReadings typed;
+            for (int i = 0; i < 22; ++i) {
+                const int t = 10 * (i / 2);
+                const double noise = (static_cast<double>(random() % 2001) - 1000) * 6e-7;
+                typed.reference.push_back(std::to_string(t));
+                typed.indication.push_back(std::to_string(10000 * std::exp(3950 * (1 / (t + 273.15) - 1 / 298.15)) * (1 + noise)));
+            }
+            Record record = recordOf(typed);
+            const Fit fit = fitted(record, "thermistor-b").fit;
+            QVERIFY2(fit.convergence.reached, fit.convergence.reason.c_str());
+            QVERIFY(std::fabs(fit.coefficients[1].value - 3950) < 10);
+        }
+    }
+
     /// By hand: x = 0, 1, 2, 3 and y = 1, 3, 4, 8 have b = 11/5, a = 7/10, Σe² = 1.8, s² = 0.9, u(b) = √(0.9/5).
     void byHand() {
         Record record = recordOf({{"0", "1", "2", "3"}, {"1", "3", "4", "8"}, {}, {}});
