@@ -8,6 +8,7 @@
 #include <algorithm>
 #include <charconv>
 #include <cmath>
+#include <limits>
 
 namespace spanwright {
 
@@ -29,7 +30,37 @@ Digits percentText(double probability) {
     return roundedText(100 * probability, 1);
 }
 
-ResultLine resultLine(const PointResult& point) {
+/// Decimals below which references and indications are not rounded.
+struct LeastDecimals {
+    int reference = 0, indication = std::numeric_limits<int>::min();
+};
+
+/// What tells neighbouring set points apart, and the digits of the set points as typed: where U is wider than that, rounding to
+/// the place of U would print different points as the same number.
+LeastDecimals leastDecimals(const Record& record, const std::vector<PointResult>& points) {
+    constexpr int digits = 2;
+    std::vector<std::pair<double, double>> at;
+    for (const PointResult& point : points)
+        at.emplace_back(point.reference, point.indication);
+    std::sort(at.begin(), at.end());
+    LeastDecimals least;
+    for (const Decimal& planned : record.plan.setPoints)
+        least.reference = std::max(least.reference, planned.decimals);
+    double gap = INFINITY;
+    for (const PointResult& one : points)
+        for (const PointResult& other : points)
+            if (other.setPoint > one.setPoint)
+                gap = std::min(gap, std::fabs(other.reference - one.reference));
+    if (at.empty() || !std::isfinite(gap))
+        return least;
+    const double run = at.back().first - at.front().first, rise = std::fabs(at.back().second - at.front().second);
+    least.reference = std::max(least.reference, decimalsFor(gap, digits));
+    if (run > 0)
+        least.indication = decimalsFor(gap * rise / run, digits);
+    return least;
+}
+
+ResultLine resultLine(const PointResult& point, const LeastDecimals& least) {
     ResultLine line;
     line.setPoint = shortText(point.setPoint);
     line.direction = point.direction;
@@ -40,10 +71,11 @@ ResultLine resultLine(const PointResult& point) {
     line.expanded = u.text;
     line.expandedReference = uReference.text;
     line.expandedPercent = uPercent.text;
-    line.reference = roundedText(point.reference, uReference.decimals);
-    line.indication = roundedText(point.indication, u.decimals);
-    line.rising = optionalText(point.rising, u.decimals);
-    line.falling = optionalText(point.falling, u.decimals);
+    line.reference = roundedText(point.reference, std::max(uReference.decimals, least.reference));
+    const int shown = std::max(u.decimals, least.indication);
+    line.indication = roundedText(point.indication, shown);
+    line.rising = optionalText(point.rising, shown);
+    line.falling = optionalText(point.falling, shown);
     line.error = roundedText(point.error, u.decimals);
     line.errorPercent = roundedText(point.errorPercentOfSpan, uPercent.decimals);
     line.coverageFactor = roundedText(point.coverageFactor, FactorDecimals);
@@ -135,8 +167,9 @@ PhaseSection phaseSection(const Record& record, const PhaseEvaluation& phase) {
     section.used = phase.complete - phase.excluded;
     section.directionsSeparate = record.choices.separateDirections;
     double smallest = INFINITY, largest = 0, largestError = -1;
+    const LeastDecimals least = leastDecimals(record, phase.verdict.points);
     for (const PointResult& point : phase.verdict.points) {
-        section.results.push_back(resultLine(point));
+        section.results.push_back(resultLine(point, least));
         section.errorKnown = section.errorKnown || std::isfinite(point.error);
         if (std::isfinite(point.error) && std::fabs(point.error) > largestError) {
             largestError = std::fabs(point.error);

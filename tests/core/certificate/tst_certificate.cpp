@@ -77,6 +77,19 @@ class CertificateTest : public QObject {
         }
     }
 
+    // However wide U is, neighbouring set points are not printed as the same number.
+    void keepsSetPointsApartWhereTheUncertaintyIsWide() {
+        Record record = test::pressureTransmitter();
+        record.budget.lines.push_back({"wide", "", Side::Indication, Distribution::Normal, number("500"), number("2"), {}, {}});
+        for (const PhaseSection& section : certificateOf(record).phases)
+            for (const ResultLine& one : section.results)
+                for (const ResultLine& other : section.results)
+                    if (one.setPoint != other.setPoint) {
+                        QVERIFY(one.reference != other.reference);
+                        QVERIFY(one.indication != other.indication);
+                    }
+    }
+
     // By hand: at 5 bar rising 11.9913 mA at 4.9999 bar, error −0.0085 mA, U = 0.0042 mA, outside ±(0.012 − 0.0042) mA.
     void statesTheSampleAtMidRange() {
         const Certificate certificate = certificateOf(test::pressureTransmitter());
