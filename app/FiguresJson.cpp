@@ -4,6 +4,7 @@
 #include "app/FigureNames.h"
 #include "app/JsonWriter.h"
 #include "app/MissingFigures.h"
+#include "core/performance/LoadingRange.h"
 #include "core/record/Fields.h"
 #include "ui/words/Words.h"
 
@@ -249,6 +250,8 @@ void writeForce(JsonWriter& json, const ForceFigures& force) {
     json.field("degree", force.degree).field("residual_sd", force.residualSd);
     json.field("lower_limit_factor", force.lowerLimitFactor).field("lower_limit_force", force.lowerLimitForce);
     json.field("lowest_force_class_a", force.lowestForceClassA).field("lowest_force_class_aa", force.lowestForceClassAA);
+    json.field("loading_from_class_a", loadingRange(force, force.lowestForceClassA).from)
+        .field("loading_from_class_aa", loadingRange(force, force.lowestForceClassAA).from);
     known("zero", force.zero);
     const auto largest = [&](std::string_view name, const std::optional<ForceFigures::Largest>& figure) {
         if (figure)

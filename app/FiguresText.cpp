@@ -2,6 +2,7 @@
 #include "app/FiguresText.h"
 
 #include "app/TextTable.h"
+#include "core/performance/LoadingRange.h"
 #include "ui/look/NumberText.h"
 #include "ui/words/Words.h"
 
@@ -197,6 +198,11 @@ QString performanceText(const Record& record, const ProcessFigures& figures) {
 
 QString forceText(const Record& record, const ForceFigures& figures) {
     const auto percent4 = [](const std::optional<double>& value) { return value ? fixedText(*value, 4) : QStringLiteral("–"); };
+    const auto from = [&](double computed) {
+        const LoadingRange range = loadingRange(figures, computed);
+        const QString force = figure(range.from, 3) + QLatin1Char(' ') + QString::fromStdString(record.item.reference.unit);
+        return range.lowestApplied ? tr("from %1, the lowest force applied").arg(force) : tr("from %1").arg(force);
+    };
     TextTable table({withUnit(tr("Force"), record.item.reference.unit), withUnit(tr("mean deflection"), record.item.indication.unit), tr("b / %"), tr("b′ / %"),
                      tr("interpolation / %"), tr("v / %")});
     for (const ForceStep& step : figures.steps)
@@ -205,9 +211,9 @@ QString forceText(const Record& record, const ForceFigures& figures) {
     QString text = table.text();
     if (figures.zero)
         text += tr("Zero error f0 = %1 %").arg(percent4(figures.zero)) + QLatin1Char('\n');
-    return text + tr("Lower limit factor %1 %2, or %3 %4; loading range from %5 %4 (class AA) or %6 %4 (class A); function of degree %7\n\n")
+    return text + tr("Lower limit factor %1 %2, or %3 %4; loading range class AA: %5; class A: %6; function of degree %7\n\n")
                       .arg(figure(figures.lowerLimitFactor, 3), QString::fromStdString(record.item.indication.unit), figure(figures.lowerLimitForce, 3),
-                           QString::fromStdString(record.item.reference.unit), figure(figures.lowestForceClassAA, 3), figure(figures.lowestForceClassA, 3))
+                           QString::fromStdString(record.item.reference.unit), from(figures.lowestForceClassAA), from(figures.lowestForceClassA))
                       .arg(figures.degree);
 }
 

@@ -3,6 +3,7 @@
 
 #include "core/base/Rounding.h"
 #include "core/certificate/ShortText.h"
+#include "core/performance/LoadingRange.h"
 
 namespace spanwright {
 
@@ -97,8 +98,8 @@ std::optional<ForceSection> forceSection(const PhaseEvaluation& phase) {
     section.interpolationDegree = figures.interpolationDegree;
     section.lowerLimitFactor = significant(figures.lowerLimitFactor, RatioDigits);
     section.lowerLimitForce = significant(figures.lowerLimitForce, RatioDigits);
-    section.lowestForceClassA = significant(figures.lowestForceClassA, RatioDigits);
-    section.lowestForceClassAA = significant(figures.lowestForceClassAA, RatioDigits);
+    section.lowestForceClassA = significant(loadingRange(figures, figures.lowestForceClassA).from, RatioDigits);
+    section.lowestForceClassAA = significant(loadingRange(figures, figures.lowestForceClassAA).from, RatioDigits);
     return section;
 }
 

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/bench/PerformanceDialog.h"
 
+#include "core/performance/LoadingRange.h"
 #include "ui/commands/Workbench.h"
 #include "ui/look/Look.h"
 #include "ui/look/NumberText.h"
@@ -82,6 +83,11 @@ QString forceText(const ForceFigures& figures, const Item& item) {
     const auto with = [](double value, const std::string& unit) {
         return significantText(value, 3) + (unit.empty() ? QString() : QLatin1Char(' ') + QString::fromStdString(unit));
     };
+    const auto from = [&](double computed) {
+        const LoadingRange range = loadingRange(figures, computed);
+        const QString force = with(range.from, item.reference.unit);
+        return range.lowestApplied ? PerformanceDialog::tr("from %1, the lowest force applied").arg(force) : PerformanceDialog::tr("from %1").arg(force);
+    };
     QStringList lines;
     lines << PerformanceDialog::tr("In % of the mean deflection of the runs %1, each in another position.").arg(runsText(figures.series.rotated));
     lines << (figures.series.again ? PerformanceDialog::tr("Repeatability from the runs %1 and %2 in one position.").arg(*figures.series.first).arg(*figures.series.again)
@@ -94,9 +100,9 @@ QString forceText(const ForceFigures& figures, const Item& item) {
                  .arg(figures.degree)
                  .arg(figures.interpolationDegree)
                  .arg(with(figures.residualSd, item.indication.unit));
-    lines << PerformanceDialog::tr("Lower limit factor %1, or %2. Loading range from %3 (class AA) or %4 (class A).")
+    lines << PerformanceDialog::tr("Lower limit factor %1, or %2. Loading range class AA: %3; class A: %4.")
                  .arg(with(figures.lowerLimitFactor, item.indication.unit), with(figures.lowerLimitForce, item.reference.unit),
-                      with(figures.lowestForceClassAA, item.reference.unit), with(figures.lowestForceClassA, item.reference.unit));
+                      from(figures.lowestForceClassAA), from(figures.lowestForceClassA));
     return lines.join(QLatin1Char('\n'));
 }
 

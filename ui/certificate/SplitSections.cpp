@@ -88,7 +88,7 @@ void addForce(Flow& flow, const Certificate& certificate, const PhaseSection& se
     flow.headedTable(SplitSections::tr("Force figures %1").arg(phaseText(section.phase)), SplitSections::tr("item turned between runs"), table);
     QString words = force.zero.empty() ? SplitSections::tr("No zero was read after a run, so there is no zero error.")
                                        : SplitSections::tr("Zero error %1 % of the largest deflection.").arg(digitsText(force.zero));
-    words += QLatin1Char(' ') + SplitSections::tr("Lower limit factor %1, or %2; lower limit of loading %3 (class AA), %4 (class A); function of degree %5.")
+    words += QLatin1Char(' ') + SplitSections::tr("Lower limit factor %1, or %2; loading range from %3 (class AA) or %4 (class A), never below the lowest force applied; function of degree %5.")
                                     .arg(withUnit(digitsText(force.lowerLimitFactor), item.indication.unit),
                                          withUnit(digitsText(force.lowerLimitForce), item.reference.unit),
                                          withUnit(digitsText(force.lowestForceClassAA), item.reference.unit),

@@ -1,5 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/performance/ForceFigures.h"
+#include "core/performance/LoadingRange.h"
 #include "tests/support/Paths.h"
 #include "tests/support/SampleRecord.h"
 
@@ -66,6 +67,11 @@ class ForceFiguresTest : public QObject {
         QVERIFY(std::abs(figures->lowerLimitForce - 0.00140) < 0.000006);
         QVERIFY(std::abs(figures->lowestForceClassA - 0.56) < 0.005);
         QVERIFY(std::abs(figures->lowestForceClassAA - 2.81) < 0.01);
+        // Both limits lie below 5 kN, the lowest force applied, where the loading range begins therefore.
+        QCOMPARE(loadingRange(*figures, figures->lowestForceClassAA).from, 5.0);
+        QVERIFY(loadingRange(*figures, figures->lowestForceClassA).lowestApplied);
+        QCOMPARE(loadingRange(*figures, 7.5).from, 7.5);
+        QVERIFY(!loadingRange(*figures, 7.5).lowestApplied);
         QVERIFY(std::abs(*at(*figures, 5).reproducibility - 0.008) < 0.0005);
         QVERIFY(std::abs(*at(*figures, 25).reproducibility - 0.005) < 0.0005);
         QVERIFY(std::abs(*at(*figures, 50).reproducibility - 0.003) < 0.0005);
