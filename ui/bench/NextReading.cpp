@@ -344,8 +344,12 @@ bool NextReading::asked(const Decimal& indication) {
         typed.reference = *reference_->number();
     typed.indication = indication;
     typed.enteredAt = workbench_.now();
+    const bool inside = insideOfReadings(indication, *reference(), figures(), workbench_.record().item);
     for (const Slip& slip : slipsOf(workbench_.record(), typed)) {
         if (slip.kind == SlipKind::BeforeSettled || slip.kind == SlipKind::OffResolution)
+            continue;
+        // What lies inside the interval shown as expected is not called far off.
+        if (slip.distance != 0 && inside)
             continue;
         const bool reference = slip.column == NumberColumn::Reference;
         ask(slipText(slip, reference ? *typed.reference : indication), reference ? std::nullopt : slip.suggestion, slip.column);

@@ -58,6 +58,12 @@ TypedCheck checkIndication(const Decimal& indication, double reference, const Ph
     return inside ? TypedCheck{} : TypedCheck{tr("more than a fifth of the span from what a perfect item would read"), true};
 }
 
+bool insideOfReadings(const Decimal& indication, double reference, const PhaseEvaluation* phase, const Item& item) {
+    const std::optional<Expected> expected = expectedAt(reference, phase, item);
+    const double value = indication.toDouble();
+    return expected && expected->from == Expected::From::Readings && value >= expected->low && value <= expected->high;
+}
+
 TypedCheck checkReference(const Decimal& reference, const std::optional<Decimal>& setPoint, const Item& item) {
     if (finerThan(reference, item.referenceResolution))
         return {tr("This has more decimals than the reference is read with, %1.").arg(typedText(*item.referenceResolution)), false};

@@ -26,6 +26,8 @@ struct TypedCheck {
     bool doubtful = false;
 };
 TypedCheck checkIndication(const Decimal& indication, double reference, const PhaseEvaluation* phase, const Item& item);
+/// Whether an indication lies in the interval that the readings so far lead to expect.
+bool insideOfReadings(const Decimal& indication, double reference, const PhaseEvaluation* phase, const Item& item);
 /// Whether a reference lies far from its set point, or has more decimals than it is read with.
 TypedCheck checkReference(const Decimal& reference, const std::optional<Decimal>& setPoint, const Item& item);
 
