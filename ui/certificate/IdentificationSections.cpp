@@ -28,6 +28,11 @@ LabelledText wanted(const QString& label, const std::string& value) {
     return {label, text(value)};
 }
 
+/// What is only warned about is left open quietly.
+LabelledText hoped(const QString& label, const std::string& value) {
+    return {label, value.empty() ? CertificateSections::tr("not stated") : text(value)};
+}
+
 std::string joined(const std::string& a, const std::string& b) {
     return a.empty() || b.empty() ? a + b : a + ' ' + b;
 }
@@ -77,12 +82,12 @@ std::vector<LabelledText> jobColumn(const Certificate& certificate) {
     entries.push_back({CertificateSections::tr("Issued"), job.issued.empty()
                                                              ? CertificateSections::tr("not yet; draft of %1").arg(text(certificate.drawnUpOn))
                                                              : text(job.issued)});
-    entries.push_back(wanted(CertificateSections::tr("Place"), job.place));
+    entries.push_back(hoped(CertificateSections::tr("Place"), job.place));
     const std::string method = job.methodEdition.empty() ? job.method : job.method + ", edition " + job.methodEdition;
     entries.push_back(wanted(CertificateSections::tr("Method"), method));
     entries.push_back({CertificateSections::tr("Deviations"), job.methodDeviations.empty() ? none : text(job.methodDeviations)});
-    entries.push_back(wanted(CertificateSections::tr("Customer's data"), job.customerSupplied));
-    entries.push_back(wanted(CertificateSections::tr("External results"), job.externalProviders));
+    entries.push_back(hoped(CertificateSections::tr("Customer's data"), job.customerSupplied));
+    entries.push_back(hoped(CertificateSections::tr("External results"), job.externalProviders));
     return entries;
 }
 
