@@ -81,7 +81,7 @@ std::vector<EffectRow> effectRows(const PhaseEvaluation* before, const PhaseEval
     figure(inUnit(tr("residual s"), unit), [](const PhaseEvaluation* p) { return p && p->fit ? significantText(p->fit->residualSd, 3) : QStringLiteral("–"); });
     figure(inUnit(tr("U of a new reading, largest"), unit), [](const PhaseEvaluation* p) { return significantText(largestHalfWidth(p), 3); });
     figure(inUnit(tr("largest residual"), unit), [](const PhaseEvaluation* p) { return significantText(largestResidual(p), 3); });
-    figure(tr("readings used"), [](const PhaseEvaluation* p) { return p && p->fit ? QLocale().toString(static_cast<qulonglong>(p->fit->used)) : QStringLiteral("–"); });
+    figure(tr("readings used"), [](const PhaseEvaluation* p) { return p && p->fit ? QString::number(p->fit->used) : QStringLiteral("–"); });
     return rows;
 }
 

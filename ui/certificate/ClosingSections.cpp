@@ -111,7 +111,8 @@ void addFunction(Flow& flow, const Certificate& certificate) {
     addTerms(flow, function);
     const QString unit = function.weighted ? QString() : text(ordinate.unit);
     QString words = checksText(function, x, y) + QLatin1Char(' ') +
-                    ClosingSections::tr("Residual standard deviation %1 with %2 degrees of freedom; largest residual %3.")
+                    (function.weighted ? ClosingSections::tr("Weighted residual standard deviation %1 (no unit) with %2 degrees of freedom; largest residual %3.")
+                                       : ClosingSections::tr("Residual standard deviation %1 with %2 degrees of freedom; largest residual %3."))
                         .arg(withUnit(digitsText(function.residualSd), unit.toStdString()))
                         .arg(function.degreesOfFreedom)
                         .arg(withUnit(digitsText(function.largestResidual, SignShown::Both), ordinate.unit));

@@ -106,15 +106,18 @@ QString withUnit(const QString& name, const QString& unit) {
 }
 
 QString readingsText(std::size_t count) {
-    return count == 1 ? tr("1 reading") : tr("%1 readings").arg(QLocale().toString(static_cast<qulonglong>(count)));
+    return count == 1 ? tr("1 reading") : tr("%1 readings").arg(count);
 }
 
 QString residualText(const Fit& fit, const PlotSubject& subject) {
     QString s = significantText(fit.residualSd, 2);
     if (fit.weights == Weights::Equal && !subject.ordinate().unit.empty())
         s += QChar(QChar::Nbsp) + QString::fromStdString(subject.ordinate().unit);
-    QString text = fit.degreesOfFreedom == 1 ? tr("residual s = %1, 1 degree of freedom").arg(s)
-                                             : tr("residual s = %1, %2 degrees of freedom").arg(s).arg(fit.degreesOfFreedom);
+    if (fit.weights != Weights::Equal)
+        s = tr("%1 (no unit)").arg(s);
+    const QString name = fit.weights == Weights::Equal ? tr("residual s") : tr("weighted residual s");
+    QString text = fit.degreesOfFreedom == 1 ? tr("%1 = %2, 1 degree of freedom").arg(name, s)
+                                             : tr("%1 = %2, %3 degrees of freedom").arg(name, s).arg(fit.degreesOfFreedom);
     if (fit.chiSquared && fit.chiSquaredP)
         text += tr(", χ² = %1, p = %2").arg(significantText(*fit.chiSquared, 4), pText(*fit.chiSquaredP)).replace(QStringLiteral("= <"), QStringLiteral("<"));
     const QString settled = convergenceText(fit.convergence);
