@@ -6,6 +6,7 @@
 #include "ui/bench/TrialEvaluation.h"
 #include "ui/commands/ExclusionCommands.h"
 #include "ui/look/Look.h"
+#include "ui/look/NumberText.h"
 #include "ui/plot/PlotSubject.h"
 #include "ui/words/Words.h"
 
@@ -16,12 +17,37 @@
 #include <QPushButton>
 #include <QVBoxLayout>
 
+#include <map>
+#include <set>
+
 namespace spanwright {
 
 namespace {
 
 constexpr ExclusionReason reasons[] = {ExclusionReason::NotSettled,  ExclusionReason::TypingSlip,      ExclusionReason::WrongReference, ExclusionReason::Disturbance,
                                        ExclusionReason::OutOfRange, ExclusionReason::InstrumentFault, ExclusionReason::Other};
+
+/// Set points of the phase shown that lose their last reading with these.
+QStringList emptiedSetPoints(const Record& record, const std::vector<ReadingId>& ids) {
+    const ReadingColumns& readings = *record.readings;
+    std::map<double, std::pair<std::size_t, std::size_t>> counts; // going, staying
+    std::map<double, QString> names;
+    const std::set<ReadingId> going(ids.begin(), ids.end());
+    for (std::size_t row = 0; row < readings.size(); ++row) {
+        const ReadingId id = readings.ids()[row];
+        const std::optional<Decimal> setPoint = readings.setPoint().at(row);
+        if (!setPoint || readings.phases()[row] != record.choices.phase || !readings.complete(row) || record.exclusions->contains(id))
+            continue;
+        auto& [leaves, stays] = counts[setPoint->toDouble()];
+        ++(going.contains(id) ? leaves : stays);
+        names[setPoint->toDouble()] = QString::fromStdString(record.item.reference.unit).prepend(typedText(*setPoint) + QLatin1Char(' ')).trimmed();
+    }
+    QStringList emptied;
+    for (const auto& [setPoint, count] : counts)
+        if (count.first > 0 && count.second == 0)
+            emptied << names[setPoint];
+    return emptied;
+}
 
 } // namespace
 
@@ -48,6 +74,14 @@ ExcludeDialog::ExcludeDialog(Workbench& workbench, std::vector<ReadingId> ids, Q
     which->setTextFormat(Qt::PlainText);
     which->setWordWrap(true);
     all->addWidget(which);
+    const QStringList emptied = emptiedSetPoints(record, ids_);
+    if (!emptied.isEmpty()) {
+        auto* whole = new QLabel(tr("No reading is left at %1: no result will be stated there.").arg(emptied.join(QStringLiteral(", "))));
+        whole->setObjectName(QStringLiteral("excludeWhole"));
+        whole->setForegroundRole(inkRole::warning);
+        whole->setWordWrap(true);
+        all->addWidget(whole);
+    }
     buildReason(all);
     auto* stays = new QLabel(tr("They stay in the record and in view, and can be taken back in. What the exclusion does:"));
     stays->setForegroundRole(inkRole::quiet);
