@@ -42,6 +42,17 @@ QString lineName(const BudgetItem& item) {
     return name.isEmpty() ? derivedLineText(*item.derived) : name + QStringLiteral(" · ") + derivedLineText(*item.derived);
 }
 
+QString sumText(const SetPointBudget& budget, const Item& item) {
+    const auto with = [](const QString& value, const std::string& unit) {
+        return unit.empty() ? value : value + QLatin1Char(' ') + QString::fromStdString(unit);
+    };
+    return ContributionsCard::tr("Combined u = %1, effective degrees of freedom %2, k = %3, U = %4 = %5")
+        .arg(with(significantText(budget.combined, 3), item.indication.unit),
+             std::isfinite(budget.effectiveDegreesOfFreedom) ? fixedText(std::floor(budget.effectiveDegreesOfFreedom), 0) : QString(QChar(0x221e)),
+             fixedText(budget.coverageFactor, 2), with(fixedText(budget.expanded, decimalsOf(budget.expanded)), item.indication.unit),
+             with(fixedText(budget.expandedReference, decimalsOf(budget.expandedReference)), item.reference.unit));
+}
+
 std::vector<TextTable::Cell> rowOf(const BudgetItem& item, const Item& unit) {
     const std::string& u = item.side == Side::Reference ? unit.reference.unit : unit.indication.unit;
     std::vector<TextTable::Cell> row(8);
@@ -150,12 +161,8 @@ void ContributionsCard::show() {
             if (item.derived)
                 derived.insert(*item.derived);
         }
-        sum = tr("Combined u = %1 %2, effective degrees of freedom %3, k = %4, U = %5 %2 = %6 %7")
-                  .arg(significantText(b->combined, 3), y,
-                       std::isfinite(b->effectiveDegreesOfFreedom) ? fixedText(std::floor(b->effectiveDegreesOfFreedom), 0)
-                                                                   : QString(QChar(0x221e)),
-                       fixedText(b->coverageFactor, 2), fixedText(b->expanded, decimalsOf(b->expanded)),
-                       fixedText(b->expandedReference, decimalsOf(b->expandedReference)), x);
+        sum = b->items.empty() ? tr("No contribution is stated yet, so nothing is known about the uncertainty: u, k and U are \u2013.")
+                               : sumText(*b, record.item);
         setTitle(tr("Contributions at %1 %2").arg(significantText(b->setPoint, 6), x));
         setNote(b->direction == Direction::Unknown ? QString() : directionText(b->direction));
     } else {

@@ -47,6 +47,10 @@ std::vector<TextTable::Cell> rowOf(const PointResult& p, const Budget& budget, i
     row[Expanded].text = fixedText(p.expanded, decimals);
     row[Factor].text = fixedText(p.coverageFactor, 2);
     row[Freedom].text = made ? degreesText(made->effectiveDegreesOfFreedom) : QString();
+    // Without a contribution nothing is known, which is not an uncertainty of zero.
+    if (made && made->items.empty())
+        for (const int unknown : {Expanded, Factor, Freedom})
+            row[static_cast<std::size_t>(unknown)].text = QStringLiteral("\u2013");
     row[Limit].text = p.limit ? QStringLiteral("\u00b1") + fixedText(*p.limit, decimals) : QString();
     row[Decision].text = p.state ? conformityText(*p.state) : QString();
     row[Decision].warning = bad;
