@@ -69,6 +69,10 @@ void CommandFinder::narrow(const QString& words) {
         if (!actions_[i]->isEnabled())
             item->setFlags(item->flags() & ~Qt::ItemIsEnabled);
     }
+    if (list_->count() == 0) {
+        auto* nothing = new QListWidgetItem(tr("Nothing found"), list_);
+        nothing->setFlags(Qt::NoItemFlags);
+    }
     for (int row = 0; row < list_->count(); ++row)
         if (list_->item(row)->flags() & Qt::ItemIsEnabled) {
             list_->setCurrentRow(row);

@@ -203,17 +203,23 @@ void MainWindow::showCompleteness() {
     const Record& record = bench_.record();
     std::array<int, allStages.size()> missing{};
     int all = 0;
-    for (const ChecklistItem& item : checklist(record, *bench_.evaluation()))
+    bool groundless = false; // a budget without readings or a standard is not complete, even where it asks for nothing
+    for (const ChecklistItem& item : checklist(record, *bench_.evaluation())) {
+        groundless = groundless || item.gap == Gap::NoResults || item.gap == Gap::NoStandard;
         if (item.level == GapLevel::Block) {
             ++all;
             if (const auto stage = stageOfName(QString::fromStdString(item.stage)))
                 ++missing[static_cast<std::size_t>(*stage)];
         }
+    }
     // The certificate is complete when nothing at all is missing.
     missing[static_cast<std::size_t>(Stage::Certificate)] = all;
     const bool begun = !document_.pristine();
-    for (const Stage stage : allStages)
-        bar_->button(stage)->setMissing(begun ? std::optional<int>(missing[static_cast<std::size_t>(stage)]) : std::nullopt);
+    for (const Stage stage : allStages) {
+        const int here = missing[static_cast<std::size_t>(stage)];
+        const bool shown = begun && !(stage == Stage::Budget && here == 0 && groundless);
+        bar_->button(stage)->setMissing(shown ? std::optional<int>(here) : std::nullopt);
+    }
     status_->show(record, *bench_.evaluation());
 }
 

@@ -539,17 +539,23 @@ class MainWindowTest : public QObject {
 
     void aCommandIsFoundByTyping() {
         Desk desk;
-        QStringList shown;
+        QStringList shown, unknown;
         desk.dialogs.inDialog = [&](QDialog& dialog) {
             auto* words = dialog.findChild<QLineEdit*>("commandFinder.words");
-            QTest::keyClicks(words, "go budget");
             auto* list = dialog.findChild<QListWidget*>("commandFinder.list");
+            QTest::keyClicks(words, "qqq");
+            for (int i = 0; i < list->count(); ++i)
+                unknown << list->item(i)->text();
+            QTest::keyClick(words, Qt::Key_Return);
+            words->clear();
+            QTest::keyClicks(words, "go budget");
             for (int i = 0; i < list->count(); ++i)
                 shown << list->item(i)->text();
             QTest::keyClick(words, Qt::Key_Return);
             return dialog.result() == QDialog::Accepted;
         };
         desk.keys(Qt::Key_K, Qt::ControlModifier);
+        QCOMPARE(unknown, QStringList{"Nothing found"});
         QCOMPARE(shown, QStringList{"Go to Budget"});
         QCOMPARE(desk.window->stage(), Stage::Budget);
     }
@@ -563,6 +569,16 @@ class MainWindowTest : public QObject {
         QVERIFY(desk.find("stage.job")->accessibleDescription().endsWith("missing"));
         desk.window->workbench().setRecord(test::pressureTransmitter());
         QVERIFY(desk.find("stage.job")->accessibleDescription().startsWith("complete"));
+        QVERIFY(desk.find("stage.budget")->accessibleDescription().startsWith("complete"));
+        // A budget of nothing is not complete.
+        Record record = test::pressureTransmitter();
+        record.standards.clear();
+        desk.window->workbench().setRecord(record);
+        QVERIFY(!desk.find("stage.budget")->accessibleDescription().startsWith("complete"));
+        record = test::pressureTransmitter();
+        record.readings = ReadingColumns{};
+        desk.window->workbench().setRecord(record);
+        QVERIFY(!desk.find("stage.budget")->accessibleDescription().startsWith("complete"));
     }
 
     void eachGapLeadsToItsField() {
