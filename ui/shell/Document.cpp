@@ -84,6 +84,7 @@ Result<QStringList> Document::open(const QString& path) {
     file_.emplace(std::move(opened->file));
     bench_.setRecord(std::move(opened->session.record));
     bench_.setReadOnly(readOnly);
+    savedEntries_ = bench_.record().journal->size();
     compareResults(opened->session.results, notes);
     savedAt_ = QFileInfo(path).lastModified().toMSecsSinceEpoch();
     startKeeping();
@@ -110,6 +111,7 @@ void Document::compareResults(const StoredResults& stored, QStringList& notes) {
 
 void Document::saved() {
     bench_.undoStack().setClean();
+    savedEntries_ = bench_.record().journal->size();
     savedAt_ = bench_.now();
     recovery_->discard();
     startKeeping();
@@ -164,7 +166,8 @@ Result<QStringList> Document::recover(const Recovery::Found& found) {
 }
 
 bool Document::modified() const {
-    return !bench_.undoStack().isClean();
+    // A change that was taken back leaves the record as it was, and two entries in the journal that the file does not have.
+    return !bench_.undoStack().isClean() || (file_ && bench_.record().journal->size() != savedEntries_);
 }
 
 QString Document::path() const {

@@ -65,6 +65,7 @@ class Document : public QObject {
     std::optional<SessionFile> file_;
     std::optional<Recovery> recovery_;
     QTimer keepTimer_;
+    std::size_t savedEntries_ = 0; ///< of the journal, in the file
     std::int64_t savedAt_ = 0;
     bool keepingFailed_ = false;
 };

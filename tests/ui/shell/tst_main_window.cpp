@@ -281,6 +281,20 @@ class MainWindowTest : public QObject {
         QVERIFY(!QFileInfo::exists(desk.window->document().recoveryPath()));
     }
 
+    void aChangeTakenBackIsStillToBeSaved() {
+        Desk desk;
+        desk.type("job.customer", "Brackwater");
+        desk.dialogs.savedAs = desk.path("c.spanwright");
+        desk.keys(Qt::Key_S, Qt::ControlModifier);
+        QVERIFY(!desk.window->isWindowModified());
+        desk.type("job.customer", "Someone else");
+        desk.window->workbench().undoStack().undo();
+        QCOMPARE(desk.record().job.customer, std::string("Brackwater"));
+        QVERIFY(desk.window->isWindowModified()); // the journal tells of both
+        desk.keys(Qt::Key_S, Qt::ControlModifier);
+        QVERIFY(!desk.window->isWindowModified());
+    }
+
     void whatIsBeingTypedIsSavedToo() {
         Desk desk;
         auto* line = desk.find<QLineEdit>("job.customer");
