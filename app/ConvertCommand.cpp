@@ -5,6 +5,7 @@
 #include "app/TextApplication.h"
 #include "core/session/WholeFile.h"
 #include "core/base/Rounding.h"
+#include "core/budget/ReadBackBudget.h"
 #include "core/evaluate/Calibration.h"
 #include "core/evaluate/evaluate.h"
 #include "core/exchange/AddedColumns.h"
@@ -60,7 +61,7 @@ class Conversion {
             return {{}, {}, {}, {"no indication", false}};
         }
         ++values_;
-        const ReadValue value = readValue(record_, *phase_.fit, indications_.toDouble(row), record_.choices.repeats);
+        const ReadValue value = readValue(record_, *phase_.fit, phase_.split ? &*phase_.split : nullptr, indications_.toDouble(row), record_.choices.repeats);
         without_ += value.state == ValueState::Sound ? 0 : 1;
         const StatedValue stated = statedValue(value, phase_.budget.readBack);
         return {{stated.value, true}, {stated.expanded, true}, {stated.coverageFactor, true}, {remark(value), false}};
@@ -145,6 +146,9 @@ int convertCommand(const Words& words, Console console) {
     const PhaseEvaluation* asLeft = evaluation->phase(Phase::AsLeft);
     if (phase->phase == Phase::AsFound && asLeft != nullptr && asLeft->fit)
         console.err << "spanwright: " << with << ": there are readings as left too; --phase as-left takes their function\n";
+    if (record.choices.repeats != 1 && !repeatableShare(*phase->fit, phase->split ? &*phase->split : nullptr))
+        console.err << "spanwright: " << with
+                    << ": no reading was repeated under the same conditions, so nothing tells which part of the scatter averages out: U is that of one reading\n";
     Conversion conversion(record, *phase, indications->values);
     const DecimalMark mark = indications->rules.columns[indications->column].decimal;
     const auto table = withAddedColumns(indications->file.bytes(), rulesOfResult(*indications, *arguments), mark, addedColumns(record.item.reference, indications->rules),

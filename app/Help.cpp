@@ -24,7 +24,7 @@ std::string_view helpText() {
 
 Options of convert and coefficients
   --indication COL                      column of the indications, by name or number from 1; by the name of the calibration otherwise
-  --repeats Q|inf                       each row is the mean of Q new readings; inf: without their scatter
+  --repeats Q|inf                       each row is the mean of Q new readings: repeatability is divided by Q, the rest stays; inf: no repeatability
   --phase as-found|as-left              whose function
   --missing WORD, --decimal comma|point, --separator S, --encoding E
                                         as for figures

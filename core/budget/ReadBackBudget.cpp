@@ -42,8 +42,7 @@ double degreesOfFreedom(const Fit& fit) {
     return fit.covarianceScale == CovarianceScale::Stated ? std::numeric_limits<double>::infinity() : fit.degreesOfFreedom;
 }
 
-/// `share`: 1/repeats; 0 for an exact indication.
-ReadBackLines linesAt(const Record& record, const Fit& fit, double x, double share) {
+ReadBackLines linesAt(const Record& record, const Fit& fit, double x, double scatter) {
     const bool forward = fit.direction == FitDirection::Indication;
     const double y = fit.curve->value(x);
     const BudgetPlace place = budgetPlace(record, &fit, forward ? x : y, forward ? y : x);
@@ -56,8 +55,8 @@ ReadBackLines linesAt(const Record& record, const Fit& fit, double x, double sha
     lines.add(DerivedLine::Fit, side, Distribution::Student, std::sqrt(fit.curve->variance(x)), 1, df);
     lines.addManual();
     std::vector<BudgetItem> items = lines.take();
-    if (share > 0)
-        for (BudgetItem& item : scatterLine(record, place, side, fit.curve->readingVariance(x) * share, df))
+    if (scatter > 0)
+        for (BudgetItem& item : scatterLine(record, place, side, fit.curve->readingVariance(x) * scatter, df))
             items.push_back(std::move(item));
     return {place, std::move(items)};
 }
@@ -72,13 +71,29 @@ SetPointBudget combined(const Record& record, ReadBackLines lines) {
 
 } // namespace
 
-std::optional<SetPointBudget> readBackBudget(const Record& record, const Fit& fit, double abscissa, std::optional<int> repeats) {
+std::optional<SetPointBudget> readBackBudget(const Record& record, const Fit& fit, double abscissa, double scatter) {
     if (!canBeReadBack(fit) || fit.curve->derivative(abscissa) == 0)
         return std::nullopt;
-    ReadBackLines here = linesAt(record, fit, abscissa, repeats ? 1.0 / std::max(1, *repeats) : 0.0);
+    ReadBackLines here = linesAt(record, fit, abscissa, scatter);
     if (!std::isfinite(here.variance()))
         return std::nullopt;
     return combined(record, std::move(here));
+}
+
+std::optional<double> repeatableShare(const Fit& fit, const VarianceSplit* split) {
+    if (split == nullptr)
+        return std::nullopt;
+    // Where direction is known, pure error holds the hysteresis and is no measure of repeatability.
+    const std::optional<SplitRow>& row = split->repeatability || split->hysteresis ? split->repeatability : split->pureError;
+    if (!row || row->df <= 0)
+        return std::nullopt;
+    const double whole = fit.covarianceScale == CovarianceScale::Stated ? 1.0 : fit.residualSd * fit.residualSd;
+    return whole > 0 ? std::optional(std::min(1.0, row->ss / row->df / whole)) : std::nullopt;
+}
+
+double scatterOfMean(std::optional<double> repeatable, std::optional<int> repeats) {
+    const double averaged = repeats ? 1.0 / std::max(1, *repeats) : 0.0;
+    return 1 - repeatable.value_or(0) * (1 - averaged);
 }
 
 std::optional<SetPointBudget> worstReadBackBudget(const Record& record, const Fit& fit) {

@@ -36,7 +36,11 @@ std::string digitsText(double value, int digits) {
 }
 
 std::string shortest(double value) {
-    char buffer[32];
+    // In a sentence an exponent stands only where the plain number would be long.
+    const double size = std::fabs(value);
+    char buffer[40];
+    if (size >= 1e-6 && size < 1e15)
+        return {buffer, std::to_chars(buffer, buffer + sizeof buffer, value, std::chars_format::fixed).ptr};
     return {buffer, std::to_chars(buffer, buffer + sizeof buffer, value).ptr};
 }
 

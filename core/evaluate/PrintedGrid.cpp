@@ -58,7 +58,7 @@ void PrintedGrid::add(const Record& record, const PhaseEvaluation& phase, double
     Place place{x, fit.curve->value(x), 0, 0};
     if (fit.function.family == FunctionFamily::Constant) {
         place.expanded = smallestStated(phase);
-    } else if (const auto budget = readBackBudget(record, fit, x, 1)) {
+    } else if (const auto budget = readBackBudget(record, fit, x)) {
         const bool forward = fit.direction == FitDirection::Indication;
         place.expanded = forward ? budget->expanded : budget->expandedReference;
         place.expandedAbscissa = forward ? budget->expandedReference : budget->expanded;

@@ -28,13 +28,13 @@ ValueState stateOf(const ReadBackAnswer& answer) {
 
 } // namespace
 
-ReadValue readValue(const Record& record, const Fit& fit, double indication, std::optional<int> repeats) {
+ReadValue readValue(const Record& record, const Fit& fit, const VarianceSplit* split, double indication, std::optional<int> repeats) {
     ReadValue value{readBack(fit, indication, repeats), ValueState::NoAnswer, std::nullopt};
     value.state = stateOf(value);
     if (value.state != ValueState::Sound)
         return value;
     const double abscissa = fit.direction == FitDirection::Indication ? *value.reference : indication;
-    value.budget = readBackBudget(record, fit, abscissa, repeats);
+    value.budget = readBackBudget(record, fit, abscissa, scatterOfMean(repeatableShare(fit, split), repeats));
     if (!value.budget)
         value.state = ValueState::NoUncertainty;
     return value;

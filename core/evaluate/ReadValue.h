@@ -4,6 +4,7 @@
 #include "core/budget/Budget.h"
 #include "core/interval/ReadBack.h"
 #include "core/record/Record.h"
+#include "core/split/VarianceSplit.h"
 
 #include <optional>
 #include <string>
@@ -28,9 +29,10 @@ struct ReadValue : ReadBackAnswer {
     std::optional<SetPointBudget> budget; ///< of a sound value only: U is its expandedReference
 };
 
-/// Reads an indication, the mean of `repeats` independent new readings (empty: exact), back to the reference (readBack(),
-/// readBackBudget()).
-ReadValue readValue(const Record& record, const Fit& fit, double indication, std::optional<int> repeats);
+/// Reads an indication, the mean of `repeats` new readings (empty: of very many), back to the reference. The interval is that of the
+/// calibration function alone with independent readings (readBack()); in the budget only what the split shows to be repeatability is
+/// averaged (scatterOfMean()). `split` may be null.
+ReadValue readValue(const Record& record, const Fit& fit, const VarianceSplit* split, double indication, std::optional<int> repeats);
 
 /// A value as it is stated: U to two significant digits, the value to U's decimal place (JCGM 100:2008, 7.2.6).
 struct StatedValue {

@@ -134,7 +134,7 @@ class PhaseSteps {
         for (const Decimal& reference : choices_.at)
             answerAt(reference);
         for (const Decimal& y : choices_.read)
-            result_.read.push_back(readValue(record_, *result_.fit, y.toDouble(), choices_.repeats));
+            result_.read.push_back(readValue(record_, *result_.fit, result_.split ? &*result_.split : nullptr, y.toDouble(), choices_.repeats));
     }
 
     /// The bands at a reference value; of a function that gives the reference, at the indication that belongs to it.

@@ -50,6 +50,7 @@ class TestConvert : public QObject {
     void loadCellInverseOfTheHandbook();
     void lineOfIso28037ReadsBack();
     void thermometerOfTheGuide();
+    void onlyRepeatabilityIsAveraged();
     void whatTheTableHoldsStaysAsItIs();
     void aValueThatCannotBeStatedSaysWhy();
     void wordsInTheColumnAreRefusedWithTheirLine();
@@ -95,7 +96,7 @@ void TestConvert::panelFiguresAndConvertAgree() {
     for (int i = 0; i < 3; ++i) {
         const QStringList cells = cellsOf(out, i + 1);
         const QJsonObject one = read[i].toObject();
-        const ReadValue value = readValue(record, *phase.fit, record.choices.read[static_cast<std::size_t>(i)].toDouble(), 1);
+        const ReadValue value = readValue(record, *phase.fit, &*phase.split, record.choices.read[static_cast<std::size_t>(i)].toDouble(), 1);
         const StatedValue stated = statedValue(value, phase.budget.readBack);
         QCOMPARE(cells.mid(1, 3), (QStringList{QString::fromStdString(stated.value), QString::fromStdString(stated.expanded), QString::fromStdString(stated.coverageFactor)}));
         QCOMPARE(one["reference"].toDouble(), *value.reference);
@@ -158,6 +159,29 @@ void TestConvert::thermometerOfTheGuide() {
     // The mean of the eleven abscissae is 24.0085: u = s/√11 = 0.0035/√11, k = t(9) = 2.26.
     QVERIFY(std::fabs(cellsOf(out, 2)[2].toDouble() - 2.262 * 0.0035 / std::sqrt(11.0)) < 5e-5);
     QCOMPARE(cellsOf(out, 2)[3], QStringLiteral("2.26"));
+}
+
+/// Pairs that differ by 0.2 about a curve fitted by a line: pure error is 3·0.02/3 = 0.02, and only that is divided (JCGM 100:2008, 4.2.3).
+void TestConvert::onlyRepeatabilityIsAveraged() {
+    Desk desk;
+    const Record record = recordOf({{"0", "0", "1", "1", "2", "2"}, {"0.1", "-0.1", "2.1", "1.9", "2.1", "1.9"}, {}, {}});
+    const std::string file = session(desk, record), in = desk.file("in.csv", "y\n1.2\n");
+    const auto squared = [&](const QString& repeats) {
+        const QJsonObject read = runWords({"figures", file, "--read", "1.2", "--repeats", repeats.toStdString(), "--json"}).json()["read"].toArray()[0].toObject();
+        const double u = read["expanded_uncertainty"].toDouble() / read["coverage_factor"].toDouble();
+        return u * u;
+    };
+    // In the unit of the reference: the slope is 1.
+    QVERIFY(std::fabs(squared("1") - squared("inf") - 0.02) < 1e-12);
+    QVERIFY(std::fabs(squared("1") - squared("4") - 0.015) < 1e-12);
+    QVERIFY(squared("inf") > 0.3); // the lack of fit stays: 4/3 + 0.06 over 4 degrees of freedom, less 0.02
+    QVERIFY(runWords({"convert", in, "--with", file, "--to", desk.path("a.csv"), "--repeats", "4"}).err.find("averages out") == std::string::npos);
+    // Nothing repeated: U is that of one reading, and it is said.
+    const std::string once = session(desk, recordOf({{"0", "1", "2", "3"}, {"0.1", "1.2", "1.9", "3.1"}, {}, {}}), "once.spanwright");
+    QCOMPARE(runWords({"convert", in, "--with", once, "--to", desk.path("one.csv")}).status, 0);
+    const Ran many = runWords({"convert", in, "--with", once, "--to", desk.path("many.csv"), "--repeats", "100"});
+    QVERIFY2(many.err.find("averages out") != std::string::npos, many.err.c_str());
+    QCOMPARE(bytesOf(desk.path("many.csv")), bytesOf(desk.path("one.csv")));
 }
 
 void TestConvert::whatTheTableHoldsStaysAsItIs() {
@@ -247,6 +271,9 @@ void TestConvert::anotherUnitIsRefused() {
 
 void TestConvert::coefficientsAreWrittenInEveryForm() {
     Desk desk;
+    const Record small = recordOf({{"0.0002", "0.5", "1", "0.0002"}, {"4.01", "12.02", "19.99", "4.02"}, {}, {}});
+    const Ran sentence = runWords({"coefficients", session(desk, small, "small.spanwright")});
+    QVERIFY2(sentence.out.find("from 0.0002 to 1") != std::string::npos, sentence.out.c_str());
     const std::string file = session(desk, pressureTransmitter());
     const Ran plain = runWords({"coefficients", file});
     QCOMPARE(plain.status, 0);

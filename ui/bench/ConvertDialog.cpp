@@ -77,7 +77,7 @@ void ConvertDialog::convert() {
             warnings_->setText(errorText(typed.error()));
         return;
     }
-    const ReadValue value = readValue(record, *phase->fit, typed->toDouble(), repeats_->value());
+    const ReadValue value = readValue(record, *phase->fit, phase->split ? &*phase->split : nullptr, typed->toDouble(), repeats_->value());
     showValue(value, statedValue(value, phase->budget.readBack), unit);
     showInterval(value, *phase, unit);
     QStringList said;

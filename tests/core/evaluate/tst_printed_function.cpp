@@ -119,7 +119,7 @@ double largestShare(const Printed& printed, const LoggerFunction& logger) {
     double largest = 0;
     for (int i = 0; i <= 3001; ++i) {
         const double x = fit.low + (fit.high - fit.low) * i / 3001.0;
-        const auto budget = readBackBudget(printed.record, fit, x, 1);
+        const auto budget = readBackBudget(printed.record, fit, x);
         if (!budget)
             continue;
         const double u = fit.direction == FitDirection::Indication ? budget->expanded : budget->expandedReference;
@@ -181,7 +181,7 @@ void TestPrintedFunction::everyValueIsWithinATwentiethOfItsU() {
         const double x = fit.low + (fit.high - fit.low) * i / 200.0, y = fit.curve->value(x);
         const double back = printed.function.inverse == InverseForm::Closed ? printed.function.logger.inverse(y)
                                                                             : printed.function.logger.halvedInverse(y, fit.low, fit.high);
-        const auto budget = readBackBudget(printed.record, fit, x, 1);
+        const auto budget = readBackBudget(printed.record, fit, x);
         const double u = fit.direction == FitDirection::Indication ? budget->expandedReference : budget->expanded;
         QVERIFY2(std::fabs(back - x) <= 1.001 * PrintedShareOfU * u, qPrintable(QString("%1: %2").arg(x).arg(back - x)));
     }
@@ -217,7 +217,7 @@ void TestPrintedFunction::oneDigitFewerBreaksTheBound() {
             const Fit& fit = *printed.phase.fit;
             for (int k = 0; k <= 3001; ++k) {
                 const double x = fit.low + (fit.high - fit.low) * k / 3001.0;
-                const auto budget = readBackBudget(printed.record, fit, x, 1);
+                const auto budget = readBackBudget(printed.record, fit, x);
                 const double u = !budget ? INFINITY : fit.direction == FitDirection::Indication ? budget->expandedReference : budget->expanded;
                 share = std::max(share, std::fabs(logger.inverse(fit.curve->value(x)) - x) / u);
             }
