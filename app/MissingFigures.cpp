@@ -54,6 +54,33 @@ constexpr Rule rules[] = {
     {"rows.", WarningCode::FigureUndefined, "takes-no-part"},
 };
 
+bool runsStated(const RowFigures& rows) {
+    return std::any_of(rows.runs.begin(), rows.runs.end(), [](std::int32_t run) { return run > 0; });
+}
+
+/// The reason of a rule, or a truer one that the evaluation knows; a warning explains only the former.
+struct Reason {
+    std::string code;
+    bool ofRule = true;
+};
+
+Reason reasonOf(const std::string& path, const Rule* rule, const PhaseEvaluation& evaluation) {
+    const bool freedom = evaluation.fit && evaluation.fit->degreesOfFreedom > 0;
+    if (evaluation.fit && evaluation.fit->correlated && path.starts_with("rows."))
+        return {"correlated"};
+    const bool exact = freedom && evaluation.fit->residualSd == 0;
+    for (const char* scatters : {"at.tolerance", "diagnostics.breusch_pagan", "diagnostics.linearity"})
+        if (exact && path.starts_with(scatters))
+            return {"no-scatter", false};
+    if (freedom && path.starts_with("at."))
+        return {"outside-domain", false};
+    if (path.starts_with("degrees."))
+        return {"no-scatter", false};
+    if (path.starts_with("performance.non_repeatability") && !runsStated(evaluation.rows))
+        return {"run-not-stated"};
+    return {std::string(rule == nullptr ? "not-given" : rule->reason)};
+}
+
 } // namespace
 
 std::vector<Warning> reasonsFor(const std::vector<std::string>& missing, const PhaseEvaluation& evaluation) {
@@ -66,11 +93,12 @@ std::vector<Warning> reasonsFor(const std::vector<std::string>& missing, const P
     for (const std::string& path : missing) {
         if (correlated && (path == "split" || path == "diagnostics"))
             continue; // said by a warning of its own
-        const auto* rule = std::find_if(std::begin(rules), std::end(rules), [&](const Rule& r) { return path.starts_with(r.path); });
-        if (rule != std::end(rules) && (said(rule->explained) || (path.starts_with("split.") && said(WarningCode::NoReplicates))))
+        const auto* found = std::find_if(std::begin(rules), std::end(rules), [&](const Rule& r) { return path.starts_with(r.path); });
+        const Rule* rule = found == std::end(rules) ? nullptr : found;
+        const auto [reason, ofRule] = reasonOf(path, rule, evaluation);
+        if (ofRule && rule != nullptr && (said(rule->explained) || (path.starts_with("split.") && said(WarningCode::NoReplicates))))
             continue;
-        const std::string reason(correlated && path.starts_with("rows.") ? "correlated" : rule == std::end(rules) ? "not-given" : rule->reason);
-        const auto known = std::find_if(figuresOf.begin(), figuresOf.end(), [&](const auto& entry) { return entry.first == reason; });
+        const auto known = std::find_if(figuresOf.begin(), figuresOf.end(), [&code = reason](const auto& entry) { return entry.first == code; });
         if (known == figuresOf.end())
             figuresOf.emplace_back(reason, path);
         else

@@ -64,7 +64,8 @@ ReportedCoefficients TransformedLine::reported(const std::vector<DoubleDouble>& 
 
 bool CallendarVanDusen::defined(double x) const {
     const double t = x - zeroCelsius_;
-    return t >= -200 && t <= 850;
+    constexpr double Rounding = 0.02; // what half a digit of a resistance in 0.01 Ω makes at either end
+    return t >= -200 - Rounding && t <= 850 + Rounding;
 }
 
 double CallendarVanDusen::derivativeOf(double x, const std::vector<double>& beta) const {

@@ -104,6 +104,13 @@ void curveInterval(const Asked& asked, const RangeOfSearch& range, double x, Rea
         answer.warnings.push_back(warn(WarningCode::NoFiniteInterval, asked.indication));
 }
 
+/// Nothing belongs to the indication.
+void leaveOpen(ReadBackAnswer& answer, double indication) {
+    answer.low = answer.high = answer.standardUncertainty = std::numeric_limits<double>::quiet_NaN();
+    answer.insideRange = false;
+    answer.warnings.push_back(warn(WarningCode::NoAnswer, indication));
+}
+
 /// The reference given by a function of the indication.
 ReadBackAnswer evaluated(const Asked& asked) {
     const Fit& fit = asked.fit;
@@ -142,14 +149,17 @@ ReadBackAnswer readBack(const Fit& fit, double indication, std::optional<int> re
     ReadBackAnswer answer;
     if (fit.direction == FitDirection::Reference) {
         answer = evaluated(asked);
+        if (std::isnan(*answer.reference)) {
+            answer.reference.reset();
+            leaveOpen(answer, indication);
+            return answer;
+        }
     } else {
         answer.indication = indication;
         const RangeOfSearch range = searchRange(fit);
         const std::vector<double> roots = abscissaeOf(fit, indication);
         if (roots.empty()) {
-            answer.low = answer.high = answer.standardUncertainty = std::numeric_limits<double>::quiet_NaN();
-            answer.insideRange = false;
-            answer.warnings.push_back(warn(WarningCode::NoAnswer, indication));
+            leaveOpen(answer, indication);
             return answer;
         }
         const double x = roots.front();

@@ -23,9 +23,18 @@ double along(double from, double to, int step) {
 RangeOfSearch searchRange(const Fit& fit) {
     const double span = fit.high > fit.low ? fit.high - fit.low : std::max(1.0, std::fabs(fit.low));
     const auto reach = [&](double from, double step) {
+        const auto exists = [&](double x) { return std::isfinite(fit.curve->value(x)); };
         double to = from;
-        for (int i = 1; i <= 64 && std::isfinite(fit.curve->value(from + step * i / 64)); ++i)
+        for (int i = 1; i <= 64 && exists(from + step * i / 64); ++i)
             to = from + step * i / 64;
+        if (to == from + step)
+            return to;
+        // Up to where the function ends.
+        double beyond = to + step / 64;
+        for (int halving = 0; halving < 40; ++halving) {
+            const double middle = to + (beyond - to) / 2;
+            (exists(middle) ? to : beyond) = middle;
+        }
         return to;
     };
     return {reach(fit.low, -span), reach(fit.high, span)};

@@ -52,6 +52,8 @@ class TestFigures : public QObject {
     void withRepeatsTheReadValueIsNarrower();
     void wrongUsageIsStatusTwo_data();
     void wrongUsageIsStatusTwo();
+    void nothingStandsWhereTheFunctionDoesNotExist();
+    void missingFiguresHaveTheirTrueReason();
     void badInputIsRefusedWithItsPlace_data();
     void badInputIsRefusedWithItsPlace();
     void damagedFilesNeverStopTheProgram();
@@ -244,6 +246,47 @@ void TestFigures::wrongUsageIsStatusTwo() {
     QCOMPARE(std::count(ran.err.begin(), ran.err.end(), '\n'), 1);
 }
 
+/// IEC 60751:2022, 5.2, is for −200 °C to 850 °C; no temperature lies at or below 0 K, and no resistance at or below 0.
+void TestFigures::nothingStandsWhereTheFunctionDoesNotExist() {
+    Desk desk;
+    const std::string platinum = desk.file("pt.csv", "t,R\n0,100\n100,138.51\n200,175.85\n300,212.05\n400,247.09\n");
+    const std::string bead = desk.file("ntc.csv", "t,R\n0,32650\n10,19900\n25,10000\n40,5330\n60,2490\n");
+    const auto at = [](const std::string& file, const std::vector<std::string>& more) {
+        std::vector<std::string> words{"figures", file, "--json"};
+        words.insert(words.end(), more.begin(), more.end());
+        return runWords(words).json();
+    };
+    const auto says = [](const QJsonObject& figures, const char* words) {
+        const QJsonArray warnings = figures["warnings"].toArray();
+        return std::any_of(warnings.begin(), warnings.end(), [&](const QJsonValue& w) { return w.toObject()["text"].toString().contains(QLatin1String(words)); });
+    };
+    for (const auto& [file, function, inside, outside] : std::vector<std::array<std::string, 4>>{
+             {platinum, "callendar-van-dusen", "849", "851"}, {platinum, "callendar-van-dusen", "1", "-201"}, {bead, "thermistor-b", "-200", "-274"}}) {
+        QVERIFY(at(file, {"--function", function, "--at", inside})["at"].toArray()[0].toObject()["indication"].isDouble());
+        const QJsonObject none = at(file, {"--function", function, "--at", outside});
+        QVERIFY(none["at"].toArray()[0].toObject()["indication"].isNull());
+        QVERIFY(says(none, "outside where the function exists"));
+    }
+    QVERIFY(at(platinum, {"--function", "callendar-van-dusen", "--read", "600"})["read"].toArray()[0].toObject()["reference"].isNull());
+    for (const char* resistance : {"0", "-5"}) {
+        const QJsonObject read = at(bead, {"--function", "steinhart-hart:3", "--fit", "reference", "--read", resistance})["read"].toArray()[0].toObject();
+        QVERIFY(read["reference"].isNull());
+        QCOMPARE(read["state"].toString(), QStringLiteral("no-answer"));
+    }
+}
+
+void TestFigures::missingFiguresHaveTheirTrueReason() {
+    Desk desk;
+    const std::string file = desk.file("exact.csv", "x,y\n0,1\n1,3\n2,5\n3,7\n4,9\n");
+    QStringList reasons;
+    for (const QJsonValue& warning : runWords({"figures", file, "--at", "2", "--json"}).json()["warnings"].toArray())
+        reasons << warning.toObject()["text"].toString();
+    const QString all = reasons.join(u'\n');
+    QVERIFY2(all.contains(QStringLiteral("at.tolerance.low, at.tolerance.high, ")) && all.contains(QStringLiteral("the readings do not scatter about the function")), qPrintable(all));
+    QVERIFY2(!all.contains(QStringLiteral("because not given")) && !all.contains(QStringLiteral("no degrees of freedom are left")), qPrintable(all));
+    QVERIFY2(all.contains(QStringLiteral("performance.non_repeatability: not given, because it is not stated to which run")), qPrintable(all));
+}
+
 void TestFigures::badInputIsRefusedWithItsPlace_data() {
     QTest::addColumn<QByteArray>("bytes");
     QTest::addColumn<QString>("says");
@@ -274,6 +317,7 @@ void TestFigures::badInputIsRefusedWithItsPlace() {
     QVERIFY2(last.contains("bad.csv"), qPrintable(last));
     QVERIFY2(last.contains(says), qPrintable(last));
 
+    QVERIFY(runWords({"figures", desk.file("short.csv", "x,y\n1,2\n2,3\n3\n4,5\n")}).err.find("line 4, column y: the line has more or fewer cells than the others: it ends early") != std::string::npos);
     QCOMPARE(runWords({"figures", desk.path("not-there.csv")}).status, 1);
     QCOMPARE(runWords({"figures", desk.path(".")}).status, 1);
 }

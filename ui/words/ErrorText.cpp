@@ -69,7 +69,7 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
     case ErrorCode::UnclosedQuote: return tr("a quotation mark is opened and never closed. Close it in the file.");
     case ErrorCode::RaggedRow:
         return tr("the line has more or fewer cells than the others%1. Complete it, or check the separator.")
-            .arg(facts.has("text") ? tr(" (%1)").arg(facts.quoted("text", {})) : QString());
+            .arg(!facts.has("text") ? QString() : facts.plain("text").isEmpty() ? tr(": it ends early") : tr(" (%1)").arg(facts.quoted("text", {})));
     case ErrorCode::NotANumber:
         return tr("%1 is not a number. Correct the cell, or leave its row out by stating it as excluded.")
             .arg(facts.quoted("text", tr("the cell")));
