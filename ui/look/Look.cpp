@@ -123,6 +123,9 @@ QHeaderView::section { background: @card; color: @quiet; border: none; border-bo
 QTableView, QListView, QTreeView { background: @card; border: 1px solid @line; gridline-color: @line;
   selection-background-color: @selection; selection-color: @ink; }
 QTableView QTableCornerButton::section { background: @card; border: none; }
+QCheckBox::indicator:unchecked, QGroupBox::indicator:unchecked, QTreeView::indicator:unchecked, QListView::indicator:unchecked,
+QTableView::indicator:unchecked { border: 1px solid @quiet; border-radius: 2px; background: @card; }
+QCheckBox::indicator:unchecked:focus, QCheckBox::indicator:unchecked:hover { border: 1px solid @accent; }
 QToolTip { background: @card; color: @ink; border: 1px solid @edge; padding: 3px; }
 QMenuBar { background: @card; border-bottom: 1px solid @line; }
 QMenuBar::item { padding: 4px 10px; background: transparent; }
