@@ -78,7 +78,9 @@ std::vector<EffectRow> effectRows(const PhaseEvaluation* before, const PhaseEval
     const auto figure = [&](const QString& name, auto&& of) { rows.push_back({name, of(before), of(after)}); };
     const bool forward = !after || !after->fit || after->fit->direction == FitDirection::Indication;
     const QString unit = QString::fromStdString(forward ? item.indication.unit : item.reference.unit);
-    figure(inUnit(tr("residual s"), unit), [](const PhaseEvaluation* p) { return p && p->fit ? significantText(p->fit->residualSd, 3) : QStringLiteral("–"); });
+    const PhaseEvaluation* named = after ? after : before;
+    const bool weighted = named && named->fit && named->fit->weights != Weights::Equal;
+    figure(weighted ? tr("weighted residual s, no unit") : inUnit(tr("residual s"), unit), [](const PhaseEvaluation* p) { return p && p->fit ? significantText(p->fit->residualSd, 3) : QStringLiteral("–"); });
     figure(inUnit(tr("U of a new reading, largest"), unit), [](const PhaseEvaluation* p) { return significantText(largestHalfWidth(p), 3); });
     figure(inUnit(tr("largest residual"), unit), [](const PhaseEvaluation* p) { return significantText(largestResidual(p), 3); });
     figure(tr("readings used"), [](const PhaseEvaluation* p) { return p && p->fit ? QString::number(p->fit->used) : QStringLiteral("–"); });
@@ -103,6 +105,8 @@ void EffectTable::show(const QString& before, const QString& after, const std::v
         auto* cell = new QLabel(words);
         cell->setTextFormat(Qt::PlainText);
         cell->setForegroundRole(role);
+        // A window that is too low for its sentences takes nothing from these lines.
+        cell->setMinimumHeight(cell->fontMetrics().height());
         if (column > 0)
             cell->setAlignment(Qt::AlignRight | Qt::AlignVCenter);
         grid_->addWidget(cell, row, column);

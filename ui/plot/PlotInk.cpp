@@ -133,8 +133,8 @@ void PlotInk::paintNotes(QPainter& painter) const {
     double topUsed = 0, bottomUsed = 0;
     for (const PlotNote& note : notes_) {
         const double widest = frame_.area.width() - 12;
-        const QString text = metrics.elidedText(note.text, Qt::ElideRight, widest);
-        const QSizeF size(metrics.horizontalAdvance(text) + 8, metrics.height() + 2);
+        const QSizeF words = metrics.boundingRect(QRectF(0, 0, std::max(widest - 8, 1.0), 1e4), Qt::TextWordWrap, note.text).size();
+        const QSizeF size(std::min(words.width() + 8, widest), words.height() + 2);
         const bool right = note.corner.testFlag(Qt::AlignRight), bottom = note.corner.testFlag(Qt::AlignBottom);
         double& used = bottom ? bottomUsed : topUsed;
         const QPointF corner(right ? frame_.area.right() - size.width() - 2 : frame_.area.left() + 6,
@@ -144,7 +144,7 @@ void PlotInk::paintNotes(QPainter& painter) const {
         ground.setAlphaF(0.82F);
         painter.fillRect(QRectF(corner, size), ground);
         painter.setPen(note.strong ? scheme().ink : scheme().quiet);
-        painter.drawText(QRectF(corner, size), Qt::AlignCenter, text);
+        painter.drawText(QRectF(corner, size).adjusted(3, 0, -3, 0), Qt::AlignVCenter | Qt::AlignLeft | Qt::TextWordWrap, note.text);
     }
 }
 
