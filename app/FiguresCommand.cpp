@@ -6,6 +6,7 @@
 #include "app/TextApplication.h"
 #include "core/evaluate/evaluate.h"
 
+#include <algorithm>
 #include <ostream>
 
 namespace spanwright {
@@ -30,6 +31,16 @@ Result<Arguments> argumentsOf(const Words& words) {
 const PhaseEvaluation* shownPhase(const Evaluation& evaluation, Phase chosen) {
     const PhaseEvaluation* phase = evaluation.phase(chosen);
     return phase != nullptr ? phase : evaluation.phase(chosen == Phase::AsFound ? Phase::AsLeft : Phase::AsFound);
+}
+
+std::int32_t lastRun(const Record& record) {
+    const std::vector<std::int32_t>& runs = record.readings->runs();
+    return runs.empty() ? 0 : *std::max_element(runs.begin(), runs.end());
+}
+
+/// Whether the positions say how the item was turned in every run, and give figures.
+bool positionsFit(const Record& record, const PhaseEvaluation& phase) {
+    return phase.force && record.plan.positions.size() == static_cast<std::size_t>(lastRun(record));
 }
 
 } // namespace
@@ -58,6 +69,12 @@ int figuresCommand(const Words& words, Console console) {
         return refuse(console, Error(ErrorCode::NoReadings, {{"file", file}}));
     if (!phase->fit)
         return refuse(console, phase->notFitted.value_or(Error(ErrorCode::NoReadings)).with("file", file));
+    if (arguments->has("--positions") && !positionsFit(record, *phase)) {
+        console.err << "spanwright: " << file << ": --positions gives " << record.plan.positions.size() << " positions for " << lastRun(record)
+                    << " runs, or they give no force figures. State one position for each run, two of them different, name the column of the runs with --run, "
+                       "and read three forces or more\n";
+        return Refused;
+    }
     const RowsShown rows = arguments->has("--rows") ? RowsShown::Yes : RowsShown::No;
     console.out << (arguments->has("--json") ? figuresJson(record, *phase, rows) : figuresText(record, *phase, rows).toStdString());
     console.out.flush();

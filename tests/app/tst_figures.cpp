@@ -54,6 +54,7 @@ class TestFigures : public QObject {
     void wrongUsageIsStatusTwo();
     void nothingStandsWhereTheFunctionDoesNotExist();
     void missingFiguresHaveTheirTrueReason();
+    void positionsThatDoNothingAreRefused();
     void badInputIsRefusedWithItsPlace_data();
     void badInputIsRefusedWithItsPlace();
     void damagedFilesNeverStopTheProgram();
@@ -285,6 +286,27 @@ void TestFigures::missingFiguresHaveTheirTrueReason() {
     QVERIFY2(all.contains(QStringLiteral("at.tolerance.low, at.tolerance.high, ")) && all.contains(QStringLiteral("the readings do not scatter about the function")), qPrintable(all));
     QVERIFY2(!all.contains(QStringLiteral("because not given")) && !all.contains(QStringLiteral("no degrees of freedom are left")), qPrintable(all));
     QVERIFY2(all.contains(QStringLiteral("performance.non_repeatability: not given, because it is not stated to which run")), qPrintable(all));
+}
+
+void TestFigures::positionsThatDoNothingAreRefused() {
+    Desk desk;
+    QByteArray bytes("force,deflection,run\n");
+    for (int run = 1; run <= 3; ++run)
+        for (int step = 1; step <= 4; ++step)
+            bytes += QByteArray::number(step) + ',' + QByteArray::number(2 * step + 0.001 * run * (step % 2)) + ',' + QByteArray::number(run) + '\n';
+    const std::string file = desk.file("cell.csv", bytes);
+    QVERIFY(runWords({"figures", file, "--run", "run", "--positions", "0,120,240", "--json"}).json().contains(QStringLiteral("force")));
+    for (const auto& words : std::vector<std::vector<std::string>>{{"--run", "run", "--positions", "0,120"},
+                                                                   {"--run", "run", "--positions", "0,120,240,0"},
+                                                                   {"--run", "run", "--positions", "0,0,360"},
+                                                                   {"--positions", "0,120,240"}}) {
+        std::vector<std::string> all{"figures", file};
+        all.insert(all.end(), words.begin(), words.end());
+        const Ran ran = runWords(all);
+        QCOMPARE(ran.status, 1);
+        QVERIFY(ran.out.empty());
+        QVERIFY2(ran.err.find("State one position for each run") != std::string::npos, ran.err.c_str());
+    }
 }
 
 void TestFigures::badInputIsRefusedWithItsPlace_data() {
