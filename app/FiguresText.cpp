@@ -3,6 +3,7 @@
 
 #include "app/TextTable.h"
 #include "core/performance/LoadingRange.h"
+#include "core/split/SplitLines.h"
 #include "ui/look/NumberText.h"
 #include "ui/words/Words.h"
 
@@ -106,32 +107,22 @@ QString degreesText(const DegreeLadder& ladder) {
     return table.text() + tr("Suggested degree: %1.").arg(ladder.suggested) + QStringLiteral("\n\n");
 }
 
-void addSplitRow(TextTable& table, const QString& name, const std::optional<SplitRow>& row) {
-    if (!row)
-        return;
-    table.add({name, figure(row->ss), QString::number(row->df), row->ms ? figure(*row->ms, 5) : QString(),
-               row->f ? figure(*row->f, 4) : QString(), row->p ? pText(*row->p) : QString()});
-}
-
-void addSplitRow(TextTable& table, SplitPart part, const std::optional<SplitRow>& row) {
-    addSplitRow(table, splitPartText(part), row);
+QString nameOf(const SplitLine& line) {
+    switch (line.test) {
+    case SplitLine::Test::Chain: return splitPartText(line.part);
+    case SplitLine::Test::Adjusted: return tr("  adjusted for direction and run");
+    case SplitLine::Test::Naive: break;
+    }
+    return tr("  naive, against pure error");
 }
 
 QString splitText(const VarianceSplit& split) {
     TextTable table({tr("Variance split"), tr("sum of squares"), tr("df"), tr("mean square"), tr("F"), tr("p")});
-    addSplitRow(table, SplitPart::Total, split.total);
-    addSplitRow(table, SplitPart::Regression, split.regression);
-    addSplitRow(table, SplitPart::Residual, split.residual);
-    addSplitRow(table, SplitPart::LackOfFit, split.lackOfFit);
-    if (split.lackOfFitAdjusted && split.lackOfFitAdjusted->f)
-        addSplitRow(table, tr("  adjusted for direction and run"), split.lackOfFitAdjusted);
-    if (split.lackOfFitNaive && split.lackOfFitNaive->f && split.against != SplitPart::PureError)
-        addSplitRow(table, tr("  naive, against pure error"), split.lackOfFitNaive);
-    addSplitRow(table, SplitPart::PureError, split.pureError);
-    addSplitRow(table, SplitPart::Hysteresis, split.hysteresis);
-    addSplitRow(table, SplitPart::RunOffset, split.runOffset);
-    addSplitRow(table, SplitPart::RunSlope, split.runSlope);
-    addSplitRow(table, SplitPart::Repeatability, split.repeatability);
+    for (const SplitLine& line : splitLines(split)) {
+        const SplitRow& row = line.row;
+        table.add({nameOf(line), figure(row.ss), QString::number(row.df), row.ms ? figure(*row.ms, 5) : QString(), row.f ? figure(*row.f, 4) : QString(),
+                   row.p ? pText(*row.p) : QString()});
+    }
     QString text = table.text();
     if (split.lackOfFit && split.lackOfFit->f)
         text += tr("F is taken against %1.").arg(splitPartText(split.against)) + QLatin1Char('\n');

@@ -4,6 +4,7 @@
 #include "core/certificate/Checklist.h"
 #include "core/evaluate/Evaluation.h"
 #include "core/record/Record.h"
+#include "core/split/SplitLines.h"
 
 #include <optional>
 #include <string>
@@ -79,12 +80,10 @@ struct ForceSection {
 
 /// A line of the variance split as a table.
 struct SplitTableLine {
-    /// Of the chain of nested models; or lack of fit once more, against pure error with direction and run in it, or after
-    /// direction and run.
-    enum class Test { Chain, Naive, Adjusted };
+    using Test = SplitLine::Test;
     SplitPart part = SplitPart::Total;
     Test test = Test::Chain;
-    int level = 0; ///< how far it is indented: a part of the line above with a smaller one
+    int level = 0; ///< how far it is indented
     Digits sumOfSquares, meanSquare, f, p;
     int degreesOfFreedom = 0;
     std::optional<double> share; ///< of the total; not for a second test

@@ -24,10 +24,12 @@ Digits probability(double p) {
     return p < 0.001 ? "<0.001" : roundedText(p, 3);
 }
 
-SplitTableLine lineOf(SplitPart part, const SplitRow& row, int level) {
+SplitTableLine printed(const SplitLine& from, double total) {
+    const SplitRow& row = from.row;
     SplitTableLine line;
-    line.part = part;
-    line.level = level;
+    line.part = from.part;
+    line.test = from.test;
+    line.level = from.level;
     line.sumOfSquares = square(row.ss);
     line.degreesOfFreedom = row.df;
     if (row.ms)
@@ -36,6 +38,8 @@ SplitTableLine lineOf(SplitPart part, const SplitRow& row, int level) {
         line.f = significantDigits(*row.f, RatioDigits);
     if (row.p)
         line.p = probability(*row.p);
+    if (from.test == SplitLine::Test::Chain && total > 0)
+        line.share = row.ss / total;
     return line;
 }
 
@@ -55,31 +59,8 @@ std::optional<SplitSection> splitSection(const PhaseEvaluation& phase) {
     section.direction = phase.fit->direction;
     section.weighted = phase.fit->weights != Weights::Equal;
     section.against = split.against;
-    const auto add = [&](SplitPart part, const std::optional<SplitRow>& row, int level) {
-        if (!row)
-            return;
-        section.lines.push_back(lineOf(part, *row, level));
-        if (split.total.ss > 0)
-            section.lines.back().share = row->ss / split.total.ss;
-    };
-    const auto addTest = [&](SplitTableLine::Test test, const std::optional<SplitRow>& row) {
-        if (!row || !row->f)
-            return;
-        section.lines.push_back(lineOf(SplitPart::LackOfFit, *row, 3));
-        section.lines.back().test = test;
-    };
-    add(SplitPart::Total, split.total, 0);
-    add(SplitPart::Regression, split.regression, 1);
-    add(SplitPart::Residual, split.residual, 1);
-    add(SplitPart::LackOfFit, split.lackOfFit, 2);
-    addTest(SplitTableLine::Test::Adjusted, split.lackOfFitAdjusted);
-    if (split.against != SplitPart::PureError)
-        addTest(SplitTableLine::Test::Naive, split.lackOfFitNaive);
-    add(SplitPart::PureError, split.pureError, 2);
-    add(SplitPart::Hysteresis, split.hysteresis, 3);
-    add(SplitPart::RunOffset, split.runOffset, 3);
-    add(SplitPart::RunSlope, split.runSlope, 3);
-    add(SplitPart::Repeatability, split.repeatability, 3);
+    for (const SplitLine& line : splitLines(split))
+        section.lines.push_back(printed(line, split.total.ss));
     return section;
 }
 

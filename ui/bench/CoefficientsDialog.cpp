@@ -9,7 +9,6 @@
 #include <QApplication>
 #include <QClipboard>
 #include <QComboBox>
-#include <QDialogButtonBox>
 #include <QFileDialog>
 #include <QFileInfo>
 #include <QFontDatabase>
@@ -49,21 +48,15 @@ TextPathAsk screenTextPath() {
 }
 
 CoefficientsDialog::CoefficientsDialog(Workbench& workbench, TextPathAsk ask, QWidget* parent)
-    : QDialog(parent), workbench_(workbench), ask_(std::move(ask)), form_(new QComboBox), text_(new QPlainTextEdit), said_(new QLabel) {
-    setObjectName(QStringLiteral("coefficientsDialog"));
-    setWindowTitle(tr("Coefficients for a data logger"));
-    setAttribute(Qt::WA_DeleteOnClose);
+    : SheetDialog(QStringLiteral("coefficientsDialog"), tr("Coefficients for a data logger"), parent), workbench_(workbench), ask_(std::move(ask)), form_(new QComboBox), text_(new QPlainTextEdit), said_(new QLabel) {
     resize(800, 600);
-    auto* all = new QVBoxLayout(this);
-    all->setContentsMargins(space::card, space::card, space::card, space::card);
-    all->setSpacing(space::step);
     form_->setObjectName(QStringLiteral("coefficientForm"));
     form_->addItem(tr("Formula and numbers, to be typed"));
     form_->addItem(tr("C functions, to be compiled"));
     form_->addItem(tr("Table, separated by commas"));
     auto* form = new QFormLayout;
     form->addRow(tr("&Written as"), form_);
-    all->addLayout(form);
+    body()->addLayout(form);
     text_->setObjectName(QStringLiteral("coefficientText"));
     text_->setAccessibleName(tr("Coefficients as text"));
     text_->setReadOnly(true);
@@ -72,21 +65,16 @@ CoefficientsDialog::CoefficientsDialog(Workbench& workbench, TextPathAsk ask, QW
     QFont font = QFontDatabase::systemFont(QFontDatabase::FixedFont);
     font.setPointSizeF(textFont(TextRole::Body).pointSizeF());
     text_->setFont(font);
-    all->addWidget(text_, 1);
+    body()->addWidget(text_, 1);
     said_->setObjectName(QStringLiteral("coefficientSaid"));
     said_->setWordWrap(true);
     said_->setTextFormat(Qt::PlainText);
     said_->setForegroundRole(inkRole::quiet);
-    all->addWidget(said_);
-    auto* buttons = new QDialogButtonBox;
-    copy_ = buttons->addButton(tr("C&opy"), QDialogButtonBox::ActionRole);
-    save_ = buttons->addButton(tr("&Save…"), QDialogButtonBox::ActionRole);
-    buttons->addButton(tr("&Close"), QDialogButtonBox::RejectRole);
-    copy_->setObjectName(QStringLiteral("coefficientCopy"));
-    save_->setObjectName(QStringLiteral("coefficientSave"));
+    body()->addWidget(said_);
+    copy_ = addButton(tr("C&opy"), QDialogButtonBox::ActionRole, QStringLiteral("coefficientCopy"));
+    save_ = addButton(tr("&Save…"), QDialogButtonBox::ActionRole, QStringLiteral("coefficientSave"));
+    addClose();
     copy_->setDefault(true);
-    all->addWidget(buttons);
-    connect(buttons, &QDialogButtonBox::rejected, this, &QDialog::reject);
     connect(copy_, &QPushButton::clicked, this, &CoefficientsDialog::copy);
     connect(save_, &QPushButton::clicked, this, &CoefficientsDialog::save);
     connect(form_, &QComboBox::currentIndexChanged, this, &CoefficientsDialog::refresh);

@@ -2,9 +2,8 @@
 #pragma once
 
 #include "ui/commands/Workbench.h"
+#include "ui/look/SheetDialog.h"
 #include "ui/words/CoefficientText.h"
-
-#include <QDialog>
 
 #include <functional>
 
@@ -20,7 +19,7 @@ using TextPathAsk = std::function<QString(QWidget* parent, const QString& sugges
 TextPathAsk screenTextPath();
 
 /// The calibration function as text for a data logger: choose a form, copy it or save it. Stays open beside the work and follows it.
-class CoefficientsDialog : public QDialog {
+class CoefficientsDialog : public SheetDialog {
     Q_OBJECT
 
   public:

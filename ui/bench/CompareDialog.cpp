@@ -14,7 +14,6 @@
 #include "ui/words/Words.h"
 
 #include <QComboBox>
-#include <QDialogButtonBox>
 #include <QHBoxLayout>
 #include <QLabel>
 #include <QListWidget>
@@ -94,15 +93,10 @@ std::vector<FunctionChoice> functionsFor(FitDirection direction) {
 } // namespace
 
 CompareDialog::CompareDialog(Workbench& workbench, const Other& other, QWidget* parent)
-    : QDialog(parent), workbench_(workbench), choice_(new QComboBox), effect_(new EffectTable), findings_(new QLabel),
+    : SheetDialog(QStringLiteral("compareDialog"), tr("Side by side"), parent), workbench_(workbench), choice_(new QComboBox), effect_(new EffectTable), findings_(new QLabel),
       weighedDown_(new QListWidget), trial_(new TrialEvaluation(this)) {
-    setObjectName(QStringLiteral("compareDialog"));
-    setAttribute(Qt::WA_DeleteOnClose);
-    setWindowTitle(tr("Side by side"));
     setMinimumWidth(480);
-    auto* all = new QVBoxLayout(this);
-    all->setContentsMargins(space::card, space::card, space::card, space::card);
-    all->setSpacing(space::step + space::half);
+    body()->setSpacing(space::step + space::half);
     auto* with = new QLabel(tr("Compare &with"));
     with->setBuddy(choice_);
     with->setForegroundRole(inkRole::quiet);
@@ -111,14 +105,14 @@ CompareDialog::CompareDialog(Workbench& workbench, const Other& other, QWidget* 
     auto* top = new QHBoxLayout;
     top->addWidget(with);
     top->addWidget(choice_, 1);
-    all->addLayout(top);
-    all->addWidget(effect_);
+    body()->addLayout(top);
+    body()->addWidget(effect_);
     findings_->setObjectName(QStringLiteral("compareFindings"));
     findings_->setTextFormat(Qt::PlainText);
     findings_->setWordWrap(true);
     findings_->setFont(textFont(TextRole::Small));
     findings_->setTextInteractionFlags(Qt::TextSelectableByMouse);
-    all->addWidget(findings_);
+    body()->addWidget(findings_);
     weighedDown_->setObjectName(QStringLiteral("weighedDown"));
     weighedDown_->setAccessibleName(tr("Readings that the robust fit weighs down"));
     weighedDown_->setMaximumHeight(140);
@@ -127,14 +121,9 @@ CompareDialog::CompareDialog(Workbench& workbench, const Other& other, QWidget* 
         if (item)
             workbench_.select({item->data(Qt::UserRole).toLongLong()});
     });
-    all->addWidget(weighedDown_);
-    auto* buttons = new QDialogButtonBox;
-    take_ = buttons->addButton(QString(), QDialogButtonBox::AcceptRole);
-    take_->setObjectName(QStringLiteral("takeOver"));
-    buttons->addButton(tr("Close"), QDialogButtonBox::RejectRole);
-    connect(buttons, &QDialogButtonBox::accepted, this, &CompareDialog::take);
-    connect(buttons, &QDialogButtonBox::rejected, this, &QDialog::reject);
-    all->addWidget(buttons);
+    body()->addWidget(weighedDown_);
+    take_ = addButton(QString(), QDialogButtonBox::AcceptRole, QStringLiteral("takeOver"));
+    addClose();
     connect(trial_, &TrialEvaluation::ready, this, &CompareDialog::show);
     fillChoice(other);
     connect(choice_, &QComboBox::currentIndexChanged, this, [this](int index) { compare(others_[static_cast<std::size_t>(index)]); });
@@ -206,12 +195,12 @@ void CompareDialog::show(const std::shared_ptr<const Evaluation>& trial) {
     }
     findings_->setText(lines.join(QLatin1Char('\n')));
     take_->setEnabled(then && then->fit && !workbench_.readOnly());
-    fitToContents(*this);
+    fitToContents();
 }
 
-void CompareDialog::take() {
+void CompareDialog::accept() {
     workbench_.perform(changePart(workbench_.record(), &Record::choices, tr("choose %1").arg(other_.name), other_.takeOver));
-    accept();
+    QDialog::accept();
 }
 
 void CompareDialog::listWeighedDown(const PhaseEvaluation& trial) {

@@ -2,8 +2,7 @@
 #pragma once
 
 #include "ui/commands/Workbench.h"
-
-#include <QDialog>
+#include "ui/look/SheetDialog.h"
 
 #include <functional>
 #include <vector>
@@ -21,7 +20,7 @@ class TrialEvaluation;
 /// Two evaluations of the same readings side by side: another function, another method, or all readings without the exclusions.
 /// Coefficients, s, U, largest residual, values at chosen points, and the findings that differ. What is compared is chosen at the
 /// top; the other one can be taken over.
-class CompareDialog : public QDialog {
+class CompareDialog : public SheetDialog {
     Q_OBJECT
 
   public:
@@ -40,11 +39,12 @@ class CompareDialog : public QDialog {
     /// Only looked at: a robust fit never becomes the calibration function. Readings that it weighs down are listed to select.
     static Other withRobust(const Record& record, RobustWeight weight);
 
+    void accept() override;
+
   private:
     void fillChoice(const Other& first);
     void compare(const Other& other);
     void show(const std::shared_ptr<const Evaluation>& trial);
-    void take();
     void listWeighedDown(const PhaseEvaluation& trial);
 
     Workbench& workbench_;

@@ -25,14 +25,8 @@ constexpr int DigitsOfSeveral = 6; // where no uncertainty says how many to trus
 } // namespace
 
 ConvertDialog::ConvertDialog(Workbench& workbench, QWidget* parent)
-    : QDialog(parent), workbench_(workbench), indication_(new NumberEdit), repeats_(new QSpinBox), value_(new QLabel), interval_(new QLabel), warnings_(new QLabel) {
-    setObjectName(QStringLiteral("convertDialog"));
-    setWindowTitle(tr("Value from a reading"));
-    setAttribute(Qt::WA_DeleteOnClose);
+    : SheetDialog(QStringLiteral("convertDialog"), tr("Value from a reading"), parent), workbench_(workbench), indication_(new NumberEdit), repeats_(new QSpinBox), value_(new QLabel), interval_(new QLabel), warnings_(new QLabel) {
     setMinimumWidth(380);
-    auto* all = new QVBoxLayout(this);
-    all->setContentsMargins(space::card, space::card, space::card, space::card);
-    all->setSpacing(space::step);
     auto* form = new QFormLayout;
     indication_->setObjectName(QStringLiteral("convertIndication"));
     indication_->setAccessibleName(tr("Indication"));
@@ -41,7 +35,7 @@ ConvertDialog::ConvertDialog(Workbench& workbench, QWidget* parent)
     repeats_->setValue(workbench_.record().choices.repeats.value_or(1));
     form->addRow(tr("&Indication"), indication_);
     form->addRow(tr("&Mean of so many readings"), repeats_);
-    all->addLayout(form);
+    body()->addLayout(form);
     value_->setObjectName(QStringLiteral("convertValue"));
     value_->setFont(textFont(TextRole::Title));
     interval_->setObjectName(QStringLiteral("convertInterval"));
@@ -51,9 +45,9 @@ ConvertDialog::ConvertDialog(Workbench& workbench, QWidget* parent)
         label->setTextFormat(Qt::PlainText);
         label->setWordWrap(true);
         label->setTextInteractionFlags(Qt::TextSelectableByMouse);
-        all->addWidget(label);
+        body()->addWidget(label);
     }
-    all->addStretch(1);
+    body()->addStretch(1);
     connect(indication_, &QLineEdit::textChanged, this, &ConvertDialog::convert);
     connect(repeats_, &QSpinBox::valueChanged, this, &ConvertDialog::convert);
     connect(&workbench_, &Workbench::evaluationChanged, this, &ConvertDialog::convert);

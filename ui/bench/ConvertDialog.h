@@ -2,8 +2,7 @@
 #pragma once
 
 #include "ui/commands/Workbench.h"
-
-#include <QDialog>
+#include "ui/look/SheetDialog.h"
 
 class QLabel;
 class QSpinBox;
@@ -14,7 +13,7 @@ class NumberEdit;
 
 /// Type an indication, read the value and its uncertainty: the calibration function read backwards, as the item's user will. Stays
 /// open beside the work and follows it.
-class ConvertDialog : public QDialog {
+class ConvertDialog : public SheetDialog {
     Q_OBJECT
 
   public:

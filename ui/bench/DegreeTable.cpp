@@ -1,16 +1,14 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/bench/DegreeTable.h"
 
-#include "ui/look/Look.h"
+#include "ui/bench/FiguresTable.h"
 #include "ui/look/NumberText.h"
-#include "ui/look/PaddedDelegate.h"
 #include "ui/plot/PlotSubject.h"
 
-#include <QDialogButtonBox>
-#include <QHeaderView>
+#include <QApplication>
+#include <QClipboard>
 #include <QLabel>
 #include <QPushButton>
-#include <QTableWidget>
 #include <QVBoxLayout>
 
 #include <cmath>
@@ -31,7 +29,7 @@ QString changeText(const DegreeStep& step, const QString& inUnit) {
 }
 
 /// What speaks against a degree, or nothing.
-QString verdictText(const DegreeStep& step) {
+QString objectionText(const DegreeStep& step) {
     if (!step.monotonic)
         return DegreeTable::tr("turns: not for reading back");
     return step.worth ? QString() : DegreeTable::tr("gains too little");
@@ -41,102 +39,70 @@ QString nameOf(int degree) {
     return degree == 1 ? DegreeTable::tr("Straight line") : DegreeTable::tr("Degree %1").arg(degree);
 }
 
-} // namespace
-
-DegreeTable::DegreeTable(const Question& question, QWidget* parent) : QDialog(parent), table_(new QTableWidget) {
-    setObjectName(QStringLiteral("degreeTable"));
-    setAttribute(Qt::WA_DeleteOnClose);
-    setWindowTitle(tr("Choosing a degree"));
-    auto* all = new QVBoxLayout(this);
-    all->setContentsMargins(space::card, space::card, space::card, space::card);
-    all->setSpacing(space::step);
-    fill(question);
-    all->addWidget(table_);
-    const DegreeLadder& ladder = question.ladder;
-    QString words = tr("Suggested: degree %1, the lowest of three (F test at 5 %: %2, AICc: %3, ASTM E74: %4) that gains enough and only rises or falls.")
-                        .arg(ladder.suggested)
-                        .arg(ladder.byPartialF)
-                        .arg(ladder.byAicc ? QString::number(*ladder.byAicc) : QStringLiteral("–"))
-                        .arg(ladder.byE74);
-    words += QLatin1Char('\n');
-    words += question.resolution > 0 ? tr("A degree gains enough when s falls by at least the resolution/√12 = %1.")
-                                           .arg(withUnit(significantText(question.resolution / std::sqrt(12.0), 2), question.unit))
-                                     : tr("The resolution is not stated, so nobody can say whether a gain is worth it: state it on Job.");
-    auto* note = new QLabel(words);
-    note->setObjectName(QStringLiteral("degreeNote"));
-    note->setTextFormat(Qt::PlainText);
-    note->setWordWrap(true);
-    note->setForegroundRole(inkRole::quiet);
-    all->addWidget(note);
-    auto* buttons = new QDialogButtonBox;
-    use_ = buttons->addButton(tr("&Use this degree"), QDialogButtonBox::AcceptRole);
-    use_->setObjectName(QStringLiteral("useDegree"));
-    buttons->addButton(tr("Close"), QDialogButtonBox::RejectRole);
-    connect(buttons, &QDialogButtonBox::accepted, this, [this] {
-        emit degreeChosen(table_->currentRow() + 1);
-        accept();
-    });
-    connect(buttons, &QDialogButtonBox::rejected, this, &QDialog::reject);
-    connect(table_, &QTableWidget::cellDoubleClicked, use_, &QPushButton::click);
-    const auto follow = [this, now = question.now] { use_->setEnabled(table_->currentRow() >= 0 && table_->currentRow() + 1 != now); };
-    connect(table_, &QTableWidget::currentCellChanged, this, follow);
-    follow();
-    all->addWidget(buttons);
+FiguresRow rowOf(const DegreeStep& step, const DegreeTable::Question& question) {
+    QString name = nameOf(step.degree);
+    if (step.degree == question.now)
+        name += DegreeTable::tr(" (in use)");
+    else if (step.degree == question.ladder.suggested)
+        name += DegreeTable::tr(" (suggested)");
+    const QString none = QStringLiteral("–");
+    return {{name, significantText(step.residualSd, 3), step.f ? significantText(*step.f, 3) : none, step.p ? pText(*step.p) : none,
+             step.aicc ? fixedText(*step.aicc, 1) : none, ratioText(step), changeText(step, question.inUnit), objectionText(step)}};
 }
 
-void DegreeTable::fill(const Question& question) {
-    const QStringList heads{tr("function"), withUnit(tr("s"), question.unit), tr("F of last term"), tr("p"), tr("AICc"), tr("ratio of s, ASTM E74"),
-                            withUnit(tr("largest change"), question.unit), tr("but")};
-    table_->setObjectName(QStringLiteral("degrees"));
-    table_->setAccessibleName(tr("Degrees"));
-    table_->setColumnCount(static_cast<int>(heads.size()));
-    table_->setRowCount(static_cast<int>(question.ladder.steps.size()));
-    table_->setHorizontalHeaderLabels(heads);
-    for (int column = 0; column < heads.size(); ++column)
-        table_->horizontalHeaderItem(column)->setTextAlignment(Qt::AlignVCenter | (column == 0 || column + 1 == heads.size() ? Qt::AlignLeft : Qt::AlignRight));
-    table_->verticalHeader()->hide();
-    table_->setShowGrid(false);
-    table_->setEditTriggers(QAbstractItemView::NoEditTriggers);
-    table_->setSelectionBehavior(QAbstractItemView::SelectRows);
+/// Which degree is suggested, and why.
+QString suggestionText(const DegreeTable::Question& question) {
+    const DegreeLadder& ladder = question.ladder;
+    const QString words = DegreeTable::tr("Suggested: degree %1, the lowest of three (F test at 5 %: %2, AICc: %3, ASTM E74: %4) that gains enough and only rises or falls.")
+                              .arg(ladder.suggested)
+                              .arg(ladder.byPartialF)
+                              .arg(ladder.byAicc ? QString::number(*ladder.byAicc) : QStringLiteral("–"))
+                              .arg(ladder.byE74);
+    const QString gain = question.resolution > 0 ? DegreeTable::tr("A degree gains enough when s falls by at least the resolution/√12 = %1.")
+                                                       .arg(withUnit(significantText(question.resolution / std::sqrt(12.0), 2), question.unit))
+                                                 : DegreeTable::tr("The resolution is not stated, so nobody can say whether a gain is worth it: state it on Job.");
+    return words + QLatin1Char('\n') + gain;
+}
+
+} // namespace
+
+DegreeTable::DegreeTable(const Question& question, QWidget* parent)
+    : SheetDialog(QStringLiteral("degreeTable"), tr("Choosing a degree"), parent), table_(new FiguresTable(QStringLiteral("degrees"), tr("Degrees"))),
+      use_(addButton(tr("&Use this degree"), QDialogButtonBox::AcceptRole, QStringLiteral("useDegree"))), now_(question.now) {
+    std::vector<FiguresRow> rows;
+    for (const DegreeStep& step : question.ladder.steps)
+        rows.push_back(rowOf(step, question));
     table_->setSelectionMode(QAbstractItemView::SingleSelection);
-    table_->setTabKeyNavigation(false);
-    table_->setItemDelegate(new PaddedDelegate(table_));
-    table_->horizontalHeader()->setHighlightSections(false);
-    table_->verticalHeader()->setSectionResizeMode(QHeaderView::Fixed);
-    table_->verticalHeader()->setDefaultSectionSize(QFontMetrics(textFont(TextRole::Body)).height() + 10);
-    for (int row = 0; row < table_->rowCount(); ++row) {
-        const DegreeStep& step = question.ladder.steps[static_cast<std::size_t>(row)];
-        QString name = nameOf(step.degree);
-        if (step.degree == question.now)
-            name += tr(" (in use)");
-        else if (step.degree == question.ladder.suggested)
-            name += tr(" (suggested)");
-        const QStringList cells{name,
-                                significantText(step.residualSd, 3),
-                                step.f ? significantText(*step.f, 3) : QStringLiteral("–"),
-                                step.p ? pText(*step.p) : QStringLiteral("–"),
-                                step.aicc ? fixedText(*step.aicc, 1) : QStringLiteral("–"),
-                                ratioText(step),
-                                changeText(step, question.inUnit),
-                                verdictText(step)};
-        for (int column = 0; column < cells.size(); ++column) {
-            auto* item = new QTableWidgetItem(cells[column]);
-            item->setTextAlignment(Qt::AlignVCenter | (column == 0 || column == cells.size() - 1 ? Qt::AlignLeft : Qt::AlignRight));
-            if (column == cells.size() - 1)
-                item->setForeground(scheme().warning);
-            table_->setItem(row, column, item);
-        }
-    }
-    table_->resizeColumnsToContents();
-    int width = 4, height = table_->horizontalHeader()->sizeHint().height() + 6;
-    for (int column = 0; column < table_->columnCount(); ++column) {
-        table_->setColumnWidth(column, table_->columnWidth(column) + space::step);
-        width += table_->columnWidth(column);
-    }
-    height += table_->rowCount() * table_->verticalHeader()->defaultSectionSize();
-    table_->setMinimumHeight(height);
-    table_->setMinimumWidth(std::min(width, 1000));
+    table_->setObjectionColumn(7);
+    table_->setFigures({tr("function"), headed(tr("s"), question.unit), tr("F of last term"), tr("p"), tr("AICc"), tr("ratio of s, ASTM E74"),
+                        headed(tr("largest change"), question.unit), tr("but")},
+                       rows);
+    QLabel* note = quietNote(QStringLiteral("degreeNote"));
+    note->setText(suggestionText(question));
+    body()->addWidget(table_, 1);
+    body()->addWidget(note);
+    connect(addButton(tr("Copy"), QDialogButtonBox::ActionRole, QStringLiteral("copyDegrees")), &QPushButton::clicked, this,
+            [this] { QApplication::clipboard()->setText(table_->text()); });
+    addClose();
+    connect(table_, &QTableWidget::cellDoubleClicked, use_, &QPushButton::click);
+    connect(table_, &QTableWidget::currentCellChanged, this, &DegreeTable::follow);
     table_->setCurrentCell(question.ladder.suggested - 1, 0);
+    follow();
+    fitToContents();
+    table_->setFocus();
+}
+
+int DegreeTable::chosen() const {
+    return table_->currentRow() + 1;
+}
+
+void DegreeTable::follow() {
+    use_->setEnabled(chosen() > 0 && chosen() != now_);
+}
+
+void DegreeTable::accept() {
+    emit degreeChosen(chosen());
+    QDialog::accept();
 }
 
 } // namespace spanwright

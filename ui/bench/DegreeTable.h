@@ -2,16 +2,14 @@
 #pragma once
 
 #include "core/fit/DegreeLadder.h"
-
-#include <QDialog>
-
-class QPushButton;
-class QTableWidget;
+#include "ui/look/SheetDialog.h"
 
 namespace spanwright {
 
+class FiguresTable;
+
 /// Polynomials of rising degree side by side, what each gains and what it changes. The chosen row can be used.
-class DegreeTable : public QDialog {
+class DegreeTable : public SheetDialog {
     Q_OBJECT
 
   public:
@@ -24,14 +22,18 @@ class DegreeTable : public QDialog {
     };
     explicit DegreeTable(const Question& question, QWidget* parent = nullptr);
 
+    void accept() override;
+
   signals:
     void degreeChosen(int degree);
 
   private:
-    void fill(const Question& question);
+    [[nodiscard]] int chosen() const; ///< 0 when none is
+    void follow();
 
-    QTableWidget* table_;
+    FiguresTable* table_;
     QPushButton* use_;
+    int now_;
 };
 
 } // namespace spanwright

@@ -11,7 +11,6 @@
 #include "ui/words/Words.h"
 
 #include <QComboBox>
-#include <QDialogButtonBox>
 #include <QLabel>
 #include <QLineEdit>
 #include <QPushButton>
@@ -52,14 +51,8 @@ QStringList emptiedSetPoints(const Record& record, const std::vector<ReadingId>&
 } // namespace
 
 ExcludeDialog::ExcludeDialog(Workbench& workbench, std::vector<ReadingId> ids, QWidget* parent)
-    : QDialog(parent), workbench_(workbench), ids_(std::move(ids)), effect_(new EffectTable), trial_(new TrialEvaluation(this)) {
-    setObjectName(QStringLiteral("excludeDialog"));
-    setAttribute(Qt::WA_DeleteOnClose);
-    setWindowTitle(tr("Exclude %1").arg(readingsText(ids_.size())));
+    : SheetDialog(QStringLiteral("excludeDialog"), tr("Exclude %1").arg(readingsText(ids.size())), parent), workbench_(workbench), ids_(std::move(ids)), effect_(new EffectTable), trial_(new TrialEvaluation(this)) {
     setMinimumWidth(480);
-    auto* all = new QVBoxLayout(this);
-    all->setContentsMargins(space::card, space::card, space::card, space::card);
-    all->setSpacing(space::step);
     const Record& record = workbench_.record();
     const PlotSubject subject{phaseOf(workbench_.evaluation(), record.choices.phase), record.item, record.readings, record.exclusions, directionOf(record.choices)};
     QStringList lines;
@@ -73,31 +66,25 @@ ExcludeDialog::ExcludeDialog(Workbench& workbench, std::vector<ReadingId> ids, Q
     auto* which = new QLabel(lines.join(QLatin1Char('\n')));
     which->setTextFormat(Qt::PlainText);
     which->setWordWrap(true);
-    all->addWidget(which);
+    body()->addWidget(which);
     const QStringList emptied = emptiedSetPoints(record, ids_);
     if (!emptied.isEmpty()) {
         auto* whole = new QLabel(tr("No reading is left at %1: no result will be stated there.").arg(emptied.join(QStringLiteral(", "))));
         whole->setObjectName(QStringLiteral("excludeWhole"));
         whole->setForegroundRole(inkRole::warning);
         whole->setWordWrap(true);
-        all->addWidget(whole);
+        body()->addWidget(whole);
     }
-    buildReason(all);
+    buildReason();
     auto* stays = new QLabel(tr("They stay in the record and in view, and can be taken back in. What the exclusion does:"));
     stays->setForegroundRole(inkRole::quiet);
     stays->setFont(textFont(TextRole::Small));
     stays->setWordWrap(true);
-    all->addWidget(stays);
-    all->addWidget(effect_);
-    auto* buttons = new QDialogButtonBox;
-    exclude_ = buttons->addButton(tr("Exclude"), QDialogButtonBox::AcceptRole);
-    exclude_->setObjectName(QStringLiteral("excludeAccept"));
+    body()->addWidget(stays);
+    body()->addWidget(effect_);
+    exclude_ = addButton(tr("Exclude"), QDialogButtonBox::AcceptRole, QStringLiteral("excludeAccept"));
     exclude_->setDefault(true);
-    buttons->addButton(tr("Keep them in"), QDialogButtonBox::RejectRole);
-    connect(buttons, &QDialogButtonBox::accepted, this, &ExcludeDialog::perform);
-    connect(buttons, &QDialogButtonBox::rejected, this, &QDialog::reject);
-    all->addSpacing(space::step);
-    all->addWidget(buttons);
+    addButton(tr("Keep them in"), QDialogButtonBox::RejectRole);
     connect(trial_, &TrialEvaluation::ready, this, &ExcludeDialog::showEffect);
     effect_->show(tr("now"), tr("without"), effectRows(subject.phase.get(), nullptr, record.item));
     Record without = record;
@@ -108,7 +95,7 @@ ExcludeDialog::ExcludeDialog(Workbench& workbench, std::vector<ReadingId> ids, Q
     reason_->setFocus();
 }
 
-void ExcludeDialog::buildReason(QVBoxLayout* all) {
+void ExcludeDialog::buildReason() {
     reason_ = new QComboBox;
     reason_->setObjectName(QStringLiteral("excludeReason"));
     reason_->addItem(tr("choose a reason"));
@@ -124,7 +111,7 @@ void ExcludeDialog::buildReason(QVBoxLayout* all) {
     missing_->setFont(textFont(TextRole::Small));
     missing_->setForegroundRole(inkRole::warning);
     for (QWidget* widget : std::initializer_list<QWidget*>{why, reason_, words_, missing_})
-        all->addWidget(widget);
+        body()->addWidget(widget);
     connect(reason_, &QComboBox::currentIndexChanged, this, &ExcludeDialog::complete);
     connect(words_, &QLineEdit::textChanged, this, &ExcludeDialog::complete);
 }
@@ -149,11 +136,11 @@ void ExcludeDialog::showEffect(const std::shared_ptr<const Evaluation>& trial) {
     adjustSize();
 }
 
-void ExcludeDialog::perform() {
+void ExcludeDialog::accept() {
     if (!reason())
         return;
     workbench_.perform(std::make_unique<Exclude>(ids_, *reason(), words_->text().trimmed().toStdString()));
-    accept();
+    QDialog::accept();
 }
 
 } // namespace spanwright

@@ -2,8 +2,7 @@
 #pragma once
 
 #include "ui/commands/Workbench.h"
-
-#include <QDialog>
+#include "ui/look/SheetDialog.h"
 
 class QComboBox;
 class QLabel;
@@ -18,17 +17,18 @@ class TrialEvaluation;
 
 /// Asks for the reason of an exclusion, from a short list or in words, and shows what it does to coefficients, s and U before it is
 /// done. The readings stay in the record and in view.
-class ExcludeDialog : public QDialog {
+class ExcludeDialog : public SheetDialog {
     Q_OBJECT
 
   public:
     ExcludeDialog(Workbench& workbench, std::vector<ReadingId> ids, QWidget* parent = nullptr);
 
+    void accept() override;
+
   private:
-    void buildReason(QVBoxLayout* all);
+    void buildReason();
     void showEffect(const std::shared_ptr<const Evaluation>& trial);
     void complete();
-    void perform();
     [[nodiscard]] std::optional<ExclusionReason> reason() const;
 
     Workbench& workbench_;

@@ -11,7 +11,6 @@
 #include "ui/plot/PlotSubject.h"
 #include "ui/words/Words.h"
 
-#include <QDialogButtonBox>
 #include <QLabel>
 #include <QPushButton>
 #include <QVBoxLayout>
@@ -81,40 +80,30 @@ FieldBinding limitBinding() {
 } // namespace
 
 ExclusionsDialog::ExclusionsDialog(Workbench& workbench, QWidget* parent)
-    : QDialog(parent), workbench_(workbench), list_(new FiguresTable(QStringLiteral("exclusionsList"), tr("Excluded readings"))),
-      effect_(new EffectTable), limit_(new QLabel), readmit_(new QPushButton), evaluation_(new TrialEvaluation(this)) {
-    setObjectName(QStringLiteral("exclusionsDialog"));
-    setAttribute(Qt::WA_DeleteOnClose);
-    setWindowTitle(tr("What the exclusions do"));
-    auto* all = new QVBoxLayout(this);
-    all->setContentsMargins(space::card, space::card, space::card, space::card);
-    all->setSpacing(space::step + space::half);
+    : SheetDialog(QStringLiteral("exclusionsDialog"), tr("What the exclusions do"), parent), workbench_(workbench), list_(new FiguresTable(QStringLiteral("exclusionsList"), tr("Excluded readings"))),
+      effect_(new EffectTable), limit_(new QLabel), evaluation_(new TrialEvaluation(this)) {
+    body()->setSpacing(space::step + space::half);
     list_->setTextColumns({4, 5});
     list_->setMostRowsShown(8);
     list_->setSelectionMode(QAbstractItemView::SingleSelection);
-    all->addWidget(list_, 1);
-    all->addWidget(effect_);
+    body()->addWidget(list_, 1);
+    body()->addWidget(effect_);
     FieldBox* limit = fieldBox(workbench, QStringLiteral("choices.exclusion_limit"), tr("Limit on exclusions"), limitBinding());
     limit->setUnit(tr("% of the readings of a phase"));
     limit->findChild<FieldLine*>()->setMaximumWidth(80);
-    all->addWidget(limit);
+    body()->addWidget(limit);
     limit_->setObjectName(QStringLiteral("exclusionsShare"));
     limit_->setFont(textFont(TextRole::Small));
     limit_->setWordWrap(true);
-    all->addWidget(limit_);
-    auto* buttons = new QDialogButtonBox;
-    buttons->addButton(readmit_, QDialogButtonBox::ActionRole);
-    readmit_->setObjectName(QStringLiteral("readmitChosen"));
-    readmit_->setAutoDefault(false);
-    buttons->addButton(tr("Close"), QDialogButtonBox::RejectRole)->setDefault(true);
+    body()->addWidget(limit_);
+    readmit_ = addButton({}, QDialogButtonBox::ActionRole, QStringLiteral("readmitChosen"));
+    addClose()->setDefault(true);
     connect(readmit_, &QPushButton::clicked, this, &ExclusionsDialog::readmit);
-    connect(buttons, &QDialogButtonBox::rejected, this, &QDialog::reject);
-    all->addWidget(buttons);
     connect(list_, &QTableWidget::currentCellChanged, this, &ExclusionsDialog::showEffect);
     connect(evaluation_, &TrialEvaluation::ready, this, &ExclusionsDialog::take);
     connect(&workbench_, &Workbench::evaluationChanged, this, &ExclusionsDialog::start);
     start();
-    fitToContents(*this);
+    fitToContents();
     list_->setFocus();
 }
 
@@ -175,7 +164,7 @@ void ExclusionsDialog::take(const std::shared_ptr<const Evaluation>& evaluation)
     showList();
     showEffect();
     if (next_ == 1)
-        fitToContents(*this);
+        fitToContents();
     evaluateNext();
 }
 

@@ -3,8 +3,7 @@
 
 #include "ui/bench/FitEffect.h"
 #include "ui/commands/Workbench.h"
-
-#include <QDialog>
+#include "ui/look/SheetDialog.h"
 
 class QLabel;
 class QPushButton;
@@ -16,7 +15,7 @@ class TrialEvaluation;
 
 /// What each exclusion did: the fit as it is beside the fit with that reading back in, and with all of them. From here readings
 /// are taken back in, and it is said how many may be excluded before findings and certificate say so.
-class ExclusionsDialog : public QDialog {
+class ExclusionsDialog : public SheetDialog {
     Q_OBJECT
 
   public:

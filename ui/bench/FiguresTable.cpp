@@ -9,9 +9,7 @@
 #include <QContextMenuEvent>
 #include <QHeaderView>
 #include <QKeyEvent>
-#include <QLayout>
 #include <QMenu>
-#include <QScreen>
 
 #include <algorithm>
 #include <numeric>
@@ -31,6 +29,10 @@ QString plain(QString cell) {
 }
 
 } // namespace
+
+QString headed(const QString& name, const QString& unit) {
+    return unit.isEmpty() ? name : name + QLatin1Char('\n') + unit;
+}
 
 FiguresTable::FiguresTable(const QString& id, const QString& name, QWidget* parent) : QTableWidget(parent) {
     setObjectName(id);
@@ -67,6 +69,8 @@ void FiguresTable::setFigures(const QStringList& headings, const std::vector<Fig
             item->setTextAlignment(sideOf(column) | Qt::AlignVCenter);
             if (figures.quiet)
                 item->setForeground(palette().brush(inkRole::quiet));
+            else if (column == objections_)
+                item->setForeground(palette().brush(inkRole::warning));
             setItem(row, column, item);
         }
     }
@@ -84,6 +88,11 @@ void FiguresTable::setFigures(const QStringList& headings, const std::vector<Fig
 void FiguresTable::setTextColumns(std::set<int> columns) {
     words_ = std::move(columns);
     words_.insert(0);
+}
+
+void FiguresTable::setObjectionColumn(int column) {
+    objections_ = column;
+    words_.insert(column);
 }
 
 Qt::Alignment FiguresTable::sideOf(int column) const {
@@ -169,17 +178,6 @@ void FiguresTable::contextMenuEvent(QContextMenuEvent* event) {
     some->setEnabled(selectionModel()->hasSelection());
     menu.addAction(tr("Copy the whole table"), this, [this] { QApplication::clipboard()->setText(text()); });
     menu.exec(event->globalPos());
-}
-
-void fitToContents(QDialog& dialog) {
-    constexpr int frame = 60; // of the window manager
-    dialog.ensurePolished();
-    QLayout* layout = dialog.layout();
-    layout->activate();
-    const QSize room = dialog.screen()->availableSize() - QSize(frame, frame);
-    const int width = std::min(std::max(layout->totalSizeHint().width(), dialog.minimumWidth()), room.width());
-    const int tall = layout->hasHeightForWidth() ? layout->totalHeightForWidth(width) : layout->totalSizeHint().height();
-    dialog.resize(width, std::min(std::max(tall, layout->totalMinimumSize().height()), room.height()));
 }
 
 } // namespace spanwright

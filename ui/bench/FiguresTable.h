@@ -1,7 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
-#include <QDialog>
 #include <QTableWidget>
 
 #include <set>
@@ -16,6 +15,9 @@ struct FiguresRow {
     bool quiet = false; ///< beside the matter
 };
 
+/// A heading over its unit: "value\nmA".
+QString headed(const QString& name, const QString& unit);
+
 /// A table to be read, selected and copied: Ctrl+C or the menu of the right button put the selected rows, or all of them where
 /// none is selected, on the clipboard as text with tabs under their headings.
 class FiguresTable : public QTableWidget {
@@ -26,6 +28,8 @@ class FiguresTable : public QTableWidget {
     void setFigures(const QStringList& headings, const std::vector<FiguresRow>& rows);
     /// Columns that hold words, which stand at the left.
     void setTextColumns(std::set<int> columns);
+    /// A column of words that speak against their row.
+    void setObjectionColumn(int column);
     /// At most this many rows are seen without scrolling.
     void setMostRowsShown(int rows);
     [[nodiscard]] QString text() const; ///< of every row
@@ -44,10 +48,7 @@ class FiguresTable : public QTableWidget {
     [[nodiscard]] Qt::Alignment sideOf(int column) const;
 
     std::set<int> words_{0};
-    int mostRows_ = 16, headHeight_ = 0;
+    int objections_ = -1, mostRows_ = 16, headHeight_ = 0;
 };
-
-/// Gives a dialog the size at which its tables and its wrapped texts are seen whole, as far as the screen allows.
-void fitToContents(QDialog& dialog);
 
 } // namespace spanwright

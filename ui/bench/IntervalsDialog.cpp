@@ -8,7 +8,6 @@
 #include "ui/plot/PlotSubject.h"
 #include "ui/words/Words.h"
 
-#include <QDialogButtonBox>
 #include <QGridLayout>
 #include <QHBoxLayout>
 #include <QLabel>
@@ -53,15 +52,9 @@ QString between(double low, double high, double u) {
 } // namespace
 
 IntervalsDialog::IntervalsDialog(Workbench& workbench, QWidget* parent)
-    : QDialog(parent), workbench_(workbench), coefficients_(new QGridLayout), intervals_(new QGridLayout), together_(new QLabel),
+    : SheetDialog(QStringLiteral("intervalsDialog"), tr("Coefficients and intervals"), parent), workbench_(workbench), coefficients_(new QGridLayout), intervals_(new QGridLayout), together_(new QLabel),
       placeName_(new QLabel), place_(new NumberEdit), repeats_(new QSpinBox), words_(new QLabel) {
-    setObjectName(QStringLiteral("intervalsDialog"));
-    setAttribute(Qt::WA_DeleteOnClose);
-    setWindowTitle(tr("Coefficients and intervals"));
     setMinimumWidth(560);
-    auto* all = new QVBoxLayout(this);
-    all->setContentsMargins(space::card, space::card, space::card, space::card);
-    all->setSpacing(space::step);
     for (QGridLayout* grid : {coefficients_, intervals_}) {
         grid->setHorizontalSpacing(space::card + space::step);
         grid->setVerticalSpacing(space::half);
@@ -87,17 +80,14 @@ IntervalsDialog::IntervalsDialog(Workbench& workbench, QWidget* parent)
     asked->addWidget(new QLabel(tr("mean of")));
     asked->addWidget(repeats_);
     asked->addWidget(new QLabel(tr("readings")));
-    all->addLayout(coefficients_);
-    all->addWidget(together_);
-    all->addSpacing(space::step);
-    all->addLayout(asked);
-    all->addLayout(intervals_);
-    all->addWidget(words_);
-    all->addStretch(1);
-    auto* buttons = new QDialogButtonBox;
-    buttons->addButton(tr("Close"), QDialogButtonBox::RejectRole);
-    connect(buttons, &QDialogButtonBox::rejected, this, &QDialog::reject);
-    all->addWidget(buttons);
+    body()->addLayout(coefficients_);
+    body()->addWidget(together_);
+    body()->addSpacing(space::step);
+    body()->addLayout(asked);
+    body()->addLayout(intervals_);
+    body()->addWidget(words_);
+    body()->addStretch(1);
+    addClose();
     connect(place_, &QLineEdit::textChanged, this, &IntervalsDialog::refresh);
     connect(repeats_, &QSpinBox::valueChanged, this, &IntervalsDialog::refresh);
     connect(&workbench_, &Workbench::evaluationChanged, this, &IntervalsDialog::refresh);

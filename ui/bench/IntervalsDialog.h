@@ -2,8 +2,7 @@
 #pragma once
 
 #include "ui/commands/Workbench.h"
-
-#include <QDialog>
+#include "ui/look/SheetDialog.h"
 
 class QGridLayout;
 class QLabel;
@@ -14,7 +13,7 @@ namespace spanwright {
 class NumberEdit;
 
 /// The coefficients with their uncertainties, each by itself and all together, and every interval of the function at one place.
-class IntervalsDialog : public QDialog {
+class IntervalsDialog : public SheetDialog {
     Q_OBJECT
 
   public:

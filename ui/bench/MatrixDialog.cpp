@@ -11,7 +11,6 @@
 
 #include <QApplication>
 #include <QClipboard>
-#include <QDialogButtonBox>
 #include <QFileDialog>
 #include <QFileInfo>
 #include <QHeaderView>
@@ -26,13 +25,7 @@
 namespace spanwright {
 
 MatrixDialog::MatrixDialog(Workbench& workbench, QWidget* parent)
-    : QDialog(parent), workbench_(workbench), model_(new MatrixModel(this)), table_(new QTableView), about_(new QLabel), refusal_(new QLabel) {
-    setObjectName(QStringLiteral("matrixDialog"));
-    setAttribute(Qt::WA_DeleteOnClose);
-    setWindowTitle(tr("Covariances between readings"));
-    auto* all = new QVBoxLayout(this);
-    all->setContentsMargins(space::card, space::card, space::card, space::card);
-    all->setSpacing(space::step);
+    : SheetDialog(QStringLiteral("matrixDialog"), tr("Covariances between readings"), parent), workbench_(workbench), model_(new MatrixModel(this)), table_(new QTableView), about_(new QLabel), refusal_(new QLabel) {
     about_->setObjectName(QStringLiteral("matrixAbout"));
     refusal_->setObjectName(QStringLiteral("matrixRefusal"));
     refusal_->setForegroundRole(inkRole::warning);
@@ -53,13 +46,11 @@ MatrixDialog::MatrixDialog(Workbench& workbench, QWidget* parent)
     table_->verticalHeader()->setSectionResizeMode(QHeaderView::Fixed);
     table_->verticalHeader()->setHighlightSections(false);
     table_->verticalHeader()->setDefaultSectionSize(QFontMetrics(textFont(TextRole::Body)).height() + 6);
-    all->addWidget(about_);
-    all->addWidget(table_, 1);
-    all->addWidget(refusal_);
-    auto* buttons = new QDialogButtonBox;
+    body()->addWidget(about_);
+    body()->addWidget(table_, 1);
+    body()->addWidget(refusal_);
     const auto button = [&](const char* id, const QString& text, QDialogButtonBox::ButtonRole role, void (MatrixDialog::*run)()) {
-        QPushButton* made = buttons->addButton(text, role);
-        made->setObjectName(QLatin1String(id));
+        QPushButton* made = addButton(text, role, QLatin1String(id));
         made->setAutoDefault(false);
         connect(made, &QPushButton::clicked, this, run);
         changing_.push_back(made);
@@ -68,9 +59,7 @@ MatrixDialog::MatrixDialog(Workbench& workbench, QWidget* parent)
     button("matrixLoad", tr("&Load…"), QDialogButtonBox::ActionRole, &MatrixDialog::load);
     button("matrixPaste", tr("&Paste"), QDialogButtonBox::ActionRole, &MatrixDialog::paste);
     remove_ = button("matrixRemove", tr("&Remove"), QDialogButtonBox::DestructiveRole, &MatrixDialog::remove);
-    buttons->addButton(tr("Close"), QDialogButtonBox::RejectRole);
-    connect(buttons, &QDialogButtonBox::rejected, this, &QDialog::reject);
-    all->addWidget(buttons);
+    addClose();
     connect(&workbench_, &Workbench::recordChanged, this, &MatrixDialog::refresh);
     refresh();
 }

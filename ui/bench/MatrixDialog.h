@@ -2,8 +2,7 @@
 #pragma once
 
 #include "ui/commands/Workbench.h"
-
-#include <QDialog>
+#include "ui/look/SheetDialog.h"
 
 class QLabel;
 class QPushButton;
@@ -15,7 +14,7 @@ class MatrixModel;
 
 /// Covariances between the readings: looked at, loaded from a file, pasted, removed. What is refused is said under the table, and
 /// what was there stays.
-class MatrixDialog : public QDialog {
+class MatrixDialog : public SheetDialog {
     Q_OBJECT
 
   public:

@@ -1,7 +1,9 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/bench/PerformanceDialog.h"
 
+#include "core/evaluate/Evaluation.h"
 #include "core/performance/LoadingRange.h"
+#include "ui/bench/FiguresTable.h"
 #include "ui/commands/Workbench.h"
 #include "ui/look/Look.h"
 #include "ui/look/NumberText.h"
@@ -9,7 +11,6 @@
 
 #include <QApplication>
 #include <QClipboard>
-#include <QDialogButtonBox>
 #include <QHBoxLayout>
 #include <QLabel>
 #include <QPushButton>
@@ -25,10 +26,6 @@ QString dash() {
     return QStringLiteral("–");
 }
 
-QString headed(const QString& name, const std::string& unit) {
-    return unit.empty() ? name : name + QLatin1Char('\n') + QString::fromStdString(unit);
-}
-
 QString percent(const std::optional<double>& value, SignShown sign = SignShown::Minus) {
     return value ? fixedText(*value, PercentDecimals, sign) : dash();
 }
@@ -39,17 +36,6 @@ QString largest(const std::optional<ForceFigures::Largest>& figure, SignShown si
 
 QString place(const std::optional<ForceFigures::Largest>& figure) {
     return figure ? placeText(figure->force) : dash();
-}
-
-QLabel* quietLabel(const QString& name) {
-    auto* label = new QLabel;
-    label->setObjectName(name);
-    label->setForegroundRole(inkRole::quiet);
-    label->setFont(textFont(TextRole::Small));
-    label->setTextFormat(Qt::PlainText);
-    label->setWordWrap(true);
-    label->setTextInteractionFlags(Qt::TextSelectableByMouse);
-    return label;
 }
 
 QLabel* heading(const QString& text) {
@@ -106,11 +92,10 @@ QString forceText(const ForceFigures& figures, const Item& item) {
     return lines.join(QLatin1Char('\n'));
 }
 
-} // namespace
-
+/// Figures of the process industry, one row each; a figure that the readings cannot give is a dash.
 QStringList processHeadings(const Item& item) {
-    return {PerformanceDialog::tr("figure"), headed(PerformanceDialog::tr("value"), item.indication.unit), PerformanceDialog::tr("value\n% of span"),
-            headed(PerformanceDialog::tr("at"), item.reference.unit)};
+    return {PerformanceDialog::tr("figure"), headed(PerformanceDialog::tr("value"), QString::fromStdString(item.indication.unit)), PerformanceDialog::tr("value\n% of span"),
+            headed(PerformanceDialog::tr("at"), QString::fromStdString(item.reference.unit))};
 }
 
 std::vector<FiguresRow> processRows(const ProcessFigures& figures) {
@@ -133,8 +118,10 @@ std::vector<FiguresRow> processRows(const ProcessFigures& figures) {
     return rows;
 }
 
+/// Force figures at every force, under them the largest of each and the force at which it occurs.
 QStringList forceHeadings(const Item& item) {
-    return {headed(PerformanceDialog::tr("force"), item.reference.unit), headed(PerformanceDialog::tr("mean deflection"), item.indication.unit),
+    return {headed(PerformanceDialog::tr("force"), QString::fromStdString(item.reference.unit)),
+            headed(PerformanceDialog::tr("mean deflection"), QString::fromStdString(item.indication.unit)),
             PerformanceDialog::tr("reproduc-\nibility b, %"), PerformanceDialog::tr("repeat-\nability b′, %"), PerformanceDialog::tr("interpolation\nerror, %"),
             PerformanceDialog::tr("reversi-\nbility v, %")};
 }
@@ -151,17 +138,14 @@ std::vector<FiguresRow> forceRows(const ForceFigures& figures) {
     return rows;
 }
 
+} // namespace
+
 PerformanceDialog::PerformanceDialog(Workbench& workbench, QWidget* parent)
-    : QDialog(parent), workbench_(workbench), process_(new FiguresTable(QStringLiteral("processFigures"), tr("Performance figures"))),
-      processNote_(quietLabel(QStringLiteral("processNote"))), processHead_(heading(QString())), forceHead_(heading(tr("Force figures"))),
-      force_(new FiguresTable(QStringLiteral("forceFigures"), tr("Force figures"))), forceNote_(quietLabel(QStringLiteral("forceNote"))), noForce_(quietLabel(QStringLiteral("noForce"))) {
-    setObjectName(QStringLiteral("performanceDialog"));
-    setAttribute(Qt::WA_DeleteOnClose);
-    setWindowTitle(tr("Performance figures"));
-    auto* all = new QVBoxLayout(this);
-    all->setContentsMargins(space::card, space::card, space::card, space::card);
-    all->setSpacing(space::step);
-    processHead_->setText(tr("In % of span"));
+    : SheetDialog(QStringLiteral("performanceDialog"), tr("Performance figures"), parent), workbench_(workbench),
+      process_(new FiguresTable(QStringLiteral("processFigures"), tr("Performance figures"))), processNote_(quietNote(QStringLiteral("processNote"))),
+      processHead_(heading(tr("In % of span"))), forceHead_(heading(tr("Force figures"))),
+      force_(new FiguresTable(QStringLiteral("forceFigures"), tr("Force figures"))), forceNote_(quietNote(QStringLiteral("forceNote"))),
+      noForce_(quietNote(QStringLiteral("noForce"))) {
     auto* sides = new QHBoxLayout;
     sides->setSpacing(2 * space::card);
     const auto column = [&](std::initializer_list<QWidget*> widgets) {
@@ -174,24 +158,22 @@ PerformanceDialog::PerformanceDialog(Workbench& workbench, QWidget* parent)
     };
     column({processHead_, process_, processNote_});
     column({forceHead_, force_, forceNote_});
-    all->addLayout(sides);
-    all->addWidget(noForce_);
-    auto* buttons = new QDialogButtonBox;
-    QPushButton* copy = buttons->addButton(tr("Copy"), QDialogButtonBox::ActionRole);
-    copy->setObjectName(QStringLiteral("copyPerformance"));
-    copy->setAutoDefault(false);
-    buttons->addButton(tr("Close"), QDialogButtonBox::RejectRole)->setDefault(true);
-    connect(copy, &QPushButton::clicked, this, [this] {
-        const bool both = !force_->isHidden() && !process_->isHidden();
-        QApplication::clipboard()->setText(both ? process_->text() + QLatin1Char('\n') + force_->text() : force_->isHidden() ? process_->text() : force_->text());
-    });
-    connect(buttons, &QDialogButtonBox::rejected, this, &QDialog::reject);
-    all->addSpacing(space::half);
-    all->addWidget(buttons);
+    body()->addLayout(sides);
+    body()->addWidget(noForce_);
+    connect(addButton(tr("Copy"), QDialogButtonBox::ActionRole, QStringLiteral("copyPerformance")), &QPushButton::clicked, this, &PerformanceDialog::copy);
+    addClose()->setDefault(true);
     connect(&workbench_, &Workbench::evaluationChanged, this, &PerformanceDialog::refresh);
     refresh();
-    fitToContents(*this);
+    fitToContents();
     process_->setFocus();
+}
+
+void PerformanceDialog::copy() {
+    QStringList tables;
+    for (const FiguresTable* table : {process_, force_})
+        if (!table->isHidden())
+            tables << table->text();
+    QApplication::clipboard()->setText(tables.join(QLatin1Char('\n')));
 }
 
 void PerformanceDialog::refresh() {

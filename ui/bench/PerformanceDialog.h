@@ -1,26 +1,18 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
-#include "core/evaluate/Evaluation.h"
-#include "ui/bench/FiguresTable.h"
-
-#include <QDialog>
+#include "ui/look/SheetDialog.h"
 
 class QLabel;
 
 namespace spanwright {
 
+class FiguresTable;
 class Workbench;
-
-/// Performance figures of the process industry, one row each, a figure that the readings cannot give with a dash.
-QStringList processHeadings(const Item& item);
-std::vector<FiguresRow> processRows(const ProcessFigures& figures);
-/// Force figures at every force, under them the largest of each with the force at which it occurs.
-QStringList forceHeadings(const Item& item);
-std::vector<FiguresRow> forceRows(const ForceFigures& figures);
+struct PhaseEvaluation;
 
 /// What the item does, in its unit and in % of span, and where the worst of it occurs; force figures where the item was turned.
-class PerformanceDialog : public QDialog {
+class PerformanceDialog : public SheetDialog {
     Q_OBJECT
 
   public:
@@ -29,6 +21,7 @@ class PerformanceDialog : public QDialog {
   private:
     void refresh();
     void showForce(const PhaseEvaluation* phase);
+    void copy();
 
     Workbench& workbench_;
     FiguresTable* process_;

@@ -3,6 +3,7 @@
 
 #include "core/diagnose/Settling.h"
 #include "core/fit/fitFunction.h"
+#include "ui/bench/FiguresTable.h"
 #include "ui/bench/PlanRows.h"
 #include "ui/look/NumberText.h"
 #include "ui/plot/PlotSubject.h"
@@ -33,10 +34,6 @@ std::optional<std::pair<ReadingId, NumberColumn>> placeOf(const std::string& whe
         if (end > 0 && text.mid(end + 1) == QLatin1String(name))
             return std::pair(text.mid(8, end - 8).toLongLong(), column);
     return std::nullopt;
-}
-
-QString overUnit(const QString& name, const QString& unit) {
-    return unit.isEmpty() ? name : name + QLatin1Char('\n') + unit;
 }
 
 QString shown(const std::string& decimal) {
@@ -344,13 +341,13 @@ QVariant ReadingsModel::headerData(int section, Qt::Orientation orientation, int
     switch (section) {
     case Number: return tr("#");
     case Run: return tr("run");
-    case SetPoint: return overUnit(tr("set point"), x);
-    case ReferenceValue: return overUnit(tr("reference"), x);
-    case IndicationValue: return overUnit(tr("indication"), y);
-    case ReferenceUncertainty: return overUnit(tr("u ref."), x);
-    case IndicationUncertainty: return overUnit(tr("u ind."), y);
-    case Covariance: return overUnit(tr("covariance"), x.isEmpty() || y.isEmpty() ? x + y : x + QChar(0x00B7) + y);
-    case ResidualValue: return overUnit(tr("residual"), directionOf(workbench_.record().choices) == FitDirection::Indication ? y : x);
+    case SetPoint: return headed(tr("set point"), x);
+    case ReferenceValue: return headed(tr("reference"), x);
+    case IndicationValue: return headed(tr("indication"), y);
+    case ReferenceUncertainty: return headed(tr("u ref."), x);
+    case IndicationUncertainty: return headed(tr("u ind."), y);
+    case Covariance: return headed(tr("covariance"), x.isEmpty() || y.isEmpty() ? x + y : x + QChar(0x00B7) + y);
+    case ResidualValue: return headed(tr("residual"), directionOf(workbench_.record().choices) == FitDirection::Indication ? y : x);
     case State: return tr("state");
     default: return {};
     }

@@ -4,7 +4,6 @@
 #include "ui/look/Look.h"
 
 #include <QComboBox>
-#include <QDialogButtonBox>
 #include <QLabel>
 #include <QLineEdit>
 #include <QPushButton>
@@ -12,38 +11,30 @@
 
 namespace spanwright {
 
-ReasonDialog::ReasonDialog(const QString& name, const Question& question, QWidget* parent) : QDialog(parent), reason_(new QComboBox) {
-    setObjectName(name);
-    setWindowTitle(question.title);
-    setAttribute(Qt::WA_DeleteOnClose);
+ReasonDialog::ReasonDialog(const QString& name, const Question& question, QWidget* parent) : SheetDialog(name, question.title, parent), reason_(new QComboBox) {
     setMinimumWidth(380);
-    auto* all = new QVBoxLayout(this);
-    all->setContentsMargins(space::card, space::card, space::card, space::card);
-    all->setSpacing(space::step);
     const auto line = [&](const QString& text, TextRole role) {
         auto* label = new QLabel(text);
         label->setTextFormat(Qt::PlainText);
         label->setWordWrap(true);
         label->setFont(textFont(role));
-        all->addWidget(label);
+        body()->addWidget(label);
     };
     line(question.heading, TextRole::Heading);
     if (!question.change.isEmpty())
         line(question.change, TextRole::Title);
     auto* ask = new QLabel(question.ask);
     ask->setBuddy(reason_);
-    all->addWidget(ask);
+    body()->addWidget(ask);
     reason_->setObjectName(QStringLiteral("reason"));
     reason_->setAccessibleName(tr("Reason"));
     reason_->setEditable(true);
     reason_->addItems(question.usual);
     reason_->lineEdit()->selectAll();
-    all->addWidget(reason_);
-    auto* buttons = new QDialogButtonBox;
-    QPushButton* yes = buttons->addButton(question.accept, QDialogButtonBox::AcceptRole);
+    body()->addWidget(reason_);
+    QPushButton* yes = addButton(question.accept, QDialogButtonBox::AcceptRole);
     yes->setDefault(true);
-    buttons->addButton(question.reject, QDialogButtonBox::RejectRole);
-    all->addWidget(buttons);
+    addButton(question.reject, QDialogButtonBox::RejectRole);
     const auto complete = [this, yes] { yes->setEnabled(!reason().isEmpty()); };
     connect(reason_, &QComboBox::editTextChanged, this, complete);
     complete();
@@ -52,8 +43,6 @@ ReasonDialog::ReasonDialog(const QString& name, const Question& question, QWidge
         if (isVisible() && !reason().isEmpty())
             accept();
     });
-    connect(buttons, &QDialogButtonBox::accepted, this, &QDialog::accept);
-    connect(buttons, &QDialogButtonBox::rejected, this, &QDialog::reject);
     reason_->setFocus();
 }
 

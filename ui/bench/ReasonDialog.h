@@ -1,14 +1,14 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
-#include <QDialog>
+#include "ui/look/SheetDialog.h"
 
 class QComboBox;
 
 namespace spanwright {
 
 /// Asks why something is done that the record keeps for good: a value changed, a finding dismissed. Without a reason it is not done.
-class ReasonDialog : public QDialog {
+class ReasonDialog : public SheetDialog {
     Q_OBJECT
 
   public:

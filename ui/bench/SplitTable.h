@@ -1,24 +1,18 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
-#include "core/split/VarianceSplit.h"
-#include "ui/bench/FiguresTable.h"
-
-#include <QDialog>
+#include "ui/look/SheetDialog.h"
 
 class QLabel;
 
 namespace spanwright {
 
+class FiguresTable;
 class Workbench;
 
-/// The variance split as rows of a table: source, sum of squares, degrees of freedom, mean square, F, p, share. Lack of fit stands
-/// there up to three times, each test by its name.
-QStringList splitHeadings(const QString& unit);
-std::vector<FiguresRow> splitRows(const VarianceSplit& split);
-
-/// The figures behind the split picture, to be copied and, when wanted, printed on the certificate.
-class SplitTable : public QDialog {
+/// The figures behind the split picture: source, sum of squares, degrees of freedom, mean square, F, p, shares. To be copied and, when
+/// wanted, printed on the certificate.
+class SplitTable : public SheetDialog {
     Q_OBJECT
 
   public:

@@ -5,7 +5,6 @@
 #include "ui/look/NumberText.h"
 
 #include <QComboBox>
-#include <QDialogButtonBox>
 #include <QGridLayout>
 #include <QLabel>
 #include <QPushButton>
@@ -28,16 +27,10 @@ QLabel* plainLabel(const QString& text, TextRole role) {
 
 } // namespace
 
-SuspectsDialog::SuspectsDialog(std::vector<Suspect> suspects, const QStringList& names, QWidget* parent) : QDialog(parent), suspects_(std::move(suspects)) {
-    setObjectName(QStringLiteral("suspectsDialog"));
-    setWindowTitle(tr("Look at these numbers again"));
-    setAttribute(Qt::WA_DeleteOnClose);
+SuspectsDialog::SuspectsDialog(std::vector<Suspect> suspects, const QStringList& names, QWidget* parent) : SheetDialog(QStringLiteral("suspectsDialog"), tr("Look at these numbers again"), parent), suspects_(std::move(suspects)) {
     setMinimumWidth(Widest);
-    auto* all = new QVBoxLayout(this);
-    all->setContentsMargins(space::card, space::card, space::card, space::card);
-    all->setSpacing(space::step);
     const auto count = static_cast<int>(suspects_.size());
-    all->addWidget(plainLabel(tr("%n number(s) may be [a slip of the hand|slips of the hand].", nullptr, count), TextRole::Heading));
+    body()->addWidget(plainLabel(tr("%n number(s) may be [a slip of the hand|slips of the hand].", nullptr, count), TextRole::Heading));
     auto* sheet = new QWidget;
     auto* grid = new QGridLayout(sheet);
     grid->setContentsMargins(0, 0, 0, 0);
@@ -63,18 +56,13 @@ SuspectsDialog::SuspectsDialog(std::vector<Suspect> suspects, const QStringList&
     scroll->setHorizontalScrollBarPolicy(Qt::ScrollBarAlwaysOff);
     scroll->setWidget(sheet);
     scroll->setMinimumHeight(RowHeight * std::min(count, MostRowsShown) + space::step);
-    all->addWidget(scroll, 1);
+    body()->addWidget(scroll, 1);
     auto* hint = plainLabel(tr("Look at the instrument where you can. Nothing is replaced unless you choose it, and the journal keeps what you answered."), TextRole::Small);
     hint->setForegroundRole(inkRole::quiet);
-    all->addWidget(hint);
-    auto* buttons = new QDialogButtonBox;
-    QPushButton* yes = buttons->addButton(tr("&Record"), QDialogButtonBox::AcceptRole);
-    yes->setObjectName(QStringLiteral("suspectsRecord"));
+    body()->addWidget(hint);
+    QPushButton* yes = addButton(tr("&Record"), QDialogButtonBox::AcceptRole, QStringLiteral("suspectsRecord"));
     yes->setDefault(true);
-    buttons->addButton(tr("Go &back"), QDialogButtonBox::RejectRole)->setObjectName(QStringLiteral("suspectsBack"));
-    all->addWidget(buttons);
-    connect(buttons, &QDialogButtonBox::accepted, this, &QDialog::accept);
-    connect(buttons, &QDialogButtonBox::rejected, this, &QDialog::reject);
+    addButton(tr("Go &back"), QDialogButtonBox::RejectRole, QStringLiteral("suspectsBack"));
     yes->setFocus();
 }
 

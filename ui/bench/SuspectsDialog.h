@@ -2,8 +2,7 @@
 #pragma once
 
 #include "ui/bench/Suspects.h"
-
-#include <QDialog>
+#include "ui/look/SheetDialog.h"
 
 class QComboBox;
 
@@ -11,7 +10,7 @@ namespace spanwright {
 
 /// One question about all doubtful numbers of what was typed or pasted: each is recorded as typed unless the number that would fit is chosen
 /// instead. Rejecting records nothing.
-class SuspectsDialog : public QDialog {
+class SuspectsDialog : public SheetDialog {
     Q_OBJECT
 
   public:
