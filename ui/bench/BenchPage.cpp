@@ -20,7 +20,7 @@
 #include "ui/bench/ReasonDialog.h"
 #include "ui/bench/SelectionBar.h"
 #include "ui/bench/SplitTable.h"
-#include "ui/bench/WholeRows.h"
+#include "ui/look/WholeRows.h"
 #include "ui/commands/ExclusionCommands.h"
 #include "ui/commands/PartCommand.h"
 #include "ui/look/Card.h"

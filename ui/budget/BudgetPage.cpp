@@ -24,9 +24,10 @@ BudgetPage::BudgetPage(Workbench& bench, QWidget* parent)
     left->setSpacing(space::step + space::half);
     left->addWidget(results_, 5);
     left->addWidget(contributions_, 5);
-    row->addLayout(left, 1);
+    row->addLayout(left, 21);
 
     auto* scroll = new QScrollArea;
+    scroll->setObjectName(QStringLiteral("budget.side"));
     scroll->setWidgetResizable(true);
     scroll->setFocusPolicy(Qt::NoFocus);
     scroll->setHorizontalScrollBarPolicy(Qt::ScrollBarAlwaysOff);
@@ -38,8 +39,9 @@ BudgetPage::BudgetPage(Workbench& bench, QWidget* parent)
     right->addWidget(lines_);
     right->addStretch(1);
     scroll->setWidget(sheet);
-    scroll->setFixedWidth(396);
-    row->addWidget(scroll);
+    scroll->setMinimumWidth(364);
+    scroll->setMaximumWidth(396);
+    row->addWidget(scroll, 10);
     connect(results_, &ResultsCard::pointChosen, contributions_, &ContributionsCard::showPoint);
 }
 

@@ -5,12 +5,13 @@
 #include "ui/budget/TextTable.h"
 #include "ui/commands/PartCommand.h"
 #include "ui/look/Look.h"
+#include "ui/look/NumberColumns.h"
 #include "ui/look/NumberText.h"
+#include "ui/look/WholeRows.h"
 #include "ui/words/Words.h"
 
 #include <QComboBox>
 #include <QHBoxLayout>
-#include <QHeaderView>
 #include <QLabel>
 #include <QLineEdit>
 #include <QPushButton>
@@ -84,14 +85,9 @@ ContributionsCard::ContributionsCard(Workbench& bench, QWidget* parent)
       view_(textView(table_, QStringLiteral("budget.contributions"), tr("Contributions"))), sum_(smallLabel(QStringLiteral("budget.sum"))),
       readBack_(smallLabel(QStringLiteral("budget.readBack"))), omitted_(new QVBoxLayout), line_(new QComboBox), reason_(new QLineEdit),
       leaveOut_(new QPushButton(tr("&Leave out"))) {
-    QHeaderView* head = view_->horizontalHeader();
-    head->setSectionResizeMode(QHeaderView::ResizeToContents);
-    head->setSectionResizeMode(0, QHeaderView::Stretch);
-    head->setMinimumSectionSize(40);
-    head->setSectionResizeMode(7, QHeaderView::Fixed);
-    head->resizeSection(7, 104);
     view_->setItemDelegateForColumn(7, new ShareDelegate(view_));
-    body()->addWidget(view_, 1);
+    new NumberColumns(view_, 0);
+    body()->addWidget(new WholeRows(view_), 1);
     sum_->setForegroundRole(QPalette::WindowText);
     body()->addWidget(sum_);
     body()->addWidget(readBack_);
@@ -163,7 +159,7 @@ void ContributionsCard::show() {
         }
         sum = b->items.empty() ? tr("No contribution is stated yet, so nothing is known about the uncertainty: u, k and U are \u2013.")
                                : sumText(*b, record.item);
-        setTitle(tr("Contributions at %1 %2").arg(significantText(b->setPoint, 6), x));
+        setTitle(tr("Contributions at %1 %2").arg(placeText(b->setPoint), x));
         setNote(b->direction == Direction::Unknown ? QString() : directionText(b->direction));
     } else {
         setTitle(tr("Contributions"));

@@ -3,6 +3,7 @@
 
 #include "ui/commands/FieldForm.h"
 #include "ui/look/Look.h"
+#include "ui/look/NumberColumns.h"
 #include "ui/look/PaddedDelegate.h"
 #include "ui/words/Words.h"
 
@@ -79,9 +80,6 @@ ManualLinesCard::ManualLinesCard(Workbench& bench, QWidget* parent)
     table_->setHorizontalHeaderLabels({tr("name"), tr("amount"), tr("distribution")});
     table_->horizontalHeader()->setDefaultAlignment(Qt::AlignLeft | Qt::AlignVCenter);
     table_->horizontalHeader()->setHighlightSections(false);
-    table_->horizontalHeader()->setSectionResizeMode(0, QHeaderView::Stretch);
-    table_->setColumnWidth(1, 84);
-    table_->setColumnWidth(2, 100);
     table_->verticalHeader()->hide();
     table_->verticalHeader()->setDefaultSectionSize(26);
     table_->setShowGrid(false);
@@ -94,6 +92,7 @@ ManualLinesCard::ManualLinesCard(Workbench& bench, QWidget* parent)
         if (row >= 0)
             choose(row);
     });
+    new NumberColumns(table_, 0);
     body()->addWidget(table_);
     connect(&bench, &Workbench::recordChanged, this, &ManualLinesCard::show);
     show();
@@ -120,7 +119,8 @@ void ManualLinesCard::show() {
     }
     if (count() > 0)
         table_->setCurrentCell(chosen_, 0);
-    table_->setFixedHeight(34 + 26 * std::max(1, std::min(count(), 5)));
+    table_->setFixedHeight(table_->horizontalHeader()->sizeHint().height() + 2 * table_->frameWidth() +
+                           table_->verticalHeader()->defaultSectionSize() * std::clamp(count(), 1, 5));
     setNote(count() == 0 ? tr("none yet") : QString());
     remove_->setVisible(count() > 0);
     remove_->setEnabled(!bench_.readOnly());

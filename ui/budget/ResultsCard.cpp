@@ -3,10 +3,11 @@
 
 #include "ui/budget/TextTable.h"
 #include "ui/look/Look.h"
+#include "ui/look/NumberColumns.h"
 #include "ui/look/NumberText.h"
+#include "ui/look/WholeRows.h"
 #include "ui/words/Words.h"
 
-#include <QHeaderView>
 #include <QLabel>
 #include <QTableView>
 #include <QVBoxLayout>
@@ -34,15 +35,29 @@ QString probabilityText(double p) {
     return p > 0.999 && p < 1 ? QStringLiteral("> ") + fixedText(99.9, 1) + QStringLiteral(" %") : fixedText(100 * p, 1) + QStringLiteral(" %");
 }
 
-std::vector<TextTable::Cell> rowOf(const PointResult& p, const Budget& budget, int referenceDecimals) {
+/// Digits after the mark of what was read: as many as were typed, and more where U is finer.
+struct ReadDecimals {
+    int setPoint, reference, indication;
+};
+
+ReadDecimals readDecimals(const ReadingColumns& readings, const std::vector<PointResult>& points) {
+    int finest = 0;
+    for (const PointResult& p : points)
+        finest = std::max(finest, decimalsOf(p.expanded));
+    // A mean carries at most two digits more than the readings it is made of.
+    const auto with = [&](int typed) { return std::max(typed, std::min(finest, typed + 2)); };
+    return {readings.setPoint().scale(), with(readings.reference().scale()), with(readings.indication().scale())};
+}
+
+std::vector<TextTable::Cell> rowOf(const PointResult& p, const Budget& budget, const ReadDecimals& read) {
     const int decimals = decimalsOf(p.expanded);
     const SetPointBudget* made = budgetOf(budget, p);
     const bool bad = p.state == ConformityState::Fail || p.state == ConformityState::ConditionalFail;
     std::vector<TextTable::Cell> row(11);
-    row[SetPoint].text = fixedText(p.setPoint, referenceDecimals);
+    row[SetPoint].text = fixedText(p.setPoint, read.setPoint);
     row[Way].text = p.direction == Direction::Unknown ? QString() : directionText(p.direction);
-    row[Reference].text = fixedText(p.reference, std::max(referenceDecimals, decimals));
-    row[Indication].text = fixedText(p.indication, decimals);
+    row[Reference].text = fixedText(p.reference, read.reference);
+    row[Indication].text = fixedText(p.indication, read.indication);
     row[ErrorShown].text = fixedText(p.error, decimals, SignShown::Both);
     row[Expanded].text = fixedText(p.expanded, decimals);
     row[Factor].text = fixedText(p.coverageFactor, 2);
@@ -88,10 +103,9 @@ ResultsCard::ResultsCard(Workbench& bench, QWidget* parent)
     empty_->setForegroundRole(inkRole::quiet);
     empty_->setWordWrap(true);
     body()->addWidget(empty_);
-    body()->addWidget(view_, 1);
-    view_->horizontalHeader()->setSectionResizeMode(QHeaderView::Stretch);
-    for (const int narrow : {Way, Factor, Freedom, Decision, Probability})
-        view_->horizontalHeader()->setSectionResizeMode(narrow, QHeaderView::ResizeToContents);
+    rows_ = new WholeRows(view_);
+    body()->addWidget(rows_, 1);
+    new NumberColumns(view_);
     connect(view_->selectionModel(), &QItemSelectionModel::currentRowChanged, this,
             [this](const QModelIndex& row) { emit pointChosen(row.row()); });
     connect(&bench, &Workbench::evaluationChanged, this, &ResultsCard::show);
@@ -111,7 +125,7 @@ void ResultsCard::show() {
     table_->setHead(Limit, tr("limit\n%1").arg(y).trimmed());
     std::vector<std::vector<TextTable::Cell>> rows;
     if (phase) {
-        const int decimals = record.readings->setPoint().scale();
+        const ReadDecimals decimals = readDecimals(*record.readings, phase->verdict.points);
         for (const PointResult& p : phase->verdict.points)
             rows.push_back(rowOf(p, phase->budget, decimals));
     }
@@ -125,7 +139,7 @@ void ResultsCard::show() {
                         ? tr("There is no result yet: state the range and the indication at its ends on the Job stage.")
                         : tr("There are no readings in this phase yet."));
     empty_->setVisible(none);
-    view_->setVisible(!none);
+    rows_->setVisible(!none);
     if (!none && !view_->currentIndex().isValid())
         view_->setCurrentIndex(table_->index(0, 0));
     QString note = phaseText(record.choices.phase);

@@ -27,6 +27,7 @@ class ResultsCard : public Card {
     Workbench& bench_;
     TextTable* table_;
     QTableView* view_;
+    QWidget* rows_;
     QLabel* empty_;
 };
 

@@ -60,13 +60,26 @@ QVariant TextTable::headerData(int section, Qt::Orientation orientation, int rol
     return {};
 }
 
+namespace {
+
+constexpr int BarWidth = 40;
+
+int shareTextWidth(const QFontMetrics& metrics) {
+    return metrics.horizontalAdvance(QStringLiteral("< 0.01 %")) + space::step;
+}
+
+} // namespace
+
+QSize ShareDelegate::sizeHint(const QStyleOptionViewItem& option, const QModelIndex& index) const {
+    return {shareTextWidth(option.fontMetrics) + BarWidth, QStyledItemDelegate::sizeHint(option, index).height()};
+}
+
 void ShareDelegate::paint(QPainter* painter, const QStyleOptionViewItem& option, const QModelIndex& index) const {
     const double share = index.data(TextTable::ShareRole).toDouble();
     painter->save();
     if (option.state & QStyle::State_Selected)
         painter->fillRect(option.rect, scheme().selection);
-    const int textWidth = option.fontMetrics.horizontalAdvance(QStringLiteral("< 0.01 %")) + space::step;
-    QRect bar = option.rect.adjusted(space::half, 7, -textWidth, -7);
+    QRect bar = option.rect.adjusted(space::half, 7, -shareTextWidth(option.fontMetrics), -7);
     bar.setWidth(share > 0 ? std::max(2, static_cast<int>(bar.width() * share)) : 0);
     painter->fillRect(bar, scheme().accent);
     painter->setPen(scheme().ink);

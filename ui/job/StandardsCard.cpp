@@ -4,6 +4,7 @@
 #include "ui/commands/PartCommand.h"
 #include "ui/job/StandardEditor.h"
 #include "ui/look/Look.h"
+#include "ui/look/NumberColumns.h"
 #include "ui/look/PaddedDelegate.h"
 
 #include <QHeaderView>
@@ -45,9 +46,6 @@ StandardsCard::StandardsCard(Workbench& bench, QWidget* parent)
     table_->setHorizontalHeaderLabels({tr("id"), tr("what"), tr("due")});
     table_->horizontalHeader()->setDefaultAlignment(Qt::AlignLeft | Qt::AlignVCenter);
     table_->horizontalHeader()->setHighlightSections(false);
-    table_->horizontalHeader()->setSectionResizeMode(1, QHeaderView::Stretch);
-    table_->setColumnWidth(0, 84);
-    table_->setColumnWidth(2, 140);
     table_->verticalHeader()->hide();
     table_->verticalHeader()->setDefaultSectionSize(26);
     table_->setShowGrid(false);
@@ -56,7 +54,7 @@ StandardsCard::StandardsCard(Workbench& bench, QWidget* parent)
     table_->setSelectionBehavior(QAbstractItemView::SelectRows);
     table_->setSelectionMode(QAbstractItemView::SingleSelection);
     table_->setEditTriggers(QAbstractItemView::NoEditTriggers);
-    table_->setHorizontalScrollBarPolicy(Qt::ScrollBarAlwaysOff);
+    new NumberColumns(table_, 1);
     connect(table_, &QTableWidget::currentCellChanged, this, [this](int row) {
         if (row >= 0)
             choose(row);
@@ -95,7 +93,8 @@ void StandardsCard::show() {
     }
     if (count() > 0)
         table_->setCurrentCell(chosen_, 0);
-    table_->setFixedHeight(34 + 26 * std::max(1, std::min(count(), 5)));
+    table_->setFixedHeight(table_->horizontalHeader()->sizeHint().height() + 2 * table_->frameWidth() +
+                           table_->verticalHeader()->defaultSectionSize() * std::clamp(count(), 1, 5));
     remove_->setEnabled(count() > 0 && !bench_.readOnly());
     if (editing_ != (count() > 0 ? chosen_ : -1))
         showEditor();

@@ -21,6 +21,7 @@ class WholeRows : public QWidget {
 
   private:
     void place();
+    [[nodiscard]] int headHeight() const;
     QTableView* table_;
 };
 

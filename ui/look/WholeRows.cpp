@@ -1,10 +1,15 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "ui/bench/WholeRows.h"
+#include "ui/look/WholeRows.h"
 
 #include <QHeaderView>
+#include <QScrollBar>
 #include <QTableView>
 
 namespace spanwright {
+
+namespace {
+constexpr int FewestRows = 2;
+} // namespace
 
 WholeRows::WholeRows(QTableView* table, QWidget* parent) : QWidget(parent), table_(table) {
     table->setParent(this);
@@ -12,6 +17,7 @@ WholeRows::WholeRows(QTableView* table, QWidget* parent) : QWidget(parent), tabl
     setFocusProxy(table);
     connect(table->horizontalHeader(), &QHeaderView::geometriesChanged, this, &WholeRows::place);
     connect(table->horizontalHeader(), &QHeaderView::sectionResized, this, &WholeRows::place);
+    connect(table->horizontalScrollBar(), &QScrollBar::rangeChanged, this, &WholeRows::place, Qt::QueuedConnection);
 }
 
 QSize WholeRows::sizeHint() const {
@@ -19,7 +25,12 @@ QSize WholeRows::sizeHint() const {
 }
 
 QSize WholeRows::minimumSizeHint() const {
-    return table_->minimumSizeHint();
+    const int fewest = headHeight() + FewestRows * table_->verticalHeader()->defaultSectionSize() + table_->horizontalScrollBar()->sizeHint().height();
+    return table_->minimumSizeHint().expandedTo({0, fewest});
+}
+
+int WholeRows::headHeight() const {
+    return table_->horizontalHeader()->sizeHint().height() + 2 * table_->frameWidth();
 }
 
 void WholeRows::resizeEvent(QResizeEvent*) {
@@ -28,7 +39,10 @@ void WholeRows::resizeEvent(QResizeEvent*) {
 
 void WholeRows::place() {
     const int row = table_->verticalHeader()->defaultSectionSize();
-    const int head = table_->horizontalHeader()->sizeHint().height() + 2 * table_->frameWidth();
+    int head = headHeight();
+    // The bar that moves the table sideways takes its height from the rows.
+    if (table_->horizontalScrollBar()->maximum() > 0 && table_->horizontalScrollBarPolicy() != Qt::ScrollBarAlwaysOff)
+        head += table_->horizontalScrollBar()->sizeHint().height();
     const int rows = row > 0 ? (height() - head) / row : 0;
     table_->setGeometry(0, 0, width(), rows > 0 ? head + rows * row : height());
 }
