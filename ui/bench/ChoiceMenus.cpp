@@ -6,12 +6,15 @@
 #include "ui/commands/PartCommand.h"
 #include "ui/look/Look.h"
 #include "ui/look/NumberText.h"
+#include "ui/words/ChoiceText.h"
 #include "ui/words/Words.h"
 
 #include <QCoreApplication>
 #include <QLabel>
 #include <QMenu>
 #include <QWidgetAction>
+
+#include <algorithm>
 
 namespace spanwright {
 
@@ -139,15 +142,30 @@ ChoiceButton::ChoiceButton(const QString& name, const QString& accessibleName, Q
 }
 
 void ChoiceButton::fillWith(const std::function<void(QMenu&)>& fill) {
-    const auto all = [this, fill] {
+    fill_ = [this, fill] {
         fill(*menu());
         if (!further_.empty())
             menu()->addSeparator();
         for (QAction* action : further_)
             menu()->addAction(action);
     };
-    connect(menu(), &QMenu::aboutToShow, this, all);
-    all();
+    connect(menu(), &QMenu::aboutToShow, this, fill_);
+    fill_();
+}
+
+std::vector<QAction*> ChoiceButton::choices() {
+    if (fill_)
+        fill_();
+    std::vector<QAction*> found;
+    const std::function<void(const QMenu&)> collect = [&](const QMenu& from) {
+        for (QAction* action : from.actions())
+            if (const QMenu* inner = action->menu())
+                collect(*inner);
+            else if (!action->isSeparator() && !qobject_cast<QWidgetAction*>(action) && std::find(further_.begin(), further_.end(), action) == further_.end())
+                found.push_back(action);
+    };
+    collect(*menu());
+    return found;
 }
 
 void ChoiceButton::setChoice(const QString& text) {
@@ -160,30 +178,6 @@ void ChoiceButton::setChoice(const QString& text) {
 QSize ChoiceButton::sizeHint() const {
     const QFontMetrics metrics(font());
     return {metrics.horizontalAdvance(text()) + 12, metrics.height() + 8};
-}
-
-QString weightsText(Weights weights) {
-    switch (weights) {
-    case Weights::Equal: return tr("equal weights");
-    case Weights::Stated: return tr("weights from stated uncertainties");
-    case Weights::Replicates: return tr("weights from replicates");
-    case Weights::Proportional: return tr("weights proportional to level");
-    case Weights::VarianceFunction: return tr("weights from scatter that grows with level");
-    }
-    return {};
-}
-
-QString robustText(RobustWeight weight) {
-    return weight == RobustWeight::Huber ? tr("robust after Huber, for comparison only") : tr("robust, bisquare, for comparison only");
-}
-
-QString methodText(Method method) {
-    switch (method) {
-    case Method::LeastSquares: return tr("least squares");
-    case Method::BothUncertain: return tr("reference and indication both uncertain");
-    case Method::Robust: return tr("robust, for comparison only");
-    }
-    return {};
 }
 
 ChoiceButton* functionButton(Workbench& workbench, QWidget* parent) {

@@ -22,17 +22,15 @@ class ChoiceButton : public QToolButton {
     /// The list is filled anew each time it opens; the further actions stand at its end.
     void fillWith(const std::function<void(QMenu&)>& fill);
     void setFurther(std::vector<QAction*> further) { further_ = std::move(further); }
+    /// What can be chosen now, without the further actions; valid until the list is filled again.
+    [[nodiscard]] std::vector<QAction*> choices();
     QSize sizeHint() const override;
     QSize minimumSizeHint() const override { return sizeHint(); }
 
   private:
+    std::function<void()> fill_;
     std::vector<QAction*> further_;
 };
-
-/// Words of a way of weighing.
-QString weightsText(Weights weights);
-QString methodText(Method method);
-QString robustText(RobustWeight weight);
 
 /// The calibration function: all families in groups, and which quantity it gives.
 ChoiceButton* functionButton(Workbench& workbench, QWidget* parent);

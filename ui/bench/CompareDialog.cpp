@@ -11,6 +11,7 @@
 #include "ui/look/Look.h"
 #include "ui/look/NumberText.h"
 #include "ui/plot/PlotSubject.h"
+#include "ui/words/ChoiceText.h"
 #include "ui/words/Words.h"
 
 #include <QComboBox>

@@ -92,6 +92,23 @@ QLabel* note(const QString& text) {
     return label;
 }
 
+/// Whose name the journal's entries carry: kept with the person's settings, not with the record.
+FieldBox* personBox(Workbench& bench) {
+    auto* line = new QLineEdit;
+    line->setObjectName(QStringLiteral("person"));
+    line->setAccessibleName(tr("Your initials"));
+    line->setMaxLength(20);
+    auto* box = new FieldBox(tr("Your initials"), line);
+    const auto show = [&bench, line, box] {
+        line->setText(bench.person());
+        box->setHint(bench.person().isEmpty() ? tr("The journal does not say yet who works here.") : tr("Stand beside every change in the journal."));
+    };
+    QObject::connect(line, &QLineEdit::editingFinished, line, [&bench, line] { bench.setPerson(line->text().trimmed()); });
+    QObject::connect(&bench, &Workbench::personChanged, line, show);
+    show();
+    return box;
+}
+
 } // namespace
 
 Card* itemCard(Workbench& bench) {
@@ -140,6 +157,7 @@ Card* orderCard(Workbench& bench) {
     calibrated->setHint(tr("Empty: from the readings"));
     grid->add(calibrated);
     grid->add(job.date(&Job::issued, tr("Issued on")));
+    grid->add(personBox(bench), 2);
     card->body()->addWidget(grid);
     return card;
 }

@@ -2,7 +2,6 @@
 #include "ui/shell/CommandFinder.h"
 
 #include "ui/look/Look.h"
-#include "ui/shell/Actions.h"
 
 #include <QAction>
 #include <QCoreApplication>
@@ -34,8 +33,8 @@ class ShortcutDelegate : public QStyledItemDelegate {
 
 } // namespace
 
-CommandFinder::CommandFinder(const std::vector<QAction*>& actions, QWidget* parent)
-    : QDialog(parent), actions_(actions), words_(new QLineEdit), list_(new QListWidget) {
+CommandFinder::CommandFinder(std::vector<FindableCommand> commands, QWidget* parent)
+    : QDialog(parent), commands_(std::move(commands)), words_(new QLineEdit), list_(new QListWidget) {
     setObjectName(QStringLiteral("commandFinder"));
     setWindowTitle(tr("Find a command"));
     resize(480, 420);
@@ -59,14 +58,14 @@ CommandFinder::CommandFinder(const std::vector<QAction*>& actions, QWidget* pare
 void CommandFinder::narrow(const QString& words) {
     list_->clear();
     const QStringList wanted = words.split(QLatin1Char(' '), Qt::SkipEmptyParts);
-    for (std::size_t i = 0; i < actions_.size(); ++i) {
-        const QString text = plainText(actions_[i]);
+    for (std::size_t i = 0; i < commands_.size(); ++i) {
+        const auto& [text, action] = commands_[i];
         if (!std::all_of(wanted.begin(), wanted.end(), [&](const QString& w) { return text.contains(w, Qt::CaseInsensitive); }))
             continue;
         auto* item = new QListWidgetItem(text, list_);
         item->setData(Qt::UserRole, static_cast<int>(i));
-        item->setData(Qt::UserRole + 1, actions_[i]->shortcut().toString(QKeySequence::NativeText));
-        if (!actions_[i]->isEnabled())
+        item->setData(Qt::UserRole + 1, action->isChecked() ? tr("in use") : action->shortcut().toString(QKeySequence::NativeText));
+        if (!action->isEnabled())
             item->setFlags(item->flags() & ~Qt::ItemIsEnabled);
     }
     if (list_->count() == 0) {
@@ -84,7 +83,7 @@ void CommandFinder::take() {
     const QListWidgetItem* item = list_->currentItem();
     if (!item || !(item->flags() & Qt::ItemIsEnabled))
         return;
-    chosen_ = actions_[static_cast<std::size_t>(item->data(Qt::UserRole).toInt())];
+    chosen_ = commands_[static_cast<std::size_t>(item->data(Qt::UserRole).toInt())].action;
     accept();
 }
 

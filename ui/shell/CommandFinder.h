@@ -11,12 +11,18 @@ class QListWidget;
 
 namespace spanwright {
 
-/// Every action by its words: typing narrows the list, Enter does the first.
+/// Something that can be done, as it is found.
+struct FindableCommand {
+    QString words;
+    QAction* action;
+};
+
+/// Every command by its words: typing narrows the list, Enter does the first.
 class CommandFinder : public QDialog {
     Q_OBJECT
 
   public:
-    CommandFinder(const std::vector<QAction*>& actions, QWidget* parent);
+    CommandFinder(std::vector<FindableCommand> commands, QWidget* parent);
     /// The action that was chosen; null when given up.
     [[nodiscard]] QAction* chosen() const { return chosen_; }
 
@@ -27,7 +33,7 @@ class CommandFinder : public QDialog {
     void narrow(const QString& words);
     void take();
 
-    std::vector<QAction*> actions_;
+    std::vector<FindableCommand> commands_;
     QLineEdit* words_;
     QListWidget* list_;
     QAction* chosen_ = nullptr;

@@ -3,15 +3,20 @@
 
 #include "ui/look/Look.h"
 #include "ui/look/PaddedDelegate.h"
+#include "ui/look/WholeRows.h"
+#include "ui/words/JournalText.h"
 
 #include <QAbstractTableModel>
 #include <QCoreApplication>
 #include <QDateTime>
 #include <QDialogButtonBox>
 #include <QHeaderView>
+#include <QLabel>
 #include <QPushButton>
 #include <QTableView>
 #include <QVBoxLayout>
+
+#include <algorithm>
 
 namespace spanwright {
 
@@ -28,14 +33,15 @@ class JournalModel : public QAbstractTableModel {
         if (role != Qt::DisplayRole && role != Qt::ToolTipRole)
             return {};
         const JournalEntry& e = journal_->entries()[journal_->size() - 1 - static_cast<std::size_t>(index.row())];
+        const JournalWords words = journalWords(e);
         switch (index.column()) {
         case 0: return QDateTime::fromMSecsSinceEpoch(e.at).toString(QStringLiteral("yyyy-MM-dd HH:mm:ss"));
-        case 1: return QString::fromStdString(e.who);
-        case 2: return journalWord(e.what);
-        case 3: return QString::fromStdString(e.where);
-        case 4: return QString::fromStdString(e.before);
-        case 5: return QString::fromStdString(e.after);
-        default: return QString::fromStdString(e.reason);
+        case 1: return e.who.empty() ? QStringLiteral("\u2013") : QString::fromStdString(e.who);
+        case 2: return words.what;
+        case 3: return words.where;
+        case 4: return words.before;
+        case 5: return words.after;
+        default: return words.reason;
         }
     }
     QVariant headerData(int section, Qt::Orientation orientation, int role) const override {
@@ -51,31 +57,10 @@ class JournalModel : public QAbstractTableModel {
 
 } // namespace
 
-QString journalWord(const std::string& what) {
-    static const std::pair<const char*, const char*> words[] = {
-        {"reading-entered", QT_TRANSLATE_NOOP("Journal", "reading entered")},
-        {"value-entered", QT_TRANSLATE_NOOP("Journal", "value entered")},
-        {"value-amended", QT_TRANSLATE_NOOP("Journal", "value amended")},
-        {"reading-placed", QT_TRANSLATE_NOOP("Journal", "reading placed")},
-        {"readings-imported", QT_TRANSLATE_NOOP("Journal", "readings taken in")},
-        {"excluded", QT_TRANSLATE_NOOP("Journal", "excluded")},
-        {"readmitted", QT_TRANSLATE_NOOP("Journal", "readmitted")},
-        {"changed", QT_TRANSLATE_NOOP("Journal", "changed")},
-        {"undone", QT_TRANSLATE_NOOP("Journal", "undone")},
-        {"redone", QT_TRANSLATE_NOOP("Journal", "redone")},
-        {"seal-broken", QT_TRANSLATE_NOOP("Journal", "opened, changed outside the program")},
-        {"journal-broken", QT_TRANSLATE_NOOP("Journal", "opened, an entry did not fit the one before")},
-    };
-    for (const auto& [code, word] : words)
-        if (what == code)
-            return QCoreApplication::translate("Journal", word);
-    return QString::fromStdString(what);
-}
-
 JournalDialog::JournalDialog(const Record& record, QWidget* parent) : QDialog(parent) {
     setObjectName(QStringLiteral("journalDialog"));
     setWindowTitle(tr("Journal"));
-    resize(980, 560);
+    resize(1140, 600);
     auto* all = new QVBoxLayout(this);
     auto* table = new QTableView;
     table->setObjectName(QStringLiteral("journal.table"));
@@ -84,14 +69,24 @@ JournalDialog::JournalDialog(const Record& record, QWidget* parent) : QDialog(pa
     table->verticalHeader()->hide();
     table->verticalHeader()->setDefaultSectionSize(24);
     table->setShowGrid(false);
+    table->setWordWrap(false);
     table->setItemDelegate(new PaddedDelegate(table));
     table->setSelectionBehavior(QAbstractItemView::SelectRows);
     table->horizontalHeader()->setDefaultAlignment(Qt::AlignLeft | Qt::AlignVCenter);
-    const int widths[] = {150, 50, 120, 190, 140, 140};
+    const int widths[] = {150, 44, 150, 210, 110, 290};
     for (int i = 0; i < 6; ++i)
         table->setColumnWidth(i, widths[i]);
     table->horizontalHeader()->setStretchLastSection(true);
-    all->addWidget(table);
+    all->addWidget(new WholeRows(table), 1);
+    const std::vector<JournalEntry>& entries = record.journal->entries();
+    if (std::any_of(entries.begin(), entries.end(), [](const JournalEntry& e) { return e.who.empty(); })) {
+        auto* nobody = new QLabel(tr("\u2013 under \u201cwho\u201d: no initials were given at the time. Give yours on the Job stage or with Ctrl+Shift+I."));
+        nobody->setObjectName(QStringLiteral("journal.nobody"));
+        nobody->setFont(textFont(TextRole::Small));
+        nobody->setForegroundRole(inkRole::quiet);
+        nobody->setWordWrap(true);
+        all->addWidget(nobody);
+    }
     auto* buttons = new QDialogButtonBox;
     buttons->addButton(tr("&Close"), QDialogButtonBox::RejectRole)->setDefault(true);
     connect(buttons, &QDialogButtonBox::rejected, this, &QDialog::reject);

@@ -15,7 +15,4 @@ class JournalDialog : public QDialog {
     explicit JournalDialog(const Record& record, QWidget* parent);
 };
 
-/// "value-amended" as it stands on screen.
-QString journalWord(const std::string& what);
-
 } // namespace spanwright

@@ -2,6 +2,7 @@
 #include "ui/shell/MainWindow.h"
 
 #include "core/certificate/Checklist.h"
+#include "ui/bench/ChoiceMenus.h"
 #include "ui/budget/BudgetPage.h"
 #include "ui/commands/FieldForm.h"
 #include "ui/job/JobPage.h"
@@ -84,6 +85,7 @@ MainWindow::MainWindow(const WindowSurroundings& surroundings, QWidget* parent)
     setAcceptDrops(true);
     resize(QSize(1440, 900).boundedTo(screen()->availableSize() - QSize(0, 40)));
     bench_.setPerson(around_.settings.person());
+    connect(&bench_, &Workbench::personChanged, this, [this] { around_.settings.setPerson(bench_.person()); });
 
     auto* sheet = new QWidget;
     auto* all = new QVBoxLayout(sheet);
@@ -225,7 +227,14 @@ void MainWindow::showCompleteness() {
 
 void MainWindow::findCommand() {
     pages_->makeAll();
-    CommandFinder finder(actions_.all(), this);
+    std::vector<FindableCommand> commands;
+    for (QAction* action : actions_.all())
+        commands.push_back({plainText(action), action});
+    // What the menus over the plots offer is found under the name of the menu.
+    for (ChoiceButton* button : findChildren<ChoiceButton*>())
+        for (QAction* choice : button->choices())
+            commands.push_back({button->accessibleName() + QStringLiteral(": ") + plainText(choice), choice});
+    CommandFinder finder(std::move(commands), this);
     if (around_.dialogs.run(finder) && finder.chosen())
         finder.chosen()->trigger();
 }
@@ -235,7 +244,6 @@ void MainWindow::askPerson() {
     if (initials.isNull())
         return;
     bench_.setPerson(initials.trimmed());
-    around_.settings.setPerson(initials.trimmed());
 }
 
 void MainWindow::pasteTable() {

@@ -574,6 +574,46 @@ class MainWindowTest : public QObject {
         QCOMPARE(desk.window->stage(), Stage::Budget);
     }
 
+    void aFunctionIsFoundAndChosenByTyping() {
+        Desk desk;
+        QStringList weights;
+        desk.dialogs.inDialog = [&](QDialog& dialog) {
+            auto* words = dialog.findChild<QLineEdit*>("commandFinder.words");
+            auto* list = dialog.findChild<QListWidget*>("commandFinder.list");
+            QTest::keyClicks(words, "weights:");
+            for (int i = 0; i < list->count(); ++i)
+                weights << list->item(i)->text();
+            words->clear();
+            QTest::keyClicks(words, "function polynomial degree 3");
+            QTest::keyClick(words, Qt::Key_Return);
+            return dialog.result() == QDialog::Accepted;
+        };
+        desk.keys(Qt::Key_K, Qt::ControlModifier);
+        QCOMPARE(desk.window->workbench().record().choices.function, (FunctionChoice{FunctionFamily::Polynomial, 3}));
+        desk.dialogs.inDialog = [&](QDialog& dialog) {
+            auto* words = dialog.findChild<QLineEdit*>("commandFinder.words");
+            auto* list = dialog.findChild<QListWidget*>("commandFinder.list");
+            QTest::keyClicks(words, "weights and method");
+            for (int i = 0; i < list->count(); ++i)
+                weights << list->item(i)->text();
+            return false;
+        };
+        desk.keys(Qt::Key_K, Qt::ControlModifier);
+        QVERIFY(weights.contains("Weights and method: Weights proportional to level"));
+        desk.keys(Qt::Key_Z, Qt::ControlModifier);
+        QCOMPARE(desk.window->workbench().record().choices.function, FunctionChoice{});
+    }
+
+    void initialsTypedOnTheJobStandInTheJournal() {
+        Desk desk;
+        desk.keys(Qt::Key_1, Qt::ControlModifier);
+        desk.type("person", "TL");
+        desk.type("job.customer", "X");
+        QCOMPARE(desk.window->workbench().record().journal->entries().back().who, std::string("TL"));
+        desk.restart();
+        QCOMPARE(desk.window->workbench().person(), QStringLiteral("TL"));
+    }
+
     void stagesAreReachedByKeyAndSayWhatIsMissing() {
         Desk desk;
         desk.keys(Qt::Key_2, Qt::ControlModifier);

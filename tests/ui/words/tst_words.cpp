@@ -1,5 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/base/Decimal.h"
+#include "tests/support/FilledRecord.h"
+#include "ui/commands/Differences.h"
+#include "ui/words/JournalText.h"
 #include "ui/words/Words.h"
 
 #include <QtTest>
@@ -46,6 +49,9 @@ class TestWords : public QObject {
     void figuresOfAFindingCarryTheirUnits();
     void theEquationHasTheDigitsThatItsUncertaintiesSupport();
     void anEquationThatGivesTheReferenceIsTurnedRound();
+    void everyFieldThatTheJournalNamesHasWords();
+    void theJournalIsSaidInWords_data();
+    void theJournalIsSaidInWords();
 };
 
 void TestWords::everyErrorHasASentenceOfItsOwn() {
@@ -161,6 +167,52 @@ void TestWords::anEquationThatGivesTheReferenceIsTurnedRound() {
     fit.function = {FunctionFamily::Polynomial, 2};
     fit.coefficients.push_back({"b2", "", 0.00021, 0.00001, 0, 0});
     QCOMPARE(equationText(fit, Item()), QStringLiteral("x = 3.9994 + 1.60010 y + 0.000210 y²"));
+}
+
+void TestWords::everyFieldThatTheJournalNamesHasWords() {
+    int seen = 0;
+    const Record record = test::filledRecord();
+    parts(record, [&](std::string_view name, const auto& part) {
+        for (const auto& [path, text] : fieldLines(std::string(name), part)) {
+            const QString words = fieldText(path);
+            QVERIFY2(!words.isEmpty(), path.c_str());
+            QVERIFY2(!words.contains(QLatin1Char('_')) && !words.contains(QLatin1Char('.')) && !words.contains(QLatin1String("%1")) && !words.contains(QLatin1String("%2")),
+                     qPrintable(words));
+            ++seen;
+        }
+    });
+    QVERIFY(seen > 150);
+    QCOMPARE(fieldText("item.colour"), QString());
+}
+
+void TestWords::theJournalIsSaidInWords_data() {
+    QTest::addColumn<QStringList>("entry"); // what, where, before, after, reason
+    QTest::addColumn<QStringList>("words");
+    QTest::newRow("an amended value") << QStringList{"value-amended", "reading 17 indication", "-1.847", "-1.4870", "digits swapped"}
+                                      << QStringList{"value amended", "reading 17, indication", "−1.847", "−1.4870", "digits swapped"};
+    QTest::newRow("a reading") << QStringList{"reading-entered", "reading 3", "", "set point 2.0, reference 2.0001, as-found, run 1, rising", ""}
+                               << QStringList{"reading entered", "reading 3", "", "set point 2.0, reference 2.0001, as found, run 1, rising", ""};
+    QTest::newRow("a choice") << QStringList{"changed", "choices.function", "line", "polynomial:2", ""}
+                              << QStringList{"changed", "calibration function", "straight line", "polynomial of degree 2", ""};
+    QTest::newRow("a tick") << QStringList{"changed", "job.adjusted", "false", "true", ""} << QStringList{"changed", "the item was adjusted", "no", "yes", ""};
+    QTest::newRow("a standard") << QStringList{"changed", "standards.1.form", "absolute", "percent-of-reading", ""}
+                                << QStringList{"changed", "standard 2, U stated", "in the unit", "in % of reading", ""};
+    QTest::newRow("a text that looks like a number") << QStringList{"changed", "job.method_edition", "-2", "2.10", ""}
+                                                     << QStringList{"changed", "edition of the procedure", "-2", "2.10", ""};
+    QTest::newRow("undone") << QStringList{"undone", "item.serial", "20318", "", "changed"}
+                            << QStringList{"undone: changed", "item, serial number", "20318", "", ""};
+    QTest::newRow("undone with a reason") << QStringList{"undone", "reading 4", "typing-slip: swapped", "", "excluded: asked by the customer: twice"}
+                                          << QStringList{"undone: excluded", "reading 4", "typing slip: swapped", "", "asked by the customer: twice"};
+    QTest::newRow("taken in") << QStringList{"readings-imported", "readings 1 to 66", "", "66 readings from a: b.csv", ""}
+                              << QStringList{"readings taken in", "readings 1 to 66", "", "66 reading(s) from a: b.csv", ""};
+}
+
+void TestWords::theJournalIsSaidInWords() {
+    QFETCH(QStringList, entry);
+    QFETCH(QStringList, words);
+    const auto text = [&](int i) { return entry[i].toStdString(); };
+    const JournalWords got = journalWords({0, "TL", text(0), text(1), text(2), text(3), text(4)});
+    QCOMPARE((QStringList{got.what, got.where, got.before, got.after, got.reason}), words);
 }
 
 QTEST_APPLESS_MAIN(TestWords)
