@@ -92,6 +92,43 @@ class EngineerTest : public QObject {
         QVERIFY(story.record().readings->empty());
     }
 
+    void namesTheWordsThatStandForNoValue() {
+        StoryWindow story(home_.path());
+        QStringList before, after, roles;
+        story.dialogs.inDialog = [&](QDialog& dialog) {
+            const auto* issues = dialog.findChild<QTableView*>("import.issues");
+            const auto* accept = dialog.findChild<QPushButton*>("import.accept");
+            const auto texts = [&] {
+                QStringList all;
+                for (int row = 0; row < issues->model()->rowCount(); ++row)
+                    all << issues->model()->index(row, 2).data().toString();
+                return all;
+            };
+            if (!QTest::qWaitFor([&] { return accept->isEnabled(); }))
+                return false;
+            before = texts();
+            auto* role = dialog.findChild<QComboBox*>("import.role.3");
+            role->setCurrentIndex(0); // a choice of columns outlives the words
+            emit role->activated(0);
+            if (!QTest::qWaitFor([&] { return dialog.findChild<QComboBox*>("import.role.3") != role && accept->isEnabled(); }))
+                return false;
+            auto* words = dialog.findChild<QLineEdit*>("import.missing");
+            words->setFocus();
+            QTest::keyClicks(words, "nothing; ovr");
+            QTest::keyClick(words, Qt::Key_Return);
+            if (!dialog.isVisible() || !QTest::qWaitFor([&] { return accept->isEnabled(); }))
+                return false;
+            after = texts();
+            roles << dialog.findChild<QComboBox*>("import.role.3")->currentText();
+            return false;
+        };
+        drop(story.window(), sample("climate-logger.csv"));
+        QTRY_VERIFY(!roles.isEmpty());
+        QVERIFY2(before.contains("OVR"), qPrintable(before.join(' ')));
+        QVERIFY2(!after.contains("OVR"), qPrintable(after.join(' ')));
+        QCOMPARE(roles, QStringList{"not taken in"});
+    }
+
     void setsReadingsAsideByEyeAndTakesThemBack() {
         StoryWindow story(home_.path());
         story.window().document().begin(pressureTransmitter());

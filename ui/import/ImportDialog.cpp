@@ -14,7 +14,9 @@
 #include <QDialogButtonBox>
 #include <QHBoxLayout>
 #include <QHeaderView>
+#include <QKeyEvent>
 #include <QLabel>
+#include <QLineEdit>
 #include <QProgressBar>
 #include <QPushButton>
 #include <QSpinBox>
@@ -22,6 +24,7 @@
 #include <QVBoxLayout>
 
 #include <algorithm>
+#include <utility>
 
 namespace spanwright {
 
@@ -84,7 +87,7 @@ std::vector<Decimal> setPointsIn(const ReadingColumns::Block& block) {
 ImportDialog::ImportDialog(TableSource source, const QString& origin, const Record& record, QWidget* parent)
     : QDialog(parent), reading_(new TableReading(std::move(source), this)), origin_(origin), record_(record), encoding_(new QComboBox), separator_(new QComboBox),
       decimal_(new QComboBox), headerRows_(new QSpinBox), unitsRow_(new QCheckBox(tr("The last header line holds units"))),
-      phase_(new QComboBox), takeNames_(new QCheckBox(tr("Take names and units of the columns over into the job"))),
+      missing_(new QLineEdit), phase_(new QComboBox), takeNames_(new QCheckBox(tr("Take names and units of the columns over into the job"))),
       doubts_(words(QStringLiteral("import.doubts"), inkRole::warning)), sum_(words(QStringLiteral("import.sum"), QPalette::WindowText)), bar_(new QProgressBar),
       issuesHead_(words(QStringLiteral("import.issuesHead"), inkRole::warning)), preview_(new ImportPreview),
       issues_(new ImportIssues(this)), issuesView_(new QTableView) {
@@ -132,7 +135,9 @@ ImportDialog::ImportDialog(TableSource source, const QString& origin, const Reco
     accept_->setFocus();
 }
 
-ImportDialog::~ImportDialog() = default;
+ImportDialog::~ImportDialog() {
+    missing_->disconnect(this); // it loses the focus when it goes
+}
 
 void ImportDialog::makeTop(QVBoxLayout* all) {
     auto* row = new QHBoxLayout;
@@ -150,6 +155,8 @@ void ImportDialog::makeTop(QVBoxLayout* all) {
     addField(row, tr("&Decimal mark"), decimal_, QStringLiteral("import.decimal"));
     addField(row, tr("&Encoding"), encoding_, QStringLiteral("import.encoding"));
     addField(row, tr("&Header lines"), headerRows_, QStringLiteral("import.headerRows"));
+    addField(row, tr("Words for no &value"), missing_, QStringLiteral("import.missing"));
+    missing_->setPlaceholderText(tr("such as OVR; error"));
     addField(row, tr("&Phase of these readings"), phase_, QStringLiteral("import.phase"));
     for (const Phase phase : bothPhases)
         phase_->addItem(phaseText(phase));
@@ -179,6 +186,8 @@ void ImportDialog::makeTop(QVBoxLayout* all) {
         unitsRow_->setProperty("stated", true);
         guess();
     });
+    missing_->installEventFilter(this);
+    connect(missing_, &QLineEdit::editingFinished, this, &ImportDialog::takeMissingWords);
 }
 
 CsvWishes ImportDialog::wishes() const {
@@ -194,13 +203,42 @@ CsvWishes ImportDialog::wishes() const {
         w.headerRows = static_cast<std::size_t>(headerRows_->value());
     if (stated(unitsRow_))
         w.hasUnitsRow = unitsRow_->isChecked();
+    w.missingWords = stated_;
     return w;
+}
+
+/// Enter in the field is for the field: what follows from the words is seen before anything is taken in.
+bool ImportDialog::eventFilter(QObject* watched, QEvent* event) {
+    if (watched == missing_ && event->type() == QEvent::KeyPress) {
+        const int key = static_cast<QKeyEvent*>(event)->key();
+        if (key == Qt::Key_Return || key == Qt::Key_Enter) {
+            takeMissingWords();
+            return true;
+        }
+    }
+    return QDialog::eventFilter(watched, event);
+}
+
+void ImportDialog::takeMissingWords() {
+    if (std::vector<std::string> words = missingWords(); words != stated_) {
+        stated_ = std::move(words);
+        guess();
+    }
+}
+
+std::vector<std::string> ImportDialog::missingWords() const {
+    std::vector<std::string> stated;
+    for (const QString& word : missing_->text().split(QLatin1Char(';'), Qt::SkipEmptyParts))
+        if (!word.trimmed().isEmpty())
+            stated.push_back(word.trimmed().toStdString());
+    return stated;
 }
 
 void ImportDialog::guess() {
     rules_.reset();
     read_.reset();
     issues_->clear();
+    accept_->setEnabled(false);
     reading_->look(wishes());
 }
 
@@ -211,7 +249,13 @@ void ImportDialog::showLook(const TableLook& look) {
     }
     rules_ = *look.rules;
     rows_ = look.rows;
-    mapping_ = mappingByNames(*rules_);
+    std::vector<std::string> names;
+    for (const CsvColumn& column : rules_->columns)
+        names.push_back(column.name);
+    if (std::exchange(columns_, names) != names || !rolesChosen_) {
+        mapping_ = mappingByNames(*rules_);
+        rolesChosen_ = false;
+    }
     showRules();
     showDoubts();
     readAll();
@@ -299,7 +343,7 @@ void ImportDialog::showSum(const QString& sum) {
     sum_->setForegroundRole(read_ ? QPalette::WindowText : inkRole::warning);
     const std::size_t issues = read_ ? read_->issues.count : 0;
     issuesHead_->setText(tr("%n cell(s) cannot be taken in as [it stands|they stand]. [Its row comes|Their rows come] in without that value, "
-                            "to be completed on the bench; or correct the file and open it again.",
+                            "to be completed on the bench. Or name the text above as a word for no value, or correct the file and open it again.",
                             nullptr, static_cast<int>(issues)));
     issuesHead_->setVisible(issues > 0);
     issuesView_->setVisible(issues > 0);
@@ -316,6 +360,7 @@ void ImportDialog::roleChosen(std::size_t column, int role) {
             held.reset();
     if (role != static_cast<int>(ImportRole::None))
         roleColumn(mapping_, static_cast<ImportRole>(role)) = column;
+    rolesChosen_ = true;
     preview_->show(*rules_, mapping_, rows_);
     readAll();
     if (auto* chooser = preview_->findChild<QComboBox*>(QStringLiteral("import.role.%1").arg(column)))

@@ -13,6 +13,7 @@
 class QCheckBox;
 class QComboBox;
 class QLabel;
+class QLineEdit;
 class QProgressBar;
 class QPushButton;
 class QSpinBox;
@@ -48,6 +49,9 @@ class ImportDialog : public QDialog {
     void roleChosen(std::size_t column, int role);
     void makeTop(QVBoxLayout* all);
     [[nodiscard]] CsvWishes wishes() const;
+    bool eventFilter(QObject* watched, QEvent* event) override;
+    void takeMissingWords();
+    [[nodiscard]] std::vector<std::string> missingWords() const; ///< as they stand in the field
 
     TableReading* reading_;
     QString origin_;
@@ -62,6 +66,8 @@ class ImportDialog : public QDialog {
     QComboBox* decimal_;
     QSpinBox* headerRows_;
     QCheckBox* unitsRow_;
+    QLineEdit* missing_;
+    std::vector<std::string> stated_; ///< words for no value, as the table was read with
     QComboBox* phase_;
     QCheckBox* takeNames_;
     QLabel* doubts_;
@@ -73,6 +79,8 @@ class ImportDialog : public QDialog {
     QTableView* issuesView_;
     QPushButton* accept_;
     bool changing_ = false;
+    bool rolesChosen_ = false;          ///< by hand, for columns of these names
+    std::vector<std::string> columns_;
 };
 
 } // namespace spanwright

@@ -111,7 +111,7 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
     case ErrorCode::CellEmpty: return tr("there is nothing in the cell. Type a number.");
     case ErrorCode::CellNotANumber:
         return facts.has("line")
-                   ? tr("%1 is no number. Correct it in the file, state it as a word for missing values, or exclude its row.")
+                   ? tr("%1 is no number. Correct it in the file, or name it as a word that stands for no value.")
                          .arg(facts.quoted("text", tr("the cell")))
                    : tr("%1 is not a number. Type digits, such as 12.04.").arg(facts.quoted("text", tr("this")));
     case ErrorCode::CellDateBad:
