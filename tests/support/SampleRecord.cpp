@@ -1,7 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "tests/support/SampleRecord.h"
 
-#include <algorithm>
 #include <array>
 #include <chrono>
 #include <span>
@@ -11,12 +10,6 @@ namespace spanwright::test {
 namespace {
 
 constexpr const char* calibrationDay = "2026-10-13";
-
-std::int64_t timeOfDay(int hour, int minute) {
-    using namespace std::chrono;
-    const sys_days day = year{2026} / October / 13;
-    return duration_cast<milliseconds>((day + hours{hour} + minutes{minute}).time_since_epoch()).count();
-}
 
 struct Pair {
     const char* reference;
@@ -61,25 +54,21 @@ constexpr Pair fallingLeft[] = {{"9.9998", "20.006"}, {"7.4999", "16.003"}, {"4.
 
 /// Appends a pass, one reading every 80 to 110 s from `at`; returns when the pass is done.
 std::int64_t appendPass(Record& record, const Pass& pass, std::int64_t at) {
-    ReadingColumns& readings = record.readings.edit();
     for (std::size_t i = 0; i < pass.pairs.size(); ++i) {
         Reading reading;
-        reading.id = record.nextReadingId++;
         reading.phase = pass.phase;
         reading.run = pass.run;
         reading.direction = pass.direction;
         reading.setPoint = number(pass.setPoints[i]);
         reading.reference = number(pass.pairs[i].reference);
         reading.indication = number(pass.pairs[i].indication);
-        at += 80'000 + reading.id * 7'919 % 30'000;
-        reading.enteredAt = at;
-        reading.enteredBy = "IO";
-        readings.append(reading);
+        at = appendTyped(record, reading, at, 80'000, 30'000);
     }
     return at;
 }
 
 void appendReadings(Record& record) {
+    using namespace std::chrono_literals;
     const Pass asFound[] = {{Phase::AsFound, 1, Direction::Rising, rising11, rising1},
                             {Phase::AsFound, 1, Direction::Falling, falling11, falling1},
                             {Phase::AsFound, 2, Direction::Rising, rising11, rising2},
@@ -88,31 +77,18 @@ void appendReadings(Record& record) {
                             {Phase::AsFound, 3, Direction::Falling, falling11, falling3}};
     const Pass asLeft[] = {{Phase::AsLeft, 1, Direction::Rising, rising5, risingLeft},
                            {Phase::AsLeft, 1, Direction::Falling, falling5, fallingLeft}};
-    std::int64_t at = timeOfDay(8, 35);
+    std::int64_t at = momentOf(13, 8h + 35min);
     for (const Pass& pass : asFound)
         at = appendPass(record, pass, at);
-    at = timeOfDay(13, 5);
+    at = momentOf(13, 13h + 5min);
     for (const Pass& pass : asLeft)
         at = appendPass(record, pass, at);
 }
 
 Job job() {
-    Job job;
-    job.number = "W-2026-0418";
-    job.certificateNumber = "QC-2026-0418";
-    job.laboratory = "Quillmere Calibration Room";
-    job.laboratoryAddress = "7 Sluice Lane, Quillmere";
-    job.place = "At the laboratory";
-    job.customer = "Brackwater Pumping Station";
-    job.customerContact = "Instrument workshop, Brackwater";
+    Job job = sampleJob("0418", {"QP-11 Pressure transmitters, comparison with a pressure controller", "4"}, calibrationDay);
     job.customerSupplied = "Tag and measuring range";
-    job.externalProviders = "none";
-    job.method = "QP-11 Pressure transmitters, comparison with a pressure controller";
-    job.methodEdition = "4";
-    job.received = "2026-10-09";
     job.conditionReceived = "Clean, no damage, seal intact; in the room since 2026-10-09";
-    job.calibrated = calibrationDay;
-    job.traceability = "The standards named below are calibrated at laboratories whose results are traceable to the SI.";
     job.adjusted = true;
     job.adjustment = "Zero trimmed by +0.0012 mA, span by -0.0010 mA";
     return job;
@@ -137,60 +113,35 @@ Item item() {
 }
 
 std::vector<Standard> standards() {
-    Standard controller;
-    controller.id = "QR-P-02";
-    controller.description = "Pressure controller, gauge";
-    controller.role = StandardRole::Reference;
-    controller.certificate = "HL-26-1190";
-    controller.issuer = "Hollin Pressure Laboratory";
-    controller.calibratedOn = "2026-03-17";
-    controller.due = "2027-03-17";
-    controller.unit = "bar";
-    controller.rangeLow = number("0");
-    controller.rangeHigh = number("20");
-    controller.resolution = number("0.0001");
-    controller.expandedUncertainty = number("0.0020");
-    controller.coverageFactor = number("2");
-    controller.drift = number("0.0008");
+    Standard controller = sampleStandard(StandardRole::Reference, {.id = "QR-P-02",
+                                                                   .description = "Pressure controller, gauge",
+                                                                   .issuer = "Hollin Pressure Laboratory",
+                                                                   .certificate = "HL-26-1190",
+                                                                   .unit = "bar",
+                                                                   .low = "0",
+                                                                   .high = "20",
+                                                                   .resolution = "0.0001",
+                                                                   .expanded = "0.0020",
+                                                                   .drift = "0.0008"});
     controller.correctionUse = CorrectionUse::AlreadyApplied;
-    for (const auto& [at, correction] : {std::pair{"0", "0.0004"}, {"5", "0.0001"}, {"10", "-0.0003"}, {"15", "-0.0007"},
-                                         {"20", "-0.0011"}})
-        controller.corrections.push_back({number(at), number(correction)});
-
-    Standard meter;
-    meter.id = "QR-E-01";
-    meter.description = "Milliammeter";
-    meter.role = StandardRole::Indication;
-    meter.certificate = "AE-26-0077";
-    meter.issuer = "Ambry Electrical Laboratory";
-    meter.calibratedOn = "2026-01-20";
-    meter.due = "2027-01-20";
-    meter.unit = "mA";
-    meter.rangeLow = number("0");
-    meter.rangeHigh = number("24");
-    meter.resolution = number("0.0001");
-    meter.expandedUncertainty = number("0.0012");
-    meter.coverageFactor = number("2");
-    meter.drift = number("0.0005");
+    addCorrections(controller, {{"0", "0.0004"}, {"5", "0.0001"}, {"10", "-0.0003"}, {"15", "-0.0007"}, {"20", "-0.0011"}});
+    const Standard meter = sampleStandard(StandardRole::Indication, {.id = "QR-E-01",
+                                                                     .description = "Milliammeter",
+                                                                     .issuer = "Ambry Electrical Laboratory",
+                                                                     .certificate = "AE-26-0077",
+                                                                     .calibratedOn = "2026-01-20",
+                                                                     .due = "2027-01-20",
+                                                                     .unit = "mA",
+                                                                     .low = "0",
+                                                                     .high = "24",
+                                                                     .resolution = "0.0001",
+                                                                     .expanded = "0.0012",
+                                                                     .drift = "0.0005"});
     return {controller, meter};
 }
 
-Conditions conditions() {
-    Conditions conditions;
-    conditions.influences = {
-        {{"temperature", "°C"}, number("20.8"), number("21.4"), number("18"), number("24")},
-        {{"relative humidity", "%"}, number("46"), number("44"), number("30"), number("70")},
-        {{"air pressure", "hPa"}, number("1009"), number("1008"), number("950"), number("1050")},
-    };
-    conditions.remarks = "Upright, process connection down; nitrogen; supply 24 V, loop resistor 250 Ω";
-    return conditions;
-}
-
 Plan plan() {
-    Plan plan;
-    for (const char* setPoint : rising11)
-        plan.setPoints.push_back(number(setPoint));
-    plan.directions = PlanDirections::RisingThenFalling;
+    Plan plan = samplePlan({"0", "1", "2", "3", "4", "5", "6", "7", "8", "9", "10"}, PlanDirections::RisingThenFalling);
     plan.runs = 3;
     plan.dwellSeconds = 60;
     plan.preloads = 3;
@@ -211,16 +162,13 @@ Limits limits() {
 
 } // namespace
 
-Decimal number(const char* text) {
-    return Decimal::parse(text).value();
-}
-
 Record pressureTransmitter() {
     Record record;
     record.job = job();
     record.item = item();
     record.standards = standards();
-    record.conditions = conditions();
+    record.conditions = sampleConditions({{"20.8", "21.4"}, {"46", "44"}, {"1009", "1008"}},
+                                         "Upright, process connection down; nitrogen; supply 24 V, loop resistor 250 Ω");
     record.plan = plan();
     record.choices.separateDirections = true;
     record.choices.at = {number("0"), number("5"), number("10")};

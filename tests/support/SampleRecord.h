@@ -1,7 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
-#include "core/record/Record.h"
+#include "tests/support/SampleLaboratory.h"
 
 namespace spanwright::test {
 
@@ -20,8 +20,5 @@ Record loadCell();
 Record flowSensorAsTyped();
 /// A record as its people made it through the commands of the window: the job first, then every reading as it was typed.
 Record asTaken(const Record& wanted);
-
-/// A number from its text; the text must be a number.
-Decimal number(const char* text);
 
 } // namespace spanwright::test
