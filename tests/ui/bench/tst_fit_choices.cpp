@@ -1,11 +1,10 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include "tests/support/BenchWindow.h"
 #include "tests/support/SampleRecord.h"
-#include "ui/bench/BenchPage.h"
 #include "ui/bench/MatrixDialog.h"
 #include "ui/bench/ReadingsTable.h"
 #include "ui/look/Look.h"
 
-#include <QAction>
 #include <QApplication>
 #include <QClipboard>
 #include <QComboBox>
@@ -23,6 +22,7 @@
 #include <functional>
 
 using namespace spanwright;
+using test::BenchWindow;
 
 namespace {
 
@@ -54,41 +54,6 @@ QString diagonal(int n) {
     return rows.join(QLatin1Char('\n'));
 }
 
-class Bench {
-  public:
-    explicit Bench(const Record& record) : workbench([] { return std::int64_t{1764590400000}; }), page(workbench) {
-        workbench.setPerson(QStringLiteral("IO"));
-        workbench.setRecord(record);
-        page.resize(1280, 720);
-        page.show();
-        QApplication::setActiveWindow(&page);
-        QTest::qWait(0);
-    }
-    template <class T>
-    T* find(const char* name) const {
-        T* found = page.findChild<T*>(QLatin1String(name));
-        Q_ASSERT(found);
-        return found;
-    }
-    QDialog* open(const char* action, const char* dialog) const {
-        find<QAction>(action)->trigger();
-        return find<QDialog>(dialog);
-    }
-    /// Opens the list of a chooser and triggers the entry with that text.
-    void choose(const char* button, const QString& text) const {
-        QMenu* menu = find<QToolButton>(button)->menu();
-        emit menu->aboutToShow();
-        for (QAction* action : menu->actions())
-            if (action->text() == text)
-                return action->trigger();
-        qFatal("no entry %s", qPrintable(text));
-    }
-    [[nodiscard]] const Choices& choices() const { return workbench.record().choices; }
-
-    Workbench workbench;
-    BenchPage page;
-};
-
 } // namespace
 
 class FitChoices : public QObject {
@@ -101,14 +66,14 @@ class FitChoices : public QObject {
     }
 
     void theFormulaOfTheFunctionIsInItsChooser() {
-        Bench bench(test::pressureTransmitter());
+        BenchWindow bench(test::pressureTransmitter());
         QMenu* menu = bench.find<QToolButton>("functionChoice")->menu();
         emit menu->aboutToShow();
         QVERIFY(menu->findChildren<QLabel*>(QStringLiteral("functionFormula")).back()->text().contains(QStringLiteral("y = b0 + b1·x\nISO/TS 28037")));
     }
 
     void chiSquaredIsShownWhereUncertaintiesAreKnown() {
-        Bench bench(sixReadings());
+        BenchWindow bench(sixReadings());
         bench.choose("weightsChoice", QStringLiteral("Reference and indication both uncertain"));
         bench.choose("weightsChoice", QStringLiteral("From the stated uncertainties as they are"));
         const QString words = bench.find<QLabel>("equation")->text();
@@ -123,7 +88,7 @@ class FitChoices : public QObject {
         standard.id = "P";
         standard.expandedUncertainty = test::number("0.1");
         record.standards = {standard};
-        Bench bench(record);
+        BenchWindow bench(record);
         bench.choose("weightsChoice", QStringLiteral("Reference and indication both uncertain"));
         const Choices before = bench.choices();
         bench.choose("weightsChoice", QStringLiteral("In the fit, with the stated uncertainties as they are"));
@@ -138,7 +103,7 @@ class FitChoices : public QObject {
     }
 
     void covariancesArePastedRefusedAndRemoved() {
-        Bench bench(sixReadings());
+        BenchWindow bench(sixReadings());
         auto* dialog = qobject_cast<MatrixDialog*>(bench.open("bench.covariances", "matrixDialog"));
         auto* refusal = dialog->findChild<QLabel*>(QStringLiteral("matrixRefusal"));
         QVERIFY(dialog->findChild<QLabel*>(QStringLiteral("matrixAbout"))->text().contains(QStringLiteral("6 rows")));
@@ -165,10 +130,10 @@ class FitChoices : public QObject {
     }
 
     void columnsOfUncertaintiesShowWhereTheyAreUsed() {
-        Bench plain(test::pressureTransmitter());
+        BenchWindow plain(test::pressureTransmitter());
         for (const int column : ReadingsModel::statedColumns)
             QVERIFY(plain.find<ReadingsTable>("readingsTable")->isColumnHidden(column));
-        Bench bench(sixReadings());
+        BenchWindow bench(sixReadings());
         auto* table = bench.find<ReadingsTable>("readingsTable");
         QVERIFY(!table->isColumnHidden(ReadingsModel::ReferenceUncertainty));
         QVERIFY(table->isColumnHidden(ReadingsModel::Covariance));
@@ -185,7 +150,7 @@ class FitChoices : public QObject {
     }
 
     void aDegreeIsChosenFromTheTable() {
-        Bench bench(test::pressureTransmitter());
+        BenchWindow bench(test::pressureTransmitter());
         QDialog* dialog = bench.open("bench.degrees", "degreeTable");
         auto* table = dialog->findChild<QTableWidget*>(QStringLiteral("degrees"));
         QCOMPARE(table->rowCount(), 5);
@@ -201,7 +166,7 @@ class FitChoices : public QObject {
     void aRobustFitIsComparedOnly() {
         Record record = sixReadings();
         record.readings.edit().setNumber(3, NumberColumn::Indication, test::number("15"));
-        Bench bench(record);
+        BenchWindow bench(record);
         const Record before = bench.workbench.record();
         QDialog* dialog = bench.open("bench.compare", "compareDialog");
         auto* with = dialog->findChild<QComboBox*>(QStringLiteral("compareWith"));
@@ -216,7 +181,7 @@ class FitChoices : public QObject {
     }
 
     void intervalsAtOnePlace() {
-        Bench bench(test::pressureTransmitter());
+        BenchWindow bench(test::pressureTransmitter());
         QDialog* dialog = bench.open("bench.intervals", "intervalsDialog");
         dialog->findChild<QLineEdit*>(QStringLiteral("intervalPlace"))->setText(QStringLiteral("5"));
         QStringList words;
