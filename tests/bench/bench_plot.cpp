@@ -9,6 +9,7 @@
 #include <QElapsedTimer>
 #include <QImage>
 #include <QPainter>
+#include <QTest>
 #include <QtCharts/QChart>
 #include <QtCharts/QLineSeries>
 
@@ -63,6 +64,13 @@ double milliseconds(QWidget& plot, PlotView* rebuilt) {
     return times[times.size() / 2];
 }
 
+/// Shows it and waits until it is on the screen, laid out.
+void seen(QWidget& widget) {
+    widget.show();
+    if (!QTest::qWaitForWindowExposed(&widget))
+        std::fprintf(stderr, "a window was not shown\n");
+}
+
 } // namespace
 
 int main(int argc, char** argv) {
@@ -72,8 +80,7 @@ int main(int argc, char** argv) {
         auto plot = std::make_unique<PlotView>();
         plot->resize(1200, 700);
         plot->setContent(contentOf(n));
-        plot->show();
-        QApplication::processEvents();
+        seen(*plot);
         return plot;
     };
     auto* chart = new QChart;
@@ -82,8 +89,7 @@ int main(int argc, char** argv) {
     QChartView empty(chart);
     empty.resize(1200, 700);
     empty.setRenderHint(QPainter::Antialiasing);
-    empty.show();
-    QApplication::processEvents();
+    seen(empty);
     const double base = milliseconds(empty, nullptr);
     std::printf("empty chart 1200 x 700: %.2f ms\n", base);
     for (const std::size_t n : {std::size_t(66), std::size_t(10000), std::size_t(1000000)}) {

@@ -14,6 +14,7 @@
 #include <QListWidget>
 #include <QMenu>
 #include <QMimeData>
+#include <QPointer>
 #include <QProgressBar>
 #include <QSpinBox>
 #include <QTableView>
@@ -486,14 +487,13 @@ class MainWindowTest : public QObject {
         Desk desk;
         desk.dialogs.inDialog = [](QDialog& dialog) {
             const auto choose = [&](int column, int role) {
-                auto* chooser = dialog.findChild<QComboBox*>(QString("import.role.%1").arg(column));
+                const QPointer<QComboBox> chooser = dialog.findChild<QComboBox*>(QString("import.role.%1").arg(column));
                 chooser->setCurrentIndex(role);
                 emit chooser->activated(role);
-                QCoreApplication::processEvents();
+                return QTest::qWaitFor([&] { return chooser.isNull(); }); // the preview shows others in its place
             };
-            choose(0, 2); // indication
-            choose(1, 1); // reference
-            return dialog.findChild<QWidget*>("import.accept")->isEnabled();
+            const bool chosen = choose(0, 2) && choose(1, 1); // indication, reference
+            return chosen && dialog.findChild<QWidget*>("import.accept")->isEnabled();
         };
         QVERIFY(desk.window->files().openPath(desk.write("flow.csv", table)));
         QCOMPARE(desk.record().readings->reference().at(0)->text(), std::string("0.203"));
