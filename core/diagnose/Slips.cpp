@@ -150,6 +150,11 @@ bool offResolution(const Decimal& value, const std::optional<Decimal>& resolutio
     return std::abs(steps - std::round(steps)) > 1e-6 * std::max(1.0, std::abs(steps));
 }
 
+/// The plan asks for further readings where the one before was taken: they may well be the same.
+bool repeatPlanned(const Plan& plan, const Reading& before, const Reading& typed) {
+    return plan.repeats > 1 && typed.setPoint && before.setPoint == typed.setPoint && before.direction == typed.direction;
+}
+
 /// Checks that need no other reading of the same kind, and work from the first reading on.
 void plainChecks(const Record& record, const Reading& typed, const std::optional<Reading>& before,
                  std::vector<Slip>& slips) {
@@ -176,8 +181,8 @@ void plainChecks(const Record& record, const Reading& typed, const std::optional
     }
     if (!before || before->phase != typed.phase || before->run != typed.run)
         return;
-    const bool sameReference = typed.reference && before->reference == typed.reference;
-    if (sameReference && typed.indication && before->indication == typed.indication && record.plan.referenceTyped)
+    const bool same = typed.reference && before->reference == typed.reference && typed.indication && before->indication == typed.indication;
+    if (same && record.plan.referenceTyped && !repeatPlanned(record.plan, *before, typed))
         plain(slips, typed, SlipKind::RepeatsRowBefore, NumberColumn::Indication);
     if (typed.reference && before->reference && typed.direction == before->direction && typed.setPoint &&
         before->setPoint && compareValue(*typed.setPoint, *before->setPoint) != 0) {

@@ -22,7 +22,7 @@ enum class SlipKind {
     OutsideItemRange,     ///< beyond the stated range or output by more than a tenth of it
     OutsideStandardRange, ///< beyond the range of a reference standard
     OffResolution,        ///< not a multiple of the stated resolution, or more decimals than it has
-    RepeatsRowBefore,     ///< both numbers as typed in the row before
+    RepeatsRowBefore,     ///< both numbers as typed in the row before, where the plan has no repeats
     AgainstDirection,     ///< the reference moved against the direction of the run
     BeforeSettled,        ///< typed sooner after the row before than the planned wait
 };

@@ -4,6 +4,7 @@
 #include "ui/bench/ChoiceMenus.h"
 #include "ui/bench/NumberEdit.h"
 #include "ui/bench/PlanRows.h"
+#include "ui/bench/Suspects.h"
 #include "ui/commands/PartCommand.h"
 #include "ui/commands/ReadingCommands.h"
 #include "ui/look/Look.h"
@@ -258,13 +259,14 @@ void NextReading::showDwell() {
     const std::int64_t last = times.empty() ? 0 : times.back();
     const std::int64_t left = last == 0 || record.plan.dwellSeconds == 0 ? 0 : record.plan.dwellSeconds - (workbench_.now() - last) / 1000;
     const bool waiting = planned_ && left > 0 && left <= record.plan.dwellSeconds;
+    dwell_->setVisible(planned_); // a line kept free would be an empty strip once the plan is done
     dwell_->setText(waiting ? tr("settles for another %1:%2").arg(left / 60).arg(left % 60, 2, 10, QLatin1Char('0')) : QString());
     waiting ? clock_->start() : clock_->stop();
 }
 
 void NextReading::tell(const QString& sentence, bool warning) {
     sentence_->setText(sentence);
-    sentence_->setVisible(planned_ || !sentence.isEmpty()); // a line kept free would be an empty strip once the plan is done
+    sentence_->setVisible(planned_ || !sentence.isEmpty());
     sentence_->setForegroundRole(warning ? inkRole::warning : inkRole::accent);
 }
 
@@ -343,19 +345,14 @@ bool NextReading::asked(const Decimal& indication) {
     if (referenceTyped())
         typed.reference = *reference_->number();
     typed.indication = indication;
-    typed.enteredAt = workbench_.now();
-    const bool inside = insideOfReadings(indication, *reference(), figures(), workbench_.record().item);
-    for (const Slip& slip : slipsOf(workbench_.record(), typed)) {
-        if (slip.kind == SlipKind::BeforeSettled || slip.kind == SlipKind::OffResolution)
-            continue;
-        // What lies inside the interval shown as expected is not called far off.
-        if (slip.distance != 0 && inside)
-            continue;
-        const bool reference = slip.column == NumberColumn::Reference;
-        ask(slipText(slip, reference ? *typed.reference : indication), reference ? std::nullopt : slip.suggestion, slip.column);
+    const Record& record = workbench_.record();
+    const std::vector<Suspect> suspects = suspectsAmong(record, figures(), {typed}, {NumberColumn::Reference, NumberColumn::Indication});
+    if (!suspects.empty()) {
+        const Suspect& first = suspects.front();
+        ask(first.sentence, first.column == NumberColumn::Indication ? first.suggestion : std::nullopt, first.column);
         return true;
     }
-    const TypedCheck check = checkIndication(indication, *reference(), figures(), workbench_.record().item);
+    const TypedCheck check = checkIndication(indication, *reference(), figures(), record.item);
     if (check.doubtful)
         ask(tr("%1: %2.").arg(indication_->text().trimmed(), check.sentence), std::nullopt, NumberColumn::Indication);
     return check.doubtful;

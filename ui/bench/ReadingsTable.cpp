@@ -8,6 +8,7 @@
 #include "ui/bench/Suspects.h"
 #include "ui/bench/recordAsked.h"
 #include "ui/commands/ReadingCommands.h"
+#include "ui/commands/ReadingNumbers.h"
 #include "ui/look/Look.h"
 #include "ui/look/NumberText.h"
 #include "ui/words/Words.h"
@@ -23,22 +24,6 @@
 #include <algorithm>
 
 namespace spanwright {
-
-namespace {
-
-std::optional<Decimal>& valueOf(Reading& reading, NumberColumn column) {
-    switch (column) {
-    case NumberColumn::SetPoint: return reading.setPoint;
-    case NumberColumn::Reference: return reading.reference;
-    case NumberColumn::Indication: return reading.indication;
-    case NumberColumn::UReference: return reading.uReference;
-    case NumberColumn::UIndication: return reading.uIndication;
-    case NumberColumn::UCovariance: break;
-    }
-    return reading.uCovariance;
-}
-
-} // namespace
 
 ReadingsTable::ReadingsTable(Workbench& workbench, QWidget* parent)
     : QTableView(parent), workbench_(workbench), model_(new ReadingsModel(workbench, this)), delegate_(new ReadingsDelegate(this)),
@@ -142,7 +127,7 @@ void ReadingsTable::enter(Reading reading, NumberColumn column, const Decimal& v
     const ReadingId id = reading.id != 0 ? reading.id : workbench_.record().nextReadingId;
     const int row = reading.id != 0 ? model_->rowOf(reading.id) : currentIndex().row();
     const int shown = ReadingsModel::columnOf(column);
-    valueOf(reading, column) = value;
+    numberOf(reading, column) = value;
     const QString step = reading.id != 0 ? tr("complete a reading") : tr("enter a reading");
     recordAsked(
         workbench_, {step, {std::move(reading)}, {column}, {}}, this,
@@ -172,9 +157,9 @@ void ReadingsTable::editAgain(int row, NumberColumn column, const Decimal& value
 void ReadingsTable::amend(ReadingId id, NumberColumn column, const Decimal& before, const Decimal& after, bool onward) {
     const int shown = ReadingsModel::columnOf(column);
     Reading amended = workbench_.record().readings->row(workbench_.record().readings->indexOf(id));
-    valueOf(amended, column) = after;
+    numberOf(amended, column) = after;
     QString ask = tr("&Why? The value before is kept beside the new one.");
-    for (const Suspect& suspect : suspectsAmong(workbench_.record(), {amended}, {column}))
+    for (const Suspect& suspect : suspectsAmong(workbench_.record(), workbench_.evaluation()->phase(amended.phase), {amended}, {column}))
         ask.prepend(suspect.sentence + QLatin1Char('\n'));
     const QString what = tr("Reading %1, %2").arg(id).arg(model_->headerData(shown, Qt::Horizontal, Qt::DisplayRole).toString());
     const ReasonDialog::Question question{tr("Change a recorded value"),
@@ -223,7 +208,7 @@ void ReadingsTable::paste(const QString& text) {
         Reading reading = model_->readingAt(row);
         for (int c = 0; c < block.width(); ++c) {
             const Decimal& value = block.rows[i][static_cast<std::size_t>(c)];
-            valueOf(reading, *ReadingsModel::numberColumn(first + c)) = value;
+            numberOf(reading, *ReadingsModel::numberColumn(first + c)) = value;
         }
         rows.push_back(std::move(reading));
     }

@@ -4,6 +4,7 @@
 #include "core/diagnose/Slips.h"
 #include "ui/bench/TypedCheck.h"
 #include "ui/commands/ReadingCommands.h"
+#include "ui/commands/ReadingNumbers.h"
 #include "ui/look/NumberText.h"
 #include "ui/words/Words.h"
 
@@ -21,8 +22,8 @@ QString tr(const char* text) {
     return QCoreApplication::translate("Suspects", text);
 }
 
-const std::optional<Decimal>& valueOf(const Reading& reading, NumberColumn column) {
-    return column == NumberColumn::Reference ? reading.reference : reading.indication;
+bool inside(const Reading& reading, const PhaseEvaluation* figures, const Item& item) {
+    return reading.reference && reading.indication && insideOfReadings(*reading.indication, reading.reference->toDouble(), figures, item);
 }
 
 /// Slips of the readings as they would stand in the record.
@@ -48,7 +49,7 @@ class Questions {
         // Of a reference just typed the indication may tell that it does not fit, but not what it should be.
         const bool pair = slip.column == NumberColumn::Indication && !columns_.contains(slip.column) && slip.distance != 0;
         const NumberColumn column = pair ? NumberColumn::Reference : slip.column;
-        const auto& typed = valueOf(rows_[row], column);
+        const auto& typed = numberOf(rows_[row], column);
         if (typed && columns_.contains(column))
             add(row, column, pair ? std::nullopt : slip.suggestion,
                 pair ? tr("With reference %1 the indication lies far from what the other readings say.").arg(typedText(*typed)) : slipText(slip, *typed));
@@ -56,7 +57,7 @@ class Questions {
 
     void add(std::size_t row, NumberColumn column, const TypedCheck& check) {
         if (check.doubtful && columns_.contains(column))
-            add(row, column, std::nullopt, tr("%1: %2").arg(typedText(*valueOf(rows_[row], column)), check.sentence));
+            add(row, column, std::nullopt, tr("%1: %2").arg(typedText(*numberOf(rows_[row], column)), check.sentence));
     }
 
     [[nodiscard]] std::vector<Suspect> take() {
@@ -68,7 +69,7 @@ class Questions {
     void add(std::size_t row, NumberColumn column, std::optional<Decimal> suggestion, const QString& sentence) {
         const bool known = std::any_of(made_.begin(), made_.end(), [&](const Suspect& s) { return s.row == row && s.column == column; });
         if (!known)
-            made_.push_back({row, column, *valueOf(rows_[row], column), std::move(suggestion), sentence});
+            made_.push_back({row, column, *numberOf(rows_[row], column), std::move(suggestion), sentence});
     }
 
     const std::vector<Reading>& rows_;
@@ -78,15 +79,21 @@ class Questions {
 
 } // namespace
 
-std::vector<Suspect> suspectsAmong(const Record& record, const std::vector<Reading>& rows, const std::set<NumberColumn>& columns) {
+std::vector<Suspect> suspectsAmong(const Record& record, const PhaseEvaluation* figures, const std::vector<Reading>& rows, const std::set<NumberColumn>& columns) {
     if (rows.empty() || rows.size() + record.readings->size() > MostLookedAt)
         return {};
     Questions questions(rows, columns);
+    const bool judges = figures && figures->fit && rows.size() <= figures->fit->used;
     std::vector<ReadingId> ids;
     for (const Slip& slip : slipsAmong(record, rows, ids)) {
         const auto found = std::find(ids.begin(), ids.end(), slip.id);
-        if (found != ids.end())
-            questions.add(slip, static_cast<std::size_t>(found - ids.begin()));
+        if (found == ids.end())
+            continue;
+        const auto row = static_cast<std::size_t>(found - ids.begin());
+        // A slip that would explain the number is asked about all the same.
+        const bool farOff = slip.kind == SlipKind::Unexplained;
+        if (!farOff || !judges || !inside(rows[row], figures, record.item))
+            questions.add(slip, row);
     }
     for (std::size_t row = 0; row < rows.size(); ++row)
         if (rows[row].reference)
@@ -97,7 +104,7 @@ std::vector<Suspect> suspectsAmong(const Record& record, const std::vector<Readi
 std::vector<Reading> answered(std::vector<Reading> rows, const std::vector<Suspect>& suspects) {
     for (const Suspect& suspect : suspects)
         if (suspect.useSuggestion && suspect.suggestion)
-            (suspect.column == NumberColumn::Reference ? rows[suspect.row].reference : rows[suspect.row].indication) = suspect.suggestion;
+            numberOf(rows[suspect.row], suspect.column) = suspect.suggestion;
     return rows;
 }
 

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include "core/evaluate/Evaluation.h"
 #include "core/record/Record.h"
 
 #include <QString>
@@ -22,8 +23,10 @@ struct Suspect {
 };
 
 /// Numbers of the columns just typed or pasted that a slip of the hand could have made, or that lie far from what is expected: at most one
-/// question for each, the best explanation. Readings with an id replace those of the record. More than a few thousand are not looked at.
-std::vector<Suspect> suspectsAmong(const Record& record, const std::vector<Reading>& rows, const std::set<NumberColumn>& columns);
+/// question for each, the best explanation first. Readings with an id replace those of the record. What lies inside the interval that the
+/// readings so far lead to expect (`figures`, of their phase) is not called far off, unless more readings are judged than led to it. More
+/// than a few thousand are not looked at.
+std::vector<Suspect> suspectsAmong(const Record& record, const PhaseEvaluation* figures, const std::vector<Reading>& rows, const std::set<NumberColumn>& columns);
 
 /// The readings with the answers put in.
 std::vector<Reading> answered(std::vector<Reading> rows, const std::vector<Suspect>& suspects);

@@ -32,7 +32,8 @@ QStringList namesOf(const Record& record, const std::vector<Reading>& rows, cons
 } // namespace
 
 void recordAsked(Workbench& workbench, EntryRequest request, QWidget* parent, std::function<void()> recorded, std::function<void()> back) {
-    const std::vector<Suspect> suspects = suspectsAmong(workbench.record(), request.rows, request.columns);
+    const PhaseEvaluation* figures = request.rows.empty() ? nullptr : workbench.evaluation()->phase(request.rows.front().phase);
+    const std::vector<Suspect> suspects = suspectsAmong(workbench.record(), figures, request.rows, request.columns);
     if (suspects.empty()) {
         perform(workbench, request, {});
         recorded();

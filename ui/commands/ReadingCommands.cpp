@@ -2,6 +2,7 @@
 #include "ui/commands/ReadingCommands.h"
 
 #include "core/record/Fields.h"
+#include "ui/commands/ReadingNumbers.h"
 
 #include <QCoreApplication>
 
@@ -15,21 +16,6 @@ namespace {
 QString tr(const char* text) {
     return QCoreApplication::translate("Commands", text);
 }
-
-struct ColumnName {
-    NumberColumn column;
-    const char* name;
-    std::optional<Decimal> Reading::*field;
-};
-
-constexpr ColumnName columnNames[] = {
-    {NumberColumn::SetPoint, "set point", &Reading::setPoint},
-    {NumberColumn::Reference, "reference", &Reading::reference},
-    {NumberColumn::Indication, "indication", &Reading::indication},
-    {NumberColumn::UReference, "u of reference", &Reading::uReference},
-    {NumberColumn::UIndication, "u of indication", &Reading::uIndication},
-    {NumberColumn::UCovariance, "covariance", &Reading::uCovariance},
-};
 
 std::string textOf(const std::optional<Decimal>& value) {
     return value ? value->text() : std::string();
@@ -50,14 +36,14 @@ std::string where(ReadingId id, const char* column = nullptr) {
 /// "reference 2.0001, indication 7.195, as-found, run 1, rising"
 std::string wholeText(const Reading& r) {
     std::string text;
-    for (const ColumnName& c : columnNames)
+    for (const ReadingNumber& c : readingNumbers)
         if (r.*c.field)
             text += std::string(c.name) + " " + (r.*c.field)->text() + ", ";
     return text + placeText(r);
 }
 
 void entriesOfChange(std::vector<JournalEntry>& made, const Reading& before, const Reading& after, const std::string& reason) {
-    for (const ColumnName& c : columnNames)
+    for (const ReadingNumber& c : readingNumbers)
         if (before.*c.field != after.*c.field)
             made.push_back({.who = {}, .what = before.*c.field ? "value-amended" : "value-entered",
                             .where = where(before.id, c.name),
@@ -75,7 +61,7 @@ void entriesOfChange(std::vector<JournalEntry>& made, const Reading& before, con
 void replaceRow(ReadingColumns& columns, const Reading& reading) {
     const std::size_t row = columns.indexOf(reading.id);
     assert(row < columns.size());
-    for (const ColumnName& c : columnNames)
+    for (const ReadingNumber& c : readingNumbers)
         columns.setNumber(row, c.column, reading.*c.field);
     columns.setPlace(row, reading.phase, reading.run, reading.direction);
     columns.setEntry(row, reading.enteredAt, reading.enteredBy);
@@ -194,7 +180,7 @@ void AmendValue::revert(Record& record) {
 
 std::vector<JournalEntry> AmendValue::entries(const Record&, const Record&) const {
     return {{.who = {}, .what = before_ ? "value-amended" : "value-entered",
-             .where = where(id_, columnNames[static_cast<std::size_t>(column_)].name),
+             .where = where(id_, numberOf(column_).name),
              .before = textOf(before_),
              .after = textOf(value_),
              .reason = reason_}};

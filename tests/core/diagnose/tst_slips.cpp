@@ -147,6 +147,13 @@ class SlipsTest : public QObject {
         QCOMPARE(
             kinds(slipsOf(record, second)),
             (std::vector<SlipKind>{SlipKind::RepeatsRowBefore, SlipKind::AgainstDirection, SlipKind::BeforeSettled}));
+        // Where the plan has the set point read several times, the same pair again is what is to be expected.
+        second.setPoint = first.setPoint;
+        QCOMPARE(kinds(slipsOf(record, second)), std::vector<SlipKind>{SlipKind::RepeatsRowBefore});
+        record.plan.repeats = 3;
+        QVERIFY(slipsOf(record, second).empty());
+        second.setPoint = number("5");
+        QCOMPARE(kinds(slipsOf(record, second)).front(), SlipKind::RepeatsRowBefore);
         second.reference = number("5.001");
         second.indication = number("12.004");
         second.enteredAt = 1'040'000;

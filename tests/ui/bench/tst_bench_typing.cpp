@@ -4,6 +4,7 @@
 #include "ui/bench/NumberEdit.h"
 #include "ui/bench/PastedBlock.h"
 #include "ui/bench/ReadingsTable.h"
+#include "ui/commands/ExclusionCommands.h"
 #include "ui/look/TypedNumber.h"
 #include "ui/look/Look.h"
 
@@ -256,6 +257,46 @@ class BenchTyping : public QObject {
         bench.workbench.undoStack().undo();
         bench.workbench.undoStack().undo();
         QVERIFY(bench.workbench.record() == record);
+    }
+
+    /// One wild reading among a dozen widens the interval in which a further one is expected; panel, table and paste all go by it.
+    void whatLiesInsideTheExpectedIntervalIsNotCalledFarOff() {
+        Record record;
+        for (int i = 0; i < 13; ++i) {
+            Reading reading;
+            reading.id = record.nextReadingId++;
+            reading.run = 1;
+            reading.reference = Decimal{i * 1000, 3, {}};
+            reading.indication = Decimal{i == 6 ? 998'000 : i * 1000 + i * 7 % 5, 3, {}};
+            record.readings.edit().append(reading);
+        }
+        BenchWindow bench(record);
+        bench.enter("referenceField", "5.000");
+        QVERIFY(bench.find<QLabel>("expectedWords")->text().startsWith(QStringLiteral("expected −")));
+        bench.enter("indicationField", "7.913");
+        QCOMPARE(bench.readings().size(), std::size_t(14));
+        bench.table()->setFocus();
+        bench.table()->setCurrentIndex(bench.table()->readings().nextCell());
+        bench.table()->paste(QStringLiteral("5.000\t7.931\n"));
+        QVERIFY(!bench.dialog("suspectsDialog"));
+        QCOMPARE(bench.readings().size(), std::size_t(15));
+        bench.table()->setCurrentIndex(bench.table()->readings().nextCell());
+        bench.table()->paste(QStringLiteral("7.000\t70.00\n")); // an explanation is offered even so
+        QVERIFY(bench.dialog("suspectsDialog"));
+        bench.dialog("suspectsDialog")->reject();
+        bench.workbench.perform(std::make_unique<Exclude>(std::vector<ReadingId>{7, 14, 15}, ExclusionReason::Other, "wild"));
+        bench.table()->setCurrentIndex(bench.table()->readings().nextCell());
+        bench.table()->paste(QStringLiteral("5.000\t7.913\n"));
+        QVERIFY(bench.dialog("suspectsDialog"));
+        bench.dialog("suspectsDialog")->reject();
+        QCOMPARE(bench.readings().size(), std::size_t(15));
+    }
+
+    void thePanelKeepsNoEmptyLinesOnceThePlanIsDone() {
+        BenchWindow bench(test::pressureTransmitter());
+        const auto* panel = bench.find<QWidget>("nextReading");
+        const auto* field = bench.find<QWidget>("indicationField");
+        QVERIFY2(panel->height() - field->geometry().bottom() < 24, qPrintable(QString::number(panel->height() - field->geometry().bottom())));
     }
 
     /// Readings 40 to 42 of the sample, the first with a slipped decimal mark; and a reference far from its set point.
