@@ -7,15 +7,14 @@
 #include <QFrame>
 
 class QLabel;
-class QPushButton;
 class QTimer;
-class QToolButton;
 class QVBoxLayout;
 
 namespace spanwright {
 
-class ChoiceButton;
+class NextPlace;
 class NumberEdit;
+class TypedAnswer;
 
 /// What to do next: the set point in figures that can be read from the bench, direction and run in words, a field for what is read,
 /// what is expected, and a plain sentence on what was typed. A doubtful value is asked about before it is recorded.
@@ -42,17 +41,16 @@ class NextReading : public QFrame {
     void showPlace();
     void showExpected();
     void showDwell();
-    void tell(const QString& sentence, bool warning);
     void judgeTyping();
     void acceptReference();
-    void acceptIndication(bool sure);
+    void acceptIndication();
+    [[nodiscard]] bool complete();
+    void recordTyped();
     /// `answer`: what the journal says of the question before; empty when none was asked.
     void record(const Decimal& indication, const QString& answer = {});
-    bool asked(const Decimal& indication);
-    void ask(const QString& sentence, const std::optional<Decimal>& suggestion, NumberColumn column);
-    void settle();
-    void askPhase(Phase phase);
-    void choosePhase(Phase phase);
+    [[nodiscard]] bool asked();
+    void say(const TypedCheck& check);
+    void refuse(NumberEdit& field);
     [[nodiscard]] const PhaseEvaluation* figures() const;
     [[nodiscard]] std::optional<double> reference() const;
     [[nodiscard]] bool referenceTyped() const;
@@ -60,23 +58,14 @@ class NextReading : public QFrame {
     Workbench& workbench_;
     Reading next_;          ///< what the fields will become
     bool planned_ = false;  ///< next_ is asked for by the plan
-    ChoiceButton* phase_;
     QLabel* counter_;
-    QLabel* setPoint_;
-    QLabel* unit_;
-    QLabel* place_;
+    NextPlace* place_;
     NumberEdit* reference_;
     NumberEdit* indication_;
     QLabel* expected_;
-    QLabel* sentence_;
-    QToolButton* plan_;
-    QPushButton* use_;
-    QPushButton* keep_;
+    TypedAnswer* answer_;
     QLabel* dwell_;
     QTimer* clock_;
-    std::optional<Decimal> suggestion_;
-    bool asking_ = false;
-    QString question_; ///< what was asked about, for the journal
 };
 
 } // namespace spanwright

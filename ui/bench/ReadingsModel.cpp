@@ -17,32 +17,6 @@
 
 namespace spanwright {
 
-namespace {
-
-constexpr std::pair<NumberColumn, const char*> journalNames[] = {
-    {NumberColumn::SetPoint, "set point"},           {NumberColumn::Reference, "reference"},
-    {NumberColumn::Indication, "indication"},        {NumberColumn::UReference, "u of reference"},
-    {NumberColumn::UIndication, "u of indication"}, {NumberColumn::UCovariance, "covariance"}};
-
-/// "reading 17 indication" in the journal.
-std::optional<std::pair<ReadingId, NumberColumn>> placeOf(const std::string& where) {
-    const QString text = QString::fromStdString(where);
-    if (!text.startsWith(QStringLiteral("reading ")))
-        return std::nullopt;
-    const qsizetype end = text.indexOf(QLatin1Char(' '), 8);
-    for (const auto& [column, name] : journalNames)
-        if (end > 0 && text.mid(end + 1) == QLatin1String(name))
-            return std::pair(text.mid(8, end - 8).toLongLong(), column);
-    return std::nullopt;
-}
-
-QString shown(const std::string& decimal) {
-    const auto value = Decimal::parse(decimal);
-    return value ? typedText(*value) : QString::fromStdString(decimal);
-}
-
-} // namespace
-
 ReadingsModel::ReadingsModel(Workbench& workbench, QObject* parent) : QAbstractTableModel(parent), workbench_(workbench) {
     connect(&workbench_, &Workbench::recordChanged, this, &ReadingsModel::refreshRecord);
     connect(&workbench_, &Workbench::evaluationChanged, this, &ReadingsModel::refreshFigures);
@@ -59,7 +33,7 @@ void ReadingsModel::refreshRecord() {
         if (phases[i] == record.choices.phase)
             rows.push_back(static_cast<std::uint32_t>(i));
     std::vector<PlannedReading> planned = remainingPlanned(record, record.choices.phase);
-    readJournal();
+    amended_.follow(*record.journal);
     const int before = rowCount();
     const int after = static_cast<int>(rows.size() + std::max<std::size_t>(planned.size(), 1));
     const auto take = [&] {
@@ -94,21 +68,6 @@ void ReadingsModel::refreshFigures() {
     const Record& record = workbench_.record();
     residualDecimals_ = spanwright::residualDecimals({figures_, record.item, record.readings, record.exclusions, directionOf(record.choices)});
     emit dataChanged(index(0, ResidualValue), index(rowCount() - 1, State));
-}
-
-/// The journal only grows, so only its new end is read; one that does not continue the last belongs to another record.
-void ReadingsModel::readJournal() {
-    const auto& entries = workbench_.record().journal->entries();
-    if (entries.size() < journalRead_ || (journalRead_ > 0 && entries[journalRead_ - 1] != lastRead_)) {
-        amended_.clear();
-        journalRead_ = 0;
-    }
-    for (; journalRead_ < entries.size(); ++journalRead_)
-        if (entries[journalRead_].what == "value-amended")
-            if (const auto place = placeOf(entries[journalRead_].where))
-                amended_.insert(*place);
-    if (journalRead_ > 0)
-        lastRead_ = entries[journalRead_ - 1];
 }
 
 int ReadingsModel::rowCount(const QModelIndex& parent) const {
@@ -240,9 +199,8 @@ QString ReadingsModel::stateText(int row) const {
         return tr("excluded");
     if (!record.readings->complete(recordRow(row)))
         return tr("incomplete");
-    for (const auto& [column, name] : journalNames)
-        if (amended_.contains({id, column}))
-            return tr("amended");
+    if (amended_.contains(id))
+        return tr("amended");
     return hurriedText(row).isEmpty() ? QString() : tr("early");
 }
 
@@ -259,21 +217,8 @@ QString ReadingsModel::hurriedText(int row) const {
 QString ReadingsModel::history(int row, int column) const {
     const auto number = numberColumn(column);
     const auto id = idAt(row);
-    if (!number || !id || !amended_.contains({*id, *number}))
-        return {};
-    QStringList lines;
-    for (const JournalEntry& entry : workbench_.record().journal->entries()) {
-        if (placeOf(entry.where) != std::pair(*id, *number))
-            continue;
-        const QString when = QLocale().toString(QDateTime::fromMSecsSinceEpoch(entry.at), QLocale::ShortFormat);
-        QString line = tr("%1 → %2, %3 %4").arg(shown(entry.before), shown(entry.after), QString::fromStdString(entry.who), when);
-        if (!entry.reason.empty())
-            line += QStringLiteral(": ") + QString::fromStdString(entry.reason);
-        if (entry.what != "value-amended" && entry.what != "value-entered")
-            line += QStringLiteral(" (") + QString::fromStdString(entry.what) + QLatin1Char(')');
-        lines << line.simplified();
-    }
-    return lines.join(QLatin1Char('\n'));
+    const bool amended = number && id && amended_.contains(*id, *number);
+    return amended ? AmendedValues::history(*workbench_.record().journal, *id, *number) : QString();
 }
 
 QString ReadingsModel::tip(int row, int column) const {
@@ -319,7 +264,7 @@ QVariant ReadingsModel::data(const QModelIndex& index, int role) const {
     case ExcludedRole: return id && workbench_.record().exclusions->contains(*id);
     case AmendedRole: {
         const auto number = numberColumn(column);
-        return id && number && amended_.contains({*id, *number});
+        return id && number && amended_.contains(*id, *number);
     }
     case PlannedRole: return !id;
     case HurriedRole: return !hurriedText(row).isEmpty();

@@ -1,13 +1,12 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include "ui/bench/AmendedValues.h"
 #include "ui/commands/Workbench.h"
 
 #include <QAbstractTableModel>
 
-#include <map>
 #include <optional>
-#include <set>
 #include <vector>
 
 namespace spanwright {
@@ -73,7 +72,6 @@ class ReadingsModel : public QAbstractTableModel {
     [[nodiscard]] QString tip(int row, int column) const;
     [[nodiscard]] double residual(ReadingId id) const;
     [[nodiscard]] int missingDigits(int row, int column) const;
-    void readJournal();
 
     Workbench& workbench_;
     Phase phase_ = Phase::AsFound;
@@ -81,9 +79,7 @@ class ReadingsModel : public QAbstractTableModel {
     std::vector<PlannedReading> planned_;
     std::shared_ptr<const PhaseEvaluation> figures_;
     int residualDecimals_ = 4;
-    std::set<std::pair<ReadingId, NumberColumn>> amended_;
-    std::size_t journalRead_ = 0;
-    JournalEntry lastRead_;
+    AmendedValues amended_;
 };
 
 } // namespace spanwright

@@ -3,6 +3,7 @@
 
 #include "ui/bench/NumberEdit.h"
 #include "ui/bench/PastedBlock.h"
+#include "ui/bench/PastedReadings.h"
 #include "ui/bench/ReadingsDelegate.h"
 #include "ui/bench/ReasonDialog.h"
 #include "ui/bench/Suspects.h"
@@ -26,7 +27,7 @@
 namespace spanwright {
 
 ReadingsTable::ReadingsTable(Workbench& workbench, QWidget* parent)
-    : QTableView(parent), workbench_(workbench), model_(new ReadingsModel(workbench, this)), delegate_(new ReadingsDelegate(this)),
+    : QTableView(parent), workbench_(workbench), model_(new ReadingsModel(workbench, this)), columns_(*this, *model_), delegate_(new ReadingsDelegate(this)),
       words_(new QLabel(viewport())) {
     setObjectName(QStringLiteral("readingsTable"));
     setAccessibleName(tr("Readings"));
@@ -69,16 +70,16 @@ ReadingsTable::ReadingsTable(Workbench& workbench, QWidget* parent)
         connect(editor, &QObject::destroyed, words_, &QWidget::hide);
     });
     connect(&workbench_, &Workbench::selectionChanged, this, &ReadingsTable::showSelection);
-    connect(model_, &QAbstractItemModel::headerDataChanged, this, &ReadingsTable::measureColumns);
-    connect(&workbench_, &Workbench::evaluationChanged, this, &ReadingsTable::measureColumns);
-    connect(model_, &QAbstractItemModel::modelReset, this, &ReadingsTable::measureColumns);
+    connect(model_, &QAbstractItemModel::headerDataChanged, this, [this] { columns_.measure(); });
+    connect(&workbench_, &Workbench::evaluationChanged, this, [this] { columns_.measure(); });
+    connect(model_, &QAbstractItemModel::modelReset, this, [this] { columns_.measure(); });
     // While nobody works in the table it follows what is taken.
     connect(&workbench_, &Workbench::recordChanged, this, [this, last = model_->taken()]() mutable {
         if (last != model_->taken() && !hasFocus() && !isAncestorOf(QApplication::focusWidget()))
             scrollTo(model_->nextCell());
         last = model_->taken();
     });
-    measureColumns();
+    columns_.measure();
 }
 
 QString ReadingsTable::refusal() const {
@@ -183,39 +184,14 @@ void ReadingsTable::amend(ReadingId id, NumberColumn column, const Decimal& befo
 void ReadingsTable::paste(const QString& text) {
     if (workbench_.readOnly() || text.trimmed().isEmpty())
         return;
-    const PastedBlock block = readPasted(text);
     const QModelIndex start = currentIndex().isValid() ? currentIndex() : model_->nextCell();
-    if (!block.refused.empty()) {
-        QStringList lines;
-        for (const PastedBlock::Refused& cell : block.refused) {
-            if (lines.size() == 4) {
-                lines << tr("… and %1 more.").arg(block.refused.size() - 4);
-                break;
-            }
-            lines << tr("Line %1, cell %2: %3").arg(cell.row).arg(cell.column).arg(errorText(cell.error));
-        }
-        say(tr("Nothing was pasted.") + QLatin1Char('\n') + lines.join(QLatin1Char('\n')), visualRect(start));
+    PastedReadings pasted = pastedReadings(readPasted(text), *model_, columns_, start);
+    if (!pasted.refusal.isEmpty()) {
+        say(pasted.refusal, visualRect(start));
         return;
     }
-    const int first = ReadingsModel::numberColumn(start.column()) ? start.column() : static_cast<int>(ReadingsModel::ReferenceValue);
-    if (first + block.width() - 1 > lastTyped(start.row() + static_cast<int>(block.rows.size()))) {
-        say(tr("Nothing was pasted. The block is %1 columns wide and does not fit from here: start at an earlier column.").arg(block.width()), visualRect(start));
-        return;
-    }
-    std::vector<Reading> rows;
-    for (std::size_t i = 0; i < block.rows.size(); ++i) {
-        const int row = start.row() + static_cast<int>(i);
-        Reading reading = model_->readingAt(row);
-        for (int c = 0; c < block.width(); ++c) {
-            const Decimal& value = block.rows[i][static_cast<std::size_t>(c)];
-            numberOf(reading, *ReadingsModel::numberColumn(first + c)) = value;
-        }
-        rows.push_back(std::move(reading));
-    }
-    std::set<NumberColumn> columns;
-    for (int c = 0; c < block.width(); ++c)
-        columns.insert(*ReadingsModel::numberColumn(first + c));
-    recordAsked(workbench_, {tr("paste readings"), std::move(rows), std::move(columns), tr("pasted").toStdString()}, this, [this] { setFocus(); }, [this] { setFocus(); });
+    const auto back = [this] { setFocus(); };
+    recordAsked(workbench_, {tr("paste readings"), std::move(pasted.rows), std::move(pasted.columns), tr("pasted").toStdString()}, this, back, back);
 }
 
 QString ReadingsTable::selectedText() const {
@@ -289,81 +265,13 @@ void ReadingsTable::contextMenuEvent(QContextMenuEvent* event) {
     menu->addSeparator();
     QAction* stated = menu->addAction(tr("Columns of stated uncertainties"), this, &ReadingsTable::showStated);
     stated->setCheckable(true);
-    stated->setChecked(!isColumnHidden(ReadingsModel::Covariance));
+    stated->setChecked(columns_.statedShown());
     menu->popup(event->globalPos());
-}
-
-/// What a column of numbers needs: its head, and its texts at both ends of the table, where the widest mostly are.
-int ReadingsTable::widthOfNumbers(int column) const {
-    constexpr int Looked = 60;
-    const QFontMetrics body(textFont(TextRole::Body)), small(textFont(TextRole::Small));
-    int widest = body.horizontalAdvance(QStringLiteral("000000"));
-    for (const QString& line : model_->headerData(column, Qt::Horizontal, Qt::DisplayRole).toString().split(QLatin1Char('\n')))
-        widest = std::max(widest, small.horizontalAdvance(line));
-    const int rows = model_->rowCount();
-    for (int row = 0; row < rows; row = row + 1 == Looked ? std::max(Looked, rows - Looked) : row + 1)
-        widest = std::max(widest, body.horizontalAdvance(model_->index(row, column).data().toString()));
-    return widest + 14;
-}
-
-void ReadingsTable::measureColumns() {
-    for (const int column : {ReadingsModel::SetPoint, ReadingsModel::ReferenceValue, ReadingsModel::IndicationValue, ReadingsModel::ResidualValue})
-        needed_[column] = widthOfNumbers(column);
-    for (const ReadingsModel::Column column : ReadingsModel::statedColumns) {
-        const bool shown = statedShown_ || model_->isStated(column);
-        setColumnHidden(column, !shown);
-        needed_[column] = shown ? widthOfNumbers(column) : 0;
-    }
-    fitColumns();
-}
-
-/// The last column that a block of values may reach which ends before `row`: what is not shown is not pasted into.
-int ReadingsTable::lastTyped(int row) const {
-    int last = ReadingsModel::IndicationValue;
-    for (const int column : ReadingsModel::statedColumns)
-        if (!isColumnHidden(column) && row <= model_->taken())
-            last = column;
-    return last;
-}
-
-void ReadingsTable::showStated(bool shown) {
-    statedShown_ = shown;
-    measureColumns();
-}
-
-/// The column of the set point and that of the state give way where the table is narrow; where even the rest does not fit, the
-/// table is moved sideways.
-void ReadingsTable::fitColumns() {
-    const int digit = QFontMetrics(textFont(TextRole::Body)).horizontalAdvance(QLatin1Char('0'));
-    const int number = digit * 3 + 14, run = digit * 2 + 18, mark = 22, state = digit * 8 + 16;
-    const int setPoint = needed_[ReadingsModel::SetPoint] + 14;
-    constexpr int numbers[] = {ReadingsModel::ReferenceValue, ReadingsModel::IndicationValue, ReadingsModel::ResidualValue};
-    int least = number + run + mark;
-    for (const int column : numbers)
-        least += needed_[column];
-    for (const int column : ReadingsModel::statedColumns) {
-        setColumnWidth(column, needed_[column]);
-        least += needed_[column];
-    }
-    const int room = viewport()->width();
-    const bool withSetPoint = room >= least + setPoint;
-    const bool withState = room >= least + setPoint + state;
-    setColumnHidden(ReadingsModel::SetPoint, !withSetPoint);
-    setColumnHidden(ReadingsModel::State, !withState);
-    const int spare = std::max(0, room - least - (withSetPoint ? setPoint : 0) - (withState ? state : 0));
-    const int parts = 3 + (withSetPoint ? 1 : 0);
-    setColumnWidth(ReadingsModel::Number, number);
-    setColumnWidth(ReadingsModel::Run, run);
-    setColumnWidth(ReadingsModel::DirectionMark, mark);
-    setColumnWidth(ReadingsModel::SetPoint, setPoint + spare / parts);
-    for (const int column : numbers)
-        setColumnWidth(column, needed_[column] + spare / parts);
-    setColumnWidth(ReadingsModel::State, state);
 }
 
 void ReadingsTable::resizeEvent(QResizeEvent* event) {
     QTableView::resizeEvent(event);
-    fitColumns();
+    columns_.fit();
 }
 
 void ReadingsTable::scrollContentsBy(int dx, int dy) {

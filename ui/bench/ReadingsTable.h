@@ -1,12 +1,12 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include "ui/bench/ReadingsColumns.h"
 #include "ui/bench/ReadingsModel.h"
 
 #include <QTableView>
 
 #include <functional>
-#include <map>
 
 class QLabel;
 
@@ -31,7 +31,7 @@ class ReadingsTable : public QTableView {
     [[nodiscard]] QString refusal() const;
     void paste(const QString& text);
     /// Columns of stated uncertainties, to type in what no reading has yet.
-    void showStated(bool shown);
+    void showStated(bool shown) { columns_.showStated(shown); }
     /// The selected rows as text for a spreadsheet.
     [[nodiscard]] QString selectedText() const;
 
@@ -56,18 +56,13 @@ class ReadingsTable : public QTableView {
     void say(const QString& words, const QRect& under);
     void silence();
     void showSelection();
-    [[nodiscard]] int widthOfNumbers(int column) const;
-    void measureColumns();
-    void fitColumns();
-    [[nodiscard]] int lastTyped(int row) const;
     void place(const std::function<void(Place&)>& edit);
 
     Workbench& workbench_;
     ReadingsModel* model_;
-    std::map<int, int> needed_; ///< by column of numbers, px
+    ReadingsColumns columns_;
     ReadingsDelegate* delegate_;
     QLabel* words_;
-    bool statedShown_ = false; ///< columns of stated uncertainties were asked for
     bool following_ = false; ///< the selection is being taken over from the workbench
 };
 
