@@ -1,26 +1,21 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include "core/diagnose/Finding.h"
 #include "ui/commands/Workbench.h"
-#include "ui/plot/PlotSubject.h"
-#include "ui/plot/ResidualView.h"
 
 #include <QWidget>
 
-class QLabel;
-class QSplitter;
-class QToolButton;
+class QAction;
 
 namespace spanwright {
 
 class Card;
-class ChoiceButton;
-class FindingsView;
-class LinePlot;
+class LineCard;
 class NextReading;
 class ReadingsTable;
-class ResidualPlot;
-class SplitPicture;
+class ResidualsCard;
+class SplitCard;
 
 /// The bench: what to do next and the readings on the left; the line above, the residuals under it with the same horizontal axis;
 /// what the spread is made of, and what it means, on the right. Its actions() belong into menus and the finder of commands.
@@ -48,36 +43,23 @@ class BenchPage : public QWidget {
     void refreshWords();
     void showSelection();
     void showPart(std::optional<SplitPart> part);
-    void setView(ResidualView view);
     void exclude();
     void readmit();
     void follow(const Finding& finding);
     void carryToBudget(std::optional<DerivedLine> line);
-    void dismiss(const Finding& finding);
-    void recall(const Finding& finding);
     void showExclusions();
     void showPerformance();
-    QToolButton* cardLink(const QString& name, const QString& text, void (BenchPage::*what)());
     void showSplitTable();
     void showDegrees();
-    [[nodiscard]] PlotSubject subject() const;
 
     Workbench& workbench_;
     NextReading* next_;
     ReadingsTable* table_;
-    LinePlot* line_;
-    ResidualPlot* residual_;
-    SplitPicture* split_;
-    FindingsView* findings_;
     Card* readingsCard_;
-    Card* lineCard_;
-    Card* splitCard_;
-    Card* findingsCard_;
-    ChoiceButton* viewButton_;
-    ChoiceButton* functionButton_;
-    ChoiceButton* weightsButton_;
-    QLabel* equation_;
-    QLabel* unknown_;
+    LineCard* line_;
+    ResidualsCard* residuals_;
+    SplitCard* split_;
+    QAction* degrees_;
 };
 
 } // namespace spanwright

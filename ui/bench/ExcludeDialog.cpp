@@ -54,7 +54,7 @@ ExcludeDialog::ExcludeDialog(Workbench& workbench, std::vector<ReadingId> ids, Q
     : SheetDialog(QStringLiteral("excludeDialog"), tr("Exclude %1").arg(readingsText(ids.size())), parent), workbench_(workbench), ids_(std::move(ids)), effect_(new EffectTable), trial_(new TrialEvaluation(this)) {
     setMinimumWidth(480);
     const Record& record = workbench_.record();
-    const PlotSubject subject{phaseOf(workbench_.evaluation(), record.choices.phase), record.item, record.readings, record.exclusions, directionOf(record.choices)};
+    const PlotSubject subject = subjectOf(record, workbench_.evaluation());
     QStringList lines;
     for (const ReadingId id : ids_) {
         if (lines.size() == 4 && ids_.size() > 5) {

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/plot/PlotSubject.h"
 
+#include "core/fit/fitFunction.h"
 #include "ui/look/NumberText.h"
 #include "ui/words/Words.h"
 
@@ -38,6 +39,10 @@ std::shared_ptr<const PhaseEvaluation> phaseOf(const std::shared_ptr<const Evalu
     if (!evaluation || !evaluation->phase(phase))
         return nullptr;
     return {evaluation, evaluation->phase(phase)};
+}
+
+PlotSubject subjectOf(const Record& record, const std::shared_ptr<const Evaluation>& evaluation) {
+    return {phaseOf(evaluation, record.choices.phase), record.item, record.readings, record.exclusions, directionOf(record.choices)};
 }
 
 PlotPoints pointsOf(const PhaseEvaluation& phase) {

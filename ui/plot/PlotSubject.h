@@ -30,6 +30,9 @@ struct PlotSubject {
 /// The evaluation of one phase of a snapshot, which it keeps alive.
 std::shared_ptr<const PhaseEvaluation> phaseOf(const std::shared_ptr<const Evaluation>& evaluation, Phase phase);
 
+/// The phase that is shown, of a snapshot.
+PlotSubject subjectOf(const Record& record, const std::shared_ptr<const Evaluation>& evaluation);
+
 /// Ids, directions and exclusions of every reading; the places are for the plot to fill.
 PlotPoints pointsOf(const PhaseEvaluation& phase);
 
