@@ -2,11 +2,13 @@
 #include "ui/plot/PlotInk.h"
 
 #include "ui/look/Look.h"
+#include "ui/plot/LabelPlaces.h"
 
 #include <QFontMetricsF>
 #include <QPainter>
 
 #include <algorithm>
+#include <utility>
 
 namespace spanwright {
 
@@ -17,6 +19,7 @@ PlotInk::PlotInk(QGraphicsItem* parent) : QGraphicsObject(parent) {
 void PlotInk::setFrame(const PlotFrame& frame) {
     prepareGeometryChange();
     frame_ = frame;
+    placed_ = false;
 }
 
 void PlotInk::setAxes(Axes axes) {
@@ -26,12 +29,22 @@ void PlotInk::setAxes(Axes axes) {
 
 void PlotInk::setStrokes(std::vector<PlotStroke> strokes) {
     strokes_ = std::move(strokes);
+    marksMoved();
+}
+
+void PlotInk::setMarks(std::function<std::vector<QPointF>()> marks) {
+    marks_ = std::move(marks);
+    marksMoved();
+}
+
+void PlotInk::marksMoved() {
+    placed_ = false;
     update();
 }
 
 void PlotInk::setNotes(std::vector<PlotNote> notes) {
     notes_ = std::move(notes);
-    update();
+    marksMoved();
 }
 
 void PlotInk::setEmptyText(const QString& text) {
@@ -64,8 +77,9 @@ void PlotInk::paint(QPainter* painter, const QStyleOptionGraphicsItem*, QWidget*
     paintNumbers(*painter);
     for (const PlotStroke& stroke : strokes_)
         paintStroke(*painter, stroke);
-    for (const PlotStroke& stroke : strokes_) // over every line, so that none runs through words
-        paintLabel(*painter, stroke);
+    const std::vector<QRectF>& places = labels();
+    for (std::size_t i = 0; i < strokes_.size(); ++i) // over every line, so that none runs through words
+        paintLabel(*painter, strokes_[i], places[i]);
     paintNotes(*painter);
 }
 
@@ -95,9 +109,7 @@ void PlotInk::paintNumbers(QPainter& painter) const {
 void PlotInk::paintStroke(QPainter& painter, const PlotStroke& stroke) const {
     if (stroke.points.empty())
         return;
-    QPolygonF line;
-    for (const QPointF& value : stroke.points)
-        line << frame_.toPoint(value);
+    const QPolygonF line = lineOf(stroke);
     painter.save();
     painter.setClipRect(frame_.area.adjusted(-4, -4, 4, 4));
     painter.setPen(QPen(stroke.color, stroke.width, stroke.style, Qt::FlatCap, Qt::RoundJoin));
@@ -112,24 +124,44 @@ void PlotInk::paintStroke(QPainter& painter, const PlotStroke& stroke) const {
     painter.restore();
 }
 
-void PlotInk::paintLabel(QPainter& painter, const PlotStroke& stroke) const {
-    if (stroke.label.isEmpty() || stroke.points.empty())
-        return;
-    const QFontMetricsF metrics(painter.font());
-    const QSizeF size(metrics.horizontalAdvance(stroke.label) + 4, metrics.height());
-    QPointF at = frame_.toPoint(stroke.points.back()) + stroke.labelOffset - QPointF(0, size.height() / 2);
-    at.setX(std::clamp(at.x(), frame_.area.left(), std::max(frame_.area.left(), frame_.area.right() - size.width())));
-    at.setY(std::clamp(at.y(), frame_.area.top(), frame_.area.bottom() - size.height()));
-    QColor ground = scheme().card;
-    ground.setAlphaF(0.82F);
-    painter.fillRect(QRectF(at, size), ground);
-    painter.setPen(stroke.color);
-    painter.drawText(QRectF(at, size), Qt::AlignCenter, stroke.label);
+QPolygonF PlotInk::lineOf(const PlotStroke& stroke) const {
+    QPolygonF line;
+    for (const QPointF& value : stroke.points)
+        line << frame_.toPoint(value);
+    return line;
 }
 
-/// Notes of one corner stand below each other; each on a ground of the card's colour, so that marks do not run through words.
-void PlotInk::paintNotes(QPainter& painter) const {
-    const QFontMetricsF metrics(painter.font());
+const std::vector<QRectF>& PlotInk::labels() const {
+    if (std::exchange(placed_, true))
+        return labels_;
+    const QFontMetricsF metrics(textFont(TextRole::Small));
+    std::vector<LabelWish> wishes;
+    for (const PlotStroke& stroke : strokes_) {
+        LabelWish wish{.size = {}, .line = lineOf(stroke), .corner = {}};
+        if (!stroke.label.isEmpty() && !wish.line.isEmpty()) {
+            wish.size = {metrics.horizontalAdvance(stroke.label) + 4, metrics.height()};
+            wish.corner = wish.line.last() + stroke.labelOffset - QPointF(0, wish.size.height() / 2);
+        }
+        wishes.push_back(std::move(wish));
+    }
+    labels_ = placeLabels(wishes, frame_.area, {marks_ ? marks_() : std::vector<QPointF>{}, notePlaces()});
+    return labels_;
+}
+
+void PlotInk::paintLabel(QPainter& painter, const PlotStroke& stroke, const QRectF& place) const {
+    if (place.isNull())
+        return;
+    QColor ground = scheme().card;
+    ground.setAlphaF(0.82F);
+    painter.fillRect(place, ground);
+    painter.setPen(stroke.color);
+    painter.drawText(place, Qt::AlignCenter, stroke.label);
+}
+
+/// Notes of one corner stand below each other.
+std::vector<QRectF> PlotInk::notePlaces() const {
+    const QFontMetricsF metrics(textFont(TextRole::Small));
+    std::vector<QRectF> places;
     double topUsed = 0, bottomUsed = 0;
     for (const PlotNote& note : notes_) {
         const double widest = frame_.area.width() - 12;
@@ -140,11 +172,20 @@ void PlotInk::paintNotes(QPainter& painter) const {
         const QPointF corner(right ? frame_.area.right() - size.width() - 2 : frame_.area.left() + 6,
                              bottom ? frame_.area.bottom() - size.height() - 4 - used : frame_.area.top() + 4 + used);
         used += size.height();
-        QColor ground = scheme().card;
-        ground.setAlphaF(0.82F);
-        painter.fillRect(QRectF(corner, size), ground);
-        painter.setPen(note.strong ? scheme().ink : scheme().quiet);
-        painter.drawText(QRectF(corner, size).adjusted(3, 0, -3, 0), Qt::AlignVCenter | Qt::AlignLeft | Qt::TextWordWrap, note.text);
+        places.emplace_back(corner, size);
+    }
+    return places;
+}
+
+/// Each on a ground of the card's colour, so that marks do not run through words.
+void PlotInk::paintNotes(QPainter& painter) const {
+    const std::vector<QRectF> places = notePlaces();
+    QColor ground = scheme().card;
+    ground.setAlphaF(0.82F);
+    for (std::size_t i = 0; i < notes_.size(); ++i) {
+        painter.fillRect(places[i], ground);
+        painter.setPen(notes_[i].strong ? scheme().ink : scheme().quiet);
+        painter.drawText(places[i].adjusted(3, 0, -3, 0), Qt::AlignVCenter | Qt::AlignLeft | Qt::TextWordWrap, notes_[i].text);
     }
 }
 

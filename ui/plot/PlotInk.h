@@ -6,6 +6,7 @@
 #include <QColor>
 #include <QGraphicsObject>
 
+#include <functional>
 #include <vector>
 
 namespace spanwright {
@@ -46,10 +47,15 @@ class PlotInk : public QGraphicsObject {
     void setAxes(Axes axes);
     void setStrokes(std::vector<PlotStroke> strokes);
     void setNotes(std::vector<PlotNote> notes);
+    /// Where the marks stand that words of strokes keep clear of; asked for again when `marksMoved` says so.
+    void setMarks(std::function<std::vector<QPointF>()> marks);
+    void marksMoved();
     /// Words in the middle of a plot that has nothing to show.
     void setEmptyText(const QString& text);
 
     [[nodiscard]] const std::vector<PlotStroke>& strokes() const { return strokes_; }
+    /// The rectangles of the words of the strokes; null where there are none.
+    [[nodiscard]] const std::vector<QRectF>& labels() const;
     [[nodiscard]] const std::vector<PlotNote>& notes() const { return notes_; }
     [[nodiscard]] const QString& emptyText() const { return emptyText_; }
     /// Width that the numbers at the vertical axis need.
@@ -61,7 +67,9 @@ class PlotInk : public QGraphicsObject {
   private:
     void paintNumbers(QPainter& painter) const;
     void paintStroke(QPainter& painter, const PlotStroke& stroke) const;
-    void paintLabel(QPainter& painter, const PlotStroke& stroke) const;
+    void paintLabel(QPainter& painter, const PlotStroke& stroke, const QRectF& place) const;
+    [[nodiscard]] std::vector<QRectF> notePlaces() const;
+    [[nodiscard]] QPolygonF lineOf(const PlotStroke& stroke) const;
     void paintNotes(QPainter& painter) const;
 
     PlotFrame frame_;
@@ -69,6 +77,9 @@ class PlotInk : public QGraphicsObject {
     std::vector<PlotStroke> strokes_;
     std::vector<PlotNote> notes_;
     QString emptyText_;
+    std::function<std::vector<QPointF>()> marks_;
+    mutable std::vector<QRectF> labels_; ///< found when they are first asked for
+    mutable bool placed_ = false;
 };
 
 } // namespace spanwright

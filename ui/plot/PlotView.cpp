@@ -65,7 +65,18 @@ PlotView::PlotView(QWidget* parent)
     setHorizontalScrollBarPolicy(Qt::ScrollBarAlwaysOff);
     setVerticalScrollBarPolicy(Qt::ScrollBarAlwaysOff);
     rubber_->hide();
+    ink_->setMarks([this] { return marks(); });
     restyle();
+}
+
+/// Where the marks stand; of very many, some that are spread over all of them.
+std::vector<QPointF> PlotView::marks() const {
+    constexpr std::size_t enough = 2000;
+    std::vector<QPointF> places;
+    const std::size_t step = points().size() / enough + 1;
+    for (std::size_t row = 0; row < points().size(); row += step)
+        places.push_back(cloud_->place(row));
+    return places;
 }
 
 void PlotView::setContent(Content content) {
@@ -91,6 +102,7 @@ void PlotView::setContent(Content content) {
     line_->setVisible(!content_.line.empty());
     cloud_->setPoints(empty ? PlotPoints{} : std::move(content_.points));
     content_.points = {};
+    ink_->marksMoved();
     ink_->setEmptyText(content_.emptyText);
 }
 

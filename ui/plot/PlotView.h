@@ -90,6 +90,7 @@ class PlotView : public QChartView {
 
   private:
     void restyle();
+    [[nodiscard]] std::vector<QPointF> marks() const;
     void layOut();
     void showRange(const AxisRange& x, const AxisRange& y);
     void zoom(double factor, const QPointF& about);

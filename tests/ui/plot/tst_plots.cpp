@@ -262,6 +262,30 @@ class PlotsTest : public QObject {
         QCOMPARE(plot.ink().strokes().size(), bare);
     }
 
+    void wordsOfLinesStandClearOfMarks() {
+        const PlotSubject subject = subjectOf(test::pressureTransmitter());
+        for (const QSize size : {QSize(420, 220), QSize(640, 260), QSize(1400, 520)}) {
+            ResidualPlot plot;
+            plot.setSubject(subject);
+            shown(plot);
+            plot.resize(size);
+            for (const SplitPart part : {SplitPart::LackOfFit, SplitPart::Hysteresis, SplitPart::RunOffset, SplitPart::RunSlope, SplitPart::Repeatability}) {
+                plot.showPart(part);
+                const std::vector<QRectF>& labels = plot.ink().labels();
+                QCOMPARE(labels.size(), plot.ink().strokes().size());
+                for (std::size_t i = 0; i < labels.size(); ++i) {
+                    QVERIFY(labels[i].isNull() == plot.ink().strokes()[i].label.isEmpty());
+                    for (std::size_t j = 0; j < i; ++j)
+                        QVERIFY2(!labels[i].intersects(labels[j]), qPrintable(plot.ink().strokes()[i].label));
+                    int covered = 0;
+                    for (const ReadingId id : plot.points().ids)
+                        covered += labels[i].contains(plot.placeOf(id));
+                    QVERIFY2(covered <= (size.width() < 500 ? 1 : 0), qPrintable(QString("%1 at %2: %3").arg(plot.ink().strokes()[i].label).arg(size.width()).arg(covered)));
+                }
+            }
+        }
+    }
+
     void everyViewOfTheResidualsHasAPlaceForEachReading() {
         const PlotSubject subject = subjectOf(test::pressureTransmitter());
         ResidualPlot plot;
