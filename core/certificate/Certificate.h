@@ -86,7 +86,8 @@ struct SplitTableLine {
     int level = 0; ///< how far it is indented
     Digits sumOfSquares, meanSquare, f, p;
     int degreesOfFreedom = 0;
-    std::optional<double> share; ///< of the total; not for a second test
+    std::optional<double> share;      ///< of the total; not for a second test
+    std::optional<double> noiseShare; ///< of what the function does not explain; for its parts
 };
 
 /// The variance split as it is printed.

@@ -249,7 +249,7 @@ class Document {
         x_.open("dcc:quantity", *refType == '\0' ? XmlWriter::Attributes{} : XmlWriter::Attributes{{"refType", refType}});
         words("dcc:name", name);
         x_.open("si:realListXMLList").leaf("si:valueXMLList", list).leaf("si:unitXMLList", written.name);
-        if (!uncertainty.expanded.empty())
+        if (!joined(uncertainty.expanded).empty())
             x_.open("si:measurementUncertaintyUnivariateXMLList")
                 .open("si:expandedMUXMLList")
                 .leaf("si:valueExpandedMUXMLList", joined(uncertainty.expanded, written.exponent))

@@ -119,7 +119,10 @@ std::optional<FunctionSection> functionSection(const PhaseEvaluation& phase) {
     section.direction = fit.direction;
     section.method = fit.method;
     section.weights = fit.weights;
-    const double expanded = smallestExpanded(phase);
+    section.weighted = fit.weights != Weights::Equal || fit.method == Method::BothUncertain;
+    const double stated = smallestExpanded(phase);
+    // Without a stated uncertainty the digits follow from the scatter.
+    const double expanded = std::isfinite(stated) || !(fit.residualSd > 0) || section.weighted ? stated : fit.residualSd;
     const std::vector<Digits> texts = coefficientTexts(fit, expanded * ShareOfU);
     for (std::size_t i = 0; i < fit.coefficients.size(); ++i) {
         const Coefficient& coefficient = fit.coefficients[i];
@@ -130,10 +133,9 @@ std::optional<FunctionSection> functionSection(const PhaseEvaluation& phase) {
     section.high = roundedText(fit.high, rangeDecimals);
     section.residualSd = significantDigits(fit.residualSd, 2);
     section.degreesOfFreedom = fit.degreesOfFreedom;
-    section.weighted = fit.weights != Weights::Equal || fit.method == Method::BothUncertain;
     section.largestResidual = roundedText(largestResidual(phase.rows), std::isfinite(expanded) ? decimalsFor(expanded, 2) : 6);
     addChecks(fit, expanded, section);
-    if (phase.budget.readBack) {
+    if (phase.budget.readBack && phase.budget.readBack->expandedReference > 0) {
         section.readBackExpanded = roundUncertainty(phase.budget.readBack->expandedReference).text;
         section.readBackFactor = roundedText(phase.budget.readBack->coverageFactor, 2);
     }

@@ -14,7 +14,7 @@ namespace spanwright {
 
 namespace {
 
-constexpr int FactorDecimals = 2;
+constexpr int FactorDecimals = 2, PercentDecimals = 3;
 
 enum class ErrorKnown { No, Yes };
 
@@ -30,10 +30,21 @@ Digits percentText(double probability) {
     return roundedText(100 * probability, 1);
 }
 
-/// Decimals below which references and indications are not rounded.
+/// Decimals below which references and indications are not rounded, those of the set points, and those of the readings, for where U is
+/// not known.
 struct LeastDecimals {
     int reference = 0, indication = std::numeric_limits<int>::min();
+    int place = 0, read = 0;
 };
+
+/// Decimals that a column of places needs: 5, 10 and 2.4995 are 5.0000, 10.0000 and 2.4995.
+int placeDecimals(const Record& record, const std::vector<PointResult>& points) {
+    const int most = std::max(record.readings->setPoint().scale(), record.readings->reference().scale());
+    int decimals = 0;
+    for (const PointResult& point : points)
+        decimals = std::max(decimals, decimalsIn(shortText(std::stod(roundedText(point.setPoint, most)))));
+    return decimals;
+}
 
 /// What tells neighbouring set points apart, and the digits of the set points as typed: where U is wider than that, rounding to
 /// the place of U would print different points as the same number.
@@ -44,6 +55,8 @@ LeastDecimals leastDecimals(const Record& record, const std::vector<PointResult>
         at.emplace_back(point.reference, point.indication);
     std::sort(at.begin(), at.end());
     LeastDecimals least;
+    least.place = placeDecimals(record, points);
+    least.read = record.readings->indication().scale();
     for (const Decimal& planned : record.plan.setPoints)
         least.reference = std::max(least.reference, planned.decimals);
     double gap = INFINITY;
@@ -62,24 +75,27 @@ LeastDecimals leastDecimals(const Record& record, const std::vector<PointResult>
 
 ResultLine resultLine(const PointResult& point, const LeastDecimals& least) {
     ResultLine line;
-    line.setPoint = shortText(point.setPoint);
+    line.setPoint = roundedText(point.setPoint, least.place);
     line.direction = point.direction;
     line.n = point.n;
     const RoundedUncertainty u = roundUncertainty(point.expanded);
     const RoundedUncertainty uReference = roundUncertainty(point.expandedReference);
     const RoundedUncertainty uPercent = roundUncertainty(point.expandedPercentOfSpan);
-    line.expanded = u.text;
-    line.expandedReference = uReference.text;
-    line.expandedPercent = uPercent.text;
+    const bool known = point.expanded > 0;
+    if (known) {
+        line.expanded = u.text;
+        line.expandedReference = uReference.text;
+        line.expandedPercent = uPercent.text;
+        line.coverageFactor = roundedText(point.coverageFactor, FactorDecimals);
+    }
     line.reference = roundedText(point.reference, std::max(uReference.decimals, least.reference));
-    const int shown = std::max(u.decimals, least.indication);
+    const int places = known ? u.decimals : least.read, shown = std::max(places, least.indication);
     line.indication = roundedText(point.indication, shown);
     line.rising = optionalText(point.rising, shown);
     line.falling = optionalText(point.falling, shown);
-    line.error = roundedText(point.error, u.decimals);
-    line.errorPercent = roundedText(point.errorPercentOfSpan, uPercent.decimals);
-    line.coverageFactor = roundedText(point.coverageFactor, FactorDecimals);
-    line.limit = optionalText(point.limit, u.decimals);
+    line.error = roundedText(point.error, places);
+    line.errorPercent = roundedText(point.errorPercentOfSpan, known ? uPercent.decimals : PercentDecimals);
+    line.limit = optionalText(point.limit, places);
     if (point.acceptance && *point.acceptance >= 0)
         line.acceptance = roundedText(*point.acceptance, u.decimals);
     line.state = point.state;
@@ -118,9 +134,9 @@ BudgetRow budgetRow(const BudgetItem& item, int decimals) {
     return row;
 }
 
-BudgetSection budgetSection(const SetPointBudget& budget) {
+BudgetSection budgetSection(const SetPointBudget& budget, int place) {
     BudgetSection section;
-    section.setPoint = shortText(budget.setPoint);
+    section.setPoint = roundedText(budget.setPoint, place);
     section.direction = budget.direction;
     const int decimals = decimalsFor(budget.combined, 3);
     for (const BudgetItem& item : budget.items)
@@ -136,7 +152,7 @@ BudgetSection budgetSection(const SetPointBudget& budget) {
 }
 
 /// Figures that are errors need a stated output to be errors from.
-std::vector<PerformanceRow> performanceRows(const ProcessFigures& figures, int decimals, ErrorKnown known) {
+std::vector<PerformanceRow> performanceRows(const ProcessFigures& figures, int decimals, int place, ErrorKnown known) {
     using Kind = PerformanceRow::Kind;
     const std::pair<Kind, const std::optional<ProcessFigure>*> all[] = {
         {Kind::MeasuredError, &figures.measuredErrorMax},
@@ -148,12 +164,11 @@ std::vector<PerformanceRow> performanceRows(const ProcessFigures& figures, int d
         {Kind::NonLinearityTerminal, &figures.nonLinearityTerminal},
         {Kind::NonLinearityIndependent, &figures.nonLinearityIndependent},
         {Kind::NonLinearityZeroBased, &figures.nonLinearityZeroBased}};
-    constexpr int percentDecimals = 3;
     std::vector<PerformanceRow> rows;
     for (const auto& [kind, figure] : all)
         if (*figure && (known == ErrorKnown::Yes || kind > Kind::InaccuracyLow))
-            rows.push_back({kind, roundedText((*figure)->value, decimals), roundedText((*figure)->percentOfSpan, percentDecimals),
-                            shortText((*figure)->setPoint)});
+            rows.push_back({kind, roundedText((*figure)->value, decimals), roundedText((*figure)->percentOfSpan, PercentDecimals),
+                            roundedText((*figure)->setPoint, place)});
     return rows;
 }
 
@@ -175,6 +190,8 @@ PhaseSection phaseSection(const Record& record, const PhaseEvaluation& phase) {
             largestError = std::fabs(point.error);
             section.largest = section.results.size() - 1;
         }
+        if (!(point.expanded > 0))
+            continue;
         smallest = std::min(smallest, point.coverageFactor);
         largest = std::max(largest, point.coverageFactor);
     }
@@ -189,9 +206,9 @@ PhaseSection phaseSection(const Record& record, const PhaseEvaluation& phase) {
         return a.expanded < b.expanded;
     });
     if (worst != budgets.end())
-        section.budget = budgetSection(*worst);
+        section.budget = budgetSection(*worst, least.place);
     if (phase.performance)
-        section.performance = performanceRows(*phase.performance, worst == budgets.end() ? 4 : roundUncertainty(worst->expanded).decimals,
+        section.performance = performanceRows(*phase.performance, worst != budgets.end() && worst->expanded > 0 ? roundUncertainty(worst->expanded).decimals : least.read, least.place,
                                               section.errorKnown ? ErrorKnown::Yes : ErrorKnown::No);
     if (record.choices.splitOnCertificate && phase.phase == record.choices.phase)
         section.split = splitSection(phase);

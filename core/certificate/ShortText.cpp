@@ -15,4 +15,9 @@ std::string shortText(double value) {
     return {buffer, end.ptr};
 }
 
+int decimalsIn(const std::string& text) {
+    const std::size_t point = text.find('.');
+    return point == std::string::npos || text.find('e') != std::string::npos ? 0 : static_cast<int>(text.size() - point - 1);
+}
+
 } // namespace spanwright

@@ -5,6 +5,8 @@
 #include "core/certificate/ShortText.h"
 #include "core/performance/LoadingRange.h"
 
+#include <algorithm>
+
 namespace spanwright {
 
 namespace {
@@ -24,7 +26,7 @@ Digits probability(double p) {
     return p < 0.001 ? "<0.001" : roundedText(p, 3);
 }
 
-SplitTableLine printed(const SplitLine& from, double total) {
+SplitTableLine printed(const SplitLine& from, double total, double noise) {
     const SplitRow& row = from.row;
     SplitTableLine line;
     line.part = from.part;
@@ -40,6 +42,8 @@ SplitTableLine printed(const SplitLine& from, double total) {
         line.p = probability(*row.p);
     if (from.test == SplitLine::Test::Chain && total > 0)
         line.share = row.ss / total;
+    if (from.test == SplitLine::Test::Chain && from.level > 0 && from.part != SplitPart::Regression && noise > 0)
+        line.noiseShare = row.ss / noise;
     return line;
 }
 
@@ -60,7 +64,7 @@ std::optional<SplitSection> splitSection(const PhaseEvaluation& phase) {
     section.weighted = phase.fit->weights != Weights::Equal;
     section.against = split.against;
     for (const SplitLine& line : splitLines(split))
-        section.lines.push_back(printed(line, split.total.ss));
+        section.lines.push_back(printed(line, split.total.ss, split.residual.ss));
     return section;
 }
 
@@ -68,11 +72,15 @@ std::optional<ForceSection> forceSection(const PhaseEvaluation& phase) {
     if (!phase.force)
         return std::nullopt;
     constexpr int meanDigits = 7; // of the smallest deflection
+    constexpr int forceDigits = 9;
     const ForceFigures& figures = *phase.force;
     const int decimals = figures.steps.empty() ? 0 : decimalsFor(figures.steps.front().mean, meanDigits);
     ForceSection section;
+    int place = 0;
     for (const ForceStep& step : figures.steps)
-        section.steps.push_back({shortText(step.force), roundedText(step.mean, decimals), percent(step.reproducibility), percent(step.repeatability),
+        place = std::max(place, decimalsIn(significant(step.force, forceDigits)));
+    for (const ForceStep& step : figures.steps)
+        section.steps.push_back({roundedText(step.force, place), roundedText(step.mean, decimals), percent(step.reproducibility), percent(step.repeatability),
                                  percent(step.interpolation), percent(step.reversibility)});
     section.zero = percent(figures.zero);
     section.degree = figures.degree;

@@ -42,6 +42,9 @@ PointResult resultOf(const Item& item, const PointMeans& point, const SetPointBu
 
 void decideOn(PointResult& result, const Limits& limits, const SetPointBudget& budget, double limit) {
     result.limit = limit;
+    // Where no contribution is known, U is not zero but unknown, and nothing can be decided.
+    if (!(budget.combined > 0))
+        return;
     result.guardBand = guardBand(limits, result.expanded);
     result.acceptance = limit - *result.guardBand;
     if (!std::isfinite(result.error))

@@ -64,7 +64,7 @@ std::vector<TextTable::Cell> rowOf(const BudgetItem& item, const Item& unit) {
     row[4].text = significantText(item.sensitivity, 4);
     row[5].text = significantText(item.contribution, 3);
     row[6].text = std::isfinite(item.degreesOfFreedom) ? significantText(item.degreesOfFreedom, 3) : QString(QChar(0x221e));
-    row[7].text = shareText(item.share);
+    row[7].text = briefShareText(item.share);
     row[7].share = item.share;
     return row;
 }

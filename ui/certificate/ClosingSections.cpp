@@ -69,7 +69,8 @@ QString signOffLine(SignOffRole role) {
     return {};
 }
 
-constexpr double SignOffHeight = 34, EndMark = 6, HeadingRoom = 13; // mm
+constexpr double SignOffLine = 17, EndMark = 10, HeadingRoom = 13; // mm
+constexpr double SignOffGap = 10;
 constexpr double BetweenLines = 0.8;
 
 TextStyle lineStyle(PageInk ink) {
@@ -88,6 +89,40 @@ void addLines(Flow& flow, const QStringList& lines, PageInk ink) {
         flow.paragraph(line, lineStyle(ink));
         flow.space(BetweenLines);
     }
+}
+
+/// Who signed, line by line as it fits under the rule.
+std::vector<std::pair<QString, TextStyle>> signOffLines(const Certificate& certificate, SignOffRole role, double width) {
+    const TextStyle name{9.5, true, PageInk::Text}, body{8.5, false, PageInk::Text};
+    std::vector<std::pair<QString, TextStyle>> lines{{signOffLine(role), {8, false, PageInk::Quiet}}};
+    const auto& all = certificate.signOffs;
+    const auto found = std::find_if(all.begin(), all.end(), [&](const SignOff& one) { return one.role == role; });
+    if (found == all.end())
+        return lines;
+    const std::pair<const std::string*, TextStyle> parts[] = {{&found->name, name}, {&found->position, body}, {&found->date, body}};
+    for (const auto& [words, style] : parts)
+        if (!words->empty())
+            for (const QString& line : wrapped(text(*words), style, width))
+                lines.emplace_back(line, style);
+    return lines;
+}
+
+constexpr SignOffRole SignOffRoles[] = {SignOffRole::Performed, SignOffRole::Checked, SignOffRole::Authorised};
+
+double signOffWidth(const Flow& flow) {
+    return (flow.area().width() - 2 * SignOffGap) / 3;
+}
+
+double signOffHeight(const Flow& flow, const Certificate& certificate) {
+    constexpr double least = 34; // mm
+    double height = least;
+    for (const SignOffRole role : SignOffRoles) {
+        double lines = SignOffLine;
+        for (const auto& [words, style] : signOffLines(certificate, role, signOffWidth(flow)))
+            lines += lineHeight(style);
+        height = std::max(height, lines + 1);
+    }
+    return height;
 }
 
 } // namespace
@@ -128,6 +163,11 @@ void addBudget(Flow& flow, const Certificate& certificate, const PhaseSection& s
         return;
     const BudgetSection& budget = *section.budget;
     const Item& item = certificate.item;
+    if (budget.rows.empty()) {
+        flow.heading(ClosingSections::tr("Uncertainty budget %1").arg(phaseText(section.phase)));
+        flow.paragraph(ClosingSections::tr("No contribution is stated, so nothing is known about the uncertainty."), lineStyle(PageInk::Warning));
+        return;
+    }
     Table table;
     table.points = 8;
     table.columns = {{ClosingSections::tr("contribution"), {}, ColumnAlign::Left, 3.4},
@@ -149,7 +189,7 @@ void addBudget(Flow& flow, const Certificate& certificate, const PhaseSection& s
                               {row.degreesOfFreedom.empty() ? QStringLiteral("∞") : digitsText(row.degreesOfFreedom)},
                               {digitsText(row.sensitivity)},
                               {digitsText(row.contribution)},
-                              {shareText(row.share)}});
+                              {briefShareText(row.share)}});
     }
     flow.headedTable(ClosingSections::tr("Uncertainty budget %1").arg(phaseText(section.phase)),
                      ClosingSections::tr("at the point with the largest U: %1").arg(placeText(budget, item)), table);
@@ -204,7 +244,7 @@ void addStatements(Flow& flow, const Certificate& certificate, const QStringList
         lines << statementText(statement);
     // Signatures never stand alone: statements and signatures share a page where they fit on one.
     const double width = flow.area().width();
-    double together = HeadingRoom + heightOf(lines, width) + SignOffHeight + EndMark;
+    double together = HeadingRoom + heightOf(lines, width) + signOffHeight(flow, certificate) + EndMark;
     const QStringList opinions = certificate.job.opinions.empty() ? QStringList() : QStringList(text(certificate.job.opinions));
     for (const QStringList& part : {opinions, gaps})
         together += part.isEmpty() ? 0 : HeadingRoom + heightOf(part, width);
@@ -223,32 +263,19 @@ void addStatements(Flow& flow, const Certificate& certificate, const QStringList
 }
 
 void addSignOffs(Flow& flow, const Certificate& certificate) {
-    constexpr double gap = 10;
-    const TextStyle label{8, false, PageInk::Quiet}, name{9.5, true, PageInk::Text}, body{8.5, false, PageInk::Text};
-    flow.keepTogether(SignOffHeight + EndMark);
-    const QRectF box = flow.picture(SignOffHeight);
-    const double width = (box.width() - 2 * gap) / 3;
-    const SignOffRole roles[] = {SignOffRole::Performed, SignOffRole::Checked, SignOffRole::Authorised};
+    const double height = signOffHeight(flow, certificate), width = signOffWidth(flow);
+    flow.keepTogether(height + EndMark);
+    const QRectF box = flow.picture(height + EndMark);
     for (int i = 0; i < 3; ++i) {
-        const double left = box.left() + i * (width + gap);
-        const double line = box.top() + 17;
+        const double left = box.left() + i * (width + SignOffGap);
+        double line = box.top() + SignOffLine;
         flow.place({QRectF(left, line, width, 0), Rule{0.35, PageInk::Quiet}});
-        flow.textAt(left, line + 4.2, signOffLine(roles[i]), label);
-        const auto& all = certificate.signOffs;
-        const auto found = std::find_if(all.begin(), all.end(), [&](const SignOff& one) { return one.role == roles[i]; });
-        if (found == all.end())
-            continue;
-        const auto put = [&](const std::string& what, double y, const TextStyle& style) {
-            const auto lines = wrapped(text(what), style, width);
-            if (!what.empty())
-                flow.textAt(left, line + y, lines.front(), style);
-        };
-        put(found->name, 8.4, name);
-        put(found->position, 12.2, body);
-        put(found->date, 16, body);
+        for (const auto& [words, style] : signOffLines(certificate, SignOffRoles[i], width)) {
+            line += lineHeight(style);
+            flow.textAt(left, line, words, style);
+        }
     }
-    flow.space(1);
-    flow.textAt(box.center().x(), box.bottom() + 3.5, ClosingSections::tr("End of certificate"), label, Qt::AlignHCenter);
+    flow.textAt(box.center().x(), box.bottom() - 2, ClosingSections::tr("End of certificate"), {8, false, PageInk::Quiet}, Qt::AlignHCenter);
 }
 
 } // namespace spanwright

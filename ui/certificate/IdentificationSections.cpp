@@ -136,9 +136,12 @@ void addIdentification(Flow& flow, const Certificate& certificate) {
 }
 
 void addStandards(Flow& flow, const Certificate& certificate) {
-    flow.heading(tr("Standards and traceability"), {}, 14);
+    const TextStyle quiet{8.5, false, PageInk::Quiet};
+    // The heading and its sentence stay with the first standard.
+    const double sentence = static_cast<double>(wrapped(text(certificate.job.traceability), quiet, flow.area().width()).size()) * lineHeight(quiet);
+    flow.heading(tr("Standards and traceability"), {}, 34 + sentence);
     if (!certificate.job.traceability.empty()) {
-        flow.paragraph(text(certificate.job.traceability), {8.5, false, PageInk::Quiet});
+        flow.paragraph(text(certificate.job.traceability), quiet);
         flow.space(1.2);
     }
     Table table;

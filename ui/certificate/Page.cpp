@@ -5,6 +5,7 @@
 
 #include <QFontMetricsF>
 #include <QPainter>
+#include <QRegularExpression>
 #include <QPainterPath>
 #include <QTextLayout>
 
@@ -103,6 +104,26 @@ double lineHeight(const TextStyle& style) {
     return style.points * MmPerPoint * Leading;
 }
 
+namespace {
+
+constexpr QChar Glue(0x00A0);
+
+/// A number with its unit, and a symbol with its value, held together by a blank at which no line ends.
+QString glued(QString text, const TextStyle& style, double width) {
+    static const QRegularExpression pair(QStringLiteral("(\\S*\\d) (?=([%‰°ΩµA-Za-z/]{1,6})(?:[\\s;,.)]|$))|(\\S+ =) (?=([+\u2212-]?\\d\\S*))|(\\S+) (?=(= ?\\S*\\d\\S*))"));
+    for (qsizetype from = 0;;) {
+        const QRegularExpressionMatch match = pair.match(text, from);
+        if (!match.hasMatch())
+            return text;
+        const QString whole = match.captured(0) + match.captured(2) + match.captured(4) + match.captured(6);
+        if (textWidth(whole, style) <= width)
+            text[match.capturedEnd(0) - 1] = Glue;
+        from = match.capturedEnd(0);
+    }
+}
+
+} // namespace
+
 std::vector<QString> wrapped(const QString& text, const TextStyle& style, double width) {
     std::vector<QString> lines;
     for (const QString& part : text.split(QLatin1Char('\n'))) {
@@ -110,7 +131,8 @@ std::vector<QString> wrapped(const QString& text, const TextStyle& style, double
             lines.emplace_back();
             continue;
         }
-        QTextLayout layout(part, pageFont(style));
+        const QString held = glued(part, style, width);
+        QTextLayout layout(held, pageFont(style));
         QTextOption option;
         option.setWrapMode(QTextOption::WrapAtWordBoundaryOrAnywhere);
         layout.setTextOption(option);

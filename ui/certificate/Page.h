@@ -82,7 +82,8 @@ QFont pageFont(const TextStyle& style);
 double textWidth(const QString& text, const TextStyle& style);
 /// Distance from one baseline to the next, mm.
 double lineHeight(const TextStyle& style);
-/// Text broken into lines that are no wider than `width` mm; a word that is wider is broken. Line ends in the text are kept.
+/// Text broken into lines that are no wider than `width` mm; a word that is wider is broken, a number stays with its unit where
+/// both fit. Line ends in the text are kept.
 std::vector<QString> wrapped(const QString& text, const TextStyle& style, double width);
 
 /// Paints a page into a rectangle of the painter, whatever the device: paper, file or screen.

@@ -139,6 +139,8 @@ void addDecision(Flow& flow, const Certificate& certificate, const PhaseSection&
     if (!section.overall) {
         if (!certificate.limits.stated)
             flow.paragraph(ResultSections::tr("No statement of conformity was asked for."), quiet);
+        else if (std::any_of(section.results.begin(), section.results.end(), [](const ResultLine& line) { return line.expanded.empty(); }))
+            flow.paragraph(ResultSections::tr("No statement of conformity: the uncertainty is not known."), {9.5, true, PageInk::Warning});
         return;
     }
     const bool pass = *section.overall == ConformityState::Pass;
@@ -181,7 +183,9 @@ void addSummary(Flow& flow, const Certificate& certificate) {
                               {digitsText(line.expanded)},
                               {line.direction == Direction::Unknown ? at : at + QStringLiteral(", ") + directionText(line.direction)},
                               {digitsText(line.limit)},
-                              {section.overall ? stateText(*section.overall) : ResultSections::tr("not asked for"),
+                              {section.overall             ? stateText(*section.overall)
+                               : certificate.limits.stated ? ResultSections::tr("none")
+                                                           : ResultSections::tr("not asked for"),
                                !section.overall || pass ? PageInk::Text : PageInk::Warning, section.overall.has_value()}});
     }
     if (table.rows.empty())

@@ -44,13 +44,14 @@ void addSplit(Flow& flow, const Certificate& certificate, const PhaseSection& se
     const SplitSection& split = *section.split;
     const QString unit = squared(split, certificate.item);
     Table table;
-    table.columns = {{SplitSections::tr("source"), {}, ColumnAlign::Left, 4},
+    table.columns = {{SplitSections::tr("source"), {}, ColumnAlign::Left, 4.6},
                      {SplitSections::tr("sum of squares"), unit, ColumnAlign::Right, 1.7},
                      {SplitSections::tr("d.f."), {}, ColumnAlign::Right, 0.7},
                      {SplitSections::tr("mean square"), unit, ColumnAlign::Right, 1.7},
-                     {SplitSections::tr("F"), {}, ColumnAlign::Right, 1.2},
+                     {SplitSections::tr("F"), {}, ColumnAlign::Right, 1.15},
                      {SplitSections::tr("p"), {}, ColumnAlign::Right, 1},
-                     {SplitSections::tr("share"), {}, ColumnAlign::Right, 1.8}};
+                     {SplitSections::tr("share"), SplitSections::tr("of total"), ColumnAlign::Right, 1.2},
+                     {SplitSections::tr("share"), SplitSections::tr("of noise"), ColumnAlign::Right, 1.2}};
     for (const SplitTableLine& line : split.lines) {
         const bool chain = line.test == SplitTableLine::Test::Chain;
         const PageInk ink = chain ? PageInk::Text : PageInk::Quiet;
@@ -60,7 +61,8 @@ void addSplit(Flow& flow, const Certificate& certificate, const PhaseSection& se
                               {digitsText(line.meanSquare), ink},
                               {line.f.empty() ? QString() : digitsText(line.f), ink},
                               {line.p.empty() ? QString() : digitsText(line.p), ink},
-                              {line.share ? shareText(*line.share) : QString(), ink}});
+                              {line.share ? briefShareText(*line.share) : QString(), ink},
+                              {line.noiseShare ? briefShareText(*line.noiseShare) : QString(), ink}});
     }
     flow.headedTable(SplitSections::tr("What the spread is made of"),
                      SplitSections::tr("readings %1, %2").arg(phaseText(section.phase), functionText(split.function)), table);

@@ -102,6 +102,10 @@ QString shareText(double share, const QLocale& locale) {
     return shown(plain(percent, decimals), locale) + QStringLiteral(" %");
 }
 
+QString briefShareText(double share, const QLocale& locale) {
+    return share > 0.999 && share < 1 ? QStringLiteral("> ") + shown("99.9", locale) + QStringLiteral(" %") : shareText(share, locale);
+}
+
 QString pText(double p, const QLocale& locale) {
     if (!std::isfinite(p))
         return missing(p);

@@ -19,6 +19,8 @@ QString significantText(double value, int digits, const QLocale& locale = QLocal
 QString placeText(double value, const QLocale& locale = QLocale());
 /// A share as a percentage; a share below 1 is never printed as 100 %, one above 0 never as 0 %.
 QString shareText(double share, const QLocale& locale = QLocale());
+/// The same for a table where the parts matter, not how near to the whole one of them comes: above 99.9 % it says just that.
+QString briefShareText(double share, const QLocale& locale = QLocale());
 /// A p value: "0.34", "< 0.001".
 QString pText(double p, const QLocale& locale = QLocale());
 

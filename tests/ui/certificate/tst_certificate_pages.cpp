@@ -76,6 +76,58 @@ class CertificatePagesTest : public QObject {
   private slots:
     void initTestCase() { QVERIFY(folder_.isValid()); }
 
+    void nothingIsDecidedWhereNoContributionIsKnown() {
+        Record record = test::pressureTransmitter();
+        record.standards.clear();
+        record.budget.lines.clear();
+        record.item.resolution.reset();
+        record.item.referenceResolution.reset();
+        for (const DerivedLine line : {DerivedLine::Repeatability, DerivedLine::RunToRun, DerivedLine::Hysteresis, DerivedLine::Fit})
+            record.budget.omitted.push_back({line, "trial"});
+        const Evaluation evaluation = evaluated(record);
+        QVERIFY(!evaluation.phase(Phase::AsFound)->verdict.overall.has_value());
+        const QString text = plainText(layOutCertificate(record, evaluation, context));
+        QVERIFY(!text.contains(QRegularExpression("\\bpass\\b")));
+        QVERIFY(text.contains("No statement of conformity: the uncertainty is not known."));
+        QVERIFY(text.contains("No contribution is stated, so nothing is known about the uncertainty."));
+        // The error keeps the digits that were read: 4.0027 − (4 + 1.6 · 0.0002).
+        QVERIFY(text.contains("+0.002\n–\n–"));
+        QVERIFY2(text.contains("y = 3.999 + 1.60010 x") || text.contains("y = 3.9994 + 1.6001 x"), qPrintable(text.mid(text.indexOf("y = "), 40)));
+    }
+
+    void namesOfAnyLengthAreSignedInFull() {
+        Record record = test::pressureTransmitter();
+        for (SignOff& one : record.signOffs) {
+            one.name = "Dr.-Ing. Maximiliane Theodora Featherstonehaugh-Cholmondeley of Upper Quillmere";
+            one.position = "Head of the laboratory for pressure, temperature and electrical quantities";
+        }
+        const QString text = plainText(layOutCertificate(record, evaluated(record), context)).remove(QRegularExpression("\\s"));
+        QVERIFY(text.contains("Dr.-Ing.MaximilianeTheodoraFeatherstonehaugh-CholmondeleyofUpperQuillmere"));
+        QVERIFY(text.contains("Headofthelaboratoryforpressure,temperatureandelectricalquantities"));
+    }
+
+    void aNumberStaysWithItsUnit() {
+        const TextStyle style{9, false, PageInk::Text};
+        const QString said = QStringLiteral("loop resistor 250 Ω, k = 2, 0.075 % of span and trimmed by 0.0012 mA");
+        for (double width = 20; width < 80; width += 1) {
+            const std::vector<QString> lines = wrapped(said, style, width);
+            QStringList joined;
+            for (const QString& line : lines) {
+                QVERIFY2(!QRegularExpression("\\d$").match(line).hasMatch() || line.endsWith(" 2"), qPrintable(line));
+                QVERIFY2(!line.endsWith(QLatin1Char('=')), qPrintable(line));
+                joined << line;
+            }
+            QCOMPARE(joined.join(QLatin1Char(' ')), said);
+        }
+    }
+
+    void placesOfOneColumnHaveTheSameDecimals() {
+        const Record record = test::pressureTransmitter();
+        const QString text = plainText(layOutCertificate(record, evaluated(record), context));
+        const QString figures = text.mid(text.indexOf("Performance figures as left"));
+        QVERIFY2(figures.contains("0.0065\n0.041\n2.5\n") && figures.contains("0.0109\n0.068\n5.0\n"), qPrintable(figures.left(600)));
+    }
+
     void everythingKeepsToTheMargins_data() {
         QTest::addColumn<int>("which");
         QTest::newRow("sample") << 0;

@@ -49,6 +49,9 @@ class NumberTextTest : public QObject {
         QCOMPARE(shareText(0.614, english), QStringLiteral("61 %"));
         QVERIFY(!shareText(0.99999957, english).startsWith(QStringLiteral("100")));
         QCOMPARE(shareText(0.99999957, english), QStringLiteral("99.999957 %"));
+        QCOMPARE(briefShareText(0.99999957, english), QStringLiteral("> 99.9 %"));
+        QCOMPARE(briefShareText(0.614, english), QStringLiteral("61 %"));
+        QCOMPARE(briefShareText(1, english), QStringLiteral("100 %"));
         QCOMPARE(shareText(1e-9, english), QStringLiteral("< 0.01 %"));
         QCOMPARE(shareText(0.004, english), QStringLiteral("0.4 %"));
         for (double rest = 0.1; rest > 1e-12; rest /= 3)
