@@ -234,7 +234,7 @@ Result<CsvRules> guessRules(std::string_view bytes, const CsvWishes& wishes) {
     if (guess.unclear)
         rules.doubts.push_back(Error(ErrorCode::SeparatorUnclear, {{"separator", std::string(1, rules.separator)}}));
 
-    const Sample sample = readSample(text, rules.separator, rules.quote, SampleRows);
+    const CsvSample sample = readCsvSample(text, rules.separator, rules.quote, SampleRows);
     if (sample.unclosedQuote != 0)
         return Error(ErrorCode::UnclosedQuote, {{"line", std::to_string(sample.unclosedQuote)}});
     const std::size_t width = usualWidth(sample.rows);

@@ -69,9 +69,9 @@ bool hasNumber(const SampleRow& row) {
     return std::any_of(row.cells.begin(), row.cells.end(), [](const std::string& cell) { return isData(lookOf(cell)); });
 }
 
-Sample readSample(std::string_view text, char separator, char quote, std::size_t most) {
+CsvSample readCsvSample(std::string_view text, char separator, char quote, std::size_t most) {
     FieldScanner scan(text, separator, quote);
-    Sample sample;
+    CsvSample sample;
     while (sample.rows.size() < most && scan.toNextRow()) {
         SampleRow& row = sample.rows.emplace_back();
         row.line = scan.line();
@@ -87,7 +87,7 @@ Sample readSample(std::string_view text, char separator, char quote, std::size_t
 }
 
 std::vector<SampleRow> sampleRows(std::string_view text, char separator, char quote, std::size_t most) {
-    return readSample(text, separator, quote, most).rows;
+    return readCsvSample(text, separator, quote, most).rows;
 }
 
 std::size_t usualWidth(std::span<const SampleRow> rows) {

@@ -25,13 +25,14 @@ struct SampleRow {
 
 bool hasNumber(const SampleRow& row);
 
-struct Sample {
+/// The beginning of a table.
+struct CsvSample {
     std::vector<SampleRow> rows;
     std::size_t unclosedQuote = 0; ///< line in which a quote was opened that nothing closes; 0 when there is none
 };
 
 /// The first `most` rows that are not blank.
-Sample readSample(std::string_view text, char separator, char quote, std::size_t most);
+CsvSample readCsvSample(std::string_view text, char separator, char quote, std::size_t most);
 std::vector<SampleRow> sampleRows(std::string_view text, char separator, char quote, std::size_t most);
 
 /// The number of fields that most rows with numbers have; of rows altogether when none has.
