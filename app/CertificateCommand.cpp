@@ -3,9 +3,9 @@
 #include "app/Commands.h"
 #include "app/PaperApplication.h"
 #include "app/RecordFile.h"
+#include "app/ResultFile.h"
 #include "core/evaluate/evaluate.h"
 #include "core/session/SameNumber.h"
-#include "core/session/WholeFile.h"
 #include "ui/certificate/CertificateText.h"
 #include "ui/certificate/writeCertificate.h"
 
@@ -32,17 +32,30 @@ bool sameFile(const std::string& a, const std::string& b) {
            std::filesystem::absolute(a, unknown).lexically_normal() == std::filesystem::absolute(b, unknown).lexically_normal();
 }
 
-/// Whether the files that the options name may be written: neither over the session, nor one over the other.
-Result<void> targetsFree(const Arguments& arguments, const std::string& session) {
-    const std::string to = *arguments.value("--to");
-    const auto xml = arguments.value("--xml");
-    if (xml && xml->empty())
-        return Error(ErrorCode::UsageValueMissing, {{"option", "--xml"}});
-    if (xml && sameFile(to, *xml))
-        return Error(ErrorCode::UsageValueBad, {{"option", "--xml"}, {"text", *xml}});
-    const Replacing replacing = arguments.has("--replace") ? Replacing::Allowed : Replacing::Refused;
-    const auto free = mayBeWritten(to, {session}, replacing);
-    return free && xml ? mayBeWritten(*xml, {session}, replacing) : free;
+/// The files that the options name.
+struct Documents {
+    std::string pdf;
+    std::optional<std::string> xml;
+};
+
+/// They may be written: neither over the session, nor one over the other.
+Result<Documents> freeDocuments(const Arguments& arguments, const std::string& session) {
+    const auto pdf = documentName(arguments, "--to");
+    if (!pdf)
+        return pdf.error();
+    Documents documents{*pdf, {}};
+    if (arguments.has("--xml")) {
+        const auto xml = documentName(arguments, "--xml");
+        if (!xml)
+            return xml.error();
+        if (sameFile(*pdf, *xml))
+            return Error(ErrorCode::UsageValueBad, {{"option", "--xml"}, {"text", *xml}});
+        documents.xml = *xml;
+    }
+    auto free = resultFree(documents.pdf, {session}, arguments, isOwnCertificate);
+    if (free && documents.xml)
+        free = resultFree(*documents.xml, {session}, arguments, isOwnCertificateXml);
+    return free ? Result<Documents>(documents) : free.error();
 }
 
 /// Every gap on a line of its own: each is something to enter.
@@ -54,60 +67,80 @@ int refuseGaps(Console console, const std::string& file, const Error& error) {
             ++count;
         }
     console.err << "spanwright: " << file << ": " << count
-                << (count == 1 ? " item blocks" : " items block") << " the certificate; --incomplete prints it marked as incomplete\n";
+                << (count == 1 ? " item blocks" : " items block") << " the certificate, and none was written; --incomplete prints it marked as incomplete\n";
     return CertificateBlocked;
+}
+
+/// A certificate stands on the readings as they were entered, not on what somebody made of the file since.
+int refuseBroken(Console console, const std::string& file, const std::vector<Warning>& broken) {
+    refuseFile(console, file, broken);
+    console.err << "spanwright: " << file
+                << ": no certificate was written, because it is not known what was changed; spanwright check names the results that differ\n";
+    return Refused;
+}
+
+int writeXml(Console console, const Documents& documents, const std::string& country, const Record& record, const Evaluation& evaluation,
+             const CertificateContext& context) {
+    if (country.empty())
+        console.err << "spanwright: " << *documents.xml << ": no country is stated, so it stands as ZZ, not stated; give it with --country\n";
+    const XmlWishes wishes{QString::fromStdString(documents.pdf), country};
+    const auto written = writeCertificateXml(record, evaluation, QString::fromStdString(*documents.xml), wishes, context);
+    if (!written)
+        return refuse(console, written.error());
+    console.out << *documents.xml << '\n';
+    return Done;
+}
+
+Result<Arguments> argumentsOf(const Words& words) {
+    auto arguments = parseArguments(words, known);
+    if (!arguments)
+        return arguments;
+    if (arguments->files.empty())
+        return Error(ErrorCode::UsageNoFile, {{"command", "certificate"}});
+    if (arguments->files.size() > 1)
+        return Error(ErrorCode::UsageUnknownCommand, {{"text", arguments->files[1]}});
+    if (const auto country = arguments->value("--country"); country && !isCountryCode(*country))
+        return Error(ErrorCode::UsageValueBad, {{"option", "--country"}, {"text", *country}});
+    return arguments;
 }
 
 } // namespace
 
 int certificateCommand(const Words& words, Console console) {
-    const auto arguments = parseArguments(words, known);
+    const auto arguments = argumentsOf(words);
     if (!arguments)
         return refuse(console, arguments.error());
-    if (arguments->files.size() != 1)
-        return refuse(console, Error(ErrorCode::UsageNoFile, {{"command", "certificate"}}));
-    const auto to = arguments->value("--to");
-    if (!to || to->empty())
-        return refuse(console, Error(ErrorCode::UsageValueMissing, {{"option", "--to"}}));
-
-    if (const auto country = arguments->value("--country"); country && !isCountryCode(*country))
-        return refuse(console, Error(ErrorCode::UsageValueBad, {{"option", "--country"}, {"text", *country}}));
     const std::string& file = arguments->files.front();
-    if (const auto free = targetsFree(*arguments, file); !free)
-        return refuse(console, free.error());
+    const auto documents = freeDocuments(*arguments, file);
+    if (!documents)
+        return refuse(console, documents.error());
     const auto loaded = loadSessionFile(file);
     if (!loaded)
         return refuse(console, loaded.error());
     if (!loaded->broken.empty())
-        return refuseFile(console, file, loaded->broken);
+        return refuseBroken(console, file, loaded->broken);
+    const Record& record = loaded->record;
     Progress progress;
-    const auto evaluation = evaluate(loaded->record, progress);
+    const auto evaluation = evaluate(record, progress);
     if (!evaluation)
         return refuse(console, evaluation.error().with("file", file));
 
     const PaperApplication paper;
-    const CertificateContext context =
-        certificateContext(loaded->record, *evaluation, QDate::currentDate().toString(Qt::ISODate));
+    const CertificateContext context = certificateContext(record, *evaluation, QDate::currentDate().toString(Qt::ISODate));
     const WithGaps withGaps = arguments->has("--incomplete") ? WithGaps::MarkIncomplete : WithGaps::Refuse;
-    const auto written = writeCertificatePdf(loaded->record, *evaluation, QString::fromStdString(*to), context, withGaps);
+    const auto written = writeCertificatePdf(record, *evaluation, QString::fromStdString(documents->pdf), context, withGaps);
     if (!written)
         return written.error().code == ErrorCode::CertificateIncomplete ? refuseGaps(console, file, written.error())
                                                                         : refuse(console, written.error());
-    console.out << *to << '\n';
-    const std::string other = sessionWithNumber(file, loaded->record.job.certificateNumber);
-    if (!other.empty())
-        console.err << "spanwright: " << file << ": "
-                    << gapText(numberUsedElsewhere(loaded->record.job.certificateNumber, other), loaded->record, *evaluation).toStdString() << '\n';
-    if (const auto xml = arguments->value("--xml")) {
-        const std::string country = arguments->value("--country").value_or(std::string());
-        if (country.empty())
-            console.err << "spanwright: " << *xml << ": no country is stated, so it stands as ZZ, not stated; give it with --country\n";
-        const auto machineReadable =
-            writeCertificateXml(loaded->record, *evaluation, QString::fromStdString(*xml), {QString::fromStdString(*to), country}, context);
-        if (!machineReadable)
-            return refuse(console, machineReadable.error());
-        console.out << *xml << '\n';
-    }
+    console.out << documents->pdf << '\n';
+    const std::string& number = record.job.certificateNumber;
+    if (const std::string other = sessionWithNumber(file, number); !other.empty())
+        console.err << "spanwright: " << file << ": " << gapText(numberUsedElsewhere(number, other), record, *evaluation).toStdString() << '\n';
+    const auto country = arguments->value("--country");
+    if (documents->xml)
+        return writeXml(console, *documents, country.value_or(std::string()), record, *evaluation, context);
+    if (country)
+        console.err << "spanwright: " << file << ": --country changes nothing here: it belongs to --xml\n";
     return Done;
 }
 

@@ -15,8 +15,10 @@ int checkCommand(const Words& words, Console console) {
     const auto arguments = parseArguments(words, {});
     if (!arguments)
         return refuse(console, arguments.error());
-    if (arguments->files.size() != 1)
+    if (arguments->files.empty())
         return refuse(console, Error(ErrorCode::UsageNoFile, {{"command", "check"}}));
+    if (arguments->files.size() > 1)
+        return refuse(console, Error(ErrorCode::UsageUnknownCommand, {{"text", arguments->files[1]}}));
     const std::string& file = arguments->files.front();
     const auto session = loadSessionFile(file);
     if (!session)

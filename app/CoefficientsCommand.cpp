@@ -2,6 +2,7 @@
 #include "app/ChoiceOptions.h"
 #include "app/Commands.h"
 #include "app/RecordFile.h"
+#include "app/ResultFile.h"
 #include "app/TextApplication.h"
 #include "core/session/WholeFile.h"
 #include "core/evaluate/Calibration.h"
@@ -39,9 +40,11 @@ int coefficientsCommand(const Words& words, Console console) {
     if (!form)
         return refuse(console, Error(ErrorCode::UsageValueBad, {{"option", "--form"}, {"text", name}}));
     const std::string& file = arguments->files.front();
-    const auto to = arguments->value("--to");
-    if (to)
-        if (const auto free = mayBeWritten(*to, {file}, arguments->has("--replace") ? Replacing::Allowed : Replacing::Refused); !free)
+    const std::string to = arguments->value("--to").value_or(std::string(StandardOutput));
+    if (to.empty())
+        return refuse(console, Error(ErrorCode::UsageValueMissing, {{"option", "--to"}}));
+    if (to != StandardOutput)
+        if (const auto free = resultFree(to, {file}, *arguments, isOwnCoefficients); !free)
             return refuse(console, free.error());
 
     auto session = loadSessionFile(file);
@@ -59,19 +62,18 @@ int coefficientsCommand(const Words& words, Console console) {
     if (!evaluation)
         return refuse(console, evaluation.error().with("file", file));
     const PhaseEvaluation* phase = calibrationOf(*evaluation, record.choices.phase);
+    if (phase != nullptr && arguments->has("--phase") && phase->phase != record.choices.phase)
+        return refuse(console, noReadingsOf(record.choices.phase).with("file", file));
     const auto printed = phase != nullptr ? printedFunction(record, *phase) : std::nullopt;
     if (!printed)
         return refuse(console, Error(ErrorCode::NoReadings, {{"file", file}}));
     const std::string text = coefficientText(record, *printed, *form).toStdString();
-    if (to) {
-        if (const auto written = writeWhole(*to, text); !written)
-            return refuse(console, written.error());
-        console.out << "coefficients written to " << *to << '\n';
-        return Done;
-    }
-    console.out << text;
-    console.out.flush();
-    return console.out.good() ? Done : refuse(console, Error(ErrorCode::FileWriteFailed, {{"file", "standard output"}}));
+    if (to == StandardOutput)
+        return print(console, text);
+    if (const auto written = writeWhole(to, text); !written)
+        return refuse(console, written.error());
+    console.out << "coefficients written to " << to << '\n';
+    return Done;
 }
 
 } // namespace spanwright

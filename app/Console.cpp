@@ -7,6 +7,12 @@
 
 namespace spanwright {
 
+int print(Console console, const std::string& result) {
+    console.out << result;
+    console.out.flush();
+    return console.out.good() ? Done : refuse(console, Error(ErrorCode::FileWriteFailed, {{"file", "standard output"}}));
+}
+
 int refuse(Console console, const Error& error) {
     console.err << "spanwright: " << errorText(error).toStdString() << '\n';
     switch (error.code) {
@@ -18,6 +24,11 @@ int refuse(Console console, const Error& error) {
     case ErrorCode::CertificateIncomplete: return CertificateBlocked;
     default: return Refused;
     }
+}
+
+int refuseUsage(Console console, const std::string& file, const std::string& reason) {
+    console.err << "spanwright: " << file << ": " << reason << '\n';
+    return WrongUsage;
 }
 
 int refuseFile(Console console, const std::string& file, const std::vector<Warning>& wrong) {

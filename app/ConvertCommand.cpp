@@ -1,7 +1,9 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/ChoiceOptions.h"
 #include "app/Commands.h"
+#include "app/IndicationFile.h"
 #include "app/RecordFile.h"
+#include "app/ResultFile.h"
 #include "app/TextApplication.h"
 #include "core/session/WholeFile.h"
 #include "core/base/Rounding.h"
@@ -106,6 +108,40 @@ Result<Arguments> argumentsOf(const Words& words) {
     return arguments;
 }
 
+/// What there is to say about the function and the table before the values are used.
+void tell(Console console, const std::string& with, const Record& record, const Evaluation& evaluation, const PhaseEvaluation& phase) {
+    const PhaseEvaluation* asLeft = evaluation.phase(Phase::AsLeft);
+    if (phase.phase == Phase::AsFound && asLeft != nullptr && asLeft->fit)
+        console.err << "spanwright: " << with << ": there are readings as left too; --phase as-left takes their function\n";
+    if (record.choices.repeats != 1 && !repeatableShare(*phase.fit, phase.split ? &*phase.split : nullptr))
+        console.err << "spanwright: " << with
+                    << ": no reading was repeated under the same conditions, so nothing tells which part of the scatter averages out: U is that of one reading\n";
+}
+
+/// The table with its values, to a file or to standard output.
+int writeTable(Console console, const Arguments& arguments, const LoadedIndications& indications, const Record& record, const PhaseEvaluation& phase) {
+    const std::string& from = arguments.files.front();
+    const std::string with = *arguments.value("--with"), to = *arguments.value("--to");
+    Conversion conversion(record, phase, indications.values);
+    const CsvRules rules = rulesOfResult(indications, arguments);
+    const DecimalMark mark = rules.columns[indications.column].decimal;
+    const auto table = withAddedColumns(indications.file.bytes(), rules, mark, addedColumns(record.item.reference, rules),
+                                        [&](std::size_t row) { return conversion.cells(row); });
+    if (!table)
+        return refuse(console, table.error().with("file", from));
+    if (to == StandardOutput) {
+        console.err << "spanwright: " << conversion.summary("standard output");
+        return print(console, *table);
+    }
+    const OwnResult own = [&](std::string_view bytes) { return isOwnTable(bytes, *table, rules); };
+    if (const auto free = resultFree(to, {from, with}, arguments, own); !free)
+        return refuse(console, free.error());
+    if (const auto written = writeWhole(to, *table); !written)
+        return refuse(console, written.error());
+    console.out << conversion.summary(to);
+    return Done;
+}
+
 } // namespace
 
 int convertCommand(const Words& words, Console console) {
@@ -115,9 +151,10 @@ int convertCommand(const Words& words, Console console) {
         return refuse(console, arguments.error());
     const std::string& from = arguments->files.front();
     const std::string with = *arguments->value("--with"), to = *arguments->value("--to");
-    const Replacing replacing = arguments->has("--replace") ? Replacing::Allowed : Replacing::Refused;
-    if (const auto free = mayBeWritten(to, {from, with}, replacing); !free)
-        return refuse(console, free.error());
+    // Whether a table that stands there may be replaced is seen when there is one to compare; an input never is.
+    if (to != StandardOutput)
+        if (const auto free = resultFree(to, {from, with}, *arguments, [](std::string_view) { return true; }); !free)
+            return refuse(console, free.error());
 
     auto session = loadSessionFile(with);
     if (!session)
@@ -137,28 +174,16 @@ int convertCommand(const Words& words, Console console) {
     const PhaseEvaluation* phase = calibrationOf(*evaluation, record.choices.phase);
     if (phase == nullptr)
         return refuse(console, Error(ErrorCode::NoReadings, {{"file", with}}));
+    if (arguments->has("--phase") && phase->phase != record.choices.phase)
+        return refuse(console, noReadingsOf(record.choices.phase).with("file", with));
 
-    const auto indications = loadIndications(from, *arguments, record.item.indication);
+    const auto indications = loadIndications(from, *arguments, record.item);
     if (!indications)
         return refuse(console, indications.error());
     for (const std::string& note : indications->notes)
         console.err << "spanwright: " << note << '\n';
-    const PhaseEvaluation* asLeft = evaluation->phase(Phase::AsLeft);
-    if (phase->phase == Phase::AsFound && asLeft != nullptr && asLeft->fit)
-        console.err << "spanwright: " << with << ": there are readings as left too; --phase as-left takes their function\n";
-    if (record.choices.repeats != 1 && !repeatableShare(*phase->fit, phase->split ? &*phase->split : nullptr))
-        console.err << "spanwright: " << with
-                    << ": no reading was repeated under the same conditions, so nothing tells which part of the scatter averages out: U is that of one reading\n";
-    Conversion conversion(record, *phase, indications->values);
-    const DecimalMark mark = indications->rules.columns[indications->column].decimal;
-    const auto table = withAddedColumns(indications->file.bytes(), rulesOfResult(*indications, *arguments), mark, addedColumns(record.item.reference, indications->rules),
-                                        [&](std::size_t row) { return conversion.cells(row); });
-    if (!table)
-        return refuse(console, table.error().with("file", from));
-    if (const auto written = writeWhole(to, *table); !written)
-        return refuse(console, written.error());
-    console.out << conversion.summary(to);
-    return Done;
+    tell(console, with, record, *evaluation, *phase);
+    return writeTable(console, *arguments, *indications, record, *phase);
 }
 
 } // namespace spanwright

@@ -2,6 +2,7 @@
 #include "app/ChoiceOptions.h"
 #include "app/Commands.h"
 #include "app/FiguresText.h"
+#include "app/OptionEffects.h"
 #include "app/RecordFile.h"
 #include "app/TextApplication.h"
 #include "core/evaluate/evaluate.h"
@@ -27,10 +28,14 @@ Result<Arguments> argumentsOf(const Words& words) {
     return arguments;
 }
 
-/// The phase that was chosen; the other one when the chosen one has no readings.
-const PhaseEvaluation* shownPhase(const Evaluation& evaluation, Phase chosen) {
-    const PhaseEvaluation* phase = evaluation.phase(chosen);
-    return phase != nullptr ? phase : evaluation.phase(chosen == Phase::AsFound ? Phase::AsLeft : Phase::AsFound);
+/// The phase that was chosen; the other one when the chosen one has no readings, unless --phase asks for it.
+Result<const PhaseEvaluation*> shownPhase(const Evaluation& evaluation, const Arguments& arguments, Phase chosen) {
+    if (const PhaseEvaluation* phase = evaluation.phase(chosen))
+        return phase;
+    const PhaseEvaluation* other = evaluation.phase(chosen == Phase::AsFound ? Phase::AsLeft : Phase::AsFound);
+    if (other == nullptr)
+        return Error(ErrorCode::NoReadings);
+    return arguments.has("--phase") ? Result<const PhaseEvaluation*>(noReadingsOf(chosen)) : other;
 }
 
 std::int32_t lastRun(const Record& record) {
@@ -56,6 +61,8 @@ int figuresCommand(const Words& words, Console console) {
         return refuse(console, loaded.error());
     if (!loaded->broken.empty())
         return refuseFile(console, file, loaded->broken);
+    if (const auto misleading = misleadingOption(*arguments, *loaded))
+        return refuseUsage(console, file, *misleading);
     for (const std::string& note : loaded->notes)
         console.err << "spanwright: " << note << '\n';
 
@@ -64,9 +71,10 @@ int figuresCommand(const Words& words, Console console) {
     const auto evaluation = evaluate(record, progress);
     if (!evaluation)
         return refuse(console, evaluation.error().with("file", file));
-    const PhaseEvaluation* phase = shownPhase(*evaluation, record.choices.phase);
-    if (phase == nullptr)
-        return refuse(console, Error(ErrorCode::NoReadings, {{"file", file}}));
+    const auto shown = shownPhase(*evaluation, *arguments, record.choices.phase);
+    if (!shown)
+        return refuse(console, shown.error().with("file", file));
+    const PhaseEvaluation* phase = *shown;
     if (!phase->fit)
         return refuse(console, phase->notFitted.value_or(Error(ErrorCode::NoReadings)).with("file", file));
     if (arguments->has("--positions") && !positionsFit(record, *phase)) {
@@ -75,10 +83,10 @@ int figuresCommand(const Words& words, Console console) {
                        "and read three forces or more\n";
         return Refused;
     }
+    for (const std::string& note : optionsWithoutEffect(*arguments, record, *phase))
+        console.err << "spanwright: " << file << ": " << note << '\n';
     const RowsShown rows = arguments->has("--rows") ? RowsShown::Yes : RowsShown::No;
-    console.out << (arguments->has("--json") ? figuresJson(record, *phase, rows) : figuresText(record, *phase, rows).toStdString());
-    console.out.flush();
-    return console.out.good() ? Done : refuse(console, Error(ErrorCode::FileWriteFailed, {{"file", "standard output"}}));
+    return print(console, arguments->has("--json") ? figuresJson(record, *phase, rows) : figuresText(record, *phase, rows).toStdString());
 }
 
 } // namespace spanwright

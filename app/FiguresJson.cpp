@@ -137,6 +137,8 @@ void writeAnswers(JsonWriter& json, const PhaseEvaluation& evaluation, double sh
             writeInterval(json, "mean_of_repeats", *point.meanOfRepeats);
         if (spread)
             writeInterval(json, "tolerance", toleranceAt(*evaluation.fit, point.x, share));
+        else
+            json.key("tolerance").null();
         json.field("inside_range", point.inside).endObject();
     }
     json.endArray();
@@ -146,7 +148,8 @@ void writeAnswers(JsonWriter& json, const PhaseEvaluation& evaluation, double sh
         json.field("standard_uncertainty", answer.standardUncertainty).field("low", answer.low).field("high", answer.high);
         json.field("inside_range", answer.insideRange).field("state", codeName(answer.state));
         if (answer.budget)
-            json.field("expanded_uncertainty", answer.budget->expandedReference).field("coverage_factor", answer.budget->coverageFactor);
+            json.field("expanded_uncertainty", answer.budget->expandedReference).field("coverage_factor", answer.budget->coverageFactor)
+                .field("coverage_probability", evaluation.budget.coverage);
         if (!answer.others.empty()) {
             json.key("others").beginArray();
             for (const double other : answer.others)

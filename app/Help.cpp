@@ -11,19 +11,21 @@ std::string_view helpText() {
   spanwright figures FILE [options]     what follows from the readings of a CSV or a session
   spanwright certificate SESSION --to OUT.pdf [--xml OUT.xml [--country CC]] [--incomplete] [--replace]
                                         the certificate draft as PDF, and in the open schema for digital certificates
-  spanwright convert CSV --with SESSION --to OUT.csv [--indication COL] [--repeats Q] [--phase P] [--replace]
+  spanwright convert CSV --with SESSION --to OUT.csv|- [--indication COL] [--repeats Q] [--phase P] [--replace]
                                         new readings to values, each with its expanded uncertainty
-  spanwright coefficients SESSION [--form plain|c|csv] [--to FILE] [--phase P] [--replace]
+  spanwright coefficients SESSION [--form plain|c|csv] [--to FILE|-] [--phase P] [--replace]
                                         the function for a data logger, in as few digits as its uncertainty allows
   spanwright check SESSION              verifies the seal, recomputes, compares with the stored results
   spanwright self-test [--to OUT.pdf [--replace]]
                                         recomputes published cases
   spanwright --help, --version
 
-  --replace writes over a file that holds something; what is read is never written over
+  A result of the same command that nobody changed is written anew. --replace writes over any other file that holds something;
+  what is read, and a session, is never written over. "-" is standard output, for a table and for coefficients only.
 
 Options of convert and coefficients
-  --indication COL                      column of the indications, by name or number from 1; by the name of the calibration otherwise
+  --indication COL                      column of the indications, by name or number from 1; otherwise the one named as in the
+                                        calibration, or the only one that can be meant
   --repeats Q|inf                       each row is the mean of Q new readings: repeatability is divided by Q, the rest stays; inf: no repeatability
   --phase as-found|as-left              whose function
   --missing WORD, --decimal comma|point, --separator S, --encoding E

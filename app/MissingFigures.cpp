@@ -72,6 +72,8 @@ Reason reasonOf(const std::string& path, const Rule* rule, const PhaseEvaluation
     for (const char* scatters : {"at.tolerance", "diagnostics.breusch_pagan", "diagnostics.linearity"})
         if (exact && path.starts_with(scatters))
             return {"no-scatter", false};
+    if (path.starts_with("at.tolerance") && evaluation.fit && evaluation.fit->covarianceScale == CovarianceScale::Stated)
+        return {"stated-covariance", false};
     if (freedom && path.starts_with("at."))
         return {"outside-domain", false};
     if (path.starts_with("degrees."))

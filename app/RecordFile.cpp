@@ -7,6 +7,7 @@
 #include "core/exchange/MatrixTable.h"
 #include "core/exchange/ReadingImport.h"
 #include "core/fit/StatedCovariance.h"
+#include "core/record/Fields.h"
 #include "core/session/SessionJson.h"
 #include "ui/words/Words.h"
 
@@ -19,17 +20,6 @@ namespace {
 constexpr OptionSpec known[] = {{"--reference"},   {"--indication"},   {"--set-point"}, {"--direction"}, {"--run"},    {"--u-reference"},
                                 {"--u-indication"}, {"--u-covariance"}, {"--uncertainty-matrix"}, {"--time"}, {"--decimal"},   {"--separator"}, {"--encoding"}, {"--missing"},
                                 {"--exclude"}, {"--positions"}};
-
-Result<std::size_t> indicationColumn(const Arguments& arguments, const CsvRules& rules, const Quantity& quantity) {
-    if (const auto text = arguments.value("--indication"))
-        return findColumn(rules, *text);
-    if (!quantity.name.empty())
-        if (const auto named = findColumn(rules, quantity.name))
-            return *named;
-    if (const auto first = firstNumbersBut(rules, std::nullopt))
-        return *first;
-    return Error(ErrorCode::ColumnMissing, {{"quantity", "indication"}});
-}
 
 /// Columns named by options; the first two columns of numbers stand in for those that are not named. A constant needs no
 /// reference: it is taken only where it is named, or where two columns are there and none is named.
@@ -108,7 +98,7 @@ Result<LoadedRecord> loadTable(const std::string& path, std::string_view bytes, 
     const auto mapping = mappingOf(arguments, *rules, choices->function);
     if (!mapping)
         return mapping.error().with("file", path);
-    if (const Error* doubt = doubtAboutNumbers(*rules, *mapping))
+    if (const Error* doubt = doubtToRefuse(*rules, *mapping))
         return doubt->with("file", path);
     Progress progress;
     auto imported = readReadings(bytes, *rules, *mapping, progress);
@@ -150,7 +140,7 @@ Result<LoadedRecord> loadSession(const std::string& path, std::string_view bytes
     if (!choices)
         return choices.error();
     session->record.choices = *choices;
-    return LoadedRecord{std::move(session->record), {}, std::move(session->broken)};
+    return LoadedRecord{std::move(session->record), {}, std::move(session->broken), true};
 }
 
 /// Covariances between readings from the file that the option names.
@@ -181,43 +171,13 @@ Result<void> takeMatrix(Record& record, const Arguments& arguments) {
 Result<void> exclude(Record& record, const std::vector<std::size_t>& rows) {
     for (const std::size_t row : rows) {
         if (row > record.readings->size())
-            return Error(ErrorCode::UsageValueBad, {{"option", "--exclude"}, {"text", std::to_string(row)}});
+            return Error(ErrorCode::ReadingMissing, {{"reading", std::to_string(row)}, {"last", std::to_string(record.readings->size())}});
         record.exclusions.edit().add({record.readings->ids()[row - 1], ExclusionReason::Other, "left out on the command line", {}, 0});
     }
     return {};
 }
 
 } // namespace
-
-Result<LoadedIndications> loadIndications(const std::string& path, const Arguments& arguments, const Quantity& quantity) {
-    auto file = FileBytes::read(path);
-    if (!file)
-        return file.error();
-    const auto wishes = wishesOf(arguments);
-    if (!wishes)
-        return wishes.error();
-    auto rules = guessRules(file->bytes(), *wishes);
-    if (!rules)
-        return rules.error().with("file", path);
-    const auto column = indicationColumn(arguments, *rules, quantity);
-    if (!column)
-        return column.error().with("file", path);
-    ImportMapping mapping;
-    mapping.indication = *column;
-    if (const Error* doubt = doubtAboutNumbers(*rules, mapping))
-        return doubt->with("file", path);
-    const std::string& unit = rules->columns[*column].unit;
-    if (!unit.empty() && !quantity.unit.empty() && unit != quantity.unit)
-        return Error(ErrorCode::UnitsDiffer, {{"name", columnLabel(*rules, *column)}, {"unit", unit}, {"expected", quantity.unit}, {"file", path}});
-    Progress progress;
-    auto imported = readReadings(file->bytes(), *rules, mapping, progress);
-    if (!imported)
-        return imported.error().with("file", path);
-    if (const CellIssue* issue = standingIssue(imported->issues, {}))
-        return issue->error(*rules).with("file", path);
-    std::vector<std::string> notes{understood(path, *rules, mapping)};
-    return LoadedIndications{std::move(*file), std::move(*rules), *column, std::move(imported->block.indication), std::move(notes)};
-}
 
 std::span<const OptionSpec> tableOptions() {
     return known;
@@ -230,6 +190,10 @@ Result<DecimalMark> decimalMark(const Arguments& arguments) {
     if (text == "comma")
         return DecimalMark::Comma;
     return Error(ErrorCode::UsageValueBad, {{"option", "--decimal"}, {"text", text}});
+}
+
+Error noReadingsOf(Phase phase) {
+    return Error(ErrorCode::NoReadings, {{"phase", std::string(nameOf(phase))}});
 }
 
 bool looksLikeSession(const std::string& path, std::string_view bytes) {
@@ -265,7 +229,7 @@ Result<LoadedRecord> loadRecord(const std::string& path, const Arguments& argume
     }
     const auto done = exclude(loaded->record, *excluded);
     if (!done)
-        return done.error();
+        return done.error().with("file", path);
     if (const auto taken = takeMatrix(loaded->record, arguments); !taken)
         return taken.error();
     return loaded;

@@ -2,7 +2,7 @@
 #include "app/Arguments.h"
 #include "app/Commands.h"
 #include "app/PaperApplication.h"
-#include "core/session/WholeFile.h"
+#include "app/ResultFile.h"
 #include "ui/selftest/SelfTest.h"
 
 #include <ostream>
@@ -16,10 +16,15 @@ int selfTestCommand(const Words& words, Console console) {
         return refuse(console, arguments.error());
     if (!arguments->files.empty())
         return refuse(console, Error(ErrorCode::UsageUnknownCommand, {{"text", arguments->files.front()}}));
-    const auto to = arguments->value("--to");
-    if (to)
-        if (const auto free = mayBeWritten(*to, {}, arguments->has("--replace") ? Replacing::Allowed : Replacing::Refused); !free)
+    std::optional<std::string> to;
+    if (arguments->has("--to")) {
+        const auto name = documentName(*arguments, "--to");
+        if (!name)
+            return refuse(console, name.error());
+        if (const auto free = resultFree(*name, {}, *arguments, isOwnValidationRecord); !free)
             return refuse(console, free.error());
+        to = *name;
+    }
     const SelfTestOutcome outcome = runSelfTest();
     console.out << selfTestText(outcome).toStdString();
     if (to) {

@@ -64,8 +64,10 @@ std::optional<std::size_t> firstNumbersBut(const CsvRules& rules, std::optional<
     return std::nullopt;
 }
 
-const Error* doubtAboutNumbers(const CsvRules& rules, const ImportMapping& mapping) {
+const Error* doubtToRefuse(const CsvRules& rules, const ImportMapping& mapping) {
     for (const Error& doubt : rules.doubts) {
+        if (doubt.code == ErrorCode::HeaderShort)
+            return &doubt;
         if (doubt.code != ErrorCode::DecimalMarkUnclear)
             continue;
         for (const auto& column : {mapping.reference, mapping.indication, mapping.setPoint, mapping.uReference, mapping.uIndication, mapping.uCovariance})

@@ -15,9 +15,9 @@ Result<CsvWishes> wishesOf(const Arguments& arguments);
 /// The first column of numbers that is not `other`; where there is none, the first column, so that its cells say what is wrong.
 std::optional<std::size_t> firstNumbersBut(const CsvRules& rules, std::optional<std::size_t> other);
 
-/// A number that could be read in two ways is not read at all: nobody looks over the first rows here, as in the window. Null where
-/// every number is certain.
-const Error* doubtAboutNumbers(const CsvRules& rules, const ImportMapping& mapping);
+/// What could be read in two ways is not read at all, as nobody looks over the first rows here: a number with an unclear decimal mark, a
+/// header that leaves open which column a name belongs to. Null where all that is taken is certain.
+const Error* doubtToRefuse(const CsvRules& rules, const ImportMapping& mapping);
 
 /// How a table was understood, on one line.
 std::string understood(const std::string& path, const CsvRules& rules, const ImportMapping& mapping);

@@ -21,16 +21,19 @@ enum class ErrorCode {
     FileChangedOnDisk,
     FileInUse,
     FileExists,
-    FileIsInput, ///< would be written over while it is read
+    FileIsInput,   ///< would be written over while it is read
+    FileIsSession, ///< a session is not written over by a result
     FileBinary,
     FileEncoding,
     // tables of text
     UnclosedQuote,
     RaggedRow,
+    HeaderShort, ///< names fewer columns than the rows have
     NotANumber,
     NumberTooLarge,
     ThousandsSeparator,
     ColumnMissing,
+    ColumnUnclear, ///< several could be meant
     NoDataRows,
     SeparatorUnclear,
     DecimalMarkUnclear,
@@ -50,6 +53,7 @@ enum class ErrorCode {
     ReasonMissing,
     // the record as a whole
     NoReadings,
+    ReadingMissing,
     TooFewReadings,
     ReferencesAllEqual,
     TooFewSetPoints,
@@ -60,6 +64,7 @@ enum class ErrorCode {
     NoSpread,
     TooFewReplicates,
     LevelZero,
+    MagnitudeUnfit, ///< squares of the numbers leave the range of arithmetic
     NoConvergence,
     NoInverse,
     FunctionUnknown,

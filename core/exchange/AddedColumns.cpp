@@ -3,6 +3,7 @@
 
 #include "core/exchange/FieldScanner.h"
 #include "core/exchange/TableWriter.h"
+#include "core/exchange/Words.h"
 
 #include <algorithm>
 
@@ -21,7 +22,6 @@ class LineCopier {
     std::size_t copyRow(std::string& to) {
         if (!scan_.toNextRow())
             return 0;
-        line_ = scan_.line();
         std::size_t cells = 0;
         auto after = FieldScanner::After::Separator;
         for (; after == FieldScanner::After::Separator; ++cells)
@@ -38,14 +38,40 @@ class LineCopier {
     }
     void copyRest(std::string& to) { to.append(copied_, scan_.end()); }
 
-    [[nodiscard]] std::size_t line() const { return line_; }
-    [[nodiscard]] std::size_t unclosedQuote() const { return scan_.unclosedQuote(); }
-
   private:
     FieldScanner scan_;
     const char* copied_;
-    std::size_t line_ = 0;
 };
+
+/// Whether a line of the header stands over the columns, and is no preamble.
+bool overColumns(std::size_t line, const CsvRules& rules) {
+    return line == rules.namesRow || line == rules.unitsRow;
+}
+
+/// The number of cells of the longest line of the table: separators at the end of lines make cells too. Error: RaggedRow where a reading
+/// holds something behind the columns.
+Result<std::size_t> widestLine(std::string_view text, const CsvRules& rules) {
+    FieldScanner scan(text, rules.separator, rules.quote);
+    std::size_t widest = rules.columns.size();
+    for (std::size_t line = 0; scan.toNextRow(); ++line) {
+        const std::size_t number = scan.line();
+        std::size_t cells = 0;
+        bool beyond = false;
+        auto after = FieldScanner::After::Separator;
+        for (; after == FieldScanner::After::Separator; ++cells) {
+            const FieldScanner::Field field = scan.next();
+            after = field.after;
+            beyond = beyond || (cells >= rules.columns.size() && !withoutBlanks(field.text).empty());
+        }
+        if (scan.unclosedQuote() != 0)
+            return Error(ErrorCode::UnclosedQuote, {{"line", std::to_string(scan.unclosedQuote())}});
+        if (line >= rules.headerRows && beyond)
+            return Error(ErrorCode::RaggedRow, {{"line", std::to_string(number)}});
+        if (line >= rules.headerRows || overColumns(line, rules))
+            widest = std::max(widest, cells);
+    }
+    return widest;
+}
 
 void append(std::string& to, const CsvRules& rules, DecimalMark mark, const AddedCell& cell) {
     to += rules.separator;
@@ -71,31 +97,32 @@ Result<std::string> withAddedColumns(std::string_view bytes, const CsvRules& rul
     if (!decoded)
         return decoded.error();
     const std::string_view text = decoded->text();
+    const auto width = widestLine(text, rules);
+    if (!width)
+        return width.error();
     std::string result;
     result.reserve(text.size() * 2);
     if (rules.encoding != Encoding::Utf8 || bytes.starts_with(ByteOrderMark))
         result += ByteOrderMark;
     LineCopier lines(text, rules);
-    for (std::size_t line = 0; line < rules.headerRows; ++line) {
+    const auto copyRow = [&] {
         const std::size_t here = lines.copyRow(result);
-        if (line != rules.namesRow && line != rules.unitsRow)
-            continue;
-        for (std::size_t missing = here; missing < rules.columns.size(); ++missing)
+        for (std::size_t missing = here; here > 0 && missing < *width; ++missing)
             append(result, rules, mark, {});
+        return here > 0;
+    };
+    for (std::size_t line = 0; line < rules.headerRows; ++line) {
+        if (!overColumns(line, rules)) {
+            lines.copyRow(result);
+            continue;
+        }
+        copyRow();
         for (const AddedColumn& column : added)
             append(result, rules, mark, {headCell(column, line, rules), false});
     }
-    for (std::size_t row = 0;; ++row) {
-        const std::size_t here = lines.copyRow(result);
-        if (lines.unclosedQuote() != 0)
-            return Error(ErrorCode::UnclosedQuote, {{"line", std::to_string(lines.unclosedQuote())}});
-        if (here == 0)
-            break;
-        if (here > rules.columns.size())
-            return Error(ErrorCode::RaggedRow, {{"line", std::to_string(lines.line())}});
+    for (std::size_t row = 0; copyRow(); ++row)
         for (const AddedCell& cell : cells(row))
             append(result, rules, mark, cell);
-    }
     lines.copyRest(result);
     return result;
 }

@@ -20,9 +20,9 @@ struct AddedCell {
 };
 using AddedCells = std::function<std::vector<AddedCell>(std::size_t row)>;
 
-/// The table with columns added to its right: what stands there already is kept character by character, lines without cells too.
-/// UTF-8; with a byte order mark where the bytes had one or were no UTF-8. Errors: as readTable(); RaggedRow (facts: line) where a
-/// row has more cells than the table has columns.
+/// The table with columns added to its right: what stands there already is kept character by character, lines without cells too;
+/// a line with fewer cells than others is filled up, so that what is added stands in its column. UTF-8; with a byte order mark where the bytes had one or were no UTF-8. Errors: as readTable(); RaggedRow (facts: line) where a
+/// reading holds something behind the columns of the table.
 Result<std::string> withAddedColumns(std::string_view bytes, const CsvRules& rules, DecimalMark mark, std::span<const AddedColumn> added,
                                      const AddedCells& cells);
 

@@ -98,6 +98,11 @@ SeparatorGuess guessSeparator(std::string_view text) {
     return {candidates.front().separator, closeSecond || closeAlone};
 }
 
+/// A line of remarks above a table of several columns names none of them.
+bool isRemark(const SampleRow& row, std::size_t width) {
+    return width > 1 && row.cells.size() == 1 && (row.cells.front().starts_with('#') || row.cells.front().starts_with('%'));
+}
+
 struct HeaderGuess {
     std::size_t rows = 0;
     std::optional<std::size_t> names, units;
@@ -127,7 +132,7 @@ HeaderGuess guessHeader(const std::vector<SampleRow>& rows, std::size_t width, c
         header.units = last;
         if (last > 0)
             header.names = last - 1;
-    } else {
+    } else if (!isRemark(rows[last], width)) {
         header.names = last;
     }
     return header;
@@ -172,6 +177,16 @@ void nameColumns(CsvRules& rules, const std::vector<SampleRow>& rows) {
         column.name = std::move(split.name);
         column.unit = std::move(split.unit);
     }
+}
+
+/// Where the header has fewer cells than the rows, nobody knows which of their columns has no name.
+void doubtShortHeader(CsvRules& rules, const std::vector<SampleRow>& rows) {
+    if (!rules.namesRow || rows[*rules.namesRow].cells.size() >= rules.columns.size())
+        return;
+    const SampleRow& header = rows[*rules.namesRow];
+    rules.doubts.push_back(Error(ErrorCode::HeaderShort, {{"line", std::to_string(header.line)},
+                                                         {"got", std::to_string(header.cells.size())},
+                                                         {"needed", std::to_string(rules.columns.size())}}));
 }
 
 /// Decides each column's kind, mark and date order from all its cells in the sample.
@@ -249,6 +264,7 @@ Result<CsvRules> guessRules(std::string_view bytes, const CsvWishes& wishes) {
     const std::span<const SampleRow> data = std::span(sample.rows).subspan(header.rows);
     rules.columns.resize(usedWidth(data, header.names ? &sample.rows[*header.names] : nullptr, width));
     nameColumns(rules, sample.rows);
+    doubtShortHeader(rules, sample.rows);
     judgeColumns(rules, data, wishes);
     return rules;
 }

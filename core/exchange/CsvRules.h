@@ -38,7 +38,7 @@ struct CsvRules {
     std::vector<CsvColumn> columns;
 
     /// What could also have been meant: SeparatorUnclear (facts: separator), DecimalMarkUnclear (facts: column, text),
-    /// DateOrderUnclear (facts: column, text). The guess stands in the rules all the same, and is shown before it is used.
+    /// DateOrderUnclear (facts: column, text), HeaderShort (facts: line, got, needed). The guess stands in the rules all the same, and is shown before it is used.
     std::vector<Error> doubts;
 };
 

@@ -12,6 +12,7 @@
 
 #include <algorithm>
 #include <charconv>
+#include <cmath>
 
 namespace spanwright {
 
@@ -71,6 +72,53 @@ Result<Weighting> chosenWeighting(const FitTask& task) {
                : varianceFunctionWeighting(task.sample, task.x, even->linear.residual);
 }
 
+/// Within these bounds the fourth powers of numbers, and the squares of their quotients, can be held by a double.
+constexpr double LeastMagnitude = 1e-70, MostMagnitude = 1e70;
+
+/// Whether small values may stand beside others, where they count as zero, or each counts by itself, as a variance that divides.
+enum class Smallness { BesideOthers, Never };
+
+struct Magnitudes {
+    const PairColumn& column;
+    const char* quantity;
+    Smallness smallness;
+};
+
+Result<void> checkMagnitude(const Sample& sample, const Magnitudes& checked) {
+    std::vector<std::size_t> small, large;
+    std::size_t zeros = 0;
+    for (std::size_t i = 0; i < checked.column.size(); ++i) {
+        const double magnitude = std::fabs(checked.column.high[i]);
+        zeros += magnitude == 0 ? 1 : 0;
+        if (magnitude > MostMagnitude)
+            large.push_back(i);
+        else if (magnitude > 0 && magnitude < LeastMagnitude)
+            small.push_back(i);
+    }
+    const bool vanish = !small.empty() && (checked.smallness == Smallness::Never || small.size() + zeros == checked.column.size());
+    if (large.empty() && !vanish)
+        return {};
+    return Error(ErrorCode::MagnitudeUnfit, {{"quantity", checked.quantity},
+                                             {"side", large.empty() ? "small" : "large"},
+                                             {"limit", large.empty() ? "1e-70" : "1e70"},
+                                             {"rows", rowsFact(sample, large.empty() ? small : large)}});
+}
+
+/// Numbers whose squares vanish or overflow would give s = 0, or none, without a word.
+Result<void> checkMagnitudes(const Sample& sample) {
+    // On a grid of 64-bit integers the scale alone says so in all but unheard-of cases.
+    const auto ordinary = [](int scale) { return scale > -50 && scale < 70; };
+    if (sample.grids && ordinary(sample.grids->referenceScale) && ordinary(sample.grids->indicationScale))
+        return {};
+    for (const Magnitudes& checked : {Magnitudes{sample.reference, "reference", Smallness::BesideOthers},
+                                      Magnitudes{sample.indication, "indication", Smallness::BesideOthers},
+                                      Magnitudes{sample.uReference, "uncertainty", Smallness::Never},
+                                      Magnitudes{sample.uIndication, "uncertainty", Smallness::Never}})
+        if (const auto fits = checkMagnitude(sample, checked); !fits)
+            return fits;
+    return {};
+}
+
 bool straight(const FunctionChoice& function) {
     return function.family == FunctionFamily::Line || function.family == FunctionFamily::Proportional;
 }
@@ -106,6 +154,8 @@ Result<FitOutcome> fitFunction(const Sample& sample, const Choices& choices) {
     const bool indication = direction == FitDirection::Indication;
     const PairColumn& x = indication ? sample.reference : sample.indication;
     const PairColumn& y = indication ? sample.indication : sample.reference;
+    if (const auto fits = checkMagnitudes(sample); !fits)
+        return fits.error();
     if (sample.grids) {
         if (choices.sharedError == SharedError::Budget)
             if (auto streamed = fitMany(sample, choices))

@@ -3,20 +3,7 @@
 
 #include <QSaveFile>
 
-#include <filesystem>
-
 namespace spanwright {
-
-Result<void> mayBeWritten(const std::string& path, const std::vector<std::string>& inputs, Replacing replacing) {
-    std::error_code unknown;
-    for (const std::string& input : inputs)
-        if (std::filesystem::equivalent(path, input, unknown))
-            return Error(ErrorCode::FileIsInput, {{"file", path}});
-    const bool holdsSomething = std::filesystem::is_regular_file(path, unknown) && std::filesystem::file_size(path, unknown) > 0;
-    if (holdsSomething && replacing == Replacing::Refused)
-        return Error(ErrorCode::FileExists, {{"file", path}});
-    return {};
-}
 
 Result<void> writeWhole(const std::string& path, const std::string& bytes) {
     QSaveFile file(QString::fromStdString(path));

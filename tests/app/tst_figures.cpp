@@ -159,6 +159,9 @@ void TestFigures::excludedRowsAreShownAndDoNotCount() {
     // A cell that is no number does not matter in a row that is excluded.
     const std::string words = desk.file("words.csv", "x,y\n0,1\n1,3\n2,OVR\n3,7\n4,9\n");
     QCOMPARE(number(runWords({"figures", words, "--exclude", "3", "--json"}).json(), {"coefficients", "1", "value"}), 2.0);
+    const Ran beyond = runWords({"figures", file, "--exclude", "99"});
+    QCOMPARE(beyond.status, 1);
+    QVERIFY2(beyond.err.find("there is no reading 99; the last one is") != std::string::npos, beyond.err.c_str());
 }
 
 void TestFigures::aFigureThatDoesNotExistIsNullWithItsReason() {
@@ -226,7 +229,7 @@ void TestFigures::wrongUsageIsStatusTwo_data() {
     QTest::newRow("no number") << QStringList{"a.csv", "--at", "1,x"} << "1,x";
     QTest::newRow("repeats 0") << QStringList{"a.csv", "--read", "1", "--repeats", "0"} << "--repeats";
     QTest::newRow("row 0") << QStringList{"a.csv", "--exclude", "0"} << "--exclude";
-    QTest::newRow("row beyond the end") << QStringList{"a.csv", "--exclude", "4"} << "--exclude";
+    QTest::newRow("robust without its method") << QStringList{"a.csv", "--robust", "huber"} << "--method robust";
     QTest::newRow("fit of nothing") << QStringList{"a.csv", "--fit", "both"} << "both";
     QTest::newRow("decimal mark") << QStringList{"a.csv", "--decimal", "dot"} << "dot";
     QTest::newRow("encoding") << QStringList{"a.csv", "--encoding", "ebcdic"} << "ebcdic";

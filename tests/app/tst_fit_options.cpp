@@ -103,6 +103,55 @@ class FitOptions : public QObject {
         }
     }
 
+    /// Stated uncertainties leave no spread for a tolerance band: null, with the reason, and not simply absent.
+    void aToleranceBandNeedsASpread() {
+        Desk desk;
+        const Ran ran = runWords(with(with({"figures", desk.file("six.csv", Six), "--json"}, Stated), {"--at", "3"}));
+        const QJsonObject at = ran.json()["at"].toArray()[0].toObject();
+        QVERIFY(at.contains(QStringLiteral("tolerance")) && at["tolerance"].isNull());
+        QVERIFY2(ran.out.find("at.tolerance") != std::string::npos && ran.out.find("taken as they are") != std::string::npos, ran.out.c_str());
+    }
+
+    /// U of a value read back is at the coverage of the budget, which stands beside it: 95.45 % unless a session says otherwise.
+    void theCoverageOfUStandsBesideIt() {
+        Desk desk;
+        const QJsonObject read = runWords({"figures", desk.file("line.csv", "x,y\n0,1\n1,3\n2,5.1\n3,7\n"), "--read", "4", "--json"}).json()["read"].toArray()[0].toObject();
+        QCOMPARE(number(read, {"coverage_probability"}), 0.9545);
+        // Student's quantile of two degrees of freedom in closed form.
+        const double p = (1 - 0.9545) / 2;
+        QVERIFY(std::fabs(number(read, {"coverage_factor"}) - (1 - 2 * p) / std::sqrt(2 * p * (1 - p))) < 1e-9);
+    }
+
+    void anOptionThatChangesNothingIsSaid_data() {
+        QTest::addColumn<QStringList>("options");
+        QTest::addColumn<QString>("says");
+        const auto row = [](const char* name, const QStringList& options, const char* says) { QTest::newRow(name) << options << QString::fromUtf8(says); };
+        row("repeats of nothing", {"--repeats", "4"}, "--repeats changes nothing here");
+        row("share of nothing", {"--tolerance-share", "0.9"}, "--tolerance-share changes nothing here");
+        row("one way only", {"--function", "nernst", "--fit", "reference"}, "--fit changes nothing here: nernst always gives the indication");
+        row("more outliers than readings", {"--outliers", "20"}, "--outliers 20: 4 were tried, as 6 readings");
+        row("uncertainties without weights", {"--u-indication", "uy"}, "--weights stated takes it");
+        row("an exact abscissa", {"--u-reference", "ux"}, "--method both-uncertain takes it");
+        row("both ways", {"--u-reference", "ux", "--u-indication", "uy", "--method", "both-uncertain"}, "");
+        row("weights from them", {"--u-indication", "uy", "--weights", "stated"}, "");
+        row("repeats of a place", {"--at", "3", "--repeats", "4"}, "");
+        row("outliers that are there", {"--outliers", "4"}, "");
+    }
+    void anOptionThatChangesNothingIsSaid() {
+        QFETCH(QStringList, options);
+        QFETCH(QString, says);
+        Desk desk;
+        const std::string file = desk.file("six.csv", Six);
+        std::vector<std::string> words{"figures", file, "--reference", "x", "--indication", "y", "--json"};
+        for (const QString& option : options)
+            words.push_back(option.toStdString());
+        const Ran ran = runWords(words);
+        QVERIFY2(ran.status == 0, ran.err.c_str());
+        QCOMPARE(std::count(ran.err.begin(), ran.err.end(), '\n'), says.isEmpty() ? 1 : 2); // the first says how the table was read
+        QVERIFY2(QString::fromStdString(ran.err).contains(says), ran.err.c_str());
+        QVERIFY(!ran.json().isEmpty());
+    }
+
     void jointIntervalsAreWider() {
         Desk desk;
         const QJsonObject figures = runWords({"figures", desk.file("line.csv", "x,y\n0,1\n1,3\n2,5.1\n3,7\n"), "--json"}).json();
@@ -135,6 +184,10 @@ class FitOptions : public QObject {
         row("proportional at zero", "x,y\n0,1\n1,3\n2,5\n", {"--weights", "proportional"}, "no value at level zero, in row 1");
         row("none stated", two, {"--weights", "stated"}, "row 1, 2 has none");
         row("zero stated", "x,y,u\n1,1,0.1\n2,2,0\n3,3,0.1\n", {"--weights", "stated", "--u-indication", "u"}, "uncertainty in row 2 is zero or negative");
+        row("squares that vanish", "x,y\n1,1e-300\n2,2.1e-300\n3,0\n", {}, "the indications in row 1, 2 are below 1e-70 in magnitude");
+        row("squares that overflow", "x,y\n1,1\n2e80,2\n3e80,3\n", {}, "the reference values in row 2, 3 are above 1e70");
+        row("an uncertainty that vanishes", "x,y,u\n1,1,0.1\n2,2,1e-200\n3,3,0.1\n", {"--weights", "stated", "--u-indication", "u"},
+            "the stated uncertainties in row 2 are below 1e-70");
         row("curve with both uncertain", Six, {"--method", "both-uncertain", "--function", "polynomial:2"}, "not “polynomial:2”");
         row("shared error scaled", two, {"--fit", "reference", "--shared-error", "fit"}, "");
     }

@@ -11,6 +11,7 @@
 
 using namespace spanwright;
 using namespace spanwright::test;
+using Words = std::vector<std::string>;
 
 namespace {
 
@@ -38,6 +39,8 @@ class TestSessions : public QObject {
     void figuresAndCertificateRefuseAFileThatWasChanged();
     void aCertificateIsDrawnUp();
     void aCertificateIsWrittenOverNothing();
+    void ownDocumentsAreWrittenAnew();
+    void columnsOfATableAreNotForASession();
     void aCertificateWithGapsIsBlockedAndEachIsNamed();
     void whatIsNoSessionIsRefused();
     void everyTruncationIsRefusedOrWarnedOf();
@@ -113,7 +116,10 @@ void TestSessions::figuresAndCertificateRefuseAFileThatWasChanged() {
         QVERIFY2(ran.err.find("pt.spanwright: The seal does not hold") != std::string::npos, ran.err.c_str());
         QVERIFY(ran.out.empty());
     }
-    QVERIFY(!QFile::exists(QString::fromStdString(desk.path("a.pdf"))));
+    const Ran certificate = runWords({"certificate", file, "--to", desk.path("a.pdf"), "--xml", desk.path("a.xml")});
+    QVERIFY2(certificate.err.find("pt.spanwright: no certificate was written") != std::string::npos, certificate.err.c_str());
+    for (const char* name : {"a.pdf", "a.xml"})
+        QVERIFY(!QFile::exists(QString::fromStdString(desk.path(name))));
 }
 
 void TestSessions::aCertificateIsDrawnUp() {
@@ -161,6 +167,49 @@ void TestSessions::aCertificateIsWrittenOverNothing() {
     QVERIFY(held(old).startsWith("%PDF-"));
 }
 
+/// The same command twice is no mistake. A document of another kind, or one that was added to since, stays.
+void TestSessions::ownDocumentsAreWrittenAnew() {
+    Desk desk;
+    const std::string file = desk.file("pt.spanwright", sessionBytes(pressureTransmitter(), {})), pdf = desk.path("a.pdf"), xml = desk.path("a.xml"), record = desk.path("r.pdf");
+    const auto bytesOf = [](const std::string& path) {
+        QFile read(QString::fromStdString(path));
+        return read.open(QIODevice::ReadOnly) ? read.readAll() : QByteArray();
+    };
+    const Words certificate{"certificate", file, "--to", pdf, "--xml", xml, "--country", "NO"};
+    for (int time = 0; time < 2; ++time) {
+        const Ran ran = runWords(certificate);
+        QVERIFY2(ran.status == 0, ran.err.c_str());
+        QCOMPARE(runWords({"self-test", "--to", record}).status, 0);
+    }
+    QCOMPARE(runWords({"self-test", "--to", pdf}).status, 1);
+    QCOMPARE(runWords({"certificate", file, "--to", record}).status, 1);
+    QCOMPARE(runWords({"certificate", file, "--to", xml}).status, 1);
+    const QByteArray signedXml = bytesOf(xml).replace("NV-20318", "NV-20319"), whole = bytesOf(pdf);
+    desk.file("a.xml", signedXml);
+    QCOMPARE(runWords(certificate).status, 1);
+    QCOMPARE(bytesOf(xml), signedXml);
+    QVERIFY(QFile::remove(QString::fromStdString(xml)));
+    // A signature is appended to a PDF with references of its own (ISO 32000-1, 7.5.6).
+    desk.file("a.pdf", whole + "5 0 obj\n<< /Type /Sig >>\nendobj\nxref\n0 0\ntrailer\n<< >>\nstartxref\n0\n%%EOF\n");
+    const Ran onSigned = runWords(certificate);
+    QCOMPARE(onSigned.status, 1);
+    QVERIFY(!QFile::exists(QString::fromStdString(xml)));
+    Words replacing = certificate;
+    replacing.emplace_back("--replace");
+    QCOMPARE(runWords(replacing).status, 0);
+    const Ran idle = runWords({"certificate", file, "--to", pdf, "--country", "NO"});
+    QVERIFY2(idle.status == 0 && idle.err.find("--country changes nothing") != std::string::npos, idle.err.c_str());
+}
+
+void TestSessions::columnsOfATableAreNotForASession() {
+    Desk desk;
+    const std::string file = desk.file("pt.spanwright", sessionBytes(pressureTransmitter(), {}));
+    const Ran ran = runWords({"figures", file, "--reference", "2"});
+    QCOMPARE(ran.status, 2);
+    QVERIFY2(ran.err.find("--reference is for a table") != std::string::npos, ran.err.c_str());
+    QCOMPARE(runWords({"figures", file, "--decimal", "comma", "--at", "5,5"}).status, 0);
+}
+
 void TestSessions::aCertificateWithGapsIsBlockedAndEachIsNamed() {
     Desk desk;
     Record record = pressureTransmitter();
@@ -170,6 +219,7 @@ void TestSessions::aCertificateWithGapsIsBlockedAndEachIsNamed() {
     const Ran blocked = runWords({"certificate", file, "--to", desk.path("a.pdf")});
     QCOMPARE(blocked.status, 3);
     QVERIFY2(std::count(blocked.err.begin(), blocked.err.end(), '\n') >= 3, blocked.err.c_str());
+    QVERIFY2(blocked.err.find("none was written") != std::string::npos, blocked.err.c_str());
     QVERIFY2(QString::fromStdString(blocked.err).contains("customer", Qt::CaseInsensitive), blocked.err.c_str());
     QVERIFY2(QString::fromStdString(blocked.err).contains("serial", Qt::CaseInsensitive), blocked.err.c_str());
     QVERIFY(!QFile::exists(QString::fromStdString(desk.path("a.pdf"))));

@@ -4,6 +4,7 @@
 #include "core/certificate/CertificateXml.h"
 #include "core/evaluate/KeyFigures.h"
 #include "core/session/SessionJson.h"
+#include "core/session/TextMark.h"
 #include "ui/certificate/CertificatePages.h"
 #include "ui/certificate/CertificateText.h"
 
@@ -114,7 +115,7 @@ Result<void> writeCertificateXml(const Record& record, const Evaluation& evaluat
     QSaveFile file(path);
     if (!file.open(QIODevice::WriteOnly))
         return fileError(ErrorCode::FileNotWritable, path, file.errorString());
-    const std::string xml = certificateXml(certificate, parts);
+    const std::string xml = withMark(certificateXml(certificate, parts), {"<!-- ", " -->"});
     if (file.write(xml.data(), static_cast<qint64>(xml.size())) != static_cast<qint64>(xml.size()) || !file.commit())
         return fileError(ErrorCode::FileWriteFailed, path, file.errorString());
     return {};

@@ -4,6 +4,7 @@
 #include "core/evaluate/FunctionCode.h"
 #include "core/exchange/TableWriter.h"
 #include "core/fit/CalibrationFunction.h"
+#include "core/session/TextMark.h"
 #include "ui/words/Words.h"
 
 #include <QCoreApplication>
@@ -191,6 +192,10 @@ class Writing {
     Side reference_, indication_;
 };
 
+QString marked(const QString& text, const MarkFrame& frame) {
+    return q(withMark(text.toStdString(), frame));
+}
+
 } // namespace
 
 std::optional<CoefficientForm> coefficientForm(const QString& name) {
@@ -206,9 +211,9 @@ std::optional<CoefficientForm> coefficientForm(const QString& name) {
 QString coefficientText(const Record& record, const PrintedFunction& printed, CoefficientForm form) {
     const Writing writing(record, printed);
     switch (form) {
-    case CoefficientForm::Plain: return writing.plain();
-    case CoefficientForm::C: return writing.c();
-    case CoefficientForm::Csv: return writing.csv();
+    case CoefficientForm::Plain: return marked(writing.plain(), {{}, {}});
+    case CoefficientForm::C: return marked(writing.c() + QLatin1Char('\n'), {"/* ", " */"});
+    case CoefficientForm::Csv: return marked(writing.csv(), {"about,,", ","});
     }
     return {};
 }

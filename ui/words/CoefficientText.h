@@ -16,7 +16,7 @@ enum class CoefficientForm {
 /// "plain", "c", "csv".
 std::optional<CoefficientForm> coefficientForm(const QString& name);
 
-/// The whole text: what it is of, the function, where it is valid, check values, and that it is no certificate. Numbers have a decimal
+/// The whole text: what it is of, the function, where it is valid, check values, that it is no certificate, and the program's mark. Numbers have a decimal
 /// point in every locale, since machines read them.
 QString coefficientText(const Record& record, const PrintedFunction& printed, CoefficientForm form);
 

@@ -1,4 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/record/Fields.h"
 #include "ui/words/Sentence.h"
 #include "ui/words/Words.h"
 
@@ -16,7 +17,17 @@ struct ErrorText {
   public:
     static QString of(ErrorCode code, Sentence& facts);
     static QString methodUnfit(Sentence& facts);
+    static QString numbersOf(Sentence& facts);
 };
+
+QString ErrorText::numbersOf(Sentence& facts) {
+    const QString quantity = facts.plain("quantity");
+    if (quantity == QLatin1String("reference"))
+        return tr("the reference values");
+    if (quantity == QLatin1String("indication"))
+        return tr("the indications");
+    return quantity == QLatin1String("uncertainty") ? tr("the stated uncertainties") : tr("the numbers");
+}
 
 QString ErrorText::methodUnfit(Sentence& facts) {
     const QString reason = facts.plain("reason"), function = facts.quoted("text", tr("this function"));
@@ -61,6 +72,8 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
     case ErrorCode::FileExists:
         return tr("there is such a file already, and it was left as it is. Give another name, or add --replace to write over it.");
     case ErrorCode::FileIsInput: return tr("this file is read here and would be written over. Give another name for the result.");
+    case ErrorCode::FileIsSession:
+        return tr("this file is a session, and a result is never written over one. Give another name for the result.");
     case ErrorCode::FileBinary: return tr("this is not text. Export the readings as CSV and open that file.");
     case ErrorCode::FileEncoding:
         return tr("the bytes are not valid in the encoding %1. State the encoding in which the file was written.")
@@ -70,6 +83,10 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
     case ErrorCode::RaggedRow:
         return tr("the line has more or fewer cells than the others%1. Complete it, or check the separator.")
             .arg(!facts.has("text") ? QString() : facts.plain("text").isEmpty() ? tr(": it ends early") : tr(" (%1)").arg(facts.quoted("text", {})));
+    case ErrorCode::HeaderShort:
+        return tr("the header names %1 of %2 columns, so it is not certain to which of them a name belongs. Complete the header, remove it, or "
+                  "check the separator.")
+            .arg(facts.plain("got", tr("only some")), facts.plain("needed", tr("the")));
     case ErrorCode::NotANumber:
         return tr("%1 is not a number. Correct the cell, or leave its row out by stating it as excluded.")
             .arg(facts.quoted("text", tr("the cell")));
@@ -83,6 +100,12 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
         return facts.has("quantity") ? tr("no column is left for the %1. Check the separator, or name the columns.").arg(facts.plain("quantity"))
                                      : tr("there is no column %1. Name a column of the header, or its number from 1.")
                                            .arg(facts.quoted("name", facts.quoted("column", tr("of that name"))));
+    case ErrorCode::ColumnUnclear:
+        if (facts.has("reference"))
+            return tr("the column %1 is named like the reference, and no other holds the %2%3. Name the column of the %2 with --%2.")
+                .arg(facts.quoted("reference", {}), facts.plain("quantity"), facts.has("name") ? tr(", %1").arg(facts.quoted("name", {})) : QString());
+        return tr("it is not certain which column holds the %1: %2 could be meant, and none is named %3. Name the column with --%1.")
+            .arg(facts.plain("quantity", QStringLiteral("indication")), facts.plain("columns", tr("several")), facts.quoted("name", tr("so")));
     case ErrorCode::NoDataRows: return tr("there is no row of readings under the header. Choose the file that holds the readings.");
     case ErrorCode::SeparatorUnclear: return tr("the separator of the columns is not certain; %1 was taken. State it where the guess is wrong.")
             .arg(facts.quoted("separator", tr("one")));
@@ -120,7 +143,13 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
         return tr("%1 is outside what is possible here. Check the digits and the unit.").arg(facts.quoted("text", tr("the value")));
     case ErrorCode::ReasonMissing: return tr("a reason is needed. Choose one from the list, or write it in words.");
     // the record as a whole
-    case ErrorCode::NoReadings: return tr("there are no readings. Enter readings, or take in a file.");
+    case ErrorCode::NoReadings:
+        if (const auto phase = valueOf<Phase>(facts.plain("phase").toStdString()))
+            return tr("there are no readings %1. Leave --phase out, or state the phase of the readings in a session.").arg(phaseText(*phase));
+        return tr("there are no readings. Enter readings, or take in a file.");
+    case ErrorCode::ReadingMissing:
+        return tr("there is no reading %1; the last one is %2. Readings are counted from 1, without the header of a table.")
+            .arg(facts.plain("reading", tr("of that number")), facts.plain("last", tr("before it")));
     case ErrorCode::TooFewReadings:
         return tr("readings: %1, too few for this function, which needs %2. Take more readings, or choose a simpler function.")
             .arg(facts.plain("got", tr("not enough")), facts.plain("needed", tr("more")));
@@ -156,6 +185,12 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
         return tr("weights proportional to level have no value at level zero, in row %1. Exclude it with a reason, or choose weights that "
                   "grow with level from a constant.")
             .arg(facts.plain("rows", tr("one of the table")));
+    case ErrorCode::MagnitudeUnfit:
+        return facts.plain("side") == QLatin1String("small")
+                   ? tr("%1 in row %2 are below %3 in magnitude, so small that their squares vanish. State them in a smaller unit.")
+                         .arg(numbersOf(facts), facts.plain("rows", tr("one of the table")), facts.plain("limit", tr("what can be squared")))
+                   : tr("%1 in row %2 are above %3 in magnitude, so large that their squares cannot be held. State them in a larger unit.")
+                         .arg(numbersOf(facts), facts.plain("rows", tr("one of the table")), facts.plain("limit", tr("what can be squared")));
     case ErrorCode::NoConvergence:
         return tr("the fit did not settle: %1. Choose another function, or check the readings for slips.")
             .arg(facts.plain("reason", tr("the steps did not grow smaller")));
