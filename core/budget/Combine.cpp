@@ -77,7 +77,14 @@ double coverageFactor(double coverage, double degreesOfFreedom) {
     return boost::math::quantile(boost::math::complement(boost::math::students_t(degreesOfFreedom), tail));
 }
 
-SetPointBudget combine(double setPoint, Direction direction, std::vector<BudgetItem> items, double coverage, double slope) {
+double CoverageFactors::at(double degreesOfFreedom) {
+    const auto [place, fresh] = found_.try_emplace(degreesOfFreedom);
+    if (fresh)
+        place->second = coverageFactor(coverage_, degreesOfFreedom);
+    return place->second;
+}
+
+SetPointBudget combine(double setPoint, Direction direction, std::vector<BudgetItem> items, CoverageFactors& factors, double slope) {
     SetPointBudget budget;
     budget.setPoint = setPoint;
     budget.direction = direction;
@@ -89,11 +96,10 @@ SetPointBudget combine(double setPoint, Direction direction, std::vector<BudgetI
         item.share = variance > 0 ? item.contribution * item.contribution / variance : 0;
     budget.effectiveDegreesOfFreedom = effectiveDegreesOfFreedom(items, budget.combined);
     budget.distribution = std::isinf(budget.effectiveDegreesOfFreedom) ? Distribution::Normal : Distribution::Student;
-    budget.coverageFactor = coverageFactor(coverage, budget.effectiveDegreesOfFreedom);
-    if (rectangularDominates(items, budget.combined)) {
+    const bool rectangular = rectangularDominates(items, budget.combined);
+    budget.coverageFactor = rectangular ? factors.coverage() * std::sqrt(3.0) : factors.at(budget.effectiveDegreesOfFreedom);
+    if (rectangular)
         budget.distribution = Distribution::Rectangular;
-        budget.coverageFactor = coverage * std::sqrt(3.0);
-    }
     budget.expanded = budget.coverageFactor * budget.combined;
     budget.expandedReference = budget.expanded / std::fabs(slope);
     budget.items = std::move(items);

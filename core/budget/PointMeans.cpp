@@ -38,13 +38,9 @@ struct Cell {
 
 struct Cells {
     Cell unknown, rising, falling;
-};
 
-Cell& cellOf(std::vector<Cells>& cells, const Sample& sample, std::size_t i) {
-    Cells& at = cells[static_cast<std::size_t>(sample.group[i])];
-    const Direction direction = sample.direction.empty() ? Direction::Unknown : sample.direction[i];
-    return direction == Direction::Rising ? at.rising : direction == Direction::Falling ? at.falling : at.unknown;
-}
+    [[nodiscard]] Cell& from(Direction direction) { return direction == Direction::Rising ? rising : direction == Direction::Falling ? falling : unknown; }
+};
 
 /// Very many readings of no run, held as plain numbers: sums of the distances from the first of each set point, which are
 /// short numbers, so that plain sums lose nothing that shows.
@@ -66,15 +62,13 @@ std::vector<Cells> cellsOfMany(const Sample& sample) {
     }
     std::vector<Cells> cells(sums.size());
     for (std::size_t g = 0; g < sums.size(); ++g) {
-        const auto fill = [&](Cell& cell, Direction direction) {
+        for (const Direction direction : {Direction::Unknown, Direction::Rising, Direction::Falling}) {
             const Distances& at = sums[g][static_cast<std::size_t>(direction)];
+            Cell& cell = cells[g].from(direction);
             cell.n = static_cast<std::size_t>(at.n);
             cell.reference = DoubleDouble(at.fromReference) * at.n + at.reference;
             cell.indication = DoubleDouble(at.fromIndication) * at.n + at.indication;
-        };
-        fill(cells[g].unknown, Direction::Unknown);
-        fill(cells[g].rising, Direction::Rising);
-        fill(cells[g].falling, Direction::Falling);
+        }
     }
     return cells;
 }
@@ -84,7 +78,7 @@ std::vector<Cells> cellsOf(const Sample& sample) {
         return cellsOfMany(sample);
     std::vector<Cells> cells(sample.groupValue.size());
     for (std::size_t i = 0; i < sample.size(); ++i)
-        cellOf(cells, sample, i).add(sample, i);
+        cells[static_cast<std::size_t>(sample.group[i])].from(sample.direction.empty() ? Direction::Unknown : sample.direction[i]).add(sample, i);
     return cells;
 }
 
@@ -130,22 +124,19 @@ PointMeans together(const Cells& cells, double setPoint, const Item& item, const
 std::vector<PointMeans> pointMeans(const Record& record, const Sample& sample, const Fit* fit) {
     if (sample.groupValue.size() > MostStatedPoints)
         return {};
-    const std::vector<Cells> cells = cellsOf(sample);
+    std::vector<Cells> cells = cellsOf(sample);
     std::vector<PointMeans> points;
     for (std::size_t g = 0; g < cells.size(); ++g) {
-        const Cells& at = cells[g];
+        Cells& at = cells[g];
         const double setPoint = sample.groupValue[g];
         if (!record.choices.separateDirections) {
             if (at.unknown.n + at.rising.n + at.falling.n > 0)
                 points.push_back(together(at, setPoint, record.item, fit));
             continue;
         }
-        if (at.unknown.n > 0)
-            points.push_back(meansOf(at.unknown, setPoint, Direction::Unknown));
-        if (at.rising.n > 0)
-            points.push_back(meansOf(at.rising, setPoint, Direction::Rising));
-        if (at.falling.n > 0)
-            points.push_back(meansOf(at.falling, setPoint, Direction::Falling));
+        for (const Direction direction : {Direction::Unknown, Direction::Rising, Direction::Falling})
+            if (const Cell& cell = at.from(direction); cell.n > 0)
+                points.push_back(meansOf(cell, setPoint, direction));
     }
     return points;
 }

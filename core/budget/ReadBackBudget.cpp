@@ -65,19 +65,35 @@ bool canBeReadBack(const Fit& fit) {
     return fit.function.family != FunctionFamily::Constant && degreesOfFreedom(fit) > 0 && fit.high > fit.low;
 }
 
-SetPointBudget combined(const Record& record, ReadBackLines lines) {
-    return combine(lines.place.reference, Direction::Unknown, std::move(lines.items), record.budget.coverage.toDouble(), lines.place.slope);
+CoverageFactors factorsOf(const Record& record) {
+    return CoverageFactors(record.budget.coverage.toDouble());
+}
+
+SetPointBudget combined(ReadBackLines lines, CoverageFactors& factors) {
+    return combine(lines.place.reference, Direction::Unknown, std::move(lines.items), factors, lines.place.slope);
+}
+
+std::optional<SetPointBudget> budgetAt(const Record& record, const Fit& fit, double abscissa, double scatter, CoverageFactors& factors) {
+    if (!canBeReadBack(fit) || fit.curve->derivative(abscissa) == 0)
+        return std::nullopt;
+    ReadBackLines here = linesAt(record, fit, abscissa, scatter);
+    return std::isfinite(here.variance()) ? std::optional(combined(std::move(here), factors)) : std::nullopt;
 }
 
 } // namespace
 
 std::optional<SetPointBudget> readBackBudget(const Record& record, const Fit& fit, double abscissa, double scatter) {
-    if (!canBeReadBack(fit) || fit.curve->derivative(abscissa) == 0)
-        return std::nullopt;
-    ReadBackLines here = linesAt(record, fit, abscissa, scatter);
-    if (!std::isfinite(here.variance()))
-        return std::nullopt;
-    return combined(record, std::move(here));
+    CoverageFactors factors = factorsOf(record);
+    return budgetAt(record, fit, abscissa, scatter, factors);
+}
+
+std::vector<std::optional<SetPointBudget>> readBackBudgets(const Record& record, const Fit& fit, const std::vector<double>& abscissae) {
+    CoverageFactors factors = factorsOf(record);
+    std::vector<std::optional<SetPointBudget>> budgets;
+    budgets.reserve(abscissae.size());
+    for (const double abscissa : abscissae)
+        budgets.push_back(budgetAt(record, fit, abscissa, 1, factors));
+    return budgets;
 }
 
 std::optional<double> repeatableShare(const Fit& fit, const VarianceSplit* split) {
@@ -109,7 +125,8 @@ std::optional<SetPointBudget> worstReadBackBudget(const Record& record, const Fi
             worst = std::move(here);
         }
     }
-    return worst ? std::optional(combined(record, std::move(*worst))) : std::nullopt;
+    CoverageFactors factors = factorsOf(record);
+    return worst ? std::optional(combined(std::move(*worst), factors)) : std::nullopt;
 }
 
 } // namespace spanwright

@@ -7,6 +7,7 @@
 #include "core/split/VarianceSplit.h"
 
 #include <optional>
+#include <vector>
 
 namespace spanwright {
 
@@ -17,6 +18,9 @@ namespace spanwright {
 /// `abscissa`: of the fit, where the value lies. `scatter`: the share of the variance of one new reading that the indication carries
 /// (scatterOfMean()). Empty for a constant, and where no degrees of freedom tell the scatter, or the slope is zero.
 std::optional<SetPointBudget> readBackBudget(const Record& record, const Fit& fit, double abscissa, double scatter = 1);
+
+/// The same for one new reading at each of many places.
+std::vector<std::optional<SetPointBudget>> readBackBudgets(const Record& record, const Fit& fit, const std::vector<double>& abscissae);
 
 /// Share of the variance of a reading about the function that repeatability explains, from 0 to 1; what is left is lack of fit,
 /// hysteresis and runs. Empty where no reading was repeated under the same conditions: then nothing tells them apart.

@@ -85,7 +85,7 @@ Spreads spreadsOf(const Record& record, const Sample& sample, const Fit* fit, co
     return spreads;
 }
 
-SetPointBudget budgetAt(const Record& record, const PointMeans& point, const Fit* fit, const Spreads& spreads, double coverage) {
+SetPointBudget budgetAt(const Record& record, const PointMeans& point, const Fit* fit, const Spreads& spreads, CoverageFactors& factors) {
     const BudgetPlace place = budgetPlace(record, fit, point.reference, point.indication);
     BudgetLines lines(record, place);
     lines.addStandards();
@@ -99,7 +99,7 @@ SetPointBudget budgetAt(const Record& record, const PointMeans& point, const Fit
         lines.add(DerivedLine::Hysteresis, Side::Indication, Distribution::Rectangular, std::fabs(*point.gap) / 2,
                   divisorOf(Distribution::Rectangular), Infinite);
     lines.addManual();
-    return combine(point.setPoint, point.direction, lines.take(), coverage, place.slope);
+    return combine(point.setPoint, point.direction, lines.take(), factors, place.slope);
 }
 
 } // namespace
@@ -114,8 +114,9 @@ Budget makeBudget(const Record& record, const Sample& sample, const Fit* fit, co
     if (sample.groupValue.size() > MostStatedPoints)
         budget.warnings.push_back({WarningCode::FigureUndefined, {{"figure", "results"}, {"reason", "too-many-set-points"}}});
     budget.means = pointMeans(record, sample, fit);
+    CoverageFactors factors(budget.coverage);
     for (const PointMeans& point : budget.means)
-        budget.points.push_back(budgetAt(record, point, fit, spreads, budget.coverage));
+        budget.points.push_back(budgetAt(record, point, fit, spreads, factors));
     if (fit != nullptr && fit->curve != nullptr)
         budget.readBack = worstReadBackBudget(record, *fit);
     return budget;

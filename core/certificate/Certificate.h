@@ -123,10 +123,11 @@ struct FunctionSection {
     Weights weights = Weights::Equal;
     struct Term {
         std::string name, unit;
-        Digits value;       ///< enough digits that rounding moves no value by U/20
-        Digits uncertainty; ///< standard uncertainty
+        Digits value;       ///< as for a data logger: rounding moves no value by U/20 of one read back
+        Digits uncertainty; ///< standard uncertainty; "" where the number is no coefficient of the fit
     };
     std::vector<Term> terms;
+    Digits centre;    ///< the polynomial is in powers of x − centre; "" where in those of x
     Digits low, high; ///< valid range of the abscissa
     Digits residualSd;
     int degreesOfFreedom = 0;
@@ -135,8 +136,7 @@ struct FunctionSection {
     struct Check {
         Digits x, y;
     };
-    std::vector<Check> checks; ///< computed from the coefficients as printed, where the form allows it
-    bool checksFromPrinted = false;
+    std::vector<Check> checks; ///< computed from the numbers as printed
     Digits readBackExpanded, readBackFactor; ///< U of a reference value read back with one new reading, unit of the reference
 };
 

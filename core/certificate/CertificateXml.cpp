@@ -309,7 +309,7 @@ class Document {
         std::string text = parts_.functionForm;
         for (const auto& term : function.terms)
             text += (text.empty() ? "" : "; ") + term.name + " = " + term.value + (term.unit.empty() ? "" : ' ' + term.unit) +
-                    ", standard uncertainty " + term.uncertainty;
+                    (term.uncertainty.empty() ? "" : ", standard uncertainty " + term.uncertainty);
         const bool forward = function.direction == FitDirection::Indication;
         const std::string& unit = forward ? c_.item.reference.unit : c_.item.indication.unit;
         text += "; valid from " + function.low + " to " + function.high + (unit.empty() ? "" : ' ' + unit);

@@ -7,9 +7,8 @@
 
 namespace spanwright {
 
-/// The calibration function of a phase as it is printed. Coefficients of polynomials get the fewest digits with which no value in
-/// the valid range moves by more than 1/20 of the smallest U; other functions the shortest text that reads back as the same
-/// number. Check values at both ends and the middle let the user try his own formula. Empty where there is no fit.
-std::optional<FunctionSection> functionSection(const PhaseEvaluation& phase);
+/// The calibration function of a phase as it is printed: in the digits of printedFunction(), so that the certificate and the text for a
+/// data logger state the same numbers and the same check values. Empty where there is no fit.
+std::optional<FunctionSection> functionSection(const Record& record, const PhaseEvaluation& phase);
 
 } // namespace spanwright

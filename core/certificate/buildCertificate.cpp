@@ -195,7 +195,7 @@ Certificate buildCertificate(const Record& record, const Evaluation& evaluation,
             certificate.phases.push_back(phaseSection(record, *phase));
     if (const PhaseEvaluation* phase = evaluation.phase(record.choices.phase))
         if (phase->fit && phase->fit->method != Method::Robust)
-            certificate.function = functionSection(*phase);
+            certificate.function = functionSection(record, *phase);
     certificate.excluded = excludedLines(record);
     certificate.notices = noticesOf(record, evaluation);
     certificate.statements = statementsOf(record, certificate);

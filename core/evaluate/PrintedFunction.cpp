@@ -58,12 +58,14 @@ struct FullNumbers {
 FullNumbers reported(const Fit& fit) {
     FullNumbers full;
     for (const Coefficient& coefficient : fit.coefficients) {
-        full.names.push_back({coefficient.name, coefficient.unit, {}});
+        full.names.push_back({coefficient.name, coefficient.unit, {}, coefficient.standardUncertainty});
         full.values.push_back(coefficient.value);
     }
     if (fit.function.family == FunctionFamily::Nernst) { // in the unit of the indication, as a logger needs it
+        const double slope = -fit.curve->derivative(7);
         full.names[1].unit = full.names[0].unit;
-        full.values[1] = -fit.curve->derivative(7);
+        full.names[1].standardUncertainty = fit.coefficients[1].standardUncertainty * std::fabs(slope / full.values[1]);
+        full.values[1] = slope;
     }
     return full;
 }
@@ -91,7 +93,7 @@ FullNumbers centred(const Fit& fit) {
         power[0] = newton[k] - at[k] * power[0];
     }
     for (std::size_t k = 0; k < n; ++k) {
-        full.names.push_back({"c" + std::to_string(k), {}, {}});
+        full.names.push_back({"c" + std::to_string(k), {}, {}, {}});
         full.values.push_back(power[k] / std::pow(half, static_cast<double>(k)));
     }
     return full;
@@ -178,8 +180,9 @@ class TableSearch {
             const std::string x = decimals ? roundedText(knots_[i], decimals->x) : digitsText(knots_[i], FullDigits);
             const double y = fit_.curve->value(numberOf(x));
             const std::string number = std::to_string(i + 1);
-            numbers.push_back({"x" + number, {}, x});
-            numbers.push_back({"y" + number, fit_.coefficients[i].unit, decimals ? roundedText(y, decimals->y) : digitsText(y, FullDigits)});
+            numbers.push_back({"x" + number, {}, x, {}});
+            const Coefficient& coefficient = fit_.coefficients[i];
+            numbers.push_back({"y" + number, coefficient.unit, decimals ? roundedText(y, decimals->y) : digitsText(y, FullDigits), coefficient.standardUncertainty});
         }
         return numbers;
     }
@@ -278,7 +281,7 @@ bool turns(const Fit& fit) {
 
 } // namespace
 
-std::optional<PrintedFunction> printedFunction(const Record& record, const PhaseEvaluation& phase) {
+std::optional<PrintedFunction> printedFunction(const Record& record, const PhaseEvaluation& phase, WithoutU without) {
     if (!phase.fit || phase.fit->curve == nullptr)
         return std::nullopt;
     const Fit& fit = *phase.fit;
@@ -286,7 +289,10 @@ std::optional<PrintedFunction> printedFunction(const Record& record, const Phase
     constants.zeroCelsius = record.item.reference.unit == "K" ? 273.15 : 0.0;
     constants.slopeSign = fit.curve->value(fit.high) < fit.curve->value(fit.low) ? -1 : 1;
     const bool invertible = fit.function.family != FunctionFamily::Constant && fit.high > fit.low && !turns(fit);
-    const PrintedGrid grid(record, phase, invertible ? InverseHeld::Yes : InverseHeld::No);
+    PrintedGrid grid(record, phase, invertible ? InverseHeld::Yes : InverseHeld::No);
+    const bool known = grid.bounded();
+    if (!known && without == WithoutU::ByScatter)
+        grid.boundByScatter();
     PrintedFunction printed =
         fit.function.family == FunctionFamily::Table ? tablePrinted(fit, grid, constants) : numbersPrinted(fit, grid, constants);
     printed.phase = phase.phase;
@@ -296,7 +302,7 @@ std::optional<PrintedFunction> printedFunction(const Record& record, const Phase
     printed.inverse = !invertible                         ? InverseForm::None
                       : printed.logger.hasClosedInverse() ? InverseForm::Closed
                                                           : InverseForm::Halving;
-    if (grid.bounded())
+    if (known)
         printed.share = grid.largestShare(printed.logger);
     addChecks(printed, fit, grid);
     return printed;

@@ -4,6 +4,7 @@
 #include "core/evaluate/Evaluation.h"
 #include "core/evaluate/LoggerFunction.h"
 
+#include <optional>
 #include <string>
 
 namespace spanwright {
@@ -15,6 +16,7 @@ inline constexpr double PrintedShareOfU = 1.0 / 20;
 struct PrintedNumber {
     std::string name, unit;
     std::string text;
+    std::optional<double> standardUncertainty; ///< of the coefficient before it was rounded; not of x of a table, nor about a centre
 };
 
 /// An input and what a logger must give for it, for checking what was typed there.
@@ -43,7 +45,10 @@ struct PrintedFunction {
     std::vector<PrintedCheck> inverseChecks; ///< of its inverse, where there is one
 };
 
+/// What the digits follow from where no U is known: nothing, or the residual standard deviation in its place.
+enum class WithoutU { FullPrecision, ByScatter };
+
 /// Empty where there is no fit.
-std::optional<PrintedFunction> printedFunction(const Record& record, const PhaseEvaluation& phase);
+std::optional<PrintedFunction> printedFunction(const Record& record, const PhaseEvaluation& phase, WithoutU without = WithoutU::FullPrecision);
 
 } // namespace spanwright

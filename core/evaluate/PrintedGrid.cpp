@@ -39,8 +39,8 @@ double smallestStated(const PhaseEvaluation& phase) {
 
 } // namespace
 
-PrintedGrid::PrintedGrid(const Record& record, const PhaseEvaluation& phase, InverseHeld inverse) : inverse_(inverse) {
-    const Fit& fit = *phase.fit;
+PrintedGrid::PrintedGrid(const Record& record, const PhaseEvaluation& phase, InverseHeld inverse) : fit_(*phase.fit), inverse_(inverse) {
+    const Fit& fit = fit_;
     std::vector<double> at = ofReadings(phase);
     for (int i = 0; i <= Steps; ++i)
         at.push_back(i == Steps ? fit.high : fit.low + (fit.high - fit.low) * i / Steps);
@@ -48,23 +48,34 @@ PrintedGrid::PrintedGrid(const Record& record, const PhaseEvaluation& phase, Inv
         at.push_back(knot);
     std::sort(at.begin(), at.end());
     at.erase(std::unique(at.begin(), at.end()), at.end());
-    for (const double x : at)
-        if (x >= fit.low && x <= fit.high)
-            add(record, phase, x);
+    std::erase_if(at, [&](double x) { return x < fit.low || x > fit.high; });
+    const auto budgets = readBackBudgets(record, fit, at);
+    for (std::size_t i = 0; i < at.size(); ++i) {
+        Place place{at[i], fit.curve->value(at[i]), 0, 0};
+        if (fit.function.family == FunctionFamily::Constant) {
+            place.expanded = smallestStated(phase);
+        } else if (const auto& budget = budgets[i]) {
+            const bool forward = fit.direction == FitDirection::Indication;
+            place.expanded = forward ? budget->expanded : budget->expandedReference;
+            place.expandedAbscissa = forward ? budget->expandedReference : budget->expanded;
+        }
+        places_.push_back(place);
+    }
+    const auto known = [](const Place& place) { return place.expanded > 0 && std::isfinite(place.expanded); };
+    bounded_ = std::any_of(places_.begin(), places_.end(), known);
+    if (bounded_)
+        std::erase_if(places_, [&](const Place& place) { return !known(place); });
 }
 
-void PrintedGrid::add(const Record& record, const PhaseEvaluation& phase, double x) {
-    const Fit& fit = *phase.fit;
-    Place place{x, fit.curve->value(x), 0, 0};
-    if (fit.function.family == FunctionFamily::Constant) {
-        place.expanded = smallestStated(phase);
-    } else if (const auto budget = readBackBudget(record, fit, x)) {
-        const bool forward = fit.direction == FitDirection::Indication;
-        place.expanded = forward ? budget->expanded : budget->expandedReference;
-        place.expandedAbscissa = forward ? budget->expandedReference : budget->expanded;
+void PrintedGrid::boundByScatter() {
+    const bool weighted = fit_.weights != Weights::Equal || fit_.method == Method::BothUncertain;
+    if (weighted || !(fit_.residualSd > 0))
+        return;
+    for (Place& place : places_) {
+        place.expanded = fit_.residualSd;
+        place.expandedAbscissa = fit_.residualSd / std::fabs(fit_.curve->derivative(place.x));
     }
-    if (place.expanded > 0 && std::isfinite(place.expanded))
-        places_.push_back(place);
+    bounded_ = true;
 }
 
 double PrintedGrid::largestShare(const LoggerFunction& logger) const {

@@ -18,7 +18,9 @@ class PrintedGrid {
     PrintedGrid(const Record& record, const PhaseEvaluation& phase, InverseHeld inverse);
 
     /// Whether there is any U to compare with.
-    [[nodiscard]] bool bounded() const { return !places_.empty(); }
+    [[nodiscard]] bool bounded() const { return bounded_; }
+    /// Takes the residual standard deviation for U at every place, where it has the unit of the ordinate and is not nought.
+    void boundByScatter();
     /// Largest error as a share of U, of the function and of its closed inverse; NaN where the function does not exist.
     [[nodiscard]] double largestShare(const LoggerFunction& logger) const;
     [[nodiscard]] bool holds(const LoggerFunction& logger) const;
@@ -30,9 +32,10 @@ class PrintedGrid {
         double x = 0, y = 0;
         double expanded = 0, expandedAbscissa = 0;
     };
-    void add(const Record& record, const PhaseEvaluation& phase, double x);
 
+    const Fit& fit_;
     std::vector<Place> places_;
+    bool bounded_ = false;
     InverseHeld inverse_;
 };
 

@@ -186,14 +186,17 @@ QString decisionText(const Limits& limits) {
 
 QString equationForm(const FunctionSection& function) {
     const bool forward = function.direction == FitDirection::Indication;
-    const QString y = forward ? QStringLiteral("y") : QStringLiteral("x"), x = forward ? QStringLiteral("x") : QStringLiteral("y");
+    const QString y = forward ? QStringLiteral("y") : QStringLiteral("x"), base = forward ? QStringLiteral("x") : QStringLiteral("y");
+    const bool left = function.centre.starts_with('-');
+    const QString x = function.centre.empty() ? base
+                                              : QStringLiteral("(%1 %2 %3)").arg(base, left ? QStringLiteral("+") : QStringLiteral("−"), digitsText(function.centre.substr(left ? 1 : 0)));
     int power = 0;
     switch (function.function.family) {
     case FunctionFamily::Constant:
     case FunctionFamily::Line:
     case FunctionFamily::Polynomial: break;
     case FunctionFamily::Proportional:
-    case FunctionFamily::PolynomialNoConstant: power = 1; break;
+    case FunctionFamily::PolynomialNoConstant: power = function.centre.empty() ? 1 : 0; break;
     default: return {};
     }
     QString sum;

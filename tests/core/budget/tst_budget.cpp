@@ -126,7 +126,8 @@ class BudgetTest : public QObject {
         std::vector<double> u;
         for (const auto& row : set.rows)
             u.push_back(std::stod(row[2]));
-        const SetPointBudget budget = combine(0, Direction::Unknown, itemsOf(set, u), 0.9545, 1);
+        CoverageFactors factors(0.9545);
+        const SetPointBudget budget = combine(0, Direction::Unknown, itemsOf(set, u), factors, 1);
         QVERIFY(digitsAgreed(budget.combined, set.recomputedNumber("u_c")) > 14);
         QVERIFY(agreesAsPrinted(budget.combined, set.published.at("u_c")));
         QVERIFY(agreesAsPrinted(budget.expanded, set.published.at("U")));
@@ -138,7 +139,8 @@ class BudgetTest : public QObject {
         std::vector<BudgetItem> items;
         for (const auto& row : set.rows)
             items.push_back(budgetItem(Side::Indication, Distribution::Normal, std::stod(row[2]), 1, Infinite, std::stod(row[4])));
-        const SetPointBudget budget = combine(0, Direction::Unknown, items, 0.9545, 1);
+        CoverageFactors factors(0.9545);
+        const SetPointBudget budget = combine(0, Direction::Unknown, items, factors, 1);
         QVERIFY(digitsAgreed(budget.combined, set.recomputedNumber("u_c")) > 14);
         QVERIFY(agreesAsPrinted(budget.combined, set.published.at("u_c")));
         QVERIFY(agreesAsPrinted(budget.expanded, set.published.at("U")));
@@ -156,7 +158,8 @@ class BudgetTest : public QObject {
             budgetItem(Side::Indication, Distribution::Normal, 0.001, 1, Infinite, 1),
             budgetItem(Side::Indication, Distribution::Rectangular, 0.05, third, Infinite, 1),
             budgetItem(Side::Indication, Distribution::Rectangular, 0.011, third, Infinite, 1)};
-        const SetPointBudget budget = combine(100, Direction::Unknown, items, 0.95, 1);
+        CoverageFactors factors(0.95);
+        const SetPointBudget budget = combine(100, Direction::Unknown, items, factors, 1);
         QVERIFY(budget.distribution == Distribution::Rectangular);
         QVERIFY(agreesAsPrinted(budget.coverageFactor, set.published.at("k")));
         QVERIFY(digitsAgreed(budget.combined, set.recomputedNumber("u_c")) > 14);
@@ -171,7 +174,8 @@ class BudgetTest : public QObject {
             budgetItem(Side::Indication, Distribution::Normal, set.recomputedNumber("budget.u_i[d]"), 1, 25.6, 1),
             budgetItem(Side::Indication, Distribution::Normal, set.recomputedNumber("budget.u_i[dalpha]"), 1, 50, 1),
             budgetItem(Side::Indication, Distribution::Normal, set.recomputedNumber("budget.u_i[dtheta]"), 1, 2, 1)};
-        const SetPointBudget budget = combine(50, Direction::Unknown, items, 0.99, 1);
+        CoverageFactors factors(0.99);
+        const SetPointBudget budget = combine(50, Direction::Unknown, items, factors, 1);
         QVERIFY(digitsAgreed(budget.combined, set.recomputedNumber("budget.u_c")) > 13);
         QCOMPARE(budget.effectiveDegreesOfFreedom, 16.0); // printed 16.7, cut
         QVERIFY(agreesAsPrinted(budget.coverageFactor, set.published.at("budget.k")));

@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/base/Rounding.h"
+#include "core/budget/ReadBackBudget.h"
 #include "core/certificate/Certificate.h"
+#include "core/evaluate/PrintedFunction.h"
 #include "core/evaluate/evaluate.h"
 #include "tests/support/SampleRecord.h"
 
@@ -112,7 +114,7 @@ class CertificateTest : public QObject {
         QCOMPARE(found.results[*found.largest].error, Digits("-0.0085"));
     }
 
-    // The printed coefficients in the printed form give every value in the range within 1/20 of the smallest U.
+    // The printed coefficients in the printed form give every value in the range within 1/20 of the U of a value read back there.
     void printsCoefficientsThatCanBeUsed_data() {
         QTest::addColumn<int>("degree");
         QTest::newRow("line") << 1;
@@ -126,17 +128,35 @@ class CertificateTest : public QObject {
         const Evaluation evaluation = evaluated(record);
         const Certificate certificate = buildCertificate(record, evaluation, {});
         QVERIFY(certificate.function.has_value());
+        const PhaseEvaluation& phase = *evaluation.phase(Phase::AsFound);
+        const Fit& fit = *phase.fit;
         double smallest = 1;
-        for (const PointResult& point : evaluation.phase(Phase::AsFound)->verdict.points)
-            smallest = std::min(smallest, point.expanded);
-        const Fit& fit = *evaluation.phase(Phase::AsFound)->fit;
-        for (double x = fit.low; x <= fit.high; x += 0.01)
-            QVERIFY(std::fabs(polynomial(*certificate.function, x) - fit.curve->value(x)) <= smallest / 20);
+        for (double x = fit.low; x <= fit.high; x += 0.01) {
+            const double u = readBackBudget(record, fit, x)->expanded;
+            smallest = std::min(smallest, u);
+            QVERIFY(std::fabs(polynomial(*certificate.function, x) - fit.curve->value(x)) <= u / 20);
+        }
+        const auto logger = printedFunction(record, phase);
+        QCOMPARE(certificate.function->terms.size(), logger->numbers.size());
+        for (std::size_t i = 0; i < logger->numbers.size(); ++i)
+            QCOMPARE(certificate.function->terms[i].value, logger->numbers[i].text);
         QCOMPARE(certificate.function->checks.size(), std::size_t(3));
         for (const auto& check : certificate.function->checks)
             QVERIFY(std::fabs(std::stod(check.y) - polynomial(*certificate.function, std::stod(check.x))) <= smallest / 100);
         for (const auto& term : certificate.function->terms)
             QVERIFY2(term.value.size() < 14, term.value.c_str()); // no more digits than it takes
+    }
+
+    // A table is of no use without its abscissae; only the ordinates have an uncertainty.
+    void printsBothCoordinatesOfATable() {
+        Record record = test::pressureTransmitter();
+        record.choices.function = {FunctionFamily::Table, 0};
+        const Certificate certificate = certificateOf(record);
+        const auto& terms = certificate.function->terms;
+        QCOMPARE(terms.size(), std::size_t(22));
+        QCOMPARE(terms[0].name, std::string("x1"));
+        QCOMPARE(terms[1].name, std::string("y1"));
+        QVERIFY(terms[0].uncertainty.empty() && !terms[1].uncertainty.empty());
     }
 
     // The figures of the split, rounded: practice of the sample by hand (F of lack of fit 19.2 against repeatability, 1.15 naive).
