@@ -3,6 +3,7 @@
 
 #include "ui/certificate/ChecklistView.h"
 #include "ui/certificate/PagePreview.h"
+#include "ui/certificate/Paper.h"
 #include "ui/certificate/SignOffCard.h"
 #include "ui/certificate/writeCertificate.h"
 #include "ui/commands/FieldForm.h"

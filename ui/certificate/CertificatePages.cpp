@@ -2,6 +2,7 @@
 #include "ui/certificate/CertificatePages.h"
 
 #include "ui/certificate/CertificateSections.h"
+#include "ui/certificate/Paper.h"
 
 #include <QCoreApplication>
 
@@ -11,8 +12,7 @@ namespace spanwright {
 
 namespace {
 
-constexpr QRectF Content(17, 12, 176, 275); // inside the margins of A4
-constexpr QRectF Area(17, 31, 176, 244);    // between head and foot
+constexpr double HeadEnd = 31; // mm
 
 struct CertificatePages {
     Q_DECLARE_TR_FUNCTIONS(CertificatePages)
@@ -20,16 +20,6 @@ struct CertificatePages {
 
 QString text(const std::string& from) {
     return QString::fromStdString(from);
-}
-
-/// One line that fits, cut with an ellipsis.
-QString fitting(const QString& words, const TextStyle& style, double width) {
-    if (textWidth(words, style) <= width)
-        return words;
-    QString cut = words;
-    while (!cut.isEmpty() && textWidth(cut + QChar(0x2026), style) > width)
-        cut.chop(1);
-    return cut.trimmed() + QChar(0x2026);
 }
 
 /// The style in the largest size in which the words fit; cut words are stated in full on the first page (addIdentification).
@@ -52,13 +42,13 @@ void addHead(Page& page, const Certificate& certificate, const QString& number) 
     // The number identifies every page, so it has the first claim on the width.
     constexpr double gap = 6, mostForNumber = 110;
     const TextStyle right = shrunk(certificateNumber, {9.5, true, PageInk::Text}, mostForNumber);
-    const double rest = Content.width() - gap - std::min(mostForNumber, textWidth(certificateNumber, right));
+    const double rest = PaperContent.width() - gap - std::min(mostForNumber, textWidth(certificateNumber, right));
     const TextStyle left = shrunk(laboratory, {11, true, PageInk::Text}, rest);
-    put(Content.left(), 17.5, fitting(laboratory, left, rest), left);
-    put(Content.left(), 22, fitting(text(certificate.job.laboratoryAddress), small, Content.width() - 30), small);
-    put(Content.right(), 17.5, fitting(certificateNumber, right, mostForNumber), right, Qt::AlignRight);
-    put(Content.right(), 22, number, small, Qt::AlignRight);
-    page.blocks.push_back({QRectF(Content.left(), 26, Content.width(), 0), Rule{0.4, PageInk::Text}});
+    put(PaperContent.left(), 17.5, fitting(laboratory, left, rest), left);
+    put(PaperContent.left(), 22, fitting(text(certificate.job.laboratoryAddress), small, PaperContent.width() - 30), small);
+    put(PaperContent.right(), 17.5, fitting(certificateNumber, right, mostForNumber), right, Qt::AlignRight);
+    put(PaperContent.right(), 22, number, small, Qt::AlignRight);
+    page.blocks.push_back({QRectF(PaperContent.left(), 26, PaperContent.width(), 0), Rule{0.4, PageInk::Text}});
 }
 
 QString stateWord(DraftState state) {
@@ -80,8 +70,7 @@ QString digestText(const std::string& digest) {
     return groups.join(QLatin1Char(' '));
 }
 
-void addFoot(Page& page, const Certificate& certificate, const QString& number) {
-    const TextStyle small{7.5, false, PageInk::Quiet};
+QString footText(const Certificate& certificate) {
     QStringList parts;
     if (!stateWord(certificate.state).isEmpty())
         parts << stateWord(certificate.state);
@@ -89,9 +78,7 @@ void addFoot(Page& page, const Certificate& certificate, const QString& number) 
     if (!certificate.digest.empty())
         parts << CertificatePages::tr("record %1").arg(digestText(certificate.digest));
     parts << text(certificate.program);
-    page.blocks.push_back({QRectF(Content.left(), 280, Content.width(), 0), Rule{0.2, PageInk::Line}});
-    page.blocks.push_back(textBlock(Content.left(), 284.5, fitting(parts.join(QStringLiteral(" · ")), small, Content.width() - 35), small));
-    page.blocks.push_back(textBlock(Content.right(), 284.5, number, small, Qt::AlignRight));
+    return parts.join(QStringLiteral(" · "));
 }
 
 /// Behind everything that is on the page already.
@@ -106,9 +93,7 @@ void addWatermark(Page& page, DraftState state) {
 } // namespace
 
 Pages certificatePages(const Certificate& certificate, const QStringList& gaps) {
-    Pages document;
-    document.content = Content;
-    Flow flow(document, Area);
+    Flow flow(emptyPaper(), areaUnder(HeadEnd));
     addTitle(flow, certificate, gaps);
     addIdentification(flow, certificate);
     addStandards(flow, certificate);
@@ -130,9 +115,9 @@ Pages certificatePages(const Certificate& certificate, const QStringList& gaps) 
     addSignOffs(flow, certificate);
     Pages pages = flow.take();
     for (std::size_t i = 0; i < pages.pages.size(); ++i) {
-        const QString number = CertificatePages::tr("page %1 of %2").arg(i + 1).arg(pages.pages.size());
+        const QString number = pageNumber(i + 1, pages.pages.size());
         addHead(pages.pages[i], certificate, number);
-        addFoot(pages.pages[i], certificate, number);
+        addFoot(pages.pages[i], footText(certificate), number);
         addWatermark(pages.pages[i], certificate.state);
     }
     return pages;

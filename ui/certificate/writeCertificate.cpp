@@ -7,12 +7,10 @@
 #include "core/session/TextMark.h"
 #include "ui/certificate/CertificatePages.h"
 #include "ui/certificate/CertificateText.h"
+#include "ui/certificate/Paper.h"
 
 #include <QCoreApplication>
 #include <QFileInfo>
-#include <QPageLayout>
-#include <QPainter>
-#include <QPdfWriter>
 #include <QSaveFile>
 
 namespace spanwright {
@@ -50,22 +48,6 @@ Pages layOutCertificate(const Record& record, const Evaluation& evaluation, cons
     return certificatePages(buildCertificate(record, evaluation, context), blockingGaps(record, evaluation));
 }
 
-bool paintDocument(const Pages& pages, QPagedPaintDevice& device) {
-    device.setPageLayout(QPageLayout(QPageSize(QPageSize::A4), QPageLayout::Portrait, QMarginsF(0, 0, 0, 0), QPageLayout::Millimeter));
-    QPainter painter;
-    if (!painter.begin(&device))
-        return false;
-    for (std::size_t i = 0; i < pages.pages.size(); ++i) {
-        if (i > 0 && !device.newPage())
-            return false;
-        // A printer that cannot print to the edge still gets the page in true size.
-        const double perMm = device.logicalDpiX() / 25.4;
-        const QPointF printable = device.pageLayout().paintRect(QPageLayout::Millimeter).topLeft() * perMm;
-        paintPage(painter, pages, i, QRectF(-printable, pages.size * perMm));
-    }
-    return painter.end();
-}
-
 Result<void> writeCertificatePdf(const Record& record, const Evaluation& evaluation, const QString& path,
                                  const CertificateContext& context, WithGaps withGaps) {
     const QStringList gaps = blockingGaps(record, evaluation);
@@ -75,21 +57,8 @@ Result<void> writeCertificatePdf(const Record& record, const Evaluation& evaluat
             error.facts.push_back({"missing", gap.toStdString()});
         return error;
     }
-    QSaveFile file(path);
-    if (!file.open(QIODevice::WriteOnly))
-        return fileError(ErrorCode::FileNotWritable, path, file.errorString());
-    {
-        QPdfWriter writer(&file);
-        writer.setPdfVersion(QPagedPaintDevice::PdfVersion_A1b);
-        writer.setResolution(1200);
-        writer.setTitle(Writing::tr("Calibration certificate %1 (draft)").arg(QString::fromStdString(record.job.certificateNumber)));
-        writer.setCreator(QString::fromStdString(context.program));
-        if (!paintDocument(layOutCertificate(record, evaluation, context), writer))
-            return fileError(ErrorCode::FileWriteFailed, path, file.errorString());
-    }
-    if (!file.commit())
-        return fileError(ErrorCode::FileWriteFailed, path, file.errorString());
-    return {};
+    return writePdf(layOutCertificate(record, evaluation, context),
+                    {Writing::tr("Calibration certificate %1 (draft)").arg(QString::fromStdString(record.job.certificateNumber)), QString::fromStdString(context.program)}, path);
 }
 
 Result<void> writeCertificateXml(const Record& record, const Evaluation& evaluation, const QString& path, const XmlWishes& wishes,

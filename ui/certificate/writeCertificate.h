@@ -7,8 +7,6 @@
 #include <QString>
 #include <QStringList>
 
-class QPagedPaintDevice;
-
 namespace spanwright {
 
 /// What still blocks a complete draft, one sentence each.
@@ -20,10 +18,6 @@ CertificateContext certificateContext(const Record& record, const Evaluation& ev
 
 /// The pages of the certificate of a record.
 Pages layOutCertificate(const Record& record, const Evaluation& evaluation, const CertificateContext& context);
-
-/// Paints all pages on a PDF writer or a printer, whose page layout is set to A4 without margins (the margins are in the
-/// pages). Whether it could be begun.
-bool paintDocument(const Pages& pages, QPagedPaintDevice& device);
 
 /// What to do with a draft that has gaps.
 enum class WithGaps { Refuse, MarkIncomplete };

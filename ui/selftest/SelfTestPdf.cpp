@@ -1,19 +1,15 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/certificate/Flow.h"
-#include "ui/certificate/writeCertificate.h"
+#include "ui/certificate/Paper.h"
 #include "ui/selftest/SelfTest.h"
 
-#include <QBuffer>
 #include <QCoreApplication>
-#include <QPdfWriter>
-#include <QSaveFile>
 
 namespace spanwright {
 
 namespace {
 
-constexpr QRectF Content(17, 12, 176, 275); // inside the margins of A4
-constexpr QRectF Area(17, 25, 176, 250);    // between head and foot
+constexpr double HeadEnd = 25; // mm
 
 struct SelfTestPdf {
     Q_DECLARE_TR_FUNCTIONS(SelfTestPdf)
@@ -45,20 +41,15 @@ void addCase(Flow& flow, const SelfTestCase& one) {
     flow.space(3);
 }
 
-void addHeadAndFoot(Page& page, const SelfTestOccasion& occasion, const QString& number) {
+void addHead(Page& page, const QString& number) {
     const TextStyle small{8, false, PageInk::Quiet};
-    page.blocks.push_back(textBlock(Content.left(), 17.5, SelfTestPdf::tr("Validation record of a self-test"), {9.5, true, PageInk::Text}));
-    page.blocks.push_back(textBlock(Content.right(), 17.5, number, small, Qt::AlignRight));
-    page.blocks.push_back({QRectF(Content.left(), 20, Content.width(), 0), Rule{0.4, PageInk::Text}});
-    page.blocks.push_back({QRectF(Content.left(), 280, Content.width(), 0), Rule{0.2, PageInk::Line}});
-    page.blocks.push_back(textBlock(Content.left(), 284.5, occasion.program + QStringLiteral(" · ") + occasion.date, small));
-    page.blocks.push_back(textBlock(Content.right(), 284.5, number, small, Qt::AlignRight));
+    page.blocks.push_back(textBlock(PaperContent.left(), 17.5, SelfTestPdf::tr("Validation record of a self-test"), {9.5, true, PageInk::Text}));
+    page.blocks.push_back(textBlock(PaperContent.right(), 17.5, number, small, Qt::AlignRight));
+    page.blocks.push_back({QRectF(PaperContent.left(), 20, PaperContent.width(), 0), Rule{0.4, PageInk::Text}});
 }
 
 Pages selfTestPages(const SelfTestOutcome& outcome, const SelfTestOccasion& occasion) {
-    Pages document;
-    document.content = Content;
-    Flow flow(document, Area);
+    Flow flow(emptyPaper(), areaUnder(HeadEnd));
     flow.title(SelfTestPdf::tr("Validation record"));
     flow.labelled({{SelfTestPdf::tr("Program"), occasion.program}, {SelfTestPdf::tr("Machine"), occasion.machine}},
                   {{SelfTestPdf::tr("Recomputed"), occasion.date}, {SelfTestPdf::tr("Method"), SelfTestPdf::tr("published cases by the road of every record")}});
@@ -73,28 +64,18 @@ Pages selfTestPages(const SelfTestOutcome& outcome, const SelfTestOccasion& occa
     for (const SelfTestCase* one : failuresFirst(outcome))
         addCase(flow, *one);
     Pages pages = flow.take();
-    for (std::size_t i = 0; i < pages.pages.size(); ++i)
-        addHeadAndFoot(pages.pages[i], occasion, SelfTestPdf::tr("page %1 of %2").arg(i + 1).arg(pages.pages.size()));
+    for (std::size_t i = 0; i < pages.pages.size(); ++i) {
+        const QString number = pageNumber(i + 1, pages.pages.size());
+        addHead(pages.pages[i], number);
+        addFoot(pages.pages[i], occasion.program + QStringLiteral(" · ") + occasion.date, number);
+    }
     return pages;
 }
 
 } // namespace
 
 bool writeSelfTestPdf(const SelfTestOutcome& outcome, const SelfTestOccasion& occasion, const QString& path) {
-    QByteArray bytes;
-    {
-        QBuffer buffer(&bytes);
-        buffer.open(QIODevice::WriteOnly);
-        QPdfWriter writer(&buffer);
-        writer.setPdfVersion(QPagedPaintDevice::PdfVersion_A1b);
-        writer.setResolution(1200);
-        writer.setTitle(SelfTestPdf::tr("Validation record"));
-        writer.setCreator(occasion.program);
-        if (!paintDocument(selfTestPages(outcome, occasion), writer))
-            return false;
-    }
-    QSaveFile file(path);
-    return file.open(QIODevice::WriteOnly) && file.write(bytes) == bytes.size() && file.commit();
+    return writePdf(selfTestPages(outcome, occasion), {SelfTestPdf::tr("Validation record"), occasion.program}, path).ok();
 }
 
 } // namespace spanwright
