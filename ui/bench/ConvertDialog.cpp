@@ -2,6 +2,7 @@
 #include "ui/bench/ConvertDialog.h"
 
 #include "core/base/Rounding.h"
+#include "core/budget/ReadBackBudget.h"
 #include "core/evaluate/Calibration.h"
 #include "ui/bench/NumberEdit.h"
 #include "ui/look/Look.h"
@@ -40,6 +41,7 @@ ConvertDialog::ConvertDialog(Workbench& workbench, QWidget* parent)
     value_->setFont(textFont(TextRole::Title));
     interval_->setObjectName(QStringLiteral("convertInterval"));
     interval_->setForegroundRole(inkRole::quiet);
+    warnings_->setObjectName(QStringLiteral("convertWarnings"));
     warnings_->setForegroundRole(inkRole::warning);
     for (QLabel* label : {value_, interval_, warnings_}) {
         label->setTextFormat(Qt::PlainText);
@@ -77,8 +79,10 @@ void ConvertDialog::convert() {
     QStringList said;
     for (const Warning& warning : value.warnings)
         said << warningText(warning);
+    if (repeats_->value() > 1 && !repeatableShare(*phase->fit, phase->split ? &*phase->split : nullptr))
+        said << tr("No reading was repeated under the same conditions, so nothing tells which part of the scatter averages out: U is that of one reading.");
     const QString state = valueStateText(value.state);
-    if (said.isEmpty() && !state.isEmpty())
+    if (value.warnings.empty() && !state.isEmpty())
         said << tr("No uncertainty can be stated: %1.").arg(state);
     warnings_->setText(said.join(QLatin1Char('\n')));
 }

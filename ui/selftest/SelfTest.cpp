@@ -95,6 +95,10 @@ double figureAt(const PhaseEvaluation& e, const QStringList& path) {
     const QString last = path.back();
     if (first == QLatin1String("coefficients") && index < e.fit->coefficients.size())
         return last == QLatin1String("value") ? e.fit->coefficients[index].value : e.fit->coefficients[index].standardUncertainty;
+    if (first == QLatin1String("coefficient_covariance")) {
+        const std::size_t p = e.fit->coefficients.size(), at = index * p + last.toUInt();
+        return at < e.fit->covariance.size() ? e.fit->covariance[at] : missing;
+    }
     if (first == QLatin1String("residual_sd"))
         return e.fit->residualSd;
     if (first == QLatin1String("r_squared"))

@@ -37,6 +37,8 @@ QString selfTestFigureText(const QString& name) {
     const int number = path.value(1).toInt() + 1;
     if (first == QLatin1String("coefficients"))
         return path.back() == QLatin1String("value") ? Text::tr("coefficient %1").arg(number) : Text::tr("coefficient %1, standard uncertainty").arg(number);
+    if (first == QLatin1String("coefficient_covariance"))
+        return Text::tr("covariance of coefficients %1 and %2").arg(number).arg(path.back().toInt() + 1);
     if (first == QLatin1String("residual_sd"))
         return Text::tr("residual standard deviation");
     if (first == QLatin1String("r_squared"))

@@ -19,6 +19,7 @@
 #include <QMenu>
 #include <QPlainTextEdit>
 #include <QPushButton>
+#include <QSpinBox>
 #include <QTableWidget>
 #include <QTemporaryDir>
 #include <QTest>
@@ -292,6 +293,11 @@ class BenchTest : public QObject {
         dialog->findChild<QLineEdit*>(QStringLiteral("convertIndication"))->setText(QStringLiteral("4"));
         const QString both = dialog->findChild<QLabel*>(QStringLiteral("convertValue"))->text();
         QVERIFY2(both.contains(QStringLiteral("2.00000")) && both.contains(QStringLiteral("−2.00000")), qPrintable(both));
+        // Nothing was repeated, so a mean of five is no better known than one reading, and that is said.
+        auto* warnings = dialog->findChild<QLabel*>(QStringLiteral("convertWarnings"));
+        QVERIFY(!warnings->text().contains(QStringLiteral("averages out")));
+        dialog->findChild<QSpinBox*>(QStringLiteral("convertRepeats"))->setValue(5);
+        QVERIFY2(warnings->text().contains(QStringLiteral("nothing tells which part of the scatter averages out")), qPrintable(warnings->text()));
     }
 
     void aMillionReadingsAreShownAtOnce() {
