@@ -51,23 +51,22 @@ std::optional<DerivedLine> budgetLineOf(FindingCode code) {
     }
 }
 
-QSplitter* parted(Qt::Orientation orientation, std::initializer_list<QWidget*> widgets) {
-    auto* splitter = new QSplitter(orientation);
+QSplitter* parted(Qt::Orientation orientation, QWidget* parent) {
+    auto* splitter = new QSplitter(orientation, parent);
     splitter->setHandleWidth(space::step + space::half);
     splitter->setChildrenCollapsible(false);
-    for (QWidget* widget : widgets)
-        splitter->addWidget(widget);
     return splitter;
 }
 
-/// A card above a lower one.
-QSplitter* stacked(Card* above, Card* below, int narrowest) {
-    QSplitter* rows = parted(Qt::Vertical, {above, below});
+/// A card above a lower one, as a further part of `columns`.
+void stack(QSplitter* columns, Card* above, Card* below, int narrowest) {
+    QSplitter* rows = parted(Qt::Vertical, columns);
+    rows->addWidget(above);
+    rows->addWidget(below);
     rows->setStretchFactor(0, 3);
     rows->setStretchFactor(1, 2);
     rows->setSizes({420, 290});
     rows->setMinimumWidth(narrowest);
-    return rows;
 }
 
 } // namespace
@@ -76,13 +75,16 @@ BenchPage::BenchPage(Workbench& workbench, QWidget* parent) : QWidget(parent), w
     setObjectName(QStringLiteral("benchPage"));
     auto* all = new QHBoxLayout(this);
     all->setContentsMargins(space::card, space::card, space::card, space::card);
-    QSplitter* columns = parted(Qt::Horizontal, {buildLeft(), buildMiddle(), buildRight()});
+    QSplitter* columns = parted(Qt::Horizontal, this);
+    all->addWidget(columns);
+    buildLeft(columns);
+    buildMiddle(columns);
+    buildRight(columns);
     columns->setObjectName(QStringLiteral("benchColumns"));
     columns->setStretchFactor(0, 1); // a wide window also shows the set point and the state of every reading
     columns->setStretchFactor(1, 4);
     columns->setStretchFactor(2, 1);
     columns->setSizes({384, 572, 288});
-    all->addWidget(columns);
     new PlotPair(line_->plot(), residuals_->plot(), this);
     buildActions();
     connectSelection();
@@ -93,7 +95,8 @@ BenchPage::BenchPage(Workbench& workbench, QWidget* parent) : QWidget(parent), w
     showSelection();
 }
 
-QWidget* BenchPage::buildLeft() {
+void BenchPage::buildLeft(QSplitter* columns) {
+    auto* left = new QWidget(columns);
     next_ = new NextReading(workbench_);
     table_ = new ReadingsTable(workbench_);
     readingsCard_ = new Card(tr("Readings"));
@@ -101,7 +104,6 @@ QWidget* BenchPage::buildLeft() {
     readingsCard_->layout()->setContentsMargins(1, space::step + space::half, 1, space::step);
     readingsCard_->layout()->itemAt(0)->layout()->setContentsMargins(space::card - 1, 0, space::card - 1, 0);
     readingsCard_->body()->addWidget(new WholeRows(table_));
-    auto* left = new QWidget;
     auto* column = new QVBoxLayout(left);
     column->setContentsMargins(0, 0, 0, 0);
     column->setSpacing(space::step + space::half);
@@ -109,26 +111,25 @@ QWidget* BenchPage::buildLeft() {
     column->addWidget(readingsCard_, 1);
     left->setMinimumWidth(340);
     connect(next_, &NextReading::planRequested, this, &BenchPage::planRequested);
-    return left;
 }
 
-QWidget* BenchPage::buildMiddle() {
+void BenchPage::buildMiddle(QSplitter* columns) {
     line_ = new LineCard(workbench_);
     residuals_ = new ResidualsCard(workbench_);
     connect(residuals_, &ResidualsCard::excludeRequested, this, &BenchPage::exclude);
     connect(residuals_, &ResidualsCard::readmitRequested, this, &BenchPage::readmit);
     connect(residuals_, &ResidualsCard::partsLeft, this, [this] { split_->picture().select(std::nullopt); });
-    return stacked(line_, residuals_, 420);
+    stack(columns, line_, residuals_, 420);
 }
 
-QWidget* BenchPage::buildRight() {
+void BenchPage::buildRight(QSplitter* columns) {
     split_ = new SplitCard;
     auto* findings = new FindingsCard(workbench_);
     connect(findings, &FindingsCard::remedyChosen, this, &BenchPage::follow);
     connect(split_, &SplitCard::tableRequested, this, &BenchPage::showSplitTable);
     connect(split_, &SplitCard::performanceRequested, this, &BenchPage::showPerformance);
     connect(&split_->picture(), &SplitPicture::partSelected, this, &BenchPage::showPart);
-    return stacked(split_, findings, 264);
+    stack(columns, split_, findings, 264);
 }
 
 void BenchPage::buildActions() {

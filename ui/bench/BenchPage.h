@@ -7,6 +7,7 @@
 #include <QWidget>
 
 class QAction;
+class QSplitter;
 
 namespace spanwright {
 
@@ -34,9 +35,9 @@ class BenchPage : public QWidget {
     void planRequested();
 
   private:
-    QWidget* buildLeft();
-    QWidget* buildMiddle();
-    QWidget* buildRight();
+    void buildLeft(QSplitter* columns);
+    void buildMiddle(QSplitter* columns);
+    void buildRight(QSplitter* columns);
     void buildActions();
     void connectSelection();
     void refresh();

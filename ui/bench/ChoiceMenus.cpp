@@ -138,7 +138,7 @@ ChoiceButton::ChoiceButton(const QString& name, const QString& accessibleName, Q
     setMenu(new QMenu(this));
     setFocusPolicy(Qt::TabFocus);
     setForegroundRole(inkRole::quiet);
-    setStyleSheet(QStringLiteral("QToolButton { padding: 2px 4px; }"));
+    setProperty("choice", true);
 }
 
 void ChoiceButton::fillWith(const std::function<void(QMenu&)>& fill) {

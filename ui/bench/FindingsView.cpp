@@ -153,10 +153,9 @@ void FindingsView::add(const Finding& finding, const Record& record) {
     second->addStretch(1);
     list_->addWidget(entry);
     auto* rule = new QFrame;
-    rule->setFrameShape(QFrame::HLine);
-    rule->setForegroundRole(QPalette::Mid);
     rule->setFixedHeight(1);
-    rule->setStyleSheet(QStringLiteral("color: palette(mid); background: palette(mid); border: none;"));
+    rule->setAutoFillBackground(true);
+    rule->setBackgroundRole(QPalette::Mid);
     list_->addWidget(rule);
     list_->addSpacing(3);
 }

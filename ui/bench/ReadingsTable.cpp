@@ -34,7 +34,7 @@ ReadingsTable::ReadingsTable(Workbench& workbench, QWidget* parent)
     setModel(model_);
     setItemDelegate(delegate_);
     setFrameShape(QFrame::NoFrame);
-    setStyleSheet(QStringLiteral("QTableView { border: none; }"));
+    setProperty("bare", true);
     setShowGrid(false);
     setWordWrap(false);
     setCornerButtonEnabled(false);
@@ -52,7 +52,7 @@ ReadingsTable::ReadingsTable(Workbench& workbench, QWidget* parent)
     horizontalHeader()->setMinimumSectionSize(20);
     horizontalHeader()->setSectionResizeMode(QHeaderView::Fixed);
     horizontalHeader()->setFont(textFont(TextRole::Small));
-    horizontalHeader()->setStyleSheet(QStringLiteral("QHeaderView::section { padding: 4px 5px; }"));
+    horizontalHeader()->setProperty("dense", true);
     words_->setObjectName(QStringLiteral("refusal"));
     words_->setTextFormat(Qt::PlainText);
     words_->setWordWrap(true);

@@ -27,7 +27,7 @@ SelectionBar::SelectionBar(Workbench& workbench, QWidget* parent) : QWidget(pare
         button->setFont(textFont(TextRole::Small));
         button->setToolTip(tip);
         button->setFocusPolicy(Qt::TabFocus);
-        button->setStyleSheet(QStringLiteral("QToolButton { padding: 2px 4px; }"));
+        button->setProperty("choice", true);
         row->addWidget(button);
         return button;
     };

@@ -22,26 +22,26 @@ BudgetPage::BudgetPage(Workbench& bench, QWidget* parent)
     row->setSpacing(space::step + space::half);
     auto* left = new QVBoxLayout;
     left->setSpacing(space::step + space::half);
+    row->addLayout(left, 21);
     left->addWidget(results_, 5);
     left->addWidget(contributions_, 5);
-    row->addLayout(left, 21);
 
     auto* scroll = new QScrollArea;
+    row->addWidget(scroll, 10);
     scroll->setObjectName(QStringLiteral("budget.side"));
     scroll->setWidgetResizable(true);
     scroll->setFocusPolicy(Qt::NoFocus);
     scroll->setHorizontalScrollBarPolicy(Qt::ScrollBarAlwaysOff);
     auto* sheet = new QWidget;
+    scroll->setWidget(sheet);
     auto* right = new QVBoxLayout(sheet);
     right->setContentsMargins(0, 0, 0, 0);
     right->setSpacing(space::step + space::half);
     right->addWidget(limitsCard(bench));
     right->addWidget(lines_);
     right->addStretch(1);
-    scroll->setWidget(sheet);
     scroll->setMinimumWidth(364);
     scroll->setMaximumWidth(396);
-    row->addWidget(scroll, 10);
     connect(results_, &ResultsCard::pointChosen, contributions_, &ContributionsCard::showPoint);
 }
 

@@ -23,7 +23,7 @@ ChecklistView::ChecklistView(QWidget* parent) : QListWidget(parent) {
     setTextElideMode(Qt::ElideNone);
     setHorizontalScrollBarPolicy(Qt::ScrollBarAlwaysOff);
     setFrameShape(QFrame::NoFrame);
-    setStyleSheet(QStringLiteral("QListView { border: none; background: transparent; }"));
+    setProperty("bare", true);
     setResizeMode(QListView::Adjust);
     setSpacing(2);
     setCursor(Qt::PointingHandCursor);

@@ -34,6 +34,7 @@ JobPage::JobPage(Workbench& bench, QWidget* parent) : QWidget(parent), scroll_(n
     scroll_->setHorizontalScrollBarPolicy(Qt::ScrollBarAsNeeded);
 
     auto* sheet = new QWidget;
+    scroll_->setWidget(sheet);
     auto* row = new QHBoxLayout(sheet);
     row->setContentsMargins(space::card, space::card, space::card, space::card);
     row->setSpacing(space::step + space::half);
@@ -51,7 +52,6 @@ JobPage::JobPage(Workbench& bench, QWidget* parent) : QWidget(parent), scroll_(n
     right->addWidget(new ConditionsCard(bench));
     right->addWidget(statementsCard(bench));
     right->addStretch(1);
-    scroll_->setWidget(sheet);
 }
 
 void JobPage::prepareField(const QString& field) {

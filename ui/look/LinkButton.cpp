@@ -12,7 +12,7 @@ LinkButton::LinkButton(const QString& name, const QString& text, QWidget* parent
     small.setWeight(QFont::DemiBold); // as the style draws it
     setFont(small);
     setText(text);
-    setStyleSheet(QStringLiteral("QToolButton { padding: 1px 0px; }"));
+    setProperty("tight", true);
     setCursor(Qt::PointingHandCursor);
     setFocusPolicy(Qt::TabFocus);
 }

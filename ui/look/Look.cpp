@@ -117,15 +117,22 @@ QToolButton:hover, QToolButton:checked { background: @selection; }
 QToolButton:focus { border: 1px solid @accent; }
 QToolButton:disabled { color: @quiet; }
 QToolButton[link="true"] { color: @accent; font-weight: 600; }
+QToolButton[tight="true"] { padding: 1px 0px; }
+QToolButton[choice="true"] { padding: 2px 4px; }
 QToolButton::menu-indicator { image: none; width: 0px; }
 QHeaderView { background: @card; }
 QHeaderView::section { background: @card; color: @quiet; border: none; border-bottom: 1px solid @line; padding: 4px 8px; }
 QTableView, QListView, QTreeView { background: @card; border: 1px solid @line; gridline-color: @line;
   selection-background-color: @selection; selection-color: @ink; }
+QTableView[bare="true"] { border: none; }
+QListView[bare="true"] { border: none; background: transparent; }
+QHeaderView[dense="true"]::section { padding: 4px 5px; }
 QTableView QTableCornerButton::section { background: @card; border: none; }
 QCheckBox::indicator:unchecked, QGroupBox::indicator:unchecked, QTreeView::indicator:unchecked, QListView::indicator:unchecked,
 QTableView::indicator:unchecked { border: 1px solid @quiet; border-radius: 2px; background: @card; }
-QCheckBox::indicator:unchecked:focus, QCheckBox::indicator:unchecked:hover { border: 1px solid @accent; }
+QCheckBox::indicator:checked, QGroupBox::indicator:checked, QTreeView::indicator:checked, QListView::indicator:checked,
+QTableView::indicator:checked { border: 1px solid @quiet; border-radius: 2px; background: @card; image: url(:/look/check-@name.png); }
+QCheckBox::indicator:focus, QCheckBox::indicator:hover { border: 1px solid @accent; }
 QToolTip { background: @card; color: @ink; border: 1px solid @edge; padding: 3px; }
 QMenuBar { background: @card; border-bottom: 1px solid @line; }
 QMenuBar::item { padding: 4px 10px; background: transparent; }

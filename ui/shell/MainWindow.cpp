@@ -137,10 +137,10 @@ void MainWindow::makePages() {
                           .tell = [this](QWidget* from, const QString& title,
                                          const QString& text) { around_.dialogs.tell(from, title, text); },
                           .path = [this] { return document_.path(); }};
-    pages_->append([this] { return job_ = new JobPage(bench_); });
-    pages_->append([this, links] { return makeBenchPage(bench_, links); });
-    pages_->append([this] { return budget_ = new BudgetPage(bench_); });
-    pages_->append([this, links] { return makeCertificatePage(bench_, links); });
+    pages_->append([this](QWidget* parent) { return job_ = new JobPage(bench_, parent); });
+    pages_->append([this, links](QWidget* parent) { return makeBenchPage(bench_, links, parent); });
+    pages_->append([this](QWidget* parent) { return budget_ = new BudgetPage(bench_, parent); });
+    pages_->append([this, links](QWidget* parent) { return makeCertificatePage(bench_, links, parent); });
     connect(pages_, &PageStack::completed, this, &MainWindow::takeOverActions);
 }
 

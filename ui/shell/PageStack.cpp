@@ -28,7 +28,8 @@ QWidget* PageStack::page(int index) {
     if (const Maker make = std::exchange(makers_[static_cast<std::size_t>(index)], {})) {
         QWidget* const place = widget(index);
         const bool inSight = currentIndex() == index;
-        insertWidget(index, make());
+        // A page that is built where it stands takes over the style once for every part, not once more for the whole.
+        insertWidget(index, make(this));
         if (inSight)
             setCurrentIndex(index);
         removeWidget(place);
@@ -50,8 +51,9 @@ bool PageStack::complete() const {
 
 void PageStack::paintEvent(QPaintEvent* event) {
     QStackedWidget::paintEvent(event);
+    // The pause begins when this paint is over, however long it takes.
     if (!std::exchange(begun_, true))
-        QTimer::singleShot(Pause, this, &PageStack::makeNext);
+        QTimer::singleShot(0, this, [this] { QTimer::singleShot(Pause, this, &PageStack::makeNext); });
 }
 
 void PageStack::makeNext() {

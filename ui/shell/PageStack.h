@@ -14,7 +14,7 @@ class PageStack : public QStackedWidget {
     Q_OBJECT
 
   public:
-    using Maker = std::function<QWidget*()>;
+    using Maker = std::function<QWidget*(QWidget* parent)>;
     explicit PageStack(QWidget* parent = nullptr) : QStackedWidget(parent) {}
 
     /// Appends a page that is made by `make`.

@@ -8,8 +8,8 @@
 
 namespace spanwright {
 
-QWidget* makeBenchPage(Workbench& bench, const PageLinks& links) {
-    auto* page = new BenchPage(bench);
+QWidget* makeBenchPage(Workbench& bench, const PageLinks& links, QWidget* parent) {
+    auto* page = new BenchPage(bench, parent);
     QObject::connect(page, &BenchPage::budgetRequested, page,
                      [links](std::optional<DerivedLine> line) {
                          const QString field = QStringLiteral("budget.contributions");
@@ -20,14 +20,14 @@ QWidget* makeBenchPage(Workbench& bench, const PageLinks& links) {
     return page;
 }
 
-QWidget* makeCertificatePage(Workbench& bench, const PageLinks& links) {
+QWidget* makeCertificatePage(Workbench& bench, const PageLinks& links, QWidget* parent) {
     CertificateAsks asks = screenAsks();
     asks.pdfPath = links.pdfPath;
     asks.tell = links.tell;
     asks.sameNumber = [links](const QString& number) {
         return QString::fromStdString(sessionWithNumber(links.path().toStdString(), number.toStdString()));
     };
-    auto* page = new CertificatePage(bench, asks);
+    auto* page = new CertificatePage(bench, asks, parent);
     QObject::connect(page, &CertificatePage::goTo, page, links.showField);
     return page;
 }

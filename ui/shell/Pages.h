@@ -19,8 +19,8 @@ struct PageLinks {
     std::function<QString()> path; ///< of the session's file; empty where it has none
 };
 
-QWidget* makeBenchPage(Workbench& bench, const PageLinks& links);
-QWidget* makeCertificatePage(Workbench& bench, const PageLinks& links);
+QWidget* makeBenchPage(Workbench& bench, const PageLinks& links, QWidget* parent);
+QWidget* makeCertificatePage(Workbench& bench, const PageLinks& links, QWidget* parent);
 
 /// Puts the cursor where the work of the page goes on. False: the page leaves that to the window.
 bool enterPage(QWidget* page);
