@@ -2,9 +2,9 @@
 #include "core/split/AdjustedLackOfFit.h"
 
 #include "core/split/FunctionBasis.h"
+#include "core/split/RunwiseQr.h"
 
-#include <Eigen/QR>
-
+#include <algorithm>
 #include <cmath>
 
 namespace spanwright {
@@ -57,6 +57,29 @@ std::vector<double> placesOf(const Sample& sample, const Fit& fit) {
     return sum;
 }
 
+/// What a node holds beside the columns of its run: the function, then the contrasts of direction.
+class SharedColumns {
+  public:
+    SharedColumns(const NoiseChain& chain, const FunctionBasis& basis) : chain_(chain), basis_(basis), contrast_(contrastColumns(chain)) {}
+    [[nodiscard]] std::size_t count() const { return basis_.terms + static_cast<std::size_t>(chain_.contrasts); }
+    [[nodiscard]] std::vector<double> row(const std::vector<Node>& nodes, std::size_t k) const {
+        std::vector<double> row(count(), 0.0);
+        for (std::size_t j = 0; j < basis_.terms; ++j)
+            row[j] = basis_.column(j)[k];
+        const std::size_t c = nodes[k].cell;
+        if (contrast_[c] >= 0)
+            row[basis_.terms + static_cast<std::size_t>(contrast_[c])] += 0.5;
+        for (std::size_t next = c + 1; next < chain_.cells.size() && chain_.cells[next].group == chain_.cells[c].group; ++next)
+            row[basis_.terms + static_cast<std::size_t>(contrast_[next])] -= 0.5;
+        return row;
+    }
+
+  private:
+    const NoiseChain& chain_;
+    const FunctionBasis& basis_;
+    std::vector<int> contrast_;
+};
+
 } // namespace
 
 AdjustedLackOfFit adjustedLackOfFit(const Sample& sample, const NoiseChain& chain, const Fit& fit) {
@@ -65,58 +88,34 @@ AdjustedLackOfFit adjustedLackOfFit(const Sample& sample, const NoiseChain& chai
         return result;
     const std::vector<Node> nodes = nodesOf(chain);
     const std::vector<double> places = placesOf(sample, fit);
-    std::vector<double> abscissa, setPoint;
-    for (const Node& node : nodes) {
-        const auto group = static_cast<std::size_t>(chain.cells[node.cell].group);
-        abscissa.push_back(places[group]);
-        setPoint.push_back(sample.groupValue[group]);
-    }
+    const double middle = (sample.groupValue.front() + sample.groupValue.back()) / 2;
+    const double half = std::max((sample.groupValue.back() - sample.groupValue.front()) / 2, 1e-300);
+    std::vector<double> abscissa;
+    for (const Node& node : nodes)
+        abscissa.push_back(places[static_cast<std::size_t>(chain.cells[node.cell].group)]);
     const FunctionBasis basis = functionBasis(fit, abscissa);
     if (basis.empty())
         return result;
-    const std::vector<int> contrast = contrastColumns(chain);
-    const std::size_t runTerms = chain.runOffsets > 0 ? chain.runs - 1 : 0;
-    const std::size_t runAt = basis.terms + static_cast<std::size_t>(chain.contrasts);
-    const std::size_t columns = runAt + 2 * runTerms;
+    const SharedColumns shared(chain, basis);
+    const std::size_t runs = chain.runOffsets > 0 ? chain.runs : 0;
+    const auto columns = static_cast<std::size_t>(shared.count()) + 2 * runs;
     if (nodes.size() * columns * columns > 50'000'000)
         return result;
 
-    Eigen::MatrixXd design =
-        Eigen::MatrixXd::Zero(static_cast<Eigen::Index>(nodes.size()), static_cast<Eigen::Index>(columns));
-    Eigen::VectorXd right(static_cast<Eigen::Index>(nodes.size()));
-    const double middle = (sample.groupValue.front() + sample.groupValue.back()) / 2;
-    const double half = std::max((sample.groupValue.back() - sample.groupValue.front()) / 2, 1e-300);
+    std::vector<RunBlock> blocks(std::max<std::size_t>(runs, 1));
     double explainedByMeans = 0;
     for (std::size_t k = 0; k < nodes.size(); ++k) {
-        const auto row = static_cast<Eigen::Index>(k);
-        const double root = std::sqrt(nodes[k].weight);
-        const auto put = [&](std::size_t column, double value) {
-            design(row, static_cast<Eigen::Index>(column)) += root * value;
-        };
-        for (std::size_t j = 0; j < basis.terms; ++j)
-            put(j, basis.column(j)[k]);
-        const std::size_t c = nodes[k].cell;
-        if (contrast[c] >= 0)
-            put(basis.terms + static_cast<std::size_t>(contrast[c]), 0.5);
-        for (std::size_t next = c + 1; next < chain.cells.size() && chain.cells[next].group == chain.cells[c].group;
-             ++next)
-            put(basis.terms + static_cast<std::size_t>(contrast[next]), -0.5);
-        for (std::size_t r = 0; r < runTerms; ++r) {
-            const double code = nodes[k].run == r ? 1 : nodes[k].run == runTerms ? -1 : 0;
-            put(runAt + r, code);
-            put(runAt + runTerms + r, code * (setPoint[k] - middle) / half);
-        }
-        right(row) = root * nodes[k].mean;
-        explainedByMeans += nodes[k].weight * nodes[k].mean * nodes[k].mean;
+        const Node& node = nodes[k];
+        const double x = (sample.groupValue[static_cast<std::size_t>(chain.cells[node.cell].group)] - middle) / half;
+        RunBlock& block = blocks[runs > 0 ? node.run : 0];
+        block.rows.push_back({std::sqrt(node.weight), x, shared.row(nodes, k), node.mean});
+        explainedByMeans += node.weight * node.mean * node.mean;
     }
-    Eigen::ColPivHouseholderQR<Eigen::MatrixXd> qr(design.rows(), design.cols());
-    qr.setThreshold(1e-10);
-    qr.compute(design);
-    const double rest = (qr.householderQ().transpose() * right).tail(right.size() - qr.rank()).squaredNorm();
+    const RunwiseSolution solved = solveByRuns(blocks, shared.count(), runs > 0 ? RunColumns::Free : RunColumns::None);
 
     SplitRow row;
-    row.ss = std::max(0.0, toDouble(chain.s1) - explainedByMeans + rest - toDouble(chain.s5));
-    row.df = chain.setPoints + chain.contrasts + chain.runOffsets + chain.runSlopes - static_cast<int>(qr.rank());
+    row.ss = std::max(0.0, toDouble(chain.s1) - explainedByMeans + solved.rest - toDouble(chain.s5));
+    row.df = chain.setPoints + chain.contrasts + chain.runOffsets + chain.runSlopes - solved.rank;
     if (row.df <= 0)
         return result;
     row.ms = row.ss / row.df;

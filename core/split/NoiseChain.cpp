@@ -200,8 +200,7 @@ void addRuns(const Sample& sample, const Places& places, std::span<const T> e, s
              const Sums<T>& cellSums, NoiseChain& chain) {
     const std::size_t runs = chain.runs;
     const Range range = rangeOf(sample);
-    RunSystem<T> system(2 * runs);
-    std::vector<double> scale(2 * runs, 0.0);
+    std::vector<RunInCell<T>> rows;
     std::vector<std::size_t> count(runs, 0);
     chain.cellRuns.reserve(std::min(chain.readings, chain.cells.size() * runs));
     std::size_t first = 0;
@@ -210,19 +209,7 @@ void addRuns(const Sample& sample, const Places& places, std::span<const T> e, s
         for (const auto& one : inside) {
             const auto r = static_cast<std::size_t>(one.run);
             count[r] += one.n;
-            scale[r] += plain(one.weight);
-            scale[runs + r] += plain(one.weight * x * x);
-            system.b[r] += one.sum;
-            system.b[runs + r] += x * one.sum;
-            const T share = one.weight / cellSums.weight[c];
-            for (const auto& other : inside) {
-                const auto s = static_cast<std::size_t>(other.run);
-                const T entry = (r == s ? one.weight : T(0.0)) - share * other.weight, sloped = x * entry;
-                system.at(r, s) += entry;
-                system.at(r, runs + s) += sloped;
-                system.at(runs + r, s) += sloped;
-                system.at(runs + r, runs + s) += x * sloped;
-            }
+            rows.push_back({c, r, x, one.weight, one.sum});
             chain.cellRuns.push_back({static_cast<std::int32_t>(c), one.run, one.n, plain(one.weight),
                                       plain(cellSums.mean[c] + one.sum / one.weight)});
         }
@@ -233,22 +220,21 @@ void addRuns(const Sample& sample, const Places& places, std::span<const T> e, s
             chain.balanced = chain.balanced && one.n == expected;
         chain.balanced = chain.balanced && inside.size() == first && first == runs;
     });
-    for (std::size_t r = 0; r < runs; ++r)
-        chain.runOffsetWeight += plain(system.at(r, r));
-    chain.runOffsets = system.eliminate(0, runs, scale);
-    chain.s4 = chain.s3 - DoubleDouble(system.explained);
-    chain.runSlopes = system.eliminate(runs, 2 * runs, scale);
-    chain.s5 = chain.s3 - DoubleDouble(system.explained);
+    RunSystem<T> system(std::move(rows), runs);
+    chain.runOffsetWeight = system.offsetTrace();
+    chain.runOffsets = system.addOffsets();
+    chain.s4 = chain.s3 - DoubleDouble(system.explained());
+    chain.runSlopes = system.addSlopes();
+    chain.s5 = chain.s3 - DoubleDouble(system.explained());
 
-    const std::vector<double> effect = system.solve();
     double offsetMean = 0, slopeMean = 0;
     for (std::size_t r = 0; r < runs; ++r) {
-        offsetMean += effect[r] * static_cast<double>(count[r]) / static_cast<double>(chain.readings);
-        slopeMean += effect[runs + r] * static_cast<double>(count[r]) / static_cast<double>(chain.readings);
+        const double share = static_cast<double>(count[r]) / static_cast<double>(chain.readings);
+        offsetMean += system.offset(r) * share;
+        slopeMean += system.slope(r) * share;
     }
     for (std::size_t r = 0; r < runs; ++r)
-        chain.effects.push_back(
-            {places.runNumbers[r], count[r], effect[r] - offsetMean, (effect[runs + r] - slopeMean) / range.half});
+        chain.effects.push_back({places.runNumbers[r], count[r], system.offset(r) - offsetMean, (system.slope(r) - slopeMean) / range.half});
 }
 
 /// tr Zᵀ(P₃ − P₂)Z for the run columns Z: how much of a run effect leaks into the contrast of rising and falling.
