@@ -2,6 +2,7 @@
 #include "ui/job/PlanCard.h"
 
 #include "ui/commands/FieldForm.h"
+#include "ui/job/SetPoints.h"
 #include "ui/look/Look.h"
 #include "ui/look/NumberText.h"
 #include "ui/words/Words.h"
@@ -9,40 +10,15 @@
 #include <QHBoxLayout>
 #include <QLabel>
 #include <QPushButton>
-#include <QRegularExpression>
-
-#include <algorithm>
-#include <charconv>
-#include <cmath>
 
 namespace spanwright {
 
 namespace {
 
-QString numbersText(const std::vector<Decimal>& points) {
-    QStringList texts;
-    for (const Decimal& point : points)
-        texts << typedText(point);
-    return texts.join(QStringLiteral("; "));
-}
-
-Result<std::vector<Decimal>> parseNumbers(const QString& text) {
-    // A comma followed by a blank separates; any other comma is a decimal mark.
-    static const QRegularExpression between(QStringLiteral("\\s*;\\s*|,\\s+|\\s+"));
-    std::vector<Decimal> numbers;
-    for (const QString& piece : text.trimmed().split(between, Qt::SkipEmptyParts)) {
-        Result<Decimal> number = parseTyped(piece);
-        if (!number)
-            return number.error();
-        numbers.push_back(*number);
-    }
-    return numbers;
-}
-
 FieldBinding setPointsBinding() {
-    return {[](const Record& record) { return numbersText(record.plan.setPoints); },
+    return {[](const Record& record) { return numberListText(record.plan.setPoints); },
             [](const Record& record, const QString& text) -> Result<std::unique_ptr<RecordCommand>> {
-                Result<std::vector<Decimal>> points = parseSetPoints(text);
+                Result<std::vector<Decimal>> points = parseSetPoints(text, record.item);
                 if (!points)
                     return points.error();
                 return changePart(record, &Record::plan, PlanCard::tr("set points"), [&](Plan& plan) { plan.setPoints = *points; });
@@ -51,55 +27,26 @@ FieldBinding setPointsBinding() {
 
 /// Angles in the order of the runs, each as often as it was typed.
 FieldBinding positionsBinding() {
-    return {[](const Record& record) { return numbersText(record.plan.positions); },
+    return {[](const Record& record) { return numberListText(record.plan.positions); },
             [](const Record& record, const QString& text) -> Result<std::unique_ptr<RecordCommand>> {
-                Result<std::vector<Decimal>> positions = parseNumbers(text);
+                Result<std::vector<Decimal>> positions = parseNumberList(text);
                 if (!positions)
                     return positions.error();
                 return changePart(record, &Record::plan, PlanCard::tr("mounting positions"), [&](Plan& plan) { plan.positions = *positions; });
             }};
 }
 
-void sortAndUnite(std::vector<Decimal>& points) {
-    std::stable_sort(points.begin(), points.end(), [](const Decimal& a, const Decimal& b) { return compareValue(a, b) < 0; });
-    points.erase(std::unique(points.begin(), points.end(), [](const Decimal& a, const Decimal& b) { return compareValue(a, b) == 0; }),
-                 points.end());
-}
-
 } // namespace
-
-Result<std::vector<Decimal>> parseSetPoints(const QString& text) {
-    Result<std::vector<Decimal>> points = parseNumbers(text);
-    if (!points)
-        return points;
-    std::vector<Decimal> sorted = *points;
-    sortAndUnite(sorted);
-    return sorted;
-}
-
-std::vector<Decimal> evenSetPoints(const Decimal& from, const Decimal& to, int count) {
-    std::vector<Decimal> points{from};
-    const double low = from.toDouble(), step = (to.toDouble() - low) / (count - 1);
-    for (int i = 1; i < count - 1; ++i) {
-        // To ten digits of the step, which leaves a round step round.
-        const double grain = std::pow(10, std::floor(std::log10(std::abs(step))) - 9);
-        const double value = std::round((low + step * i) / grain) * grain;
-        char buffer[64];
-        const auto end = std::to_chars(buffer, buffer + sizeof buffer, value, std::chars_format::general, 10).ptr;
-        if (Result<Decimal> point = Decimal::parse(std::string_view(buffer, static_cast<std::size_t>(end - buffer))))
-            points.push_back(*point);
-    }
-    points.push_back(to);
-    sortAndUnite(points);
-    return points;
-}
 
 PlanCard::PlanCard(Workbench& bench, QWidget* parent)
     : Card(tr("Plan"), parent), bench_(bench), from_(new QLineEdit), to_(new QLineEdit), points_(new QSpinBox), refusal_(new QLabel),
       summary_(new QLabel) {
     auto* grid = new FieldGrid(3);
     FieldBox* setPoints = fieldBox(bench, QStringLiteral("plan.set_points"), tr("Set points"), setPointsBinding());
-    setPoints->findChild<FieldLine*>()->setPlaceholderText(tr("0; 2.5; 5; 7.5; 10"));
+    line_ = setPoints->findChild<FieldLine*>();
+    line_->setPlaceholderText(tr("0; 2.5; 5; 7.5; 10, or 0; 25; 50; 75; 100 %"));
+    setPoints_ = setPoints;
+    connect(line_, &QLineEdit::textChanged, this, &PlanCard::showUnderstood);
     grid->add(setPoints, 3);
     from_->setObjectName(QStringLiteral("plan.fill.from"));
     to_->setObjectName(QStringLiteral("plan.fill.to"));
@@ -162,6 +109,17 @@ PlanCard::PlanCard(Workbench& bench, QWidget* parent)
     body()->addWidget(summary_);
     connect(&bench, &Workbench::recordChanged, this, &PlanCard::showSummary);
     showSummary();
+}
+
+/// While something else than the record's numbers stands in the field: what is understood by it.
+void PlanCard::showUnderstood() {
+    const Record& record = bench_.record();
+    const QString text = line_->text();
+    QString hint;
+    if (!text.trimmed().isEmpty() && text != numberListText(record.plan.setPoints))
+        if (const Result<std::vector<Decimal>> points = parseSetPoints(text, record.item))
+            hint = tr("Understood: %1 %2").arg(numberListText(*points), QString::fromStdString(record.item.reference.unit)).trimmed();
+    setPoints_->setHint(hint);
 }
 
 void PlanCard::fill() {

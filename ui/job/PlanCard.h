@@ -1,7 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
-#include "core/base/Result.h"
 #include "ui/commands/Workbench.h"
 #include "ui/look/Card.h"
 
@@ -10,6 +9,9 @@ class QLineEdit;
 class QSpinBox;
 
 namespace spanwright {
+
+class FieldBox;
+class FieldLine;
 
 /// Set points, directions, runs.
 class PlanCard : public Card {
@@ -21,18 +23,16 @@ class PlanCard : public Card {
   private:
     void fill();
     void showSummary();
+    void showUnderstood();
 
     Workbench& bench_;
+    FieldBox* setPoints_ = nullptr;
+    FieldLine* line_ = nullptr;
     QLineEdit* from_;
     QLineEdit* to_;
     QSpinBox* points_;
     QLabel* refusal_;
     QLabel* summary_;
 };
-
-/// "0; 2,5; 5" or "0 2.5 5" or one a line; in rising order, each once.
-Result<std::vector<Decimal>> parseSetPoints(const QString& text);
-/// `count` set points at equal distances, the ends as typed. At least two.
-std::vector<Decimal> evenSetPoints(const Decimal& from, const Decimal& to, int count);
 
 } // namespace spanwright

@@ -140,6 +140,8 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
     case ErrorCode::CellDateBad:
         return tr("%1 is not a date. Type year, month and day, such as 2026-11-30.").arg(facts.quoted("text", tr("this")));
     case ErrorCode::CellOutOfRange:
+        if (facts.plain("reason") == QLatin1String("no-range"))
+            return tr("%1 is a share of the range, and no range is stated. State the range of the item first.").arg(facts.quoted("text", tr("this")));
         return tr("%1 is outside what is possible here. Check the digits and the unit.").arg(facts.quoted("text", tr("the value")));
     case ErrorCode::ReasonMissing: return tr("a reason is needed. Choose one from the list, or write it in words.");
     // the record as a whole

@@ -4,9 +4,11 @@
 #include "tests/support/ScriptedDialogs.h"
 #include "ui/commands/FieldForm.h"
 #include "ui/commands/ReadingCommands.h"
+#include "ui/job/SetPoints.h"
 #include "ui/shell/MainWindow.h"
 #include "ui/shell/PageStack.h"
 #include "ui/words/EnglishPlurals.h"
+#include "ui/words/Words.h"
 
 #include <QAbstractItemView>
 #include <QDropEvent>
@@ -163,6 +165,63 @@ class MainWindowTest : public QObject {
         QCOMPARE(desk.find<QLabel>("plan.summary")->text(), QString("66 readings as found"));
         desk.type("plan.set_points", "0, 2,5, 5");
         QCOMPARE(desk.record().plan.setPoints, (std::vector<Decimal>{number("0"), number("2.5"), number("5")}));
+    }
+
+    void setPointsAreUnderstoodAsPeopleWriteThem_data() {
+        QTest::addColumn<QString>("typed");
+        QTest::addColumn<QString>("understood"); // empty: refused
+        QTest::newRow("commas alone") << "0,25,50,75,100" << "0; 25; 50; 75; 100";
+        QTest::newRow("commas part, points are decimal") << "0,2.5,5" << "0; 2.5; 5";
+        QTest::newRow("commas are decimal") << "0; 2,5; 5" << "0; 2.5; 5";
+        QTest::newRow("one comma is decimal") << "2,5" << "2.5";
+        QTest::newRow("blanks, in any order, twice") << "5 0 2,50 5" << "0; 2.50; 5";
+        QTest::newRow("one number or three") << "1,250,500" << "";
+        QTest::newRow("begins with zero, so three") << "0,250,500" << "0; 250; 500";
+        QTest::newRow("shares of the range") << "0; 25; 50; 75; 100 %" << "-1; 1.5; 4; 6.5; 9.00";
+        QTest::newRow("each with its sign") << "0% 12,5% 100%" << "-1; 0.25; 9.00";
+        QTest::newRow("some with a sign") << "0% 5 10%" << "";
+        QTest::newRow("a word") << "0; five" << "";
+    }
+
+    void setPointsAreUnderstoodAsPeopleWriteThem() {
+        QFETCH(QString, typed);
+        QFETCH(QString, understood);
+        Item item;
+        item.rangeLow = number("-1");
+        item.rangeHigh = number("9.00");
+        const Result<std::vector<Decimal>> points = parseSetPoints(typed, item);
+        QCOMPARE(points.ok() ? numberListText(*points).replace(QChar(0x2212), QLatin1Char('-')) : QString(), understood);
+    }
+
+    void sharesNeedARangeUnlessTheUnitIsPercent() {
+        Item item;
+        const Result<std::vector<Decimal>> refused = parseSetPoints("0 50 100 %", item);
+        QVERIFY(!refused.ok());
+        QVERIFY(errorText(refused.error()).contains("no range is stated"));
+        item.reference.unit = "%RH";
+        item.rangeLow = number("10");
+        item.rangeHigh = number("95");
+        QCOMPARE(numberListText(*parseSetPoints("10 35 60 %", item)), QString("10; 35; 60"));
+    }
+
+    void whatIsUnderstoodIsShownWhileItIsTyped() {
+        Desk desk;
+        desk.type("item.range_low", "0");
+        desk.type("item.range_high", "10");
+        desk.type("item.reference.unit", "bar");
+        auto* line = desk.find<QLineEdit>("plan.set_points");
+        line->setFocus();
+        QTest::keyClicks(line, "0,25,50,75,100 %");
+        const auto shown = [&] {
+            for (const QLabel* label : line->parentWidget()->findChildren<QLabel*>())
+                if (label->isVisible() && label->text().startsWith("Understood"))
+                    return label->text();
+            return QString();
+        };
+        QCOMPARE(shown(), QString("Understood: 0; 2.5; 5; 7.5; 10 bar"));
+        QTest::keyClick(line, Qt::Key_Tab);
+        QCOMPARE(line->text(), QString("0; 2.5; 5; 7.5; 10"));
+        QCOMPARE(shown(), QString());
     }
 
     void anOverdueStandardIsSaidInWords() {
