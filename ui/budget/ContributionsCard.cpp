@@ -87,7 +87,7 @@ ContributionsCard::ContributionsCard(Workbench& bench, QWidget* parent)
       leaveOut_(new QPushButton(tr("&Leave out"))) {
     view_->setItemDelegateForColumn(7, new ShareDelegate(view_));
     new NumberColumns(view_, 0);
-    body()->addWidget(new WholeRows(view_), 1);
+    body()->addWidget(new WholeRows(view_, WholeRows::Fill::Rows), 1);
     sum_->setForegroundRole(QPalette::WindowText);
     body()->addWidget(sum_);
     body()->addWidget(readBack_);

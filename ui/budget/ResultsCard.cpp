@@ -103,7 +103,7 @@ ResultsCard::ResultsCard(Workbench& bench, QWidget* parent)
     empty_->setForegroundRole(inkRole::quiet);
     empty_->setWordWrap(true);
     body()->addWidget(empty_);
-    rows_ = new WholeRows(view_);
+    rows_ = new WholeRows(view_, WholeRows::Fill::Rows);
     body()->addWidget(rows_, 1);
     new NumberColumns(view_);
     connect(view_->selectionModel(), &QItemSelectionModel::currentRowChanged, this,

@@ -15,6 +15,8 @@ namespace spanwright {
 
 namespace {
 
+constexpr int WidestSheet = 2000; ///< beyond it fields would be longer than what is typed into them
+
 QVBoxLayout* column(QHBoxLayout* row, int stretch) {
     auto* cards = new QVBoxLayout;
     cards->setSpacing(space::step + space::half);
@@ -34,6 +36,8 @@ JobPage::JobPage(Workbench& bench, QWidget* parent) : QWidget(parent), scroll_(n
     scroll_->setHorizontalScrollBarPolicy(Qt::ScrollBarAsNeeded);
 
     auto* sheet = new QWidget;
+    sheet->setMaximumWidth(WidestSheet);
+    scroll_->setAlignment(Qt::AlignHCenter | Qt::AlignTop);
     scroll_->setWidget(sheet);
     auto* row = new QHBoxLayout(sheet);
     row->setContentsMargins(space::card, space::card, space::card, space::card);

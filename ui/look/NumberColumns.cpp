@@ -12,7 +12,8 @@ namespace spanwright {
 
 namespace {
 
-constexpr int FewestLetters = 18; // of the words, when they give way
+constexpr int FewestLetters = 18;  // of the words, when they give way
+constexpr int MostLettersMore = 8; // than a column needs
 
 int neededWidth(const QTableView& table, int column) {
     const QAbstractItemView& view = table; // where the hint of the cells is public
@@ -54,19 +55,25 @@ void NumberColumns::place() {
         ++shown;
     }
     int left = table_->viewport()->width() - needed;
-    if (words_ != NoWords && !table_->isColumnHidden(words_)) {
+    const int letter = table_->fontMetrics().averageCharWidth();
+    const bool words = words_ != NoWords && !table_->isColumnHidden(words_);
+    if (words) {
         int& width = widths[static_cast<std::size_t>(words_)];
-        const int fewest = std::min(width, table_->fontMetrics().averageCharWidth() * FewestLetters);
-        width = std::max(fewest, width + left);
-    } else if (left > 0) {
-        for (int column = 0; column < columns; ++column) {
-            if (table_->isColumnHidden(column))
-                continue;
-            const int part = left / shown--;
-            widths[static_cast<std::size_t>(column)] += part;
-            left -= part;
-        }
+        const int fewest = std::min(width, letter * FewestLetters);
+        const int taken = std::clamp(left, fewest - width, letter * MostLettersMore);
+        width += taken;
+        left -= taken;
     }
+    for (int column = 0; column < columns && left > 0; ++column) {
+        if (table_->isColumnHidden(column))
+            continue;
+        const int part = std::min(left / shown--, letter * MostLettersMore);
+        widths[static_cast<std::size_t>(column)] += part;
+        left -= part;
+    }
+    // A little that is still left would look like a fault at the edge.
+    if (words && left > 0 && left < letter * MostLettersMore * 6)
+        widths[static_cast<std::size_t>(words_)] += left;
     for (int column = 0; column < columns; ++column)
         if (!table_->isColumnHidden(column))
             table_->setColumnWidth(column, widths[static_cast<std::size_t>(column)]);

@@ -8,8 +8,8 @@ class QTableView;
 namespace spanwright {
 
 /// The widths of a table of numbers: a column is never narrower than its head and its widest number. Words give way first, down
-/// to a few letters and an ellipsis; then the table scrolls sideways. Room that is left goes to the words, or is shared by all
-/// columns where there are none.
+/// to a few letters and an ellipsis; then the table scrolls sideways. Room that is left is shared by all columns, as much as lets
+/// them breathe and no more, so that a row can still be read along in a very wide window.
 class NumberColumns : public QObject {
     Q_OBJECT
 

@@ -7,12 +7,14 @@ class QTableView;
 
 namespace spanwright {
 
-/// Gives a table as much of its height as whole rows fill, so that none is cut in half at the foot.
+/// Gives a table as much of its height as whole rows fill, so that none is cut in half at the foot; on wish no more than its rows
+/// fill.
 class WholeRows : public QWidget {
     Q_OBJECT
 
   public:
-    explicit WholeRows(QTableView* table, QWidget* parent = nullptr);
+    enum class Fill { Room, Rows }; ///< how far the table reaches down: to the end of the room, or of its rows
+    explicit WholeRows(QTableView* table, Fill fill = Fill::Room, QWidget* parent = nullptr);
     [[nodiscard]] QSize sizeHint() const override;
     [[nodiscard]] QSize minimumSizeHint() const override;
 
@@ -23,6 +25,7 @@ class WholeRows : public QWidget {
     void place();
     [[nodiscard]] int headHeight() const;
     QTableView* table_;
+    Fill fill_;
 };
 
 } // namespace spanwright
