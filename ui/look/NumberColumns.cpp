@@ -42,7 +42,7 @@ void NumberColumns::follow() {
 }
 
 void NumberColumns::place() {
-    if (placing_)
+    if (placing_ || !table_->isVisible()) // measured when it is seen: pages that nobody looks at change with every reading
         return;
     placing_ = true;
     const int columns = table_->model()->columnCount();
