@@ -1,42 +1,14 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/evaluate/evaluate.h"
-#include "tests/support/Paths.h"
 #include "tests/support/SampleRecord.h"
+#include "tests/support/SampleTable.h"
 
-#include <QFile>
 #include <QTest>
 
 using namespace spanwright;
 using namespace spanwright::test;
 
 namespace {
-
-/// Readings of one of the small tables: reference and indication first, then set point, run or direction by their heads.
-Record fromTable(const char* name) {
-    QFile file(QString::fromStdString(sourceDir()) + "/sample-data/" + name);
-    Record record;
-    if (!file.open(QIODevice::ReadOnly))
-        return record;
-    const QList<QByteArray> heads = file.readLine().trimmed().split(',');
-    file.readLine();
-    while (!file.atEnd()) {
-        const QList<QByteArray> cells = file.readLine().trimmed().split(',');
-        Reading reading;
-        reading.id = record.nextReadingId++;
-        reading.reference = number(cells[0].constData());
-        reading.indication = number(cells[1].constData());
-        for (qsizetype i = 2; i < cells.size(); ++i) {
-            if (heads[i] == "set point")
-                reading.setPoint = number(cells[i].constData());
-            if (heads[i] == "run")
-                reading.run = cells[i].toInt();
-            if (heads[i] == "direction")
-                reading.direction = cells[i] == "rising" ? Direction::Rising : Direction::Falling;
-        }
-        record.readings.edit().append(reading);
-    }
-    return record;
-}
 
 PhaseEvaluation evaluated(const Record& record) {
     Progress progress;
@@ -100,14 +72,14 @@ class SampleFiguresTest : public QObject {
     }
 
     void probeLooksStraightAndIsNot() {
-        const PhaseEvaluation line = evaluated(fromTable("temperature-probe.csv"), "line");
+        const PhaseEvaluation line = evaluated(sampleTable("temperature-probe.csv"), "line");
         QVERIFY(line.fit && line.split && line.split->lackOfFit);
         compareAsPrinted(line.fit->residualSd, "0.333");
         QVERIFY(*line.split->lackOfFit->f > 1e5);
     }
 
     void probeDoesNotShowAForgottenCorrection() {
-        Record record = fromTable("temperature-probe.csv");
+        Record record = sampleTable("temperature-probe.csv");
         const PhaseEvaluation without = evaluated(record, "polynomial:2");
         Standard thermometer;
         thermometer.correctionUse = CorrectionUse::Apply;
@@ -126,7 +98,7 @@ class SampleFiguresTest : public QObject {
     }
 
     void loadCellTurnsWithItsRotation() {
-        Record record = fromTable("load-cell.csv");
+        Record record = sampleTable("load-cell.csv");
         for (std::size_t row = 10; row < 20; ++row)
             record.exclusions.edit().add({record.readings->ids()[row], ExclusionReason::Other, "second run at 0°", "TL", 0});
         const PhaseEvaluation line = evaluated(record, "line");
@@ -141,7 +113,7 @@ class SampleFiguresTest : public QObject {
     }
 
     void flowSensorWithoutItsSlips() {
-        Record record = fromTable("flow-sensor-as-typed.csv");
+        Record record = sampleTable("flow-sensor-as-typed.csv");
         setIndication(record, 18, "1.487");
         setIndication(record, 7, "0.499");
         setIndication(record, 15, "0.998");
@@ -163,7 +135,7 @@ class SampleFiguresTest : public QObject {
     }
 
     void humidityProbeHasAGreyPoint() {
-        Record record = fromTable("humidity-probe.csv");
+        Record record = sampleTable("humidity-probe.csv");
         const ReadingColumns& readings = *record.readings;
         double falling = 0;
         double rising = 0;

@@ -1,11 +1,10 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/diagnose/Findings.h"
 #include "core/fit/fitFunction.h"
-#include "tests/support/Paths.h"
 #include "tests/support/PublishedSet.h"
 #include "tests/support/SampleRecord.h"
+#include "tests/support/SampleTable.h"
 
-#include <QFile>
 #include <QTest>
 
 #include <algorithm>
@@ -47,32 +46,6 @@ double figure(const Finding& finding, const std::string& name) {
         if (one.name == name)
             return one.value;
     return std::nan("");
-}
-
-/// sample-data/NAME with columns reference, indication and, where named, set point and run; the row of units is
-/// skipped.
-Record sampleData(const char* name, int setPoint, int run) {
-    Record record;
-    QFile file(QString::fromStdString(sourceDir()) + "/sample-data/" + name);
-    if (!file.open(QIODevice::ReadOnly))
-        qFatal("no %s", name);
-    file.readLine();
-    file.readLine();
-    while (!file.atEnd()) {
-        const QList<QByteArray> cells = file.readLine().trimmed().split(',');
-        if (cells.size() < 2 || cells[0].isEmpty() || cells[1].isEmpty())
-            continue;
-        Reading reading;
-        reading.id = record.nextReadingId++;
-        reading.reference = number(cells[0].constData());
-        reading.indication = number(cells[1].constData());
-        if (setPoint >= 0)
-            reading.setPoint = number(cells[setPoint].constData());
-        if (run >= 0)
-            reading.run = cells[run].toInt();
-        record.readings.edit().append(reading);
-    }
-    return record;
 }
 
 /// A line with normal noise of 0.01 at 6 set points, rising and falling, 4 runs; `change` may spoil a reading.
@@ -141,13 +114,13 @@ class FindingsTest : public QObject {
     }
 
     void loadCellRunsDifferInGain() {
-        const auto found = findingsOf(sampleData("load-cell.csv", 0, 2));
+        const auto found = findingsOf(sampleTableAtReferences("load-cell.csv"));
         QVERIFY(find(found, FindingCode::LackOfFit));
         QVERIFY(find(found, FindingCode::RunGainChange) || find(found, FindingCode::RunZeroShift));
     }
 
     void cleanFlowSensorAsksForWeightsAndTheTypedOneShowsItsSlips() {
-        const auto typed = findingsOf(sampleData("flow-sensor-as-typed.csv", 2, -1));
+        const auto typed = findingsOf(sampleTable("flow-sensor-as-typed.csv"));
         const Finding* outlier = find(typed, FindingCode::Outlier);
         QVERIFY(outlier && outlier->remedy == Remedy::SeeReadings);
         QCOMPARE(typed.front().severity, Severity::Serious);

@@ -1,10 +1,9 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/performance/ForceFigures.h"
 #include "core/performance/LoadingRange.h"
-#include "tests/support/Paths.h"
 #include "tests/support/SampleRecord.h"
+#include "tests/support/SampleTable.h"
 
-#include <QFile>
 #include <QTest>
 
 #include <cmath>
@@ -16,24 +15,7 @@ namespace {
 
 /// sample-data/load-cell.csv: invented readings of a 50 kN load cell, runs 1 and 2 at 0°, 3 at 120°, 4 at 240°.
 Record loadCell() {
-    Record record;
-    QFile file(QString::fromStdString(spanwright::test::sourceDir()) + "/sample-data/load-cell.csv");
-    if (!file.open(QIODevice::ReadOnly))
-        qFatal("no load-cell.csv");
-    file.readLine();
-    file.readLine();
-    while (!file.atEnd()) {
-        const QList<QByteArray> cells = file.readLine().trimmed().split(',');
-        if (cells.size() < 3)
-            continue;
-        Reading reading;
-        reading.id = record.nextReadingId++;
-        reading.reference = reading.setPoint = number(cells[0].constData());
-        reading.indication = number(cells[1].constData());
-        reading.run = cells[2].toInt();
-        record.readings.edit().append(reading);
-    }
-    return record;
+    return spanwright::test::sampleTableAtReferences("load-cell.csv");
 }
 
 std::vector<Decimal> positions(std::initializer_list<const char*> degrees) {

@@ -5,6 +5,7 @@
 #include "tests/support/Paths.h"
 #include "tests/support/PublishedSet.h"
 #include "tests/support/SampleRecord.h"
+#include "tests/support/SampleTable.h"
 
 #include <QFile>
 #include <QTest>
@@ -400,20 +401,7 @@ class VarianceSplitTest : public QObject {
     // sample-data/temperature-probe.csv: invented platinum readings with the curvature of IEC 60751, figures computed
     // beside them.
     void temperatureProbeBendsThoughItLooksStraight() {
-        QFile file(QString::fromStdString(spanwright::test::sourceDir()) + "/sample-data/temperature-probe.csv");
-        QVERIFY(file.open(QIODevice::ReadOnly));
-        file.readLine();
-        file.readLine();
-        Record record;
-        while (!file.atEnd()) {
-            const QList<QByteArray> cells = file.readLine().trimmed().split(',');
-            Reading reading;
-            reading.id = record.nextReadingId++;
-            reading.reference = number(cells[0].constData());
-            reading.indication = number(cells[1].constData());
-            reading.setPoint = number(cells[2].constData());
-            record.readings.edit().append(reading);
-        }
+        const Record record = spanwright::test::sampleTable("temperature-probe.csv");
         const Split straight = splitOf(record, line), curved = splitOf(record, quadratic);
         QVERIFY(std::abs(straight.outcome.fit.residualSd - 0.333) < 0.0005);
         QVERIFY(std::abs(*straight.split.lackOfFit->f / 1.8e5 - 1) < 0.03);
