@@ -10,10 +10,7 @@
 #include <QRubberBand>
 #include <QToolTip>
 #include <QWheelEvent>
-#include <QtCharts/QAreaSeries>
 #include <QtCharts/QChart>
-#include <QtCharts/QLineSeries>
-#include <QtCharts/QValueAxis>
 
 #include <algorithm>
 #include <cmath>
@@ -25,36 +22,15 @@ namespace {
 
 constexpr double reach = 11; ///< pixels within which a click finds a mark
 
-QList<QPointF> listOf(const std::vector<QPointF>& points) {
-    return {points.begin(), points.end()};
-}
-
 } // namespace
 
 PlotView::PlotView(QWidget* parent)
-    : QChartView(new QChart, parent), grid_(new PlotGrid(chart())), cloud_(new PointCloud(chart())), ink_(new PlotInk(chart())), xAxis_(new QValueAxis(this)),
-      yAxis_(new QValueAxis(this)), line_(new QLineSeries(this)), rubber_(new QRubberBand(QRubberBand::Rectangle, viewport())) {
-    for (QLineSeries*& edge : edges_)
-        edge = new QLineSeries(this);
-    inner_ = new QAreaSeries(edges_[1], edges_[0]);
-    outer_ = new QAreaSeries(edges_[3], edges_[2]);
+    : QChartView(new QChart, parent), grid_(new PlotGrid(chart())), cloud_(new PointCloud(chart())), ink_(new PlotInk(chart())), curves_(*chart()),
+      rubber_(new QRubberBand(QRubberBand::Rectangle, viewport())) {
     chart()->legend()->hide();
     chart()->setBackgroundVisible(false);
     chart()->setMargins({});
     chart()->setAnimationOptions(QChart::NoAnimation);
-    for (QAbstractSeries* series : std::initializer_list<QAbstractSeries*>{outer_, inner_, line_})
-        chart()->addSeries(series);
-    chart()->addAxis(xAxis_, Qt::AlignBottom);
-    chart()->addAxis(yAxis_, Qt::AlignLeft);
-    for (QAbstractSeries* series : std::initializer_list<QAbstractSeries*>{outer_, inner_, line_}) {
-        series->attachAxis(xAxis_);
-        series->attachAxis(yAxis_);
-    }
-    for (QValueAxis* axis : {xAxis_, yAxis_}) {
-        axis->setLabelsVisible(false);
-        axis->setLineVisible(false);
-        axis->setGridLineVisible(false);
-    }
     grid_->setZValue(1);
     cloud_->setZValue(30);
     ink_->setZValue(40);
@@ -85,21 +61,9 @@ void PlotView::setContent(Content content) {
     if (empty)
         zoomedAcross_ = zoomedUp_ = false;
     grid_->setVisible(!empty);
-    const std::pair<QLineSeries*, const std::vector<QPointF>*> series[] = {
-        {line_, &content_.line},
-        {edges_[0], &content_.inner.low},
-        {edges_[1], &content_.inner.high},
-        {edges_[2], &content_.outer.low},
-        {edges_[3], &content_.outer.high}};
-    // Emptied while the range changes: the chart would lay out the old points once more for each axis.
-    for (const auto& [line, points] : series)
-        line->clear();
+    curves_.clear();
     showRange(zoomedAcross_ ? frame_.x : content_.x, zoomedUp_ ? frame_.y : content_.y);
-    for (const auto& [line, points] : series)
-        line->replace(listOf(*points));
-    inner_->setVisible(!content_.inner.low.empty());
-    outer_->setVisible(!content_.outer.low.empty());
-    line_->setVisible(!content_.line.empty());
+    curves_.set(content_.line, content_.inner, content_.outer);
     cloud_->setPoints(empty ? PlotPoints{} : std::move(content_.points));
     content_.points = {};
     ink_->marksMoved();
@@ -167,13 +131,8 @@ void PlotView::changeEvent(QEvent* event) {
 }
 
 void PlotView::restyle() {
-    const Scheme& colours = scheme();
-    setBackgroundBrush(colours.card);
-    line_->setPen(QPen(colours.accent, 1.6));
-    inner_->setPen(Qt::NoPen);
-    inner_->setBrush(colours.band);
-    outer_->setPen(Qt::NoPen);
-    outer_->setBrush(colours.outerBand);
+    setBackgroundBrush(scheme().card);
+    curves_.restyle();
     cloud_->refresh();
     ink_->update();
 }
@@ -205,8 +164,7 @@ void PlotView::showRange(const AxisRange& x, const AxisRange& y) {
         }
         xTicks.first = xTicks.step = 1;
     }
-    xAxis_->setRange(x.low, x.high);
-    yAxis_->setRange(y.low, y.high);
+    curves_.setRange(x.low, x.high, y.low, y.high);
     grid_->set(frame_, xTicks.places, yTicks.places);
     ink_->setAxes({xTicks, yTicks, content_.ySign, content_.xUnit, content_.yUnit, names});
     ink_->setFrame(frame_);

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include "ui/plot/PlotCurves.h"
 #include "ui/plot/PlotFrame.h"
 #include "ui/plot/PlotGrid.h"
 #include "ui/plot/PlotInk.h"
@@ -12,10 +13,7 @@
 #include <optional>
 #include <set>
 
-class QAreaSeries;
-class QLineSeries;
 class QRubberBand;
-class QValueAxis;
 
 namespace spanwright {
 
@@ -28,14 +26,10 @@ class PlotView : public QChartView {
   public:
     explicit PlotView(QWidget* parent = nullptr);
 
-    /// A shaded band between two edges of at most 400 points, and the line.
-    struct Edge {
-        std::vector<QPointF> low, high;
-    };
     struct Content {
         PlotPoints points;
         std::vector<QPointF> line;
-        Edge inner, outer;
+        PlotCurves::Edges inner, outer;
         AxisRange x, y; ///< the whole picture
         QString xUnit, yUnit;
         TickSign ySign = TickSign::Minus;
@@ -102,12 +96,7 @@ class PlotView : public QChartView {
     PlotGrid* grid_;
     PointCloud* cloud_;
     PlotInk* ink_;
-    QValueAxis* xAxis_;
-    QValueAxis* yAxis_;
-    QLineSeries* line_;
-    QLineSeries* edges_[4];
-    QAreaSeries* inner_;
-    QAreaSeries* outer_;
+    PlotCurves curves_;
     QRubberBand* rubber_;
     Content content_;
     PlotFrame frame_;
