@@ -46,10 +46,10 @@ void ReadingsDelegate::updateEditorGeometry(QWidget* editor, const QStyleOptionV
 }
 
 /// Hands the number over. An untouched or empty planned cell is left as it was; anything that is no number is refused.
-bool ReadingsDelegate::accept(NumberEdit* editor, bool onward) {
+bool ReadingsDelegate::accept(NumberEdit* editor, Onward onward) {
     const Result<Decimal> number = editor->number();
     const bool untouched = !editor->isModified() || editor->text() == index_.data(Qt::EditRole).toString();
-    if (!number && !onward && editor->text().trimmed().isEmpty() && index_.data(Qt::EditRole).toString().isEmpty()) {
+    if (!number && onward == Onward::No && editor->text().trimmed().isEmpty() && index_.data(Qt::EditRole).toString().isEmpty()) {
         emit closeEditor(editor, NoHint);
         return true;
     }
@@ -60,7 +60,7 @@ bool ReadingsDelegate::accept(NumberEdit* editor, bool onward) {
     }
     const QPersistentModelIndex index = index_;
     emit closeEditor(editor, NoHint);
-    if (!untouched || onward)
+    if (!untouched || onward == Onward::Yes)
         emit typed(index, *number, onward);
     return true;
 }
@@ -73,9 +73,9 @@ bool ReadingsDelegate::eventFilter(QObject* object, QEvent* event) {
         switch (static_cast<QKeyEvent*>(event)->key()) {
         case Qt::Key_Return:
         case Qt::Key_Enter:
-        case Qt::Key_Tab: accept(editor, true); return true;
+        case Qt::Key_Tab: accept(editor, Onward::Yes); return true;
         case Qt::Key_Up:
-        case Qt::Key_Down: accept(editor, false); return true;
+        case Qt::Key_Down: accept(editor, Onward::No); return true;
         default: break;
         }
     }
@@ -83,71 +83,80 @@ bool ReadingsDelegate::eventFilter(QObject* object, QEvent* event) {
         const auto reason = static_cast<QFocusEvent*>(event)->reason();
         if (reason == Qt::ActiveWindowFocusReason || reason == Qt::PopupFocusReason)
             return false;
-        accept(editor, false);
+        accept(editor, Onward::No);
         return false;
     }
     return QStyledItemDelegate::eventFilter(object, event);
 }
 
-void ReadingsDelegate::paintMark(QPainter* painter, const QStyleOptionViewItem& option, const QModelIndex& index) const {
+void ReadingsDelegate::paint(QPainter* painter, const QStyleOptionViewItem& option, const QModelIndex& index) const {
+    painter->save();
+    painter->setRenderHint(QPainter::Antialiasing);
+    paintGround(*painter, option, index);
+    if (index.column() == ReadingsModel::DirectionMark) {
+        paintDirection(*painter, option, index);
+    } else {
+        paintText(*painter, option, index);
+        paintCorners(*painter, option, index);
+        if (option.state.testFlag(QStyle::State_HasFocus)) {
+            painter->setPen(QPen(scheme().accent, 1));
+            painter->setBrush(Qt::NoBrush);
+            painter->drawRect(QRectF(option.rect).adjusted(0.5, 0.5, -0.5, -0.5));
+        }
+    }
+    painter->restore();
+}
+
+void ReadingsDelegate::paintGround(QPainter& painter, const QStyleOptionViewItem& option, const QModelIndex& index) {
+    if (index.data(ReadingsModel::ExcludedRole).toBool()) {
+        QColor tint = scheme().warning;
+        tint.setAlphaF(0.12F);
+        painter.fillRect(option.rect, tint);
+    }
+    if (option.state.testFlag(QStyle::State_Selected))
+        painter.fillRect(option.rect, scheme().selection);
+}
+
+void ReadingsDelegate::paintDirection(QPainter& painter, const QStyleOptionViewItem& option, const QModelIndex& index) {
     const auto direction = static_cast<Direction>(index.data(ReadingsModel::DirectionRole).toInt());
     const bool excluded = index.data(ReadingsModel::ExcludedRole).toBool(), planned = index.data(ReadingsModel::PlannedRole).toBool();
     if (direction == Direction::Unknown && planned)
         return;
     const Scheme& colours = scheme();
-    spanwright::paintMark(*painter, QRectF(option.rect).center(), direction,
-                          {8.5, excluded ? colours.warning : planned ? colours.quiet : colours.accent, excluded || planned, {}});
+    paintMark(painter, QRectF(option.rect).center(), direction, {8.5, excluded ? colours.warning : planned ? colours.quiet : colours.accent, excluded || planned, {}});
 }
 
-void ReadingsDelegate::paint(QPainter* painter, const QStyleOptionViewItem& option, const QModelIndex& index) const {
+/// An excluded reading is struck through, but not what tells of it; a number keeps free the room of the digits that it lacks.
+void ReadingsDelegate::paintText(QPainter& painter, const QStyleOptionViewItem& option, const QModelIndex& index) {
     const Scheme& colours = scheme();
-    const bool excluded = index.data(ReadingsModel::ExcludedRole).toBool();
-    const bool selected = option.state.testFlag(QStyle::State_Selected);
-    painter->save();
-    painter->setRenderHint(QPainter::Antialiasing);
-    if (excluded) {
-        QColor tint = colours.warning;
-        tint.setAlphaF(0.12F);
-        painter->fillRect(option.rect, tint);
-    }
-    if (selected)
-        painter->fillRect(option.rect, colours.selection);
-    if (index.column() == ReadingsModel::DirectionMark) {
-        paintMark(painter, option, index);
-        painter->restore();
-        return;
-    }
     const int column = index.column();
-    const bool planned = index.data(ReadingsModel::PlannedRole).toBool();
-    const bool strong = ReadingsModel::numberColumn(column) && !excluded && !planned;
-    QFont font = textFont(column == ReadingsModel::State ? TextRole::Small : TextRole::Body);
-    font.setStrikeOut(excluded && column != ReadingsModel::State && column != ReadingsModel::ResidualValue && column != ReadingsModel::Number);
-    painter->setFont(font);
-    const bool hurried = column == ReadingsModel::State && index.data(ReadingsModel::HurriedRole).toBool();
-    const bool warns = hurried || (excluded && (column == ReadingsModel::ResidualValue || column == ReadingsModel::State));
-    painter->setPen(warns ? colours.warning : strong || (column == ReadingsModel::ResidualValue && !excluded) ? colours.ink : colours.quiet);
+    const bool state = column == ReadingsModel::State, residual = column == ReadingsModel::ResidualValue;
+    const bool excluded = index.data(ReadingsModel::ExcludedRole).toBool(), planned = index.data(ReadingsModel::PlannedRole).toBool();
+    QFont font = textFont(state ? TextRole::Small : TextRole::Body);
+    font.setStrikeOut(excluded && !state && !residual && column != ReadingsModel::Number);
+    painter.setFont(font);
+    const bool warns = (state && index.data(ReadingsModel::HurriedRole).toBool()) || (excluded && (residual || state));
+    const bool strong = !excluded && (residual || (ReadingsModel::numberColumn(column) && !planned));
+    painter.setPen(warns ? colours.warning : strong ? colours.ink : colours.quiet);
     const int missing = index.data(ReadingsModel::MissingDigitsRole).toInt();
     const int inset = missing > 0 ? QFontMetrics(font).horizontalAdvance(QString(missing, QLatin1Char('0'))) : 0;
-    const int alignment = index.data(Qt::TextAlignmentRole).toInt();
-    painter->drawText(option.rect.adjusted(side, 0, -side - inset, 0), alignment, index.data(Qt::DisplayRole).toString());
-    if (index.data(ReadingsModel::AmendedRole).toBool()) { // a folded corner: there is an earlier value
-        const QPointF corner = QRectF(option.rect).topRight();
-        painter->setPen(Qt::NoPen);
-        painter->setBrush(colours.accent);
-        painter->drawPolygon(QPolygonF() << corner << corner - QPointF(7, 0) << corner + QPointF(0, 7));
+    painter.drawText(option.rect.adjusted(side, 0, -side - inset, 0), index.data(Qt::TextAlignmentRole).toInt(), index.data(Qt::DisplayRole).toString());
+}
+
+/// A folded corner above: there is an earlier value. One below: taken early.
+void ReadingsDelegate::paintCorners(QPainter& painter, const QStyleOptionViewItem& option, const QModelIndex& index) {
+    const QRectF cell(option.rect);
+    painter.setPen(Qt::NoPen);
+    if (index.data(ReadingsModel::AmendedRole).toBool()) {
+        const QPointF corner = cell.topRight();
+        painter.setBrush(scheme().accent);
+        painter.drawPolygon(QPolygonF() << corner << corner - QPointF(7, 0) << corner + QPointF(0, 7));
     }
-    if (column == ReadingsModel::IndicationValue && index.data(ReadingsModel::HurriedRole).toBool()) { // the lower corner: taken early
-        const QPointF corner = QRectF(option.rect).bottomLeft() + QPointF(0, 1);
-        painter->setPen(Qt::NoPen);
-        painter->setBrush(colours.warning);
-        painter->drawPolygon(QPolygonF() << corner << corner + QPointF(7, 0) << corner - QPointF(0, 7));
+    if (index.column() == ReadingsModel::IndicationValue && index.data(ReadingsModel::HurriedRole).toBool()) {
+        const QPointF corner = cell.bottomLeft() + QPointF(0, 1);
+        painter.setBrush(scheme().warning);
+        painter.drawPolygon(QPolygonF() << corner << corner + QPointF(7, 0) << corner - QPointF(0, 7));
     }
-    if (option.state.testFlag(QStyle::State_HasFocus)) {
-        painter->setPen(QPen(colours.accent, 1));
-        painter->setBrush(Qt::NoBrush);
-        painter->drawRect(QRectF(option.rect).adjusted(0.5, 0.5, -0.5, -0.5));
-    }
-    painter->restore();
 }
 
 } // namespace spanwright

@@ -9,6 +9,9 @@ namespace spanwright {
 
 class NumberEdit;
 
+/// Whether the next cell is opened once a number is in.
+enum class Onward { No, Yes };
+
 /// Paints the cells of the readings and gives a number its editor. A text that is no number is refused in place: the editor stays
 /// open with what was typed, and refused() says why.
 class ReadingsDelegate : public QStyledItemDelegate {
@@ -26,13 +29,16 @@ class ReadingsDelegate : public QStyledItemDelegate {
 
   signals:
     /// A number was typed and accepted with Enter or Tab (`onward`), or by leaving the cell.
-    void typed(const QModelIndex& index, const spanwright::Decimal& value, bool onward) const;
+    void typed(const QModelIndex& index, const spanwright::Decimal& value, spanwright::Onward onward) const;
     void refused(spanwright::NumberEdit* editor, const spanwright::Error& error) const;
     void editing(spanwright::NumberEdit* editor) const;
 
   private:
-    void paintMark(QPainter* painter, const QStyleOptionViewItem& option, const QModelIndex& index) const;
-    bool accept(NumberEdit* editor, bool onward);
+    static void paintGround(QPainter& painter, const QStyleOptionViewItem& option, const QModelIndex& index);
+    static void paintText(QPainter& painter, const QStyleOptionViewItem& option, const QModelIndex& index);
+    static void paintCorners(QPainter& painter, const QStyleOptionViewItem& option, const QModelIndex& index);
+    static void paintDirection(QPainter& painter, const QStyleOptionViewItem& option, const QModelIndex& index);
+    bool accept(NumberEdit* editor, Onward onward);
     mutable QPersistentModelIndex index_; ///< of the open editor
 };
 

@@ -109,7 +109,7 @@ void ReadingsTable::goOn(const QModelIndex& from) {
     edit(next);
 }
 
-void ReadingsTable::accept(const QModelIndex& index, const Decimal& value, bool onward) {
+void ReadingsTable::accept(const QModelIndex& index, const Decimal& value, Onward onward) {
     const auto column = ReadingsModel::numberColumn(index.column());
     if (!column)
         return;
@@ -119,12 +119,12 @@ void ReadingsTable::accept(const QModelIndex& index, const Decimal& value, bool 
         amend(*id, *column, *before, value, onward);
     else if (!before)
         enter(model_->readingAt(index.row()), *column, value, onward);
-    else if (onward)
+    else if (onward == Onward::Yes)
         goOn(model_->index(model_->rowOf(*id), index.column()));
 }
 
 /// A value where there was none: of a new reading, or of one that was begun.
-void ReadingsTable::enter(Reading reading, NumberColumn column, const Decimal& value, bool onward) {
+void ReadingsTable::enter(Reading reading, NumberColumn column, const Decimal& value, Onward onward) {
     const ReadingId id = reading.id != 0 ? reading.id : workbench_.record().nextReadingId;
     const int row = reading.id != 0 ? model_->rowOf(reading.id) : currentIndex().row();
     const int shown = ReadingsModel::columnOf(column);
@@ -134,7 +134,7 @@ void ReadingsTable::enter(Reading reading, NumberColumn column, const Decimal& v
         workbench_, {step, {std::move(reading)}, {column}, {}}, this,
         [=, this] {
             setFocus();
-            if (onward && model_->rowOf(id) >= 0)
+            if (onward == Onward::Yes && model_->rowOf(id) >= 0)
                 goOn(model_->index(model_->rowOf(id), shown));
         },
         [=, this] { editAgain(row, column, value); });
@@ -155,7 +155,7 @@ void ReadingsTable::editAgain(int row, NumberColumn column, const Decimal& value
     }
 }
 
-void ReadingsTable::amend(ReadingId id, NumberColumn column, const Decimal& before, const Decimal& after, bool onward) {
+void ReadingsTable::amend(ReadingId id, NumberColumn column, const Decimal& before, const Decimal& after, Onward onward) {
     const int shown = ReadingsModel::columnOf(column);
     Reading amended = workbench_.record().readings->row(workbench_.record().readings->indexOf(id));
     numberOf(amended, column) = after;
@@ -174,7 +174,7 @@ void ReadingsTable::amend(ReadingId id, NumberColumn column, const Decimal& befo
     connect(dialog, &QDialog::accepted, this, [=, this] {
         workbench_.perform(std::make_unique<AmendValue>(id, column, after, dialog->reason().toStdString()));
         setFocus();
-        if (onward)
+        if (onward == Onward::Yes)
             goOn(model_->index(model_->rowOf(id), shown));
     });
     connect(dialog, &QDialog::rejected, this, [this] { setFocus(); });

@@ -2,6 +2,7 @@
 #pragma once
 
 #include "ui/bench/ReadingsColumns.h"
+#include "ui/bench/ReadingsDelegate.h"
 #include "ui/bench/ReadingsModel.h"
 
 #include <QTableView>
@@ -13,7 +14,6 @@ class QLabel;
 namespace spanwright {
 
 class NumberEdit;
-class ReadingsDelegate;
 struct Place;
 
 /// The readings, typed by keyboard: Enter goes on to the next planned cell, a block from a spreadsheet is pasted at the current
@@ -48,9 +48,9 @@ class ReadingsTable : public QTableView {
     void scrollContentsBy(int dx, int dy) override;
 
   private:
-    void accept(const QModelIndex& index, const Decimal& value, bool onward);
-    void amend(ReadingId id, NumberColumn column, const Decimal& before, const Decimal& after, bool onward);
-    void enter(Reading reading, NumberColumn column, const Decimal& value, bool onward);
+    void accept(const QModelIndex& index, const Decimal& value, Onward onward);
+    void amend(ReadingId id, NumberColumn column, const Decimal& before, const Decimal& after, Onward onward);
+    void enter(Reading reading, NumberColumn column, const Decimal& value, Onward onward);
     void editAgain(int row, NumberColumn column, const Decimal& value);
     void goOn(const QModelIndex& from);
     void say(const QString& words, const QRect& under);
