@@ -34,9 +34,11 @@ enum class FindingCode {
     StatedTooLarge,
     RepeatedReading,
     Extrapolation,
+    LowestOutweigh,
+    BetweenPlateaus,
 };
 /// The last code, for a test that walks them all.
-inline constexpr FindingCode lastFindingCode = FindingCode::Extrapolation;
+inline constexpr FindingCode lastFindingCode = FindingCode::BetweenPlateaus;
 
 /// The one thing to do about a finding.
 enum class Remedy {

@@ -51,6 +51,10 @@ std::string_view findingName(FindingCode code) {
         return "repeated-reading";
     case FindingCode::Extrapolation:
         return "extrapolation";
+    case FindingCode::LowestOutweigh:
+        return "lowest-outweigh";
+    case FindingCode::BetweenPlateaus:
+        return "between-plateaus";
     }
     return {};
 }

@@ -10,6 +10,9 @@ namespace spanwright {
 void addFunctionFindings(const FindingsInput& input, std::vector<Finding>& found);
 void addRunFindings(const FindingsInput& input, std::vector<Finding>& found);
 void addScatterFindings(const FindingsInput& input, const std::vector<double>& deviations, std::vector<Finding>& found);
+/// Weights by level that let the readings near zero decide alone; readings of a logger between its plateaus.
+void addWeightFindings(const FindingsInput& input, std::vector<Finding>& found);
+void addPlateauFindings(const FindingsInput& input, std::vector<Finding>& found);
 void addReadingFindings(const FindingsInput& input, const std::vector<double>& deviations, std::vector<Finding>& found);
 /// χ² of the stated uncertainties where they are taken as they are: above its 95 % quantile they do not explain the residuals (ISO/TS
 /// 28037:2010, 6.3), below the 1 % quantile the residuals are smaller than they ought to be (common practice).

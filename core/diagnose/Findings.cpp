@@ -14,7 +14,7 @@ namespace {
 /// worth knowing.
 constexpr std::array order{
     FindingCode::LackOfFit,       FindingCode::HiddenCurvature,    FindingCode::ThroughZeroNotSupported,
-    FindingCode::StatedTooSmall,
+    FindingCode::StatedTooSmall,  FindingCode::LowestOutweigh,     FindingCode::BetweenPlateaus,
     FindingCode::Outlier,         FindingCode::SetPointExcluded,   FindingCode::ManyExcluded,
     FindingCode::TooFewReadings,  FindingCode::Extrapolation,      FindingCode::Hysteresis,
     FindingCode::FirstRunDiffers, FindingCode::RunZeroShift,       FindingCode::RunGainChange,
@@ -113,6 +113,8 @@ std::vector<Finding> findings(const FindingsInput& input) {
         const std::vector<double> deviations = repeatabilityDeviations(input);
         addReadingFindings(input, deviations, found);
         addScatterFindings(input, deviations, found);
+        addWeightFindings(input, found);
+        addPlateauFindings(input, found);
     }
     if (input.fit)
         addStatedFindings(*input.fit, found);

@@ -67,6 +67,12 @@ QString FindingText::sentence(const Finding& finding) {
         return tr("The residuals are larger than the stated uncertainties explain: the function does not fit, or the uncertainties are too small.");
     case FindingCode::StatedTooLarge: return tr("The residuals are smaller than the stated uncertainties let expect; they may be stated too large.");
     case FindingCode::RepeatedReading: return tr("A reading is identical to the one before it. Was it read afresh?");
+    case FindingCode::LowestOutweigh:
+        return tr("Weights proportional to level make the readings near zero outweigh all others, as if they had no scatter. Weights that grow from a "
+                  "constant do not.");
+    case FindingCode::BetweenPlateaus:
+        return tr("Readings were taken on the way between plateaus, where the item lags behind the reference. Exclude them, or fit the means of the "
+                  "plateaus.");
     case FindingCode::Extrapolation: return tr("A value asked for lies outside the calibrated range.");
     }
     return {};
@@ -124,6 +130,12 @@ QString FindingText::figure(const Figure& figure, const Record& record) {
         return tr("at %1").arg(withUnit(record.item.reference));
     if (name == "share")
         return shareText(figure.value);
+    if (name == "weight_share")
+        return tr("%1 of the weight").arg(shareText(figure.value));
+    if (name == "level")
+        return tr("lowest level %1").arg(value);
+    if (name == "plateaus")
+        return tr("%n plateau(s)", nullptr, static_cast<int>(figure.value));
     if (name == "exclusion_limit")
         return tr("limit %1").arg(shareText(figure.value));
     if (name == "set_points")

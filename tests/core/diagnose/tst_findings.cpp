@@ -287,6 +287,58 @@ class FindingsTest : public QObject {
                                [](const Finding& a, const Finding& b) { return a.severity > b.severity; }));
     }
 
+    /// 1/x² gives the reading at 0.001 a million times the weight of that at 1: the line is made to pass through it.
+    void weightsByLevelLetReadingsNearZeroDecide() {
+        Record record = recordOf(std::vector<std::string>{"0.001", "2", "4", "6", "8", "10"}, {"0.3", "2.1", "3.9", "6.2", "8.0", "10.1"});
+        record.choices.weights = Weights::Proportional;
+        const auto found = findingsOf(record);
+        const Finding* outweigh = find(found, FindingCode::LowestOutweigh);
+        QVERIFY(outweigh && outweigh->rows == std::vector<ReadingId>{1} && outweigh->remedy == Remedy::ChooseWeights);
+        // By hand: 10⁶ of 10⁶ + 1/4 + 1/16 + 1/36 + 1/64 + 1/100.
+        QVERIFY(std::abs(figure(*outweigh, "weight_share") - 1e6 / (1e6 + 0.25 + 0.0625 + 1 / 36.0 + 0.015625 + 0.01)) < 1e-12);
+        record.choices.weights = Weights::Equal;
+        QVERIFY(!find(findingsOf(record), FindingCode::LowestOutweigh));
+        // Decades, as of a flow or a concentration, are what such weights are for.
+        Record decades = recordOf(std::vector<std::string>{"0.1", "1", "10", "100"}, {"0.102", "0.99", "10.1", "99"});
+        decades.choices.weights = Weights::Proportional;
+        QVERIFY(!find(findingsOf(decades), FindingCode::LowestOutweigh));
+        // Scatter of 1 % would be 0.001 at 0.1, which a display in steps of 0.02 cannot show.
+        decades.item.resolution = number("0.02");
+        QVERIFY(find(findingsOf(decades), FindingCode::LowestOutweigh));
+    }
+
+    /// Three plateaus of twenty readings and ten on the way from each to the next.
+    void readingsBetweenPlateausAreNamed() {
+        std::vector<std::string> reference, indication;
+        unsigned seed = 3;
+        const auto add = [&](double x) {
+            seed = seed * 1664525u + 1013904223u;
+            const double noise = static_cast<double>(seed >> 8) / 16777216.0 - 0.5;
+            reference.push_back(QByteArray::number(x + 0.02 * noise, 'f', 4).toStdString());
+            indication.push_back(QByteArray::number(2 * x + 0.03 * noise, 'f', 4).toStdString());
+        };
+        for (int plateau = 0; plateau < 3; ++plateau) {
+            for (int i = 0; i < 20; ++i)
+                add(10.0 * plateau);
+            for (int i = 0; i < 10 && plateau < 2; ++i)
+                add(10.0 * plateau + 0.8 + 0.9 * i);
+        }
+        const auto found = findingsOf(recordOf(reference, indication));
+        const Finding* between = find(found, FindingCode::BetweenPlateaus);
+        QVERIFY(between);
+        QCOMPARE(figure(*between, "plateaus"), 3.0);
+        QCOMPARE(figure(*between, "count"), 20.0);
+        QVERIFY(between->rows.front() == 21 && between->rows.back() == 60);
+        // A sweep has no plateaus; readings whose set points are stated were taken there.
+        std::vector<std::string> sweep, answer;
+        for (int i = 0; i < 80; ++i) {
+            sweep.push_back(std::to_string(i));
+            answer.push_back(std::to_string(2 * i + i % 3));
+        }
+        QVERIFY(!find(findingsOf(recordOf(sweep, answer)), FindingCode::BetweenPlateaus));
+        QVERIFY(!find(findingsOf(madeRecord(nothing)), FindingCode::BetweenPlateaus));
+    }
+
     void fewReadingsAndExtrapolationAreSaid() {
         Record record = recordOf(std::vector<std::string>{"0", "1", "2"}, {"0.1", "1.0", "2.2"});
         record.choices.at = {number("3")};
