@@ -29,16 +29,29 @@ std::vector<PlannedReading> plannedReadings(const Plan& plan, Phase phase) {
     return all;
 }
 
-std::optional<PlannedReading> nextPlanned(const Plan& plan, const ReadingColumns& readings, Phase phase) {
+std::vector<PlannedReading> openPlanned(const Plan& plan, const ReadingColumns& readings, Phase phase, Met met) {
     using Visit = std::tuple<int, Direction, double>;
     std::map<Visit, int> taken;
     for (std::size_t i = 0; i < readings.size(); ++i)
-        if (readings.phases()[i] == phase && readings.complete(i) && readings.setPoint().has(i))
+        if (readings.phases()[i] == phase && readings.setPoint().has(i) && (met == Met::WhenBegun || readings.complete(i)))
             ++taken[{readings.runs()[i], readings.directions()[i], readings.setPoint().toDouble(i)}];
-    for (const PlannedReading& planned : plannedReadings(plan, phase))
-        if (taken[{planned.run, planned.direction, planned.setPoint.toDouble()}]-- <= 0)
-            return planned;
-    return std::nullopt;
+    const auto take = [&](const Visit& visit) {
+        const auto found = taken.find(visit);
+        return found != taken.end() && found->second-- > 0;
+    };
+    std::vector<PlannedReading> open;
+    for (const PlannedReading& planned : plannedReadings(plan, phase)) {
+        const double at = planned.setPoint.toDouble();
+        if (!take({planned.run, planned.direction, at}) && !take({planned.run, Direction::Unknown, at}) && !take({0, planned.direction, at}) &&
+            !take({0, Direction::Unknown, at}))
+            open.push_back(planned);
+    }
+    return open;
+}
+
+std::optional<PlannedReading> nextPlanned(const Plan& plan, const ReadingColumns& readings, Phase phase) {
+    const std::vector<PlannedReading> open = openPlanned(plan, readings, phase, Met::WhenComplete);
+    return open.empty() ? std::nullopt : std::optional(open.front());
 }
 
 } // namespace spanwright

@@ -36,8 +36,14 @@ struct PlannedReading {
 /// All readings of a phase in the order in which they are to be taken.
 std::vector<PlannedReading> plannedReadings(const Plan& plan, Phase phase);
 
-/// The first planned reading of the phase that has no complete reading yet: the n-th visit of (run, direction, set point) is
-/// met by the n-th reading there. Empty when the plan is done.
+/// Whether a reading meets the plan when it is complete, or as soon as it was begun.
+enum class Met { WhenComplete, WhenBegun };
+
+/// The planned readings of the phase that no reading meets yet, in their order: the n-th visit of (run, direction, set point) is met by the
+/// n-th reading there. A reading whose run or direction nobody stated, as in a table taken in, meets any of its set point.
+std::vector<PlannedReading> openPlanned(const Plan& plan, const ReadingColumns& readings, Phase phase, Met met);
+
+/// The first of them that has no complete reading. Empty when the plan is done.
 std::optional<PlannedReading> nextPlanned(const Plan& plan, const ReadingColumns& readings, Phase phase);
 
 } // namespace spanwright

@@ -131,7 +131,8 @@ void NextReading::refresh() {
     // A reading that was begun in the table at this place is completed, not doubled.
     const ReadingColumns& readings = *record.readings;
     for (std::size_t i = readings.size() > 5000 ? readings.size() : 0; planned_ && i < readings.size(); ++i)
-        if (!readings.complete(i) && readings.phases()[i] == phase && readings.runs()[i] == next_.run && readings.directions()[i] == next_.direction &&
+        if (!readings.complete(i) && readings.phases()[i] == phase && (readings.runs()[i] == next_.run || readings.runs()[i] == 0) &&
+            (readings.directions()[i] == next_.direction || readings.directions()[i] == Direction::Unknown) &&
             readings.setPoint().at(i) == next_.setPoint)
             next_ = readings.row(i);
     const Taken taken = takenOf(record, phase);

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ui/import/ImportDialog.h"
 
+#include "core/record/PlanOfReadings.h"
 #include "ui/commands/PartCommand.h"
 #include "ui/commands/ReadingCommands.h"
 #include "ui/commands/Together.h"
@@ -62,24 +63,6 @@ void addField(QHBoxLayout* row, const QString& label, QWidget* editor, const QSt
     cell->addWidget(name);
     cell->addWidget(editor);
     row->addLayout(cell, 1);
-}
-
-/// Set points of the imported rows, each once, in rising order; at most a thousand, else there is no plan in them.
-std::vector<Decimal> setPointsIn(const ReadingColumns::Block& block) {
-    std::vector<Decimal> points;
-    for (std::size_t i = 0; i < block.setPoint.size(); ++i) {
-        const std::optional<Decimal> value = block.setPoint.at(i);
-        if (!value)
-            continue;
-        const auto place = std::lower_bound(points.begin(), points.end(), *value,
-                                            [](const Decimal& a, const Decimal& b) { return compareValue(a, b) < 0; });
-        if (place != points.end() && compareValue(*place, *value) == 0)
-            continue;
-        points.insert(place, *value);
-        if (points.size() > 1000)
-            return {};
-    }
-    return points;
 }
 
 } // namespace
@@ -386,8 +369,8 @@ std::unique_ptr<RecordCommand> ImportDialog::takeCommand() {
             take(mapping_.reference, item.reference);
             take(mapping_.indication, item.indication);
         }));
-    if (const std::vector<Decimal> points = setPointsIn(block); record_.plan.setPoints.empty() && !points.empty())
-        changes.push_back(changePart(record_, &Record::plan, tr("set points"), [&](Plan& plan) { plan.setPoints = points; }));
+    if (const Plan followed = planOfReadings(record_.plan, block); record_.plan.setPoints.empty() && followed != record_.plan)
+        changes.push_back(changePart(record_, &Record::plan, tr("plan of the readings taken in"), [&](Plan& plan) { plan = followed; }));
     if (block.phase != record_.choices.phase)
         changes.push_back(changePart(record_, &Record::choices, tr("phase"), [&](Choices& choices) { choices.phase = block.phase; }));
     changes.push_back(std::make_unique<ImportReadings>(std::move(block), origin_.toStdString()));

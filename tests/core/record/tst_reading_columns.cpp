@@ -1,5 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "core/record/Plan.h"
+#include "core/record/PlanOfReadings.h"
 #include "core/record/ReadingColumns.h"
 
 #include <QTest>
@@ -128,6 +128,87 @@ class ReadingColumnsTest : public QObject {
         }
         QVERIFY(!nextPlanned(plan, columns, Phase::AsFound));
         QVERIFY(!nextPlanned(plan, columns, Phase::AsLeft));
+    }
+
+    void aReadingOfNoStatedRunOrDirectionMeetsThePlanToo() {
+        Plan plan;
+        plan.setPoints = {*typed("0"), *typed("5")};
+        plan.runs = 2;
+        plan.directions = PlanDirections::Rising;
+        ReadingColumns columns;
+        for (const char* at : {"0", "5", "0"}) {
+            Reading r = reading(static_cast<ReadingId>(columns.size() + 1), "1", "2");
+            r.run = 0;
+            r.direction = Direction::Unknown;
+            r.setPoint = *typed(at);
+            columns.append(r);
+        }
+        QVERIFY((*nextPlanned(plan, columns, Phase::AsFound) == PlannedReading{Phase::AsFound, 2, Direction::Rising, *typed("5")}));
+        // Of a set point that is not planned it meets nothing.
+        plan.setPoints.push_back(*typed("7"));
+        QCOMPARE(openPlanned(plan, columns, Phase::AsFound, Met::WhenBegun).size(), std::size_t(3));
+    }
+
+    void aPlanFollowsTheReadings_data() {
+        QTest::addColumn<QString>("setPoints");
+        QTest::addColumn<QString>("directions"); // r, f
+        QTest::addColumn<QString>("runs");
+        QTest::addColumn<int>("way");
+        QTest::addColumn<int>("passes");
+        QTest::addColumn<int>("repeats");
+        const auto row = [](const char* name, const char* points, const char* directions, const char* runs, PlanDirections way, int passes, int repeats) {
+            QTest::newRow(name) << QString(points) << QString(directions) << QString(runs) << static_cast<int>(way) << passes << repeats;
+        };
+        row("only rising", "0 5 10", "", "", PlanDirections::Rising, 1, 1);
+        row("rising three times", "0 5 10 0 5 10 0 5 10", "", "", PlanDirections::Rising, 3, 1);
+        row("only falling", "10 5 0", "", "", PlanDirections::Falling, 1, 1);
+        row("each one twice", "0 0 5 5 10 10", "", "", PlanDirections::Rising, 1, 2);
+        row("up and down", "0 5 10 10 5 0", "", "", PlanDirections::RisingThenFalling, 1, 1);
+        row("stated rising", "0 5 10 0 5 10", "rrrrrr", "111222", PlanDirections::Rising, 2, 1);
+        row("stated falling", "10 5 0", "fff", "", PlanDirections::Falling, 1, 1);
+        row("stated both", "0 5 5 0", "rrff", "1111", PlanDirections::RisingThenFalling, 1, 1);
+        row("runs stated, ways not", "0 5 0 5", "", "1122", PlanDirections::Rising, 2, 1);
+        row("one is missing", "0 5 10 0 5", "", "", PlanDirections::Rising, 2, 1);
+    }
+    void aPlanFollowsTheReadings() {
+        QFETCH(QString, setPoints);
+        QFETCH(QString, directions);
+        QFETCH(QString, runs);
+        ReadingColumns::Block block;
+        for (const QString& at : setPoints.split(' ')) {
+            block.setPoint.push_back(typed(at.toLatin1().constData()));
+            block.reference.push_back(typed("1"));
+            block.indication.push_back(typed("2"));
+            ++block.n;
+        }
+        for (const QChar c : directions)
+            block.directions.push_back(c == 'r' ? Direction::Rising : Direction::Falling);
+        for (const QChar c : runs)
+            block.runs.push_back(c.digitValue());
+        const Plan plan = planOfReadings({}, block);
+        QCOMPARE(plan.setPoints.size(), setPoints.contains("10") ? std::size_t(3) : std::size_t(2));
+        QTEST(static_cast<int>(plan.directions), "way");
+        QTEST(plan.runs, "passes");
+        QTEST(plan.repeats, "repeats");
+        // What was taken is not asked for again.
+        ReadingColumns columns;
+        const std::size_t planned = plannedReadings(plan, Phase::AsFound).size();
+        const std::size_t n = block.n;
+        columns.appendBlock(std::move(block), 1);
+        QCOMPARE(openPlanned(plan, columns, Phase::AsFound, Met::WhenComplete).size(), planned - n);
+    }
+
+    void aLoggerFollowsNoPlanOfRuns() {
+        ReadingColumns::Block block;
+        for (int i = 0; i < 6000; ++i) {
+            block.setPoint.push_back(typed(i < 3000 ? "0" : "5"));
+            block.runs.push_back(i + 1);
+        }
+        block.n = 6000;
+        const Plan plan = planOfReadings({}, block);
+        QCOMPARE(plan.setPoints.size(), std::size_t(2));
+        QCOMPARE(plannedReadings(plan, Phase::AsFound).size(), std::size_t(2));
+        QVERIFY(planOfReadings({}, {}) == Plan{});
     }
 };
 

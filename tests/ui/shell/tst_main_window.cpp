@@ -459,6 +459,7 @@ class MainWindowTest : public QObject {
         QVERIFY(!readings.indication().has(2));
         QCOMPARE(desk.record().item.indication, (Quantity{"voltage", "V"}));
         QCOMPARE(desk.record().plan.setPoints.size(), std::size_t{3});
+        QCOMPARE(desk.record().plan.directions, PlanDirections::Rising); // as the readings rise
         QCOMPARE(desk.window->stage(), Stage::Bench);
         QCOMPARE(desk.window->workbench().undoStack().count(), 1);
         desk.trigger("edit.undo");
