@@ -46,4 +46,12 @@ Result<Arguments> parseArguments(std::span<const std::string> words, std::span<c
     return arguments;
 }
 
+Result<std::string> onlyFile(const Arguments& arguments, std::string_view command) {
+    if (arguments.files.empty() || arguments.files.front().empty())
+        return Error(ErrorCode::UsageNoFile, {{"command", std::string(command)}});
+    if (arguments.files.size() > 1)
+        return Error(ErrorCode::UsageUnknownCommand, {{"command", std::string(command)}, {"text", arguments.files[1]}});
+    return arguments.files.front();
+}
+
 } // namespace spanwright

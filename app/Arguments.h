@@ -34,4 +34,7 @@ struct Arguments {
 /// UsageUnknownOption, UsageValueMissing, UsageValueBad (a flag with a value). Facts: option.
 Result<Arguments> parseArguments(std::span<const std::string> words, std::span<const OptionSpec> known);
 
+/// The one file that a command takes. Errors: UsageNoFile (fact: command), UsageUnknownCommand (facts: command, text) where there are more.
+Result<std::string> onlyFile(const Arguments& arguments, std::string_view command);
+
 } // namespace spanwright

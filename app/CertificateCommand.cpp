@@ -95,10 +95,8 @@ Result<Arguments> argumentsOf(const Words& words) {
     auto arguments = parseArguments(words, known);
     if (!arguments)
         return arguments;
-    if (arguments->files.empty())
-        return Error(ErrorCode::UsageNoFile, {{"command", "certificate"}});
-    if (arguments->files.size() > 1)
-        return Error(ErrorCode::UsageUnknownCommand, {{"text", arguments->files[1]}});
+    if (const auto only = onlyFile(*arguments, "certificate"); !only)
+        return only.error();
     if (const auto country = arguments->value("--country"); country && !isCountryCode(*country))
         return Error(ErrorCode::UsageValueBad, {{"option", "--country"}, {"text", *country}});
     return arguments;

@@ -15,11 +15,10 @@ int checkCommand(const Words& words, Console console) {
     const auto arguments = parseArguments(words, {});
     if (!arguments)
         return refuse(console, arguments.error());
-    if (arguments->files.empty())
-        return refuse(console, Error(ErrorCode::UsageNoFile, {{"command", "check"}}));
-    if (arguments->files.size() > 1)
-        return refuse(console, Error(ErrorCode::UsageUnknownCommand, {{"text", arguments->files[1]}}));
-    const std::string& file = arguments->files.front();
+    const auto only = onlyFile(*arguments, "check");
+    if (!only)
+        return refuse(console, only.error());
+    const std::string& file = *only;
     const auto session = loadSessionFile(file);
     if (!session)
         return refuse(console, session.error());

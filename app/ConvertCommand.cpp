@@ -98,10 +98,8 @@ Result<Arguments> argumentsOf(const Words& words) {
     auto arguments = parseArguments(words, ownOptions);
     if (!arguments)
         return arguments;
-    if (arguments->files.empty())
-        return Error(ErrorCode::UsageNoFile, {{"command", "convert"}});
-    if (arguments->files.size() > 1)
-        return Error(ErrorCode::UsageUnknownCommand, {{"text", arguments->files[1]}});
+    if (const auto only = onlyFile(*arguments, "convert"); !only)
+        return only.error();
     for (const char* option : {"--with", "--to"})
         if (arguments->value(option).value_or("").empty())
             return Error(ErrorCode::UsageValueMissing, {{"option", option}});

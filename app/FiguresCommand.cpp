@@ -21,10 +21,8 @@ Result<Arguments> argumentsOf(const Words& words) {
     auto arguments = parseArguments(words, known);
     if (!arguments)
         return arguments;
-    if (arguments->files.empty())
-        return Error(ErrorCode::UsageNoFile, {{"command", "figures"}});
-    if (arguments->files.size() > 1)
-        return Error(ErrorCode::UsageUnknownCommand, {{"text", arguments->files[1]}});
+    if (const auto only = onlyFile(*arguments, "figures"); !only)
+        return only.error();
     return arguments;
 }
 

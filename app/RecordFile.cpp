@@ -53,6 +53,8 @@ Result<ImportMapping> mappingOf(const Arguments& arguments, const CsvRules& rule
         return Error(ErrorCode::ColumnMissing, {{"quantity", "indication"}});
     if (!mapping.reference && !constant)
         return Error(ErrorCode::ColumnMissing, {{"quantity", "reference"}});
+    if (mapping.reference == mapping.indication)
+        return Error(ErrorCode::ColumnUnfit, {{"twice", columnLabel(rules, *mapping.indication)}});
     return mapping;
 }
 

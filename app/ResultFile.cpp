@@ -49,7 +49,12 @@ Result<void> resultFree(const std::string& path, const std::vector<std::string>&
     for (const std::string& input : inputs)
         if (std::filesystem::equivalent(path, input, unknown))
             return Error(ErrorCode::FileIsInput, {{"file", path}});
-    if (!std::filesystem::is_regular_file(path, unknown) || std::filesystem::file_size(path, unknown) == 0)
+    if (!std::filesystem::exists(path, unknown))
+        return {};
+    // A device or a pipe would be replaced by a file.
+    if (!std::filesystem::is_regular_file(path, unknown))
+        return Error(ErrorCode::FileNotWritable, {{"file", path}, {"reason", "not a regular file"}});
+    if (std::filesystem::file_size(path, unknown) == 0)
         return {};
     const auto there = FileBytes::read(path);
     if (there && isSession(path, there->bytes()))

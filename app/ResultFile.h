@@ -15,7 +15,8 @@ inline constexpr std::string_view StandardOutput = "-";
 using OwnResult = std::function<bool(std::string_view bytes)>;
 
 /// Whether a result may be written there. A file that holds something is replaced where it is an own result of the same kind, or with
-/// --replace; never what is read (`inputs`, by whatever name or link it is reached), and never a session. Errors: FileIsInput, FileIsSession, FileExists. Fact: file.
+/// --replace; never what is read (`inputs`, by whatever name or link it is reached), and never a session. Errors: FileIsInput, FileIsSession, FileExists,
+/// FileNotWritable (no regular file). Fact: file.
 Result<void> resultFree(const std::string& path, const std::vector<std::string>& inputs, const Arguments& arguments, const OwnResult& own);
 
 /// The name that an option gives for a document. Errors: UsageValueMissing (none, or an empty one), UsageValueBad ("-": a document goes to

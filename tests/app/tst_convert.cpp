@@ -11,6 +11,8 @@
 
 #include <QJsonArray>
 
+#include <sys/stat.h>
+
 using namespace spanwright;
 using namespace spanwright::test;
 
@@ -389,6 +391,14 @@ void TestConvert::nothingIsWrittenOver() {
     QCOMPARE(runWords({"convert", in, "--with", file, "--to", old, "--replace"}).status, 0);
     QCOMPARE(runWords({"convert", in, "--with", file, "--to", desk.file("empty.csv", {})}).status, 0);
     QCOMPARE(runWords({"convert", in, "--with", file, "--to", desk.path("no/such/out.csv")}).status, 1);
+    // A pipe or a device is not turned into a file, nor a folder.
+    const std::string pipe = desk.path("pipe");
+    QCOMPARE(mkfifo(pipe.c_str(), 0600), 0);
+    for (const std::string& target : {pipe, desk.path(".")}) {
+        QCOMPARE(runWords({"convert", in, "--with", file, "--to", target, "--replace"}).status, 1);
+        QCOMPARE(runWords({"certificate", file, "--to", target, "--incomplete", "--replace"}).status, 1);
+    }
+    QVERIFY(!QFileInfo(QString::fromStdString(pipe)).isFile());
 }
 
 void TestConvert::anotherUnitIsRefused() {

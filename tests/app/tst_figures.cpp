@@ -229,6 +229,8 @@ void TestFigures::wrongUsageIsStatusTwo_data() {
     QTest::newRow("no number") << QStringList{"a.csv", "--at", "1,x"} << "1,x";
     QTest::newRow("repeats 0") << QStringList{"a.csv", "--read", "1", "--repeats", "0"} << "--repeats";
     QTest::newRow("row 0") << QStringList{"a.csv", "--exclude", "0"} << "--exclude";
+    QTest::newRow("a second file") << QStringList{"a.csv", "b.csv"} << "“figures” takes one file";
+    QTest::newRow("no name") << QStringList{""} << "A file is needed";
     QTest::newRow("robust without its method") << QStringList{"a.csv", "--robust", "huber"} << "--method robust";
     QTest::newRow("fit of nothing") << QStringList{"a.csv", "--fit", "both"} << "both";
     QTest::newRow("decimal mark") << QStringList{"a.csv", "--decimal", "dot"} << "dot";

@@ -202,7 +202,10 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
     case ErrorCode::FunctionUnknown:
         return tr("%1 is no calibration function known here. Write, for example, line or polynomial:2.")
             .arg(facts.quoted("text", tr("this")));
-    case ErrorCode::ColumnUnfit: return tr("the column %1 cannot be used for this.").arg(facts.quoted("name", tr("chosen")));
+    case ErrorCode::ColumnUnfit:
+        if (facts.has("twice"))
+            return tr("the column %1 is taken as reference and as indication. Name another column for one of them.").arg(facts.quoted("twice", {}));
+        return tr("the column %1 cannot be used for this.").arg(facts.quoted("name", tr("chosen")));
     case ErrorCode::MethodUnfit: return methodUnfit(facts);
     case ErrorCode::CovarianceTooLarge:
         return tr("the covariance in row %1 is larger than the product of both stated uncertainties. Correct the covariance or the "
@@ -245,6 +248,8 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
     case ErrorCode::UsageNoFile:
         return tr("a file is needed: spanwright %1 FILE. See spanwright --help.").arg(facts.plain("command"));
     case ErrorCode::UsageUnknownCommand:
+        if (facts.has("command"))
+            return tr("%1 takes one file, and %2 is one more. See spanwright --help.").arg(facts.quoted("command", {}), facts.quoted("text", tr("another")));
         return tr("there is no command or file %1. See spanwright --help.").arg(facts.quoted("text", tr("of that name")));
     }
     return {};
