@@ -126,6 +126,7 @@ QTableView, QListView, QTreeView { background: @card; border: 1px solid @line; g
   selection-background-color: @selection; selection-color: @ink; }
 QTableView[bare="true"] { border: none; }
 QListView[bare="true"] { border: none; background: transparent; }
+QHeaderView[dense="true"] { font-size: @small; }
 QHeaderView[dense="true"]::section { padding: 4px 5px; }
 QTableView QTableCornerButton::section { background: @card; border: none; }
 QCheckBox::indicator:unchecked, QGroupBox::indicator:unchecked, QTreeView::indicator:unchecked, QListView::indicator:unchecked,
@@ -154,6 +155,7 @@ QSplitter::handle { background: transparent; }
     const QColor edge = s.name == SchemeName::Light ? s.line.darker(122) : s.line.lighter(150);
     QString sheet = form;
     sheet.replace(QLatin1String("@name"), s.name == SchemeName::Light ? QLatin1String("light") : QLatin1String("dark"));
+    sheet.replace(QLatin1String("@small"), QString::number(textFont(TextRole::Small).pointSizeF()) + QLatin1String("pt"));
     // Longer names first, so that @onAccent is not read as @on….
     const std::pair<const char*, QColor> names[] = {{"@selection", s.selection}, {"@onAccent", s.onAccent}, {"@warning", s.warning},
                                                     {"@accent", s.accent},       {"@quiet", s.quiet},       {"@paper", s.paper},
