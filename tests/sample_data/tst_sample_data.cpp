@@ -1,9 +1,9 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/evaluate/KeyFigures.h"
-#include "core/evaluate/evaluate.h"
 #include "core/session/SessionFile.h"
 #include "tests/support/ClimateLogger.h"
 #include "tests/support/Paths.h"
+#include "tests/support/Evaluated.h"
 #include "tests/support/SampleRecord.h"
 
 #include <QDir>
@@ -33,11 +33,6 @@ void compareOrWrite(const QString& name, const QByteArray& expected) {
         return;
     }
     QCOMPARE(contents(name), expected);
-}
-
-Evaluation evaluated(const Record& record) {
-    Progress progress;
-    return evaluate(record, progress).value();
 }
 
 } // namespace

@@ -3,7 +3,7 @@
 #include "core/budget/ReadBackBudget.h"
 #include "core/certificate/Certificate.h"
 #include "core/evaluate/PrintedFunction.h"
-#include "core/evaluate/evaluate.h"
+#include "tests/support/Evaluated.h"
 #include "tests/support/SampleRecord.h"
 
 #include <QTest>
@@ -12,14 +12,10 @@
 #include <cmath>
 
 using namespace spanwright;
+using test::evaluated;
 using test::number;
 
 namespace {
-
-Evaluation evaluated(const Record& record) {
-    Progress progress;
-    return evaluate(record, progress).value();
-}
 
 Certificate certificateOf(const Record& record) {
     return buildCertificate(record, evaluated(record), {"Spanwright", "2026-10-20", "sha256:00"});

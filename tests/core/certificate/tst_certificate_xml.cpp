@@ -1,7 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/certificate/CertificateXml.h"
 #include "core/certificate/DigitalUnit.h"
-#include "core/evaluate/evaluate.h"
+#include "tests/support/Evaluated.h"
 #include "tests/support/SampleRecord.h"
 
 #include <QStringList>
@@ -13,8 +13,7 @@ using namespace spanwright;
 namespace {
 
 std::string xmlOf(const Record& record) {
-    Progress progress;
-    const Evaluation evaluation = evaluate(record, progress).value();
+    const Evaluation evaluation = test::evaluated(record);
     CertificateXmlParts parts;
     parts.statements = {"The results relate only to the item <described>."};
     parts.decisionRule = "guarded acceptance & w = U";

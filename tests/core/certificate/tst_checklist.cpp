@@ -1,6 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/certificate/Certificate.h"
-#include "core/evaluate/evaluate.h"
+#include "tests/support/Evaluated.h"
 #include "tests/support/SampleRecord.h"
 
 #include <QTest>
@@ -13,8 +13,7 @@ using test::number;
 namespace {
 
 std::vector<ChecklistItem> listOf(const Record& record) {
-    Progress progress;
-    return checklist(record, evaluate(record, progress).value());
+    return checklist(record, test::evaluated(record));
 }
 
 const ChecklistItem* find(const std::vector<ChecklistItem>& list, Gap gap) {
@@ -199,8 +198,7 @@ class ChecklistTest : public QObject {
 
     void theRobustFitIsForComparisonOnly() {
         const Record record = test::pressureTransmitter();
-        Progress progress;
-        Evaluation evaluation = evaluate(record, progress).value();
+        Evaluation evaluation = test::evaluated(record);
         evaluation.phases[0]->fit->method = Method::Robust;
         const auto list = checklist(record, evaluation);
         const ChecklistItem* item = find(list, Gap::RobustFunction);

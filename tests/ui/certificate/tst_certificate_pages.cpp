@@ -1,5 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "core/evaluate/evaluate.h"
+#include "tests/support/Evaluated.h"
 #include "tests/support/SampleRecord.h"
 #include "ui/certificate/CertificateText.h"
 #include "ui/certificate/writeCertificate.h"
@@ -13,16 +13,12 @@
 #include <QTest>
 
 using namespace spanwright;
+using test::evaluated;
 using test::number;
 
 namespace {
 
 const CertificateContext context{"Spanwright 0", "2026-10-20", "sha256:0123456789abcdef0123456789abcdef"};
-
-Evaluation evaluated(const Record& record) {
-    Progress progress;
-    return evaluate(record, progress).value();
-}
 
 /// Long names, many set points, every optional part, two hundred excluded readings.
 Record crowded() {
