@@ -60,7 +60,7 @@ class JournalModel : public QAbstractTableModel {
 JournalDialog::JournalDialog(const Record& record, QWidget* parent) : QDialog(parent) {
     setObjectName(QStringLiteral("journalDialog"));
     setWindowTitle(tr("Journal"));
-    resize(1140, 600);
+    resize(1180, 600);
     auto* all = new QVBoxLayout(this);
     auto* table = new QTableView;
     table->setObjectName(QStringLiteral("journal.table"));
@@ -73,9 +73,11 @@ JournalDialog::JournalDialog(const Record& record, QWidget* parent) : QDialog(pa
     table->setItemDelegate(new PaddedDelegate(table));
     table->setSelectionBehavior(QAbstractItemView::SelectRows);
     table->horizontalHeader()->setDefaultAlignment(Qt::AlignLeft | Qt::AlignVCenter);
-    const int widths[] = {150, 44, 150, 210, 110, 290};
-    for (int i = 0; i < 6; ++i)
-        table->setColumnWidth(i, widths[i]);
+    for (int column = 0; column < 4; ++column)
+        table->resizeColumnToContents(column);
+    const int widths[] = {130, 300}; // before and after; what is longer is seen whole in its tip
+    for (int i = 0; i < 2; ++i)
+        table->setColumnWidth(4 + i, widths[i]);
     table->horizontalHeader()->setStretchLastSection(true);
     all->addWidget(new WholeRows(table), 1);
     const std::vector<JournalEntry>& entries = record.journal->entries();
