@@ -12,6 +12,8 @@
 #include <QCoreApplication>
 #include <QLabel>
 #include <QMenu>
+#include <QStyleOptionToolButton>
+#include <QStylePainter>
 #include <QWidgetAction>
 
 #include <algorithm>
@@ -23,6 +25,9 @@ namespace {
 QString tr(const char* text) {
     return QCoreApplication::translate("ChoiceMenus", text);
 }
+
+const QString Arrow = QStringLiteral(" ▾");
+constexpr int SidePadding = 12; // of both sides
 
 template <class Edit>
 void change(Workbench& workbench, const QString& text, Edit&& edit) {
@@ -169,15 +174,28 @@ std::vector<QAction*> ChoiceButton::choices() {
 }
 
 void ChoiceButton::setChoice(const QString& text) {
-    setText(text + QStringLiteral(" ▾"));
+    choice_ = text;
+    setText(text + Arrow);
     setAccessibleDescription(text);
     updateGeometry();
+}
+
+/// In a narrow window the choice gives way to its arrow; its end, a degree say, stays.
+void ChoiceButton::paintEvent(QPaintEvent*) {
+    QStylePainter painter(this);
+    QStyleOptionToolButton option;
+    initStyleOption(&option);
+    const QFontMetrics metrics(font());
+    const int room = width() - SidePadding - metrics.horizontalAdvance(Arrow);
+    if (metrics.horizontalAdvance(choice_) > room)
+        option.text = metrics.elidedText(choice_, Qt::ElideMiddle, room) + Arrow;
+    painter.drawComplexControl(QStyle::CC_ToolButton, option);
 }
 
 /// Without the room that a style keeps for its own arrow.
 QSize ChoiceButton::sizeHint() const {
     const QFontMetrics metrics(font());
-    return {metrics.horizontalAdvance(text()) + 12, metrics.height() + 8};
+    return {metrics.horizontalAdvance(text()) + SidePadding, metrics.height() + 8};
 }
 
 ChoiceButton* functionButton(Workbench& workbench, QWidget* parent) {

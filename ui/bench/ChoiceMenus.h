@@ -27,7 +27,11 @@ class ChoiceButton : public QToolButton {
     QSize sizeHint() const override;
     QSize minimumSizeHint() const override { return sizeHint(); }
 
+  protected:
+    void paintEvent(QPaintEvent* event) override;
+
   private:
+    QString choice_;
     std::function<void()> fill_;
     std::vector<QAction*> further_;
 };
