@@ -13,8 +13,9 @@ namespace {
 /// Codes in order of consequence: what makes the result wrong before what makes it uncertain before what is merely
 /// worth knowing.
 constexpr std::array order{
+    FindingCode::BetweenPlateaus, FindingCode::LowestOutweigh, // they bring others with them
     FindingCode::LackOfFit,       FindingCode::HiddenCurvature,    FindingCode::ThroughZeroNotSupported,
-    FindingCode::StatedTooSmall,  FindingCode::LowestOutweigh,     FindingCode::BetweenPlateaus,
+    FindingCode::StatedTooSmall,
     FindingCode::Outlier,         FindingCode::SetPointExcluded,   FindingCode::ManyExcluded,
     FindingCode::TooFewReadings,  FindingCode::Extrapolation,      FindingCode::Hysteresis,
     FindingCode::FirstRunDiffers, FindingCode::RunZeroShift,       FindingCode::RunGainChange,

@@ -66,7 +66,7 @@ void addPlateauFindings(const FindingsInput& input, std::vector<Finding>& found)
         return;
     Finding finding;
     finding.code = FindingCode::BetweenPlateaus;
-    finding.severity = Severity::Attention;
+    finding.severity = Severity::Serious;
     finding.figures = {{"count", static_cast<double>(plateaus.between.size())}, {"plateaus", static_cast<double>(plateaus.count)}};
     for (const std::size_t i : plateaus.between)
         if (finding.rows.size() < mostBetween)

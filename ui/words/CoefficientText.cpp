@@ -66,7 +66,7 @@ class Writing {
         lines << QString() << validity() << bound() << QString() << tr("Check values");
         for (const QString& check : checks())
             lines << QStringLiteral("  ") + check;
-        lines << QString() << caution();
+        lines << QString() << wrapped({caution()});
         return lines.join(QLatin1Char('\n')) + QLatin1Char('\n');
     }
 

@@ -52,7 +52,10 @@ QString FindingText::sentence(const Finding& finding) {
         if (finding.rows.size() > 1)
             return tr("%1 readings are statistical outliers (1 % level). Look for technical causes; they stay in.").arg(finding.rows.size());
         return tr("A reading is a statistical outlier (1 % level). Look for a technical cause; it stays in.");
-    case FindingCode::Influential: return tr("The function hangs on a single reading more than on the others.");
+    case FindingCode::Influential:
+        if (finding.rows.size() > 1)
+            return tr("The function hangs on a few readings more than on the others.");
+        return tr("The function hangs on a single reading more than on the others.");
     case FindingCode::ExcludedReadings: return tr("Readings were excluded.");
     case FindingCode::SetPointExcluded: return tr("Every reading of a set point is excluded.");
     case FindingCode::ManyExcluded: return tr("More readings are excluded than the limit allows; the result may no longer describe the item.");

@@ -325,7 +325,7 @@ class FindingsTest : public QObject {
         }
         const auto found = findingsOf(recordOf(reference, indication));
         const Finding* between = find(found, FindingCode::BetweenPlateaus);
-        QVERIFY(between);
+        QVERIFY(between && between == &found.front()); // what else is found follows from it
         QCOMPARE(figure(*between, "plateaus"), 3.0);
         QCOMPARE(figure(*between, "count"), 20.0);
         QVERIFY(between->rows.front() == 21 && between->rows.back() == 60);
