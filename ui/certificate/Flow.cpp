@@ -29,6 +29,11 @@ TextStyle cellStyle(const Table& table, const TableCell& cell) {
     return {table.points, cell.strong, cell.ink};
 }
 
+/// A number in its column is never broken.
+bool staysWhole(const TableColumn& column, const TableCell& cell) {
+    return column.align != ColumnAlign::Left && isNumber(cell.text) && (column.align == ColumnAlign::DecimalMark || !cell.text.contains(QLatin1Char(' ')));
+}
+
 constexpr double MarkRoom = 3.2; // mm before the text of a cell with a mark
 
 double roomFor(const TableCell& cell, double width) {
@@ -248,6 +253,10 @@ void Flow::tableCell(const Table& table, const TableCell& cell, std::size_t colu
         textAt(right - short_, baseline, cell.text, style, Qt::AlignRight);
         return;
     }
+    if (staysWhole(table.columns[column], cell)) {
+        textAt(right, baseline, cell.text, style, Qt::AlignRight);
+        return;
+    }
     for (const QString& line : wrapped(cell.text, style, right - left)) {
         if (align == ColumnAlign::Left)
             textAt(left, baseline, line, style);
@@ -267,8 +276,7 @@ double Flow::rowHeight(const Table& table, const std::vector<TableCell>& row, co
     double height = 0;
     for (std::size_t c = 0; c < row.size(); ++c) {
         const TextStyle style = cellStyle(table, row[c]);
-        const bool oneLine = table.columns[c].align == ColumnAlign::DecimalMark && isNumber(row[c].text); // as tableCell() sets it
-        const auto lines = oneLine ? 1 : wrapped(row[c].text, style, roomFor(row[c], widths.width[c])).size();
+        const auto lines = staysWhole(table.columns[c], row[c]) ? 1 : wrapped(row[c].text, style, roomFor(row[c], widths.width[c])).size();
         height = std::max(height, static_cast<double>(std::max<std::size_t>(lines, 1)) * lineHeight(style) + 2 * RowPadding);
     }
     return height;

@@ -44,14 +44,15 @@ void addSplit(Flow& flow, const Certificate& certificate, const PhaseSection& se
     const SplitSection& split = *section.split;
     const QString unit = squared(split, certificate.item);
     Table table;
-    table.columns = {{SplitSections::tr("source"), {}, ColumnAlign::Left, 4.6},
-                     {SplitSections::tr("sum of squares"), unit, ColumnAlign::Right, 1.7},
+    table.points = 8;
+    table.columns = {{SplitSections::tr("source"), {}, ColumnAlign::Left, 4.2},
+                     {SplitSections::tr("sum of squares"), unit, ColumnAlign::Right, 1.8},
                      {SplitSections::tr("d.f."), {}, ColumnAlign::Right, 0.7},
-                     {SplitSections::tr("mean square"), unit, ColumnAlign::Right, 1.7},
-                     {SplitSections::tr("F"), {}, ColumnAlign::Right, 1.15},
-                     {SplitSections::tr("p"), {}, ColumnAlign::Right, 1},
-                     {SplitSections::tr("share"), SplitSections::tr("of total"), ColumnAlign::Right, 1.2},
-                     {SplitSections::tr("share"), SplitSections::tr("of noise"), ColumnAlign::Right, 1.2}};
+                     {SplitSections::tr("mean square"), unit, ColumnAlign::Right, 1.8},
+                     {SplitSections::tr("F"), {}, ColumnAlign::Right, 1.4},
+                     {SplitSections::tr("p"), {}, ColumnAlign::Right, 1.05},
+                     {SplitSections::tr("share"), SplitSections::tr("of total"), ColumnAlign::Right, 1.1},
+                     {SplitSections::tr("share"), SplitSections::tr("of noise"), ColumnAlign::Right, 1.1}};
     for (const SplitTableLine& line : split.lines) {
         const bool chain = line.test == SplitTableLine::Test::Chain;
         const PageInk ink = chain ? PageInk::Text : PageInk::Quiet;
