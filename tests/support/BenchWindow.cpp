@@ -9,6 +9,7 @@
 #include <QApplication>
 #include <QDialog>
 #include <QMenu>
+#include <QTest>
 #include <QToolButton>
 
 namespace spanwright::test {
@@ -63,6 +64,10 @@ void BenchWindow::choose(const char* button, const QString& entry) const {
         if (action->text() == entry)
             return action->trigger();
     qFatal("no entry %s", qPrintable(entry));
+}
+
+void BenchWindow::type(QWidget* widget, const char* keys) {
+    QTest::keyClicks(widget, QLatin1String(keys));
 }
 
 void BenchWindow::enter(const char* field, const char* keys) const {

@@ -4,8 +4,6 @@
 #include "ui/bench/BenchPage.h"
 #include "ui/commands/Workbench.h"
 
-#include <QTest>
-
 class QDialog;
 
 namespace spanwright {
@@ -39,7 +37,7 @@ class BenchWindow {
     /// Opens the list of a chooser and triggers the entry with that text.
     void choose(const char* button, const QString& entry) const;
 
-    static void type(QWidget* widget, const char* keys) { QTest::keyClicks(widget, QLatin1String(keys)); }
+    static void type(QWidget* widget, const char* keys);
     /// Types into a field and enters it.
     void enter(const char* field, const char* keys) const;
 
