@@ -3,6 +3,7 @@
 
 #include "app/TableOptions.h"
 #include "core/exchange/ReadingImport.h"
+#include "core/exchange/Words.h"
 
 #include <algorithm>
 
@@ -12,12 +13,8 @@ namespace {
 
 /// Whether a column is named like the reference, and not like the indication too.
 bool isReference(const CsvRules& rules, std::size_t column, const Item& item) {
-    const auto namedLike = [&](const Quantity& quantity) {
-        if (quantity.name.empty())
-            return false;
-        const auto named = findColumn(rules, quantity.name);
-        return named && *named == column && !rules.columns[column].name.empty();
-    };
+    const std::string name = lowerCase(rules.columns[column].name);
+    const auto namedLike = [&](const Quantity& quantity) { return !name.empty() && name == lowerCase(withoutBlanks(quantity.name)); };
     return namedLike(item.reference) && !namedLike(item.indication);
 }
 
@@ -40,8 +37,8 @@ Result<std::size_t> indicationColumn(const Arguments& arguments, const CsvRules&
     if (const auto text = arguments.value("--indication"))
         return findColumn(rules, *text);
     if (!item.indication.name.empty())
-        if (const auto named = findColumn(rules, item.indication.name))
-            return *named;
+        if (const auto named = findColumn(rules, item.indication.name); named || named.error().code == ErrorCode::ColumnUnclear)
+            return named;
     std::vector<std::size_t> numbers, references;
     for (std::size_t i = 0; i < rules.columns.size(); ++i)
         if (rules.columns[i].kind == ColumnKind::Number)

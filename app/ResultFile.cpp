@@ -80,7 +80,7 @@ bool isOwnPdf(std::string_view bytes, std::string_view title) {
             return false;
     // Whatever is added to a PDF, such as a signature, comes with a table of references of its own.
     constexpr std::string_view references = "startxref";
-    return bytes.find(references) != std::string_view::npos && bytes.find(references) == bytes.rfind(references);
+    return (bytes.ends_with("%%EOF\n") || bytes.ends_with("%%EOF")) && bytes.find(references) != std::string_view::npos && bytes.find(references) == bytes.rfind(references);
 }
 
 bool isOwnCertificate(std::string_view bytes) {

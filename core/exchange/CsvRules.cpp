@@ -224,6 +224,13 @@ void judgeColumns(CsvRules& rules, std::span<const SampleRow> data, const CsvWis
     }
 }
 
+Error severalNamed(std::string_view name, const std::vector<std::size_t>& columns) {
+    std::string numbers;
+    for (const std::size_t column : columns)
+        numbers += (numbers.empty() ? "" : ", ") + std::to_string(column + 1);
+    return Error(ErrorCode::ColumnUnclear, {{"named", std::string(name)}, {"columns", numbers}});
+}
+
 } // namespace
 
 Result<CsvRules> guessRules(std::string_view bytes, const CsvWishes& wishes) {
@@ -291,12 +298,17 @@ Result<char> parseSeparatorName(std::string_view text) {
 Result<std::size_t> findColumn(const CsvRules& rules, std::string_view nameOrNumber) {
     const std::string wanted = lowerCase(withoutBlanks(nameOrNumber));
     const NameAndUnit split = splitName(wanted);
+    std::vector<std::size_t> named;
     for (std::size_t i = 0; i < rules.columns.size() && !wanted.empty(); ++i)
         if (lowerCase(rules.columns[i].name) == wanted)
-            return i;
-    for (std::size_t i = 0; i < rules.columns.size() && !split.unit.empty(); ++i)
+            named.push_back(i);
+    for (std::size_t i = 0; i < rules.columns.size() && named.empty() && !split.unit.empty(); ++i)
         if (lowerCase(rules.columns[i].name) == split.name && lowerCase(rules.columns[i].unit) == split.unit)
             return i;
+    if (named.size() > 1)
+        return severalNamed(nameOrNumber, named);
+    if (!named.empty())
+        return named.front();
     std::size_t number = 0;
     const auto [end, problem] = std::from_chars(wanted.data(), wanted.data() + wanted.size(), number);
     if (problem == std::errc{} && end == wanted.data() + wanted.size() && number >= 1 && number <= rules.columns.size())

@@ -60,8 +60,8 @@ Result<CsvRules> guessRules(std::string_view bytes, const CsvWishes& wishes = {}
 /// ";", "semicolon", "tab", "\t", "comma", "space", "pipe", … Error: UsageValueBad (facts: text).
 Result<char> parseSeparatorName(std::string_view text);
 
-/// The column of that name (without case; with or without its unit), or of that number from 1. Error: ColumnMissing (facts:
-/// column).
+/// The column of that name (without case; with or without its unit), or of that number from 1. Errors: ColumnMissing (facts:
+/// column); ColumnUnclear (facts: named, columns) where several have the name.
 Result<std::size_t> findColumn(const CsvRules& rules, std::string_view nameOrNumber);
 
 /// Its name, or its number from 1 when it has none.

@@ -280,6 +280,11 @@ void TestConvert::theColumnIsNamedWhereItIsNotCertain() {
     QCOMPARE(several.status, 1);
     QVERIFY2(several.err.find("a, b could be meant, and none is named “current”") != std::string::npos, several.err.c_str());
     QVERIFY(!QFile::exists(QString::fromStdString(out)));
+    const Ran twins = convert("current,current\n4.1,5.2\n");
+    QCOMPARE(twins.status, 1);
+    QVERIFY2(twins.err.find("several columns are named “current”: 1, 2") != std::string::npos, twins.err.c_str());
+    QCOMPARE(runWords({"figures", desk.file("in.csv", "x,y,y\n1,2,3\n2,4,5\n3,6,8\n"), "--indication", "y"}).status, 1);
+    QCOMPARE(runWords({"figures", desk.file("in.csv", "x,y,y\n1,2,3\n2,4,5\n3,6,8\n"), "--indication", "3"}).status, 0);
     // One that is left, one in the unit of the indication, the one that is asked for: said on the error stream.
     const std::vector<std::pair<Ran, const char*>> taken{{convert("pressure,raw\n1,4.1\n"), "column 2 \"raw\""},
                                                          {convert("a,b / mA\n1,4.1\n"), "column 2 \"b\""},

@@ -101,6 +101,8 @@ QString ErrorText::of(ErrorCode code, Sentence& facts) {
                                      : tr("there is no column %1. Name a column of the header, or its number from 1.")
                                            .arg(facts.quoted("name", facts.quoted("column", tr("of that name"))));
     case ErrorCode::ColumnUnclear:
+        if (facts.has("named"))
+            return tr("several columns are named %1: %2. Name the one that is meant by its number.").arg(facts.quoted("named", {}), facts.plain("columns", tr("more than one")));
         if (facts.has("reference"))
             return tr("the column %1 is named like the reference, and no other holds the %2%3. Name the column of the %2 with --%2.")
                 .arg(facts.quoted("reference", {}), facts.plain("quantity"), facts.has("name") ? tr(", %1").arg(facts.quoted("name", {})) : QString());
