@@ -145,8 +145,10 @@ class Writing {
     }
 
     [[nodiscard]] QString polynomial() const {
-        const bool about = !printed_.centre.empty();
-        const QString x = about ? QStringLiteral("(x − %1)").arg(q(printed_.centre)) : QStringLiteral("x");
+        const std::string& centre = printed_.centre;
+        const QString x = centre.empty()              ? QStringLiteral("x")
+                          : centre.starts_with('-') ? QStringLiteral("(x + %1)").arg(q(centre.substr(1)))
+                                                    : QStringLiteral("(x − %1)").arg(q(centre));
         QStringList terms;
         int power = printed_.logger.withoutConstant() ? 1 : 0;
         for (const PrintedNumber& number : printed_.numbers) {

@@ -1,8 +1,10 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/evaluate/PrintedFunction.h"
 #include "tests/support/Evaluated.h"
 #include "tests/support/SampleRecord.h"
 #include "ui/certificate/CertificateText.h"
 #include "ui/certificate/writeCertificate.h"
+#include "ui/words/CoefficientText.h"
 
 #include <QFile>
 #include <QImage>
@@ -11,6 +13,8 @@
 #include <QRegularExpression>
 #include <QTemporaryDir>
 #include <QTest>
+
+#include <cmath>
 
 using namespace spanwright;
 using test::evaluated;
@@ -89,6 +93,29 @@ class CertificatePagesTest : public QObject {
         // The error keeps the digits that were read: 4.0027 − (4 + 1.6 · 0.0002).
         QVERIFY(text.contains("+0.002\n–\n–"));
         QVERIFY2(text.contains("y = 3.999 + 1.60010 x") || text.contains("y = 3.9994 + 1.6001 x"), qPrintable(text.mid(text.indexOf("y = "), 40)));
+    }
+
+    /// Far from zero, powers of x would cancel each other: the form printed says about which place its powers are.
+    void aFunctionFarFromZeroIsPrintedAboutACentre() {
+        Record record;
+        record.item = test::pressureTransmitter().item;
+        record.item.rangeLow = number("-20001");
+        record.item.rangeHigh = number("-20000");
+        for (int i = 0; i < 18; ++i) {
+            Reading reading;
+            reading.id = record.nextReadingId++;
+            reading.reference = Decimal{-20'001'000 + i / 2 * 125, 3, {}};
+            const double x = reading.reference->toDouble() + 20000;
+            reading.indication = Decimal{static_cast<std::int64_t>(1e5 * (4 + std::exp(x))) + (i % 2 == 0 ? 1 : -1), 5, {}};
+            reading.setPoint = reading.reference;
+            record.readings.edit().append(reading);
+        }
+        record.choices.function = {FunctionFamily::Polynomial, 4};
+        const Evaluation evaluation = evaluated(record);
+        const QString text = plainText(layOutCertificate(record, evaluation, context));
+        QVERIFY2(text.contains("(x + 20000.") && text.contains("\nc4\n"), qPrintable(text.mid(text.indexOf("y = "), 200)));
+        const auto logger = printedFunction(record, *evaluation.phase(Phase::AsFound));
+        QVERIFY(logger && coefficientText(record, *logger, CoefficientForm::Plain).contains("(x + 20000."));
     }
 
     void namesOfAnyLengthAreSignedInFull() {
