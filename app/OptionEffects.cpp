@@ -60,6 +60,8 @@ std::vector<std::string> optionsWithoutEffect(const Arguments& arguments, const 
     const Choices& choices = record.choices;
     noteOverruled(notes, arguments, choices, *phase.fit);
     noteUncertainties(notes, arguments, *phase.fit);
+    if (record.standards.empty())
+        note(notes, arguments, "--shared-error", "no standard states an error that its readings share");
     if (choices.at.empty() && choices.read.empty())
         note(notes, arguments, "--repeats", "it belongs to --read and --at");
     if (choices.at.empty())

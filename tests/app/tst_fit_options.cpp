@@ -130,6 +130,7 @@ class FitOptions : public QObject {
         row("share of nothing", {"--tolerance-share", "0.9"}, "--tolerance-share changes nothing here");
         row("one way only", {"--function", "nernst", "--fit", "reference"}, "--fit changes nothing here: nernst always gives the indication");
         row("more outliers than readings", {"--outliers", "20"}, "--outliers 20: 4 were tried, as 6 readings");
+        row("an error that nothing shares", {"--shared-error", "fit"}, "--shared-error changes nothing here");
         row("uncertainties without weights", {"--u-indication", "uy"}, "--weights stated takes it");
         row("an exact abscissa", {"--u-reference", "ux"}, "--method both-uncertain takes it");
         row("both ways", {"--u-reference", "ux", "--u-indication", "uy", "--method", "both-uncertain"}, "");

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/session/SessionFile.h"
 
+#include "core/session/TextMark.h"
 #include "tests/support/Faults.h"
 #include "tests/support/FilledRecord.h"
 #include "tests/support/SampleRecord.h"
@@ -57,6 +58,21 @@ class SessionFileTest : public QObject {
     void init() {
         path_ = path("session.spanwright");
         saveFresh();
+    }
+
+    void aMarkHoldsAsLongAsNobodyTouchesTheText() {
+        const std::string text = "b0 = 3.999\nb1 = 1.6001\n", marked = withMark(text, {"/* ", " */"});
+        QVERIFY2(marked.starts_with(text + "/* Written by Spanwright ") && marked.ends_with(" */\n"), marked.c_str());
+        QVERIFY(bearsMark(marked) && bearsMark(withMark({}, {})));
+        QVERIFY(!bearsMark(text) && !bearsMark({}) && !bearsMark(marked + "b2 = 0\n") && !bearsMark(marked + "\n"));
+        for (std::size_t i = 0; i < text.size(); ++i) {
+            std::string changed = marked;
+            changed[i] ^= 1;
+            QVERIFY2(!bearsMark(changed), changed.c_str());
+        }
+        std::string otherLineEnds = marked;
+        otherLineEnds.insert(otherLineEnds.find('\n'), "\r");
+        QVERIFY(!bearsMark(otherLineEnds));
     }
 
     void opensWhatWasSaved() {
