@@ -122,6 +122,7 @@ void ManualLinesCard::show() {
     table_->setFixedHeight(table_->horizontalHeader()->sizeHint().height() + 2 * table_->frameWidth() +
                            table_->verticalHeader()->defaultSectionSize() * std::clamp(count(), 1, 5));
     setNote(count() == 0 ? tr("none yet") : QString());
+    table_->setVisible(count() > 0);
     remove_->setVisible(count() > 0);
     remove_->setEnabled(!bench_.readOnly());
     if (editing_ != (count() > 0 ? chosen_ : -1))
@@ -132,7 +133,6 @@ void ManualLinesCard::showEditor() {
     editing_ = count() > 0 ? chosen_ : -1;
     delete editor_;
     editor_ = nullptr;
-    table_->setVisible(editing_ >= 0);
     if (editing_ < 0)
         return;
     editor_ = lineEditor(bench_, static_cast<std::size_t>(editing_));

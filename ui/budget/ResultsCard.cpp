@@ -12,6 +12,7 @@
 #include <QTableView>
 #include <QVBoxLayout>
 
+#include <algorithm>
 #include <cmath>
 
 namespace spanwright {
@@ -129,6 +130,9 @@ void ResultsCard::show() {
         for (const PointResult& p : phase->verdict.points)
             rows.push_back(rowOf(p, phase->budget, decimals));
     }
+    const bool errorKnown = phase && std::any_of(phase->verdict.points.begin(), phase->verdict.points.end(),
+                                                 [](const PointResult& p) { return std::isfinite(p.error); });
+    view_->setColumnHidden(ErrorShown, !errorKnown);
     view_->setColumnHidden(Limit, !record.limits.stated);
     view_->setColumnHidden(Decision, !record.limits.stated);
     view_->setColumnHidden(Probability, !record.limits.stated);

@@ -81,6 +81,15 @@ class BudgetPageTest : public QObject {
         }
     }
 
+    void whatDoesNotExistIsNotShown() {
+        const Desk probe(test::temperatureProbe(), {1280, 700}); // resistance: no ideal output, so no error
+        QVERIFY(probe.table("budget.results")->isColumnHidden(4));
+        QVERIFY(!probe.table("budget.lines")->isVisible());
+        const Desk transmitter(test::pressureTransmitter(), {1280, 700});
+        QVERIFY(!transmitter.table("budget.results")->isColumnHidden(4));
+        QVERIFY(transmitter.table("budget.lines")->isVisible());
+    }
+
     void theIndicationKeepsTheDigitsThatWereRead() {
         Record record = test::pressureTransmitter();
         record.standards[0].expandedUncertainty = test::number("0.5"); // bar, so U is 0.5 · 1.6 mA
