@@ -2,7 +2,7 @@
 # Sourced by app/run.sh and tests/run.sh: what Spanwright needs of Debian 12, and how it is configured and built.
 
 build_packages=(g++ cmake ninja-build qt6-base-dev qt6-charts-dev libqt6opengl6-dev libeigen3-dev libboost-dev libqd-dev libssl-dev
-  fontconfig fonts-open-sans)
+  libtbb-dev fontconfig fonts-open-sans)
 test_packages=(poppler-utils)
 
 # install_missing PACKAGE…: installs those that are not there, as root or with sudo.

@@ -1,8 +1,9 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/budget/PointMeans.h"
 
+#include "core/base/ClassSums.h"
+
 #include <algorithm>
-#include <array>
 #include <cmath>
 #include <set>
 
@@ -47,23 +48,34 @@ struct Cells {
 std::vector<Cells> cellsOfMany(const Sample& sample) {
     struct Distances {
         double fromReference = 0, fromIndication = 0, reference = 0, indication = 0, n = 0;
-    };
-    std::vector<std::array<Distances, 3>> sums(sample.groupValue.size());
-    for (std::size_t i = 0; i < sample.size(); ++i) {
-        Distances& at = sums[static_cast<std::size_t>(sample.group[i])]
-                            [sample.direction.empty() ? 0 : static_cast<std::size_t>(sample.direction[i])];
-        if (!(at.n > 0)) {
-            at.fromReference = sample.reference.high[i];
-            at.fromIndication = sample.indication.high[i];
+        void operator+=(const Distances& other) {
+            if (!(n > 0)) {
+                *this = other;
+                return;
+            }
+            reference += other.reference + other.n * (other.fromReference - fromReference);
+            indication += other.indication + other.n * (other.fromIndication - fromIndication);
+            n += other.n;
         }
-        at.n += 1;
-        at.reference += sample.reference.high[i] - at.fromReference;
-        at.indication += sample.indication.high[i] - at.fromIndication;
-    }
-    std::vector<Cells> cells(sums.size());
-    for (std::size_t g = 0; g < sums.size(); ++g) {
+    };
+    const std::size_t directions = 3;
+    const auto sums = classSums<Distances>(sample.size(), directions * sample.groupValue.size(), [&](std::vector<Distances>& of, std::size_t first, std::size_t last) {
+        for (std::size_t i = first; i < last; ++i) {
+            const auto direction = sample.direction.empty() ? std::size_t{0} : static_cast<std::size_t>(sample.direction[i]);
+            Distances& at = of[directions * static_cast<std::size_t>(sample.group[i]) + direction];
+            if (!(at.n > 0)) {
+                at.fromReference = sample.reference.high[i];
+                at.fromIndication = sample.indication.high[i];
+            }
+            at.n += 1;
+            at.reference += sample.reference.high[i] - at.fromReference;
+            at.indication += sample.indication.high[i] - at.fromIndication;
+        }
+    });
+    std::vector<Cells> cells(sample.groupValue.size());
+    for (std::size_t g = 0; g < cells.size(); ++g) {
         for (const Direction direction : {Direction::Unknown, Direction::Rising, Direction::Falling}) {
-            const Distances& at = sums[g][static_cast<std::size_t>(direction)];
+            const Distances& at = sums[directions * g + static_cast<std::size_t>(direction)];
             Cell& cell = cells[g].from(direction);
             cell.n = static_cast<std::size_t>(at.n);
             cell.reference = DoubleDouble(at.fromReference) * at.n + at.reference;

@@ -1,7 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/diagnose/Autocorrelation.h"
 
-#include "core/base/LaneSums.h"
+#include "core/base/ClassSums.h"
 #include "core/diagnose/Orthonormal.h"
 #include "core/diagnose/ResidualColumn.h"
 
@@ -208,9 +208,9 @@ SerialStatistics serialStatistics(std::span<const double> u) {
     if (u.size() < 2)
         return {};
     const auto [rest, restSquares, products, steps] =
-        laneSums<4>(1, u.size(), [&](std::size_t i) -> std::array<double, 4> {
-            const double step = u[i] - u[i - 1];
-            return {u[i], u[i] * u[i], u[i] * u[i - 1], step * step};
+        sumInHalves<4>(u.size() - 1, [column = u.data()](auto i) {
+            const auto before = at(column, i), here = at(column, i + 1), step = here - before;
+            return std::array{here, here * here, here * before, step * step};
         });
     const double sum = u[0] + rest, squares = u[0] * u[0] + restSquares;
     const double mean = sum / n, centred = squares - n * mean * mean;

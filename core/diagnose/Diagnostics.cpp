@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/diagnose/Diagnostics.h"
 
+#include "core/base/Parallel.h"
 #include "core/diagnose/Autocorrelation.h"
 #include "core/diagnose/EqualVariances.h"
 #include "core/diagnose/Linearity.h"
@@ -12,7 +13,6 @@
 
 #include <algorithm>
 #include <cmath>
-#include <future>
 
 namespace spanwright {
 namespace {
@@ -21,8 +21,6 @@ namespace {
 /// bound from the moments of white noise: the terms of the function no longer matter.
 constexpr std::size_t mostForExactWatson = 2000;
 constexpr std::size_t mostForWatsonMoments = 100'000;
-/// Below this a second thread costs more than it gives.
-constexpr std::size_t fewerThanThreads = 200'000;
 
 /// Columns of the function at the readings; for a function that is not linear in its coefficients, of its tangent, which
 /// `approximate` says.
@@ -144,7 +142,7 @@ Diagnostics diagnose(const Sample& sample, const Residuals& residuals, const Fit
         residuals.weight.empty() ? std::vector<double>{} : weightedResiduals<double>(residuals);
     const std::span<const double> u = residuals.weight.empty() ? residuals.e.high : weighted;
     // Independent of the rest, so for very many readings beside it.
-    auto variances = std::async(u.size() > fewerThanThreads ? std::launch::async : std::launch::deferred, [&] {
+    auto variances = beside(u.size(), [&] {
         return equalVariances({u, sample.group, sample.groupValue.size()});
     });
     if (residuals.e.low.empty()) {

@@ -2,6 +2,7 @@
 #include "core/diagnose/EqualVariances.h"
 
 #include "core/base/LaneSums.h"
+#include "core/base/Parallel.h"
 #include "core/diagnose/Orthonormal.h"
 #include "core/fit/Quantiles.h"
 
@@ -113,8 +114,13 @@ EqualVariances equalVariances(const GroupedValues& values) {
         result.cochranCritical = cochranCriticalValue(k, n / k, 0.05);
         result.cochranCriticalOutlier = cochranCriticalValue(k, n / k, 0.01);
     }
-    for (std::size_t g = 0; g < column.groups(); ++g)
-        all[g] = meanAndSquares(column[g], [middle = medianOf(column[g])](double u) { return std::abs(u - middle); });
+    const auto aboutMedians = [&](std::size_t first, std::size_t last) {
+        for (std::size_t g = first; g < last; ++g)
+            all[g] = meanAndSquares(column[g], [middle = medianOf(column[g])](double u) { return std::abs(u - middle); });
+    };
+    auto others = beside(values.u.size(), [&] { aboutMedians(column.groups() / 2, column.groups()); });
+    aboutMedians(0, column.groups() / 2);
+    others.get();
     result.levene = leveneOf(replicated(all));
     return result;
 }
@@ -157,9 +163,9 @@ std::optional<TestResult> breuschPagan(std::span<const double> u, std::span<cons
     if (u.empty())
         return std::nullopt;
     const double n = static_cast<double>(u.size()), origin = column.front();
-    const auto [x, v, xx, vv, xv] = laneSums<5>(0, u.size(), [&](std::size_t i) -> std::array<double, 5> {
-        const double distance = column[i] - origin, square = u[i] * u[i];
-        return {distance, square, distance * distance, square * square, distance * square};
+    const auto [x, v, xx, vv, xv] = laneSums<5>(0, u.size(), [&](auto i) {
+        const auto distance = at(column.data(), i) - origin, square = at(u.data(), i) * at(u.data(), i);
+        return std::array{distance, square, distance * distance, square * square, distance * square};
     });
     const double squaresX = xx - x * (x / n), squaresV = vv - v * (v / n), products = xv - x * (v / n);
     if (!(squaresX > 0) || !(squaresV > 0))

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/diagnose/Findings.h"
 
+#include "core/base/ClassSums.h"
 #include "core/diagnose/FindingRules.h"
 
 #include <algorithm>
@@ -54,15 +55,21 @@ std::vector<double> repeatabilityDeviations(const FindingsInput& input, const st
     struct Cell {
         double weight = 0, sum = 0;
         std::size_t n = 0;
+        void operator+=(const Cell& other) {
+            weight += other.weight;
+            sum += other.sum;
+            n += other.n;
+        }
     };
-    std::vector<Cell> cells(3 * sample.groupValue.size());
-    const auto cellOf = [&](std::size_t i) -> Cell& {
+    const std::size_t directions = sample.direction.empty() ? 1 : 3;
+    const auto cellOf = [&](std::size_t i) {
         const auto d = sample.direction.empty() ? std::size_t{0} : static_cast<std::size_t>(sample.direction[i]);
-        return cells[3 * static_cast<std::size_t>(sample.group[i]) + d];
+        return directions * static_cast<std::size_t>(sample.group[i]) + d;
     };
-    std::vector<double> left = input.residuals->e.high;
     const std::vector<double>& w = input.residuals->weight.high;
+    std::vector<double> withoutRuns;
     if (!sample.run.empty() && !input.split->runs.empty()) {
+        withoutRuns = input.residuals->e.high;
         const double middle = (sample.groupValue.front() + sample.groupValue.back()) / 2;
         std::size_t at = 0;
         for (std::size_t i = 0; i < n; ++i) {
@@ -72,31 +79,40 @@ std::vector<double> repeatabilityDeviations(const FindingsInput& input, const st
                     std::find_if(runs.begin(), runs.end(), [&](const RunLine& r) { return r.run == sample.run[i]; }) -
                     runs.begin());
             if (at < runs.size())
-                left[i] -= runs[at].offset +
-                           runs[at].slope * (sample.groupValue[static_cast<std::size_t>(sample.group[i])] - middle);
+                withoutRuns[i] -= runs[at].offset +
+                                  runs[at].slope * (sample.groupValue[static_cast<std::size_t>(sample.group[i])] - middle);
         }
     }
-    std::size_t next = 0;
-    for (std::size_t i = 0; i < n; ++i) {
-        if (next < leftOut.size() && leftOut[next] == i) {
-            ++next;
-            continue;
+    const std::span<const double> e = withoutRuns.empty() ? input.residuals->e.high : withoutRuns;
+    const bool barePoints = leftOut.empty() && withoutRuns.empty() && sample.direction.empty() && input.split->setPoints.size() == sample.groupValue.size();
+    std::vector<Cell> cells;
+    if (barePoints)
+        for (const SetPointMeans& point : input.split->setPoints)
+            cells.push_back({1, point.mean, point.n});
+    else
+        cells = classSums<Cell>(n, directions * sample.groupValue.size(), [&](std::vector<Cell>& sums, std::size_t first, std::size_t last) {
+        auto next = std::lower_bound(leftOut.begin(), leftOut.end(), first);
+        for (std::size_t i = first; i < last; ++i) {
+            if (next != leftOut.end() && *next == i) {
+                ++next;
+                continue;
+            }
+            const double weight = w.empty() ? 1 : w[i];
+            sums[cellOf(i)] += {weight, weight * e[i], 1};
         }
-        const double weight = w.empty() ? 1 : w[i];
-        Cell& cell = cellOf(i);
-        cell.weight += weight;
-        cell.sum += weight * left[i];
-        ++cell.n;
-    }
+    });
     for (Cell& cell : cells) {
         cell.sum /= cell.weight;
         // What one mean takes from a cell of few makes its deviations too small by √(1 − 1/n).
         cell.weight = cell.n > 1 ? 1 / std::sqrt(1 - 1 / static_cast<double>(cell.n)) : 0;
     }
-    for (std::size_t i = 0; i < n; ++i) {
-        const Cell& cell = cellOf(i);
-        left[i] = (left[i] - cell.sum) * cell.weight * (w.empty() ? 1 : std::sqrt(w[i]));
-    }
+    std::vector<double> left(n);
+    inHalves(n, [&](std::size_t first, std::size_t last) {
+        for (std::size_t i = first; i < last; ++i) {
+            const Cell& cell = cells[cellOf(i)];
+            left[i] = (e[i] - cell.sum) * cell.weight * (w.empty() ? 1 : std::sqrt(w[i]));
+        }
+    });
     for (const std::size_t i : leftOut)
         left[i] = 0;
     return left;

@@ -3,6 +3,7 @@
 
 #include <cstddef>
 #include <cstdint>
+#include <memory>
 #include <span>
 #include <vector>
 
@@ -22,11 +23,11 @@ class GroupedColumn {
 
     [[nodiscard]] std::size_t groups() const { return begin_.size() - 1; }
     [[nodiscard]] std::span<const double> operator[](std::size_t group) const {
-        return std::span(values_).subspan(begin_[group], begin_[group + 1] - begin_[group]);
+        return {values_.get() + begin_[group], begin_[group + 1] - begin_[group]};
     }
 
   private:
-    std::vector<double> values_;
+    std::unique_ptr<double[]> values_;
     std::vector<std::size_t> begin_;
 };
 

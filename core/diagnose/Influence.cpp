@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/diagnose/Influence.h"
 
+#include "core/base/ClassSums.h"
+
 #include <cmath>
 #include <limits>
 
@@ -19,10 +21,11 @@ Influence::Influence(const Residuals& residuals, int terms)
         return;
     const double* e = residuals.e.high.data();
     const double* w = residuals.weight.empty() ? nullptr : residuals.weight.high.data();
-    double sum = 0;
-    for (std::size_t i = 0; i < residuals.e.size(); ++i)
-        sum += w ? w[i] * e[i] * e[i] : e[i] * e[i];
-    variance_ = sum / freedom_;
+    const auto sum = sumInHalves<1>(residuals.e.size(), [e, w](auto i) {
+        const auto square = at(e, i) * at(e, i);
+        return std::array{w == nullptr ? square : at(w, i) * square};
+    });
+    variance_ = sum[0] / freedom_;
 }
 
 InfluenceFigures Influence::of(double e, double h, double w) const {

@@ -9,7 +9,7 @@ namespace spanwright {
 namespace {
 
 template <class T>
-T at(const PairColumn& column, std::size_t i) {
+T numberOf(const PairColumn& column, std::size_t i) {
     if constexpr (std::is_same_v<T, double>)
         return column.high[i];
     else
@@ -34,29 +34,29 @@ std::optional<TestResult> result(const T& gain, const T& rest, std::size_t n) {
 template <class T>
 std::optional<TestResult> test(const Sample& sample, const PairColumn& weight) {
     const std::size_t n = sample.size();
-    const auto w = [&](std::size_t i) { return weight.empty() ? T(1.0) : at<T>(weight, i); };
+    const auto w = [&](std::size_t i) { return weight.empty() ? T(1.0) : numberOf<T>(weight, i); };
     T sumW(0.0), sumX(0.0), sumY(0.0);
     for (std::size_t i = 0; i < n; ++i) {
         sumW += w(i);
-        sumX += w(i) * at<T>(sample.reference, i);
-        sumY += w(i) * at<T>(sample.indication, i);
+        sumX += w(i) * numberOf<T>(sample.reference, i);
+        sumY += w(i) * numberOf<T>(sample.indication, i);
     }
     const T meanX = sumX / sumW, meanY = sumY / sumW;
     T second(0.0), third(0.0), xy(0.0);
     for (std::size_t i = 0; i < n; ++i) {
-        const T x = at<T>(sample.reference, i) - meanX;
+        const T x = numberOf<T>(sample.reference, i) - meanX;
         const T wx = w(i) * x;
         second += wx * x;
         third += wx * x * x;
-        xy += wx * (at<T>(sample.indication, i) - meanY);
+        xy += wx * (numberOf<T>(sample.indication, i) - meanY);
     }
     if (!(rounded(second) > 0))
         return std::nullopt;
     const T slope = xy / second, b = third / second, c = second / sumW;
     T line(0.0), squares(0.0), product(0.0);
     for (std::size_t i = 0; i < n; ++i) {
-        const T x = at<T>(sample.reference, i) - meanX;
-        const T e = at<T>(sample.indication, i) - meanY - slope * x;
+        const T x = numberOf<T>(sample.reference, i) - meanX;
+        const T e = numberOf<T>(sample.indication, i) - meanY - slope * x;
         const T q = x * x - b * x - c;
         line += w(i) * e * e;
         squares += w(i) * q * q;
@@ -68,14 +68,19 @@ std::optional<TestResult> test(const Sample& sample, const PairColumn& weight) {
     return result(gain, T(line - gain), n);
 }
 
-/// Of very many readings through which the line was fitted: what the quadratic takes from its residuals, in one pass.
+/// Of very many readings through which the line was fitted: what the quadratic takes from its residuals.
 std::optional<TestResult> testOfLine(const Sample& sample, const Residuals& residuals, const Fit& fit) {
     const std::vector<double>& x = sample.reference.high;
     const std::vector<double>& e = residuals.e.high;
     const double middle = (fit.low + fit.high) / 2, scale = 2 / (fit.high - fit.low), n = static_cast<double>(x.size());
-    const auto [t1, t2, t3, t4, e0, e1, e2] = laneSums<7>(0, x.size(), [&](std::size_t i) -> std::array<double, 7> {
-        const double t = (x[i] - middle) * scale, square = t * t;
-        return {t, square, t * square, square * square, e[i], t * e[i], square * e[i]};
+    // Separately: seven sums at once are more than a processor holds.
+    const auto [t1, t2, t3, t4] = laneSums<4>(0, x.size(), [&, xs = x.data()](auto i) {
+        const auto t = (at(xs, i) - middle) * scale, square = t * t;
+        return std::array{t, square, t * square, square * square};
+    });
+    const auto [e0, e1, e2] = laneSums<3>(0, x.size(), [&, xs = x.data(), es = e.data()](auto i) {
+        const auto t = (at(xs, i) - middle) * scale, here = at(es, i);
+        return std::array{here, t * here, t * t * here};
     });
     // About the means: of t², what t does not explain; e has neither a mean nor a slope but for rounding.
     const double second = t2 - t1 * (t1 / n), third = t3 - t1 * (t2 / n), fourth = t4 - t2 * (t2 / n);

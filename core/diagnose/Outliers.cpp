@@ -2,6 +2,7 @@
 #include "core/diagnose/Outliers.h"
 
 #include "core/base/LaneSums.h"
+#include "core/base/Parallel.h"
 #include "core/diagnose/ResidualColumn.h"
 #include "core/fit/Quantiles.h"
 
@@ -9,7 +10,6 @@
 #include <array>
 #include <cmath>
 #include <type_traits>
-#include <utility>
 
 namespace spanwright {
 namespace {
@@ -71,48 +71,42 @@ Spread<T> spreadOf(std::span<const T> u, std::size_t most) {
     return spread;
 }
 
-/// Smallest and largest of a stretch.
-std::pair<double, double> boundsOf(std::span<const double> u) {
-    std::array<double, 4> low{u[0], u[0], u[0], u[0]}, high = low;
-    std::size_t i = 0;
-    for (; i + low.size() <= u.size(); i += low.size()) {
-#pragma GCC unroll 4
-        for (std::size_t lane = 0; lane < low.size(); ++lane) {
-            low[lane] = std::min(low[lane], u[i + lane]);
-            high[lane] = std::max(high[lane], u[i + lane]);
-        }
-    }
-    for (; i < u.size(); ++i) {
-        low[0] = std::min(low[0], u[i]);
-        high[0] = std::max(high[0], u[i]);
-    }
-    return {*std::min_element(low.begin(), low.end()), *std::max_element(high.begin(), high.end())};
-}
-
-/// In one pass for very many values: in blocks, of which few hold an end, and with the distances from the first value, so
-/// that a common level costs no digits.
-Spread<double> spreadOfMany(std::span<const double> u, std::size_t most) {
+/// Of the values from `from` to `to`: Σ d and Σ d² of the distances d from `origin`, and their ends.
+Spread<double> distancesOf(std::span<const double> u, std::size_t from, std::size_t to, double origin, std::size_t most) {
     constexpr std::size_t Block = 512;
     Spread<double> spread{0, 0, Ends<double>(u, most)};
-    const double origin = u[0], n = static_cast<double>(u.size());
-    double sum = 0;
-    for (std::size_t first = 0; first < u.size(); first += Block) {
-        const std::size_t last = std::min(first + Block, u.size());
-        const auto [part, squares] = laneSums<2>(first, last, [&](std::size_t i) -> std::array<double, 2> {
-            const double d = u[i] - origin;
-            return {d, d * d};
+    for (std::size_t first = from; first < to; first += Block) {
+        const std::size_t last = std::min(first + Block, to);
+        const auto [sum, squares] = laneSums<2>(first, last, [&, column = u.data()](auto i) {
+            const auto d = at(column, i) - origin;
+            return std::array{d, d * d};
         });
-        sum += part;
+        spread.mean += sum;
         spread.squares += squares;
-        const auto [low, high] = boundsOf(u.subspan(first, last - first));
+        const auto [low, high] = laneBounds(first, last, [column = u.data()](auto i) { return at(column, i); });
         if (!spread.ends.wants(low) && !spread.ends.wants(high))
             continue;
         for (std::size_t i = first; i < last; ++i)
             if (spread.ends.wants(u[i]))
                 spread.ends.take(i);
     }
-    spread.mean = origin + sum / n;
-    spread.squares -= sum * (sum / n);
+    return spread;
+}
+
+/// In one pass for very many values: in blocks, of which few hold an end, and with the distances from the first value, so
+/// that a common level costs no digits.
+Spread<double> spreadOfMany(std::span<const double> u, std::size_t most) {
+    const std::size_t n = u.size();
+    auto second = beside(n, [&] { return distancesOf(u, n / 2, n, u[0], most); });
+    Spread<double> spread = distancesOf(u, 0, n / 2, u[0], most);
+    const Spread<double> others = second.get();
+    for (const std::vector<std::size_t>* end : {&others.ends.low, &others.ends.high})
+        for (const std::size_t i : *end)
+            if (spread.ends.wants(u[i]))
+                spread.ends.take(i);
+    const double sum = spread.mean + others.mean, size = static_cast<double>(n);
+    spread.mean = u[0] + sum / size;
+    spread.squares += others.squares - sum * (sum / size);
     return spread;
 }
 

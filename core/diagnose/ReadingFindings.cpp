@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/diagnose/FindingRules.h"
 
+#include "core/base/ClassSums.h"
 #include "core/diagnose/Outliers.h"
 #include "core/diagnose/ResidualColumn.h"
 #include "core/fit/Quantiles.h"
@@ -41,6 +42,20 @@ std::vector<ExtremeTrial> cleanedTrials(const FindingsInput& input, const std::v
     return trials;
 }
 
+/// The furthest residuals one after the other; the diagnostics hold them unless fewer were asked for there.
+std::vector<ExtremeTrial> residualTrials(const FindingsInput& input, int most) {
+    const std::vector<std::size_t>& rows = input.sample.rows;
+    std::vector<ExtremeTrial> trials;
+    if (input.diagnostics && input.diagnostics->esd.size() >= static_cast<std::size_t>(most)) {
+        for (const OutlierTrial& trial : std::span(input.diagnostics->esd).first(static_cast<std::size_t>(most)))
+            trials.push_back({static_cast<std::size_t>(std::lower_bound(rows.begin(), rows.end(), trial.row - 1) - rows.begin()), trial.r, trial.lambda});
+        return trials;
+    }
+    if (input.residuals->weight.empty())
+        return extremeTrials(input.residuals->e.high, most);
+    return extremeTrials(weightedResiduals<double>(*input.residuals), most);
+}
+
 /// Stragglers at 5 % and outliers at 1 % (ISO 5725-2:2019, 8.3.4), among the residuals and among the deviations from
 /// set point, direction and run, where a gap between rising and falling hides nothing. A technical cause is to be
 /// looked for; nothing is removed.
@@ -52,25 +67,22 @@ void outlying(const FindingsInput& input, const std::vector<double>& deviations,
         bool outlier = false;
     };
     std::map<std::size_t, Mark> marks;
-    const auto look = [&](std::span<const double> u, const std::vector<ExtremeTrial>& trials) {
-        if (u.size() < 5)
+    const auto look = [&](std::size_t readings, const std::vector<ExtremeTrial>& trials) {
+        if (readings < 5)
             return;
-        const int stragglers = outlierCount(trials, u.size(), 0.05);
-        const int outliers = stragglers > 0 ? outlierCount(trials, u.size(), 0.01) : 0;
+        const int stragglers = outlierCount(trials, readings, 0.05);
+        const int outliers = stragglers > 0 ? outlierCount(trials, readings, 0.01) : 0;
         for (int k = 0; k < stragglers; ++k) {
             const auto at = static_cast<std::size_t>(k);
             Mark& mark = marks[trials[at].index];
             const bool outlier = k < outliers;
             if (mark.r > 0 && (mark.outlier || !outlier))
                 continue;
-            mark = {trials[at].r, grubbsCriticalValue(u.size() - at, outlier ? 0.01 : 0.05), outlier};
+            mark = {trials[at].r, grubbsCriticalValue(readings - at, outlier ? 0.01 : 0.05), outlier};
         }
     };
-    if (input.residuals->weight.empty())
-        look(input.residuals->e.high, extremeTrials(input.residuals->e.high, most));
-    else if (const std::vector<double> weighted = weightedResiduals<double>(*input.residuals); true)
-        look(weighted, extremeTrials(weighted, most));
-    look(deviations, cleanedTrials(input, deviations, most));
+    look(n, residualTrials(input, most));
+    look(deviations.size(), cleanedTrials(input, deviations, most));
     for (const bool outlier : {true, false}) {
         Finding finding;
         finding.code = outlier ? FindingCode::Outlier : FindingCode::Straggler;
@@ -91,9 +103,15 @@ void outlying(const FindingsInput& input, const std::vector<double>& deviations,
     }
 }
 
+/// w e² of a place or a pair.
+auto weightedSquare(const Residuals& residuals, auto i) {
+    const auto e = at(residuals.e.high.data(), i);
+    return residuals.weight.empty() ? e * e : at(residuals.weight.high.data(), i) * e * e;
+}
+
 /// Cook's distance beyond the median of F with p and n − p degrees of freedom: leaving the reading out would move the
 /// coefficients to the edge of their 50 % region (Cook, Technometrics 19 (1977) 15).
-void influential(const FindingsInput& input, std::vector<Finding>& found) {
+void influential(const FindingsInput& input, double largestSquare, std::vector<Finding>& found) {
     const Fit& fit = *input.fit;
     const Residuals& residuals = *input.residuals;
     if (fit.degreesOfFreedom < 2 || fit.function.family == FunctionFamily::Constant ||
@@ -105,15 +123,19 @@ void influential(const FindingsInput& input, std::vector<Finding>& found) {
     finding.severity = Severity::Attention;
     finding.remedy = Remedy::SeeReadings;
     const double variance = fit.residualSs / fit.degreesOfFreedom * static_cast<double>(fit.terms());
+    const std::span<const double> h = residuals.leverage;
+    const auto above = [&](std::size_t i) { return weightedSquare(residuals, i) * h[i]; };
+    const auto below = [&](std::size_t i) { return variance * (1 - h[i]) * (1 - h[i]); };
+    // Of very many readings none has a share that counts, which the largest of both tells without looking at each.
+    const double highest = boundsInHalves(h.size(), [&](auto i) { return at(h.data(), i); }).high;
+    if (highest < 1 && largestSquare * highest <= limit * variance * (1 - highest) * (1 - highest))
+        return;
     double most = 0;
-    for (std::size_t i = 0; i < residuals.e.size() && finding.rows.size() < mostRowsNamed; ++i) {
-        const double e = residuals.e.high[i], h = residuals.leverage[i];
-        const double w = residuals.weight.empty() ? 1 : residuals.weight.high[i];
-        const double above = w * e * e * h, below = variance * (1 - h) * (1 - h);
-        if (!(above > limit * below) || 1 - h < 1e-13)
+    for (std::size_t i = 0; i < h.size() && finding.rows.size() < mostRowsNamed; ++i) {
+        if (!(above(i) > limit * below(i)) || 1 - h[i] < 1e-13)
             continue;
         finding.rows.push_back(idOf(input, i));
-        most = std::max(most, above / below);
+        most = std::max(most, above(i) / below(i));
     }
     if (finding.rows.empty())
         return;
@@ -123,7 +145,7 @@ void influential(const FindingsInput& input, std::vector<Finding>& found) {
 
 /// Readings outside ŷ ± t √(σ²(1 + h)). A share of 1 − coverage is to be expected there, so few are no finding unless
 /// one lies half as far again, and farther than the largest of so many would.
-void outsideBand(const FindingsInput& input, std::vector<Finding>& found) {
+void outsideBand(const FindingsInput& input, double largestSquare, std::vector<Finding>& found) {
     const Fit& fit = *input.fit;
     const Residuals& residuals = *input.residuals;
     const double scale =
@@ -134,26 +156,22 @@ void outsideBand(const FindingsInput& input, std::vector<Finding>& found) {
     finding.code = FindingCode::OutsideBand;
     finding.remedy = Remedy::SeeReadings;
     const double edge = fit.coverageFactor * fit.coverageFactor * scale * scale;
-    double worst = 0;
-    std::size_t count = 0;
-    for (std::size_t i = 0; i < residuals.e.size(); ++i) {
-        const double e = residuals.e.high[i], w = residuals.weight.empty() ? 1 : residuals.weight.high[i];
-        const double square = w * e * e, limit = edge * (1 + residuals.leverage[i]);
-        if (!(square > limit))
-            continue;
-        worst = std::max(worst, std::sqrt(square / limit));
-        ++count;
-        if (finding.rows.size() < mostRowsNamed)
-            finding.rows.push_back(idOf(input, i));
-    }
-    const double expected = static_cast<double>(residuals.e.size()) * (1 - fit.coverage);
-    const bool many = static_cast<double>(count) > expected + 2 * std::sqrt(expected);
+    const std::size_t n = residuals.e.size();
+    const auto square = [&](auto i) { return weightedSquare(residuals, i); };
+    const auto limit = [&](auto i) { return edge * (1 + at(residuals.leverage.data(), i)); };
+    const double count = sumInHalves<1>(n, [&](auto i) { return std::array{exceeds(square(i), limit(i))}; })[0];
+    const double expected = static_cast<double>(n) * (1 - fit.coverage);
+    const bool many = count > expected + 2 * std::sqrt(expected);
     // The largest of n sound readings lies beyond this once in twenty sets (Bonferroni).
-    const double far = studentQuantileAbove(0.025 / static_cast<double>(residuals.e.size()), fit.degreesOfFreedom) / fit.coverageFactor;
-    if (count == 0 || (!many && worst < std::max(1.5, far)))
+    const double far = std::max(1.5, studentQuantileAbove(0.025 / static_cast<double>(n), fit.degreesOfFreedom) / fit.coverageFactor);
+    const auto beyond = [&] { return boundsInHalves(n, [&](auto i) { return square(i) - far * far * limit(i); }).high >= 0; };
+    if (!many && (largestSquare < far * far * edge || !beyond()))
         return;
+    for (std::size_t i = 0; i < n && finding.rows.size() < mostRowsNamed; ++i)
+        if (square(i) > limit(i))
+            finding.rows.push_back(idOf(input, i));
     finding.severity = many ? Severity::Attention : Severity::Note;
-    finding.figures = {{"count", static_cast<double>(count)}, {"expected", expected}};
+    finding.figures = {{"count", count}, {"expected", expected}};
     found.push_back(finding);
 }
 
@@ -192,8 +210,10 @@ void repeatedReadings(const FindingsInput& input, std::vector<Finding>& found) {
 void addReadingFindings(const FindingsInput& input, const std::vector<double>& deviations,
                         std::vector<Finding>& found) {
     outlying(input, deviations, found);
-    influential(input, found);
-    outsideBand(input, found);
+    const std::size_t n = input.residuals->e.size();
+    const double largestSquare = n > 0 ? boundsInHalves(n, [&](auto i) { return weightedSquare(*input.residuals, i); }).high : 0;
+    influential(input, largestSquare, found);
+    outsideBand(input, largestSquare, found);
     repeatedReadings(input, found);
 }
 

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/diagnose/FindingRules.h"
 
+#include "core/base/ClassSums.h"
 #include "core/diagnose/Autocorrelation.h"
 #include "core/diagnose/Normality.h"
 #include "core/fit/Quantiles.h"
@@ -22,7 +23,12 @@ struct ScatterTrend {
 };
 
 struct Level {
-    double level = 0, n = 0, squares = 0;
+    double level = 0, n = 0, squares = 0, fourth = 0; ///< Σ d², Σ d⁴
+    void operator+=(const Level& other) {
+        n += other.n;
+        squares += other.squares;
+        fourth += other.fourth;
+    }
 };
 
 /// Slope of ln s over ln level.
@@ -43,25 +49,23 @@ double exponentOf(const std::vector<Level>& levels) {
 }
 
 ScatterTrend scatterTrend(const Sample& sample, const std::vector<double>& deviations) {
-    std::vector<Level> levels(sample.groupValue.size());
+    std::vector<Level> levels = classSums<Level>(sample.size(), sample.groupValue.size(), [&](std::vector<Level>& sums, std::size_t first, std::size_t last) {
+        for (std::size_t i = first; i < last; ++i) {
+            const double square = deviations[i] * deviations[i];
+            sums[static_cast<std::size_t>(sample.group[i])] += {0, 1, square, square * square};
+        }
+    });
     for (std::size_t g = 0; g < levels.size(); ++g)
         levels[g].level = std::abs(sample.groupValue[g]);
-    double fourth = 0;
-    for (std::size_t i = 0; i < sample.size(); ++i) {
-        const double square = deviations[i] * deviations[i];
-        Level& one = levels[static_cast<std::size_t>(sample.group[i])];
-        ++one.n;
-        one.squares += square;
-        fourth += square * square;
-    }
     std::sort(levels.begin(), levels.end(), [](const Level& a, const Level& b) { return a.level < b.level; });
     ScatterTrend trend;
     trend.exponent = exponentOf(levels);
     const double n = static_cast<double>(sample.size());
-    double meanLevel = 0, meanSquare = 0, xx = 0, xv = 0;
+    double meanLevel = 0, meanSquare = 0, fourth = 0, xx = 0, xv = 0;
     for (const Level& one : levels) {
         meanLevel += one.n * one.level / n;
         meanSquare += one.squares / n;
+        fourth += one.fourth;
         trend.levels += one.squares > 0 ? 1 : 0;
     }
     for (const Level& one : levels) {

@@ -25,13 +25,8 @@ bool everyReadingCounts(const RowSources& sources) {
            sources.record.readings->reference().missing() == 0;
 }
 
-RowFigures takenOver(RowSources sources) {
-    const ReadingColumns& readings = *sources.record.readings;
-    RowFigures table;
-    table.ids = readings.ids();
-    table.runs = readings.runs();
-    table.directions = readings.directions();
-    table.excluded.assign(readings.size(), 0);
+RowFigures takenOver(RowSources sources, RowFigures table) {
+    table.excluded.assign(table.size(), 0);
     table.reference = std::move(sources.used.reference.high);
     table.indication = std::move(sources.used.indication.high);
     if (sources.fit != nullptr) {
@@ -41,21 +36,17 @@ RowFigures takenOver(RowSources sources) {
         table.weight = std::move(sources.residuals->weight.high);
     } else {
         for (std::vector<double>* column : {&table.fitted, &table.residual, &table.leverage})
-            column->assign(readings.size(), missing);
+            column->assign(table.size(), missing);
     }
     return table;
 }
 
 /// Rows as they were read: one entry a reading, complete or not.
-RowFigures asRead(const Record& record, const std::vector<std::size_t>& rows) {
+RowFigures asRead(const Record& record, const std::vector<std::size_t>& rows, RowFigures table) {
     const ReadingColumns& readings = *record.readings;
-    RowFigures table;
     for (const std::size_t row : rows) {
-        table.ids.push_back(readings.ids()[row]);
         table.reference.push_back(readings.reference().toDouble(row));
         table.indication.push_back(readings.indication().toDouble(row));
-        table.runs.push_back(readings.runs()[row]);
-        table.directions.push_back(readings.directions()[row]);
     }
     table.excluded.assign(rows.size(), 0);
     for (std::vector<double>* column : {&table.fitted, &table.residual, &table.leverage})
@@ -106,17 +97,33 @@ void place(const RowSources& sources, const std::vector<std::size_t>& rows, RowF
 
 } // namespace
 
-RowFigures rowTable(RowSources sources) {
+RowFigures namedRows(const ReadingColumns& readings, Phase phase) {
+    RowFigures table;
+    if (!readings.anyIn(phase == Phase::AsFound ? Phase::AsLeft : Phase::AsFound)) {
+        table.ids = readings.ids();
+        table.runs = readings.runs();
+        table.directions = readings.directions();
+        return table;
+    }
+    for (const std::size_t row : rowsOf(readings, phase)) {
+        table.ids.push_back(readings.ids()[row]);
+        table.runs.push_back(readings.runs()[row]);
+        table.directions.push_back(readings.directions()[row]);
+    }
+    return table;
+}
+
+RowFigures rowTable(RowSources sources, RowFigures named) {
     // The figures of influence are those of independent readings.
     const Influence influence = sources.fit != nullptr && !sources.fit->correlated
                                     ? Influence(*sources.residuals, static_cast<int>(sources.fit->terms()))
                                     : Influence();
     RowFigures table;
     if (everyReadingCounts(sources)) {
-        table = takenOver(std::move(sources));
+        table = takenOver(std::move(sources), std::move(named));
     } else {
         const std::vector<std::size_t> rows = rowsOf(*sources.record.readings, sources.phase);
-        table = asRead(sources.record, rows);
+        table = asRead(sources.record, rows, std::move(named));
         place(sources, rows, table);
     }
     table.influence = influence;

@@ -17,8 +17,11 @@ struct RowSources {
     std::optional<Residuals> residuals; ///< of `used`
 };
 
-/// Every reading of the phase with what follows for it (core/diagnose/Influence). NaN where a reading takes no part or a figure does
+/// The rows of a phase, complete or not, in the order taken, with ids, runs and directions only.
+RowFigures namedRows(const ReadingColumns& readings, Phase phase);
+
+/// Every reading of namedRows() with what follows for it (core/diagnose/Influence). NaN where a reading takes no part or a figure does
 /// not exist.
-RowFigures rowTable(RowSources sources);
+RowFigures rowTable(RowSources sources, RowFigures named);
 
 } // namespace spanwright

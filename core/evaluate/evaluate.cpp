@@ -1,6 +1,9 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/evaluate/evaluate.h"
 
+#include "core/base/AllSame.h"
+#include "core/base/ClassSums.h"
+#include "core/base/Parallel.h"
 #include "core/budget/makeBudget.h"
 #include "core/diagnose/Findings.h"
 #include "core/evaluate/Dates.h"
@@ -20,17 +23,14 @@ constexpr std::size_t CurvePoints = 241;
 constexpr std::size_t MostOnLadder = 1000;
 constexpr double BeyondRange = 0.03; ///< share of the range by which the curve is drawn further on both sides
 
-struct Range {
-    double low = 0, high = 0;
-};
-
-Range rangeOf(const std::vector<double>& values) {
-    const auto [low, high] = std::minmax_element(values.begin(), values.end());
-    return low == values.end() ? Range{} : Range{*low, *high};
-}
-
-const std::vector<double>& abscissa(const Sample& sample, FitDirection direction) {
-    return direction == FitDirection::Indication ? sample.reference.high : sample.indication.high;
+/// Of the abscissae of a fit, those of excluded readings included.
+Bounds<double> rangeOf(const Fit& fit, const std::optional<Sample>& withExcluded) {
+    Bounds<double> range{fit.low, fit.high};
+    if (withExcluded) {
+        const PairColumn& x = fit.direction == FitDirection::Indication ? withExcluded->reference : withExcluded->indication;
+        range = laneBounds(0, x.size(), [&](std::size_t i) { return x.high[i]; });
+    }
+    return range;
 }
 
 double largestHalfWidth(const Fit& fit, double low, double high) {
@@ -62,7 +62,7 @@ class PhaseSteps {
         else
             result_.notFitted = fitted.error();
         const Residuals* residuals = fitted ? &fitted->residuals : nullptr;
-        result_.performance = processFigures(used_, record_.item);
+        auto performance = beside(used_.size(), [&] { return processFigures(used_, record_.item); });
         result_.force = forceFigures(used_, choices_, record_.item.resolution ? record_.item.resolution->toDouble() : 0, record_.plan.positions);
         if (fitted) {
             examine(fitted->residuals);
@@ -71,26 +71,27 @@ class PhaseSteps {
             answer();
             compare(*fitted);
         }
+        result_.performance = performance.get();
+        auto named = beside(used_.size(), [&] { return namedRows(*record_.readings, result_.phase); });
+        auto decided = beside(used_.size(), [&] { decide(); });
         interpret(residuals);
+        decided.get();
         if (progress_.cancelled())
             return Error(ErrorCode::Cancelled);
         progress_.report(0.8);
-        decide();
         gatherWarnings();
         std::optional<Residuals> left;
         if (fitted)
             left = std::move(fitted->residuals);
-        result_.rows = rowTable({record_, result_.phase, std::move(used_), std::move(withExcluded_), fit(), std::move(left)});
+        result_.rows = rowTable({record_, result_.phase, std::move(used_), std::move(withExcluded_), fit(), std::move(left)}, named.get());
         return std::move(result_);
     }
 
   private:
-    [[nodiscard]] const Sample& all() const { return withExcluded_ ? *withExcluded_ : used_; }
     [[nodiscard]] const Fit* fit() const { return result_.fit ? &*result_.fit : nullptr; }
 
     void count() {
-        const ReadingColumns& readings = *record_.readings;
-        result_.readings = static_cast<std::size_t>(std::count(readings.phases().begin(), readings.phases().end(), result_.phase));
+        result_.readings = used_.size() + used_.excluded + used_.incomplete;
         result_.excluded = used_.excluded;
         result_.complete = used_.size() + used_.excluded;
         result_.planned = plannedReadings(record_.plan, result_.phase).size();
@@ -103,13 +104,14 @@ class PhaseSteps {
                 result_.warnings.push_back({WarningCode::FigureUndefined, {{"figure", figure}, {"reason", "correlated"}}});
             return;
         }
-        result_.split = splitVariance(used_, residuals, *result_.fit);
+        auto split = beside(used_.size(), [&] { return splitVariance(used_, residuals, *result_.fit); });
         const DiagnoseQuestion question{record_.readings->ids(), choices_.outliers, choices_.outlierLevel.toDouble()};
         result_.diagnostics = diagnose(used_, residuals, *result_.fit, question);
+        result_.split = split.get();
     }
 
     void draw() {
-        const Range range = rangeOf(abscissa(all(), result_.fit->direction));
+        const Bounds<double> range = rangeOf(*result_.fit, withExcluded_);
         const double beyond = BeyondRange * (range.high - range.low);
         if (range.high > range.low)
             result_.curve = bandCurve(*result_.fit, range.low - beyond, range.high + beyond, CurvePoints);
@@ -225,8 +227,10 @@ std::string dayOfMeasurement(const Record& record) {
     if (!record.job.calibrated.empty())
         return record.job.calibrated;
     const std::vector<std::int64_t>& times = record.readings->enteredAt();
-    const auto last = std::max_element(times.begin(), times.end());
-    return last == times.end() || *last == 0 ? std::string() : dateOf(*last);
+    if (times.empty())
+        return {};
+    const std::int64_t last = allSame(times) ? times.front() : boundsInHalves(times.size(), [&](std::size_t i) { return times[i]; }).high;
+    return last == 0 ? std::string() : dateOf(last);
 }
 
 std::vector<Evaluation::OverdueStandard> overdueStandards(const Record& record, const std::string& day) {
@@ -244,11 +248,9 @@ std::vector<Evaluation::OverdueStandard> overdueStandards(const Record& record, 
 
 Result<Evaluation> evaluate(const Record& record, Progress& progress) {
     Evaluation evaluation;
-    evaluation.calibrated = dayOfMeasurement(record);
-    evaluation.overdue = overdueStandards(record, evaluation.calibrated);
+    auto day = beside(record.readings->size(), [&] { return dayOfMeasurement(record); });
     for (const Phase phase : bothPhases) {
-        const std::vector<Phase>& phases = record.readings->phases();
-        if (std::find(phases.begin(), phases.end(), phase) == phases.end())
+        if (!record.readings->anyIn(phase))
             continue;
         const auto& found = evaluation.phases[static_cast<std::size_t>(Phase::AsFound)];
         Result<PhaseEvaluation> result = PhaseSteps(record, phase, found ? &*found : nullptr, progress).run();
@@ -256,6 +258,8 @@ Result<Evaluation> evaluate(const Record& record, Progress& progress) {
             return result.error();
         evaluation.phases[static_cast<std::size_t>(phase)] = std::move(result).value();
     }
+    evaluation.calibrated = day.get();
+    evaluation.overdue = overdueStandards(record, evaluation.calibrated);
     progress.report(1);
     return evaluation;
 }

@@ -1,11 +1,13 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/fit/Sample.h"
 
+#include "core/base/AllSame.h"
+#include "core/base/Parallel.h"
 #include "core/fit/SetPoints.h"
 #include "core/fit/StatedCovariance.h"
+#include "core/fit/StreamKernel.h"
 
 #include <algorithm>
-#include <cstring>
 #include <numeric>
 
 namespace spanwright {
@@ -72,12 +74,10 @@ struct Chosen {
     std::size_t excluded = 0, incomplete = 0;
 };
 
-/// Whether any byte differs from `value`.
+/// Whether any differs from `value`.
 template <class T>
-bool anyOther(const std::vector<T>& bytes, T value) {
-    static_assert(sizeof(T) == 1);
-    return !bytes.empty() &&
-           (bytes.front() != value || std::memcmp(bytes.data(), bytes.data() + 1, bytes.size() - 1) != 0);
+bool anyOther(const std::vector<T>& values, T value) {
+    return !values.empty() && (values.front() != value || !allSame(values));
 }
 
 Chosen chooseRows(const Record& record, Phase phase, Take take) {
@@ -89,7 +89,10 @@ Chosen chooseRows(const Record& record, Phase phase, Take take) {
     Chosen chosen;
     if (allComplete && (excluded.empty() || take == Take::ExcludedToo) && !anyOther(readings.phases(), phase)) {
         chosen.rows.resize(readings.size());
-        std::iota(chosen.rows.begin(), chosen.rows.end(), std::size_t{0});
+        inHalves(chosen.rows.size(), [&](std::size_t first, std::size_t last) {
+            for (std::size_t row = first; row < last; ++row)
+                chosen.rows[row] = row;
+        });
         return chosen;
     }
     chosen.rows.reserve(readings.size());
@@ -128,7 +131,9 @@ PairColumn plainValues(std::span<const std::int64_t> grid, int scale) {
     const double divisor = toDouble(powerOfTen(scale));
     PairColumn column;
     column.high.resize(grid.size());
-    for (std::size_t i = 0; i < grid.size(); ++i)
+    const std::size_t whole = grid.size() - grid.size() % 4;
+    const bool narrow = (streamKernel().quotients(asLong(grid.data()), whole, divisor, column.high.data()) >> 52) == 0;
+    for (std::size_t i = narrow ? whole : 0; i < grid.size(); ++i)
         column.high[i] = static_cast<double>(grid[i]) / divisor;
     return column;
 }
@@ -142,14 +147,20 @@ void fillMany(Sample& sample, const Record& record) {
     grids->indicationScale = readings.indication().scale();
     grids->reference = gridOf(readings.reference(), sample.rows, grids->keptReference);
     grids->indication = gridOf(readings.indication(), sample.rows, grids->keptIndication);
-    sample.reference = plainValues(grids->reference, grids->referenceScale);
-    sample.indication = plainValues(grids->indication, grids->indicationScale);
-    if (readings.setPoint().missing() == readings.setPoint().size()) {
-        groupByGrid(sample, grids->reference, grids->referenceScale);
-    } else if (readings.setPoint().missing() == 0 && readings.setPoint().exact()) {
-        std::vector<std::int64_t> kept;
-        groupByGrid(sample, gridOf(readings.setPoint(), sample.rows, kept), readings.setPoint().scale());
-    } else {
+    auto plain = beside(sample.size(), [&] {
+        sample.reference = plainValues(grids->reference, grids->referenceScale);
+        sample.indication = plainValues(grids->indication, grids->indicationScale);
+    });
+    std::vector<std::int64_t> kept;
+    const bool stated = readings.setPoint().missing() < readings.setPoint().size();
+    const bool onGrid = !stated || (readings.setPoint().missing() == 0 && readings.setPoint().exact());
+    if (onGrid) {
+        const auto [grid, scale] = stated ? std::pair(gridOf(readings.setPoint(), sample.rows, kept), readings.setPoint().scale())
+                                          : std::pair(grids->reference, grids->referenceScale);
+        groupByGrid(sample, grid, scale);
+    }
+    plain.get();
+    if (!onGrid) {
         PairColumn setPoint;
         for (std::size_t i = 0; i < sample.size(); ++i)
             setPoint.push_back(readings.setPoint().has(sample.rows[i])
@@ -177,8 +188,8 @@ void fillFew(Sample& sample, const Record& record, const CorrectionTable& refere
 
 void fillPlaces(Sample& sample, const ReadingColumns& readings) {
     const auto knownRun = [&](std::size_t row) { return readings.runs()[row] != 0; };
-    const bool runKnown = std::any_of(sample.rows.begin(), sample.rows.end(), knownRun);
-    if (runKnown)
+    if (anyOther(readings.runs(), 0) &&
+        std::any_of(sample.rows.begin(), sample.rows.end(), knownRun))
         for (const std::size_t row : sample.rows)
             sample.run.push_back(readings.runs()[row]);
     if (!anyOther(readings.directions(), Direction::Unknown))
@@ -197,6 +208,7 @@ Sample sampleOf(const Record& record, Phase phase, Take take) {
     Sample sample;
     sample.rows = std::move(chosen.rows);
     sample.excluded = chosen.excluded;
+    sample.incomplete = chosen.incomplete;
     sample.referenceUnit = record.item.reference.unit;
     sample.indicationUnit = record.item.indication.unit;
     const CorrectionTable referenceTable = tableOf(record.standards, StandardRole::Reference);

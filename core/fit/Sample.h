@@ -74,6 +74,7 @@ struct Sample {
     std::shared_ptr<const ExactGrids> grids; ///< with ManyReadings on exact grids and no correction to apply
     std::string referenceUnit, indicationUnit;
     std::size_t excluded = 0;      ///< complete readings of the phase that were left out
+    std::size_t incomplete = 0;    ///< readings of the phase without one of the two numbers
     std::vector<Warning> warnings; ///< ColumnNotExact, IncompleteReadings, …
 
     [[nodiscard]] std::size_t size() const { return rows.size(); }

@@ -1,8 +1,12 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/fit/SetPoints.h"
 
+#include "core/base/ClassSums.h"
+#include "core/fit/StreamKernel.h"
+
 #include <algorithm>
 #include <array>
+#include <atomic>
 #include <bit>
 #include <numeric>
 
@@ -58,56 +62,82 @@ class FewValues {
     std::vector<std::int64_t> values_;
 };
 
-/// False, and nothing done that counts, when there are too many set points for it.
-bool groupByFew(Sample& sample, std::span<const std::int64_t> grid, int scale) {
-    FewValues few;
-    std::int64_t before = grid[0];
+/// Numbers the values from `first` to `last` in the order met; false when there are too many different ones.
+bool numberFew(FewValues& few, std::span<const std::int64_t> grid, std::size_t first, std::size_t last, std::vector<std::int32_t>& group) {
+    std::int64_t before = grid[first];
     std::int32_t number = few.numberOf(before);
-    for (std::size_t i = 0; i < grid.size(); ++i) {
+    for (std::size_t i = first; i < last; ++i) {
         if (grid[i] != before) {
             before = grid[i];
             number = few.numberOf(before);
             if (number < 0)
                 return false;
         }
-        sample.group[i] = number;
+        group[i] = number;
     }
-    std::vector<std::int32_t> rising(few.values().size()), rank(few.values().size());
-    std::iota(rising.begin(), rising.end(), 0);
-    const auto value = [&](std::int32_t at) { return few.values()[static_cast<std::size_t>(at)]; };
-    std::sort(rising.begin(), rising.end(), [&](std::int32_t a, std::int32_t b) { return value(a) < value(b); });
-    const GridValue valueOf(scale);
-    for (const std::int32_t at : rising) {
-        rank[static_cast<std::size_t>(at)] = static_cast<std::int32_t>(sample.groupValue.size());
-        sample.groupValue.push_back(valueOf(value(at)));
-    }
-    for (std::int32_t& group : sample.group)
-        group = rank[static_cast<std::size_t>(group)];
     return true;
 }
+
+/// False, and nothing done that counts, when there are too many set points for it.
+bool groupByFew(Sample& sample, std::span<const std::int64_t> grid, int scale) {
+    std::array<FewValues, 2> few;
+    std::atomic<bool> held = true;
+    inHalves(grid.size(), [&](std::size_t first, std::size_t last) {
+        if (!numberFew(few[first == 0 ? 0 : 1], grid, first, last, sample.group))
+            held = false;
+    });
+    std::vector<std::int64_t> rising;
+    for (const FewValues& half : few)
+        rising.insert(rising.end(), half.values().begin(), half.values().end());
+    std::sort(rising.begin(), rising.end());
+    rising.erase(std::unique(rising.begin(), rising.end()), rising.end());
+    if (!held || rising.size() > static_cast<std::size_t>(FewValues::Most))
+        return false;
+    const GridValue valueOf(scale);
+    for (const std::int64_t value : rising)
+        sample.groupValue.push_back(valueOf(value));
+    inHalves(grid.size(), [&](std::size_t first, std::size_t last) {
+        std::vector<std::int32_t> rank;
+        for (const std::int64_t value : few[first == 0 ? 0 : 1].values())
+            rank.push_back(static_cast<std::int32_t>(std::lower_bound(rising.begin(), rising.end(), value) - rising.begin()));
+        if (std::is_sorted(rank.begin(), rank.end()) && rank.back() + 1 == static_cast<std::int32_t>(rank.size()))
+            return; // as numbered
+        for (std::size_t i = first; i < last; ++i)
+            sample.group[i] = rank[static_cast<std::size_t>(sample.group[i])];
+    });
+    return true;
+}
+
+/// Values that occur among 64 neighbours, one bit each.
+struct MapWord {
+    unsigned long values = 0;
+    void operator+=(const MapWord& other) { values |= other.values; }
+};
+static_assert(sizeof(MapWord) == sizeof(std::uint64_t));
 
 /// One bit for each value between the ends, set where a reading has it: the number of bits below is the set point.
 void groupByMap(Sample& sample, std::span<const std::int64_t> grid, int scale, std::int64_t low, std::uint64_t range) {
     const GridValue valueOf(scale);
-    std::vector<std::uint64_t> map(range / 64 + 1, 0);
-    const auto placeOf = [&](std::int64_t m) { return static_cast<std::uint64_t>(m) - static_cast<std::uint64_t>(low); };
-    for (const std::int64_t m : grid)
-        map[placeOf(m) / 64] |= std::uint64_t{1} << (placeOf(m) % 64);
-    std::vector<std::int32_t> below(map.size());
-    std::int32_t count = 0;
-    for (std::size_t word = 0; word < map.size(); ++word) {
-        below[word] = count;
-        count += std::popcount(map[word]);
-    }
-    sample.groupValue.reserve(static_cast<std::size_t>(count));
+    const std::vector<MapWord> map = classSums<MapWord>(grid.size(), range / 64 + 1, [&](std::vector<MapWord>& words, std::size_t first, std::size_t last) {
+        for (std::size_t i = first; i < last; ++i) {
+            const std::uint64_t place = static_cast<std::uint64_t>(grid[i]) - static_cast<std::uint64_t>(low);
+            words[place / 64].values |= 1ul << (place % 64);
+        }
+    });
+    std::vector<std::int32_t> below(map.size() + 1, 0);
     for (std::size_t word = 0; word < map.size(); ++word)
-        for (std::uint64_t left = map[word]; left != 0; left &= left - 1)
-            sample.groupValue.push_back(valueOf(
-                low + static_cast<std::int64_t>(64 * word + static_cast<std::size_t>(std::countr_zero(left)))));
-    for (std::size_t i = 0; i < grid.size(); ++i) {
-        const std::uint64_t place = placeOf(grid[i]), lower = (std::uint64_t{1} << (place % 64)) - 1;
-        sample.group[i] = below[place / 64] + std::popcount(map[place / 64] & lower);
-    }
+        below[word + 1] = below[word] + std::popcount(map[word].values);
+    sample.groupValue.resize(static_cast<std::size_t>(below.back()));
+    auto values = beside(grid.size(), [&] {
+        double* next = sample.groupValue.data();
+        for (std::size_t word = 0; word < map.size(); ++word)
+            for (std::uint64_t left = map[word].values; left != 0; left &= left - 1)
+                *next++ = valueOf(low + static_cast<std::int64_t>(64 * word + static_cast<std::size_t>(std::countr_zero(left))));
+    });
+    inHalves(grid.size(), [&](std::size_t first, std::size_t last) {
+        streamKernel().ranks(asLong(grid.data() + first), last - first, low, &map.front().values, below.data(), sample.group.data() + first);
+    });
+    values.get();
 }
 
 /// Key and row in one number, sorted by digits of the key; the digits of all passes are counted in one.
@@ -182,12 +212,12 @@ void groupByGrid(Sample& sample, std::span<const std::int64_t> grid, int scale) 
         return;
     if (groupByFew(sample, grid, scale))
         return;
-    const auto [low, high] = std::minmax_element(grid.begin(), grid.end());
-    const std::uint64_t range = static_cast<std::uint64_t>(*high) - static_cast<std::uint64_t>(*low) + 1;
+    const auto [low, high] = boundsInHalves(grid.size(), [&](std::size_t i) { return grid[i]; });
+    const std::uint64_t range = static_cast<std::uint64_t>(high) - static_cast<std::uint64_t>(low) + 1;
     if (range - 1 < WidestMap * grid.size())
-        groupByMap(sample, grid, scale, *low, range);
+        groupByMap(sample, grid, scale, low, range);
     else if (const int rowBits = bitsOf(grid.size()), keyBits = bitsOf(range - 1); rowBits + keyBits <= 64)
-        groupByDigits(sample, grid, scale, *low, rowBits, keyBits);
+        groupByDigits(sample, grid, scale, low, rowBits, keyBits);
     else
         groupBySorting(sample, grid, scale);
 }

@@ -8,7 +8,7 @@ namespace spanwright {
 
 const StreamKernel& streamKernel() {
 #ifdef __x86_64__
-    if (__builtin_cpu_supports("avx2"))
+    if (__builtin_cpu_supports("avx2") && __builtin_cpu_supports("popcnt"))
         return avx2::kernel;
 #endif
     return plain::kernel;

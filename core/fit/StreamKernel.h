@@ -1,7 +1,15 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include <cstdint>
+
 namespace spanwright {
+
+/// The kernels know no header, and so no std::int64_t.
+inline const long* asLong(const std::int64_t* m) {
+    static_assert(sizeof(long) == sizeof(std::int64_t));
+    return reinterpret_cast<const long*>(m);
+}
 
 inline constexpr int MostStreamedDegree = 10;
 
@@ -48,6 +56,10 @@ struct StreamKernel {
     void (*elements[MostStreamedDegree + 1])(const StreamBlock&, const double*, const double*, double*, double*);
     /// f, f − factor·u and f + factor·u at every abscissa.
     void (*band[MostStreamedDegree + 1])(const BandBlock&, double*, double*, double*);
+    /// m/divisor of n integers, a multiple of four; holds only if no bit from 2^52 on is set in what it returns.
+    unsigned long (*quotients)(const long*, unsigned long, double, double*);
+    /// For each of n integers m ≥ low, how many bits of a map lie below bit m − low; given how many lie below each word of 64.
+    void (*ranks)(const long*, unsigned long, long, const unsigned long*, const int*, int*);
 };
 
 namespace plain {

@@ -2,9 +2,9 @@
 #include "core/fit/StreamSums.h"
 
 #include "core/base/Decimal.h"
+#include "core/base/Parallel.h"
 
 #include <algorithm>
-#include <thread>
 
 namespace spanwright {
 
@@ -12,12 +12,6 @@ namespace {
 
 constexpr std::size_t BlockSize = 512, ChunkSize = 128 * BlockSize;
 constexpr std::uint64_t WidestGrid = std::uint64_t{1} << 51;
-static_assert(sizeof(long) == sizeof(std::int64_t));
-
-const long* asLong(const std::int64_t* m) {
-    return reinterpret_cast<const long*>(m);
-}
-
 /// The extremes of some readings, enough to place t and v; all of them are known after the first pass.
 StreamRange guessedRange(std::span<const std::int64_t> grid) {
     constexpr std::size_t Looked = 4096;
@@ -81,15 +75,6 @@ DoubleDouble StreamMap::unit() const {
 }
 DoubleDouble StreamMap::v(std::int64_t y) const {
     return toDoubleDouble(y - y0);
-}
-
-void inParallel(unsigned threads, const std::function<void(unsigned)>& part) {
-    std::vector<std::thread> others;
-    for (unsigned which = 1; which < threads; ++which)
-        others.emplace_back(part, which);
-    part(0);
-    for (std::thread& other : others)
-        other.join();
 }
 
 StreamBlock streamBlock(const StreamMap& map, const std::int64_t* x, const std::int64_t* y, std::size_t n) {

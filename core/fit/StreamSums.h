@@ -59,7 +59,4 @@ using BlockSum = std::function<void(const StreamBlock&, double*, std::size_t)>;
 std::vector<DoubleDouble> streamedSums(const StreamMap& map, const GridColumn& x, const GridColumn& y,
                                        std::size_t width, const BlockSum& kernel, unsigned threads);
 
-/// Runs part(0) … part(threads − 1) at the same time.
-void inParallel(unsigned threads, const std::function<void(unsigned)>& part);
-
 } // namespace spanwright

@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/fit/StreamedFit.h"
 
+#include "core/base/Parallel.h"
+
 #include <algorithm>
 #include <cmath>
 
@@ -208,7 +210,9 @@ StreamedRows streamedRows(const StreamedFit& fit, const GridColumn& x, const Gri
                 h[j > k ? j - k : k - j] += half;
             }
     }
-    StreamedRows rows{std::vector<double>(n), std::vector<double>(n)};
+    auto leverage = beside(n, [n] { return std::vector<double>(n); });
+    StreamedRows rows{std::vector<double>(n), {}};
+    rows.leverage = leverage.get();
     const auto kernel = streamKernel().elements[d];
     const auto part = [&](unsigned which) {
         const std::size_t share = (n / threads) & ~std::size_t{3};

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/fit/fitMany.h"
 
+#include "core/base/Parallel.h"
 #include "core/fit/Polynomial.h"
 #include "core/fit/StreamedFit.h"
 #include "core/fit/assembleFit.h"
@@ -97,12 +98,15 @@ std::optional<FitOutcome> fitMany(const Sample& sample, const Choices& choices) 
         return std::nullopt;
 
     FitOutcome outcome{figuresOf(*streamed, *shape, sample, choices), {}, {}};
+    auto fitted = beside(sample.size(), [&] { return std::vector<double>(sample.size()); });
     StreamedRows rows = streamedRows(*streamed, x, y, threads);
     const std::vector<double>& ordinate =
         direction == FitDirection::Indication ? sample.indication.high : sample.reference.high;
-    outcome.residuals.fitted.resize(rows.residual.size());
-    for (std::size_t i = 0; i < rows.residual.size(); ++i)
-        outcome.residuals.fitted[i] = ordinate[i] - rows.residual[i];
+    outcome.residuals.fitted = fitted.get();
+    inHalves(rows.residual.size(), [&](std::size_t first, std::size_t last) {
+        for (std::size_t i = first; i < last; ++i)
+            outcome.residuals.fitted[i] = ordinate[i] - rows.residual[i];
+    });
     outcome.residuals.e.high = std::move(rows.residual);
     outcome.residuals.leverage = std::move(rows.leverage);
     outcome.streamed = std::make_shared<const StreamedFit>(std::move(*streamed));

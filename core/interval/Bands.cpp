@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/interval/Bands.h"
 
+#include "core/base/Parallel.h"
 #include "core/fit/Quantiles.h"
 #include "core/fit/StreamKernel.h"
 #include "core/interval/ToleranceFactor.h"
@@ -139,15 +140,20 @@ BandColumns newReadingBand(const Fit& fit, std::span<const double> x) {
         const double noise = fit.curve->readingVariance(centre);
         const auto at = [&](double t) { return centre + half * t; };
         done = n - n % 4;
-        const BandBlock block{x.data(),
+        const BandBlock whole{x.data(),
                               done,
                               centre,
                               1 / half,
                               evenOdd(*degree, [&](double t) { return fit.curve->value(at(t)); }),
                               evenOdd(2 * *degree, [&](double t) { return fit.curve->variance(at(t)) + noise; }),
                               fit.coverageFactor};
-        streamKernel().band[static_cast<std::size_t>(*degree)](block, band.value.get(), band.low.get(),
-                                                               band.high.get());
+        inHalves(done / 4, [&](std::size_t first, std::size_t last) {
+            BandBlock block = whole;
+            block.x += 4 * first;
+            block.n = 4 * (last - first);
+            streamKernel().band[static_cast<std::size_t>(*degree)](block, band.value.get() + 4 * first, band.low.get() + 4 * first,
+                                                                   band.high.get() + 4 * first);
+        });
     }
     for (std::size_t i = done; i < n; ++i) {
         const BandPoint point = bandWith(fit, x[i], 0.0);

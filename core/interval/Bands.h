@@ -48,7 +48,7 @@ struct BandColumns {
 };
 
 /// For polynomials with the same noise everywhere, value and variance are polynomials: found once from values at the
-/// Chebyshev points, then one recurrence a point. Other functions are asked point by point.
+/// Chebyshev points, then a few multiplications a point, of very many in two threads. Other functions are asked point by point.
 BandColumns newReadingBand(const Fit& fit, std::span<const double> x);
 
 } // namespace spanwright

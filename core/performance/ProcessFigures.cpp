@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/performance/ProcessFigures.h"
 
+#include "core/base/ClassSums.h"
 #include "core/performance/StraightLines.h"
 
 #include <array>
@@ -36,6 +37,12 @@ struct Spread {
         sum += e;
         least = std::min(least, e);
         most = std::max(most, e);
+    }
+    void operator+=(const Spread& other) {
+        n += other.n;
+        sum += other.sum;
+        least = std::min(least, other.least);
+        most = std::max(most, other.most);
     }
     [[nodiscard]] double mean() const { return sum / static_cast<double>(n); }
 };
@@ -108,27 +115,40 @@ Ideal idealOf(const Sample& sample, const Item& item) {
     return ideal;
 }
 
+/// Of a set point, by direction.
+struct Spreads : std::array<Spread, 3> {
+    void operator+=(const Spreads& other) {
+        for (std::size_t d = 0; d < size(); ++d)
+            (*this)[d] += other[d];
+    }
+};
+
 /// Errors of a sample by set point and direction.
 struct Errors {
-    std::vector<std::array<Spread, 3>> at;                                        ///< by set point, by direction
+    std::vector<Spreads> at;                                                      ///< by set point
     std::map<std::pair<std::int32_t, std::int32_t>, std::array<Spread, 3>> inRun; ///< by (set point, run)
 };
 
 Errors errorsOf(const Sample& sample, const Ideal& ideal) {
+    const auto exactError = [&](std::size_t i) { return toDouble(sample.indication[i] - (ideal.intercept + ideal.slope * sample.reference[i])); };
+    const auto plainError = [&, intercept = toDouble(ideal.intercept), slope = toDouble(ideal.slope)](std::size_t i) {
+        return sample.indication.high[i] - (intercept + slope * sample.reference.high[i]);
+    };
+    const auto directionOf = [&](std::size_t i) {
+        return sample.direction.empty() ? std::size_t{0} : static_cast<std::size_t>(sample.direction[i]);
+    };
+    const auto spreadsOf = [&](const auto& errorOf) {
+        return classSums<Spreads>(sample.size(), sample.groupValue.size(), [&](std::vector<Spreads>& spreads, std::size_t first, std::size_t last) {
+            for (std::size_t i = first; i < last; ++i)
+                spreads[static_cast<std::size_t>(sample.group[i])][directionOf(i)].add(errorOf(i));
+        });
+    };
     Errors errors;
-    errors.at.resize(sample.groupValue.size());
     const bool doubles = sample.reference.low.empty() && sample.indication.low.empty();
-    const double intercept = toDouble(ideal.intercept), slope = toDouble(ideal.slope);
+    errors.at = doubles ? spreadsOf(plainError) : spreadsOf(exactError);
     const bool byRun = !sample.direction.empty() && sample.size() <= 100'000;
-    for (std::size_t i = 0; i < sample.size(); ++i) {
-        const double e = doubles
-                             ? sample.indication.high[i] - (intercept + slope * sample.reference.high[i])
-                             : toDouble(sample.indication[i] - (ideal.intercept + ideal.slope * sample.reference[i]));
-        const auto d = sample.direction.empty() ? std::size_t{0} : static_cast<std::size_t>(sample.direction[i]);
-        errors.at[static_cast<std::size_t>(sample.group[i])][d].add(e);
-        if (byRun)
-            errors.inRun[{sample.group[i], sample.run.empty() ? 0 : sample.run[i]}][d].add(e);
-    }
+    for (std::size_t i = 0; byRun && i < sample.size(); ++i)
+        errors.inRun[{sample.group[i], sample.run.empty() ? 0 : sample.run[i]}][directionOf(i)].add(exactError(i));
     return errors;
 }
 

@@ -3,6 +3,7 @@
 
 #include <algorithm>
 #include <cassert>
+#include <cstring>
 
 namespace spanwright {
 
@@ -39,6 +40,11 @@ void extend(std::vector<T>& column, const std::vector<T>& block, std::size_t n, 
 }
 
 } // namespace
+
+bool ReadingColumns::anyIn(Phase phase) const {
+    static_assert(sizeof(Phase) == 1);
+    return !phases_.empty() && std::memchr(phases_.data(), static_cast<int>(phase), phases_.size()) != nullptr;
+}
 
 void ReadingColumns::reserve(std::size_t n) {
     ids_.reserve(n);

@@ -76,6 +76,8 @@ class ReadingColumns {
     [[nodiscard]] const std::vector<std::int64_t>& enteredAt() const { return enteredAt_; }
     [[nodiscard]] const std::string& enteredBy(std::size_t row) const { return people_[enteredBy_[row]]; }
 
+    /// Whether any reading is of the phase.
+    [[nodiscard]] bool anyIn(Phase phase) const;
     /// Whether reference and indication are both there.
     [[nodiscard]] bool complete(std::size_t row) const { return reference_.has(row) && indication_.has(row); }
 

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/split/NoiseChain.h"
 
+#include "core/base/ClassSums.h"
 #include "core/split/RunSystem.h"
 
 #include <algorithm>
@@ -48,9 +49,16 @@ void findCells(const Sample& sample, Places& places, NoiseChain& chain) {
         places.cell = sample.group;
         return;
     }
-    std::vector<std::array<std::int32_t, 3>> seen(groups, {0, 0, 0});
-    for (std::size_t i = 0; i < n; ++i)
-        ++seen[static_cast<std::size_t>(sample.group[i])][directionOf(sample, i)];
+    struct Seen : std::array<std::int32_t, 3> {
+        void operator+=(const Seen& other) {
+            for (std::size_t d = 0; d < size(); ++d)
+                (*this)[d] += other[d];
+        }
+    };
+    const std::vector<Seen> seen = classSums<Seen>(n, groups, [&](std::vector<Seen>& sums, std::size_t first, std::size_t last) {
+        for (std::size_t i = first; i < last; ++i)
+            ++sums[static_cast<std::size_t>(sample.group[i])][directionOf(sample, i)];
+    });
     std::vector<std::array<std::int32_t, 3>> cellOf(groups, {-1, -1, -1});
     for (std::size_t g = 0; g < groups; ++g) {
         const bool both = seen[g][1] > 0 && seen[g][2] > 0;
@@ -104,40 +112,66 @@ Places findPlaces(const Sample& sample, NoiseChain& chain) {
     return places;
 }
 
+/// Weight of a class of readings and their weighted mean.
 template <class T>
-struct Sums {
-    std::vector<T> weight, mean;
+struct ClassMean {
+    T weight = T(0.0), mean = T(0.0);
+    void operator+=(const ClassMean& other) {
+        weight += other.weight;
+        mean += other.mean;
+    }
 };
 
-/// Weighted means of e in the classes named by `of`, second pass included: the mean of what the first one left.
+/// Weighted means of e in the classes named by `of`.
 template <class T>
-Sums<T> meansOf(std::span<const std::int32_t> of, std::size_t classes, std::span<const T> e, std::span<const T> w) {
-    Sums<T> sums{std::vector<T>(classes, T(0.0)), std::vector<T>(classes, T(0.0))};
-    for (std::size_t i = 0; i < e.size(); ++i) {
-        const auto c = static_cast<std::size_t>(of[i]);
-        if (w.empty()) {
-            sums.weight[c] += 1.0;
-            sums.mean[c] += e[i];
-        } else {
-            sums.weight[c] += w[i];
-            sums.mean[c] += w[i] * e[i];
-        }
+std::vector<ClassMean<T>> meansOf(std::span<const std::int32_t> of, std::size_t classes, std::span<const T> e, std::span<const T> w) {
+    auto means = classSums<ClassMean<T>>(e.size(), classes, [&](std::vector<ClassMean<T>>& sums, std::size_t first, std::size_t last) {
+        for (std::size_t i = first; i < last; ++i)
+            sums[static_cast<std::size_t>(of[i])] += w.empty() ? ClassMean<T>{T(1.0), e[i]} : ClassMean<T>{w[i], w[i] * e[i]};
+    });
+    for (ClassMean<T>& one : means)
+        if (plain(one.weight) > 0)
+            one.mean /= one.weight;
+    return means;
+}
+
+/// Σ w d(i)² over all readings.
+template <class T, class Distance>
+T squaresOf(std::span<const T> w, std::size_t n, Distance&& d) {
+    const auto square = [&](std::size_t i) {
+        const T distance = d(i);
+        return w.empty() ? distance * distance : w[i] * distance * distance;
+    };
+    if constexpr (std::is_same_v<T, double>) {
+        return sumInHalves<1>(n, [&](std::size_t i) -> std::array<double, 1> { return {square(i)}; })[0];
+    } else {
+        T sum(0.0);
+        for (std::size_t i = 0; i < n; ++i)
+            sum += square(i);
+        return sum;
     }
-    for (std::size_t c = 0; c < classes; ++c)
-        if (plain(sums.weight[c]) > 0)
-            sums.mean[c] /= sums.weight[c];
-    return sums;
 }
 
 template <class T>
-T squaresAbout(std::span<const std::int32_t> of, const std::vector<T>& mean, std::span<const T> e,
-               std::span<const T> w) {
-    T sum(0.0);
-    for (std::size_t i = 0; i < e.size(); ++i) {
-        const T d = e[i] - mean[static_cast<std::size_t>(of[i])];
-        sum += w.empty() ? d * d : w[i] * d * d;
+T squaresAbout(std::span<const std::int32_t> of, const std::vector<ClassMean<T>>& means, std::span<const T> e, std::span<const T> w) {
+    return squaresOf(w, e.size(), [&](std::size_t i) { return e[i] - means[static_cast<std::size_t>(of[i])].mean; });
+}
+
+/// Σ w (e − mean)² with all = Σ w e². Of very many set points of a few readings each the sums tell it, where that costs six bits at
+/// most, without looking up every mean again.
+template <class T>
+DoubleDouble squaresWithin(std::span<const std::int32_t> of, const std::vector<ClassMean<T>>& means, const DoubleDouble& all,
+                           std::span<const T> e, std::span<const T> w) {
+    if constexpr (std::is_same_v<T, double>) {
+        if (means.size() > mostListedCells) {
+            const auto between = sumInHalves<1>(means.size(), [&](std::size_t c) -> std::array<double, 1> {
+                return {means[c].weight * means[c].mean * means[c].mean};
+            });
+            if (const DoubleDouble within = all - between[0]; within > all / 64)
+                return within;
+        }
     }
-    return sum;
+    return squaresAbout<T>(of, means, e, w);
 }
 
 template <class T>
@@ -150,7 +184,7 @@ struct CellRunSums {
 /// Readings in order of cell (counting sort), then the sums for each run inside each cell.
 template <class T, class Use>
 void eachCell(const NoiseChain& chain, const Places& places, std::span<const T> e, std::span<const T> w,
-              const std::vector<T>& mean, Use&& use) {
+              const std::vector<ClassMean<T>>& means, Use&& use) {
     const std::size_t cells = chain.cells.size();
     std::vector<std::size_t> begin(cells + 1, 0);
     for (const std::int32_t c : places.cell)
@@ -177,7 +211,7 @@ void eachCell(const NoiseChain& chain, const Places& places, std::span<const T> 
             const T weight = w.empty() ? T(1.0) : w[i];
             ++at.n;
             at.weight += weight;
-            at.sum += weight * (e[i] - mean[c]);
+            at.sum += weight * (e[i] - means[c].mean);
         }
         for (const auto& run : runs)
             slot[static_cast<std::size_t>(run.run)] = -1;
@@ -197,21 +231,21 @@ Range rangeOf(const Sample& sample) {
 
 template <class T>
 void addRuns(const Sample& sample, const Places& places, std::span<const T> e, std::span<const T> w,
-             const Sums<T>& cellSums, NoiseChain& chain) {
+             const std::vector<ClassMean<T>>& means, NoiseChain& chain) {
     const std::size_t runs = chain.runs;
     const Range range = rangeOf(sample);
     std::vector<RunInCell<T>> rows;
     std::vector<std::size_t> count(runs, 0);
     chain.cellRuns.reserve(std::min(chain.readings, chain.cells.size() * runs));
     std::size_t first = 0;
-    eachCell<T>(chain, places, e, w, cellSums.mean, [&](std::size_t c, const std::vector<CellRunSums<T>>& inside) {
+    eachCell<T>(chain, places, e, w, means, [&](std::size_t c, const std::vector<CellRunSums<T>>& inside) {
         const T x = (T(sample.groupValue[static_cast<std::size_t>(chain.cells[c].group)]) - range.middle) / range.half;
         for (const auto& one : inside) {
             const auto r = static_cast<std::size_t>(one.run);
             count[r] += one.n;
             rows.push_back({c, r, x, one.weight, one.sum});
             chain.cellRuns.push_back({static_cast<std::int32_t>(c), one.run, one.n, plain(one.weight),
-                                      plain(cellSums.mean[c] + one.sum / one.weight)});
+                                      plain(means[c].mean + one.sum / one.weight)});
         }
         const std::size_t expected = chain.cellRuns.front().n;
         if (first == 0)
@@ -262,23 +296,27 @@ double runInContrast(const NoiseChain& chain) {
 template <class T>
 void build(const Sample& sample, std::span<const T> e, std::span<const T> w, NoiseChain& chain) {
     const Places places = findPlaces(sample, chain);
-    T all(0.0);
-    for (std::size_t i = 0; i < e.size(); ++i)
-        all += w.empty() ? e[i] * e[i] : w[i] * e[i] * e[i];
-    chain.s1 = all;
-    const Sums<T> groups = meansOf<T>(sample.group, sample.groupValue.size(), e, w);
-    chain.s2 = squaresAbout<T>(sample.group, groups.mean, e, w);
+    if constexpr (std::is_same_v<T, double>)
+        chain.s1 = sumInHalves<1>(e.size(), [&](auto i) {
+            const auto square = at(e.data(), i) * at(e.data(), i);
+            return std::array{w.empty() ? square : at(w.data(), i) * square};
+        })[0];
+    else
+        chain.s1 = squaresOf(w, e.size(), [&](std::size_t i) { return e[i]; });
+    const std::vector<ClassMean<T>> groups = meansOf<T>(sample.group, sample.groupValue.size(), e, w);
+    chain.s2 = squaresWithin<T>(sample.group, groups, chain.s1, e, w);
     const bool divided = !places.ownCell.empty();
-    const Sums<T> cells = divided ? meansOf<T>(places.cell, chain.cells.size(), e, w) : groups;
-    chain.s3 = divided ? DoubleDouble(squaresAbout<T>(places.cell, cells.mean, e, w)) : chain.s2;
+    const std::vector<ClassMean<T>> own = divided ? meansOf<T>(places.cell, chain.cells.size(), e, w) : std::vector<ClassMean<T>>{};
+    const std::vector<ClassMean<T>>& cells = divided ? own : groups;
+    chain.s3 = divided ? DoubleDouble(squaresAbout<T>(places.cell, cells, e, w)) : chain.s2;
     chain.s4 = chain.s5 = chain.s3;
 
     for (std::size_t c = 0; c < chain.cells.size(); ++c) {
         NoiseChain::Cell& cell = chain.cells[c];
-        cell.weight = plain(cells.weight[c]);
-        cell.mean = plain(cells.mean[c]);
+        cell.weight = plain(cells[c].weight);
+        cell.mean = plain(cells[c].mean);
         chain.balanced = chain.balanced && cell.n == chain.cells.front().n;
-        const double whole = plain(groups.weight[static_cast<std::size_t>(cell.group)]);
+        const double whole = plain(groups[static_cast<std::size_t>(cell.group)].weight);
         chain.contrastWeight += cell.weight - cell.weight * cell.weight / whole;
     }
     chain.balanced = chain.balanced && (chain.contrasts == 0 || chain.contrasts == chain.setPoints);

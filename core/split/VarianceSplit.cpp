@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/split/VarianceSplit.h"
 
+#include "core/base/ClassSums.h"
 #include "core/fit/Quantiles.h"
 #include "core/split/AdjustedLackOfFit.h"
 #include "core/split/NoiseChain.h"
@@ -128,20 +129,12 @@ double meanVarianceOfReading(const Residuals& residuals) {
 
 double roundingSquares(const Residuals& residuals) {
     const std::vector<double>& fitted = residuals.fitted;
-    // In four lanes: a chain of maxima waits for itself.
-    std::array<double, 4> largest{};
-    std::size_t i = 0;
-    for (; i + largest.size() <= fitted.size(); i += largest.size()) {
-#pragma GCC unroll 4
-        for (std::size_t lane = 0; lane < largest.size(); ++lane)
-            largest[lane] = std::max(largest[lane], std::abs(fitted[i + lane]));
-    }
-    for (; i < fitted.size(); ++i)
-        largest[0] = std::max(largest[0], std::abs(fitted[i]));
+    const Bounds<double> bounds = fitted.empty() ? Bounds<double>{} : boundsInHalves(fitted.size(), [column = fitted.data()](auto i) { return at(column, i); });
+    const double largest = std::max(-bounds.low, bounds.high);
     double weight = residuals.weight.empty() ? 1 : 0;
     for (const double w : residuals.weight.high)
         weight = std::max(weight, w);
-    const double unit = *std::max_element(largest.begin(), largest.end()) *
+    const double unit = largest *
                         (residuals.e.low.empty() ? 4 * 2.2e-16 : 64 * 1.3e-32);
     return static_cast<double>(residuals.e.size()) * weight * unit * unit;
 }

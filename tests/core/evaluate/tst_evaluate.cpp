@@ -1,7 +1,9 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include "core/diagnose/Findings.h"
 #include "core/evaluate/Dates.h"
 #include "core/evaluate/KeyFigures.h"
 #include "core/evaluate/evaluate.h"
+#include "core/fit/fitFunction.h"
 #include "tests/support/PublishedSet.h"
 #include "tests/support/SampleRecord.h"
 
@@ -49,6 +51,8 @@ class TestEvaluate : public QObject {
     void anExcludedReadingIsMeasuredFromTheFunctionFittedWithoutIt();
     void whatExcludingDidIsTheFitOverAllReadings();
     void veryManyReadingsAreTakenBackInFromTheirSums();
+    void veryManyReadingsAreExaminedAsFewAre_data();
+    void veryManyReadingsAreExaminedAsFewAre();
     void aReadingWithoutIndicationTakesNoPart();
     void figuresByHand();
     void answersStandInTheOrderAsked();
@@ -149,6 +153,94 @@ void TestEvaluate::veryManyReadingsAreTakenBackInFromTheirSums() {
     }
     QVERIFY(std::abs(without.residualSd / fit.residualSd - 1) < 1e-11);
     QVERIFY(without.residualSd != asFound(less).fit->residualSd);
+}
+
+void TestEvaluate::veryManyReadingsAreExaminedAsFewAre_data() {
+    QTest::addColumn<int>("references");
+    QTest::addColumn<bool>("named");
+    QTest::newRow("eleven set points") << 11 << false;
+    QTest::newRow("eleven set points in runs, rising and falling") << 11 << true;
+    QTest::newRow("references that nearly all differ") << 10'000'000 << false;
+}
+
+void TestEvaluate::veryManyReadingsAreExaminedAsFewAre() {
+    QFETCH(int, references);
+    QFETCH(bool, named);
+    std::mt19937_64 random(7);
+    std::normal_distribution<double> noise(0, 20);
+    ReadingColumns::Block block;
+    block.n = ManyReadings + 51;
+    for (std::size_t i = 0; i < block.n; ++i) {
+        const std::int64_t step = 10'000'000 / references;
+        const auto x = static_cast<std::int64_t>(random() % static_cast<std::uint64_t>(references)) * step;
+        block.reference.push_back(Decimal{x, 6, {}});
+        const double bent = static_cast<double>(x) * static_cast<double>(x) * 2e-13 + (i < 3 ? 150 : 0);
+        block.indication.push_back(Decimal{40'000 + x * 16 / 1000 + static_cast<std::int64_t>(bent + noise(random)), 4, {}});
+        if (named) {
+            block.runs.push_back(static_cast<std::int32_t>(1 + 7 * i / block.n));
+            block.directions.push_back(random() % 2 == 0 ? Direction::Rising : Direction::Falling);
+        }
+    }
+    Record record;
+    record.readings.edit().appendBlock(std::move(block), 1);
+    const Evaluation evaluation = evaluated(record);
+    const PhaseEvaluation& found = asFound(evaluation);
+
+    // The same steps with every number in double-double, in one thread.
+    const Sample exact = withExactColumns(makeSample(record, Phase::AsFound));
+    const auto fitted = fitFunction(exact, record.choices);
+    QVERIFY(bool(fitted));
+    const auto same = [](double a, double b) { return std::abs(a - b) <= 1e-8 * std::abs(b); };
+    const VarianceSplit split = splitVariance(exact, fitted->residuals, fitted->fit);
+    for (const auto row : {&VarianceSplit::lackOfFit, &VarianceSplit::pureError, &VarianceSplit::hysteresis, &VarianceSplit::runOffset,
+                           &VarianceSplit::runSlope, &VarianceSplit::repeatability}) {
+        QCOMPARE(((*found.split).*row).has_value(), (split.*row).has_value());
+        if (!(split.*row))
+            continue;
+        QCOMPARE(((*found.split).*row)->df, (split.*row)->df);
+        QVERIFY(same(((*found.split).*row)->ss, (split.*row)->ss));
+    }
+    const Diagnostics tests = diagnose(exact, fitted->residuals, fitted->fit, {record.readings->ids(), 0, 0.05});
+    const Diagnostics& many = *found.diagnostics;
+    QVERIFY(same(*many.durbinWatson, *tests.durbinWatson));
+    QVERIFY(std::abs(*many.lag1Autocorrelation - *tests.lag1Autocorrelation) < 1e-10);
+    QVERIFY(same(many.linearity->statistic, tests.linearity->statistic));
+    QVERIFY(same(many.breuschPagan->statistic, tests.breuschPagan->statistic));
+    QCOMPARE(many.levene.has_value(), tests.levene.has_value());
+    if (tests.levene) {
+        QVERIFY(same(many.levene->statistic, tests.levene->statistic));
+        QVERIFY(same(many.bartlett->statistic, tests.bartlett->statistic));
+    }
+    QCOMPARE(many.esd.size(), tests.esd.size());
+    for (std::size_t k = 0; k < tests.esd.size(); ++k) {
+        QCOMPARE(many.esd[k].row, tests.esd[k].row);
+        QVERIFY(same(many.esd[k].r, tests.esd[k].r));
+    }
+    const auto performance = processFigures(exact, record.item);
+    QCOMPARE(found.performance.has_value(), performance.has_value());
+    if (performance) {
+        QVERIFY(same(found.performance->measuredErrorMax->value, performance->measuredErrorMax->value));
+        QVERIFY(same(found.performance->inaccuracyLow->value, performance->inaccuracyLow->value));
+        QVERIFY(same(found.performance->nonRepeatability->value, performance->nonRepeatability->value));
+    }
+    FindingsInput input{record, Phase::AsFound, exact};
+    input.fit = &fitted->fit;
+    input.residuals = &fitted->residuals;
+    input.split = &split;
+    input.diagnostics = &tests;
+    input.performance = performance ? &*performance : nullptr;
+    const std::vector<Finding> expected = findings(input);
+    QCOMPARE(found.findings.size(), expected.size());
+    for (std::size_t k = 0; k < expected.size(); ++k) {
+        QVERIFY(found.findings[k].code == expected[k].code);
+        QCOMPARE(found.findings[k].rows, expected[k].rows);
+    }
+    for (std::size_t i = 0; i < exact.size(); i += 4999) {
+        QCOMPARE(found.rows.ids[i], record.readings->ids()[i]);
+        QVERIFY(std::abs(found.rows.residual[i] - fitted->residuals.e.high[i]) < 1e-12);
+        QVERIFY(same(found.rows.leverage[i], fitted->residuals.leverage[i]));
+        QVERIFY(same(found.rows.fitted[i], fitted->residuals.fitted[i]));
+    }
 }
 
 void TestEvaluate::aReadingWithoutIndicationTakesNoPart() {
