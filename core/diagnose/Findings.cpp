@@ -7,6 +7,7 @@
 #include <algorithm>
 #include <array>
 #include <cmath>
+#include <iterator>
 
 namespace spanwright {
 namespace {
@@ -125,13 +126,18 @@ bool contains(const std::vector<Finding>& found, FindingCode code) {
 std::vector<Finding> findings(const FindingsInput& input) {
     std::vector<Finding> found;
     if (input.fit && input.residuals) {
+        auto plateaus = beside(input.sample.size(), [&] {
+            std::vector<Finding> own;
+            addPlateauFindings(input, own);
+            return own;
+        });
         addFunctionFindings(input, found);
         addRunFindings(input, found);
         const std::vector<double> deviations = repeatabilityDeviations(input);
         addReadingFindings(input, deviations, found);
         addScatterFindings(input, deviations, found);
         addWeightFindings(input, found);
-        addPlateauFindings(input, found);
+        std::ranges::move(plateaus.get(), std::back_inserter(found));
     }
     if (input.fit)
         addStatedFindings(*input.fit, found);

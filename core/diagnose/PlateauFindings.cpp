@@ -13,22 +13,23 @@ constexpr std::size_t leastOnTheWay = 3;   ///< readings in a row; fewer may hav
 constexpr std::size_t mostBetween = 1000;  ///< readings named
 
 struct Plateaus {
-    std::size_t count = 0;
-    std::vector<std::size_t> between; ///< readings on the way from one to the next
+    std::size_t count = 0, between = 0; ///< and the readings on the way from one to the next,
+    std::vector<std::size_t> first;     ///< of which these come first
 
     void addBetween(std::size_t begin, std::size_t end) {
-        for (std::size_t i = begin; end - begin >= leastOnTheWay && i < end; ++i)
-            between.push_back(i);
+        if (end - begin < leastOnTheWay)
+            return;
+        between += end - begin;
+        for (std::size_t i = begin; i < end && first.size() < mostBetween; ++i)
+            first.push_back(i);
     }
 };
 
-/// Stretches of at least ten neighbours whose references stay within 1 % of the range.
-Plateaus plateausIn(const std::vector<double>& reference) {
-    const auto [low, high] = std::minmax_element(reference.begin(), reference.end());
-    const double width = widthOfPlateau * (*high - *low);
+/// Stretches of at least ten neighbours whose references stay within `width`; sought until half of the readings lie on the way.
+Plateaus plateausIn(const std::vector<double>& reference, double width) {
     Plateaus plateaus;
     std::size_t left = 0; // where the last plateau was left
-    for (std::size_t begin = 0; begin < reference.size();) {
+    for (std::size_t begin = 0; begin < reference.size() && 2 * (plateaus.between + begin - left) <= reference.size();) {
         double least = reference[begin], most = least;
         std::size_t end = begin + 1;
         for (; end < reference.size(); ++end) {
@@ -61,16 +62,17 @@ void addPlateauFindings(const FindingsInput& input, std::vector<Finding>& found)
     const std::vector<double>& reference = input.sample.reference.high;
     if (setPoint.missing() < setPoint.size() || reference.size() < 3 * leastOnPlateau || input.fit->function.family == FunctionFamily::Constant)
         return;
-    const Plateaus plateaus = plateausIn(reference);
-    if (plateaus.count < 3 || 2 * plateaus.between.size() > reference.size() || 50 * plateaus.between.size() < reference.size())
+    // Where no set point is stated, each reference is one, and they stand in rising order.
+    const double range = input.sample.groupValue.back() - input.sample.groupValue.front();
+    const Plateaus plateaus = plateausIn(reference, widthOfPlateau * range);
+    if (plateaus.count < 3 || 2 * plateaus.between > reference.size() || 50 * plateaus.between < reference.size())
         return;
     Finding finding;
     finding.code = FindingCode::BetweenPlateaus;
     finding.severity = Severity::Serious;
-    finding.figures = {{"count", static_cast<double>(plateaus.between.size())}, {"plateaus", static_cast<double>(plateaus.count)}};
-    for (const std::size_t i : plateaus.between)
-        if (finding.rows.size() < mostBetween)
-            finding.rows.push_back(idOf(input, i));
+    finding.figures = {{"count", static_cast<double>(plateaus.between)}, {"plateaus", static_cast<double>(plateaus.count)}};
+    for (const std::size_t i : plateaus.first)
+        finding.rows.push_back(idOf(input, i));
     finding.remedy = Remedy::SeeReadings;
     found.push_back(finding);
 }

@@ -7,11 +7,13 @@
 #include "tests/support/SampleRecord.h"
 
 #include <algorithm>
+#include <chrono>
 #include <cstdio>
 #include <cstdlib>
 #include <ctime>
 #include <functional>
 #include <random>
+#include <thread>
 
 using namespace spanwright;
 using test::processorSeconds;
@@ -44,6 +46,23 @@ void evaluateOnce(const Record& record) {
         std::abort();
 }
 
+/// Longest wait, in seconds, until an evaluation is gone that is cancelled at ten moments of its course.
+double longestCancel(const Record& record, double whole) {
+    double longest = 0;
+    for (int tenth = 0; tenth < 10; ++tenth) {
+        Progress progress;
+        std::thread other([&] { (void)evaluate(record, progress); });
+        std::this_thread::sleep_for(std::chrono::duration<double>(whole * tenth / 10));
+        longest = std::max(longest, wallSeconds(
+                                        [&] {
+                                            progress.cancel();
+                                            other.join();
+                                        },
+                                        1));
+    }
+    return longest;
+}
+
 volatile std::int64_t sink = 0;
 
 void compare(const char* what, References references) {
@@ -60,9 +79,10 @@ void compare(const char* what, References references) {
         51);
     const double whole = processorSeconds([&] { evaluateOnce(record); }, 9);
     const double felt = wallSeconds([&] { evaluateOnce(record); }, 9);
+    const double cancelled = longestCancel(record, felt);
     std::printf("evaluate() of a line on 10^6 readings, %s: %.1f ms of processor, %.0f times summing the two columns "
-                "(%.2f ms); %.1f ms until it is there, %.0f times\n",
-                what, whole * 1e3, whole / sum, sum * 1e3, felt * 1e3, felt / sum);
+                "(%.2f ms); %.1f ms until it is there, %.0f times; gone at most %.1f ms after it is cancelled\n",
+                what, whole * 1e3, whole / sum, sum * 1e3, felt * 1e3, felt / sum, cancelled * 1e3);
 }
 
 } // namespace
