@@ -44,11 +44,10 @@ std::vector<ExtremeTrial> cleanedTrials(const FindingsInput& input, const std::v
 
 /// The furthest residuals one after the other; the diagnostics hold them unless fewer were asked for there.
 std::vector<ExtremeTrial> residualTrials(const FindingsInput& input, int most) {
-    const std::vector<std::size_t>& rows = input.sample.rows;
     std::vector<ExtremeTrial> trials;
     if (input.diagnostics && input.diagnostics->esd.size() >= static_cast<std::size_t>(most)) {
         for (const OutlierTrial& trial : std::span(input.diagnostics->esd).first(static_cast<std::size_t>(most)))
-            trials.push_back({static_cast<std::size_t>(std::lower_bound(rows.begin(), rows.end(), trial.row - 1) - rows.begin()), trial.r, trial.lambda});
+            trials.push_back({input.sample.rows.indexOf(trial.row - 1), trial.r, trial.lambda});
         return trials;
     }
     if (input.residuals->weight.empty())

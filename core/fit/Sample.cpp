@@ -60,7 +60,7 @@ void warnInexact(Sample& sample, const DecimalColumn& column, const char* name) 
 }
 
 /// A stated uncertainty of every reading, or an empty column.
-PairColumn statedFor(const DecimalColumn& column, const std::vector<std::size_t>& rows) {
+PairColumn statedFor(const DecimalColumn& column, const RowList& rows) {
     PairColumn stated;
     if (column.missing() == column.size())
         return stated;
@@ -70,7 +70,7 @@ PairColumn statedFor(const DecimalColumn& column, const std::vector<std::size_t>
 }
 
 struct Chosen {
-    std::vector<std::size_t> rows;
+    RowList rows;
     std::size_t excluded = 0, incomplete = 0;
 };
 
@@ -88,11 +88,7 @@ Chosen chooseRows(const Record& record, Phase phase, Take take) {
     const auto& excluded = record.exclusions->all();
     Chosen chosen;
     if (allComplete && (excluded.empty() || take == Take::ExcludedToo) && !anyOther(readings.phases(), phase)) {
-        chosen.rows.resize(readings.size());
-        inHalves(chosen.rows.size(), [&](std::size_t first, std::size_t last) {
-            for (std::size_t row = first; row < last; ++row)
-                chosen.rows[row] = row;
-        });
+        chosen.rows = RowList::all(readings.size());
         return chosen;
     }
     chosen.rows.reserve(readings.size());
@@ -115,7 +111,7 @@ Chosen chooseRows(const Record& record, Phase phase, Take take) {
 }
 
 /// A column of `rows` on its grid: the column itself when every row counts, else kept in `kept`.
-std::span<const std::int64_t> gridOf(const DecimalColumn& column, const std::vector<std::size_t>& rows,
+std::span<const std::int64_t> gridOf(const DecimalColumn& column, const RowList& rows,
                                      std::vector<std::int64_t>& kept) {
     if (rows.size() == column.size())
         return column.grid();
@@ -187,19 +183,20 @@ void fillFew(Sample& sample, const Record& record, const CorrectionTable& refere
 }
 
 void fillPlaces(Sample& sample, const ReadingColumns& readings) {
-    const auto knownRun = [&](std::size_t row) { return readings.runs()[row] != 0; };
-    if (anyOther(readings.runs(), 0) &&
-        std::any_of(sample.rows.begin(), sample.rows.end(), knownRun))
-        for (const std::size_t row : sample.rows)
-            sample.run.push_back(readings.runs()[row]);
-    if (!anyOther(readings.directions(), Direction::Unknown))
-        return;
-    bool directionKnown = false;
-    for (const std::size_t row : sample.rows)
-        directionKnown = directionKnown || readings.directions()[row] != Direction::Unknown;
-    if (directionKnown)
-        for (const std::size_t row : sample.rows)
-            sample.direction.push_back(readings.directions()[row]);
+    // Of many readings mostly none has a run or a direction, which is seen soonest in the whole column.
+    const auto take = [&](const auto& column, auto unknown, auto& taken) {
+        if (!anyOther(column, unknown))
+            return;
+        bool known = false;
+        for (const std::size_t row : sample.rows) {
+            taken.push_back(column[row]);
+            known = known || column[row] != unknown;
+        }
+        if (!known)
+            taken.clear();
+    };
+    take(readings.runs(), std::int32_t{0}, sample.run);
+    take(readings.directions(), Direction::Unknown, sample.direction);
 }
 
 Sample sampleOf(const Record& record, Phase phase, Take take) {

@@ -5,6 +5,7 @@
 #include "core/base/Warning.h"
 #include "core/record/Record.h"
 
+#include <algorithm>
 #include <cstdint>
 #include <memory>
 #include <span>
@@ -58,10 +59,48 @@ struct SharedTerm {
     DoubleDouble u = 0.0;
 };
 
+/// Rows of readings in ReadingColumns, rising: all of them, which takes no memory, or those listed.
+class RowList {
+  public:
+    static RowList all(std::size_t rows) {
+        RowList list;
+        list.all_ = rows;
+        return list;
+    }
+    [[nodiscard]] std::size_t size() const { return listed_.empty() ? all_ : listed_.size(); }
+    [[nodiscard]] std::size_t operator[](std::size_t i) const { return listed_.empty() ? i : listed_[i]; }
+    /// Reading in that row; size() when there is none. O(log n).
+    [[nodiscard]] std::size_t indexOf(std::size_t row) const {
+        if (listed_.empty())
+            return row < all_ ? row : all_;
+        const auto found = std::lower_bound(listed_.begin(), listed_.end(), row);
+        return found != listed_.end() && *found == row ? static_cast<std::size_t>(found - listed_.begin()) : listed_.size();
+    }
+    /// One after the other, for loops.
+    struct Step {
+        const RowList* list;
+        std::size_t i;
+        std::size_t operator*() const { return (*list)[i]; }
+        Step& operator++() {
+            ++i;
+            return *this;
+        }
+        bool operator==(const Step&) const = default;
+    };
+    [[nodiscard]] Step begin() const { return {this, 0}; }
+    [[nodiscard]] Step end() const { return {this, size()}; }
+    void reserve(std::size_t rows) { listed_.reserve(rows); }
+    void push_back(std::size_t row) { listed_.push_back(row); }
+
+  private:
+    std::size_t all_ = 0;
+    std::vector<std::size_t> listed_;
+};
+
 /// The readings of one phase that count (complete and not excluded), in the order taken, with the standard's correction
 /// applied to the reference where its table is to be applied.
 struct Sample {
-    std::vector<std::size_t> rows; ///< row in ReadingColumns
+    RowList rows;
     PairColumn reference, indication;
     PairColumn uReference, uIndication;      ///< stated standard uncertainties; empty when none are stated
     PairColumn uCovariance;                  ///< stated covariance of both errors of a reading; empty when none are stated

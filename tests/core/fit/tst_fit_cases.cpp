@@ -234,7 +234,13 @@ class FitCases : public QObject {
         Record record = recordOf({{"1", "2", "", "4", "5"}, {"1", "2", "3", "4", "50"}, {}, {}});
         record.exclusions.edit().add({5, ExclusionReason::TypingSlip, "", "nb", 0});
         const Sample sample = makeSample(record, Phase::AsFound);
-        QVERIFY((sample.rows == std::vector<std::size_t>{0, 1, 3}));
+        std::vector<std::size_t> rows;
+        for (const std::size_t row : sample.rows) {
+            QCOMPARE(sample.rows.indexOf(row), rows.size());
+            rows.push_back(row);
+        }
+        QVERIFY((rows == std::vector<std::size_t>{0, 1, 3}));
+        QCOMPARE(sample.rows.indexOf(2), sample.rows.size());
         QCOMPARE(sample.excluded, std::size_t{1});
         QCOMPARE(sample.warnings.front().code, WarningCode::IncompleteReadings);
         QCOMPARE(makeSampleWithExcluded(record, Phase::AsFound).size(), std::size_t{4});

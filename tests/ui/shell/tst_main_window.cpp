@@ -45,7 +45,7 @@ struct Desk {
         window->show();
         QVERIFY(QTest::qWaitForWindowActive(window.get()));
         const auto* pages = window->findChild<PageStack*>();
-        QVERIFY(QTest::qWaitFor([&] { return pages->complete(); }));
+        QVERIFY(QTest::qWaitFor([&] { return pages->complete(); }, 60'000)); // on a busy machine
     }
     const Record& record() const { return window->workbench().record(); }
     template <class T = QWidget>
