@@ -17,7 +17,7 @@ StoryWindow::StoryWindow(const QString& home) : now(1'791'884'400'000), settings
     if (!QTest::qWaitForWindowActive(window_.get()))
         QTest::qFail("the window did not become active", __FILE__, __LINE__);
     const auto* pages = window_->findChild<PageStack*>();
-    if (!QTest::qWaitFor([&] { return pages->complete(); }))
+    if (!QTest::qWaitFor([&] { return pages->complete(); }, 60'000))
         QTest::qFail("the pages were not made", __FILE__, __LINE__);
 }
 
