@@ -11,11 +11,11 @@ namespace spanwright {
 
 namespace {
 
-/// Whether a column is named like the reference, and not like the indication too.
+/// Whether a column is named like the reference, or so itself, and not like the indication too.
 bool isReference(const CsvRules& rules, std::size_t column, const Item& item) {
     const std::string name = lowerCase(rules.columns[column].name);
     const auto namedLike = [&](const Quantity& quantity) { return !name.empty() && name == lowerCase(withoutBlanks(quantity.name)); };
-    return namedLike(item.reference) && !namedLike(item.indication);
+    return (namedLike(item.reference) || name == "reference") && !namedLike(item.indication);
 }
 
 std::string labels(const CsvRules& rules, const std::vector<std::size_t>& columns) {
@@ -36,9 +36,10 @@ std::vector<std::size_t> likeliest(const CsvRules& rules, std::vector<std::size_
 Result<std::size_t> indicationColumn(const Arguments& arguments, const CsvRules& rules, const Item& item) {
     if (const auto text = arguments.value("--indication"))
         return findColumn(rules, *text);
-    if (!item.indication.name.empty())
-        if (const auto named = findColumn(rules, item.indication.name); named || named.error().code == ErrorCode::ColumnUnclear)
-            return named;
+    for (const std::string& name : {item.indication.name, std::string("indication")})
+        if (!name.empty())
+            if (const auto named = findColumn(rules, name); named || named.error().code == ErrorCode::ColumnUnclear)
+                return named;
     std::vector<std::size_t> numbers, references;
     for (std::size_t i = 0; i < rules.columns.size(); ++i)
         if (rules.columns[i].kind == ColumnKind::Number)

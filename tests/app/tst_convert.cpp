@@ -287,6 +287,8 @@ void TestConvert::theColumnIsNamedWhereItIsNotCertain() {
     QCOMPARE(runWords({"figures", desk.file("in.csv", "x,y,y\n1,2,3\n2,4,5\n3,6,8\n"), "--indication", "3"}).status, 0);
     // One that is left, one in the unit of the indication, the one that is asked for: said on the error stream.
     const std::vector<std::pair<Ran, const char*>> taken{{convert("pressure,raw\n1,4.1\n"), "column 2 \"raw\""},
+                                                         {convert("n,indication\n1,4.1\n"), "column 2 \"indication\""},
+                                                         {convert("reference,b\n1,4.1\n"), "column 2 \"b\""},
                                                          {convert("a,b / mA\n1,4.1\n"), "column 2 \"b\""},
                                                          {convert("a,b\n1,4.1\n", {"--indication", "b"}), "column 2 \"b\""},
                                                          {convert("pressure,b\n4.1,2\n", {"--indication", "1"}), "taken as the indication, as asked for"}};
