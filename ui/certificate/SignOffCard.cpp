@@ -60,7 +60,7 @@ SignOffCard::Editors SignOffCard::addRole(SignOffRole role) {
     label->setForegroundRole(inkRole::quiet);
     const Editors editors{addEditor(id, tr("%1: name").arg(word), tr("name")),
                           addEditor(id + QStringLiteral(".position"), tr("%1: position").arg(word), tr("position")),
-                          addEditor(id + QStringLiteral(".date"), tr("%1: date as 2026-11-30").arg(word), tr("2026-11-30"))};
+                          addEditor(id + QStringLiteral(".date"), tr("%1: date as 2026-11-30").arg(word), tr("YYYY-MM-DD"))};
     label->setBuddy(editors.name);
     auto* line = new QHBoxLayout;
     line->setSpacing(space::half);
