@@ -252,7 +252,7 @@ void function(const Record& record, const Evaluation& evaluation, List& list) {
         list.add(Gap::RobustFunction, Block, "bench", "choices.method");
 }
 
-void people(const Record& record, List& list) {
+void people(const Record& record, const Evaluation& evaluation, List& list) {
     const std::pair<SignOffRole, Gap> roles[] = {{SignOffRole::Performed, Gap::NotPerformed},
                                                  {SignOffRole::Checked, Gap::NotChecked},
                                                  {SignOffRole::Authorised, Gap::NotAuthorised}};
@@ -264,6 +264,10 @@ void people(const Record& record, List& list) {
         if (!there)
             list.add(gap, Warn, "certificate", "signoffs." + std::string(nameOf(role)));
     }
+    for (const SignOff& one : record.signOffs)
+        if (!one.date.empty() && one.date < evaluation.calibrated)
+            list.add(Gap::SignedBeforeCalibration, Block, "certificate", "signoffs." + std::string(nameOf(one.role)),
+                     {{"role", std::string(nameOf(one.role))}, {"date", one.date}, {"calibrated", evaluation.calibrated}});
 }
 
 } // namespace
@@ -277,7 +281,7 @@ std::vector<ChecklistItem> checklist(const Record& record, const Evaluation& eva
     results(record, evaluation, list);
     decision(record, evaluation, list);
     function(record, evaluation, list);
-    people(record, list);
+    people(record, evaluation, list);
     return list.take();
 }
 

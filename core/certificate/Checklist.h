@@ -42,6 +42,7 @@ enum class Gap {
     NotPerformed,           ///< no name of the person who performed
     NotChecked,
     NotAuthorised,          ///< 7.8.2.1 o
+    SignedBeforeCalibration, ///< facts: role, date, calibrated
     NoUncertainty,          ///< 7.8.4.1 a; facts: phase
     NoRepeatability,        ///< nothing was read twice; facts: phase
     OmittedWithoutReason,   ///< a line of the budget left out; facts: line

@@ -246,14 +246,21 @@ PrintedFunction numbersPrinted(const Fit& fit, const PrintedGrid& grid, const Lo
     return printed;
 }
 
+/// As few digits as lie in the range, from `decimals` on; all of them where no fewer do.
+std::string placeText(double x, double low, double high, int decimals) {
+    for (int more = 0; more < 12; ++more) {
+        const std::string text = roundedText(x, decimals + more);
+        if (numberOf(text) >= low && numberOf(text) <= high)
+            return text;
+    }
+    return shortest(x);
+}
+
 /// Three places in the range, in few digits.
 std::vector<std::string> placesIn(double low, double high) {
     std::vector<std::string> places;
     for (const double share : {0.0, 0.5, 1.0}) {
-        const double x = low + share * (high - low);
-        std::string text = roundedText(x, decimalsFor(high - low, 4));
-        if (numberOf(text) < low || numberOf(text) > high)
-            text = shortest(x);
+        const std::string text = placeText(low + share * (high - low), low, high, decimalsFor(high - low, 4));
         if (places.empty() || places.back() != text)
             places.push_back(text);
     }

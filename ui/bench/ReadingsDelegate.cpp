@@ -6,6 +6,8 @@
 #include "ui/look/Look.h"
 #include "ui/plot/Marks.h"
 
+#include <QApplication>
+#include <QClipboard>
 #include <QKeyEvent>
 #include <QPainter>
 
@@ -70,6 +72,12 @@ bool ReadingsDelegate::eventFilter(QObject* object, QEvent* event) {
     if (!editor)
         return QStyledItemDelegate::eventFilter(object, event);
     if (event->type() == QEvent::KeyPress) {
+        const QString text = static_cast<QKeyEvent*>(event)->matches(QKeySequence::Paste) ? QApplication::clipboard()->text().trimmed() : QString();
+        if (text.contains(QLatin1Char('\t')) || text.contains(QLatin1Char('\n'))) { // several cells
+            emit closeEditor(editor, NoHint);
+            emit blockPasted();
+            return true;
+        }
         switch (static_cast<QKeyEvent*>(event)->key()) {
         case Qt::Key_Return:
         case Qt::Key_Enter:

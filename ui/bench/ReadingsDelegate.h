@@ -32,6 +32,8 @@ class ReadingsDelegate : public QStyledItemDelegate {
     void typed(const QModelIndex& index, const spanwright::Decimal& value, spanwright::Onward onward) const;
     void refused(spanwright::NumberEdit* editor, const spanwright::Error& error) const;
     void editing(spanwright::NumberEdit* editor) const;
+    /// The clipboard holds several cells and was to be pasted into the open one.
+    void blockPasted() const;
 
   private:
     static void paintGround(QPainter& painter, const QStyleOptionViewItem& option, const QModelIndex& index);

@@ -62,6 +62,7 @@ ReadingsTable::ReadingsTable(Workbench& workbench, QWidget* parent)
     words_->setMargin(6);
     words_->hide();
     connect(delegate_, &ReadingsDelegate::typed, this, &ReadingsTable::accept);
+    connect(delegate_, &ReadingsDelegate::blockPasted, this, [this] { paste(QApplication::clipboard()->text()); });
     connect(delegate_, &QAbstractItemDelegate::closeEditor, this, &ReadingsTable::silence);
     connect(delegate_, &ReadingsDelegate::refused, this, [this](NumberEdit* editor, const Error& error) { say(errorText(error), editor->geometry()); });
     connect(delegate_, &ReadingsDelegate::editing, this, [this](NumberEdit* editor) {

@@ -11,6 +11,7 @@
 #include <QCoreApplication>
 
 #include <algorithm>
+#include <cmath>
 
 namespace spanwright {
 
@@ -24,6 +25,15 @@ QString tr(const char* text) {
 
 bool inside(const Reading& reading, const PhaseEvaluation* figures, const Item& item) {
     return reading.reference && reading.indication && insideOfReadings(*reading.indication, reading.reference->toDouble(), figures, item);
+}
+
+/// Twice as far from the middle of the interval as it reaches: of a whole block of sound readings some lie outside, hardly one so far.
+bool farOutside(const Reading& reading, const PhaseEvaluation* figures, const Item& item) {
+    if (!reading.reference || !reading.indication)
+        return false;
+    const auto expected = expectedAt(reading.reference->toDouble(), figures, item);
+    return expected && expected->from == Expected::From::Readings &&
+           std::abs(reading.indication->toDouble() - (expected->low + expected->high) / 2) > expected->high - expected->low;
 }
 
 /// Slips of the readings as they would stand in the record.
@@ -95,9 +105,12 @@ std::vector<Suspect> suspectsAmong(const Record& record, const PhaseEvaluation* 
         if (!farOff || !judges || !inside(rows[row], figures, record.item))
             questions.add(slip, row);
     }
-    for (std::size_t row = 0; row < rows.size(); ++row)
+    for (std::size_t row = 0; row < rows.size(); ++row) {
         if (rows[row].reference)
             questions.add(row, NumberColumn::Reference, checkReference(*rows[row].reference, rows[row].setPoint, record.item));
+        if (judges && farOutside(rows[row], figures, record.item))
+            questions.add(row, NumberColumn::Indication, checkIndication(*rows[row].indication, rows[row].reference->toDouble(), figures, record.item));
+    }
     return questions.take();
 }
 

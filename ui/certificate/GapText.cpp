@@ -121,6 +121,8 @@ QString GapText::ofRelease(Gap gap, Sentence& facts) {
     case Gap::NotPerformed: return tr("Nobody has signed off as having performed the calibration (name, position, date).");
     case Gap::NotChecked: return tr("Nobody has signed off as having checked the results (name, position, date).");
     case Gap::NotAuthorised: return tr("Nobody has authorised the certificate (name, position, date); it stays a draft.");
+    case Gap::SignedBeforeCalibration:
+        return tr("A date of signing off, %1, is before the date of calibration, %2.").arg(facts.plain("date"), facts.plain("calibrated"));
     case Gap::NoSpecification: return tr("Conformity is wanted, but the specification is not named.");
     case Gap::NoLimits: return tr("Conformity is wanted, but no limits are stated.");
     case Gap::NoDecision:

@@ -80,7 +80,9 @@ std::vector<LabelledText> jobColumn(const Certificate& certificate) {
     entries.push_back({CertificateSections::tr("Received"), orDash(job.received)});
     entries.push_back(wanted(CertificateSections::tr("Calibrated"), certificate.calibrated));
     entries.push_back({CertificateSections::tr("Issued"), job.issued.empty()
-                                                             ? CertificateSections::tr("not yet; draft of %1").arg(text(certificate.drawnUpOn))
+                                                             ? (certificate.state == DraftState::SignedOff ? CertificateSections::tr("not yet; drawn up on %1")
+                                                                                                           : CertificateSections::tr("not yet; draft of %1"))
+                                                                   .arg(text(certificate.drawnUpOn))
                                                              : text(job.issued)});
     entries.push_back(hoped(CertificateSections::tr("Place"), job.place));
     const std::string method = job.methodEdition.empty() ? job.method : job.method + ", edition " + job.methodEdition;

@@ -76,7 +76,7 @@ void SplitPicture::setSplit(std::optional<VarianceSplit> split, const QString& f
         for (const auto& [part, row] : chain)
             if (*row)
                 add(part, **row, noise);
-        if (split_->pureError && !split_->repeatability)
+        if (split_->pureError && split_->against == SplitPart::PureError) // else its parts stand there
             add(SplitPart::PureError, *split_->pureError, noise);
         if (parts_.size() == 1)
             add(SplitPart::Residual, split_->residual, noise);

@@ -5,6 +5,7 @@
 #include <QDialog>
 #include <QFileDialog>
 #include <QInputDialog>
+#include <QKeyEvent>
 #include <QMessageBox>
 #include <QPushButton>
 
@@ -17,8 +18,22 @@ QString tr(const char* text) {
 }
 
 /// Text from files is text, never markup.
+/// Answers to Alt with a letter, not to the letter alone, which may have been meant for another field.
+class Question : public QMessageBox {
+  public:
+    using QMessageBox::QMessageBox;
+
+  protected:
+    void keyPressEvent(QKeyEvent* event) override {
+        const bool plainLetter = !event->text().isEmpty() && event->text().front().isLetterOrNumber() &&
+                                 !event->modifiers().testAnyFlags(Qt::AltModifier | Qt::ControlModifier | Qt::MetaModifier);
+        if (!plainLetter)
+            QMessageBox::keyPressEvent(event);
+    }
+};
+
 QMessageBox* messageBox(QWidget* parent, const QString& title, const QString& text) {
-    auto* box = new QMessageBox(parent);
+    auto* box = new Question(parent);
     box->setWindowTitle(title);
     box->setTextFormat(Qt::PlainText);
     box->setText(title);

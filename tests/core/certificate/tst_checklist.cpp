@@ -86,6 +86,7 @@ const std::vector<Missing>& missings() {
         {"many exclusions", [](R r) { exclude(r, 3, 12, ExclusionReason::NotSettled); }, ManyExcluded, warn, "bench", "exclusions"},
         {"performer", [](R r) { r.signOffs.erase(r.signOffs.begin()); }, NotPerformed, warn, "certificate", "signoffs.performed"},
         {"position", [](R r) { r.signOffs[1].position.clear(); }, NotChecked, warn, "certificate", "signoffs.checked"},
+        {"checked too early", [](R r) { r.signOffs[1].date = "2026-10-01"; }, SignedBeforeCalibration, block, "certificate", "signoffs.checked"},
         {"authorisation", [](R) {}, NotAuthorised, warn, "certificate", "signoffs.authorised"},
         {"omitted line", [](R r) { r.budget.omitted = {{DerivedLine::RunToRun, ""}}; }, OmittedWithoutReason, block, "budget",
          "budget.omitted"},

@@ -327,6 +327,29 @@ class PlotsTest : public QObject {
         QVERIFY(!picture.summary().contains(QStringLiteral("explains 100 %")));
     }
 
+    /// One run, rising and falling: nothing is left to tell repeatability, and pure error is no part beside the hysteresis in it.
+    void noPartOfTheSplitIsSharedOutTwice() {
+        Record record;
+        for (int i = 0; i < 8; ++i) {
+            Reading reading;
+            reading.id = record.nextReadingId++;
+            reading.run = 1;
+            reading.direction = i < 4 ? Direction::Rising : Direction::Falling;
+            const int point = i < 4 ? i : 7 - i;
+            reading.reference = Decimal{point * 10, 1, {}};
+            reading.indication = Decimal{point * 100 + i * i % 5 + (i < 4 ? 0 : 7), 2, {}};
+            record.readings.edit().append(reading);
+        }
+        const PlotSubject subject = subjectOf(record);
+        QVERIFY(subject.phase->split->hysteresis && !subject.phase->split->repeatability);
+        SplitPicture picture;
+        picture.setSplit(subject.phase->split, QStringLiteral("straight line"), {});
+        double sum = 0;
+        for (std::size_t i = 1; i < picture.parts().size(); ++i)
+            sum += picture.parts()[i].share;
+        QVERIFY2(std::abs(sum - 1) < 1e-9, qPrintable(picture.summary()));
+    }
+
     void aPartIsChosenByMouseAndKeys() {
         const PlotSubject subject = subjectOf(test::pressureTransmitter());
         SplitPicture picture;
