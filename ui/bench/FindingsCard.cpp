@@ -31,7 +31,9 @@ void FindingsCard::refresh() {
     const auto evaluation = workbench_.evaluation();
     const PhaseEvaluation* phase = evaluation->phase(record.choices.phase);
     const std::vector<Finding> found = phase ? phase->findings : std::vector<Finding>{};
-    view_->setFindings(found, record, phase && phase->fit ? tr("Nothing stands out.") : tr("Findings appear here as readings come in."));
+    view_->setFindings(found, record, phase && phase->fit        ? tr("Nothing stands out.")
+                                             : phase && phase->readings ? tr("Findings appear here once a function is fitted.")
+                                                                        : tr("Findings appear here as readings come in."));
     const auto dismissed = std::count_if(found.begin(), found.end(), [&](const Finding& finding) { return dismissalOf(finding, record) != nullptr; });
     const qsizetype open = static_cast<qsizetype>(found.size()) - dismissed;
     setNote(found.empty() ? QString() : dismissed == 0 ? QString::number(open) : tr("%1, %2 dismissed").arg(open).arg(dismissed));

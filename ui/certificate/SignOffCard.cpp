@@ -11,6 +11,7 @@
 #include <QLabel>
 #include <QLineEdit>
 #include <QStyle>
+#include <QToolTip>
 #include <QVBoxLayout>
 
 #include <algorithm>
@@ -95,7 +96,10 @@ void SignOffCard::commit(SignOffRole role) {
     editors.date->setProperty("refused", !good);
     editors.date->style()->unpolish(editors.date);
     editors.date->style()->polish(editors.date);
-    editors.date->setToolTip(good ? QString() : tr("A date is written as 2026-11-30."));
+    const QString why = good ? QString() : tr("A date is written as 2026-11-30.");
+    editors.date->setToolTip(why);
+    if (!good && isVisible())
+        QToolTip::showText(editors.date->mapToGlobal(editors.date->rect().bottomLeft()), why, editors.date);
     SignOff one = signOffOf(workbench_.record(), role);
     one.name = editors.name->text().trimmed().toStdString();
     one.position = editors.position->text().trimmed().toStdString();

@@ -4,6 +4,7 @@
 #include <QCoreApplication>
 #include <QDialog>
 #include <QFileDialog>
+#include <QFileInfo>
 #include <QInputDialog>
 #include <QKeyEvent>
 #include <QMessageBox>
@@ -39,6 +40,17 @@ QMessageBox* messageBox(QWidget* parent, const QString& title, const QString& te
     box->setText(title);
     box->setInformativeText(text);
     return box;
+}
+
+bool mayReplace(QWidget* parent, const QString& path) {
+    QMessageBox* box = messageBox(parent, tr("Replace “%1”?").arg(QFileInfo(path).fileName()),
+                                  tr("There is such a session already; what it holds is lost when it is replaced."));
+    QPushButton* replace = box->addButton(tr("&Replace"), QMessageBox::DestructiveRole);
+    box->setDefaultButton(box->addButton(tr("&Cancel"), QMessageBox::RejectRole));
+    box->exec();
+    const bool may = box->clickedButton() == replace;
+    delete box;
+    return may;
 }
 
 } // namespace
@@ -84,7 +96,14 @@ QString ScreenDialogs::savePath(QWidget* parent, const QString& suggestion) {
     dialog.setAcceptMode(QFileDialog::AcceptSave);
     dialog.setDefaultSuffix(QStringLiteral("spanwright"));
     dialog.selectFile(suggestion);
-    return dialog.exec() == QDialog::Accepted ? dialog.selectedFiles().value(0) : QString();
+    if (dialog.exec() != QDialog::Accepted)
+        return {};
+    // A session called table.csv would be opened as one.
+    const QString path = dialog.selectedFiles().value(0), suffix = QStringLiteral(".spanwright");
+    const QString named = path.isEmpty() || path.endsWith(suffix, Qt::CaseInsensitive) ? path : path + suffix;
+    if (named != path && QFileInfo::exists(named) && !mayReplace(parent, named))
+        return {};
+    return named;
 }
 
 QString ScreenDialogs::pdfPath(QWidget* parent, const QString& suggestion) {
