@@ -25,7 +25,7 @@ std::string_view helpText() {
 
 Options of convert and coefficients
   --indication COL                      column of the indications, by name or number from 1; otherwise the one named as in the
-                                        calibration, or the only one that can be meant
+                                        calibration or "indication", or the only one that can be meant
   --repeats Q|inf                       each row is the mean of Q new readings: repeatability is divided by Q, the rest stays; inf: no repeatability
   --phase as-found|as-left              whose function
   --missing WORD, --decimal comma|point, --separator S, --encoding E

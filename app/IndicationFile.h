@@ -18,7 +18,7 @@ struct LoadedIndications {
 };
 
 /// Reads a column of indications of the item from a CSV, by the options of a table; other columns are not looked at. It is the column
-/// that --indication names, else the one of the quantity's name, else the only column of numbers that can be meant: one named like
+/// that --indication names, else the one of the quantity's name, or "indication", else the only column of numbers that can be meant: one named like
 /// the reference cannot, nor, where another has the unit of the indication, one without. Errors: of the readers, with fact file; a
 /// cell that is no number; ColumnUnclear, HeaderShort; UnitsDiffer where the header states another unit than the quantity has.
 Result<LoadedIndications> loadIndications(const std::string& path, const Arguments& arguments, const Item& item);

@@ -18,12 +18,15 @@ void keepLargeBlocks() {
     mallopt(M_MMAP_THRESHOLD, Kept);
     mallopt(M_TRIM_THRESHOLD, Kept);
     mallopt(M_ARENA_MAX, 1); // evaluated in one thread, given back in another
+    const auto placeOf = [](void* address) { return reinterpret_cast<std::uintptr_t>(address); };
+    const auto before = placeOf(sbrk(0));
     // The heap grows by so much at once, as addresses without memory, which comes in large pages when it is first written to.
     mallopt(M_TOP_PAD, Kept);
     void* volatile grown = std::malloc(Page); // volatile: else the compiler leaves both out
     std::free(grown);
-    const auto end = reinterpret_cast<std::uintptr_t>(sbrk(0)), from = (end - Kept + Page) / Page * Page;
-    madvise(reinterpret_cast<void*>(from), end - from, MADV_HUGEPAGE);
+    const auto end = placeOf(sbrk(0)), from = (before + Page - 1) / Page * Page;
+    if (from < end) // only what was added: it may be that the heap could not grow
+        madvise(reinterpret_cast<void*>(from), end - from, MADV_HUGEPAGE);
 #endif
 }
 

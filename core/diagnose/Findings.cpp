@@ -92,16 +92,16 @@ std::vector<double> repeatabilityDeviations(const FindingsInput& input, const st
             cells.push_back({1, point.mean, point.n});
     else
         cells = classSums<Cell>(n, directions * sample.groupValue.size(), [&](std::vector<Cell>& sums, std::size_t first, std::size_t last) {
-        auto next = std::lower_bound(leftOut.begin(), leftOut.end(), first);
-        for (std::size_t i = first; i < last; ++i) {
-            if (next != leftOut.end() && *next == i) {
-                ++next;
-                continue;
+            auto next = std::lower_bound(leftOut.begin(), leftOut.end(), first);
+            for (std::size_t i = first; i < last; ++i) {
+                if (next != leftOut.end() && *next == i) {
+                    ++next;
+                    continue;
+                }
+                const double weight = w.empty() ? 1 : w[i];
+                sums[cellOf(i)] += {weight, weight * e[i], 1};
             }
-            const double weight = w.empty() ? 1 : w[i];
-            sums[cellOf(i)] += {weight, weight * e[i], 1};
-        }
-    });
+        });
     for (Cell& cell : cells) {
         cell.sum /= cell.weight;
         // What one mean takes from a cell of few makes its deviations too small by √(1 − 1/n).
